@@ -1,0 +1,89 @@
+# Build, test, check.  `make help` lists the targets; `make V=1` shows the commands.  All that is made lands in build/.
+CC     ?= cc
+CFLAGS ?= -O2 -g
+HARDEN ?= -U_FORTIFY_SOURCE -D_FORTIFY_SOURCE=3 -fstack-protector-strong
+BUILD  ?= build
+PKGS        := gsl yaml-0.1 json-c
+SCREEN_PKGS := ncursesw
+WARN  := -Wall -Wextra -Wpedantic -Wconversion -Wshadow -Wstrict-prototypes -Wmissing-prototypes \
+         -Wcast-qual -Wwrite-strings -Wvla -Wdouble-promotion -Wformat=2 -Wundef
+SAN   := -O1 -g -fsanitize=address,undefined -fno-sanitize-recover=all
+STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(shell pkg-config --cflags $(PKGS))
+ALL_C  = $(STD) -fPIC -fvisibility=hidden $(WARN) $(WERROR) $(HARDEN) $(CPPFLAGS) $(CFLAGS)
+LINK   = $(quiet) $(CC) $(CFLAGS) -Wl,-z,relro,-z,now,--as-needed $(LDFLAGS) -o $@
+LIBS  := $(shell pkg-config --libs $(PKGS)) -lm
+SCREEN_STD := $(shell pkg-config --cflags $(SCREEN_PKGS))
+FRONT_LIBS := $(shell pkg-config --libs $(SCREEN_PKGS)) $(LIBS)
+TEST_LIBS  := $(shell pkg-config --libs check)
+
+MAIN     := src/command/main.c
+FRONT    := $(sort $(filter-out $(MAIN),$(shell find src -path 'src/command/*.c' -o -path 'src/screen/*.c')))
+ENGINE   := $(sort $(shell find src -name '*.c' ! -path 'src/command/*' ! -path 'src/screen/*'))
+HEADERS  := $(sort $(shell find include src -name '*.h'))
+TESTS    := $(sort $(shell find tests -name 'test_*.c'))
+BENCH    := $(sort $(shell find tests -name 'bench_*.c'))
+FUZZ     := $(sort $(shell find tests -name 'fuzz_*.c'))
+COMMANDS := $(sort $(shell find tests -name '*.cmd'))
+FOLDERS  := $(shell find src -type d)
+OURS     := $(ENGINE) $(FRONT) $(MAIN)
+LAID_OUT := $(OURS) $(HEADERS) $(shell find tests -name '*.[ch]')
+obj   = $(patsubst %.c,$(BUILD)/%.o,$(1))
+bin   = $(patsubst %.c,$(BUILD)/%,$(1))
+run   = $(patsubst %,$(BUILD)/%.run,$(basename $(1)))
+quiet = $(if $(V),,@echo '  $@' &&)
+MAKEFLAGS += --no-print-directory
+
+all: $(addprefix $(BUILD)/,beamhours libbeamhours.a libbeamhours.so.0) ## build the program and the library
+everything: all $(call bin,$(TESTS) $(BENCH))            ## and the tests, without running them
+$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(FRONT_LIBS)
+$(BUILD)/libbeamhours.a $(BUILD)/libbeamhours.so.0: $(call obj,$(ENGINE)) $(FOLDERS)
+$(BUILD)/front.a: $(call obj,$(FRONT)) $(FOLDERS)
+$(BUILD)/%.a: ; $(quiet) rm -f $@ && ar rcs $@ $(filter %.o,$^)
+$(BUILD)/%.so.0: ; $(LINK) -shared -Wl,-soname,$(@F) $(if $(HARDEN),-Xlinker --no-undefined) $(filter %.o,$^) $(LIBS)
+$(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(TEST_LIBS) $(FRONT_LIBS)
+$(call bin,$(FUZZ)): %: %.o $(BUILD)/libbeamhours.a ; $(LINK) -fsanitize=fuzzer $^ $(LIBS)
+$(BUILD)/src/screen/%.o: STD += $(SCREEN_STD)
+$(BUILD)/%.o: %.c $(BUILD)/flags ; $(quiet) mkdir -p $(@D) && $(CC) $(ALL_C) -MMD -MP -c -o $@ $<
+FLAGS := $(CC) $(ALL_C) $(LDFLAGS) $(FRONT_LIBS) $(TEST_LIBS)
+$(BUILD)/flags: $(if $(subst x$(FLAGS),,x$(file <$(BUILD)/flags)),changed) # other flags than last time: compile all again
+	@mkdir -p $(@D) && printf '%s\n' '$(subst ','\'',$(FLAGS))' >$@
+
+check: all                                               ## every test, all failures at once (-j works)
+	@$(MAKE) -k -Otarget $(call run,$(TESTS) $(COMMANDS) rules)
+check-all:                                               ## check, all that follows up to fuzz, a trial installation
+	@$(MAKE) -k check lint globals sanitize valgrind coverage fuzz $(call run,installed)
+$(call run,$(TESTS)): %.run: % ; @$(UNDER) $<
+$(call run,$(COMMANDS)): $(BUILD)/%.run: %.cmd all ; @UNDER='$(UNDER)' sh tests/commands/run.sh $(BUILD) $<
+$(call run,rules): ; @CC='$(CC)' sh tests/rules/selftest.sh
+$(call run,installed): all ; @CC='$(CC)' sh tests/rules/installed.sh
+lint: floors docs-lint                                   ## layout, warnings of gcc and clang, clang-tidy, cppcheck
+	@clang-format --dry-run --Werror $(LAID_OUT)
+	@for c in gcc clang; do $(MAKE) everything CC=$$c WERROR=-Werror BUILD=$(BUILD)/$$c || exit 1; done
+	@printf '%s\n' $(OURS) | xargs -n 2 -P 2 sh -c 'clang-tidy --quiet "$$@" -- $(STD) $(SCREEN_STD) $(WARN)' -
+	@cppcheck --quiet --std=c11 --enable=warning,style,performance,portability --inline-suppr \
+	 --suppress=missingIncludeSystem --error-exitcode=1 -Iinclude src
+floors: ; @awk -f tests/rules/floors.awk $(OURS) $(HEADERS) ## a room includes only lower rooms
+docs-lint: ; @awk -f tests/rules/headers.awk $(HEADERS)  ## every number in a header has its unit
+globals:                                                 ## no writable data in the library
+	@$(MAKE) -s CFLAGS=-O0 HARDEN= BUILD=$(BUILD)/globals $(BUILD)/globals/libbeamhours.a
+	@objdump -wht $(patsubst %.c,$(BUILD)/globals/%.o,$(ENGINE)) | awk -v objects=$(words $(ENGINE)) -f tests/rules/globals.awk
+sanitize:                                                ## the tests under ASan and UBSan
+	@CK_FORK=no $(MAKE) check HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
+valgrind:                                                ## the tests under valgrind
+	@CK_FORK=no $(MAKE) check HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
+coverage:                                                ## lines of src/ that the tests reach
+	@rm -rf $(BUILD)/cov && $(MAKE) check CC=gcc HARDEN= BUILD=$(BUILD)/cov CFLAGS='-O0 -g --coverage'
+	gcovr -r . --object-directory $(BUILD)/cov -f src/ --txt
+fuzz:                                                    ## each harness for FUZZ_SECONDS (10)
+	@$(MAKE) -k fuzz-run CC=clang HARDEN= BUILD=$(BUILD)/fuzz CFLAGS='$(SAN) -fsanitize=fuzzer-no-link'
+fuzz-run: $(call run,$(FUZZ))
+$(call run,$(FUZZ)): $(BUILD)/%.run: $(BUILD)/%
+	@mkdir -p $<.found && $< -max_total_time=$(or $(FUZZ_SECONDS),10) -artifact_prefix=$<. $<.found $(wildcard $*.seeds)
+bench: $(call bin,$(BENCH)) ; @for b in $^; do $$b || exit 1; done ## time the hot functions
+format: ; @clang-format -i $(LAID_OUT)                    ## rewrite the layout
+install: all ; @BUILD=$(BUILD) PKGS='$(PKGS)' sh src/install.sh ## into PREFIX (/usr/local), LIBDIR, DESTDIR
+uninstall: ; @sh src/install.sh remove                   ## with the same PREFIX, LIBDIR, DESTDIR
+clean: ; rm -rf $(BUILD)                                 ## remove all that is made
+help: ; @sed -nE 's/^([a-z-]+):.*## /\1\t/p' Makefile | expand -t 12 ## list the targets
+.PHONY: $(shell sed -nE 's/^([a-z-]+):.*/\1/p' Makefile) changed $(call run,$(TESTS) $(COMMANDS) $(FUZZ) rules installed)
+-include $(patsubst %.c,$(BUILD)/%.d,$(OURS) $(TESTS) $(BENCH) $(FUZZ))

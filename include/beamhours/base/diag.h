@@ -1,0 +1,41 @@
+/* diag.h - everything there is to say about a document: all its errors and warnings, in file order.
+ */
+#ifndef BH_BASE_DIAG_H
+#define BH_BASE_DIAG_H
+
+#include <stdbool.h>
+#include <stddef.h>
+
+#include "beamhours/base/error.h"
+
+typedef enum { BH_SEVERITY_ERROR, BH_SEVERITY_WARNING } bh_severity;
+
+typedef struct {
+    bh_severity severity;
+    bh_mark at;       /* where; `file` is the list's own copy */
+    const char *key;  /* dotted path of the key meant, such as "beam.current"; never NULL */
+    const char *text; /* one sentence: what was read; what would do */
+} bh_diag;
+
+/* A growing list.  One thread at a time. */
+typedef struct bh_diags bh_diags;
+
+/* An empty list, or NULL when there is no memory.  The caller owns it; NULL may be freed. */
+bh_diags *bh_diags_new(void);
+void bh_diags_free(bh_diags *diags);
+
+/* Adds one; everything is copied.  `fmt` is a sentence of base/sentences.h.  When memory runs out
+ * the list remembers that it is incomplete (bh_diags_errors then counts at least one). */
+void bh_diags_add(bh_diags *diags, bh_severity severity, bh_mark at, const char *key,
+                  const char *fmt, ...) BH_PRINTF(5, 6);
+
+/* How many there are, how many of them are errors, and the i-th (0 <= i < count). */
+size_t bh_diags_count(const bh_diags *diags);
+size_t bh_diags_errors(const bh_diags *diags);
+const bh_diag *bh_diags_at(const bh_diags *diags, size_t i);
+
+/* Puts the list in file order: by line and column within a file, files in the order they first
+ * appeared; equal places keep their order. */
+void bh_diags_sort(bh_diags *diags);
+
+#endif

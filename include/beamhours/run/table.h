@@ -1,0 +1,70 @@
+/* table.h - the run table: a plan evaluated.  Immutable once made. */
+#ifndef BH_RUN_TABLE_H
+#define BH_RUN_TABLE_H
+
+#include <stdbool.h>
+#include <stddef.h>
+
+#include "beamhours/base/diag.h"
+#include "beamhours/plan/plan.h"
+#include "beamhours/run/columns.h"
+
+typedef struct bh_table bh_table;
+
+/* [h] each; NAN where the plan cannot say (available and spare without `available`). */
+typedef struct {
+    double data_hours, empty_hours, task_hours, change_hours; /* [h] */
+    double beam_hours, scheduled_hours, contingency_hours;    /* [h] */
+    double asked_hours, available_hours, spare_hours;         /* [h] */
+    double shifts, weeks; /* [1] asked, in the facility's units */
+    const char *note; /* "no change-over times given", what the totals lack; NULL when nothing */
+} bh_totals;
+
+/* Derived from the plan, shown wherever a beam is shown; ends in deference to the facility. */
+typedef struct {
+    bh_mark at;       /* the plan line it follows from */
+    const char *key;  /* "beam.current" */
+    const char *text; /* one or two sentences */
+} bh_caution;
+
+typedef struct {
+    bool bins;                      /* rows of bins are wanted too */
+    bool (*cancelled)(void *asker); /* polled at least each 5 ms; NULL: never */
+    void *asker;
+} bh_evaluation;
+
+/*
+ * Evaluates `plan`, which must outlive the table.  Warnings of evaluation are added to the table's
+ * own list, after those in `said` (copied; may be NULL).
+ * Returns NULL when there was no memory or it was cancelled, with the reason in err.
+ */
+bh_table *bh_table_new(const bh_plan *plan, const bh_evaluation *how, const bh_diags *said,
+                       bh_error *err);
+void bh_table_free(bh_table *table);
+
+const bh_plan *bh_table_plan(const bh_table *table);
+
+/* Rows: one for each arm of each setting, in plan order (bin 0), and where bins were asked for, one
+ * for each bin of each such row. */
+size_t bh_table_rows(const bh_table *table, bool bins);
+
+/* Returns [1] the number, in the unit that the column key names, in a cell; NAN when empty or text.
+ */
+double bh_table_number(const bh_table *table, bool bins, size_t row, bh_column_id column);
+
+/* Text of a text column; NULL for others or when empty. */
+const char *bh_table_text(const bh_table *table, bool bins, size_t row, bh_column_id column);
+
+/* Why a cell is empty; NULL when it is not. */
+const char *bh_table_reason(const bh_table *table, bool bins, size_t row, bh_column_id column);
+
+/* Which setting and which of its arms a row belongs to; its bin from 1, 0 for the whole arm. */
+void bh_table_place(const bh_table *table, bool bins, size_t row, size_t *setting, size_t *arm,
+                    int *bin);
+
+const bh_totals *bh_table_totals(const bh_table *table);
+size_t bh_table_cautions(const bh_table *table);
+const bh_caution *bh_table_caution(const bh_table *table, size_t i);
+const bh_diags *bh_table_warnings(const bh_table *table); /* sorted */
+
+#endif
