@@ -3,23 +3,21 @@ CC     ?= cc
 CFLAGS ?= -O2 -g
 HARDEN ?= -U_FORTIFY_SOURCE -D_FORTIFY_SOURCE=3 -fstack-protector-strong
 BUILD  ?= build
-PKGS        := gsl yaml-0.1 json-c
-SCREEN_PKGS := ncursesw
+PKGS := gsl yaml-0.1 json-c
 WARN  := -Wall -Wextra -Wpedantic -Wconversion -Wshadow -Wstrict-prototypes -Wmissing-prototypes \
          -Wcast-qual -Wwrite-strings -Wvla -Wdouble-promotion -Wformat=2 -Wundef
 SAN   := -O1 -g -fsanitize=address,undefined -fno-sanitize-recover=all
-STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(shell pkg-config --cflags $(PKGS))
-ALL_C  = $(STD) -fPIC -fvisibility=hidden $(WARN) $(WERROR) $(HARDEN) $(CPPFLAGS) $(CFLAGS)
+STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(shell pkg-config --cflags $(PKGS) 2>/dev/null)
+FAST  := -fopenmp-simd -fno-math-errno  # never -ffast-math: NaN and infinity are part of what is checked
+ALL_C  = $(STD) -fPIC -fvisibility=hidden $(WARN) $(WERROR) $(HARDEN) $(CPPFLAGS) $(FAST) $(CFLAGS)
 LINK   = $(quiet) $(CC) $(CFLAGS) -Wl,-z,relro,-z,now,--as-needed $(LDFLAGS) -o $@
-LIBS  := $(shell pkg-config --libs $(PKGS)) -lm
-SCREEN_STD := $(shell pkg-config --cflags $(SCREEN_PKGS))
-FRONT_LIBS := $(shell pkg-config --libs $(SCREEN_PKGS)) $(LIBS)
-TEST_LIBS  := $(shell pkg-config --libs check)
+LIBS  := $(shell pkg-config --libs $(PKGS) 2>/dev/null) -lm
+TEST_LIBS  := $(shell pkg-config --libs check 2>/dev/null)
 
 MAIN     := src/command/main.c
 FRONT    := $(sort $(filter-out $(MAIN),$(shell find src -path 'src/command/*.c' -o -path 'src/screen/*.c')))
 ENGINE   := $(sort $(shell find src -name '*.c' ! -path 'src/command/*' ! -path 'src/screen/*'))
-HEADERS  := $(sort $(shell find include src -name '*.h'))
+HEADERS  := $(sort $(shell find include -name '*.h'))
 TESTS    := $(sort $(shell find tests -name 'test_*.c'))
 BENCH    := $(sort $(shell find tests -name 'bench_*.c'))
 FUZZ     := $(sort $(shell find tests -name 'fuzz_*.c'))
@@ -35,31 +33,33 @@ MAKEFLAGS += --no-print-directory
 
 all: $(addprefix $(BUILD)/,beamhours libbeamhours.a libbeamhours.so.0) ## build the program and the library
 everything: all $(call bin,$(TESTS) $(BENCH))            ## and the tests, without running them
-$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(FRONT_LIBS)
+$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(LIBS)
 $(BUILD)/libbeamhours.a $(BUILD)/libbeamhours.so.0: $(call obj,$(ENGINE)) $(FOLDERS)
 $(BUILD)/front.a: $(call obj,$(FRONT)) $(FOLDERS)
 $(BUILD)/%.a: ; $(quiet) rm -f $@ && ar rcs $@ $(filter %.o,$^)
 $(BUILD)/%.so.0: ; $(LINK) -shared -Wl,-soname,$(@F) $(if $(HARDEN),-Xlinker --no-undefined) $(filter %.o,$^) $(LIBS)
-$(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(TEST_LIBS) $(FRONT_LIBS)
+$(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(TEST_LIBS) $(LIBS)
 $(call bin,$(FUZZ)): %: %.o $(BUILD)/libbeamhours.a ; $(LINK) -fsanitize=fuzzer $^ $(LIBS)
-$(BUILD)/src/screen/%.o: STD += $(SCREEN_STD)
 $(BUILD)/%.o: %.c $(BUILD)/flags ; $(quiet) mkdir -p $(@D) && $(CC) $(ALL_C) -MMD -MP -c -o $@ $<
-FLAGS := $(CC) $(ALL_C) $(LDFLAGS) $(FRONT_LIBS) $(TEST_LIBS)
+FLAGS := $(CC) $(ALL_C) $(LDFLAGS) $(LIBS) $(TEST_LIBS)
 $(BUILD)/flags: $(if $(subst x$(FLAGS),,x$(file <$(BUILD)/flags)),changed) # other flags than last time: compile all again
 	@mkdir -p $(@D) && printf '%s\n' '$(subst ','\'',$(FLAGS))' >$@
 
-check: all                                               ## every test, all failures at once (-j works)
-	@$(MAKE) -k -Otarget $(call run,$(TESTS) $(COMMANDS) rules)
+demo: ; @sh src/setup.sh build && $(MAKE) all && $(BUILD)/beamhours table plans/hydrogen-separation.yaml ## install what is missing, build, print the run table of a demonstration
+check: ; @sh src/setup.sh check && $(MAKE) check-run       ## install what is missing, build, run every test (-j works)
+check-run: all
+	@{ $(MAKE) -k -Otarget $(call run,$(TESTS) $(COMMANDS) rules); echo "status $$?"; } 2>&1 | tee $(BUILD)/check.log | grep -v '^status'; \
+	 awk -f tests/rules/summary.awk $(BUILD)/check.log
 check-all:                                               ## check, all that follows up to fuzz, a trial installation
-	@$(MAKE) -k check lint globals sanitize valgrind coverage fuzz $(call run,installed)
+	@$(MAKE) -k check lint globals sanitize valgrind coverage fuzz installed
 $(call run,$(TESTS)): %.run: % ; @$(UNDER) $<
 $(call run,$(COMMANDS)): $(BUILD)/%.run: %.cmd all ; @UNDER='$(UNDER)' sh tests/commands/run.sh $(BUILD) $<
 $(call run,rules): ; @CC='$(CC)' sh tests/rules/selftest.sh
-$(call run,installed): all ; @CC='$(CC)' sh tests/rules/installed.sh
+installed: all ; @CC='$(CC)' sh tests/rules/installed.sh   ## a trial installation, used by another program
 lint: floors docs-lint                                   ## layout, warnings of gcc and clang, clang-tidy, cppcheck
 	@clang-format --dry-run --Werror $(LAID_OUT)
 	@for c in gcc clang; do $(MAKE) everything CC=$$c WERROR=-Werror BUILD=$(BUILD)/$$c || exit 1; done
-	@printf '%s\n' $(OURS) | xargs -n 2 -P 2 sh -c 'clang-tidy --quiet "$$@" -- $(STD) $(SCREEN_STD) $(WARN)' -
+	@printf '%s\n' $(OURS) | xargs -n 2 -P 2 sh -c 'clang-tidy --quiet "$$@" -- $(STD) $(WARN)' -
 	@cppcheck --quiet --std=c11 --enable=warning,style,performance,portability --inline-suppr \
 	 --suppress=missingIncludeSystem --error-exitcode=1 -Iinclude src
 floors: ; @awk -f tests/rules/floors.awk $(OURS) $(HEADERS) ## a room includes only lower rooms
@@ -68,12 +68,12 @@ globals:                                                 ## no writable data in 
 	@$(MAKE) -s CFLAGS=-O0 HARDEN= BUILD=$(BUILD)/globals $(BUILD)/globals/libbeamhours.a
 	@objdump -wht $(patsubst %.c,$(BUILD)/globals/%.o,$(ENGINE)) | awk -v objects=$(words $(ENGINE)) -f tests/rules/globals.awk
 sanitize:                                                ## the tests under ASan and UBSan
-	@CK_FORK=no $(MAKE) check HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
+	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
 valgrind:                                                ## the tests under valgrind
-	@CK_FORK=no $(MAKE) check HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
+	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
 coverage:                                                ## lines of src/ that the tests reach
-	@rm -rf $(BUILD)/cov && $(MAKE) check CC=gcc HARDEN= BUILD=$(BUILD)/cov CFLAGS='-O0 -g --coverage'
-	gcovr -r . --object-directory $(BUILD)/cov -f src/ --txt
+	@rm -rf $(BUILD)/cov && $(MAKE) check-run CC=gcc HARDEN= BUILD=$(BUILD)/cov CFLAGS='-O0 -g --coverage'
+	gcovr -r . --object-directory $(BUILD)/cov -f src/ --txt | awk -f tests/rules/coverage.awk
 fuzz:                                                    ## each harness for FUZZ_SECONDS (10)
 	@$(MAKE) -k fuzz-run CC=clang HARDEN= BUILD=$(BUILD)/fuzz CFLAGS='$(SAN) -fsanitize=fuzzer-no-link'
 fuzz-run: $(call run,$(FUZZ))
@@ -85,5 +85,5 @@ install: all ; @BUILD=$(BUILD) PKGS='$(PKGS)' sh src/install.sh ## into PREFIX (
 uninstall: ; @sh src/install.sh remove                   ## with the same PREFIX, LIBDIR, DESTDIR
 clean: ; rm -rf $(BUILD)                                 ## remove all that is made
 help: ; @sed -nE 's/^([a-z-]+):.*## /\1\t/p' Makefile | expand -t 12 ## list the targets
-.PHONY: $(shell sed -nE 's/^([a-z-]+):.*/\1/p' Makefile) changed $(call run,$(TESTS) $(COMMANDS) $(FUZZ) rules installed)
+.PHONY: $(shell sed -nE 's/^([a-z-]+):.*/\1/p' Makefile) changed $(call run,$(TESTS) $(COMMANDS) $(FUZZ) rules)
 -include $(patsubst %.c,$(BUILD)/%.d,$(OURS) $(TESTS) $(BENCH) $(FUZZ))

@@ -2,7 +2,7 @@
 #include <gsl/gsl_errno.h>
 #include <stdio.h>
 
-#include "beamhours/api/version.h"
+#include "beamhours.h"
 
 int main(void)
 {
