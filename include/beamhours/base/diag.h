@@ -3,6 +3,7 @@
 #ifndef BH_BASE_DIAG_H
 #define BH_BASE_DIAG_H
 
+#include <stdarg.h>
 #include <stdbool.h>
 #include <stddef.h>
 
@@ -12,8 +13,8 @@ typedef enum { BH_SEVERITY_ERROR, BH_SEVERITY_WARNING } bh_severity;
 
 typedef struct {
     bh_severity severity;
-    bh_mark at;       /* where; `file` is the list's own copy */
-    const char *key;  /* dotted path of the key meant, such as "beam.current"; never NULL */
+    bh_mark at;      /* where; `file` is the list's own copy */
+    const char *key; /* dotted path of the key meant, such as "beam.current"; "plan" for the root */
     const char *text; /* one sentence: what was read; what would do */
 } bh_diag;
 
@@ -25,9 +26,19 @@ bh_diags *bh_diags_new(void);
 void bh_diags_free(bh_diags *diags);
 
 /* Adds one; everything is copied.  `fmt` is a sentence of base/sentences.h.  When memory runs out
- * the list remembers that it is incomplete (bh_diags_errors then counts at least one). */
+ * the list remembers that it is incomplete: one more error, the last one, then says so. */
 void bh_diags_add(bh_diags *diags, bh_severity severity, bh_mark at, const char *key,
                   const char *fmt, ...) BH_PRINTF(5, 6);
+
+/* The same for a function that was itself called with `...`. */
+typedef struct {
+    const char *key, *fmt;
+    va_list *args; /* used up */
+} bh_said;
+void bh_diags_addv(bh_diags *diags, bh_severity severity, bh_mark at, bh_said said);
+
+/* Memory ran out elsewhere while the document was being read: the list is incomplete. */
+void bh_diags_lose(bh_diags *diags);
 
 /* How many there are, how many of them are errors, and the i-th (0 <= i < count). */
 size_t bh_diags_count(const bh_diags *diags);

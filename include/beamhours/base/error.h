@@ -9,7 +9,9 @@
     X(BH_ENOCONV, "a numerical method did not converge")    \
     X(BH_EPLAN, "the plan document is not valid")           \
     X(BH_ENOMEM, "out of memory")                           \
-    X(BH_EIO, "a file could not be read or written")
+    X(BH_EIO, "a file could not be read or written")        \
+    X(BH_EABSENT, "no such file, or it may not be read")    \
+    X(BH_ECREATE, "the output file cannot be created")
 
 typedef enum {
 #define BH_CODE_NAME(code, sentence) code,
