@@ -13,13 +13,15 @@ typedef struct {
     int twice_spin;        /* 0 pion and alpha, 1 electron and proton, 2 deuteron; -1 not known */
     int z, a;              /* of the nucleus; 0, 0 for leptons and pions */
     double mass;           /* [MeV] of the bare particle */
-    double magnetic;       /* [1] magnetic moment in units of e hbar / 2 m of itself; 0 not known */
+    double magnetic; /* [1] magnetic moment in units of e hbar / 2 m of itself, e > 0: electron
+                      * -1.001; 0 none or not known */
 } bh_particle;
 
-/* Finds a particle by the name used in a plan (also a nuclide such as 12C).  False when unknown. */
+/* Finds a particle by the name used in a plan (also a nuclide such as 12C, any of the table); 1H to
+ * 4He become the particle with a name of its own ("4He" -> "alpha").  False when unknown. */
 bool bh_particle_find(const char *name, bh_particle *out);
 
-/* The name that was probably meant ("e-" -> "electron", "3He" is known itself), or NULL. */
+/* The name that was probably meant ("e-" -> "electron", "C" -> "12C"), or NULL. */
 const char *bh_particle_suggest(const char *name);
 
 /* The i-th named particle (nuclides not among them), or NULL past the end: for choosers and docs.
