@@ -34,8 +34,8 @@ BH_CHECKED bh_code bh_read_list(const bh_reading *reading, bh_written written, b
 /* The default `text` of a key that is a bh_value or bh_either; `out` stays without one. */
 void bh_read_fallback(const bh_key *key, const char *text, bh_quantity *out);
 
-/* The text that a quantity of `dimension` is written as: value [1], in its internal unit. */
 enum { BH_QUANTITY_SIZE = 96 };
+/* The text that a quantity of `dimension` is written as: value [1], in its internal unit. */
 const char *bh_quantity_text(double value, bh_dimension dimension, char out[BH_QUANTITY_SIZE]);
 
 /* "a, b or c" of NULL-terminated `words`, cut to `size` bytes; returns `out`. */
