@@ -41,6 +41,11 @@
     "%s and %s do not mix in one sweep; write both for the whole ion or both per mass number"
 #define BH_SAY_SWEEP_LONG "more than %d values; make the sweep shorter"
 
+/* physics: structure */
+#define BH_SAY_STRUCTURE_UNKNOWN "%s is no structure model; did you mean %s?"
+#define BH_SAY_STRUCTURE_NUCLEUS "%s does not describe %s; one of %s does"
+#define BH_SAY_STRUCTURE_SET     "there is no %s: the sets of %s for %s end at %d"
+
 /* matter: materials */
 
 /* plan: sense */

@@ -37,6 +37,10 @@ typedef struct bh_structure_model {
 typedef struct bh_structure bh_structure;
 
 /*
+ * Charge densities include the finite size of the nucleons and are renormalised to Z; their form
+ * factor is taken at q = sqrt(q2).  A published set that misses the radius of Angeli & Marinova
+ * 2013 by more than 1 % and twice its uncertainty is no default.
+ *
  * Prepares `name` for nucleus z, a (0, 1 = neutron).  name NULL or "default": the best founded for
  * counting rates; "point": no structure; "fourier-bessel/2": the second published set.  A nucleus
  * without a published density gets a two-parameter Fermi shape with its radius from Angeli &
@@ -49,6 +53,10 @@ void bh_structure_free(bh_structure *structure);
 /* Fills ge2 [1], gm2 [1] for n values of q2 [MeV^2], each 0 <= q2.  No allocation. */
 void bh_structure_eval(const bh_structure *structure, size_t n, const double *q2, double *ge2,
                        double *gm2);
+
+/* The relative standard uncertainty of a cross section that comes from the fit at q2 [MeV^2], where
+ * the publication gives one: the larger of those at epsilon 0 and 1.  Returns [1], -1 not known. */
+double bh_structure_uncertainty(const bh_structure *structure, double q2);
 
 /* The model behind it; the full name used ("fourier-bessel/2"); what was assumed ("radius from
  * Angeli & Marinova 2013: no published density", "charge alone: no magnetic form factor"), or "".
@@ -73,7 +81,8 @@ int bh_structure_factors(const bh_structure *structure, double q2, int room, con
                          double *values);
 
 /* The i-th model of the registry, NULL past the end; whether it can describe z, a; how many
- * published sets it has there ("fourier-bessel" of 12C: 2). */
+ * sets it has there ("fourier-bessel" of 12C: 2; "fermi-2p" has one more than are published:
+ * the last is fitted to the radius). */
 const bh_structure_model *bh_structure_model_at(int i);
 int bh_structure_sets(const bh_structure_model *model, int z, int a);
 
