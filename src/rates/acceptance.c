@@ -4,6 +4,7 @@
 #include <math.h>
 #include <stddef.h>
 
+#include "beamhours/rates/quadrature.h"
 #include "beamhours/units/constants.h"
 
 #define HALF_PI (BH_PI / 2)
@@ -320,4 +321,19 @@ int bh_acceptance_kinks(const bh_acceptance_part *part, double *kinks)
 bool bh_acceptance_meets_beam(const bh_acceptance_part *part)
 {
     return part->polar.from == 0;
+}
+
+static void polar_angles(void *context, size_t n, const double *versine, double *value)
+{
+    (void)context;
+    for (size_t i = 0; i < n; i++)
+        value[i] = 2 * atan2(sqrt(versine[i]), sqrt(fmax(0, 2 - versine[i])));
+}
+
+double bh_acceptance_mean_angle(const bh_acceptance_part *part)
+{
+    const bh_integrand angle = {polar_angles, NULL, 1e-8};
+    if (!(part->polar.from < part->polar.to))
+        return part->polar.from;
+    return bh_quadrature_directions(part, &angle).sum / part->solid_angle;
 }

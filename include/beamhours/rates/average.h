@@ -7,6 +7,7 @@
 
 #include "beamhours/base/error.h"
 #include "beamhours/rates/acceptance.h"
+#include "beamhours/rates/interpolant.h"
 
 /*
  * How: the cross section is represented once per arm by Chebyshev polynomials in 1 - cos(theta)
@@ -15,10 +16,6 @@
  * on the shape itself, refined until two rules agree; where an allowed interval cuts through a bin,
  * on its weight over theta between kinks, with a substitution that removes square-root ends.
  */
-
-/* Fills value [ub/sr], n of them, finite and >= 0, at the polar angles theta [rad] of the detected
- * particle. */
-typedef void bh_average_function(void *context, size_t n, const double *theta, double *value);
 
 typedef struct {
     bh_average_function *function;
@@ -41,7 +38,7 @@ typedef struct {
     bool converged;     /* error within the tolerance */
 } bh_average;
 
-/* Memory for sums: grows never, about 150 kB; one thread at a time.  Results do not depend on what
+/* Memory for sums: never grows, about 100 kB; one thread at a time.  Results do not depend on what
  * it was used for before.  NULL when there is no memory; NULL may be freed. */
 typedef struct bh_average_workspace bh_average_workspace;
 bh_average_workspace *bh_average_workspace_new(void);

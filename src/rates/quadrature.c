@@ -1,0 +1,236 @@
+/* quadrature.c - sums over the directions an acceptance covers, refined until they hold. */
+#include "beamhours/rates/quadrature.h"
+
+#include <math.h>
+
+/* Gauss-Legendre nodes and weights on -1 .. 1. */
+typedef struct {
+    double node, weight; /* [1] */
+} gauss_point;
+
+static const gauss_point gauss_2[] = {{-0.57735026918962576, 1}, {0.57735026918962576, 1}};
+static const gauss_point gauss_3[] = {{-0.77459666924148338, 0.55555555555555556},
+                                      {0, 0.88888888888888889},
+                                      {0.77459666924148338, 0.55555555555555556}};
+static const gauss_point gauss_4[] = {{-0.86113631159405258, 0.34785484513745386},
+                                      {-0.33998104358485626, 0.65214515486254614},
+                                      {0.33998104358485626, 0.65214515486254614},
+                                      {0.86113631159405258, 0.34785484513745386}};
+static const gauss_point gauss_5[] = {{-0.90617984593866399, 0.23692688505618909},
+                                      {-0.53846931010568309, 0.47862867049936647},
+                                      {0, 0.56888888888888889},
+                                      {0.53846931010568309, 0.47862867049936647},
+                                      {0.90617984593866399, 0.23692688505618909}};
+static const gauss_point gauss_10[] = {
+    {-0.97390652851717172, 0.066671344308688138}, {-0.86506336668898451, 0.14945134915058059},
+    {-0.67940956829902441, 0.21908636251598204},  {-0.43339539412924719, 0.26926671930999636},
+    {-0.14887433898163121, 0.29552422471475287},  {0.14887433898163121, 0.29552422471475287},
+    {0.43339539412924719, 0.26926671930999636},   {0.67940956829902441, 0.21908636251598204},
+    {0.86506336668898451, 0.14945134915058059},   {0.97390652851717172, 0.066671344308688138}};
+static const gauss_point gauss_16[] = {
+    {-0.98940093499164993, 0.027152459411754095}, {-0.94457502307323258, 0.062253523938647893},
+    {-0.86563120238783174, 0.095158511682492785}, {-0.75540440835500303, 0.12462897125553387},
+    {-0.61787624440264375, 0.14959598881657673},  {-0.45801677765722739, 0.16915651939500254},
+    {-0.28160355077925891, 0.18260341504492359},  {-0.09501250983763744, 0.1894506104550685},
+    {0.09501250983763744, 0.1894506104550685},    {0.28160355077925891, 0.18260341504492359},
+    {0.45801677765722739, 0.16915651939500254},   {0.61787624440264375, 0.14959598881657673},
+    {0.75540440835500303, 0.12462897125553387},   {0.86563120238783174, 0.095158511682492785},
+    {0.94457502307323258, 0.062253523938647893},  {0.98940093499164993, 0.027152459411754095}};
+
+enum { DEPTH = 40, PENDING = DEPTH + 1, MOST_PIECES = 2000 };
+
+/* A rectangle of directions, or with two equal out-of-plane angles a stretch of theta. */
+typedef struct {
+    double in_from, in_to, out_from, out_to; /* [rad] */
+    int depth;
+} panel;
+
+/* What a fine and a coarse rule make of a panel. */
+typedef struct {
+    double fine, coarse; /* [sr] times the unit of the function */
+} estimate;
+
+typedef struct {
+    const bh_acceptance_part *part;
+    const bh_integrand *f;
+    estimate (*rules)(const bh_acceptance_part *part, const bh_integrand *f, const panel *p);
+    void (*halve)(const panel *p, panel *lower, panel *upper);
+} scheme;
+
+static double square(double x)
+{
+    return x * x;
+}
+
+/* --- refinement --- */
+
+/* Halves panels until both rules agree, each within its own sum or within a small share of the
+ * whole's first estimate; adds what it finds to `result`. */
+static void refine(const scheme *s, panel first, bh_quadrature *result)
+{
+    panel pending[PENDING];
+    int count = 0;
+    int pieces = 0;
+    double scale = 0;
+    pending[count++] = first;
+    while (count > 0) {
+        const panel p = pending[--count];
+        const estimate e = s->rules(s->part, s->f, &p);
+        if (pieces++ == 0)
+            scale = 0.01 * fabs(e.fine);
+        const double off = fabs(e.fine - e.coarse);
+        const bool agreed = off <= s->f->tolerance * fmax(fabs(e.fine), scale);
+        if (agreed || p.depth >= DEPTH || pieces >= MOST_PIECES || !isfinite(e.fine)) {
+            result->sum += e.fine;
+            result->error += off;
+            result->converged = result->converged && agreed;
+            continue;
+        }
+        s->halve(&p, &pending[count], &pending[count + 1]);
+        count += 2;
+    }
+}
+
+static bh_quadrature scaled(bh_quadrature q, double scale)
+{
+    return (bh_quadrature){q.sum * scale, q.error * scale, q.converged};
+}
+
+/* --- directions --- */
+
+/* A tensor rule on a panel. */
+typedef struct {
+    const gauss_point *in, *out;
+    size_t ins, outs;
+} tensor;
+
+static size_t place_nodes(const panel *p, const tensor *rule, double *versine, double *weight)
+{
+    const double in_middle = (p->in_from + p->in_to) / 2;
+    const double in_half = (p->in_to - p->in_from) / 2;
+    const double out_middle = (p->out_from + p->out_to) / 2;
+    const double out_half = (p->out_to - p->out_from) / 2;
+    double in_versine[5];
+    for (size_t i = 0; i < rule->ins; i++)
+        in_versine[i] = 2 * square(sin((in_middle + in_half * rule->in[i].node) / 2));
+    size_t n = 0;
+    for (size_t j = 0; j < rule->outs; j++) {
+        const double out_versine = 2 * square(sin((out_middle + out_half * rule->out[j].node) / 2));
+        const double area = in_half * out_half * rule->out[j].weight * (1 - out_versine);
+        for (size_t i = 0; i < rule->ins; i++) {
+            versine[n] = out_versine + (1 - out_versine) * in_versine[i];
+            weight[n++] = area * rule->in[i].weight;
+        }
+    }
+    return n;
+}
+
+static double dot(size_t n, const double *a, const double *b)
+{
+    double sum = 0;
+    for (size_t i = 0; i < n; i++)
+        sum += a[i] * b[i];
+    return sum;
+}
+
+static estimate panel_rules(const bh_acceptance_part *part, const bh_integrand *f, const panel *p)
+{
+    static const tensor fine = {gauss_5, gauss_3, 5, 3};
+    static const tensor coarse = {gauss_4, gauss_2, 4, 2};
+    (void)part;
+    double versine[BH_QUADRATURE_BATCH];
+    double weight[BH_QUADRATURE_BATCH];
+    double value[BH_QUADRATURE_BATCH];
+    const size_t n = place_nodes(p, &fine, versine, weight);
+    const size_t m = place_nodes(p, &coarse, versine + n, weight + n);
+    f->function(f->context, n + m, versine, value);
+    return (estimate){dot(n, value, weight), dot(m, value + n, weight + n)};
+}
+
+/* Along the angle over which the versine changes more; the out-of-plane rule has fewer points. */
+static void halve_panel(const panel *p, panel *lower, panel *upper)
+{
+    const double in = (p->in_from + p->in_to) / 2;
+    const double out = (p->out_from + p->out_to) / 2;
+    const double wide = p->in_to - p->in_from;
+    const double high = p->out_to - p->out_from;
+    const double along_in = fabs(sin(in)) * cos(out) * wide + wide * wide / 4;
+    const double along_out = fabs(sin(out) * cos(in)) * high + high * high / 4;
+    *lower = *upper = *p;
+    lower->depth = upper->depth = p->depth + 1;
+    if (along_in >= 2 * along_out)
+        lower->in_to = upper->in_from = in;
+    else
+        lower->out_to = upper->out_from = out;
+}
+
+bh_quadrature bh_quadrature_directions(const bh_acceptance_part *part, const bh_integrand *f)
+{
+    if (part->azimuth > 0)
+        return bh_quadrature_polar(part, part->polar, f);
+    bh_quadrature result = {.converged = true};
+    if (!(part->in_from < part->in_to))
+        return result;
+    const scheme s = {part, f, panel_rules, halve_panel};
+    const bool alike = part->out_from == -part->out_to; /* up and down: half of it, twice */
+    const double bottom = alike ? 0 : part->out_from;
+    refine(&s, (panel){part->in_from, part->in_to, bottom, part->out_to, 0}, &result);
+    return scaled(result, part->scale * (alike ? 2 : 1));
+}
+
+/* --- polar angle --- */
+
+static void place_polar(const panel *p, const gauss_point *rule, size_t n, double *theta,
+                        double *weight)
+{
+    const double middle = (p->in_from + p->in_to) / 2;
+    const double half = (p->in_to - p->in_from) / 2;
+    for (size_t i = 0; i < n; i++) {
+        const double u = rule[i].node;
+        theta[i] = middle + half * u * (3 - u * u) / 2;
+        weight[i] = half * rule[i].weight * 1.5 * (1 - u * u);
+    }
+}
+
+static estimate polar_rules(const bh_acceptance_part *part, const bh_integrand *f, const panel *p)
+{
+    enum { FINE = 16, COARSE = 10, ALL = FINE + COARSE };
+    double theta[ALL];
+    double weight[ALL];
+    double versine[ALL];
+    double value[ALL];
+    place_polar(p, gauss_16, FINE, theta, weight);
+    place_polar(p, gauss_10, COARSE, theta + FINE, weight + FINE);
+    for (size_t i = 0; i < ALL; i++) {
+        const double s = sin(theta[i] / 2);
+        versine[i] = 2 * s * s;
+        weight[i] *= 2 * s * cos(theta[i] / 2) * bh_acceptance_azimuth(part, theta[i]);
+    }
+    f->function(f->context, ALL, versine, value);
+    return (estimate){dot(FINE, value, weight), dot(COARSE, value + FINE, weight + FINE)};
+}
+
+static void halve_polar(const panel *p, panel *lower, panel *upper)
+{
+    *lower = *upper = *p;
+    lower->depth = upper->depth = p->depth + 1;
+    lower->in_to = upper->in_from = (p->in_from + p->in_to) / 2;
+}
+
+bh_quadrature bh_quadrature_polar(const bh_acceptance_part *part, bh_interval polar,
+                                  const bh_integrand *f)
+{
+    /* kinks nearer than this are one: rounding of the corners */
+    static const double nothing = 1e-14;
+    const scheme s = {part, f, polar_rules, halve_polar};
+    bh_quadrature result = {.converged = true};
+    double kinks[BH_KINKS];
+    const int n = bh_acceptance_kinks(part, kinks);
+    for (int i = 0; i + 1 < n; i++) {
+        const double from = fmax(kinks[i], polar.from);
+        const double to = fmin(kinks[i + 1], polar.to);
+        if (to - from > nothing)
+            refine(&s, (panel){.in_from = from, .in_to = to}, &result);
+    }
+    return scaled(result, part->scale);
+}
