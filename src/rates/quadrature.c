@@ -8,7 +8,12 @@ typedef struct {
     double node, weight; /* [1] */
 } gauss_point;
 
-static const gauss_point gauss_2[] = {{-0.57735026918962576, 1}, {0.57735026918962576, 1}};
+/* Half of the symmetric rules of 4 and of 6 points, weights doubled: for even functions. */
+static const gauss_point even_4[] = {{0.33998104358485626, 1.30429030972509228},
+                                     {0.86113631159405258, 0.69570969027490772}};
+static const gauss_point even_6[] = {{0.23861918608319691, 0.93582786914538254},
+                                     {0.66120938646626451, 0.72152314609627714},
+                                     {0.93246951420315203, 0.34264898475834032}};
 static const gauss_point gauss_3[] = {{-0.77459666924148338, 0.55555555555555556},
                                       {0, 0.88888888888888889},
                                       {0.77459666924148338, 0.55555555555555556}};
@@ -39,10 +44,12 @@ static const gauss_point gauss_16[] = {
 
 enum { DEPTH = 40, PENDING = DEPTH + 1, MOST_PIECES = 2000 };
 
-/* A rectangle of directions, or with two equal out-of-plane angles a stretch of theta. */
+/* A rectangle of directions; or a stretch of theta, out-of-plane angles unused. */
 typedef struct {
     double in_from, in_to, out_from, out_to; /* [rad] */
+    double times;                            /* [1] so many of them by symmetry */
     int depth;
+    bool even; /* symmetric about the plane, where the function is even */
 } panel;
 
 /* What a fine and a coarse rule make of a panel. */
@@ -135,33 +142,41 @@ static double dot(size_t n, const double *a, const double *b)
 
 static estimate panel_rules(const bh_acceptance_part *part, const bh_integrand *f, const panel *p)
 {
-    static const tensor fine = {gauss_5, gauss_3, 5, 3};
-    static const tensor coarse = {gauss_4, gauss_2, 4, 2};
+    static const tensor fine[2] = {{gauss_5, gauss_4, 5, 4}, {gauss_5, even_6, 5, 3}};
+    static const tensor coarse[2] = {{gauss_4, gauss_3, 4, 3}, {gauss_4, even_4, 4, 2}};
     (void)part;
     double versine[BH_QUADRATURE_BATCH];
     double weight[BH_QUADRATURE_BATCH];
     double value[BH_QUADRATURE_BATCH];
-    const size_t n = place_nodes(p, &fine, versine, weight);
-    const size_t m = place_nodes(p, &coarse, versine + n, weight + n);
+    const size_t n = place_nodes(p, &fine[p->even], versine, weight);
+    const size_t m = place_nodes(p, &coarse[p->even], versine + n, weight + n);
     f->function(f->context, n + m, versine, value);
-    return (estimate){dot(n, value, weight), dot(m, value + n, weight + n)};
+    return (estimate){p->times * dot(n, value, weight), p->times * dot(m, value + n, weight + n)};
 }
 
-/* Along the angle over which the versine changes more; the out-of-plane rule has fewer points. */
+/* Along the angle over which the versine changes more. */
 static void halve_panel(const panel *p, panel *lower, panel *upper)
 {
+    panel half = *p;
+    half.depth++;
     const double in = (p->in_from + p->in_to) / 2;
     const double out = (p->out_from + p->out_to) / 2;
     const double wide = p->in_to - p->in_from;
     const double high = p->out_to - p->out_from;
     const double along_in = fabs(sin(in)) * cos(out) * wide + wide * wide / 4;
     const double along_out = fabs(sin(out) * cos(in)) * high + high * high / 4;
-    *lower = *upper = *p;
-    lower->depth = upper->depth = p->depth + 1;
-    if (along_in >= 2 * along_out)
+    if (along_in >= along_out) {
+        *lower = *upper = half;
         lower->in_to = upper->in_from = in;
-    else
-        lower->out_to = upper->out_from = out;
+        return;
+    }
+    if (p->even) { /* the upper half, twice */
+        half.even = false;
+        half.out_from = 0;
+        half.times *= 2;
+    }
+    *lower = *upper = half;
+    lower->out_to = upper->out_from = (half.out_from + half.out_to) / 2;
 }
 
 bh_quadrature bh_quadrature_directions(const bh_acceptance_part *part, const bh_integrand *f)
@@ -172,10 +187,10 @@ bh_quadrature bh_quadrature_directions(const bh_acceptance_part *part, const bh_
     if (!(part->in_from < part->in_to))
         return result;
     const scheme s = {part, f, panel_rules, halve_panel};
-    const bool alike = part->out_from == -part->out_to; /* up and down: half of it, twice */
-    const double bottom = alike ? 0 : part->out_from;
-    refine(&s, (panel){part->in_from, part->in_to, bottom, part->out_to, 0}, &result);
-    return scaled(result, part->scale * (alike ? 2 : 1));
+    const bool even = part->out_from == -part->out_to;
+    refine(&s, (panel){part->in_from, part->in_to, part->out_from, part->out_to, 1, 0, even},
+           &result);
+    return scaled(result, part->scale);
 }
 
 /* --- polar angle --- */

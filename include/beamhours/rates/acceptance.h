@@ -86,7 +86,7 @@ void bh_acceptance_part_of(const bh_acceptance *acceptance, int bin, bh_acceptan
  * for a rectangle, the axis for a point; not cut to the shape. */
 double bh_acceptance_edge(const bh_acceptance *acceptance, int i);
 
-/* Returns [rad] the mean polar angle of a part over its solid angle, to 1e-8. */
+/* Returns [rad] the mean polar angle of a part over its solid angle, to 1e-6 (measured 1e-8). */
 double bh_acceptance_mean_angle(const bh_acceptance_part *part);
 
 /* Returns [rad] the azimuth inside `part` at polar angle theta [rad]; unscaled.  A point has none:

@@ -27,7 +27,7 @@ typedef struct {
 
 /*
  * The integral over a part, its `scale` in it.  Rectangle: Gauss-Legendre in both angles of the
- * shape, where a function of cos theta is smooth everywhere; 5 x 3 points against 4 x 2, panels
+ * shape, where a function of cos theta is smooth everywhere; 5 x 4 points against 4 x 3, panels
  * halved until they agree.  Ring: as bh_quadrature_polar.  A part without extent gives 0.
  */
 bh_quadrature bh_quadrature_directions(const bh_acceptance_part *part, const bh_integrand *f);
