@@ -8,6 +8,73 @@
  * A test reads this file and demands that the bad plans provoke every BH_SAY_ sentence. */
 
 /* document: YAML */
+#define BH_SAY_TOO_LONG \
+    "the file is longer than 1 MiB; shorten it, with sweeps in place of many lines"
+#define BH_SAY_EMPTY \
+    "the file holds only blank lines or comments; write lines of the form `key: value`"
+#define BH_SAY_NOT_UTF8 "the byte 0x%02X is not UTF-8; save the file as UTF-8 with your editor"
+#define BH_SAY_LINE_END                                                                        \
+    "the character U+%04X would end a line though editors do not show it; save the file with " \
+    "usual line ends"
+#define BH_SAY_HIDDEN "the character U+%04X cannot be seen; delete it"
+#define BH_SAY_DEPTH  "values are nested more than %d deep; take away brackets or indentation"
+#define BH_SAY_SECOND_DOCUMENT                                                                     \
+    "a second document begins here, after --- or ...; keep one in a file, the others in files of " \
+    "their own"
+#define BH_SAY_DIRECTIVE "a line may not begin with %%; delete it, or put the text in quotes"
+#define BH_SAY_ANCHOR                                                                         \
+    "`%s` names a value for reuse, which is not done here; leave it out, or put the text in " \
+    "quotes"
+#define BH_SAY_ALIAS                                                                               \
+    "`%s` repeats a value from elsewhere, which is not done here; write the value itself, or put " \
+    "the text in quotes"
+#define BH_SAY_TAG \
+    "`%s` prescribes a type, which is not done here; leave it out, or put the text in quotes"
+#define BH_SAY_MERGE \
+    "`<<` takes over other values, which is not done here; write those values themselves"
+#define BH_SAY_KEY_TWICE "`%s` was already given in line %d; delete one of the two"
+#define BH_SAY_KEY_NO_WORD \
+    "brackets or a list stand where a key is needed; write one word before the colon"
+#define BH_SAY_KEY_EMPTY    "nothing stands before the colon; write `key: value`"
+#define BH_SAY_SECOND_COLON "`%s` has a second colon; put the text behind the first one in quotes"
+#define BH_SAY_DEEPER                                                                          \
+    "this line is indented more than the one above, which already has its value; indent both " \
+    "alike"
+#define BH_SAY_NO_COLON    "`%s` has no colon with a blank behind it; write `key: value`"
+#define BH_SAY_COLON_TIGHT "the colon has no blank behind it; write `key: value`"
+#define BH_SAY_QUOTE_OPEN \
+    "the text in quotes that begins here has no end; close it with the same quote"
+#define BH_SAY_BRACKET_OPEN \
+    "`%c` in line %d is not closed: before `%s` a comma or `%c` is missing; put it there"
+#define BH_SAY_AFTER_VALUE                                                                         \
+    "`%s` follows a value that has ended; put the whole text in one pair of quotes, or take this " \
+    "away"
+#define BH_SAY_NO_VALUE_HERE \
+    "`%s` stands where a value is needed; write the value, or put the text in quotes"
+#define BH_SAY_TAB       "a tab stands where only blanks may; indent with blanks"
+#define BH_SAY_CHARACTER "`%s` cannot begin a value; put the text in quotes"
+#define BH_SAY_DASH                                                                            \
+    "a list with dashes cannot begin behind other text; give each item a line of its own, or " \
+    "write [a, b]"
+#define BH_SAY_LINED_UP \
+    "this line does not line up with the lines it belongs to; indent them all alike"
+#define BH_SAY_MIXED \
+    "`%s` mixes list items and keys on one level; give the list a key of its own and indent it"
+#define BH_SAY_ESCAPE \
+    "`%s` has no meaning within double quotes; write \\\\ for a backslash, or use single quotes"
+#define BH_SAY_BLOCK_HEADER "`%s` cannot stand here; begin the text on the line after | or >"
+#define BH_SAY_PATH_PART \
+    "`%s` has an empty part; write names with dots between them, such as beam.current"
+#define BH_SAY_NO_ITEM \
+    "there is no `%s` in this list of %zu; name one of %s, or give a number from 1"
+#define BH_SAY_NO_ITEM_NUMBER "there is no item `%s` in this list; give a number from 1 to %zu"
+#define BH_SAY_NOTHING_INSIDE \
+    "`%s` cannot be found inside the single value `%s`; end the path before it"
+#define BH_SAY_NOTHING_GIVEN "no value is given for `%s`; write it behind the equals sign"
+#define BH_SAY_MORE_THAN_VALUE \
+    "`%s` goes beyond one value; give one value on one line, in quotes if it has # or : in it"
+#define BH_WARN_CUT \
+    "everything from `%s` on is left out as a comment; put the text in quotes if it belongs to it"
 
 /* units: quantities */
 

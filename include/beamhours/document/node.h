@@ -32,6 +32,9 @@ struct bh_node {
 
 typedef struct bh_document bh_document;
 
+/* The longest document [bytes], and the deepest nesting of lists and mappings in it. */
+enum { BH_DOCUMENT_LIMIT = 1024 * 1024, BH_NESTING_LIMIT = 32 };
+
 /*
  * Reads the one YAML document in `bytes` (need not end with NUL) called `name` in messages.
  * Every fault goes to `diags` in the words of a physicist: syntax (which ends the list), anchors,
@@ -42,9 +45,10 @@ typedef struct bh_document bh_document;
 bh_document *bh_document_parse(const char *bytes, size_t length, const char *name, bh_diags *diags);
 void bh_document_free(bh_document *document);
 
-/* The root; its name; the bytes it was read from. */
+/* The root; its name; the bytes it was read from and their number (for `from` and `to`). */
 const bh_node *bh_document_root(const bh_document *document);
 const char *bh_document_name(const bh_document *document);
+const char *bh_document_bytes(const bh_document *document, size_t *length);
 
 /* The value under `key` of a mapping, or NULL (also when `mapping` is NULL or no mapping). */
 const bh_node *bh_node_get(const bh_node *mapping, const char *key);
