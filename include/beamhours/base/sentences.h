@@ -78,6 +78,34 @@
 
 /* units: quantities */
 
+/* physics: kinematics */
+
+/* Arguments [MeV]: read, least, most. */
+#define BH_SAY_KINEMATICS_ENERGY "beam kinetic energy %g MeV: %g to %g MeV would do"
+/* Arguments [deg]: read, most. */
+#define BH_SAY_KINEMATICS_ANGLE  "angle %g deg: 0 to %g deg would do"
+/* Arguments [deg]: read, largest. */
+#define BH_SAY_KINEMATICS_UNREACHABLE                                                          \
+    "angle %g deg cannot be reached by a beam particle heavier than what it strikes: at most " \
+    "%.10g deg would do"
+/* Arguments [MeV]: beam and target mass. */
+#define BH_SAY_KINEMATICS_ONE_BRANCH                                                             \
+    "a second, slower solution needs a beam particle (%g MeV) heavier than what it strikes (%g " \
+    "MeV)"
+/* Argument [deg]: read. */
+#define BH_SAY_KINEMATICS_RECOIL  "recoil angle %g deg: 0 to 90 deg would do"
+/* Arguments [GeV^2]: read, largest. */
+#define BH_SAY_KINEMATICS_Q2      "Q2 of %g GeV2: 0 to %.10g GeV2 can be reached at this beam energy"
+/* Arguments [1]: read, least, most. */
+#define BH_SAY_KINEMATICS_EPSILON "epsilon %g: %.10g to %.10g can be reached here"
+/* Arguments [MeV]: beam and target mass. */
+#define BH_SAY_KINEMATICS_HEAVY                                                                 \
+    "epsilon does not fix the energy where the beam particle (%g MeV) is heavier than what it " \
+    "strikes (%g MeV): give an angle or Q2"
+/* Arguments [GeV^2] and [deg]: read. */
+#define BH_SAY_KINEMATICS_NO_ENERGY \
+    "no beam energy gives a Q2 of %g GeV2 at %g deg: a Q2 above 0 and an angle above 0 would do"
+
 /* schema: keys and values */
 #define BH_SAY_UNKNOWN_KEY     "no such key in %s; did you mean %s?"
 #define BH_SAY_UNKNOWN_KEY_OF  "no such key in %s; the keys there are %s"
