@@ -76,7 +76,26 @@
 #define BH_WARN_CUT \
     "everything from `%s` on is left out as a comment; put the text in quotes if it belongs to it"
 
-/* units: quantities */
+/* units: quantities.  First the text, then what is needed and two units that would do. */
+#define BH_SAY_NO_NUMBER       "'%s' does not begin with a number: %s is needed, in %s"
+#define BH_SAY_NO_QUANTITY     "'%s' is not one number with one unit: %s is needed, in %s"
+#define BH_SAY_NO_UNIT         "'%s' has no unit: %s is needed, in %s"
+#define BH_SAY_BARE_SHARE      "'%s' has no unit: for a share write %s %%"
+#define BH_SAY_UNKNOWN_UNIT    "'%s' has the unknown unit '%s': %s is needed, in %s"
+#define BH_SAY_MISSPELT_UNIT   "'%s' has the unknown unit '%s' ('%s'?): %s is needed, in %s"
+#define BH_SAY_WRONG_DIMENSION "'%s' is %s: %s is needed, in %s"
+#define BH_SAY_WRONG_UNIT      "'%s' has the unit '%s': %s is needed, in %s"
+#define BH_SAY_COULOMB         "'%s' is a charge, as C is the coulomb: %s is needed, in %s"
+#define BH_SAY_OUT_OF_RANGE    "'%s' is too large or too small to compute with: %s is needed, in %s"
+#define BH_SAY_DECIMAL_COMMA   "'%s' has a decimal comma: write '%s'"
+#define BH_SAY_COMMA           "'%s' has a comma in its number: write '%s', or '%s' if it marks thousands"
+#define BH_SAY_THOUSANDS       "'%s' has a mark between its thousands: write '%s'"
+#define BH_SAY_POWER_OF_TEN    "'%s' spells out its power of ten: write '%s'"
+#define BH_SAY_NEGATIVE_SIGMA  "'%s' has a negative uncertainty: what follows ± must be 0 or more"
+#define BH_SAY_SIGMA_UNIT \
+    "'%s' has an uncertainty that is not %s: give it in %s, or in %% of the value"
+#define BH_SAY_SHARE_OF_DEGC \
+    "'%s' has an uncertainty in %% of a temperature in degC: give it in degC or K"
 
 /* physics: kinematics */
 
