@@ -163,6 +163,70 @@
 /* matter: materials */
 
 /* plan: sense */
+#define BH_SAY_VERSION      "version %s of the format is not known; this program reads plan: 1"
+#define BH_SAY_CHARGE_OF    "%s cannot be the charge of %s; from 1 to %d would do"
+#define BH_SAY_CHARGE_FIXED "a charge for %s, which always has %d; leave charge out"
+#define BH_SAY_BEAM_SWEEP   "a sweep in the beam of the plan; write it in the beam of a setting"
+#define BH_SAY_BELOW_REST \
+    "%s of total energy is no more than the rest energy of %s, %s; more would do"
+#define BH_SAY_ENERGY_RANGE \
+    "%s is %s of kinetic energy for each nucleon; from 1 keV to 1 TeV would do"
+#define BH_SAY_NO_NUCLEONS  "%s, but %s has no mass number; give the energy of the whole particle"
+#define BH_SAY_SHARES_ADD   "fraction %s and others %s add to %s; together 100 %% or less would do"
+#define BH_SAY_OWN_OTHER    "%s is the beam's own particle; leave it out of others"
+#define BH_SAY_PAST_CURRENT "%s is past the facility's limit of %s; that or less would do"
+#define BH_SAY_PAST_POWER \
+    "%s of beam power (%s at %s) is past the facility's limit of %s; %s or less would do"
+#define BH_SAY_NOT_A_GAS  "%s for %s, which is no gas; give density instead"
+#define BH_SAY_GAS_HALF   "%s without %s; give both, or density instead"
+#define BH_SAY_VACUUM     "%s for vacuum; give its thickness alone, or nothing"
+#define BH_SAY_NO_DENSITY "the density of %s is not known; add density"
+#define BH_SAY_NO_SAMPLE \
+    "no layer of target %s is its sample; give the one that is measured role: sample"
+#define BH_SAY_NO_NUCLIDE      "%s is no element and no nuclide; write for example %s"
+#define BH_SAY_NOT_IN_SAMPLE   "no %s in the sample of target %s; it holds %s"
+#define BH_SAY_WHICH_SCATTERER "the sample of target %s holds %s; add scatterer: and one of them"
+#define BH_SAY_NO_TARGET       "no target is called %s; did you mean %s?"
+#define BH_SAY_NO_TARGET_OF    "no target is called %s; there is %s"
+#define BH_SAY_WHICH_TARGET    "there are several targets; add target: %s"
+#define BH_SAY_DUMMY_ITSELF    "target %s stands in for itself; name another one, or leave use out"
+#define BH_SAY_HALF_SHAPE      "%s without %s; give both"
+#define BH_SAY_NO_RING         "azimuth without ring; add ring, or leave azimuth out"
+#define BH_SAY_POINT_BINS      "bins of a bare solid angle; add in_plane and out_of_plane, or a ring"
+#define BH_SAY_EDGES_RISE      "%s after %s; let the edges rise"
+#define BH_SAY_ONE_EDGE        "one edge makes no bin; give two or more"
+#define BH_SAY_EDGE_OUTSIDE \
+    "the edge %s is outside the acceptance, %s to %s; an edge within it would do"
+#define BH_SAY_ARM_BINS   "%zu bins; at most %d in an arm would do"
+#define BH_SAY_ALL_BINS   "%zu bins in all settings; at most %d would do"
+#define BH_SAY_RING_ANGLE "arm %s is a ring around the beam; leave %s out"
+#define BH_SAY_RING_BEAM  "a ring from %s holds the beam itself; let it begin at a larger angle"
+#define BH_SAY_OVERLAPS_BEAM \
+    "at %s the acceptance, %s inwards, overlaps the beam; more than %s would do"
+#define BH_SAY_NO_ARM        "no arm is called %s; did you mean %s?"
+#define BH_SAY_NO_ARM_OF     "no arm is called %s; there is %s"
+#define BH_SAY_WHICH_ARM     "there are several arms; add arm: %s"
+#define BH_SAY_ARM_TWICE     "arm %s takes part twice in setting %s; once would do"
+#define BH_SAY_ARM_FIXED     "arm %s is fixed at %s; leave %s out"
+#define BH_SAY_NO_ANGLE      "arm %s has no angle in setting %s; add angle or q2"
+#define BH_SAY_TWO_SWEEPS    "%s and %s are both swept; sweep one of them in a setting"
+#define BH_SAY_MANY_SETTINGS "%zu settings after sweeps; at most %d would do"
+#define BH_SAY_ANGLE_BEYOND  "%s is beyond the largest angle of %s on %s, %s; less would do"
+#define BH_SAY_RECOIL_BEYOND "%s, but recoils leave at less than 90 deg; less would do"
+#define BH_SAY_Q2_BEYOND     "%s is beyond the largest for %s of %s on %s, %s; less would do"
+#define BH_SAY_OUTSIDE_ANGLES \
+    "%s is outside where arm %s can stand, %s to %s; an angle in between would do"
+#define BH_SAY_OUTSIDE_MOMENTA \
+    "%s is outside what arm %s can be set to, %s to %s; a momentum in between would do"
+#define BH_SAY_MOMENTUM_AWAY                                                                   \
+    "particles of %s arrive, but arm %s can be set to %s to %s; change the angle or the beam " \
+    "energy"
+#define BH_SAY_NOT_COMPUTED    "%s is not computed by this version; elastic would do"
+#define BH_SAY_NOT_FOR_NUCLIDE "%s does not describe %s; %s would do"
+#define BH_SAY_NOT_EVERY       "a name in every_setting; names belong to the settings themselves"
+#define BH_SAY_WANT_TWICE      "%s of the arm beside %s of the setting; keep one of them"
+#define BH_WARN_NOT_BUILT      "read and kept, but this version computes without it"
+#define BH_WARN_DENSITY        "%s is %s from the %s that %s has in the library"
 
 /* run: evaluation */
 

@@ -35,6 +35,7 @@ enum {
     BH_KEY_UNIQUE = 2,    /* list: the items' `name`s must differ */
     BH_KEY_OR_WORD = 4,   /* table: one word may stand in the place of the mapping */
     BH_KEY_NOT_EMPTY = 8, /* list, table, values, words: at least one item */
+    BH_KEY_OVERRIDE = 32, /* mapping: a part that overrides: no defaults, nothing is required */
     BH_KEY_NOT_BUILT = 16 /* read and checked, but no number depends on it yet */
 };
 
@@ -63,8 +64,8 @@ struct bh_schema {
     size_t size;      /* [bytes] of the struct, which begins with a bh_section */
     const bh_key *keys;
     size_t count;
-    unsigned exactly; /* bit g set: exactly one of the keys of group g is required, else at most
-                         one */
+    unsigned exactly; /* bit g: exactly one of group g is required; else at most one */
+    unsigned claimed; /* bit g: required too, but the owner of the table checks it */
 };
 
 /* Where the reader puts things. */
