@@ -113,7 +113,7 @@ static bool read_number(const bh_reading *reading, bh_written written, double *o
     double value;
     const bool starts = isdigit((unsigned char)digits[0]) || digits[0] == '.';
     if (!starts || bh_number_parse(digits, &end, &value) || *end) {
-        bh_say_node(reading, written.node, BH_SAY_NO_NUMBER, written.node->text,
+        bh_say_node(reading, written.node, BH_SAY_NOT_A_NUMBER, written.node->text,
                     written.key->example);
         return false;
     }
