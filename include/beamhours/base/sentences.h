@@ -160,6 +160,29 @@
 #define BH_SAY_STRUCTURE_SET     "there is no %s: the sets of %s for %s end at %d"
 
 /* matter: materials */
+#define BH_SAY_NO_MATERIAL_NEAR "there is no material %s; did you mean %s?"
+#define BH_SAY_NO_MATERIAL                                                                         \
+    "there is no material %s; `beamhours materials` lists them, and a path ending in .yaml would " \
+    "do"
+#define BH_SAY_NOT_A_MATERIAL \
+    "%s is no material: it does not begin with `material: 1`; choose another name or mend it"
+#define BH_SAY_MATERIAL_UNREAD  "%s; give a file that can be read, or a name of the library"
+#define BH_SAY_MATERIAL_BROKEN  "the file %s has errors; mend it or choose another material"
+#define BH_SAY_COMPOSED_OF_NEAR "%s is neither an element nor a nuclide; did you mean %s?"
+#define BH_SAY_COMPOSED_OF \
+    "%s is neither an element nor a nuclide; write symbols such as Pb or 208Pb"
+#define BH_SAY_NUCLIDE_LACKS "%s is not in the table of nuclides; name another element"
+#define BH_SAY_ISOTOPE_LACKS "%s is not in the table of nuclides; one such as %s would do"
+#define BH_SAY_NOT_NATURAL   "nature has no %s; name its isotopes, such as %s"
+#define BH_SAY_SHARE_SUM     "the shares add up to %s %%; let them add up to 100 %%"
+#define BH_SAY_VACUUM_HAS    "vacuum has no %s; leave it out, or write another state"
+#define BH_SAY_ONLY_GAS      "only a gas has %s here; leave it out, or write `state: gas`"
+#define BH_WARN_GAS_DENSITY \
+    "an ideal gas of this temperature and pressure has %s g/cm3; look at the units again"
+#define BH_WARN_EFFECT_C \
+    "mean excitation energy and density of the set belong to c = %s; look at all three again"
+#define BH_WARN_EFFECT_JOIN \
+    "these parameters do not meet at x0, which needs a = %s; look at the signs again"
 
 /* plan: sense */
 #define BH_SAY_VERSION      "version %s of the format is not known; this program reads plan: 1"
