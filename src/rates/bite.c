@@ -14,7 +14,9 @@ typedef struct {
 /* Kinetic energy [MeV] of a mass [MeV] at momentum p [MeV/c], without cancellation. */
 static double kinetic_of(double mass, double p)
 {
-    return isinf(p) ? HUGE_VAL : p * p / (sqrt(p * p + mass * mass) + mass);
+    if (p == 0 || isinf(p))
+        return p;
+    return p * p / (sqrt(p * p + mass * mass) + mass);
 }
 
 /* What the momenta allow; the recoil's energy is q2 / 2 M. */

@@ -1,0 +1,143 @@
+/* test_bite.c - angles inside a momentum bite, against the kinematics at many angles. */
+#include "beamhours/rates/bite.h"
+
+#include <math.h>
+#include <stdbool.h>
+
+#include "../suite.h"
+#include "beamhours/units/constants.h"
+
+#define D BH_DEGREE
+
+static const struct {
+    const char *what;
+    bh_collision in;
+} collisions[] = {
+    {"electron on proton", {BH_MASS_ELECTRON, BH_MASS_PROTON, 855}},
+    {"electron on lead", {BH_MASS_ELECTRON, 193687.1, 450}},
+    {"massless on proton", {0, BH_MASS_PROTON, 100}},
+    {"muon on proton", {BH_MASS_MUON, BH_MASS_PROTON, 94.5}},
+    {"proton on proton", {BH_MASS_PROTON, BH_MASS_PROTON, 200}},
+    {"alpha on gold", {BH_MASS_ALPHA, 183432.8, 5}},
+    {"alpha on proton", {BH_MASS_ALPHA, BH_MASS_PROTON, 20}},
+    {"proton on electron", {BH_MASS_PROTON, BH_MASS_ELECTRON, 1000}},
+};
+
+static const bh_detected kinds[] = {BH_DETECTED_SCATTERED, BH_DETECTED_SLOW, BH_DETECTED_RECOIL};
+
+/* Momentum [MeV/c] of the detected particle at an angle [rad]; NAN where there is none. */
+static double momentum(const bh_collision *in, bh_detected detected, double angle)
+{
+    bh_event event;
+    bh_code code = BH_EDOMAIN;
+    if (detected == BH_DETECTED_RECOIL)
+        code = bh_kinematics_recoil(in, angle, &event, NULL);
+    else
+        code = bh_kinematics_scattered(
+            in, angle, detected == BH_DETECTED_SLOW ? BH_BRANCH_SLOW : BH_BRANCH_FAST, &event,
+            NULL);
+    if (code != BH_OK)
+        return NAN;
+    return detected == BH_DETECTED_RECOIL ? event.recoil_momentum : event.scattered_momentum;
+}
+
+static double largest_angle(const bh_collision *in, bh_detected detected)
+{
+    return detected == BH_DETECTED_RECOIL ? BH_PI / 2 : bh_kinematics_largest_angle(in);
+}
+
+START_TEST(inside_is_inside)
+{
+    const bh_collision *in = &collisions[_i / COUNT(kinds)].in;
+    const bh_detected detected = kinds[_i % COUNT(kinds)];
+    if (detected == BH_DETECTED_SLOW && in->mass <= in->target)
+        return;
+    const double largest = largest_angle(in, detected);
+    const double one = momentum(in, detected, 0.3 * largest);
+    const double other = momentum(in, detected, 0.6 * largest);
+    const bh_bite bite = {detected, fmin(one, other), fmax(one, other)};
+    bh_interval found;
+    size_t count = 7;
+    bh_error err;
+    ck_assert_msg(bh_bite_angles(in, &bite, &found, &count, &err) == BH_OK, "%s", err.text);
+    ck_assert_uint_eq(count, 1);
+    /* a small loss of energy leaves fewer digits to the momentum: 1e-16 E / loss */
+    ck_assert_msg(fabs(found.from / (0.3 * largest) - 1) < 1e-7 &&
+                      fabs(found.to / (0.6 * largest) - 1) < 1e-7,
+                  "%s, %d: %.9g to %.9g of %.9g", collisions[_i / COUNT(kinds)].what, (int)detected,
+                  found.from, found.to, largest);
+    for (int i = 1; i < 200; i++) {
+        const double angle = largest * i / 200;
+        const double p = momentum(in, detected, angle);
+        if (fabs(angle / largest - 0.3) < 1e-6 || fabs(angle / largest - 0.6) < 1e-6)
+            continue;
+        const bool by_momentum = p >= bite.momentum_from && p <= bite.momentum_to;
+        ck_assert_int_eq(by_momentum, angle >= found.from && angle <= found.to);
+    }
+}
+END_TEST
+
+START_TEST(wide_bites_reach_the_ends)
+{
+    const bh_collision *in = &collisions[_i / COUNT(kinds)].in;
+    const bh_detected detected = kinds[_i % COUNT(kinds)];
+    const bh_bite all = {detected, 0, HUGE_VAL};
+    const bh_bite above = {detected, 1e9, HUGE_VAL};
+    const bh_bite still = {detected, 0, 1e-9};
+    bh_interval found = {0, 0};
+    size_t count = 7;
+    if (detected == BH_DETECTED_SLOW && in->mass <= in->target) {
+        ck_assert_int_eq(bh_bite_angles(in, &all, &found, &count, NULL), BH_EDOMAIN);
+        ck_assert_uint_eq(count, 7);
+        return;
+    }
+    ck_assert_int_eq(bh_bite_angles(in, &all, &found, &count, NULL), BH_OK);
+    ck_assert(count == 1 && found.from == 0 && found.to == largest_angle(in, detected));
+    ck_assert_int_eq(bh_bite_angles(in, &above, &found, &count, NULL), BH_OK);
+    ck_assert_uint_eq(count, 0);
+    ck_assert_int_eq(bh_bite_angles(in, &still, &found, &count, NULL), BH_OK);
+    /* only a recoil, and a beam that a like mass stops, can stand still */
+    ck_assert_uint_eq(count, detected == BH_DETECTED_RECOIL || in->mass == in->target);
+}
+END_TEST
+
+START_TEST(odd_bites_are_refused)
+{
+    const bh_bite bad[] = {{BH_DETECTED_SCATTERED, 5, 5},
+                           {BH_DETECTED_SCATTERED, NAN, 5},
+                           {BH_DETECTED_SCATTERED, -1, 5},
+                           {BH_DETECTED_RECOIL, 5, NAN}};
+    bh_interval out;
+    size_t count = 7;
+    bh_error err;
+    for (int i = 0; i < COUNT(bad); i++)
+        ck_assert_int_eq(bh_bite_angles(&collisions[0].in, &bad[i], &out, &count, &err),
+                         BH_EDOMAIN);
+    const bh_bite good = {BH_DETECTED_SCATTERED, 5, 50};
+    const bh_collision none = {0.5, 0, 100};
+    ck_assert_int_eq(bh_bite_angles(&none, &good, &out, &count, &err), BH_EDOMAIN);
+    ck_assert_uint_eq(count, 7);
+}
+END_TEST
+
+START_TEST(share_under_resolution)
+{
+    const bh_bite bite = {BH_DETECTED_SCATTERED, 95, 105};
+    ck_assert(bh_bite_share(&bite, 100, 0) == 1 && bh_bite_share(&bite, 106, 0) == 0);
+    /* normal distribution: 68.268949 % within one standard deviation, half beyond an edge */
+    ck_assert_double_eq_tol(bh_bite_share(&bite, 100, 5), 0.682689492137, 1e-11);
+    ck_assert_double_eq_tol(bh_bite_share(&bite, 95, 0.1), 0.5, 1e-12);
+    const bh_bite open = {BH_DETECTED_SCATTERED, 0, HUGE_VAL};
+    ck_assert_double_eq_tol(bh_bite_share(&open, 100, 5), 1, 1e-15);
+}
+END_TEST
+
+int main(void)
+{
+    TCase *tests = tcase_create("bite");
+    tcase_add_loop_test(tests, inside_is_inside, 0, COUNT(collisions) * COUNT(kinds));
+    tcase_add_loop_test(tests, wide_bites_reach_the_ends, 0, COUNT(collisions) * COUNT(kinds));
+    tcase_add_test(tests, odd_bites_are_refused);
+    tcase_add_test(tests, share_under_resolution);
+    return run_suite("bite", tests);
+}
