@@ -1,4 +1,4 @@
-/* scalar.c - one value: quantities with their bounds, bare numbers, whole numbers. */
+/* single.c - one value: quantities with their bounds, bare numbers, whole numbers. */
 #include <ctype.h>
 #include <math.h>
 #include <string.h>
