@@ -21,6 +21,7 @@ typedef enum {
 enum {
     BH_FACTORS_MOST = 3, /* values that `evaluate` fills at most */
     BH_TERMS_MOST = 160, /* of a sum over terms */
+    BH_STEPS_MOST = 16,  /* Gaussians in a sum */
     BH_SHAPE_MOST = 8    /* numbers that describe a shape */
 };
 
@@ -30,6 +31,7 @@ typedef struct {
     double number[BH_SHAPE_MOST]; /* [1] in the units of the family */
     int count;
     double term[2][BH_TERMS_MOST]; /* [1] in the units of the family */
+    int step[BH_STEPS_MOST];
 } bh_shape;
 
 struct bh_structure {
@@ -109,7 +111,8 @@ double bh_density_radius(int z, int a, bool *measured);
 void bh_density_describe(bh_structure *structure, const bh_density *density);
 
 /* Makes `shape` a sum of Gaussians of rms radius `width` [fm], `count` radii `at` [fm] and
- * fractions `share` [1]; renormalised. */
+ * fractions `share` [1]; renormalised.  The radii rise and are multiples of 0.1 fm, at most 1.5 fm
+ * apart. */
 typedef struct {
     double width; /* [fm] */
     int count;

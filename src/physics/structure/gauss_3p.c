@@ -41,6 +41,9 @@ bh_code bh_prepare_gauss_3p(bh_structure *structure, int set, bh_error *err)
     }
     bh_density_describe(structure, density);
     structure->evaluate = gauss;
-    bh_fourier_bessel_make(&structure->shape[0], edge, TERMS, coefficient);
+    int count = TERMS; /* without those lost in rounding: less to sum */
+    while (count > 1 && fabs(coefficient[count - 1]) < 1e-15 * fabs(coefficient[0]))
+        count--;
+    bh_fourier_bessel_make(&structure->shape[0], edge, count, coefficient);
     return BH_OK;
 }
