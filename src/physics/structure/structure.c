@@ -61,6 +61,14 @@ static bh_code refuse_name(const char *name, bh_error *err)
     return bh_fail(err, BH_EPLAN, BH_SAY_STRUCTURE_UNKNOWN, name, near ? near : "default");
 }
 
+static bh_code refuse_nucleus(const char *name, const bh_structure *of, bh_error *err)
+{
+    char nucleus[8], fitting[400];
+    list_fitting(of->z, of->a, fitting, sizeof fitting);
+    return bh_fail(err, BH_EPLAN, BH_SAY_STRUCTURE_NUCLEUS, name,
+                   bh_nuclide_name(of->z, of->a, nucleus), fitting);
+}
+
 /* "fourier-bessel/2" -> its row, 2; refused where there is no such row, nucleus or set. */
 static bh_code choose(const char *name, const bh_structure *of, const bh_form_factor **row,
                       int *set, bh_error *err)
@@ -81,15 +89,12 @@ static bh_code choose(const char *name, const bh_structure *of, const bh_form_fa
         *set = atoi(suffix + 1); /* NOLINT(cert-err34-c): at most three digits */
     }
     const int sets = (*row)->sets(of->z, of->a);
-    char nucleus[8], fitting[400];
-    (void)bh_nuclide_name(of->z, of->a, nucleus);
-    if (sets == 0) {
-        list_fitting(of->z, of->a, fitting, sizeof fitting);
-        return bh_fail(err, BH_EPLAN, BH_SAY_STRUCTURE_NUCLEUS, name, nucleus, fitting);
-    }
+    if (sets == 0)
+        return refuse_nucleus(name, of, err);
+    char nucleus[8];
     if (*set < 1 || *set > sets)
-        return bh_fail(err, BH_EPLAN, BH_SAY_STRUCTURE_SET, name, (*row)->model.name, nucleus,
-                       sets);
+        return bh_fail(err, BH_EPLAN, BH_SAY_STRUCTURE_SET, name, (*row)->model.name,
+                       bh_nuclide_name(of->z, of->a, nucleus), sets);
     return BH_OK;
 }
 
