@@ -91,10 +91,11 @@ static bh_code choose(const char *name, const bh_structure *of, const bh_form_fa
     const int sets = (*row)->sets(of->z, of->a);
     if (sets == 0)
         return refuse_nucleus(name, of, err);
-    char nucleus[8];
-    if (*set < 1 || *set > sets)
+    if (*set < 1 || *set > sets) {
+        char nucleus[8];
         return bh_fail(err, BH_EPLAN, BH_SAY_STRUCTURE_SET, name, (*row)->model.name,
                        bh_nuclide_name(of->z, of->a, nucleus), sets);
+    }
     return BH_OK;
 }
 
