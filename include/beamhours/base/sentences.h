@@ -243,12 +243,11 @@
 #define BH_SAY_MOMENTUM_AWAY                                                                   \
     "particles of %s arrive, but arm %s can be set to %s to %s; change the angle or the beam " \
     "energy"
-#define BH_SAY_NOT_COMPUTED    "%s is not computed by this version; elastic would do"
-#define BH_SAY_NOT_FOR_NUCLIDE "%s does not describe %s; %s would do"
-#define BH_SAY_NOT_EVERY       "a name in every_setting; names belong to the settings themselves"
-#define BH_SAY_WANT_TWICE      "%s of the arm beside %s of the setting; keep one of them"
-#define BH_WARN_NOT_BUILT      "read and kept, but this version computes without it"
-#define BH_WARN_DENSITY        "%s is %s from the %s that %s has in the library"
+#define BH_SAY_NOT_COMPUTED "%s is not computed by this version; elastic would do"
+#define BH_SAY_NOT_EVERY    "a name in every_setting; names belong to the settings themselves"
+#define BH_SAY_WANT_TWICE   "%s of the arm beside %s of the setting; keep one of them"
+#define BH_WARN_NOT_BUILT   "read and kept, but this version computes without it"
+#define BH_WARN_DENSITY     "%s is %s from the %s that %s has in the library"
 
 /* run: evaluation */
 

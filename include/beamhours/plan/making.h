@@ -1,0 +1,87 @@
+/* making.h - what the files of the plan room share while a plan is made. */
+#ifndef BH_PLAN_MAKING_H
+#define BH_PLAN_MAKING_H
+
+#include "beamhours/matter/material.h"
+#include "beamhours/physics/kinematics.h"
+#include "beamhours/plan/plan.h"
+#include "beamhours/plan/raw.h"
+
+/* Limits of the format. */
+enum { BH_MOST_SETTINGS = 10000, BH_MOST_ARM_BINS = 1000, BH_MOST_BINS = 1000000 };
+
+/* A plan with all that it was made from.  `plan` is first: freeing it frees the whole. */
+typedef struct {
+    bh_plan plan;
+    bh_document *document;
+    bh_raw_plan raw;
+    bh_reading reading;
+    bh_material_library *library;
+    bh_target *targets; /* plan.targets while they are made */
+    bh_arm *arms;
+} bh_making;
+
+/* As bh_say, but not the same sentence at the same place again: what settings share is looked at
+ * once for each of them. */
+void bh_tell(const bh_making *making, bh_mark at, const bh_section *section, const char *key,
+             const char *fmt, ...) BH_PRINTF(5, 6);
+
+/* A name that was not found among `count` `names`: sentence `near_fmt` takes it and the nearest,
+ * `all_fmt` it and all of them. */
+typedef struct {
+    const bh_section *section;
+    const char *key;
+    const bh_word *word;
+    const char *const *names;
+    size_t count;
+} bh_unfound;
+void bh_tell_no_target(const bh_making *making, const bh_unfound *unfound);
+void bh_tell_no_arm(const bh_making *making, const bh_unfound *unfound);
+
+/* The makers, in this order; each complains and goes on.  BH_ENOMEM alone is returned. */
+void bh_make_plan_beam(bh_making *making);
+BH_CHECKED bh_code bh_make_targets(bh_making *making);
+BH_CHECKED bh_code bh_make_arms(bh_making *making);
+BH_CHECKED bh_code bh_make_models(bh_making *making);
+BH_CHECKED bh_code bh_make_settings(bh_making *making);
+BH_CHECKED bh_code bh_make_schedule(bh_making *making);
+void bh_warn_not_built(const bh_making *making);
+
+/* The beam that `raw` describes, with value `i` of what it sweeps; what cannot be said is NaN. */
+BH_CHECKED bh_code bh_make_beam(const bh_making *making, const bh_raw_beam *raw, size_t i,
+                                bh_beam *out);
+
+/* Value `i` of a sweep, or its only one; NaN where there is none. */
+bh_value bh_sweep_value(const bh_sweep *sweep, size_t i);
+
+/* Layers from a list of bh_raw_layer. */
+BH_CHECKED bh_code bh_make_layers(const bh_making *making, const bh_list *raw, bh_layer **out,
+                                  size_t *count);
+
+/* The most abundant nuclide that `target` counts as its scatterer; false when there is none. */
+bool bh_main_nuclide(const bh_target *target, bh_constituent *out);
+
+/* Atoms of a nuclide in the samples of `target`, summed. */
+typedef struct {
+    int z, a;
+    double mass;   /* [MeV] */
+    double amount; /* [1/cm2] */
+} bh_amount;
+enum { BH_MOST_AMOUNTS = 200 };
+size_t bh_sample_nuclides(const bh_target *target, bh_amount out[BH_MOST_AMOUNTS]);
+
+/* Sense of one arm of one setting; complains. */
+typedef struct {
+    const bh_making *making;
+    const bh_raw_aim *aim; /* its section leads to the keys */
+    const bh_setting *setting;
+    bh_setting_arm *row;
+} bh_sight;
+void bh_check_row(const bh_sight *sight);
+void bh_check_process(const bh_making *making, const bh_section *section, const bh_word *process);
+
+/* Applies change `i` (from 0) to the document. */
+void bh_apply_change(bh_document *document, const bh_change *change, size_t i,
+                     const bh_reading *reading);
+
+#endif

@@ -1,0 +1,198 @@
+/* sight.c - whether an arm can do what a setting asks of it. */
+#include <math.h>
+
+#include "beamhours/base/sentences.h"
+#include "beamhours/plan/making.h"
+#include "beamhours/schema/reading.h"
+#include "beamhours/units/constants.h"
+#include "beamhours/units/nuclide.h"
+
+/* Where the angle of the row was written. */
+struct place {
+    const bh_section *section;
+    const char *key;
+    bh_mark at;
+};
+
+static const char *angle_text(double angle, char out[BH_QUANTITY_SIZE])
+{
+    return bh_quantity_text(angle, BH_DIM_ANGLE, out);
+}
+
+static const char *name_of(const bh_arm *arm)
+{
+    return arm->name.text ? arm->name.text : "?";
+}
+
+/* Beam and scatterer of the row; false where one of them is not known. */
+static bool collision_of(const bh_sight *sight, bh_collision *out, char nuclide[8])
+{
+    const bh_beam *beam = &sight->setting->beam;
+    bh_constituent main;
+    if (!(beam->kinetic_energy.value > 0.0) || !(beam->particle.mass > 0.0))
+        return false;
+    if (!sight->setting->target || !bh_main_nuclide(sight->setting->target, &main))
+        return false;
+    *out = (bh_collision){
+        .mass = beam->particle.mass, .target = main.mass, .kinetic = beam->kinetic_energy.value};
+    bh_nuclide_name(main.z, main.a, nuclide);
+    return true;
+}
+
+/* --- q2 to angle --- */
+
+static void angle_from_q2(const bh_sight *sight)
+{
+    bh_setting_arm *row = sight->row;
+    bh_collision collision;
+    bh_event event;
+    char nuclide[8];
+    row->angle = (bh_value){.value = NAN, .at = row->q2.at};
+    if (isnan(row->q2.value) || !collision_of(sight, &collision, nuclide))
+        return;
+    const double largest = bh_kinematics_largest_q2(&collision);
+    if (bh_kinematics_q2(&collision, row->q2.value, &event, NULL) == BH_OK) {
+        const bool recoil = row->arm.detects == BH_DETECTS_RECOIL;
+        row->angle.value = recoil ? event.recoil_angle : event.scattered_angle;
+        return;
+    }
+    char q2[BH_QUANTITY_SIZE], energy[BH_QUANTITY_SIZE], most[BH_QUANTITY_SIZE];
+    bh_tell(sight->making, row->q2.at, &sight->aim->section, "q2", BH_SAY_Q2_BEYOND,
+            bh_quantity_text(row->q2.value, BH_DIM_Q2, q2), sight->setting->beam.particle.name,
+            bh_quantity_text(collision.kinetic, BH_DIM_ENERGY, energy), nuclide,
+            bh_quantity_text(largest, BH_DIM_Q2, most));
+}
+
+/* --- reach --- */
+
+static bool reachable(const bh_sight *sight, const struct place *place, bh_event *event)
+{
+    const bh_setting_arm *row = sight->row;
+    const double angle = row->angle.value;
+    bh_collision collision;
+    char nuclide[8], here[BH_QUANTITY_SIZE], most[BH_QUANTITY_SIZE];
+    if (!collision_of(sight, &collision, nuclide))
+        return false;
+    if (row->arm.detects == BH_DETECTS_RECOIL) {
+        if (bh_kinematics_recoil(&collision, angle, event, NULL) == BH_OK && angle < BH_PI / 2.0)
+            return true;
+        bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_RECOIL_BEYOND,
+                angle_text(angle, here));
+        return false;
+    }
+    if (bh_kinematics_scattered(&collision, angle, BH_BRANCH_FAST, event, NULL) == BH_OK)
+        return true;
+    /* A recoil may still arrive there. */
+    if (row->arm.detects == BH_DETECTS_EITHER && angle < BH_PI / 2.0)
+        return bh_kinematics_recoil(&collision, angle, event, NULL) == BH_OK;
+    bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_ANGLE_BEYOND,
+            angle_text(angle, here), sight->setting->beam.particle.name, nuclide,
+            angle_text(bh_kinematics_largest_angle(&collision), most));
+    return false;
+}
+
+static void check_momentum(const bh_sight *sight, const struct place *place, const bh_event *event)
+{
+    const bh_setting_arm *row = sight->row;
+    const bh_extent *range = &row->arm.momentum_range;
+    const bool recoil = row->arm.detects == BH_DETECTS_RECOIL;
+    char here[BH_QUANTITY_SIZE], from[BH_QUANTITY_SIZE], to[BH_QUANTITY_SIZE];
+    if (!range->given)
+        return;
+    bh_quantity_text(range->from, BH_DIM_MOMENTUM, from);
+    bh_quantity_text(range->to, BH_DIM_MOMENTUM, to);
+    if (row->central_momentum.given) {
+        const double p = row->central_momentum.value;
+        if (p < range->from || p > range->to)
+            bh_tell(sight->making, row->central_momentum.at, &sight->aim->section,
+                    "central_momentum", BH_SAY_OUTSIDE_MOMENTA,
+                    bh_quantity_text(p, BH_DIM_MOMENTUM, here), name_of(&row->arm), from, to);
+        return;
+    }
+    if (!event)
+        return;
+    const double p = recoil ? event->recoil_momentum : event->scattered_momentum;
+    if (p < range->from || p > range->to)
+        bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_MOMENTUM_AWAY,
+                bh_quantity_text(p, BH_DIM_MOMENTUM, here), name_of(&row->arm), from, to);
+}
+
+/* --- room --- */
+
+static void check_range(const bh_sight *sight, const struct place *place)
+{
+    const bh_setting_arm *row = sight->row;
+    const bh_extent *range = &row->arm.angle_range;
+    char here[BH_QUANTITY_SIZE], from[BH_QUANTITY_SIZE], to[BH_QUANTITY_SIZE];
+    const double slack = 1e-9; /* of unit conversion */
+    if (range->given &&
+        (row->angle.value < range->from - slack || row->angle.value > range->to + slack))
+        bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_OUTSIDE_ANGLES,
+                angle_text(row->angle.value, here), name_of(&row->arm),
+                angle_text(range->from, from), angle_text(range->to, to));
+}
+
+static void check_overlap(const bh_sight *sight, const struct place *place)
+{
+    const bh_setting_arm *row = sight->row;
+    const bh_extent *in = &row->arm.in_plane, *out = &row->arm.out_of_plane;
+    const double angle = row->angle.value;
+    const bool flat = row->arm.shape == BH_SHAPE_RECTANGLE;
+    const double inwards = flat ? -in->from : 0.0;
+    const bool level = !flat || (out->from <= 0.0 && out->to >= 0.0);
+    const bool across = !flat || angle + in->to >= 0.0;
+    char here[BH_QUANTITY_SIZE], half[BH_QUANTITY_SIZE], least[BH_QUANTITY_SIZE];
+    if (level && across && angle - inwards <= 0.0)
+        bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_OVERLAPS_BEAM,
+                angle_text(angle, here), angle_text(inwards, half), angle_text(inwards, least));
+}
+
+/* Unequal bins of a flat acceptance are given in angles from the beam. */
+static void check_edges(const bh_sight *sight)
+{
+    const bh_arm *arm = &sight->row->arm;
+    const double angle = sight->row->angle.value, slack = 1e-9;
+    const double from = angle + arm->in_plane.from, to = angle + arm->in_plane.to;
+    char here[BH_QUANTITY_SIZE], low[BH_QUANTITY_SIZE], high[BH_QUANTITY_SIZE];
+    const bh_raw_arm *raw = sight->making->raw.arms.items;
+    for (size_t i = 0; i < sight->making->plan.arm_count; i++) {
+        if (sight->making->arms[i].edges != arm->edges || raw[i].edges.count == 0)
+            continue;
+        for (size_t k = 0; k < raw[i].edges.count; k++) {
+            const bh_value *edge = &raw[i].edges.items[k];
+            if (edge->value < from - slack || edge->value > to + slack)
+                bh_tell(sight->making, edge->at, &raw[i].section, "edges", BH_SAY_EDGE_OUTSIDE,
+                        angle_text(edge->value, here), angle_text(from, low), angle_text(to, high));
+        }
+    }
+}
+
+static struct place place_of(const bh_sight *sight)
+{
+    const bh_setting_arm *row = sight->row;
+    struct place place = {&sight->aim->section, row->q2.given ? "q2" : "angle", row->angle.at};
+    const bh_raw_arm *raw = sight->making->raw.arms.items;
+    for (size_t i = 0; row->arm.angle.given && i < sight->making->plan.arm_count; i++)
+        if (sight->making->arms[i].angle.given && raw[i].name.text == row->arm.name.text)
+            place.section = &raw[i].section; /* fixed: it was written with the arm */
+    return place;
+}
+
+void bh_check_row(const bh_sight *sight)
+{
+    bh_setting_arm *row = sight->row;
+    bh_event event;
+    if (row->arm.shape == BH_SHAPE_RING)
+        return;
+    if (row->q2.given)
+        angle_from_q2(sight);
+    if (isnan(row->angle.value))
+        return;
+    const struct place place = place_of(sight);
+    check_range(sight, &place);
+    check_overlap(sight, &place);
+    if (row->arm.edges && row->arm.shape == BH_SHAPE_RECTANGLE)
+        check_edges(sight);
+    const bool reached = reachable(sight, &place, &event);
+    check_momentum(sight, &place, reached ? &event : NULL);
+}

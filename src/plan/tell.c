@@ -1,0 +1,71 @@
+/* tell.c - complaints about sense, each made once. */
+#include <stdarg.h>
+#include <stdio.h>
+#include <string.h>
+
+#include "beamhours/base/nearest.h"
+#include "beamhours/base/sentences.h"
+#include "beamhours/plan/making.h"
+#include "beamhours/schema/reading.h"
+
+static bool same_place(bh_mark a, bh_mark b)
+{
+    return a.line == b.line && a.column == b.column && a.file && b.file &&
+           strcmp(a.file, b.file) == 0;
+}
+
+static bool told(const bh_diags *diags, bh_mark at, const char *text)
+{
+    for (size_t i = 0; i < bh_diags_count(diags); i++) {
+        const bh_diag *d = bh_diags_at(diags, i);
+        if (same_place(d->at, at) && strcmp(d->text, text) == 0)
+            return true;
+    }
+    return false;
+}
+
+void bh_tell(const bh_making *making, bh_mark at, const bh_section *section, const char *key,
+             const char *fmt, ...)
+{
+    char text[600];
+    va_list args;
+    va_start(args, fmt);
+    (void)vsnprintf(text, sizeof text, fmt, args);
+    va_end(args);
+    if (!told(making->reading.diags, at, text))
+        bh_say(&making->reading, at, section, key, "%s", text);
+}
+
+/* "A, B or C"; cut where there are many. */
+static const char *all_of(const bh_unfound *unfound, char *out, size_t size)
+{
+    const char *some[9] = {NULL};
+    for (size_t i = 0; i < unfound->count && i < 8; i++)
+        some[i] = unfound->names[i] ? unfound->names[i] : "?";
+    return bh_words_text(some, out, size);
+}
+
+void bh_tell_no_target(const bh_making *making, const bh_unfound *unfound)
+{
+    const bh_word *word = unfound->word;
+    const char *near = bh_nearest(word->text, unfound->names, unfound->count);
+    char all[300];
+    if (near)
+        bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_TARGET, word->text,
+                near);
+    else
+        bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_TARGET_OF, word->text,
+                all_of(unfound, all, sizeof all));
+}
+
+void bh_tell_no_arm(const bh_making *making, const bh_unfound *unfound)
+{
+    const bh_word *word = unfound->word;
+    const char *near = bh_nearest(word->text, unfound->names, unfound->count);
+    char all[300];
+    if (near)
+        bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_ARM, word->text, near);
+    else
+        bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_ARM_OF, word->text,
+                all_of(unfound, all, sizeof all));
+}
