@@ -86,5 +86,7 @@ unsigned bh_material_hazards(const bh_material *material)
         found |= BIT(REACTIVE);
     if (found & BIT(URANIUM))
         found &= ~BIT(RADIOACTIVE);
-    return found & (BIT(BERYLLIUM) | BIT(LEAD) | BIT(URANIUM)) ? found & ~BIT(TOXIC) : found;
+    if (found & (BIT(BERYLLIUM) | BIT(LEAD) | BIT(URANIUM)))
+        found &= ~BIT(TOXIC);
+    return found;
 }

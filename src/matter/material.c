@@ -234,23 +234,31 @@ typedef struct {
     bool failed;
 } listing;
 
+/* Makes room for one more; false without memory. */
+static bool make_room(listing *to)
+{
+    if (to->count < to->room)
+        return true;
+    const size_t room = 2 * to->room + 64;
+    void *more = realloc((void *)to->names, room * sizeof *to->names);
+    if (!more)
+        return false;
+    to->names = more;
+    to->room = room;
+    return true;
+}
+
 static void list_name(bh_material_library *library, listing *to, const char *file)
 {
     char *name = copy(library->arena, file);
-    if (to->count == to->room && name) {
-        const size_t room = 2 * to->room + 64;
-        const char **more = realloc((void *)to->names, room * sizeof *more);
-        to->names = more ? more : to->names;
-        to->room = more ? room : to->room;
-    }
-    to->failed = to->failed || !name || to->count == to->room;
+    to->failed = to->failed || !name || !make_room(to);
     if (to->failed)
         return;
     name[strlen(name) - SUFFIX] = '\0';
     to->names[to->count++] = name;
 }
 
-/* Whether the file is a material: only its first bytes are looked at. */
+/* Whether the file is a material and no plan. */
 static bool holds_material(const char *folder, const char *file)
 {
     bh_text path = path_of(folder, file, "");

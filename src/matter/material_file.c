@@ -244,22 +244,35 @@ bh_code bh_material_read(const bh_material_source *source, bh_arena *arena, bh_d
     return code;
 }
 
+/* The first character behind blanks, at most `end`. */
+static const char *skip_blanks(const char *p, const char *end)
+{
+    while (p < end && (*p == ' ' || *p == '\r'))
+        p++;
+    return p;
+}
+
+/* Behind comments and empty lines. */
+static const char *skip_comments(const char *p, const char *end)
+{
+    p = skip_blanks(p, end);
+    while (p < end && (*p == '#' || *p == '\n')) {
+        const char *line = memchr(p, '\n', (size_t)(end - p));
+        p = skip_blanks(line ? line + 1 : end, end);
+    }
+    return p;
+}
+
 bool bh_material_is_file(const char *bytes, size_t length)
 {
     static const char key[] = "material";
     static const char mark[] = "\xef\xbb\xbf"; /* a byte order mark */
+    const size_t size = sizeof key - 1;
     const char *end = bytes + length;
-    const char *p = bytes;
-    if (length >= 3 && memcmp(p, mark, 3) == 0)
-        p += 3;
-    while (p < end && (*p == '#' || *p == '\n' || *p == '\r' || *p == ' ')) {
-        const char *line = memchr(p, '\n', (size_t)(end - p));
-        p = *p == ' ' ? p + 1 : line ? line + 1 : end;
-    }
-    const size_t n = sizeof key - 1;
-    if ((size_t)(end - p) <= n || memcmp(p, key, n) != 0)
+    const bool marked = length >= sizeof mark - 1 && memcmp(bytes, mark, sizeof mark - 1) == 0;
+    const char *p = skip_comments(marked ? bytes + sizeof mark - 1 : bytes, end);
+    if ((size_t)(end - p) < size || memcmp(p, key, size) != 0)
         return false;
-    for (p += n; p < end && *p == ' '; p++)
-        ;
+    p = skip_blanks(p + size, end);
     return p < end && *p == ':';
 }

@@ -154,22 +154,6 @@ static const char *short_form(const char *name)
     return NULL;
 }
 
-/* "lead-208" for "208Pb" or "Pb208"; empty when it is no nuclide. */
-static void isotope_name(const char *name, char out[BH_MATERIAL_NAME_SIZE])
-{
-    out[0] = '\0';
-    const bh_nuclide *nuclide = bh_nuclide_suggest(name);
-    int z;
-    int a;
-    if (bh_nuclide_parse(name, &z, &a))
-        nuclide = a > 0 ? bh_nuclide_find(z, a) : NULL;
-    const char *element = nuclide ? bh_element_symbol(nuclide->z) : NULL;
-    if (element && nuclide->z == 6)
-        (void)snprintf(out, BH_MATERIAL_NAME_SIZE, "carbon-%d", nuclide->a);
-    else if (element && short_form(element))
-        (void)snprintf(out, BH_MATERIAL_NAME_SIZE, "%s-%d", short_form(element), nuclide->a);
-}
-
 static const char *known(const char *name, const char *const *names, size_t count)
 {
     for (size_t i = 0; name && i < count; i++)
@@ -178,13 +162,27 @@ static const char *known(const char *name, const char *const *names, size_t coun
     return NULL;
 }
 
+/* The one of `names` that is an isotope: "lead-208" for "208Pb" or "Pb208"; else NULL. */
+static const char *isotope(const char *name, const char *const *names, size_t count)
+{
+    char full[BH_MATERIAL_NAME_SIZE];
+    int z;
+    int a;
+    const bh_nuclide *nuclide = bh_nuclide_suggest(name);
+    if (bh_nuclide_parse(name, &z, &a))
+        nuclide = a > 0 ? bh_nuclide_find(z, a) : NULL;
+    const char *symbol = nuclide ? bh_element_symbol(nuclide->z) : NULL;
+    const char *element = symbol ? short_form(symbol) : NULL;
+    if (!element)
+        return NULL;
+    (void)snprintf(full, sizeof full, "%s-%d", nuclide->z == 6 ? "carbon" : element, nuclide->a);
+    return known(full, names, count);
+}
+
 const char *bh_material_meant(const char *name, const char *const *names, size_t count)
 {
-    char isotope[BH_MATERIAL_NAME_SIZE];
     const char *found = known(short_form(name), names, count);
-    if (!found) {
-        isotope_name(name, isotope);
-        found = known(isotope, names, count);
-    }
+    if (!found)
+        found = isotope(name, names, count);
     return found ? found : bh_nearest(name, names, count);
 }

@@ -356,31 +356,22 @@ static const bh_mark *magnet_of(const bh_arm *arm)
 
 static void caution_of_magnets(caution_list *to)
 {
-    const bh_mark *first = NULL;
-    bh_text names = {0};
-    bh_text key = {0};
     for (size_t i = 0; i < to->plan->arm_count; i++) {
-        const bh_mark *at = magnet_of(&to->plan->arms[i]);
-        const char *name = to->plan->arms[i].name.text ? to->plan->arms[i].name.text : "";
+        const bh_arm *arm = &to->plan->arms[i];
+        const bh_mark *at = magnet_of(arm);
         if (!at)
             continue;
-        if (!first) {
-            first = at;
-            bh_text_appendf(&key, "arms.%s", name);
-        } else {
-            bh_text_append(&names, ", ");
-        }
-        bh_text_append(&names, name);
+        const char *name = arm->name.text ? arm->name.text : "";
+        bh_text text = {0};
+        bh_text_appendf(&text,
+                        "Arm %s has magnets: stray fields pull tools and disturb pacemakers, and "
+                        "coils carry large currents." DEFER_SAFETY,
+                        name);
+        bh_text key = {0};
+        bh_text_appendf(&key, "arms.%s", name);
+        add(to, *at, &key, &text);
+        return; /* one is enough */
     }
-    if (!first)
-        return;
-    bh_text text = {0};
-    bh_text_appendf(&text,
-                    "Magnets (%s): stray fields pull tools and disturb pacemakers, and coils "
-                    "carry large currents." DEFER_SAFETY,
-                    names.bytes ? names.bytes : "");
-    bh_text_free(&names);
-    add(to, *first, &key, &text);
 }
 
 const bh_caution *bh_cautions_from_plan(const bh_plan *plan, bh_arena *arena, size_t *count)

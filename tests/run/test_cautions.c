@@ -310,15 +310,15 @@ START_TEST(magnets)
     bh_arm arms[3] = {{.name = {.text = "A"}}, {.name = {.text = "B"}}, {.name = {.text = "C"}}};
     const bh_plan plan = {.beam = electrons(450, 20), .arms = arms, .arm_count = 3};
     derive(&plan);
-    ck_assert_ptr_null(about("Magnets"));
+    ck_assert_ptr_null(about("magnets"));
     arms[0].momentum_bite = (bh_extent){.given = true, .at = line(20)};
     derive(&plan);
-    expect("Magnets (A):", "arms.A", 20);
+    expect("Arm A has magnets:", "arms.A", 20);
     arms[0].momentum_bite.given = false;
     arms[1].momentum_range = (bh_extent){.given = true, .at = line(21)};
     arms[2].momentum_resolution = (bh_value){.given = true, .at = line(22)};
     derive(&plan);
-    expect("Magnets (B, C):", "arms.B", 21);
+    expect("Arm B has magnets:", "arms.B", 21);
 }
 END_TEST
 
