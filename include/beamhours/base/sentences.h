@@ -250,5 +250,34 @@
 #define BH_WARN_DENSITY     "%s is %s from the %s that %s has in the library"
 
 /* run: evaluation */
+#define BH_WARN_MODEL_RANGE                                                                       \
+    "%s of %s describes data from Q2 %s to %s GeV2, and %s needs it from %s to %s GeV2; what is " \
+    "outside is extrapolated: another name under models.structure may reach there"
+#define BH_WARN_MODEL_FLAGGED \
+    "structure of %s: %s; take its rates as an estimate, or name another model"
+#define BH_WARN_MODEL_FALLBACK \
+    "the model named does not describe %s, so %s is used for it; structure: {%s: %s} would say so"
+#define BH_WARN_PROCESS_CAVEAT "%s: %s"
+#define BH_WARN_PLANE_WAVES                                                                      \
+    "plane waves on %s (Z alpha = %s) leave out the distortion by its charge; %s may be off by " \
+    "tens of percent, and by more near a diffraction minimum: take it as an order of magnitude"
+#define BH_WARN_RATE_LIMIT                                                                         \
+    "%s would record %s Hz while beam is on, over its limit of %s Hz, in %s; a prescale %d times " \
+    "as large, a lower current or a smaller acceptance would do"
+#define BH_WARN_BIN_TOO_SLOW                                                                   \
+    "bin %s of %s needs %s h to reach the goal, and %s h are available; fewer bins, a weaker " \
+    "goal or goal_for: acceptance would do"
+#define BH_WARN_NO_EMPTY_TARGET                                                        \
+    "%s has windows and no empty_target: their background is taken as known exactly; " \
+    "empty_target: {share: best} would measure it"
+#define BH_WARN_NOT_CONVERGED                                                                     \
+    "the average over the acceptance of %s did not settle to 1e-6 in %s; more bins or a smaller " \
+    "acceptance would do"
+#define BH_WARN_SHORTAGE                                                                          \
+    "the plan asks for %s h %sand %s h are available; fewer settings, weaker goals or more time " \
+    "would do"
+#define BH_WARN_NO_SIGNAL                                                                 \
+    "nothing scattered by %s is counted by %s in %s; another angle, central_momentum or " \
+    "momentum_bite would do"
 
 #endif

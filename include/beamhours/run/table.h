@@ -27,10 +27,19 @@ typedef struct {
     const char *text; /* one or two sentences */
 } bh_caution;
 
+/* What evaluations may share: form factors made ready, cross sections sampled.  It makes the next
+ * evaluation faster and changes no number.  One thread at a time. */
+typedef struct bh_workspace bh_workspace;
+
+/* An empty one, or NULL when there is no memory.  The caller owns it; NULL may be freed. */
+bh_workspace *bh_workspace_new(void);
+void bh_workspace_free(bh_workspace *workspace);
+
 typedef struct {
     bool bins;                      /* rows of bins are wanted too */
     bool (*cancelled)(void *asker); /* polled at least each 5 ms; NULL: never */
     void *asker;
+    bh_workspace *workspace; /* kept by the caller; NULL: one for this evaluation alone */
 } bh_evaluation;
 
 /*
@@ -61,6 +70,9 @@ const char *bh_table_reason(const bh_table *table, bool bins, size_t row, bh_col
 /* Which setting and which of its arms a row belongs to; its bin from 1, 0 for the whole arm. */
 void bh_table_place(const bh_table *table, bool bins, size_t row, size_t *setting, size_t *arm,
                     int *bin);
+
+/* The i-th sentence on what these numbers leave out (radiation, energy loss); NULL past the end. */
+const char *bh_table_note(const bh_table *table, size_t i);
 
 const bh_totals *bh_table_totals(const bh_table *table);
 size_t bh_table_cautions(const bh_table *table);

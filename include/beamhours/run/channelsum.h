@@ -1,0 +1,44 @@
+/* channelsum.h - one channel summed over an arm and its bins, also a little beside where it is. */
+#ifndef BH_RUN_CHANNELSUM_H
+#define BH_RUN_CHANNELSUM_H
+
+#include <stdbool.h>
+
+#include "beamhours/rates/acceptance.h"
+#include "beamhours/run/channel.h"
+#include "beamhours/run/workspace.h"
+
+/* Steps of the symmetric differences behind the sensitivities: a rate with logarithmic derivatives
+ * of 50 per rad and 12 keeps six digits of them. */
+#define BH_STEP_ANGLE    2e-5 /* [rad] +- 0, a choice; exact */
+#define BH_STEP_MOMENTUM 1e-4 /* [1] relative; a choice; exact */
+
+/* What to sum. */
+typedef struct {
+    bh_channel channel;
+    bh_acceptance_spec acceptance;
+    bool cut;                          /* there is a momentum bite */
+    double momentum_from, momentum_to; /* [MeV/c] of the detected particle */
+    double momentum_sigma;             /* [1] relative resolution; 0: sharp */
+    bool bins;                         /* sums of the bins are wanted too */
+    bool sensitivities;                /* moved and boosted are wanted too */
+} bh_channel_request;
+
+/* Over the whole acceptance or over one bin. */
+typedef struct {
+    double total;      /* [ub] integral of the cross section over the solid angle */
+    double kept;       /* [ub] the part of it inside the bite */
+    double moved[2];   /* [ub] kept with the arm BH_STEP_ANGLE back and on */
+    double boosted[2]; /* [ub] kept with the beam's momentum BH_STEP_MOMENTUM less and more */
+    bool converged;
+} bh_channel_sum;
+
+/*
+ * Returns 1 + bins sums, the whole arm first, valid until bh_workspace_trim; from the cache when
+ * the same was asked before.  NULL when there is no memory or the acceptance meets the beam axis,
+ * with the reason in err.
+ */
+const bh_channel_sum *bh_channel_sums(bh_workspace *workspace, const bh_channel_request *request,
+                                      bh_error *err);
+
+#endif

@@ -1,0 +1,49 @@
+/* remarks.h - warnings of an evaluation, each said once however many settings it concerns. */
+#ifndef BH_RUN_REMARKS_H
+#define BH_RUN_REMARKS_H
+
+#include <stdbool.h>
+
+#include "beamhours/base/diag.h"
+
+typedef enum {
+    BH_REMARK_RANGE,         /* low, high [GeV2] needed; from, to [GeV2] of the model's data */
+    BH_REMARK_FLAGGED,       /* a structure that had to assume something: `what` */
+    BH_REMARK_FALLBACK,      /* the plan's model cannot describe `who`; `what` is used */
+    BH_REMARK_CAVEAT,        /* a process outside its validity: `what` */
+    BH_REMARK_COULOMB,       /* high [1]: Z alpha of plane waves on a heavy nucleus */
+    BH_REMARK_NO_EMPTY,      /* windows, and no time on an empty target */
+    BH_REMARK_LIMIT,         /* high [1/s]: recorded rate over `from` [1/s], the limit */
+    BH_REMARK_BIN_TOO_SLOW,  /* high [h]: need of bin `what`; from [h]: what is available */
+    BH_REMARK_NOT_CONVERGED, /* an average over an acceptance */
+    BH_REMARK_NO_SIGNAL      /* nothing of the signal lands in the acceptance */
+} bh_remark_kind;
+
+typedef struct {
+    bh_remark_kind kind;
+    bh_mark at;
+    const char *key;     /* dotted path of the key meant; constant text */
+    const char *who;     /* nuclide, arm or target */
+    const char *what;    /* model, caveat or bin */
+    const char *setting; /* the first it concerns */
+    double low, high;    /* [1] as the kind says, in the unit named there */
+    double from, to;     /* [1] likewise */
+} bh_remark;
+
+/* Growing list.  One thread at a time. */
+typedef struct bh_remarks bh_remarks;
+
+/* An empty list, or NULL when there is no memory.  The caller owns it; NULL may be freed. */
+bh_remarks *bh_remarks_new(void);
+void bh_remarks_free(bh_remarks *remarks);
+
+/* Notes `remark`; texts are copied.  One of the same kind about the same who and what at the same
+ * line is widened (lowest low, highest high) and counted instead.  Those on models, which concern
+ * the whole plan, are joined whatever the line. */
+void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark);
+
+/* Adds them all to `diags` as warnings, in the words of base/sentences.h.  False when memory had
+ * run out and some are missing. */
+bool bh_remarks_say(const bh_remarks *remarks, bh_diags *diags);
+
+#endif

@@ -1,0 +1,44 @@
+/* workspace.h - what evaluations may share: form factors made ready, cross sections summed. */
+#ifndef BH_RUN_WORKSPACE_H
+#define BH_RUN_WORKSPACE_H
+
+#include <stddef.h>
+
+#include "beamhours/physics/structure.h"
+#include "beamhours/rates/average.h"
+#include "beamhours/run/table.h"
+
+/*
+ * The form factors of nucleus z, a by the model `name` ("default" too), made once and kept.
+ * Returns NULL with the reason in err, BH_ENOMEM among them.  Belongs to the workspace; valid until
+ * bh_workspace_trim.
+ */
+const bh_structure *bh_workspace_structure(bh_workspace *workspace, const char *name, int z, int a,
+                                           bh_error *err);
+
+/* What was kept under the `size` [bytes] at `key`, or NULL; valid until bh_workspace_trim. */
+const void *bh_workspace_recall(const bh_workspace *workspace, const void *key, size_t size);
+
+/* Room for `room` [bytes], zeroed and aligned for any type, to be recalled by that key.  NULL
+ * when there is no memory. */
+void *bh_workspace_keep(bh_workspace *workspace, const void *key, size_t size, size_t room);
+
+/* Takes back what was kept last under that key. */
+void bh_workspace_drop(bh_workspace *workspace, const void *key, size_t size);
+
+enum { BH_MOST_BINS = 1000 }; /* of an arm, a limit of the plan format */
+
+/* Room for the sums of one arm while they are made. */
+typedef struct {
+    bh_average whole, bins[BH_MOST_BINS];
+    double edges[2][BH_MOST_BINS + 1]; /* [rad] of the bins of an arm moved back and on */
+} bh_sum_scratch;
+
+/* Where averages are made. */
+bh_average_workspace *bh_workspace_averages(bh_workspace *workspace);
+bh_sum_scratch *bh_workspace_scratch(bh_workspace *workspace);
+
+/* Forgets everything when more is kept than is worth keeping. */
+void bh_workspace_trim(bh_workspace *workspace);
+
+#endif

@@ -1,0 +1,108 @@
+/* yield.h - what an arm counts of signal and background in one setting, whole and bin by bin. */
+#ifndef BH_RUN_YIELD_H
+#define BH_RUN_YIELD_H
+
+#include <stdbool.h>
+#include <stddef.h>
+
+#include "beamhours/plan/plan.h"
+#include "beamhours/rates/acceptance.h"
+#include "beamhours/rates/seen.h"
+#include "beamhours/run/channelsum.h"
+#include "beamhours/run/remarks.h"
+#include "beamhours/run/struck.h"
+
+/* Nuclei of one nuclide that an arm sees. */
+typedef struct {
+    double signal;         /* [1/cm2] the scatterer */
+    double moved[2];       /* [1/cm2] likewise, seen by the arm turned back and on */
+    double windows, other; /* [1/cm2] background */
+    double reached;        /* [ub/cm2] what of it all lands in the whole arm */
+} bh_seen_numbers;
+
+/* What yields are computed with; one for an evaluation. */
+typedef struct {
+    const bh_plan *plan;
+    bh_workspace *workspace;
+    bh_remarks *remarks;          /* warnings go here; NULL: they are not wanted */
+    const bh_struck_list **lists; /* of each target of the plan */
+    bh_seen_numbers *seen;        /* room for the nuclides of any target */
+    bh_seen_layer *layers;        /* room for the layers of any target */
+    double *paths[3]; /* [1] likewise: as it stands, and seen by an arm moved both ways */
+} bh_yielder;
+
+/* One arm of one setting. */
+typedef struct {
+    const bh_setting *setting;
+    const bh_setting_arm *arm;
+    const bh_struck_list *list;
+    const bh_process *process;
+    bh_acceptance_spec spec;
+    double axis;               /* [rad] polar angle of the arm's centre */
+    double central_momentum;   /* [MeV/c] NAN where none is written and none follows */
+    bool cut;                  /* a momentum bite is in force */
+    double bite_from, bite_to; /* [MeV/c] */
+    double momentum_sigma;     /* [1] relative resolution; 0: sharp */
+    double beam;               /* [1/s] beam particles of the named kind */
+    int parts;                 /* 1, or 1 + bins */
+} bh_view;
+
+/* The whole arm or one bin. */
+typedef struct {
+    double angle;               /* [rad] arm's centre, or mean over the bin */
+    double solid_angle;         /* [sr] */
+    double cross_section;       /* [ub/sr] mean, per scatterer nucleus */
+    double point_cross_section; /* [ub/sr] at `angle` */
+    double kept;                /* [1] of the signal */
+    double signal;              /* [Hz] before dead time */
+    double windows, other;      /* [Hz] likewise, background */
+    double dummy;               /* [Hz] of the dummy cell; equal to windows where there is none */
+    double per_radian;          /* [1] relative change of the rate for a turn of the arm */
+    double per_momentum;        /* [1] relative change for a relative change of beam momentum */
+} bh_part;
+
+typedef struct {
+    bh_view view;
+    double seen;    /* [1/cm2] scatterer nuclei seen */
+    bool converged; /* all averages did */
+    bh_part *part;  /* the whole arm, then its bins */
+} bh_yield;
+
+/* Makes room in `arena` and lists the nuclei of each target.  BH_ENOMEM. */
+BH_CHECKED bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err);
+
+/* The arm `arm` of `setting` as the yield sees it, with its bins when wanted. */
+BH_CHECKED bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting,
+                                const bh_setting_arm *arm, bh_view *view, bh_error *err);
+
+/* The beam on nuclide number `nuclide` of `list`: its channels to this arm, at most 3, into
+ * `channels`.  Sets `count`.  BH_ENOMEM. */
+enum { BH_MOST_CHANNELS = 3 };
+BH_CHECKED bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view,
+                                    const bh_struck *struck, bh_channel *channels, size_t *count,
+                                    bh_error *err);
+
+/* Fills the parts of `yield`, whose view is made and whose `part` has room for view.parts. */
+BH_CHECKED bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err);
+
+/* Warns of what the numbers of `yield` rest on: models outside their range, plane waves on heavy
+ * nuclei, formulas outside their validity.  While yielder->seen is of this yield. */
+BH_CHECKED bh_code bh_findings(bh_yielder *yielder, const bh_yield *yield, bh_error *err);
+
+/* One nuclide in one layer, for explain. */
+typedef struct {
+    const bh_presence *presence;
+    const bh_struck *struck;
+    const bh_structure *structure;
+    double seen;          /* [1/cm2] nuclei seen */
+    double cross_section; /* [ub/sr] mean over the part */
+    double kept;          /* [1] */
+    double rate;          /* [Hz] before dead time */
+} bh_contribution;
+
+/* Fills contributions (room for the presences of the view's list) to part number `part`.  After
+ * bh_view_make. */
+BH_CHECKED bh_code bh_yield_contributions(bh_yielder *yielder, const bh_view *view, int part,
+                                          bh_contribution *contributions, bh_error *err);
+
+#endif

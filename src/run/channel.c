@@ -1,0 +1,52 @@
+/* channel.c - cross section and momentum of the detected particle against its angle. */
+#include "beamhours/run/channel.h"
+
+#include "beamhours/units/constants.h"
+
+enum { BATCH = 32 };
+
+static bh_collision collision_of(const bh_channel *channel)
+{
+    const bh_encounter *e = &channel->encounter;
+    return (bh_collision){.mass = e->beam->mass, .target = e->target, .kinetic = e->kinetic};
+}
+
+double bh_channel_largest_angle(const bh_channel *channel)
+{
+    const bh_collision in = collision_of(channel);
+    return channel->recoil ? BH_PI / 2 : bh_kinematics_largest_angle(&in);
+}
+
+bh_code bh_channel_event(const bh_channel *channel, double angle, bh_event *event, bh_error *err)
+{
+    const bh_collision in = collision_of(channel);
+    return channel->recoil ? bh_kinematics_recoil(&in, angle, event, err)
+                           : bh_kinematics_scattered(&in, angle, channel->branch, event, err);
+}
+
+static void eval_batch(const bh_channel *channel, size_t n, const double *angle, double *sigma,
+                       double *momentum)
+{
+    const double largest = bh_channel_largest_angle(channel);
+    bh_event event[BATCH];
+    double computed[BATCH];
+    size_t place[BATCH], m = 0;
+    for (size_t i = 0; i < n; i++) {
+        sigma[i] = momentum[i] = 0;
+        if (angle[i] <= largest && !bh_channel_event(channel, angle[i], &event[m], NULL))
+            place[m++] = i;
+    }
+    channel->process->cross_section(&channel->encounter, m, event, computed);
+    for (size_t k = 0; k < m; k++) {
+        const bh_event *e = &event[k];
+        sigma[place[k]] = computed[k] * (channel->recoil ? e->scattered_per_recoil : 1);
+        momentum[place[k]] = channel->recoil ? e->recoil_momentum : e->scattered_momentum;
+    }
+}
+
+void bh_channel_eval(const bh_channel *channel, size_t n, const double *angle, double *sigma,
+                     double *momentum)
+{
+    for (size_t i = 0; i < n; i += BATCH)
+        eval_batch(channel, n - i < BATCH ? n - i : BATCH, angle + i, sigma + i, momentum + i);
+}

@@ -1,0 +1,149 @@
+/* evaluate.c - one setting of a plan, computed into its rows. */
+#include "beamhours/run/evaluate.h"
+
+#include <math.h>
+#include <stdio.h>
+
+#include "beamhours/units/constants.h"
+
+static size_t bins_of(const bh_setting *setting)
+{
+    size_t bins = 0;
+    for (size_t a = 0; a < setting->arm_count; a++)
+        bins += (size_t)setting->arms[a].arm.bins;
+    return bins;
+}
+
+bh_code bh_evaluator_prepare(bh_evaluator *evaluator, const bh_plan *plan, bh_arena *arena,
+                             bh_error *err)
+{
+    size_t arms = 1, parts = 1;
+    for (size_t s = 0; s < plan->setting_count; s++) {
+        const bh_setting *setting = &plan->settings[s];
+        const size_t needed = setting->arm_count + bins_of(setting);
+        arms = setting->arm_count > arms ? setting->arm_count : arms;
+        parts = needed > parts ? needed : parts;
+    }
+    evaluator->parts = bh_arena_take(arena, parts, sizeof *evaluator->parts);
+    evaluator->recorded = bh_arena_take(arena, parts, sizeof *evaluator->recorded);
+    evaluator->yields = bh_arena_take(arena, arms, sizeof *evaluator->yields);
+    evaluator->arms = bh_arena_take(arena, arms, sizeof *evaluator->arms);
+    if (!evaluator->parts || !evaluator->recorded || !evaluator->yields || !evaluator->arms)
+        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    evaluator->yielder.plan = plan;
+    return bh_yielder_prepare(&evaluator->yielder, arena, err);
+}
+
+static bh_code cancelled(const bh_evaluator *evaluator, bh_error *err)
+{
+    if (!evaluator->cancelled || !evaluator->cancelled(evaluator->asker))
+        return BH_OK;
+    return bh_fail(err, BH_ENOCONV, "the evaluation was cancelled");
+}
+
+/* Yields and recorded rates of all arms of a setting. */
+static bh_code measure(bh_evaluator *evaluator, const bh_setting *setting, bool bins, bh_error *err)
+{
+    size_t used = 0;
+    bh_code code = BH_OK;
+    for (size_t a = 0; !code && a < setting->arm_count; a++) {
+        const bh_setting_arm *arm = &setting->arms[a];
+        bh_yield *yield = &evaluator->yields[a];
+        bh_arm_hours *hours = &evaluator->arms[a];
+        *hours = (bh_arm_hours){.yield = yield, .recorded = evaluator->recorded + used};
+        yield->part = evaluator->parts + used;
+        code = bh_view_make(&evaluator->yielder, setting, arm, &yield->view, err);
+        if (bins || arm->each_bin)
+            yield->view.parts = 1 + arm->arm.bins;
+        if (!code)
+            code = bh_yield_make(&evaluator->yielder, yield, err);
+        if (!code)
+            code = bh_hours_record(hours, &setting->beam, err);
+        if (!code)
+            code = cancelled(evaluator, err);
+        used += (size_t)yield->view.parts;
+    }
+    return code;
+}
+
+static void note(const bh_evaluator *evaluator, bh_remark remark)
+{
+    if (evaluator->yielder.remarks)
+        bh_remarks_note(evaluator->yielder.remarks, &remark);
+}
+
+/* A bin that could not reach the goal if the whole granted time were spent on its setting. */
+static void find_slow_bin(const bh_evaluator *evaluator, const bh_setting_hours *hours,
+                          const bh_arm_hours *arm)
+{
+    const bh_value *available = &evaluator->yielder.plan->schedule.available;
+    const bh_setting_arm *plan = arm->yield->view.arm;
+    if (!available->given || !plan->each_bin || plan->want != BH_WANT_GOAL)
+        return;
+    int worst = 0;
+    double longest = 0;
+    for (int i = 1; i < arm->yield->view.parts; i++) {
+        const double needed = bh_hours_to_goal(arm, i) * (1 + hours->share);
+        if (needed > longest) {
+            longest = needed;
+            worst = i;
+        }
+    }
+    char bin[16];
+    snprintf(bin, sizeof bin, "%d", worst);
+    if (longest > available->value / BH_SECONDS_PER_HOUR)
+        note(evaluator, (bh_remark){.kind = BH_REMARK_BIN_TOO_SLOW,
+                                    .at = plan->wanted.at,
+                                    .key = "goal",
+                                    .who = plan->arm.name.text,
+                                    .what = bin,
+                                    .setting = hours->setting->name,
+                                    .high = longest,
+                                    .from = available->value / BH_SECONDS_PER_HOUR});
+}
+
+static void find(const bh_evaluator *evaluator, const bh_setting_hours *hours)
+{
+    for (size_t a = 0; a < hours->setting->arm_count; a++) {
+        const bh_arm_hours *arm = &hours->arms[a];
+        const bh_setting_arm *plan = arm->yield->view.arm;
+        const bh_target *target = hours->setting->target;
+        if (arm->live.over_limit)
+            note(evaluator, (bh_remark){.kind = BH_REMARK_LIMIT,
+                                        .at = plan->at,
+                                        .key = "rate_limit",
+                                        .who = plan->arm.name.text,
+                                        .setting = hours->setting->name,
+                                        .high = arm->live.recorded,
+                                        .from = plan->arm.rate_limit.value});
+        if (target->empty == BH_EMPTY_NONE && arm->yield->part->windows > 0)
+            note(evaluator, (bh_remark){.kind = BH_REMARK_NO_EMPTY,
+                                        .at = target->at,
+                                        .key = "empty_target",
+                                        .who = target->name.text,
+                                        .setting = hours->setting->name});
+        find_slow_bin(evaluator, hours, arm);
+    }
+}
+
+bh_code bh_setting_evaluate(bh_evaluator *evaluator, size_t setting, bh_setting_rows *out,
+                            bh_error *err)
+{
+    const bh_setting *s = &evaluator->yielder.plan->settings[setting];
+    bh_workspace_trim(evaluator->yielder.workspace);
+    const bh_code code = measure(evaluator, s, out->bins != NULL, err);
+    if (code)
+        return code;
+    bh_setting_hours hours = {.setting = s, .arms = evaluator->arms};
+    bh_hours_decide(&hours);
+    find(evaluator, &hours);
+    bh_row *bin = out->bins;
+    for (size_t a = 0; a < s->arm_count; a++) {
+        bh_row_fill(&evaluator->yielder, &hours, &evaluator->arms[a], &out->whole[a]);
+        for (int b = 1; out->bins && b <= s->arms[a].arm.bins; b++)
+            bh_row_fill(&evaluator->yielder, &hours, &evaluator->arms[a], bin++);
+    }
+    out->full = isnan(hours.full) ? 0 : hours.full;
+    out->empty = out->full * hours.share;
+    return BH_OK;
+}

@@ -1,0 +1,190 @@
+/* remarks.c - warnings of an evaluation, each said once however many settings it concerns. */
+#include "beamhours/run/remarks.h"
+
+#include <stdbool.h>
+#include <stdio.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "beamhours/base/number.h"
+#include "beamhours/base/sentences.h"
+
+enum { TEXT = 240, FIRST_ROOM = 16 };
+
+struct kept {
+    bh_remark remark;                                     /* its texts point below */
+    char key[TEXT], who[TEXT], what[TEXT], setting[TEXT]; /* own copies */
+    int settings;
+};
+
+struct bh_remarks {
+    size_t count, room;
+    struct kept *list;
+    bool failed;
+};
+
+bh_remarks *bh_remarks_new(void)
+{
+    return calloc(1, sizeof(bh_remarks));
+}
+
+void bh_remarks_free(bh_remarks *remarks)
+{
+    if (remarks)
+        free(remarks->list);
+    free(remarks);
+}
+
+static bool of_the_whole_plan(bh_remark_kind kind)
+{
+    return kind <= BH_REMARK_NO_EMPTY;
+}
+
+static const char *or_empty(const char *text)
+{
+    return text ? text : "";
+}
+
+static bool same(const struct kept *k, const bh_remark *r)
+{
+    return k->remark.kind == r->kind && strcmp(k->who, or_empty(r->who)) == 0 &&
+           strcmp(k->what, or_empty(r->what)) == 0 &&
+           (of_the_whole_plan(r->kind) ||
+            (k->remark.at.line == r->at.line && k->remark.at.column == r->at.column));
+}
+
+static void widen(struct kept *k, const bh_remark *r)
+{
+    if (r->low < k->remark.low)
+        k->remark.low = r->low;
+    if (r->high > k->remark.high)
+        k->remark.high = r->high;
+    if (strcmp(k->setting, or_empty(r->setting)) != 0)
+        k->settings++;
+}
+
+static bool grow(bh_remarks *remarks)
+{
+    if (remarks->count < remarks->room)
+        return true;
+    const size_t room = remarks->room ? 2 * remarks->room : FIRST_ROOM;
+    struct kept *list = realloc(remarks->list, room * sizeof *list);
+    if (!list)
+        return false;
+    remarks->list = list;
+    remarks->room = room;
+    return true;
+}
+
+static void copy(char to[TEXT], const char *from)
+{
+    snprintf(to, TEXT, "%s", or_empty(from));
+}
+
+void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark)
+{
+    for (size_t i = remarks->count; i-- > 0;) /* the newest is the likeliest */
+        if (same(&remarks->list[i], remark)) {
+            widen(&remarks->list[i], remark);
+            return;
+        }
+    if (!grow(remarks)) {
+        remarks->failed = true;
+        return;
+    }
+    struct kept *k = &remarks->list[remarks->count++];
+    *k = (struct kept){.remark = *remark, .settings = 1};
+    copy(k->key, remark->key);
+    copy(k->who, remark->who);
+    copy(k->what, remark->what);
+    copy(k->setting, remark->setting);
+}
+
+struct words {
+    char low[BH_NUMBER_SIZE], high[BH_NUMBER_SIZE]; /* numbers of the remark as text */
+    char from[BH_NUMBER_SIZE], to[BH_NUMBER_SIZE];
+    char where[2 * TEXT]; /* "K1", "K1 and 3 more settings" */
+};
+
+static void put_in_words(const struct kept *k, struct words *w)
+{
+    bh_number_digits(k->remark.low, 3, w->low, sizeof w->low);
+    bh_number_digits(k->remark.high, 3, w->high, sizeof w->high);
+    bh_number_print(k->remark.from, w->from, sizeof w->from);
+    bh_number_print(k->remark.to, w->to, sizeof w->to);
+    if (k->settings > 1)
+        snprintf(w->where, sizeof w->where, "%s and %d more settings", k->setting, k->settings - 1);
+    else
+        snprintf(w->where, sizeof w->where, "%s", k->setting);
+}
+
+/* What brings a recorded rate under its limit. */
+static int prescale_for(const bh_remark *r)
+{
+    const double needed = r->high / r->from;
+    return needed < 1e9 ? (int)needed + 1 : 1000000000;
+}
+
+static void say_model(const struct kept *k, const struct words *w, bh_diags *diags)
+{
+    const bh_remark *r = &k->remark;
+    switch (r->kind) {
+    case BH_REMARK_RANGE:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_MODEL_RANGE, k->what,
+                     k->who, w->from, w->to, w->where, w->low, w->high);
+        break;
+    case BH_REMARK_FLAGGED:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_MODEL_FLAGGED, k->who,
+                     k->what);
+        break;
+    case BH_REMARK_FALLBACK:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_MODEL_FALLBACK, k->who,
+                     k->what, k->who, k->what);
+        break;
+    case BH_REMARK_CAVEAT:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_PROCESS_CAVEAT, w->where,
+                     k->what);
+        break;
+    default:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_PLANE_WAVES, k->who,
+                     w->high, w->where);
+    }
+}
+
+static void say(const struct kept *k, const struct words *w, bh_diags *diags)
+{
+    const bh_remark *r = &k->remark;
+    switch (r->kind) {
+    case BH_REMARK_NO_EMPTY:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NO_EMPTY_TARGET, k->who);
+        break;
+    case BH_REMARK_LIMIT:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_RATE_LIMIT, k->who, w->high,
+                     w->from, w->where, prescale_for(r));
+        break;
+    case BH_REMARK_BIN_TOO_SLOW:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_BIN_TOO_SLOW, k->what,
+                     k->who, w->high, w->from);
+        break;
+    case BH_REMARK_NOT_CONVERGED:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NOT_CONVERGED, k->who,
+                     w->where);
+        break;
+    case BH_REMARK_NO_SIGNAL:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NO_SIGNAL, k->what, k->who,
+                     w->where);
+        break;
+    default:
+        say_model(k, w, diags);
+    }
+}
+
+bool bh_remarks_say(const bh_remarks *remarks, bh_diags *diags)
+{
+    for (size_t i = 0; i < remarks->count; i++) {
+        struct words w;
+        put_in_words(&remarks->list[i], &w);
+        say(&remarks->list[i], &w, diags);
+    }
+    return !remarks->failed;
+}

@@ -1,0 +1,262 @@
+/* table.c - the run table: rows, totals, cautions and warnings of an evaluated plan. */
+#include "beamhours/run/table.h"
+
+#include <stdlib.h>
+
+#include "beamhours/base/arena.h"
+#include "beamhours/base/number.h"
+#include "beamhours/base/sentences.h"
+#include "beamhours/run/cautions.h"
+#include "beamhours/run/evaluate.h"
+#include "beamhours/run/remarks.h"
+#include "beamhours/run/totals.h"
+#include "beamhours/run/workspace.h"
+
+enum { NOTES = 4 };
+
+struct bh_table {
+    const bh_plan *plan;
+    bh_arena *arena;
+    size_t count[2]; /* rows of arms, rows of bins */
+    bh_row *rows[2];
+    bh_totals totals;
+    size_t caution_count;
+    const bh_caution *cautions;
+    bh_diags *warnings;
+    const char *notes[NOTES];
+};
+
+/* Numbers the rows: where each stands in the plan. */
+static void lay_out(bh_table *table)
+{
+    size_t whole = 0, bin = 0;
+    for (size_t s = 0; s < table->plan->setting_count; s++) {
+        const bh_setting *setting = &table->plan->settings[s];
+        for (size_t a = 0; a < setting->arm_count; a++) {
+            table->rows[0][whole++] = (bh_row){.setting = s, .arm = a};
+            for (int b = 1; table->rows[1] && b <= setting->arms[a].arm.bins; b++)
+                table->rows[1][bin++] = (bh_row){.setting = s, .arm = a, .bin = b};
+        }
+    }
+}
+
+static bool make_rows(bh_table *table, bool bins)
+{
+    for (size_t s = 0; s < table->plan->setting_count; s++) {
+        const bh_setting *setting = &table->plan->settings[s];
+        table->count[0] += setting->arm_count;
+        for (size_t a = 0; bins && a < setting->arm_count; a++)
+            table->count[1] += (size_t)setting->arms[a].arm.bins;
+    }
+    table->rows[0] = bh_arena_take(table->arena, table->count[0], sizeof(bh_row));
+    table->rows[1] = bins ? bh_arena_take(table->arena, table->count[1], sizeof(bh_row)) : NULL;
+    if (!table->rows[0] || (bins && !table->rows[1]))
+        return false;
+    lay_out(table);
+    return true;
+}
+
+static size_t bins_of(const bh_setting *setting)
+{
+    size_t bins = 0;
+    for (size_t a = 0; a < setting->arm_count; a++)
+        bins += (size_t)setting->arms[a].arm.bins;
+    return bins;
+}
+
+static bh_code evaluate(bh_table *table, bh_evaluator *evaluator, bh_error *err)
+{
+    const bh_plan *plan = table->plan;
+    bh_stretch *hours = bh_arena_take(table->arena, plan->setting_count + 1, sizeof *hours);
+    if (!hours)
+        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    bh_setting_rows out = {.whole = table->rows[0], .bins = table->rows[1]};
+    for (size_t s = 0; s < plan->setting_count; s++) {
+        const bh_code code = bh_setting_evaluate(evaluator, s, &out, err);
+        if (code)
+            return code;
+        hours[s] = (bh_stretch){.full = out.full, .empty = out.empty};
+        out.whole += plan->settings[s].arm_count;
+        out.bins += out.bins ? bins_of(&plan->settings[s]) : 0;
+    }
+    return bh_totals_from_plan(plan, hours, table->arena, &table->totals, err);
+}
+
+/* The plan asks for more than the facility grants. */
+static void find_shortage(const bh_table *table, bh_diags *diags)
+{
+    const bh_totals *t = &table->totals;
+    if (!(t->spare_hours < 0))
+        return;
+    char asked[BH_NUMBER_SIZE], granted[BH_NUMBER_SIZE];
+    const bh_schedule *schedule = &table->plan->schedule;
+    bh_number_digits(t->available_hours - t->spare_hours, 3, asked, sizeof asked);
+    bh_number_print(t->available_hours, granted, sizeof granted);
+    bh_diags_add(diags, BH_SEVERITY_WARNING, schedule->available.at, "schedule.available",
+                 BH_WARN_SHORTAGE, asked, schedule->available_is_beam ? "with beam " : "", granted);
+}
+
+static void take_notes(bh_table *table)
+{
+    size_t n = 0;
+    table->notes[n++] = "Rates are without radiation: radiative_factor is 1 in every row.";
+    table->notes[n++] = "Rates are without energy loss in the target: every collision happens at "
+                        "the energy that enters it.";
+    for (size_t s = 0; s < table->plan->setting_count; s++)
+        if (table->plan->settings[s].beam.particle.kind != BH_KIND_LEPTON) {
+            table->notes[n] = "Hadron and ion beams scatter by their charge alone: nuclear forces "
+                              "are not in these numbers.";
+            return;
+        }
+}
+
+static void copy_diags(bh_diags *to, const bh_diags *from)
+{
+    for (size_t i = 0; from && i < bh_diags_count(from); i++) {
+        const bh_diag *d = bh_diags_at(from, i);
+        bh_diags_add(to, d->severity, d->at, d->key, "%s", d->text);
+    }
+}
+
+static bh_code out_of_memory(bh_error *err)
+{
+    return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+}
+
+/* All that is said about the plan and its numbers. */
+static bh_code conclude(bh_table *table, const bh_remarks *remarks, const bh_diags *said,
+                        bh_error *err)
+{
+    copy_diags(table->warnings, said);
+    const bool complete = bh_remarks_say(remarks, table->warnings);
+    find_shortage(table, table->warnings);
+    bh_diags_sort(table->warnings);
+    table->cautions = bh_cautions_from_plan(table->plan, table->arena, &table->caution_count);
+    take_notes(table);
+    return complete && table->cautions ? BH_OK : out_of_memory(err);
+}
+
+static bh_code fill(bh_table *table, const bh_evaluation *how, const bh_diags *said, bh_error *err)
+{
+    bh_workspace *own = how->workspace ? NULL : bh_workspace_new();
+    bh_remarks *remarks = bh_remarks_new();
+    bh_evaluator evaluator = {
+        .yielder = {.workspace = how->workspace ? how->workspace : own, .remarks = remarks},
+        .cancelled = how->cancelled,
+        .asker = how->asker};
+    bh_code code = BH_OK;
+    if (!evaluator.yielder.workspace || !remarks || !make_rows(table, how->bins))
+        code = out_of_memory(err);
+    if (!code)
+        code = bh_evaluator_prepare(&evaluator, table->plan, table->arena, err);
+    if (!code)
+        code = evaluate(table, &evaluator, err);
+    if (!code)
+        code = conclude(table, remarks, said, err);
+    bh_remarks_free(remarks);
+    bh_workspace_free(own);
+    return code;
+}
+
+bh_table *bh_table_new(const bh_plan *plan, const bh_evaluation *how, const bh_diags *said,
+                       bh_error *err)
+{
+    bh_error why = {.code = BH_OK};
+    bh_table *table = calloc(1, sizeof *table);
+    if (table) {
+        table->plan = plan;
+        table->arena = bh_arena_new();
+        table->warnings = bh_diags_new();
+    }
+    const bh_code code = table && table->arena && table->warnings ? fill(table, how, said, &why)
+                                                                  : out_of_memory(&why);
+    if (!code)
+        return table;
+    if (err)
+        *err = why;
+    bh_table_free(table);
+    return NULL;
+}
+
+void bh_table_free(bh_table *table)
+{
+    if (!table)
+        return;
+    bh_diags_free(table->warnings);
+    bh_arena_free(table->arena);
+    free(table);
+}
+
+const bh_plan *bh_table_plan(const bh_table *table)
+{
+    return table->plan;
+}
+
+size_t bh_table_rows(const bh_table *table, bool bins)
+{
+    return table->count[bins];
+}
+
+double bh_table_number(const bh_table *table, bool bins, size_t row, bh_column_id column)
+{
+    return table->rows[bins][row].number[column];
+}
+
+const char *bh_table_text(const bh_table *table, bool bins, size_t row, bh_column_id column)
+{
+    const bh_row *r = &table->rows[bins][row];
+    const bh_setting *setting = &table->plan->settings[r->setting];
+    switch (column) {
+    case BH_COL_SETTING:
+        return setting->name;
+    case BH_COL_ARM:
+        return setting->arms[r->arm].arm.name.text;
+    case BH_COL_PARTICLE:
+        return setting->beam.particle.name;
+    case BH_COL_TARGET:
+        return setting->target->name.text;
+    case BH_COL_SCATTERER:
+        return setting->target->scatterer.text;
+    default:
+        return NULL;
+    }
+}
+
+const char *bh_table_reason(const bh_table *table, bool bins, size_t row, bh_column_id column)
+{
+    return bh_why_text(table->rows[bins][row].why[column]);
+}
+
+void bh_table_place(const bh_table *table, bool bins, size_t row, size_t *setting, size_t *arm,
+                    int *bin)
+{
+    const bh_row *r = &table->rows[bins][row];
+    *setting = r->setting;
+    *arm = r->arm;
+    *bin = r->bin;
+}
+
+const char *bh_table_note(const bh_table *table, size_t i)
+{
+    return i < NOTES ? table->notes[i] : NULL;
+}
+
+const bh_totals *bh_table_totals(const bh_table *table)
+{
+    return &table->totals;
+}
+
+size_t bh_table_cautions(const bh_table *table)
+{
+    return table->caution_count;
+}
+
+const bh_caution *bh_table_caution(const bh_table *table, size_t i)
+{
+    return &table->cautions[i];
+}
+
+const bh_diags *bh_table_warnings(const bh_table *table)
+{
+    return table->warnings;
+}

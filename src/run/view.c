@@ -1,0 +1,148 @@
+/* view.c - one arm of one setting: where it stands, what it lets through, who can reach it. */
+#include <math.h>
+
+#include "beamhours/run/yield.h"
+#include "beamhours/units/nuclide.h"
+
+static bh_acceptance_spec spec_of(const bh_setting_arm *arm)
+{
+    const bh_arm *a = &arm->arm;
+    static const bh_acceptance_shape shapes[] = {[BH_SHAPE_RECTANGLE] = BH_ACCEPTANCE_RECTANGLE,
+                                                 [BH_SHAPE_RING] = BH_ACCEPTANCE_RING,
+                                                 [BH_SHAPE_POINT] = BH_ACCEPTANCE_POINT};
+    bh_acceptance_spec spec = {.shape = shapes[a->shape],
+                               .angle = arm->angle.value,
+                               .solid_angle = a->solid_angle.given ? a->solid_angle.value : 0,
+                               .bins = a->bins,
+                               .edges = a->edges};
+    if (a->shape == BH_SHAPE_RING) {
+        spec.angle = 0;
+        spec.ring_from = a->ring.from;
+        spec.ring_to = a->ring.to;
+        spec.azimuth = a->azimuth.value;
+    } else if (a->shape == BH_SHAPE_RECTANGLE) {
+        spec.in_plane_from = a->in_plane.from;
+        spec.in_plane_to = a->in_plane.to;
+        spec.out_of_plane_from = a->out_of_plane.from;
+        spec.out_of_plane_to = a->out_of_plane.to;
+    }
+    return spec;
+}
+
+static void remark(const bh_yielder *yielder, bh_remark_kind kind, const bh_struck *struck,
+                   const char *what)
+{
+    char name[8];
+    if (yielder->remarks)
+        bh_remarks_note(yielder->remarks,
+                        &(bh_remark){.kind = kind,
+                                     .at = yielder->plan->models.structure.at,
+                                     .key = "models.structure",
+                                     .who = bh_nuclide_name(struck->z, struck->a, name),
+                                     .what = what});
+}
+
+/* The plan's model; where it cannot describe this nuclide (a proton fit on an aluminium window),
+ * the default one and a warning. */
+static const bh_structure *structure_of(bh_yielder *yielder, const bh_struck *struck, bh_error *err)
+{
+    const char *name = bh_plan_structure(yielder->plan, struck->z, struck->a);
+    bh_error why = {.code = BH_OK};
+    const bh_structure *found =
+        bh_workspace_structure(yielder->workspace, name, struck->z, struck->a, &why);
+    if (found || why.code == BH_ENOMEM) {
+        if (!found)
+            bh_fail(err, BH_ENOMEM, "%s", why.text);
+        return found;
+    }
+    found = bh_workspace_structure(yielder->workspace, "default", struck->z, struck->a, err);
+    if (found)
+        remark(yielder, BH_REMARK_FALLBACK, struck, bh_structure_name(found));
+    return found;
+}
+
+bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view, const bh_struck *struck,
+                         bh_channel *channels, size_t *count, bh_error *err)
+{
+    const bh_beam *beam = &view->setting->beam;
+    const bh_detects detects = view->arm->arm.detects;
+    const bh_channel base = {.process = view->process,
+                             .encounter = {.beam = &beam->particle,
+                                           .charge = beam->charge,
+                                           .z = struck->z,
+                                           .a = struck->a,
+                                           .target = struck->mass,
+                                           .kinetic = beam->kinetic_energy.value,
+                                           .structure = structure_of(yielder, struck, err)}};
+    if (!base.encounter.structure)
+        return BH_ENOMEM;
+    size_t n = 0;
+    if (detects != BH_DETECTS_RECOIL) {
+        channels[n++] = base;
+        if (beam->particle.mass > struck->mass) {
+            channels[n] = base;
+            channels[n++].branch = BH_BRANCH_SLOW;
+        }
+    }
+    if (detects != BH_DETECTS_SCATTERED) {
+        channels[n] = base;
+        channels[n++].recoil = true;
+    }
+    *count = n;
+    return BH_OK;
+}
+
+static double relative_resolution(const bh_arm *arm, double mass, double momentum)
+{
+    if (arm->momentum_resolution.value > 0)
+        return arm->momentum_resolution.value;
+    if (!(arm->energy_resolution.value > 0))
+        return 0;
+    return arm->energy_resolution.value * sqrt(momentum * momentum + mass * mass) /
+           (momentum * momentum);
+}
+
+/* The momentum the arm is set to, and its bite. */
+static bh_code set_momentum(bh_yielder *yielder, bh_view *view, bh_error *err)
+{
+    const bh_arm *arm = &view->arm->arm;
+    const bh_struck *struck = &view->list->nuclides[view->list->main];
+    bh_channel channels[BH_MOST_CHANNELS];
+    size_t count = 0;
+    const bh_code code = bh_view_channels(yielder, view, struck, channels, &count, err);
+    if (code)
+        return code;
+    bh_event event;
+    view->central_momentum = (double)NAN;
+    const bool recoil = channels[0].recoil;
+    if (view->arm->central_momentum.given)
+        view->central_momentum = view->arm->central_momentum.value;
+    else if (view->axis <= bh_channel_largest_angle(&channels[0]) &&
+             !bh_channel_event(&channels[0], view->axis, &event, NULL))
+        view->central_momentum = recoil ? event.recoil_momentum : event.scattered_momentum;
+    view->cut = arm->momentum_bite.given && view->central_momentum > 0;
+    if (!view->cut)
+        return BH_OK;
+    view->bite_from = fmax(0, view->central_momentum * (1 + arm->momentum_bite.from));
+    view->bite_to = view->central_momentum * (1 + arm->momentum_bite.to);
+    view->momentum_sigma = relative_resolution(
+        arm, recoil ? struck->mass : view->setting->beam.particle.mass, view->central_momentum);
+    return BH_OK;
+}
+
+bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_setting_arm *arm,
+                     bh_view *view, bh_error *err)
+{
+    *view = (bh_view){.setting = setting,
+                      .arm = arm,
+                      .list = yielder->lists[setting->target - yielder->plan->targets],
+                      .process = bh_process_find(setting->process.text),
+                      .spec = spec_of(arm),
+                      .beam = setting->beam.particle_rate.value * setting->beam.fraction.value,
+                      .parts = 1};
+    if (!view->process)
+        return bh_fail(err, BH_EPLAN, "no process %s", setting->process.text);
+    view->axis = arm->arm.shape == BH_SHAPE_RING ? (arm->arm.ring.from + arm->arm.ring.to) / 2
+                                                 : arm->angle.value;
+    return set_momentum(yielder, view, err);
+}
