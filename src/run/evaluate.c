@@ -126,16 +126,27 @@ static void find(const bh_evaluator *evaluator, const bh_setting_hours *hours)
     }
 }
 
+bh_code bh_setting_measure(bh_evaluator *evaluator, size_t setting, bool bins,
+                           bh_setting_hours *hours, bh_error *err)
+{
+    const bh_setting *s = &evaluator->yielder.plan->settings[setting];
+    bh_workspace_trim(evaluator->yielder.workspace);
+    const bh_code code = measure(evaluator, s, bins, err);
+    if (code)
+        return code;
+    *hours = (bh_setting_hours){.setting = s, .arms = evaluator->arms};
+    bh_hours_decide(hours);
+    return BH_OK;
+}
+
 bh_code bh_setting_evaluate(bh_evaluator *evaluator, size_t setting, bh_setting_rows *out,
                             bh_error *err)
 {
     const bh_setting *s = &evaluator->yielder.plan->settings[setting];
-    bh_workspace_trim(evaluator->yielder.workspace);
-    const bh_code code = measure(evaluator, s, out->bins != NULL, err);
+    bh_setting_hours hours;
+    const bh_code code = bh_setting_measure(evaluator, setting, out->bins != NULL, &hours, err);
     if (code)
         return code;
-    bh_setting_hours hours = {.setting = s, .arms = evaluator->arms};
-    bh_hours_decide(&hours);
     find(evaluator, &hours);
     bh_row *bin = out->bins;
     for (size_t a = 0; a < s->arm_count; a++) {

@@ -34,8 +34,8 @@ bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err)
 }
 
 /* How much of each layer is seen, by the arm as it stands and (sensitivities) moved both ways. */
-static bh_code set_paths(bh_yielder *yielder, const bh_view *view, const bh_target *target,
-                         bh_error *err)
+bh_code bh_view_paths(bh_yielder *yielder, const bh_view *view, const bh_target *target,
+                      bh_error *err)
 {
     const bh_extent *seen = &view->arm->arm.target_view;
     for (size_t l = 0; l < target->layer_count; l++)
@@ -58,7 +58,7 @@ static bh_code set_paths(bh_yielder *yielder, const bh_view *view, const bh_targ
 static bh_code set_seen(bh_yielder *yielder, const bh_view *view, const bh_struck_list *list,
                         bh_error *err)
 {
-    const bh_code code = set_paths(yielder, view, list->target, err);
+    const bh_code code = bh_view_paths(yielder, view, list->target, err);
     if (code)
         return code;
     for (size_t n = 0; n < list->count; n++)
@@ -79,7 +79,7 @@ static bh_code set_seen(bh_yielder *yielder, const bh_view *view, const bh_struc
     return BH_OK;
 }
 
-static bh_channel_request request_of(const bh_view *view, const bh_channel *channel)
+bh_channel_request bh_view_request(const bh_view *view, const bh_channel *channel)
 {
     return (bh_channel_request){.channel = *channel,
                                 .acceptance = view->spec,
@@ -120,7 +120,7 @@ static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, const bh_struck
     size_t count = 0;
     bh_code code = bh_view_channels(yielder, &yield->view, struck, channels, &count, err);
     for (size_t c = 0; !code && c < count; c++) {
-        bh_channel_request request = request_of(&yield->view, &channels[c]);
+        bh_channel_request request = bh_view_request(&yield->view, &channels[c]);
         request.sensitivities = seen->signal > 0;
         const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
         if (!sums)
@@ -186,7 +186,7 @@ static bh_code add_dummy(bh_yielder *yielder, bh_yield *yield, const bh_target *
         size_t count = 0;
         code = bh_view_channels(yielder, &yield->view, &list->nuclides[n], channels, &count, err);
         for (size_t c = 0; !code && c < count; c++) {
-            const bh_channel_request request = request_of(&yield->view, &channels[c]);
+            const bh_channel_request request = bh_view_request(&yield->view, &channels[c]);
             const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
             if (!sums)
                 return err->code;

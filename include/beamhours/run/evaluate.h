@@ -23,6 +23,12 @@ typedef struct {
 BH_CHECKED bh_code bh_evaluator_prepare(bh_evaluator *evaluator, const bh_plan *plan,
                                         bh_arena *arena, bh_error *err);
 
+/* Fills `hours`: yields, recorded rates and hours of setting number `setting`, with its bins when
+ * wanted; valid until the next call.  BH_ENOMEM, BH_EPLAN (a name that the plan room should have
+ * refused), or BH_ENOCONV when cancelled. */
+BH_CHECKED bh_code bh_setting_measure(bh_evaluator *evaluator, size_t setting, bool bins,
+                                      bh_setting_hours *hours, bh_error *err);
+
 /* The rows of one setting: `whole`, one for each of its arms, and `bins`, one for each bin of each
  * arm in the same order, or NULL.  Where they stand in the plan is in them already. */
 typedef struct {
@@ -30,8 +36,7 @@ typedef struct {
     double full, empty; /* [h] on the full and on the empty target; 0 where nothing is asked for */
 } bh_setting_rows;
 
-/* Fills the rows and hours of setting number `setting`.  BH_ENOMEM, BH_EPLAN (a name that the plan
- * room should have refused), or BH_ENOCONV when cancelled. */
+/* Fills the rows and hours of setting number `setting`; errors as above. */
 BH_CHECKED bh_code bh_setting_evaluate(bh_evaluator *evaluator, size_t setting,
                                        bh_setting_rows *out, bh_error *err);
 

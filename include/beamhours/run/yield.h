@@ -100,9 +100,16 @@ typedef struct {
     double rate;          /* [Hz] before dead time */
 } bh_contribution;
 
-/* Fills contributions (room for the presences of the view's list) to part number `part`.  After
- * bh_view_make. */
-BH_CHECKED bh_code bh_yield_contributions(bh_yielder *yielder, const bh_view *view, int part,
+/* Fills contributions (room for the presences of the view's list) to part number `part` of a yield
+ * that is made. */
+BH_CHECKED bh_code bh_yield_contributions(bh_yielder *yielder, const bh_yield *yield, int part,
                                           bh_contribution *contributions, bh_error *err);
+
+/* The sums that a view wants of a channel, without sensitivities. */
+bh_channel_request bh_view_request(const bh_view *view, const bh_channel *channel);
+
+/* How much of each layer of `target` the arm sees, into yielder->paths. */
+BH_CHECKED bh_code bh_view_paths(bh_yielder *yielder, const bh_view *view, const bh_target *target,
+                                 bh_error *err);
 
 #endif

@@ -1,0 +1,61 @@
+/* explaining.h - an explanation while it is written: its lines, and what they are written from. */
+#ifndef BH_RUN_EXPLAINING_H
+#define BH_RUN_EXPLAINING_H
+
+#include "beamhours/base/arena.h"
+#include "beamhours/run/evaluate.h"
+#include "beamhours/run/explain.h"
+#include "beamhours/units/quantity.h"
+
+/* A piece of the uncertainty of the row's rate. */
+typedef struct {
+    const char *name;
+    double share; /* [1] relative standard uncertainty of the rate from this alone */
+} bh_piece;
+
+enum { BH_MOST_PIECES = 64 };
+
+typedef struct {
+    const bh_table *table;
+    bh_arena *arena; /* of the lines and their texts */
+    bh_line *lines;
+    size_t count, room;
+    bool failed; /* memory ran out */
+    bh_evaluator evaluator;
+    const bh_setting *setting;
+    const bh_arm_hours *arm; /* of the evaluator */
+    bh_setting_hours hours;
+    int bin;
+    const bh_part *part;
+    bh_channel channel; /* the first of the main nuclide */
+    bh_event event;     /* at the row's angle */
+    bool reached;       /* there is such an event */
+    int piece_count;
+    bh_piece pieces[BH_MOST_PIECES];
+} bh_explaining;
+
+/* Formats a text that lives as long as the lines; NULL (and failed) when memory runs out. */
+const char *bh_explain_text(bh_explaining *x, const char *fmt, ...) BH_PRINTF(2, 3);
+
+/* A number [1] with 6 digits and its unit, "4.2e+37 /cm2/s". */
+const char *bh_explain_number(bh_explaining *x, double value, const char *unit);
+
+/* "plan.yaml:14:12", or NULL where there is no place. */
+const char *bh_explain_mark(bh_explaining *x, bh_mark at);
+
+/* Adds a line; its texts must live as long as the lines. */
+void bh_explain_add(bh_explaining *x, bh_line line);
+void bh_explain_section(bh_explaining *x, const char *name);
+
+/* Notes that the rate is uncertain by `share` [1], relative, from `name` alone; shares that are not
+ * above 0 are passed over. */
+void bh_explain_piece(bh_explaining *x, const char *name, double share);
+
+/* The parts of an explanation, in their order. */
+void bh_explain_inputs(bh_explaining *x);
+void bh_explain_cross_section(bh_explaining *x);
+void bh_explain_rates(bh_explaining *x);
+void bh_explain_time(bh_explaining *x);
+void bh_explain_assumptions(bh_explaining *x);
+
+#endif

@@ -1,0 +1,55 @@
+/* contributions.c - which nuclide in which layer gives what part of a rate, for explain. */
+#include "beamhours/rates/counting.h"
+#include "beamhours/run/yield.h"
+
+/* The integrals of one nuclide over one part of the arm, its channels summed. */
+static bh_code integrals(bh_yielder *yielder, const bh_view *view, int part, bh_contribution *c,
+                         bh_error *err)
+{
+    bh_channel channels[BH_MOST_CHANNELS];
+    size_t count = 0;
+    const bh_code code = bh_view_channels(yielder, view, c->struck, channels, &count, err);
+    if (code)
+        return code;
+    double total = 0, kept = 0;
+    for (size_t k = 0; k < count; k++) {
+        bh_channel_request request = bh_view_request(view, &channels[k]);
+        request.sensitivities = c->presence->origin == BH_ORIGIN_SIGNAL;
+        const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
+        if (!sums)
+            return err->code;
+        total += sums[part].total;
+        kept += sums[part].kept;
+    }
+    c->structure = channels[0].encounter.structure;
+    c->cross_section = total;
+    c->kept = total > 0 ? kept / total : 0;
+    return BH_OK;
+}
+
+bh_code bh_yield_contributions(bh_yielder *yielder, const bh_yield *yield, int part,
+                               bh_contribution *contributions, bh_error *err)
+{
+    const bh_view *view = &yield->view;
+    const bh_struck_list *list = view->list;
+    bh_code code = bh_view_paths(yielder, view, list->target, err);
+    for (size_t i = 0; !code && i < list->presence_count; i++) {
+        const bh_presence *p = &list->presences[i];
+        bh_contribution *c = &contributions[i];
+        *c = (bh_contribution){.presence = p,
+                               .struck = &list->nuclides[p->nuclide],
+                               .seen = p->number * yielder->paths[0][p->layer]};
+        code = integrals(yielder, view, part, c, err);
+        const double solid_angle = yield->part[part].solid_angle;
+        c->cross_section /= solid_angle;
+        c->rate =
+            bh_counting_rate(&(bh_rate_factors){.beam = view->beam,
+                                                .seen = c->seen,
+                                                .cross_section = c->cross_section,
+                                                .solid_angle = solid_angle,
+                                                .radiative = 1,
+                                                .kept = c->kept,
+                                                .efficiency = view->arm->arm.efficiency.value});
+    }
+    return code;
+}

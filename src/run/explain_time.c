@@ -1,0 +1,145 @@
+/* explain_time.c - hours, counts, and what the uncertainty is made of. */
+#include <math.h>
+
+#include "beamhours/run/explaining.h"
+
+static void factor(bh_explaining *x, const char *name, const char *value, const char *formula)
+{
+    bh_explain_add(
+        x, (bh_line){.kind = BH_LINE_FACTOR, .name = name, .value = value, .formula = formula});
+}
+
+static const char *percent(bh_explaining *x, double share)
+{
+    return bh_explain_number(x, 100 * share, "%");
+}
+
+static void explain_hours(bh_explaining *x)
+{
+    const double hours = x->hours.full;
+    const bh_part *p = x->part;
+    const double live = x->arm->live.live_fraction;
+    bh_explain_section(x, "Time");
+    if (!isfinite(hours)) {
+        bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE,
+                                    .remark = bh_why_text(x->hours.wanted ? BH_WHY_NO_SIGNAL
+                                                                          : BH_WHY_NO_WANT)});
+        return;
+    }
+    factor(x, "hours with full target", bh_explain_number(x, hours, "h"),
+           x->setting->arm_count > 1 ? "the slowest arm of the setting decides"
+                                     : "what the setting asks for");
+    factor(x, "hours with empty target", bh_explain_number(x, hours * x->hours.share, "h"),
+           bh_explain_text(x, "%s of the full-target time", percent(x, x->hours.share)));
+    factor(
+        x, "beam charge",
+        bh_explain_number(x, bh_counting_charge(x->setting->beam.current.value, hours) * 1e3, "mC"),
+        "current x hours with full target");
+    factor(x, "counts", bh_explain_number(x, bh_counting_counts(p->signal, live, hours), ""),
+           "signal rate x live fraction x 3600 x hours");
+}
+
+/* sigma^2 = (s + w + o) T + w T / (phi k): what each term gives. */
+static void explain_variance(bh_explaining *x)
+{
+    const bh_recorded *r = &x->arm->recorded[x->bin];
+    const bh_empty *e = &x->arm->empty;
+    const double second = e->measured ? r->windows / (e->share * e->advantage) : 0;
+    const double sum = r->signal + r->windows + r->other + second;
+    const double stat = bh_precision_uncertainty(r, e, x->hours.full);
+    bh_explain_section(x, "Statistical uncertainty");
+    if (!(sum > 0) || !isfinite(stat))
+        return;
+    factor(x, "from signal counts", percent(x, r->signal / sum), "share of the variance");
+    factor(x, "from windows", percent(x, r->windows / sum), "share of the variance");
+    factor(x, "from other nuclides", percent(x, r->other / sum), "share of the variance");
+    factor(x, "from the empty target", percent(x, second / sum),
+           e->measured ? "share of the variance" : "background taken as known exactly");
+    bh_explain_add(x, (bh_line){.kind = BH_LINE_FACTOR,
+                                .name = "statistical uncertainty",
+                                .value = percent(x, stat),
+                                .formula = "sqrt((s + w + o) T + w T / phi) / (s T)",
+                                .source = "Poisson statistics"});
+    const double to_goal = bh_hours_to_goal(x->arm, x->bin);
+    if (isfinite(to_goal))
+        factor(x, "hours to goal", bh_explain_number(x, to_goal, "h"),
+               "full-target hours that, with the empty share, reach the goal");
+    bh_explain_piece(x, "counting statistics", stat);
+}
+
+static double relative(const bh_value *v)
+{
+    return v->value != 0 ? fabs(v->uncertainty / v->value) : 0;
+}
+
+/* The number of scatterer nuclei goes with thickness and density of each sample layer. */
+static void add_layers(bh_explaining *x)
+{
+    const bh_target *t = x->setting->target;
+    for (size_t i = 0; i < t->layer_count; i++)
+        if (t->layers[i].role == BH_ROLE_SAMPLE)
+            bh_explain_piece(x, bh_explain_text(x, "size of layer %zu", i + 1),
+                             relative(&t->layers[i].areal_number));
+}
+
+/* What the plan's own uncertainties (± in it) make of the rate. */
+static void add_inputs(bh_explaining *x)
+{
+    const bh_beam *beam = &x->setting->beam;
+    const bh_setting_arm *s = x->arm->yield->view.arm;
+    const double mass = beam->particle.mass, kinetic = beam->kinetic_energy.value;
+    const double momentum2 = kinetic * (kinetic + 2 * mass);
+    const double by_momentum =
+        beam->kinetic_energy.uncertainty * (kinetic + mass) / momentum2; /* dp/p = E dT / p^2 */
+    const double turn = hypot(s->arm.pointing.uncertainty, s->angle.uncertainty);
+    bh_explain_piece(x, "beam current",
+                     relative(beam->rate_written ? &beam->particle_rate : &beam->current));
+    bh_explain_piece(x, "beam fraction", relative(&beam->fraction));
+    bh_explain_piece(x, "beam energy", fabs(x->part->per_momentum) * by_momentum);
+    bh_explain_piece(x, "angle of the arm", fabs(x->part->per_radian) * turn);
+    bh_explain_piece(x, "efficiency", relative(&s->arm.efficiency));
+    if (s->arm.solid_angle.given)
+        bh_explain_piece(x, "solid angle", relative(&s->arm.solid_angle));
+    add_layers(x);
+}
+
+static void explain_pieces(bh_explaining *x)
+{
+    bh_explain_section(x, "What the rate is uncertain by");
+    int largest = 0;
+    for (int i = 0; i < x->piece_count; i++) {
+        factor(x, x->pieces[i].name, percent(x, x->pieces[i].share), "relative, from this alone");
+        if (x->pieces[i].share > x->pieces[largest].share)
+            largest = i;
+    }
+    if (x->piece_count)
+        bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE,
+                                    .remark = bh_explain_text(x, "The largest is %s.",
+                                                              x->pieces[largest].name)});
+}
+
+void bh_explain_time(bh_explaining *x)
+{
+    explain_hours(x);
+    explain_variance(x);
+    add_inputs(x);
+    explain_pieces(x);
+}
+
+void bh_explain_assumptions(bh_explaining *x)
+{
+    static const char *const silent[] = {
+        "A point-like, parallel beam on the axis.",
+        "The target covers the beam and is uniform.",
+        "Atoms are at rest and nuclei spherical.",
+        "One photon is exchanged; the beam is a plane wave.",
+        "Other particles in the beam do not reach the counts.",
+        "Only elastic scattering is counted: no inelastic or quasi-elastic background."};
+    bh_explain_section(x, "Assumed without being asked");
+    for (size_t i = 0; i < sizeof silent / sizeof silent[0]; i++)
+        bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE, .remark = silent[i]});
+    const char *note;
+    for (size_t i = 0; (note = bh_table_note(x->table, i)); i++)
+        bh_explain_add(x,
+                       (bh_line){.kind = BH_LINE_NOTE, .remark = bh_explain_text(x, "%s", note)});
+}
