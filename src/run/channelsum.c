@@ -16,7 +16,7 @@ struct key {
     const bh_structure *structure;
     char beam[16];
     int charge, z, a, recoil, branch, bins, cut, sensitivities, shape;
-    double target, kinetic, momentum_from, momentum_to, momentum_sigma;
+    double target, kinetic, momentum_from, momentum_to;
     double shape_numbers[9];
     double edges[BH_MOST_BINS + 1];
 };
@@ -43,7 +43,6 @@ static size_t fill_key(const bh_channel_request *r, struct key *k)
     k->kinetic = e->kinetic;
     k->momentum_from = r->momentum_from;
     k->momentum_to = r->momentum_to;
-    k->momentum_sigma = r->momentum_sigma;
     const double numbers[] = {
         s->angle,     s->in_plane_from, s->in_plane_to, s->out_of_plane_from, s->out_of_plane_to,
         s->ring_from, s->ring_to,       s->azimuth,     s->solid_angle};
@@ -54,28 +53,12 @@ static size_t fill_key(const bh_channel_request *r, struct key *k)
     return fixed + ((size_t)s->bins + 1) * sizeof(double);
 }
 
-/* The function that is averaged. */
-struct seen_channel {
-    bh_channel channel;
-    bh_bite bite;
-    double sigma; /* [1] relative momentum resolution; 0: the bite cuts by angle */
-};
-
-static void weigh(const struct seen_channel *c, size_t n, const double *momentum, double *value)
-{
-    for (size_t i = 0; c->sigma > 0 && i < n; i++)
-        value[i] *= bh_bite_share(&c->bite, momentum[i], c->sigma * momentum[i]);
-}
-
 static void evaluate(void *context, size_t n, const double *theta, double *value)
 {
-    const struct seen_channel *c = context;
+    const bh_channel *channel = context;
     double momentum[BATCH];
-    for (size_t i = 0; i < n; i += BATCH) {
-        const size_t m = n - i < BATCH ? n - i : BATCH;
-        bh_channel_eval(&c->channel, m, theta + i, value + i, momentum);
-        weigh(c, m, momentum, value + i);
-    }
+    for (size_t i = 0; i < n; i += BATCH)
+        bh_channel_eval(channel, n - i < BATCH ? n - i : BATCH, theta + i, value + i, momentum);
 }
 
 static bh_detected detected_of(const bh_channel *channel)
@@ -85,9 +68,9 @@ static bh_detected detected_of(const bh_channel *channel)
     return channel->branch == BH_BRANCH_SLOW ? BH_DETECTED_SLOW : BH_DETECTED_SCATTERED;
 }
 
-/* One function to be fitted, with the angles that a sharp bite allows. */
+/* One function to be fitted, with the angles that the bite allows. */
 struct task {
-    struct seen_channel function;
+    bh_channel channel;
     bh_interval allowed[1];
     bh_average_request request;
 };
@@ -96,19 +79,17 @@ static bh_code set_up(const bh_channel_request *r, struct task *t, bh_error *err
 {
     const bh_encounter *e = &r->channel.encounter;
     const bh_collision in = {.mass = e->beam->mass, .target = e->target, .kinetic = e->kinetic};
-    t->function = (struct seen_channel){.channel = r->channel,
-                                        .bite = {.detected = detected_of(&r->channel),
-                                                 .momentum_from = r->momentum_from,
-                                                 .momentum_to = r->momentum_to}};
     const double largest = bh_channel_largest_angle(&r->channel);
+    t->channel = r->channel;
     t->request = (bh_average_request){.function = evaluate,
-                                      .context = &t->function,
+                                      .context = &t->channel,
                                       .limit = largest < BH_PI ? largest : 0,
                                       .cut = r->cut,
                                       .allowed = t->allowed};
-    if (!r->cut)
-        return BH_OK;
-    return bh_bite_angles(&in, &t->function.bite, t->allowed, &t->request.allowed_count, err);
+    const bh_bite bite = {.detected = detected_of(&r->channel),
+                          .momentum_from = r->momentum_from,
+                          .momentum_to = r->momentum_to};
+    return r->cut ? bh_bite_angles(&in, &bite, t->allowed, &t->request.allowed_count, err) : BH_OK;
 }
 
 /* Where the arm is, and where it is moved to. */
@@ -161,7 +142,7 @@ struct making {
     int parts; /* the whole arm and its bins */
 };
 
-/* The fitted function over one place: `store` takes what it needs of each part. */
+/* Sums the fitted function over one place. */
 static bh_code add_up(struct making *m, const bh_average_request *request,
                       const bh_acceptance *where, bh_error *err)
 {
@@ -184,31 +165,6 @@ static bh_code sum_total(struct making *m, struct task *t, bh_error *err)
         m->sums[i].kept = part_of(m, i)->kept;
         m->sums[i].converged = part_of(m, i)->converged;
     }
-    return code;
-}
-
-/* The bite blurred by the momentum resolution is part of the function, no cut in angle. */
-static bh_code fit_blurred(struct making *m, struct task *t, bh_error *err)
-{
-    t->function.sigma = m->request->momentum_sigma;
-    t->request.cut = false;
-    return bh_average_fit(&t->request, m->places.polar, m->averages, err);
-}
-
-static bool blurs(const bh_channel_request *r)
-{
-    return r->cut && r->momentum_sigma > 0;
-}
-
-static bh_code sum_kept(struct making *m, struct task *t, bh_error *err)
-{
-    if (!blurs(m->request))
-        return BH_OK;
-    bh_code code = fit_blurred(m, t, err);
-    if (!code)
-        code = add_up(m, &t->request, &m->places.at, err);
-    for (int i = 0; !code && i < m->parts; i++)
-        m->sums[i].kept = part_of(m, i)->total;
     return code;
 }
 
@@ -241,9 +197,7 @@ static bh_code sum_boosted(struct making *m, bh_error *err)
             boosted_kinetic(&r.channel.encounter, k ? BH_STEP_MOMENTUM : -BH_STEP_MOMENTUM);
         struct task t;
         code = set_up(&r, &t, err);
-        if (!code && blurs(&r))
-            code = fit_blurred(m, &t, err);
-        else if (!code)
+        if (!code)
             code = bh_average_fit(&t.request, m->places.polar, m->averages, err);
         if (!code)
             code = add_up(m, &t.request, &m->places.at, err);
@@ -261,8 +215,6 @@ static bh_code make(struct making *m, bh_error *err)
         code = set_up(m->request, &t, err);
     if (!code)
         code = sum_total(m, &t, err);
-    if (!code)
-        code = sum_kept(m, &t, err);
     if (!code && m->request->sensitivities)
         code = sum_moved(m, &t, err);
     if (!code && m->request->sensitivities)

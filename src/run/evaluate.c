@@ -53,7 +53,7 @@ static bh_code measure(bh_evaluator *evaluator, const bh_setting *setting, bool 
         *hours = (bh_arm_hours){.yield = yield, .recorded = evaluator->recorded + used};
         yield->part = evaluator->parts + used;
         code = bh_view_make(&evaluator->yielder, setting, arm, &yield->view, err);
-        if (bins || arm->each_bin)
+        if (bins || arm->arm.bins > 1) /* an arm in bins is their sum, shown or not */
             yield->view.parts = 1 + arm->arm.bins;
         if (!code)
             code = bh_yield_make(&evaluator->yielder, yield, err);

@@ -92,16 +92,6 @@ bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view, const bh_stru
     return BH_OK;
 }
 
-static double relative_resolution(const bh_arm *arm, double mass, double momentum)
-{
-    if (arm->momentum_resolution.value > 0)
-        return arm->momentum_resolution.value;
-    if (!(arm->energy_resolution.value > 0))
-        return 0;
-    return arm->energy_resolution.value * sqrt(momentum * momentum + mass * mass) /
-           (momentum * momentum);
-}
-
 /* The momentum the arm is set to, and its bite. */
 static bh_code set_momentum(bh_yielder *yielder, bh_view *view, bh_error *err)
 {
@@ -114,19 +104,17 @@ static bh_code set_momentum(bh_yielder *yielder, bh_view *view, bh_error *err)
         return code;
     bh_event event;
     view->central_momentum = (double)NAN;
-    const bool recoil = channels[0].recoil;
     if (view->arm->central_momentum.given)
         view->central_momentum = view->arm->central_momentum.value;
     else if (view->axis <= bh_channel_largest_angle(&channels[0]) &&
              !bh_channel_event(&channels[0], view->axis, &event, NULL))
-        view->central_momentum = recoil ? event.recoil_momentum : event.scattered_momentum;
+        view->central_momentum =
+            channels[0].recoil ? event.recoil_momentum : event.scattered_momentum;
     view->cut = arm->momentum_bite.given && view->central_momentum > 0;
     if (!view->cut)
         return BH_OK;
     view->bite_from = fmax(0, view->central_momentum * (1 + arm->momentum_bite.from));
     view->bite_to = view->central_momentum * (1 + arm->momentum_bite.to);
-    view->momentum_sigma = relative_resolution(
-        arm, recoil ? struck->mass : view->setting->beam.particle.mass, view->central_momentum);
     return BH_OK;
 }
 

@@ -86,7 +86,6 @@ bh_channel_request bh_view_request(const bh_view *view, const bh_channel *channe
                                 .cut = view->cut,
                                 .momentum_from = view->bite_from,
                                 .momentum_to = view->bite_to,
-                                .momentum_sigma = view->momentum_sigma,
                                 .bins = view->parts > 1};
 }
 

@@ -19,7 +19,6 @@ typedef struct {
     bh_acceptance_spec acceptance;
     bool cut;                          /* there is a momentum bite */
     double momentum_from, momentum_to; /* [MeV/c] of the detected particle */
-    double momentum_sigma;             /* [1] relative resolution; 0: sharp */
     bool bins;                         /* sums of the bins are wanted too */
     bool sensitivities;                /* moved and boosted are wanted too */
 } bh_channel_request;

@@ -42,7 +42,6 @@ typedef struct {
     double central_momentum;   /* [MeV/c] NAN where none is written and none follows */
     bool cut;                  /* a momentum bite is in force */
     double bite_from, bite_to; /* [MeV/c] */
-    double momentum_sigma;     /* [1] relative resolution; 0: sharp */
     double beam;               /* [1/s] beam particles of the named kind */
     int parts;                 /* 1, or 1 + bins */
 } bh_view;
