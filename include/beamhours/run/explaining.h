@@ -37,7 +37,7 @@ typedef struct {
 /* Formats a text that lives as long as the lines; NULL (and failed) when memory runs out. */
 const char *bh_explain_text(bh_explaining *x, const char *fmt, ...) BH_PRINTF(2, 3);
 
-/* A number [1] with 6 digits and its unit, "4.2e+37 /cm2/s". */
+/* The number value [1] with 6 digits, and its unit: "4.2e+37 /cm2/s". */
 const char *bh_explain_number(bh_explaining *x, double value, const char *unit);
 
 /* "plan.yaml:14:12", or NULL where there is no place. */
