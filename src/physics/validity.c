@@ -12,8 +12,8 @@
 #define BOZOIAN "Bozoian et al. 1990"
 #define CLINE   "estimate: nuclear surfaces 5 fm apart, Cline 1986"
 #define BARE    "no repulsion keeps the two apart"
-#define ONE_DEG BH_DEGREE /* forward of this hardly any arm stands */
-#define SLOWEST 0.01      /* [MeV] electrons */
+#define SLOWEST 0.01               /* [MeV] electrons */
+#define FORWARD (15.0 * BH_DEGREE) /* arms of unknown angle stand behind this */
 
 bh_nuclear_limit bh_validity_nuclear(const bh_encounter *encounter)
 {
@@ -89,7 +89,7 @@ int bh_validity_elastic(const bh_encounter *encounter, char *out, size_t size)
             "%satomic screening is left out: it lowers the cross section by more than 1 %% at "
             "every angle",
             length ? "; " : "");
-    else if (angle > ONE_DEG)
+    else if (angle > (encounter->angle > 0.0 ? encounter->angle : FORWARD))
         say(out, size, &length,
             "%satomic screening is left out: it lowers the cross section by more than 1 %% forward "
             "of about %.2g deg",

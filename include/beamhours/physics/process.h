@@ -18,6 +18,7 @@ typedef struct {
     double target;                 /* [MeV] its mass */
     double kinetic;                /* [MeV] beam kinetic energy of the whole particle */
     const bh_structure *structure; /* of the struck nucleus */
+    double angle; /* [rad] the most forward scattered angle of interest, for caveats; 0 not known */
 } bh_encounter;
 
 typedef struct bh_process {
