@@ -172,7 +172,7 @@ END_TEST
 START_TEST(no_number_is_printed_as_such)
 {
     char out[64];
-    const bh_quantity q = {.value = NAN}, inf = {.value = INFINITY};
+    const bh_quantity q = {.value = (double)NAN}, inf = {.value = (double)INFINITY};
     ck_assert_int_eq(bh_quantity_print(&q, BH_DIM_ENERGY, out, sizeof out), 3);
     ck_assert_str_eq(out, "nan");
     (void)bh_quantity_print(&inf, BH_DIM_ENERGY, out, sizeof out);
