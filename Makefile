@@ -39,6 +39,7 @@ $(BUILD)/front.a: $(call obj,$(FRONT)) $(FOLDERS)
 $(BUILD)/%.a: ; $(quiet) rm -f $@ && ar rcs $@ $(filter %.o,$^)
 $(BUILD)/%.so.0: ; $(LINK) -shared -Wl,-soname,$(@F) $(if $(HARDEN),-Xlinker --no-undefined) $(filter %.o,$^) $(LIBS)
 $(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(TEST_LIBS) $(LIBS)
+$(call bin,$(filter %_faults.c,$(TESTS))): LDFLAGS += $(patsubst %,-Xlinker --wrap=%,malloc calloc realloc write fsync fchmod close rename)
 $(call bin,$(FUZZ)): %: %.o $(BUILD)/libbeamhours.a ; $(LINK) -fsanitize=fuzzer $^ $(LIBS)
 $(BUILD)/%.o: %.c $(BUILD)/flags ; $(quiet) mkdir -p $(@D) && $(CC) $(ALL_C) -MMD -MP -c -o $@ $<
 FLAGS := $(CC) $(ALL_C) $(LDFLAGS) $(LIBS) $(TEST_LIBS)

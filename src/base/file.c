@@ -204,7 +204,7 @@ bh_code bh_file_write(const char *path, const char *bytes, size_t length, bh_err
     struct stat old;
     if (stat(path, &old) == 0)
         return replace_existing(path, &old, content, err);
-    if (errno != ENOENT)
+    if (errno != ENOENT || !*path)
         return fail(err, BH_ECREATE, path, "cannot be created");
     if (lstat(path, &old) == 0)
         return fail_because(err, BH_ECREATE, path, "is a symbolic link to nothing; remove it");

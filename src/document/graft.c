@@ -32,6 +32,8 @@ static const char *path_so_far(struct walk *w)
     const size_t length =
         (size_t)(w->parts[w->done - 1] - w->parts[0]) + strlen(w->parts[w->done - 1]);
     const char *copy = bh_tree_copy(w->document->arena, w->path, length);
+    if (!copy)
+        bh_diags_lose(w->diags);
     return copy ? copy : "";
 }
 
@@ -102,7 +104,9 @@ static void say_no_item(struct walk *w, const bh_node *list, const char *part)
     }
     if (list->count > NAMES && names.length)
         bh_text_append(&names, ", ...");
-    if (names.length)
+    if (names.failed)
+        bh_diags_lose(w->diags);
+    else if (names.length)
         SAY(w, BH_SAY_NO_ITEM, part, list->count, names.bytes);
     else
         SAY(w, BH_SAY_NO_ITEM_NUMBER, part, list->count);

@@ -228,6 +228,8 @@ static void not_lined_up(const struct fault *f)
         SAY(f, c, BH_SAY_AFTER_VALUE, text);
     else if (tab_indented(c))
         SAY(f, c, BH_SAY_TAB);
+    else if (above.bytes[line_start(&above, above.byte)] == '%')
+        SAY(f, &above, BH_SAY_DIRECTIVE);
     else if (strncmp(above.bytes + above.byte, "...", 3) == 0)
         SAY(f, c, BH_SAY_SECOND_DOCUMENT);
     else if (mixed(c))
@@ -300,6 +302,8 @@ static const struct {
     {"", "while scanning a directive", directive},
     {"", "while scanning a %", directive},
     {"", "while parsing a %", directive},
+    {"", "while scanning a tag directive", directive},
+    {"", "while parsing a tag directive", directive},
     {"found duplicate %", "", directive},
     {"found incompatible YAML", "", directive},
     {"", "while scanning a tag", tag},

@@ -1,7 +1,5 @@
-/* tree.c - YAML events to nodes.
- *
- * Nodes wait in one list until the list or mapping they belong to is complete; only then is it
- * known how many there are. */
+/* tree.c - YAML events to nodes.  Nodes wait in one list until the list or mapping they belong to
+ * is complete; only then is it known how many there are. */
 #include "beamhours/document/tree.h"
 
 #include <stdlib.h>
@@ -181,9 +179,11 @@ static void check_value(struct builder *b, const bh_node *value)
 {
     if (b->depth == 0 || !bh_node_empty(value))
         return;
-    const bh_node *mapping = b->frames[b->depth - 1].node, *key = b->waiting[b->count - 1];
-    if (mapping->kind == BH_NODE_MAPPING && mapping->style == BH_STYLE_FLOW &&
-        key->style == BH_STYLE_PLAIN && strchr(key->text, ':'))
+    const bh_node *around = b->frames[b->depth - 1].node;
+    if (around->kind != BH_NODE_MAPPING || around->style != BH_STYLE_FLOW)
+        return;
+    const bh_node *key = b->waiting[b->count - 1];
+    if (key->style == BH_STYLE_PLAIN && strchr(key->text, ':'))
         SAY(b, key->at, BH_SAY_COLON_TIGHT);
 }
 
@@ -362,12 +362,14 @@ static void tell_syntax(struct builder *b)
 
 static void run(struct builder *b)
 {
-    const bh_tree_job *job = b->job;
-    if (!yaml_parser_initialize(&b->parser)) {
+    const unsigned char *bytes = (const unsigned char *)b->job->bytes;
+    b->waiting = malloc(FIRST_ROOM * sizeof(bh_node *));
+    b->room = FIRST_ROOM;
+    if (!b->waiting || !yaml_parser_initialize(&b->parser)) {
         lose(b);
         return;
     }
-    yaml_parser_set_input_string(&b->parser, (const unsigned char *)job->bytes, job->length);
+    yaml_parser_set_input_string(&b->parser, bytes, b->job->length);
     while (!b->ended) {
         yaml_event_t event;
         if (!yaml_parser_parse(&b->parser, &event)) {
@@ -386,12 +388,7 @@ bh_tree bh_tree_build(const bh_tree_job *job)
     struct builder b = {.job = job, .cursor = start};
     if (!bh_source_check(start, job->path, job->diags))
         return b.tree;
-    b.waiting = malloc(FIRST_ROOM * sizeof(bh_node *));
-    b.room = FIRST_ROOM;
-    if (b.waiting)
-        run(&b);
-    else
-        lose(&b);
+    run(&b);
     if (!b.wrong && bh_node_empty(b.tree.root)) {
         const bh_mark whole = {.file = job->name};
         SAY(&b, whole, BH_SAY_EMPTY);
