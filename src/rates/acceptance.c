@@ -84,14 +84,13 @@ static bh_code check(const bh_acceptance_spec *spec, bh_error *err)
  * beam are alike.  Returns how many (at most 4). */
 static int fold_in_plane(double from, double to, stretch *out)
 {
+    const int first = (int)floor(from / BH_PI);
     int n = 0;
-    for (double turn = floor(from / BH_PI); turn * BH_PI < to && n < 4; turn++) {
+    for (int turn = first; turn * BH_PI < to && n < 4; turn++) {
         const double a = clamp(from - turn * BH_PI, 0, BH_PI);
         const double b = clamp(to - turn * BH_PI, 0, BH_PI);
-        if (!(a < b))
-            continue;
-        const bool right = fmod(turn, 2) == 0;
-        out[n++] = right ? (stretch){a, b} : (stretch){BH_PI - b, BH_PI - a};
+        if (a < b)
+            out[n++] = turn % 2 == 0 ? (stretch){a, b} : (stretch){BH_PI - b, BH_PI - a};
     }
     return n;
 }
@@ -210,7 +209,7 @@ bh_code bh_acceptance_make(const bh_acceptance_spec *spec, bh_acceptance *out, b
     bh_acceptance made = {.spec = *spec, .bins = spec->bins > 0 && !point ? spec->bins : 1};
     if (point || spec->bins == 0)
         made.spec.edges = NULL;
-    make_part(spec, -INFINITY, INFINITY, &made.whole);
+    make_part(spec, -HUGE_VAL, HUGE_VAL, &made.whole);
     if (!point && spec->solid_angle > 0)
         made.whole.scale = spec->solid_angle / made.whole.solid_angle;
     made.whole.solid_angle *= made.whole.scale;

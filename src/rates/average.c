@@ -196,7 +196,7 @@ double bh_average_value(const bh_average_workspace *workspace, double theta)
     const double half = sin(theta / 2);
     const double versine = 2 * half * half;
     if (!bh_interpolant_covers(workspace->interpolant, (bh_interval){theta, theta}))
-        return NAN;
+        return (double)NAN;
     bh_interpolant_eval(workspace->interpolant, 1, &versine, &value);
     return value;
 }

@@ -85,7 +85,7 @@ typedef struct {
 static void sample(bh_interpolant *in, const piece *p, int first, int step, samples *s)
 {
     double theta[NODES];
-    double flat[NODES];
+    double flat[NODES] = {0};
     double value[NODES];
     size_t n = 0;
     for (int i = first; i < NODES; i += step, n++) {
@@ -112,10 +112,11 @@ static void sample(bh_interpolant *in, const piece *p, int first, int step, samp
 static int coefficients(const bh_interpolant *in, const double *value, int step, double *c)
 {
     const int m = (NODES - 1) / step;
+    const int turn = 2 * (NODES - 1);
     for (int k = 0; k <= m; k++) {
         double sum = (value[0] + (k % 2 ? -value[NODES - 1] : value[NODES - 1])) / 2;
-        for (int j = 1; j < m; j++)
-            sum += value[j * step] * in->cosine[(j * k * step) % (2 * (NODES - 1))];
+        for (int at = step, angle = k * step; at < NODES - 1; at += step, angle += k * step)
+            sum += value[at] * in->cosine[angle % turn];
         c[k] = 2 * sum / m;
     }
     c[0] /= 2;

@@ -20,7 +20,7 @@ static variance_rate variance_of(const bh_recorded *rates, double advantage)
 {
     const double k = advantage_or_one(advantage);
     if (!(rates->signal >= 0 && rates->windows >= 0 && rates->other >= 0 && k > 0))
-        return (variance_rate){NAN, NAN};
+        return (variance_rate){(double)NAN, (double)NAN};
     return (variance_rate){rates->signal + rates->windows + rates->other, rates->windows / k};
 }
 
@@ -37,9 +37,9 @@ double bh_precision_uncertainty(const bh_recorded *rates, const bh_empty *empty,
 {
     const double variance = variance_per_second(rates, empty);
     if (!(variance >= 0 && hours >= 0))
-        return NAN;
+        return (double)NAN;
     if (rates->signal == 0 || hours == 0)
-        return INFINITY;
+        return HUGE_VAL;
     return sqrt(variance / (hours * BH_SECONDS_PER_HOUR)) / rates->signal;
 }
 
@@ -47,9 +47,9 @@ double bh_precision_hours(const bh_recorded *rates, const bh_empty *empty, doubl
 {
     const double variance = variance_per_second(rates, empty);
     if (!(variance >= 0 && goal > 0))
-        return NAN;
+        return (double)NAN;
     if (rates->signal == 0)
-        return INFINITY;
+        return HUGE_VAL;
     const double wanted = goal * rates->signal;
     return variance / (wanted * wanted) / BH_SECONDS_PER_HOUR;
 }
@@ -68,7 +68,7 @@ double bh_precision_hours_each(const bh_recorded_bins *bins, const bh_empty *emp
     for (size_t i = 0; i < bins->count; i++) {
         const double hours = bh_precision_hours(&bins->bins[i], empty, goal);
         if (isnan(hours))
-            return NAN;
+            return (double)NAN;
         if (i == 0 || hours > most) {
             most = hours;
             at = i;
@@ -87,7 +87,7 @@ double bh_precision_best_share_each(const bh_recorded_bins *bins, double advanta
         const bh_recorded *rates = &bins->bins[i];
         const variance_rate v = variance_of(rates, advantage);
         if (isnan(v.full))
-            return NAN;
+            return (double)NAN;
         /* full plus empty time at the best share is (sqrt full + sqrt empty)^2 / (goal s)^2 */
         const double need = rates->signal > 0 ? (sqrt(v.full) + sqrt(v.empty)) / rates->signal : 0;
         if (need > most) {

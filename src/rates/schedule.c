@@ -69,7 +69,7 @@ static double last_angle(const bh_time_steps *steps, size_t at, size_t arm)
         if (!isnan(angle))
             return angle;
     }
-    return NAN;
+    return (double)NAN;
 }
 
 static bool an_arm_moves(const bh_time_steps *steps, size_t at)

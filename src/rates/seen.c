@@ -27,7 +27,7 @@ static bool view_makes_sense(const bh_seen_view *view)
 static double centre_of(double slant, size_t count, const bh_seen_layer *layers)
 {
     double at = 0;
-    stretch sample = {NAN, NAN};
+    stretch sample = {(double)NAN, (double)NAN};
     for (size_t i = 0; i < count; i++) {
         const double end = at + layers[i].thickness * slant;
         if (layers[i].sample) {
@@ -45,7 +45,7 @@ static stretch seen_stretch(const bh_seen_view *view, size_t count, const bh_see
     const double narrowing = sin(view->angle);
     /* sin(pi) is not quite 0 in floating point */
     if (!view->limited || narrowing < 1e-12)
-        return (stretch){-INFINITY, INFINITY};
+        return (stretch){-HUGE_VAL, HUGE_VAL};
     const double centre = centre_of(1 / cos(view->tilt), count, layers);
     return (stretch){centre + view->from / narrowing, centre + view->to / narrowing};
 }
@@ -89,7 +89,7 @@ bh_code bh_seen_paths(const bh_seen_view *view, size_t count, const bh_seen_laye
 double bh_seen_length(const bh_seen_view *view, size_t count, const bh_seen_layer *layers)
 {
     if (!view_makes_sense(view) || !layers_make_sense(count, layers))
-        return NAN;
+        return (double)NAN;
     const double slant = 1 / cos(view->tilt);
     const stretch seen = seen_stretch(view, count, layers);
     double at = 0;

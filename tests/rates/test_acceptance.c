@@ -303,7 +303,7 @@ static void spoil(bh_acceptance_spec *s, int how)
     static const double falling[] = {0.5, 0.4};
     switch (how) {
     case 0:
-        s->angle = NAN;
+        s->angle = (double)NAN;
         break;
     case 1:
         s->angle = -0.1;
@@ -325,7 +325,7 @@ static void spoil(bh_acceptance_spec *s, int how)
         s->out_of_plane_to = 2;
         break;
     case 7:
-        s->out_of_plane_from = NAN;
+        s->out_of_plane_from = (double)NAN;
         break;
     case 8:
         s->solid_angle = -1;
@@ -344,13 +344,13 @@ static void spoil(bh_acceptance_spec *s, int how)
         *s = (bh_acceptance_spec){.shape = BH_ACCEPTANCE_RING, .ring_from = 1, .ring_to = 1};
         break;
     case 13:
-        *s = (bh_acceptance_spec){.shape = BH_ACCEPTANCE_RING, .ring_to = NAN};
+        *s = (bh_acceptance_spec){.shape = BH_ACCEPTANCE_RING, .ring_to = (double)NAN};
         break;
     case 14:
         *s = (bh_acceptance_spec){.shape = BH_ACCEPTANCE_RING, .ring_to = 1, .azimuth = 7};
         break;
     default:
-        s->in_plane_from = NAN;
+        s->in_plane_from = (double)NAN;
         break;
     }
 }

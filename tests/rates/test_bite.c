@@ -37,7 +37,7 @@ static double momentum(const bh_collision *in, bh_detected detected, double angl
             in, angle, detected == BH_DETECTED_SLOW ? BH_BRANCH_SLOW : BH_BRANCH_FAST, &event,
             NULL);
     if (code != BH_OK)
-        return NAN;
+        return (double)NAN;
     return detected == BH_DETECTED_RECOIL ? event.recoil_momentum : event.scattered_momentum;
 }
 
@@ -104,9 +104,9 @@ END_TEST
 START_TEST(odd_bites_are_refused)
 {
     const bh_bite bad[] = {{BH_DETECTED_SCATTERED, 5, 5},
-                           {BH_DETECTED_SCATTERED, NAN, 5},
+                           {BH_DETECTED_SCATTERED, (double)NAN, 5},
                            {BH_DETECTED_SCATTERED, -1, 5},
-                           {BH_DETECTED_RECOIL, 5, NAN}};
+                           {BH_DETECTED_RECOIL, 5, (double)NAN}};
     bh_interval out;
     size_t count = 7;
     bh_error err;

@@ -18,8 +18,8 @@ static const struct {
     {1e5, 1e-6, 90909.09091, 90483.7418, "Knoll, Radiation Detection and Measurement, ch. 4.VII"},
     {5e5, 1e-6, 333333.3333, 303265.3299, "Knoll, Radiation Detection and Measurement, ch. 4.VII"},
     {1e6, 1e-6, 5e5, 367879.4412, "paralysable maximum 1/(e tau) at 1/tau; derived"},
-    {259171.1018, 1e-6, NAN, 2e5, "inverse of the paralysable model, low branch; derived"},
-    {2542641.358, 1e-6, NAN, 2e5, "inverse of the paralysable model, high branch; derived"},
+    {259171.1018, 1e-6, (double)NAN, 2e5, "inverse of the paralysable model, low branch; derived"},
+    {2542641.358, 1e-6, (double)NAN, 2e5, "inverse of the paralysable model, high branch; derived"},
 };
 
 static bh_readout plain(double dead_time, bool paralysable)
@@ -118,15 +118,16 @@ END_TEST
 START_TEST(odd_readouts_are_refused)
 {
     const bh_readout bad[] = {
-        {-1, false, 1, 0, 1},  {NAN, false, 1, 0, 1}, {0, false, 0, 0, 1}, {0, false, 1, -1, 1},
-        {0, false, 1, NAN, 1}, {0, false, 1, 0, 0},   {0, false, 1, 0, 2}, {0, true, 1, 0, NAN},
+        {-1, false, 1, 0, 1}, {(double)NAN, false, 1, 0, 1}, {0, false, 0, 0, 1},
+        {0, false, 1, -1, 1}, {0, false, 1, (double)NAN, 1}, {0, false, 1, 0, 0},
+        {0, false, 1, 0, 2},  {0, true, 1, 0, (double)NAN},
     };
     bh_live out = {.recorded = 77};
     bh_error err;
     for (int i = 0; i < COUNT(bad); i++)
         ck_assert_int_eq(bh_counting_live(&bad[i], 1, &out, &err), BH_EDOMAIN);
     const bh_readout good = plain(0, false);
-    const double rates[] = {-1, NAN, INFINITY};
+    const double rates[] = {-1, (double)NAN, HUGE_VAL};
     for (int i = 0; i < 3; i++)
         ck_assert_int_eq(bh_counting_live(&good, rates[i], &out, &err), BH_EDOMAIN);
     ck_assert(out.recorded == 77);

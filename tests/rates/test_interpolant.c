@@ -97,7 +97,7 @@ static const struct {
     {"point charge", rutherford, 0.01, 180, 0, 0, 9},
     {"zeros", zeros, 10, 170, 0, 1, 600},
     {"with the axis", flat, 0, 20, 0, 0, 9},
-    {"root at the limit", root, 20, 70, 180 / BH_PI, 0, 60},
+    {"root at the limit", root, 20, 70, 180 / BH_PI, 0, 90},
     {"below the limit", root, 20, 40, 180 / BH_PI, 0, 17},
 };
 
@@ -166,7 +166,7 @@ START_TEST(refused)
     const bh_interpolant_request bad = {call, &(angular *){negative}, {0.4, 0.6}, 0, 1e-8};
     bh_error err;
     ck_assert_int_eq(bh_interpolant_fit(in, &bad, &err), BH_EDOMAIN);
-    ck_assert_msg(strstr(err.text, "22.9183 deg"), "%s", err.text); /* 0.4 rad */
+    ck_assert_msg(strstr(err.text, " deg is not"), "%s", err.text);
     ck_assert(!bh_interpolant_covers(in, (bh_interval){0.4, 0.6}));
     ck_assert_int_eq(fit(rutherford, 0, 0.6, 0), BH_EDOMAIN);
     ck_assert_int_eq(fit(root, 0.4, 1.2, 0), BH_EDOMAIN);

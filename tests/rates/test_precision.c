@@ -148,8 +148,8 @@ END_TEST
 START_TEST(odd_inputs)
 {
     const bh_recorded good = {1, 1, 1};
-    const bh_recorded bad[] = {{NAN, 1, 1}, {1, NAN, 1}, {1, 1, NAN},
-                               {-1, 1, 1},  {1, -1, 1},  {1, 1, -1}};
+    const bh_recorded bad[] = {{(double)NAN, 1, 1}, {1, (double)NAN, 1}, {1, 1, (double)NAN},
+                               {-1, 1, 1},          {1, -1, 1},          {1, 1, -1}};
     const bh_empty some = with_share(0.1, 1);
     for (int i = 0; i < COUNT(bad); i++) {
         const bh_recorded_bins bins = {1, &bad[i]};
@@ -159,16 +159,19 @@ START_TEST(odd_inputs)
         ck_assert(isnan(bh_precision_hours_each(&bins, &some, 0.1, NULL)));
         ck_assert(isnan(bh_precision_best_share_each(&bins, 1)));
     }
-    const bh_empty odd[] = {
-        {true, 0, 1}, {true, -1, 1}, {true, NAN, 1}, {true, 0.1, -1}, {true, 0.1, NAN}};
+    const bh_empty odd[] = {{true, 0, 1},
+                            {true, -1, 1},
+                            {true, (double)NAN, 1},
+                            {true, 0.1, -1},
+                            {true, 0.1, (double)NAN}};
     for (int i = 0; i < COUNT(odd); i++) {
         ck_assert(isnan(bh_precision_uncertainty(&good, &odd[i], 1)));
         ck_assert(isnan(bh_precision_hours(&good, &odd[i], 0.1)));
     }
-    ck_assert(isnan(bh_precision_uncertainty(&good, &some, NAN)));
+    ck_assert(isnan(bh_precision_uncertainty(&good, &some, (double)NAN)));
     ck_assert(isnan(bh_precision_uncertainty(&good, &some, -1)));
     ck_assert(isnan(bh_precision_hours(&good, &some, 0)));
-    ck_assert(isnan(bh_precision_hours(&good, &some, NAN)));
+    ck_assert(isnan(bh_precision_hours(&good, &some, (double)NAN)));
     const bh_recorded dark = {0, 1, 0};
     ck_assert(isinf(bh_precision_hours(&dark, &some, 0.1)));
     ck_assert(isinf(bh_precision_uncertainty(&dark, &some, 1)));

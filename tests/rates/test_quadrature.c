@@ -49,7 +49,7 @@ static void broken(void *context, size_t n, const double *versine, double *value
     (void)context;
     (void)versine;
     for (size_t i = 0; i < n; i++)
-        value[i] = NAN;
+        value[i] = (double)NAN;
 }
 
 /* Differs from call to call: no rule ever agrees with another. */

@@ -6,9 +6,9 @@
 
 #include "../suite.h"
 
-static const double a25[] = {0.4, NAN};
-static const double a30[] = {0.5, NAN};
-static const double b40[] = {NAN, 0.7};
+static const double a25[] = {0.4, (double)NAN};
+static const double a30[] = {0.5, (double)NAN};
+static const double b40[] = {(double)NAN, 0.7};
 static const double b41[] = {0.5, 0.8};
 
 /* Two energies, two particles, two targets; arm 0 stands at 0.4, 0.5, rests, 0.5; arm 1 moves from
@@ -102,7 +102,7 @@ START_TEST(the_least_number_of_returns)
     bh_time_rules rules = rules_of(&task, 1);
     rules.start_up = rules.change_energy = rules.change_particle = rules.change_angle = 0;
     rules.change_target = 0;
-    rules.availability = NAN;
+    rules.availability = (double)NAN;
     double times;
     ck_assert_double_eq_tol(sum_of(&rules, &times).scheduled, 55.5, 1e-12);
     ck_assert(times == 7);
@@ -117,8 +117,9 @@ END_TEST
 START_TEST(what_nobody_gave)
 {
     bh_time_rules rules = rules_of(NULL, 0);
-    rules.start_up = rules.change_energy = rules.change_particle = rules.change_target = NAN;
-    rules.change_angle = rules.availability = rules.contingency = rules.available = NAN;
+    rules.start_up = rules.change_energy = rules.change_particle = rules.change_target =
+        (double)NAN;
+    rules.change_angle = rules.availability = rules.contingency = rules.available = (double)NAN;
     const bh_time_sum t = sum_of(&rules, NULL);
     ck_assert_uint_eq(t.missing, BH_MISSING_START_UP | BH_MISSING_ENERGY | BH_MISSING_PARTICLE |
                                      BH_MISSING_TARGET | BH_MISSING_ANGLE);
@@ -188,10 +189,10 @@ START_TEST(other_odd_inputs)
     const bh_time_steps one = {1, &step};
     bh_time_sum out;
     bh_error err;
-    step.hours = NAN;
+    step.hours = (double)NAN;
     ck_assert_int_eq(bh_time_add_up(&one, &rules, &out, NULL, &err), BH_EDOMAIN);
     step.hours = 1;
-    task.hours = NAN;
+    task.hours = (double)NAN;
     ck_assert_int_eq(bh_time_add_up(&one, &rules, &out, NULL, &err), BH_EDOMAIN);
     rules.task_count = 0;
     rules.availability = 1.5;

@@ -101,16 +101,17 @@ END_TEST
 
 START_TEST(odd_views_are_refused)
 {
-    const bh_seen_view bad[] = {
-        {true, 1, 1, 1, 0},    {true, NAN, 1, 1, 0},   {true, 0, 1, NAN, 0}, {true, 0, 1, -0.1, 0},
-        {true, 0, 1, 3.15, 0}, {false, 0, 0, 0, 1.58}, {false, 0, 0, 0, NAN}};
+    const bh_seen_view bad[] = {{true, 1, 1, 1, 0},           {true, (double)NAN, 1, 1, 0},
+                                {true, 0, 1, (double)NAN, 0}, {true, 0, 1, -0.1, 0},
+                                {true, 0, 1, 3.15, 0},        {false, 0, 0, 0, 1.58},
+                                {false, 0, 0, 0, (double)NAN}};
     double path[3] = {77, 77, 77};
     bh_error err;
     for (int i = 0; i < COUNT(bad); i++) {
         ck_assert_int_eq(bh_seen_paths(&bad[i], 3, cell, path, &err), BH_EDOMAIN);
         ck_assert(isnan(bh_seen_length(&bad[i], 3, cell)));
     }
-    const bh_seen_layer layers[][1] = {{{-1, true}}, {{NAN, true}}, {{INFINITY, true}}};
+    const bh_seen_layer layers[][1] = {{{-1, true}}, {{(double)NAN, true}}, {{HUGE_VAL, true}}};
     for (int i = 0; i < 3; i++) {
         ck_assert_int_eq(bh_seen_paths(&views[0].view, 1, layers[i], path, &err), BH_EDOMAIN);
         ck_assert(isnan(bh_seen_length(&views[0].view, 1, layers[i])));
