@@ -107,7 +107,7 @@ static void plain_form(const char *name, char out[24])
 {
     static const char *const tails[] = {" beam", "s", " particle", "-particle"};
     size_t n = 0;
-    for (; name[n] && n < 23; n++)
+    for (; n < 23 && name[n]; n++)
         out[n] = (char)(name[n] >= 'A' && name[n] <= 'Z' ? name[n] | 0x20 : name[n]);
     out[n] = '\0';
     for (size_t i = 0; i < sizeof tails / sizeof tails[0]; i++) {

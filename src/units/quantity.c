@@ -139,6 +139,8 @@ static bh_code unknown_unit(const reading *r, const char *odd)
     char shown[SHOWN + 8];
     (void)show(odd, shown);
     const char *meant = bh_unit_suggest(odd, r->dimension);
+    if (strchr("-+.,0123456789", odd[0])) /* a second number: "5 - 10 mm" */
+        return no_quantity(r);
     if (strpbrk(odd, "/*^() 0123456789.,+-")) /* known symbols in an order that makes no sense */
         return bh_fail(r->err, BH_EPLAN, BH_SAY_WRONG_UNIT, r->shown, shown, name_of(r),
                        units_of(r));
