@@ -400,6 +400,7 @@ END_TEST
 int main(void)
 {
     TCase *tests = tcase_create("quantity");
+    tcase_set_timeout(tests, 60); /* compiling a locale takes seconds on a busy machine */
     tcase_add_loop_test(tests, a_form_is_read, 0, COUNT(forms));
     tcase_add_test(tests, equal_lengths_are_equal_doubles);
     tcase_add_test(tests, per_mass_number_is_remembered);
