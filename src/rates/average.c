@@ -157,8 +157,7 @@ static void add_left_over(const summing *s, const bh_acceptance *acceptance, bh_
 }
 
 bh_code bh_average_sum(const bh_acceptance *acceptance, const bh_average_request *request,
-                       bh_average_workspace *workspace, bh_average *whole, bh_average *bins,
-                       bh_error *err)
+                       bh_average_workspace *workspace, bh_averages *out, bh_error *err)
 {
     if (!bh_interpolant_covers(workspace->interpolant, acceptance->whole.polar))
         return bh_fail(err, BH_EDOMAIN, "the acceptance reaches outside the fitted polar angles");
@@ -166,28 +165,27 @@ bh_code bh_average_sum(const bh_acceptance *acceptance, const bh_average_request
         request,
         workspace->interpolant,
         {read_interpolant, workspace->interpolant, QUADRATURE_SHARE * tolerance_of(request)}};
-    if (!bins) {
-        *whole = sum_part(&s, &acceptance->whole);
+    if (!out->bins) {
+        out->whole = sum_part(&s, &acceptance->whole);
         return BH_OK;
     }
     bh_average sum = {.solid_angle = acceptance->whole.solid_angle, .converged = true};
     for (int i = 0; i < acceptance->bins; i++) {
         bh_acceptance_part part;
         bh_acceptance_part_of(acceptance, i + 1, &part);
-        bins[i] = sum_part(&s, &part);
-        add(&sum, &bins[i]);
+        out->bins[i] = sum_part(&s, &part);
+        add(&sum, &out->bins[i]);
     }
     add_left_over(&s, acceptance, &sum);
-    *whole = sum;
+    out->whole = sum;
     return BH_OK;
 }
 
 bh_code bh_average_over(const bh_acceptance *acceptance, const bh_average_request *request,
-                        bh_average_workspace *workspace, bh_average *whole, bh_average *bins,
-                        bh_error *err)
+                        bh_average_workspace *workspace, bh_averages *out, bh_error *err)
 {
     const bh_code code = bh_average_fit(request, acceptance->whole.polar, workspace, err);
-    return code == BH_OK ? bh_average_sum(acceptance, request, workspace, whole, bins, err) : code;
+    return code == BH_OK ? bh_average_sum(acceptance, request, workspace, out, err) : code;
 }
 
 double bh_average_value(const bh_average_workspace *workspace, double theta)

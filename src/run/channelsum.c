@@ -146,8 +146,10 @@ struct making {
 static bh_code add_up(struct making *m, const bh_average_request *request,
                       const bh_acceptance *where, bh_error *err)
 {
-    return bh_average_sum(where, request, m->averages, &m->scratch->whole,
-                          m->parts > 1 ? m->scratch->bins : NULL, err);
+    bh_averages sums = {.bins = m->parts > 1 ? m->scratch->bins : NULL};
+    const bh_code code = bh_average_sum(where, request, m->averages, &sums, err);
+    m->scratch->whole = sums.whole;
+    return code;
 }
 
 static const bh_average *part_of(const struct making *m, int part)

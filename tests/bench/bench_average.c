@@ -59,11 +59,10 @@ static double one_arm(bh_acceptance_spec spec, int bins, bh_average_workspace *w
     spec.bins = bins;
     for (int round = 0; round < 50; round++) {
         bh_acceptance a;
-        bh_average whole;
+        bh_averages sums = {.bins = out};
         const double start = now();
         if (bh_acceptance_make(&spec, &a, NULL) != BH_OK ||
-            bh_average_over(&a, &request, workspace, &whole, out, NULL) != BH_OK ||
-            !whole.converged)
+            bh_average_over(&a, &request, workspace, &sums, NULL) != BH_OK || !sums.whole.converged)
             exit(EXIT_FAILURE);
         best = fmin(best, now() - start);
     }

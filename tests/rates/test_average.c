@@ -124,10 +124,10 @@ static void close_space(void)
 
 static bh_average sum_of(const bh_acceptance *a, const bh_average_request *r, bh_average *bins)
 {
-    bh_average whole;
+    bh_averages out = {.bins = bins};
     bh_error err;
-    ck_assert_msg(bh_average_over(a, r, space, &whole, bins, &err) == BH_OK, "%s", err.text);
-    return whole;
+    ck_assert_msg(bh_average_over(a, r, space, &out, &err) == BH_OK, "%s", err.text);
+    return out.whole;
 }
 
 /* --- brute force over both angles --- */
@@ -407,23 +407,23 @@ START_TEST(fit_once_and_move_the_arm)
     caller c = {.f = mott};
     const bh_average_request r = {.function = call, .context = &c};
     const bh_interval polar = {a.whole.polar.from, b.whole.polar.to};
-    bh_average here;
-    bh_average there;
     bh_average bins[3];
+    bh_averages here = {.bins = bins};
+    bh_averages there = {.bins = bins};
     ck_assert_int_eq(bh_average_fit(&r, polar, space, NULL), BH_OK);
     const size_t calls = bh_average_calls(space);
-    ck_assert_int_eq(bh_average_sum(&a, &r, space, &here, bins, NULL), BH_OK);
-    ck_assert_int_eq(bh_average_sum(&b, &r, space, &there, bins, NULL), BH_OK);
+    ck_assert_int_eq(bh_average_sum(&a, &r, space, &here, NULL), BH_OK);
+    ck_assert_int_eq(bh_average_sum(&b, &r, space, &there, NULL), BH_OK);
     ck_assert_uint_eq(bh_average_calls(space), calls);
     ck_assert(calls <= 17);
-    ck_assert_double_eq_tol(here.total / sum_of(&a, &r, NULL).total, 1, 1e-7);
-    ck_assert(there.total < here.total);
+    ck_assert_double_eq_tol(here.whole.total / sum_of(&a, &r, NULL).total, 1, 1e-7);
+    ck_assert(there.whole.total < here.whole.total);
     ck_assert_double_eq_tol(bh_average_value(space, 25 * D) / mott(25 * D), 1, 1e-8);
     ck_assert(isnan(bh_average_value(space, 45 * D)));
     bh_error err;
-    here.total = 77;
-    ck_assert_int_eq(bh_average_sum(&b, &r, space, &here, bins, &err), BH_EDOMAIN);
-    ck_assert(here.total == 77);
+    here.whole.total = 77;
+    ck_assert_int_eq(bh_average_sum(&b, &r, space, &here, &err), BH_EDOMAIN);
+    ck_assert(here.whole.total == 77);
 }
 END_TEST
 
@@ -473,17 +473,17 @@ START_TEST(bad_functions_are_refused)
     bh_acceptance a = arm(0, 1);
     caller c = {.f = heavy_beam};
     bh_average_request r = {.function = call, .context = &c};
-    bh_average whole = {.total = 77};
+    bh_averages out = {.whole = {.total = 77}};
     bh_error err;
     bh_acceptance_spec spec = a.spec;
     spec.angle = 40 * D;
     ck_assert_int_eq(bh_acceptance_make(&spec, &a, NULL), BH_OK);
-    ck_assert_int_eq(bh_average_over(&a, &r, space, &whole, NULL, &err), BH_EDOMAIN);
-    ck_assert(whole.total == 77 && strstr(err.text, "deg"));
+    ck_assert_int_eq(bh_average_over(&a, &r, space, &out, &err), BH_EDOMAIN);
+    ck_assert(out.whole.total == 77 && strstr(err.text, "deg"));
     spec.angle = 0.01; /* the beam axis inside */
     ck_assert_int_eq(bh_acceptance_make(&spec, &a, NULL), BH_OK);
     c.f = rutherford;
-    ck_assert_int_eq(bh_average_over(&a, &r, space, &whole, NULL, &err), BH_EDOMAIN);
+    ck_assert_int_eq(bh_average_over(&a, &r, space, &out, &err), BH_EDOMAIN);
     c.f = even; /* finite there: no harm */
     ck_assert_double_eq_tol(sum_of(&a, &r, NULL).total, 2.5 * a.whole.solid_angle, 1e-9);
 }

@@ -38,6 +38,12 @@ typedef struct {
     bool converged;     /* error within the tolerance */
 } bh_average;
 
+/* Where the sums go. */
+typedef struct {
+    bh_average whole;
+    bh_average *bins; /* room for acceptance->bins of them; NULL: not wanted */
+} bh_averages;
+
 /* Memory for sums: never grows, about 100 kB; one thread at a time.  Results do not depend on what
  * it was used for before.  NULL when there is no memory; NULL may be freed. */
 typedef struct bh_average_workspace bh_average_workspace;
@@ -45,17 +51,18 @@ bh_average_workspace *bh_average_workspace_new(void);
 void bh_average_workspace_free(bh_average_workspace *workspace);
 
 /*
- * Sums request->function over `acceptance`: into `whole`, and, where `bins` is not NULL, into
- * bins[0 .. acceptance->bins - 1].  The whole is the sum of the bins and of what no bin covers, so
- * splitting bins conserves it.  Relative accuracy 1e-6 where `converged`; measured 1e-8 for smooth
- * cross sections.
+ * Sums request->function over `acceptance` into out->whole, and, where out->bins is not NULL, into
+ * out->bins[0 .. acceptance->bins - 1].  The whole is the sum of the bins and of what no bin
+ * covers, so splitting bins conserves it.  Relative accuracy 1e-6 where `converged`; measured 1e-8
+ * for smooth cross sections.
  * BH_EDOMAIN when the function is not finite somewhere in the acceptance (an arm that covers the
- * beam axis) or negative; not converging is no failure but whole->converged == false.
+ * beam axis) or negative, `out` untouched; not converging is no failure but
+ * out->whole.converged == false.
  */
 BH_CHECKED bh_code bh_average_over(const bh_acceptance *acceptance,
                                    const bh_average_request *request,
-                                   bh_average_workspace *workspace, bh_average *whole,
-                                   bh_average *bins, bh_error *err);
+                                   bh_average_workspace *workspace, bh_averages *out,
+                                   bh_error *err);
 
 /*
  * The same in two steps, so that several acceptances share the calls of one function (an arm moved
@@ -66,8 +73,7 @@ BH_CHECKED bh_code bh_average_fit(const bh_average_request *request, bh_interval
                                   bh_average_workspace *workspace, bh_error *err);
 BH_CHECKED bh_code bh_average_sum(const bh_acceptance *acceptance,
                                   const bh_average_request *request,
-                                  bh_average_workspace *workspace, bh_average *whole,
-                                  bh_average *bins, bh_error *err);
+                                  bh_average_workspace *workspace, bh_averages *out, bh_error *err);
 
 /* Returns [ub/sr] the fitted function at polar angle theta [rad]; NAN outside the fitted range. */
 double bh_average_value(const bh_average_workspace *workspace, double theta);
