@@ -19,6 +19,8 @@ typedef struct {
     double sum;   /* E + M */
     double mix;   /* M E + m^2 */
     double split; /* (M - m)(M + m), exact also for neighbours */
+    double cm;    /* s / M p^2 */
+    double back;  /* (E + M) / p */
 } frame;
 
 /* What the two ways in have to find before the rest is common. */
@@ -34,17 +36,20 @@ typedef struct {
 static frame frame_of(const bh_collision *in)
 {
     const double m = in->mass, M = in->target, T = in->kinetic;
-    const double E = T + m, p2 = T * (T + 2.0 * m);
+    const double E = T + m, p2 = T * (T + 2.0 * m), p = sqrt(p2);
+    const double s = (m + M) * (m + M) + 2.0 * M * T;
     return (frame){.m = m,
                    .M = M,
                    .T = T,
                    .E = E,
                    .p2 = p2,
-                   .p = sqrt(p2),
-                   .s = (m + M) * (m + M) + 2.0 * M * T,
+                   .p = p,
+                   .s = s,
                    .sum = E + M,
                    .mix = M * E + m * m,
-                   .split = (M - m) * (M + m)};
+                   .split = (M - m) * (M + m),
+                   .cm = s / (M * p2),
+                   .back = (E + M) / p};
 }
 
 static void finish(const frame *f, const found *x, bh_event *out)
@@ -66,9 +71,9 @@ static void finish(const frame *f, const found *x, bh_event *out)
     out->q2 = q2;
     out->transverse2 = k2;
     out->epsilon = (k2 + m * m) / (k2 + 0.5 * q2);
-    out->cm_per_lab = f->s * x->slope / (f->M * f->p2);
+    out->cm_per_lab = f->cm * x->slope;
     out->scattered_per_recoil =
-        x->p_recoil * (x->recoil + 2.0 * f->M) * f->p / (f->sum * f->M * x->slope);
+        x->p_recoil * (x->recoil + 2.0 * f->M) / (f->back * f->M * x->slope);
 }
 
 /*
@@ -81,25 +86,24 @@ static void at_scattered(const frame *f, double angle, bh_branch branch, bh_even
     const double m = f->m, M = f->M, c = cos(angle), sn = sin(angle), s2 = sn * sn;
     const double root2 = (M - m * sn) * (M + m * sn);
     const double root = root2 > 0.0 ? sqrt(root2) : 0.0;
-    const double D = f->s + f->p2 * s2;
+    const double D = f->s + f->p2 * s2, per_D = 1.0 / D;
     const double larger = fabs(c) * f->mix + f->sum * root; /* D/p times the larger |p'| */
     found x = {.angle = angle};
     double share; /* sin^2 (angle) p^2 / (D recoil) */
     if (c > 0.0 && branch == BH_BRANCH_FAST) {
         const double loss = f->E + (M * M + m * m * c * c) / (M + c * root);
-        x.recoil = f->p2 * s2 * loss / D;
-        x.p_scattered = f->p * larger / D;
+        x.recoil = f->p2 * s2 * loss * per_D;
+        x.p_scattered = f->p * larger * per_D;
         share = 1.0 / loss;
     } else {
         const double loss = f->E * s2 + M + fabs(c) * root;
-        x.recoil = f->p2 * loss / D;
+        x.recoil = f->p2 * loss * per_D;
         x.p_scattered = f->p * fabs(f->split) / larger;
         share = s2 / loss;
     }
     const double pp2 = x.p_scattered * x.p_scattered;
     x.p_recoil = sqrt(x.recoil * (x.recoil + 2.0 * M));
-    x.recoil_angle =
-        x.recoil > 0.0 ? atan2(x.p_scattered * sn, f->sum * x.recoil / f->p) : 0.5 * BH_PI;
+    x.recoil_angle = x.recoil > 0.0 ? atan2(x.p_scattered * sn, f->back * x.recoil) : 0.5 * BH_PI;
     x.transverse2 = pp2 * D * share / (x.recoil + 2.0 * M);
     x.slope = pp2 / root;
     finish(f, &x, out);

@@ -67,32 +67,42 @@ static void BH_PRINTF(4, 5) say(char *out, size_t size, int *length, const char 
     *length += more > 0 ? more : 0;
 }
 
+static void say_nuclear(const bh_encounter *x, char *out, size_t size, int *length)
+{
+    const bh_nuclear_limit from = bh_validity_nuclear(x);
+    if (!from.source || !(x->kinetic > from.kinetic))
+        return;
+    say(out, size, length, "nuclear forces are left out: ");
+    if (from.kinetic > 0.0)
+        say(out, size, length, "at backward angles they matter for %s above about %.3g MeV (%s)",
+            x->beam->name, from.kinetic, from.source);
+    else
+        say(out, size, length, "they matter for %s at every energy (%s)", x->beam->name,
+            from.source);
+}
+
+static void say_screening(const bh_encounter *x, char *out, size_t size, int *length)
+{
+    const double onset = x->z > 0 ? bh_validity_screening(x) : 0.0;
+    if (!(onset > (x->angle > 0.0 ? x->angle : FORWARD)))
+        return;
+    say(out, size, length,
+        "%satomic screening is left out: it lowers the cross section by more than 1 %% ",
+        *length ? "; " : "");
+    if (onset < BH_PI)
+        say(out, size, length, "forward of about %.2g deg", onset / BH_DEGREE);
+    else
+        say(out, size, length, "at every angle");
+}
+
 int bh_validity_elastic(const bh_encounter *encounter, char *out, size_t size)
 {
     int length = 0;
-    const char *name = encounter->beam->name;
-    const bh_nuclear_limit nuclear = bh_validity_nuclear(encounter);
-    if (nuclear.source && encounter->kinetic > nuclear.kinetic)
-        say(out, size, &length,
-            nuclear.kinetic > 0.0
-                ? "nuclear forces are left out: at backward angles they matter for %s above about "
-                  "%.3g MeV (%s)"
-                : "nuclear forces are left out: they matter for %s above %.0f MeV (%s)",
-            name, nuclear.kinetic, nuclear.source);
+    say_nuclear(encounter, out, size, &length);
     if (encounter->beam->mass < 1.0 && encounter->kinetic < SLOWEST)
         say(out, size, &length,
             "%sbelow 10 keV plane waves of %ss give the order of magnitude at best",
-            length ? "; " : "", name);
-    const double angle = encounter->z > 0 ? bh_validity_screening(encounter) : 0.0;
-    if (angle >= BH_PI)
-        say(out, size, &length,
-            "%satomic screening is left out: it lowers the cross section by more than 1 %% at "
-            "every angle",
-            length ? "; " : "");
-    else if (angle > (encounter->angle > 0.0 ? encounter->angle : FORWARD))
-        say(out, size, &length,
-            "%satomic screening is left out: it lowers the cross section by more than 1 %% forward "
-            "of about %.2g deg",
-            length ? "; " : "", angle / BH_DEGREE);
+            length ? "; " : "", encounter->beam->name);
+    say_screening(encounter, out, size, &length);
     return length;
 }

@@ -248,7 +248,7 @@ static const struct {
     {"7Li", 14, 28, 26053.2, 7.0, 0.0, "point charge", "above about 6.02 MeV"},
     {"alpha", 2, 4, BH_MASS_ALPHA, 0.5, 0.0, "exchange (Mott 1930)", NULL},
     {"12C", 82, 208, 193687.7, 100.0, 0.0, "point charge", "Cline 1986"},
-    {"pion-", 6, 12, 11174.86, 20.0, 0.0, "point charge", "above 0 MeV (no repulsion"},
+    {"pion-", 6, 12, 11174.86, 20.0, 0.0, "point charge", "at every energy (no repulsion"},
     {"proton", 0, 1, 939.565, 20.0, 0.0, "magnetic moment", "no repulsion keeps the two apart"},
     {"electron", 79, 197, 183432.9, 0.005, 0.0, "Rosenbluth", "below 10 keV"},
     {"electron", 79, 197, 183432.9, 0.05, 0.0, "Rosenbluth", "1 % forward of about 67 deg"},
