@@ -36,7 +36,7 @@ static bh_vertex beam_vertex(const bh_particle *beam, double q2)
 static void direct(const bh_encounter *x, size_t n, const bh_event *event, double *cross_section)
 {
     const bh_collision in = {x->beam->mass, x->target, x->kinetic};
-    double q2[BLOCK], ge2[BLOCK], gm2[BLOCK];
+    double q2[BLOCK] = {0.0}, ge2[BLOCK], gm2[BLOCK];
     for (size_t i = 0; i < n; i++)
         q2[i] = event[i].q2;
     bh_structure_eval(x->structure, n, q2, ge2, gm2);
@@ -62,7 +62,7 @@ static bh_event exchanged(const bh_event *e, double target)
 static void add_exchange(const bh_encounter *x, size_t n, const bh_event *event,
                          double *cross_section)
 {
-    bh_event other[BLOCK];
+    bh_event other[BLOCK] = {{0}};
     double exchange[BLOCK];
     for (size_t i = 0; i < n; i++)
         other[i] = exchanged(&event[i], x->target);
