@@ -35,9 +35,12 @@ const char *bh_explain_text(bh_explaining *x, const char *fmt, ...)
 const char *bh_explain_number(bh_explaining *x, double value, const char *unit)
 {
     char digits[BH_NUMBER_SIZE];
+    double rounded = value;
     if (!isfinite(value))
         return "-";
     bh_number_digits(value, DIGITS, digits, sizeof digits);
+    if (!bh_number_parse(digits, NULL, &rounded)) /* without closing zeros */
+        bh_number_print(rounded, digits, sizeof digits);
     return *unit ? bh_explain_text(x, "%s %s", digits, unit) : bh_explain_text(x, "%s", digits);
 }
 

@@ -3,6 +3,7 @@
 #include <math.h>
 #include <string.h>
 
+#include "beamhours/physics/validity.h"
 #include "beamhours/run/explaining.h"
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
@@ -48,8 +49,12 @@ static void explain_event(bh_explaining *x)
                "virtual-photon polarisation with the lepton mass");
 }
 
-static const char *why_this_fit(const bh_structure_model *model)
+static const char *why_this_fit(const bh_encounter *e)
 {
+    const bh_structure_model *model = bh_structure_row(e->structure);
+    if (strcmp(model->name, "point") == 0 && e->kinetic < bh_validity_nuclear(e).kinetic &&
+        e->beam->kind != BH_KIND_LEPTON)
+        return "the beam is too slow to reach the nucleus, whose charge acts as a point";
     switch (model->use) {
     case BH_FIT_CROSS_SECTION:
         return "describes measured cross sections, two-photon exchange left inside: what counting "
@@ -76,7 +81,7 @@ static void explain_model(bh_explaining *x)
                                     bh_explain_number(x, low, ""), bh_explain_number(x, high, ""),
                                     q2 < low || q2 > high ? ": extrapolated here" : ""),
                                 .source = bh_explain_text(x, "%s", bh_structure_source(s)),
-                                .remark = why_this_fit(bh_structure_row(s))});
+                                .remark = why_this_fit(&x->channel.encounter)});
     if (*bh_structure_note(s))
         bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE,
                                     .remark = bh_explain_text(x, "%s", bh_structure_note(s))});

@@ -8,7 +8,7 @@
 enum { HEAVY = 20 }; /* plane waves on more protons are worth a warning */
 
 /* A nuclide counts from this share of what the arm gets, and a form factor from this deviation. */
-static const double worth_saying = 0.01, worth_having = 0.03;
+static const double worth_saying = 0.02, worth_having = 0.03;
 
 struct finding {
     bh_yielder *yielder;
@@ -86,6 +86,7 @@ static void find_structure(const struct finding *f)
         note(f, (bh_remark){.kind = BH_REMARK_COULOMB,
                             .at = plan->models.coulomb.at,
                             .key = "models.coulomb",
+                            .who = bh_element_symbol(e->z),
                             .high = e->z * BH_ALPHA});
 }
 

@@ -12,8 +12,8 @@
 enum { TEXT = 240, FIRST_ROOM = 16 };
 
 struct kept {
-    bh_remark remark;                                     /* its texts point below */
-    char key[TEXT], who[TEXT], what[TEXT], setting[TEXT]; /* own copies */
+    bh_remark remark;                                                 /* its texts point below */
+    char key[TEXT], who[TEXT], what[TEXT], setting[TEXT], last[TEXT]; /* own copies */
     int settings;
 };
 
@@ -53,14 +53,21 @@ static bool same(const struct kept *k, const bh_remark *r)
             (k->remark.at.line == r->at.line && k->remark.at.column == r->at.column));
 }
 
+static void copy(char to[TEXT], const char *from)
+{
+    snprintf(to, TEXT, "%s", or_empty(from));
+}
+
 static void widen(struct kept *k, const bh_remark *r)
 {
     if (r->low < k->remark.low)
         k->remark.low = r->low;
     if (r->high > k->remark.high)
         k->remark.high = r->high;
-    if (strcmp(k->setting, or_empty(r->setting)) != 0)
-        k->settings++;
+    if (strcmp(k->last, or_empty(r->setting)) == 0)
+        return;
+    copy(k->last, r->setting);
+    k->settings++;
 }
 
 static bool grow(bh_remarks *remarks)
@@ -74,11 +81,6 @@ static bool grow(bh_remarks *remarks)
     remarks->list = list;
     remarks->room = room;
     return true;
-}
-
-static void copy(char to[TEXT], const char *from)
-{
-    snprintf(to, TEXT, "%s", or_empty(from));
 }
 
 void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark)
@@ -98,6 +100,7 @@ void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark)
     copy(k->who, remark->who);
     copy(k->what, remark->what);
     copy(k->setting, remark->setting);
+    copy(k->last, remark->setting);
 }
 
 struct words {
@@ -113,7 +116,8 @@ static void put_in_words(const struct kept *k, struct words *w)
     bh_number_print(k->remark.from, w->from, sizeof w->from);
     bh_number_print(k->remark.to, w->to, sizeof w->to);
     if (k->settings > 1)
-        snprintf(w->where, sizeof w->where, "%s and %d more settings", k->setting, k->settings - 1);
+        snprintf(w->where, sizeof w->where, "%s and %d more setting%s", k->setting, k->settings - 1,
+                 k->settings > 2 ? "s" : "");
     else
         snprintf(w->where, sizeof w->where, "%s", k->setting);
 }
@@ -136,10 +140,6 @@ static void say_model(const struct kept *k, const struct words *w, bh_diags *dia
     case BH_REMARK_FLAGGED:
         bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_MODEL_FLAGGED, k->who,
                      k->what);
-        break;
-    case BH_REMARK_FALLBACK:
-        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_MODEL_FALLBACK, k->who,
-                     k->what, k->who, k->what);
         break;
     case BH_REMARK_CAVEAT:
         bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_PROCESS_CAVEAT, w->where,

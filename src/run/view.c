@@ -1,8 +1,9 @@
 /* view.c - one arm of one setting: where it stands, what it lets through, who can reach it. */
 #include <math.h>
+#include <string.h>
 
+#include "beamhours/physics/validity.h"
 #include "beamhours/run/yield.h"
-#include "beamhours/units/nuclide.h"
 
 static bh_acceptance_spec spec_of(const bh_setting_arm *arm)
 {
@@ -29,36 +30,15 @@ static bh_acceptance_spec spec_of(const bh_setting_arm *arm)
     return spec;
 }
 
-static void remark(const bh_yielder *yielder, bh_remark_kind kind, const bh_struck *struck,
-                   const char *what)
+/* A hadron or ion too slow to reach the nucleus meets all of its charge from outside, where it acts
+ * as a point (Gauss); the form factor of a plane wave would be wrong by orders of magnitude. */
+static const char *model_for(const bh_yielder *yielder, const bh_encounter *e)
 {
-    char name[8];
-    if (yielder->remarks)
-        bh_remarks_note(yielder->remarks,
-                        &(bh_remark){.kind = kind,
-                                     .at = yielder->plan->models.structure.at,
-                                     .key = "models.structure",
-                                     .who = bh_nuclide_name(struck->z, struck->a, name),
-                                     .what = what});
-}
-
-/* The plan's model; where it cannot describe this nuclide (a proton fit on an aluminium window),
- * the default one and a warning. */
-static const bh_structure *structure_of(bh_yielder *yielder, const bh_struck *struck, bh_error *err)
-{
-    const char *name = bh_plan_structure(yielder->plan, struck->z, struck->a);
-    bh_error why = {.code = BH_OK};
-    const bh_structure *found =
-        bh_workspace_structure(yielder->workspace, name, struck->z, struck->a, &why);
-    if (found || why.code == BH_ENOMEM) {
-        if (!found)
-            bh_fail(err, BH_ENOMEM, "%s", why.text);
-        return found;
-    }
-    found = bh_workspace_structure(yielder->workspace, "default", struck->z, struck->a, err);
-    if (found)
-        remark(yielder, BH_REMARK_FALLBACK, struck, bh_structure_name(found));
-    return found;
+    const char *name = bh_plan_structure(yielder->plan, e->z, e->a);
+    const bool choose = !name || strcmp(name, "default") == 0;
+    const bool outside =
+        e->beam->kind != BH_KIND_LEPTON && e->kinetic < bh_validity_nuclear(e).kinetic;
+    return choose && outside ? "point" : name;
 }
 
 bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view, const bh_struck *struck,
@@ -66,16 +46,17 @@ bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view, const bh_stru
 {
     const bh_beam *beam = &view->setting->beam;
     const bh_detects detects = view->arm->arm.detects;
-    const bh_channel base = {.process = view->process,
-                             .encounter = {.beam = &beam->particle,
-                                           .charge = beam->charge,
-                                           .z = struck->z,
-                                           .a = struck->a,
-                                           .target = struck->mass,
-                                           .kinetic = beam->kinetic_energy.value,
-                                           .structure = structure_of(yielder, struck, err)}};
+    bh_channel base = {.process = view->process,
+                       .encounter = {.beam = &beam->particle,
+                                     .charge = beam->charge,
+                                     .z = struck->z,
+                                     .a = struck->a,
+                                     .target = struck->mass,
+                                     .kinetic = beam->kinetic_energy.value}};
+    base.encounter.structure = bh_workspace_structure(
+        yielder->workspace, model_for(yielder, &base.encounter), struck->z, struck->a, err);
     if (!base.encounter.structure)
-        return BH_ENOMEM;
+        return err->code;
     size_t n = 0;
     if (detects != BH_DETECTS_RECOIL) {
         channels[n++] = base;

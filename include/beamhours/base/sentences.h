@@ -250,13 +250,11 @@
 #define BH_WARN_DENSITY     "%s is %s from the %s that %s has in the library"
 
 /* run: evaluation */
-#define BH_WARN_MODEL_RANGE                                                                       \
-    "%s of %s describes data from Q2 %s to %s GeV2, and %s needs it from %s to %s GeV2; what is " \
-    "outside is extrapolated: another name under models.structure may reach there"
+#define BH_WARN_MODEL_RANGE                                                                     \
+    "%s of %s describes data from Q2 %s to %s GeV2; in %s the arm reaches from %s to %s GeV2, " \
+    "extrapolated: another name under models.structure may reach there"
 #define BH_WARN_MODEL_FLAGGED \
     "structure of %s: %s; take its rates as an estimate, or name another model"
-#define BH_WARN_MODEL_FALLBACK \
-    "the model named does not describe %s, so %s is used for it; structure: {%s: %s} would say so"
 #define BH_WARN_PROCESS_CAVEAT "%s: %s"
 #define BH_WARN_PLANE_WAVES                                                                      \
     "plane waves on %s (Z alpha = %s) leave out the distortion by its charge; %s may be off by " \

@@ -9,7 +9,6 @@
 typedef enum {
     BH_REMARK_RANGE,         /* low, high [GeV2] needed; from, to [GeV2] of the model's data */
     BH_REMARK_FLAGGED,       /* a structure that had to assume something: `what` */
-    BH_REMARK_FALLBACK,      /* the plan's model cannot describe `who`; `what` is used */
     BH_REMARK_CAVEAT,        /* a process outside its validity: `what` */
     BH_REMARK_COULOMB,       /* high [1]: Z alpha of plane waves on a heavy nucleus */
     BH_REMARK_NO_EMPTY,      /* windows, and no time on an empty target */

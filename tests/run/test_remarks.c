@@ -1,0 +1,104 @@
+/* test_remarks.c - every warning of an evaluation, provoked, said once, at its line. */
+#include "evaluated.h"
+
+#define BEAM "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 10 uA}\n"
+#define HYDROGEN \
+    "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 5 cm}]}\n"
+#define POINT "arms: [{name: A, solid_angle: 5 msr}]\n"
+
+static const struct {
+    const char *plan, *words;
+    int line; /* where it must stand */
+} rows[] = {
+    /* the fit ends at 0.06 GeV2 */
+    {BEAM HYDROGEN POINT "models: {structure: prad-2019}\n"
+                         "settings: [{name: K, angle: 40 deg, time: 1 h}]\n",
+     "prad-2019 of 1H describes data from Q2 0 to 0.06 GeV2; in K the arm reaches from 0.28", 5},
+    {BEAM HYDROGEN POINT "models: {structure: prad-2019}\n"
+                         "settings: [{name: K, angle: [30 deg, 40 deg, 50 deg], time: 1 h}]\n",
+     "in K.1 and 2 more settings", 5},
+    {BEAM HYDROGEN POINT "models: {structure: prad-2019}\n"
+                         "settings: [{name: K, angle: [30 deg, 40 deg], time: 1 h}]\n",
+     "in K.1 and 1 more setting the arm", 5},
+    {BEAM "target: {name: t, layers: [{material: lead, areal_density: 20 mg/cm2}]}\n" POINT
+          "settings: [{name: K, angle: 20 deg, time: 1 h}]\n",
+     "structure of 206Pb: radius from Angeli & Marinova 2013", 1},
+    {BEAM "target: {name: t, layers: [{material: lead, areal_density: 20 mg/cm2}]}\n" POINT
+          "settings: [{name: K, angle: 20 deg, time: 1 h}]\n",
+     "plane waves on Pb (Z alpha = 0.598)", 1},
+    {"plan: 1\nbeam: {particle: proton, kinetic_energy: 100 MeV, particle_rate: 1e9 /s}\n"
+     "target: {name: t, layers: [{material: gold, thickness: 1 um}]}\n" POINT
+     "settings: [{name: K, angle: 150 deg, time: 1 h}]\n",
+     "K: ", 1},
+    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, rate_limit: 1 kHz}]\n"
+                   "settings: [{name: K, angle: 20 deg, time: 1 h}]\n",
+     "over its limit of 1000 Hz, in K; a prescale", 5},
+    {BEAM HYDROGEN "arms: [{name: A, in_plane: ±90 mrad, out_of_plane: ±5 mrad, bins: 3}]\n"
+                   "settings: [{name: K, angle: 90 deg, goal: 0.001 %, goal_for: each-bin}]\n"
+                   "schedule: {available: 10 h}\n",
+     "bin 3 of A needs ", 5},
+    {BEAM HYDROGEN POINT "settings: [{name: K, angle: 90 deg, time: 20 h}]\n"
+                         "schedule: {available: 10 h}\n",
+     "the plan asks for 20.0 h and 10 h are available", 6},
+    {BEAM "target: {name: t, scatterer: H, layers: [{material: aluminium, thickness: 1 mm, role: "
+          "window}, {material: liquid-hydrogen, thickness: 5 cm}]}\n" POINT
+          "settings: [{name: K, angle: 30 deg, time: 1 h}]\n",
+     "t has windows and no empty_target", 3},
+    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, momentum_bite: ±2 %}]\n"
+                   "settings: [{name: K, angle: 40 deg, central_momentum: 300 MeV/c, time: 1 h}]\n",
+     "nothing scattered by H is counted by A in K", 5},
+};
+
+START_TEST(a_warning_is_given)
+{
+    struct evaluated e = evaluate(rows[_i].plan);
+    const bh_diags *w = bh_table_warnings(e.table);
+    int found = 0;
+    for (size_t i = 0; i < bh_diags_count(w); i++) {
+        const bh_diag *d = bh_diags_at(w, i);
+        if (!strstr(d->text, rows[_i].words))
+            continue;
+        found++;
+        ck_assert_int_eq(d->severity, BH_SEVERITY_WARNING);
+        ck_assert_str_eq(d->at.file, "plan.yaml");
+        ck_assert_int_eq(d->at.line, rows[_i].line);
+        ck_assert_str_ne(d->key, "");
+    }
+    if (found != 1)
+        print_diags(w);
+    ck_assert_int_eq(found, 1);
+    done(&e);
+}
+END_TEST
+
+START_TEST(a_sound_plan_has_none)
+{
+    struct evaluated e =
+        evaluate(BEAM HYDROGEN POINT "settings: [{name: K, angle: 40 deg, time: 1 h}]\n");
+    print_diags(bh_table_warnings(e.table));
+    ck_assert_uint_eq(bh_diags_count(bh_table_warnings(e.table)), 0);
+    done(&e);
+}
+END_TEST
+
+START_TEST(warnings_of_the_reader_come_along)
+{
+    struct evaluated e = evaluate(
+        BEAM "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm, density: "
+             "0.09 g/cm3}], scatterer: H}\n" POINT
+             "settings: [{name: K, angle: 40 deg, time: 1 h}]\n");
+    ck_assert_uint_eq(bh_diags_count(bh_table_warnings(e.table)), bh_diags_count(e.diags));
+    ck_assert_uint_eq(bh_diags_count(e.diags), 1);
+    ck_assert_uint_eq(bh_diags_errors(bh_table_warnings(e.table)), 0);
+    done(&e);
+}
+END_TEST
+
+int main(void)
+{
+    TCase *tests = tcase_create("remarks");
+    tcase_add_loop_test(tests, a_warning_is_given, 0, COUNT(rows));
+    tcase_add_test(tests, a_sound_plan_has_none);
+    tcase_add_test(tests, warnings_of_the_reader_come_along);
+    return run_suite("remarks", tests);
+}
