@@ -102,11 +102,6 @@ static const bh_setting *strongest(const bh_plan *plan)
     return best;
 }
 
-static bool same_mark(bh_mark a, bh_mark b)
-{
-    return a.line == b.line && a.column == b.column && a.file == b.file;
-}
-
 /* Where the plan says how much beam there is. */
 static bh_mark written_at(const bh_beam *beam)
 {
@@ -117,7 +112,9 @@ static bh_mark written_at(const bh_beam *beam)
 static bh_text beam_key(const bh_plan *plan, const bh_setting *setting, const char *member)
 {
     bh_text key = {0};
-    if (setting && !same_mark(written_at(&setting->beam), written_at(&plan->beam)))
+    const bh_mark all = written_at(&plan->beam);
+    const bh_mark own = setting ? written_at(&setting->beam) : all;
+    if (own.line != all.line || own.column != all.column)
         bh_text_appendf(&key, "settings.%s.", setting->name);
     bh_text_appendf(&key, "beam.%s", member);
     return key;
@@ -190,14 +187,21 @@ static void caution_of_secondary_beam(caution_list *to)
     add(to, beam->at, &key, &text);
 }
 
+/* Whether the plan has `target:` rather than a list of them. */
+static bool is_only_target(const bh_plan *plan)
+{
+    return plan->document && bh_node_get(bh_document_root(plan->document), "target");
+}
+
 /* The stacks of a plan one after the other; false past the last. */
 static bool stack_at(const bh_plan *plan, size_t i, stack *out)
 {
     if (i < 2 * plan->target_count) {
         const bh_target *target = &plan->targets[i / 2];
         const bool wall = i % 2 == 1;
-        *out = (stack){"targets.", target->name.text, wall ? ".wall" : ".layers",
-                       wall ? &target->wall : target->layers,
+        const bool only = is_only_target(plan);
+        *out = (stack){only ? "target" : "targets.", only ? "" : target->name.text,
+                       wall ? ".wall" : ".layers", wall ? &target->wall : target->layers,
                        wall ? (target->has_wall ? 1 : 0) : target->layer_count};
         return true;
     }
@@ -257,8 +261,7 @@ static void caution_of_hazard(caution_list *to, unsigned which)
     for (size_t i = 0; stack_at(to->plan, i, &from); i++)
         for (size_t l = 0; l < from.count; l++)
             mention_layer(&m, &from, &from.layers[l]);
-    if (m.names.failed)
-        to->failed = true;
+    to->failed = to->failed || m.names.failed;
     if (m.names.length > 0) {
         bh_text_append(&m.names, hazard_texts[which]);
         bh_text_append(&m.names, DEFER_SAFETY);

@@ -322,6 +322,35 @@ START_TEST(magnets)
 }
 END_TEST
 
+/* From the text of a plan and the library that is shipped: marks and keys are the reader's own. */
+START_TEST(from_a_plan_as_written)
+{
+    static const char text[] =
+        "plan: 1\nbeam:\n  particle: electron\n  kinetic_energy: 855 MeV\n  current: 20 uA\n"
+        "target:\n  scatterer: H\n  empty_target: {share: 10 %}\n  layers:\n"
+        "    - {material: aluminum, thickness: 0.1 mm, role: window}\n"
+        "    - {material: liquid-hydrogen, thickness: 5 cm}\n"
+        "arms:\n  - {name: A, solid_angle: 6 msr, momentum_bite: ±5 %}\n"
+        "settings:\n  - {name: K1, angle: 25 deg, time: 1 h}\n"
+        "  - {name: K2, angle: 25 deg, time: 1 h, beam: {current: 40 uA}}\n";
+    const char *const folders[] = {"plans", "materials", NULL};
+    bh_material_library *library = bh_material_library_new(folders);
+    bh_diags *diags = bh_diags_new();
+    bh_plan *plan = bh_plan_read(text, sizeof text - 1, "p.yaml", NULL, 0, library, diags);
+    ck_assert_msg(plan != NULL, "%s", bh_diags_count(diags) ? bh_diags_at(diags, 0)->text : "");
+    derive(plan);
+    ck_assert_uint_eq(count, 6);
+    expect("34.2 kW", "settings.K2.beam.current", 16);
+    expect("liquid-hydrogen: flammable", "target.layers", 11);
+    expect("burns skin", "target.layers", 11);
+    expect("this one of aluminium", "target.layers", 10);
+    expect("Arm A has magnets", "arms.A", 13);
+    bh_plan_free(plan);
+    bh_diags_free(diags);
+    bh_material_library_free(library);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("cautions");
@@ -336,5 +365,6 @@ int main(void)
     tcase_add_test(tests, walls_and_exits_count);
     tcase_add_test(tests, gas_under_pressure);
     tcase_add_test(tests, magnets);
+    tcase_add_test(tests, from_a_plan_as_written);
     return run_suite("cautions", tests);
 }
