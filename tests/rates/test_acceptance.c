@@ -247,6 +247,12 @@ START_TEST(ring_in_closed_form)
     bh_acceptance_part_of(&a, 3, &part); /* cut off at the ring's own end */
     ck_assert_double_eq_tol(part.solid_angle, 90 * D * (cos(40 * D) - cos(100 * D)), 1e-14);
     ck_assert(bh_acceptance_edge(&a, 3) == edges[3] && bh_acceptance_edge(&a, 0) == edges[0]);
+    spec.azimuth = 2 * BH_PI;
+    spec.solid_angle = 12; /* just below 4 pi */
+    ck_assert_double_eq_tol(made(&spec).whole.solid_angle, 12, 1e-14);
+    spec.solid_angle = 13;
+    ck_assert_int_eq(bh_acceptance_make(&spec, &(bh_acceptance){0}, NULL), BH_EDOMAIN);
+    spec.solid_angle = 0;
     spec.azimuth = 0;
     ck_assert_double_eq_tol(made(&spec).whole.solid_angle, 2 * BH_PI * (cos(20 * D) - cos(100 * D)),
                             1e-14);

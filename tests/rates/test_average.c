@@ -227,14 +227,17 @@ START_TEST(splitting_conserves)
         const bh_acceptance a = arm(s, counts[i]);
         const bh_average whole = sum_of(&a, &r, bins);
         double sum = 0;
+        double off = 0;
         for (int b = 0; b < a.bins; b++) {
             sum += bins[b].total;
+            off += bins[b].error * bins[b].total;
             ck_assert_msg(bins[b].converged, "%s, %s: bin %d of %d is off by %g", shapes[s].what,
                           functions[f].what, b + 1, a.bins, bins[b].error);
         }
         ck_assert_msg(fabs(whole.total / alone - 1) < 2e-7, "%s, %s in %d bins: %.10g not %.10g",
                       shapes[s].what, functions[f].what, counts[i], whole.total, alone);
         ck_assert_double_eq_tol(sum / whole.total, 1, 1e-12);
+        ck_assert_double_eq_tol(off / sum, whole.error, 1e-6 * whole.error + 1e-16);
     }
 }
 END_TEST

@@ -101,6 +101,26 @@ START_TEST(wide_bites_reach_the_ends)
 }
 END_TEST
 
+START_TEST(up_to_where_fast_and_slow_meet)
+{
+    const bh_collision *in = &collisions[_i].in;
+    if (in->mass <= in->target)
+        return;
+    const double near = 0.999 * bh_kinematics_largest_angle(in);
+    const bh_bite bites[] = {
+        {BH_DETECTED_SCATTERED, momentum(in, BH_DETECTED_SCATTERED, near), HUGE_VAL},
+        {BH_DETECTED_SLOW, 0, momentum(in, BH_DETECTED_SLOW, near)}};
+    for (int i = 0; i < 2; i++) {
+        bh_interval found;
+        size_t count;
+        ck_assert_int_eq(bh_bite_angles(in, &bites[i], &found, &count, NULL), BH_OK);
+        ck_assert_uint_eq(count, 1);
+        ck_assert_msg(fabs(found.to / near - 1) < 1e-7 && found.from == 0, "%s: %.9g not %.9g",
+                      collisions[_i].what, found.to, near);
+    }
+}
+END_TEST
+
 START_TEST(odd_bites_are_refused)
 {
     const bh_bite bad[] = {{BH_DETECTED_SCATTERED, 5, 5},
@@ -137,6 +157,7 @@ int main(void)
     TCase *tests = tcase_create("bite");
     tcase_add_loop_test(tests, inside_is_inside, 0, COUNT(collisions) * COUNT(kinds));
     tcase_add_loop_test(tests, wide_bites_reach_the_ends, 0, COUNT(collisions) * COUNT(kinds));
+    tcase_add_loop_test(tests, up_to_where_fast_and_slow_meet, 0, COUNT(collisions));
     tcase_add_test(tests, odd_bites_are_refused);
     tcase_add_test(tests, share_under_resolution);
     return run_suite("bite", tests);

@@ -105,6 +105,7 @@ START_TEST(the_factors_of_live)
     ck_assert_double_eq_tol(live.dead_part, 1 / (1 + 5000 * 5e-6), 1e-14);
     ck_assert_double_eq_tol(live.prescale_part, 0.1, 1e-15);
     ck_assert_double_eq_tol(live.limit_part, 4000 / (5000 / 1.025), 1e-12);
+    ck_assert_double_eq_tol(live.live_fraction, 0.1 / 1.025 * 4000 / (5000 / 1.025), 1e-14);
     /* the rates while there is beam */
     r = (bh_readout){.dead_time = 1e-6, .prescale = 1, .rate_limit = 0, .duty_factor = 0.01};
     live = live_of(&r, 1e4);
