@@ -5,27 +5,29 @@
 #include "beamhours/plan/making.h"
 #include "beamhours/schema/reading.h"
 
-static void set_shape(const bh_making *making, const bh_raw_arm *raw, bh_arm *arm)
+/* Two ways at once, half of one, or none. */
+static void check_shape(const bh_making *making, const bh_raw_arm *raw)
 {
-    const bool flat = raw->in_plane.given || raw->out_of_plane.given;
-    const bool first = raw->in_plane.given;
-    if (raw->ring.given && flat)
-        bh_tell(making, raw->ring.at, &raw->section, "ring", BH_SAY_TWO_OF_GROUP,
-                first ? "in_plane" : "out_of_plane", "ring");
-    else if (flat && raw->in_plane.given != raw->out_of_plane.given)
-        bh_tell(making, first ? raw->in_plane.at : raw->out_of_plane.at, &raw->section,
-                first ? "in_plane" : "out_of_plane", BH_SAY_HALF_SHAPE,
-                first ? "in_plane" : "out_of_plane", first ? "out_of_plane" : "in_plane");
-    else if (!flat && !raw->ring.given && !raw->solid_angle.given && raw->section.node)
+    const bool in = raw->in_plane.given, out = raw->out_of_plane.given;
+    const bh_extent *flat = in ? &raw->in_plane : &raw->out_of_plane;
+    const char *name = in ? "in_plane" : "out_of_plane";
+    if (raw->ring.given && (in || out))
+        bh_tell(making, raw->ring.at, &raw->section, "ring", BH_SAY_TWO_OF_GROUP, name, "ring");
+    else if (in != out)
+        bh_tell(making, flat->at, &raw->section, name, BH_SAY_HALF_SHAPE, name,
+                in ? "out_of_plane" : "in_plane");
+    else if (!in && !raw->ring.given && !raw->solid_angle.given && raw->section.node)
         bh_tell(making, raw->section.at, &raw->section, "in_plane", BH_SAY_MISSING_GROUP,
                 bh_schema_arm.name, "in_plane with out_of_plane, ring or solid_angle");
     if (raw->azimuth.given && !raw->ring.given)
         bh_tell(making, raw->azimuth.at, &raw->section, "azimuth", BH_SAY_NO_RING);
-    arm->shape = BH_SHAPE_POINT;
+}
+
+static bh_shape shape_of(const bh_raw_arm *raw)
+{
     if (raw->ring.given)
-        arm->shape = BH_SHAPE_RING;
-    else if (flat)
-        arm->shape = BH_SHAPE_RECTANGLE;
+        return BH_SHAPE_RING;
+    return raw->in_plane.given || raw->out_of_plane.given ? BH_SHAPE_RECTANGLE : BH_SHAPE_POINT;
 }
 
 /* --- bins --- */
@@ -121,7 +123,8 @@ static bh_code make_arm(const bh_making *making, const bh_raw_arm *raw, bh_arm *
         .other_rate = raw->other_rate,
         .at = raw->section.at,
     };
-    set_shape(making, raw, arm);
+    arm->shape = shape_of(raw);
+    check_shape(making, raw);
     if (arm->shape == BH_SHAPE_RING)
         check_ring(making, raw, arm);
     if (set_bins(making, raw, arm) || bh_make_layers(making, &raw->exit, &exit, &arm->exit_count))

@@ -122,6 +122,8 @@ static void values(const struct out *out, const bh_key *key, const bh_values *li
 
 /* --- structs by their tables --- */
 
+/* NOLINTBEGIN(misc-no-recursion): as deep as the tables of keys are, five levels */
+
 static void members(const struct out *out, const bh_schema *schema, const void *in);
 
 static void list_of(const struct out *out, const bh_key *key, const bh_list *list)
@@ -209,6 +211,8 @@ static void members(const struct out *out, const bh_schema *schema, const void *
         one_member(out, key, (const unsigned char *)in + key->offset);
     }
 }
+
+/* NOLINTEND(misc-no-recursion) */
 
 /* --- settings, as they are after sweeps --- */
 

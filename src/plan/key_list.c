@@ -22,8 +22,12 @@ static bool expands(const struct walk *walk)
     const bh_key *key = &walk->schema[walk->depth]->keys[walk->row[walk->depth]];
     if (!key->children || walk->depth + 1 == DEEPEST)
         return false;
-    const bool again = (key->flags & BH_KEY_OVERRIDE) || strcmp(key->name, "target") == 0 ||
-                       strcmp(key->name, "every_setting") == 0 || strcmp(key->name, "exit") == 0;
+    const bool one = key->kind == BH_KEY_MAPPING;
+    const bool again = (key->flags & BH_KEY_OVERRIDE) ||
+                       (one && key->children == &bh_schema_target) ||
+                       (one && key->children == &bh_schema_setting) ||
+                       (walk->depth == 1 && key->children == &bh_schema_layer &&
+                        walk->schema[1] == &bh_schema_arm);
     return !again;
 }
 
@@ -198,8 +202,7 @@ static void find_near(const char *path, bh_plan_key *near)
     do {
         const char *name = walk.schema[walk.depth]->keys[walk.row[walk.depth]].name;
         const char *const pair[] = {best, name};
-        const char *winner = bh_nearest(last, pair, 2);
-        if (winner == name && winner != best) {
+        if (bh_nearest(last, pair, 2) == name && name != best) {
             best = name;
             describe(&walk, near);
         }

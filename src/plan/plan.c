@@ -43,6 +43,7 @@ static void read_document(bh_making *making, const bh_change *changes, size_t ch
         bh_diags_lose(making->reading.diags);
 }
 
+/* NOLINTNEXTLINE(readability-function-size): the arguments are few kinds of thing */
 bh_plan *bh_plan_read(const char *bytes, size_t length, const char *name, const bh_change *changes,
                       size_t change_count, bh_material_library *library, bh_diags *diags)
 {

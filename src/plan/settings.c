@@ -142,6 +142,33 @@ static const bh_value *want_of(const bh_raw_aim *aim, bh_want *want, const char 
     return NULL;
 }
 
+/* The arm of one item of a list; NULL after a complaint. */
+static bh_code arm_of_item(const bh_making *making, const bh_raw_aim *aim, const bh_arm **arm)
+{
+    *arm = NULL;
+    if (aim->arm.given)
+        return find_arm(making, aim, arm);
+    if (making->plan.arm_count == 1)
+        *arm = &making->arms[0];
+    else if (aim->section.node && making->plan.arm_count > 1 && making->arms[0].name.text)
+        bh_tell(making, aim->section.at, &aim->section, "arm", BH_SAY_WHICH_ARM,
+                making->arms[0].name.text);
+    return BH_OK;
+}
+
+static void add_item(const bh_making *making, const bh_raw_aim *item, const bh_raw_aim *merged,
+                     const bh_arm *arm, struct prepared *p)
+{
+    bh_raw_aim aim = *merged;
+    if (takes_part(p, arm))
+        bh_tell(making, aim.arm.at, &aim.section, "arm", BH_SAY_ARM_TWICE, arm->name.text, p->name);
+    if (!needs_angle(arm)) {
+        say_cannot_move(making, item, arm);
+        forget_place(&aim);
+    }
+    add_aim(p, &aim, arm);
+}
+
 /* A list of arms: each lays its own keys on what the setting says for all. */
 static bh_code aims_of_list(const bh_making *making, const bh_raw_setting *own, struct prepared *p)
 {
@@ -156,29 +183,14 @@ static bh_code aims_of_list(const bh_making *making, const bh_raw_setting *own, 
         const bh_arm *arm;
         bh_schema_merge(&bh_schema_aim, &shared, &items[i], &aim);
         aim.section = items[i].section;
-        if (!aim.arm.given && making->plan.arm_count == 1)
-            arm = &making->arms[0];
-        else if (!aim.arm.given && aim.section.node) {
-            bh_tell(making, aim.section.at, &aim.section, "arm", BH_SAY_MISSING_KEY,
-                    bh_schema_aim.name, "arm",
-                    making->plan.arm_count ? making->arms[0].name.text : "A");
-            continue;
-        } else if (find_arm(making, &aim, &arm))
-            return BH_ENOMEM;
         const bh_value *value = want_of(&items[i], &want, &arm_want);
         if (value && setting_want)
             bh_tell(making, value->at, &aim.section, arm_want, BH_SAY_WANT_TWICE, arm_want,
                     setting_want);
-        if (!arm)
-            continue;
-        if (takes_part(p, arm))
-            bh_tell(making, aim.arm.at, &aim.section, "arm", BH_SAY_ARM_TWICE, aim.arm.text,
-                    p->name);
-        if (!needs_angle(arm)) {
-            say_cannot_move(making, &items[i], arm);
-            forget_place(&aim);
-        }
-        add_aim(p, &aim, arm);
+        if (arm_of_item(making, &aim, &arm))
+            return BH_ENOMEM;
+        if (arm)
+            add_item(making, &items[i], &aim, arm, p);
     }
     return BH_OK;
 }
@@ -233,7 +245,7 @@ static bh_code set_aims(const bh_making *making, const bh_raw_setting *own, stru
 {
     const size_t room = p->raw.arms.count + making->plan.arm_count + 1;
     p->aims = bh_arena_take(making->reading.arena, room, sizeof *p->aims);
-    p->arms = bh_arena_take(making->reading.arena, room, sizeof *p->arms);
+    p->arms = bh_arena_take(making->reading.arena, room, sizeof(const bh_arm *));
     if (!p->aims || !p->arms)
         return BH_ENOMEM;
     const bh_code code = p->raw.arms.given ? aims_of_list(making, own, p) : aims_of_one(making, p);

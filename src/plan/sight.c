@@ -95,26 +95,26 @@ static void check_momentum(const bh_sight *sight, const struct place *place, con
 {
     const bh_setting_arm *row = sight->row;
     const bh_extent *range = &row->arm.momentum_range;
+    const bool written = row->central_momentum.given;
     const bool recoil = row->arm.detects == BH_DETECTS_RECOIL;
     char here[BH_QUANTITY_SIZE], from[BH_QUANTITY_SIZE], to[BH_QUANTITY_SIZE];
-    if (!range->given)
+    if (!range->given || (!written && !event))
         return;
+    const double arriving = written  ? 0.0
+                            : recoil ? event->recoil_momentum
+                                     : event->scattered_momentum;
+    const double p = written ? row->central_momentum.value : arriving;
+    if (!(p < range->from || p > range->to))
+        return;
+    bh_quantity_text(p, BH_DIM_MOMENTUM, here);
     bh_quantity_text(range->from, BH_DIM_MOMENTUM, from);
     bh_quantity_text(range->to, BH_DIM_MOMENTUM, to);
-    if (row->central_momentum.given) {
-        const double p = row->central_momentum.value;
-        if (p < range->from || p > range->to)
-            bh_tell(sight->making, row->central_momentum.at, &sight->aim->section,
-                    "central_momentum", BH_SAY_OUTSIDE_MOMENTA,
-                    bh_quantity_text(p, BH_DIM_MOMENTUM, here), name_of(&row->arm), from, to);
-        return;
-    }
-    if (!event)
-        return;
-    const double p = recoil ? event->recoil_momentum : event->scattered_momentum;
-    if (p < range->from || p > range->to)
-        bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_MOMENTUM_AWAY,
-                bh_quantity_text(p, BH_DIM_MOMENTUM, here), name_of(&row->arm), from, to);
+    if (written)
+        bh_tell(sight->making, row->central_momentum.at, &sight->aim->section, "central_momentum",
+                BH_SAY_OUTSIDE_MOMENTA, here, name_of(&row->arm), from, to);
+    else
+        bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_MOMENTUM_AWAY, here,
+                name_of(&row->arm), from, to);
 }
 
 /* --- room --- */

@@ -31,6 +31,7 @@ static bool matters(const bh_key *key, const void *in)
     }
 }
 
+/* NOLINTNEXTLINE(misc-no-recursion): as deep as the tables of keys are, five levels */
 static void visit(const bh_making *making, const bh_schema *schema, const void *in)
 {
     for (size_t i = 0; i < schema->count; i++) {

@@ -58,7 +58,7 @@ static int by_name(const void *a, const void *b)
 
 static bh_code check_names(const bh_reading *reading, const bh_node *list)
 {
-    const bh_node **names = bh_arena_take(reading->arena, list->count + 1, sizeof *names);
+    const bh_node **names = bh_arena_take(reading->arena, list->count + 1, sizeof(const bh_node *));
     size_t n = 0;
     if (!names)
         return BH_ENOMEM;
@@ -67,7 +67,7 @@ static bh_code check_names(const bh_reading *reading, const bh_node *list)
         if (name && name->kind == BH_NODE_SCALAR && name->length > 0)
             names[n++] = name;
     }
-    qsort(names, n, sizeof *names, by_name);
+    qsort(names, n, sizeof(const bh_node *), by_name);
     for (size_t i = 1; i < n; i++)
         if (strcmp(names[i - 1]->text, names[i]->text) == 0)
             bh_say_node(reading, names[i], BH_SAY_NAME_TWICE, names[i]->text,

@@ -115,6 +115,7 @@ static void clear_group(const bh_schema *schema, const bh_key *key, unsigned cha
     }
 }
 
+/* NOLINTNEXTLINE(misc-no-recursion): as deep as the tables of keys are, five levels */
 void bh_schema_merge(const bh_schema *schema, const void *base, const void *over, void *out)
 {
     const unsigned char *top = over;

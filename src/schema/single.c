@@ -1,6 +1,7 @@
 /* single.c - one value: quantities with their bounds, bare numbers, whole numbers. */
 #include <ctype.h>
 #include <math.h>
+#include <stdio.h>
 #include <string.h>
 
 #include "beamhours/base/number.h"
@@ -39,8 +40,20 @@ bool bh_read_is(const bh_reading *reading, bh_written written, bh_node_kind kind
 
 const char *bh_quantity_text(double value, bh_dimension dimension, char out[BH_QUANTITY_SIZE])
 {
+    char whole[BH_QUANTITY_SIZE], number[BH_NUMBER_SIZE];
     const bh_quantity q = {.value = value};
-    (void)bh_quantity_print(&q, dimension, out, BH_QUANTITY_SIZE);
+    const char *unit = whole;
+    double printed;
+    (void)bh_quantity_print(&q, dimension, whole, sizeof whole);
+    if (bh_number_parse(whole, &unit, &printed)) {
+        (void)snprintf(out, BH_QUANTITY_SIZE, "%s", whole);
+        return out;
+    }
+    /* Nobody wants to read more digits of a computed value; closing zeros go. */
+    (void)bh_number_digits(printed, 7, number, sizeof number);
+    if (bh_number_parse(number, NULL, &printed) == BH_OK)
+        (void)bh_number_print(printed, number, sizeof number);
+    (void)snprintf(out, BH_QUANTITY_SIZE, "%s%s", number, unit);
     return out;
 }
 

@@ -104,6 +104,16 @@ static bool complete(const struct steps *s)
            !isnan(s->step.given ? s->step.value : s->count.value);
 }
 
+/* Steps written in decimals should stay decimals: 40 deg, not 39.99999999999999 deg. */
+static double snap(double value, bh_dimension dimension)
+{
+    char text[BH_QUANTITY_SIZE];
+    bh_quantity near;
+    if (bh_quantity_parse(bh_quantity_text(value, dimension, text), dimension, &near, NULL))
+        return value;
+    return fabs(near.value - value) <= 1e-13 * fabs(value) ? near.value : value;
+}
+
 static bh_code fill(const bh_reading *reading, bh_written written, const struct steps *s,
                     bh_sweep *out)
 {
@@ -120,8 +130,9 @@ static bh_code fill(const bh_reading *reading, bh_written written, const struct 
     for (size_t i = 0; i < n; i++) {
         const double part = (double)i / (double)(n - 1);
         values[i] = (bh_quantity){
-            .value =
-                i + 1 == n ? s->to.value : s->from.value + (s->to.value - s->from.value) * part,
+            .value = i + 1 == n ? s->to.value
+                                : snap(s->from.value + (s->to.value - s->from.value) * part,
+                                       written.key->dimension),
             .uncertainty = s->from.uncertainty * (1.0 - part) + s->to.uncertainty * part,
             .uncertain = s->from.uncertainty > 0.0 || s->to.uncertainty > 0.0,
             .per_u = per_u,
