@@ -44,8 +44,8 @@ static void check_edges(const bh_making *making, const bh_raw_arm *raw)
     for (size_t i = 1; i < edges->count; i++)
         if (edges->items[i].value <= edges->items[i - 1].value)
             bh_tell(making, edges->items[i].at, &raw->section, "edges", BH_SAY_EDGES_RISE,
-                    bh_quantity_text(edges->items[i].value, BH_DIM_ANGLE, here),
-                    bh_quantity_text(edges->items[i - 1].value, BH_DIM_ANGLE, before));
+                    bh_angle_text(edges->items[i].value, here),
+                    bh_angle_text(edges->items[i - 1].value, before));
 }
 
 static bh_code set_bins(const bh_making *making, const bh_raw_arm *raw, bh_arm *arm)
@@ -80,14 +80,13 @@ static void check_ring(const bh_making *making, const bh_raw_arm *raw, const bh_
                 raw->name.text ? raw->name.text : "?", "angle");
     if (raw->ring.from <= 0.0)
         bh_tell(making, raw->ring.at, &raw->section, "ring", BH_SAY_RING_BEAM,
-                bh_quantity_text(raw->ring.from, BH_DIM_ANGLE, text));
+                bh_angle_text(raw->ring.from, text));
     for (size_t i = 0; i < raw->edges.count; i++) {
         const bh_value *edge = &raw->edges.items[i];
         if (edge->value < arm->ring.from - 1e-9 || edge->value > arm->ring.to + 1e-9)
             bh_tell(making, edge->at, &raw->section, "edges", BH_SAY_EDGE_OUTSIDE,
-                    bh_quantity_text(edge->value, BH_DIM_ANGLE, text),
-                    bh_quantity_text(arm->ring.from, BH_DIM_ANGLE, from),
-                    bh_quantity_text(arm->ring.to, BH_DIM_ANGLE, to));
+                    bh_angle_text(edge->value, text), bh_angle_text(arm->ring.from, from),
+                    bh_angle_text(arm->ring.to, to));
     }
 }
 

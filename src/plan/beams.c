@@ -132,8 +132,8 @@ static void check_kinetic(const bh_making *making, const bh_raw_beam *raw, const
         bh_tell(making, kinetic->at, &raw->section, key, BH_SAY_BELOW_REST, written,
                 beam->particle.name, bh_quantity_text(beam->particle.mass, BH_DIM_ENERGY, other));
     else if (!(kinetic->value >= 1e-3 * nucleons && kinetic->value <= 1e6 * nucleons))
-        bh_tell(making, kinetic->at, &raw->section, key, BH_SAY_ENERGY_RANGE, written,
-                bh_quantity_text(kinetic->value / nucleons, BH_DIM_ENERGY, other));
+        bh_tell(making, kinetic->at, &raw->section, key, BH_SAY_ENERGY_RANGE,
+                bh_quantity_text(kinetic->value, BH_DIM_ENERGY, other));
     else
         return;
     beam->kinetic_energy.value = NAN;

@@ -24,6 +24,8 @@ static double gas_density(const bh_making *making, const bh_raw_layer *raw,
                 warm ? "pressure" : "temperature");
         return NAN;
     }
+    if (isnan(raw->temperature.value) || isnan(raw->pressure.value))
+        return NAN; /* unreadable: the reader has said so */
     return bh_material_gas_density(material, raw->temperature.value, raw->pressure.value);
 }
 
@@ -56,11 +58,6 @@ static void set_density(const bh_making *making, const bh_raw_layer *raw, bh_lay
         warn_density(making, raw, material);
     } else if (raw->temperature.given || raw->pressure.given) {
         layer->density.value = gas_density(making, raw, material);
-    }
-    if (layer->density.value <= 0.0) {
-        bh_tell(making, raw->material.at, &raw->section, "density", BH_SAY_NO_DENSITY,
-                material->name);
-        layer->density.value = NAN;
     }
 }
 

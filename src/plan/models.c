@@ -80,8 +80,8 @@ static bh_code set_choices(bh_making *making)
         const bh_pair *pair = &pairs->items[i];
         bh_structure_choice *choice = &choices[models->choice_count];
         if (!bh_nuclide_parse(pair->name, &choice->z, &choice->a)) {
-            bh_tell(making, pair->name_at, &section, pair->name, BH_SAY_NO_NUCLIDE, pair->name,
-                    "12C");
+            const bh_word name = {.text = pair->name, .given = true, .at = pair->name_at};
+            bh_tell_no_nuclide(making, &name, &section, pair->name, 0);
             continue;
         }
         choice->model = pair->word;

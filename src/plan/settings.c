@@ -103,7 +103,7 @@ static void say_cannot_move(const bh_making *making, const bh_raw_aim *aim, cons
         bh_tell(making, at, &aim->section, key, BH_SAY_RING_ANGLE, name, key);
     else
         bh_tell(making, at, &aim->section, key, BH_SAY_ARM_FIXED, name,
-                bh_quantity_text(arm->angle.value, BH_DIM_ANGLE, angle), key);
+                bh_angle_text(arm->angle.value, angle), key);
 }
 
 static void add_aim(struct prepared *p, const bh_raw_aim *aim, const bh_arm *arm)

@@ -14,11 +14,6 @@ struct place {
     bh_mark at;
 };
 
-static const char *angle_text(double angle, char out[BH_QUANTITY_SIZE])
-{
-    return bh_quantity_text(angle, BH_DIM_ANGLE, out);
-}
-
 static const char *name_of(const bh_arm *arm)
 {
     return arm->name.text ? arm->name.text : "?";
@@ -77,7 +72,7 @@ static bool reachable(const bh_sight *sight, const struct place *place, bh_event
         if (bh_kinematics_recoil(&collision, angle, event, NULL) == BH_OK && angle < BH_PI / 2.0)
             return true;
         bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_RECOIL_BEYOND,
-                angle_text(angle, here));
+                bh_angle_text(angle, here));
         return false;
     }
     if (bh_kinematics_scattered(&collision, angle, BH_BRANCH_FAST, event, NULL) == BH_OK)
@@ -86,8 +81,8 @@ static bool reachable(const bh_sight *sight, const struct place *place, bh_event
     if (row->arm.detects == BH_DETECTS_EITHER && angle < BH_PI / 2.0)
         return bh_kinematics_recoil(&collision, angle, event, NULL) == BH_OK;
     bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_ANGLE_BEYOND,
-            angle_text(angle, here), sight->setting->beam.particle.name, nuclide,
-            angle_text(bh_kinematics_largest_angle(&collision), most));
+            bh_angle_text(angle, here), sight->setting->beam.particle.name, nuclide,
+            bh_angle_text(bh_kinematics_largest_angle(&collision), most));
     return false;
 }
 
@@ -128,8 +123,8 @@ static void check_range(const bh_sight *sight, const struct place *place)
     if (range->given &&
         (row->angle.value < range->from - slack || row->angle.value > range->to + slack))
         bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_OUTSIDE_ANGLES,
-                angle_text(row->angle.value, here), name_of(&row->arm),
-                angle_text(range->from, from), angle_text(range->to, to));
+                bh_angle_text(row->angle.value, here), name_of(&row->arm),
+                bh_angle_text(range->from, from), bh_angle_text(range->to, to));
 }
 
 static void check_overlap(const bh_sight *sight, const struct place *place)
@@ -144,7 +139,8 @@ static void check_overlap(const bh_sight *sight, const struct place *place)
     char here[BH_QUANTITY_SIZE], half[BH_QUANTITY_SIZE], least[BH_QUANTITY_SIZE];
     if (level && across && angle - inwards <= 0.0)
         bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_OVERLAPS_BEAM,
-                angle_text(angle, here), angle_text(inwards, half), angle_text(inwards, least));
+                bh_angle_text(angle, here), bh_angle_text(inwards, half),
+                bh_angle_text(inwards, least));
 }
 
 /* Unequal bins of a flat acceptance are given in angles from the beam. */
@@ -162,7 +158,8 @@ static void check_edges(const bh_sight *sight)
             const bh_value *edge = &raw[i].edges.items[k];
             if (edge->value < from - slack || edge->value > to + slack)
                 bh_tell(sight->making, edge->at, &raw[i].section, "edges", BH_SAY_EDGE_OUTSIDE,
-                        angle_text(edge->value, here), angle_text(from, low), angle_text(to, high));
+                        bh_angle_text(edge->value, here), bh_angle_text(from, low),
+                        bh_angle_text(to, high));
         }
     }
 }

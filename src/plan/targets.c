@@ -1,10 +1,9 @@
 /* targets.c - targets: layers, scatterer, what stands in for the empty one. */
-#include <math.h>
+#include <stdio.h>
 #include <string.h>
 
 #include "beamhours/base/sentences.h"
 #include "beamhours/plan/making.h"
-#include "beamhours/schema/reading.h"
 #include "beamhours/units/nuclide.h"
 
 /* --- what the samples hold --- */
@@ -50,18 +49,21 @@ bool bh_main_nuclide(const bh_target *target, bh_constituent *out)
     return best != NULL;
 }
 
-/* Symbols of the elements in `held`, each once; returns how many. */
-static size_t elements(const bh_amount *held, size_t n, const char *names[9])
+/* Symbols of the elements in `held`, each once, cut to ELEMENTS_SIZE; returns how many. */
+enum { ELEMENTS_SIZE = 100 };
+static size_t elements(const bh_amount *held, size_t n, char out[ELEMENTS_SIZE])
 {
-    size_t count = 0;
-    memset(names, 0, 9 * sizeof *names);
+    size_t count = 0, used = 0;
+    out[0] = '\0';
     for (size_t i = 0; i < n; i++) {
-        const char *symbol = bh_element_symbol(held[i].z);
         size_t j = 0;
-        while (j < count && names[j] != symbol)
+        while (j < i && held[j].z != held[i].z)
             j++;
-        if (j == count && symbol && count < 8)
-            names[count++] = symbol;
+        if (j < i || used >= ELEMENTS_SIZE)
+            continue;
+        used += (size_t)snprintf(out + used, ELEMENTS_SIZE - used, "%s%s", count ? ", " : "",
+                                 bh_element_symbol(held[i].z));
+        count++;
     }
     return count;
 }
@@ -95,21 +97,19 @@ static void named_scatterer(const bh_making *making, const bh_raw_target *raw, b
                             const bh_amount *held, size_t n)
 {
     const bh_word *word = &raw->scatterer;
-    const char *names[9];
-    char all[100];
+    char all[ELEMENTS_SIZE];
     int z, a;
-    elements(held, n, names);
+    elements(held, n, all);
     target->scatterer = *word;
     if (!word->text)
         return;
     if (!bh_nuclide_parse(word->text, &z, &a)) {
-        bh_tell(making, word->at, &raw->section, "scatterer", BH_SAY_NO_NUCLIDE, word->text,
-                n > 0 ? names[0] : "12C");
+        bh_tell_no_nuclide(making, word, &raw->section, "scatterer", n > 0 ? held[0].z : 0);
         return;
     }
     if (n > 0 && !holds(held, n, z, a))
         bh_tell(making, word->at, &raw->section, "scatterer", BH_SAY_NOT_IN_SAMPLE, word->text,
-                target->name.text, bh_words_text(names, all, sizeof all));
+                target->name.text, all);
     target->scatterer_z = z;
     target->scatterer_a = a;
 }
@@ -146,12 +146,11 @@ static bh_code set_scatterer(const bh_making *making, const bh_raw_target *raw, 
     }
     if (n == 0)
         return BH_OK;
-    const char *names[9];
-    char all[100];
-    if (elements(held, n, names) == 1)
+    char all[ELEMENTS_SIZE];
+    if (elements(held, n, all) == 1)
         return default_scatterer(making, raw, target, held);
     bh_tell(making, raw->section.at, &raw->section, "scatterer", BH_SAY_WHICH_SCATTERER,
-            target->name.text, bh_words_text(names, all, sizeof all));
+            target->name.text, all);
     return BH_OK;
 }
 
@@ -218,9 +217,11 @@ static void set_name(const bh_making *making, const bh_raw_target *raw, bh_targe
         bh_tell(making, raw->section.at, &raw->section, "name", BH_SAY_MISSING_KEY,
                 bh_schema_target.name, "name", "hydrogen");
     target->name.text = "target";
-    for (size_t i = target->layer_count; i-- > 0;)
-        if (target->layers[i].role == BH_ROLE_SAMPLE && target->layers[i].material)
-            target->name.text = target->layers[i].material->name;
+    for (size_t i = target->layer_count; i-- > 0;) {
+        const bh_layer *layer = &target->layers[i];
+        if (layer->material && (layer->role == BH_ROLE_SAMPLE || i == 0))
+            target->name.text = layer->material->name;
+    }
 }
 
 static bh_code make_target(bh_making *making, const bh_raw_target *raw, bh_target *target)

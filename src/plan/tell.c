@@ -4,9 +4,12 @@
 #include <string.h>
 
 #include "beamhours/base/nearest.h"
+#include "beamhours/base/number.h"
 #include "beamhours/base/sentences.h"
 #include "beamhours/plan/making.h"
 #include "beamhours/schema/reading.h"
+#include "beamhours/units/constants.h"
+#include "beamhours/units/nuclide.h"
 
 static bool same_place(bh_mark a, bh_mark b)
 {
@@ -68,4 +71,31 @@ void bh_tell_no_arm(const bh_making *making, const bh_unfound *unfound)
     else
         bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_ARM_OF, word->text,
                 all_of(unfound, all, sizeof all));
+}
+
+const char *bh_angle_text(double angle, char out[BH_QUANTITY_SIZE])
+{
+    char number[BH_NUMBER_SIZE];
+    double rounded = angle / BH_DEGREE;
+    (void)bh_number_digits(rounded, 7, number, sizeof number);
+    if (bh_number_parse(number, NULL, &rounded) == BH_OK)
+        (void)bh_number_print(rounded, number, sizeof number); /* without closing zeros */
+    (void)snprintf(out, BH_QUANTITY_SIZE, "%s deg", number);
+    return out;
+}
+
+void bh_tell_no_nuclide(const bh_making *making, const bh_word *word, const bh_section *section,
+                        const char *key, int z)
+{
+    const bh_nuclide *near = bh_nuclide_suggest(word->text);
+    const char *symbol = bh_element_symbol(z);
+    char name[8];
+    if (near && symbol && near->z == z)
+        bh_tell(making, word->at, section, key, BH_SAY_NUCLIDE_NEAR, word->text, symbol);
+    else if (near)
+        bh_tell(making, word->at, section, key, BH_SAY_NUCLIDE_NEAR, word->text,
+                bh_nuclide_name(near->z, near->a, name));
+    else
+        bh_tell(making, word->at, section, key, BH_SAY_NO_NUCLIDE, word->text,
+                symbol ? symbol : "12C");
 }

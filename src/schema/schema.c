@@ -1,6 +1,7 @@
 /* schema.c - a mapping read by its table: known keys, missing keys, groups. */
 #include "beamhours/schema/schema.h"
 
+#include <math.h>
 #include <stdint.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -21,6 +22,7 @@ struct job {
     const bh_node *node;
     unsigned char *out;
     const bh_node *key_node[MOST_KEYS]; /* the i-th key as written, or NULL */
+    bool meant[MOST_KEYS];              /* what was written is unknown, but probably means it */
 };
 
 const bh_key *bh_schema_find(const bh_schema *schema, const char *name)
@@ -150,12 +152,48 @@ static void set_absent(const struct job *job, const bh_key *key, void *member)
     }
 }
 
+/* Given, so that nothing asks for it, but of no value: its key was misspelt. */
+static void set_unreadable(const bh_key *key, void *member)
+{
+    switch (key->kind) {
+    case BH_KEY_QUANTITY:
+    case BH_KEY_NUMBER:
+    case BH_KEY_COUNT:
+    case BH_KEY_EITHER:
+        ((bh_value *)member)->given = true;
+        ((bh_value *)member)->value = NAN;
+        break;
+    case BH_KEY_EXTENT:
+    case BH_KEY_RANGE:
+        *(bh_extent *)member =
+            (bh_extent){.from = NAN, .to = NAN, .given = true, .at = ((bh_extent *)member)->at};
+        break;
+    case BH_KEY_WORD:
+    case BH_KEY_NAME:
+    case BH_KEY_TEXT:
+        ((bh_word *)member)->given = true;
+        ((bh_word *)member)->text = NULL;
+        break;
+    case BH_KEY_SWEEP:
+        ((bh_sweep *)member)->given = true;
+        break;
+    case BH_KEY_TABLE:
+    case BH_KEY_VALUES:
+    case BH_KEY_WORDS:
+    case BH_KEY_MAPPING:
+    case BH_KEY_LIST:
+        break; /* as absent */
+    }
+}
+
 static bh_code fill_absent(const struct job *job, size_t i)
 {
     const bh_key *key = &job->schema->keys[i];
     void *member = job->out + key->offset;
     set_absent(job, key, member);
-    if (job->node && !job->reading->partial && (key->flags & BH_KEY_REQUIRED)) {
+    if (job->meant[i])
+        set_unreadable(key, member);
+    else if (job->node && !job->reading->partial && (key->flags & BH_KEY_REQUIRED)) {
         const bh_section *section = (const void *)job->out;
         bh_say(job->reading, section->at, section, key->name, BH_SAY_MISSING_KEY, job->schema->name,
                key->name, key->example);
@@ -167,7 +205,7 @@ static bh_code fill_absent(const struct job *job, size_t i)
 
 /* --- keys that nobody knows --- */
 
-static void say_unknown(const struct job *job, const bh_node *key_node)
+static void say_unknown(struct job *job, const bh_node *key_node)
 {
     const char *names[MOST_KEYS + 1] = {NULL};
     for (size_t i = 0; i < job->schema->count; i++)
@@ -177,6 +215,8 @@ static void say_unknown(const struct job *job, const bh_node *key_node)
         near = bh_nearest(key_node->text, names, job->schema->count);
     const bh_section *section = (const void *)job->out;
     char all[400];
+    for (size_t i = 0; i < job->schema->count; i++)
+        job->meant[i] = job->meant[i] || names[i] == near;
     if (near)
         bh_say(job->reading, key_node->at, section, key_node->text, BH_SAY_UNKNOWN_KEY,
                job->schema->name, near);
@@ -224,7 +264,9 @@ static void check_group(const struct job *job, int group)
             first = found;
         }
     }
-    const bool needed = (job->schema->exactly >> group) & 1U;
+    bool needed = (job->schema->exactly >> group) & 1U;
+    for (size_t i = 0; i < job->schema->count; i++)
+        needed = needed && !(job->meant[i] && job->schema->keys[i].group == group);
     if (!first && needed && job->node && !job->reading->partial)
         say_missing_group(job, group);
 }

@@ -56,7 +56,7 @@ static size_t count_steps(const bh_reading *reading, bh_written written, const s
         return (size_t)s->count.value;
     const char *step_text = bh_node_get(written.node, "step")->text;
     const double n = (to - from) / step;
-    if (!(n >= 1.0 - 1e-9)) {
+    if (!(n >= 1.0 - 1e-9) || isinf(n)) {
         bh_say_node(reading, bh_node_get(written.node, "step"), BH_SAY_SWEEP_WAY, step_text,
                     from_text, to_text);
         return 0;

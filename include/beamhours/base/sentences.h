@@ -191,20 +191,20 @@
 #define BH_SAY_BEAM_SWEEP   "a sweep in the beam of the plan; write it in the beam of a setting"
 #define BH_SAY_BELOW_REST \
     "%s of total energy is no more than the rest energy of %s, %s; more would do"
-#define BH_SAY_ENERGY_RANGE \
-    "%s is %s of kinetic energy for each nucleon; from 1 keV to 1 TeV would do"
+#define BH_SAY_ENERGY_RANGE                                                                      \
+    "%s of kinetic energy cannot be computed; from 1 keV to 1 TeV, for each nucleon of an ion, " \
+    "would do"
 #define BH_SAY_NO_NUCLEONS  "%s, but %s has no mass number; give the energy of the whole particle"
 #define BH_SAY_SHARES_ADD   "fraction %s and others %s add to %s; together 100 %% or less would do"
 #define BH_SAY_OWN_OTHER    "%s is the beam's own particle; leave it out of others"
 #define BH_SAY_PAST_CURRENT "%s is past the facility's limit of %s; that or less would do"
 #define BH_SAY_PAST_POWER \
     "%s of beam power (%s at %s) is past the facility's limit of %s; %s or less would do"
-#define BH_SAY_NOT_A_GAS  "%s for %s, which is no gas; give density instead"
-#define BH_SAY_GAS_HALF   "%s without %s; give both, or density instead"
-#define BH_SAY_VACUUM     "%s for vacuum; give its thickness alone, or nothing"
-#define BH_SAY_NO_DENSITY "the density of %s is not known; add density"
-#define BH_SAY_NO_SAMPLE \
-    "no layer of target %s is its sample; give the one that is measured role: sample"
+#define BH_SAY_NOT_A_GAS       "%s for %s, which is no gas; give density instead"
+#define BH_SAY_GAS_HALF        "%s without %s; give both, or density instead"
+#define BH_SAY_VACUUM          "%s for vacuum; give its thickness alone, or nothing"
+#define BH_SAY_NO_SAMPLE       "target %s has no sample; give the layer that is measured role: sample"
+#define BH_SAY_NUCLIDE_NEAR    "%s is no element and no nuclide; did you mean %s?"
 #define BH_SAY_NO_NUCLIDE      "%s is no element and no nuclide; write for example %s"
 #define BH_SAY_NOT_IN_SAMPLE   "no %s in the sample of target %s; it holds %s"
 #define BH_SAY_WHICH_SCATTERER "the sample of target %s holds %s; add scatterer: and one of them"

@@ -6,6 +6,7 @@
 #include "beamhours/physics/kinematics.h"
 #include "beamhours/plan/plan.h"
 #include "beamhours/plan/raw.h"
+#include "beamhours/schema/reading.h"
 
 /* Limits of the format. */
 enum { BH_MOST_SETTINGS = 10000, BH_MOST_ARM_BINS = 1000, BH_MOST_BINS = 1000000 };
@@ -26,6 +27,9 @@ typedef struct {
 void bh_tell(const bh_making *making, bh_mark at, const bh_section *section, const char *key,
              const char *fmt, ...) BH_PRINTF(5, 6);
 
+/* An angle [rad] in degrees to seven digits: messages compare angles, so all are in one unit. */
+const char *bh_angle_text(double angle, char out[BH_QUANTITY_SIZE]);
+
 /* A name that was not found among `count` `names`: sentence `near_fmt` takes it and the nearest,
  * `all_fmt` it and all of them. */
 typedef struct {
@@ -37,6 +41,10 @@ typedef struct {
 } bh_unfound;
 void bh_tell_no_target(const bh_making *making, const bh_unfound *unfound);
 void bh_tell_no_arm(const bh_making *making, const bh_unfound *unfound);
+
+/* What should have been a nuclide or an element; one of element z would do (0: any). */
+void bh_tell_no_nuclide(const bh_making *making, const bh_word *word, const bh_section *section,
+                        const char *key, int z);
 
 /* The makers, in this order; each complains and goes on.  BH_ENOMEM alone is returned. */
 void bh_make_plan_beam(bh_making *making);
