@@ -32,7 +32,8 @@ void bh_interpolant_free(bh_interpolant *interpolant);
 
 /* Fits; what was there is forgotten.  BH_EDOMAIN when the function is not finite or negative (then
  * nothing is fitted); a piece that does not reach the tolerance is no failure, see
- * bh_interpolant_error. */
+ * bh_interpolant_error.  A step in f is followed down to 2^-36 of the range, but sums over it may
+ * miss up to 1e-4 of the step: cut there instead (bh_average_request.allowed). */
 BH_CHECKED bh_code bh_interpolant_fit(bh_interpolant *interpolant,
                                       const bh_interpolant_request *request, bh_error *err);
 

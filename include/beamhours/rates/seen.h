@@ -27,7 +27,7 @@ typedef struct {
  * nuclei per cm2 of a layer = path x its areal number along the normal.  Positions are along the
  * beam; the centre is the middle between entering the first and leaving the last sample layer (of
  * all layers when there is no sample).  A layer of no thickness is seen or not as a whole.  At
- * angle 0 or pi everything is seen.
+ * angle 0 or pi everything is seen.  A ring has no axis: give its mean polar angle.
  * BH_EDOMAIN for NaN, from >= to, |tilt| >= pi/2, a negative thickness.
  * Source: plan format, `target_view`: seen half-length = view / sin(angle).
  */
