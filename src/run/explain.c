@@ -26,10 +26,10 @@ const char *bh_explain_text(bh_explaining *x, const char *fmt, ...)
     va_start(args, fmt);
     const int length = vsnprintf(text, sizeof text, fmt, args);
     va_end(args);
-    const size_t kept = length < 0 ? 0 : strlen(text);
-    char *copy = bh_arena_take(x->arena, kept + 1, 1);
+    const size_t size = length < 0 ? 1 : strlen(text) + 1;
+    char *copy = bh_arena_take(x->arena, size, 1);
     x->failed = x->failed || !copy;
-    return copy ? memcpy(copy, text, kept) : NULL;
+    return copy && size > 1 ? memcpy(copy, text, size) : copy;
 }
 
 const char *bh_explain_number(bh_explaining *x, double value, const char *unit)
