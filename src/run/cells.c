@@ -19,13 +19,12 @@ struct source {
 static bool event_of(bh_yielder *yielder, const struct source *s, bh_event *event)
 {
     const bh_struck *struck = &s->view->list->nuclides[s->view->list->main];
-    bh_channel channels[BH_MOST_CHANNELS];
-    size_t count;
+    bh_channels channels;
     bh_error ignored;
-    if (bh_view_channels(yielder, s->view, struck, channels, &count, &ignored))
+    if (bh_view_channels(yielder, s->view, struck, &channels, &ignored))
         return false;
-    return s->part->angle <= bh_channel_largest_angle(&channels[0]) &&
-           !bh_channel_event(&channels[0], s->part->angle, event, NULL);
+    return s->part->angle <= bh_channel_largest_angle(&channels.list[0]) &&
+           !bh_channel_event(&channels.list[0], s->part->angle, event, NULL);
 }
 
 static void put_event(const struct source *s, const bh_event *e, bh_row *row)

@@ -6,14 +6,13 @@
 static bh_code integrals(bh_yielder *yielder, const bh_view *view, int part, bh_contribution *c,
                          bh_error *err)
 {
-    bh_channel channels[BH_MOST_CHANNELS];
-    size_t count = 0;
-    const bh_code code = bh_view_channels(yielder, view, c->struck, channels, &count, err);
+    bh_channels channels;
+    const bh_code code = bh_view_channels(yielder, view, c->struck, &channels, err);
     if (code)
         return code;
     double total = 0, kept = 0;
-    for (size_t k = 0; k < count; k++) {
-        bh_channel_request request = bh_view_request(view, &channels[k]);
+    for (size_t k = 0; k < channels.count; k++) {
+        bh_channel_request request = bh_view_request(view, &channels.list[k]);
         request.sensitivities = c->presence->origin == BH_ORIGIN_SIGNAL;
         const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
         if (!sums)
@@ -21,7 +20,7 @@ static bh_code integrals(bh_yielder *yielder, const bh_view *view, int part, bh_
         total += sums[part].total;
         kept += sums[part].kept;
     }
-    c->structure = channels[0].encounter.structure;
+    c->structure = channels.list[0].encounter.structure;
     c->cross_section = total;
     c->kept = total > 0 ? kept / total : 0;
     return BH_OK;

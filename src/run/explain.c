@@ -151,14 +151,13 @@ static bh_code measure(bh_explaining *x, size_t setting, size_t arm, bh_error *e
     x->setting = &plan->settings[setting];
     x->arm = &x->hours.arms[arm];
     x->part = &x->arm->yield->part[x->bin];
-    bh_channel channels[BH_MOST_CHANNELS];
-    size_t count;
+    bh_channels channels;
     const bh_view *view = &x->arm->yield->view;
     code = bh_view_channels(&x->evaluator.yielder, view, &view->list->nuclides[view->list->main],
-                            channels, &count, err);
+                            &channels, err);
     if (code)
         return code;
-    x->channel = channels[0];
+    x->channel = channels.list[0];
     x->reached = x->part->angle <= bh_channel_largest_angle(&x->channel) &&
                  !bh_channel_event(&x->channel, x->part->angle, &x->event, NULL);
     return BH_OK;

@@ -135,12 +135,11 @@ bh_code bh_findings(bh_yielder *yielder, const bh_yield *yield, bh_error *err)
         if (!(yielder->seen[n].reached > worth_saying * all))
             continue;
         const bh_struck *struck = &list->nuclides[n];
-        bh_channel channels[BH_MOST_CHANNELS];
-        size_t count = 0;
-        code = bh_view_channels(yielder, &yield->view, struck, channels, &count, err);
+        bh_channels channels;
+        code = bh_view_channels(yielder, &yield->view, struck, &channels, err);
         if (code)
             break;
-        struct finding f = {.yielder = yielder, .yield = yield, .channel = &channels[0]};
+        struct finding f = {.yielder = yielder, .yield = yield, .channel = &channels.list[0]};
         bh_nuclide_name(struck->z, struck->a, f.nuclide);
         find_structure(&f);
         find_caveat(&f);

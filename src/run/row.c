@@ -4,7 +4,7 @@
 #include <math.h>
 
 static const char *const sentences[BH_WHY_COUNT] = {
-#define SENTENCE(id, sentence) [id] = sentence,
+#define SENTENCE(id, sentence) [id] = (sentence),
     BH_REASONS(SENTENCE)
 #undef SENTENCE
 };

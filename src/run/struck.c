@@ -57,7 +57,7 @@ static size_t main_of(const struct making *m, double *sums)
     return best;
 }
 
-const bh_struck_list *bh_struck_from_target(const bh_target *target, bh_arena *arena)
+bool bh_struck_from_target(const bh_target *target, bh_arena *arena, bh_struck_list *list)
 {
     size_t most = 1;
     for (size_t l = 0; l < target->layer_count; l++)
@@ -66,9 +66,8 @@ const bh_struck_list *bh_struck_from_target(const bh_target *target, bh_arena *a
     m.nuclides = bh_arena_take(arena, most, sizeof *m.nuclides);
     m.presences = bh_arena_take(arena, most, sizeof *m.presences);
     double *sums = bh_arena_take(arena, most, sizeof *sums);
-    bh_struck_list *list = bh_arena_take(arena, 1, sizeof *list);
-    if (!m.nuclides || !m.presences || !sums || !list)
-        return NULL;
+    if (!m.nuclides || !m.presences || !sums)
+        return false;
     for (size_t l = 0; l < target->layer_count; l++)
         add_layer(&m, l);
     *list = (bh_struck_list){.target = target,
@@ -77,5 +76,5 @@ const bh_struck_list *bh_struck_from_target(const bh_target *target, bh_arena *a
                              .presence_count = m.presence_count,
                              .presences = m.presences,
                              .main = main_of(&m, sums)};
-    return list;
+    return true;
 }

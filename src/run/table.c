@@ -227,13 +227,10 @@ const char *bh_table_reason(const bh_table *table, bool bins, size_t row, bh_col
     return bh_why_text(table->rows[bins][row].why[column]);
 }
 
-void bh_table_place(const bh_table *table, bool bins, size_t row, size_t *setting, size_t *arm,
-                    int *bin)
+bh_place bh_table_place(const bh_table *table, bool bins, size_t row)
 {
     const bh_row *r = &table->rows[bins][row];
-    *setting = r->setting;
-    *arm = r->arm;
-    *bin = r->bin;
+    return (bh_place){.setting = r->setting, .arm = r->arm, .bin = r->bin};
 }
 
 const char *bh_table_note(const bh_table *table, size_t i)

@@ -41,8 +41,17 @@ static const char *model_for(const bh_yielder *yielder, const bh_encounter *e)
     return choose && outside ? "point" : name;
 }
 
+static void add_channel(bh_channels *channels, const bh_channel *base, bh_branch branch,
+                        bool recoil)
+{
+    bh_channel *c = &channels->list[channels->count++];
+    *c = *base;
+    c->branch = branch;
+    c->recoil = recoil;
+}
+
 bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view, const bh_struck *struck,
-                         bh_channel *channels, size_t *count, bh_error *err)
+                         bh_channels *channels, bh_error *err)
 {
     const bh_beam *beam = &view->setting->beam;
     const bh_detects detects = view->arm->arm.detects;
@@ -53,23 +62,18 @@ bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view, const bh_stru
                                      .a = struck->a,
                                      .target = struck->mass,
                                      .kinetic = beam->kinetic_energy.value}};
-    base.encounter.structure = bh_workspace_structure(
-        yielder->workspace, model_for(yielder, &base.encounter), struck->z, struck->a, err);
-    if (!base.encounter.structure)
+    bh_encounter *e = &base.encounter;
+    e->structure =
+        bh_workspace_structure(yielder->workspace, model_for(yielder, e), e->z, e->a, err);
+    if (!e->structure)
         return err->code;
-    size_t n = 0;
-    if (detects != BH_DETECTS_RECOIL) {
-        channels[n++] = base;
-        if (beam->particle.mass > struck->mass) {
-            channels[n] = base;
-            channels[n++].branch = BH_BRANCH_SLOW;
-        }
-    }
-    if (detects != BH_DETECTS_SCATTERED) {
-        channels[n] = base;
-        channels[n++].recoil = true;
-    }
-    *count = n;
+    channels->count = 0;
+    if (detects != BH_DETECTS_RECOIL)
+        add_channel(channels, &base, BH_BRANCH_FAST, false);
+    if (detects != BH_DETECTS_RECOIL && beam->particle.mass > struck->mass)
+        add_channel(channels, &base, BH_BRANCH_SLOW, false);
+    if (detects != BH_DETECTS_SCATTERED)
+        add_channel(channels, &base, BH_BRANCH_FAST, true);
     return BH_OK;
 }
 
@@ -78,19 +82,18 @@ static bh_code set_momentum(bh_yielder *yielder, bh_view *view, bh_error *err)
 {
     const bh_arm *arm = &view->arm->arm;
     const bh_struck *struck = &view->list->nuclides[view->list->main];
-    bh_channel channels[BH_MOST_CHANNELS];
-    size_t count = 0;
-    const bh_code code = bh_view_channels(yielder, view, struck, channels, &count, err);
+    bh_channels channels;
+    const bh_code code = bh_view_channels(yielder, view, struck, &channels, err);
     if (code)
         return code;
+    const bh_channel *first = &channels.list[0];
     bh_event event;
     view->central_momentum = (double)NAN;
     if (view->arm->central_momentum.given)
         view->central_momentum = view->arm->central_momentum.value;
-    else if (view->axis <= bh_channel_largest_angle(&channels[0]) &&
-             !bh_channel_event(&channels[0], view->axis, &event, NULL))
-        view->central_momentum =
-            channels[0].recoil ? event.recoil_momentum : event.scattered_momentum;
+    else if (view->axis <= bh_channel_largest_angle(first) &&
+             !bh_channel_event(first, view->axis, &event, NULL))
+        view->central_momentum = first->recoil ? event.recoil_momentum : event.scattered_momentum;
     view->cut = arm->momentum_bite.given && view->central_momentum > 0;
     if (!view->cut)
         return BH_OK;
@@ -104,7 +107,7 @@ bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_se
 {
     *view = (bh_view){.setting = setting,
                       .arm = arm,
-                      .list = yielder->lists[setting->target - yielder->plan->targets],
+                      .list = &yielder->lists[setting->target - yielder->plan->targets],
                       .process = bh_process_find(setting->process.text),
                       .spec = spec_of(arm),
                       .beam = setting->beam.particle_rate.value * setting->beam.fraction.value,

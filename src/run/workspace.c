@@ -130,6 +130,10 @@ struct wanted {
     char name[48];
 };
 
+struct made {
+    bh_structure *structure;
+};
+
 const bh_structure *bh_workspace_structure(bh_workspace *workspace, const char *name, int z, int a,
                                            bh_error *err)
 {
@@ -138,9 +142,9 @@ const bh_structure *bh_workspace_structure(bh_workspace *workspace, const char *
     key.z = z;
     key.a = a;
     strncpy(key.name, name ? name : "", sizeof key.name - 1);
-    bh_structure *const *kept = bh_workspace_recall(workspace, &key, sizeof key);
+    const struct made *kept = bh_workspace_recall(workspace, &key, sizeof key);
     if (kept)
-        return *kept;
+        return kept->structure;
     if (workspace->structure_count == MOST_STRUCTURES) {
         bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
         return NULL;
@@ -149,9 +153,9 @@ const bh_structure *bh_workspace_structure(bh_workspace *workspace, const char *
     if (!made)
         return NULL;
     workspace->structures[workspace->structure_count++] = made;
-    bh_structure **place = bh_workspace_keep(workspace, &key, sizeof key, sizeof *place);
+    struct made *place = bh_workspace_keep(workspace, &key, sizeof key, sizeof *place);
     if (place)
-        *place = made;
+        place->structure = made;
     else
         bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
     return place ? made : NULL;

@@ -15,9 +15,8 @@ bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err)
     yielder->lists = bh_arena_take(arena, plan->target_count, sizeof *yielder->lists);
     bool made = yielder->lists;
     for (size_t t = 0; made && t < plan->target_count; t++) {
-        const bh_struck_list *list = bh_struck_from_target(&plan->targets[t], arena);
-        yielder->lists[t] = list;
-        made = list;
+        bh_struck_list *list = &yielder->lists[t];
+        made = bh_struck_from_target(&plan->targets[t], arena, list);
         if (made && list->count > nuclides)
             nuclides = list->count;
         if (plan->targets[t].layer_count > layers)
@@ -115,11 +114,10 @@ static void add_point(const bh_yield *yield, const bh_channel *channel, double s
 static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, const bh_struck *struck,
                            bh_seen_numbers *seen, bh_error *err)
 {
-    bh_channel channels[BH_MOST_CHANNELS];
-    size_t count = 0;
-    bh_code code = bh_view_channels(yielder, &yield->view, struck, channels, &count, err);
-    for (size_t c = 0; !code && c < count; c++) {
-        bh_channel_request request = bh_view_request(&yield->view, &channels[c]);
+    bh_channels channels;
+    bh_code code = bh_view_channels(yielder, &yield->view, struck, &channels, err);
+    for (size_t c = 0; !code && c < channels.count; c++) {
+        bh_channel_request request = bh_view_request(&yield->view, &channels.list[c]);
         request.sensitivities = seen->signal > 0;
         const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
         if (!sums)
@@ -129,7 +127,7 @@ static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, const bh_struck
         seen->reached += (seen->signal + seen->windows + seen->other) * sums[0].kept;
         yield->converged = yield->converged && sums[0].converged;
         if (seen->signal > 0)
-            add_point(yield, &channels[c], seen->signal);
+            add_point(yield, &channels.list[c], seen->signal);
     }
     return code;
 }
@@ -177,15 +175,14 @@ static void finish(const bh_yield *yield, bh_part *part)
 static bh_code add_dummy(bh_yielder *yielder, bh_yield *yield, const bh_target *dummy,
                          bh_error *err)
 {
-    const bh_struck_list *list = yielder->lists[dummy - yielder->plan->targets];
+    const bh_struck_list *list = &yielder->lists[dummy - yielder->plan->targets];
     bh_code code = set_seen(yielder, &yield->view, list, err);
     for (size_t n = 0; !code && n < list->count; n++) {
         const bh_seen_numbers *seen = &yielder->seen[n];
-        bh_channel channels[BH_MOST_CHANNELS];
-        size_t count = 0;
-        code = bh_view_channels(yielder, &yield->view, &list->nuclides[n], channels, &count, err);
-        for (size_t c = 0; !code && c < count; c++) {
-            const bh_channel_request request = bh_view_request(&yield->view, &channels[c]);
+        bh_channels channels;
+        code = bh_view_channels(yielder, &yield->view, &list->nuclides[n], &channels, err);
+        for (size_t c = 0; !code && c < channels.count; c++) {
+            const bh_channel_request request = bh_view_request(&yield->view, &channels.list[c]);
             const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
             if (!sums)
                 return err->code;

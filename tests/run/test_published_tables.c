@@ -47,7 +47,7 @@ END_TEST
 /* The sensitivities against a cross section moved by hand: the same derivative by a larger step. */
 START_TEST(sensitivities_are_derivatives)
 {
-    static const char *const form =
+    static const char form[] =
         "plan: 1\nbeam: {particle: electron, momentum: %.10g MeV/c, current: 70 uA}\n"
         "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 4 cm}], scatterer: 1H}\n"
         "arms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±60 mrad, momentum_bite: ±1.5 %%}]\n"
@@ -174,7 +174,7 @@ END_TEST
  * and of the slow alpha at 5 deg: the same events. */
 START_TEST(heavy_beam_on_light_target)
 {
-    static const char *const form =
+    static const char form[] =
         "plan: 1\nbeam: {particle: alpha, kinetic_energy: 1 MeV, particle_rate: 1e6 /s}\n"
         "target: {name: t, layers: [{material: hydrogen-gas, areal_number: 1e18 /cm2}], scatterer: "
         "1H}\narms: [{name: A, detects: %s, ring: {from: %.12g deg, to: %.12g deg}, bins: 3}]\n"

@@ -92,13 +92,11 @@ START_TEST(bins_add_up_to_the_arm)
     size_t bin = 0;
     for (size_t row = 0; row < bh_table_rows(e.table, false); row++) {
         double sum[COUNT(added)] = {0};
-        size_t setting, arm;
-        int number;
-        bh_table_place(e.table, false, row, &setting, &arm, &number);
-        ck_assert_int_eq(number, 0);
-        for (int b = 1; b <= e.plan->settings[setting].arms[arm].arm.bins; b++, bin++) {
-            bh_table_place(e.table, true, bin, &setting, &arm, &number);
-            ck_assert_int_eq(number, b);
+        const bh_place whole = bh_table_place(e.table, false, row);
+        ck_assert_int_eq(whole.bin, 0);
+        const bh_arm *arm = &e.plan->settings[whole.setting].arms[whole.arm].arm;
+        for (int b = 1; b <= arm->bins; b++, bin++) {
+            ck_assert_int_eq(bh_table_place(e.table, true, bin).bin, b);
             ck_assert_double_eq(bin_cell(&e, bin, BH_COL_BIN), b);
             for (int i = 0; i < COUNT(added); i++)
                 sum[i] += bin_cell(&e, bin, added[i]);
@@ -196,7 +194,7 @@ END_TEST
 /* The same events, counted by the scattered or by the recoiling particle. */
 START_TEST(scattered_and_recoil_count_the_same_events)
 {
-    static const char *const form =
+    static const char form[] =
         BEAM "target: {name: t, layers: [{material: liquid-deuterium, thickness: 1 cm}], "
              "scatterer: 2H}\narms:\n  - {name: A, detects: %s, ring: {from: %.15g deg, to: %.15g "
              "deg}}\nsettings:\n  - {name: K, time: 1 h}\n";
@@ -359,13 +357,12 @@ END_TEST
 /* Windows twice as thick give twice the background and the same signal. */
 START_TEST(background_follows_the_windows)
 {
-    static const char *const form =
-        BEAM "target:\n  name: cell\n  layers:\n"
-             "    - {material: aluminium, thickness: %s mm, role: window}\n"
-             "    - {material: liquid-hydrogen, thickness: 50 mm}\n"
-             "  scatterer: 1H\n  empty_target: {share: 5 %%}\n"
-             "arms:\n  - {name: A, solid_angle: 6 msr}\n"
-             "settings:\n  - {name: K, angle: 30 deg, time: 1 h}\n";
+    static const char form[] = BEAM "target:\n  name: cell\n  layers:\n"
+                                    "    - {material: aluminium, thickness: %s mm, role: window}\n"
+                                    "    - {material: liquid-hydrogen, thickness: 50 mm}\n"
+                                    "  scatterer: 1H\n  empty_target: {share: 5 %%}\n"
+                                    "arms:\n  - {name: A, solid_angle: 6 msr}\n"
+                                    "settings:\n  - {name: K, angle: 30 deg, time: 1 h}\n";
     char text[2][1024];
     snprintf(text[0], sizeof text[0], form, "0.1");
     snprintf(text[1], sizeof text[1], form, "0.2");
@@ -384,7 +381,7 @@ END_TEST
 /* A dummy cell with windows ten times as thick needs less empty time for the same goal. */
 START_TEST(a_dummy_cell_helps)
 {
-    static const char *const form =
+    static const char form[] =
         BEAM "targets:\n  - name: cell\n    layers:\n"
              "      - {material: aluminium, thickness: 0.3 mm, role: window}\n"
              "      - {material: liquid-hydrogen, thickness: 50 mm}\n"

@@ -2,6 +2,7 @@
 #ifndef BH_RUN_STRUCK_H
 #define BH_RUN_STRUCK_H
 
+#include <stdbool.h>
 #include <stddef.h>
 
 #include "beamhours/base/arena.h"
@@ -36,7 +37,7 @@ typedef struct {
     size_t main; /* of the nuclides, the most abundant isotope of the scatterer */
 } bh_struck_list;
 
-/* Lists the nuclei of `target`, in `arena`.  NULL when there is no memory. */
-const bh_struck_list *bh_struck_from_target(const bh_target *target, bh_arena *arena);
+/* Lists the nuclei of `target`, in `arena`.  False when there is no memory. */
+bool bh_struck_from_target(const bh_target *target, bh_arena *arena, bh_struck_list *list);
 
 #endif

@@ -67,9 +67,13 @@ const char *bh_table_text(const bh_table *table, bool bins, size_t row, bh_colum
 /* Why a cell is empty; NULL when it is not. */
 const char *bh_table_reason(const bh_table *table, bool bins, size_t row, bh_column_id column);
 
-/* Which setting and which of its arms a row belongs to; its bin from 1, 0 for the whole arm. */
-void bh_table_place(const bh_table *table, bool bins, size_t row, size_t *setting, size_t *arm,
-                    int *bin);
+/* Where a row stands in the plan. */
+typedef struct {
+    size_t setting, arm; /* numbers from 0: of the setting, and of the arm among those of it */
+    int bin;             /* from 1; 0 for the whole arm */
+} bh_place;
+
+bh_place bh_table_place(const bh_table *table, bool bins, size_t row);
 
 /* The i-th sentence on what these numbers leave out (radiation, energy loss); NULL past the end. */
 const char *bh_table_note(const bh_table *table, size_t i);

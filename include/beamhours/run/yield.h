@@ -24,11 +24,11 @@ typedef struct {
 typedef struct {
     const bh_plan *plan;
     bh_workspace *workspace;
-    bh_remarks *remarks;          /* warnings go here; NULL: they are not wanted */
-    const bh_struck_list **lists; /* of each target of the plan */
-    bh_seen_numbers *seen;        /* room for the nuclides of any target */
-    bh_seen_layer *layers;        /* room for the layers of any target */
-    double *paths[3]; /* [1] likewise: as it stands, and seen by an arm moved both ways */
+    bh_remarks *remarks;   /* warnings go here; NULL: they are not wanted */
+    bh_struck_list *lists; /* of each target of the plan */
+    bh_seen_numbers *seen; /* room for the nuclides of any target */
+    bh_seen_layer *layers; /* room for the layers of any target */
+    double *paths[3];      /* [1] likewise: as it stands, and seen by an arm moved both ways */
 } bh_yielder;
 
 /* One arm of one setting. */
@@ -74,12 +74,18 @@ BH_CHECKED bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_e
 BH_CHECKED bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting,
                                 const bh_setting_arm *arm, bh_view *view, bh_error *err);
 
-/* The beam on nuclide number `nuclide` of `list`: its channels to this arm, at most 3, into
- * `channels`.  Sets `count`.  BH_ENOMEM. */
 enum { BH_MOST_CHANNELS = 3 };
+
+/* The ways from one nuclide to an arm: fast, slow, recoil, as far as they exist; at least one. */
+typedef struct {
+    size_t count;
+    bh_channel list[BH_MOST_CHANNELS];
+} bh_channels;
+
+/* The channels of the beam on `struck` to this arm.  BH_ENOMEM, or why there is no such structure.
+ */
 BH_CHECKED bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view,
-                                    const bh_struck *struck, bh_channel *channels, size_t *count,
-                                    bh_error *err);
+                                    const bh_struck *struck, bh_channels *channels, bh_error *err);
 
 /* Fills the parts of `yield`, whose view is made and whose `part` has room for view.parts. */
 BH_CHECKED bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err);
