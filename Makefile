@@ -30,8 +30,10 @@ bin   = $(patsubst %.c,$(BUILD)/%,$(1))
 run   = $(patsubst %,$(BUILD)/%.run,$(basename $(1)))
 quiet = $(if $(V),,@echo '  $@' &&)
 MAKEFLAGS += --no-print-directory
+.DELETE_ON_ERROR:
 
-all: $(addprefix $(BUILD)/,beamhours libbeamhours.a libbeamhours.so.0) ## build the program and the library
+COMPLETE := $(addprefix $(BUILD)/completions/,bash zsh fish)
+all: $(addprefix $(BUILD)/,beamhours libbeamhours.a libbeamhours.so.0) $(COMPLETE) ## build the program and the library
 everything: all $(call bin,$(TESTS) $(BENCH))            ## and the tests, without running them
 $(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(LIBS)
 $(BUILD)/libbeamhours.a $(BUILD)/libbeamhours.so.0: $(call obj,$(ENGINE)) $(FOLDERS)
@@ -42,6 +44,9 @@ $(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ;
 $(call bin,$(filter %_faults.c,$(TESTS))): LDFLAGS += $(patsubst %,-Xlinker --wrap=%,malloc calloc realloc write fsync fchmod close rename)
 $(call bin,$(FUZZ)): %: %.o $(BUILD)/libbeamhours.a ; $(LINK) -fsanitize=fuzzer $^ $(LIBS)
 $(BUILD)/%.o: %.c $(BUILD)/flags ; $(quiet) mkdir -p $(@D) && $(CC) $(ALL_C) -MMD -MP -c -o $@ $<
+$(COMPLETE): $(BUILD)/completions/%: include/beamhours/command/options.h src/complete.awk
+	$(quiet) mkdir -p $(@D) && printf '#include "beamhours/command/options.h"\n#define ROW(...) @@ __VA_ARGS__\nBH_COMMANDS(ROW)\nBH_OPTIONS(ROW)\n' | \
+	 $(CC) -E -P -Iinclude - | awk -v shell=$* -f src/complete.awk >$@
 FLAGS := $(CC) $(ALL_C) $(LDFLAGS) $(LIBS) $(TEST_LIBS)
 $(BUILD)/flags: $(if $(subst x$(FLAGS),,x$(file <$(BUILD)/flags)),changed) # other flags than last time: compile all again
 	@mkdir -p $(@D) && printf '%s\n' '$(subst ','\'',$(FLAGS))' >$@

@@ -1,0 +1,44 @@
+/* curve.h - a setting evaluated again and again while one quantity varies. */
+#ifndef BH_RUN_CURVE_H
+#define BH_RUN_CURVE_H
+
+#include "beamhours/run/table.h"
+
+typedef enum {
+    BH_AGAINST_ANGLE,  /* at the setting's energy */
+    BH_AGAINST_ENERGY, /* beam kinetic energy at the setting's angle */
+    BH_AGAINST_Q2,     /* at the setting's energy */
+    BH_AGAINST_EPSILON /* at the setting's Q2: energy and angle both move */
+} bh_against;
+
+typedef struct {
+    const char *setting; /* name; NULL: the first */
+    const char *arm;     /* name; NULL where the setting has one */
+    bh_against against;
+    const char *structure; /* instead of the plan's choice for all nuclides; NULL: the plan's */
+} bh_curve_request;
+
+typedef struct bh_curve bh_curve;
+
+/* Evaluates the curve on a grid over all that the arm and the kinematics allow: angles from the
+ * arm's angle_range (else 5 to 175 deg), energies from a quarter to four times the setting's,
+ * logarithmic. `plan` must outlive it.  NULL with what would do in err. */
+bh_curve *bh_curve_new(const bh_plan *plan, const bh_curve_request *request, bh_error *err);
+void bh_curve_free(bh_curve *curve);
+
+size_t bh_curve_count(const bh_curve *curve);
+
+/* Returns [1] what varies, at point i: degrees, MeV, GeV2 or a bare number. */
+double bh_curve_x(const bh_curve *curve, size_t i);
+
+/* Returns [1] the column at point i, in the unit of its key; NAN where it is empty. */
+double bh_curve_y(const bh_curve *curve, size_t i, bh_column_id column);
+
+/* Names of the plan's settings that stand at point i, or whose acceptance covers it where the angle
+ * varies; "" for none. */
+const char *bh_curve_marks(const bh_curve *curve, size_t i);
+
+/* The key and unit of what varies ("angle_deg"). */
+const char *bh_curve_key(bh_against against);
+
+#endif

@@ -1,0 +1,87 @@
+/* cmd_keys.c - beamhours keys [KEY]: what a plan can say, from the table that reads it. */
+#include <string.h>
+
+#include "beamhours/command/input.h"
+#include "beamhours/command/places.h"
+#include "beamhours/plan/key_list.h"
+#include "beamhours/report/text_table.h"
+
+enum { KEY = 30 };
+
+/* One line of the list: the key indented by depth, what it takes, what it is. */
+static void brief(const bh_plan_key *key, bh_text *out)
+{
+    char lead[96];
+    const char *last = strrchr(key->path, '.');
+    const int indent = 2 * key->depth;
+    (void)snprintf(lead, sizeof lead, "%*s%-*s %c ", indent, "", KEY - indent,
+                   last ? last + 1 : key->path, key->required ? 'r' : ' ');
+    bh_report_wrapped(lead, key->meaning, bh_places_width(), out);
+}
+
+static void field(const char *name, const char *text, bh_text *out)
+{
+    if (text && text[0])
+        bh_report_wrapped(name, text, bh_places_width(), out);
+}
+
+static void full(const bh_plan_key *key, bh_text *out)
+{
+    const char *last = strrchr(key->path, '.');
+    bh_text_appendf(out, "%s\n", key->path);
+    field("  meaning   ", key->meaning, out);
+    field("  takes     ", key->kind, out);
+    field("  units     ", key->units, out);
+    field("  required  ", key->required ? "yes" : "no", out);
+    field("  one of    ", key->group, out);
+    field("  default   ", key->preset, out);
+    if (key->example && key->example[0])
+        bh_text_appendf(out, "  example   %s: %s\n", last ? last + 1 : key->path, key->example);
+    if (!key->built)
+        field("  ", "read and checked, but no number depends on it yet", out);
+}
+
+static void inside(const char *path, bh_text *out)
+{
+    const size_t length = strlen(path);
+    bh_plan_key key;
+    bool any = false;
+    for (size_t i = 0; bh_plan_key_at(i, &key); i++) {
+        if (strncmp(key.path, path, length) != 0 || key.path[length] != '.')
+            continue;
+        if (!any)
+            bh_text_append(out, "\nkeys inside (r: required)\n");
+        any = true;
+        brief(&key, out);
+    }
+}
+
+static void all(bh_text *out)
+{
+    bh_plan_key key;
+    bh_text_append(out,
+                   "keys of a plan (r: required); `beamhours keys beam.current` says all of one\n");
+    for (size_t i = 0; bh_plan_key_at(i, &key); i++)
+        brief(&key, out);
+}
+
+int bh_cmd_keys(const bh_arguments *arguments)
+{
+    bh_text out = {0};
+    bh_plan_key key, near;
+    if (arguments->word_count > 1)
+        return bh_usage(arguments, "takes one key at most");
+    if (arguments->word_count == 0) {
+        all(&out);
+        return bh_output(&out, NULL);
+    }
+    if (!bh_plan_key_find(arguments->words[0], &key, &near)) {
+        char sentence[200];
+        (void)snprintf(sentence, sizeof sentence, "no key \"%.60s\"%s%s", arguments->words[0],
+                       near.path[0] ? "; did you mean " : "", near.path);
+        return bh_usage(arguments, sentence);
+    }
+    full(&key, &out);
+    inside(key.path, &out);
+    return bh_output(&out, NULL);
+}

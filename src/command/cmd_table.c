@@ -1,0 +1,111 @@
+/* cmd_table.c - beamhours table PLAN: the run table. */
+#include <string.h>
+
+#include "beamhours.h"
+#include "beamhours/command/complain.h"
+#include "beamhours/command/input.h"
+#include "beamhours/command/places.h"
+#include "beamhours/report/csv.h"
+#include "beamhours/report/json.h"
+#include "beamhours/report/text_table.h"
+
+static bh_selection_request request_of(const bh_arguments *arguments)
+{
+    return (bh_selection_request){
+        .bins = arguments->value[BH_OPT_BINS] != NULL,
+        .columns = arguments->value[BH_OPT_COLUMNS],
+        .sort = arguments->value[BH_OPT_SORT],
+        .only = arguments->value[BH_OPT_ONLY],
+    };
+}
+
+/* `before` is NULL unless rows are to be shown before and after a change. */
+static bh_code render(const char *format, const bh_selection *before, const bh_selection *view,
+                      bh_text *out)
+{
+    if (strcmp(format, "csv") == 0) {
+        if (before)
+            bh_report_csv_against(before, view, out);
+        else
+            bh_report_csv(view, out);
+        return BH_OK;
+    }
+    if (strcmp(format, "json") == 0)
+        return before ? bh_report_json_against(before, view, bh_version(), out)
+                      : bh_report_json(view, bh_version(), out);
+    if (before)
+        bh_report_text_against(before, view, bh_places_width(), out);
+    else
+        bh_report_text(view, bh_places_width(), out);
+    return BH_OK;
+}
+
+/* A comma-separated file has no room for cautions: they go where the warnings go. */
+static void say_aside(const bh_table *table, const char *format)
+{
+    bh_say_diags(stderr, bh_table_warnings(table));
+    for (size_t i = 0; strcmp(format, "csv") == 0 && i < bh_table_cautions(table); i++) {
+        const bh_caution *c = bh_table_caution(table, i);
+        fprintf(stderr, "%s:%d:%d: caution: %s: %s\n", c->at.file ? c->at.file : "-", c->at.line,
+                c->at.column, c->key, c->text);
+    }
+}
+
+static int show(const bh_arguments *arguments, const char *format, const bh_input *before,
+                const bh_input *after)
+{
+    const bh_selection_request request = request_of(arguments);
+    bh_selection old = {0}, view = {0};
+    bh_text out = {0};
+    bh_error err = {.code = BH_OK};
+    bh_code bad = bh_selection_new(after->table, &request, &view, &err);
+    if (!bad && before)
+        bad = bh_selection_new(before->table, &request, &old, &err);
+    if (!bad) {
+        bad = render(format, before ? &old : NULL, &view, &out);
+        err.code = bad;
+    }
+    int status = 0;
+    if (bad == BH_EDOMAIN)
+        status = bh_usage(arguments, err.text);
+    else if (bad)
+        status = bh_complain(stderr, &err);
+    if (status == 0) {
+        say_aside(after->table, format);
+        status = bh_output(&out, arguments->value[BH_OPT_OUTPUT]);
+    }
+    bh_text_free(&out);
+    bh_selection_free(&old);
+    bh_selection_free(&view);
+    return status;
+}
+
+int bh_cmd_table(const bh_arguments *arguments)
+{
+    const char *format = bh_arguments_format(arguments, BH_OPT_TABLE_FORMAT);
+    const bool bins = arguments->value[BH_OPT_BINS] != NULL;
+    const bool against = arguments->value[BH_OPT_BEFORE_AFTER] != NULL;
+    if (!format)
+        return bh_usage(arguments, "choose one of these");
+    if (arguments->word_count != 1)
+        return bh_usage(arguments, "needs one plan (or - for standard input)");
+    if (against && arguments->with_count == 0)
+        return bh_usage(arguments, "--against needs a change: --with KEY=VALUE");
+    bh_input after = {0}, before = {0};
+    int status = bh_input_table(arguments->words[0], arguments, bins, &after);
+    if (status == 0 && against) {
+        before.name = after.name;
+        before.library = after.library;
+        before.bytes = after.bytes; /* standard input can be read once only */
+        status = bh_input_plan(&before, NULL);
+        if (status == 0)
+            status = bh_input_evaluate(&before, bins);
+    }
+    if (status == 0)
+        status = show(arguments, format, against ? &before : NULL, &after);
+    before.library = NULL;
+    before.bytes = (bh_text){0};
+    bh_input_close(&before);
+    bh_input_close(&after);
+    return status;
+}

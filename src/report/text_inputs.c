@@ -1,0 +1,199 @@
+/* text_inputs.c - what stands above the table, so that a reader can redo the sum. */
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "beamhours/base/number.h"
+#include "beamhours/report/text_table.h"
+#include "beamhours/units/nuclide.h"
+#include "beamhours/units/quantity.h"
+
+enum { WORD = 96 };
+
+static const char *say(double value, double uncertainty, bh_dimension dimension, char out[WORD])
+{
+    const bh_quantity q = {value, uncertainty, uncertainty > 0.0, false};
+    if (bh_quantity_print(&q, dimension, out, WORD) <= 0)
+        out[0] = '\0';
+    return out;
+}
+
+static void add(bh_text *to, const char *key, const bh_value *v, bh_dimension dimension)
+{
+    char word[WORD];
+    bh_text_appendf(to, ", %s %s", key, say(v->value, v->uncertainty, dimension, word));
+}
+
+static void add_given(bh_text *to, const char *key, const bh_value *v, bh_dimension dimension)
+{
+    if (v->given)
+        add(to, key, v, dimension);
+}
+
+static void add_extent(bh_text *to, const char *key, const bh_extent *e, bh_dimension dimension)
+{
+    char from[WORD], until[WORD];
+    if (!e->given)
+        return;
+    if (fabs(e->from + e->to) <= 1e-12 * fabs(e->to))
+        bh_text_appendf(to, ", %s ±%s", key, say(e->to, 0.0, dimension, until));
+    else
+        bh_text_appendf(to, ", %s %s to %s", key, say(e->from, 0.0, dimension, from),
+                        say(e->to, 0.0, dimension, until));
+}
+
+/* --- the beam: what all rows share, and what varies as a range --- */
+
+/* What was computed from another key has digits that nobody wrote: seven are kept. */
+static double rounded(double value)
+{
+    char digits[BH_NUMBER_SIZE];
+    double out = value;
+    if (bh_number_digits(value, 7, digits, sizeof digits) == 0 ||
+        bh_number_parse(digits, NULL, &out))
+        return value;
+    return out;
+}
+
+typedef double (*beam_number)(const bh_beam *);
+
+static double energy_of(const bh_beam *b)
+{
+    return b->kinetic_energy.value;
+}
+
+static double current_of(const bh_beam *b)
+{
+    return b->current.value;
+}
+
+static double rate_of(const bh_beam *b)
+{
+    return b->particle_rate.value;
+}
+
+static void add_range(bh_text *to, const bh_plan *plan, beam_number get, bh_dimension dimension,
+                      const char *behind)
+{
+    double low = INFINITY, high = -INFINITY;
+    char from[WORD], until[WORD];
+    for (size_t i = 0; i < plan->setting_count; i++) {
+        const double value = rounded(get(&plan->settings[i].beam));
+        low = fmin(low, value);
+        high = fmax(high, value);
+    }
+    if (high > low)
+        bh_text_appendf(to, ", %s to %s%s", say(low, 0.0, dimension, from),
+                        say(high, 0.0, dimension, until), behind);
+    else
+        bh_text_appendf(to, ", %s%s", say(low, 0.0, dimension, from), behind);
+}
+
+static void beam_line(const bh_plan *plan, bh_text *to)
+{
+    const bh_beam *first = &plan->settings[0].beam;
+    bh_text_append(to, first->particle.name);
+    for (size_t i = 1; i < plan->setting_count; i++)
+        if (strcmp(plan->settings[i].beam.particle.name, first->particle.name) != 0) {
+            bh_text_appendf(to, " and %s", plan->settings[i].beam.particle.name);
+            break;
+        }
+    add_range(to, plan, energy_of, BH_DIM_ENERGY, " kinetic");
+    if (first->rate_written)
+        add_range(to, plan, rate_of, BH_DIM_RATE, " in all");
+    else
+        add_range(to, plan, current_of, BH_DIM_CURRENT, "");
+    if (first->fraction.value < 1.0)
+        add(to, "fraction", &first->fraction, BH_DIM_SHARE);
+    add_given(to, "duty_factor", &first->duty_factor, BH_DIM_SHARE);
+}
+
+/* --- targets and arms --- */
+
+static void layer(const bh_layer *l, const char *lead, bh_text *to)
+{
+    static const char *const roles[] = {"", " (window)", " (backing)"};
+    char word[WORD];
+    bh_text_appendf(to, "%s%s", lead, l->material->name);
+    const char *key = l->size_key.text ? l->size_key.text : "";
+    if (strcmp(key, "thickness") == 0)
+        bh_text_appendf(to, " %s",
+                        say(l->thickness.value, l->thickness.uncertainty, BH_DIM_LENGTH, word));
+    else if (strcmp(key, "areal_density") == 0)
+        bh_text_appendf(
+            to, " %s",
+            say(l->areal_density.value, l->areal_density.uncertainty, BH_DIM_AREAL_DENSITY, word));
+    else if (strcmp(key, "areal_number") == 0)
+        bh_text_appendf(
+            to, " %s",
+            say(l->areal_number.value, l->areal_number.uncertainty, BH_DIM_AREAL_NUMBER, word));
+    if (l->density.given)
+        bh_text_appendf(to, " at %s", say(l->density.value, 0.0, BH_DIM_DENSITY, word));
+    bh_text_append(to, roles[l->role]);
+}
+
+static void target_line(const bh_target *t, bh_text *to)
+{
+    char name[8], word[WORD];
+    if (t->name.text)
+        bh_text_appendf(to, "%s: ", t->name.text);
+    for (size_t i = 0; i < t->layer_count; i++)
+        layer(&t->layers[i], i ? ", " : "", to);
+    bh_text_appendf(to, "; scatterer %s", bh_nuclide_name(t->scatterer_z, t->scatterer_a, name));
+    add_given(to, "tilt", &t->tilt, BH_DIM_ANGLE);
+    if (t->empty == BH_EMPTY_BEST)
+        bh_text_append(to, ", empty target: best share");
+    if (t->empty == BH_EMPTY_SHARE)
+        bh_text_appendf(to, ", empty target: %s of the full-target time",
+                        say(t->empty_share.value, 0.0, BH_DIM_SHARE, word));
+}
+
+static void arm_line(const bh_arm *a, bh_text *to)
+{
+    static const char *const sides[] = {"right", "left"};
+    static const char *const detected[] = {"scattered", "recoil", "either"};
+    bh_text_appendf(to, "%s: %s, detects %s", a->name.text ? a->name.text : "", sides[a->side],
+                    detected[a->detects]);
+    add_given(to, "angle", &a->angle, BH_DIM_ANGLE);
+    add_extent(to, "in_plane", &a->in_plane, BH_DIM_ANGLE);
+    add_extent(to, "out_of_plane", &a->out_of_plane, BH_DIM_ANGLE);
+    add_extent(to, "ring", &a->ring, BH_DIM_ANGLE);
+    if (a->shape == BH_SHAPE_RING)
+        add(to, "azimuth", &a->azimuth, BH_DIM_ANGLE);
+    add_given(to, "solid_angle", &a->solid_angle, BH_DIM_SOLID_ANGLE);
+    add_extent(to, "momentum_bite", &a->momentum_bite, BH_DIM_SHARE);
+    add_extent(to, "target_view", &a->target_view, BH_DIM_LENGTH);
+    add(to, "efficiency", &a->efficiency, BH_DIM_SHARE);
+    add(to, "dead_time", &a->dead_time, BH_DIM_TIME);
+    add_given(to, "rate_limit", &a->rate_limit, BH_DIM_RATE);
+    add_given(to, "other_rate", &a->other_rate, BH_DIM_RATE);
+    if (a->prescale > 1)
+        bh_text_appendf(to, ", prescale %d", a->prescale);
+}
+
+static void wrapped(const char *lead, bh_text *from, int width, bh_text *out)
+{
+    if (from->bytes)
+        bh_report_wrapped(lead, from->bytes, width, out);
+    out->failed |= from->failed;
+    bh_text_free(from);
+}
+
+void bh_report_text_inputs(const bh_selection *view, int width, bh_text *out)
+{
+    const bh_plan *plan = bh_table_plan(view->table);
+    bh_text piece = {0};
+    if (plan->title.text)
+        bh_report_wrapped("", plan->title.text, width, out);
+    beam_line(plan, &piece);
+    wrapped("beam    ", &piece, width, out);
+    for (size_t i = 0; i < plan->target_count; i++) {
+        target_line(&plan->targets[i], &piece);
+        wrapped("target  ", &piece, width, out);
+    }
+    for (size_t i = 0; i < plan->arm_count; i++) {
+        arm_line(&plan->arms[i], &piece);
+        wrapped("arm     ", &piece, width, out);
+    }
+    bh_text_append(out, "\n");
+}

@@ -1,0 +1,315 @@
+/* curve.c - a plan of as many settings as there are points, evaluated in one go. */
+#include "beamhours/run/curve.h"
+
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "beamhours/base/text.h"
+#include "beamhours/physics/kinematics.h"
+#include "beamhours/run/event_search.h"
+#include "beamhours/units/constants.h"
+#include "beamhours/units/nuclide.h"
+
+enum { POINTS = 61 };
+
+struct bh_curve {
+    size_t count;
+    double x[POINTS];
+    char *marks[POINTS];
+    bh_setting settings[POINTS];
+    bh_setting_arm arms[POINTS];
+    bh_plan plan;
+    bh_table *table;
+};
+
+/* What the points start from. */
+struct origin {
+    const bh_setting *setting;
+    const bh_setting_arm *arm;
+    bh_collision collision;
+    double q2;   /* [MeV^2] at the arm's angle; NAN where there is none */
+    bool recoil; /* the arm detects the recoil */
+    bh_against against;
+};
+
+const char *bh_curve_key(bh_against against)
+{
+    static const char *const keys[] = {"angle_deg", "beam_kinetic_MeV", "q2_GeV2", "epsilon"};
+    return keys[against];
+}
+
+/* --- where it starts --- */
+
+static const bh_setting *find_setting(const bh_plan *plan, const char *name, bh_error *err)
+{
+    for (size_t i = 0; i < plan->setting_count; i++)
+        if (!name || strcmp(plan->settings[i].name, name) == 0)
+            return &plan->settings[i];
+    (void)bh_fail(err, BH_EDOMAIN, "no setting \"%s\"; the first is %s", name,
+                  plan->settings[0].name);
+    return NULL;
+}
+
+static const bh_setting_arm *find_arm(const bh_setting *s, const char *name, bh_error *err)
+{
+    for (size_t i = 0; i < s->arm_count; i++)
+        if (!name || (s->arms[i].arm.name.text && strcmp(s->arms[i].arm.name.text, name) == 0))
+            return &s->arms[i];
+    (void)bh_fail(err, BH_EDOMAIN, "setting %s has no arm \"%s\"; there is %s", s->name,
+                  name ? name : "", s->arm_count ? s->arms[0].arm.name.text : "none");
+    return NULL;
+}
+
+/* The struck nuclide: the named isotope, else the most abundant one of the element. */
+static const bh_nuclide *struck(const bh_target *t)
+{
+    if (t->scatterer_a)
+        return bh_nuclide_find(t->scatterer_z, t->scatterer_a);
+    size_t count = 0;
+    const bh_nuclide *all = bh_element_isotopes(t->scatterer_z, &count), *most = all;
+    for (size_t i = 1; i < count; i++)
+        if (all[i].abundance > most->abundance)
+            most = &all[i];
+    return most;
+}
+
+static bh_code start(const bh_plan *plan, const bh_curve_request *r, struct origin *o,
+                     bh_error *err)
+{
+    o->setting = find_setting(plan, r->setting, err);
+    o->arm = o->setting ? find_arm(o->setting, r->arm, err) : NULL;
+    if (!o->arm)
+        return BH_EDOMAIN;
+    const bh_nuclide *nuclide = struck(o->setting->target);
+    if (!nuclide)
+        return bh_fail(err, BH_EDOMAIN,
+                       "the scatterer of this setting has no isotope to compute with");
+    o->against = r->against;
+    o->recoil = o->arm->arm.detects == BH_DETECTS_RECOIL;
+    o->collision = (bh_collision){o->setting->beam.particle.mass, nuclide->mass,
+                                  o->setting->beam.kinetic_energy.value};
+    if (o->arm->arm.shape == BH_SHAPE_RING && r->against != BH_AGAINST_ENERGY)
+        return bh_fail(err, BH_EDOMAIN, "a ring stands still: only --against energy varies it");
+    bh_event e;
+    const bh_known at = {o->collision.kinetic, o->arm->angle.value, NAN, NAN, o->recoil};
+    double kinetic = 0.0;
+    o->q2 = bh_event_search(&o->collision, &at, &kinetic, &e, NULL) ? (double)NAN : e.q2;
+    if (r->against == BH_AGAINST_EPSILON && isnan(o->q2))
+        return bh_fail(err, BH_EDOMAIN, "this setting has no Q2 to keep while epsilon varies");
+    return BH_OK;
+}
+
+/* --- one point --- */
+
+/* Widest reach of the acceptance towards the beam [rad]: an arm does not look into the beam. */
+static double inner_reach(const bh_arm *arm)
+{
+    if (arm->shape == BH_SHAPE_RECTANGLE)
+        return fmax(fabs(arm->in_plane.from), fabs(arm->in_plane.to));
+    return 0.0;
+}
+
+static void angle_limits(const struct origin *o, double *lo, double *hi)
+{
+    const bh_arm *arm = &o->arm->arm;
+    const double reach = inner_reach(arm) + 1e-3;
+    const double most = o->recoil ? BH_PI / 2.0 : bh_kinematics_largest_angle(&o->collision);
+    *lo = arm->angle_range.given ? arm->angle_range.from : 5.0 * BH_DEGREE;
+    *hi = arm->angle_range.given ? arm->angle_range.to : 175.0 * BH_DEGREE;
+    *lo = fmax(*lo, reach);
+    *hi = fmin(*hi, fmin(most, BH_PI) - (most < BH_PI ? reach : 0.0));
+}
+
+static void limits(const struct origin *o, double *lo, double *hi)
+{
+    double a = 0.0, b = 0.0;
+    switch (o->against) {
+    case BH_AGAINST_ANGLE:
+        angle_limits(o, lo, hi);
+        return;
+    case BH_AGAINST_ENERGY:
+        *lo = log(o->collision.kinetic / 4.0);
+        *hi = log(o->collision.kinetic * 4.0);
+        return;
+    case BH_AGAINST_Q2:
+        angle_limits(o, &a, &b);
+        *hi = bh_kinematics_largest_q2(&o->collision) * 0.999;
+        *lo = *hi / 1000.0;
+        return;
+    case BH_AGAINST_EPSILON:
+        *lo = 0.02;
+        *hi = 0.98;
+        return;
+    }
+}
+
+/* What is known at x; the beam's angle or energy follows. */
+static bh_known known_at(const struct origin *o, double x)
+{
+    bh_known k = {NAN, NAN, NAN, NAN, o->recoil};
+    if (o->against == BH_AGAINST_ANGLE || o->against == BH_AGAINST_Q2)
+        k.kinetic = o->collision.kinetic;
+    if (o->against == BH_AGAINST_ANGLE)
+        k.angle = x;
+    if (o->against == BH_AGAINST_Q2)
+        k.q2 = x;
+    if (o->against == BH_AGAINST_EPSILON) {
+        k.q2 = o->q2;
+        k.epsilon = x;
+    }
+    return k;
+}
+
+static double shown(bh_against against, double x)
+{
+    return against == BH_AGAINST_ANGLE ? x / BH_DEGREE : against == BH_AGAINST_Q2 ? x * 1e-6 : x;
+}
+
+static void set_energy(bh_setting *s, double kinetic)
+{
+    s->beam.kinetic_energy.value = kinetic;
+    s->beam.kinetic_energy.uncertainty = 0.0;
+}
+
+/* Adds the point at x where there is an event and the arm can stand there. */
+static void add_point(bh_curve *c, const struct origin *o, double x)
+{
+    bh_setting s = *o->setting;
+    bh_setting_arm a = *o->arm;
+    if (o->against == BH_AGAINST_ENERGY) {
+        x = exp(x);
+        bh_collision in = o->collision;
+        in.kinetic = x;
+        if (!o->recoil && a.arm.shape != BH_SHAPE_RING &&
+            a.angle.value > bh_kinematics_largest_angle(&in))
+            return;
+        set_energy(&s, x);
+    } else {
+        const bh_known known = known_at(o, x);
+        bh_event e;
+        double kinetic = 0.0, lo = 0.0, hi = 0.0;
+        if (bh_event_search(&o->collision, &known, &kinetic, &e, NULL))
+            return;
+        set_energy(&s, kinetic);
+        a.angle.value = o->recoil ? e.recoil_angle : e.scattered_angle;
+        angle_limits(o, &lo, &hi);
+        if (a.angle.value < lo || a.angle.value > hi)
+            return;
+    }
+    c->x[c->count] = shown(o->against, x);
+    c->settings[c->count] = s;
+    c->arms[c->count] = a;
+    c->settings[c->count].arms = &c->arms[c->count];
+    c->settings[c->count].arm_count = 1;
+    c->count++;
+}
+
+/* --- marks --- */
+
+/* Whether setting `i` of the plan stands nearest to point `at`, or its acceptance covers it. */
+static bool stands_at(const bh_curve *c, const struct origin *o, const bh_setting *s, size_t at)
+{
+    for (size_t k = 0; k < s->arm_count; k++) {
+        const bh_setting_arm *a = &s->arms[k];
+        if (strcmp(a->arm.name.text, o->arm->arm.name.text) != 0)
+            continue;
+        if (o->against == BH_AGAINST_ANGLE) {
+            const double off = c->x[at] * BH_DEGREE - a->angle.value;
+            const double step = (c->x[1] - c->x[0]) * BH_DEGREE / 2.0;
+            return off >= fmin(a->arm.in_plane.from, -step) &&
+                   off <= fmax(a->arm.in_plane.to, step);
+        }
+        if (o->against == BH_AGAINST_ENERGY) {
+            const double off = log(s->beam.kinetic_energy.value / c->x[at]);
+            return fabs(off) <= log(c->x[1] / c->x[0]) / 2.0;
+        }
+    }
+    return false;
+}
+
+static bool mark(bh_curve *c, const bh_plan *plan, const struct origin *o)
+{
+    for (size_t i = 0; i < c->count; i++) {
+        bh_text names = {0};
+        for (size_t s = 0; c->count > 1 && s < plan->setting_count; s++)
+            if (stands_at(c, o, &plan->settings[s], i))
+                bh_text_appendf(&names, "%s%s", names.length ? " " : "", plan->settings[s].name);
+        bh_text_append(&names, "");
+        c->marks[i] = bh_text_take(&names);
+        if (!c->marks[i])
+            return false;
+    }
+    return true;
+}
+
+/* --- all of it --- */
+
+static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request *r,
+                        const struct origin *o, bh_error *err)
+{
+    double lo = 0.0, hi = 0.0;
+    limits(o, &lo, &hi);
+    for (int i = 0; i < POINTS && hi > lo; i++)
+        add_point(c, o, lo + (hi - lo) * i / (POINTS - 1));
+    if (c->count == 0)
+        return bh_fail(err, BH_EDOMAIN, "this arm can stand at no point of the curve");
+    c->plan = *plan;
+    c->plan.settings = c->settings;
+    c->plan.setting_count = c->count;
+    if (r->structure) {
+        c->plan.models.structure.text = r->structure;
+        c->plan.models.choice_count = 0;
+    }
+    const bh_evaluation how = {.bins = false};
+    c->table = bh_table_new(&c->plan, &how, NULL, err);
+    if (!c->table)
+        return err ? err->code : BH_ENOMEM;
+    return mark(c, plan, o) ? BH_OK : bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+}
+
+bh_curve *bh_curve_new(const bh_plan *plan, const bh_curve_request *request, bh_error *err)
+{
+    struct origin o = {0};
+    if (start(plan, request, &o, err))
+        return NULL;
+    bh_curve *c = calloc(1, sizeof *c);
+    if (!c) {
+        (void)bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+        return NULL;
+    }
+    if (evaluate(c, plan, request, &o, err) == BH_OK)
+        return c;
+    bh_curve_free(c);
+    return NULL;
+}
+
+void bh_curve_free(bh_curve *curve)
+{
+    if (!curve)
+        return;
+    bh_table_free(curve->table);
+    for (size_t i = 0; i < curve->count; i++)
+        free(curve->marks[i]);
+    free(curve);
+}
+
+size_t bh_curve_count(const bh_curve *curve)
+{
+    return curve->count;
+}
+
+double bh_curve_x(const bh_curve *curve, size_t i)
+{
+    return curve->x[i];
+}
+
+double bh_curve_y(const bh_curve *curve, size_t i, bh_column_id column)
+{
+    return bh_table_number(curve->table, false, i, column);
+}
+
+const char *bh_curve_marks(const bh_curve *curve, size_t i)
+{
+    return curve->marks[i];
+}
