@@ -184,6 +184,16 @@
 #define BH_WARN_EFFECT_JOIN \
     "these parameters do not meet at x0, which needs a = %s; look at the signs again"
 
+/* matter: passage of particles */
+#define BH_SAY_STOPPING_VACUUM  "vacuum slows nothing; name a material"
+#define BH_SAY_STOPPING_DENSITY "the density of %s is not known; give one"
+#define BH_SAY_STOPPING_ELEMENT \
+    "energy loss in the element with Z = %d is not computed; elements up to Z = %d would do"
+#define BH_SAY_STOPPING_ELEMENTS "more than %d elements in one material; fewer would do"
+#define BH_SAY_STOPPING_NEUTRAL  "%s has no charge and is not slowed; name a charged particle"
+#define BH_SAY_STOPPING_ENERGY \
+    "%g MeV for the energy of %s; more than 1 keV and at most 10 TeV would do"
+
 /* plan: sense */
 #define BH_SAY_VERSION      "version %s of the format is not known; this program reads plan: 1"
 #define BH_SAY_CHARGE_OF    "%s cannot be the charge of %s; from 1 to %d would do"

@@ -1,0 +1,69 @@
+/* stopping.h - mean energy that a charged particle loses on its way through a material. */
+#ifndef BH_MATTER_STOPPING_H
+#define BH_MATTER_STOPPING_H
+
+#include <stddef.h>
+
+#include "beamhours/base/error.h"
+#include "beamhours/matter/medium.h"
+
+/*
+ * A particle in a material, made ready.  Read-only once made: any number of threads may ask it.
+ *
+ * Collision loss
+ *   electrons, positrons: Berger and Seltzer (Moeller, Bhabha; ICRU Report 37, 1984), 1 keV up.
+ *     Against ESTAR within 0.15 % from 1 MeV in elements, 0.5 % in compounds; below 10 keV
+ *     increasingly too large.
+ *   others, above 8 MeV per nucleon mass: Bethe with density effect, shell correction of each
+ *     element (Barkas and Berger, NASA SP-3013, 1964), Barkas (Lindhard, Nucl. Instr. Meth. 132
+ *     (1976) 1, leading logarithm) and Bloch terms; for spin 1/2 the magnetic term, for muons that
+ *     of radiating atomic electrons (Groom, Mokhov and Striganov, At. Data Nucl. Data Tables 78
+ *     (2001) 183).  Up to 100 MeV it is brought onto the published tables by their ratio to the
+ *     same formula for protons, for elements without a table that of their neighbours in Z.
+ *     Elements with a table: 0.3 % of it; 0.5 % above.  Elements without: 1 % above 10 MeV, 2 %
+ *     above 1 MeV, 5 to 10 % below.
+ *   others, below: ICRU Report 49 (1993) interpolated in log-log at equal velocity, for charge 2
+ *     the table of alphas up to 2.5 MeV per nucleon; compounds without a table by additivity (1 to
+ *     4 % near the maximum).  Below the tables as the velocity.  Antiparticles differ by the Barkas
+ *     term: 3 % below 2 MeV per nucleon mass.  Ions from Z = 3 with the effective charge of
+ *     Barkas (1963): 10 % below 10 MeV per nucleon, 30 % below 0.5; 1 % above 100 for Z < 10.
+ * Nuclear stopping is left out: below 0.1 % above 1 MeV per nucleon, 1 % at 10 keV.
+ *
+ * Radiative loss
+ *   electrons: Seltzer and Berger's table, interpolated in Z and energy, 0.1 MeV to 1 GeV; above,
+ *     its approach to complete screening (Tsai 1974).  1 % of the table.  Positrons by the ratio of
+ *     Kim, Pratt, Seltzer and Berger, Phys. Rev. A 33 (1986) 3002.
+ *   muons: bremsstrahlung, pairs and nuclear interaction: see muon_loss.h.
+ *   others: 0 (less than 0.1 % of the collision loss below 1 TeV).
+ */
+typedef struct bh_stopping bh_stopping;
+
+typedef struct {
+    double collision; /* [MeV cm2/g] */
+    double radiative; /* [MeV cm2/g] */
+} bh_loss;
+
+/*
+ * Makes `particle` in `material` at `density` [g/cm3] (0: the nominal one) ready; *out is the
+ * caller's.  BH_EDOMAIN as bh_medium_of, or for a particle without charge; BH_ENOMEM.
+ */
+BH_CHECKED bh_code bh_stopping_new(const bh_particle *particle, const bh_material *material,
+                                   double density, bh_stopping **out, bh_error *err);
+
+/* NULL may be freed. */
+void bh_stopping_free(bh_stopping *stopping);
+
+/* At `kinetic` [MeV] of the whole particle; NaN in both unless it is positive.  Meant for 1 keV to
+ * 1 TeV; continuous. */
+bh_loss bh_stopping_at(const bh_stopping *stopping, double kinetic);
+
+const bh_particle *bh_stopping_particle(const bh_stopping *stopping);
+const bh_medium *bh_stopping_medium(const bh_stopping *stopping);
+
+enum { BH_STOPPING_BREAKS = 8 };
+
+/* Fills `kinetic` [MeV], rising, with the energies where the slope of the loss jumps, and returns
+ * how many there are: tables built on it keep their accuracy by having them as knots. */
+size_t bh_stopping_breaks(const bh_stopping *stopping, double kinetic[BH_STOPPING_BREAKS]);
+
+#endif
