@@ -34,13 +34,6 @@ bh_code bh_evaluator_prepare(bh_evaluator *evaluator, const bh_plan *plan, bh_ar
     return bh_yielder_prepare(&evaluator->yielder, arena, err);
 }
 
-static bh_code cancelled(const bh_evaluator *evaluator, bh_error *err)
-{
-    if (!evaluator->cancelled || !evaluator->cancelled(evaluator->asker))
-        return BH_OK;
-    return bh_fail(err, BH_ENOCONV, "the evaluation was cancelled");
-}
-
 /* Yields and recorded rates of all arms of a setting. */
 static bh_code measure(bh_evaluator *evaluator, const bh_setting *setting, bool bins, bh_error *err)
 {
@@ -59,8 +52,6 @@ static bh_code measure(bh_evaluator *evaluator, const bh_setting *setting, bool 
             code = bh_yield_make(&evaluator->yielder, yield, err);
         if (!code)
             code = bh_hours_record(hours, &setting->beam, err);
-        if (!code)
-            code = cancelled(evaluator, err);
         used += (size_t)yield->view.parts;
     }
     return code;

@@ -140,10 +140,10 @@ static bh_code fill(bh_table *table, const bh_evaluation *how, const bh_diags *s
 {
     bh_workspace *own = how->workspace ? NULL : bh_workspace_new();
     bh_remarks *remarks = bh_remarks_new();
-    bh_evaluator evaluator = {
-        .yielder = {.workspace = how->workspace ? how->workspace : own, .remarks = remarks},
-        .cancelled = how->cancelled,
-        .asker = how->asker};
+    bh_evaluator evaluator = {.yielder = {.workspace = how->workspace ? how->workspace : own,
+                                          .remarks = remarks,
+                                          .cancelled = how->cancelled,
+                                          .asker = how->asker}};
     bh_code code = BH_OK;
     if (!evaluator.yielder.workspace || !remarks || !make_rows(table, how->bins))
         code = out_of_memory(err);

@@ -82,7 +82,7 @@ static bh_code set_momentum(bh_yielder *yielder, bh_view *view, bh_error *err)
 {
     const bh_arm *arm = &view->arm->arm;
     const bh_struck *struck = &view->list->nuclides[view->list->main];
-    bh_channels channels;
+    bh_channels channels = {.count = 0};
     const bh_code code = bh_view_channels(yielder, view, struck, &channels, err);
     if (code)
         return code;

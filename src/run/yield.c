@@ -115,6 +115,8 @@ static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, const bh_struck
                            bh_seen_numbers *seen, bh_error *err)
 {
     bh_channels channels;
+    if (yielder->cancelled && yielder->cancelled(yielder->asker))
+        return bh_fail(err, BH_ENOCONV, "the evaluation was cancelled");
     bh_code code = bh_view_channels(yielder, &yield->view, struck, &channels, err);
     for (size_t c = 0; !code && c < channels.count; c++) {
         bh_channel_request request = bh_view_request(&yield->view, &channels.list[c]);

@@ -14,8 +14,6 @@ typedef struct {
     bh_recorded *recorded;
     bh_yield *yields; /* room for the arms of any setting */
     bh_arm_hours *arms;
-    bool (*cancelled)(void *asker); /* polled for each arm; NULL: never */
-    void *asker;
 } bh_evaluator;
 
 /* Makes room, in `arena`, for evaluating `plan`.  The workspace and the list of remarks are the

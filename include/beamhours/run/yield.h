@@ -24,6 +24,8 @@ typedef struct {
 typedef struct {
     const bh_plan *plan;
     bh_workspace *workspace;
+    bool (*cancelled)(void *asker); /* polled for each nuclide of each arm; NULL: never */
+    void *asker;
     bh_remarks *remarks;   /* warnings go here; NULL: they are not wanted */
     bh_struck_list *lists; /* of each target of the plan */
     bh_seen_numbers *seen; /* room for the nuclides of any target */
