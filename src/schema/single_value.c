@@ -1,4 +1,4 @@
-/* single.c - one value: quantities with their bounds, bare numbers, whole numbers. */
+/* single_value.c - one value: quantities with their bounds, bare numbers, whole numbers. */
 #include <ctype.h>
 #include <math.h>
 #include <stdio.h>

@@ -1,4 +1,4 @@
-/* cells.c - the cells of a row, in the units of their columns. */
+/* fill.c - the cells of a row, in the units of their columns. */
 #include <math.h>
 
 #include "beamhours/run/evaluate.h"
