@@ -9,7 +9,7 @@
 #include "beamhours/command/input.h"
 #include "beamhours/command/places.h"
 #include "beamhours/physics/coulomb.h"
-#include "beamhours/run/single.h"
+#include "beamhours/run/one_point.h"
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 #include "beamhours/units/quantity.h"

@@ -9,9 +9,10 @@
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
-#define SLOW_FIT   0.5  /* MeV, where the fit to slow protons ends */
-#define SPLINE_TOP 20.0 /* MeV, last knot of the proton spline: beyond the join, so smooth there \
-                         */
+#define SLOW_FIT 0.5 /* MeV, where the fit to slow protons ends */
+#define SPLINE_TOP                                                                \
+    20.0 /* MeV, last knot of the proton spline: beyond the join, so smooth there \
+          */
 
 /* A printed table seen as one: `values` row by row. */
 typedef struct {

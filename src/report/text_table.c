@@ -5,7 +5,7 @@
 #include <stdlib.h>
 #include <string.h>
 
-#include "beamhours/report/cells.h"
+#include "beamhours/report/prefix.h"
 
 enum { NARROWEST = 80, BASE = 15 };
 
@@ -48,11 +48,11 @@ static int column_width(const bh_selection *view, const bh_selection *other,
     int width =
         at_least(cells_wide(bh_column_at(column->column)->heading), cells_wide(column->unit));
     for (size_t i = 0; i < view->row_count; i++) {
-        bh_cells_print(view, i, column, text);
+        bh_prefix_print(view, i, column, text);
         width = at_least(width, cells_wide(text));
     }
     for (size_t i = 0; other && i < other->row_count; i++) {
-        bh_cells_print(other, i, column, text);
+        bh_prefix_print(other, i, column, text);
         width = at_least(width, cells_wide(text));
     }
     return width;
@@ -68,7 +68,7 @@ static int total_width(const struct layout *l)
 
 static void add(struct layout *l, const bh_selection *view, const bh_selection *other, int column)
 {
-    l->shown[l->count] = bh_cells_scale(view, other, column);
+    l->shown[l->count] = bh_prefix_scale(view, other, column);
     l->width[l->count] = column_width(view, other, &l->shown[l->count]);
     l->count++;
 }
@@ -79,7 +79,7 @@ static bool said_above(const bh_selection *view, int column)
     return column == BH_COL_BIN ? !view->bins
                                 : (column == BH_COL_ARM || column == BH_COL_PARTICLE ||
                                    column == BH_COL_TARGET || column == BH_COL_BEAM_KINETIC) &&
-                                      bh_cells_constant(view, column);
+                                      bh_prefix_constant(view, column);
 }
 
 static void choose(struct layout *l, const bh_selection *view, const bh_selection *other, int width)
@@ -119,7 +119,7 @@ static void line(const struct layout *l, const bh_selection *view, size_t row, b
 {
     char text[BH_CELL_SIZE];
     for (size_t i = 0; i < l->count; i++) {
-        bh_cells_print(view, row, &l->shown[i], text);
+        bh_prefix_print(view, row, &l->shown[i], text);
         bh_text_append(out, i ? " " : "");
         put(text, l->width[i], is_name(l->shown[i].column), i + 1 == l->count, out);
     }

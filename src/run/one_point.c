@@ -1,5 +1,5 @@
-/* single.c - any two of energy, angle, q2 and epsilon fix an elastic event; the rest follows. */
-#include "beamhours/run/single.h"
+/* one_point.c - any two of energy, angle, q2 and epsilon fix an elastic event; the rest follows. */
+#include "beamhours/run/one_point.h"
 
 #include <math.h>
 #include <stdio.h>

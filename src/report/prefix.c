@@ -1,6 +1,6 @@
-/* cells.c - the prefix follows the largest value of the column, so that a column can be compared.
+/* prefix.c - the prefix follows the largest value of the column, so that a column can be compared.
  */
-#include "beamhours/report/cells.h"
+#include "beamhours/report/prefix.h"
 
 #include <math.h>
 #include <stdio.h>
@@ -42,7 +42,7 @@ static double largest(const bh_selection *view, int column)
     return most;
 }
 
-bh_shown_column bh_cells_scale(const bh_selection *view, const bh_selection *other, int column)
+bh_shown_column bh_prefix_scale(const bh_selection *view, const bh_selection *other, int column)
 {
     const bh_column *row = bh_column_at(column);
     for (size_t f = 0; f < sizeof families / sizeof families[0]; f++) {
@@ -59,7 +59,7 @@ bh_shown_column bh_cells_scale(const bh_selection *view, const bh_selection *oth
     return (bh_shown_column){column, 1.0, row->unit};
 }
 
-void bh_cells_print(const bh_selection *view, size_t i, const bh_shown_column *column, char *out)
+void bh_prefix_print(const bh_selection *view, size_t i, const bh_shown_column *column, char *out)
 {
     const bh_column *row = bh_column_at(column->column);
     const char *text = bh_selection_text(view, i, column->column);
@@ -74,7 +74,7 @@ void bh_cells_print(const bh_selection *view, size_t i, const bh_shown_column *c
         (void)bh_number_digits(value * column->scale, row->digits, out, BH_CELL_SIZE);
 }
 
-bool bh_cells_constant(const bh_selection *view, int column)
+bool bh_prefix_constant(const bh_selection *view, int column)
 {
     for (size_t i = 1; i < view->row_count; i++) {
         const char *first = bh_selection_text(view, 0, column),

@@ -1,6 +1,6 @@
-/* cells.h - a column of a view as text people read: one unit prefix a column, few digits. */
-#ifndef BH_REPORT_CELLS_H
-#define BH_REPORT_CELLS_H
+/* prefix.h - a column of a view as text people read: one unit prefix a column, few digits. */
+#ifndef BH_REPORT_PREFIX_H
+#define BH_REPORT_PREFIX_H
 
 #include "beamhours/report/selection.h"
 
@@ -14,12 +14,12 @@ typedef struct {
 
 /* Chooses unit and scale so that the column's largest value reads well; over all rows of `view`
  * and, where it is not NULL, of `other` too. */
-bh_shown_column bh_cells_scale(const bh_selection *view, const bh_selection *other, int column);
+bh_shown_column bh_prefix_scale(const bh_selection *view, const bh_selection *other, int column);
 
 /* Writes the cell of the view's i-th row into `out` (BH_CELL_SIZE bytes); "-" when it is empty. */
-void bh_cells_print(const bh_selection *view, size_t i, const bh_shown_column *column, char *out);
+void bh_prefix_print(const bh_selection *view, size_t i, const bh_shown_column *column, char *out);
 
 /* Whether all rows say the same in `column`. */
-bool bh_cells_constant(const bh_selection *view, int column);
+bool bh_prefix_constant(const bh_selection *view, int column);
 
 #endif

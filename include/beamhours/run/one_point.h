@@ -1,6 +1,6 @@
-/* single.h - one point without a plan: kinematics, cross sections, and a rate when asked. */
-#ifndef BH_RUN_SINGLE_H
-#define BH_RUN_SINGLE_H
+/* one_point.h - one point without a plan: kinematics, cross sections, and a rate when asked. */
+#ifndef BH_RUN_ONE_POINT_H
+#define BH_RUN_ONE_POINT_H
 
 #include <stdbool.h>
 #include <stddef.h>
