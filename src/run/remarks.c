@@ -83,6 +83,28 @@ static bool grow(bh_remarks *remarks)
     return true;
 }
 
+/* The dotted path of the key meant, with the name of what it belongs to. */
+static void set_key(char to[TEXT], const bh_remark *r)
+{
+    switch (r->kind) {
+    case BH_REMARK_LIMIT:
+        snprintf(to, TEXT, "arms.%s.%s", or_empty(r->who), r->key);
+        break;
+    case BH_REMARK_NO_EMPTY:
+        snprintf(to, TEXT, "targets.%s.%s", or_empty(r->who), r->key);
+        break;
+    case BH_REMARK_BIN_TOO_SLOW:
+        snprintf(to, TEXT, "settings.%s.%s", or_empty(r->setting), r->key);
+        break;
+    case BH_REMARK_NOT_CONVERGED:
+    case BH_REMARK_NO_SIGNAL:
+        snprintf(to, TEXT, "%s.%s", r->key, or_empty(r->setting));
+        break;
+    default:
+        copy(to, r->key);
+    }
+}
+
 void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark)
 {
     for (size_t i = remarks->count; i-- > 0;) /* the newest is the likeliest */
@@ -96,7 +118,7 @@ void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark)
     }
     struct kept *k = &remarks->list[remarks->count++];
     *k = (struct kept){.remark = *remark, .settings = 1};
-    copy(k->key, remark->key);
+    set_key(k->key, remark);
     copy(k->who, remark->who);
     copy(k->what, remark->what);
     copy(k->setting, remark->setting);

@@ -1,6 +1,8 @@
 /* test_remarks.c - every warning of an evaluation, provoked, said once, at its line. */
 #include "evaluated.h"
 
+#include "beamhours/run/remarks.h"
+
 #define BEAM "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 10 uA}\n"
 #define HYDROGEN \
     "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 5 cm}]}\n"
@@ -94,11 +96,72 @@ START_TEST(warnings_of_the_reader_come_along)
 }
 END_TEST
 
+/* Straight to the list: kinds that a plan seldom gives, numbers joined, keys as paths. */
+START_TEST(remarks_are_joined)
+{
+    bh_remarks *remarks = bh_remarks_new();
+    bh_diags *diags = bh_diags_new();
+    bh_remark r = {.kind = BH_REMARK_NOT_CONVERGED,
+                   .at = {"p", 4, 2},
+                   .key = "settings",
+                   .who = "A",
+                   .setting = "K1"};
+    for (int i = 0; i < 40; i++)
+        bh_remarks_note(remarks, &r); /* the same again and again */
+    r.at.line = 5;
+    r.setting = "K2";
+    bh_remarks_note(remarks, &r);
+    r = (bh_remark){.kind = BH_REMARK_LIMIT, .at = {"p", 6, 1}, .key = "rate_limit", .who = "B"};
+    r.setting = "K3";
+    r.from = 100;
+    r.high = 150;
+    bh_remarks_note(remarks, &r);
+    r.high = 250;
+    bh_remarks_note(remarks, &r);
+    r = (bh_remark){.kind = BH_REMARK_COULOMB, .at = {"p", 1, 1}, .key = "models.coulomb"};
+    bh_remarks_note(remarks, &r);
+    ck_assert(bh_remarks_say(remarks, diags));
+    ck_assert_uint_eq(bh_diags_count(diags), 4);
+    ck_assert_ptr_nonnull(
+        strstr(bh_diags_at(diags, 0)->text, "of A did not settle to 1e-6 in K1;"));
+    ck_assert_str_eq(bh_diags_at(diags, 1)->key, "settings.K2");
+    ck_assert_str_eq(bh_diags_at(diags, 2)->key, "arms.B.rate_limit");
+    ck_assert_ptr_nonnull(strstr(bh_diags_at(diags, 2)->text, "would record 250 Hz"));
+    ck_assert_ptr_nonnull(strstr(bh_diags_at(diags, 2)->text, "a prescale 3 times as large"));
+    ck_assert_str_eq(bh_diags_at(diags, 3)->key, "models.coulomb");
+    bh_diags_free(diags);
+    bh_remarks_free(remarks);
+    bh_remarks_free(NULL);
+}
+END_TEST
+
+/* More kinds of remarks than the list first has room for. */
+START_TEST(the_list_grows)
+{
+    bh_remarks *remarks = bh_remarks_new();
+    bh_diags *diags = bh_diags_new();
+    for (int i = 0; i < 100; i++)
+        bh_remarks_note(remarks, &(bh_remark){.kind = BH_REMARK_NO_SIGNAL,
+                                              .at = {"p", i + 1, 1},
+                                              .key = "settings",
+                                              .who = "A",
+                                              .what = "H",
+                                              .setting = "K"});
+    ck_assert(bh_remarks_say(remarks, diags));
+    ck_assert_uint_eq(bh_diags_count(diags), 100);
+    ck_assert_int_eq(bh_diags_at(diags, 99)->at.line, 100);
+    bh_diags_free(diags);
+    bh_remarks_free(remarks);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("remarks");
     tcase_add_loop_test(tests, a_warning_is_given, 0, COUNT(rows));
     tcase_add_test(tests, a_sound_plan_has_none);
     tcase_add_test(tests, warnings_of_the_reader_come_along);
+    tcase_add_test(tests, remarks_are_joined);
+    tcase_add_test(tests, the_list_grows);
     return run_suite("remarks", tests);
 }

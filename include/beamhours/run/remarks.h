@@ -21,7 +21,7 @@ typedef enum {
 typedef struct {
     bh_remark_kind kind;
     bh_mark at;
-    const char *key;     /* dotted path of the key meant; constant text */
+    const char *key;     /* of models: its path; of others the key alone, its path is added */
     const char *who;     /* nuclide, arm or target */
     const char *what;    /* model, caveat or bin */
     const char *setting; /* the first it concerns */
