@@ -88,6 +88,8 @@ static bool find_file(bh_diags *diags, const char *name, size_t *nr)
     return true;
 }
 
+static char *print(bh_arena *arena, const char *fmt, va_list args) BH_PRINTF(2, 0);
+
 static char *print(bh_arena *arena, const char *fmt, va_list args)
 {
     va_list again;
@@ -120,7 +122,11 @@ static struct entry *append(bh_diags *diags, bh_mark at, const char *key)
 void bh_diags_addv(bh_diags *diags, bh_severity severity, bh_mark at, bh_said said)
 {
     struct entry *e = append(diags, at, said.key);
+/* The functions that fill a bh_said have their formats checked. */
+#pragma GCC diagnostic push
+#pragma GCC diagnostic ignored "-Wformat-nonliteral"
     char *text = e ? print(diags->arena, said.fmt, *said.args) : NULL;
+#pragma GCC diagnostic pop
     if (!text) {
         diags->lost = true;
         return;

@@ -40,7 +40,7 @@ bh_code bh_file_read_stream(FILE *from, const char *name, size_t limit, bh_text 
                             bh_error *err)
 {
     size_t left = limit < SIZE_MAX ? limit + 1 : limit;
-    while (left > 0) {
+    while (left > 0 && !feof(from) && !ferror(from)) {
         const size_t wanted = left < CHUNK ? left : CHUNK;
         char *to = bh_text_reserve(into, wanted);
         if (!to)
@@ -48,8 +48,6 @@ bh_code bh_file_read_stream(FILE *from, const char *name, size_t limit, bh_text 
         const size_t got = fread(to, 1, wanted, from);
         into->length += got;
         left -= got;
-        if (got < wanted)
-            break;
     }
     if (ferror(from))
         return fail(err, BH_EIO, name, "cannot be read");

@@ -117,9 +117,9 @@ static void say_no_item(struct walk *w, const bh_node *list, const char *part)
 static bool step(struct walk *w, bh_node *node)
 {
     const char *part = w->parts[w->done];
-    char text[SNIPPET];
     w->parent = node;
     if (node->kind == BH_NODE_SCALAR) {
+        char text[SNIPPET];
         bh_scalar_short(node->text, text, sizeof text);
         SAY(w, BH_SAY_NOTHING_INSIDE, part, text);
         w->parent = NULL;

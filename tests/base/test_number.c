@@ -35,9 +35,9 @@ static const struct {
     {5e-324, "5e-324", "4.94e-324"},
     {DBL_MAX, "1.7976931348623157e+308", "1.80e+308"},
     {DBL_MIN, "2.2250738585072014e-308", "2.23e-308"},
-    {INFINITY, "inf", "inf"},
-    {-INFINITY, "-inf", "-inf"},
-    {NAN, "nan", "nan"},
+    {(double)INFINITY, "inf", "inf"},
+    {-(double)INFINITY, "-inf", "-inf"},
+    {(double)NAN, "nan", "nan"},
 };
 
 static void check_printed(int i)
@@ -67,11 +67,11 @@ START_TEST(digits_and_room_have_limits)
     ck_assert_uint_eq(bh_number_print(855, text, 3), 0);
     ck_assert_str_eq(text, "");
     ck_assert_uint_eq(bh_number_print(855, text, 4), 3);
-    ck_assert_uint_eq(bh_number_print(NAN, text, 3), 0);
+    ck_assert_uint_eq(bh_number_print((double)NAN, text, 3), 0);
     ck_assert_str_eq(text, "");
     text[0] = 'x';
     ck_assert_uint_eq(bh_number_digits(1, 3, text, 0), 0);
-    ck_assert_uint_eq(bh_number_digits(INFINITY, 3, text, 0), 0);
+    ck_assert_uint_eq(bh_number_digits((double)INFINITY, 3, text, 0), 0);
     ck_assert_int_eq(text[0], 'x');
 }
 END_TEST
@@ -186,8 +186,8 @@ START_TEST(rounds_like_the_library)
     const char *end = NULL;
     double value = 0;
     for (int e = -1074; e < 1000; e += 7) {
-        const double low = ldexp(1, e), high = nextafter(low, INFINITY);
-        (void)snprintf(text, sizeof text, "%.1100Le", ((long double)low + high) / 2);
+        const double low = ldexp(1, e), high = nextafter(low, (double)INFINITY);
+        (void)snprintf(text, sizeof text, "%.1100Le", ((long double)low + (long double)high) / 2);
         ck_assert_int_eq(bh_number_parse(text, &end, &value), BH_OK);
         ck_assert(value == strtod(text, NULL));
         ck_assert_int_eq(*end, '\0');

@@ -10,8 +10,9 @@
 
 static const char *const texts[] = {
     /* good */
-    "plan: 1\nbeam: {current: 20 uA, spot: {x: 1 mm}}\nsettings:\n  - {name: K1, angle: 25 deg}\n"
-    "  - name: K2\n    angle: [1 deg, 2 deg]\nnotes: |\n  text\n\n  more\ntitle: \"a \\\"b\\\"\"\n",
+    ("plan: 1\nbeam: {current: 20 uA, spot: {x: 1 mm}}\nsettings:\n  - {name: K1, angle: 25 deg}\n "
+     " "
+     "- name: K2\n    angle: [1 deg, 2 deg]\nnotes: |\n  text\n\n  more\ntitle: \"a \\\"b\\\"\"\n"),
     /* with complaints of every kind that need memory of their own */
     "a: &x 1\nb: *x\nc: !!str 1\nd: {e: 1, e: 2}\nf: Run #3\n<<: 1\n--- \n",
     "a:\n  - b: {c: \"d\\q\"}\n",
@@ -98,6 +99,26 @@ START_TEST(long_documents_tell)
 }
 END_TEST
 
+/* The arena asks for memory seldom; a comment of every length brings each of its pieces to the
+ * end of a block once. */
+START_TEST(each_piece_tells)
+{
+    static const char *const graft[] = {"schedule.tasks.first", "{name: x, time: [8 h, 9 h]}"};
+    static char text[66 * 1024];
+    for (size_t pad = 58 * 1024; pad < 65 * 1024; pad += 48) {
+        (void)strcpy(text, "a: [1, {b: 2}]\nc: \"d\"\n#");
+        memset(text + strlen(text), 'x', pad);
+        (void)strcpy(text + pad, "\ne: f\n");
+        fail_at(1000000, false);
+        (void)work(text, graft);
+        const long calls = fault_calls;
+        fail_at(0, false);
+        for (long call = calls - 4; call <= calls; call++)
+            (void)fail_one(call, text, graft);
+    }
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("document faults");
@@ -105,5 +126,6 @@ int main(void)
     tcase_add_loop_test(tests, reading_tells, 0, COUNT(texts));
     tcase_add_loop_test(tests, grafting_tells, 0, COUNT(grafts));
     tcase_add_test(tests, long_documents_tell);
+    tcase_add_test(tests, each_piece_tells);
     return run_suite("document/faults", tests);
 }

@@ -84,6 +84,7 @@ static const struct {
     {"a:\n  b: 1\n\tc: 2\n", 3, 1, "a", "a tab stands", BH_SAY_TAB},
     {"a: b\n\tc\n", 2, 1, "plan", "a tab stands", BH_SAY_TAB},
     {"a: |\n\tx\n", 2, 1, "plan", "a tab stands", BH_SAY_TAB},
+    {"a:\n  - b: 1\n \tc: 2\n", 3, 2, "a.1", "a tab stands", BH_SAY_TAB},
     {"a: b\n \tc: 1\n", 2, 4, "plan", "a tab stands", BH_SAY_TAB},
     {"a: @x\n", 1, 4, "plan", "`@` cannot begin", BH_SAY_CHARACTER},
     {"a: %5\n", 1, 4, "plan", "`%` cannot begin", BH_SAY_CHARACTER},
