@@ -3,42 +3,20 @@
 
 #include <math.h>
 
+#include "beamhours/matter/gauss.h"
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
 static const double root_e = 1.64872127070012814685;
 
-/* Gauss and Legendre on -1 .. 1, the positive half. */
-static const double node[8] = {0.09501250983763744, 0.28160355077925891, 0.45801677765722739,
-                               0.61787624440264375, 0.75540440835500303, 0.86563120238783174,
-                               0.94457502307323258, 0.98940093499164993};
-static const double weight[8] = {0.18945061045506850, 0.18260341504492359, 0.16915651939500254,
-                                 0.14959598881657673, 0.12462897125553387, 0.09515851168249278,
-                                 0.06225352393864789, 0.02715245941175409};
-
 typedef struct {
     int z;
     double a;      /* u */
     double energy; /* MeV */
+    double nu;     /* share of the energy that a pair takes, while its asymmetry is summed over */
 } target;
 
-typedef double integrand(const target *t, double u, double nu);
-
-typedef struct {
-    double from, to;
-} limits;
-
-static double integrate(integrand *f, const target *t, limits over, double nu)
-{
-    const double middle = 0.5 * (over.from + over.to);
-    const double half = 0.5 * (over.to - over.from);
-    double sum = 0.0;
-    for (int i = 0; i < 8; i++)
-        sum += weight[i] * (f(t, middle - half * node[i], nu) + f(t, middle + half * node[i], nu));
-    return half * sum;
-}
-
-/* MeV^-2 times g cm2 ... : N r_e^2 [cm2/mol] */
+/* N r_e^2, cm2/mol */
 static double area(void)
 {
     return BH_AVOGADRO * BH_CLASSICAL_R * BH_CLASSICAL_R * 1e-26;
@@ -47,9 +25,9 @@ static double area(void)
 /* ---- bremsstrahlung ---- */
 
 /* nu^2 dsigma/dnu, u = ln nu, without the factors in front. */
-static double photon_spectrum(const target *t, double u, double unused)
+static double photon_spectrum(const void *context, double u)
 {
-    (void)unused;
+    const target *t = context;
     const double nu = exp(u);
     const double me = BH_MASS_ELECTRON;
     const double mu = BH_MASS_MUON;
@@ -71,14 +49,14 @@ double bh_muon_photons(int z, double energy)
 {
     if (!(energy > BH_MASS_MUON))
         return 0.0;
-    const target t = {z, bh_element_mass(z), energy};
+    const target t = {.z = z, .a = bh_element_mass(z), .energy = energy};
     const double highest = 1.0 - 0.75 * root_e * BH_MASS_MUON / energy * cbrt(z);
     const double top = fmax(highest, 1.0 - BH_MASS_MUON / energy);
     double sum = 0.0;
-    const limits cuts[] = {{-14.0, -5.0}, {-5.0, -1.5}, {-1.5, log(top)}};
+    const bh_gauss_limits cuts[] = {{-14.0, -5.0}, {-5.0, -1.5}, {-1.5, log(top)}};
     for (int i = 0; i < 3; i++)
         if (cuts[i].to > cuts[i].from)
-            sum += integrate(photon_spectrum, &t, cuts[i], 0.0);
+            sum += bh_gauss(photon_spectrum, &t, cuts[i]);
     const double ratio = BH_MASS_ELECTRON / BH_MASS_MUON;
     return 4.0 * BH_ALPHA * area() * ratio * ratio * energy * sum;
 }
@@ -131,8 +109,10 @@ static double muon_part(const target *t, const pair *p)
 }
 
 /* u = ln(1 - rho). */
-static double over_asymmetry(const target *t, double u, double nu)
+static double over_asymmetry(const void *context, double u)
 {
+    const target *t = context;
+    const double nu = t->nu;
     const double left = exp(u);
     const double rho = 1.0 - left;
     pair p = {.nu = nu, .rho2 = rho * rho, .beta = nu * nu / (2.0 * (1.0 - nu))};
@@ -142,17 +122,18 @@ static double over_asymmetry(const target *t, double u, double nu)
 }
 
 /* nu^2 dsigma/dnu, u = ln nu. */
-static double pair_spectrum(const target *t, double u, double unused)
+static double pair_spectrum(const void *context, double u)
 {
-    (void)unused;
+    target t = *(const target *)context;
     const double nu = exp(u);
-    const double mass = BH_MASS_MUON / t->energy;
-    const double small = 4.0 * BH_MASS_ELECTRON / (t->energy * nu);
+    t.nu = nu;
+    const double mass = BH_MASS_MUON / t.energy;
+    const double small = 4.0 * BH_MASS_ELECTRON / (t.energy * nu);
     const double largest = (1.0 - 6.0 * mass * mass / (1.0 - nu)) * sqrt(fmax(1.0 - small, 0.0));
     if (!(largest > 0.0))
         return 0.0;
-    const limits over = {log1p(-largest), 0.0};
-    return nu * (1.0 - nu) * integrate(over_asymmetry, t, over, nu);
+    const bh_gauss_limits over = {log1p(-largest), 0.0};
+    return nu * (1.0 - nu) * bh_gauss(over_asymmetry, &t, over);
 }
 
 /* Pairs on the electrons of the atom add as much as `zeta` protons. */
@@ -173,12 +154,12 @@ double bh_muon_pairs(int z, double energy)
     const double highest = 1.0 - 0.75 * root_e * BH_MASS_MUON / energy * cbrt(z);
     if (!(highest > lowest))
         return 0.0;
-    const target t = {z, bh_element_mass(z), energy};
+    const target t = {.z = z, .a = bh_element_mass(z), .energy = energy};
     const double step = log(highest / lowest) / 3.0;
     double sum = 0.0;
     for (int i = 0; i < 3; i++)
-        sum += integrate(pair_spectrum, &t,
-                         (limits){log(lowest) + i * step, log(lowest) + (i + 1) * step}, 0.0);
+        sum += bh_gauss(pair_spectrum, &t,
+                        (bh_gauss_limits){log(lowest) + i * step, log(lowest) + (i + 1) * step});
     return 4.0 / (3.0 * BH_PI) * z * (z + pair_electrons(z, energy)) * area() * BH_ALPHA *
            BH_ALPHA * energy * sum;
 }
