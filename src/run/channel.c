@@ -30,7 +30,7 @@ static void eval_batch(const bh_channel *channel, size_t n, const double *angle,
     const double largest = bh_channel_largest_angle(channel);
     bh_event event[BATCH];
     double computed[BATCH];
-    size_t place[BATCH], m = 0;
+    size_t place[BATCH] = {0}, m = 0;
     for (size_t i = 0; i < n; i++) {
         sigma[i] = momentum[i] = 0;
         if (angle[i] <= largest && !bh_channel_event(channel, angle[i], &event[m], NULL))

@@ -29,13 +29,16 @@ struct bh_table {
 /* Numbers the rows: where each stands in the plan. */
 static void lay_out(bh_table *table)
 {
-    size_t whole = 0, bin = 0;
+    bh_row *whole = table->rows[0], *bin = table->rows[1];
     for (size_t s = 0; s < table->plan->setting_count; s++) {
         const bh_setting *setting = &table->plan->settings[s];
         for (size_t a = 0; a < setting->arm_count; a++) {
-            table->rows[0][whole++] = (bh_row){.setting = s, .arm = a};
-            for (int b = 1; table->rows[1] && b <= setting->arms[a].arm.bins; b++)
-                table->rows[1][bin++] = (bh_row){.setting = s, .arm = a, .bin = b};
+            *whole = (bh_row){.setting = s, .arm = a};
+            whole++;
+            for (int b = 1; bin && b <= setting->arms[a].arm.bins; b++) {
+                *bin = (bh_row){.setting = s, .arm = a, .bin = b};
+                bin++;
+            }
         }
     }
 }
