@@ -5,7 +5,7 @@ HARDEN ?= -U_FORTIFY_SOURCE -D_FORTIFY_SOURCE=3 -fstack-protector-strong
 BUILD  ?= build
 PKGS := gsl yaml-0.1 json-c
 WARN  := -Wall -Wextra -Wpedantic -Wconversion -Wshadow -Wstrict-prototypes -Wmissing-prototypes \
-         -Wcast-qual -Wwrite-strings -Wvla -Wdouble-promotion -Wformat=2 -Wundef
+         -Wcast-qual -Wwrite-strings -Wvla -Wformat=2 -Wundef
 SAN   := -O1 -g -fsanitize=address,undefined -fno-sanitize-recover=all
 STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(shell pkg-config --cflags $(PKGS) 2>/dev/null)
 FAST  := -fopenmp-simd -fno-math-errno  # never -ffast-math: NaN and infinity are part of what is checked

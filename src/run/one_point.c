@@ -25,7 +25,7 @@ static void add_text(bh_single *out, const char *key, const char *text)
         out->values[out->count++] = (bh_single_value){key, "", NAN, text};
 }
 
-static void add_column(bh_single *out, bh_column_id id, double value)
+static void add_column(bh_single *out, int id, double value)
 {
     add(out, bh_column_at(id)->key, bh_column_at(id)->unit, value);
 }

@@ -104,7 +104,7 @@ START_TEST(bins_add_up_to_the_arm)
         for (int i = 0; i < COUNT(added); i++)
             if (!isnan(sum[i]))
                 ck_assert_relative(sum[i], cell(&e, row, added[i]), 1e-6,
-                                   bh_column_at(added[i])->key);
+                                   bh_column_at((int)added[i])->key);
     }
     ck_assert_uint_eq(bin, bh_table_rows(e.table, true));
     done(&e);
