@@ -387,7 +387,7 @@ static const char *const words_beam[] = {"needed", "none", NULL};
 const char *const bh_words_every[] = {"once",    "energy", "particle", "target",
                                       "setting", "shift",  NULL};
 static const bh_key task_keys[] = {
-    {NAME(bh_raw_task, name), .flags = BH_KEY_REQUIRED, .meaning = "what totals call it",
+    {TEXT(bh_raw_task, name), .flags = BH_KEY_REQUIRED, .meaning = "what totals call it",
      .example = "optics"},
     {QUANTITY(bh_raw_task, time, BH_DIM_TIME), .flags = BH_KEY_REQUIRED, .least = "0 s",
      .meaning = "how long it takes each time", .example = "8 h"},
