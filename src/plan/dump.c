@@ -204,11 +204,31 @@ static void one_member(const struct out *out, const bh_key *key, const void *mem
     }
 }
 
+/* One key of a group speaks for it: the one written, else the first with a default. */
+static bool silent(const bh_schema *schema, const bh_key *key, const void *in)
+{
+    const bh_key *speaks = NULL;
+    if (key->group == 0 || bh_schema_given(key, in))
+        return schema == &bh_schema_arm && strcmp(key->name, "azimuth") == 0 &&
+               !((const bh_raw_arm *)in)->ring.given; /* its default is a ring's */
+    for (size_t i = schema->count; i-- > 0;) {
+        const bh_key *other = &schema->keys[i];
+        if (other->group != key->group)
+            continue;
+        if (bh_schema_given(other, in))
+            return true;
+        if (other->fallback)
+            speaks = other;
+    }
+    return speaks != key;
+}
+
 static void members(const struct out *out, const bh_schema *schema, const void *in)
 {
     for (size_t i = 0; i < schema->count; i++) {
         const bh_key *key = &schema->keys[i];
-        one_member(out, key, (const unsigned char *)in + key->offset);
+        if (!silent(schema, key, in))
+            one_member(out, key, (const unsigned char *)in + key->offset);
     }
 }
 

@@ -125,11 +125,12 @@ static void write_group(const bh_schema *schema, const bh_key *key, char *out, s
         return;
     const bool needed = ((schema->exactly | schema->claimed) >> key->group) & 1U;
     size_t used = (size_t)snprintf(out, size, "%s one of", needed ? "exactly" : "at most");
+    const char *link = " ";
     for (size_t i = 0; i < schema->count && used < size; i++)
-        if (schema->keys[i].group == key->group)
-            used += (size_t)snprintf(out + used, size - used, " %s%s",
-                                     strchr(out, '|') || strlen(out) > 12 ? "| " : "",
-                                     schema->keys[i].name);
+        if (schema->keys[i].group == key->group) {
+            used += (size_t)snprintf(out + used, size - used, "%s%s", link, schema->keys[i].name);
+            link = " | ";
+        }
 }
 
 static void describe(const struct walk *walk, bh_plan_key *out)
@@ -209,16 +210,26 @@ static void find_near(const char *path, bh_plan_key *near)
     } while (step(&walk));
 }
 
+/* To the row of `path`: as documentation writes it, or (loose) with list items in it. */
+static bool find(struct walk *walk, const char *path, bool loose)
+{
+    bh_plan_key row;
+    *walk = (struct walk){.schema = {&bh_schema_plan}};
+    do {
+        describe(walk, &row);
+        if (strcmp(row.path, path) == 0 || (loose && leads(walk, path)))
+            return true;
+    } while (step(walk));
+    return false;
+}
+
 bool bh_plan_key_find(const char *path, bh_plan_key *out, bh_plan_key *near)
 {
-    struct walk walk = {.schema = {&bh_schema_plan}};
-    do {
-        if (leads(&walk, path)) {
-            describe(&walk, out);
-            return true;
-        }
-    } while (step(&walk));
-    if (near)
+    struct walk walk;
+    const bool found = find(&walk, path, false) || find(&walk, path, true);
+    if (found)
+        describe(&walk, out);
+    else if (near)
         find_near(path, near);
-    return false;
+    return found;
 }

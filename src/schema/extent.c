@@ -26,9 +26,6 @@ static const char *skip_plus_minus(const char *text)
 static void read_half(const bh_reading *reading, bh_written written, const char *half,
                       bh_extent *out)
 {
-    bh_node shorter = *written.node;
-    shorter.text = half;
-    shorter.length = strlen(half);
     bh_quantity q;
     bh_error err = {.code = BH_OK};
     if (bh_quantity_parse(half, written.key->dimension, &q, &err)) {
@@ -41,7 +38,7 @@ static void read_half(const bh_reading *reading, bh_written written, const char 
                     bh_quantity_text(0.0, written.key->dimension, text));
         return;
     }
-    if (bh_read_quantity(reading, (bh_written){written.key, &shorter}, &q)) {
+    if (bh_read_within(reading, written, q.value)) {
         out->from = -q.value;
         out->to = q.value;
     }

@@ -78,7 +78,7 @@ static double bound(const bh_key *key, const char *text, double otherwise)
     return q.value;
 }
 
-static bool within(const bh_reading *reading, bh_written written, double value)
+bool bh_read_within(const bh_reading *reading, bh_written written, double value)
 {
     const bh_key *key = written.key;
     const char *text = written.node->text;
@@ -103,7 +103,7 @@ bool bh_read_quantity(const bh_reading *reading, bh_written written, bh_quantity
         bh_say_node(reading, written.node, "%s", err.text);
         return false;
     }
-    if (!within(reading, written, q.value))
+    if (!bh_read_within(reading, written, q.value))
         return false;
     *out = q;
     return true;
@@ -169,7 +169,7 @@ void bh_read_value(const bh_reading *reading, bh_written written, bh_value *out)
         return;
     const bool good = written.key->kind == BH_KEY_COUNT ? read_count(reading, written, &q.value)
                                                         : read_number(reading, written, &q.value);
-    if (good && within(reading, written, q.value))
+    if (good && bh_read_within(reading, written, q.value))
         out->value = q.value;
 }
 

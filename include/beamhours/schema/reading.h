@@ -17,6 +17,9 @@ void bh_say_node(const bh_reading *reading, const bh_node *node, const char *fmt
 /* Whether `node` is of `kind`, and no scalar without text; else complains.  */
 bool bh_read_is(const bh_reading *reading, bh_written written, bh_node_kind kind);
 
+/* Whether value [1], in the key's internal unit, is within the key's bounds; else complains. */
+bool bh_read_within(const bh_reading *reading, bh_written written, double value);
+
 /* One quantity with its bounds.  False after a complaint; `out` is then untouched. */
 bool bh_read_quantity(const bh_reading *reading, bh_written written, bh_quantity *out);
 
