@@ -31,12 +31,13 @@ static bool find_particle(const bh_making *making, const bh_section *section, co
     const char *near = bh_particle_suggest(word->text);
     for (int i = 0; i < 39 && bh_particle_name(i); i++)
         names[i] = bh_particle_name(i);
-    char all[300];
-    if (near)
+    if (near) {
         bh_tell(making, word->at, section, key, BH_SAY_UNKNOWN_WORD, word->text, near);
-    else
-        bh_tell(making, word->at, section, key, BH_SAY_UNKNOWN_WORD_OF, word->text,
-                bh_words_text(names, all, sizeof all));
+        return false;
+    }
+    char all[300];
+    bh_tell(making, word->at, section, key, BH_SAY_UNKNOWN_WORD_OF, word->text,
+            bh_words_text(names, all, sizeof all));
     return false;
 }
 
@@ -146,11 +147,11 @@ static void set_energy(const bh_making *making, const bh_raw_beam *raw, size_t i
     beam->energy_key = (bh_word){.text = key, .given = sweep->given, .at = sweep->at};
     beam->energy_written = bh_sweep_value(sweep, i);
     if (sweep->count > 0 && sweep->values[i < sweep->count ? i : 0].per_u) {
-        char text[BH_QUANTITY_SIZE];
         const int a = beam->particle.a;
         beam->energy_written.value *= a;
         beam->energy_written.uncertainty *= a;
         if (a == 0 && raw->particle.text && beam->particle.mass > 0.0) {
+            char text[BH_QUANTITY_SIZE];
             const bh_quantity q = {.value = sweep->values[0].value, .per_u = true};
             (void)bh_quantity_print(&q, BH_DIM_ENERGY_OR_PER_U, text, sizeof text);
             bh_tell(making, beam->energy_written.at, &raw->section, key, BH_SAY_NO_NUCLEONS, text,
@@ -202,21 +203,22 @@ static void check_limits(const bh_making *making, const bh_raw_beam *raw, const 
     const char *key = beam->rate_written ? "particle_rate" : "current";
     const bh_value *written = beam->rate_written ? &beam->particle_rate : &beam->current;
     const bh_value *most = &raw->limits.current, *most_power = &raw->limits.power;
-    char current[BH_QUANTITY_SIZE], limit[BH_QUANTITY_SIZE], energy[BH_QUANTITY_SIZE];
-    char power_text[BH_QUANTITY_SIZE], would_do[BH_QUANTITY_SIZE];
+    char current[BH_QUANTITY_SIZE], limit[BH_QUANTITY_SIZE];
     bh_quantity_text(beam->current.value, BH_DIM_CURRENT, current);
     if (most->given && beam->current.value > most->value * (1.0 + 1e-12))
         bh_tell(making, written->at, &raw->section, key, BH_SAY_PAST_CURRENT, current,
                 bh_quantity_text(most->value, BH_DIM_CURRENT, limit));
     const double joule = beam->kinetic_energy.value * 1e6 * BH_ELEMENTARY;
     const double power = joule * beam->particle_rate.value;
-    if (most_power->given && power > most_power->value * (1.0 + 1e-12))
+    if (most_power->given && power > most_power->value * (1.0 + 1e-12)) {
+        char energy[BH_QUANTITY_SIZE], watt[BH_QUANTITY_SIZE], less[BH_QUANTITY_SIZE];
+        const double would_do = beam->current.value * most_power->value / power;
         bh_tell(making, written->at, &raw->section, key, BH_SAY_PAST_POWER,
-                bh_quantity_text(power, BH_DIM_POWER, power_text), current,
+                bh_quantity_text(power, BH_DIM_POWER, watt), current,
                 bh_quantity_text(beam->kinetic_energy.value, BH_DIM_ENERGY, energy),
                 bh_quantity_text(most_power->value, BH_DIM_POWER, limit),
-                bh_quantity_text(beam->current.value * most_power->value / power, BH_DIM_CURRENT,
-                                 would_do));
+                bh_quantity_text(would_do, BH_DIM_CURRENT, less));
+    }
 }
 
 bh_code bh_make_beam(const bh_making *making, const bh_raw_beam *raw, size_t i, bh_beam *out)

@@ -112,7 +112,6 @@ static void set_vacuum(const bh_making *making, const bh_raw_layer *raw, bh_laye
 
 static void make_layer(const bh_making *making, const bh_raw_layer *raw, bh_layer *layer)
 {
-    char path[BH_PATH_SIZE];
     *layer = (bh_layer){
         .role = (bh_role)bh_schema_choice(raw->role.text, bh_words_role),
         .temperature = raw->temperature,
@@ -121,10 +120,12 @@ static void make_layer(const bh_making *making, const bh_raw_layer *raw, bh_laye
         .density = {.at = raw->section.at},
         .at = raw->section.at,
     };
-    if (raw->material.text)
+    if (raw->material.text) {
+        char path[BH_PATH_SIZE];
+        bh_node_path(raw->section.node, "material", path);
         layer->material = bh_material_find(making->library, raw->material.text, raw->material.at,
-                                           bh_node_path(raw->section.node, "material", path),
-                                           making->reading.diags);
+                                           path, making->reading.diags);
+    }
     const bool sized = raw->thickness.given || raw->areal_density.given || raw->areal_number.given;
     if (layer->material && layer->material->state == BH_STATE_VACUUM) {
         set_vacuum(making, raw, layer);

@@ -96,14 +96,15 @@ static void say_cannot_move(const bh_making *making, const bh_raw_aim *aim, cons
     const bh_mark at = by_angle ? aim->angle.at : aim->q2.at;
     const char *key = by_angle ? "angle" : "q2";
     const char *name = arm->name.text ? arm->name.text : "?";
-    char angle[BH_QUANTITY_SIZE];
     if (!by_angle && !aim->q2.given)
         return;
-    if (arm->shape == BH_SHAPE_RING)
+    if (arm->shape == BH_SHAPE_RING) {
         bh_tell(making, at, &aim->section, key, BH_SAY_RING_ANGLE, name, key);
-    else
-        bh_tell(making, at, &aim->section, key, BH_SAY_ARM_FIXED, name,
-                bh_angle_text(arm->angle.value, angle), key);
+        return;
+    }
+    char angle[BH_QUANTITY_SIZE];
+    bh_tell(making, at, &aim->section, key, BH_SAY_ARM_FIXED, name,
+            bh_angle_text(arm->angle.value, angle), key);
 }
 
 static void add_aim(struct prepared *p, const bh_raw_aim *aim, const bh_arm *arm)

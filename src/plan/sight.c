@@ -118,13 +118,13 @@ static void check_range(const bh_sight *sight, const struct place *place)
 {
     const bh_setting_arm *row = sight->row;
     const bh_extent *range = &row->arm.angle_range;
+    const double angle = row->angle.value, slack = 1e-9; /* of unit conversion */
+    if (!range->given || !(angle < range->from - slack || angle > range->to + slack))
+        return;
     char here[BH_QUANTITY_SIZE], from[BH_QUANTITY_SIZE], to[BH_QUANTITY_SIZE];
-    const double slack = 1e-9; /* of unit conversion */
-    if (range->given &&
-        (row->angle.value < range->from - slack || row->angle.value > range->to + slack))
-        bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_OUTSIDE_ANGLES,
-                bh_angle_text(row->angle.value, here), name_of(&row->arm),
-                bh_angle_text(range->from, from), bh_angle_text(range->to, to));
+    bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_OUTSIDE_ANGLES,
+            bh_angle_text(angle, here), name_of(&row->arm), bh_angle_text(range->from, from),
+            bh_angle_text(range->to, to));
 }
 
 static void check_overlap(const bh_sight *sight, const struct place *place)
@@ -136,11 +136,12 @@ static void check_overlap(const bh_sight *sight, const struct place *place)
     const double inwards = flat ? -in->from : 0.0;
     const bool level = !flat || (out->from <= 0.0 && out->to >= 0.0);
     const bool across = !flat || angle + in->to >= 0.0;
+    if (!(level && across && angle - inwards <= 0.0))
+        return;
     char here[BH_QUANTITY_SIZE], half[BH_QUANTITY_SIZE], least[BH_QUANTITY_SIZE];
-    if (level && across && angle - inwards <= 0.0)
-        bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_OVERLAPS_BEAM,
-                bh_angle_text(angle, here), bh_angle_text(inwards, half),
-                bh_angle_text(inwards, least));
+    bh_tell(sight->making, place->at, place->section, place->key, BH_SAY_OVERLAPS_BEAM,
+            bh_angle_text(angle, here), bh_angle_text(inwards, half),
+            bh_angle_text(inwards, least));
 }
 
 /* Unequal bins of a flat acceptance are given in angles from the beam. */

@@ -52,25 +52,27 @@ void bh_tell_no_target(const bh_making *making, const bh_unfound *unfound)
 {
     const bh_word *word = unfound->word;
     const char *near = bh_nearest(word->text, unfound->names, unfound->count);
-    char all[300];
-    if (near)
+    if (near) {
         bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_TARGET, word->text,
                 near);
-    else
-        bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_TARGET_OF, word->text,
-                all_of(unfound, all, sizeof all));
+        return;
+    }
+    char all[300];
+    bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_TARGET_OF, word->text,
+            all_of(unfound, all, sizeof all));
 }
 
 void bh_tell_no_arm(const bh_making *making, const bh_unfound *unfound)
 {
     const bh_word *word = unfound->word;
     const char *near = bh_nearest(word->text, unfound->names, unfound->count);
-    char all[300];
-    if (near)
+    if (near) {
         bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_ARM, word->text, near);
-    else
-        bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_ARM_OF, word->text,
-                all_of(unfound, all, sizeof all));
+        return;
+    }
+    char all[300];
+    bh_tell(making, word->at, unfound->section, unfound->key, BH_SAY_NO_ARM_OF, word->text,
+            all_of(unfound, all, sizeof all));
 }
 
 const char *bh_angle_text(double angle, char out[BH_QUANTITY_SIZE])

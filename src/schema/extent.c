@@ -32,8 +32,8 @@ static void read_half(const bh_reading *reading, bh_written written, const char 
         bh_say_node(reading, written.node, "%s", err.text);
         return;
     }
-    char text[BH_QUANTITY_SIZE];
     if (!(q.value > 0.0)) {
+        char text[BH_QUANTITY_SIZE];
         bh_say_node(reading, written.node, BH_SAY_NOT_ABOVE, written.node->text,
                     bh_quantity_text(0.0, written.key->dimension, text));
         return;

@@ -214,15 +214,16 @@ static void say_unknown(struct job *job, const bh_node *key_node)
     if (!near)
         near = bh_nearest(key_node->text, names, job->schema->count);
     const bh_section *section = (const void *)job->out;
-    char all[400];
     for (size_t i = 0; i < job->schema->count; i++)
         job->meant[i] = job->meant[i] || names[i] == near;
-    if (near)
+    if (near) {
         bh_say(job->reading, key_node->at, section, key_node->text, BH_SAY_UNKNOWN_KEY,
                job->schema->name, near);
-    else
-        bh_say(job->reading, key_node->at, section, key_node->text, BH_SAY_UNKNOWN_KEY_OF,
-               job->schema->name, bh_words_text(names, all, sizeof all));
+        return;
+    }
+    char all[400];
+    bh_say(job->reading, key_node->at, section, key_node->text, BH_SAY_UNKNOWN_KEY_OF,
+           job->schema->name, bh_words_text(names, all, sizeof all));
 }
 
 /* --- groups --- */
@@ -235,10 +236,11 @@ static void say_missing_group(const struct job *job, int group)
         if (job->schema->keys[i].group == group)
             names[n++] = job->schema->keys[i].name;
     const bh_section *section = (const void *)job->out;
+    if (n == 0)
+        return;
     char all[200];
-    if (n > 0)
-        bh_say(job->reading, section->at, section, names[0], BH_SAY_MISSING_GROUP,
-               job->schema->name, bh_words_text(names, all, sizeof all));
+    bh_say(job->reading, section->at, section, names[0], BH_SAY_MISSING_GROUP, job->schema->name,
+           bh_words_text(names, all, sizeof all));
 }
 
 /* Before b in the document; places in the same file only. */
@@ -247,27 +249,28 @@ static bool earlier(bh_mark a, bh_mark b)
     return a.line < b.line || (a.line == b.line && a.column < b.column);
 }
 
+static void say_two(const struct job *job, const bh_node *a, const bh_node *b)
+{
+    const bool in_order = earlier(a->at, b->at);
+    const bh_node *first = in_order ? a : b, *second = in_order ? b : a;
+    bh_say(job->reading, second->at, (const void *)job->out, second->text, BH_SAY_TWO_OF_GROUP,
+           first->text, second->text);
+}
+
 static void check_group(const struct job *job, int group)
 {
     const bh_node *first = NULL;
+    bool needed = job->node && !job->reading->partial && ((job->schema->exactly >> group) & 1U);
     for (size_t i = 0; i < job->schema->count; i++) {
         const bh_node *found = job->key_node[i];
-        if (job->schema->keys[i].group != group || !found)
+        if (job->schema->keys[i].group != group)
             continue;
-        if (first) {
-            const bool in_order = earlier(first->at, found->at);
-            const bh_node *second = in_order ? found : first;
-            first = in_order ? first : found;
-            bh_say(job->reading, second->at, (const void *)job->out, second->text,
-                   BH_SAY_TWO_OF_GROUP, first->text, second->text);
-        } else {
-            first = found;
-        }
+        if (first && found)
+            say_two(job, first, found);
+        first = first ? first : found;
+        needed = needed && !found && !job->meant[i];
     }
-    bool needed = (job->schema->exactly >> group) & 1U;
-    for (size_t i = 0; i < job->schema->count; i++)
-        needed = needed && !(job->meant[i] && job->schema->keys[i].group == group);
-    if (!first && needed && job->node && !job->reading->partial)
+    if (needed)
         say_missing_group(job, group);
 }
 

@@ -57,12 +57,13 @@ static const char *pick(const bh_reading *reading, bh_written written)
         if (strcmp(text, words[i]) == 0)
             return words[i];
     const char *near = bh_nearest(text, words, word_count(words));
-    char all[300];
-    if (near)
+    if (near) {
         bh_say_node(reading, written.node, BH_SAY_UNKNOWN_WORD, written.node->text, near);
-    else
-        bh_say_node(reading, written.node, BH_SAY_UNKNOWN_WORD_OF, written.node->text,
-                    bh_words_text(words, all, sizeof all));
+        return NULL;
+    }
+    char all[300];
+    bh_say_node(reading, written.node, BH_SAY_UNKNOWN_WORD_OF, written.node->text,
+                bh_words_text(words, all, sizeof all));
     return NULL;
 }
 

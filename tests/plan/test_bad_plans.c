@@ -184,7 +184,7 @@ static void define_text(const char *at, char *out)
 static bool of_plans(const char *line)
 {
     static const char *const room[] = {
-        "document:", "units:", "schema:", "matter:", "plan:", "physics: structure"};
+        "document:", "units:", "schema:", "matter: materials", "plan:", "physics: structure"};
     for (int i = 0; i < COUNT(room); i++)
         if (strncmp(line + 3, room[i], strlen(room[i])) == 0)
             return true;
