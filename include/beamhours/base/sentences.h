@@ -159,6 +159,34 @@
 #define BH_SAY_STRUCTURE_NUCLEUS "%s does not describe %s; one of %s does"
 #define BH_SAY_STRUCTURE_SET     "there is no %s: the sets of %s for %s end at %d"
 
+/* physics: background; why something is not computed, behind "not computed: " */
+/* Argument: read. */
+#define BH_SAY_QUASI_NUCLEUS                                                                      \
+    "quasi-elastic scattering on %s: there is no published Fermi momentum; 6Li or heavier would " \
+    "do"
+#define BH_SAY_QUASI_LIGHT \
+    "quasi-elastic scattering on nuclei lighter than 6Li, for want of a published Fermi momentum"
+#define BH_SAY_QUASI_SLOW                                                                         \
+    "quasi-elastic scattering at a momentum transfer under 200 MeV/c, where nuclei respond as a " \
+    "whole"
+#define BH_SAY_QUASI_FAST \
+    "quasi-elastic and inelastic scattering on nuclei at a momentum transfer above 1400 MeV/c"
+#define BH_SAY_QUASI_DEEP                                                                       \
+    "what lies beyond the quasi-elastic peak (psi' above 0.8), where nuclei absorb photons in " \
+    "pairs of nucleons and mesons are made"
+#define BH_SAY_INELASTIC_LOW \
+    "inelastic scattering between the meson threshold and a final mass W of 1.18 GeV"
+#define BH_SAY_INELASTIC_BREAKUP \
+    "break-up of the deuteron and its quasi-elastic peak, to a final mass W of 1.18 GeV"
+#define BH_SAY_INELASTIC_Q2 \
+    "inelastic scattering at a Q2 under 0.3 GeV2 (0.5 GeV2 where W2 exceeds 3.2 GeV2)"
+#define BH_SAY_INELASTIC_Q2_MOST \
+    "scattering to the resonances (W2 up to 4 GeV2) at a Q2 above 20 GeV2"
+#define BH_SAY_INELASTIC_X  "inelastic scattering at Bjorken x outside 0.006 to 0.86"
+#define BH_SAY_ATOMIC_BOUND "electrons struck with less than ten times their binding energy"
+#define BH_SAY_BACKGROUND_INPUT \
+    "a background whose angle, momenta or beam energy are no numbers in range"
+
 /* matter: materials */
 #define BH_SAY_NO_MATERIAL_NEAR "there is no material %s; did you mean %s?"
 #define BH_SAY_NO_MATERIAL                                                                         \
