@@ -316,4 +316,20 @@
     "nothing scattered by %s is counted by %s in %s; another angle, central_momentum or " \
     "momentum_bite would do"
 
+/* physics: radiation */
+#define BH_WARN_RADIATIVE_ALL                                                                    \
+    "a cut of %.4g MeV takes in all of the scattered %.4g MeV; photons that hard are not soft, " \
+    "and "                                                                                       \
+    "the elastic tail would do better"
+#define BH_WARN_RADIATIVE_WIDE                                                                     \
+    "a cut of %.4g MeV is %.2g %% of the scattered energy; soft-photon forms hold to 1 %% of the " \
+    "correction up to 3 %%, and the elastic tail counts the harder photons"
+#define BH_WARN_RADIATIVE_LIGHT \
+    "at Q2 = %.3g GeV2 an electron is not light enough for mo-tsai; maximon-tjon would do"
+#define BH_WARN_RADIATIVE_RECOIL                                                                  \
+    "the radiative factor is that of the scattered particle losing up to %s; with the recoil "    \
+    "seen "                                                                                       \
+    "instead take it as an estimate: photons along the unseen particle cost no counts, so up to " \
+    "half of the correction may be too much"
+
 #endif
