@@ -33,7 +33,7 @@ double bh_ionisation_kept(const bh_external *x)
 
 double bh_mo_tsai_xi(int z, double thickness)
 {
-    const double l = log(183.0 / cbrt(z));
-    const double eta = log(1440.0 / pow(cbrt(z), 2)) / l;
+    const double l = log(184.15 / cbrt(z));
+    const double eta = log(1194.0 / pow(cbrt(z), 2)) / l;
     return BH_PI * BH_MASS_ELECTRON / (2.0 * BH_ALPHA) * thickness / ((z + eta) * l);
 }

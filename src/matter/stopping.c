@@ -15,6 +15,8 @@
  * would grow past what is measured for antiprotons. */
 #define CHARGE_BOTTOM 2.0
 
+#define ELECTRON_BOTTOM 1e-3 /* MeV */
+
 struct bh_stopping {
     bh_particle particle;
     bh_medium medium;
@@ -72,14 +74,21 @@ static bool is_muon(const bh_particle *p)
     return p->kind == BH_KIND_LEPTON && !bh_particle_is_electron(p);
 }
 
+/* Below ELECTRON_BOTTOM the formula would come to nothing in heavy elements. */
+static bh_loss electron_loss(const bh_stopping *s, double kinetic)
+{
+    const int charge = s->particle.charge;
+    const double from = fmax(kinetic, ELECTRON_BOTTOM);
+    return (bh_loss){bh_berger_seltzer(&s->medium, charge, from) * sqrt(kinetic / from),
+                     bh_electron_photons_at(&s->photons, &s->medium, charge, kinetic)};
+}
+
 bh_loss bh_stopping_at(const bh_stopping *s, double kinetic)
 {
     if (!(kinetic > 0.0) || !isfinite(kinetic))
         return (bh_loss){(double)NAN, (double)NAN};
-    const int charge = s->particle.charge;
     if (bh_particle_is_electron(&s->particle))
-        return (bh_loss){bh_berger_seltzer(&s->medium, charge, kinetic),
-                         bh_electron_photons_at(&s->photons, &s->medium, charge, kinetic)};
+        return electron_loss(s, kinetic);
     bh_loss loss = {.collision = heavy_loss(s, kinetic)};
     if (is_muon(&s->particle))
         loss.radiative = bh_log_spline_at(&s->muon, kinetic);
@@ -148,6 +157,7 @@ size_t bh_stopping_breaks(const bh_stopping *s, double kinetic[BH_STOPPING_BREAK
     insert(kinetic, &count, kinetic_at(&s->particle, pow(10.0, s->medium.effect.x0)));
     insert(kinetic, &count, kinetic_at(&s->particle, pow(10.0, s->medium.effect.x1)));
     if (bh_particle_is_electron(&s->particle)) {
+        insert(kinetic, &count, ELECTRON_BOTTOM);
         insert(kinetic, &count, 0.1);
         insert(kinetic, &count, 1000.0);
         return count;

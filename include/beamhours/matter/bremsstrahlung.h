@@ -33,7 +33,8 @@ double bh_external_kept(const bh_external *x);
 double bh_ionisation_kept(const bh_external *x);
 
 /* Returns [MeV] xi of `thickness` [1] radiation lengths by the rule of Mo and Tsai 1969, eq. B.9,
- * (pi m / 2 alpha) t / ((Z + eta) ln(183 Z^-1/3)), for comparison with older work; z >= 1. */
+ * (pi m / 2 alpha) t / ((Z + eta) ln(184.15 Z^-1/3)), eta = ln(1194 Z^-2/3) / ln(184.15 Z^-1/3),
+ * the numbers of Tsai 1974; for comparison with older work; z >= 1. */
 double bh_mo_tsai_xi(int z, double thickness);
 
 #endif
