@@ -72,7 +72,7 @@ double bh_moliere_width(const bh_moliere *m, double fraction)
 static double moliere_b(double omega)
 {
     const double b = log(omega / 1.167);
-    double big = b + log(b + 1.0) + 0.5;
+    double big = b + log1p(b) + 0.5;
     for (int i = 0; i < 30; i++)
         big -= (big - log(big) - b) / (1.0 - 1.0 / big);
     return big;
@@ -113,8 +113,9 @@ static double beyond_term(term t)
     const double step = fmin(0.5, 3.0 / fmax(t.angle, 1e-3));
     double sum = bh_gauss(term_integrand, &t, (bh_gauss_limits){1e-12, 0.1 * step}) +
                  bh_gauss(term_integrand, &t, (bh_gauss_limits){0.1 * step, step});
-    for (double u = step; u < 13.0; u += step)
-        sum += bh_gauss(term_integrand, &t, (bh_gauss_limits){u, u + step});
+    const int panels = (int)(13.0 / step); /* e^-u^2/4 leaves 1e-18 */
+    for (int i = 1; i <= panels; i++)
+        sum += bh_gauss(term_integrand, &t, (bh_gauss_limits){i * step, (i + 1) * step});
     return sum;
 }
 
