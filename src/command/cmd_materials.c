@@ -1,11 +1,16 @@
-/* cmd_materials.c - beamhours materials [NAME]: the library, or one of its materials. */
+/* cmd_materials.c - beamhours materials [NAME]: the library, one of its materials, or what that
+ * does to a particle. */
 #include <json-c/json.h>
+#include <math.h>
 #include <string.h>
 
 #include "beamhours/base/number.h"
+#include "beamhours/command/beam.h"
 #include "beamhours/command/complain.h"
 #include "beamhours/command/input.h"
+#include "beamhours/command/passage.h"
 #include "beamhours/command/places.h"
+#include "beamhours/matter/radiation_length.h"
 #include "beamhours/report/text_table.h"
 #include "beamhours/units/nuclide.h"
 
@@ -21,13 +26,15 @@ enum { FACTS = 14 };
 
 static size_t facts_of(const bh_material *m, struct fact facts[FACTS])
 {
+    const bh_radiation_length length = bh_radiation_length_of(m);
     const struct fact all[] = {
         {"density_g_per_cm3", "g/cm3", m->density},
         {"temperature_K", "K", m->temperature},
         {"pressure_Pa", "Pa", m->pressure},
         {"mean_atomic_mass_g_per_mol", "g/mol", m->mean_atomic_mass},
         {"mean_excitation_energy_eV", "eV", m->effect.mean_excitation * 1e6},
-        {"radiation_length_g_per_cm2", "g/cm2", m->published_x0},
+        {"radiation_length_g_per_cm2", "g/cm2", length.value},
+        {"radiation_length_computed_g_per_cm2", "g/cm2", length.computed},
         {"melting_point_K", "K", m->melting},
         {"boiling_point_K", "K", m->boiling},
         {"thermal_conductivity_W_per_cm_K", "W/cm/K", m->conductivity},
@@ -47,7 +54,7 @@ static void effect_text(const bh_material *m, bh_text *out)
         return;
     const double v[] = {e->c, e->x0, e->x1, e->a, e->k, e->delta0};
     static const char *const names[] = {"C", "x0", "x1", "a", "k", "delta0"};
-    bh_text_appendf(out, "  %-34s", "density effect");
+    bh_text_appendf(out, "  %-36s", "density effect");
     for (size_t i = 0; i < sizeof v / sizeof v[0]; i++) {
         bh_text_appendf(out, " %s ", names[i]);
         bh_text_append_number(out, v[i]);
@@ -76,7 +83,7 @@ static void as_text(const bh_material *m, bh_text *out)
     if (m->summary)
         bh_report_wrapped("  ", m->summary, width, out);
     for (size_t i = 0; i < n; i++) {
-        bh_text_appendf(out, "  %-34s ", facts[i].key);
+        bh_text_appendf(out, "  %-36s ", facts[i].key);
         bh_text_append_number(out, facts[i].value);
         bh_text_appendf(out, " %s\n", facts[i].unit);
     }
@@ -167,19 +174,68 @@ static int all(bh_material_library *library, bool json, bh_diags *diags, bh_text
     return bh_diags_errors(diags) ? 65 : 0;
 }
 
+static void passage_text(const bh_passage_facts *facts, bh_text *out)
+{
+    char digits[BH_NUMBER_SIZE];
+    for (size_t i = 0; i < facts->count; i++) {
+        (void)bh_number_digits(facts->facts[i].value, 5, digits, sizeof digits);
+        bh_text_appendf(out, "  %-52s %s %s\n", facts->facts[i].key, digits, facts->facts[i].unit);
+    }
+}
+
+/* What --particle and --kinetic-energy ask for; nothing when neither is given. */
+static int passing(const bh_arguments *a, const bh_material *m, bh_passage_facts *out)
+{
+    bh_particle particle;
+    bh_error err;
+    double kinetic = NAN;
+    out->count = 0;
+    if (!a->value[BH_OPT_PARTICLE] && !a->value[BH_OPT_KINETIC])
+        return 0;
+    int bad = bh_beam_particle(a, &particle);
+    if (!bad && !a->value[BH_OPT_KINETIC])
+        bad = bh_usage(a, "needs --kinetic-energy beside --particle");
+    if (!bad)
+        bad = bh_beam_kinetic(a, &particle, &kinetic);
+    if (bad)
+        return bad;
+    const bh_code code = bh_passage_of(&particle, m, kinetic, out, &err);
+    if (code == BH_EDOMAIN)
+        return bh_usage(a, err.text);
+    return code ? bh_complain(stderr, &err) : 0;
+}
+
+/* Numbers of the passage stand beside those of the material. */
+static json_object *with_passage(const bh_material *m, const bh_passage_facts *facts)
+{
+    json_object *o = as_object(m);
+    for (size_t i = 0; i < facts->count; i++)
+        (void)json_object_object_add(o, facts->facts[i].key, number(facts->facts[i].value));
+    return o;
+}
+
 static int named(const bh_arguments *a, bh_material_library *library, bool json, bh_diags *diags)
 {
     bh_text out = {0};
+    bh_passage_facts facts;
     const bh_material *m = load(library, a->words[0], diags);
     if (!m) {
         for (size_t i = 0; i < bh_diags_count(diags); i++)
             fprintf(stderr, "beamhours: materials: %s\n", bh_diags_at(diags, i)->text);
         return 65;
     }
-    if (json)
-        finish(as_object(m), &out);
-    else
+    const int bad = passing(a, m, &facts);
+    if (bad)
+        return bad;
+    if (json) {
+        finish(with_passage(m, &facts), &out);
+    } else if (facts.count) {
+        bh_text_appendf(&out, "%s of %s in %s\n", a->value[BH_OPT_PARTICLE],
+                        a->value[BH_OPT_KINETIC], m->name);
+        passage_text(&facts, &out);
+    } else {
         as_text(m, &out);
+    }
     return bh_output(&out, NULL);
 }
 
@@ -190,6 +246,9 @@ int bh_cmd_materials(const bh_arguments *arguments)
         return bh_usage(arguments, "choose one of these");
     if (arguments->word_count > 1)
         return bh_usage(arguments, "takes one name at most");
+    if (!arguments->word_count &&
+        (arguments->value[BH_OPT_PARTICLE] || arguments->value[BH_OPT_KINETIC]))
+        return bh_usage(arguments, "needs the name of a material that the particle passes");
     const bool json = strcmp(format, "json") == 0;
     char **folders = bh_places_materials(NULL);
     bh_material_library *library =

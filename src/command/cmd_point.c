@@ -5,6 +5,7 @@
 #include <string.h>
 
 #include "beamhours/base/number.h"
+#include "beamhours/command/beam.h"
 #include "beamhours/command/complain.h"
 #include "beamhours/command/input.h"
 #include "beamhours/command/places.h"
@@ -34,26 +35,9 @@ static int quantity(const bh_arguments *a, bh_option_id id, bh_dimension dimensi
     return 0;
 }
 
-static int particle(const bh_arguments *a, bh_particle *out)
-{
-    char sentence[256];
-    const char *given = a->value[BH_OPT_PARTICLE];
-    if (!given)
-        return bh_usage(a, "needs --particle, such as electron, muon-, proton, alpha, 12C");
-    if (bh_particle_find(given, out))
-        return 0;
-    const char *near = bh_particle_suggest(given);
-    (void)snprintf(sentence, sizeof sentence, "no particle \"%s\"; %s%s", given,
-                   near ? "did you mean " : "there are electron, proton, alpha, 12C ...",
-                   near ? near : "");
-    return bh_usage(a, sentence);
-}
-
 static int energy(const bh_arguments *a, bh_single_request *r)
 {
     double total = NAN, momentum = NAN;
-    bh_quantity q;
-    bh_error err;
     const char *kinetic = a->value[BH_OPT_KINETIC];
     int bad = quantity(a, BH_OPT_TOTAL, BH_DIM_ENERGY, &total);
     if (!bad)
@@ -63,11 +47,9 @@ static int energy(const bh_arguments *a, bh_single_request *r)
     if ((kinetic != NULL) + !isnan(total) + !isnan(momentum) > 1)
         return bh_usage(a, "give one of --kinetic-energy, --total-energy and --momentum");
     const double m = r->beam.mass;
-    if (kinetic && bh_quantity_parse(kinetic, BH_DIM_ENERGY_OR_PER_U, &q, &err))
-        return bh_usage(a, err.text);
     if (kinetic)
-        r->kinetic = q.per_u ? q.value * r->beam.a : q.value;
-    else if (!isnan(total))
+        return bh_beam_kinetic(a, &r->beam, &r->kinetic);
+    if (!isnan(total))
         r->kinetic = total - m;
     else if (!isnan(momentum)) /* no cancellation when slow */
         r->kinetic = momentum * momentum / (sqrt(momentum * momentum + m * m) + m);
@@ -130,7 +112,7 @@ static int request_of(const bh_arguments *a, struct point *p)
     *r = (bh_single_request){.kinetic = NAN, .angle = NAN, .q2 = NAN, .epsilon = NAN};
     if (a->word_count)
         return bh_usage(a, "takes options only, such as -E 855MeV -a 25deg");
-    int bad = particle(a, &r->beam);
+    int bad = bh_beam_particle(a, &r->beam);
     if (!bad)
         bad = scatterer(a, r);
     if (!bad)

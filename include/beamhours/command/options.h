@@ -18,7 +18,8 @@
     X(BH_CMD_POINT, "point", "", "one point without a plan", bh_cmd_point)                         \
     X(BH_CMD_CURVE, "curve", "PLAN", "a column against angle, energy, q2 or epsilon",              \
       bh_cmd_curve)                                                                                \
-    X(BH_CMD_MATERIALS, "materials", "[NAME]", "the library of materials", bh_cmd_materials)       \
+    X(BH_CMD_MATERIALS, "materials", "[NAME]",                                                     \
+      "the library of materials; what one does to a particle", bh_cmd_materials)                   \
     X(BH_CMD_MODELS, "models", "[NAME]", "processes and models: range and source", bh_cmd_models)  \
     X(BH_CMD_HELP, "help", "[COMMAND]", "open the manual page", bh_cmd_help)
 
@@ -50,11 +51,11 @@ typedef enum {
       "what varies: angle (default), energy, q2, epsilon")                                         \
     X(BH_OPT_SHOW, 0, "show", "KEY", "curve", "",                                                  \
       "the column to show (default: point_cross_section_ub_per_sr)")                               \
-    X(BH_OPT_PARTICLE, 'p', "particle", "P", "point",                                              \
+    X(BH_OPT_PARTICLE, 'p', "particle", "P", "point,materials",                                    \
       "electron,positron,muon-,muon+,pion-,pion+,proton,deuteron,triton,helion,alpha",             \
-      "the beam particle")                                                                         \
+      "the beam particle, or the one that passes")                                                 \
     X(BH_OPT_SCATTERER, 0, "scatterer", "NUCLIDE", "point", "", "what is struck, such as 12C")     \
-    X(BH_OPT_KINETIC, 'E', "kinetic-energy", "E", "point", "", "beam kinetic energy")              \
+    X(BH_OPT_KINETIC, 'E', "kinetic-energy", "E", "point,materials", "", "its kinetic energy")     \
     X(BH_OPT_TOTAL, 0, "total-energy", "E", "point", "", "beam total energy")                      \
     X(BH_OPT_MOMENTUM, 0, "momentum", "P", "point", "", "beam momentum")                           \
     X(BH_OPT_ANGLE, 'a', "angle", "A", "point", "", "lab angle of the detected particle")          \
