@@ -73,12 +73,21 @@ static int choices(const bh_arguments *a, bh_single_request *r)
     const char *detects = a->value[BH_OPT_DETECTS], *coulomb = a->value[BH_OPT_COULOMB];
     r->structure = a->value[BH_OPT_STRUCTURE];
     r->process = a->value[BH_OPT_PROCESS];
+    r->radiative = a->value[BH_OPT_RADIATIVE];
     if (detects && strcmp(detects, "scattered") != 0 && strcmp(detects, "recoil") != 0)
         return bh_usage(a, "--detects is scattered or recoil");
     r->recoil = detects && strcmp(detects, "recoil") == 0;
     if (coulomb && strcmp(coulomb, "default") != 0 && !bh_coulomb_find(coulomb))
         return bh_usage(a, "--coulomb is default or plane-wave");
     return 0;
+}
+
+static int cut(const bh_arguments *a, bh_single_request *r)
+{
+    const int bad = quantity(a, BH_OPT_ENERGY_CUT, BH_DIM_ENERGY, &r->energy_cut);
+    if (!bad && a->value[BH_OPT_ENERGY_CUT] && !(r->energy_cut > 0.0))
+        return bh_usage(a, "--energy-cut must be above 0 MeV");
+    return bad;
 }
 
 static int rate_inputs(const bh_arguments *a, struct point *p)
@@ -123,6 +132,8 @@ static int request_of(const bh_arguments *a, struct point *p)
         bad = quantity(a, BH_OPT_Q2, BH_DIM_Q2, &r->q2);
     if (!bad)
         bad = choices(a, r);
+    if (!bad)
+        bad = cut(a, r);
     const char *epsilon = a->value[BH_OPT_EPSILON], *end = NULL;
     if (!bad && epsilon && (bh_number_parse(epsilon, &end, &r->epsilon) || *end))
         bad = bh_usage(a, "--epsilon needs a bare number, such as 0.6");

@@ -5,9 +5,12 @@
 #include <stdio.h>
 #include <string.h>
 
+#include "beamhours/base/number.h"
+#include "beamhours/base/sentences.h"
 #include "beamhours/physics/kinematics.h"
 #include "beamhours/physics/one_photon.h"
 #include "beamhours/physics/process.h"
+#include "beamhours/physics/radiative.h"
 #include "beamhours/run/columns.h"
 #include "beamhours/run/event_search.h"
 #include "beamhours/units/constants.h"
@@ -79,6 +82,59 @@ static double nuclei_per_cm2(const bh_single_request *r)
            share;
 }
 
+/* The models that a request names. */
+typedef struct {
+    const bh_process *process;
+    const bh_radiative *radiative;
+} bh_chosen;
+
+static bh_code choose(const bh_single_request *r, bh_chosen *out, bh_error *err)
+{
+    const bool cut = r->energy_cut != 0.0;
+    out->process = bh_process_find(r->process ? r->process : "elastic");
+    out->radiative = bh_radiative_find(cut || r->radiative ? r->radiative : "none");
+    if (!out->process)
+        return bh_fail(err, BH_EDOMAIN, "no process \"%s\"; there is %s", r->process,
+                       bh_process_at(0)->name);
+    if (!out->radiative)
+        return bh_fail(err, BH_EDOMAIN,
+                       "no radiative correction \"%s\"; there are none, schwinger, mo-tsai and "
+                       "maximon-tjon",
+                       r->radiative);
+    if (cut && !(r->energy_cut > 0.0))
+        return bh_fail(err, BH_EDOMAIN, "an energy cut of %g MeV; it must be above 0 MeV",
+                       r->energy_cut);
+    if (!cut && out->radiative != bh_radiative_find("none"))
+        return bh_fail(err, BH_EDOMAIN, "%s needs an energy cut, such as --energy-cut 10MeV",
+                       out->radiative->name);
+    return BH_OK;
+}
+
+/* Adds what the cut keeps and what that is made of, where radiation was asked for.  Returns the
+ * factor. */
+static double add_radiation(bh_single *out, const bh_single_request *r, const bh_radiative *model,
+                            const bh_encounter *encounter, const bh_event *e)
+{
+    if (r->energy_cut == 0.0 && !r->radiative)
+        return 1.0;
+    const double cut = r->energy_cut;
+    const bh_radiative_parts parts = model->parts(encounter, cut, e);
+    double factor = 1.0;
+    model->factor(encounter, cut, 1, e, &factor);
+    add_text(out, "radiative", model->name);
+    add(out, "radiative_factor_internal", "", factor);
+    add(out, "delta_z0", "", parts.z0);
+    add(out, "delta_z1", "", parts.z1);
+    add(out, "delta_z2", "", parts.z2);
+    add(out, "vacuum_polarisation", "", parts.vacuum);
+    (void)model->caveat(encounter, cut, e, out->warning[3], sizeof out->warning[3]);
+    char lost[BH_NUMBER_SIZE + 4];
+    (void)snprintf(lost, sizeof lost, "%.4g MeV", cut);
+    if (r->recoil && factor != 1.0)
+        (void)snprintf(out->warning[4], sizeof out->warning[4], BH_WARN_RADIATIVE_RECOIL, lost);
+    return factor;
+}
+
 static bh_code add_rate(bh_single *out, const bh_single_request *r, double cross_section,
                         bh_error *err)
 {
@@ -99,29 +155,30 @@ static bh_code add_rate(bh_single *out, const bh_single_request *r, double cross
     return BH_OK;
 }
 
-static bh_code add_cross_sections(bh_single *out, const bh_single_request *r,
-                                  const bh_process *process, const bh_encounter *encounter,
-                                  const bh_event *e, bh_error *err)
+/* Returns [ub/sr] the cross section that counts: of the detected particle, what the cut keeps. */
+static double add_cross_sections(bh_single *out, const bh_single_request *r,
+                                 const bh_chosen *chosen, const bh_encounter *encounter,
+                                 const bh_event *e)
 {
     const bh_collision in = {r->beam.mass, encounter->target, encounter->kinetic};
     const int charges = encounter->charge * encounter->z;
     double sigma = 0.0;
-    process->cross_section(encounter, 1, e, &sigma);
+    chosen->process->cross_section(encounter, 1, e, &sigma);
     const double detected = r->recoil ? sigma * e->scattered_per_recoil : sigma;
     add_column(out, BH_COL_POINT_CROSS_SECTION, detected);
     if (r->beam.kind == BH_KIND_LEPTON)
         add(out, "mott_cross_section_ub_per_sr", "ub/sr", bh_mott(&in, e, charges));
     add(out, "rutherford_cross_section_ub_per_sr", "ub/sr", bh_rutherford(&in, e, charges));
-    (void)snprintf(out->formula, sizeof out->formula, "%s", process->formula(encounter));
+    (void)snprintf(out->formula, sizeof out->formula, "%s", chosen->process->formula(encounter));
     (void)snprintf(out->source, sizeof out->source, "%s",
                    bh_structure_source(encounter->structure));
     warn_range(out, encounter->structure, e->q2);
-    (void)process->caveat(encounter, out->warning[2], sizeof out->warning[2]);
-    return add_rate(out, r, detected, err);
+    (void)chosen->process->caveat(encounter, out->warning[2], sizeof out->warning[2]);
+    return detected * add_radiation(out, r, chosen->radiative, encounter, e);
 }
 
 static bh_code with_structure(const bh_single_request *r, const bh_nuclide *nuclide,
-                              const bh_process *process, bh_single *out, bh_error *err)
+                              const bh_chosen *chosen, bh_single *out, bh_error *err)
 {
     bh_structure *structure = bh_structure_new(r->structure, r->z, r->a, err);
     if (!structure)
@@ -143,7 +200,8 @@ static bh_code with_structure(const bh_single_request *r, const bh_nuclide *nucl
         (void)snprintf(out->structure, sizeof out->structure, "%s", bh_structure_name(structure));
         add_text(out, "structure", out->structure);
         add_event(out, r, &event, kinetic);
-        bad = add_cross_sections(out, r, process, &encounter, &event, err);
+        const double counts = add_cross_sections(out, r, chosen, &encounter, &event);
+        bad = add_rate(out, r, counts, err);
     }
     bh_structure_free(structure);
     return bad;
@@ -152,17 +210,17 @@ static bh_code with_structure(const bh_single_request *r, const bh_nuclide *nucl
 bh_code bh_single_compute(const bh_single_request *request, bh_single *out, bh_error *err)
 {
     const bh_nuclide *nuclide = bh_nuclide_find(request->z, request->a);
-    const bh_process *process = bh_process_find(request->process ? request->process : "elastic");
+    bh_chosen chosen;
     *out = (bh_single){.count = 0};
     if (!nuclide)
         return bh_fail(err, BH_EDOMAIN, "no nuclide with Z = %d, A = %d in the table of masses",
                        request->z, request->a);
-    if (!process)
-        return bh_fail(err, BH_EDOMAIN, "no process \"%s\"; there is %s", request->process,
-                       bh_process_at(0)->name);
+    const bh_code bad = choose(request, &chosen, err);
+    if (bad)
+        return bad;
     (void)bh_nuclide_name(request->z, request->a, out->scatterer);
     add_text(out, "particle", request->beam.name);
     add_text(out, "scatterer", out->scatterer);
-    add_text(out, "process", process->name);
-    return with_structure(request, nuclide, process, out, err);
+    add_text(out, "process", chosen.process->name);
+    return with_structure(request, nuclide, &chosen, out, err);
 }

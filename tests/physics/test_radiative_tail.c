@@ -143,6 +143,34 @@ START_TEST(soft_factor_falls_towards_the_peak)
 }
 END_TEST
 
+/* Far below the peak at small angles the nucleus takes least along u: 1/q2^2 has a third peak. */
+START_TEST(three_peaks)
+{
+    const char *source = "the same integral over panels a seventh as long";
+    const struct {
+        const char *model;
+        int z, a;
+        double M, energy, degrees, kinetic, want; /* [ub/sr/MeV] */
+    } row[] = {{"default", 82, 208, 193687.7, 1000.0, 10.0, 200.0, 178.402975772},
+               {"default", 82, 208, 193687.7, 500.0, 60.0, 150.0, 0.00221992162089},
+               {"default", 6, 12, 11174.86, 400.0, 60.0, 80.0, 0.00897464662093},
+               {"default", 1, 1, 938.272, 15000.0, 5.0, 2100.0, 0.000401764949076}};
+    for (int i = 0; i < COUNT(row); i++) {
+        bh_particle beam;
+        ck_assert(bh_particle_find("electron", &beam));
+        bh_structure *structure = bh_structure_new(row[i].model, row[i].z, row[i].a, NULL);
+        ck_assert(structure);
+        const bh_encounter x = {&beam,         -1,        row[i].z, row[i].a, row[i].M,
+                                row[i].energy, structure, 0.0};
+        double tail;
+        bh_radiative_tail_exact(&x, row[i].degrees * BH_DEGREE, 1, &row[i].kinetic, &tail);
+        ck_assert_msg(fabs(tail / row[i].want - 1.0) < 1e-9, "%d: %.12g, not %.12g (%s)", i, tail,
+                      row[i].want, source);
+        bh_structure_free(structure);
+    }
+}
+END_TEST
+
 /* Hard photons vanish with the cut in proportion, and are the tail less its soft form. */
 START_TEST(hard_photons)
 {
@@ -184,6 +212,7 @@ int main(void)
     tcase_add_test(tests, peaking_against_exact);
     tcase_add_test(tests, several_energies_are_each_alone);
     tcase_add_test(tests, soft_factor_falls_towards_the_peak);
+    tcase_add_test(tests, three_peaks);
     tcase_add_test(tests, hard_photons);
     tcase_add_test(tests, others_have_no_tail);
     return run_suite("radiative_tail", tests);

@@ -63,6 +63,10 @@ typedef enum {
     X(BH_OPT_EPSILON, 0, "epsilon", "N", "point", "", "virtual-photon polarisation")               \
     X(BH_OPT_STRUCTURE, 0, "structure", "NAME", "point,curve", "", "structure model (curve: A,B)") \
     X(BH_OPT_COULOMB, 0, "coulomb", "NAME", "point", "default,plane-wave", "Coulomb model")        \
+    X(BH_OPT_RADIATIVE, 0, "radiative", "NAME", "point",                                           \
+      "default,none,schwinger,mo-tsai,maximon-tjon", "internal radiative correction")              \
+    X(BH_OPT_ENERGY_CUT, 0, "energy-cut", "E", "point", "",                                        \
+      "energy that unseen photons may take, below the elastic line")                               \
     X(BH_OPT_PROCESS, 0, "process", "NAME", "point", "elastic", "process (default: elastic)")      \
     X(BH_OPT_DETECTS, 0, "detects", "WHICH", "point", "scattered,recoil",                          \
       "whose angle is meant: scattered (default) or recoil")                                       \

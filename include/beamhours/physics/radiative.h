@@ -45,8 +45,8 @@ typedef struct {
                   size_t size);
 } bh_radiative;
 
-/* By name; NULL when it is not in the registry.  "default" or a NULL name: what is used where a
- * plan says nothing.  The i-th; NULL past the end. */
+/* By name; NULL when it is not in the registry.  "default" or a NULL name: "maximon-tjon".  The
+ * i-th; NULL past the end. */
 const bh_radiative *bh_radiative_find(const char *name);
 const bh_radiative *bh_radiative_at(int i);
 

@@ -21,6 +21,8 @@ typedef struct {
     bool recoil;           /* the detected particle is the recoil */
     const char *process;   /* NULL: elastic */
     const char *structure; /* NULL: default */
+    const char *radiative; /* NULL: default where there is a cut, else none */
+    double energy_cut;     /* [MeV] below the elastic line; 0: no radiation */
     double current;        /* [A] electrical; a rate needs these four */
     const bh_material *material;
     double thickness;   /* [cm] */
@@ -43,7 +45,7 @@ typedef struct {
     char scatterer[8], structure[48]; /* names that values[] point to */
     char formula[160];                /* which formula, in words */
     char source[256];                 /* of the structure model */
-    char warning[3][256];             /* "" where there is none */
+    char warning[5][320];             /* "" where there is none */
 } bh_single;
 
 /*

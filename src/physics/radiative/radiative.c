@@ -189,9 +189,9 @@ const bh_radiative *bh_radiative_at(int i)
 
 const bh_radiative *bh_radiative_find(const char *name)
 {
-    const bh_radiative *row = &models[0];
+    const bh_radiative *row = NULL;
     if (!name || strcmp(name, "default") == 0)
-        return row;
+        name = "maximon-tjon"; /* 1 for what is no lepton */
     for (int i = 0; (row = bh_radiative_at(i)) && strcmp(row->name, name) != 0; i++)
         ;
     return row;

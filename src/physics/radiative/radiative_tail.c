@@ -11,7 +11,7 @@
 
 #define ALPHA_PI (BH_ALPHA / BH_PI)
 enum { POINTS = 16 };
-#define PANEL 1.5 /* in the variable that flattens a peak; longer ones lose digits */
+#define PANEL 2.0 /* in the variable that flattens a peak; longer ones lose digits */
 
 static double node_of(int i)
 {
@@ -68,7 +68,8 @@ typedef struct {
 static bh_direction direction_of(const bh_emission *e, double angle)
 {
     bh_direction d;
-    const double lost = e->E - e->Es, c = cos(angle), below = e->u0 - e->u * c;
+    const double lost = e->E - e->Es, half = sin(0.5 * angle), turn = 2.0 * e->u * half * half;
+    const double below = e->M - 2.0 * e->S / (lost + e->u) + turn; /* u0 - u cos(angle) */
     d.w = e->hadron / below;
     const double out1 = nearness(e->m2, e->Es, e->ps, angle - e->at_scattered);
     const double out2 = nearness(e->m2, e->Es, e->ps, angle + e->at_scattered);
@@ -78,7 +79,7 @@ static bh_direction direction_of(const bh_emission *e, double angle)
     d.x = d.w * sqrt(out1 * out2);
     d.b = 0.5 * d.w * (in1 + in2);
     d.y = d.w * sqrt(in1 * in2);
-    d.q2 = 2.0 * (e->S + d.w * (lost - e->u * c));
+    d.q2 = 2.0 * (e->S * (1.0 - 2.0 * d.w / (lost + e->u)) + d.w * turn);
     d.flux = 2.0 * e->M * d.w / (d.q2 * d.q2 * below);
     return d;
 }
@@ -138,7 +139,11 @@ static double exact(const bh_encounter *x, double angle, double kinetic)
     const bh_emission e = emission_of(x, angle, kinetic);
     const double m = x->beam->mass, middle = 0.5 * (e.at_beam + e.at_scattered);
     const double before = m / e.E, after = m / e.Es;
-    const bh_stretch stretch[] = {{e.at_beam, 0.0, before},
+    /* along u the nucleus takes the least momentum, and 1/q2^2 has a peak of its own */
+    const bh_direction along = direction_of(&e, 0.0);
+    const double least = fmin(1.0, sqrt(along.q2 / (along.w * e.u)));
+    const bh_stretch stretch[] = {{0.0, 0.5 * e.at_beam, least},
+                                  {e.at_beam, 0.5 * e.at_beam, before},
                                   {e.at_beam, middle, before},
                                   {e.at_scattered, middle, after},
                                   {e.at_scattered, BH_PI, after}};

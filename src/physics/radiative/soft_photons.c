@@ -59,11 +59,12 @@ static double energies(const bh_ray *a, const bh_ray *b, double product, double 
 /* The same for equal masses a small rapidity `chi` apart, as an integral over the rapidity. */
 static double energies_near(const bh_ray *a, const bh_ray *b, double chi)
 {
+    const double scale = 1.0 / (a->mass * sinh(chi));
     double sum = 0.0;
     for (int i = 0; i < 16; i++) {
         const double node = i < 8 ? bh_gauss16_node[i] : -bh_gauss16_node[i - 8];
         const double x = 0.5 * chi * (1.0 + node);
-        const double e = (a->energy * sinh(x) + b->energy * sinh(chi - x)) / a->mass / sinh(chi);
+        const double e = scale * (a->energy * sinh(x) + b->energy * sinh(chi - x));
         const bh_ray between = {1.0, e, sqrt(fmax((e - 1.0) * (e + 1.0), 0.0))};
         sum += bh_gauss16_weight[i % 8] * along(&between);
     }
@@ -76,14 +77,22 @@ static double rapidity(double m, double q2)
     return 2.0 * asinh(0.5 * sqrt(q2) / m);
 }
 
-/* One particle before and after: the integrals I_aa + I_bb - 2 I_ab, with the photon mass its own
- * mass; `chi` > 0 is their rapidity. */
-static double leg(const bh_ray *a, const bh_ray *b, double chi, double photon)
+/* int x coth x dx from 0 to `chi`: what `energies` is, over product / root, where one of the two is
+ * at rest and the other `chi` away in rapidity. */
+static double from_rest(double chi)
 {
-    const double m2 = a->mass * a->mass, l = log(2.0 * photon / a->mass);
-    const double between =
-        chi < SMALL ? energies_near(a, b, chi) : energies(a, b, m2 * cosh(chi), m2 * sinh(chi));
-    return 2.0 * l * (1.0 - chi / tanh(chi)) - along(a) - along(b) + 2.0 * between;
+    const double x2 = chi * chi;
+    if (chi < 0.02)
+        return chi * (1.0 + x2 * (1.0 / 9.0 - x2 * (1.0 / 225.0 - x2 * (2.0 / 6615.0))));
+    const double e = exp(-2.0 * chi);
+    return 0.5 * x2 + chi * log1p(-e) + 0.5 * (BH_PI * BH_PI / 6.0 - bh_dilog(e));
+}
+
+/* I_aa + I_bb - 2 I_ab of one particle before and after: the photon mass its own mass, `photon` the
+ * energy that photons may take, `between` the integral of energies. */
+static double leg(double chi, double photon, double mass, double alone, double between)
+{
+    return 2.0 * log(2.0 * photon / mass) * (1.0 - chi / tanh(chi)) - alone + 2.0 * between;
 }
 
 /* K(pa, pb) of one particle before and after, the photon mass its own mass. */
@@ -102,7 +111,12 @@ double bh_soft_lepton(const bh_soft *in)
     /* in that frame beam and scattered exchange their energies */
     const bh_ray before = {in->mass, in->scattered_energy, in->scattered_momentum};
     const bh_ray after = {in->mass, in->beam_energy, in->beam_momentum};
-    const double real = leg(&before, &after, chi, in->slope * in->cut);
+    const double m2 = in->mass * in->mass;
+    const double between = chi < SMALL
+                               ? energies_near(&before, &after, chi)
+                               : energies(&before, &after, m2 + 0.5 * in->q2, m2 * sinh(chi));
+    const double real =
+        leg(chi, in->slope * in->cut, in->mass, along(&before) + along(&after), between);
     const double t = tanh(0.5 * chi);
     const double f1 = (1.0 / t + 0.5 * t) * chi - 2.0 - vertex(chi);
     return ALPHA_PI * (f1 - real);
@@ -118,8 +132,9 @@ double bh_soft_target(const bh_soft *in)
     if (in->q2 == 0.0)
         return 0.0;
     const double M = in->target, chi = rapidity(M, in->q2);
-    const bh_ray before = {M, M + 0.5 * in->q2 / M, recoil_momentum(in)}, after = {M, M, 0.0};
-    return -ALPHA_PI * (leg(&before, &after, chi, in->slope * in->cut) + vertex(chi));
+    const double ratio = 1.0 / tanh(chi); /* E4 / p4 */
+    const double real = leg(chi, in->slope * in->cut, M, ratio * chi + 1.0, ratio * from_rest(chi));
+    return -ALPHA_PI * (real + vertex(chi));
 }
 
 double bh_soft_rate(const bh_soft *in)
@@ -134,13 +149,11 @@ double bh_soft_rate(const bh_soft *in)
 static double pairs(const bh_soft *in)
 {
     const double M = in->target, E1 = in->beam_energy, E3 = in->scattered_energy;
-    const bh_ray before = {in->mass, E3, in->scattered_momentum};
-    const bh_ray after = {in->mass, E1, in->beam_momentum};
-    const bh_ray struck = {M, M + 0.5 * in->q2 / M, recoil_momentum(in)}, recoil = {M, M, 0.0};
-    const double s = M * E1, s_root = M * in->beam_momentum;
-    const double u = M * E3, u_root = M * in->scattered_momentum;
-    return energies(&before, &struck, s, s_root) + energies(&after, &recoil, s, s_root) -
-           energies(&before, &recoil, u, u_root) - energies(&after, &struck, u, u_root);
+    const double p1 = in->beam_momentum, p3 = in->scattered_momentum;
+    const bh_ray before = {in->mass, E3, p3}, after = {in->mass, E1, p1};
+    const bh_ray struck = {M, M + 0.5 * in->q2 / M, recoil_momentum(in)};
+    return energies(&before, &struck, M * E1, M * p1) + E1 / p1 * from_rest(asinh(p1 / in->mass)) -
+           energies(&after, &struck, M * E3, M * p3) - E3 / p3 * from_rest(asinh(p3 / in->mass));
 }
 
 /* (p1 p2) int dx / px^2 - (p1 p4) int dx / px^2 */
