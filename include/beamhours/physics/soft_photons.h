@@ -25,14 +25,14 @@ bh_soft bh_soft_of(const bh_collision *in, const bh_event *e, double cut);
 /*
  * All return a delta of the cross section, delta = d sigma / sigma - 1 to first order in alpha,
  * with soft photons up to energy slope x cut in the rest frame of recoil and photon.  Thread safe.
- * Accuracy 1e-11 absolute of the integrals; as physics see radiative.h.
+ * Accuracy 2e-10 absolute of the integrals; as physics see radiative.h.
  *
  * Source: the soft integrals by 't Hooft & Veltman, Nucl. Phys. B 153 (1979) 365, section 7; their
  * use by Maximon & Tjon, Phys. Rev. C 62 (2000) 054320.
  */
 
 /* Returns [1] the lepton's own: soft photons with the exact Dirac form factor F1 to one loop; no
- * vacuum polarisation.  Left out: the Pauli form factor, at most 2.3e-3 of a muon's and 1e-5 of an
+ * vacuum polarisation.  Left out: the Pauli form factor, at most 2.3e-3 of a muon's and 1e-4 of an
  * electron's cross section above 10 MeV. */
 double bh_soft_lepton(const bh_soft *in);
 
