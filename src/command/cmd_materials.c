@@ -27,7 +27,7 @@ enum { FACTS = 14 };
 static size_t facts_of(const bh_material *m, struct fact facts[FACTS])
 {
     const bh_radiation_length length = bh_radiation_length_of(m);
-    const struct fact all[] = {
+    const struct fact known[] = {
         {"density_g_per_cm3", "g/cm3", m->density},
         {"temperature_K", "K", m->temperature},
         {"pressure_Pa", "Pa", m->pressure},
@@ -41,9 +41,9 @@ static size_t facts_of(const bh_material *m, struct fact facts[FACTS])
         {"density_effect_density_g_per_cm3", "g/cm3", m->effect.density},
     };
     size_t n = 0;
-    for (size_t i = 0; i < sizeof all / sizeof all[0]; i++)
-        if (all[i].value > 0.0)
-            facts[n++] = all[i];
+    for (size_t i = 0; i < sizeof known / sizeof known[0]; i++)
+        if (known[i].value > 0.0)
+            facts[n++] = known[i];
     return n;
 }
 
@@ -64,12 +64,12 @@ static void effect_text(const bh_material *m, bh_text *out)
 
 static void composition_text(const bh_material *m, bh_text *out)
 {
-    char name[8], number[BH_NUMBER_SIZE];
+    char name[8], digits[BH_NUMBER_SIZE];
     bh_text_append(out, "  composition, share of atoms\n");
     for (size_t i = 0; i < m->count; i++) {
-        (void)bh_number_digits(m->parts[i].per_atom * 100.0, 6, number, sizeof number);
+        (void)bh_number_digits(m->parts[i].per_atom * 100.0, 6, digits, sizeof digits);
         bh_text_appendf(out, "    %-6s %10s %%%s\n",
-                        bh_nuclide_name(m->parts[i].z, m->parts[i].a, name), number,
+                        bh_nuclide_name(m->parts[i].z, m->parts[i].a, name), digits,
                         m->parts[i].natural ? "  (as in nature)" : "");
     }
 }
