@@ -1,14 +1,22 @@
 /* workspace.c - what evaluations may share: form factors made ready, cross sections summed. */
 #include "beamhours/run/workspace.h"
 
+#include <math.h>
 #include <stdalign.h>
 #include <stdint.h>
 #include <stdlib.h>
 #include <string.h>
 
 #include "beamhours/base/arena.h"
+#include "beamhours/matter/radiation_length.h"
 
-enum { BUCKETS = 4096, MOST_BYTES = 8 << 20, MOST_STRUCTURES = 1024, ALIGN = alignof(max_align_t) };
+enum {
+    BUCKETS = 4096,
+    MOST_BYTES = 8 << 20,
+    MOST_STRUCTURES = 1024,
+    MOST_RANGES = 512,
+    ALIGN = alignof(max_align_t)
+};
 
 struct entry {
     struct entry *next;
@@ -18,6 +26,12 @@ struct entry {
     alignas(max_align_t) unsigned char data[];
 };
 
+/* A particle in a substance; the second needs the first. */
+struct ranged {
+    bh_stopping *stopping;
+    bh_range *range;
+};
+
 struct bh_workspace {
     bh_average_workspace *averages;
     bh_arena *arena; /* of entries and their contents */
@@ -25,6 +39,8 @@ struct bh_workspace {
     bh_sum_scratch scratch;
     size_t structure_count;
     bh_structure *structures[MOST_STRUCTURES];
+    size_t range_count;
+    struct ranged ranges[MOST_RANGES];
     struct entry *buckets[BUCKETS];
 };
 
@@ -46,6 +62,11 @@ static void forget(bh_workspace *w)
     for (size_t i = 0; i < w->structure_count; i++)
         bh_structure_free(w->structures[i]);
     w->structure_count = 0;
+    for (size_t i = 0; i < w->range_count; i++) {
+        bh_range_free(w->ranges[i].range);
+        bh_stopping_free(w->ranges[i].stopping);
+    }
+    w->range_count = 0;
     memset(w->buckets, 0, sizeof w->buckets);
     bh_arena_free(w->arena);
     w->arena = NULL;
@@ -63,7 +84,8 @@ void bh_workspace_free(bh_workspace *workspace)
 
 void bh_workspace_trim(bh_workspace *workspace)
 {
-    if (workspace->bytes > MOST_BYTES || workspace->structure_count > MOST_STRUCTURES / 2)
+    if (workspace->bytes > MOST_BYTES || workspace->structure_count > MOST_STRUCTURES / 2 ||
+        workspace->range_count > MOST_RANGES / 2)
         forget(workspace);
 }
 
@@ -159,4 +181,113 @@ const bh_structure *bh_workspace_structure(bh_workspace *workspace, const char *
     else
         bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
     return place ? made : NULL;
+}
+
+/* A material by value, so that nothing kept depends on whether it still exists. */
+struct material_key {
+    char name[48];
+    int state, count;
+    double mean_atomic_mass, density, published_x0, composition;
+    bh_density_effect effect;
+};
+
+static void name_material(const bh_material *m, struct material_key *key)
+{
+    memset(key, 0, sizeof *key);
+    strncpy(key->name, m->name ? m->name : "", sizeof key->name - 1);
+    key->state = (int)m->state;
+    key->count = (int)m->count;
+    key->mean_atomic_mass = m->mean_atomic_mass;
+    key->density = m->density;
+    key->published_x0 = m->published_x0;
+    key->effect = m->effect;
+    for (size_t i = 0; i < m->count; i++)
+        key->composition += m->parts[i].per_atom * (m->parts[i].z + 0.01 * m->parts[i].a);
+}
+
+struct matter_key {
+    char what[8];
+    struct material_key material;
+};
+
+const bh_matter *bh_workspace_matter(bh_workspace *workspace, const bh_material *material,
+                                     bh_error *err)
+{
+    struct matter_key key;
+    memset(&key, 0, sizeof key);
+    memcpy(key.what, "matter", 6);
+    name_material(material, &key.material);
+    const bh_matter *known = bh_workspace_recall(workspace, &key, sizeof key);
+    if (known)
+        return known;
+    bh_matter *made = bh_workspace_keep(workspace, &key, sizeof key, sizeof *made);
+    if (!made) {
+        bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+        return NULL;
+    }
+    const bh_radiation_length length = bh_radiation_length_of(material);
+    double z = 0;
+    for (size_t i = 0; i < material->count; i++)
+        z += material->parts[i].per_atom * material->parts[i].z;
+    *made = (bh_matter){.length = length.value,
+                        .b = length.b,
+                        .z_over_a = material->count ? z / material->mean_atomic_mass : 0};
+    return made;
+}
+
+struct range_key {
+    char what[8], particle[16];
+    double density, top;
+    struct material_key material;
+};
+
+/* Tables are made a little further than needed, so that neighbours share one. */
+static double top_for(double kinetic)
+{
+    static const double most = 1e7; /* of bh_range_new, MeV */
+    int exponent;
+    frexp(kinetic * 1.001, &exponent);
+    return fmin(fmax(ldexp(1, exponent), 1), fmax(most, kinetic));
+}
+
+static bh_code make_range(const bh_particle *particle, const bh_substance *in, double top,
+                          struct ranged *made, bh_error *err)
+{
+    const bh_losing losing = bh_particle_is_electron(particle) ? BH_LOSE_COLLISION : BH_LOSE_ALL;
+    bh_code code = bh_stopping_new(particle, in->material, in->density, &made->stopping, err);
+    if (code)
+        return code;
+    code = bh_range_new(made->stopping, losing, top, &made->range, err);
+    if (code)
+        bh_stopping_free(made->stopping);
+    return code;
+}
+
+const bh_range *bh_workspace_range(bh_workspace *workspace, const bh_particle *particle,
+                                   const bh_substance *in, double kinetic, bh_error *err)
+{
+    struct range_key key;
+    memset(&key, 0, sizeof key);
+    memcpy(key.what, "range", 5);
+    memcpy(key.particle, particle->name, sizeof key.particle);
+    key.density = in->density;
+    key.top = top_for(kinetic);
+    name_material(in->material, &key.material);
+    const struct ranged *known = bh_workspace_recall(workspace, &key, sizeof key);
+    if (known)
+        return known->range;
+    struct ranged made;
+    if (workspace->range_count == MOST_RANGES) {
+        bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+        return NULL;
+    }
+    if (make_range(particle, in, key.top, &made, err))
+        return NULL;
+    workspace->ranges[workspace->range_count++] = made;
+    struct ranged *place = bh_workspace_keep(workspace, &key, sizeof key, sizeof *place);
+    if (place)
+        *place = made;
+    else
+        bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    return place ? made.range : NULL;
 }

@@ -4,6 +4,7 @@
 
 #include <stddef.h>
 
+#include "beamhours/matter/range.h"
 #include "beamhours/physics/structure.h"
 #include "beamhours/rates/average.h"
 #include "beamhours/run/table.h"
@@ -15,6 +16,32 @@
  */
 const bh_structure *bh_workspace_structure(bh_workspace *workspace, const char *name, int z, int a,
                                            bh_error *err);
+
+/* What of a material matters to radiation and to single collisions, by mass. */
+typedef struct {
+    double length;   /* [g/cm2] radiation length */
+    double b;        /* [1] of radiation_length.h */
+    double z_over_a; /* [mol/g] electrons */
+} bh_matter;
+
+/* A material as a layer has it. */
+typedef struct {
+    const bh_material *material;
+    double density; /* [g/cm3] */
+} bh_substance;
+
+/* Of `material`, worked out once; NULL when there is no memory. */
+const bh_matter *bh_workspace_matter(bh_workspace *workspace, const bh_material *material,
+                                     bh_error *err);
+
+/*
+ * The ranges of `particle` in a substance for energies up to `kinetic` [MeV]
+ * and somewhat beyond, made once and kept; by collisions alone for electrons and positrons, whose
+ * radiation belongs to the tail.  Kept by value: the material may go.  Valid until
+ * bh_workspace_trim.  NULL with the reason in err: as bh_stopping_new and bh_range_new.
+ */
+const bh_range *bh_workspace_range(bh_workspace *workspace, const bh_particle *particle,
+                                   const bh_substance *in, double kinetic, bh_error *err);
 
 /* What was kept under the `size` [bytes] at `key`, or NULL; valid until bh_workspace_trim. */
 const void *bh_workspace_recall(const bh_workspace *workspace, const void *key, size_t size);
