@@ -26,7 +26,7 @@ int bh_beam_kinetic(const bh_arguments *arguments, const bh_particle *particle, 
     if (!given)
         return 0;
     if (bh_quantity_parse(given, BH_DIM_ENERGY_OR_PER_U, &q, &err))
-        return bh_usage(arguments, err.text);
+        return bh_usage_option(arguments, BH_OPT_KINETIC, err.text);
     if (q.per_u && particle->a == 0)
         return bh_usage(arguments, "the particle has no mass number; give the energy of all of it");
     *kinetic = q.per_u ? q.value * particle->a : q.value;

@@ -2,6 +2,7 @@
 #include <math.h>
 #include <stdlib.h>
 #include <string.h>
+#include <sysexits.h>
 
 #include "beamhours/base/number.h"
 #include "beamhours/command/complain.h"
@@ -204,7 +205,7 @@ int bh_cmd_curve(const bh_arguments *arguments)
 {
     const char *format = bh_arguments_format(arguments, BH_OPT_CURVE_FORMAT);
     if (!format)
-        return bh_usage(arguments, "choose one of these");
+        return EX_USAGE;
     if (arguments->word_count != 1)
         return bh_usage(arguments, "needs one plan (or - for standard input)");
     bh_input in;

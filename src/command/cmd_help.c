@@ -37,6 +37,16 @@ static bool show_page(const char *path)
     return WIFEXITED(status) && WEXITSTATUS(status) == 0;
 }
 
+static int no_command(const bh_arguments *arguments)
+{
+    char sentence[200];
+    const char *word = arguments->words[0], *near = bh_command_suggest(word);
+    (void)snprintf(sentence, sizeof sentence, "no command \"%.60s\"; %s%s%s", word,
+                   near ? "did you mean " : "`beamhours --help` lists them", near ? near : "",
+                   near ? "?" : "");
+    return bh_usage(arguments, sentence);
+}
+
 int bh_cmd_help(const bh_arguments *arguments)
 {
     if (arguments->word_count > 1)
@@ -45,7 +55,7 @@ int bh_cmd_help(const bh_arguments *arguments)
     if (arguments->word_count) {
         about = bh_command_find(arguments->words[0]);
         if (about < 0)
-            return bh_usage(arguments, "no such command; `beamhours --help` lists them");
+            return no_command(arguments);
     }
     bh_text path = {0};
     const bool shown = isatty(STDOUT_FILENO) && find_page(&path) && show_page(path.bytes);

@@ -78,7 +78,7 @@ int bh_cmd_keys(const bh_arguments *arguments)
     if (!bh_plan_key_find(arguments->words[0], &key, &near)) {
         char sentence[200];
         (void)snprintf(sentence, sizeof sentence, "no key \"%.60s\"%s%s", arguments->words[0],
-                       near.path[0] ? "; did you mean " : "", near.path);
+                       near.path[0] ? "; did you mean " : "; `beamhours keys` lists them", near.path);
         return bh_usage(arguments, sentence);
     }
     full(&key, &out);

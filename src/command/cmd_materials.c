@@ -3,6 +3,7 @@
 #include <json-c/json.h>
 #include <math.h>
 #include <string.h>
+#include <sysexits.h>
 
 #include "beamhours/base/number.h"
 #include "beamhours/command/beam.h"
@@ -146,7 +147,7 @@ static void finish(json_object *o, bh_text *out)
     json_object_put(o);
 }
 
-/* Complaints of a material file stand in `diags`; a name that is none is a wrong use. */
+/* Complaints of a material file stand in `diags`. */
 static const bh_material *load(bh_material_library *library, const char *name, bh_diags *diags)
 {
     return bh_material_find(library, name, (bh_mark){"materials", 1, 1}, name, diags);
@@ -171,7 +172,17 @@ static int all(bh_material_library *library, bool json, bh_diags *diags, bh_text
     if (json)
         finish(array, out);
     bh_say_diags(stderr, diags);
-    return bh_diags_errors(diags) ? 65 : 0;
+    return bh_diags_errors(diags) ? EX_DATAERR : 0;
+}
+
+/* A name that is none is a wrong use; what a file has wrong is said with its place. */
+static int complain(const bh_arguments *a, const bh_diags *diags)
+{
+    const bh_diag *first = bh_diags_count(diags) ? bh_diags_at(diags, 0) : NULL;
+    if (first && first->at.file && strcmp(first->at.file, "materials") == 0)
+        return bh_usage(a, first->text);
+    bh_say_diags(stderr, diags);
+    return first ? EX_DATAERR : bh_complain(stderr, &(bh_error){.code = BH_ENOMEM});
 }
 
 static void passage_text(const bh_passage_facts *facts, bh_text *out)
@@ -219,11 +230,8 @@ static int named(const bh_arguments *a, bh_material_library *library, bool json,
     bh_text out = {0};
     bh_passage_facts facts;
     const bh_material *m = load(library, a->words[0], diags);
-    if (!m) {
-        for (size_t i = 0; i < bh_diags_count(diags); i++)
-            fprintf(stderr, "beamhours: materials: %s\n", bh_diags_at(diags, i)->text);
-        return 65;
-    }
+    if (!m)
+        return complain(a, diags);
     const int bad = passing(a, m, &facts);
     if (bad)
         return bad;
@@ -243,7 +251,7 @@ int bh_cmd_materials(const bh_arguments *arguments)
 {
     const char *format = bh_arguments_format(arguments, BH_OPT_LIST_FORMAT);
     if (!format)
-        return bh_usage(arguments, "choose one of these");
+        return EX_USAGE;
     if (arguments->word_count > 1)
         return bh_usage(arguments, "takes one name at most");
     if (!arguments->word_count &&

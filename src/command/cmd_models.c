@@ -2,6 +2,7 @@
 #include <json-c/json.h>
 #include <math.h>
 #include <string.h>
+#include <sysexits.h>
 
 #include "beamhours/base/nearest.h"
 #include "beamhours/command/complain.h"
@@ -123,8 +124,8 @@ static int no_model(const bh_arguments *a, const struct model *models, size_t n,
     for (size_t i = 0; i < n; i++)
         names[i] = models[i].name;
     const char *near = bh_nearest(name, names, n);
-    (void)snprintf(sentence, sizeof sentence, "no model \"%s\"%s%s", name,
-                   near ? "; did you mean " : "", near ? near : "");
+    (void)snprintf(sentence, sizeof sentence, "no model \"%.60s\"%s%s", name,
+                   near ? "; did you mean " : "; `beamhours models` lists them", near ? near : "");
     return bh_usage(a, sentence);
 }
 
@@ -133,7 +134,7 @@ int bh_cmd_models(const bh_arguments *arguments)
     struct model models[MOST];
     const char *format = bh_arguments_format(arguments, BH_OPT_LIST_FORMAT);
     if (!format)
-        return bh_usage(arguments, "choose one of these");
+        return EX_USAGE;
     if (arguments->word_count > 1)
         return bh_usage(arguments, "takes one name at most");
     const char *name = arguments->word_count ? arguments->words[0] : NULL;

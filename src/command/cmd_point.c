@@ -3,6 +3,7 @@
 #include <math.h>
 #include <stdlib.h>
 #include <string.h>
+#include <sysexits.h>
 
 #include "beamhours/base/number.h"
 #include "beamhours/command/beam.h"
@@ -30,7 +31,7 @@ static int quantity(const bh_arguments *a, bh_option_id id, bh_dimension dimensi
     if (!a->value[id])
         return 0;
     if (bh_quantity_parse(a->value[id], dimension, &q, &err))
-        return bh_usage(a, err.text);
+        return bh_usage_option(a, id, err.text);
     *out = q.value;
     return 0;
 }
@@ -111,8 +112,10 @@ static int rate_inputs(const bh_arguments *a, struct point *p)
         bh_material_find(p->library, material, (bh_mark){"--material", 1, 1}, "material", p->diags);
     if (r->material)
         return 0;
-    bh_say_diags(stderr, p->diags);
-    return bh_usage(a, "--material is not in the library");
+    char sentence[400];
+    (void)snprintf(sentence, sizeof sentence, "--material: %s",
+                   bh_diags_count(p->diags) ? bh_diags_at(p->diags, 0)->text : "out of memory");
+    return bh_usage(a, sentence);
 }
 
 static int request_of(const bh_arguments *a, struct point *p)
@@ -179,8 +182,9 @@ static int answer(const bh_arguments *a, const char *format, const bh_single_req
     bh_single s;
     bh_error err = {.code = BH_OK};
     bh_text out = {0};
-    if (bh_single_compute(r, &s, &err))
-        return bh_complain(stderr, &err);
+    const bh_code bad = bh_single_compute(r, &s, &err);
+    if (bad)
+        return bad == BH_EDOMAIN ? bh_usage(a, err.text) : bh_complain(stderr, &err);
     for (size_t i = 0; i < sizeof s.warning / sizeof s.warning[0]; i++)
         if (s.warning[i][0])
             fprintf(stderr, "beamhours: %s: warning: %s\n", bh_command_name(a->command),
@@ -198,7 +202,7 @@ int bh_cmd_point(const bh_arguments *arguments)
     const char *format = bh_arguments_format(arguments, BH_OPT_LIST_FORMAT);
     struct point p = {.library = NULL};
     if (!format)
-        return bh_usage(arguments, "choose one of these");
+        return EX_USAGE;
     int status = request_of(arguments, &p);
     if (status == 0)
         status = answer(arguments, format, &p.request);

@@ -1,5 +1,6 @@
 /* cmd_table.c - beamhours table PLAN: the run table. */
 #include <string.h>
+#include <sysexits.h>
 
 #include "beamhours.h"
 #include "beamhours/command/complain.h"
@@ -86,7 +87,7 @@ int bh_cmd_table(const bh_arguments *arguments)
     const bool bins = arguments->value[BH_OPT_BINS] != NULL;
     const bool against = arguments->value[BH_OPT_BEFORE_AFTER] != NULL;
     if (!format)
-        return bh_usage(arguments, "choose one of these");
+        return EX_USAGE;
     if (arguments->word_count != 1)
         return bh_usage(arguments, "needs one plan (or - for standard input)");
     if (against && arguments->with_count == 0)

@@ -27,9 +27,9 @@ static int introduce(void)
 
 static int unknown(const char *word)
 {
-    const char *near = bh_command_suggest(word);
-    fprintf(stderr, "beamhours: no command \"%s\"%s%s%s\n", word, near ? "; did you mean " : "",
-            near ? near : "", near ? "?" : "");
+    const char *near = word[0] == '-' ? NULL : bh_command_suggest(word);
+    fprintf(stderr, "beamhours: no %s \"%s\"%s%s%s\n", word[0] == '-' ? "option" : "command", word,
+            near ? "; did you mean " : "", near ? near : "", near ? "?" : "");
     fputs("beamhours: try: beamhours --help\n", stderr);
     return EX_USAGE;
 }

@@ -96,6 +96,13 @@ int bh_usage(const bh_arguments *arguments, const char *sentence)
     return see_help(command);
 }
 
+int bh_usage_option(const bh_arguments *arguments, bh_option_id id, const char *sentence)
+{
+    const char *command = commands[arguments->command].name;
+    fprintf(stderr, "beamhours: %s: --%s: %s\n", command, options[id].name, sentence);
+    return see_help(command);
+}
+
 static int unknown(bh_command_id command, const char *word)
 {
     const char *names[BH_OPTION_COUNT];
@@ -103,7 +110,9 @@ static int unknown(bh_command_id command, const char *word)
     for (int i = 0; i < BH_OPTION_COUNT; i++)
         if (knows(command, i))
             names[n++] = options[i].name;
-    const char *near = strncmp(word, "--", 2) == 0 ? bh_nearest(word + 2, names, n) : NULL;
+    char bare[40];
+    (void)snprintf(bare, sizeof bare, "%.*s", (int)strcspn(word + 1, "="), word + 1);
+    const char *near = bh_nearest(bare + strspn(bare, "-"), names, n);
     fprintf(stderr, "beamhours: %s: no option %s%s%s%s\n", commands[command].name, word,
             near ? "; did you mean --" : "", near ? near : "", near ? "?" : "");
     return see_help(commands[command].name);
@@ -134,7 +143,7 @@ static int store(struct reader *r, int id, const char *value)
 static int take(struct reader *r, int id, const char *attached)
 {
     const struct option *o = &options[id];
-    char sentence[160];
+    char sentence[200];
     if (o->argument[0] == '\0') {
         if (!attached)
             return store(r, id, "");
@@ -185,15 +194,30 @@ int bh_arguments_read(bh_command_id command, int argc, char **argv, bh_arguments
     return 0;
 }
 
+/* "text, csv or json" from "text,csv,json". */
+static void in_words(const char *list, char *out, size_t size)
+{
+    size_t used = 0;
+    while (*list && used + 1 < size) {
+        const size_t n = strcspn(list, ",");
+        const bool last = list[n] == '\0';
+        used += (size_t)snprintf(out + used, size - used, "%s%.*s",
+                                 used ? last ? " or " : ", " : "", (int)n, list);
+        list += n + !last;
+    }
+}
+
 const char *bh_arguments_format(const bh_arguments *arguments, bh_option_id id)
 {
     const char *given = arguments->value[id];
+    char choices[80] = "", sentence[200];
     if (!given)
         return "text";
     if (listed(options[id].values, given, strlen(given)) && given[0])
         return given;
-    fprintf(stderr, "beamhours: %s: no format \"%s\"; there is %s\n",
-            commands[arguments->command].name, given, options[id].values);
+    in_words(options[id].values, choices, sizeof choices);
+    (void)snprintf(sentence, sizeof sentence, "no format \"%.60s\"; --format is %s", given, choices);
+    (void)bh_usage(arguments, sentence);
     return NULL;
 }
 

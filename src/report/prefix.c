@@ -54,9 +54,18 @@ bh_shown_column bh_prefix_scale(const bh_selection *view, const bh_selection *ot
                most * families[f].prefixes[p].scale < 1.0)
             p++;
         return (bh_shown_column){column, families[f].prefixes[p].scale,
-                                 families[f].prefixes[p].unit};
+                                 families[f].prefixes[p].unit, row->digits};
     }
-    return (bh_shown_column){column, 1.0, row->unit};
+    return (bh_shown_column){column, 1.0, row->unit, row->digits};
+}
+
+/* Energies of the beam are mostly written as round numbers: their closing zeros say nothing. */
+static void round_number(double value, int digits, char *out)
+{
+    double rounded = value;
+    (void)bh_number_digits(value, digits, out, BH_CELL_SIZE);
+    if (!bh_number_parse(out, NULL, &rounded))
+        (void)bh_number_print(rounded, out, BH_CELL_SIZE);
 }
 
 void bh_prefix_print(const bh_selection *view, size_t i, const bh_shown_column *column, char *out)
@@ -70,8 +79,10 @@ void bh_prefix_print(const bh_selection *view, size_t i, const bh_shown_column *
         (void)snprintf(out, BH_CELL_SIZE, "-");
     else if (row->kind == BH_CELL_COUNT || !(fabs(value) > 0.0))
         (void)snprintf(out, BH_CELL_SIZE, "%.0f", value);
+    else if (column->column == BH_COL_BEAM_KINETIC)
+        round_number(value, column->digits, out);
     else
-        (void)bh_number_digits(value * column->scale, row->digits, out, BH_CELL_SIZE);
+        (void)bh_number_digits(value * column->scale, column->digits, out, BH_CELL_SIZE);
 }
 
 bool bh_prefix_constant(const bh_selection *view, int column)

@@ -2,6 +2,7 @@
 #include "beamhours/report/selection.h"
 
 #include <math.h>
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
@@ -72,20 +73,26 @@ static bool names(const char *word, size_t length, const char *setting)
     return *rest == '\0' || (*rest == '.' && strspn(rest + 1, "0123456789") == strlen(rest + 1));
 }
 
+/* Names that would do, as many as fit: "low-1, low-2 ...". */
+static void list_settings(const bh_plan *plan, char *out, size_t size)
+{
+    size_t used = 0;
+    for (size_t i = 0; i < plan->setting_count; i++) {
+        const char *name = plan->settings[i].name, *lead = i ? ", " : "";
+        if (used + strlen(lead) + strlen(name) + 5 > size) {
+            (void)snprintf(out + used, size - used, " ...");
+            return;
+        }
+        used += (size_t)snprintf(out + used, size - used, "%s%s", lead, name);
+    }
+}
+
 static bh_code no_setting(const bh_selection *view, const char *word, size_t length, bh_error *err)
 {
-    const bh_plan *plan = bh_table_plan(view->table);
-    char given[64];
-    const size_t n = length < sizeof given ? length : sizeof given - 1;
-    memcpy(given, word, n);
-    given[n] = '\0';
-    const char *near = NULL;
-    for (size_t i = 0; i < plan->setting_count && !near; i++) {
-        const char *const one[] = {plan->settings[i].name};
-        near = bh_nearest(given, one, 1);
-    }
-    return bh_fail(err, BH_EDOMAIN, "no setting \"%s\"; there is %s", given,
-                   near ? near : plan->settings[0].name);
+    char names[200] = "";
+    const int given = length < 64 ? (int)length : 64;
+    list_settings(bh_table_plan(view->table), names, sizeof names);
+    return bh_fail(err, BH_EDOMAIN, "no setting \"%.*s\"; there are %s", given, word, names);
 }
 
 static bh_code check_only(const bh_selection *view, const char *list, bh_error *err)
@@ -120,6 +127,7 @@ static bool wanted(const char *list, const char *setting)
 struct key {
     double number; /* NAN sorts last */
     const char *text;
+    int sign; /* -1 turns the order of texts */
     size_t row;
 };
 
@@ -128,7 +136,7 @@ static int by_key(const void *left, const void *right)
     const struct key *a = left, *b = right;
     int order = 0;
     if (a->text && b->text)
-        order = strcmp(a->text, b->text);
+        order = a->sign * strcmp(a->text, b->text);
     else if (isnan(a->number) || isnan(b->number))
         order = isnan(a->number) - isnan(b->number);
     else
@@ -149,13 +157,12 @@ static bh_code sort_rows(bh_selection *view, const char *key, bh_error *err)
         return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
     for (size_t i = 0; i < view->row_count; i++) {
         const double number = bh_selection_number(view, i, id);
-        keys[i] =
-            (struct key){falling ? -number : number, bh_selection_text(view, i, id), view->rows[i]};
+        keys[i] = (struct key){falling ? -number : number, bh_selection_text(view, i, id),
+                               falling ? -1 : 1, view->rows[i]};
     }
     qsort(keys, view->row_count, sizeof *keys, by_key);
-    const bool text = keys[0].text != NULL;
     for (size_t i = 0; i < view->row_count; i++)
-        view->rows[i] = keys[text && falling ? view->row_count - 1 - i : i].row;
+        view->rows[i] = keys[i].row;
     free(keys);
     return BH_OK;
 }

@@ -62,14 +62,14 @@ static double energy_of(const bh_beam *b)
     return b->kinetic_energy.value;
 }
 
+static double written_of(const bh_beam *b)
+{
+    return b->energy_written.value;
+}
+
 static double current_of(const bh_beam *b)
 {
     return b->current.value;
-}
-
-static double rate_of(const bh_beam *b)
-{
-    return b->particle_rate.value;
 }
 
 static void add_range(bh_text *to, const bh_plan *plan, beam_number get, bh_dimension dimension,
@@ -89,6 +89,45 @@ static void add_range(bh_text *to, const bh_plan *plan, beam_number get, bh_dime
         bh_text_appendf(to, ", %s%s", say(low, 0.0, dimension, from), behind);
 }
 
+static bool is_key(const bh_beam *beam, const char *key)
+{
+    return beam->energy_key.text && strcmp(beam->energy_key.text, key) == 0;
+}
+
+/* The energy under the key it was written with, where all settings use the same. */
+static void add_energy(bh_text *to, const bh_plan *plan)
+{
+    const char *key = plan->settings[0].beam.energy_key.text;
+    for (size_t i = 0; key && i < plan->setting_count; i++)
+        if (!is_key(&plan->settings[i].beam, key))
+            key = NULL;
+    if (key && strcmp(key, "momentum") == 0) {
+        add_range(to, plan, written_of, BH_DIM_MOMENTUM, "");
+        add_range(to, plan, energy_of, BH_DIM_ENERGY, " kinetic");
+    } else if (key && strcmp(key, "total_energy") == 0) {
+        add_range(to, plan, written_of, BH_DIM_ENERGY, " total");
+    } else {
+        add_range(to, plan, energy_of, BH_DIM_ENERGY, " kinetic");
+    }
+}
+
+/* A rate of beam particles reads better per second than in hertz. */
+static void add_particles(bh_text *to, const bh_plan *plan)
+{
+    double low = INFINITY, high = 0.0;
+    for (size_t i = 0; i < plan->setting_count; i++) {
+        low = fmin(low, rounded(plan->settings[i].beam.particle_rate.value));
+        high = fmax(high, rounded(plan->settings[i].beam.particle_rate.value));
+    }
+    bh_text_append(to, ", ");
+    bh_text_append_number(to, low);
+    if (high > low) {
+        bh_text_append(to, " to ");
+        bh_text_append_number(to, high);
+    }
+    bh_text_append(to, " particles per second in all");
+}
+
 static void beam_line(const bh_plan *plan, bh_text *to)
 {
     const bh_beam *first = &plan->settings[0].beam;
@@ -98,9 +137,9 @@ static void beam_line(const bh_plan *plan, bh_text *to)
             bh_text_appendf(to, " and %s", plan->settings[i].beam.particle.name);
             break;
         }
-    add_range(to, plan, energy_of, BH_DIM_ENERGY, " kinetic");
+    add_energy(to, plan);
     if (first->rate_written)
-        add_range(to, plan, rate_of, BH_DIM_RATE, " in all");
+        add_particles(to, plan);
     else
         add_range(to, plan, current_of, BH_DIM_CURRENT, "");
     if (first->fraction.value < 1.0)

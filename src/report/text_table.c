@@ -5,9 +5,10 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "beamhours/base/number.h"
 #include "beamhours/report/prefix.h"
 
-enum { NARROWEST = 80, BASE = 15 };
+enum { NARROWEST = 80, BASE = 15, FEWEST = 3 };
 
 /* What 80 columns hold; a column whose rows all agree is left to the title. */
 static const int base[BASE] = {
@@ -82,6 +83,25 @@ static bool said_above(const bh_selection *view, int column)
                                       bh_prefix_constant(view, column);
 }
 
+static bool is_empty(const bh_selection *view, int column)
+{
+    for (size_t i = 0; i < view->row_count; i++)
+        if (!isnan(bh_selection_number(view, i, column)))
+            return false;
+    return true;
+}
+
+/* One digit less wherever that leaves three: the last means of keeping to the width. */
+static void tighten(struct layout *l, const bh_selection *view, const bh_selection *other)
+{
+    for (size_t i = 0; i < l->count; i++)
+        if (l->shown[i].digits > FEWEST && l->shown[i].column != BH_COL_ANGLE &&
+            l->shown[i].column != BH_COL_BEAM_KINETIC) {
+            l->shown[i].digits = FEWEST;
+            l->width[i] = column_width(view, other, &l->shown[i]);
+        }
+}
+
 static void choose(struct layout *l, const bh_selection *view, const bh_selection *other, int width)
 {
     if (view->column_count) {
@@ -92,7 +112,13 @@ static void choose(struct layout *l, const bh_selection *view, const bh_selectio
     for (size_t i = 0; i < BASE; i++)
         if (!said_above(view, base[i]))
             add(l, view, other, base[i]);
+    if (total_width(l) > width) {
+        tighten(l, view, other);
+        return;
+    }
     for (size_t i = 0; i < sizeof extra / sizeof extra[0]; i++) {
+        if (is_empty(view, extra[i]) && (!other || is_empty(other, extra[i])))
+            continue;
         add(l, view, other, extra[i]);
         if (total_width(l) > width) {
             l->count--;
@@ -156,24 +182,71 @@ void bh_report_text(const bh_selection *view, int width, bh_text *out)
     bh_report_text_cautions(view->table, wide, out);
 }
 
-/* " signal x1.5, hours x0.667": how far a row moved. */
-static void moved(const bh_selection *before, const bh_selection *after, size_t row, bh_text *out)
+/* The row of `in` for the same arm, bin and setting as the i-th of `of`; its count when there is
+ * none: a change may add settings or put rows in another order. */
+static size_t counterpart(const bh_selection *of, size_t i, const bh_selection *in)
+{
+    static const int names[] = {BH_COL_SETTING, BH_COL_ARM};
+    const int bin = bh_table_place(of->table, of->bins, of->rows[i]).bin;
+    for (size_t k = 0; k < in->row_count; k++) {
+        bool same = bh_table_place(in->table, in->bins, in->rows[k]).bin == bin;
+        for (size_t n = 0; same && n < sizeof names / sizeof names[0]; n++)
+            same = strcmp(bh_selection_text(of, i, names[n]), bh_selection_text(in, k, names[n])) ==
+                   0;
+        if (same)
+            return k;
+    }
+    return in->row_count;
+}
+
+/* "signal +50.0 %, hours -33.3 %": how far a row moved from the i-th before to the k-th after. */
+static void moved(const bh_selection *before, size_t i, const bh_selection *after, size_t k,
+                  bh_text *out)
 {
     static const struct {
         int column;
         const char *name;
     } watched[] = {
         {BH_COL_SIGNAL, "signal"}, {BH_COL_HOURS, "hours"}, {BH_COL_STATISTICAL, "stat"}};
-    const char *lead = "         ";
-    for (size_t i = 0; i < sizeof watched / sizeof watched[0]; i++) {
-        const double a = bh_selection_number(before, row, watched[i].column);
-        const double b = bh_selection_number(after, row, watched[i].column);
+    const char *lead = "       ";
+    for (size_t w = 0; w < sizeof watched / sizeof watched[0]; w++) {
+        const double a = bh_selection_number(before, i, watched[w].column);
+        const double b = bh_selection_number(after, k, watched[w].column);
         if (!(a > 0.0) || !isfinite(b))
             continue;
-        bh_text_appendf(out, "%s%s %+.2f %%", lead, watched[i].name, 100.0 * (b / a - 1.0));
+        char number[BH_NUMBER_SIZE];
+        const double change = 100.0 * (b / a - 1.0);
+        (void)bh_number_digits(change, 3, number, sizeof number);
+        if (fabs(change) < 5e-4)
+            bh_text_appendf(out, "%s%s as before", lead, watched[w].name);
+        else
+            bh_text_appendf(out, "%s%s %s%s %%", lead, watched[w].name, change > 0.0 ? "+" : "",
+                            number);
         lead = ", ";
     }
-    bh_text_append(out, "\n");
+    if (lead[0] == ',')
+        bh_text_append(out, "\n");
+}
+
+static void pairs(const struct layout *l, const bh_selection *before, const bh_selection *after,
+                  bh_text *out)
+{
+    for (size_t row = 0; row < after->row_count; row++) {
+        const size_t old = counterpart(after, row, before);
+        if (old < before->row_count) {
+            bh_text_append(out, "before ");
+            line(l, before, old, out);
+        }
+        bh_text_append(out, "after  ");
+        line(l, after, row, out);
+        if (old < before->row_count)
+            moved(before, old, after, row, out);
+    }
+    for (size_t row = 0; row < before->row_count; row++)
+        if (counterpart(before, row, after) == after->row_count) {
+            bh_text_append(out, "before ");
+            line(l, before, row, out);
+        }
 }
 
 void bh_report_text_against(const bh_selection *before, const bh_selection *after, int width,
@@ -184,19 +257,7 @@ void bh_report_text_against(const bh_selection *before, const bh_selection *afte
     choose(&l, before, after, wide - 7);
     bh_report_text_inputs(after, wide, out);
     headings(&l, "       ", out);
-    const size_t rows = before->row_count > after->row_count ? before->row_count : after->row_count;
-    for (size_t row = 0; row < rows; row++) {
-        if (row < before->row_count) {
-            bh_text_append(out, "before ");
-            line(&l, before, row, out);
-        }
-        if (row < after->row_count) {
-            bh_text_append(out, "after  ");
-            line(&l, after, row, out);
-        }
-        if (row < before->row_count && row < after->row_count)
-            moved(before, after, row, out);
-    }
+    pairs(&l, before, after, out);
     bh_text_append(out, "\nbefore\n");
     bh_report_text_totals(before->table, wide, out);
     bh_text_append(out, "after\n");

@@ -1,25 +1,45 @@
 /* text_totals.c - the sum of time, line by line, and the cautions. */
 #include <math.h>
+#include <stdio.h>
 #include <string.h>
 
 #include "beamhours/base/number.h"
 #include "beamhours/report/text_table.h"
 #include "beamhours/units/quantity.h"
 
-enum { NAME = 18, VALUE = 11 };
+enum { NAME = 14, VALUE = 6, BEHIND = 3 };
 
-static void row(const char *name, double hours, const char *remark, bh_text *out)
+/* "74.19", "0.576": two decimals of an hour are half a minute, and nobody plans finer. */
+static void hours_text(double hours, char out[BH_NUMBER_SIZE])
+{
+    double whole = 0.0;
+    const double part = fabs(modf(round(hours * 100.0) / 100.0, &whole));
+    if (hours > 0.0 && hours < 1.0)
+        (void)bh_number_digits(hours, 3, out, BH_NUMBER_SIZE);
+    else
+        (void)snprintf(out, BH_NUMBER_SIZE, "%s%.0f.%02d", hours < 0.0 && !(whole < 0.0) ? "-" : "",
+                       fabs(whole) > 0.0 ? whole : 0.0, (int)lround(part * 100.0));
+}
+
+/* Decimal points stand below each other. */
+static void row(const char *name, double hours, const char *remark, int width, bh_text *out)
 {
     char number[BH_NUMBER_SIZE];
+    bh_text lead = {0};
     if (!isfinite(hours))
         return;
-    /* Two decimals of an hour are half a minute: nobody plans finer. */
-    if (fabs(hours) < 1.0 && hours > 0.0)
-        (void)bh_number_digits(hours, 3, number, sizeof number);
-    else if (bh_number_print(round(hours * 100.0) / 100.0, number, sizeof number) == 0)
-        return;
-    bh_text_appendf(out, "  %-*s%*s%s%s\n", NAME, name, VALUE, number, remark[0] ? "   " : "",
-                    remark);
+    hours_text(hours, number);
+    const int before = (int)strcspn(number, ".");
+    bh_text_appendf(&lead, "  %-*s%*.*s%s", NAME, name, VALUE, before, number, number + before);
+    if (remark[0]) {
+        const int behind = (int)strlen(number) - before;
+        bh_text_appendf(&lead, "%*s", behind > BEHIND + 1 ? 2 : BEHIND + 3 - behind, "");
+        bh_report_wrapped(lead.bytes ? lead.bytes : "", remark, width, out);
+    } else {
+        bh_text_appendf(out, "%s\n", lead.bytes ? lead.bytes : "");
+    }
+    out->failed |= lead.failed;
+    bh_text_free(&lead);
 }
 
 static void share(bh_text *to, const char *lead, double value)
@@ -46,9 +66,9 @@ static void asked_remark(const bh_table *table, bh_text *to)
     bh_text_append(to, " h");
 }
 
-static void with_remark(const char *name, double hours, bh_text *remark, bh_text *out)
+static void with_remark(const char *name, double hours, bh_text *remark, int width, bh_text *out)
 {
-    row(name, hours, remark->bytes ? remark->bytes : "", out);
+    row(name, hours, remark->bytes ? remark->bytes : "", width, out);
     out->failed |= remark->failed;
     bh_text_free(remark);
 }
@@ -59,23 +79,23 @@ void bh_report_text_totals(const bh_table *table, int width, bh_text *out)
     const bh_schedule *s = &bh_table_plan(table)->schedule;
     bh_text remark = {0};
     bh_text_appendf(out, "time%*s\n", NAME + VALUE - 2, "h");
-    row("data", t->data_hours, "full target", out);
-    row("empty target", t->empty_hours, "", out);
-    row("tasks", t->task_hours, "with beam", out);
-    row("beam hours", t->beam_hours, "", out);
-    row("changes", t->change_hours, "start-up, changes, tasks without beam", out);
+    row("data", t->data_hours, "full target", width, out);
+    row("empty target", t->empty_hours, "", width, out);
+    row("tasks", t->task_hours, "with beam", width, out);
+    row("beam hours", t->beam_hours, "", width, out);
+    row("changes", t->change_hours, "start-up, changes, tasks without beam", width, out);
     share(&remark, "= beam hours / ", s->availability.value);
     bh_text_append(&remark, " + changes");
-    with_remark("scheduled", t->scheduled_hours, &remark, out);
+    with_remark("scheduled", t->scheduled_hours, &remark, width, out);
     share(&remark, "", s->contingency.value);
     bh_text_append(&remark, " of scheduled");
-    with_remark("contingency", t->contingency_hours, &remark, out);
+    with_remark("contingency", t->contingency_hours, &remark, width, out);
     asked_remark(table, &remark);
-    with_remark("asked", t->asked_hours, &remark, out);
+    with_remark("asked", t->asked_hours, &remark, width, out);
     row("available", t->available_hours,
-        s->available_is_beam ? "hours of beam: compared with beam hours" : "calendar", out);
+        s->available_is_beam ? "hours of beam: compared with beam hours" : "calendar", width, out);
     row("spare", t->spare_hours, t->spare_hours < 0.0 ? "more is asked than is available" : "",
-        out);
+        width, out);
     if (t->note)
         bh_report_wrapped("  ", t->note, width, out);
 }
@@ -112,6 +132,12 @@ void bh_report_wrapped(const char *lead, const char *sentence, int width, bh_tex
 
 void bh_report_text_cautions(const bh_table *table, int width, bh_text *out)
 {
+    const char *note = NULL;
+    for (size_t i = 0; (note = bh_table_note(table, i)); i++) {
+        if (i == 0)
+            bh_text_append(out, "\n");
+        bh_report_wrapped("note    ", note, width, out);
+    }
     for (size_t i = 0; i < bh_table_cautions(table); i++) {
         if (i == 0)
             bh_text_append(out, "\n");

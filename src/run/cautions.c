@@ -13,24 +13,23 @@
 #define DEFER_RADIATION " The facility's radiation-protection group" DECIDE
 #define DEFER_SAFETY    " The facility's safety and radiation-protection groups" DECIDE
 
-/* What follows from each hazard of a material; before it come the materials' names. */
+/* What follows from each hazard of a material, behind its name. */
 static const char *const hazard_texts[BH_HAZARD_COUNT] = {
-    [BH_HAZARD_FLAMMABLE_GAS] =
-        ": flammable; a leak or boil-off makes an explosive mixture with air.",
-    [BH_HAZARD_FLAMMABLE] = ": flammable; keep flames, sparks and hot surfaces away.",
-    [BH_HAZARD_CRYOGEN] = ": so cold that it burns skin; as it warms up, pressure rises fast.",
+    [BH_HAZARD_FLAMMABLE_GAS] = "flammable, a leak or boil-off makes an explosive mixture with air",
+    [BH_HAZARD_FLAMMABLE] = "flammable, keep flames, sparks and hot surfaces away",
+    [BH_HAZARD_CRYOGEN] = "so cold that it burns skin, and as it warms up pressure rises fast",
     [BH_HAZARD_OXYGEN] =
-        ": takes the place of oxygen in a confined space, unnoticed until people faint.",
-    [BH_HAZARD_OXIDISING] = ": feeds fire; oil, grease and dust ignite in it.",
+        "takes the place of oxygen in a confined space, unnoticed until people faint",
+    [BH_HAZARD_OXIDISING] = "feeds fire, oil, grease and dust ignite in it",
     [BH_HAZARD_REACTIVE] =
-        ": reacts with water and moist air and may ignite; keep it dry and under cover gas.",
+        "reacts with water and moist air and may ignite, keep it dry and under cover gas",
     [BH_HAZARD_BERYLLIUM] =
-        ": dust, chips and oxide of beryllium harm the lungs for life, and thin pieces break.",
-    [BH_HAZARD_LEAD] = ": lead is toxic as dust or on the hands, and melts early.",
+        "dust, chips and oxide of beryllium harm the lungs for life, and thin pieces break",
+    [BH_HAZARD_LEAD] = "lead is toxic as dust or on the hands, and melts early",
     [BH_HAZARD_URANIUM] =
-        ": uranium is radioactive, toxic, burns when finely divided, and is accounted for by law.",
-    [BH_HAZARD_TOXIC] = ": toxic when breathed in or swallowed.",
-    [BH_HAZARD_RADIOACTIVE] = ": radioactive before any beam has struck it.",
+        "uranium is radioactive, toxic, burns when finely divided, and is accounted for by law",
+    [BH_HAZARD_TOXIC] = "toxic when breathed in or swallowed",
+    [BH_HAZARD_RADIOACTIVE] = "radioactive before any beam has struck it",
 };
 
 /* At most: source or power, secondary beam, pressure, windows, magnets. */
@@ -39,7 +38,7 @@ enum { OTHER_CAUTIONS = 5 };
 typedef struct {
     const bh_plan *plan;
     bh_arena *arena;
-    bh_caution *list; /* room for BH_HAZARD_COUNT + OTHER_CAUTIONS */
+    bh_caution *list; /* room for one a layer + OTHER_CAUTIONS */
     size_t count;
     bool failed; /* memory ran out */
 } caution_list;
@@ -220,9 +219,9 @@ static bh_text stack_key(const stack *from)
     return key;
 }
 
-/* The names of materials with one hazard, and where the first of them stands. */
+/* A caution for each set of hazards: the materials that have it, and where the first stands. */
 typedef struct {
-    unsigned bit;
+    unsigned hazards;
     bh_text names, key;
     bh_mark at;
 } mention;
@@ -242,7 +241,7 @@ static bool is_in_list(const bh_text *list, const char *name)
 static void mention_layer(mention *m, const stack *from, const bh_layer *layer)
 {
     const bh_material *material = layer->material;
-    if (!material || !(bh_material_hazards(material) & m->bit) ||
+    if (!material || bh_material_hazards(material) != m->hazards ||
         is_in_list(&m->names, material->name))
         return;
     if (m->names.length == 0) {
@@ -254,22 +253,56 @@ static void mention_layer(mention *m, const stack *from, const bh_layer *layer)
     bh_text_append(&m->names, material->name);
 }
 
-static void caution_of_hazard(caution_list *to, unsigned which)
+/* All of one set of hazards in one caution: "lead, lead-208: toxic; radioactive." */
+static void caution_of_hazards(caution_list *to, unsigned hazards)
 {
-    mention m = {.bit = 1U << which};
+    mention m = {.hazards = hazards};
     stack from;
     for (size_t i = 0; stack_at(to->plan, i, &from); i++)
         for (size_t l = 0; l < from.count; l++)
             mention_layer(&m, &from, &from.layers[l]);
-    to->failed = to->failed || m.names.failed;
-    if (m.names.length > 0) {
-        bh_text_append(&m.names, hazard_texts[which]);
-        bh_text_append(&m.names, DEFER_SAFETY);
-        add(to, m.at, &m.key, &m.names);
-        return;
-    }
-    bh_text_free(&m.names);
-    bh_text_free(&m.key);
+    const char *lead = ": ";
+    for (unsigned h = 0; h < BH_HAZARD_COUNT; h++)
+        if (hazards & (1U << h)) {
+            bh_text_appendf(&m.names, "%s%s", lead, hazard_texts[h]);
+            lead = "; ";
+        }
+    bh_text_append(&m.names, "." DEFER_SAFETY);
+    add(to, m.at, &m.key, &m.names);
+}
+
+/* Whether no layer before this one has the same hazards. */
+static bool is_first_of(const bh_plan *plan, unsigned hazards, const bh_layer *layer)
+{
+    stack from;
+    for (size_t i = 0; stack_at(plan, i, &from); i++)
+        for (size_t l = 0; l < from.count; l++) {
+            const bh_layer *other = &from.layers[l];
+            if (other->material && bh_material_hazards(other->material) == hazards)
+                return other == layer;
+        }
+    return false;
+}
+
+static void caution_of_materials(caution_list *to)
+{
+    stack from;
+    for (size_t i = 0; stack_at(to->plan, i, &from); i++)
+        for (size_t l = 0; l < from.count; l++) {
+            const bh_layer *layer = &from.layers[l];
+            const unsigned hazards = layer->material ? bh_material_hazards(layer->material) : 0;
+            if (hazards && is_first_of(to->plan, hazards, layer))
+                caution_of_hazards(to, hazards);
+        }
+}
+
+static size_t count_layers(const bh_plan *plan)
+{
+    size_t count = 0;
+    stack from;
+    for (size_t i = 0; stack_at(plan, i, &from); i++)
+        count += from.count;
+    return count;
 }
 
 static const double atmosphere = 101325.0; /* [Pa] */
@@ -381,13 +414,12 @@ const bh_caution *bh_cautions_from_plan(const bh_plan *plan, bh_arena *arena, si
 {
     *count = 0;
     caution_list to = {.plan = plan, .arena = arena};
-    to.list = bh_arena_take(arena, BH_HAZARD_COUNT + OTHER_CAUTIONS, sizeof *to.list);
+    to.list = bh_arena_take(arena, count_layers(plan) + OTHER_CAUTIONS, sizeof *to.list);
     if (!to.list)
         return NULL;
     caution_of_beam(&to);
     caution_of_secondary_beam(&to);
-    for (unsigned h = 0; h < BH_HAZARD_COUNT; h++)
-        caution_of_hazard(&to, h);
+    caution_of_materials(&to);
     caution_of_pressure(&to);
     caution_of_windows(&to);
     caution_of_magnets(&to);

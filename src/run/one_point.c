@@ -11,6 +11,7 @@
 #include "beamhours/physics/one_photon.h"
 #include "beamhours/physics/process.h"
 #include "beamhours/physics/radiative.h"
+#include "beamhours/physics/validity.h"
 #include "beamhours/run/columns.h"
 #include "beamhours/run/event_search.h"
 #include "beamhours/units/constants.h"
@@ -170,41 +171,43 @@ static double add_cross_sections(bh_single *out, const bh_single_request *r,
         add(out, "mott_cross_section_ub_per_sr", "ub/sr", bh_mott(&in, e, charges));
     add(out, "rutherford_cross_section_ub_per_sr", "ub/sr", bh_rutherford(&in, e, charges));
     (void)snprintf(out->formula, sizeof out->formula, "%s", chosen->process->formula(encounter));
-    (void)snprintf(out->source, sizeof out->source, "%s",
+    (void)snprintf(out->source, sizeof out->source, "%s", chosen->process->source);
+    (void)snprintf(out->structure_source, sizeof out->structure_source, "%s",
                    bh_structure_source(encounter->structure));
     warn_range(out, encounter->structure, e->q2);
     (void)chosen->process->caveat(encounter, out->warning[2], sizeof out->warning[2]);
     return detected * add_radiation(out, r, chosen->radiative, encounter, e);
 }
 
-static bh_code with_structure(const bh_single_request *r, const bh_nuclide *nuclide,
-                              const bh_chosen *chosen, bh_single *out, bh_error *err)
+/* As in the run table: who is too slow to reach the nucleus meets its charge as a point. */
+static const char *model_for(const bh_single_request *r, const bh_encounter *e)
 {
-    bh_structure *structure = bh_structure_new(r->structure, r->z, r->a, err);
-    if (!structure)
-        return err ? err->code : BH_EDOMAIN;
-    const bh_collision collision = {r->beam.mass, nuclide->mass, r->kinetic};
+    const bool unnamed = !r->structure || strcmp(r->structure, "default") == 0;
+    const bool outside =
+        r->beam.kind != BH_KIND_LEPTON && e->kinetic < bh_validity_nuclear(e).kinetic;
+    return unnamed && outside ? "point" : r->structure;
+}
+
+static bh_code with_structure(const bh_single_request *r, const bh_chosen *chosen,
+                              bh_encounter *encounter, bh_single *out, bh_error *err)
+{
+    const bh_collision collision = {r->beam.mass, encounter->target, r->kinetic};
     const bh_known known = {r->kinetic, r->angle, r->q2, r->epsilon, r->recoil};
     bh_event event;
-    double kinetic = 0.0;
-    bh_code bad = bh_event_search(&collision, &known, &kinetic, &event, err);
-    if (!bad) {
-        const bh_encounter encounter = {.beam = &r->beam,
-                                        .charge = r->beam.charge,
-                                        .z = r->z,
-                                        .a = r->a,
-                                        .target = nuclide->mass,
-                                        .kinetic = kinetic,
-                                        .structure = structure,
-                                        .angle = event.scattered_angle};
-        (void)snprintf(out->structure, sizeof out->structure, "%s", bh_structure_name(structure));
-        add_text(out, "structure", out->structure);
-        add_event(out, r, &event, kinetic);
-        const double counts = add_cross_sections(out, r, chosen, &encounter, &event);
-        bad = add_rate(out, r, counts, err);
-    }
+    const bh_code bad = bh_event_search(&collision, &known, &encounter->kinetic, &event, err);
+    if (bad)
+        return bad;
+    encounter->angle = event.scattered_angle;
+    bh_structure *structure = bh_structure_new(model_for(r, encounter), r->z, r->a, err);
+    if (!structure)
+        return err ? err->code : BH_EDOMAIN;
+    encounter->structure = structure;
+    (void)snprintf(out->structure, sizeof out->structure, "%s", bh_structure_name(structure));
+    add_text(out, "structure", out->structure);
+    add_event(out, r, &event, encounter->kinetic);
+    const double counts = add_cross_sections(out, r, chosen, encounter, &event);
     bh_structure_free(structure);
-    return bad;
+    return add_rate(out, r, counts, err);
 }
 
 bh_code bh_single_compute(const bh_single_request *request, bh_single *out, bh_error *err)
@@ -222,5 +225,10 @@ bh_code bh_single_compute(const bh_single_request *request, bh_single *out, bh_e
     add_text(out, "particle", request->beam.name);
     add_text(out, "scatterer", out->scatterer);
     add_text(out, "process", chosen.process->name);
-    return with_structure(request, nuclide, &chosen, out, err);
+    bh_encounter encounter = {.beam = &request->beam,
+                              .charge = request->beam.charge,
+                              .z = request->z,
+                              .a = request->a,
+                              .target = nuclide->mass};
+    return with_structure(request, &chosen, &encounter, out, err);
 }

@@ -191,7 +191,7 @@ START_TEST(hydrogen_behind_thin_windows)
     const bh_target target = {.name = {.text = "hydrogen"}, .layers = layers, .layer_count = 3};
     const bh_plan plan = {.beam = electrons(855, 20), .targets = &target, .target_count = 1};
     derive(&plan);
-    ck_assert_uint_eq(count, 5);
+    ck_assert_uint_eq(count, 3);
     expect("liquid-hydrogen: flammable", "targets.hydrogen.layers", 11);
     expect("burns skin", "targets.hydrogen.layers", 11);
     expect("place of oxygen", "targets.hydrogen.layers", 11);
@@ -251,6 +251,30 @@ START_TEST(materials_of_one_hazard_are_named_together)
     derive(&plan);
     ck_assert_uint_eq(count, 2);
     expect("lead-208, lead: lead is toxic", "targets.A.layers", 10);
+}
+END_TEST
+
+/* Equal sets of hazards share a caution; a set that is only partly equal has its own. */
+START_TEST(each_set_of_hazards_has_one_caution)
+{
+    const char *const both[] = {"lead", "radioactive"};
+    const char *const one[] = {"lead"};
+    bh_material old = solid("old-lead"), hot = solid("hot-lead"), hotter = solid("hotter-lead");
+    old.hazards = one;
+    old.hazard_count = 1;
+    hot.hazards = hotter.hazards = both;
+    hot.hazard_count = hotter.hazard_count = 2;
+    const bh_layer layers[] = {{.material = &hot, .at = line(10)},
+                               {.material = &old, .at = line(11)},
+                               {.material = &hotter, .at = line(12)}};
+    const bh_target target = {.name = {.text = "A"}, .layers = layers, .layer_count = 3};
+    const bh_plan plan = {.beam = electrons(450, 20), .targets = &target, .target_count = 1};
+    derive(&plan);
+    ck_assert_uint_eq(count, 3);
+    expect("hot-lead, hotter-lead: lead is toxic", "targets.A.layers", 10);
+    ck_assert_ptr_nonnull(strstr(about("hot-lead, hotter")->text, "; radioactive before any beam"));
+    expect("old-lead: lead is toxic as dust or on the hands, and melts early. The facility",
+           "targets.A.layers", 11);
 }
 END_TEST
 
@@ -339,7 +363,7 @@ START_TEST(from_a_plan_as_written)
     bh_plan *plan = bh_plan_read(text, sizeof text - 1, "p.yaml", NULL, 0, library, diags);
     ck_assert_msg(plan != NULL, "%s", bh_diags_count(diags) ? bh_diags_at(diags, 0)->text : "");
     derive(plan);
-    ck_assert_uint_eq(count, 6);
+    ck_assert_uint_eq(count, 4);
     expect("34.2 kW", "settings.K2.beam.current", 16);
     expect("liquid-hydrogen: flammable", "target.layers", 11);
     expect("burns skin", "target.layers", 11);
@@ -362,6 +386,7 @@ int main(void)
     tcase_add_test(tests, hydrogen_behind_thin_windows);
     tcase_add_test(tests, every_hazard_word_has_a_caution);
     tcase_add_test(tests, materials_of_one_hazard_are_named_together);
+    tcase_add_test(tests, each_set_of_hazards_has_one_caution);
     tcase_add_test(tests, walls_and_exits_count);
     tcase_add_test(tests, gas_under_pressure);
     tcase_add_test(tests, magnets);

@@ -109,11 +109,14 @@ typedef struct {
 int bh_arguments_read(bh_command_id command, int argc, char **argv, bh_arguments *out);
 
 /* The value chosen with a --format option, "text" where none was; NULL after saying on standard
- * error that there is no such format for this option. */
+ * error which formats this option has. */
 const char *bh_arguments_format(const bh_arguments *arguments, bh_option_id id);
 
 /* Says what is wrong with the use of a command, and how to learn more.  Returns 64. */
 int bh_usage(const bh_arguments *arguments, const char *sentence);
+
+/* The same of one option's value. */
+int bh_usage_option(const bh_arguments *arguments, bh_option_id id, const char *sentence);
 
 /* Writes the list of commands, or the options of one. */
 void bh_options_help(FILE *to);
@@ -124,7 +127,7 @@ const char *bh_command_name(bh_command_id id);
 int bh_command_find(const char *name);
 const char *bh_command_suggest(const char *name);
 
-/* The commands: each returns the exit status (docs/commands.md). */
+/* The commands: each returns the exit status (docs/beamhours.1). */
 #define BH_COMMAND_FUNCTION(id, name, behind, summary, run) int run(const bh_arguments *arguments);
 BH_COMMANDS(BH_COMMAND_FUNCTION)
 #undef BH_COMMAND_FUNCTION

@@ -10,6 +10,7 @@ typedef struct {
     int column;       /* bh_column_id */
     double scale;     /* [1] the number shown is the cell's times this */
     const char *unit; /* of the number shown: "nb/sr", "%"; "" for a name */
+    int digits;       /* significant ones */
 } bh_shown_column;
 
 /* Chooses unit and scale so that the column's largest value reads well; over all rows of `view`
