@@ -33,7 +33,7 @@ typedef enum {
     BH_BAD_PLAN, /* the plan, or a change, has errors: bh_session_message lists them */
     BH_NO_FILE,  /* the plan file cannot be read */
     BH_NO_MEMORY,
-    BH_BAD_CALL /* no plan loaded yet, no such row or column */
+    BH_BAD_CALL /* no plan loaded yet, or NULL where something is needed */
 } bh_result;
 
 /*

@@ -28,6 +28,8 @@ function bash(   c, o, v, all) {
     for (c = 1; c <= nc; c++) all = all " " name[c]
     print "# bash completion for beamhours\n_beamhours() {"
     print "    local word=${COMP_WORDS[COMP_CWORD]} before=${COMP_WORDS[COMP_CWORD-1]} command=${COMP_WORDS[1]}"
+    print "    [ \"$before\" != = ] || before=${COMP_WORDS[COMP_CWORD-2]} # --option=value comes in three words"
+    print "    [ \"$word\" != = ] || { before=${COMP_WORDS[COMP_CWORD-1]} word=; }"
     printf "    if [ \"$COMP_CWORD\" -eq 1 ]; then COMPREPLY=($(compgen -W '%s --help --version' -- \"$word\")); return; fi\n", substr(all, 2)
     print "    case $command:$before in"
     for (c = 1; c <= nc; c++)
@@ -50,7 +52,7 @@ function bash(   c, o, v, all) {
 function zsh(   c, o, v, s) {
     print "#compdef beamhours\n_beamhours() {\n    local -a commands\n    commands=("
     for (c = 1; c <= nc; c++) printf "        '%s:%s'\n", name[c], single(summary[c])
-    print "    )\n    if (( CURRENT == 2 )); then _describe command commands; return; fi\n    case $words[2] in"
+    print "    )\n    if (( CURRENT == 2 )); then _describe command commands; return; fi\n    local name=$words[2]\n    shift words; (( CURRENT-- ))\n    case $name in"
     for (c = 1; c <= nc; c++) {
         printf "    %s) _arguments", name[c]
         for (o = 1; o <= no; o++) {

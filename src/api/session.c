@@ -115,8 +115,9 @@ static bh_result read_plan(bh_session *s, bh_plan **out)
     *out = bh_plan_read(s->bytes.bytes ? s->bytes.bytes : "", s->bytes.length, s->name, s->changes,
                         s->change_count, s->library, diags);
     keep_diags(s, diags);
+    const bool said = bh_diags_errors(diags) > 0;
     bh_diags_free(diags);
-    return *out ? BH_DONE : BH_BAD_PLAN;
+    return *out ? BH_DONE : said ? BH_BAD_PLAN : BH_NO_MEMORY;
 }
 
 static bh_result adopt(bh_session *s, const char *name)
@@ -131,6 +132,8 @@ static bh_result adopt(bh_session *s, const char *name)
 bh_result bh_session_load(bh_session *session, const char *path)
 {
     bh_error err = {.code = BH_OK};
+    if (!session || !path)
+        return BH_BAD_CALL;
     forget_plan(session);
     forget_messages(session);
     const bh_code bad = bh_file_read(path, MOST_BYTES, &session->bytes, &err);
@@ -145,6 +148,8 @@ bh_result bh_session_load(bh_session *session, const char *path)
 bh_result bh_session_load_text(bh_session *session, const char *text, size_t length,
                                const char *name)
 {
+    if (!session || (!text && length) || !name)
+        return BH_BAD_CALL;
     forget_plan(session);
     bh_text_append_bytes(&session->bytes, text, length);
     return adopt(session, name);
@@ -189,7 +194,7 @@ bh_result bh_session_change(bh_session *session, const char *path, const char *v
     size_t at = 0;
     const char *old = NULL;
     bh_plan *plan = NULL;
-    if (!session->plan)
+    if (!session || !session->plan || !path || !value)
         return BH_BAD_CALL;
     char *copy = strdup(value);
     if (!copy || !put_change(session, path, copy, &at, &old)) {
@@ -213,7 +218,7 @@ bh_result bh_session_evaluate(bh_session *session)
 {
     bh_error err = {.code = BH_OK};
     const bh_evaluation how = {.bins = false};
-    if (!session->plan)
+    if (!session || !session->plan)
         return BH_BAD_CALL;
     bh_table *table = bh_table_new(session->plan, &how, NULL, &err);
     if (!table)
@@ -232,13 +237,13 @@ bh_result bh_session_evaluate(bh_session *session)
 
 size_t bh_session_rows(const bh_session *session)
 {
-    return session->table ? bh_table_rows(session->table, false) : 0;
+    return session && session->table ? bh_table_rows(session->table, false) : 0;
 }
 
 /* The column, or -1 when the cell does not exist. */
 static int cell(const bh_session *s, size_t row, const char *column)
 {
-    return row < bh_session_rows(s) ? bh_column_find(column) : -1;
+    return column && row < bh_session_rows(s) ? bh_column_find(column) : -1;
 }
 
 double bh_session_number(const bh_session *session, size_t row, const char *column)
@@ -271,10 +276,10 @@ const char *bh_column_meaning(size_t i)
 
 size_t bh_session_messages(const bh_session *session)
 {
-    return session->message_count;
+    return session ? session->message_count : 0;
 }
 
 const char *bh_session_message(const bh_session *session, size_t i)
 {
-    return i < session->message_count ? session->message[i] : NULL;
+    return i < bh_session_messages(session) ? session->message[i] : NULL;
 }

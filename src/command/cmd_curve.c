@@ -12,7 +12,7 @@
 #include "beamhours/report/csv.h"
 #include "beamhours/run/curve.h"
 
-enum { MOST = 8, CELL = 14 };
+enum { MOST = 8, CELL = 16, NARROW = 12, MARKS = 12 };
 
 struct curves {
     bh_against against;
@@ -56,7 +56,7 @@ static int column(const bh_arguments *a, bh_column_id *out)
     return bh_usage(a, sentence);
 }
 
-/* Splits --structure A,B; each must be a name of the registry. */
+/* Splits --structure A,B. */
 static int structures(const bh_arguments *a, struct curves *c)
 {
     const char *given = a->value[BH_OPT_STRUCTURE];
@@ -71,6 +71,8 @@ static int structures(const bh_arguments *a, struct curves *c)
         char *comma = strchr(s, ',');
         if (comma)
             *comma = '\0';
+        if (!*s)
+            return bh_usage(a, "--structure has an empty name; `beamhours models` lists them");
         if (c->count == MOST)
             return bh_usage(a, "--structure takes 8 names at most");
         c->name[c->count++] = s;
@@ -118,63 +120,85 @@ static void as_csv(const struct curves *c, bh_text *out)
     }
 }
 
-/* Where the smallest and largest of all positive values lie. */
-static void span(const struct curves *c, double *lo, double *hi)
+/* Where the smallest and largest values lie; logarithmic where all are positive. */
+struct span {
+    double lo, hi;
+    bool logarithmic;
+};
+
+static struct span span_of(const struct curves *c)
 {
-    *lo = INFINITY;
-    *hi = 0.0;
+    struct span s = {INFINITY, -INFINITY, true};
     for (size_t k = 0; k < c->count; k++)
         for (size_t i = 0; i < bh_curve_count(c->curve[k]); i++) {
             const double y = bh_curve_y(c->curve[k], i, c->column);
-            if (y > 0.0) {
-                *lo = fmin(*lo, y);
-                *hi = fmax(*hi, y);
-            }
+            if (!isfinite(y))
+                continue;
+            s.lo = fmin(s.lo, y);
+            s.hi = fmax(s.hi, y);
         }
+    s.logarithmic = s.lo > 0.0;
+    return s;
 }
 
-/* A row of marks on a logarithmic scale: a digit a curve where there are several. */
-static void plot_row(const struct curves *c, size_t i, int width, bh_text *out)
+/* Returns 0 to 1 across the plot. */
+static double place(const struct span *s, double y)
 {
-    char row[256];
-    double lo = 0.0, hi = 0.0;
-    span(c, &lo, &hi);
+    if (!(s->hi > s->lo))
+        return 0.5;
+    return s->logarithmic ? log(y / s->lo) / log(s->hi / s->lo) : (y - s->lo) / (s->hi - s->lo);
+}
+
+/* A row of marks: a digit a curve where there are several. */
+static void plot_row(const struct curves *c, const struct span *s, size_t i, int width,
+                     bh_text *out)
+{
+    char row[128];
     memset(row, ' ', sizeof row);
     for (size_t k = c->count; k-- > 0;) {
         const double y = bh_curve_y(c->curve[k], i, c->column);
-        if (!(y > 0.0))
-            continue;
-        const double at = hi > lo ? log(y / lo) / log(hi / lo) : 0.5;
-        row[(int)(at * (width - 1))] = c->count > 1 ? (char)('1' + k) : '*';
+        if (isfinite(y))
+            row[(int)(place(s, y) * (width - 1))] = c->count > 1 ? (char)('1' + k) : '*';
     }
     bh_text_appendf(out, " |%.*s|", width, row);
 }
 
+static int cell_width(const char *name)
+{
+    const int length = name ? (int)strlen(name) : 0;
+    return length > NARROW ? length : NARROW;
+}
+
+static void text_row(const struct curves *c, const struct span *s, size_t i, int plot, bh_text *out)
+{
+    char number[BH_NUMBER_SIZE];
+    (void)bh_number_digits(bh_curve_x(c->curve[0], i), 5, number, sizeof number);
+    bh_text_appendf(out, "%*s", CELL, number);
+    for (size_t k = 0; k < c->count; k++) {
+        const double y = bh_curve_y(c->curve[k], i, c->column);
+        (void)bh_number_digits(y, 5, number, sizeof number);
+        bh_text_appendf(out, " %*s", cell_width(c->name[k]), isfinite(y) ? number : "-");
+    }
+    plot_row(c, s, i, plot, out);
+    const char *marks = bh_curve_marks(c->curve[0], i);
+    bh_text_appendf(out, "%s%s\n", marks[0] ? " " : "", marks);
+}
+
 static void as_text(const struct curves *c, int width, bh_text *out)
 {
-    const int numbers = CELL * (int)(1 + c->count);
-    int plot = width - numbers - 20;
-    plot = plot < 10 ? 10 : plot > 100 ? 100 : plot;
-    bh_text_appendf(out, "%s against %s%s\n", bh_column_at((int)c->column)->key,
-                    bh_curve_key(c->against),
-                    "; the plot is logarithmic; settings that stand there at the right");
-    bh_text_appendf(out, "%*s", CELL, bh_curve_key(c->against));
-    for (size_t k = 0; k < c->count; k++)
-        bh_text_appendf(out, " %*.*s", CELL - 1, CELL - 1, c->name[k] ? c->name[k] : "value");
-    bh_text_append(out, "\n");
-    for (size_t i = 0; i < bh_curve_count(c->curve[0]); i++) {
-        char number[BH_NUMBER_SIZE];
-        (void)bh_number_digits(bh_curve_x(c->curve[0], i), 5, number, sizeof number);
-        bh_text_appendf(out, "%*s", CELL, number);
-        for (size_t k = 0; k < c->count; k++) {
-            const double y = bh_curve_y(c->curve[k], i, c->column);
-            (void)bh_number_digits(y, 5, number, sizeof number);
-            bh_text_appendf(out, " %*s", CELL - 1, isfinite(y) ? number : "-");
-        }
-        plot_row(c, i, plot, out);
-        const char *marks = bh_curve_marks(c->curve[0], i);
-        bh_text_appendf(out, "%s%s\n", marks[0] ? " " : "", marks);
+    const struct span s = span_of(c);
+    int plot = width - CELL - MARKS - 3;
+    bh_text_appendf(out, "%s against %s; plot %s, settings at the right\n%*s",
+                    bh_column_at((int)c->column)->key, bh_curve_key(c->against),
+                    s.logarithmic ? "logarithmic" : "linear", CELL, bh_curve_key(c->against));
+    for (size_t k = 0; k < c->count; k++) {
+        bh_text_appendf(out, " %*s", cell_width(c->name[k]), c->name[k] ? c->name[k] : "value");
+        plot -= 1 + cell_width(c->name[k]);
     }
+    bh_text_append(out, "\n");
+    plot = plot < 10 ? 10 : plot > 100 ? 100 : plot;
+    for (size_t i = 0; i < bh_curve_count(c->curve[0]); i++)
+        text_row(c, &s, i, plot, out);
 }
 
 static int show(const bh_arguments *a, const char *format, const bh_plan *plan)

@@ -65,6 +65,44 @@ static void all(bh_text *out)
         brief(&key, out);
 }
 
+/* American spellings of keys are accepted, as in plans. */
+static void british(const char *word, char *out, size_t size)
+{
+    (void)snprintf(out, size, "%s", word);
+    char *ize = strstr(out, "polarization");
+    if (ize)
+        ize[strlen("polari")] = 's';
+}
+
+/* The paths that end in this name alone: "in_plane" is "arms.in_plane".  Returns how many. */
+static int places_of(const char *name, bh_text *places, bh_plan_key *found)
+{
+    bh_plan_key key;
+    int count = 0;
+    for (size_t i = 0; bh_plan_key_at(i, &key); i++) {
+        const char *last = strrchr(key.path, '.');
+        if (!last || strcmp(last + 1, name) != 0)
+            continue;
+        bh_text_appendf(places, "%s%s", count ? ", " : "", key.path);
+        *found = key;
+        count++;
+    }
+    return count;
+}
+
+static int no_key(const bh_arguments *a, const bh_text *places, const bh_plan_key *near)
+{
+    char sentence[400];
+    if (places->bytes)
+        (void)snprintf(sentence, sizeof sentence, "\"%.60s\" is a key in several places: %s",
+                       a->words[0], places->bytes);
+    else
+        (void)snprintf(sentence, sizeof sentence, "no key \"%.60s\"%s%s", a->words[0],
+                       near->path[0] ? "; did you mean " : "; `beamhours keys` lists them",
+                       near->path);
+    return bh_usage(a, sentence);
+}
+
 int bh_cmd_keys(const bh_arguments *arguments)
 {
     bh_text out = {0};
@@ -75,11 +113,15 @@ int bh_cmd_keys(const bh_arguments *arguments)
         all(&out);
         return bh_output(&out, NULL);
     }
-    if (!bh_plan_key_find(arguments->words[0], &key, &near)) {
-        char sentence[200];
-        (void)snprintf(sentence, sizeof sentence, "no key \"%.60s\"%s%s", arguments->words[0],
-                       near.path[0] ? "; did you mean " : "; `beamhours keys` lists them", near.path);
-        return bh_usage(arguments, sentence);
+    char word[80];
+    british(arguments->words[0], word, sizeof word);
+    if (!bh_plan_key_find(word, &key, &near)) {
+        bh_text places = {0};
+        const int found = places_of(word, &places, &key);
+        const int status = found == 1 ? 0 : no_key(arguments, &places, &near);
+        bh_text_free(&places);
+        if (status)
+            return status;
     }
     full(&key, &out);
     inside(key.path, &out);

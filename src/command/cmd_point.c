@@ -11,6 +11,7 @@
 #include "beamhours/command/input.h"
 #include "beamhours/command/places.h"
 #include "beamhours/physics/coulomb.h"
+#include "beamhours/report/text_table.h"
 #include "beamhours/run/one_point.h"
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
@@ -153,9 +154,10 @@ static void as_text(const bh_single *s, bh_text *out)
         else if (bh_number_digits(v->value, 8, number, sizeof number))
             bh_text_appendf(out, "%-38s %s\n", v->key, isfinite(v->value) ? number : "-");
     }
-    bh_text_appendf(out, "formula: %s\n", s->formula);
-    if (s->source[0])
-        bh_text_appendf(out, "source: %s\n", s->source);
+    const int width = bh_places_width();
+    bh_report_wrapped("formula    ", s->formula, width, out);
+    bh_report_wrapped("source     ", s->source, width, out);
+    bh_report_wrapped("structure  ", s->structure_source, width, out);
 }
 
 static int as_json(const bh_single *s, bh_text *out)

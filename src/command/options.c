@@ -216,7 +216,8 @@ const char *bh_arguments_format(const bh_arguments *arguments, bh_option_id id)
     if (listed(options[id].values, given, strlen(given)) && given[0])
         return given;
     in_words(options[id].values, choices, sizeof choices);
-    (void)snprintf(sentence, sizeof sentence, "no format \"%.60s\"; --format is %s", given, choices);
+    (void)snprintf(sentence, sizeof sentence, "no format \"%.60s\"; --format is %s", given,
+                   choices);
     (void)bh_usage(arguments, sentence);
     return NULL;
 }

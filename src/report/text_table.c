@@ -191,8 +191,8 @@ static size_t counterpart(const bh_selection *of, size_t i, const bh_selection *
     for (size_t k = 0; k < in->row_count; k++) {
         bool same = bh_table_place(in->table, in->bins, in->rows[k]).bin == bin;
         for (size_t n = 0; same && n < sizeof names / sizeof names[0]; n++)
-            same = strcmp(bh_selection_text(of, i, names[n]), bh_selection_text(in, k, names[n])) ==
-                   0;
+            same =
+                strcmp(bh_selection_text(of, i, names[n]), bh_selection_text(in, k, names[n])) == 0;
         if (same)
             return k;
     }

@@ -7,13 +7,15 @@
 
 #include "beamhours/base/text.h"
 #include "beamhours/physics/kinematics.h"
+#include "beamhours/physics/structure.h"
 #include "beamhours/run/event_search.h"
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
-enum { POINTS = 61 };
+enum { POINTS = 61, MEV2_PER_GEV2 = 1000000 };
 
 struct bh_curve {
+    bh_structure_choice choice; /* of the struck nuclide, where the caller names a model */
     size_t count;
     double x[POINTS];
     char *marks[POINTS];
@@ -27,6 +29,7 @@ struct bh_curve {
 struct origin {
     const bh_setting *setting;
     const bh_setting_arm *arm;
+    const bh_nuclide *nuclide;
     bh_collision collision;
     double q2;   /* [MeV^2] at the arm's angle; NAN where there is none */
     bool recoil; /* the arm detects the recoil */
@@ -46,8 +49,12 @@ static const bh_setting *find_setting(const bh_plan *plan, const char *name, bh_
     for (size_t i = 0; i < plan->setting_count; i++)
         if (!name || strcmp(plan->settings[i].name, name) == 0)
             return &plan->settings[i];
-    (void)bh_fail(err, BH_EDOMAIN, "no setting \"%s\"; the first is %s", name,
-                  plan->settings[0].name);
+    bh_text names = {0};
+    for (size_t i = 0; i < plan->setting_count && names.length < 200; i++)
+        bh_text_appendf(&names, "%s%s", i ? ", " : "", plan->settings[i].name);
+    (void)bh_fail(err, BH_EDOMAIN, "no setting \"%s\"; there are %s", name,
+                  names.bytes ? names.bytes : "none");
+    bh_text_free(&names);
     return NULL;
 }
 
@@ -85,6 +92,7 @@ static bh_code start(const bh_plan *plan, const bh_curve_request *r, struct orig
     if (!nuclide)
         return bh_fail(err, BH_EDOMAIN,
                        "the scatterer of this setting has no isotope to compute with");
+    o->nuclide = nuclide;
     o->against = r->against;
     o->recoil = o->arm->arm.detects == BH_DETECTS_RECOIL;
     o->collision = (bh_collision){o->setting->beam.particle.mass, nuclide->mass,
@@ -207,24 +215,60 @@ static void add_point(bh_curve *c, const struct origin *o, double x)
 
 /* --- marks --- */
 
-/* Whether setting `i` of the plan stands nearest to point `at`, or its acceptance covers it. */
+static bool near(double a, double b)
+{
+    return fabs(a - b) <= 1e-6 * fabs(b);
+}
+
+/* The point closest to `x`, in the curve's own variable; count where that is outside the curve. */
+static size_t closest(const bh_curve *c, double x)
+{
+    const double half = c->count > 1 ? fabs(c->x[1] - c->x[0]) : 0.0;
+    size_t best = 0;
+    for (size_t i = 1; i < c->count; i++)
+        if (fabs(c->x[i] - x) < fabs(c->x[best] - x))
+            best = i;
+    return fabs(c->x[best] - x) <= half ? best : c->count;
+}
+
+/* Whether the acceptance of `a` covers the angle at which the arm stands at point `at`. */
+static bool covers(const bh_curve *c, const bh_setting_arm *a, size_t at)
+{
+    const double off = c->arms[at].angle.value - a->angle.value;
+    return a->arm.shape == BH_SHAPE_RECTANGLE && off >= a->arm.in_plane.from &&
+           off <= a->arm.in_plane.to;
+}
+
+/* Whether arm `a` of setting `s` lies on the curve, and there at point `at`: it must agree in what
+ * the curve keeps (energy, angle or Q2); where the angle moves its acceptance is marked too. */
+static bool arm_stands_at(const bh_curve *c, const struct origin *o, const bh_setting *s,
+                          const bh_setting_arm *a, size_t at)
+{
+    const double energy = s->beam.kinetic_energy.value;
+    const bh_known known = {energy, a->angle.value, NAN, NAN, o->recoil};
+    bh_event e;
+    double kinetic = 0.0;
+    if (o->against == BH_AGAINST_ENERGY)
+        return near(a->angle.value, o->arm->angle.value) && closest(c, energy) == at;
+    if (bh_event_search(&o->collision, &known, &kinetic, &e, NULL))
+        return false;
+    if (o->against == BH_AGAINST_EPSILON)
+        return near(e.q2, o->q2) && closest(c, e.epsilon) == at;
+    if (!near(energy, o->collision.kinetic))
+        return false;
+    const double x =
+        o->against == BH_AGAINST_ANGLE ? a->angle.value / BH_DEGREE : e.q2 / MEV2_PER_GEV2;
+    return covers(c, a, at) || closest(c, x) == at;
+}
+
 static bool stands_at(const bh_curve *c, const struct origin *o, const bh_setting *s, size_t at)
 {
-    for (size_t k = 0; k < s->arm_count; k++) {
-        const bh_setting_arm *a = &s->arms[k];
-        if (strcmp(a->arm.name.text, o->arm->arm.name.text) != 0)
-            continue;
-        if (o->against == BH_AGAINST_ANGLE) {
-            const double off = c->x[at] * BH_DEGREE - a->angle.value;
-            const double step = (c->x[1] - c->x[0]) * BH_DEGREE / 2.0;
-            return off >= fmin(a->arm.in_plane.from, -step) &&
-                   off <= fmax(a->arm.in_plane.to, step);
-        }
-        if (o->against == BH_AGAINST_ENERGY) {
-            const double off = log(s->beam.kinetic_energy.value / c->x[at]);
-            return fabs(off) <= log(c->x[1] / c->x[0]) / 2.0;
-        }
-    }
+    if (s->beam.particle.mass < o->collision.mass || s->beam.particle.mass > o->collision.mass)
+        return false;
+    for (size_t k = 0; k < s->arm_count; k++)
+        if (strcmp(s->arms[k].arm.name.text, o->arm->arm.name.text) == 0 &&
+            arm_stands_at(c, o, s, &s->arms[k], at))
+            return true;
     return false;
 }
 
@@ -232,7 +276,7 @@ static bool mark(bh_curve *c, const bh_plan *plan, const struct origin *o)
 {
     for (size_t i = 0; i < c->count; i++) {
         bh_text names = {0};
-        for (size_t s = 0; c->count > 1 && s < plan->setting_count; s++)
+        for (size_t s = 0; s < plan->setting_count; s++)
             if (stands_at(c, o, &plan->settings[s], i))
                 bh_text_appendf(&names, "%s%s", names.length ? " " : "", plan->settings[s].name);
         bh_text_append(&names, "");
@@ -249,6 +293,12 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
                         const struct origin *o, bh_error *err)
 {
     double lo = 0.0, hi = 0.0;
+    if (r->structure) {
+        bh_structure *named = bh_structure_new(r->structure, o->nuclide->z, o->nuclide->a, err);
+        if (!named)
+            return err->code = BH_EDOMAIN;
+        bh_structure_free(named);
+    }
     limits(o, &lo, &hi);
     for (int i = 0; i < POINTS && hi > lo; i++)
         add_point(c, o, lo + (hi - lo) * i / (POINTS - 1));
@@ -258,19 +308,22 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
     c->plan.settings = c->settings;
     c->plan.setting_count = c->count;
     if (r->structure) {
-        c->plan.models.structure.text = r->structure;
-        c->plan.models.choice_count = 0;
+        c->choice = (bh_structure_choice){o->nuclide->z, o->nuclide->a, {.text = r->structure}};
+        c->plan.models.by_nuclide = &c->choice;
+        c->plan.models.choice_count = 1;
     }
     const bh_evaluation how = {.bins = false};
     c->table = bh_table_new(&c->plan, &how, NULL, err);
     if (!c->table)
-        return err ? err->code : BH_ENOMEM;
+        return err->code;
     return mark(c, plan, o) ? BH_OK : bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
 }
 
 bh_curve *bh_curve_new(const bh_plan *plan, const bh_curve_request *request, bh_error *err)
 {
     struct origin o = {0};
+    bh_error unseen;
+    err = err ? err : &unseen;
     if (start(plan, request, &o, err))
         return NULL;
     bh_curve *c = calloc(1, sizeof *c);

@@ -15,7 +15,7 @@ typedef struct {
     const char *setting; /* name; NULL: the first */
     const char *arm;     /* name; NULL where the setting has one */
     bh_against against;
-    const char *structure; /* instead of the plan's choice for all nuclides; NULL: the plan's */
+    const char *structure; /* of the struck nuclide, instead of the plan's; NULL: the plan's */
 } bh_curve_request;
 
 typedef struct bh_curve bh_curve;
@@ -34,8 +34,9 @@ double bh_curve_x(const bh_curve *curve, size_t i);
 /* Returns [1] the column at point i, in the unit of its key; NAN where it is empty. */
 double bh_curve_y(const bh_curve *curve, size_t i, bh_column_id column);
 
-/* Names of the plan's settings that stand at point i, or whose acceptance covers it where the angle
- * varies; "" for none. */
+/* Names of the plan's settings that lie on the curve (same particle, and same energy; angle; or Q2,
+ * whichever the curve keeps) at point i, or whose acceptance covers it where the angle varies; ""
+ * for none. */
 const char *bh_curve_marks(const bh_curve *curve, size_t i);
 
 /* The key and unit of what varies ("angle_deg"). */

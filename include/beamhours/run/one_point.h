@@ -44,7 +44,8 @@ typedef struct {
     bh_single_value values[BH_SINGLE_MOST];
     char scatterer[8], structure[48]; /* names that values[] point to */
     char formula[160];                /* which formula, in words */
-    char source[256];                 /* of the structure model */
+    char source[256];                 /* of that formula */
+    char structure_source[256];       /* of the structure model */
     char warning[5][320];             /* "" where there is none */
 } bh_single;
 
