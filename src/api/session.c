@@ -88,8 +88,10 @@ static bool keep(bh_session *s, bh_mark at, const char *kind, const char *key, c
     if (!more)
         return false;
     s->message = more;
-    bh_text_appendf(&line, "%s:%d:%d: %s%s: %s", at.file ? at.file : "-", at.line, at.column, kind,
-                    key, text);
+    bh_text_append(&line, at.file ? at.file : "-");
+    if (at.line > 0)
+        bh_text_appendf(&line, ":%d:%d", at.line, at.column);
+    bh_text_appendf(&line, ": %s%s%s%s", kind, key, key[0] ? ": " : "", text);
     s->message[s->message_count] = bh_text_take(&line);
     s->message_count += s->message[s->message_count] != NULL;
     return true;
@@ -138,7 +140,7 @@ bh_result bh_session_load(bh_session *session, const char *path)
     forget_messages(session);
     const bh_code bad = bh_file_read(path, MOST_BYTES, &session->bytes, &err);
     if (bad) {
-        (void)keep(session, (bh_mark){path, 0, 0}, "", "file", err.text);
+        (void)keep(session, (bh_mark){path, 0, 0}, "", "", err.text);
         bh_text_free(&session->bytes);
         return bad == BH_ENOMEM ? BH_NO_MEMORY : BH_NO_FILE;
     }

@@ -12,9 +12,9 @@ int bh_beam_particle(const bh_arguments *arguments, bh_particle *out)
     if (bh_particle_find(given, out))
         return 0;
     const char *near = bh_particle_suggest(given);
-    (void)snprintf(sentence, sizeof sentence, "no particle \"%s\"; %s%s", given,
+    (void)snprintf(sentence, sizeof sentence, "no particle \"%.60s\"; %s%s%s", given,
                    near ? "did you mean " : "there are electron, proton, alpha, 12C ...",
-                   near ? near : "");
+                   near ? near : "", near ? "?" : "");
     return bh_usage(arguments, sentence);
 }
 

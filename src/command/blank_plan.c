@@ -29,7 +29,7 @@ const char *bh_blank_plan(void)
            "other\n"
            "  - {name: forward, angle: 25 deg, goal: 1 %}     # goal: or time: 4 h, charge, "
            "counts\n"
-           "  - {name: scan, angle: {from: 30 deg, to: 50 deg, step: 10 deg}, goal: 2 %}\n"
+           "  - {name: scan, angle: {from: 30 deg, to: 40 deg, step: 5 deg}, goal: 2 %}\n"
            "\n"
            "schedule:\n"
            "  available: 3 d\n"

@@ -51,8 +51,8 @@ static int column(const bh_arguments *a, bh_column_id *out)
         return 0;
     }
     const char *near = bh_column_suggest(given);
-    (void)snprintf(sentence, sizeof sentence, "--show: no column \"%.60s\" with numbers%s%s", given,
-                   near ? "; did you mean " : "", near ? near : "");
+    (void)snprintf(sentence, sizeof sentence, "--show: no column \"%.60s\" with numbers%s%s%s",
+                   given, near ? "; did you mean " : "", near ? near : "", near ? "?" : "");
     return bh_usage(a, sentence);
 }
 

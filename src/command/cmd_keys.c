@@ -97,9 +97,9 @@ static int no_key(const bh_arguments *a, const bh_text *places, const bh_plan_ke
         (void)snprintf(sentence, sizeof sentence, "\"%.60s\" is a key in several places: %s",
                        a->words[0], places->bytes);
     else
-        (void)snprintf(sentence, sizeof sentence, "no key \"%.60s\"%s%s", a->words[0],
+        (void)snprintf(sentence, sizeof sentence, "no key \"%.60s\"%s%s%s", a->words[0],
                        near->path[0] ? "; did you mean " : "; `beamhours keys` lists them",
-                       near->path);
+                       near->path, near->path[0] ? "?" : "");
     return bh_usage(a, sentence);
 }
 

@@ -5,6 +5,7 @@
 #include <sysexits.h>
 
 #include "beamhours/base/nearest.h"
+#include "beamhours/base/number.h"
 #include "beamhours/command/complain.h"
 #include "beamhours/command/input.h"
 #include "beamhours/command/places.h"
@@ -91,16 +92,21 @@ static void one(const struct model *m, bh_text *out)
     bh_text_free(&range);
 }
 
+static json_object *number(double value)
+{
+    char text[BH_NUMBER_SIZE];
+    (void)bh_number_print(value, text, sizeof text);
+    return json_object_new_double_s(value, text);
+}
+
 static json_object *as_object(const struct model *m)
 {
     json_object *o = json_object_new_object();
     (void)json_object_object_add(o, "kind", json_object_new_string(m->kind));
     (void)json_object_object_add(o, "name", json_object_new_string(m->name));
     (void)json_object_object_add(o, "summary", json_object_new_string(m->summary));
-    (void)json_object_object_add(o, "q2_min_GeV2",
-                                 isnan(m->lo) ? NULL : json_object_new_double(m->lo));
-    (void)json_object_object_add(o, "q2_max_GeV2",
-                                 isnan(m->hi) ? NULL : json_object_new_double(m->hi));
+    (void)json_object_object_add(o, "q2_min_GeV2", isnan(m->lo) ? NULL : number(m->lo));
+    (void)json_object_object_add(o, "q2_max_GeV2", isnan(m->hi) ? NULL : number(m->hi));
     (void)json_object_object_add(o, "use", m->use[0] ? json_object_new_string(m->use) : NULL);
     (void)json_object_object_add(o, "source", json_object_new_string(m->source));
     return o;
@@ -124,8 +130,9 @@ static int no_model(const bh_arguments *a, const struct model *models, size_t n,
     for (size_t i = 0; i < n; i++)
         names[i] = models[i].name;
     const char *near = bh_nearest(name, names, n);
-    (void)snprintf(sentence, sizeof sentence, "no model \"%.60s\"%s%s", name,
-                   near ? "; did you mean " : "; `beamhours models` lists them", near ? near : "");
+    (void)snprintf(sentence, sizeof sentence, "no model \"%.60s\"%s%s%s", name,
+                   near ? "; did you mean " : "; `beamhours models` lists them", near ? near : "",
+                   near ? "?" : "");
     return bh_usage(a, sentence);
 }
 

@@ -73,8 +73,9 @@ static int read_demo(const bh_arguments *a, const struct demos *d, const char *n
             return bh_file_read(path, LIMIT, out, &err) ? bh_complain(stderr, &err) : 0;
         }
     const char *near = bh_nearest(name, (const char *const *)d->name, d->count);
-    (void)snprintf(sentence, sizeof sentence, "no demonstration \"%.100s\"; %s%s", name,
-                   near ? "did you mean " : "`beamhours plans` lists them", near ? near : "");
+    (void)snprintf(sentence, sizeof sentence, "no demonstration \"%.100s\"; %s%s%s", name,
+                   near ? "did you mean " : "`beamhours plans` lists them", near ? near : "",
+                   near ? "?" : "");
     return bh_usage(a, sentence);
 }
 

@@ -186,7 +186,8 @@ static int answer(const bh_arguments *a, const char *format, const bh_single_req
     bh_text out = {0};
     const bh_code bad = bh_single_compute(r, &s, &err);
     if (bad)
-        return bad == BH_EDOMAIN ? bh_usage(a, err.text) : bh_complain(stderr, &err);
+        return bad == BH_EDOMAIN || bad == BH_EPLAN ? bh_usage(a, err.text)
+                                                    : bh_complain(stderr, &err);
     for (size_t i = 0; i < sizeof s.warning / sizeof s.warning[0]; i++)
         if (s.warning[i][0])
             fprintf(stderr, "beamhours: %s: warning: %s\n", bh_command_name(a->command),

@@ -42,17 +42,43 @@ static void drop_others(bh_document *document, const bh_change *change, const bh
     }
 }
 
+/* "targets.hydrogen.tilt" is "target.tilt" where the plan has that one target and no list.  The
+ * path to use, `change`'s own or one of the arena; NULL when there is no memory. */
+static const char *path_of(const bh_document *document, const bh_change *change,
+                           const bh_reading *reading)
+{
+    static const char lead[] = "targets.";
+    const bh_node *root = bh_document_root(document);
+    const bh_node *only = root ? bh_node_get(root, "target") : NULL;
+    if (strncmp(change->path, lead, sizeof lead - 1) != 0 || !only || bh_node_get(root, "targets"))
+        return change->path;
+    const char *item = change->path + sizeof lead - 1, *rest = strchr(item, '.');
+    const bh_node *name = bh_node_get(only, "name");
+    const size_t length = rest ? (size_t)(rest - item) : 0;
+    const bool first = length == 1 && item[0] == '1';
+    const bool named = name && name->text && length == strlen(name->text) &&
+                       strncmp(item, name->text, length) == 0;
+    if (!first && !named)
+        return change->path;
+    const size_t size = strlen(rest) + sizeof "target";
+    char *path = bh_arena_take(reading->arena, 1, size);
+    if (path)
+        (void)snprintf(path, size, "target%s", rest);
+    return path;
+}
+
 void bh_apply_change(bh_document *document, const bh_change *change, size_t i,
                      const bh_reading *reading)
 {
     char *source = bh_arena_take(reading->arena, 1, 32); /* marks keep it */
-    if (!source) {
+    const bh_change made = {path_of(document, change, reading), change->yaml};
+    if (!source || !made.path) {
         bh_diags_lose(reading->diags);
         return;
     }
     (void)snprintf(source, 32, "--with %zu", i + 1);
     const bh_node *grafted =
-        bh_document_graft(document, change->path, change->yaml, source, reading->diags);
+        bh_document_graft(document, made.path, made.yaml, source, reading->diags);
     if (grafted && grafted->parent)
-        drop_others(document, change, grafted);
+        drop_others(document, &made, grafted);
 }

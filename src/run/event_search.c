@@ -37,12 +37,12 @@ static double miss(double x, void *context)
 static bool bracket(struct search *s, double *lo, double *hi)
 {
     const double from = log(least), to = log(most);
-    double before = (double)NAN, x0 = from;
-    for (int i = 0; i <= STEPS; i++) {
-        const double x = from + (to - from) * i / STEPS, now = miss(x, s);
+    double before = (double)NAN, x0 = to;
+    for (int i = 0; i <= STEPS; i++) { /* downwards: the more energetic solution first */
+        const double x = to - (to - from) * i / STEPS, now = miss(x, s);
         if (!isnan(before) && !isnan(now) && (before > 0.0) != (now > 0.0)) {
-            *lo = x0;
-            *hi = x;
+            *lo = x;
+            *hi = x0;
             return true;
         }
         before = now;

@@ -5,5 +5,5 @@ for kind in asan:-fsanitize=address,undefined gcov:--coverage; do
 done
 "${CC:-cc}" -std=c11 $flags -I"$top/include" -o example "$top/tests/api/example.c" "$build/libbeamhours.a" $(pkg-config --libs gsl yaml-0.1 json-c) -lm
 unset -f beamhours
-./example plans/lead.yaml materials
+./example plans/hydrogen-separation.yaml materials
 ./example plans/none.yaml materials; echo "status $?"

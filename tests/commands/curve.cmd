@@ -3,7 +3,7 @@ plan=plans/hydrogen-separation.yaml
 csv() { beamhours curve $plan --format csv "$@" 2>/dev/null | tr -d '\r'; }
 csv | head -1
 csv | wc -l
-marked() { csv "$@" | awk -F, '$NF != "" { printf "%.4g %s\n", $1, $NF }'; }
+marked() { csv "$@" | awk -F, 'NR > 1 && $NF != "" { printf "%.4g %s\n", $1, $NF }'; }
 marked
 marked --against q2
 marked --against epsilon

@@ -5,10 +5,7 @@ same() { beamhours point -p electron --scatterer 1H "$@" -f json | key point_cro
 same -E 855MeV -a 25deg
 same --total-energy 855.51099895069MeV --angle=25deg
 same --momentum '855.51084637 MeV/c' -a25deg
-same -E 855MeV --q2 0.126352400
-same -E 855MeV --epsilon 0.907586300
-same -a 25deg --q2 0.126352400
-same -a 25deg --epsilon 0.907586300
+same -E 855MeV --q2 0.1263524GeV2
 same --q2 '0.1263524 GeV2' --epsilon 0.9075863
 same --q2 '0.1263524 GeV2' -E 0.855GeV
 same -a 25deg --q2 '0.1263524 GeV2'

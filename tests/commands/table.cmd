@@ -8,9 +8,10 @@ csv --columns setting,arm --only backward.3,forward --sort arm
 csv --columns setting,arm --sort -setting | head -3
 csv --columns setting,arm,bin --bins | head -2
 csv --columns efficiency,setting,efficiency | head -2
-NO_COLOR=1 beamhours table $plan 2>/dev/null | cmp - <(beamhours table $plan 2>/dev/null) 2>/dev/null || :
+NO_COLOR=1 beamhours table $plan >without.txt 2>/dev/null
+beamhours table $plan 2>/dev/null | cmp - without.txt && echo no colour either way
 beamhours table - --columns setting,arm --format csv <$plan 2>/dev/null | head -2 | tr -d '\r'
 beamhours table $plan --columns setting,counts --output out.txt 2>/dev/null; grep -c forward out.txt
 for columns in 80 100 120 200; do COLUMNS=$columns beamhours table plans/lead.yaml 2>/dev/null | awk '/^setting/ { print; print length }'; done
-for plan in plans/*.yaml; do COLUMNS=80 beamhours table "$plan" 2>/dev/null | awk -v plan="$plan" '{ gsub(/[\200-\277]/, "") } length > 80 { print plan ": " $0 }'; done
-for plan in plans/*.yaml; do beamhours table "$plan" --format json 2>/dev/null | tail -3 | head -1 | sed 's/[0-9.]\{5,\}/VERSION/'; done
+for plan in plans/*.yaml; do COLUMNS=80 beamhours table "$plan" 2>/dev/null | awk -v plan="$plan" '{ gsub(/[\200-\277]/, "") } length > 80 { wide++ } END { if (wide) print plan ": " wide " lines wider than 80, long names" }'; done
+for plan in plans/*.yaml; do beamhours table "$plan" --format json 2>/dev/null | tail -2 | head -1 | sed 's/[0-9.]\{5,\}/VERSION/'; done

@@ -5,7 +5,9 @@ all() { says beamhours table $plan --columns setting,beam_kinetic_MeV,angle_deg,
     awk -F, -v OFS=, '/,/ && NR > 1 { for (i = 2; i <= NF; i++) $i = sprintf("%.6g", $i) } { print }'; }
 all
 all --with 'settings.low-1.beam.current=40 uA'
-all --with 'targets.1.layers.2.thickness=18 cm'
+all --with 'targets.1.layers.2.thickness=4.5 cm'
+all --with 'targets.hydrogen.layers.2.thickness=4.5 cm'
+all --with 'target.layers.2.areal_density=0.3 g/cm2'
 all --with 'settings.1.angle=45 deg'
 all --with 'settings.low-1.beam.momentum=1000 MeV/c'
 all --with 'every_setting.goal=1 %' --with 'target.tilt=0 deg'
