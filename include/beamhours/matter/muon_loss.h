@@ -19,7 +19,8 @@ double bh_muon_pairs(int z, double energy);
 /* Fills `out` with the radiative loss [MeV cm2/g] against kinetic energy [MeV], 10 MeV to 10 TeV:
  * the two above and 0.4e-6 cm2/g of the energy above 0.3 GeV for nuclear interaction (15 % of that
  * part, Groom et al. sect. 4.3).  The energies at which radiation equals ionisation come out as
- * published to 2 % from carbon to copper; hydrogen and lead radiate 12 and 8 % too much. */
+ * published (values from memory) to 2.5 % for carbon, iron, copper; hydrogen and lead radiate 12
+ * and 8 % too much. */
 void bh_muon_radiation_make(const bh_medium *medium, bh_log_spline *out);
 
 #endif

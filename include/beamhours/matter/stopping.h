@@ -29,15 +29,16 @@
  *     3 % from 2 MeV per nucleon; at the maximum 20 % too large for those rich in hydrogen (water).
  *     Below the tables as the velocity.  Antiparticles differ by the Barkas term, held constant
  *     below 2 MeV per nucleon mass: 5 % there.  Ions from Z = 3 with the effective charge of Barkas
- *     (1963): 10 % below 10 MeV per nucleon, 30 % below 0.5; 1 % above 100 for Z < 10.
+ *     (1963): 10 % below 10 MeV per nucleon, 30 % below 0.5; 1 % above 100 for Z < 10.  These for
+ *     antiparticles and ions are estimates, not measured here.
  * Nuclear stopping is left out: below 0.1 % above 1 MeV per nucleon, 1 % at 10 keV.
  *
  * Radiative loss
  *   electrons: Seltzer and Berger's table, interpolated in Z and energy, 0.1 MeV to 1 GeV; above,
  *     its approach to complete screening (Tsai 1974).  0.5 % of the table.  Positrons by the ratio
- * of Kim, Pratt, Seltzer and Berger, Phys. Rev. A 33 (1986) 3002. muons: bremsstrahlung, pairs and
- * nuclear interaction: see muon_loss.h. others: 0 (less than 0.1 % of the collision loss below 1
- * TeV).
+ * of Kim, Pratt, Seltzer and Berger, Phys. Rev. A 33 (1986) 3002, its fit from memory. muons:
+ * bremsstrahlung, pairs and nuclear interaction: see muon_loss.h. others: 0 (less than 0.1 % of the
+ * collision loss below 1 TeV).
  */
 typedef struct bh_stopping bh_stopping;
 
