@@ -106,10 +106,10 @@ static size_t fitting(const char *s, int room)
     size_t i = 0, blank = 0;
     int cells = 0;
     for (; s[i] && s[i] != '\n'; i++) {
-        if (((unsigned char)s[i] & 0xC0) != 0x80 && ++cells > room)
-            return blank ? blank : i;
         if (s[i] == ' ')
             blank = i;
+        if (((unsigned char)s[i] & 0xC0) != 0x80 && ++cells > room)
+            return blank ? blank : i;
     }
     return i;
 }
