@@ -216,12 +216,12 @@ static void set_name(const bh_making *making, const bh_raw_target *raw, bh_targe
     if (making->plan.target_count > 1)
         bh_tell(making, raw->section.at, &raw->section, "name", BH_SAY_MISSING_KEY,
                 bh_schema_target.name, "name", "hydrogen");
-    target->name.text = "target";
-    for (size_t i = target->layer_count; i-- > 0;) {
-        const bh_layer *layer = &target->layers[i];
-        if (layer->material && (layer->role == BH_ROLE_SAMPLE || i == 0))
-            target->name.text = layer->material->name;
-    }
+    target->name.text = NULL;
+    for (size_t i = 0; i < target->layer_count && !target->name.text; i++)
+        if (target->layers[i].material && target->layers[i].role == BH_ROLE_SAMPLE)
+            target->name.text = target->layers[i].material->name;
+    if (!target->name.text && target->layer_count && target->layers[0].material)
+        target->name.text = target->layers[0].material->name; /* no sample: an error of its own */
 }
 
 static bh_code make_target(bh_making *making, const bh_raw_target *raw, bh_target *target)
