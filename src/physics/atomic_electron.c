@@ -25,7 +25,9 @@ static double interference(double third, double product)
 static double amplitude2(const bh_particle *beam, const bh_event *e)
 {
     const bh_invariants direct = {e->s, e->t, e->u};
-    double sum = bh_dirac_amplitude2(&direct, beam->mass, M);
+    if (!(e->q2 > 0.0))
+        return (double)INFINITY;
+    const double sum = bh_dirac_amplitude2(&direct, beam->mass, M);
     if (!is_electron(beam))
         return sum;
     if (beam->charge < 0) {

@@ -72,6 +72,14 @@ typedef struct {
     int spin;
 } resonance;
 
+static double power(double x, int n)
+{
+    double out = 1.0;
+    for (; n > 0; n--)
+        out *= x;
+    return out;
+}
+
 static double breit_wigner(const resonance *r, double w)
 {
     static const double radius = 6.08974; /* [1/GeV] */
@@ -82,7 +90,7 @@ static double breit_wigner(const resonance *r, double w)
     const double q0 = radius * sqrt(fmax(e0 * e0 - pion2, 0.0));
     const int j = 2 * r->spin;
     const double half =
-        0.5 * r->width * pow(q / q0, j + 1) * (1.0 + pow(q0, j)) / (1.0 + pow(q, j));
+        0.5 * r->width * power(q / q0, j + 1) * (1.0 + power(q0, j)) / (1.0 + power(q, j));
     /* pi and twice the mass as in the program that published the fit */
     return r->strength * half / ((w - M) * (w - M) + half * half) / 3.1415926 / 1.876512;
 }

@@ -42,7 +42,7 @@ typedef struct {
     /*
      * Fills value [ub/sr], per nucleus, the rate of particles at range->angle with momenta in the
      * range: the integral of d2sigma / dOmega dE'.  Of `encounter` beam, z, a and kinetic are read.
-     * Only where applies says so.  Quadrature 1e-5.  Input that is no number or out of range: value
+     * Only where applies says so.  Quadrature 2e-5.  Input that is no number or out of range: value
      * 0 and BH_NOT_COMPUTED, saying so.
      */
     void (*momentum_integral)(const bh_encounter *encounter, const bh_momentum_range *range,

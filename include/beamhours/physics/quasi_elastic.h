@@ -21,8 +21,8 @@
  * Rev. C 80 (2009) 035504, Fermi momenta of Maieron, Donnelly & Sick, Phys. Rev. C 65 (2002)
  * 025502 (both from memory), the suppression below twice the Fermi momentum of Tsai, Rev. Mod.
  * Phys. 46 (1974) 815, and R_T raised by 1.65: our own calibration on published spectra of 12C,
- * without which the model is 16 to 35 % low above q = 300 MeV/c.  Over 32 of those spectra with q
- * of 200 to 1400 MeV/c it gives 0.98 of the data at the peak, 4 % rms, the worst 11 % off.
+ * without which the model is 16 to 35 % low above q = 300 MeV/c.  Over 30 of those spectra with q
+ * of 200 to 1400 MeV/c it gives 0.98 of the data at the peak, 4 % rms, the worst 10 % off.
  */
 typedef enum { BH_QUASI_SCALING, BH_QUASI_FERMI_GAS } bh_quasi_model;
 

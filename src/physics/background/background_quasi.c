@@ -22,17 +22,32 @@ static const char *outside(const void *context, const bh_transfer *at)
     return bh_quasi_outside(context, at);
 }
 
-/* The momentum [MeV/c] between lo and hi at which psi' (falling with it) is `psi` [1]; an end
- * where it is not in between. */
+/* The momentum [MeV/c] below `hi` at which psi', which falls with it, is `psi` [1]; 0 where it
+ * never is.  Regula falsi with Illinois' halving. */
 static double at_psi(const bh_quasi_nucleus *nucleus, const bh_inclusive *in, double psi, double hi)
 {
-    double lo = 0.0;
-    for (int i = 0; i < 50; i++) {
-        const double middle = 0.5 * (lo + hi);
-        const bh_transfer at = bh_inclusive_transfer(in, middle);
-        *(bh_quasi_psi(nucleus, &at) > psi ? &lo : &hi) = middle;
+    bh_transfer at = bh_inclusive_transfer(in, 0.0);
+    double lo = 0.0, above = bh_quasi_psi(nucleus, &at) - psi;
+    at = bh_inclusive_transfer(in, hi);
+    double below = bh_quasi_psi(nucleus, &at) - psi;
+    if (!(above > 0.0 && below < 0.0))
+        return 0.0;
+    double now = lo;
+    for (int i = 0, side = 0; i < 60 && hi - lo > 1e-9 * hi; i++) {
+        const double next = lo + (hi - lo) * above / (above - below);
+        const bool settled = fabs(next - now) < 1e-10 * hi;
+        now = next;
+        if (settled)
+            break;
+        at = bh_inclusive_transfer(in, now);
+        const double off = bh_quasi_psi(nucleus, &at) - psi;
+        *(off > 0.0 ? &lo : &hi) = now;
+        *(off > 0.0 ? &above : &below) = off;
+        if (side == (off > 0.0 ? 1 : -1))
+            *(off > 0.0 ? &below : &above) *= 0.5;
+        side = off > 0.0 ? 1 : -1;
     }
-    return lo;
+    return now;
 }
 
 static void momentum_integral(const bh_encounter *encounter, const bh_momentum_range *range,
@@ -54,10 +69,7 @@ static void momentum_integral(const bh_encounter *encounter, const bh_momentum_r
     const double left = encounter->kinetic - nucleus.shift;
     if (left > 0.0) {
         const double first = sqrt(left * (left + 2.0 * mass));
-        const double psi[] = {BH_QUASI_PSI_MOST, 0.4, -0.4, -1.0}; /* the outer two last */
-        s.edge[s.count++] = first;
-        for (size_t i = 0; i < sizeof psi / sizeof psi[0]; i++)
-            s.edge[s.count++] = at_psi(&nucleus, &in, psi[i], first);
+        s.edge[s.count++] = at_psi(&nucleus, &in, BH_QUASI_PSI_MOST, first);
     }
     bh_momentum_range_integral(&s, range, value, validity);
 }
