@@ -38,16 +38,16 @@ static double with_f2(const bh_inclusive *in, const bh_transfer *at, double f2, 
 static double deep(int nucleons, const bh_inclusive *in, const bh_transfer *at)
 {
     const double x = bjorken(at), q2 = at->q2 / GEV2;
-    const double f2 = nucleons > 1 ? 2.0 * bh_f2_nmc95(2, x, q2) : bh_f2_allm97(x, q2);
+    const double f2 = nucleons > 1 ? 2.0 * bh_f2_nmc95_deuteron(x, q2) : bh_f2_allm97(x, q2);
     return with_f2(in, at, f2, bh_r_1998(x, q2));
 }
 
 static double resonant(int nucleons, const bh_inclusive *in, const bh_transfer *at)
 {
     const double w = sqrt(bh_inelastic_w2(at) / GEV2), q2 = at->q2 / GEV2;
-    double f2 = bh_f2_bodek79(1, w, q2);
+    double f2 = bh_f2_bodek79_proton(w, q2);
     if (nucleons > 1)
-        f2 += bh_f2_bodek79(0, w, q2);
+        f2 += bh_f2_bodek79_neutron(w, q2);
     return with_f2(in, at, f2, 0.18);
 }
 

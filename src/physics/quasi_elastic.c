@@ -31,9 +31,10 @@ bh_code bh_quasi_find(int z, int a, bh_quasi_model model, bh_quasi_nucleus *out,
     const gas *table = model == BH_QUASI_SCALING ? maieron : moniz;
     const size_t size = model == BH_QUASI_SCALING ? sizeof maieron / sizeof maieron[0]
                                                   : sizeof moniz / sizeof moniz[0];
-    char name[8];
-    if (a < 6 || z < 1 || z > a)
+    if (a < 6 || z < 1 || z > a) {
+        char name[8];
         return bh_fail(err, BH_EDOMAIN, BH_SAY_QUASI_NUCLEUS, bh_nuclide_name(z, a, name));
+    }
     size_t i = 1;
     while (i + 1 < size && table[i].a < a)
         i++;

@@ -41,29 +41,41 @@ static double polynomial(const double *c, int n, double x)
     return sum;
 }
 
-double bh_f2_nmc95(int nucleons, double x, double q2)
+typedef struct {
+    double a[7], b[4], c[4];
+} nmc95;
+
+static double nmc(const nmc95 *fit, double x, double q2)
 {
-    static const struct {
-        double a[7], b[4], c[4];
-    } fit[2] = {{{-0.02778, 2.926, 1.0362, -1.84, 8.123, -13.074, 6.215},
-                 {0.285, -2.694, 0.0188, 0.0274},
-                 {-1.413, 9.366, -37.79, 47.1}},
-                {{-0.04858, 2.863, 0.8367, -2.532, 9.145, -12.504, 5.473},
-                 {-0.008, -2.227, 0.0551, 0.057},
-                 {-1.509, 8.553, -31.2, 39.98}}};
-    const double *a = fit[nucleons > 1].a, *b = fit[nucleons > 1].b, *c = fit[nucleons > 1].c;
-    const double lambda2 = 0.25 * 0.25;
-    const double A = pow(x, a[0]) * pow(1.0 - x, a[1]) * polynomial(a + 2, 5, 1.0 - x);
-    const double B = b[0] + b[1] * x + b[2] / (x + b[3]), C = x * polynomial(c, 4, x);
-    return A * pow(log(q2 / lambda2) / log(20.0 / lambda2), B) * (1.0 + C / q2);
+    const double *a = fit->a, *b = fit->b, lambda2 = 0.25 * 0.25;
+    const double scale = pow(x, a[0]) * pow(1.0 - x, a[1]) * polynomial(a + 2, 5, 1.0 - x);
+    const double slope = b[0] + b[1] * x + b[2] / (x + b[3]);
+    const double twist = 1.0 + x * polynomial(fit->c, 4, x) / q2;
+    return scale * pow(log(q2 / lambda2) / log(20.0 / lambda2), slope) * twist;
 }
 
-/* Coefficients of Bodek's table, in his order: C[1] .. C[24]. */
-static const double C[25] = {0.0,          1.0741163,   0.75531124,  3.3506491,   1.7447015,
-                             3.5102405,    1.040004,    1.2299128,   0.10625394,  0.48132786,
-                             1.5101467,    0.081661975, 0.65587179,  1.7176216,   0.12551987,
-                             0.7473379,    1.953819,    0.19891522,  -0.17498537, 0.0096701919,
-                             -0.035256748, 3.5185207,   -0.59993696, 4.7615828,   0.41167589};
+double bh_f2_nmc95_proton(double x, double q2)
+{
+    static const nmc95 fit = {{-0.02778, 2.926, 1.0362, -1.84, 8.123, -13.074, 6.215},
+                              {0.285, -2.694, 0.0188, 0.0274},
+                              {-1.413, 9.366, -37.79, 47.1}};
+    return nmc(&fit, x, q2);
+}
+
+double bh_f2_nmc95_deuteron(double x, double q2)
+{
+    static const nmc95 fit = {{-0.04858, 2.863, 0.8367, -2.532, 9.145, -12.504, 5.473},
+                              {-0.008, -2.227, 0.0551, 0.057},
+                              {-1.509, 8.553, -31.2, 39.98}};
+    return nmc(&fit, x, q2);
+}
+
+/* Coefficients of Bodek's table, in his order, from 1 on. */
+static const double fitted[25] = {0.0,          1.0741163,   0.75531124,  3.3506491,   1.7447015,
+                                  3.5102405,    1.040004,    1.2299128,   0.10625394,  0.48132786,
+                                  1.5101467,    0.081661975, 0.65587179,  1.7176216,   0.12551987,
+                                  0.7473379,    1.953819,    0.19891522,  -0.17498537, 0.0096701919,
+                                  -0.035256748, 3.5185207,   -0.59993696, 4.7615828,   0.41167589};
 static const double proton2 = 0.880324; /* [GeV2] his */
 
 /* One Breit-Wigner resonance: its strength, mass, width, spin. */
@@ -83,7 +95,7 @@ static double power(double x, int n)
 static double breit_wigner(const resonance *r, double w)
 {
     static const double radius = 6.08974; /* [1/GeV] */
-    const double pion2 = (C[1] - 0.938256) * (C[1] - 0.938256), M = r->mass;
+    const double pion2 = (fitted[1] - 0.938256) * (fitted[1] - 0.938256), M = r->mass;
     const double e = (w * w + proton2 - pion2) / (2.0 * w);
     const double e0 = (M * M - proton2 + pion2) / (2.0 * M);
     const double q = radius * sqrt(fmax(e * e - proton2, 0.0));
@@ -100,11 +112,11 @@ static double resonances(double w, double q2)
     static const int spin[4] = {1, 2, 3, 2};
     double sum = 0.0;
     for (int i = 0; i < 4; i++) {
-        resonance r = {C[6 + 3 * i], C[7 + 3 * i], C[8 + 3 * i], spin[i]};
+        resonance r = {fitted[6 + 3 * i], fitted[7 + 3 * i], fitted[8 + 3 * i], spin[i]};
         if (i == 0)
-            r.strength += q2 * (C[18] + q2 * C[19]);
+            r.strength += q2 * (fitted[18] + q2 * fitted[19]);
         if (i == 2)
-            r.mass *= 1.0 + C[20] / (1.0 + C[21] * q2);
+            r.mass *= 1.0 + fitted[20] / (1.0 + fitted[21] * q2);
         sum += breit_wigner(&r, w);
     }
     return sum;
@@ -113,22 +125,35 @@ static double resonances(double w, double q2)
 /* Background and resonances over the smooth curve. */
 static double modulation(double w, double q2)
 {
-    const double x = q2 / (q2 + w * w - proton2), off = x - C[24];
-    const double step1 = w > C[1] ? C[2] * -expm1(-C[3] * (w - C[1])) : 0.0;
-    const double step2 = w > C[4] ? (1.0 - C[2]) * -expm1(-C[5] * (w - C[4]) * (w + C[4])) : 0.0;
-    const double background = step1 + step2, bend = C[22] + C[23] * off * off;
+    const double x = q2 / (q2 + w * w - proton2), off = x - fitted[24];
+    const double step1 = w > fitted[1] ? fitted[2] * -expm1(-fitted[3] * (w - fitted[1])) : 0.0;
+    const double step2 =
+        w > fitted[4] ? (1.0 - fitted[2]) * -expm1(-fitted[5] * (w - fitted[4]) * (w + fitted[4]))
+                      : 0.0;
+    const double background = step1 + step2, bend = fitted[22] + fitted[23] * off * off;
     return background * (1.0 + (1.0 - background) * bend) +
-           resonances(w, q2) * (1.0 - C[2] - step2);
+           resonances(w, q2) * (1.0 - fitted[2] - step2);
 }
 
-double bh_f2_bodek79(int z, double w, double q2)
+/* The smooth curve has five coefficients. */
+static double bodek(const double smooth[5], double w, double q2)
 {
-    static const double smooth[2][5] = {{0.064, 0.225, 4.106, -7.079, 3.055},
-                                        {0.256, 2.178, 0.898, -6.716, 3.756}};
     const double two_nu = q2 + w * w - proton2; /* times the mass */
     const double omega = (two_nu + 1.642) / (q2 + 0.376), s = 1.0 - 1.0 / omega;
-    const double g = s * s * s * polynomial(smooth[z > 0], 5, s);
+    const double g = s * s * s * polynomial(smooth, 5, s);
     return modulation(w, q2) * g * omega * q2 / two_nu;
+}
+
+double bh_f2_bodek79_proton(double w, double q2)
+{
+    static const double smooth[5] = {0.256, 2.178, 0.898, -6.716, 3.756};
+    return bodek(smooth, w, q2);
+}
+
+double bh_f2_bodek79_neutron(double w, double q2)
+{
+    static const double smooth[5] = {0.064, 0.225, 4.106, -7.079, 3.055};
+    return bodek(smooth, w, q2);
 }
 
 static double transverse_rise(double x, double q2)

@@ -28,17 +28,18 @@ static double by_name(const char *fit, double x, double q2)
     if (strcmp(fit, "ALLM97_F2p") == 0)
         return bh_f2_allm97(x, q2);
     if (strcmp(fit, "NMC95_F2p") == 0)
-        return bh_f2_nmc95(1, x, q2);
+        return bh_f2_nmc95_proton(x, q2);
     if (strcmp(fit, "NMC95_F2d") == 0)
-        return bh_f2_nmc95(2, x, q2);
+        return bh_f2_nmc95_deuteron(x, q2);
     if (strcmp(fit, "R1990") == 0)
         return bh_r_1990(x, q2);
     if (strcmp(fit, "R1998") == 0)
         return bh_r_1998(x, q2);
     if (strcmp(fit, "Bodek79_F2p at W") == 0)
-        return bh_f2_bodek79(1, x, q2);
+        return bh_f2_bodek79_proton(x, q2);
     ck_assert_msg(strncmp(fit, "Bodek79_F2", 10) == 0, "no fit %s", fit);
-    return bh_f2_bodek79(fit[10] == 'p', final_mass(x, q2), q2);
+    const double w = final_mass(x, q2);
+    return fit[10] == 'p' ? bh_f2_bodek79_proton(w, q2) : bh_f2_bodek79_neutron(w, q2);
 }
 
 START_TEST(fits_agree_with_an_independent_evaluation)
@@ -143,7 +144,7 @@ START_TEST(resonances_meet_published_points)
         const double w = final_mass(p.x, p.q2);
         if (w < 1.18)
             continue;
-        const double off = bh_f2_bodek79(1, w, p.q2) / p.measured - 1.0;
+        const double off = bh_f2_bodek79_proton(w, p.q2) / p.measured - 1.0;
         sum2 += off * off;
         other2 += pow(bh_f2_allm97(p.x, p.q2) / p.measured - 1.0, 2);
         n++;

@@ -12,14 +12,19 @@
  * 5 %. */
 double bh_f2_allm97(double x, double q2);
 
-/* At x [1] and q2 [GeV2]: returns [1] F2 per nucleon of the proton (`nucleons` 1) or the deuteron
- * (2), NMC, Phys. Lett. B 364 (1995) 107: 0.006 < x < 0.9, 0.5 < q2 < 75.  2 to 5 %. */
-double bh_f2_nmc95(int nucleons, double x, double q2);
+/* At x [1] and q2 [GeV2]: returns [1] F2 of the proton, NMC, Phys. Lett.
+ * B 364 (1995) 107: 0.006 < x < 0.9, 0.5 < q2 < 260.  2 to 5 %. */
+double bh_f2_nmc95_proton(double x, double q2);
 
-/* At `w` [GeV], the final mass, above 1.08, and q2 [GeV2]: returns [1] F2 of a free proton (`z` 1)
- * or neutron (0), Bodek et al., Phys. Rev. D 20 (1979) 1471, resonances included: 5 to 10 % for q2
- * < 20. */
-double bh_f2_bodek79(int z, double w, double q2);
+/* The same at x [1] and q2 [GeV2] of the deuteron: returns [1], per nucleon. */
+double bh_f2_nmc95_deuteron(double x, double q2);
+
+/* At `w` [GeV], the final mass, above 1.08, and q2 [GeV2]: returns [1] F2 of a free proton, Bodek
+ * et al., Phys. Rev. D 20 (1979) 1471, resonances included: 5 to 10 % for q2 < 20. */
+double bh_f2_bodek79_proton(double w, double q2);
+
+/* The same at `w` [GeV] and q2 [GeV2] of a free neutron: returns [1]. */
+double bh_f2_bodek79_neutron(double w, double q2);
 
 /* At x [1] and q2 [GeV2]: returns [1] R of E143, Phys. Lett. B 452 (1999) 194, 0.005 < x < 0.86,
  * 0.5 < q2 < 130; */

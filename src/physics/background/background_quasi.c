@@ -22,30 +22,46 @@ static const char *outside(const void *context, const bh_transfer *at)
     return bh_quasi_outside(context, at);
 }
 
-/* The momentum [MeV/c] below `hi` at which psi', which falls with it, is `psi` [1]; 0 where it
- * never is.  Regula falsi with Illinois' halving. */
-static double at_psi(const bh_quasi_nucleus *nucleus, const bh_inclusive *in, double psi, double hi)
+/* psi' falls with the momentum; `above` and `below` [1] are what it exceeds the wanted one by at
+ * the ends [MeV/c], `side` which of them stayed last. */
+typedef struct {
+    double lo, hi, above, below;
+    int side;
+} bracket;
+
+/* Illinois' rule: an end that stays twice counts half. */
+static void narrow(bracket *b, double momentum, double off)
 {
-    bh_transfer at = bh_inclusive_transfer(in, 0.0);
-    double lo = 0.0, above = bh_quasi_psi(nucleus, &at) - psi;
-    at = bh_inclusive_transfer(in, hi);
-    double below = bh_quasi_psi(nucleus, &at) - psi;
-    if (!(above > 0.0 && below < 0.0))
+    if (off > 0.0) {
+        b->lo = momentum;
+        b->above = off;
+        b->below *= b->side > 0 ? 0.5 : 1.0;
+        b->side = 1;
+    } else {
+        b->hi = momentum;
+        b->below = off;
+        b->above *= b->side < 0 ? 0.5 : 1.0;
+        b->side = -1;
+    }
+}
+
+static double exceeds(const bh_quasi_nucleus *nucleus, const bh_inclusive *in, double momentum)
+{
+    const bh_transfer at = bh_inclusive_transfer(in, momentum);
+    return bh_quasi_psi(nucleus, &at) - BH_QUASI_PSI_MOST;
+}
+
+/* The momentum [MeV/c] below `hi` at which psi' reaches its most; 0 where it never does. */
+static double at_psi_most(const bh_quasi_nucleus *nucleus, const bh_inclusive *in, double hi)
+{
+    bracket b = {0.0, hi, exceeds(nucleus, in, 0.0), exceeds(nucleus, in, hi), 0};
+    if (!(b.above > 0.0 && b.below < 0.0))
         return 0.0;
-    double now = lo;
-    for (int i = 0, side = 0; i < 60 && hi - lo > 1e-9 * hi; i++) {
-        const double next = lo + (hi - lo) * above / (above - below);
-        const bool settled = fabs(next - now) < 1e-10 * hi;
-        now = next;
-        if (settled)
-            break;
-        at = bh_inclusive_transfer(in, now);
-        const double off = bh_quasi_psi(nucleus, &at) - psi;
-        *(off > 0.0 ? &lo : &hi) = now;
-        *(off > 0.0 ? &above : &below) = off;
-        if (side == (off > 0.0 ? 1 : -1))
-            *(off > 0.0 ? &below : &above) *= 0.5;
-        side = off > 0.0 ? 1 : -1;
+    double now = 0.0, before = hi;
+    for (int i = 0; i < 60 && fabs(now - before) > 1e-10 * hi; i++) {
+        before = now;
+        now = b.lo + (b.hi - b.lo) * b.above / (b.above - b.below);
+        narrow(&b, now, exceeds(nucleus, in, now));
     }
     return now;
 }
@@ -69,7 +85,7 @@ static void momentum_integral(const bh_encounter *encounter, const bh_momentum_r
     const double left = encounter->kinetic - nucleus.shift;
     if (left > 0.0) {
         const double first = sqrt(left * (left + 2.0 * mass));
-        s.edge[s.count++] = at_psi(&nucleus, &in, BH_QUASI_PSI_MOST, first);
+        s.edge[s.count++] = at_psi_most(&nucleus, &in, first);
     }
     bh_momentum_range_integral(&s, range, value, validity);
 }
