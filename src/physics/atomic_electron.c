@@ -50,15 +50,15 @@ static bh_code scattered(const bh_particle *beam, const bh_collision *in, double
     const bh_code code = bh_kinematics_scattered(in, angle, branch, &e, NULL);
     if (code != BH_OK)
         return code;
-    *out = (bh_atomic_event){e.scattered_momentum, e.scattered_kinetic, e.recoil_kinetic,
-                             bh_atomic_centre_of_mass(beam, &e) * e.cm_per_lab};
-    if (e.cm_per_lab == 0.0) /* straight across, at rest: the amplitude is infinite, not the rate */
-        out->cross_section = 0.0;
+    const double rate = e.scattered_momentum > 0.0
+                            ? bh_atomic_centre_of_mass(beam, &e) * e.cm_per_lab
+                            : (double)INFINITY;
+    *out = (bh_atomic_event){e.scattered_momentum, e.scattered_kinetic, e.recoil_kinetic, rate};
     return BH_OK;
 }
 
-/* dt/dcos(angle) of the struck electron in closed form: it stays finite where the scattered
- * particle turns back. */
+/* dt/dcos(angle) of the struck electron in closed form: the product of jacobians would be 0 times
+ * infinity where the scattered particle turns back. */
 static bh_code struck(const bh_particle *beam, const bh_collision *in, double angle,
                       bh_atomic_event *out)
 {
@@ -70,10 +70,9 @@ static bh_code struck(const bh_particle *beam, const bh_collision *in, double an
     const double across = sin(angle), along = fmax(cos(angle), 0.0);
     const double below = e.s + p2 * across * across;
     const double slope = 8.0 * M * M * p2 * along * sum * sum / (below * below);
-    const double dt =
-        e.q2 > 0.0 ? BH_HBARC2_UB * amplitude2(beam, &e) / (64.0 * BH_PI * M * M * p2) : 0.0;
-    *out = (bh_atomic_event){e.recoil_momentum, e.recoil_kinetic, e.scattered_kinetic,
-                             slope > 0.0 ? dt * slope / (2.0 * BH_PI) : 0.0};
+    const double dt = BH_HBARC2_UB * amplitude2(beam, &e) / (64.0 * BH_PI * M * M * p2);
+    const double rate = e.q2 > 0.0 ? dt * slope / (2.0 * BH_PI) : (double)INFINITY;
+    *out = (bh_atomic_event){e.recoil_momentum, e.recoil_kinetic, e.scattered_kinetic, rate};
     return BH_OK;
 }
 

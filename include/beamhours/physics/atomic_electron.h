@@ -20,7 +20,8 @@ typedef struct {
     double kinetic;       /* [MeV] of the particle meant */
     double other_kinetic; /* [MeV] of the other one */
     double cross_section; /* [ub/sr] per electron, lab, per solid angle of the particle meant;
-                             infinite at angle 0 of a scattered particle */
+                             without bound at angle 0 of a scattered particle and towards 90 deg,
+                             where electrons hardly move */
 } bh_atomic_event;
 
 /*
