@@ -64,6 +64,13 @@ static bool grow(bh_explaining *x)
     return true;
 }
 
+const char *bh_explain_percent(bh_explaining *x, double share)
+{
+    char digits[BH_NUMBER_SIZE];
+    bh_number_digits(100 * share, 3, digits, sizeof digits);
+    return bh_explain_text(x, "%s %%", digits);
+}
+
 void bh_explain_add(bh_explaining *x, bh_line line)
 {
     if (grow(x))
@@ -163,8 +170,24 @@ static bh_code measure(bh_explaining *x, size_t setting, size_t arm, bh_error *e
     return BH_OK;
 }
 
+/* Which row this is, and of what. */
+static void write_title(bh_explaining *x)
+{
+    const bh_plan *plan = bh_table_plan(x->table);
+    const bh_arm *arm = &x->arm->yield->view.arm->arm;
+    const char *part =
+        x->bin ? bh_explain_text(x, "bin %d of %d", x->bin, arm->bins) : "the whole acceptance";
+    bh_explain_section(x, bh_explain_text(x, "%s: setting %s, arm %s, %s",
+                                          plan->file ? plan->file : "plan", x->setting->name,
+                                          arm->name.text ? arm->name.text : "-", part));
+    if (plan->title.text)
+        bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE,
+                                    .remark = bh_explain_text(x, "%s", plan->title.text)});
+}
+
 static bh_code write_all(bh_explaining *x, bh_error *err)
 {
+    write_title(x);
     bh_explain_inputs(x);
     if (x->reached)
         bh_explain_cross_section(x);

@@ -4,6 +4,7 @@
 #include <string.h>
 
 #include "beamhours/run/explaining.h"
+#include "beamhours/units/constants.h"
 
 static const char *print(bh_explaining *x, const bh_value *v, bh_dimension dimension)
 {
@@ -43,9 +44,11 @@ static void extent(bh_explaining *x, const char *name, const bh_extent *e, bh_di
         return;
     const char *from = print(x, &(bh_value){.value = e->from}, dimension);
     const char *to = print(x, &(bh_value){.value = e->to}, dimension);
+    const bool symmetric = fabs(e->from + e->to) <= 1e-12 * fabs(e->to);
     bh_explain_add(x, (bh_line){.kind = BH_LINE_INPUT,
                                 .name = name,
-                                .value = bh_explain_text(x, "%s to %s", from, to),
+                                .value = symmetric ? bh_explain_text(x, "±%s", to)
+                                                   : bh_explain_text(x, "%s to %s", from, to),
                                 .source = bh_explain_mark(x, e->at)});
 }
 
@@ -57,8 +60,8 @@ static void explain_beam(bh_explaining *x)
                                 .value = b->particle.name,
                                 .source = bh_explain_mark(x, b->at)});
     const bool momentum = b->energy_key.text && strcmp(b->energy_key.text, "momentum") == 0;
-    value(x, b->energy_key.text ? b->energy_key.text : "kinetic_energy", &b->energy_written,
-          momentum ? BH_DIM_MOMENTUM : BH_DIM_ENERGY);
+    value(x, bh_explain_text(x, "beam.%s", b->energy_key.text ? b->energy_key.text : "energy"),
+          &b->energy_written, momentum ? BH_DIM_MOMENTUM : BH_DIM_ENERGY);
     if (b->rate_written)
         value(x, "beam.particle_rate", &b->particle_rate, BH_DIM_RATE);
     else
@@ -74,19 +77,30 @@ static const char *role_name(bh_role role)
     return names[role];
 }
 
+/* The thickness of a layer under the key that it was written with. */
+static const char *written_size(bh_explaining *x, const bh_layer *l)
+{
+    const char *key = l->size_key.text ? l->size_key.text : "";
+    if (strcmp(key, "areal_density") == 0)
+        return print(x, &l->areal_density, BH_DIM_AREAL_DENSITY);
+    if (strcmp(key, "areal_number") == 0)
+        return print(x, &l->areal_number, BH_DIM_AREAL_NUMBER);
+    return print(x, &l->thickness, BH_DIM_LENGTH);
+}
+
 static void explain_layer(bh_explaining *x, const bh_layer *l)
 {
     bh_explain_add(
-        x,
-        (bh_line){.kind = BH_LINE_INPUT,
-                  .name = bh_explain_text(x, "%s of %s", role_name(l->role), l->material->name),
-                  .value = print(x, &l->thickness, BH_DIM_LENGTH),
-                  .formula = bh_explain_text(x, "%s g/cm3, %s g/cm2, %s atoms per cm2",
-                                             bh_explain_number(x, l->density.value, ""),
-                                             bh_explain_number(x, l->areal_density.value, ""),
-                                             bh_explain_number(x, l->areal_number.value, "")),
-                  .source = bh_explain_mark(x, l->at),
-                  .remark = l->density.given ? "density as written" : "density of the material"});
+        x, (bh_line){.kind = BH_LINE_INPUT,
+                     .name = bh_explain_text(x, "%s of %s", role_name(l->role), l->material->name),
+                     .value = written_size(x, l),
+                     .formula = bh_explain_text(
+                         x, "%s of %s (%s): %s, %s", bh_explain_number(x, l->thickness.value, "cm"),
+                         bh_explain_number(x, l->density.value, "g/cm3"),
+                         l->density.given ? "as written" : "density of the material",
+                         bh_explain_number(x, l->areal_density.value, "g/cm2"),
+                         bh_explain_number(x, l->areal_number.value, "atoms/cm2")),
+                     .source = bh_explain_mark(x, l->at)});
 }
 
 static void explain_target(bh_explaining *x)
@@ -127,7 +141,9 @@ static void explain_arm(bh_explaining *x)
     if (a->shape != BH_SHAPE_RING)
         bh_explain_add(x, (bh_line){.kind = BH_LINE_INPUT,
                                     .name = "angle",
-                                    .value = print(x, &s->angle, BH_DIM_ANGLE),
+                                    .value = s->q2.given ? bh_explain_number(
+                                                               x, s->angle.value / BH_DEGREE, "deg")
+                                                         : print(x, &s->angle, BH_DIM_ANGLE),
                                     .formula = s->q2.given ? "the angle that gives the q2" : NULL,
                                     .source = bh_explain_mark(x, s->angle.at)});
     given(x, "central_momentum", &s->central_momentum, BH_DIM_MOMENTUM);
@@ -137,7 +153,8 @@ static void explain_arm(bh_explaining *x)
     given(x, "rate_limit", &a->rate_limit, BH_DIM_RATE);
     bh_explain_add(x, (bh_line){.kind = a->prescale > 1 ? BH_LINE_INPUT : BH_LINE_DEFAULT,
                                 .name = "prescale",
-                                .value = bh_explain_text(x, "%d", a->prescale)});
+                                .value = bh_explain_text(x, "%d", a->prescale),
+                                .source = a->prescale > 1 ? NULL : "default"});
     value(x, "other_rate", &a->other_rate, BH_DIM_RATE);
 }
 
@@ -165,16 +182,28 @@ static void explain_want(bh_explaining *x)
     }
 }
 
+/* What the plan says of the nucleus that is struck. */
+static bh_word structure_word(const bh_explaining *x)
+{
+    const bh_models *m = &bh_table_plan(x->table)->models;
+    const bh_encounter *e = &x->channel.encounter;
+    for (size_t i = 0; i < m->choice_count; i++)
+        if (m->by_nuclide[i].z == e->z && m->by_nuclide[i].a == e->a)
+            return m->by_nuclide[i].model;
+    return m->structure;
+}
+
 void bh_explain_inputs(bh_explaining *x)
 {
     const bh_models *m = &bh_table_plan(x->table)->models;
+    const bh_word structure = structure_word(x);
     bh_explain_section(x, "Inputs");
     explain_beam(x);
     explain_target(x);
     explain_arm(x);
     explain_want(x);
     word(x, "process", &x->setting->process);
-    word(x, "models.structure", &m->structure);
+    word(x, "models.structure", &structure);
     word(x, "models.coulomb", &m->coulomb);
     word(x, "models.radiative", &m->radiative);
     word(x, "models.energy_loss", &m->energy_loss);

@@ -39,11 +39,14 @@ static void explain_event(bh_explaining *x)
                                 .source = "AME2020, CODATA 2022"});
     factor(x, "Q2", bh_explain_number(x, e->q2 / MEV2_PER_GEV2, "GeV2"),
            "2 M x recoil kinetic energy, exact two-body kinematics");
-    factor(
-        x, "scattered particle", bh_explain_number(x, e->scattered_momentum, "MeV/c"),
-        bh_explain_text(x, "at %s", bh_explain_number(x, e->scattered_angle / BH_DEGREE, "deg")));
-    factor(x, "recoil", bh_explain_number(x, e->recoil_kinetic, "MeV"),
-           bh_explain_text(x, "at %s", bh_explain_number(x, e->recoil_angle / BH_DEGREE, "deg")));
+    factor(x, "scattered particle",
+           bh_explain_text(x, "%s at %s", bh_explain_number(x, e->scattered_momentum, "MeV/c"),
+                           bh_explain_number(x, e->scattered_angle / BH_DEGREE, "deg")),
+           NULL);
+    factor(x, "recoil",
+           bh_explain_text(x, "%s at %s", bh_explain_number(x, e->recoil_kinetic, "MeV"),
+                           bh_explain_number(x, e->recoil_angle / BH_DEGREE, "deg")),
+           NULL);
     if (n->beam->kind == BH_KIND_LEPTON)
         factor(x, "epsilon", bh_explain_number(x, e->epsilon, ""),
                "virtual-photon polarisation with the lepton mass");
@@ -74,7 +77,7 @@ static void explain_model(bh_explaining *x)
     bh_structure_range(s, &low, &high);
     const double q2 = x->event.q2 / MEV2_PER_GEV2;
     bh_explain_add(x, (bh_line){.kind = BH_LINE_MODEL,
-                                .name = "structure",
+                                .name = "structure model",
                                 .value = bh_explain_text(x, "%s", bh_structure_name(s)),
                                 .formula = bh_explain_text(
                                     x, "valid for Q2 %s to %s GeV2%s",
@@ -117,9 +120,9 @@ static void compare(bh_explaining *x, struct spread *spread, const char *name)
     spread->high = fmax(spread->high, off);
     spread->count++;
     bh_explain_add(x, (bh_line){.kind = BH_LINE_MODEL,
-                                .name = bh_explain_text(x, "instead: %s", bh_structure_name(s)),
-                                .value = bh_explain_number(x, 100 * off, "%"),
-                                .formula = "change of the cross section",
+                                .name = bh_explain_text(x, "with %s instead", bh_structure_name(s)),
+                                .value = bh_explain_text(x, "%s%s", off > 0 ? "+" : "",
+                                                         bh_explain_percent(x, off)),
                                 .source = bh_explain_text(x, "%s", bh_structure_source(s))});
 }
 
@@ -143,7 +146,7 @@ static void explain_spread(bh_explaining *x)
     }
     const double half = (spread.high - spread.low) / 2;
     if (spread.count)
-        factor(x, "spread over the models", bh_explain_number(x, 100 * half, "%"),
+        factor(x, "spread over the models", bh_explain_percent(x, half),
                "half the range of the cross section, the model in use among them");
     bh_explain_piece(x, "structure model", half);
 }
@@ -161,7 +164,7 @@ static void explain_point_charge(bh_explaining *x, double sigma)
     const double bare = sigma_with(x, point);
     factor(x, "cross section of the point charge", bh_explain_number(x, bare, "ub/sr"),
            c.process->formula(&c.encounter));
-    factor(x, "structure", bh_explain_number(x, sigma / bare, ""),
+    factor(x, "form factors leave", bh_explain_number(x, sigma / bare, ""),
            "cross section with form factors / that of the point charge");
 }
 

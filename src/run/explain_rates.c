@@ -62,6 +62,9 @@ static void explain_signal(bh_explaining *x)
                                               : "of the detected particle at the arm's centre");
     factor(x, "kept", bh_explain_number(x, p->kept, ""),
            v->cut ? "share of the events whose momentum is inside the bite" : "no momentum bite");
+    bh_explain_add(x, (bh_line){.kind = BH_LINE_FACTOR,
+                                .name = "efficiency of the arm",
+                                .value = bh_explain_number(x, v->arm->arm.efficiency.value, "")});
     factor(x, "radiative factor", "1", "radiation is not in these numbers");
     factor(x, "signal rate", bh_explain_number(x, p->signal, "Hz"),
            "luminosity x 1e-30 cm2/ub x mean cross section x solid angle x radiative factor x kept "

@@ -14,6 +14,22 @@ static const char *percent(bh_explaining *x, double share)
     return bh_explain_number(x, 100 * share, "%");
 }
 
+static const char *asked_by(bh_want want)
+{
+    switch (want) {
+    case BH_WANT_GOAL:
+        return "what the goal takes";
+    case BH_WANT_TIME:
+        return "the time that the setting asks for";
+    case BH_WANT_CHARGE:
+        return "charge / current";
+    case BH_WANT_COUNTS:
+        return "counts / (signal rate x live fraction x 3600)";
+    default:
+        return NULL;
+    }
+}
+
 static void explain_hours(bh_explaining *x)
 {
     const double hours = x->hours.full;
@@ -28,7 +44,7 @@ static void explain_hours(bh_explaining *x)
     }
     factor(x, "hours with full target", bh_explain_number(x, hours, "h"),
            x->setting->arm_count > 1 ? "the slowest arm of the setting decides"
-                                     : "what the setting asks for");
+                                     : asked_by(x->arm->yield->view.arm->want));
     factor(x, "hours with empty target", bh_explain_number(x, hours * x->hours.share, "h"),
            bh_explain_text(x, "%s of the full-target time", percent(x, x->hours.share)));
     factor(
@@ -103,19 +119,28 @@ static void add_inputs(bh_explaining *x)
     add_layers(x);
 }
 
+/* Each alone, and its share of all in quadrature. */
 static void explain_pieces(bh_explaining *x)
 {
-    bh_explain_section(x, "What the rate is uncertain by");
     int largest = 0;
+    double variance = 0;
+    bh_explain_section(x, "What the rate is uncertain by");
+    for (int i = 0; i < x->piece_count; i++)
+        variance += x->pieces[i].share * x->pieces[i].share;
     for (int i = 0; i < x->piece_count; i++) {
-        factor(x, x->pieces[i].name, percent(x, x->pieces[i].share), "relative, from this alone");
-        if (x->pieces[i].share > x->pieces[largest].share)
+        const double share = x->pieces[i].share;
+        factor(x, x->pieces[i].name, bh_explain_percent(x, share),
+               bh_explain_text(x, "from this alone; %s of the variance",
+                               bh_explain_percent(x, share * share / variance)));
+        if (share > x->pieces[largest].share)
             largest = i;
     }
-    if (x->piece_count)
-        bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE,
-                                    .remark = bh_explain_text(x, "The largest is %s.",
-                                                              x->pieces[largest].name)});
+    if (x->piece_count == 0)
+        return;
+    factor(x, "all in quadrature", bh_explain_percent(x, sqrt(variance)), NULL);
+    bh_explain_add(
+        x, (bh_line){.kind = BH_LINE_NOTE,
+                     .remark = bh_explain_text(x, "The largest is %s.", x->pieces[largest].name)});
 }
 
 void bh_explain_time(bh_explaining *x)

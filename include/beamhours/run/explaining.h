@@ -40,6 +40,9 @@ const char *bh_explain_text(bh_explaining *x, const char *fmt, ...) BH_PRINTF(2,
 /* The number value [1] with 6 digits, and its unit: "4.2e+37 /cm2/s". */
 const char *bh_explain_number(bh_explaining *x, double value, const char *unit);
 
+/* The share [1] in per cent with 3 digits: "0.570 %". */
+const char *bh_explain_percent(bh_explaining *x, double share);
+
 /* "plan.yaml:14:12", or NULL where there is no place. */
 const char *bh_explain_mark(bh_explaining *x, bh_mark at);
 
