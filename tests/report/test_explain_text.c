@@ -20,7 +20,7 @@ static const char *const wanted[] = {
     "carbon\n\nInputs\n",
     "\n  beam.current                       10 uA                 line 3, column 62\n",
     "\n  beam.fraction                      100 %                 default\n",
-    "\n  in_plane                           ±28 mrad              line 8, column 23\n",
+    "\n  in_plane                           ±28 mrad              line 8, column 25\n",
     "\n  sample of carbon-12                1 mm                  line 6, column 12\n"
     "      = 0.1 cm of 2.208 g/cm3 (density of the material): 0.2208 g/cm2,\n",
     "\n  cross section of the point charge  ",
