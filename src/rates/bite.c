@@ -118,5 +118,25 @@ double bh_bite_share(const bh_bite *bite, double p, double sigma)
 {
     if (!(sigma > 0))
         return p >= bite->momentum_from && p <= bite->momentum_to ? 1 : 0;
-    return above((bite->momentum_from - p) / sigma) - above((bite->momentum_to - p) / sigma);
+    const double over = bite->momentum_from > 0 ? above((bite->momentum_from - p) / sigma) : 1;
+    return over - above((bite->momentum_to - p) / sigma);
+}
+
+double bh_bite_momentum(double mass, double kinetic)
+{
+    return sqrt(kinetic * (kinetic + 2 * mass));
+}
+
+void bh_bite_from_threshold(bh_bite *bite, double mass, double threshold)
+{
+    bite->momentum_from = fmax(bite->momentum_from, bh_bite_momentum(mass, threshold));
+    if (!(bite->momentum_to > bite->momentum_from))
+        bite->momentum_to = nextafter(bite->momentum_from, (double)INFINITY);
+}
+
+double bh_bite_sigma(const bh_momentum_rms *rms, double mass, double p, double per_beam)
+{
+    const double per_energy = p > 0 ? sqrt(p * p + mass * mass) / p : 0;
+    return sqrt(pow(rms->momentum * p, 2) + pow(rms->energy * per_energy, 2) +
+                pow(rms->beam * per_beam, 2));
 }

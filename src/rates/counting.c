@@ -69,3 +69,8 @@ double bh_counting_hours_of_counts(double counts, double rate, double live)
     const double per_hour = rate * live * BH_SECONDS_PER_HOUR;
     return per_hour > 0 ? counts / per_hour : HUGE_VAL;
 }
+
+double bh_counting_accidentals(const bh_coincident_rates *rates)
+{
+    return rates->window * rates->first * rates->second / rates->duty_factor;
+}

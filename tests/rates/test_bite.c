@@ -149,6 +149,47 @@ START_TEST(share_under_resolution)
     ck_assert_double_eq_tol(bh_bite_share(&bite, 95, 0.1), 0.5, 1e-12);
     const bh_bite open = {BH_DETECTED_SCATTERED, 0, HUGE_VAL};
     ck_assert_double_eq_tol(bh_bite_share(&open, 100, 5), 1, 1e-15);
+    ck_assert_double_eq_tol(bh_bite_share(&open, 1, 5), 1, 1e-15);
+}
+END_TEST
+
+/* Least kinetic energy: momenta of a proton of 1 MeV and of 10 MeV from E^2 - M^2. */
+START_TEST(thresholds_cut_bites)
+{
+    const double low = sqrt(2 * BH_MASS_PROTON + 1), high = sqrt(20 * BH_MASS_PROTON + 100);
+    bh_bite open = {BH_DETECTED_RECOIL, 0, HUGE_VAL}, narrow = {BH_DETECTED_RECOIL, 100, 120};
+    bh_bite_from_threshold(&open, BH_MASS_PROTON, 1);
+    ck_assert_double_eq_tol(open.momentum_from, low, 1e-9);
+    ck_assert(isinf(open.momentum_to));
+    bh_bite_from_threshold(&narrow, BH_MASS_PROTON, 1);
+    ck_assert(narrow.momentum_from == 100 && narrow.momentum_to == 120);
+    bh_bite_from_threshold(&narrow, BH_MASS_PROTON, 10);
+    ck_assert_double_eq_tol(narrow.momentum_from, high, 1e-9);
+    ck_assert(bh_bite_share(&narrow, 110, 0) == 0 && bh_bite_share(&narrow, 150, 1) < 1e-12);
+    /* through the angles: recoils below the threshold are those near 90 degrees */
+    const bh_collision in = {BH_MASS_ELECTRON, BH_MASS_PROTON, 855};
+    bh_interval kept;
+    size_t count;
+    bh_event event;
+    ck_assert_int_eq(bh_bite_angles(&in, &open, &kept, &count, NULL), BH_OK);
+    ck_assert_uint_eq(count, 1);
+    ck_assert(kept.from == 0);
+    ck_assert_int_eq(bh_kinematics_recoil(&in, kept.to, &event, NULL), BH_OK);
+    ck_assert_double_eq_tol(event.recoil_kinetic, 1, 1e-9);
+}
+END_TEST
+
+/* 855 MeV/c of an electron: 0.1 % is 0.855, 300 keV is 0.3, 0.05 % of the beam 0.4; in quadrature.
+ * A proton of 100 MeV/c has beta = 0.1059788: 1 MeV is 9.435854 MeV/c. */
+START_TEST(resolutions_add_in_quadrature)
+{
+    const bh_momentum_rms rms = {1e-3, 0.3, 5e-4};
+    ck_assert_double_eq_tol(bh_bite_sigma(&rms, BH_MASS_ELECTRON, 855, 800),
+                            sqrt(0.855 * 0.855 + 0.09 + 0.16), 1e-6);
+    const bh_momentum_rms energy = {0, 1, 0};
+    ck_assert_double_eq_tol(bh_bite_sigma(&energy, BH_MASS_PROTON, 100, 800),
+                            sqrt(1e4 + BH_MASS_PROTON * BH_MASS_PROTON) / 100, 1e-9);
+    ck_assert(bh_bite_sigma(&energy, BH_MASS_PROTON, 0, 800) == 0);
 }
 END_TEST
 
@@ -160,5 +201,7 @@ int main(void)
     tcase_add_loop_test(tests, up_to_where_fast_and_slow_meet, 0, COUNT(collisions));
     tcase_add_test(tests, odd_bites_are_refused);
     tcase_add_test(tests, share_under_resolution);
+    tcase_add_test(tests, thresholds_cut_bites);
+    tcase_add_test(tests, resolutions_add_in_quadrature);
     return run_suite("bite", tests);
 }

@@ -215,6 +215,35 @@ START_TEST(counts_and_back)
 }
 END_TEST
 
+/* rates [Hz], window [s] */
+static const struct {
+    const char *source;
+    bh_coincident_rates rates;
+    double expected, tolerance;
+} accidentals[] = {
+    {"2 tau R1 R2 of 10 ns pulses; Knoll chapter 17, Leo chapter 16",
+     {2 * 10e-9, 1e5, 2e4, 1},
+     40,
+     1e-12},
+    {"the same with a duty factor of 1 %: d (2 tau R1 R2 / d^2)",
+     {2 * 10e-9, 1e5, 2e4, 0.01},
+     4000,
+     1e-12},
+    {"neutron Rosenbluth proposal (2020), rate tables: 1390 Hz printed",
+     {30e-9, 1.37e4, 3.39e6, 1},
+     1393.29,
+     1e-5},
+    {"the same, as printed", {30e-9, 1.37e4, 3.39e6, 1}, 1390, 0.005},
+};
+
+START_TEST(accidental_coincidences)
+{
+    const double found = bh_counting_accidentals(&accidentals[_i].rates);
+    ck_assert_msg(fabs(found / accidentals[_i].expected - 1) < accidentals[_i].tolerance,
+                  "%s: %.9g", accidentals[_i].source, found);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("counting");
@@ -228,5 +257,6 @@ int main(void)
     tcase_add_loop_test(tests, published_rates, 0, COUNT(helium));
     tcase_add_test(tests, muon_lifetime_proposal);
     tcase_add_test(tests, counts_and_back);
+    tcase_add_loop_test(tests, accidental_coincidences, 0, COUNT(accidentals));
     return run_suite("counting", tests);
 }

@@ -72,4 +72,17 @@ double bh_counting_counts(double rate, double live, double hours);
  * recorded. */
 double bh_counting_hours_of_counts(double counts, double rate, double live);
 
+/* Two arms that count unrelated events. */
+typedef struct {
+    double window;        /* [s] by which they may differ, from the earliest to the latest; two
+                             pulses of width tau overlap in a window of 2 tau */
+    double first, second; /* [Hz] mean in time */
+    double duty_factor;   /* [1] above 0, at most 1 */
+} bh_coincident_rates;
+
+/* Returns [Hz] accidental coincidences, mean in time: with the beam on for a share duty_factor of
+ * it, window x first x second / duty_factor.
+ * Source: Knoll, Radiation Detection and Measurement, chapter 17. */
+double bh_counting_accidentals(const bh_coincident_rates *rates);
+
 #endif

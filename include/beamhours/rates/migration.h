@@ -1,0 +1,39 @@
+/* migration.h - events that a finite resolution moves out of the bin they belong to into others. */
+#ifndef BH_RATES_MIGRATION_H
+#define BH_RATES_MIGRATION_H
+
+#include "beamhours/base/error.h"
+
+/*
+ * An acceptance is an aperture: it admits true angles.  Bins sort measured ones: true angle plus a
+ * normal deviate of zero mean.  A cell is a bin, or what the aperture has beside its bins.  What is
+ * measured before the first or behind the last cell is counted in that cell: the aperture has let
+ * it through, so no event is lost or won, and the sum over the cells stays what it was.
+ * Within a cell the events are taken to be spread like exp(slope x angle), the slope from the
+ * neighbouring cells.  Of what crosses an edge that is right to a few 1e-3 while the counts of
+ * neighbours differ by less than twice; a momentum bite that ends inside a cell is smeared over it.
+ */
+typedef struct {
+    int cells;           /* >= 1 */
+    const double *edges; /* [rad] cells + 1, rising */
+    double sigma;        /* [rad] rms of measured - true angle, >= 0 */
+} bh_migration;
+
+/* BH_EDOMAIN for NaN, no cells, edges that do not rise, a negative sigma. */
+BH_CHECKED bh_code bh_migration_check(const bh_migration *migration, bh_error *err);
+
+/* Fills slope [1/rad], one for each cell, from true counts [1] >= 0 in each: the logarithmic
+ * derivative of the density of events; 0 where there are no neighbours with events. */
+void bh_migration_slopes(const bh_migration *migration, const double *counts, double *slope);
+
+/* Fills share [1], one for each cell: of the events that belong in cell `from` (from 0), spread
+ * with slope [1/rad], what is measured in each; a column of the migration matrix.  All >= 0; they
+ * add to 1 to rounding. */
+void bh_migration_shares(const bh_migration *migration, int from, double slope, double *share);
+
+/* Adds to `measured` [1], one for each cell, what is measured of counts [1] in cell `from`,
+ * spread with slope [1/rad]; cells out of reach are left alone. */
+void bh_migration_move(const bh_migration *migration, int from, double slope, double counts,
+                       double *measured);
+
+#endif

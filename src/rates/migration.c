@@ -1,0 +1,203 @@
+/* migration.c - events that a finite resolution moves out of their bin: exponentials under a normal
+ * curve, in closed form. */
+#include "beamhours/rates/migration.h"
+
+#include <math.h>
+#include <stdbool.h>
+
+#include "beamhours/units/constants.h"
+
+/* No event goes further than this many sigma: the normal tail beyond is 1e-19. */
+static const double furthest = 9;
+
+/* A density that changes by more within one cell, or within one sigma, is taken to change by that
+ * much: what is that steep is no smooth density. */
+static const double steepest_cell = 30, steepest_sigma = 2;
+
+/* Below this change over a cell the closed form cancels and its series is exact. */
+static const double flat = 1e-4;
+
+bh_code bh_migration_check(const bh_migration *m, bh_error *err)
+{
+    bool sense = m->cells >= 1 && m->sigma >= 0 && isfinite(m->sigma);
+    for (int i = 0; sense && i < m->cells; i++)
+        sense = m->edges[i] < m->edges[i + 1];
+    if (sense)
+        return BH_OK;
+    return bh_fail(err, BH_EDOMAIN,
+                   "%d bins with a resolution of %g rad: there must be one bin or more, edges that "
+                   "rise and a resolution of 0 or more",
+                   m->cells, m->sigma);
+}
+
+/* --- the normal distribution --- */
+
+/* Probability of a deviate below x. */
+static double below(double x)
+{
+    return 0.5 * erfc(-x / sqrt(2));
+}
+
+static double density(double x)
+{
+    return exp(-0.5 * x * x) / sqrt(2 * BH_PI);
+}
+
+/* Probability of a deviate between x and y, without loss in either tail. */
+static double between(double x, double y)
+{
+    return x > 0 && y > 0 ? below(-x) - below(-y) : below(y) - below(x);
+}
+
+/* Integrals from -infinity to t of below(x), and of x below(x) (less a constant). */
+static double first_integral(double t)
+{
+    return t * below(t) + density(t);
+}
+
+static double second_integral(double t)
+{
+    return 0.5 * ((t * t - 1) * below(t) + t * density(t));
+}
+
+/* --- one cell --- */
+
+struct cell {
+    double from, to; /* [rad] */
+    double sigma;    /* [rad] */
+    double slope;    /* [1/rad] */
+};
+
+/* Share measured below `edge` of a density 1 + slope (x - centre). */
+static double below_flat(const struct cell *c, double edge)
+{
+    const double width = c->to - c->from, centre = (c->from + c->to) / 2;
+    const double near = (edge - c->from) / c->sigma, far = (edge - c->to) / c->sigma;
+    const double first = c->sigma * (first_integral(near) - first_integral(far));
+    const double second = c->sigma * c->sigma * (second_integral(near) - second_integral(far));
+    return (first + c->slope * ((edge - centre) * first - second)) / width;
+}
+
+/* The same of exp(slope x), integrated by parts; angles from the centre of the cell. */
+static double below_steep(const struct cell *c, double edge)
+{
+    const double half = (c->to - c->from) / 2;
+    const double e = edge - (c->from + c->to) / 2;
+    const double s = c->slope, shift = s * c->sigma;
+    const double ends = exp(s * half) * below((e - half) / c->sigma) -
+                        exp(-s * half) * below((e + half) / c->sigma);
+    const double moved = exp(s * e + shift * shift / 2) *
+                         between((-half - e) / c->sigma - shift, (half - e) / c->sigma - shift);
+    return (ends + moved) / (2 * sinh(s * half));
+}
+
+static double measured_below(const struct cell *c, double edge)
+{
+    if (edge >= c->to + furthest * c->sigma)
+        return 1;
+    if (edge <= c->from - furthest * c->sigma)
+        return 0;
+    const bool level = fabs(c->slope) * (c->to - c->from) < flat;
+    const double share = level ? below_flat(c, edge) : below_steep(c, edge);
+    return fmin(fmax(share, 0), 1);
+}
+
+static struct cell cell_of(const bh_migration *m, int i, double slope)
+{
+    struct cell c = {.from = m->edges[i], .to = m->edges[i + 1], .sigma = m->sigma};
+    const double most = fmin(steepest_cell / (c.to - c.from), steepest_sigma / m->sigma);
+    c.slope = fmin(fmax(slope, -most), most);
+    return c;
+}
+
+/* --- columns of the matrix --- */
+
+void bh_migration_move(const bh_migration *m, int from, double slope, double counts,
+                       double *measured)
+{
+    if (!(m->sigma > 0) || m->cells == 1) {
+        measured[from] += counts;
+        return;
+    }
+    const struct cell c = cell_of(m, from, slope);
+    const int last = m->cells - 1;
+    const double reach = furthest * m->sigma;
+    int first = from;
+    while (first > 0 && m->edges[first] > c.from - reach)
+        first--;
+    double sum = 0; /* what is measured below the cell at hand */
+    for (int i = first; i <= last; i++) {
+        const double next = i == last ? 1 : fmax(sum, measured_below(&c, m->edges[i + 1]));
+        measured[i] += counts * (next - sum);
+        sum = next;
+        if (m->edges[i + 1] >= c.to + reach)
+            break;
+    }
+}
+
+void bh_migration_shares(const bh_migration *m, int from, double slope, double *share)
+{
+    for (int i = 0; i < m->cells; i++)
+        share[i] = 0;
+    bh_migration_move(m, from, slope, 1, share);
+}
+
+/* --- slopes --- */
+
+static double width_of(const bh_migration *m, int i)
+{
+    return m->edges[i + 1] - m->edges[i];
+}
+
+static double centre_of(const bh_migration *m, int i)
+{
+    return (m->edges[i] + m->edges[i + 1]) / 2;
+}
+
+/* By how much the logarithm of a mean over cell i exceeds that in its middle, of exp(slope x). */
+static double bulge(const bh_migration *m, double slope, int i)
+{
+    const double half = fmin(fabs(slope) * width_of(m, i), steepest_cell) / 2;
+    return half < flat ? 0 : log(sinh(half) / half);
+}
+
+/* Slope between the middles of cells i and i + 1; false where one of them is empty or does not
+ * exist. */
+static bool chord(const bh_migration *m, const double *counts, int i, double *out)
+{
+    if (i < 0 || i + 1 >= m->cells || !(counts[i] > 0) || !(counts[i + 1] > 0))
+        return false;
+    const double apart = centre_of(m, i + 1) - centre_of(m, i);
+    const double ratio = counts[i + 1] / width_of(m, i + 1) / (counts[i] / width_of(m, i));
+    const double slope = log(ratio) / apart;
+    *out = slope - (bulge(m, slope, i + 1) - bulge(m, slope, i)) / apart;
+    return true;
+}
+
+/* Slope of the parabola through three middles, cell i's and its neighbours' or the next two to one
+ * side; of the chord where there are but two. */
+static double slope_at(const bh_migration *m, const double *counts, int i)
+{
+    double back = 0, on = 0, next = 0;
+    const bool behind = chord(m, counts, i - 1, &back);
+    const bool ahead = chord(m, counts, i, &on);
+    if (behind && ahead) {
+        const double b = centre_of(m, i) - centre_of(m, i - 1);
+        const double a = centre_of(m, i + 1) - centre_of(m, i);
+        return (back * a + on * b) / (a + b);
+    }
+    if (!behind && !ahead)
+        return 0;
+    const int step = ahead ? 1 : -1;
+    const double near = ahead ? on : back;
+    if (!chord(m, counts, ahead ? i + 1 : i - 2, &next))
+        return near;
+    const double b = centre_of(m, i + step) - centre_of(m, i);
+    return near - (next - near) * b / (centre_of(m, i + 2 * step) - centre_of(m, i));
+}
+
+void bh_migration_slopes(const bh_migration *m, const double *counts, double *slope)
+{
+    for (int i = 0; i < m->cells; i++)
+        slope[i] = slope_at(m, counts, i);
+}
