@@ -12,11 +12,16 @@
 
 enum { MOST_BYTES = 1024 * 1024 };
 
+/* A change with strings of its own. */
+struct change {
+    char *path, *value;
+};
+
 struct bh_session {
     bh_material_library *library;
     bh_text bytes; /* the plan as it was read */
     char *name;
-    bh_change *changes; /* owned strings */
+    struct change *changes; /* in the order they were first made */
     size_t change_count;
     bh_plan *plan;
     bh_table *table;
@@ -47,11 +52,11 @@ static void forget_messages(bh_session *s)
     s->message_count = 0;
 }
 
-static void free_change(bh_change *change)
+static void free_change(struct change *change)
 {
-    free((void *)(size_t)change->path);
-    free((void *)(size_t)change->yaml);
-    *change = (bh_change){NULL, NULL};
+    free(change->path);
+    free(change->value);
+    *change = (struct change){NULL, NULL};
 }
 
 static void forget_plan(bh_session *s)
@@ -111,15 +116,19 @@ static void keep_diags(bh_session *s, const bh_diags *diags)
 static bh_result read_plan(bh_session *s, bh_plan **out)
 {
     bh_diags *diags = bh_diags_new();
+    bh_change *changes = calloc(s->change_count + 1, sizeof *changes);
     forget_messages(s);
-    if (!diags)
-        return BH_NO_MEMORY;
-    *out = bh_plan_read(s->bytes.bytes ? s->bytes.bytes : "", s->bytes.length, s->name, s->changes,
-                        s->change_count, s->library, diags);
-    keep_diags(s, diags);
-    const bool said = bh_diags_errors(diags) > 0;
+    if (diags && changes) {
+        for (size_t i = 0; i < s->change_count; i++)
+            changes[i] = (bh_change){s->changes[i].path, s->changes[i].value};
+        *out = bh_plan_read(s->bytes.bytes ? s->bytes.bytes : "", s->bytes.length, s->name, changes,
+                            s->change_count, s->library, diags);
+        keep_diags(s, diags);
+    }
+    const bh_result failed = diags && changes ? BH_BAD_PLAN : BH_NO_MEMORY;
+    free(changes);
     bh_diags_free(diags);
-    return *out ? BH_DONE : said ? BH_BAD_PLAN : BH_NO_MEMORY;
+    return *out ? BH_DONE : failed;
 }
 
 static bh_result adopt(bh_session *s, const char *name)
@@ -158,33 +167,33 @@ bh_result bh_session_load_text(bh_session *session, const char *text, size_t len
 }
 
 /* Puts the change into the list, in the place of an earlier one of the same path, whose value is
- * handed back in `old`. */
-static bool put_change(bh_session *s, const char *path, char *value, size_t *at, const char **old)
+ * handed back in `old`; `value` is then the session's. */
+static bool put_change(bh_session *s, const char *path, char *value, size_t *at, char **old)
 {
     *old = NULL;
     for (*at = 0; *at < s->change_count; (*at)++)
         if (strcmp(s->changes[*at].path, path) == 0) {
-            *old = s->changes[*at].yaml;
-            s->changes[*at].yaml = value;
+            *old = s->changes[*at].value;
+            s->changes[*at].value = value;
             return true;
         }
-    bh_change *more = realloc(s->changes, (s->change_count + 1) * sizeof *more);
-    char *copy = strdup(path);
+    struct change *more = realloc(s->changes, (s->change_count + 1) * sizeof *more);
     if (more)
         s->changes = more;
-    if (!more || !copy) {
-        free(copy);
+    char *copy = more ? strdup(path) : NULL;
+    if (!copy)
         return false;
-    }
-    s->changes[s->change_count++] = (bh_change){copy, value};
+    struct change *last = &s->changes[s->change_count++];
+    last->path = copy;
+    last->value = value;
     return true;
 }
 
-static void take_back(bh_session *s, size_t at, const char *old)
+static void take_back(bh_session *s, size_t at, char *old)
 {
     if (old) {
-        free((void *)(size_t)s->changes[at].yaml);
-        s->changes[at].yaml = old;
+        free(s->changes[at].value);
+        s->changes[at].value = old;
     } else {
         free_change(&s->changes[at]);
         s->change_count--;
@@ -194,7 +203,7 @@ static void take_back(bh_session *s, size_t at, const char *old)
 bh_result bh_session_change(bh_session *session, const char *path, const char *value)
 {
     size_t at = 0;
-    const char *old = NULL;
+    char *old = NULL;
     bh_plan *plan = NULL;
     if (!session || !session->plan || !path || !value)
         return BH_BAD_CALL;
@@ -208,7 +217,7 @@ bh_result bh_session_change(bh_session *session, const char *path, const char *v
         take_back(session, at, old);
         return result;
     }
-    free((void *)(size_t)old);
+    free(old);
     bh_table_free(session->table);
     session->table = NULL;
     bh_plan_free(session->plan);

@@ -9,7 +9,7 @@
 #include "beamhours/command/beam.h"
 #include "beamhours/command/complain.h"
 #include "beamhours/command/input.h"
-#include "beamhours/command/passage.h"
+#include "beamhours/command/losses.h"
 #include "beamhours/command/places.h"
 #include "beamhours/matter/radiation_length.h"
 #include "beamhours/report/text_table.h"

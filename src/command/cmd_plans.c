@@ -33,8 +33,9 @@ static void add_demo(struct demos *d, const char *file)
 {
     const size_t n = strlen(file);
     if (n > 5 && strcmp(file + n - 5, ".yaml") == 0 && d->count < MOST) {
-        d->name[d->count] = strndup(file, n - 5);
-        d->count += d->name[d->count] != NULL;
+        char *name = strndup(file, n - 5);
+        if (name)
+            d->name[d->count++] = name;
     }
 }
 

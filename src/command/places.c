@@ -1,5 +1,4 @@
 /* places.c - follows the XDG base directory specification where the user's own materials live. */
-#define _DEFAULT_SOURCE /* for struct winsize */
 #include "beamhours/command/places.h"
 
 #include <stdbool.h>

@@ -136,7 +136,7 @@ static int by_key(const void *left, const void *right)
     const struct key *a = left, *b = right;
     int order = 0;
     if (a->text && b->text)
-        order = a->sign * strcmp(a->text, b->text);
+        order = a->sign < 0 ? strcmp(b->text, a->text) : strcmp(a->text, b->text);
     else if (isnan(a->number) || isnan(b->number))
         order = isnan(a->number) - isnan(b->number);
     else

@@ -293,7 +293,7 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
                         const struct origin *o, bh_error *err)
 {
     double lo = 0.0, hi = 0.0;
-    if (r->structure) {
+    if (r->structure && o->nuclide) {
         bh_structure *named = bh_structure_new(r->structure, o->nuclide->z, o->nuclide->a, err);
         if (!named)
             return err->code = BH_EDOMAIN;

@@ -1,6 +1,6 @@
-/* passage.h - what a particle of one energy meets with in a material. */
-#ifndef BH_COMMAND_PASSAGE_H
-#define BH_COMMAND_PASSAGE_H
+/* losses.h - what a particle of one energy meets with in a material. */
+#ifndef BH_COMMAND_LOSSES_H
+#define BH_COMMAND_LOSSES_H
 
 #include "beamhours/base/error.h"
 #include "beamhours/matter/material.h"

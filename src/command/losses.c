@@ -1,5 +1,5 @@
-/* passage.c - losses, range and deflection of one particle in one material. */
-#include "beamhours/command/passage.h"
+/* losses.c - losses, range and deflection of one particle in one material. */
+#include "beamhours/command/losses.h"
 
 #include "beamhours/matter/multiple_scattering.h"
 #include "beamhours/matter/radiation_length.h"

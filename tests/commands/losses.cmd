@@ -1,4 +1,4 @@
-# passage.cmd - what a material does to a particle that passes.
+# losses.cmd - what a material does to a particle that passes.
 beamhours materials copper --particle proton --kinetic-energy 10MeV
 beamhours materials liquid-hydrogen -p electron -E 855MeV
 beamhours materials aluminum -p muon- -E 160GeV
