@@ -57,7 +57,7 @@ check-run: all
 	@{ $(MAKE) -k -Otarget $(call run,$(TESTS) $(COMMANDS) rules); echo "status $$?"; } 2>&1 | tee $(BUILD)/check.log | grep -v '^status'; \
 	 awk -f tests/rules/summary.awk $(BUILD)/check.log
 check-all:                                               ## check, all that follows up to fuzz, a trial installation
-	@$(MAKE) -k check lint globals sanitize valgrind coverage fuzz installed
+	@$(MAKE) -k check lint globals sanitize valgrind coverage fuzz mutate installed
 $(call run,$(TESTS)): %.run: % ; @$(UNDER) $<
 $(call run,$(COMMANDS)): $(BUILD)/%.run: %.cmd all ; @UNDER='$(UNDER)' sh tests/commands/run.sh $(BUILD) $<
 $(call run,rules): ; @CC='$(CC)' sh tests/rules/selftest.sh
@@ -80,12 +80,15 @@ valgrind:                                                ## the tests under valg
 coverage:                                                ## lines of src/ that the tests reach
 	@rm -rf $(BUILD)/cov && $(MAKE) check-run CC=gcc HARDEN= BUILD=$(BUILD)/cov CFLAGS='-O0 -g --coverage'
 	gcovr -r . --object-directory $(BUILD)/cov -f src/ --txt | awk -f tests/rules/coverage.awk
+mutate: everything                                       ## one sign, power, mass or factor wrong at a time: a test must notice
+	@CC='$(CC)' COMPILE='$(ALL_C) $(LDFLAGS)' LINKS='$(TEST_LIBS) $(LIBS)' sh tests/mutation/mutate.sh $(BUILD)
 fuzz:                                                    ## each harness for FUZZ_SECONDS (10)
 	@$(MAKE) -k fuzz-run CC=clang HARDEN= BUILD=$(BUILD)/fuzz CFLAGS='$(SAN) -fsanitize=fuzzer-no-link'
 fuzz-run: $(call run,$(FUZZ))
 $(call run,$(FUZZ)): $(BUILD)/%.run: $(BUILD)/%
 	@mkdir -p $<.found && $< -max_total_time=$(or $(FUZZ_SECONDS),10) -artifact_prefix=$<. $<.found $(wildcard $*.seeds)
-bench: $(call bin,$(BENCH)) ; @for b in $^; do $$b || exit 1; done ## time the hot functions
+bench: all $(call bin,$(BENCH))                          ## times as ratios, a goal a line; BENCH_STRICT=1: a miss fails
+	@bad=0; for b in $(call bin,$(BENCH)); do echo "$${b##*/}:"; $$b || bad=1; done; exit $$bad
 format: ; @clang-format -i $(LAID_OUT)                    ## rewrite the layout
 install: all ; @BUILD=$(BUILD) PKGS='$(PKGS)' sh src/install.sh ## into PREFIX (/usr/local), LIBDIR, DESTDIR
 uninstall: ; @sh src/install.sh remove                   ## with the same PREFIX, LIBDIR, DESTDIR

@@ -223,12 +223,14 @@ static bool near(double a, double b)
 /* The point closest to `x`, in the curve's own variable; count where that is outside the curve. */
 static size_t closest(const bh_curve *c, double x)
 {
-    const double half = c->count > 1 ? fabs(c->x[1] - c->x[0]) : 0.0;
     size_t best = 0;
     for (size_t i = 1; i < c->count; i++)
         if (fabs(c->x[i] - x) < fabs(c->x[best] - x))
             best = i;
-    return fabs(c->x[best] - x) <= half ? best : c->count;
+    /* energies stand wider apart the higher they are */
+    const size_t beside = best ? best - 1 : 1;
+    const double step = c->count > 1 ? fabs(c->x[best] - c->x[beside]) : 0.0;
+    return fabs(c->x[best] - x) <= step ? best : c->count;
 }
 
 /* Whether the acceptance of `a` covers the angle at which the arm stands at point `at`. */
@@ -301,7 +303,7 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
     }
     limits(o, &lo, &hi);
     for (int i = 0; i < POINTS && hi > lo; i++)
-        add_point(c, o, lo + (hi - lo) * i / (POINTS - 1));
+        add_point(c, o, i == POINTS - 1 ? hi : lo + (hi - lo) * i / (POINTS - 1));
     if (c->count == 0)
         return bh_fail(err, BH_EDOMAIN, "this arm can stand at no point of the curve");
     c->plan = *plan;

@@ -1,25 +1,17 @@
 /* bench_kinematics.c - nanoseconds per event, as a ratio to the bare cost of the library calls that
  * an event cannot do without, so that a slowdown shows on any machine. */
 #include <math.h>
-#include <stdio.h>
-#include <time.h>
 
 #include "beamhours/physics/kinematics.h"
 #include "beamhours/physics/process.h"
 #include "beamhours/units/constants.h"
+#include "bench.h"
 
 enum { EVENTS = 512, ROUNDS = 2000 };
 
-static double seconds(void)
-{
-    struct timespec now;
-    (void)clock_gettime(CLOCK_MONOTONIC, &now);
-    return (double)now.tv_sec + 1e-9 * (double)now.tv_nsec;
-}
-
 static double per_event(double start)
 {
-    return 1e9 * (seconds() - start) / EVENTS / ROUNDS;
+    return 1e9 * (bench_now() - start) / EVENTS / ROUNDS;
 }
 
 int main(void)
@@ -31,20 +23,20 @@ int main(void)
     for (int i = 0; i < EVENTS; i++)
         angle[i] = 0.2 + 2.5 * i / EVENTS;
 
-    double start = seconds();
+    double start = bench_now();
     for (int r = 0; r < ROUNDS; r++)
         for (int i = 0; i < EVENTS; i++)
             sum += sqrt(angle[i] + r) + cos(angle[i]);
     const double two = per_event(start);
 
-    start = seconds();
+    start = bench_now();
     for (int r = 0; r < ROUNDS; r++)
         for (int i = 0; i < EVENTS; i++)
             sum += cos(angle[i]) + sin(angle[i]) + sqrt(angle[i]) + sqrt(angle[i] + r) +
                    sqrt(angle[i] + 2 * r) + atan2(angle[i], 1.0 + r);
     const double bare = per_event(start);
 
-    start = seconds();
+    start = bench_now();
     for (int r = 0; r < ROUNDS; r++) {
         angle[r % EVENTS] += 1e-9;
         bh_kinematics_batch(&in, EVENTS, angle, BH_BRANCH_FAST, event);
@@ -52,7 +44,7 @@ int main(void)
     }
     const double batch = per_event(start);
 
-    start = seconds();
+    start = bench_now();
     for (int r = 0; r < ROUNDS; r++)
         for (int i = 0; i < EVENTS; i++) {
             if (bh_kinematics_scattered(&in, angle[i], BH_BRANCH_FAST, &event[i], NULL) != BH_OK)
@@ -66,7 +58,7 @@ int main(void)
     if (!structure || !bh_particle_find("electron", &beam))
         return 1;
     const bh_encounter x = {&beam, -1, 1, 1, in.target, in.kinetic, structure, 0.0};
-    start = seconds();
+    start = bench_now();
     for (int r = 0; r < ROUNDS; r++) {
         bh_process_find("elastic")->cross_section(&x, EVENTS, event, out);
         sum += out[r % EVENTS];
@@ -74,11 +66,10 @@ int main(void)
     const double cross = per_event(start);
     bh_structure_free(structure);
 
-    printf("sqrt + cos %.1f ns; sin, cos, atan2 and three sqrt %.1f ns\n", two, bare);
-    printf("bh_kinematics_batch %.1f ns/event, %.2f times the calls it needs\n", batch,
-           batch / bare);
-    printf("bh_kinematics_scattered %.1f ns/event, %.2f times; elastic with dipole %.1f ns/event "
-           "(checksum %g)\n",
-           checked, checked / bare, cross, sum);
-    return 0;
+    printf("      sqrt + cos %.1f ns; sin, cos, atan2 and three sqrt %.1f ns; elastic with dipole "
+           "%.1f ns/event (checksum %g)\n",
+           two, bare, cross, sum);
+    bool met = bench_goal("an event of many over the calls it needs", batch / bare, 4, "");
+    met &= bench_goal("an event alone, checked, over the calls it needs", checked / bare, 4, "");
+    return bench_end(met);
 }

@@ -1,30 +1,22 @@
 /* bench_structure.c - time of a form factor, in units of the exp, sin and cos it cannot do without.
  */
 #include <math.h>
-#include <stdio.h>
-#include <time.h>
 
 #include "beamhours/physics/structure.h"
+#include "bench.h"
 
 enum { POINTS = 1000, TURNS = 300 };
-
-static double seconds(void)
-{
-    struct timespec now;
-    (void)clock_gettime(CLOCK_MONOTONIC, &now);
-    return (double)now.tv_sec + 1e-9 * (double)now.tv_nsec;
-}
 
 /* ns for one bare call of f */
 static double bare(double (*f)(double))
 {
     volatile double sink = 0.0;
-    const double start = seconds();
+    const double start = bench_now();
     for (int turn = 0; turn < TURNS; turn++)
         for (int i = 0; i < POINTS; i++)
             sink = f(0.013 * i);
     (void)sink;
-    return (seconds() - start) * 1e9 / (TURNS * POINTS);
+    return (bench_now() - start) * 1e9 / (TURNS * POINTS);
 }
 
 /* ns for one value of ge2 and gm2 */
@@ -33,10 +25,10 @@ static double structured(const bh_structure *structure)
     static double q2[POINTS], ge2[POINTS], gm2[POINTS];
     for (int i = 0; i < POINTS; i++)
         q2[i] = 40.0 * i;
-    const double start = seconds();
+    const double start = bench_now();
     for (int turn = 0; turn < TURNS; turn++)
         bh_structure_eval(structure, POINTS, q2, ge2, gm2);
-    return (seconds() - start) * 1e9 / (TURNS * POINTS);
+    return (bench_now() - start) * 1e9 / (TURNS * POINTS);
 }
 
 int main(void)

@@ -330,6 +330,12 @@ START_TEST(ranges_are_those_of_the_data)
     } rows[] = {
         {"a1-2014", 1, 1, 0.977},      {"prad-2019", 1, 1, 0.06},
         {"abbott-2000-i", 1, 2, 2.0},  {"fermi-2p", 82, 208, 0.24},
+        {"kelly-2004", 1, 1, 31.2},    {"arrington-2004", 1, 1, 31.2},
+        {"amt-2007", 1, 1, 31.2},      {"amt-2007-effective", 1, 1, 31.2},
+        {"venkat-2011", 1, 1, 31.2},   {"ye-2018", 1, 1, 30.0},
+        {"dipole", 1, 1, 1.0},         {"galster-1971", 0, 1, 0.6},
+        {"riordan-2010", 0, 1, 3.4},   {"abbott-2000-ii", 1, 2, 6.0},
+        {"amroun-1994", 2, 3, 1.2},    {"amroun-1994", 1, 3, 1.2},
         {"fermi-2p/2", 82, 208, 0.09}, {"fourier-bessel", 7, 15, 0.501946}, /* (8 pi / 7 fm)^2 */
     };
     for (int i = 0; i < COUNT(rows); i++) {

@@ -135,6 +135,16 @@ START_TEST(fits_describe_published_cross_sections)
         {"amt-2007-effective", "W_Sill1993", 13, 0.2, 0.8},
         {"amt-2007-effective", "W_Christy2004", 27, 0.4, 1.0},
         {"amt-2007-effective", "W_Murphy1974", 11, 0.1, 0.6},
+        {"amt-2007-effective", "W_Stein1975", 7, 0.2, 0.7},
+        {"dipole", "W_Stein1975", 7, 3.0, 5.0},
+        {"amt-2007-effective", "W_Walker1994", 12, 0.6, 1.1},
+        {"dipole", "W_Walker1994", 12, 30.0, 50.0},
+        {"amt-2007-effective", "W_Dutta2003", 6, 2.0, 3.0},
+        {"dipole", "W_Dutta2003", 6, 15.0, 22.0},
+        {"amt-2007-effective", "W_Niculescu1999", 7, 2.5, 3.7},
+        {"dipole", "W_Niculescu1999", 7, 20.0, 30.0},
+        {"amt-2007-effective", "W_Qattan2005", 13, 1.6, 2.4},
+        {"dipole", "W_Qattan2005", 13, 38.0, 55.0},
         {"default", "Mihovilovic2017_ISR", 22, 0.5, 1.2},
     };
     for (int i = 0; i < COUNT(rows); i++) {
@@ -164,6 +174,10 @@ START_TEST(fits_describe_the_shape_of_published_cross_sections)
         {"ye-2018", "W_Berger1971", 10.0, 0.5, 0.9},
         {"a1-2014", "W_Berger1971", 0.7, 0.3, 1.2},
         {"dipole", "W_Sill1993", 40.0, 20.0, 60.0},
+        {"amt-2007-effective", "W_Bosted1990", 10.0, 0.3, 0.7},
+        {"dipole", "W_Bosted1990", 10.0, 1.5, 2.2},
+        {"amt-2007-effective", "W_Rock1992", 12.0, 0.4, 1.0},
+        {"dipole", "W_Rock1992", 12.0, 12.0, 20.0},
     };
     for (int i = 0; i < COUNT(rows); i++) {
         const tally sum = compare_proton(rows[i].fit, rows[i].experiment, rows[i].q2_max);

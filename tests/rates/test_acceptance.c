@@ -321,7 +321,8 @@ static void spoil(bh_acceptance_spec *s, int how)
         s->in_plane_to = s->in_plane_from;
         break;
     case 4:
-        s->in_plane_to = 7;
+        s->in_plane_from = -3.2; /* more than a turn */
+        s->in_plane_to = 3.2;
         break;
     case 5:
         s->in_plane_from = -8;
@@ -354,6 +355,10 @@ static void spoil(bh_acceptance_spec *s, int how)
         break;
     case 14:
         *s = (bh_acceptance_spec){.shape = BH_ACCEPTANCE_RING, .ring_to = 1, .azimuth = 7};
+        break;
+    case 15:
+        s->in_plane_from = 6;
+        s->in_plane_to = 7;
         break;
     default:
         s->in_plane_from = (double)NAN;
@@ -388,6 +393,6 @@ int main(void)
     tcase_add_test(tests, ring_in_closed_form);
     tcase_add_test(tests, edges_of_a_rectangle);
     tcase_add_test(tests, a_point_is_one);
-    tcase_add_loop_test(tests, odd_shapes_are_refused, 0, 16);
+    tcase_add_loop_test(tests, odd_shapes_are_refused, 0, 17);
     return run_suite("acceptance", tests);
 }

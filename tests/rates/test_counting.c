@@ -6,6 +6,7 @@
 #include <math.h>
 
 #include "../suite.h"
+#include "beamhours/rates/precision.h"
 #include "beamhours/units/constants.h"
 
 /* --- dead time --- */
@@ -206,6 +207,30 @@ START_TEST(muon_lifetime_proposal)
 }
 END_TEST
 
+START_TEST(what_is_left_of_counts)
+{
+    /* electronics 0.98, computer 0.93, tracking 0.96 leave 0.874944; derived */
+    bh_rate_factors all = {1, 1, 1, 1, 1, 1, 1}, tracked = all;
+    tracked.efficiency = 0.96;
+    ck_assert_double_eq_tol(bh_counting_counts(bh_counting_rate(&tracked), 0.98 * 0.93, 1) /
+                                bh_counting_counts(bh_counting_rate(&all), 1, 1),
+                            0.874944, 1e-12);
+    /* 2500 recorded of every tenth are 25000 +- 500, 2 %; derived */
+    bh_readout r = plain(0, false);
+    r.prescale = 10;
+    const bh_live live = live_of(&r, 25000 / 3600.0);
+    ck_assert_double_eq_tol(live.recorded * 3600, 2500, 1e-9);
+    const bh_recorded rates = {.signal = live.recorded};
+    const double relative = bh_precision_uncertainty(&rates, &(bh_empty){.measured = false}, 1);
+    ck_assert_double_eq_tol(relative, 0.02, 1e-12);
+    ck_assert_double_eq_tol(relative * 25000, 500, 1e-9);
+    /* 1e4 /s on average in pulses of 2 us, 50 of them a second: 1e8 /s while there is beam; derived
+     */
+    r = (bh_readout){.dead_time = 1e-9, .prescale = 1, .duty_factor = 50 * 2e-6};
+    ck_assert_double_eq_tol((1 / live_of(&r, 1e4).live_fraction - 1) / 1e-9, 1e8, 1e-3);
+}
+END_TEST
+
 START_TEST(counts_and_back)
 {
     ck_assert_double_eq_tol(bh_counting_counts(100, 0.9, 2), 648000, 1e-6);
@@ -256,6 +281,7 @@ int main(void)
     tcase_add_test(tests, luminosities);
     tcase_add_loop_test(tests, published_rates, 0, COUNT(helium));
     tcase_add_test(tests, muon_lifetime_proposal);
+    tcase_add_test(tests, what_is_left_of_counts);
     tcase_add_test(tests, counts_and_back);
     tcase_add_loop_test(tests, accidental_coincidences, 0, COUNT(accidentals));
     return run_suite("counting", tests);

@@ -1,0 +1,53 @@
+#!/bin/sh
+# mutate.sh BUILD - makes one mistake at a time in a copy of a source file, and fails unless a test notices each
+# or survivors.tsv explains why none can.  The tree itself is not touched.
+# From the environment: CC, COMPILE (flags), LINKS (libraries), KEEP (one mistake in so many), JOBS.
+set -u
+build=$1 folder=$1/mutation least=100
+export CK_FORK=no LC_ALL=C
+
+# The tests of a file: the one of its name first, then its room's, then those of rooms above.
+programs() {
+    room=${1#src/} room=${room%%/*}
+    case $room in physics) above='physics rates run' ;; rates) above='rates run' ;; *) above=run ;; esac
+    {
+        ls "$build/tests/$room/test_$(basename "$1" .c)" 2>/dev/null
+        for room in $above; do find "$build/tests/$room" -name 'test_*' ! -name '*.*' ! -name '*_faults' | sort; done
+    } | awk '!seen[$0]++'
+}
+compile() { $CC $COMPILE -g0 -w -c -o "$2" "$1"; }
+
+# One mistake: prints its number and what became of it.
+try() { # try NUMBER FILE
+    new=$folder/$1
+    compile "$new.c" "$new.o" 2>"$new.said" || { echo "$1	refused by the compiler"; return; }
+    if objcopy --strip-all "$new.o" "$new.bare" && cmp -s "$new.bare" "$folder/$(basename "$2" .c).bare"; then
+        echo "$1	the same to the compiler"
+        return
+    fi
+    for program in $(programs "$2"); do
+        $CC $COMPILE -pie -o "$new.test" "$program.o" "$new.o" "$build/front.a" "$build/libbeamhours.a" $LINKS || exit 255
+        timeout 60 "$new.test" >"$new.said" 2>&1 || { echo "$1	noticed by $(basename "$program")"; return; }
+    done
+    echo "$1	survives"
+}
+tried() { try "$1" "$2"; rm -f "$folder/$1.test" "$folder/$1.o" "$folder/$1.bare"; }
+if [ $# -eq 3 ]; then tried "$2" "$3"; exit; fi
+
+rm -rf "$folder" && mkdir -p "$folder" || exit 1
+# What background processes and their models hold comes under this run with their own tests.
+later='atomic_electron|inclusive|inelastic|quasi_elastic|structure_functions|background'
+formulas() { find "src/$1" -name '*.c' ! -name '*_table.c' | grep -Ev "$later" | sort; }
+# of run/, what multiplies a row out: not what only says it
+rows() { find src/run -name '*.c' ! -name 'explain*' ! -name 'cautions.c' ! -name 'remarks.c' ! -name 'columns.c' | sort; }
+for program in $(programs src/physics/none.c); do # a test that fails anyway would notice everything
+    "$program" >"$folder/said" 2>&1 || { echo "mutate.sh: $program fails before any mistake is made"; exit 1; }
+done
+awk -v out="$folder" -f tests/mutation/mutants.awk keep="${KEEP:-30}" $(formulas physics) \
+    keep="${KEEP:-8}" $(formulas rates) keep="${KEEP:-6}" $(rows) >"$folder/list" || exit 1
+for file in $(cut -f2 "$folder/list" | sort -u); do
+    name=$folder/$(basename "$file" .c)
+    compile "$file" "$name.o" && objcopy --strip-all "$name.o" "$name.bare" || exit 1
+done
+cut -f1,2 "$folder/list" | xargs -L 1 -P "${JOBS:-2}" sh "$0" "$build" >"$folder/fate" || exit 1
+sort "$folder/fate" | awk -F '\t' -v least=$least -f tests/mutation/judge.awk tests/mutation/survivors.tsv - "$folder/list"
