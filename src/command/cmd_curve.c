@@ -158,7 +158,8 @@ static void plot_row(const struct curves *c, const struct span *s, size_t i, int
     for (size_t k = c->count; k-- > 0;) {
         const double y = bh_curve_y(c->curve[k], i, c->column);
         if (isfinite(y))
-            row[(int)(place(s, y) * (width - 1))] = c->count > 1 ? "12345678"[k] : '*';
+            row[(int)(place(s, y) * (width - 1))] =
+                (c->count > 1 ? "12345678" : "*")[c->count > 1 ? k : 0];
     }
     bh_text_appendf(out, " |%.*s|", width, row);
 }

@@ -7,6 +7,7 @@
 #include <sysexits.h>
 #include <unistd.h>
 
+#include "beamhours/base/arena.h"
 #include "beamhours/base/file.h"
 #include "beamhours/base/nearest.h"
 #include "beamhours/command/blank_plan.h"
@@ -20,6 +21,7 @@ enum { MOST = 256, LIMIT = 1024 * 1024 };
 /* Names of the demonstrations, sorted, without ".yaml". */
 struct demos {
     char folder[4096];
+    bh_arena *arena; /* of the names */
     char *name[MOST];
     size_t count;
 };
@@ -33,9 +35,11 @@ static void add_demo(struct demos *d, const char *file)
 {
     const size_t n = strlen(file);
     if (n > 5 && strcmp(file + n - 5, ".yaml") == 0 && d->count < MOST) {
-        char *name = strndup(file, n - 5);
-        if (name)
+        char *name = bh_arena_take(d->arena, n - 4, 1);
+        if (name) {
+            memcpy(name, file, n - 5);
             d->name[d->count++] = name;
+        }
     }
 }
 
@@ -45,6 +49,11 @@ static int find_demos(struct demos *d)
     (void)snprintf(d->folder, sizeof d->folder, "%s/plans", data ? data : "");
     DIR *folder = data ? opendir(d->folder) : NULL;
     free(data);
+    d->arena = folder ? bh_arena_new() : NULL;
+    if (folder && !d->arena) {
+        (void)closedir(folder);
+        return bh_complain(stderr, &(bh_error){.code = BH_ENOMEM});
+    }
     if (!folder) {
         fputs("beamhours: the demonstration plans are not beside the program: install it whole\n",
               stderr);
@@ -55,12 +64,6 @@ static int find_demos(struct demos *d)
     (void)closedir(folder);
     qsort(d->name, d->count, sizeof d->name[0], by_name);
     return 0;
-}
-
-static void forget(struct demos *d)
-{
-    for (size_t i = 0; i < d->count; i++)
-        free(d->name[i]);
 }
 
 /* Appends the text of demonstration `name`; 64 when there is none. */
@@ -121,7 +124,7 @@ int bh_cmd_plans(const bh_arguments *arguments)
     if (status == 0)
         status = bh_output(&out, NULL);
     bh_text_free(&out);
-    forget(&d);
+    bh_arena_free(d.arena);
     return status;
 }
 
@@ -147,6 +150,6 @@ int bh_cmd_new(const bh_arguments *arguments)
     if (status == 0)
         printf("wrote %s; now: beamhours table %s\n", path, path);
     bh_text_free(&out);
-    forget(&d);
+    bh_arena_free(d.arena);
     return status;
 }
