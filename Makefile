@@ -86,7 +86,7 @@ fuzz:                                                    ## each harness for FUZ
 	@$(MAKE) -k fuzz-run CC=clang HARDEN= BUILD=$(BUILD)/fuzz CFLAGS='$(SAN) -fsanitize=fuzzer-no-link'
 fuzz-run: $(call run,$(FUZZ))
 $(call run,$(FUZZ)): $(BUILD)/%.run: $(BUILD)/%
-	@mkdir -p $<.found && $< -max_total_time=$(or $(FUZZ_SECONDS),10) -artifact_prefix=$<. $<.found $(wildcard $*.seeds)
+	@mkdir -p $<.found && $< -max_total_time=$(or $(FUZZ_SECONDS),10) -artifact_prefix=$<. $<.found $(wildcard $*.seeds) $(addprefix -dict=,$(wildcard $*.dict))
 bench: all $(call bin,$(BENCH))                          ## times as ratios, a goal a line; BENCH_STRICT=1: a miss fails
 	@bad=0; for b in $(call bin,$(BENCH)); do echo "$${b##*/}:"; $$b || bad=1; done; exit $$bad
 format: ; @clang-format -i $(LAID_OUT)                    ## rewrite the layout

@@ -15,7 +15,7 @@ enum { SNIPPET = 64, NAMES = 12 /* item names told, at most */ };
 struct walk {
     bh_document *document;
     bh_diags *diags;
-    bh_mark at;
+    const char *source; /* the option's name, of the arena */
     const char *path;
     char **parts; /* what stands between the dots */
     size_t count;
@@ -37,8 +37,25 @@ static const char *path_so_far(struct walk *w)
     return copy ? copy : "";
 }
 
-#define SAY(w, ...) \
-    bh_diags_add((w)->diags, BH_SEVERITY_ERROR, (w)->at, path_so_far(w), __VA_ARGS__)
+/* [code points] in so many bytes. */
+static int columns(const char *text, size_t bytes)
+{
+    int n = 0;
+    for (size_t i = 0; i < bytes; i++)
+        n += ((unsigned char)text[i] & 0xC0U) != 0x80;
+    return n;
+}
+
+/* Where part i begins in the option's text; behind the last one, where the value does. */
+static bh_mark mark_of(const struct walk *w, size_t i)
+{
+    if (i < w->count)
+        return (bh_mark){w->source, 1, 1 + columns(w->path, (size_t)(w->parts[i] - w->parts[0]))};
+    return (bh_mark){w->source, 1, 2 + columns(w->path, strlen(w->path))};
+}
+
+#define SAY(w, part, ...) \
+    bh_diags_add((w)->diags, BH_SEVERITY_ERROR, mark_of(w, part), path_so_far(w), __VA_ARGS__)
 
 /* --- following the path --- */
 
@@ -60,7 +77,7 @@ static bool split(struct walk *w)
     }
     for (size_t i = 0; i < w->count; i++)
         if (w->parts[i][0] == '\0') {
-            SAY(w, BH_SAY_PATH_PART, w->path);
+            SAY(w, i, BH_SAY_PATH_PART, w->path);
             return false;
         }
     return true;
@@ -107,9 +124,9 @@ static void say_no_item(struct walk *w, const bh_node *list, const char *part)
     if (names.failed)
         bh_diags_lose(w->diags);
     else if (names.length)
-        SAY(w, BH_SAY_NO_ITEM, part, list->count, names.bytes);
+        SAY(w, w->done, BH_SAY_NO_ITEM, part, list->count, names.bytes);
     else
-        SAY(w, BH_SAY_NO_ITEM_NUMBER, part, list->count);
+        SAY(w, w->done, BH_SAY_NO_ITEM_NUMBER, part, list->count);
     bh_text_free(&names);
 }
 
@@ -121,7 +138,7 @@ static bool step(struct walk *w, bh_node *node)
     if (node->kind == BH_NODE_SCALAR) {
         char text[SNIPPET];
         bh_scalar_short(node->text, text, sizeof text);
-        SAY(w, BH_SAY_NOTHING_INSIDE, part, text);
+        SAY(w, w->done, BH_SAY_NOTHING_INSIDE, part, text);
         w->parent = NULL;
         return false;
     }
@@ -169,35 +186,49 @@ static bool alone(const struct walk *w, const bh_tree_job *job, const bh_tree *t
         return true;
     char text[SNIPPET];
     rest += strspn(rest, " \r\n");
-    bh_scalar_short(*rest ? rest : job->bytes, text, sizeof text);
-    bh_diags_add(w->diags, BH_SEVERITY_ERROR, w->at, w->path, BH_SAY_MORE_THAN_VALUE, text);
+    rest = *rest ? rest : job->bytes + before;
+    bh_scalar_short(rest, text, sizeof text);
+    const bh_mark at = {w->source, 1, 1 + columns(job->bytes, (size_t)(rest - job->bytes))};
+    bh_diags_add(w->diags, BH_SEVERITY_ERROR, at, w->path, BH_SAY_MORE_THAN_VALUE, text);
     return false;
+}
+
+/* The value behind as many blanks as stand before it in the option: so its marks are right. */
+static char *lined_up(const struct walk *w, const char *yaml)
+{
+    const size_t blanks = (size_t)mark_of(w, w->count).column - 1, length = strlen(yaml);
+    char *text = bh_arena_take(w->document->arena, 1, blanks + length + 1);
+    if (text) {
+        memset(text, ' ', blanks);
+        memcpy(text + blanks, yaml, length + 1);
+    }
+    return text;
 }
 
 /* The value as nodes of the document, or NULL and said. */
 static bh_node *read_value(const struct walk *w, const char *yaml)
 {
-    bh_arena *arena = w->document->arena;
-    const size_t length = strlen(yaml);
     const int depth = depth_of(w->parent) + (int)(w->count - w->done) - 1;
-    const bh_tree_job job = {.arena = arena,
-                             .name = w->at.file,
-                             .bytes = bh_tree_copy(arena, yaml, length),
-                             .length = length,
+    char *text = lined_up(w, yaml);
+    const bh_tree_job job = {.arena = w->document->arena,
+                             .name = w->source,
+                             .bytes = text,
+                             .length = text ? strlen(text) : 0,
                              .path = w->path,
                              .depth = depth,
                              .diags = w->diags};
-    if (!job.bytes) {
+    if (!text) {
         bh_diags_lose(w->diags);
         return NULL;
     }
-    if (strspn(yaml, " \t\r\n") == length || yaml[strspn(yaml, " ")] == '#') {
-        bh_diags_add(w->diags, BH_SEVERITY_ERROR, w->at, w->path, BH_SAY_NOTHING_GIVEN, w->path);
+    if (strspn(yaml, " \t\r\n") == strlen(yaml) || yaml[strspn(yaml, " ")] == '#') {
+        bh_diags_add(w->diags, BH_SEVERITY_ERROR, mark_of(w, w->count), w->path,
+                     BH_SAY_NOTHING_GIVEN, w->path);
         return NULL;
     }
-    const char *end = strpbrk(yaml, "\r\n");
+    const char *end = strpbrk(text, "\r\n");
     if (end) {
-        const bh_tree first = {.to = (size_t)(end - yaml)};
+        const bh_tree first = {.to = (size_t)(end - text)};
         (void)alone(w, &job, &first);
         return NULL;
     }
@@ -207,23 +238,24 @@ static bh_node *read_value(const struct walk *w, const char *yaml)
 
 /* --- putting it in --- */
 
-static bh_node *new_key(const struct walk *w, const char *text)
+static bh_node *new_key(const struct walk *w, size_t part)
 {
     bh_node *key = bh_arena_take(w->document->arena, 1, sizeof *key);
     if (key) {
-        key->at = w->at;
-        key->text = text;
-        key->length = strlen(text);
+        key->at = mark_of(w, part);
+        key->text = w->parts[part];
+        key->length = strlen(key->text);
     }
     return key;
 }
 
-/* Adds a pair at the end of a mapping; false, and nothing changed, when memory ran out. */
-static bool add_pair(const struct walk *w, bh_node *mapping, const char *name, bh_node *value)
+/* Adds a pair at the end of a mapping, its key a part of the path; false, and nothing changed, when
+ * memory ran out. */
+static bool add_pair(const struct walk *w, bh_node *mapping, size_t part, bh_node *value)
 {
     bh_node **keys = bh_arena_take(w->document->arena, mapping->count + 1, sizeof(bh_node *));
     bh_node **items = bh_arena_take(w->document->arena, mapping->count + 1, sizeof(bh_node *));
-    bh_node *key = new_key(w, name);
+    bh_node *key = new_key(w, part);
     if (!keys || !items || !key)
         return false;
     for (size_t i = 0; i < mapping->count; i++) {
@@ -248,8 +280,8 @@ static bh_node *wrap(const struct walk *w, bh_node *value)
             return NULL;
         mapping->kind = BH_NODE_MAPPING;
         mapping->style = BH_STYLE_FLOW;
-        mapping->at = value->at;
-        value = add_pair(w, mapping, w->parts[i], value) ? mapping : NULL;
+        mapping->at = mark_of(w, i - 1);
+        value = add_pair(w, mapping, i, value) ? mapping : NULL;
     }
     return value;
 }
@@ -260,7 +292,7 @@ static bool attach(struct walk *w, bh_node *value)
     if (!outer)
         return false;
     if (w->index == w->parent->count)
-        return add_pair(w, w->parent, w->parts[w->done], outer);
+        return add_pair(w, w->parent, w->done, outer);
     outer->parent = w->parent;
     w->parent->items[w->index] = outer;
     return true;
@@ -271,8 +303,8 @@ const bh_node *bh_document_graft(bh_document *document, const char *path, const 
                                  const char *source, bh_diags *diags)
 {
     struct walk w = {.document = document, .diags = diags, .path = path};
-    w.at.file = bh_tree_copy(document->arena, source, strlen(source));
-    if (!w.at.file) {
+    w.source = bh_tree_copy(document->arena, source, strlen(source));
+    if (!w.source) {
         bh_diags_lose(diags);
         return NULL;
     }

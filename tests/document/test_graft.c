@@ -82,7 +82,7 @@ START_TEST(puts_in_one_value)
     ck_assert_uint_eq(node->from + node->to, 0);
     ck_assert_str_eq(node->at.file, "--with 1");
     ck_assert_int_eq(node->at.line, 1);
-    ck_assert_int_eq(node->at.column, 1 + (good[_i].value[0] == ' '));
+    ck_assert_int_eq(node->at.column, (int)strlen(good[_i].path) + 2 + (good[_i].value[0] == ' '));
     bh_document_free(d);
     bh_diags_free(diags);
 }
@@ -90,39 +90,39 @@ END_TEST
 
 static const struct {
     const char *path, *value, *key, *begins;
-    int column; /* 0: the path is at fault */
+    int column; /* in the text PATH=VALUE */
 } bad[] = {
-    {"", "1", "plan", "`` has an empty part", 0},
-    {"beam.", "1", "plan", "`beam.` has an empty part", 0},
-    {"beam..x", "1", "plan", "`beam..x` has an empty part", 0},
+    {"", "1", "plan", "`` has an empty part", 1},
+    {"beam.", "1", "plan", "`beam.` has an empty part", 6},
+    {"beam..x", "1", "plan", "`beam..x` has an empty part", 6},
     {"settings.K9.angle", "1", "settings", "there is no `K9` in this list of 2; name one of K1, 1,",
-     0},
-    {"settings.3", "1", "settings", "there is no `3` in this list of 2", 0},
-    {"settings.0", "1", "settings", "there is no `0` in this list of 2", 0},
-    {"edges.3", "1", "edges", "there is no item `3` in this list; give a number from 1 to 2", 0},
-    {"edges.99999999999999999999", "1", "edges", "there is no item `99999999999999999999`", 0},
-    {"edges.x.y", "1", "edges", "there is no item `x`", 0},
+     10},
+    {"settings.3", "1", "settings", "there is no `3` in this list of 2", 10},
+    {"settings.0", "1", "settings", "there is no `0` in this list of 2", 10},
+    {"edges.3", "1", "edges", "there is no item `3` in this list; give a number from 1 to 2", 7},
+    {"edges.99999999999999999999", "1", "edges", "there is no item `99999999999999999999`", 7},
+    {"edges.x.y", "1", "edges", "there is no item `x`", 7},
     {"beam.current.x", "1", "beam.current", "`x` cannot be found inside the single value `20 uA`",
-     0},
-    {"beam.current", "", "beam.current", "no value is given for `beam.current`", 0},
-    {"beam.current", " # 5", "beam.current", "no value is given", 0},
-    {"beam.current", "0.8 # b", "beam.current", "`# b` goes beyond one value", 0},
-    {"beam.current", "a: b", "beam.current", "`a: b` goes beyond", 0},
-    {"beam.current", "- b", "beam.current", "`- b` goes beyond", 0},
-    {"beam.current", "| b", "beam.current", "`b` cannot stand here", 3},
-    {"beam.current", "--- 1", "beam.current", "`--- 1` goes beyond", 0},
-    {"beam.current", "1\n2", "beam.current", "`2` goes beyond", 0},
-    {"beam.current", "1\n", "beam.current", "`1` goes beyond", 0},
-    {"beam.current", "%YAML 1.1", "beam.current", "a line may not begin with %", 10},
-    {"beam.current", "[1, 2", "beam.current", "`[` in line 1 is not closed", 6},
-    {"beam.current", "'x' y", "beam.current", "`y` follows a value", 5},
-    {"beam.spot", "{x: 1, x: 2}", "beam.spot", "`x` was already given", 8},
-    {"beam.spot", "{x: {y: &a 2}}", "beam.spot.x", "`&a` names", 9},
-    {"beam.current", "*a", "beam.current", "`*a` repeats", 1},
-    {"beam.current", "\xFF", "beam.current", "the byte 0xFF", 1},
+     14},
+    {"beam.current", "", "beam.current", "no value is given for `beam.current`", 14},
+    {"beam.current", " # 5", "beam.current", "no value is given", 14},
+    {"beam.current", "0.8 # b", "beam.current", "`# b` goes beyond one value", 18},
+    {"beam.current", "a: b", "beam.current", "`a: b` goes beyond", 14},
+    {"beam.current", "- b", "beam.current", "`- b` goes beyond", 14},
+    {"beam.current", "| b", "beam.current", "`b` cannot stand here", 16},
+    {"beam.current", "1\n2", "beam.current", "`2` goes beyond", 16},
+    {"beam.current", "1\n", "beam.current", "`1` goes beyond", 14},
+    {"beam.current", "%YAML 1.1", "beam.current", "`%` cannot begin a value", 14},
+    {"b\xC3\xA4m", "\xC2\xB5 # \xC2\xB5", "b\xC3\xA4m", "`# \xC2\xB5` goes beyond", 7},
+    {"beam.current", "[1, 2", "beam.current", "`[` in line 1 is not closed", 19},
+    {"beam.current", "'x' y", "beam.current", "`y` follows a value", 18},
+    {"beam.spot", "{x: 1, x: 2}", "beam.spot", "`x` was already given", 18},
+    {"beam.spot", "{x: {y: &a 2}}", "beam.spot.x", "`&a` names", 19},
+    {"beam.current", "*a", "beam.current", "`*a` repeats", 14},
+    {"beam.current", "\xFF", "beam.current", "the byte 0xFF", 14},
     {"a.b.c", "[[[[[[[[[[[[[[[[[[[[[[[[[[[[[[1]]]]]]]]]]]]]]]]]]]]]]]]]]]]]]",
      "a.b.c.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1.1",
-     "values are nested more than 32 deep", 30},
+     "values are nested more than 32 deep", 36},
 };
 
 START_TEST(changes_nothing_and_says_why)
@@ -138,7 +138,7 @@ START_TEST(changes_nothing_and_says_why)
     ck_assert_str_eq(said->key, bad[_i].key);
     ck_assert_str_eq(said->at.file, "--with 2");
     ck_assert_int_eq(said->at.column, bad[_i].column);
-    ck_assert_int_eq(said->at.line, bad[_i].column > 0);
+    ck_assert_int_eq(said->at.line, 1);
     bh_document_free(d);
     bh_diags_free(diags);
 }

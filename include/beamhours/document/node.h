@@ -57,7 +57,8 @@ const bh_node *bh_node_get(const bh_node *mapping, const char *key);
  * Changes one value in the tree only: `path` is dotted; list items by their `name` or number from 1
  * ("settings.K1.angle", "targets.hydrogen.layers.2.thickness"); `yaml` is one scalar or flow node,
  * parsed alone.  New mapping keys are added, missing list items are an error.  Marks of what is
- * grafted, and of every complaint, bear the file name `source` ("--with 1").
+ * grafted, and of every complaint, bear the file name `source` ("--with 1"), line 1 and the column
+ * in the text PATH=VALUE.
  * Returns the grafted node, or NULL with the reason in `diags`.
  */
 const bh_node *bh_document_graft(bh_document *document, const char *path, const char *yaml,
