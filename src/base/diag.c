@@ -152,6 +152,13 @@ void bh_diags_lose(bh_diags *diags)
     diags->lost = true;
 }
 
+void bh_diags_expect(bh_diags *diags, const char *name)
+{
+    size_t nr;
+    if (!find_file(diags, name, &nr))
+        diags->lost = true;
+}
+
 size_t bh_diags_count(const bh_diags *diags)
 {
     return diags->count + diags->lost;

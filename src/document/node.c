@@ -30,7 +30,7 @@ static bool fill(bh_document *d, const char *bytes, size_t length, const char *n
 bh_document *bh_document_parse(const char *bytes, size_t length, const char *name, bh_diags *diags)
 {
     if (length > BH_DOCUMENT_LIMIT) {
-        const bh_mark whole = {.file = name};
+        const bh_mark whole = {name, 1, 1};
         bh_diags_add(diags, BH_SEVERITY_ERROR, whole, "", BH_SAY_TOO_LONG);
         return NULL;
     }

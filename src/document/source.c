@@ -74,8 +74,10 @@ bool bh_utf8_hidden(uint32_t point)
 {
     if (point == '\t' || point == '\n')
         return false;
+    const bool mark = point == 0x200B || point == 0x200E || point == 0x200F || point == 0x2060;
+    const bool turn = (point >= 0x202A && point <= 0x202E) || (point >= 0x2066 && point <= 0x2069);
     return point < 0x20 || (point >= 0x7F && point < 0xA0) || point == 0xFEFF || point == 0xFFFE ||
-           point == 0xFFFF;
+           point == 0xFFFF || mark || turn;
 }
 
 bool bh_utf8_line_end(uint32_t point)

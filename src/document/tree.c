@@ -174,6 +174,22 @@ static void check_key(struct builder *b, const bh_node *key)
         SAY(b, key->at, BH_SAY_MERGE);
 }
 
+/* `{a: 1,5 cm}` is read as a value `1` and a key `5 cm` without one. */
+static bool comma_in_number(const struct builder *b, const bh_node *key)
+{
+    const struct frame *f = &b->frames[b->depth - 1];
+    if (b->count < f->first + 2 || !strchr("0123456789", key->text[0]))
+        return false;
+    const bh_node *value = b->waiting[b->count - 2];
+    const bool number = value->kind == BH_NODE_SCALAR && value->style == BH_STYLE_PLAIN &&
+                        value->length > 0 && value->text[value->length - 1] <= '9' &&
+                        value->text[value->length - 1] >= '0';
+    int column = value->at.column + 1; /* behind the comma */
+    for (size_t i = 0; number && i < value->length; i++)
+        column += ((unsigned char)value->text[i] & 0xC0U) != 0x80;
+    return number && value->at.line == key->at.line && column == key->at.column;
+}
+
 /* `{a:1}` is read as a key `a:1` without a value. */
 static void check_value(struct builder *b, const bh_node *value)
 {
@@ -185,6 +201,9 @@ static void check_value(struct builder *b, const bh_node *value)
     const bh_node *key = b->waiting[b->count - 1];
     if (key->style == BH_STYLE_PLAIN && strchr(key->text, ':'))
         SAY(b, key->at, BH_SAY_COLON_TIGHT);
+    else if (key->style == BH_STYLE_PLAIN && comma_in_number(b, key))
+        SAY(b, b->waiting[b->count - 2]->at, BH_SAY_COMMA_PARTS, b->waiting[b->count - 2]->text,
+            key->text);
 }
 
 static void refuse_extras(struct builder *b, const struct span *s, bool anchor, bool tag)
@@ -390,7 +409,7 @@ bh_tree bh_tree_build(const bh_tree_job *job)
         return b.tree;
     run(&b);
     if (!b.wrong && bh_node_empty(b.tree.root)) {
-        const bh_mark whole = {.file = job->name};
+        const bh_mark whole = {job->name, 1, 1};
         SAY(&b, whole, BH_SAY_EMPTY);
     }
     free(b.waiting);

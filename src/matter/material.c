@@ -136,7 +136,8 @@ static entry *read_path(bh_material_library *library, const question *q)
     if (path.failed)
         bh_diags_lose(q->diags);
     else if (bh_file_read(path.bytes, longest_file, &bytes, &err))
-        bh_diags_add(q->diags, BH_SEVERITY_ERROR, q->at, q->key, BH_SAY_MATERIAL_UNREAD, err.text);
+        bh_diags_add(q->diags, BH_SEVERITY_ERROR, q->at, q->key, BH_SAY_MATERIAL_UNREAD, path.bytes,
+                     err.text);
     else
         e = take_in(library, q, path.bytes, &bytes);
     bh_text_free(&path);
@@ -171,7 +172,8 @@ static outcome look_into(bh_material_library *library, const question *q, const 
     if (code == BH_EABSENT) {
         result = ABSENT;
     } else if (code) {
-        bh_diags_add(q->diags, BH_SEVERITY_ERROR, q->at, q->key, BH_SAY_MATERIAL_UNREAD, err.text);
+        bh_diags_add(q->diags, BH_SEVERITY_ERROR, q->at, q->key, BH_SAY_MATERIAL_UNREAD, path,
+                     err.text);
         result = UNREADABLE;
     } else if (!bh_material_is_file(bytes.bytes ? bytes.bytes : "", bytes.length)) {
         result = PASSED_OVER; /* a plan of that name, perhaps: the next folder may have it */

@@ -77,6 +77,7 @@ void bh_apply_change(bh_document *document, const bh_change *change, size_t i,
         return;
     }
     (void)snprintf(source, 32, "--with %zu", i + 1);
+    bh_diags_expect(reading->diags, source);
     const bh_node *grafted =
         bh_document_graft(document, made.path, made.yaml, source, reading->diags);
     if (grafted && grafted->parent)

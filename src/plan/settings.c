@@ -31,6 +31,16 @@ static const char **arm_names(const bh_making *making)
     return names;
 }
 
+/* Whether a target has lost its name to another error: it may be the one that is meant. */
+static bool some_unread(const bh_making *making)
+{
+    const size_t n = making->plan.target_count;
+    for (size_t i = 0; i < n; i++)
+        if (!making->targets[i].name.given && (n > 1 || making->targets[i].layer_count == 0))
+            return true;
+    return false;
+}
+
 static bh_code find_target(const bh_making *making, struct prepared *p)
 {
     const bh_word *word = &p->raw.target;
@@ -53,7 +63,7 @@ static bh_code find_target(const bh_making *making, struct prepared *p)
             p->target = &making->targets[i];
     }
     const bh_unfound unfound = {&p->raw.section, "target", word, names, n};
-    if (!p->target && n > 0)
+    if (!p->target && n > 0 && !some_unread(making))
         bh_tell_no_target(making, &unfound);
     return BH_OK;
 }
@@ -71,6 +81,9 @@ static bh_code find_arm(const bh_making *making, const bh_raw_aim *aim, const bh
     const char **names = arm_names(making);
     if (!names)
         return BH_ENOMEM;
+    for (size_t i = 0; i < making->plan.arm_count; i++)
+        if (!names[i])
+            return BH_OK; /* its name could not be read: that was said, and it may be the one */
     const bh_unfound unfound = {&aim->section, "arm", &aim->arm, names, making->plan.arm_count};
     bh_tell_no_arm(making, &unfound);
     return BH_OK;

@@ -60,10 +60,10 @@ static void angle_from_q2(const bh_sight *sight)
 
 /* --- reach --- */
 
-static bool reachable(const bh_sight *sight, const struct place *place, bh_event *event)
+static bool reachable(const bh_sight *sight, const struct place *place, double angle,
+                      bh_event *event)
 {
     const bh_setting_arm *row = sight->row;
-    const double angle = row->angle.value;
     bh_collision collision;
     char nuclide[8], here[BH_QUANTITY_SIZE], most[BH_QUANTITY_SIZE];
     if (!collision_of(sight, &collision, nuclide))
@@ -176,12 +176,27 @@ static struct place place_of(const bh_sight *sight)
     return place;
 }
 
+/* Nothing arrives where even the smallest angle of a ring is too large. */
+static void check_ring(const bh_sight *sight)
+{
+    const bh_arm *arm = &sight->row->arm;
+    const bh_raw_arm *raw = sight->making->raw.arms.items;
+    bh_event event;
+    for (size_t i = 0; i < sight->making->plan.arm_count; i++) {
+        const struct place place = {&raw[i].section, "ring", arm->ring.at};
+        if (sight->making->arms[i].name.text == arm->name.text && arm->ring.from > 0.0)
+            (void)reachable(sight, &place, arm->ring.from, &event);
+    }
+}
+
 void bh_check_row(const bh_sight *sight)
 {
     bh_setting_arm *row = sight->row;
     bh_event event;
-    if (row->arm.shape == BH_SHAPE_RING)
+    if (row->arm.shape == BH_SHAPE_RING) {
+        check_ring(sight);
         return;
+    }
     if (row->q2.given)
         angle_from_q2(sight);
     if (isnan(row->angle.value))
@@ -191,6 +206,6 @@ void bh_check_row(const bh_sight *sight)
     check_overlap(sight, &place);
     if (row->arm.edges && row->arm.shape == BH_SHAPE_RECTANGLE)
         check_edges(sight);
-    const bool reached = reachable(sight, &place, &event);
+    const bool reached = reachable(sight, &place, row->angle.value, &event);
     check_momentum(sight, &place, reached ? &event : NULL);
 }

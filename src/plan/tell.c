@@ -43,8 +43,14 @@ void bh_tell(const bh_making *making, bh_mark at, const bh_section *section, con
 static const char *all_of(const bh_unfound *unfound, char *out, size_t size)
 {
     const char *some[9] = {NULL};
-    for (size_t i = 0; i < unfound->count && i < 8; i++)
-        some[i] = unfound->names[i] ? unfound->names[i] : "?";
+    size_t n = 0;
+    for (size_t i = 0; i < unfound->count && n < 8; i++) {
+        size_t k = 0;
+        while (k < n && unfound->names[i] && strcmp(some[k], unfound->names[i]) != 0)
+            k++;
+        if (k == n && unfound->names[i])
+            some[n++] = unfound->names[i];
+    }
     return bh_words_text(some, out, size);
 }
 
@@ -92,7 +98,8 @@ void bh_tell_no_nuclide(const bh_making *making, const bh_word *word, const bh_s
     const bh_nuclide *near = bh_nuclide_suggest(word->text);
     const char *symbol = bh_element_symbol(z);
     char name[8];
-    if (near && symbol && near->z == z)
+    const bool isotope = strpbrk(word->text, "0123456789") != NULL;
+    if (near && symbol && near->z == z && !isotope)
         bh_tell(making, word->at, section, key, BH_SAY_NUCLIDE_NEAR, word->text, symbol);
     else if (near)
         bh_tell(making, word->at, section, key, BH_SAY_NUCLIDE_NEAR, word->text,

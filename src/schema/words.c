@@ -7,6 +7,8 @@
 #include "beamhours/base/sentences.h"
 #include "beamhours/schema/reading.h"
 
+enum { MOST_WORDS = 32 }; /* of a list in a message */
+
 const char *bh_british(const char *word)
 {
     static const char *const pair[][2] = {
@@ -48,6 +50,25 @@ int bh_schema_choice(const char *text, const char *const *words)
     return 0;
 }
 
+/* "once, energy or a time in h or d": what would do. */
+static const char *all_of(const bh_key *key, char *out, size_t size)
+{
+    static const char *const form[] = {
+#define FORM_OF(id, name, unit, examples) [id] = name " in " examples,
+        BH_DIMENSIONS(FORM_OF)
+#undef FORM_OF
+    };
+    const char *all[MOST_WORDS + 2] = {NULL};
+    size_t n = 0;
+    while (key->words[n] && n < MOST_WORDS) {
+        all[n] = key->words[n];
+        n++;
+    }
+    if (key->kind == BH_KEY_EITHER)
+        all[n] = form[key->dimension];
+    return bh_words_text(all, out, size);
+}
+
 /* The word of the list, or NULL after a complaint. */
 static const char *pick(const bh_reading *reading, bh_written written)
 {
@@ -63,7 +84,7 @@ static const char *pick(const bh_reading *reading, bh_written written)
     }
     char all[300];
     bh_say_node(reading, written.node, BH_SAY_UNKNOWN_WORD_OF, written.node->text,
-                bh_words_text(words, all, sizeof all));
+                all_of(written.key, all, sizeof all));
     return NULL;
 }
 

@@ -94,7 +94,8 @@ static bool decimal_comma(const char *whole, const char *from, const char *to, b
         if (*p != '.')
             add(&fix, p, 1);
     add_rest(&fix, ".");
-    add_rest(&fix, to + 1);
+    for (const char *p = to + 1; *p; p++) /* an uncertainty has one as well */
+        add(&fix, *p == ',' && is_digit(p[-1]) && is_digit(p[1]) ? "." : p, 1);
     out->kind = BH_SLIP_DECIMAL_COMMA;
     return true;
 }

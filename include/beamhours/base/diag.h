@@ -45,6 +45,9 @@ size_t bh_diags_count(const bh_diags *diags);
 size_t bh_diags_errors(const bh_diags *diags);
 const bh_diag *bh_diags_at(const bh_diags *diags, size_t i);
 
+/* The file called `name` counts as having appeared now, for the order of files. */
+void bh_diags_expect(bh_diags *diags, const char *name);
+
 /* Puts the list in file order: by line and column within a file, files in the order they first
  * appeared; equal places keep their order. */
 void bh_diags_sort(bh_diags *diags);

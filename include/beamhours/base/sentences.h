@@ -42,6 +42,9 @@
     "alike"
 #define BH_SAY_NO_COLON    "`%s` has no colon with a blank behind it; write `key: value`"
 #define BH_SAY_COLON_TIGHT "the colon has no blank behind it; write `key: value`"
+#define BH_SAY_COMMA_PARTS                                                                      \
+    "the comma between `%s` and `%s` ends a value; write a decimal point, and nothing between " \
+    "thousands"
 #define BH_SAY_QUOTE_OPEN \
     "the text in quotes that begins here has no end; close it with the same quote"
 #define BH_SAY_BRACKET_OPEN \
@@ -194,7 +197,7 @@
     "do"
 #define BH_SAY_NOT_A_MATERIAL \
     "%s is no material: it does not begin with `material: 1`; choose another name or mend it"
-#define BH_SAY_MATERIAL_UNREAD  "%s; give a file that can be read, or a name of the library"
+#define BH_SAY_MATERIAL_UNREAD  "%s %s; give a file that can be read, or a name of the library"
 #define BH_SAY_MATERIAL_BROKEN  "the file %s has errors; mend it or choose another material"
 #define BH_SAY_COMPOSED_OF_NEAR "%s is neither an element nor a nuclide; did you mean %s?"
 #define BH_SAY_COMPOSED_OF \

@@ -27,7 +27,8 @@ void bh_cursor_go(bh_cursor *cursor, size_t line, size_t column);
  * code point itself; 0 where they are not UTF-8. */
 size_t bh_utf8_read(const char *bytes, size_t left, uint32_t *point);
 
-/* Can the code point not be seen in an editor (controls but for tab and LF; marks of order)?
+/* Can the code point not be seen in an editor (controls but for tab and LF; marks of order;
+ * marks of no width or of direction, which could show a line as another)?
  * Is it one that ends a line only for some programs? */
 bool bh_utf8_hidden(uint32_t point);
 bool bh_utf8_line_end(uint32_t point);
