@@ -160,6 +160,8 @@ const bh_nuclide *bh_nuclide_suggest(const char *name)
     const char *rest = skip_joint(symbol + letters);
     if (!before)
         a = mass_number(rest, &after);
+    if (strcmp(name, "D") == 0 || strcmp(name, "T") == 0)
+        return bh_nuclide_find(1, name[0] == 'D' ? 2 : 3);
     const int z = element_any_case(symbol, letters);
     if (z == 0 || rest[after] != '\0')
         return NULL;
