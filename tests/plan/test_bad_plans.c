@@ -9,25 +9,16 @@
  * The sentences of base/sentences.h must all be provoked, none by more than MOST_TIMES files;
  * tests/bad-plans/elsewhere.txt names those that other tests provoke, and why.
  */
-#include "../suite.h"
+#include "sentences.h"
 
 #include <dirent.h>
-#include <regex.h>
 #include <stdbool.h>
 #include <stdio.h>
 #include <string.h>
 
-#include "beamhours/base/file.h"
 #include "beamhours/plan/plan.h"
 
-#define FOLDER "tests/bad-plans"
-enum {
-    MOST_FILES = 2000,
-    MOST_WANTS = 60,
-    MOST_SENTENCES = 400,
-    MOST_TIMES = 20,
-    MOST_CHANGES = 8
-};
+enum { MOST_FILES = 2000, MOST_WANTS = 60, MOST_TIMES = 20, MOST_CHANGES = 8 };
 
 /* --- files --- */
 
@@ -119,121 +110,6 @@ static void parse_wants(const char *bytes, struct wants *wants)
     }
 }
 
-/* --- sentences --- */
-
-struct sentence {
-    char name[60];
-    regex_t pattern;
-    size_t literal; /* characters that are the same each time */
-    int times;
-    const char *last; /* the file that provoked it last: a file counts once */
-};
-
-struct sentences {
-    int count;
-    struct sentence *list;
-};
-
-/* What one conversion of printf becomes; returns behind it. */
-static const char *conversion(const char *fmt, char *out)
-{
-    if (fmt[1] == '%') {
-        strcat(out, "%");
-        return fmt + 2;
-    }
-    strcat(out, ".*");
-    fmt += 1 + strspn(fmt + 1, "0123456789.lzh-+ #");
-    return fmt + 1;
-}
-
-static void compile(const char *fmt, struct sentence *s)
-{
-    char pattern[2000] = "^";
-    while (*fmt) {
-        if (*fmt == '%') {
-            fmt = conversion(fmt, pattern);
-            continue;
-        }
-        const char one[] = {'\\', *fmt, '\0'};
-        strcat(pattern, strchr(".[]{}()*+?^$|\\", *fmt) ? one : one + 1);
-        s->literal++;
-        fmt++;
-    }
-    strcat(pattern, "$");
-    ck_assert_int_eq(regcomp(&s->pattern, pattern, REG_EXTENDED | REG_NOSUB), 0);
-}
-
-/* The string that a #define holds, pieces joined; ends with a line that does not continue. */
-static void define_text(const char *at, char *out)
-{
-    bool inside = false;
-    for (; *at && (inside || *at != '\n'); at++) {
-        if (*at == '"') {
-            inside = !inside;
-        } else if (*at == '\\') {
-            at++;
-            if (inside)
-                strncat(out, at, 1);
-        } else if (inside) {
-            strncat(out, at, 1);
-        }
-    }
-}
-
-/* Formulas speak to functions, the run to tables: other tests hear them. */
-static bool of_plans(const char *line)
-{
-    static const char *const room[] = {
-        "document:", "units:", "schema:", "matter: materials", "plan:", "physics: structure"};
-    for (int i = 0; i < COUNT(room); i++)
-        if (strncmp(line + 3, room[i], strlen(room[i])) == 0)
-            return true;
-    return false;
-}
-
-static bool heads_section(const char *line)
-{
-    return strncmp(line, "/* ", 3) == 0 && strspn(line + 3, "abcdefghijklmnopqrstuvwxyz") > 0 &&
-           line[3 + strspn(line + 3, "abcdefghijklmnopqrstuvwxyz")] == ':';
-}
-
-static void read_sentences(struct sentences *all)
-{
-    bh_text text = {0};
-    bool wanted = false;
-    ck_assert_int_eq(bh_file_read("include/beamhours/base/sentences.h", 1 << 20, &text, NULL), 0);
-    for (const char *line = text.bytes; line; line = strchr(line, '\n')) {
-        char name[60], fmt[1000] = "";
-        line += *line == '\n';
-        if (heads_section(line))
-            wanted = of_plans(line);
-        if (!wanted || sscanf(line, "#define %59[A-Z0-9_]", name) != 1 ||
-            strncmp(name, "BH_SAY_", 7) != 0)
-            continue;
-        ck_assert_int_lt(all->count, MOST_SENTENCES);
-        struct sentence *s = &all->list[all->count++];
-        snprintf(s->name, sizeof s->name, "%s", name);
-        define_text(line + strcspn(line, "\"\n\\"), fmt);
-        compile(fmt, s);
-    }
-    bh_text_free(&text);
-}
-
-/* The sentence with most of its own words in `text`. */
-static void count_sentence(struct sentences *all, const char *text, const char *file)
-{
-    struct sentence *best = NULL;
-    for (int i = 0; i < all->count; i++) {
-        struct sentence *s = &all->list[i];
-        if ((!best || s->literal > best->literal) && regexec(&s->pattern, text, 0, NULL, 0) == 0)
-            best = s;
-    }
-    ck_assert_msg(best != NULL, "%s: not a sentence of base/sentences.h: %s", file, text);
-    if (best->last != file)
-        best->times++;
-    best->last = file;
-}
-
 /* --- one file --- */
 
 static bool fits(const struct want *w, const bh_diag *d, const char *name)
@@ -301,16 +177,6 @@ static int try_file(const char *name, struct sentences *all)
     bh_text_free(&text);
     free(wants);
     return bad;
-}
-
-/* Sentences that no plan file of reasonable size can provoke. */
-static bool is_elsewhere(const char *name, const bh_text *list)
-{
-    const size_t length = strlen(name);
-    for (const char *at = list->bytes; at && (at = strstr(at, name)) != NULL; at++)
-        if (at[length] == ' ')
-            return true;
-    return false;
 }
 
 static int count_wrong(const struct sentences *all)
