@@ -79,7 +79,7 @@ START_TEST(a_bad_change_leaves_the_plan_as_it_was)
     const double one = bh_session_number(s, 0, "signal_rate_Hz");
     ck_assert_int_eq(bh_session_change(s, "beam.current", "lots"), BH_BAD_PLAN);
     ck_assert_uint_eq(bh_session_messages(s), 1);
-    ck_assert_ptr_nonnull(strstr(bh_session_message(s, 0), "--with 1:1:1: beam.current: 'lots'"));
+    ck_assert_ptr_nonnull(strstr(bh_session_message(s, 0), "--with 1:1:14: beam.current: 'lots'"));
     ck_assert_int_eq(bh_session_change(s, "beam.current", "20 uA"), BH_DONE);
     ck_assert_int_eq(bh_session_change(s, "beam.current", "30"), BH_BAD_PLAN);
     ck_assert_int_eq(bh_session_change(s, "settings.L.angle", "30 deg"), BH_BAD_PLAN);

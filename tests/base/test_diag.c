@@ -77,6 +77,23 @@ START_TEST(pointers_stay_good_while_it_grows)
 }
 END_TEST
 
+START_TEST(expected_files_go_first)
+{
+    bh_diags *diags = bh_diags_new();
+    bh_diags_expect(diags, "first");
+    bh_diags_expect(diags, "second");
+    bh_diags_add(diags, BH_SEVERITY_ERROR, (bh_mark){"third", 1, 1}, "a", "x");
+    bh_diags_add(diags, BH_SEVERITY_ERROR, (bh_mark){"second", 9, 9}, "b", "x");
+    bh_diags_add(diags, BH_SEVERITY_ERROR, (bh_mark){"first", 9, 9}, "c", "x");
+    bh_diags_sort(diags);
+    ck_assert_uint_eq(bh_diags_count(diags), 3);
+    ck_assert_str_eq(bh_diags_at(diags, 0)->key, "c");
+    ck_assert_str_eq(bh_diags_at(diags, 1)->key, "b");
+    ck_assert_str_eq(bh_diags_at(diags, 2)->key, "a");
+    bh_diags_free(diags);
+}
+END_TEST
+
 START_TEST(a_loss_is_the_last_error)
 {
     bh_diags *diags = bh_diags_new();
@@ -98,6 +115,7 @@ int main(void)
     tcase_add_test(tests, copies_and_counts);
     tcase_add_test(tests, sorts_by_file_line_column_and_keeps_equals);
     tcase_add_test(tests, pointers_stay_good_while_it_grows);
+    tcase_add_test(tests, expected_files_go_first);
     tcase_add_test(tests, a_loss_is_the_last_error);
     return run_suite("base/diag", tests);
 }

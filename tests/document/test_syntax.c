@@ -11,9 +11,9 @@ static const struct {
     int line, column;
     const char *key, *begins, *sentence; /* the text's beginning; the sentence it is of */
 } slips[] = {
-    {"", 0, 0, "plan", "the file holds only", BH_SAY_EMPTY},
-    {"# c\n\n", 0, 0, "plan", "the file holds only", BH_SAY_EMPTY},
-    {"---\n...\n", 0, 0, "plan", "the file holds only", BH_SAY_EMPTY},
+    {"", 1, 1, "plan", "the file holds only", BH_SAY_EMPTY},
+    {"# c\n\n", 1, 1, "plan", "the file holds only", BH_SAY_EMPTY},
+    {"---\n...\n", 1, 1, "plan", "the file holds only", BH_SAY_EMPTY},
     {"a: b\nc\xE9: 1\n", 2, 2, "plan", "the byte 0xE9", BH_SAY_NOT_UTF8},
     {"\xFF\xFE", 1, 1, "plan", "the byte 0xFF", BH_SAY_NOT_UTF8},
     {"a: \xC3", 1, 4, "plan", "the byte 0xC3", BH_SAY_NOT_UTF8},
@@ -80,6 +80,14 @@ static const struct {
     {"[1] y\n", 1, 5, "plan", "`y` follows a value", BH_SAY_AFTER_VALUE},
     {"a: [1,,2]\n", 1, 7, "a", "`,2]` stands where", BH_SAY_NO_VALUE_HERE},
     {"a: ]\n", 1, 4, "plan", "`]` stands where", BH_SAY_NO_VALUE_HERE},
+    {"{a: 1,5 cm}\n", 1, 5, "plan", "the comma between `1` and `5 cm` ends", BH_SAY_COMMA_PARTS},
+    {"k: {a: 2, b: 20,000, c: 1}\n", 1, 14, "k", "the comma between `20` and", BH_SAY_COMMA_PARTS},
+    {"{a: \xC2\xB1"
+     "1,5 cm}\n",
+     1, 5, "plan", "the comma between", BH_SAY_COMMA_PARTS},
+    {"a: x\xE2\x80\x8By\n", 1, 5, "plan", "the character U+200B", BH_SAY_HIDDEN},
+    {"a: x\xE2\x80\xAEy\n", 1, 5, "plan", "the character U+202E", BH_SAY_HIDDEN},
+    {"a: x\xE2\x81\xA6y\n", 1, 5, "plan", "the character U+2066", BH_SAY_HIDDEN},
     {"a:\n\tb: 1\n", 2, 1, "plan", "a tab stands", BH_SAY_TAB},
     {"a:\n  b: 1\n\tc: 2\n", 3, 1, "a", "a tab stands", BH_SAY_TAB},
     {"a: b\n\tc\n", 2, 1, "plan", "a tab stands", BH_SAY_TAB},

@@ -222,7 +222,7 @@ static const struct {
     {"12c", "12C"},     {"PB208", "208Pb"},  {"^12C", "12C"},     {"C", "12C"},    {"au", "197Au"},
     {"Pb", "208Pb"},    {"he_4", "4He"},     {"C99", NULL},       {"", NULL},      {"12", NULL},
     {"lead", NULL},     {"C12x", NULL},      {"12C4", NULL},      {"Og", NULL},    {"n", NULL},
-    {"Xq3", NULL},
+    {"Xq3", NULL},      {"D", "2H"},         {"T", "3H"},
 };
 
 START_TEST(unusual_spellings_are_understood)
