@@ -11,6 +11,29 @@ const char *const bh_hazard_words[BH_HAZARD_COUNT + 1] = {
 #undef HAZARD_WORD
         NULL};
 
+static const char *const meanings[BH_HAZARD_COUNT] = {
+    [BH_HAZARD_FLAMMABLE_GAS] = "flammable, a leak or boil-off makes an explosive mixture with air",
+    [BH_HAZARD_FLAMMABLE] = "flammable, keep flames, sparks and hot surfaces away",
+    [BH_HAZARD_CRYOGEN] = "so cold that it burns skin, and as it warms up pressure rises fast",
+    [BH_HAZARD_OXYGEN] =
+        "takes the place of oxygen in a confined space, unnoticed until people faint",
+    [BH_HAZARD_OXIDISING] = "feeds fire, oil, grease and dust ignite in it",
+    [BH_HAZARD_REACTIVE] =
+        "reacts with water and moist air and may ignite, keep it dry and under cover gas",
+    [BH_HAZARD_BERYLLIUM] =
+        "dust, chips and oxide of beryllium harm the lungs for life, and thin pieces break",
+    [BH_HAZARD_LEAD] = "lead is toxic as dust or on the hands, and melts early",
+    [BH_HAZARD_URANIUM] =
+        "uranium is radioactive, toxic, burns when finely divided, and is accounted for by law",
+    [BH_HAZARD_TOXIC] = "toxic when breathed in or swallowed",
+    [BH_HAZARD_RADIOACTIVE] = "radioactive before any beam has struck it",
+};
+
+const char *bh_hazard_meaning(bh_hazard hazard)
+{
+    return hazard < BH_HAZARD_COUNT ? meanings[hazard] : "";
+}
+
 static const double cryogen_boils = 200.0; /* [K] a liquid that boils below is a cryogen */
 static const double trace = 0.01; /* [1] share of atoms below which an element is passed over */
 static const double nearly_all = 0.99;   /* [1] share of atoms of a material that is one element */

@@ -54,7 +54,9 @@ static const char *path_of(const bh_document *document, const bh_change *change,
         return change->path;
     const char *item = change->path + sizeof lead - 1, *rest = strchr(item, '.');
     const bh_node *name = bh_node_get(only, "name");
-    const size_t length = rest ? (size_t)(rest - item) : 0;
+    if (!rest)
+        return change->path;
+    const size_t length = (size_t)(rest - item);
     const bool first = length == 1 && item[0] == '1';
     const bool named = name && name->text && length == strlen(name->text) &&
                        strncmp(item, name->text, length) == 0;

@@ -45,7 +45,7 @@ static bool stands_in_plan(const bh_line *line)
 static void named(const bh_line *line, int width, bh_text *out)
 {
     const char *value = line->value ? line->value : "", *source = line->source;
-    char lead[NAME + 8], where[160];
+    char lead[NAME + 8];
     const bool wide = strlen(line->name) >= NAME;
     (void)snprintf(lead, sizeof lead, wide ? "  " : "  %-*s ", NAME, line->name);
     bh_text first = {0};
@@ -54,6 +54,7 @@ static void named(const bh_line *line, int width, bh_text *out)
     else
         bh_text_append(&first, value);
     if (stands_in_plan(line)) {
+        char where[160];
         const int blanks = VALUE - cells_wide(value);
         bh_text_appendf(&first, "%*s%s", blanks > 2 ? blanks : 2, "",
                         place(source, where, sizeof where));

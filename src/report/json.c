@@ -75,7 +75,7 @@ static void end(void *to)
         tree->depth--;
 }
 
-static void text(void *to, const char *key, const char *value)
+static void words(void *to, const char *key, const char *value)
 {
     attach(to, key, text_or_null(value));
 }
@@ -87,7 +87,7 @@ static void integer(void *to, const char *key, long value)
 
 static json_object *plan_object(const bh_plan *plan)
 {
-    static const bh_dump_sink sink = {begin_mapping, begin_list, end, text, integer};
+    static const bh_dump_sink sink = {begin_mapping, begin_list, end, words, integer};
     struct tree tree = {.depth = -1};
     bh_plan_dump(plan, &sink, &tree);
     return tree.depth >= 0 ? tree.open[0] : json_object_new_object();

@@ -10,18 +10,24 @@
 
 enum { WORD = 96 };
 
-static const char *say(double value, double uncertainty, bh_dimension dimension, char out[WORD])
+/* Appends `lead` and the quantity. */
+static void say(bh_text *to, const char *lead, const bh_value *v, bh_dimension dimension)
 {
-    const bh_quantity q = {value, uncertainty, uncertainty > 0.0, false};
-    if (bh_quantity_print(&q, dimension, out, WORD) <= 0)
-        out[0] = '\0';
-    return out;
+    char word[WORD];
+    const bh_quantity q = {v->value, v->uncertainty, v->uncertainty > 0.0, false};
+    if (bh_quantity_print(&q, dimension, word, sizeof word) > 0)
+        bh_text_appendf(to, "%s%s", lead, word);
+}
+
+static void say_number(bh_text *to, const char *lead, double value, bh_dimension dimension)
+{
+    say(to, lead, &(bh_value){.value = value}, dimension);
 }
 
 static void add(bh_text *to, const char *key, const bh_value *v, bh_dimension dimension)
 {
-    char word[WORD];
-    bh_text_appendf(to, ", %s %s", key, say(v->value, v->uncertainty, dimension, word));
+    bh_text_appendf(to, ", %s", key);
+    say(to, " ", v, dimension);
 }
 
 static void add_given(bh_text *to, const char *key, const bh_value *v, bh_dimension dimension)
@@ -32,14 +38,13 @@ static void add_given(bh_text *to, const char *key, const bh_value *v, bh_dimens
 
 static void add_extent(bh_text *to, const char *key, const bh_extent *e, bh_dimension dimension)
 {
-    char from[WORD], until[WORD];
     if (!e->given)
         return;
-    if (fabs(e->from + e->to) <= 1e-12 * fabs(e->to))
-        bh_text_appendf(to, ", %s ±%s", key, say(e->to, 0.0, dimension, until));
-    else
-        bh_text_appendf(to, ", %s %s to %s", key, say(e->from, 0.0, dimension, from),
-                        say(e->to, 0.0, dimension, until));
+    bh_text_appendf(to, ", %s", key);
+    const bool symmetric = fabs(e->from + e->to) <= 1e-12 * fabs(e->to);
+    if (!symmetric)
+        say_number(to, " ", e->from, dimension);
+    say_number(to, symmetric ? " ±" : " to ", e->to, dimension);
 }
 
 /* --- the beam: what all rows share, and what varies as a range --- */
@@ -76,17 +81,15 @@ static void add_range(bh_text *to, const bh_plan *plan, beam_number get, bh_dime
                       const char *behind)
 {
     double low = INFINITY, high = -INFINITY;
-    char from[WORD], until[WORD];
     for (size_t i = 0; i < plan->setting_count; i++) {
         const double value = rounded(get(&plan->settings[i].beam));
         low = fmin(low, value);
         high = fmax(high, value);
     }
+    say_number(to, ", ", low, dimension);
     if (high > low)
-        bh_text_appendf(to, ", %s to %s%s", say(low, 0.0, dimension, from),
-                        say(high, 0.0, dimension, until), behind);
-    else
-        bh_text_appendf(to, ", %s%s", say(low, 0.0, dimension, from), behind);
+        say_number(to, " to ", high, dimension);
+    bh_text_append(to, behind);
 }
 
 static bool is_key(const bh_beam *beam, const char *key)
@@ -152,28 +155,22 @@ static void beam_line(const bh_plan *plan, bh_text *to)
 static void layer(const bh_layer *l, const char *lead, bh_text *to)
 {
     static const char *const roles[] = {"", " (window)", " (backing)"};
-    char word[WORD];
     bh_text_appendf(to, "%s%s", lead, l->material->name);
     const char *key = l->size_key.text ? l->size_key.text : "";
     if (strcmp(key, "thickness") == 0)
-        bh_text_appendf(to, " %s",
-                        say(l->thickness.value, l->thickness.uncertainty, BH_DIM_LENGTH, word));
+        say(to, " ", &l->thickness, BH_DIM_LENGTH);
     else if (strcmp(key, "areal_density") == 0)
-        bh_text_appendf(
-            to, " %s",
-            say(l->areal_density.value, l->areal_density.uncertainty, BH_DIM_AREAL_DENSITY, word));
+        say(to, " ", &l->areal_density, BH_DIM_AREAL_DENSITY);
     else if (strcmp(key, "areal_number") == 0)
-        bh_text_appendf(
-            to, " %s",
-            say(l->areal_number.value, l->areal_number.uncertainty, BH_DIM_AREAL_NUMBER, word));
+        say(to, " ", &l->areal_number, BH_DIM_AREAL_NUMBER);
     if (l->density.given)
-        bh_text_appendf(to, " at %s", say(l->density.value, 0.0, BH_DIM_DENSITY, word));
+        say(to, " at ", &l->density, BH_DIM_DENSITY);
     bh_text_append(to, roles[l->role]);
 }
 
 static void target_line(const bh_target *t, bh_text *to)
 {
-    char name[8], word[WORD];
+    char name[8];
     if (t->name.text)
         bh_text_appendf(to, "%s: ", t->name.text);
     for (size_t i = 0; i < t->layer_count; i++)
@@ -182,9 +179,10 @@ static void target_line(const bh_target *t, bh_text *to)
     add_given(to, "tilt", &t->tilt, BH_DIM_ANGLE);
     if (t->empty == BH_EMPTY_BEST)
         bh_text_append(to, ", empty target: best share");
-    if (t->empty == BH_EMPTY_SHARE)
-        bh_text_appendf(to, ", empty target: %s of the full-target time",
-                        say(t->empty_share.value, 0.0, BH_DIM_SHARE, word));
+    if (t->empty == BH_EMPTY_SHARE) {
+        say(to, ", empty target: ", &t->empty_share, BH_DIM_SHARE);
+        bh_text_append(to, " of the full-target time");
+    }
 }
 
 static void arm_line(const bh_arm *a, bh_text *to)

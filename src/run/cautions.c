@@ -13,25 +13,6 @@
 #define DEFER_RADIATION " The facility's radiation-protection group" DECIDE
 #define DEFER_SAFETY    " The facility's safety and radiation-protection groups" DECIDE
 
-/* What follows from each hazard of a material, behind its name. */
-static const char *const hazard_texts[BH_HAZARD_COUNT] = {
-    [BH_HAZARD_FLAMMABLE_GAS] = "flammable, a leak or boil-off makes an explosive mixture with air",
-    [BH_HAZARD_FLAMMABLE] = "flammable, keep flames, sparks and hot surfaces away",
-    [BH_HAZARD_CRYOGEN] = "so cold that it burns skin, and as it warms up pressure rises fast",
-    [BH_HAZARD_OXYGEN] =
-        "takes the place of oxygen in a confined space, unnoticed until people faint",
-    [BH_HAZARD_OXIDISING] = "feeds fire, oil, grease and dust ignite in it",
-    [BH_HAZARD_REACTIVE] =
-        "reacts with water and moist air and may ignite, keep it dry and under cover gas",
-    [BH_HAZARD_BERYLLIUM] =
-        "dust, chips and oxide of beryllium harm the lungs for life, and thin pieces break",
-    [BH_HAZARD_LEAD] = "lead is toxic as dust or on the hands, and melts early",
-    [BH_HAZARD_URANIUM] =
-        "uranium is radioactive, toxic, burns when finely divided, and is accounted for by law",
-    [BH_HAZARD_TOXIC] = "toxic when breathed in or swallowed",
-    [BH_HAZARD_RADIOACTIVE] = "radioactive before any beam has struck it",
-};
-
 /* At most: source or power, secondary beam, pressure, windows, magnets. */
 enum { OTHER_CAUTIONS = 5 };
 
@@ -223,7 +204,7 @@ static bh_text stack_key(const stack *from)
 typedef struct {
     unsigned hazards;
     bh_text names, key;
-    bh_mark at;
+    const bh_layer *first;
 } mention;
 
 /* Whether the list "aluminium, lead-208" has exactly this name in it. */
@@ -246,54 +227,43 @@ static void mention_layer(mention *m, const stack *from, const bh_layer *layer)
         return;
     if (m->names.length == 0) {
         m->key = stack_key(from);
-        m->at = layer->at;
+        m->first = layer;
     } else {
         bh_text_append(&m->names, ", ");
     }
     bh_text_append(&m->names, material->name);
 }
 
-/* All of one set of hazards in one caution: "lead, lead-208: toxic; radioactive." */
-static void caution_of_hazards(caution_list *to, unsigned hazards)
+/* All of one set of hazards in one caution, "lead, lead-208: toxic; radioactive.", where `layer` is
+ * the first that has them. */
+static void caution_of_hazards(caution_list *to, const bh_layer *layer)
 {
-    mention m = {.hazards = hazards};
+    mention m = {.hazards = layer->material ? bh_material_hazards(layer->material) : 0};
     stack from;
-    for (size_t i = 0; stack_at(to->plan, i, &from); i++)
+    for (size_t i = 0; m.hazards && stack_at(to->plan, i, &from); i++)
         for (size_t l = 0; l < from.count; l++)
             mention_layer(&m, &from, &from.layers[l]);
+    if (m.first != layer) {
+        bh_text_free(&m.names);
+        bh_text_free(&m.key);
+        return;
+    }
     const char *lead = ": ";
     for (unsigned h = 0; h < BH_HAZARD_COUNT; h++)
-        if (hazards & (1U << h)) {
-            bh_text_appendf(&m.names, "%s%s", lead, hazard_texts[h]);
+        if (m.hazards & (1U << h)) {
+            bh_text_appendf(&m.names, "%s%s", lead, bh_hazard_meaning((bh_hazard)h));
             lead = "; ";
         }
     bh_text_append(&m.names, "." DEFER_SAFETY);
-    add(to, m.at, &m.key, &m.names);
-}
-
-/* Whether no layer before this one has the same hazards. */
-static bool is_first_of(const bh_plan *plan, unsigned hazards, const bh_layer *layer)
-{
-    stack from;
-    for (size_t i = 0; stack_at(plan, i, &from); i++)
-        for (size_t l = 0; l < from.count; l++) {
-            const bh_layer *other = &from.layers[l];
-            if (other->material && bh_material_hazards(other->material) == hazards)
-                return other == layer;
-        }
-    return false;
+    add(to, layer->at, &m.key, &m.names);
 }
 
 static void caution_of_materials(caution_list *to)
 {
     stack from;
     for (size_t i = 0; stack_at(to->plan, i, &from); i++)
-        for (size_t l = 0; l < from.count; l++) {
-            const bh_layer *layer = &from.layers[l];
-            const unsigned hazards = layer->material ? bh_material_hazards(layer->material) : 0;
-            if (hazards && is_first_of(to->plan, hazards, layer))
-                caution_of_hazards(to, hazards);
-        }
+        for (size_t l = 0; l < from.count; l++)
+            caution_of_hazards(to, &from.layers[l]);
 }
 
 static size_t count_layers(const bh_plan *plan)

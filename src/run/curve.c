@@ -309,7 +309,7 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
     c->plan = *plan;
     c->plan.settings = c->settings;
     c->plan.setting_count = c->count;
-    if (r->structure) {
+    if (r->structure && o->nuclide) {
         c->choice = (bh_structure_choice){o->nuclide->z, o->nuclide->a, {.text = r->structure}};
         c->plan.models.by_nuclide = &c->choice;
         c->plan.models.choice_count = 1;
@@ -324,7 +324,7 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
 bh_curve *bh_curve_new(const bh_plan *plan, const bh_curve_request *request, bh_error *err)
 {
     struct origin o = {0};
-    bh_error unseen;
+    bh_error unseen = {.code = BH_OK};
     err = err ? err : &unseen;
     if (start(plan, request, &o, err))
         return NULL;

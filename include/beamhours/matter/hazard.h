@@ -28,6 +28,10 @@ typedef enum {
 /* The words in the order of bh_hazard, NULL at the end. */
 extern const char *const bh_hazard_words[BH_HAZARD_COUNT + 1];
 
+/* What a hazard means, to be put behind the name of a material: "toxic when breathed in or
+ * swallowed".  Never NULL. */
+const char *bh_hazard_meaning(bh_hazard hazard);
+
 /*
  * The hazards of `material` as bits 1u << bh_hazard: those its file names, and those that follow
  * from state and composition whatever the file says (hydrogen that is not solid, gases other than
