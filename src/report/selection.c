@@ -89,10 +89,10 @@ static void list_settings(const bh_plan *plan, char *out, size_t size)
 
 static bh_code no_setting(const bh_selection *view, const char *word, size_t length, bh_error *err)
 {
-    char names[200] = "";
+    char settings[200] = "";
     const int given = length < 64 ? (int)length : 64;
-    list_settings(bh_table_plan(view->table), names, sizeof names);
-    return bh_fail(err, BH_EDOMAIN, "no setting \"%.*s\"; there are %s", given, word, names);
+    list_settings(bh_table_plan(view->table), settings, sizeof settings);
+    return bh_fail(err, BH_EDOMAIN, "no setting \"%.*s\"; there are %s", given, word, settings);
 }
 
 static bh_code check_only(const bh_selection *view, const char *list, bh_error *err)
