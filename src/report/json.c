@@ -7,6 +7,7 @@
 
 #include "beamhours/base/number.h"
 #include "beamhours/plan/dump.h"
+#include "beamhours/report/json_systematic.h"
 
 /* NaN does not exist in JSON: null. */
 static json_object *number(double value)
@@ -126,6 +127,8 @@ static json_object *row_object(const bh_selection *view, size_t row)
             put(reasons, bh_column_at(id)->key, json_object_new_string(reason));
     }
     put(object, "reasons", reasons);
+    if (shown(view, BH_COL_SYSTEMATIC))
+        put(object, "systematic_sources", bh_json_sources(view, row));
     return object;
 }
 
@@ -176,6 +179,8 @@ static json_object *table_object(const bh_selection *view, const char *version)
     for (size_t i = 0; i < view->row_count; i++)
         (void)json_object_array_add(rows, row_object(view, i));
     put(object, "rows", rows);
+    if (shown(view, BH_COL_SYSTEMATIC))
+        put(object, "systematic_causes", bh_json_causes(view));
     put(object, "totals", totals_object(bh_table_totals(table)));
     for (size_t i = 0; i < bh_table_cautions(table); i++) {
         const bh_caution *c = bh_table_caution(table, i);

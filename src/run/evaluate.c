@@ -28,10 +28,15 @@ bh_code bh_evaluator_prepare(bh_evaluator *evaluator, const bh_plan *plan, bh_ar
     evaluator->recorded = bh_arena_take(arena, parts, sizeof *evaluator->recorded);
     evaluator->yields = bh_arena_take(arena, arms, sizeof *evaluator->yields);
     evaluator->arms = bh_arena_take(arena, arms, sizeof *evaluator->arms);
-    if (!evaluator->parts || !evaluator->recorded || !evaluator->yields || !evaluator->arms)
+    evaluator->effects = bh_arena_take(arena, parts, sizeof *evaluator->effects);
+    if (!evaluator->parts || !evaluator->recorded || !evaluator->yields || !evaluator->arms ||
+        !evaluator->effects)
         return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
     evaluator->yielder.plan = plan;
-    return bh_yielder_prepare(&evaluator->yielder, arena, err);
+    const bh_code code = bh_yielder_prepare(&evaluator->yielder, arena, err);
+    return code ? code
+                : bh_systematics_prepare(&evaluator->systematics, &evaluator->yielder, arena,
+                                         evaluator->systematics.causes, err);
 }
 
 /* Yields and recorded rates of all arms of a setting. */
@@ -130,22 +135,49 @@ bh_code bh_setting_measure(bh_evaluator *evaluator, size_t setting, bool bins,
     return BH_OK;
 }
 
+static void put_effects(const bh_evaluator *evaluator, const bh_effects *effects, bh_row *row)
+{
+    const bool any = row->number[BH_COL_SIGNAL] > 0;
+    row->effects = *effects;
+    bh_row_put(row, BH_COL_SYSTEMATIC,
+               any ? bh_effects_total(evaluator->systematics.causes, effects) : (double)NAN,
+               BH_WHY_NO_EVENTS);
+}
+
+/* The rows of one arm, with those of its bins where they are wanted. */
+static bh_code fill_arm(bh_evaluator *evaluator, const bh_setting_hours *hours, size_t arm,
+                        const bh_setting_rows *rows, bh_error *err)
+{
+    const bh_arm_hours *of = &hours->arms[arm];
+    const int bins = rows->bins ? of->yield->view.arm->arm.bins : 0;
+    bh_row_fill(&evaluator->yielder, hours, of, &rows->whole[arm]);
+    for (int b = 0; b < bins; b++)
+        bh_row_fill(&evaluator->yielder, hours, of, &rows->bins[b]);
+    const bh_code code =
+        bh_systematic_arm(&evaluator->systematics, of, 1 + (size_t)bins, evaluator->effects, err);
+    if (code)
+        return code;
+    put_effects(evaluator, &evaluator->effects[0], &rows->whole[arm]);
+    for (int b = 0; b < bins; b++)
+        put_effects(evaluator, &evaluator->effects[1 + b], &rows->bins[b]);
+    return BH_OK;
+}
+
 bh_code bh_setting_evaluate(bh_evaluator *evaluator, size_t setting, bh_setting_rows *out,
                             bh_error *err)
 {
     const bh_setting *s = &evaluator->yielder.plan->settings[setting];
     bh_setting_hours hours;
-    const bh_code code = bh_setting_measure(evaluator, setting, out->bins != NULL, &hours, err);
+    bh_code code = bh_setting_measure(evaluator, setting, out->bins != NULL, &hours, err);
     if (code)
         return code;
     find(evaluator, &hours);
-    bh_row *bin = out->bins;
-    for (size_t a = 0; a < s->arm_count; a++) {
-        bh_row_fill(&evaluator->yielder, &hours, &evaluator->arms[a], &out->whole[a]);
-        for (int b = 1; out->bins && b <= s->arms[a].arm.bins; b++)
-            bh_row_fill(&evaluator->yielder, &hours, &evaluator->arms[a], bin++);
+    bh_setting_rows rows = *out;
+    for (size_t a = 0; !code && a < s->arm_count; a++) {
+        code = fill_arm(evaluator, &hours, a, &rows, err);
+        rows.bins += rows.bins ? s->arms[a].arm.bins : 0;
     }
     out->full = isnan(hours.full) ? 0 : hours.full;
     out->empty = out->full * hours.share;
-    return BH_OK;
+    return code;
 }

@@ -84,12 +84,6 @@ void bh_explain_section(bh_explaining *x, const char *name)
     bh_explain_add(x, (bh_line){.kind = BH_LINE_SECTION, .name = name});
 }
 
-void bh_explain_piece(bh_explaining *x, const char *name, double share)
-{
-    if (share > 0 && isfinite(share) && x->piece_count < BH_MOST_PIECES)
-        x->pieces[x->piece_count++] = (bh_piece){name, share};
-}
-
 /* The names that would have done, for a message. */
 static void list_names(bh_text *names, const char *name)
 {
@@ -150,6 +144,9 @@ static bh_code find_bin(const bh_setting_arm *arm, int bin, bh_error *err)
 static bh_code measure(bh_explaining *x, size_t setting, size_t arm, bh_error *err)
 {
     const bh_plan *plan = bh_table_plan(x->table);
+    x->evaluator.systematics.causes = bh_causes_copy(bh_table_causes(x->table), x->arena);
+    if (!x->evaluator.systematics.causes)
+        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
     bh_code code = bh_evaluator_prepare(&x->evaluator, plan, x->arena, err);
     if (!code)
         code = bh_setting_measure(&x->evaluator, setting, x->bin > 0, &x->hours, err);
@@ -193,6 +190,7 @@ static bh_code write_all(bh_explaining *x, bh_error *err)
         bh_explain_cross_section(x);
     bh_explain_rates(x);
     bh_explain_time(x);
+    bh_explain_systematic(x);
     bh_explain_assumptions(x);
     return x->failed ? bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM)) : BH_OK;
 }

@@ -148,7 +148,6 @@ static void explain_spread(bh_explaining *x)
     if (spread.count)
         factor(x, "spread over the models", bh_explain_percent(x, half),
                "half the range of the cross section, the model in use among them");
-    bh_explain_piece(x, "structure model", half);
 }
 
 static void explain_point_charge(bh_explaining *x, double sigma)

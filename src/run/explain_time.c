@@ -1,4 +1,4 @@
-/* explain_time.c - hours, counts, and what the uncertainty is made of. */
+/* explain_time.c - hours, counts, and what the statistical uncertainty is made of. */
 #include <math.h>
 
 #include "beamhours/run/explaining.h"
@@ -80,75 +80,12 @@ static void explain_variance(bh_explaining *x)
     if (isfinite(to_goal))
         factor(x, "hours to goal", bh_explain_number(x, to_goal, "h"),
                "full-target hours that, with the empty share, reach the goal");
-    bh_explain_piece(x, "counting statistics", stat);
-}
-
-static double relative(const bh_value *v)
-{
-    return v->value != 0 ? fabs(v->uncertainty / v->value) : 0;
-}
-
-/* The number of scatterer nuclei goes with thickness and density of each sample layer. */
-static void add_layers(bh_explaining *x)
-{
-    const bh_target *t = x->setting->target;
-    for (size_t i = 0; i < t->layer_count; i++)
-        if (t->layers[i].role == BH_ROLE_SAMPLE)
-            bh_explain_piece(x, bh_explain_text(x, "size of layer %zu", i + 1),
-                             relative(&t->layers[i].areal_number));
-}
-
-/* What the plan's own uncertainties (± in it) make of the rate. */
-static void add_inputs(bh_explaining *x)
-{
-    const bh_beam *beam = &x->setting->beam;
-    const bh_setting_arm *s = x->arm->yield->view.arm;
-    const double mass = beam->particle.mass, kinetic = beam->kinetic_energy.value;
-    const double momentum2 = kinetic * (kinetic + 2 * mass);
-    const double by_momentum =
-        beam->kinetic_energy.uncertainty * (kinetic + mass) / momentum2; /* dp/p = E dT / p^2 */
-    const double turn = hypot(s->arm.pointing.uncertainty, s->angle.uncertainty);
-    bh_explain_piece(x, "beam current",
-                     relative(beam->rate_written ? &beam->particle_rate : &beam->current));
-    bh_explain_piece(x, "beam fraction", relative(&beam->fraction));
-    bh_explain_piece(x, "beam energy", fabs(x->part->per_momentum) * by_momentum);
-    bh_explain_piece(x, "angle of the arm", fabs(x->part->per_radian) * turn);
-    bh_explain_piece(x, "efficiency", relative(&s->arm.efficiency));
-    if (s->arm.solid_angle.given)
-        bh_explain_piece(x, "solid angle", relative(&s->arm.solid_angle));
-    add_layers(x);
-}
-
-/* Each alone, and its share of all in quadrature. */
-static void explain_pieces(bh_explaining *x)
-{
-    int largest = 0;
-    double variance = 0;
-    bh_explain_section(x, "What the rate is uncertain by");
-    for (int i = 0; i < x->piece_count; i++)
-        variance += x->pieces[i].share * x->pieces[i].share;
-    for (int i = 0; i < x->piece_count; i++) {
-        const double share = x->pieces[i].share;
-        factor(x, x->pieces[i].name, bh_explain_percent(x, share),
-               bh_explain_text(x, "from this alone; %s of the variance",
-                               bh_explain_percent(x, share * share / variance)));
-        if (share > x->pieces[largest].share)
-            largest = i;
-    }
-    if (x->piece_count == 0)
-        return;
-    factor(x, "all in quadrature", bh_explain_percent(x, sqrt(variance)), NULL);
-    bh_explain_add(
-        x, (bh_line){.kind = BH_LINE_NOTE,
-                     .remark = bh_explain_text(x, "The largest is %s.", x->pieces[largest].name)});
 }
 
 void bh_explain_time(bh_explaining *x)
 {
     explain_hours(x);
     explain_variance(x);
-    add_inputs(x);
-    explain_pieces(x);
 }
 
 void bh_explain_assumptions(bh_explaining *x)

@@ -108,7 +108,6 @@ static void put_hours(const struct source *s, bh_row *row)
     bh_row_put(row, BH_COL_STATISTICAL,
                bh_precision_uncertainty(s->recorded, &s->arm->empty, hours),
                isfinite(hours) ? BH_WHY_NO_SIGNAL : why);
-    bh_row_put(row, BH_COL_SYSTEMATIC, (double)NAN, BH_WHY_NOT_BUILT);
     bh_row_put(row, BH_COL_HOURS_TO_GOAL, bh_hours_to_goal(s->arm, row->bin), why_no_goal(s));
 }
 

@@ -19,6 +19,7 @@ struct bh_table {
     bh_arena *arena;
     size_t count[2]; /* rows of arms, rows of bins */
     bh_row *rows[2];
+    const bh_causes *causes;
     bh_totals totals;
     size_t caution_count;
     const bh_caution *cautions;
@@ -154,6 +155,7 @@ static bh_code fill(bh_table *table, const bh_evaluation *how, const bh_diags *s
         code = bh_evaluator_prepare(&evaluator, table->plan, table->arena, err);
     if (!code)
         code = evaluate(table, &evaluator, err);
+    table->causes = evaluator.systematics.causes;
     if (!code)
         code = conclude(table, remarks, said, err);
     bh_remarks_free(remarks);
@@ -234,6 +236,16 @@ bh_place bh_table_place(const bh_table *table, bool bins, size_t row)
 {
     const bh_row *r = &table->rows[bins][row];
     return (bh_place){.setting = r->setting, .arm = r->arm, .bin = r->bin};
+}
+
+const bh_causes *bh_table_causes(const bh_table *table)
+{
+    return table->causes;
+}
+
+bh_effects bh_table_effects(const bh_table *table, bool bins, size_t row)
+{
+    return table->rows[bins][row].effects;
 }
 
 const char *bh_table_note(const bh_table *table, size_t i)

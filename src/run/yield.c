@@ -142,6 +142,7 @@ static bh_code set_geometry(bh_yield *yield, bh_error *err)
         bh_acceptance_part part;
         bh_acceptance_part_of(&acceptance, i, &part);
         yield->part[i] = (bh_part){.solid_angle = part.solid_angle,
+                                   .polar = part.polar,
                                    .angle = i ? bh_acceptance_mean_angle(&part) : yield->view.axis};
     }
     return code;

@@ -418,8 +418,7 @@ static const struct {
     {HEAD
      "target: {layers: [{material: graphite, thickness: 5 mm, density_loss: 0 %/uA}]}\n" ARM ONE,
      NULL},
-    {HEAD TARGET "arms: [{name: A, solid_angle: 1 msr, pointing: 0 ± 0.2 mrad}]\n" ONE,
-     "arms.A.pointing"},
+    {HEAD TARGET "arms: [{name: A, solid_angle: 1 msr, pointing: 0 ± 0.2 mrad}]\n" ONE, NULL},
     {HEAD TARGET "arms: [{name: A, solid_angle: 1 msr, threshold: 0 MeV}]\n" ONE, NULL},
     {HEAD TARGET "arms: [{name: A, solid_angle: 1 msr, energy_cut: 15 MeV}]\n" ONE,
      "arms.A.energy_cut"},

@@ -49,7 +49,8 @@ START_TEST(it_has_the_parts_that_are_promised)
     struct evaluated e = evaluate(two_arms);
     json_object *o = table_of(&e, &(bh_selection_request){0});
     char keys[1024];
-    ck_assert_str_eq(keys_of(o, keys, sizeof keys), "plan rows totals cautions warnings version");
+    ck_assert_str_eq(keys_of(o, keys, sizeof keys),
+                     "plan rows systematic_causes totals cautions warnings version");
     ck_assert_str_eq(json_object_get_string(get(o, "version")), "9.8.7");
     json_object *totals = get(o, "totals");
     ck_assert_ptr_nonnull(
@@ -92,7 +93,7 @@ START_TEST(rows_hold_every_number_bit_for_bit)
     ck_assert_uint_eq(json_object_array_length(rows), view.row_count);
     for (size_t i = 0; i < view.row_count; i++) {
         json_object *row = json_object_array_get_idx(rows, i);
-        ck_assert_int_eq(json_object_object_length(row), BH_COLUMN_COUNT + 1 - (_i ? 0 : 1));
+        ck_assert_int_eq(json_object_object_length(row), BH_COLUMN_COUNT + 2 - (_i ? 0 : 1));
         for (int id = 0; id < BH_COLUMN_COUNT; id++)
             if (id != BH_COL_BIN || _i)
                 check_cell(row, &view, i, id);

@@ -154,35 +154,68 @@ START_TEST(the_model_is_named_with_reason_and_spread)
 }
 END_TEST
 
-/* The plan's own uncertainties: current 1 %, length 2 %; the largest is named. */
+static const char *const inputs[] = {"from current", "from energy", "from thickness",
+                                     "from structure"};
+
+/* The plan's own uncertainties: current 1 %, length 2 %; in quadrature they are the total. */
 START_TEST(what_the_rate_is_uncertain_by)
 {
     struct evaluated e = evaluate(hydrogen);
     bh_explanation *x = bh_explain(e.table, "K.1", "A", 0, NULL);
-    ck_assert_relative(number(x, "size of layer 2"), 2, 1e-6, "thickness");
-    ck_assert_relative(number(x, "counting statistics"), 0.5, 1e-6, "statistics");
-    ck_assert_relative(number(x, "beam energy"), fabs(cell(&e, 0, BH_COL_PER_PERMILLE)) * 1e5 / 855,
-                       3e-3, "energy"); /* three digits are shown */
+    ck_assert_relative(number(x, "from thickness"), 2, 5e-3, "thickness");
+    ck_assert_str_eq(must_find(x, "from thickness")->source, "plan.yaml:9:46");
+    ck_assert_relative(number(x, "from current"), 1, 5e-3, "current");
+    ck_assert_relative(fabs(number(x, "from energy")),
+                       fabs(cell(&e, 0, BH_COL_PER_PERMILLE)) * 1e5 / 855, 3e-3, "energy");
+    double sum = 0;
+    for (int i = 0; i < COUNT(inputs); i++)
+        sum += number(x, inputs[i]) * number(x, inputs[i]);
+    ck_assert_relative(number(x, "systematic uncertainty"), sqrt(sum), 5e-3, "sum");
+    ck_assert_relative(number(x, "systematic uncertainty"), 100 * cell(&e, 0, BH_COL_SYSTEMATIC),
+                       5e-3, "total");
     bool named = false;
     for (size_t i = 0; i < bh_explanation_lines(x); i++) {
         const bh_line *line = bh_explanation_line(x, i);
-        named =
-            named || (line->remark && strcmp(line->remark, "The largest is size of layer 2.") == 0);
+        named = named || (line->remark && strcmp(line->remark, "The largest is thickness.") == 0);
     }
     ck_assert(named);
-    double variance = 0, shares = 0;
+    double shares = 0;
     for (size_t i = 0; i < bh_explanation_lines(x); i++) {
         const bh_line *line = bh_explanation_line(x, i);
-        if (!line->formula || strncmp(line->formula, "from this alone; ", 17) != 0)
-            continue;
-        variance += pow(strtod(line->value, NULL), 2);
-        shares += strtod(line->formula + 17, NULL);
+        if (line->name && strncmp(line->name, "from ", 5) == 0 && line->remark &&
+            strstr(line->remark, "of the variance"))
+            shares += strtod(line->remark, NULL);
     }
-    ck_assert_relative(number(x, "all in quadrature"), sqrt(variance), 5e-3, "quadrature");
     ck_assert_relative(shares, 100, 5e-3, "shares of the variance");
+    ck_assert_relative(number(x, "with counting statistics"),
+                       hypot(number(x, "systematic uncertainty"), 0.5), 5e-3, "statistics");
     bh_explanation_free(x);
     x = bh_explain(e.table, "K.1", "M", 0, NULL);
     ck_assert_relative(number(x, "solid angle"), 2, 1e-6, "solid angle");
+    ck_assert_relative(number(x, "from solid_angle"), 0.5, 5e-3, "its uncertainty");
+    bh_explanation_free(x);
+    done(&e);
+}
+END_TEST
+
+/* Current and length cancel; energy and form factors in part. */
+START_TEST(ratios_are_surer_than_rates)
+{
+    struct evaluated e = evaluate(hydrogen);
+    bh_explanation *x = bh_explain(e.table, "K.1", "A", 0, NULL);
+    const bh_effects own = bh_table_effects(e.table, false, 0);
+    const bh_effects other = bh_table_effects(e.table, false, 2);
+    const double ratio = number(x, "ratio to K.2, arm A");
+    ck_assert_relative(ratio, 100 * bh_effects_of_ratio(bh_table_causes(e.table), &own, &other),
+                       5e-3, "ratio");
+    ck_assert(ratio > 0 && ratio < 0.5 * number(x, "systematic uncertainty"));
+    ck_assert_ptr_nonnull(find_line(x, "ratio to K.1, arm M"));
+    ck_assert_ptr_null(find_line(x, "ratio to K.1, arm A"));
+    bh_explanation_free(x);
+    x = bh_explain(e.table, "K.2", "A", 1, NULL);
+    ck_assert(number(x, "ratio to bin 2") < 0.5 * number(x, "systematic uncertainty"));
+    ck_assert_relative(number(x, "systematic uncertainty"),
+                       100 * bin_cell(&e, 3, BH_COL_SYSTEMATIC), 5e-3, "total of the bin");
     bh_explanation_free(x);
     done(&e);
 }
@@ -303,6 +336,7 @@ int main(void)
     tcase_add_test(tests, the_model_is_named_with_reason_and_spread);
     tcase_add_test(tests, what_the_rate_is_uncertain_by);
     tcase_add_test(tests, the_row_is_named_first);
+    tcase_add_test(tests, ratios_are_surer_than_rates);
     tcase_add_test(tests, assumptions_are_listed);
     tcase_add_loop_test(tests, what_is_not_there_is_refused, 0, COUNT(refusals));
     tcase_add_loop_test(tests, every_kind_of_row, 0, COUNT(others));

@@ -5,6 +5,7 @@
 #include "beamhours/base/arena.h"
 #include "beamhours/run/hours.h"
 #include "beamhours/run/row.h"
+#include "beamhours/run/systematic.h"
 #include "beamhours/run/table.h"
 
 /* What one evaluation works with. */
@@ -14,10 +15,12 @@ typedef struct {
     bh_recorded *recorded;
     bh_yield *yields; /* room for the arms of any setting */
     bh_arm_hours *arms;
+    bh_systematics systematics;
+    bh_effects *effects; /* room for those of any setting */
 } bh_evaluator;
 
 /* Makes room, in `arena`, for evaluating `plan`.  The workspace and the list of remarks are the
- * caller's.  BH_ENOMEM. */
+ * caller's, and the list of causes where there is one in systematics already.  BH_ENOMEM. */
 BH_CHECKED bh_code bh_evaluator_prepare(bh_evaluator *evaluator, const bh_plan *plan,
                                         bh_arena *arena, bh_error *err);
 

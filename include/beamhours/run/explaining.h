@@ -7,14 +7,6 @@
 #include "beamhours/run/explain.h"
 #include "beamhours/units/quantity.h"
 
-/* A piece of the uncertainty of the row's rate. */
-typedef struct {
-    const char *name;
-    double share; /* [1] relative standard uncertainty of the rate from this alone */
-} bh_piece;
-
-enum { BH_MOST_PIECES = 64 };
-
 typedef struct {
     const bh_table *table;
     bh_arena *arena; /* of the lines and their texts */
@@ -30,8 +22,6 @@ typedef struct {
     bh_channel channel; /* the first of the main nuclide */
     bh_event event;     /* at the row's angle */
     bool reached;       /* there is such an event */
-    int piece_count;
-    bh_piece pieces[BH_MOST_PIECES];
 } bh_explaining;
 
 /* Formats a text that lives as long as the lines; NULL (and failed) when memory runs out. */
@@ -50,15 +40,12 @@ const char *bh_explain_mark(bh_explaining *x, bh_mark at);
 void bh_explain_add(bh_explaining *x, bh_line line);
 void bh_explain_section(bh_explaining *x, const char *name);
 
-/* Notes that the rate is uncertain by `share` [1], relative, from `name` alone; shares that are not
- * above 0 are passed over. */
-void bh_explain_piece(bh_explaining *x, const char *name, double share);
-
 /* The parts of an explanation, in their order. */
 void bh_explain_inputs(bh_explaining *x);
 void bh_explain_cross_section(bh_explaining *x);
 void bh_explain_rates(bh_explaining *x);
 void bh_explain_time(bh_explaining *x);
+void bh_explain_systematic(bh_explaining *x);
 void bh_explain_assumptions(bh_explaining *x);
 
 #endif

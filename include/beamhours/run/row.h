@@ -4,6 +4,7 @@
 
 #include <stddef.h>
 
+#include "beamhours/run/cause.h"
 #include "beamhours/run/columns.h"
 
 /* Every reason a cell can be empty for: X(id, sentence). */
@@ -33,6 +34,7 @@ typedef struct {
     int bin;                            /* from 1; 0 for the whole arm */
     double number[BH_COLUMN_COUNT];     /* [1] in the unit of the column's key; NAN: empty */
     unsigned char why[BH_COLUMN_COUNT]; /* a bh_why where number is NAN */
+    bh_effects effects;                 /* what the signal rate is uncertain by */
 } bh_row;
 
 /* The sentence; NULL for BH_WHY_NOTHING. */

@@ -7,6 +7,7 @@
 
 #include "beamhours/base/diag.h"
 #include "beamhours/plan/plan.h"
+#include "beamhours/run/cause.h"
 #include "beamhours/run/columns.h"
 
 typedef struct bh_table bh_table;
@@ -74,6 +75,10 @@ typedef struct {
 } bh_place;
 
 bh_place bh_table_place(const bh_table *table, bool bins, size_t row);
+
+/* What the signal rates are uncertain by: every cause once, and what each does to a row. */
+const bh_causes *bh_table_causes(const bh_table *table);
+bh_effects bh_table_effects(const bh_table *table, bool bins, size_t row);
 
 /* The i-th sentence on what these numbers leave out (radiation, energy loss); NULL past the end. */
 const char *bh_table_note(const bh_table *table, size_t i);

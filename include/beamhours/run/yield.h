@@ -51,6 +51,7 @@ typedef struct {
 /* The whole arm or one bin. */
 typedef struct {
     double angle;               /* [rad] arm's centre, or mean over the bin */
+    bh_interval polar;          /* [rad] the polar angles it reaches */
     double solid_angle;         /* [sr] */
     double cross_section;       /* [ub/sr] mean, per scatterer nucleus */
     double point_cross_section; /* [ub/sr] at `angle` */
