@@ -1,34 +1,11 @@
 /* test_systematic.c - systematic uncertainties against plans evaluated with other values. */
-#include "evaluated.h"
+#include "uncertain.h"
 
 #include <json-c/json.h>
 #include <stdint.h>
 
 #include "beamhours/base/text.h"
-#include "beamhours/physics/structure.h"
 #include "beamhours/report/json.h"
-#include "beamhours/run/cause.h"
-
-/* Reads a plan with changes and evaluates it. */
-static struct evaluated with(const char *text, const bh_change *changes, size_t count, bool bins)
-{
-    static const char *const folders[] = {"materials", NULL};
-    struct evaluated e = {.library = bh_material_library_new(folders), .diags = bh_diags_new()};
-    e.plan = bh_plan_read(text, strlen(text), "plan.yaml", changes, count, e.library, e.diags);
-    if (!e.plan)
-        print_diags(e.diags);
-    ck_assert_ptr_nonnull(e.plan);
-    e.table = bh_table_new(e.plan, &(bh_evaluation){.bins = bins}, e.diags, NULL);
-    ck_assert_ptr_nonnull(e.table);
-    return e;
-}
-
-/* The uncertainty of a row from one kind of cause. */
-static double from(const struct evaluated *e, size_t row, bh_cause_kind kind)
-{
-    const bh_effects effects = bh_table_effects(e->table, false, row);
-    return bh_effects_of(bh_table_causes(e->table), &effects, kind);
-}
 
 enum { MOST = 64 };
 
@@ -176,12 +153,6 @@ END_TEST
 
 /* --- one input at a time --- */
 
-#define BEAM "plan: 1\nbeam: {particle: electron, kinetic_energy: 500 MeV, current: 10 uA}\n"
-#define HYDROGEN                                                                       \
-    "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: " \
-    "50 mm}]}\n"
-#define ARM "arms: [{name: A, in_plane: ±20 mrad, out_of_plane: ±40 mrad}]\n"
-
 /* Moved by one standard uncertainty both ways, the rate moves by what the row says. */
 static const struct {
     const char *plan; /* with %s in the place of the value */
@@ -199,51 +170,54 @@ static const struct {
     {"plan: 1\nbeam: {particle: electron, kinetic_energy: 500 MeV, current: 1 uA, fraction: 60 %%, "
      "others: {alpha: %s}}\n" HYDROGEN ARM "settings: [{name: K, angle: 50 deg}]\n",
      30, 1, "%", BH_CAUSE_OTHERS, BH_COL_SIGNAL},
-    {BEAM HYDROGEN ARM "settings: [{name: K, angle: %s}]\n", 50, 0.05, "deg", BH_CAUSE_ANGLE,
+    {BEAM_500 HYDROGEN ARM "settings: [{name: K, angle: %s}]\n", 50, 0.05, "deg", BH_CAUSE_ANGLE,
      BH_COL_SIGNAL},
-    {BEAM HYDROGEN ARM "settings: [{name: K, q2: %s}]\n", 0.15, 0.0003, "GeV2", BH_CAUSE_ANGLE,
+    {BEAM_500 HYDROGEN ARM "settings: [{name: K, q2: %s}]\n", 0.15, 0.0003, "GeV2", BH_CAUSE_ANGLE,
      BH_COL_SIGNAL},
-    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 1 msr, detects: recoil}]\n"
-                   "settings: [{name: K, q2: %s}]\n",
+    {BEAM_500 HYDROGEN "arms: [{name: A, solid_angle: 1 msr, detects: recoil}]\n"
+                       "settings: [{name: K, q2: %s}]\n",
      0.15, 0.0003, "GeV2", BH_CAUSE_ANGLE, BH_COL_SIGNAL},
-    {BEAM HYDROGEN "arms: [{name: A, in_plane: ±20 mrad, out_of_plane: ±40 mrad, momentum_bite: "
-                   "±1 %%}]\nsettings: [{name: K, angle: 50 deg, central_momentum: %s}]\n",
+    {BEAM_500 HYDROGEN
+     "arms: [{name: A, in_plane: ±20 mrad, out_of_plane: ±40 mrad, momentum_bite: "
+     "±1 %%}]\nsettings: [{name: K, angle: 50 deg, central_momentum: %s}]\n",
      421, 1, "MeV/c", BH_CAUSE_CENTRAL_MOMENTUM, BH_COL_SIGNAL},
-    {BEAM "target: {name: t, layers: [{material: graphite, thickness: 1 mm}]}\n" ARM
-          "settings: [{name: K, angle: 30 deg, tilt: %s}]\n",
+    {BEAM_500 "target: {name: t, layers: [{material: graphite, thickness: 1 mm}]}\n" ARM
+              "settings: [{name: K, angle: 30 deg, tilt: %s}]\n",
      30, 0.5, "deg", BH_CAUSE_TILT, BH_COL_SIGNAL},
-    {BEAM "target: {name: t, layers: [{material: graphite, thickness: 1 mm}, {material: graphite, "
-          "thickness: %s}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
+    {BEAM_500
+     "target: {name: t, layers: [{material: graphite, thickness: 1 mm}, {material: graphite, "
+     "thickness: %s}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
      2, 0.1, "mm", BH_CAUSE_THICKNESS, BH_COL_SIGNAL},
-    {BEAM "target: {name: t, layers: [{material: graphite, areal_density: %s}]}\n" ARM
-          "settings: [{name: K, angle: 30 deg}]\n",
+    {BEAM_500 "target: {name: t, layers: [{material: graphite, areal_density: %s}]}\n" ARM
+              "settings: [{name: K, angle: 30 deg}]\n",
      100, 3, "mg/cm2", BH_CAUSE_THICKNESS, BH_COL_SIGNAL},
-    {BEAM "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: %s}]}\n"
-          "arms: [{name: A, solid_angle: 1 msr, target_view: ±1 cm}]\n"
-          "settings: [{name: K, angle: 60 deg}]\n",
+    {BEAM_500
+     "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: %s}]}\n"
+     "arms: [{name: A, solid_angle: 1 msr, target_view: ±1 cm}]\n"
+     "settings: [{name: K, angle: 60 deg}]\n",
      20, 0.5, "mm", BH_CAUSE_THICKNESS, BH_COL_SIGNAL}, /* seen as a whole */
-    {BEAM
+    {BEAM_500
      "target: {name: t, layers: [{material: graphite, areal_density: 20 g/cm2, density: %s}]}\n"
      "arms: [{name: A, solid_angle: 1 msr, target_view: ±1 cm}]\n"
      "settings: [{name: K, angle: 60 deg}]\n",
      1.8, 0.02, "g/cm3", BH_CAUSE_DENSITY, BH_COL_SIGNAL}, /* denser: more of it in view */
-    {BEAM "target: {name: t, scatterer: H, layers: [{material: hydrogen-gas, thickness: 10 cm, "
-          "temperature: %s, pressure: 1 bar}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
+    {BEAM_500 "target: {name: t, scatterer: H, layers: [{material: hydrogen-gas, thickness: 10 cm, "
+              "temperature: %s, pressure: 1 bar}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
      295, 3, "K", BH_CAUSE_TEMPERATURE, BH_COL_SIGNAL},
-    {BEAM "target: {name: t, scatterer: H, layers: [{material: hydrogen-gas, thickness: 10 cm, "
-          "temperature: 295 K, pressure: %s}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
+    {BEAM_500 "target: {name: t, scatterer: H, layers: [{material: hydrogen-gas, thickness: 10 cm, "
+              "temperature: 295 K, pressure: %s}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
      2, 0.02, "bar", BH_CAUSE_PRESSURE, BH_COL_SIGNAL},
-    {BEAM HYDROGEN "arms: [{name: A, ring: {from: 20 deg, to: 40 deg}, azimuth: %s}]\n"
-                   "settings: [{name: K}]\n",
+    {BEAM_500 HYDROGEN "arms: [{name: A, ring: {from: 20 deg, to: 40 deg}, azimuth: %s}]\n"
+                       "settings: [{name: K}]\n",
      180, 2, "deg", BH_CAUSE_AZIMUTH, BH_COL_SIGNAL},
-    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, dead_time: %s}]\n"
-                   "settings: [{name: K, angle: 20 deg}]\n",
+    {BEAM_500 HYDROGEN "arms: [{name: A, solid_angle: 5 msr, dead_time: %s}]\n"
+                       "settings: [{name: K, angle: 20 deg}]\n",
      5, 0.5, "us", BH_CAUSE_DEAD_TIME, BH_COL_LIVE},
-    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, dead_time: 1 us, other_rate: %s}]\n"
-                   "settings: [{name: K, angle: 20 deg}]\n",
+    {BEAM_500 HYDROGEN "arms: [{name: A, solid_angle: 5 msr, dead_time: 1 us, other_rate: %s}]\n"
+                       "settings: [{name: K, angle: 20 deg}]\n",
      100, 10, "kHz", BH_CAUSE_OTHER_RATE, BH_COL_LIVE},
-    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, rate_limit: %s}]\n"
-                   "settings: [{name: K, angle: 20 deg}]\n",
+    {BEAM_500 HYDROGEN "arms: [{name: A, solid_angle: 5 msr, rate_limit: %s}]\n"
+                       "settings: [{name: K, angle: 20 deg}]\n",
      1, 0.1, "kHz", BH_CAUSE_RATE_LIMIT, BH_COL_LIVE},
     {"plan: 1\nbeam: {particle: electron, kinetic_energy: 500 MeV, current: 1 uA, duty_factor: "
      "%s}\n" HYDROGEN "arms: [{name: A, solid_angle: 5 msr, dead_time: 5 us}]\n"
@@ -293,10 +267,10 @@ END_TEST
 
 /* --- what is subtracted as computed --- */
 
-#define WINDOWS(empty)                                                                         \
-    BEAM "target: {name: t, scatterer: H, " empty "layers: [{material: aluminium, thickness: " \
-         "0.2 ± 0.01 mm, role: window}, {material: liquid-hydrogen, thickness: 50 mm}]}\n" ARM \
-         "settings: [{name: K, angle: 20 deg}]\n"
+#define WINDOWS(empty)                                                                             \
+    BEAM_500 "target: {name: t, scatterer: H, " empty "layers: [{material: aluminium, thickness: " \
+             "0.2 ± 0.01 mm, role: window}, {material: liquid-hydrogen, thickness: 50 mm}]}\n" ARM \
+             "settings: [{name: K, angle: 20 deg}]\n"
 
 START_TEST(windows_count_as_long_as_no_empty_target_measures_them)
 {
@@ -319,9 +293,9 @@ END_TEST
 START_TEST(pointing_acts_through_the_sensitivity_to_the_angle)
 {
     struct evaluated e =
-        evaluate(BEAM HYDROGEN "arms: [{name: A, in_plane: ±20 mrad, out_of_plane: ±40 mrad, "
-                               "pointing: 0 ± 0.2 mrad}]\n"
-                               "settings: [{name: K, angle: [30 deg, 60 deg]}]\n");
+        evaluate(BEAM_500 HYDROGEN "arms: [{name: A, in_plane: ±20 mrad, out_of_plane: ±40 mrad, "
+                                   "pointing: 0 ± 0.2 mrad}]\n"
+                                   "settings: [{name: K, angle: [30 deg, 60 deg]}]\n");
     const bh_causes *causes = bh_table_causes(e.table);
     double per_mrad[2];
     for (size_t r = 0; r < 2; r++) {
@@ -336,157 +310,6 @@ START_TEST(pointing_acts_through_the_sensitivity_to_the_angle)
                        0.2 * fabs(per_mrad[0] - per_mrad[1]), 1e-9, "one pointing, two angles");
     ck_assert(!warns(&e, "not"));
     done(&e);
-}
-END_TEST
-
-/* --- models --- */
-
-static const char *const nuclei[] = {
-    BEAM HYDROGEN ARM "settings: [{name: K, angle: [25 deg, 70 deg]}]\n",
-    "plan: 1\nbeam: {particle: electron, kinetic_energy: 300 MeV, current: 10 uA}\n"
-    "target: {name: t, scatterer: 12C, layers: [{material: graphite, thickness: 1 mm}]}\n"
-    "arms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±70 mrad}]\n"
-    "settings: [{name: K, angle: [30 deg, 60 deg]}]\n",
-    "plan: 1\nbeam: {particle: electron, kinetic_energy: 400 MeV, current: 10 uA}\n"
-    "target: {name: t, scatterer: 2H, layers: [{material: liquid-deuterium, thickness: 1 cm}]}\n"
-    "arms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±70 mrad}]\n"
-    "settings: [{name: K, angle: [30 deg, 60 deg]}]\n"};
-
-/* With another description of the nucleus the rate is what its effect says. */
-START_TEST(other_descriptions_give_the_rates_they_are_said_to)
-{
-    struct evaluated e = evaluate(nuclei[_i]);
-    const bh_causes *causes = bh_table_causes(e.table);
-    int compared = 0;
-    for (size_t i = 0; i < bh_causes_count(causes); i++) {
-        const bh_cause *c = bh_causes_at(causes, i);
-        if (c->kind != BH_CAUSE_STRUCTURE || !c->model)
-            continue;
-        const bh_change change = {"models", NULL};
-        char yaml[128];
-        snprintf(yaml, sizeof yaml, "{structure: %s}", c->model);
-        struct evaluated other = with(nuclei[_i], &(bh_change){change.path, yaml}, 1, false);
-        for (size_t r = 0; r < 2; r++) {
-            const bh_effects effects = bh_table_effects(e.table, false, r);
-            for (size_t k = 0; k < effects.count; k++)
-                if (effects.cause[k] == i && !isnan(effects.effect[k])) {
-                    const double off =
-                        cell(&other, r, BH_COL_SIGNAL) / cell(&e, r, BH_COL_SIGNAL) - 1;
-                    ck_assert_msg(fabs(effects.effect[k] - off) < 2e-4 + 0.03 * fabs(off),
-                                  "%s in row %zu: %g, wanted %g", c->model, r, effects.effect[k],
-                                  off);
-                    compared++;
-                }
-        }
-        done(&other);
-    }
-    ck_assert_int_ge(compared, 2);
-    done(&e);
-}
-END_TEST
-
-/* NAN where the cause is not among those of the row. */
-static double effect_of(const bh_effects *row, unsigned cause)
-{
-    for (size_t i = 0; i < row->count; i++)
-        if (row->cause[i] == cause)
-            return row->effect[i];
-    return (double)NAN;
-}
-
-/* Half the range over the models, in a row and (those with data in both rows) in a ratio. */
-START_TEST(models_count_as_half_the_range_they_span)
-{
-    struct evaluated e = evaluate(nuclei[0]);
-    const bh_causes *causes = bh_table_causes(e.table);
-    const bh_effects a = bh_table_effects(e.table, false, 0);
-    const bh_effects b = bh_table_effects(e.table, false, 1);
-    double low = 0, high = 0, low_ratio = 0, high_ratio = 0;
-    int common = 0;
-    for (size_t k = 0; k < a.count; k++) {
-        if (bh_causes_at(causes, a.cause[k])->kind != BH_CAUSE_STRUCTURE)
-            continue;
-        const double off = a.effect[k] - effect_of(&b, a.cause[k]);
-        common += isnan(off) ? 0 : 1;
-        low = fmin(low, a.effect[k]);
-        high = fmax(high, a.effect[k]);
-        low_ratio = fmin(low_ratio, off);
-        high_ratio = fmax(high_ratio, off);
-    }
-    ck_assert_int_ge(common, 4);
-    ck_assert_int_lt(common, (int)a.count); /* one fit ends between the two */
-    ck_assert_relative(from(&e, 0, BH_CAUSE_STRUCTURE), (high - low) / 2, 1e-12, "row");
-    const double there = bh_effects_of_ratio(causes, &a, &b);
-    ck_assert_relative(there, (high_ratio - low_ratio) / 2, 1e-3, "ratio");
-    ck_assert_relative(bh_effects_of_ratio(causes, &b, &a), there, 1e-12, "its inverse");
-    done(&e);
-}
-END_TEST
-
-/* Ye et al. 2018 publish the uncertainty of their fit. */
-START_TEST(a_published_uncertainty_is_preferred_to_the_spread)
-{
-    struct evaluated e = with(nuclei[0], &(bh_change){"models", "{structure: ye-2018}"}, 1, false);
-    bh_structure *ye = bh_structure_new("ye-2018", 1, 1, NULL);
-    const double published = bh_structure_uncertainty(ye, cell(&e, 1, BH_COL_Q2) * 1e6);
-    ck_assert_relative(from(&e, 1, BH_CAUSE_STRUCTURE), published, 0.01, "Ye et al. 2018");
-    bh_structure_free(ye);
-    done(&e);
-}
-END_TEST
-
-/* McKinley & Feshbach 1948: pi Z alpha s (1 - s) / (1 - s^2), s = sin 30 deg, and the sign of the
- * charge; the form factor hardly matters at 5 MeV. */
-START_TEST(plane_waves_on_carbon_are_off_by_the_second_born_term)
-{
-    static const char *const particles[] = {"electron", "positron"};
-    for (int i = 0; i < 2; i++) {
-        char text[512];
-        snprintf(text, sizeof text,
-                 "plan: 1\nbeam: {particle: %s, kinetic_energy: 5 MeV, current: 1 uA}\n"
-                 "target: {name: t, scatterer: 12C, layers: [{material: graphite, thickness: 1 "
-                 "mm}]}\narms: [{name: A, solid_angle: 1 msr}]\n"
-                 "settings: [{name: K, angle: 60 deg}]\n",
-                 particles[i]);
-        struct evaluated e = evaluate(text);
-        ck_assert_relative(from(&e, 0, BH_CAUSE_COULOMB), 0.0457, 0.08, "McKinley & Feshbach 1948");
-        done(&e);
-    }
-}
-END_TEST
-
-/* Andersen et al. 1980 for alphas of 5 MeV on gold at 160 deg: V1/E = 0.00688 by hand. */
-START_TEST(screening_is_what_a_slow_ion_is_uncertain_by)
-{
-    struct evaluated e =
-        evaluate("plan: 1\nbeam: {particle: alpha, kinetic_energy: 5 MeV, particle_rate: 1e6 /s}\n"
-                 "target: {name: t, layers: [{material: gold, thickness: 0.1 um}]}\n"
-                 "arms: [{name: A, solid_angle: 1 msr}]\nsettings: [{name: K, angle: 160 deg}]\n");
-    ck_assert_relative(from(&e, 0, BH_CAUSE_SCREENING), 0.0069, 0.03, "Andersen et al. 1980");
-    ck_assert(from(&e, 0, BH_CAUSE_STRUCTURE) == 0);
-    ck_assert_relative(cell(&e, 0, BH_COL_SYSTEMATIC), from(&e, 0, BH_CAUSE_SCREENING), 1e-9,
-                       "total");
-    done(&e);
-}
-END_TEST
-
-/* Lead has four isotopes; their form factors are wrong together. */
-START_TEST(isotopes_are_wrong_together)
-{
-    static const char *const scatterers[] = {"Pb", "208Pb"};
-    double size[2];
-    for (int i = 0; i < 2; i++) {
-        char text[512];
-        snprintf(text, sizeof text,
-                 BEAM "target: {name: t, scatterer: %s, layers: [{material: lead, thickness: 0.1 "
-                      "mm}]}\narms: [{name: A, solid_angle: 1 msr}]\n"
-                      "settings: [{name: K, angle: 15 deg}]\n",
-                 scatterers[i]);
-        struct evaluated e = evaluate(text);
-        size[i] = from(&e, 0, BH_CAUSE_STRUCTURE);
-        done(&e);
-    }
-    ck_assert_msg(size[0] > 0.5 * size[1] && size[0] < 2 * size[1], "%g, %g", size[0], size[1]);
 }
 END_TEST
 
@@ -551,13 +374,6 @@ int main(void)
     tcase_add_loop_test(tests, one_input_moves_the_rate_by_what_the_row_says, 0, COUNT(inputs));
     tcase_add_test(tests, windows_count_as_long_as_no_empty_target_measures_them);
     tcase_add_test(tests, pointing_acts_through_the_sensitivity_to_the_angle);
-    tcase_add_loop_test(tests, other_descriptions_give_the_rates_they_are_said_to, 0,
-                        COUNT(nuclei));
-    tcase_add_test(tests, models_count_as_half_the_range_they_span);
-    tcase_add_test(tests, a_published_uncertainty_is_preferred_to_the_spread);
-    tcase_add_test(tests, plane_waves_on_carbon_are_off_by_the_second_born_term);
-    tcase_add_test(tests, screening_is_what_a_slow_ion_is_uncertain_by);
-    tcase_add_test(tests, isotopes_are_wrong_together);
     tcase_add_test(tests, json_has_sources_that_add_up_and_causes_with_rows);
     return run_suite("systematic", tests);
 }

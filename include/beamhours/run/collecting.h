@@ -32,6 +32,38 @@ void bh_collect_fail(bh_collecting *c, bh_code code);
 void bh_collect_signals(bh_collecting *c, const bh_setting *setting, const bh_setting_arm *arm,
                         double *signal);
 
+enum { BH_CAUSE_KEY = 256 }; /* room for the name of a key */
+
+/* "beam.current" or, where a setting has its own, "settings.K1.beam.current"; "arms.A.efficiency";
+ * "settings.K1.angle".  Each returns `key`. */
+const char *bh_collect_beam_key(const bh_collecting *c, bh_mark at, const char *member,
+                                char key[BH_CAUSE_KEY]);
+const char *bh_collect_arm_key(const bh_collecting *c, const char *member, char key[BH_CAUSE_KEY]);
+const char *bh_collect_setting_key(const bh_collecting *c, const char *member,
+                                   char key[BH_CAUSE_KEY]);
+
+/* A cause in the plan. */
+bh_cause bh_collect_cause(bh_cause_kind kind, bh_mark at, const char *key);
+
+/* Returns [1] the relative standard uncertainty of a value; 0 for a value of 0. */
+double bh_collect_relative(const bh_value *v);
+
+/* A cause whose effect is a sensitivity of each part, the member of bh_part at `sensitivity`
+ * [bytes], times `by` [1], in its unit. */
+void bh_collect_sensitive(bh_collecting *c, const bh_cause *cause, ptrdiff_t sensitivity,
+                          double by);
+
+/* A copy of a setting and its arm, in which one value is moved. */
+typedef struct {
+    bh_setting setting;
+    bh_setting_arm arm;
+    bh_value *value; /* in one of them */
+} bh_moved;
+
+/* A cause whose effect is found by evaluating the arm on both sides of the value, but not
+ * below least [1], in its unit. */
+void bh_collect_moved(bh_collecting *c, const bh_cause *cause, bh_moved *moved, double least);
+
 /* The steps. */
 void bh_collect_beam(bh_collecting *c);
 void bh_collect_target(bh_collecting *c);

@@ -1,0 +1,72 @@
+/* collect_common.c - what collecting uncertainties has in common. */
+#include <math.h>
+#include <stdio.h>
+
+#include "beamhours/run/collecting.h"
+
+double bh_collect_relative(const bh_value *v)
+{
+    return v->value != 0 ? v->uncertainty / fabs(v->value) : 0;
+}
+
+const char *bh_collect_beam_key(const bh_collecting *c, bh_mark at, const char *member,
+                                char key[BH_CAUSE_KEY])
+{
+    const bh_beam *all = &c->yielder->plan->beam;
+    const bh_mark marks[] = {all->current.at,  all->particle_rate.at,   all->energy_written.at,
+                             all->fraction.at, all->momentum_spread.at, all->duty_factor.at};
+    bool common = false;
+    for (size_t i = 0; i < sizeof marks / sizeof marks[0]; i++)
+        common = common || (marks[i].line == at.line && marks[i].column == at.column);
+    if (common)
+        snprintf(key, BH_CAUSE_KEY, "beam.%s", member);
+    else
+        snprintf(key, BH_CAUSE_KEY, "settings.%s.beam.%s", c->setting->name, member);
+    return key;
+}
+
+const char *bh_collect_arm_key(const bh_collecting *c, const char *member, char key[BH_CAUSE_KEY])
+{
+    snprintf(key, BH_CAUSE_KEY, "arms.%s.%s", c->plan->arm.name.text ? c->plan->arm.name.text : "",
+             member);
+    return key;
+}
+
+const char *bh_collect_setting_key(const bh_collecting *c, const char *member,
+                                   char key[BH_CAUSE_KEY])
+{
+    snprintf(key, BH_CAUSE_KEY, "settings.%s.%s", c->setting->name, member);
+    return key;
+}
+
+bh_cause bh_collect_cause(bh_cause_kind kind, bh_mark at, const char *key)
+{
+    return (bh_cause){.kind = kind, .at = at, .key = key};
+}
+
+void bh_collect_sensitive(bh_collecting *c, const bh_cause *cause, ptrdiff_t sensitivity, double by)
+{
+    const bh_part *part = c->arm->yield->part;
+    double *to = by != 0 && isfinite(by) ? bh_collect(c, cause, 0) : NULL;
+    for (size_t i = 0; to && i < c->parts; i++) {
+        const double slope =
+            *(const double *)(const void *)((const unsigned char *)&part[i] + sensitivity);
+        to[i] += isfinite(slope) ? slope * by : 0;
+    }
+}
+
+void bh_collect_moved(bh_collecting *c, const bh_cause *cause, bh_moved *m, double least)
+{
+    const double at = m->value->value, sigma = m->value->uncertainty;
+    const double low = fmax(at - sigma, least), high = at + sigma;
+    double *const *signal = c->with->signals;
+    m->value->value = low;
+    bh_collect_signals(c, &m->setting, &m->arm, signal[0]);
+    m->value->value = high;
+    bh_collect_signals(c, &m->setting, &m->arm, signal[1]);
+    double *to = bh_collect(c, cause, 0);
+    for (size_t i = 0; to && i < c->parts; i++) {
+        const double usual = c->arm->yield->part[i].signal;
+        to[i] += usual > 0 ? (signal[1][i] - signal[0][i]) / usual * sigma / (high - low) : 0;
+    }
+}
