@@ -6,16 +6,16 @@ set -u
 build=$1 folder=$1/mutation least=100
 export CK_FORK=no LC_ALL=C
 
-# The tests of a file: the one of its name first, then its room's, then those of rooms above.
+# The tests of a file: the one of its name first, then those of its room and of the rooms above, the quickest first.
 programs() {
     room=${1#src/} room=${room%%/*}
-    case $room in physics) above='physics rates run' ;; rates) above='rates run' ;; *) above=run ;; esac
+    case $room in physics) above='physics|rates|run' ;; rates) above='rates|run' ;; *) above=run ;; esac
     {
         ls "$build/tests/$room/test_$(basename "$1" .c)" 2>/dev/null
-        for room in $above; do find "$build/tests/$room" -name 'test_*' ! -name '*.*' ! -name '*_faults' | sort; done
+        grep -E "/tests/($above)/" "$folder/quickest"
     } | awk '!seen[$0]++'
 }
-compile() { $CC $COMPILE -g0 -w -c -o "$2" "$1"; }
+compile() { $CC $COMPILE -O1 -g0 -w -c -o "$2" "$1"; }
 
 # One mistake: prints its number and what became of it.
 try() { # try NUMBER FILE
@@ -26,7 +26,7 @@ try() { # try NUMBER FILE
         return
     fi
     for program in $(programs "$2"); do
-        $CC $COMPILE -pie -o "$new.test" "$program.o" "$new.o" "$build/front.a" "$build/libbeamhours.a" $LINKS || exit 255
+        $CC $COMPILE -pie -Wl,-s -o "$new.test" "$program.o" "$new.o" "$build/front.a" "$build/libbeamhours.a" $LINKS || exit 255
         timeout 60 "$new.test" >"$new.said" 2>&1 || { echo "$1	noticed by $(basename "$program")"; return; }
     done
     echo "$1	survives"
@@ -40,11 +40,14 @@ later='atomic_electron|inclusive|inelastic|quasi_elastic|structure_functions|bac
 formulas() { find "src/$1" -name '*.c' ! -name '*_table.c' | grep -Ev "$later" | sort; }
 # of run/, what multiplies a row out: not what only says it
 rows() { find src/run -name '*.c' ! -name 'explain*' ! -name 'cautions.c' ! -name 'remarks.c' ! -name 'columns.c' | sort; }
-for program in $(programs src/physics/none.c); do # a test that fails anyway would notice everything
+for program in $(find "$build"/tests/physics "$build"/tests/rates "$build"/tests/run -name 'test_*' ! -name '*.*' ! -name '*_faults'); do
+    start=$(date +%s%N) # a test that fails anyway would notice everything
     "$program" >"$folder/said" 2>&1 || { echo "mutate.sh: $program fails before any mistake is made"; exit 1; }
-done
-awk -v out="$folder" -f tests/mutation/mutants.awk keep="${KEEP:-30}" $(formulas physics) \
-    keep="${KEEP:-8}" $(formulas rates) keep="${KEEP:-6}" $(rows) >"$folder/list" || exit 1
+    echo "$(($(date +%s%N) - start)) $program"
+done >"$folder/times" || { cat "$folder/times"; exit 1; }
+sort -n "$folder/times" | cut -d' ' -f2 >"$folder/quickest"
+awk -v out="$folder" -f tests/mutation/mutants.awk keep="${KEEP:-40}" $(formulas physics) \
+    keep="${KEEP:-10}" $(formulas rates) keep="${KEEP:-8}" $(rows) >"$folder/list" || exit 1
 for file in $(cut -f2 "$folder/list" | sort -u); do
     name=$folder/$(basename "$file" .c)
     compile "$file" "$name.o" && objcopy --strip-all "$name.o" "$name.bare" || exit 1
