@@ -251,6 +251,44 @@ START_TEST(spheres_and_fitted_shapes_have_the_measured_radius)
 }
 END_TEST
 
+/* A Fermi shape with the half-density radius that gives the measured rms radius, and a skin of 2.3
+ * fm (a = 0.523 fm), thinner in proportion only where that radius is below 2.3 fm. */
+START_TEST(fitted_shapes_have_the_common_skin)
+{
+    static const struct {
+        int z, a;
+        double radius, skin; /* fm */
+    } rows[] = {{2, 4, 1.6755, 0.523 * 1.6755 / 2.3},
+                {3, 6, 2.5890, 0.523},
+                {73, 181, 5.3507, 0.523},
+                {79, 197, 5.4371, 0.523}};
+    for (int i = 0; i < COUNT(rows); i++) {
+        bh_density shape = {.kind = BH_SHAPE_FERMI_2P};
+        double value[3] = {0.0, rows[i].skin, 0.0}, low = 0.0, high = 8.0;
+        shape.value = value;
+        const double small = 0.01; /* 1/fm: F = 1 - (q r)^2 / 6 */
+        for (int k = 0; k < 50; k++) {
+            value[0] = 0.5 * (low + high);
+            const double f = integrate(&shape, small) / integrate(&shape, 0.0);
+            *(6.0 * (1.0 - f) / (small * small) < rows[i].radius * rows[i].radius ? &low : &high) =
+                value[0];
+        }
+        char name[16];
+        const int set = bh_density_sets(BH_SHAPE_FERMI_2P, rows[i].z, rows[i].a) + 1;
+        (void)snprintf(name, sizeof name, "fermi-2p/%d", set);
+        bh_error err;
+        bh_structure *fitted = bh_structure_new(name, rows[i].z, rows[i].a, &err);
+        ck_assert_msg(fitted != NULL, "%s", err.text);
+        for (double q = 0.2; q < 1.3; q += 0.35) {
+            const double wanted = integrate(&shape, q) / integrate(&shape, 0.0);
+            ck_assert_msg(fabs(factor(fitted, q) - wanted) < 2e-4, "Z = %d at %g: %g, wanted %g",
+                          rows[i].z, q, factor(fitted, q), wanted);
+        }
+        bh_structure_free(fitted);
+    }
+}
+END_TEST
+
 /* Closed form of a sphere and of Helm's surface, where the series gives way to it. */
 START_TEST(spheres_follow_their_formulas)
 {
@@ -280,6 +318,7 @@ int main(void)
     tcase_add_test(tests, a_series_is_smooth_where_a_term_is_singular);
     tcase_add_test(tests, every_nuclide_has_a_default_with_its_radius);
     tcase_add_test(tests, spheres_and_fitted_shapes_have_the_measured_radius);
+    tcase_add_test(tests, fitted_shapes_have_the_common_skin);
     tcase_add_test(tests, spheres_follow_their_formulas);
     return run_suite("physics/density", tests);
 }

@@ -209,14 +209,18 @@ START_TEST(many_at_once_are_the_same)
     for (int b = 0; b < 2; b++) {
         const bh_encounter x = {&beam[b], beam[b].charge, 1, 1, MP, 300.0, s, 0.0};
         const bh_collision in = {beam[b].mass, MP, 300.0};
-        bh_event e[150];
-        double angle[150], got[150];
+        bh_event e[192] = {{0}}; /* nothing is written behind the 150th */
+        double angle[150], got[192];
+        for (int i = 150; i < 192; i++)
+            got[i] = -7.0;
         for (int i = 0; i < 150; i++)
             angle[i] = 0.01 * (i + 1);
         bh_kinematics_batch(&in, 150, angle, BH_BRANCH_FAST, e);
         bh_process_find("elastic")->cross_section(&x, 150, e, got);
         for (int i = 0; i < 150; i++)
             ck_assert(got[i] == one(&x, angle[i]));
+        for (int i = 150; i < 192; i++)
+            ck_assert(got[i] == -7.0);
     }
     bh_structure_free(s);
 }

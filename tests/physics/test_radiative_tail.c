@@ -181,6 +181,19 @@ START_TEST(hard_photons)
     const double thin = bh_radiative_tail_hard(&t.x, t.angle, 0.003 * at);
     ck_assert_msg(wide > 0.002 && wide < 0.012, "%g", wide);
     ck_assert_double_eq_tol(wide / thin, 10.0, 1.0);
+    /* each MeV of the cut adds the tail less its soft form */
+    const double cut = 0.02 * at, h = 0.2, here = at - cut;
+    double tail, ge2, gm2;
+    bh_radiative_tail_exact(&t.x, t.angle, 1, &here, &tail);
+    bh_structure_eval(t.structure, 1, &t.peak.q2, &ge2, &gm2);
+    const bh_collision in = {t.x.beam->mass, t.x.target, t.x.kinetic};
+    const double sigma = bh_one_photon(&in, &t.peak, (bh_vertex){1.0, 1.0}, (bh_vertex){ge2, gm2});
+    const bh_soft soft = bh_soft_of(&in, &t.peak, cut);
+    const double added = (bh_radiative_tail_hard(&t.x, t.angle, cut + h) -
+                          bh_radiative_tail_hard(&t.x, t.angle, cut - h)) /
+                         (2.0 * h);
+    const double wanted = tail / sigma - bh_soft_rate(&soft) / cut;
+    ck_assert_double_eq_tol(added / wanted, 1.0, 1e-3);
     ck_assert(isnan(bh_radiative_tail_hard(&t.x, t.angle, 0.0)));
     ck_assert(isnan(bh_radiative_tail_hard(&t.x, t.angle, 2.0 * at)));
     ck_assert(isnan(bh_radiative_tail_hard(&t.x, t.angle, (double)NAN)));

@@ -273,17 +273,20 @@ START_TEST(many_angles_as_one_by_one)
                                 .recoil = _i == 1,
                                 .branch = BH_BRANCH_FAST};
     enum { ANGLES = 100 };
-    double angle[ANGLES], sigma[ANGLES], momentum[ANGLES];
+    double angle[2 * ANGLES], sigma[2 * ANGLES], momentum[2 * ANGLES];
     const double largest = _i ? BH_PI / 2 : asin(BH_MASS_PROTON / BH_MASS_ALPHA);
     ck_assert_double_eq_tol(bh_channel_largest_angle(&channel), largest, 1e-5);
-    for (int i = 0; i < ANGLES; i++)
+    for (int i = 0; i < 2 * ANGLES; i++) {
+        sigma[i] = momentum[i] = -7; /* nothing is written behind the end */
         angle[i] = 1.5 * largest * (i + 0.5) / ANGLES;
+    }
     bh_channel_eval(&channel, ANGLES, angle, sigma, momentum);
     for (int i = 0; i < ANGLES; i++) {
         double one = 0, p = 0;
         bh_channel_eval(&channel, 1, &angle[i], &one, &p);
         ck_assert(sigma[i] == one && momentum[i] == p);
         ck_assert_int_eq(sigma[i] > 0, angle[i] < largest);
+        ck_assert(sigma[ANGLES + i] == -7 && momentum[ANGLES + i] == -7);
     }
     bh_structure_free(point);
 }
