@@ -273,7 +273,7 @@ START_TEST(fitted_shapes_have_the_common_skin)
             *(6.0 * (1.0 - f) / (small * small) < rows[i].radius * rows[i].radius ? &low : &high) =
                 value[0];
         }
-        char name[16];
+        char name[32];
         const int set = bh_density_sets(BH_SHAPE_FERMI_2P, rows[i].z, rows[i].a) + 1;
         (void)snprintf(name, sizeof name, "fermi-2p/%d", set);
         bh_error err;
