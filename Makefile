@@ -77,6 +77,9 @@ sanitize:                                                ## the tests under ASan
 	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
 valgrind:                                                ## the tests under valgrind
 	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
+valgrind-demo: all                                       ## the main job under valgrind: the demonstrations' tables, one explained row
+	@for c in $(patsubst %,'table --bins %',$(wildcard plans/*.yaml)) 'explain plans/hydrogen-separation.yaml low-1'; do \
+	 valgrind -q --leak-check=full --error-exitcode=99 $(BUILD)/beamhours $$c >$(BUILD)/valgrind.out 2>&1 || { cat $(BUILD)/valgrind.out; exit 1; }; done
 coverage:                                                ## lines of src/ that the tests reach
 	@rm -rf $(BUILD)/cov && $(MAKE) check-run CC=gcc HARDEN= BUILD=$(BUILD)/cov CFLAGS='-O0 -g --coverage'
 	gcovr -r . --object-directory $(BUILD)/cov -f src/ --txt | awk -f tests/rules/coverage.awk
