@@ -125,18 +125,16 @@ static point cubic(const knot *k, double part)
                    left + part * (2.0 * square + 3.0 * part * cube)};
 }
 
+/* Steps are nearly alike: from where the piece would be if they were, a few pieces on. */
 static size_t piece_of_energy(const bh_range *r, double u)
 {
-    size_t low = 0;
-    size_t high = r->count - 1;
-    while (high - low > 1) {
-        const size_t middle = (low + high) / 2;
-        if (u < r->knots[middle].u)
-            high = middle;
-        else
-            low = middle;
-    }
-    return low;
+    const size_t last = r->count - 2;
+    const double at = (u - r->knots[0].u) / STEP;
+    size_t i = at > 0.0 ? (size_t)at : 0;
+    i = i < last ? i : last;
+    while (i < last && u >= r->knots[i + 1].u)
+        i++;
+    return i;
 }
 
 static size_t piece_of_range(const bh_range *r, double range)
@@ -153,6 +151,15 @@ static size_t piece_of_range(const bh_range *r, double range)
     return low;
 }
 
+/* The same from the piece of a larger range, often not far. */
+static size_t piece_below(const bh_range *r, double range, size_t piece)
+{
+    for (int i = 0; i < 4 && piece > 0; i++, piece--)
+        if (range >= r->knots[piece].range)
+            return piece;
+    return piece_of_range(r, range);
+}
+
 /* From the logarithm of an energy within the table. */
 static double range_at(const bh_range *r, double u)
 {
@@ -163,14 +170,14 @@ static double range_at(const bh_range *r, double u)
     return cubic(k, (u - k[0].u) / (k[1].u - k[0].u)).value;
 }
 
-/* And back, for 0 < range, at most the last one.  Newton from the chord: the cubic is close to
- * straight over a step. */
-static double logarithm_at(const bh_range *r, double range)
+/* And back, for 0 < range, at most the last one, in a piece at most `piece`.  Newton from the
+ * chord: the cubic is close to straight over a step. */
+static double logarithm_below(const bh_range *r, double range, size_t piece)
 {
     const knot *first = &r->knots[0];
     if (range <= first->range)
         return first->u + 2.0 * log(range / first->range);
-    const knot *k = &r->knots[piece_of_range(r, range)];
+    const knot *k = &r->knots[piece_below(r, range, piece)];
     double part = (range - k[0].range) / (k[1].range - k[0].range);
     for (int i = 0; i < 8; i++) {
         const point p = cubic(k, part);
@@ -180,6 +187,11 @@ static double logarithm_at(const bh_range *r, double range)
             break;
     }
     return k[0].u + part * (k[1].u - k[0].u);
+}
+
+static double logarithm_at(const bh_range *r, double range)
+{
+    return logarithm_below(r, range, piece_of_range(r, range));
 }
 
 static double full_range(const bh_range *r)
@@ -205,7 +217,10 @@ double bh_range_after(const bh_range *range, double kinetic, double path)
 {
     if (path == 0.0 && kinetic >= 0.0 && kinetic <= range->top)
         return kinetic;
-    return bh_range_energy(range, bh_range_of(range, kinetic) - path);
+    const double left = bh_range_of(range, kinetic) - path;
+    if (!(path > 0.0) || !(left > 0.0))
+        return bh_range_energy(range, left);
+    return exp(logarithm_below(range, left, piece_of_energy(range, log(kinetic))));
 }
 
 double bh_range_lost(const bh_range *range, double kinetic, double path)

@@ -69,5 +69,4 @@ void bh_warn_not_built(const bh_making *making)
     visit(making, &bh_schema_plan, &making->raw);
     warn_model(making, &models->coulomb, "coulomb", "plane-wave");
     warn_model(making, &models->radiative, "radiative", "none");
-    warn_model(making, &models->energy_loss, "energy_loss", "none");
 }

@@ -65,8 +65,8 @@ static bool layers_make_sense(size_t count, const bh_seen_layer *layers)
     return true;
 }
 
-bh_code bh_seen_paths(const bh_seen_view *view, size_t count, const bh_seen_layer *layers,
-                      double *path, bh_error *err)
+static bh_code check(const bh_seen_view *view, size_t count, const bh_seen_layer *layers,
+                     bh_error *err)
 {
     if (!view_makes_sense(view))
         return bh_fail(
@@ -75,6 +75,15 @@ bh_code bh_seen_paths(const bh_seen_view *view, size_t count, const bh_seen_laye
             view->from, view->to, view->angle, view->tilt);
     if (!layers_make_sense(count, layers))
         return bh_fail(err, BH_EDOMAIN, "a target layer has no thickness of 0 cm or more");
+    return BH_OK;
+}
+
+bh_code bh_seen_paths(const bh_seen_view *view, size_t count, const bh_seen_layer *layers,
+                      double *path, bh_error *err)
+{
+    const bh_code code = check(view, count, layers, err);
+    if (code)
+        return code;
     const double slant = 1 / cos(view->tilt);
     const stretch seen = seen_stretch(view, count, layers);
     double at = 0;
@@ -82,6 +91,24 @@ bh_code bh_seen_paths(const bh_seen_view *view, size_t count, const bh_seen_laye
         const double end = at + layers[i].thickness * slant;
         path[i] = slant * seen_share(seen, (stretch){at, end});
         at = end;
+    }
+    return BH_OK;
+}
+
+bh_code bh_seen_spans(const bh_seen_view *view, size_t count, const bh_seen_layer *layers,
+                      bh_seen_span *span, bh_error *err)
+{
+    const bh_code code = check(view, count, layers, err);
+    if (code)
+        return code;
+    const double slant = 1 / cos(view->tilt);
+    const stretch seen = seen_stretch(view, count, layers);
+    double at = 0;
+    for (size_t i = 0; i < count; i++) {
+        const double thickness = layers[i].thickness;
+        span[i].from = fmin(fmax((seen.from - at) / slant, 0), thickness);
+        span[i].to = fmin(fmax((seen.to - at) / slant, span[i].from), thickness);
+        at += thickness * slant;
     }
     return BH_OK;
 }

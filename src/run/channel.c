@@ -2,6 +2,7 @@
 #include "beamhours/run/channel.h"
 
 #include "beamhours/units/constants.h"
+#include "beamhours/units/nuclide.h"
 
 enum { BATCH = 32 };
 
@@ -9,6 +10,21 @@ static bh_collision collision_of(const bh_channel *channel)
 {
     const bh_encounter *e = &channel->encounter;
     return (bh_collision){.mass = e->beam->mass, .target = e->target, .kinetic = e->kinetic};
+}
+
+bh_particle bh_channel_detected(const bh_channel *channel)
+{
+    const bh_encounter *e = &channel->encounter;
+    bh_particle particle = *e->beam;
+    char name[8];
+    if (channel->recoil && !bh_particle_find(bh_nuclide_name(e->z, e->a, name), &particle))
+        particle = (bh_particle){.kind = BH_KIND_ION,
+                                 .charge = e->z,
+                                 .twice_spin = -1,
+                                 .z = e->z,
+                                 .a = e->a,
+                                 .mass = e->target};
+    return particle;
 }
 
 double bh_channel_largest_angle(const bh_channel *channel)

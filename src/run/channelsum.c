@@ -1,4 +1,4 @@
-/* channelsum.c - one channel summed over an arm and its bins. */
+/* channelsum.c - one channel summed over an arm, its bins and the depths of a target. */
 #include "beamhours/run/channelsum.h"
 
 #include <math.h>
@@ -6,11 +6,15 @@
 
 #include "beamhours/rates/average.h"
 #include "beamhours/rates/bite.h"
+#include "beamhours/run/arriving.h"
+#include "beamhours/run/energies.h"
 #include "beamhours/units/constants.h"
 
 enum { BATCH = 64 };
 
-/* What sums are kept under; bytes between members are zero. */
+/* --- what sums are kept under --- */
+
+/* Numbers of fixed size; bytes between members are zero. */
 struct key {
     const bh_process *process;
     const bh_structure *structure;
@@ -18,47 +22,103 @@ struct key {
     int charge, z, a, recoil, branch, bins, cut, sensitivities, shape;
     double target, kinetic, momentum_from, momentum_to;
     double shape_numbers[9];
-    double edges[BH_MOST_BINS + 1];
 };
 
-static size_t fill_key(const bh_channel_request *r, struct key *k)
+/* The room that the key is written into. */
+struct writing {
+    unsigned char *room;
+    size_t used, size;
+    bool full;
+};
+
+static void write_bytes(struct writing *w, const void *bytes, size_t size)
+{
+    w->full = w->full || size > w->size - w->used;
+    if (w->full)
+        return;
+    memcpy(w->room + w->used, bytes, size);
+    w->used += size;
+}
+
+static void write_numbers(const bh_channel_request *r, struct writing *w)
 {
     const bh_encounter *e = &r->channel.encounter;
     const bh_acceptance_spec *s = &r->acceptance;
-    const size_t fixed = offsetof(struct key, edges);
-    memset(k, 0, fixed);
-    k->process = r->channel.process;
-    k->structure = e->structure;
-    memcpy(k->beam, e->beam->name, strlen(e->beam->name));
-    k->charge = e->charge;
-    k->z = e->z;
-    k->a = e->a;
-    k->recoil = r->channel.recoil;
-    k->branch = (int)r->channel.branch;
-    k->bins = r->bins ? s->bins : 0;
-    k->cut = r->cut;
-    k->sensitivities = r->sensitivities;
-    k->shape = (int)s->shape;
-    k->target = e->target;
-    k->kinetic = e->kinetic;
-    k->momentum_from = r->momentum_from;
-    k->momentum_to = r->momentum_to;
+    struct key k;
+    memset(&k, 0, sizeof k);
+    k.process = r->channel.process;
+    k.structure = e->structure;
+    memcpy(k.beam, e->beam->name, strlen(e->beam->name));
+    k.charge = e->charge;
+    k.z = e->z;
+    k.a = e->a;
+    k.recoil = r->channel.recoil;
+    k.branch = (int)r->channel.branch;
+    k.bins = r->bins ? s->bins : 0;
+    k.cut = r->cut;
+    k.sensitivities = r->sensitivities;
+    k.shape = (int)s->shape;
+    k.target = e->target;
+    k.kinetic = e->kinetic;
+    k.momentum_from = r->momentum_from;
+    k.momentum_to = r->momentum_to;
     const double numbers[] = {
         s->angle,     s->in_plane_from, s->in_plane_to, s->out_of_plane_from, s->out_of_plane_to,
         s->ring_from, s->ring_to,       s->azimuth,     s->solid_angle};
-    memcpy(k->shape_numbers, numbers, sizeof numbers);
-    if (!s->edges || !r->bins)
-        return fixed;
-    memcpy(k->edges, s->edges, ((size_t)s->bins + 1) * sizeof(double));
-    return fixed + ((size_t)s->bins + 1) * sizeof(double);
+    memcpy(k.shape_numbers, numbers, sizeof numbers);
+    write_bytes(w, &k, sizeof k);
+    if (s->edges && r->bins)
+        write_bytes(w, s->edges, ((size_t)s->bins + 1) * sizeof(double));
+}
+
+/* What a way adds where energy is lost: the vertices, and what lies behind them. */
+static void write_way(const bh_channel_request *r, const bh_leaver *leaver, struct writing *w)
+{
+    const bh_way *way = r->way;
+    const double frame[] = {way->cosine, way->sine, way->wall_radius, (double)way->layer_count,
+                            way->ring ? way->azimuth : 0};
+    write_bytes(w, frame, sizeof frame);
+    for (size_t i = 0; i < way->sheet_count; i++) {
+        const bh_sheet *s = &way->sheets[i];
+        const double size[] = {s->thickness, s->areal};
+        write_bytes(w, size, sizeof size);
+        write_bytes(w, &leaver->ranges[i], sizeof(const bh_range *));
+    }
+    for (size_t i = 0; i < r->vertex_count; i++) {
+        const bh_vertex *v = &r->vertices[i];
+        const double where[] = {(double)v->layer, v->depth, v->weight, v->towards};
+        write_bytes(w, where, sizeof where);
+        write_bytes(w, v->kinetic, sizeof v->kinetic);
+    }
+}
+
+/* --- one function to be fitted --- */
+
+/* With the energies it is averaged over and the angles that are kept. */
+struct task {
+    bh_channel channel;
+    bh_energies energies;
+    bh_interval allowed[BH_MOST_ARRIVALS];
+    bh_average_request request;
+};
+
+/* The mean cross section over the depths, as far as they differ in energy. */
+static void evaluate_batch(const struct task *t, size_t n, const double *theta, double *value)
+{
+    double momentum[BATCH], sigma[BATCH];
+    bh_channel there = t->channel;
+    for (int k = 0; k < t->energies.count; k++) {
+        there.encounter.kinetic = t->energies.kinetic[k];
+        bh_channel_eval(&there, n, theta, sigma, momentum);
+        for (size_t i = 0; i < n; i++)
+            value[i] = (k ? value[i] : 0) + t->energies.weight[k] * sigma[i];
+    }
 }
 
 static void evaluate(void *context, size_t n, const double *theta, double *value)
 {
-    const bh_channel *channel = context;
-    double momentum[BATCH];
     for (size_t i = 0; i < n; i += BATCH)
-        bh_channel_eval(channel, n - i < BATCH ? n - i : BATCH, theta + i, value + i, momentum);
+        evaluate_batch(context, n - i < BATCH ? n - i : BATCH, theta + i, value + i);
 }
 
 static bh_detected detected_of(const bh_channel *channel)
@@ -68,28 +128,34 @@ static bh_detected detected_of(const bh_channel *channel)
     return channel->branch == BH_BRANCH_SLOW ? BH_DETECTED_SLOW : BH_DETECTED_SCATTERED;
 }
 
-/* One function to be fitted, with the angles that the bite allows. */
-struct task {
-    bh_channel channel;
-    bh_interval allowed[1];
-    bh_average_request request;
-};
-
-static bh_code set_up(const bh_channel_request *r, struct task *t, bh_error *err)
+/* All but the energies and what is kept. */
+static void set_function(const bh_channel_request *r, struct task *t)
 {
-    const bh_encounter *e = &r->channel.encounter;
-    const bh_collision in = {.mass = e->beam->mass, .target = e->target, .kinetic = e->kinetic};
     const double largest = bh_channel_largest_angle(&r->channel);
     t->channel = r->channel;
     t->request = (bh_average_request){.function = evaluate,
-                                      .context = &t->channel,
+                                      .context = t,
                                       .limit = largest < BH_PI ? largest : 0,
-                                      .cut = r->cut,
                                       .allowed = t->allowed};
+}
+
+/* Where nothing is lost: one energy, and the bite in closed form. */
+static bh_code set_up_lossless(const bh_channel_request *r, int boost, struct task *t,
+                               bh_error *err)
+{
+    static const double by[BH_BOOSTS] = {0, -BH_STEP_MOMENTUM, BH_STEP_MOMENTUM};
+    const bh_encounter *e = &r->channel.encounter;
+    const double kinetic = boost ? bh_boosted_kinetic(e->beam, e->kinetic, by[boost]) : e->kinetic;
+    const bh_collision in = {.mass = e->beam->mass, .target = e->target, .kinetic = kinetic};
     const bh_bite bite = {.detected = detected_of(&r->channel),
                           .momentum_from = r->momentum_from,
                           .momentum_to = r->momentum_to};
-    return r->cut ? bh_bite_angles(&in, &bite, t->allowed, &t->request.allowed_count, err) : BH_OK;
+    t->energies = (bh_energies){.count = 1, .kinetic = {kinetic}, .weight = {1}};
+    t->request.cut = r->cut;
+    t->request.allowed_count = 0;
+    return r->cut && r->momentum_to > r->momentum_from
+               ? bh_bite_angles(&in, &bite, t->allowed, &t->request.allowed_count, err)
+               : BH_OK;
 }
 
 /* Where the arm is, and where it is moved to. */
@@ -135,6 +201,7 @@ static bh_code set_places(const bh_channel_request *r, struct places *p, double 
 /* Sums being made. */
 struct making {
     const bh_channel_request *request;
+    const bh_leaver *leaver; /* NULL: nothing is lost */
     bh_average_workspace *averages;
     bh_sum_scratch *scratch;
     struct places places;
@@ -157,92 +224,145 @@ static const bh_average *part_of(const struct making *m, int part)
     return part ? &m->scratch->bins[part - 1] : &m->scratch->whole;
 }
 
-static bh_code sum_total(struct making *m, struct task *t, bh_error *err)
+/* The sums of a task count with `weight`: 1, or the share of one depth. */
+static bh_code sum_total(struct making *m, const struct task *t, double weight, bh_error *err)
 {
     bh_code code = bh_average_fit(&t->request, m->places.polar, m->averages, err);
     if (!code)
         code = add_up(m, &t->request, &m->places.at, err);
     for (int i = 0; !code && i < m->parts; i++) {
-        m->sums[i].total = part_of(m, i)->total;
-        m->sums[i].kept = part_of(m, i)->kept;
-        m->sums[i].converged = part_of(m, i)->converged;
+        m->sums[i].total += weight * part_of(m, i)->total;
+        m->sums[i].kept += weight * part_of(m, i)->kept;
+        m->sums[i].converged = m->sums[i].converged && part_of(m, i)->converged;
     }
     return code;
 }
 
-static bh_code sum_moved(struct making *m, struct task *t, bh_error *err)
+static bh_code sum_moved(struct making *m, const struct task *t, double weight, bh_error *err)
 {
     bh_code code = BH_OK;
     for (int k = 0; !code && k < 2; k++) {
         if (m->places.turns)
             code = add_up(m, &t->request, &m->places.moved[k], err);
         for (int i = 0; !code && i < m->parts; i++)
-            m->sums[i].moved[k] = m->places.turns ? part_of(m, i)->kept : (double)NAN;
+            m->sums[i].moved[k] += m->places.turns ? weight * part_of(m, i)->kept : (double)NAN;
     }
     return code;
 }
 
-/* The kinetic energy of a momentum larger by the share `by`. */
-static double boosted_kinetic(const bh_encounter *e, double by)
+static bh_code sum_boosted(struct making *m, const struct task *t, double weight, int boost,
+                           bh_error *err)
 {
-    const double mass = e->beam->mass;
-    const double p = sqrt(e->kinetic * (e->kinetic + 2 * mass)) * (1 + by);
-    return p * p / (sqrt(p * p + mass * mass) + mass);
+    bh_code code = bh_average_fit(&t->request, m->places.polar, m->averages, err);
+    if (!code)
+        code = add_up(m, &t->request, &m->places.at, err);
+    for (int i = 0; !code && i < m->parts; i++)
+        m->sums[i].boosted[boost - BH_BOOSTED_DOWN] += weight * part_of(m, i)->kept;
+    return code;
 }
 
-static bh_code sum_boosted(struct making *m, bh_error *err)
+static bh_code sum_task(struct making *m, const struct task *t, double weight, int boost,
+                        bh_error *err)
 {
+    if (boost)
+        return sum_boosted(m, t, weight, boost, err);
+    bh_code code = sum_total(m, t, weight, err);
+    if (!code && m->request->sensitivities)
+        code = sum_moved(m, t, weight, err);
+    return code;
+}
+
+static bh_arrival arrival_of(const struct making *m, int boost)
+{
+    return (bh_arrival){.leaver = m->leaver,
+                        .channel = &m->request->channel,
+                        .from = m->request->cut ? m->request->momentum_from : 0,
+                        .to = m->request->cut ? m->request->momentum_to : (double)INFINITY,
+                        .polar = m->places.polar,
+                        .boost = boost};
+}
+
+/* Each depth with the angles at which its particles arrive within the bite. */
+static bh_code sum_depths(struct making *m, struct task *t, int boost, bh_error *err)
+{
+    const bh_channel_request *r = m->request;
+    const bh_arrival arrival = arrival_of(m, boost);
     bh_code code = BH_OK;
-    for (int k = 0; !code && k < 2; k++) {
-        bh_channel_request r = *m->request;
-        r.channel.encounter.kinetic =
-            boosted_kinetic(&r.channel.encounter, k ? BH_STEP_MOMENTUM : -BH_STEP_MOMENTUM);
-        struct task t;
-        code = set_up(&r, &t, err);
-        if (!code)
-            code = bh_average_fit(&t.request, m->places.polar, m->averages, err);
-        if (!code)
-            code = add_up(m, &t.request, &m->places.at, err);
-        for (int i = 0; !code && i < m->parts; i++)
-            m->sums[i].boosted[k] = part_of(m, i)->kept;
+    t->request.cut = true;
+    for (size_t i = 0; !code && i < r->vertex_count; i++) {
+        const bh_vertex *v = &r->vertices[i];
+        t->energies = (bh_energies){.count = 1, .kinetic = {v->kinetic[boost]}, .weight = {1}};
+        t->request.allowed_count = bh_arrival_angles(&arrival, v, t->allowed);
+        code = sum_task(m, t, v->weight, boost, err);
     }
     return code;
+}
+
+static bh_code sum_boost(struct making *m, bh_arriving arriving, int boost, bh_error *err)
+{
+    struct task t;
+    set_function(m->request, &t);
+    if (!m->leaver) {
+        const bh_code code = set_up_lossless(m->request, boost, &t, err);
+        return code ? code : sum_task(m, &t, 1, boost, err);
+    }
+    if (arriving == BH_ARRIVE_SOME)
+        return sum_depths(m, &t, boost, err);
+    bh_energies_of(m->request->vertices, m->request->vertex_count, boost, &t.energies);
+    t.request.cut = arriving == BH_ARRIVE_NONE;
+    t.request.allowed_count = 0;
+    return sum_task(m, &t, 1, boost, err);
 }
 
 static bh_code make(struct making *m, bh_error *err)
 {
-    struct task t;
-    bh_code code = set_places(m->request, &m->places, m->scratch->edges[0], err);
-    if (!code)
-        code = set_up(m->request, &t, err);
-    if (!code)
-        code = sum_total(m, &t, err);
-    if (!code && m->request->sensitivities)
-        code = sum_moved(m, &t, err);
-    if (!code && m->request->sensitivities)
-        code = sum_boosted(m, err);
+    const bh_channel_request *r = m->request;
+    bh_arriving arriving = BH_ARRIVE_ALL;
+    bh_code code = set_places(r, &m->places, m->scratch->edges[0], err);
+    if (!code && m->leaver) {
+        const bh_arrival arrival = arrival_of(m, BH_AS_IT_IS);
+        arriving = bh_arrival_at_a_glance(&arrival, r->vertices, r->vertex_count);
+    }
+    for (int i = 0; i < m->parts; i++)
+        m->sums[i].converged = true;
+    for (int boost = 0; !code && boost < (r->sensitivities ? BH_BOOSTS : 1); boost++)
+        code = sum_boost(m, arriving, boost, err);
     return code;
 }
 
 const bh_channel_sum *bh_channel_sums(bh_workspace *workspace, const bh_channel_request *request,
                                       bh_error *err)
 {
-    struct key key;
-    const size_t size = fill_key(request, &key);
-    const bh_channel_sum *known = bh_workspace_recall(workspace, &key, size);
-    if (known)
-        return known;
     struct making m = {.request = request,
                        .averages = bh_workspace_averages(workspace),
                        .scratch = bh_workspace_scratch(workspace),
                        .parts = request->bins ? 1 + request->acceptance.bins : 1};
-    m.sums = bh_workspace_keep(workspace, &key, size, (size_t)m.parts * sizeof *m.sums);
+    bh_leaver leaver = {.ranges = request->ranges};
+    struct writing key = {.room = m.scratch->key, .size = sizeof m.scratch->key};
+    write_numbers(request, &key);
+    if (request->way && request->way->losing) {
+        const bh_particle detected = bh_channel_detected(&request->channel);
+        const bh_code code =
+            bh_leaver_make(workspace, request->way, &detected, request->way->kinetic, &leaver);
+        if (code) {
+            bh_fail(err, code, "%s", bh_code_text(code));
+            return NULL;
+        }
+        m.leaver = &leaver;
+        write_way(request, &leaver, &key);
+    }
+    if (key.full) /* too long to be compared: known by a number that nothing else has */
+        key.used = bh_workspace_number(workspace, key.room);
+    const bh_channel_sum *known = bh_workspace_recall(workspace, key.room, key.used);
+    if (known)
+        return known;
+    m.sums = bh_workspace_keep(workspace, key.room, key.used, (size_t)m.parts * sizeof *m.sums);
     if (!m.sums) {
         bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
         return NULL;
     }
     if (!make(&m, err))
         return m.sums;
-    bh_workspace_drop(workspace, &key, size);
+    bh_workspace_drop(workspace, key.room, key.used);
     return NULL;
 }

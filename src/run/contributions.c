@@ -6,13 +6,18 @@
 static bh_code integrals(bh_yielder *yielder, const bh_view *view, int part, bh_contribution *c,
                          bh_error *err)
 {
+    const bh_nuclei nuclei = {
+        .list = view->list, .nuclide = c->presence->nuclide, .all = true, .only = c->presence};
+    const size_t count = bh_view_vertices(yielder, &view->way, &nuclei);
     bh_channels channels;
     const bh_code code = bh_view_channels(yielder, view, c->struck, &channels, err);
     if (code)
         return code;
     double total = 0, kept = 0;
-    for (size_t k = 0; k < channels.count; k++) {
-        bh_channel_request request = bh_view_request(view, &channels.list[k]);
+    c->structure = channels.list[0].encounter.structure;
+    for (size_t k = 0; count > 0 && k < channels.count; k++) {
+        bh_channel_request request =
+            bh_view_request(yielder, view, &channels.list[k], &view->way, count);
         request.sensitivities = c->presence->origin == BH_ORIGIN_SIGNAL;
         const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
         if (!sums)
@@ -20,7 +25,6 @@ static bh_code integrals(bh_yielder *yielder, const bh_view *view, int part, bh_
         total += sums[part].total;
         kept += sums[part].kept;
     }
-    c->structure = channels.list[0].encounter.structure;
     c->cross_section = total;
     c->kept = total > 0 ? kept / total : 0;
     return BH_OK;
@@ -31,7 +35,7 @@ bh_code bh_yield_contributions(bh_yielder *yielder, const bh_yield *yield, int p
 {
     const bh_view *view = &yield->view;
     const bh_struck_list *list = view->list;
-    bh_code code = bh_view_paths(yielder, view, list->target, err);
+    bh_code code = bh_view_paths(yielder, view, list->target, &view->way, err);
     for (size_t i = 0; !code && i < list->presence_count; i++) {
         const bh_presence *p = &list->presences[i];
         bh_contribution *c = &contributions[i];

@@ -57,9 +57,41 @@ static void put_kinematics(bh_yielder *yielder, const struct source *s, bh_row *
     put_event(s, &event, row);
     bh_row_put(row, BH_COL_BIN, row->bin ? row->bin : none, BH_WHY_WHOLE_ARM);
     bh_row_put(row, BH_COL_BEAM_KINETIC, kinetic, BH_WHY_NOTHING);
-    bh_row_put(row, BH_COL_VERTEX_KINETIC, kinetic, BH_WHY_NOTHING); /* no energy loss yet */
+    bh_row_put(row, BH_COL_VERTEX_KINETIC, s->view->vertex_kinetic, BH_WHY_NOTHING);
     bh_row_put(row, BH_COL_ANGLE, s->part->angle / BH_DEGREE, BH_WHY_EMPTY_BIN);
-    bh_row_put(row, BH_COL_CENTRAL_MOMENTUM, s->view->central_momentum, BH_WHY_UNREACHED);
+    bh_row_put(row, BH_COL_CENTRAL_MOMENTUM, s->view->central_momentum,
+               s->view->stuck ? BH_WHY_STAYS_INSIDE : BH_WHY_UNREACHED);
+}
+
+/* A beam that does not come through makes no rate that could be computed. */
+static void put_blocked(bh_row *row)
+{
+    static const bh_column_id empty[] = {BH_COL_VERTEX_KINETIC,
+                                         BH_COL_POINT_CROSS_SECTION,
+                                         BH_COL_CROSS_SECTION,
+                                         BH_COL_SEEN,
+                                         BH_COL_LUMINOSITY,
+                                         BH_COL_KEPT,
+                                         BH_COL_SIGNAL,
+                                         BH_COL_BACKGROUND,
+                                         BH_COL_LIVE,
+                                         BH_COL_COUNTS,
+                                         BH_COL_STATISTICAL,
+                                         BH_COL_SYSTEMATIC,
+                                         BH_COL_HOURS_TO_GOAL,
+                                         BH_COL_CENTRAL_MOMENTUM,
+                                         BH_COL_PER_MRAD,
+                                         BH_COL_PER_PERMILLE,
+                                         BH_COL_SCATTERED_ANGLE,
+                                         BH_COL_SCATTERED_KINETIC,
+                                         BH_COL_RECOIL_KINETIC,
+                                         BH_COL_SCATTERED_MOMENTUM,
+                                         BH_COL_RECOIL_ANGLE,
+                                         BH_COL_Q2,
+                                         BH_COL_Q,
+                                         BH_COL_EPSILON};
+    for (size_t i = 0; i < sizeof empty / sizeof empty[0]; i++)
+        bh_row_put(row, empty[i], (double)NAN, BH_WHY_STOPPED);
 }
 
 static void put_rates(const struct source *s, bh_row *row)
@@ -126,4 +158,6 @@ void bh_row_fill(bh_yielder *yielder, const bh_setting_hours *hours, const bh_ar
     put_kinematics(yielder, &s, row);
     put_rates(&s, row);
     put_hours(&s, row);
+    if (s.view->blocked)
+        put_blocked(row);
 }

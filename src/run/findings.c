@@ -1,5 +1,6 @@
 /* findings.c - what the numbers of an arm rest on, as warnings. */
 #include <math.h>
+#include <stdio.h>
 
 #include "beamhours/run/yield.h"
 #include "beamhours/units/constants.h"
@@ -114,9 +115,78 @@ static void find_in_arm(bh_yielder *yielder, const bh_yield *yield, double signa
     said.kind = BH_REMARK_NOT_CONVERGED;
     if (!yield->converged)
         bh_remarks_note(yielder->remarks, &said);
-    said.kind = BH_REMARK_NO_SIGNAL;
-    if (!(signal > 0))
+    said.kind = yield->view.stuck ? BH_REMARK_STAYS_INSIDE : BH_REMARK_NO_SIGNAL;
+    if (yield->view.stuck || !(signal > 0))
         bh_remarks_note(yielder->remarks, &said);
+}
+
+static const char *layer_name(const bh_target *target, size_t layer, char *out, size_t size)
+{
+    const bh_layer *l = &target->layers[layer];
+    snprintf(out, size, "layer %zu (%s)", layer + 1, l->material->name);
+    return out;
+}
+
+static void find_stop(bh_yielder *yielder, const bh_view *view)
+{
+    const bh_target *target = view->setting->target;
+    const size_t layer = view->way.stops;
+    char what[96];
+    bh_remark r = {.kind = view->blocked ? BH_REMARK_BEAM_STOPS : BH_REMARK_STOPS_BEHIND,
+                   .key = "layers",
+                   .who = target->name.text,
+                   .setting = view->setting->name};
+    if (layer == target->layer_count)
+        return;
+    r.at = target->layers[layer].at;
+    r.what = layer_name(target, layer, what, sizeof what);
+    bh_remarks_note(yielder->remarks, &r);
+}
+
+/* Where energy loss cannot be computed. */
+static void find_unslowed(bh_yielder *yielder, const bh_view *view)
+{
+    const bh_way *way = &view->way;
+    if (way->unslowed == way->sheet_count)
+        return;
+    const bh_target *target = view->setting->target;
+    bh_remarks_note(yielder->remarks, &(bh_remark){.kind = BH_REMARK_NOT_SLOWED,
+                                                   .at = target->layers[way->unslowed].at,
+                                                   .key = "layers",
+                                                   .who = target->name.text,
+                                                   .what = way->why.text,
+                                                   .setting = view->setting->name});
+}
+
+/* From this current a liquid's density is worth a thought. */
+static void find_liquid(bh_yielder *yielder, const bh_view *view)
+{
+    static const double some = 5e-6; /* [A] */
+    const bh_setting *setting = view->setting;
+    const double current = setting->beam.current.value;
+    for (size_t l = 0; l < setting->target->layer_count; l++) {
+        const bh_layer *layer = &setting->target->layers[l];
+        if (layer->material->state != BH_STATE_LIQUID || layer->density_loss.given ||
+            !(current > some))
+            continue;
+        bh_remarks_note(yielder->remarks, &(bh_remark){.kind = BH_REMARK_LIQUID,
+                                                       .at = layer->at,
+                                                       .key = "layers",
+                                                       .who = setting->target->name.text,
+                                                       .what = layer->material->name,
+                                                       .setting = setting->name,
+                                                       .low = current * 1e6,
+                                                       .high = current * 1e6});
+    }
+}
+
+static void find_passage(bh_yielder *yielder, const bh_view *view)
+{
+    find_liquid(yielder, view);
+    if (!view->way.losing)
+        return;
+    find_stop(yielder, view);
+    find_unslowed(yielder, view);
 }
 
 bh_code bh_findings(bh_yielder *yielder, const bh_yield *yield, bh_error *err)
@@ -125,9 +195,12 @@ bh_code bh_findings(bh_yielder *yielder, const bh_yield *yield, bh_error *err)
         return BH_OK;
     const bh_struck_list *list = yield->view.list;
     double all = 0, signal = 0;
+    find_passage(yielder, &yield->view);
+    if (yield->view.blocked)
+        return BH_OK;
     for (size_t n = 0; n < list->count; n++) {
         all += yielder->seen[n].reached;
-        signal += yielder->seen[n].signal > 0 ? yielder->seen[n].reached : 0;
+        signal += yielder->seen[n].of[BH_ORIGIN_SIGNAL] > 0 ? yielder->seen[n].reached : 0;
     }
     find_in_arm(yielder, yield, signal);
     bh_code code = BH_OK;

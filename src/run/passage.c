@@ -70,8 +70,7 @@ static bh_code find_range(bh_workspace *workspace, bh_way *way, size_t i, bh_she
     return sheet->range || why.code == BH_EDOMAIN ? BH_OK : why.code;
 }
 
-/* The kinetic energy at a relative change of momentum. */
-static double boosted(const bh_particle *particle, double kinetic, double by)
+double bh_boosted_kinetic(const bh_particle *particle, double kinetic, double by)
 {
     const double mass = particle->mass;
     const double p = sqrt(kinetic * (kinetic + 2 * mass)) * (1 + by);
@@ -87,8 +86,8 @@ static double left(const bh_range *range, double kinetic, double path)
 static void send(bh_way *way, bh_sheet *sheets)
 {
     const double k = way->kinetic;
-    double kinetic[BH_BOOSTS] = {k, boosted(&way->beam, k, -BH_STEP_MOMENTUM),
-                                 boosted(&way->beam, k, BH_STEP_MOMENTUM)};
+    double kinetic[BH_BOOSTS] = {k, bh_boosted_kinetic(&way->beam, k, -BH_STEP_MOMENTUM),
+                                 bh_boosted_kinetic(&way->beam, k, BH_STEP_MOMENTUM)};
     bh_crossed before = {.path = 0};
     way->stops = way->layer_count;
     for (size_t i = 0; i < way->layer_count; i++) {

@@ -91,6 +91,10 @@ static void set_key(char to[TEXT], const bh_remark *r)
         snprintf(to, TEXT, "arms.%s.%s", or_empty(r->who), r->key);
         break;
     case BH_REMARK_NO_EMPTY:
+    case BH_REMARK_BEAM_STOPS:
+    case BH_REMARK_STOPS_BEHIND:
+    case BH_REMARK_NOT_SLOWED:
+    case BH_REMARK_LIQUID:
         snprintf(to, TEXT, "targets.%s.%s", or_empty(r->who), r->key);
         break;
     case BH_REMARK_BIN_TOO_SLOW:
@@ -98,6 +102,7 @@ static void set_key(char to[TEXT], const bh_remark *r)
         break;
     case BH_REMARK_NOT_CONVERGED:
     case BH_REMARK_NO_SIGNAL:
+    case BH_REMARK_STAYS_INSIDE:
         snprintf(to, TEXT, "%s.%s", r->key, or_empty(r->setting));
         break;
     default:
@@ -173,6 +178,31 @@ static void say_model(const struct kept *k, const struct words *w, bh_diags *dia
     }
 }
 
+/* Where the beam or what it scatters does not come through. */
+static void say_passage(const struct kept *k, const struct words *w, bh_diags *diags)
+{
+    const bh_remark *r = &k->remark;
+    switch (r->kind) {
+    case BH_REMARK_BEAM_STOPS:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_BEAM_STOPS, k->what,
+                     w->where);
+        break;
+    case BH_REMARK_STOPS_BEHIND:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_STOPS_BEHIND, k->what,
+                     w->where);
+        break;
+    case BH_REMARK_STAYS_INSIDE:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_STAYS_INSIDE, k->who,
+                     w->where);
+        break;
+    case BH_REMARK_NOT_SLOWED:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NOT_SLOWED, k->what);
+        break;
+    default:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_LIQUID, k->what, w->high);
+    }
+}
+
 static void say(const struct kept *k, const struct words *w, bh_diags *diags)
 {
     const bh_remark *r = &k->remark;
@@ -195,6 +225,13 @@ static void say(const struct kept *k, const struct words *w, bh_diags *diags)
     case BH_REMARK_NO_SIGNAL:
         bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NO_SIGNAL, k->what, k->who,
                      w->where);
+        break;
+    case BH_REMARK_BEAM_STOPS:
+    case BH_REMARK_STOPS_BEHIND:
+    case BH_REMARK_STAYS_INSIDE:
+    case BH_REMARK_NOT_SLOWED:
+    case BH_REMARK_LIQUID:
+        say_passage(k, w, diags);
         break;
     default:
         say_model(k, w, diags);

@@ -2,6 +2,7 @@
 #include "beamhours/run/table.h"
 
 #include <stdlib.h>
+#include <string.h>
 
 #include "beamhours/base/arena.h"
 #include "beamhours/base/number.h"
@@ -104,8 +105,10 @@ static void take_notes(bh_table *table)
 {
     size_t n = 0;
     table->notes[n++] = "Rates are without radiation: radiative_factor is 1 in every row.";
-    table->notes[n++] = "Rates are without energy loss in the target: every collision happens at "
-                        "the energy that enters it.";
+    const char *losses = table->plan->models.energy_loss.text;
+    if (losses && strcmp(losses, "none") == 0)
+        table->notes[n++] = "Energy loss is switched off (models.energy_loss: none): every "
+                            "collision happens at the energy that enters the target.";
     for (size_t s = 0; s < table->plan->setting_count; s++)
         if (table->plan->settings[s].beam.particle.kind != BH_KIND_LEPTON) {
             table->notes[n] = "Hadron and ion beams scatter by their charge alone: nuclear forces "

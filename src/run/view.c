@@ -61,7 +61,7 @@ bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view, const bh_stru
                                      .z = struck->z,
                                      .a = struck->a,
                                      .target = struck->mass,
-                                     .kinetic = beam->kinetic_energy.value}};
+                                     .kinetic = view->vertex_kinetic}};
     bh_encounter *e = &base.encounter;
     e->structure =
         bh_workspace_structure(yielder->workspace, model_for(yielder, e), e->z, e->a, err);
@@ -77,29 +77,121 @@ bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view, const bh_stru
     return BH_OK;
 }
 
-/* The momentum the arm is set to, and its bite. */
-static bh_code set_momentum(bh_yielder *yielder, bh_view *view, bh_error *err)
+static double momentum_of(double mass, double kinetic)
+{
+    return sqrt(kinetic * (kinetic + 2 * mass));
+}
+
+bh_channel_request bh_view_request(const bh_yielder *yielder, const bh_view *view,
+                                   const bh_channel *channel, const bh_way *way, size_t count)
+{
+    const bh_value *threshold = &view->arm->arm.threshold;
+    const double mass = channel->recoil ? channel->encounter.target : channel->encounter.beam->mass;
+    const double least = threshold->given ? momentum_of(mass, threshold->value) : 0;
+    return (bh_channel_request){.channel = *channel,
+                                .acceptance = view->spec,
+                                .cut = view->cut || least > 0,
+                                .momentum_from = fmax(view->bite_from, least),
+                                .momentum_to = fmax(view->bite_to, least),
+                                .bins = view->parts > 1,
+                                .way = way,
+                                .vertices = yielder->vertices,
+                                .vertex_count = count,
+                                .ranges = yielder->ranges};
+}
+
+/* Momentum of the detected particle on the arm's axis when it arrives, mean over the depths that it
+ * comes out of; NAN where there is none.  The vertices are in the yielder. */
+static bh_code arriving(bh_yielder *yielder, const bh_view *view, const bh_channel *channel,
+                        size_t count, double *momentum)
+{
+    bh_leaver leaver = {.ranges = yielder->ranges};
+    const bh_particle particle = bh_channel_detected(channel);
+    const bh_code code = bh_leaver_make(yielder->workspace, &view->way, &particle,
+                                        view->setting->beam.kinetic_energy.value, &leaver);
+    double sum = 0, weight = 0;
+    for (size_t i = 0; !code && i < count; i++) {
+        const bh_vertex *v = &yielder->vertices[i];
+        bh_channel there = *channel;
+        bh_event event;
+        there.encounter.kinetic = v->kinetic[BH_AS_IT_IS];
+        if (view->axis > bh_channel_largest_angle(&there) ||
+            bh_channel_event(&there, view->axis, &event, NULL))
+            continue;
+        const double kinetic = channel->recoil ? event.recoil_kinetic : event.scattered_kinetic;
+        const double left = bh_leaver_left(&leaver, v, view->axis, kinetic);
+        if (!(left > 0))
+            continue;
+        sum += v->weight * momentum_of(particle.mass, left);
+        weight += v->weight;
+    }
+    *momentum = weight > 0 ? sum / weight : (double)NAN;
+    return code;
+}
+
+/* Without losses, at the mean energy. */
+static void set_central(bh_view *view, const bh_channel *first)
+{
+    bh_event event;
+    if (view->axis <= bh_channel_largest_angle(first) &&
+        !bh_channel_event(first, view->axis, &event, NULL))
+        view->central_momentum = first->recoil ? event.recoil_momentum : event.scattered_momentum;
+}
+
+/* The momentum the arm is set to, and its bite; `count` vertices of the scatterer. */
+static bh_code set_momentum(bh_yielder *yielder, bh_view *view, size_t count, bh_error *err)
 {
     const bh_arm *arm = &view->arm->arm;
     const bh_struck *struck = &view->list->nuclides[view->list->main];
     bh_channels channels = {.count = 0};
-    const bh_code code = bh_view_channels(yielder, view, struck, &channels, err);
+    bh_code code = bh_view_channels(yielder, view, struck, &channels, err);
     if (code)
         return code;
-    const bh_channel *first = &channels.list[0];
-    bh_event event;
     view->central_momentum = (double)NAN;
+    set_central(view, &channels.list[0]);
+    if (view->way.losing && view->central_momentum > 0) {
+        code = arriving(yielder, view, &channels.list[0], count, &view->central_momentum);
+        view->stuck = !(view->central_momentum > 0) && !view->blocked;
+    }
     if (view->arm->central_momentum.given)
         view->central_momentum = view->arm->central_momentum.value;
-    else if (view->axis <= bh_channel_largest_angle(first) &&
-             !bh_channel_event(first, view->axis, &event, NULL))
-        view->central_momentum = first->recoil ? event.recoil_momentum : event.scattered_momentum;
+    view->bite_to = (double)INFINITY;
     view->cut = arm->momentum_bite.given && view->central_momentum > 0;
-    if (!view->cut)
-        return BH_OK;
+    if (!view->cut || code)
+        return code ? bh_fail(err, code, "%s", bh_code_text(code)) : BH_OK;
     view->bite_from = fmax(0, view->central_momentum * (1 + arm->momentum_bite.from));
     view->bite_to = view->central_momentum * (1 + arm->momentum_bite.to);
     return BH_OK;
+}
+
+/* Some of the sample that is to be seen is not reached. */
+static bool is_blocked(const bh_yielder *yielder, const bh_view *view)
+{
+    const bh_way *way = &view->way;
+    bool blocked = false;
+    for (size_t l = way->stops; l < way->layer_count; l++)
+        blocked = blocked || (view->setting->target->layers[l].role == BH_ROLE_SAMPLE &&
+                              yielder->spans[l].to > yielder->spans[l].from);
+    return blocked;
+}
+
+/* The beam's way, where on it the scatterer is, and the momentum that then arrives. */
+static bh_code set_way(bh_yielder *yielder, bh_view *view, bh_error *err)
+{
+    const bh_target *target = view->setting->target;
+    bh_code code = bh_view_way(yielder, view, target, &view->way, err);
+    if (!code)
+        code = bh_view_paths(yielder, view, target, &view->way, err);
+    if (code)
+        return code;
+    view->blocked = is_blocked(yielder, view);
+    const bh_nuclei scatterer = {
+        .list = view->list, .nuclide = view->list->main, .origin = BH_ORIGIN_SIGNAL};
+    const size_t count = bh_view_vertices(yielder, &view->way, &scatterer);
+    view->vertex_kinetic = view->way.losing && count > 0
+                               ? bh_vertices_mean(yielder->vertices, count)
+                               : view->way.kinetic;
+    return set_momentum(yielder, view, count, err);
 }
 
 bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_setting_arm *arm,
@@ -116,5 +208,5 @@ bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_se
         return bh_fail(err, BH_EPLAN, "no process %s", setting->process.text);
     view->axis = arm->arm.shape == BH_SHAPE_RING ? (arm->arm.ring.from + arm->arm.ring.to) / 2
                                                  : arm->angle.value;
-    return set_momentum(yielder, view, err);
+    return set_way(yielder, view, err);
 }

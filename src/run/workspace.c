@@ -35,7 +35,7 @@ struct ranged {
 struct bh_workspace {
     bh_average_workspace *averages;
     bh_arena *arena; /* of entries and their contents */
-    size_t bytes;
+    size_t bytes, numbers;
     bh_sum_scratch scratch;
     size_t structure_count;
     bh_structure *structures[MOST_STRUCTURES];
@@ -144,6 +144,13 @@ void bh_workspace_drop(bh_workspace *workspace, const void *key, size_t size)
     struct entry **e = &workspace->buckets[hash % BUCKETS];
     if (*e && (*e)->hash == hash && (*e)->size == size)
         *e = (*e)->next; /* its memory goes with the arena */
+}
+
+size_t bh_workspace_number(bh_workspace *workspace, unsigned char *key)
+{
+    workspace->numbers++;
+    memcpy(key, &workspace->numbers, sizeof workspace->numbers);
+    return sizeof workspace->numbers;
 }
 
 /* What a structure is kept under; bytes between members are zero. */

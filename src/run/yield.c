@@ -6,12 +6,10 @@
 #include "beamhours/rates/counting.h"
 #include "beamhours/units/constants.h"
 
-enum { PLACES = 3 };
-
 bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err)
 {
     const bh_plan *plan = yielder->plan;
-    size_t nuclides = 1, layers = 1;
+    size_t nuclides = 1;
     yielder->lists = bh_arena_take(arena, plan->target_count, sizeof *yielder->lists);
     bool made = yielder->lists;
     for (size_t t = 0; made && t < plan->target_count; t++) {
@@ -19,87 +17,48 @@ bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err)
         made = bh_struck_from_target(&plan->targets[t], arena, list);
         if (made && list->count > nuclides)
             nuclides = list->count;
-        if (plan->targets[t].layer_count > layers)
-            layers = plan->targets[t].layer_count;
     }
     yielder->seen = bh_arena_take(arena, nuclides, sizeof *yielder->seen);
-    yielder->layers = bh_arena_take(arena, layers, sizeof *yielder->layers);
-    made = made && yielder->seen && yielder->layers;
-    for (int i = 0; i < PLACES; i++) {
-        yielder->paths[i] = bh_arena_take(arena, layers, sizeof(double));
-        made = made && yielder->paths[i];
-    }
-    return made ? BH_OK : bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
-}
-
-/* How much of each layer is seen, by the arm as it stands and (sensitivities) moved both ways. */
-bh_code bh_view_paths(bh_yielder *yielder, const bh_view *view, const bh_target *target,
-                      bh_error *err)
-{
-    const bh_extent *seen = &view->arm->arm.target_view;
-    for (size_t l = 0; l < target->layer_count; l++)
-        yielder->layers[l] = (bh_seen_layer){.thickness = target->layers[l].thickness.value,
-                                             .sample = target->layers[l].role == BH_ROLE_SAMPLE};
-    static const double by[PLACES] = {0, -BH_STEP_ANGLE, BH_STEP_ANGLE};
-    bh_code code = BH_OK;
-    for (int i = 0; !code && i < PLACES; i++) {
-        const bh_seen_view how = {.limited = seen->given,
-                                  .from = seen->from,
-                                  .to = seen->to,
-                                  .angle = fmin(fmax(view->axis + by[i], 0), BH_PI),
-                                  .tilt = view->setting->tilt.value};
-        code = bh_seen_paths(&how, target->layer_count, yielder->layers, yielder->paths[i], err);
-    }
-    return code;
+    made = made && yielder->seen;
+    return made ? bh_places_prepare(yielder, arena, err)
+                : bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
 }
 
 /* Adds up over the layers what the arm sees of each nuclide. */
 static bh_code set_seen(bh_yielder *yielder, const bh_view *view, const bh_struck_list *list,
-                        bh_error *err)
+                        const bh_way *way, bh_error *err)
 {
-    const bh_code code = bh_view_paths(yielder, view, list->target, err);
+    const bh_code code = bh_view_paths(yielder, view, list->target, way, err);
     if (code)
         return code;
     for (size_t n = 0; n < list->count; n++)
-        yielder->seen[n] = (bh_seen_numbers){.signal = 0};
+        yielder->seen[n] = (bh_seen_numbers){.reached = 0};
     for (size_t i = 0; i < list->presence_count; i++) {
         const bh_presence *p = &list->presences[i];
         bh_seen_numbers *s = &yielder->seen[p->nuclide];
-        const double seen = p->number * yielder->paths[0][p->layer];
-        if (p->origin == BH_ORIGIN_WINDOW)
-            s->windows += seen;
-        else if (p->origin == BH_ORIGIN_OTHER)
-            s->other += seen;
-        else
-            s->signal += seen;
+        s->of[p->origin] += p->number * yielder->paths[0][p->layer];
         for (int k = 0; k < 2 && p->origin == BH_ORIGIN_SIGNAL; k++)
             s->moved[k] += p->number * yielder->paths[1 + k][p->layer];
     }
     return BH_OK;
 }
 
-bh_channel_request bh_view_request(const bh_view *view, const bh_channel *channel)
-{
-    return (bh_channel_request){.channel = *channel,
-                                .acceptance = view->spec,
-                                .cut = view->cut,
-                                .momentum_from = view->bite_from,
-                                .momentum_to = view->bite_to,
-                                .bins = view->parts > 1};
-}
-
 /* While sums are made, cross_section and kept hold nuclei times their integrals [ub/cm2], the
  * sensitivities differences of such. */
-static void add_sum(bh_part *to, const bh_channel_sum *sum, const bh_seen_numbers *seen)
+static void add_sum(bh_part *to, const bh_channel_sum *sum, const bh_seen_numbers *seen,
+                    bh_origin origin)
 {
-    to->windows += seen->windows * sum->kept;
-    to->other += seen->other * sum->kept;
-    if (!(seen->signal > 0))
+    const double nuclei = seen->of[origin];
+    if (origin == BH_ORIGIN_WINDOW)
+        to->windows += nuclei * sum->kept;
+    else if (origin == BH_ORIGIN_OTHER)
+        to->other += nuclei * sum->kept;
+    if (origin != BH_ORIGIN_SIGNAL)
         return;
-    to->cross_section += seen->signal * sum->total;
-    to->kept += seen->signal * sum->kept;
+    to->cross_section += nuclei * sum->total;
+    to->kept += nuclei * sum->kept;
     to->per_radian += seen->moved[1] * sum->moved[1] - seen->moved[0] * sum->moved[0];
-    to->per_momentum += seen->signal * (sum->boosted[1] - sum->boosted[0]);
+    to->per_momentum += nuclei * (sum->boosted[1] - sum->boosted[0]);
 }
 
 static void add_point(const bh_yield *yield, const bh_channel *channel, double seen)
@@ -111,25 +70,42 @@ static void add_point(const bh_yield *yield, const bh_channel *channel, double s
     }
 }
 
-static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, const bh_struck *struck,
-                           bh_seen_numbers *seen, bh_error *err)
+/* A nuclide where it is signal, or one kind of background. */
+static bh_code add_origin(bh_yielder *yielder, bh_yield *yield, const bh_nuclei *nuclei,
+                          const bh_channels *channels, bh_error *err)
 {
-    bh_channels channels;
-    if (yielder->cancelled && yielder->cancelled(yielder->asker))
-        return bh_fail(err, BH_ENOCONV, "the evaluation was cancelled");
-    bh_code code = bh_view_channels(yielder, &yield->view, struck, &channels, err);
-    for (size_t c = 0; !code && c < channels.count; c++) {
-        bh_channel_request request = bh_view_request(&yield->view, &channels.list[c]);
-        request.sensitivities = seen->signal > 0;
+    bh_seen_numbers *seen = &yielder->seen[nuclei->nuclide];
+    const bool signal = nuclei->origin == BH_ORIGIN_SIGNAL;
+    const size_t count = bh_view_vertices(yielder, &yield->view.way, nuclei);
+    for (size_t c = 0; c < channels->count; c++) {
+        bh_channel_request request =
+            bh_view_request(yielder, &yield->view, &channels->list[c], &yield->view.way, count);
+        request.sensitivities = seen->of[BH_ORIGIN_SIGNAL] > 0;
         const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
         if (!sums)
             return err->code;
         for (int i = 0; i < yield->view.parts; i++)
-            add_sum(&yield->part[i], &sums[i], seen);
-        seen->reached += (seen->signal + seen->windows + seen->other) * sums[0].kept;
+            add_sum(&yield->part[i], &sums[i], seen, nuclei->origin);
+        seen->reached += seen->of[nuclei->origin] * sums[0].kept;
         yield->converged = yield->converged && sums[0].converged;
-        if (seen->signal > 0)
-            add_point(yield, &channels.list[c], seen->signal);
+        if (signal)
+            add_point(yield, &channels->list[c], seen->of[BH_ORIGIN_SIGNAL]);
+    }
+    return BH_OK;
+}
+
+static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, size_t nuclide, bh_error *err)
+{
+    const bh_struck_list *list = yield->view.list;
+    bh_channels channels;
+    if (yielder->cancelled && yielder->cancelled(yielder->asker))
+        return bh_fail(err, BH_ENOCONV, "the evaluation was cancelled");
+    bh_code code =
+        bh_view_channels(yielder, &yield->view, &list->nuclides[nuclide], &channels, err);
+    for (int o = 0; !code && o < BH_ORIGINS; o++) {
+        const bh_nuclei nuclei = {.list = list, .nuclide = nuclide, .origin = (bh_origin)o};
+        if (yielder->seen[nuclide].of[o] > 0)
+            code = add_origin(yielder, yield, &nuclei, &channels, err);
     }
     return code;
 }
@@ -174,41 +150,67 @@ static void finish(const bh_yield *yield, bh_part *part)
     part->dummy *= per_ub;
 }
 
+/* What one nuclide of the dummy cell gives. */
+static bh_code add_dummy_nuclide(bh_yielder *yielder, bh_yield *yield, const bh_nuclei *nuclei,
+                                 const bh_way *way, bh_error *err)
+{
+    const bh_seen_numbers *seen = &yielder->seen[nuclei->nuclide];
+    const double number =
+        seen->of[BH_ORIGIN_SIGNAL] + seen->of[BH_ORIGIN_OTHER] + seen->of[BH_ORIGIN_WINDOW];
+    bh_channels channels;
+    const bh_code code = bh_view_channels(yielder, &yield->view,
+                                          &nuclei->list->nuclides[nuclei->nuclide], &channels, err);
+    if (code || !(number > 0))
+        return code;
+    const size_t count = bh_view_vertices(yielder, way, nuclei);
+    for (size_t c = 0; c < channels.count; c++) {
+        const bh_channel_request request =
+            bh_view_request(yielder, &yield->view, &channels.list[c], way, count);
+        const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
+        if (!sums)
+            return err->code;
+        for (int i = 0; i < yield->view.parts; i++)
+            yield->part[i].dummy += number * sums[i].kept;
+    }
+    return BH_OK;
+}
+
 /* What the dummy cell gives, all of it, in the same arm. */
 static bh_code add_dummy(bh_yielder *yielder, bh_yield *yield, const bh_target *dummy,
                          bh_error *err)
 {
     const bh_struck_list *list = &yielder->lists[dummy - yielder->plan->targets];
-    bh_code code = set_seen(yielder, &yield->view, list, err);
+    bh_way way;
+    bh_code code = bh_view_way(yielder, &yield->view, dummy, &way, err);
+    if (!code)
+        code = set_seen(yielder, &yield->view, list, &way, err);
     for (size_t n = 0; !code && n < list->count; n++) {
-        const bh_seen_numbers *seen = &yielder->seen[n];
-        bh_channels channels;
-        code = bh_view_channels(yielder, &yield->view, &list->nuclides[n], &channels, err);
-        for (size_t c = 0; !code && c < channels.count; c++) {
-            const bh_channel_request request = bh_view_request(&yield->view, &channels.list[c]);
-            const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
-            if (!sums)
-                return err->code;
-            for (int i = 0; i < yield->view.parts; i++)
-                yield->part[i].dummy += (seen->signal + seen->windows + seen->other) * sums[i].kept;
-        }
+        const bh_nuclei nuclei = {.list = list, .nuclide = n, .all = true};
+        code = add_dummy_nuclide(yielder, yield, &nuclei, &way, err);
     }
+    return code;
+}
+
+/* Everything of the setting's own target; nothing where the beam does not come through. */
+static bh_code add_target(bh_yielder *yielder, bh_yield *yield, bh_error *err)
+{
+    const bh_struck_list *list = yield->view.list;
+    bh_code code = set_seen(yielder, &yield->view, list, &yield->view.way, err);
+    for (size_t n = 0; !code && !yield->view.blocked && n < list->count; n++)
+        code = add_nuclide(yielder, yield, n, err);
+    for (size_t n = 0; n < list->count; n++)
+        yield->seen += yielder->seen[n].of[BH_ORIGIN_SIGNAL];
     return code;
 }
 
 bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err)
 {
     const bh_target *target = yield->view.setting->target;
-    const bh_struck_list *list = yield->view.list;
     yield->converged = true;
     yield->seen = 0;
     bh_code code = set_geometry(yield, err);
     if (!code)
-        code = set_seen(yielder, &yield->view, list, err);
-    for (size_t n = 0; !code && n < list->count; n++)
-        code = add_nuclide(yielder, yield, &list->nuclides[n], &yielder->seen[n], err);
-    for (size_t n = 0; n < list->count; n++)
-        yield->seen += yielder->seen[n].signal;
+        code = add_target(yielder, yield, err);
     if (!code)
         code = bh_findings(yielder, yield, err);
     if (!code && target->empty != BH_EMPTY_NONE && target->empty_use)

@@ -414,7 +414,7 @@ static const struct {
      NULL},
     {HEAD
      "target: {layers: [{material: graphite, thickness: 5 mm, density_loss: 0.1 %/uA}]}\n" ARM ONE,
-     "target.layers.1.density_loss"},
+     NULL},
     {HEAD
      "target: {layers: [{material: graphite, thickness: 5 mm, density_loss: 0 %/uA}]}\n" ARM ONE,
      NULL},
@@ -424,17 +424,17 @@ static const struct {
      "arms.A.energy_cut"},
     {HEAD TARGET
      "arms: [{name: A, solid_angle: 1 msr, exit: [{material: air, thickness: 1 m}]}]\n" ONE,
-     "arms.A.exit"},
+     NULL},
     {HEAD TARGET ARM ONE "models: {radiative: schwinger}\n", "models.radiative"},
     {HEAD TARGET ARM ONE "models: {radiative: none, coulomb: plane-wave, energy_loss: none}\n",
      NULL},
-    {HEAD TARGET ARM ONE "models: {energy_loss: full}\n", "models.energy_loss"},
+    {HEAD TARGET ARM ONE "models: {energy_loss: full}\n", NULL},
     {HEAD TARGET ARM "settings: [{name: K, angle: 30 deg, beam: {polarization: 80 %}}]\n",
      "settings.K.beam.polarisation"},
     {HEAD TARGET ARM "settings: [{name: K, angle: 30 deg, beam: {polarisation: 0 %}}]\n", NULL},
     {HEAD "target: {layers: [{material: graphite, thickness: 5 mm}],\n"
           "  wall: {radius: 3 cm, material: aluminium, thickness: 1 mm}}\n" ARM ONE,
-     "target.wall"},
+     NULL},
 };
 
 START_TEST(warnings_for_what_is_not_computed)

@@ -3,7 +3,9 @@
 
 #include "beamhours/run/curve.h"
 
-#define BEAM   "plan: 1\nbeam: {particle: electron, kinetic_energy: 400 MeV, current: 10 uA}\n"
+#define BEAM                                                                                     \
+    "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, kinetic_energy: 400 MeV, " \
+    "current: 10 uA}\n"
 #define TARGET "target: {layers: [{material: carbon-12, thickness: 1 mm}]}\n"
 static const char *const plan =
     BEAM TARGET "arms:\n  - {name: A, in_plane: ±28 mrad, out_of_plane: ±70 mrad}\n"

@@ -5,8 +5,9 @@
 #include "beamhours/run/curve.h"
 #include "beamhours/units/constants.h"
 
-#define HEAD                                                                           \
-    "plan: 1\nbeam: {particle: electron, kinetic_energy: %.17g MeV, current: 10 uA}\n" \
+#define HEAD                                                                                       \
+    "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, kinetic_energy: %.17g MeV, " \
+    "current: 10 uA}\n"                                                                            \
     "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm}], scatterer: 1H}\n"
 #define ARM      "arms:\n  - {name: A, in_plane: ±40 mrad, out_of_plane: ±60 mrad%s}\n"
 #define SETTINGS "settings:\n  - {name: K, angle: %.17g deg, time: 1 h}\n"

@@ -75,7 +75,8 @@ END_TEST
 START_TEST(a_view_changes_the_sensitivity)
 {
     static const char form[] =
-        "plan: 1\nbeam: {particle: electron, kinetic_energy: 500 MeV, current: 1 uA}\n"
+        "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, kinetic_energy: 500 MeV, "
+        "current: 1 uA}\n"
         "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 15 cm}], scatterer: H}\n"
         "arms: [{name: A, solid_angle: 1 msr%s}]\nsettings: [{name: K, angle: 50 deg, time: 1 "
         "h}]\n";

@@ -25,9 +25,10 @@ START_TEST(rosenbluth_separation)
 {
     char text[1024];
     snprintf(text, sizeof text,
-             "plan: 1\nbeam: {particle: electron, total_energy: %g GeV, current: 70 uA}\n"
+             "plan: 1\nmodels: {structure: dipole, energy_loss: none}\nbeam: {particle: electron, "
+             "total_energy: %g GeV, current: 70 uA}\n"
              "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 4 cm}], scatterer: "
-             "1H}\nmodels: {structure: dipole}\narms: [{name: A, solid_angle: 1 msr}]\n"
+             "1H}\narms: [{name: A, solid_angle: 1 msr}]\n"
              "settings: [{name: K, angle: %.3f deg, time: 1 h}]\n",
              separations[_i].energy, separations[_i].angle);
     struct evaluated e = evaluate(text);
@@ -48,7 +49,8 @@ END_TEST
 START_TEST(sensitivities_are_derivatives)
 {
     static const char form[] =
-        "plan: 1\nbeam: {particle: electron, momentum: %.10g MeV/c, current: 70 uA}\n"
+        "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, momentum: %.10g MeV/c, "
+        "current: 70 uA}\n"
         "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 4 cm}], scatterer: 1H}\n"
         "arms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±60 mrad, momentum_bite: ±1.5 %%}]\n"
         "settings: [{name: K, angle: %.10g deg, central_momentum: 700 MeV/c, time: 1 h}]\n";
@@ -81,8 +83,9 @@ static const struct {
     double angle, mean, rate; /* deg, fm2/sr, Hz per uA */
 } helium[] = {{12.54, 0.00785, 344000}, {16.54, 0.00135, 59100}, {19.15, 0.00046, 20100}};
 
-#define HELIUM                                                                      \
-    "plan: 1\nbeam: {particle: electron, kinetic_energy: 845 MeV, current: 1 uA}\n" \
+#define HELIUM                                                                                   \
+    "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, kinetic_energy: 845 MeV, " \
+    "current: 1 uA}\n"                                                                           \
     "target: {name: t, layers: [{material: helium-3-gas, areal_density: 0.522 g/cm2}]}\n"
 
 START_TEST(helium_rates)
@@ -108,7 +111,8 @@ END_TEST
 START_TEST(luminosity_is_per_nucleus)
 {
     struct evaluated e = evaluate(
-        "plan: 1\nbeam: {particle: electron, kinetic_energy: 4.4 GeV, current: 30 uA}\n"
+        "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, kinetic_energy: 4.4 GeV, "
+        "current: 30 uA}\n"
         "target: {name: t, layers: [{material: liquid-deuterium, thickness: 15 cm, density: 0.169 "
         "g/cm3}]}\narms: [{name: A, solid_angle: 1 msr}]\n"
         "settings: [{name: K, angle: 20 deg, time: 1 h}]\n");
@@ -122,7 +126,8 @@ END_TEST
 START_TEST(dead_time)
 {
     struct evaluated e = evaluate(
-        "plan: 1\nbeam: {particle: electron, kinetic_energy: 2 GeV, current: 1 pA}\n"
+        "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, kinetic_energy: 2 GeV, "
+        "current: 1 pA}\n"
         "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 1 um}], scatterer: 1H}\n"
         "arms: [{name: A, solid_angle: 1 usr, dead_time: 200 ns, other_rate: 300 kHz}]\n"
         "settings: [{name: K, angle: 20 deg, time: 1 h}]\n");
@@ -136,7 +141,8 @@ END_TEST
 START_TEST(a_facility_week)
 {
     struct evaluated e = evaluate(
-        "plan: 1\nbeam: {particle: muon-, momentum: 115 MeV/c, particle_rate: 1e5 /s}\n"
+        "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: muon-, momentum: 115 MeV/c, "
+        "particle_rate: 1e5 /s}\n"
         "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 6 cm}], scatterer: H}\n"
         "arms: [{name: A, solid_angle: 10 msr}]\n"
         "settings: [{name: K, angle: 60 deg, time: 475 h}]\nschedule: {week: 125 h}\n");
@@ -151,7 +157,8 @@ END_TEST
 START_TEST(alphas_on_gold)
 {
     struct evaluated e =
-        evaluate("plan: 1\nbeam: {particle: alpha, kinetic_energy: 5 MeV, particle_rate: 1e6 /s}\n"
+        evaluate("plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: alpha, kinetic_energy: 5 "
+                 "MeV, particle_rate: 1e6 /s}\n"
                  "target: {name: t, layers: [{material: gold, thickness: 0.8 um}]}\n"
                  "arms: [{name: A, ring: {from: 150 deg, to: 170 deg}, bins: 2}]\n"
                  "settings: [{name: K, time: 1 h}]\n");
@@ -175,7 +182,8 @@ END_TEST
 START_TEST(heavy_beam_on_light_target)
 {
     static const char form[] =
-        "plan: 1\nbeam: {particle: alpha, kinetic_energy: 1 MeV, particle_rate: 1e6 /s}\n"
+        "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: alpha, kinetic_energy: 1 MeV, "
+        "particle_rate: 1e6 /s}\n"
         "target: {name: t, layers: [{material: hydrogen-gas, areal_number: 1e18 /cm2}], scatterer: "
         "1H}\narms: [{name: A, detects: %s, ring: {from: %.12g deg, to: %.12g deg}, bins: 3}]\n"
         "settings: [{name: K, time: 1 h}]\n";

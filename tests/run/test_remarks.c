@@ -4,8 +4,9 @@
 #include "beamhours/run/remarks.h"
 
 #define BEAM "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 10 uA}\n"
-#define HYDROGEN \
-    "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 5 cm}]}\n"
+#define HYDROGEN                                                                             \
+    "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 5 cm, " \
+    "density_loss: 0.02 %/uA}]}\n"
 #define POINT "arms: [{name: A, solid_angle: 5 msr}]\n"
 
 static const struct {
@@ -43,7 +44,7 @@ static const struct {
                          "schedule: {available: 10 h}\n",
      "the plan asks for 20.0 h and 10 h are available", 6},
     {BEAM "target: {name: t, scatterer: H, layers: [{material: aluminium, thickness: 1 mm, role: "
-          "window}, {material: liquid-hydrogen, thickness: 5 cm}]}\n" POINT
+          "window}, {material: liquid-hydrogen, thickness: 5 cm, density_loss: 0.02 %/uA}]}\n" POINT
           "settings: [{name: K, angle: 30 deg, time: 1 h}]\n",
      "t has windows and no empty_target", 3},
     {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, momentum_bite: ±2 %}]\n"
@@ -85,10 +86,10 @@ END_TEST
 
 START_TEST(warnings_of_the_reader_come_along)
 {
-    struct evaluated e = evaluate(
-        BEAM "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm, density: "
-             "0.09 g/cm3}], scatterer: H}\n" POINT
-             "settings: [{name: K, angle: 40 deg, time: 1 h}]\n");
+    struct evaluated e = evaluate(BEAM "target: {name: t, layers: [{material: liquid-hydrogen, "
+                                       "thickness: 5 cm, density_loss: 0.02 %/uA, density: "
+                                       "0.09 g/cm3}], scatterer: H}\n" POINT
+                                       "settings: [{name: K, angle: 40 deg, time: 1 h}]\n");
     ck_assert_uint_eq(bh_diags_count(bh_table_warnings(e.table)), bh_diags_count(e.diags));
     ck_assert_uint_eq(bh_diags_count(e.diags), 1);
     ck_assert_uint_eq(bh_diags_errors(bh_table_warnings(e.table)), 0);

@@ -197,6 +197,7 @@ static const struct {
      "settings: [{name: K, angle: 60 deg}]\n",
      20, 0.5, "mm", BH_CAUSE_THICKNESS, BH_COL_SIGNAL}, /* seen as a whole */
     {BEAM_500
+     "models: {energy_loss: none}\n"
      "target: {name: t, layers: [{material: graphite, areal_density: 20 g/cm2, density: %s}]}\n"
      "arms: [{name: A, solid_angle: 1 msr, target_view: ±1 cm}]\n"
      "settings: [{name: K, angle: 60 deg}]\n",

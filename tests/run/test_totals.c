@@ -73,7 +73,8 @@ END_TEST
 START_TEST(muon_lifetime_proposal)
 {
     static const char form[] =
-        "plan: 1\nbeam: {particle: muon+, momentum: 29 MeV/c, particle_rate: 1e6 /s}\n"
+        "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: muon+, momentum: 29 MeV/c, "
+        "particle_rate: 1e6 /s}\n"
         "target: {name: t, layers: [{material: liquid-hydrogen, areal_density: %.12g g/cm2}], "
         "scatterer: 1H}\narms: [{name: A, solid_angle: 1 sr}]\n"
         "settings: [{name: K, angle: 90 deg, counts: 1000000000000}]\n"

@@ -7,7 +7,9 @@
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
-#define BEAM "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 10 uA}\n"
+#define BEAM                                                                                     \
+    "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, kinetic_energy: 855 MeV, " \
+    "current: 10 uA}\n"
 
 /* --- sensitivities of a target that is partly seen --- */
 

@@ -315,6 +315,22 @@
 #define BH_WARN_SHORTAGE                                                                          \
     "the plan asks for %s h %sand %s h are available; fewer settings, weaker goals or more time " \
     "would do"
+#define BH_WARN_BEAM_STOPS                                                                     \
+    "the beam stops in %s, in %s, and does not come through the sample: no rate is computed; " \
+    "less "                                                                                    \
+    "matter or more beam energy would do"
+#define BH_WARN_STOPS_BEHIND                                                                       \
+    "the beam stops in %s behind the sample, in %s: what it strikes from there on is not counted " \
+    "as "                                                                                          \
+    "background; a thinner layer would do"
+#define BH_WARN_STAYS_INSIDE                                                                      \
+    "what is scattered along the axis of %s stops before it reaches the detector, in %s: a wall " \
+    "for "                                                                                        \
+    "the target, another tilt or angle, or less matter would do"
+#define BH_WARN_NOT_SLOWED "%s: nothing loses energy there in these numbers"
+#define BH_WARN_LIQUID                                                                      \
+    "%s under %s uA of beam without density_loss: heat thins a liquid, often by percents; " \
+    "density_loss: 0.02 %%/uA, as measured with this cell, would do"
 #define BH_WARN_NO_SIGNAL                                                                 \
     "nothing scattered by %s is counted by %s in %s; another angle, central_momentum or " \
     "momentum_bite would do"

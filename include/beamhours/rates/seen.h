@@ -34,6 +34,15 @@ typedef struct {
 BH_CHECKED bh_code bh_seen_paths(const bh_seen_view *view, size_t count,
                                  const bh_seen_layer *layers, double *path, bh_error *err);
 
+/* What of a layer is seen, along its normal from its first face. */
+typedef struct {
+    double from, to; /* [cm] 0 .. thickness; equal where nothing is seen */
+} bh_seen_span;
+
+/* Fills span, one for each layer, of what bh_seen_paths counts; errors as there. */
+BH_CHECKED bh_code bh_seen_spans(const bh_seen_view *view, size_t count,
+                                 const bh_seen_layer *layers, bh_seen_span *span, bh_error *err);
+
 /* Returns [cm] the length along the beam that is seen of the sample layers, all of them when not
  * limited; NAN where bh_seen_paths would refuse. */
 double bh_seen_length(const bh_seen_view *view, size_t count, const bh_seen_layer *layers);

@@ -17,6 +17,9 @@ typedef struct {
     bh_branch branch; /* of a scattered particle */
 } bh_channel;
 
+/* The particle that is detected. */
+bh_particle bh_channel_detected(const bh_channel *channel);
+
 /* Returns [rad] the largest lab angle at which the detected particle can appear. */
 double bh_channel_largest_angle(const bh_channel *channel);
 

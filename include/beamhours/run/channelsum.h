@@ -6,6 +6,7 @@
 
 #include "beamhours/rates/acceptance.h"
 #include "beamhours/run/channel.h"
+#include "beamhours/run/passage.h"
 #include "beamhours/run/workspace.h"
 
 /* Steps of the symmetric differences behind the sensitivities: a rate with logarithmic derivatives
@@ -17,10 +18,14 @@
 typedef struct {
     bh_channel channel;
     bh_acceptance_spec acceptance;
-    bool cut;                          /* there is a momentum bite */
-    double momentum_from, momentum_to; /* [MeV/c] of the detected particle */
-    bool bins;                         /* sums of the bins are wanted too */
-    bool sensitivities;                /* moved and boosted are wanted too */
+    bool cut;                          /* there is a momentum bite or a threshold */
+    double momentum_from, momentum_to; /* [MeV/c] of the detected particle, losses behind it */
+    const bh_way *way;                 /* NULL: everything happens at the channel's own energy */
+    const bh_vertex *vertices;         /* where the nuclei are that are meant */
+    size_t vertex_count;
+    const bh_range **ranges; /* room for the sheets of the way */
+    bool bins;               /* sums of the bins are wanted too */
+    bool sensitivities;      /* moved and boosted are wanted too */
 } bh_channel_request;
 
 /* Over the whole acceptance or over one bin. */

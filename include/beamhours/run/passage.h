@@ -84,6 +84,10 @@ double bh_density_left(const bh_layer *layer, const bh_beam *beam);
 BH_CHECKED bh_code bh_way_make(bh_workspace *workspace, const bh_way_request *request,
                                bh_sheet *sheets, bh_way *way, bh_error *err);
 
+/* Returns [MeV] the kinetic energy of a particle of `kinetic` [MeV] at a momentum larger by the
+ * share `by` [1]. */
+double bh_boosted_kinetic(const bh_particle *particle, double kinetic, double by);
+
 /* Returns [MeV] the kinetic energy of the beam when it leaves layer number `layer`. */
 double bh_way_leaving(const bh_way *way, size_t layer);
 

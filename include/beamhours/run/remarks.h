@@ -15,7 +15,12 @@ typedef enum {
     BH_REMARK_LIMIT,         /* high [1/s]: recorded rate over `from` [1/s], the limit */
     BH_REMARK_BIN_TOO_SLOW,  /* high [h]: need of bin `what`; from [h]: what is available */
     BH_REMARK_NOT_CONVERGED, /* an average over an acceptance */
-    BH_REMARK_NO_SIGNAL      /* nothing of the signal lands in the acceptance */
+    BH_REMARK_NO_SIGNAL,     /* nothing of the signal lands in the acceptance */
+    BH_REMARK_BEAM_STOPS,    /* in a layer `what`, before the end of the sample */
+    BH_REMARK_STOPS_BEHIND,  /* likewise, behind it */
+    BH_REMARK_STAYS_INSIDE,  /* what is to be detected stops on the axis of the arm */
+    BH_REMARK_NOT_SLOWED,    /* energy loss is not computed in a layer: `what` */
+    BH_REMARK_LIQUID         /* high [uA]: current on a liquid `what` without density_loss */
 } bh_remark_kind;
 
 typedef struct {

@@ -16,6 +16,8 @@
     X(BH_WHY_EMPTY_BIN, "the bin lies outside the acceptance")                           \
     X(BH_WHY_RING, "a ring around the beam has no angle to turn")                        \
     X(BH_WHY_NO_EVENTS, "no signal lands in the acceptance and the bite")                \
+    X(BH_WHY_STOPPED, "the beam stops before it has come through the sample")            \
+    X(BH_WHY_STAYS_INSIDE, "what is scattered along the arm's axis stops on its way")    \
     X(BH_WHY_NO_WANT, "the setting asks for no goal, time, charge or counts")            \
     X(BH_WHY_NO_GOAL, "this arm has no goal")                                            \
     X(BH_WHY_NO_SIGNAL, "no signal would be recorded")

@@ -53,12 +53,16 @@ void *bh_workspace_keep(bh_workspace *workspace, const void *key, size_t size, s
 /* Takes back what was kept last under that key. */
 void bh_workspace_drop(bh_workspace *workspace, const void *key, size_t size);
 
-enum { BH_MOST_BINS = 1000 }; /* of an arm, a limit of the plan format */
+enum { BH_MOST_BINS = 1000, BH_KEY_ROOM = 32768 }; /* the first a limit of the plan format */
+
+/* Writes a key that nothing was kept under into `key` and returns its size [bytes]. */
+size_t bh_workspace_number(bh_workspace *workspace, unsigned char *key);
 
 /* Room for the sums of one arm while they are made. */
 typedef struct {
     bh_average whole, bins[BH_MOST_BINS];
     double edges[2][BH_MOST_BINS + 1]; /* [rad] of the bins of an arm moved back and on */
+    unsigned char key[BH_KEY_ROOM];    /* what they are kept under */
 } bh_sum_scratch;
 
 /* Where averages are made. */

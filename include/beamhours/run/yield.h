@@ -12,11 +12,12 @@
 #include "beamhours/run/remarks.h"
 #include "beamhours/run/struck.h"
 
+enum { BH_ORIGINS = BH_ORIGIN_WINDOW + 1 };
+
 /* Nuclei of one nuclide that an arm sees. */
 typedef struct {
-    double signal;         /* [1/cm2] the scatterer */
-    double moved[2];       /* [1/cm2] likewise, seen by the arm turned back and on */
-    double windows, other; /* [1/cm2] background */
+    double of[BH_ORIGINS]; /* [1/cm2] by their origin, signal and background */
+    double moved[2];       /* [1/cm2] of the signal, seen by the arm turned back and on */
     double reached;        /* [ub/cm2] what of it all lands in the whole arm */
 } bh_seen_numbers;
 
@@ -26,11 +27,18 @@ typedef struct {
     bh_workspace *workspace;
     bool (*cancelled)(void *asker); /* polled for each nuclide of each arm; NULL: never */
     void *asker;
-    bh_remarks *remarks;   /* warnings go here; NULL: they are not wanted */
-    bh_struck_list *lists; /* of each target of the plan */
-    bh_seen_numbers *seen; /* room for the nuclides of any target */
-    bh_seen_layer *layers; /* room for the layers of any target */
-    double *paths[3];      /* [1] likewise: as it stands, and seen by an arm moved both ways */
+    bh_remarks *remarks;     /* warnings go here; NULL: they are not wanted */
+    bh_struck_list *lists;   /* of each target of the plan */
+    bh_seen_numbers *seen;   /* room for the nuclides of any target */
+    bh_seen_layer *layers;   /* room for the layers of any target */
+    double *paths[3];        /* [1] likewise: as it stands, and seen by an arm moved both ways */
+    bh_seen_span *spans;     /* likewise */
+    bh_occupied *occupied;   /* likewise */
+    bh_vertex *vertices;     /* room for those in any target */
+    size_t most_sheets;      /* of a way in this plan */
+    bh_sheet *sheets;        /* room for the ways of the arms of any setting */
+    bh_sheet *spare, *dummy; /* and for one that is tried, and one in a dummy cell */
+    const bh_range **ranges; /* room for one particle leaving */
 } bh_yielder;
 
 /* One arm of one setting. */
@@ -40,6 +48,10 @@ typedef struct {
     const bh_struck_list *list;
     const bh_process *process;
     bh_acceptance_spec spec;
+    bh_way way;   /* of the beam and out of the setting's target */
+    bool blocked; /* the beam does not come through what is to be seen of the sample */
+    bool stuck;   /* what is scattered along the arm's axis stops before it reaches the detector */
+    double vertex_kinetic;     /* [MeV] of the beam, mean over the scatterer nuclei seen */
     double axis;               /* [rad] polar angle of the arm's centre */
     double central_momentum;   /* [MeV/c] NAN where none is written and none follows */
     bool cut;                  /* a momentum bite is in force */
@@ -113,11 +125,33 @@ typedef struct {
 BH_CHECKED bh_code bh_yield_contributions(bh_yielder *yielder, const bh_yield *yield, int part,
                                           bh_contribution *contributions, bh_error *err);
 
-/* The sums that a view wants of a channel, without sensitivities. */
-bh_channel_request bh_view_request(const bh_view *view, const bh_channel *channel);
+/* The sums that a view wants of a channel on the nuclei at yielder->vertices, `count` of them, in
+ * the target of `way`; without sensitivities. */
+bh_channel_request bh_view_request(const bh_yielder *yielder, const bh_view *view,
+                                   const bh_channel *channel, const bh_way *way, size_t count);
 
-/* How much of each layer of `target` the arm sees, into yielder->paths. */
+/* Makes room, in `arena`, for where collisions happen.  BH_ENOMEM. */
+BH_CHECKED bh_code bh_places_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err);
+
+/* How much of each layer of `target` the arm sees, into yielder->paths (thinned by the current, 0
+ * where the beam does not come through) and yielder->spans. */
 BH_CHECKED bh_code bh_view_paths(bh_yielder *yielder, const bh_view *view, const bh_target *target,
-                                 bh_error *err);
+                                 const bh_way *way, bh_error *err);
+
+/* Which nuclei. */
+typedef struct {
+    const bh_struck_list *list; /* of the target whose paths are in the yielder */
+    size_t nuclide;
+    bool all;                /* whatever their origin */
+    bh_origin origin;        /* else these */
+    const bh_presence *only; /* in one layer; NULL: in all */
+} bh_nuclei;
+
+/* Fills yielder->vertices and returns how many; the yielder's paths are of this target. */
+size_t bh_view_vertices(bh_yielder *yielder, const bh_way *way, const bh_nuclei *nuclei);
+
+/* Makes the beam's way in `target`, the setting's or a dummy cell. */
+BH_CHECKED bh_code bh_view_way(bh_yielder *yielder, const bh_view *view, const bh_target *target,
+                               bh_way *way, bh_error *err);
 
 #endif
