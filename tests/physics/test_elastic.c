@@ -297,6 +297,20 @@ START_TEST(nuclear_limit_of_alphas)
 }
 END_TEST
 
+/* Ions: nuclei 5 fm apart do not touch (Cline, Annu. Rev. Nucl. Part. Sci. 36 (1986) 683): 1.25
+ * (A1^1/3
+ * + A2^1/3) + 5 fm is 15.56 fm for 16O on 208Pb by hand, where the charges have 1.44 x 8 x 82
+ * / 15.56 = 60.7 MeV in the centre of mass. */
+START_TEST(nuclear_limit_of_ions)
+{
+    const bh_particle oxygen = particle("16O");
+    const bh_encounter x = {&oxygen, 8, 82, 208, 193687.7, 60.0, NULL, 0.0};
+    const double distance = 1.25 * (2.5198421 + 5.9249921) + 5.0;
+    const double wanted = 1.439964548 * 8 * 82 / distance * (1.0 + oxygen.mass / 193687.7);
+    ck_assert_double_eq_tol(bh_validity_nuclear(&x).kinetic / wanted, 1.0, 1e-7);
+}
+END_TEST
+
 /* Against Andersen et al. 1980 itself, and against the screening of a measured fit. */
 START_TEST(screening_starts_where_andersen_says)
 {
@@ -367,6 +381,7 @@ int main(void)
     tcase_add_test(tests, many_at_once_are_the_same);
     tcase_add_loop_test(tests, formula_and_caveat_in_words, 0, COUNT(spoken));
     tcase_add_test(tests, nuclear_limit_of_alphas);
+    tcase_add_test(tests, nuclear_limit_of_ions);
     tcase_add_test(tests, screening_starts_where_andersen_says);
     tcase_add_test(tests, registries);
     tcase_add_test(tests, plane_waves_change_nothing_but_say_so);

@@ -241,6 +241,32 @@ START_TEST(sums_have_settled)
 }
 END_TEST
 
+/* Twice the solid angle of either arm is twice the sum. */
+START_TEST(both_scales_count)
+{
+    struct tested tested = {&pairs[0].in, pairs[0].first};
+    double sums[3];
+    for (int k = 0; k < 3; k++) {
+        bh_acceptance one, two;
+        ck_assert_int_eq(bh_acceptance_make(&pairs[0].one.spec, &one, NULL), BH_OK);
+        ck_assert_int_eq(bh_acceptance_make(&pairs[0].two.spec, &two, NULL), BH_OK);
+        one.whole.scale *= k == 1 ? 2 : 1;
+        two.whole.scale *= k == 2 ? 2 : 1;
+        const bh_pair_request request = {
+            .shape = {&one.whole, &two.whole, pairs[0].one.left != pairs[0].two.left},
+            .function = smooth,
+            .context = &tested};
+        bh_pair_sum sum;
+        bh_error err;
+        ck_assert_msg(bh_pair_add_up(&request, &sum, &err) == BH_OK, "%s", err.text);
+        sums[k] = sum.total;
+    }
+    ck_assert(sums[0] > 0);
+    ck_assert_double_eq_tol(sums[1] / sums[0], 2, 1e-12);
+    ck_assert_double_eq_tol(sums[2] / sums[0], 2, 1e-12);
+}
+END_TEST
+
 /* With everything around it open, the first arm is alone. */
 START_TEST(an_open_second_arm)
 {
@@ -308,5 +334,6 @@ int main(void)
     tcase_add_loop_test(tests, an_open_second_arm, 0, COUNT(pairs));
     tcase_add_test(tests, there_and_back);
     tcase_add_test(tests, odd_ones_are_refused);
+    tcase_add_test(tests, both_scales_count);
     return run_suite("coincidence", tests);
 }

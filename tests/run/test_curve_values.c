@@ -187,6 +187,24 @@ START_TEST(against_epsilon)
 }
 END_TEST
 
+/* From a thousandth of what the beam can reach, where the arm can stand so far forward. */
+START_TEST(q2_from_a_thousandth_on)
+{
+    struct evaluated e = read_text(
+        "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 10 uA}\n"
+        "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm}], scatterer: 1H}\n"
+        "arms:\n  - {name: A, solid_angle: 1 msr, angle_range: {from: 1 deg, to: 179 deg}}\n"
+        "settings:\n  - {name: K, angle: 40 deg, time: 1 h}\n");
+    bh_curve *curve = curve_of(&e, BH_AGAINST_Q2);
+    const bh_collision in = {BH_MASS_ELECTRON, BH_MASS_PROTON, 855};
+    const double most = 0.999e-6 * bh_kinematics_largest_q2(&in);
+    ck_assert_double_eq_tol(bh_curve_x(curve, 0) / most, 1e-3, 1e-12);
+    ck_assert_double_eq_tol(bh_curve_x(curve, bh_curve_count(curve) - 1) / most, 1, 1e-12);
+    bh_curve_free(curve);
+    done(&e);
+}
+END_TEST
+
 /* An alpha on hydrogen scatters by at most 14.5 deg; a recoil by at most 90. */
 START_TEST(up_to_the_largest_angle)
 {
@@ -264,6 +282,7 @@ int main(void)
     tcase_add_test(tests, each_energy_is_marked_once);
     tcase_add_test(tests, against_the_energy);
     tcase_add_test(tests, against_q2);
+    tcase_add_test(tests, q2_from_a_thousandth_on);
     tcase_add_test(tests, against_epsilon);
     tcase_add_test(tests, up_to_the_largest_angle);
     tcase_add_test(tests, another_structure_moves_the_curve);

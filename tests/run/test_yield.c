@@ -49,6 +49,35 @@ START_TEST(sensitivity_of_a_viewed_target)
 }
 END_TEST
 
+/* --- kinematic columns --- */
+
+/* Electron of 1 GeV at 30 deg on the proton, massless to 1e-6: closed form at 30 digits. */
+START_TEST(a_row_has_the_event_at_its_axis)
+{
+    struct evaluated e =
+        evaluate("plan: 1\nbeam: {particle: electron, total_energy: 1 GeV, current: 10 uA}\n"
+                 "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm}], "
+                 "scatterer: 1H}\narms: [{name: A, solid_angle: 1 msr}]\n"
+                 "settings: [{name: K, angle: 30 deg, time: 1 h}]\n");
+    static const struct {
+        bh_column_id column;
+        double value;
+    } rows[] = {{BH_COL_SCATTERED_ANGLE, 30},
+                {BH_COL_SCATTERED_MOMENTUM, 875.052450141},
+                {BH_COL_SCATTERED_KINETIC, 875.052450141 - 0.51099895},
+                {BH_COL_CENTRAL_MOMENTUM, 875.052450141},
+                {BH_COL_RECOIL_KINETIC, 124.947549859},
+                {BH_COL_RECOIL_ANGLE, 61.0343109472},
+                {BH_COL_Q2, 0.23446959735},
+                {BH_COL_Q, 500.081480927 / 197.3269804593},
+                {BH_COL_EPSILON, 0.867186448657}};
+    for (int i = 0; i < COUNT(rows); i++)
+        ck_assert_relative(cell(&e, 0, rows[i].column), rows[i].value, 2e-6,
+                           bh_column_at(rows[i].column)->key);
+    done(&e);
+}
+END_TEST
+
 /* --- backgrounds --- */
 
 /* A compound with windows.  What a part gives does not depend on its name: the signal of a plan
@@ -298,6 +327,7 @@ int main(void)
 {
     TCase *tests = tcase_create("yield");
     tcase_add_loop_test(tests, sensitivity_of_a_viewed_target, 0, COUNT(views));
+    tcase_add_test(tests, a_row_has_the_event_at_its_axis);
     tcase_add_test(tests, all_that_is_counted_is_the_same_whoever_is_wanted);
     tcase_add_test(tests, the_empty_target_measures_the_windows);
     tcase_add_test(tests, a_dummy_cell_gives_all_of_itself);
