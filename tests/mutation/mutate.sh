@@ -43,9 +43,9 @@ rows() { find src/run -name '*.c' ! -name 'explain*' ! -name 'cautions.c' ! -nam
     grep -Ev "$later" | sort; }
 for program in $(find "$build"/tests/physics "$build"/tests/rates "$build"/tests/run -name 'test_*' ! -name '*.*' ! -name '*_faults'); do
     start=$(date +%s%N) # a test that fails anyway would notice everything
-    "$program" >"$folder/said" 2>&1 || { echo "mutate.sh: $program fails before any mistake is made"; exit 1; }
+    "$program" >"$folder/said" 2>&1 || { echo "mutate.sh: $program fails before any mistake is made" >&2; exit 1; }
     echo "$(($(date +%s%N) - start)) $program"
-done >"$folder/times" || { cat "$folder/times"; exit 1; }
+done >"$folder/times"
 sort -n "$folder/times" | cut -d' ' -f2 >"$folder/quickest"
 awk -v out="$folder" -f tests/mutation/mutants.awk keep="${KEEP:-40}" $(formulas physics) \
     keep="${KEEP:-10}" $(formulas rates) keep="${KEEP:-8}" $(rows) >"$folder/list" || exit 1

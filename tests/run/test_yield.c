@@ -55,7 +55,8 @@ END_TEST
 START_TEST(a_row_has_the_event_at_its_axis)
 {
     struct evaluated e =
-        evaluate("plan: 1\nbeam: {particle: electron, total_energy: 1 GeV, current: 10 uA}\n"
+        evaluate("plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: electron, total_energy: 1 "
+                 "GeV, current: 10 uA}\n"
                  "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm}], "
                  "scatterer: 1H}\narms: [{name: A, solid_angle: 1 msr}]\n"
                  "settings: [{name: K, angle: 30 deg, time: 1 h}]\n");
