@@ -22,6 +22,8 @@ const char *bh_blank_plan(void)
            "    in_plane: ±28 mrad          # acceptance: or ring: {from: 20 deg, to: 40 deg}\n"
            "    out_of_plane: ±70 mrad\n"
            "    momentum_bite: ±5 %\n"
+           "    energy_cut: 3 MeV           # below the elastic line; what lost more is not "
+           "counted\n"
            "    efficiency: 95 %\n"
            "    dead_time: 5 us\n"
            "\n"

@@ -153,15 +153,11 @@ static void check_edges(const bh_sight *sight)
     char here[BH_QUANTITY_SIZE], low[BH_QUANTITY_SIZE], high[BH_QUANTITY_SIZE];
     const bh_raw_arm *raw = sight->making->raw.arms.items;
     for (size_t i = 0; i < sight->making->plan.arm_count; i++) {
-        bool *missed = &sight->making->edges_missed[i];
-        const size_t count = raw[i].edges.count;
-        if (sight->making->arms[i].edges != arm->edges || *missed || count > BH_MOST_ARM_BINS + 1)
+        if (sight->making->arms[i].edges != arm->edges || raw[i].edges.count == 0)
             continue;
-        for (size_t k = 0; k < count; k++) {
+        for (size_t k = 0; k < raw[i].edges.count; k++) {
             const bh_value *edge = &raw[i].edges.items[k];
-            const bool outside = edge->value < from - slack || edge->value > to + slack;
-            *missed = *missed || outside;
-            if (outside)
+            if (edge->value < from - slack || edge->value > to + slack)
                 bh_tell(sight->making, edge->at, &raw[i].section, "edges", BH_SAY_EDGE_OUTSIDE,
                         bh_angle_text(edge->value, here), bh_angle_text(from, low),
                         bh_angle_text(to, high));
@@ -180,6 +176,24 @@ static struct place place_of(const bh_sight *sight)
     return place;
 }
 
+/* All of the scattered energy below the line is no cut. */
+static void check_cut(const bh_sight *sight, const bh_event *event, double angle)
+{
+    const bh_setting_arm *row = sight->row;
+    const bh_value *cut = &row->arm.energy_cut;
+    const bool recoil = row->arm.detects == BH_DETECTS_RECOIL;
+    const double kinetic = recoil ? event->recoil_kinetic : event->scattered_kinetic;
+    const bh_raw_arm *raw = sight->making->raw.arms.items;
+    char here[BH_QUANTITY_SIZE], all[BH_QUANTITY_SIZE], at[BH_QUANTITY_SIZE];
+    if (!cut->given || cut->value < kinetic)
+        return;
+    for (size_t i = 0; i < sight->making->plan.arm_count; i++)
+        if (raw[i].name.text == row->arm.name.text)
+            bh_tell(sight->making, cut->at, &raw[i].section, "energy_cut", BH_SAY_CUT_BEYOND,
+                    bh_quantity_text(cut->value, BH_DIM_ENERGY, here),
+                    bh_quantity_text(kinetic, BH_DIM_ENERGY, all), bh_angle_text(angle, at));
+}
+
 /* Nothing arrives where even the smallest angle of a ring is too large. */
 static void check_ring(const bh_sight *sight)
 {
@@ -188,8 +202,9 @@ static void check_ring(const bh_sight *sight)
     bh_event event;
     for (size_t i = 0; i < sight->making->plan.arm_count; i++) {
         const struct place place = {&raw[i].section, "ring", arm->ring.at};
-        if (sight->making->arms[i].name.text == arm->name.text && arm->ring.from > 0.0)
-            (void)reachable(sight, &place, arm->ring.from, &event);
+        if (sight->making->arms[i].name.text == arm->name.text && arm->ring.from > 0.0 &&
+            reachable(sight, &place, arm->ring.from, &event))
+            check_cut(sight, &event, arm->ring.from);
     }
 }
 
@@ -212,4 +227,6 @@ void bh_check_row(const bh_sight *sight)
         check_edges(sight);
     const bool reached = reachable(sight, &place, row->angle.value, &event);
     check_momentum(sight, &place, reached ? &event : NULL);
+    if (reached)
+        check_cut(sight, &event, row->angle.value);
 }

@@ -68,5 +68,4 @@ void bh_warn_not_built(const bh_making *making)
     const bh_raw_models *models = &making->raw.models;
     visit(making, &bh_schema_plan, &making->raw);
     warn_model(making, &models->coulomb, "coulomb", "plane-wave");
-    warn_model(making, &models->radiative, "radiative", "none");
 }

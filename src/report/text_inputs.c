@@ -199,6 +199,7 @@ static void arm_line(const bh_arm *a, bh_text *to)
         add(to, "azimuth", &a->azimuth, BH_DIM_ANGLE);
     add_given(to, "solid_angle", &a->solid_angle, BH_DIM_SOLID_ANGLE);
     add_extent(to, "momentum_bite", &a->momentum_bite, BH_DIM_SHARE);
+    add_given(to, "energy_cut", &a->energy_cut, BH_DIM_ENERGY);
     add_extent(to, "target_view", &a->target_view, BH_DIM_LENGTH);
     add(to, "efficiency", &a->efficiency, BH_DIM_SHARE);
     add(to, "dead_time", &a->dead_time, BH_DIM_TIME);

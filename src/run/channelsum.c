@@ -8,95 +8,18 @@
 #include "beamhours/rates/bite.h"
 #include "beamhours/run/arriving.h"
 #include "beamhours/run/energies.h"
+#include "beamhours/run/sum_key.h"
 #include "beamhours/units/constants.h"
 
 enum { BATCH = 64 };
-
-/* --- what sums are kept under --- */
-
-/* Numbers of fixed size; bytes between members are zero. */
-struct key {
-    const bh_process *process;
-    const bh_structure *structure;
-    char beam[16];
-    int charge, z, a, recoil, branch, bins, cut, sensitivities, shape;
-    double target, kinetic, momentum_from, momentum_to;
-    double shape_numbers[9];
-};
-
-/* The room that the key is written into. */
-struct writing {
-    unsigned char *room;
-    size_t used, size;
-    bool full;
-};
-
-static void write_bytes(struct writing *w, const void *bytes, size_t size)
-{
-    w->full = w->full || size > w->size - w->used;
-    if (w->full)
-        return;
-    memcpy(w->room + w->used, bytes, size);
-    w->used += size;
-}
-
-static void write_numbers(const bh_channel_request *r, struct writing *w)
-{
-    const bh_encounter *e = &r->channel.encounter;
-    const bh_acceptance_spec *s = &r->acceptance;
-    struct key k;
-    memset(&k, 0, sizeof k);
-    k.process = r->channel.process;
-    k.structure = e->structure;
-    memcpy(k.beam, e->beam->name, strlen(e->beam->name));
-    k.charge = e->charge;
-    k.z = e->z;
-    k.a = e->a;
-    k.recoil = r->channel.recoil;
-    k.branch = (int)r->channel.branch;
-    k.bins = r->bins ? s->bins : 0;
-    k.cut = r->cut;
-    k.sensitivities = r->sensitivities;
-    k.shape = (int)s->shape;
-    k.target = e->target;
-    k.kinetic = e->kinetic;
-    k.momentum_from = r->momentum_from;
-    k.momentum_to = r->momentum_to;
-    const double numbers[] = {
-        s->angle,     s->in_plane_from, s->in_plane_to, s->out_of_plane_from, s->out_of_plane_to,
-        s->ring_from, s->ring_to,       s->azimuth,     s->solid_angle};
-    memcpy(k.shape_numbers, numbers, sizeof numbers);
-    write_bytes(w, &k, sizeof k);
-    if (s->edges && r->bins)
-        write_bytes(w, s->edges, ((size_t)s->bins + 1) * sizeof(double));
-}
-
-/* What a way adds where energy is lost: the vertices, and what lies behind them. */
-static void write_way(const bh_channel_request *r, const bh_leaver *leaver, struct writing *w)
-{
-    const bh_way *way = r->way;
-    const double frame[] = {way->cosine, way->sine, way->wall_radius, (double)way->layer_count,
-                            way->ring ? way->azimuth : 0};
-    write_bytes(w, frame, sizeof frame);
-    for (size_t i = 0; i < way->sheet_count; i++) {
-        const bh_sheet *s = &way->sheets[i];
-        const double size[] = {s->thickness, s->areal};
-        write_bytes(w, size, sizeof size);
-        write_bytes(w, &leaver->ranges[i], sizeof(const bh_range *));
-    }
-    for (size_t i = 0; i < r->vertex_count; i++) {
-        const bh_vertex *v = &r->vertices[i];
-        const double where[] = {(double)v->layer, v->depth, v->weight, v->towards};
-        write_bytes(w, where, sizeof where);
-        write_bytes(w, v->kinetic, sizeof v->kinetic);
-    }
-}
 
 /* --- one function to be fitted --- */
 
 /* With the energies it is averaged over and the angles that are kept. */
 struct task {
     bh_channel channel;
+    const bh_radiated *radiated; /* NULL: without radiation */
+    int boost;                   /* BH_AS_IT_IS ... */
     bh_energies energies;
     bh_interval allowed[BH_MOST_ARRIVALS];
     bh_average_request request;
@@ -113,6 +36,9 @@ static void evaluate_batch(const struct task *t, size_t n, const double *theta, 
         for (size_t i = 0; i < n; i++)
             value[i] = (k ? value[i] : 0) + t->energies.weight[k] * sigma[i];
     }
+    if (!t->radiated)
+        return;
+    bh_radiated_apply(t->radiated, t->boost, n, theta, value);
 }
 
 static void evaluate(void *context, size_t n, const double *theta, double *value)
@@ -133,6 +59,8 @@ static void set_function(const bh_channel_request *r, struct task *t)
 {
     const double largest = bh_channel_largest_angle(&r->channel);
     t->channel = r->channel;
+    t->radiated = NULL;
+    t->boost = BH_AS_IT_IS;
     t->request = (bh_average_request){.function = evaluate,
                                       .context = t,
                                       .limit = largest < BH_PI ? largest : 0,
@@ -224,6 +152,21 @@ static const bh_average *part_of(const struct making *m, int part)
     return part ? &m->scratch->bins[part - 1] : &m->scratch->whole;
 }
 
+/* The task with radiation, where there is any, fitted. */
+static bh_code fit_radiated(struct making *m, const struct task *t, int boost, struct task *out,
+                            bh_error *err)
+{
+    const bh_radiated *x = m->request->radiated;
+    *out = *t;
+    out->request.context = out;
+    out->request.allowed = out->allowed;
+    if (x && !x->idle) {
+        out->radiated = x;
+        out->boost = boost;
+    }
+    return bh_average_fit(&out->request, m->places.polar, m->averages, err);
+}
+
 /* The sums of a task count with `weight`: 1, or the share of one depth. */
 static bh_code sum_total(struct making *m, const struct task *t, double weight, bh_error *err)
 {
@@ -233,6 +176,31 @@ static bh_code sum_total(struct making *m, const struct task *t, double weight, 
     for (int i = 0; !code && i < m->parts; i++) {
         m->sums[i].total += weight * part_of(m, i)->total;
         m->sums[i].kept += weight * part_of(m, i)->kept;
+        m->sums[i].converged = m->sums[i].converged && part_of(m, i)->converged;
+    }
+    return code;
+}
+
+static bool is_idle(const bh_channel_request *r)
+{
+    return !r->radiated || r->radiated->idle;
+}
+
+static bh_code sum_radiated(struct making *m, const struct task *t, double weight, bh_error *err)
+{
+    const bool only = m->request->radiated_only;
+    bh_code code = BH_OK;
+    struct task with;
+    if (!is_idle(m->request)) {
+        code = fit_radiated(m, t, BH_AS_IT_IS, &with, err);
+        if (!code)
+            code = add_up(m, &with.request, &m->places.at, err);
+    }
+    for (int i = 0; !code && i < m->parts; i++) {
+        m->sums[i].radiated += weight * part_of(m, i)->kept;
+        if (!only || is_idle(m->request))
+            continue;
+        m->sums[i].total = m->sums[i].kept = m->sums[i].radiated;
         m->sums[i].converged = m->sums[i].converged && part_of(m, i)->converged;
     }
     return code;
@@ -253,9 +221,10 @@ static bh_code sum_moved(struct making *m, const struct task *t, double weight, 
 static bh_code sum_boosted(struct making *m, const struct task *t, double weight, int boost,
                            bh_error *err)
 {
-    bh_code code = bh_average_fit(&t->request, m->places.polar, m->averages, err);
+    struct task with;
+    bh_code code = fit_radiated(m, t, boost, &with, err);
     if (!code)
-        code = add_up(m, &t->request, &m->places.at, err);
+        code = add_up(m, &with.request, &m->places.at, err);
     for (int i = 0; !code && i < m->parts; i++)
         m->sums[i].boosted[boost - BH_BOOSTED_DOWN] += weight * part_of(m, i)->kept;
     return code;
@@ -266,7 +235,10 @@ static bh_code sum_task(struct making *m, const struct task *t, double weight, i
 {
     if (boost)
         return sum_boosted(m, t, weight, boost, err);
-    bh_code code = sum_total(m, t, weight, err);
+    const bool only = m->request->radiated_only && !is_idle(m->request);
+    bh_code code = only ? BH_OK : sum_total(m, t, weight, err);
+    if (!code)
+        code = sum_radiated(m, t, weight, err);
     if (!code && m->request->sensitivities)
         code = sum_moved(m, t, weight, err);
     return code;
@@ -338,8 +310,6 @@ const bh_channel_sum *bh_channel_sums(bh_workspace *workspace, const bh_channel_
                        .scratch = bh_workspace_scratch(workspace),
                        .parts = request->bins ? 1 + request->acceptance.bins : 1};
     bh_leaver leaver = {.ranges = request->ranges};
-    struct writing key = {.room = m.scratch->key, .size = sizeof m.scratch->key};
-    write_numbers(request, &key);
     if (request->way && request->way->losing) {
         const bh_particle detected = bh_channel_detected(&request->channel);
         const bh_code code =
@@ -349,20 +319,21 @@ const bh_channel_sum *bh_channel_sums(bh_workspace *workspace, const bh_channel_
             return NULL;
         }
         m.leaver = &leaver;
-        write_way(request, &leaver, &key);
     }
-    if (key.full) /* too long to be compared: known by a number that nothing else has */
-        key.used = bh_workspace_number(workspace, key.room);
-    const bh_channel_sum *known = bh_workspace_recall(workspace, key.room, key.used);
+    unsigned char *const key = m.scratch->key;
+    size_t size = bh_sum_key(request, m.leaver, key, sizeof m.scratch->key);
+    if (!size) /* too long to be compared: known by a number that nothing else has */
+        size = bh_workspace_number(workspace, key);
+    const bh_channel_sum *known = bh_workspace_recall(workspace, key, size);
     if (known)
         return known;
-    m.sums = bh_workspace_keep(workspace, key.room, key.used, (size_t)m.parts * sizeof *m.sums);
+    m.sums = bh_workspace_keep(workspace, key, size, (size_t)m.parts * sizeof *m.sums);
     if (!m.sums) {
         bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
         return NULL;
     }
     if (!make(&m, err))
         return m.sums;
-    bh_workspace_drop(workspace, key.room, key.used);
+    bh_workspace_drop(workspace, key, size);
     return NULL;
 }

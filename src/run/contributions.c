@@ -13,20 +13,25 @@ static bh_code integrals(bh_yielder *yielder, const bh_view *view, int part, bh_
     const bh_code code = bh_view_channels(yielder, view, c->struck, &channels, err);
     if (code)
         return code;
-    double total = 0, kept = 0;
+    const bool signal = c->presence->origin == BH_ORIGIN_SIGNAL;
+    double total = 0, kept = 0, radiated = 0;
     c->structure = channels.list[0].encounter.structure;
     for (size_t k = 0; count > 0 && k < channels.count; k++) {
-        bh_channel_request request =
-            bh_view_request(yielder, view, &channels.list[k], &view->way, count);
-        request.sensitivities = c->presence->origin == BH_ORIGIN_SIGNAL;
-        const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
+        const bh_elastic_of of = {.channel = &channels.list[k],
+                                  .way = &view->way,
+                                  .count = count,
+                                  .signal = signal,
+                                  .whole = true};
+        const bh_channel_sum *sums = bh_elastic_sums(yielder, view, &of, err);
         if (!sums)
             return err->code;
         total += sums[part].total;
-        kept += sums[part].kept;
+        kept += signal ? sums[part].kept : sums[part].radiated;
+        radiated += sums[part].radiated;
     }
     c->cross_section = total;
     c->kept = total > 0 ? kept / total : 0;
+    c->radiative = kept > 0 ? radiated / kept : 1;
     return BH_OK;
 }
 
@@ -50,7 +55,7 @@ bh_code bh_yield_contributions(bh_yielder *yielder, const bh_yield *yield, int p
                                                 .seen = c->seen,
                                                 .cross_section = c->cross_section,
                                                 .solid_angle = solid_angle,
-                                                .radiative = 1,
+                                                .radiative = c->radiative,
                                                 .kept = c->kept,
                                                 .efficiency = view->arm->arm.efficiency.value});
     }

@@ -65,7 +65,7 @@ static void explain_signal(bh_explaining *x)
     bh_explain_add(x, (bh_line){.kind = BH_LINE_FACTOR,
                                 .name = "efficiency of the arm",
                                 .value = bh_explain_number(x, v->arm->arm.efficiency.value, "")});
-    factor(x, "radiative factor", "1", "radiation is not in these numbers");
+    bh_explain_radiation(x);
     factor(x, "signal rate", bh_explain_number(x, p->signal, "Hz"),
            "luminosity x 1e-30 cm2/ub x mean cross section x solid angle x radiative factor x kept "
            "x efficiency");
@@ -94,8 +94,10 @@ static void explain_background(bh_explaining *x, const bh_contribution *all, siz
                                                        ? "stays when the sample is out"
                                                        : "leaves with the sample")});
     }
-    factor(x, "background rate", bh_explain_number(x, p->windows + p->other, "Hz"),
-           "elastic scattering on windows and other nuclides that lands in the bite");
+    bh_explain_beneath(x);
+    factor(
+        x, "background rate", bh_explain_number(x, p->windows + p->other, "Hz"),
+        "all that lands in the bite and is not the signal, other particles of the beam among it");
 }
 
 static void explain_live(bh_explaining *x)

@@ -95,8 +95,10 @@ void bh_explain_assumptions(bh_explaining *x)
         "The target covers the beam and is uniform.",
         "Atoms are at rest and nuclei spherical.",
         "One photon is exchanged; the beam is a plane wave.",
-        "Other particles in the beam do not reach the counts.",
-        "Only elastic scattering is counted: no inelastic or quasi-elastic background."};
+        "Other particles in the beam have its momentum, scatter elastically and lose no energy.",
+        "Quasi-elastic and inelastic spectra are without radiation of their own.",
+        "Excited levels of nuclei, pions and other hadrons, and decays are not counted.",
+        "The vertices of background lose on their way out what the scatterer's do on the axis."};
     bh_explain_section(x, "Assumed without being asked");
     for (size_t i = 0; i < sizeof silent / sizeof silent[0]; i++)
         bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE, .remark = silent[i]});

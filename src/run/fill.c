@@ -106,7 +106,7 @@ static void put_rates(const struct source *s, bh_row *row)
     bh_row_put(row, BH_COL_BEAM, v->beam, BH_WHY_NOTHING);
     bh_row_put(row, BH_COL_SEEN, seen, BH_WHY_NOTHING);
     bh_row_put(row, BH_COL_LUMINOSITY, v->beam * seen, BH_WHY_NOTHING);
-    bh_row_put(row, BH_COL_RADIATIVE, 1, BH_WHY_NOTHING);
+    bh_row_put(row, BH_COL_RADIATIVE, p->radiative, BH_WHY_NO_EVENTS);
     bh_row_put(row, BH_COL_KEPT, p->kept, BH_WHY_NO_EVENTS);
     bh_row_put(row, BH_COL_EFFICIENCY, v->arm->arm.efficiency.value, BH_WHY_NOTHING);
     bh_row_put(row, BH_COL_SIGNAL, p->signal, BH_WHY_NO_EVENTS);

@@ -203,6 +203,7 @@ bh_code bh_findings(bh_yielder *yielder, const bh_yield *yield, bh_error *err)
         signal += yielder->seen[n].of[BH_ORIGIN_SIGNAL] > 0 ? yielder->seen[n].reached : 0;
     }
     find_in_arm(yielder, yield, signal);
+    bh_find_radiation(yielder, yield);
     bh_code code = BH_OK;
     for (size_t n = 0; !code && n < list->count; n++) {
         if (!(yielder->seen[n].reached > worth_saying * all))

@@ -45,8 +45,16 @@ static const char *or_empty(const char *text)
     return text ? text : "";
 }
 
+/* One line for a cause, whatever the nuclides. */
+static bool joins(bh_remark_kind kind)
+{
+    return kind == BH_REMARK_NOT_COMPUTED;
+}
+
 static bool same(const struct kept *k, const bh_remark *r)
 {
+    if (joins(r->kind) && k->remark.kind == r->kind)
+        return strcmp(k->what, or_empty(r->what)) == 0;
     return k->remark.kind == r->kind && strcmp(k->who, or_empty(r->who)) == 0 &&
            strcmp(k->what, or_empty(r->what)) == 0 &&
            (of_the_whole_plan(r->kind) ||
@@ -58,8 +66,21 @@ static void copy(char to[TEXT], const char *from)
     snprintf(to, TEXT, "%s", or_empty(from));
 }
 
+/* Adds a name to a list of them, unless it is there or there is no room. */
+static void join(char list[TEXT], const char *name)
+{
+    const char *found = strstr(list, name);
+    const size_t used = strlen(list);
+    const bool there = found && (found == list || found[-1] == ' ') &&
+                       (found[strlen(name)] == ',' || !found[strlen(name)]);
+    if (!there && used + strlen(name) + 3 < TEXT)
+        snprintf(list + used, TEXT - used, ", %s", name);
+}
+
 static void widen(struct kept *k, const bh_remark *r)
 {
+    if (joins(r->kind))
+        join(k->who, or_empty(r->who));
     if (r->low < k->remark.low)
         k->remark.low = r->low;
     if (r->high > k->remark.high)
@@ -87,6 +108,10 @@ static bool grow(bh_remarks *remarks)
 static void set_key(char to[TEXT], const bh_remark *r)
 {
     switch (r->kind) {
+    case BH_REMARK_WIDE_CUT:
+    case BH_REMARK_NO_CUT:
+    case BH_REMARK_RECOIL_CUT:
+    case BH_REMARK_RADIATION:
     case BH_REMARK_LIMIT:
         snprintf(to, TEXT, "arms.%s.%s", or_empty(r->who), r->key);
         break;
@@ -167,6 +192,28 @@ static void say_model(const struct kept *k, const struct words *w, bh_diags *dia
     case BH_REMARK_FLAGGED:
         bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_MODEL_FLAGGED, k->who,
                      k->what);
+        break;
+    case BH_REMARK_NOT_COMPUTED:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NOT_COMPUTED, k->who,
+                     w->where, k->what);
+        break;
+    case BH_REMARK_WIDE_CUT:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_CUT_WIDE, k->who, w->high,
+                     w->where);
+        break;
+    case BH_REMARK_NO_CUT:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NO_CUT, k->who, w->where);
+        break;
+    case BH_REMARK_RECOIL_CUT:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_RECOIL_CUT, k->who,
+                     w->where);
+        break;
+    case BH_REMARK_OTHERS:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_OTHERS, k->who, w->where,
+                     k->what);
+        break;
+    case BH_REMARK_RADIATION:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, "%s", k->what);
         break;
     case BH_REMARK_CAVEAT:
         bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_PROCESS_CAVEAT, w->where,

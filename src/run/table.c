@@ -28,16 +28,6 @@ struct bh_table {
     const char *notes[NOTES];
 };
 
-/* Numbers the rows of bins of one arm; returns the next free row. */
-static bh_row *lay_out_bins(bh_row *bin, size_t setting, size_t arm, int bins)
-{
-    for (int b = 1; bin && b <= bins; b++) {
-        *bin = (bh_row){.setting = setting, .arm = arm, .bin = b};
-        bin++;
-    }
-    return bin;
-}
-
 /* Numbers the rows: where each stands in the plan. */
 static void lay_out(bh_table *table)
 {
@@ -47,7 +37,10 @@ static void lay_out(bh_table *table)
         for (size_t a = 0; a < setting->arm_count; a++) {
             *whole = (bh_row){.setting = s, .arm = a};
             whole++;
-            bin = lay_out_bins(bin, s, a, setting->arms[a].arm.bins);
+            for (int b = 1; bin && b <= setting->arms[a].arm.bins; b++) {
+                *bin = (bh_row){.setting = s, .arm = a, .bin = b};
+                bin++;
+            }
         }
     }
 }
@@ -111,7 +104,10 @@ static void find_shortage(const bh_table *table, bh_diags *diags)
 static void take_notes(bh_table *table)
 {
     size_t n = 0;
-    table->notes[n++] = "Rates are without radiation: radiative_factor is 1 in every row.";
+    const char *radiation = table->plan->models.radiative.text;
+    if (radiation && strcmp(radiation, "none") == 0)
+        table->notes[n++] = "Radiation is switched off (models.radiative: none): radiative_factor "
+                            "is 1 in every row.";
     const char *losses = table->plan->models.energy_loss.text;
     if (losses && strcmp(losses, "none") == 0)
         table->notes[n++] = "Energy loss is switched off (models.energy_loss: none): every "

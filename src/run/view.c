@@ -187,11 +187,21 @@ static bh_code set_way(bh_yielder *yielder, bh_view *view, bh_error *err)
     view->blocked = is_blocked(yielder, view);
     const bh_nuclei scatterer = {
         .list = view->list, .nuclide = view->list->main, .origin = BH_ORIGIN_SIGNAL};
+    bh_channels channels;
     const size_t count = bh_view_vertices(yielder, &view->way, &scatterer);
     view->vertex_kinetic = view->way.losing && count > 0
                                ? bh_vertices_mean(yielder->vertices, count)
                                : view->way.kinetic;
-    return set_momentum(yielder, view, count, err);
+    code = set_momentum(yielder, view, count, err);
+    if (!code)
+        code = bh_view_channels(yielder, view, &view->list->nuclides[view->list->main], &channels,
+                                err);
+    if (code)
+        return code;
+    view->line = channels.list[0];
+    view->radiative = bh_radiative_find(yielder->plan->models.radiative.text);
+    code = bh_view_gate(yielder, view, count);
+    return code ? bh_fail(err, code, "%s", bh_code_text(code)) : BH_OK;
 }
 
 bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_setting_arm *arm,

@@ -4,6 +4,7 @@
 #include <math.h>
 
 #include "beamhours/rates/counting.h"
+#include "beamhours/run/beneath.h"
 #include "beamhours/units/constants.h"
 
 bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err)
@@ -43,20 +44,21 @@ static bh_code set_seen(bh_yielder *yielder, const bh_view *view, const bh_struc
     return BH_OK;
 }
 
-/* While sums are made, cross_section and kept hold nuclei times their integrals [ub/cm2], the
- * sensitivities differences of such. */
+/* While sums are made, cross_section, kept and radiative hold nuclei times their integrals
+ * [ub/cm2], the sensitivities differences of such. */
 static void add_sum(bh_part *to, const bh_channel_sum *sum, const bh_seen_numbers *seen,
                     bh_origin origin)
 {
     const double nuclei = seen->of[origin];
     if (origin == BH_ORIGIN_WINDOW)
-        to->windows += nuclei * sum->kept;
+        to->windows += nuclei * sum->radiated;
     else if (origin == BH_ORIGIN_OTHER)
-        to->other += nuclei * sum->kept;
+        to->other += nuclei * sum->radiated;
     if (origin != BH_ORIGIN_SIGNAL)
         return;
     to->cross_section += nuclei * sum->total;
     to->kept += nuclei * sum->kept;
+    to->radiative += nuclei * sum->radiated;
     to->per_radian += seen->moved[1] * sum->moved[1] - seen->moved[0] * sum->moved[0];
     to->per_momentum += nuclei * (sum->boosted[1] - sum->boosted[0]);
 }
@@ -77,21 +79,23 @@ static bh_code add_origin(bh_yielder *yielder, bh_yield *yield, const bh_nuclei 
     bh_seen_numbers *seen = &yielder->seen[nuclei->nuclide];
     const bool signal = nuclei->origin == BH_ORIGIN_SIGNAL;
     const size_t count = bh_view_vertices(yielder, &yield->view.way, nuclei);
-    for (size_t c = 0; c < channels->count; c++) {
-        bh_channel_request request =
-            bh_view_request(yielder, &yield->view, &channels->list[c], &yield->view.way, count);
-        request.sensitivities = seen->of[BH_ORIGIN_SIGNAL] > 0;
-        const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
+    bh_code code = BH_OK;
+    for (size_t c = 0; !code && c < channels->count; c++) {
+        const bh_elastic_of of = {.channel = &channels->list[c],
+                                  .way = &yield->view.way,
+                                  .count = count,
+                                  .signal = signal};
+        const bh_channel_sum *sums = bh_elastic_sums(yielder, &yield->view, &of, err);
         if (!sums)
             return err->code;
         for (int i = 0; i < yield->view.parts; i++)
             add_sum(&yield->part[i], &sums[i], seen, nuclei->origin);
-        seen->reached += seen->of[nuclei->origin] * sums[0].kept;
+        seen->reached += seen->of[nuclei->origin] * sums[0].radiated;
         yield->converged = yield->converged && sums[0].converged;
         if (signal)
             add_point(yield, &channels->list[c], seen->of[BH_ORIGIN_SIGNAL]);
     }
-    return BH_OK;
+    return code;
 }
 
 static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, size_t nuclide, bh_error *err)
@@ -130,10 +134,11 @@ static void finish(const bh_yield *yield, bh_part *part)
     const bh_view *view = &yield->view;
     const double efficiency = view->arm->arm.efficiency.value;
     const double per_ub = view->beam * 1e-30 * efficiency;
-    const double kept = part->kept;
+    const double kept = part->kept, radiated = part->radiative;
     part->kept = part->cross_section > 0 ? kept / part->cross_section : (double)NAN;
-    part->per_radian = part->per_radian / (2 * BH_STEP_ANGLE * kept);
-    part->per_momentum = part->per_momentum / (2 * BH_STEP_MOMENTUM * kept);
+    part->radiative = kept > 0 ? radiated / kept : (double)NAN;
+    part->per_radian = part->per_radian / (2 * BH_STEP_ANGLE * radiated);
+    part->per_momentum = part->per_momentum / (2 * BH_STEP_MOMENTUM * radiated);
     part->cross_section /= yield->seen * part->solid_angle;
     part->point_cross_section /= yield->seen;
     part->signal = 0;
@@ -142,7 +147,7 @@ static void finish(const bh_yield *yield, bh_part *part)
                                                            .seen = yield->seen,
                                                            .cross_section = part->cross_section,
                                                            .solid_angle = part->solid_angle,
-                                                           .radiative = 1,
+                                                           .radiative = part->radiative,
                                                            .kept = part->kept,
                                                            .efficiency = efficiency});
     part->windows *= per_ub;
@@ -164,13 +169,12 @@ static bh_code add_dummy_nuclide(bh_yielder *yielder, bh_yield *yield, const bh_
         return code;
     const size_t count = bh_view_vertices(yielder, way, nuclei);
     for (size_t c = 0; c < channels.count; c++) {
-        const bh_channel_request request =
-            bh_view_request(yielder, &yield->view, &channels.list[c], way, count);
-        const bh_channel_sum *sums = bh_channel_sums(yielder->workspace, &request, err);
+        const bh_elastic_of of = {.channel = &channels.list[c], .way = way, .count = count};
+        const bh_channel_sum *sums = bh_elastic_sums(yielder, &yield->view, &of, err);
         if (!sums)
             return err->code;
         for (int i = 0; i < yield->view.parts; i++)
-            yield->part[i].dummy += number * sums[i].kept;
+            yield->part[i].dummy += number * sums[i].radiated;
     }
     return BH_OK;
 }
@@ -188,7 +192,9 @@ static bh_code add_dummy(bh_yielder *yielder, bh_yield *yield, const bh_target *
         const bh_nuclei nuclei = {.list = list, .nuclide = n, .all = true};
         code = add_dummy_nuclide(yielder, yield, &nuclei, &way, err);
     }
-    return code;
+    if (!code)
+        code = bh_beneath_yield(yielder, yield, list, &way, err);
+    return code ? code : bh_others_yield(yielder, yield, list, err);
 }
 
 /* Everything of the setting's own target; nothing where the beam does not come through. */
@@ -198,6 +204,10 @@ static bh_code add_target(bh_yielder *yielder, bh_yield *yield, bh_error *err)
     bh_code code = set_seen(yielder, &yield->view, list, &yield->view.way, err);
     for (size_t n = 0; !code && !yield->view.blocked && n < list->count; n++)
         code = add_nuclide(yielder, yield, n, err);
+    if (!code && !yield->view.blocked)
+        code = bh_beneath_yield(yielder, yield, list, &yield->view.way, err);
+    if (!code && !yield->view.blocked)
+        code = bh_others_yield(yielder, yield, list, err);
     for (size_t n = 0; n < list->count; n++)
         yield->seen += yielder->seen[n].of[BH_ORIGIN_SIGNAL];
     return code;

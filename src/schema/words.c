@@ -60,7 +60,7 @@ static const char *all_of(const bh_key *key, char *out, size_t size)
     };
     const char *all[MOST_WORDS + 2] = {NULL};
     size_t n = 0;
-    while (n < MOST_WORDS && key->words[n]) {
+    while (key->words[n] && n < MOST_WORDS) {
         all[n] = key->words[n];
         n++;
     }

@@ -3,7 +3,7 @@ cat >bad.yaml <<'YAML'
 plan: 1
 beam: {particle: electron, kinetic_energy: 855, curent: 20 uA}
 target: {layers: [{material: carbon-12, thickness: 1 mm}]}
-arms: [{name: A, solid_angle: 6 msr}]
+arms: [{name: A, solid_angle: 6 msr, energy_cut: 5 MeV}]
 settings: [{name: K, angle: 25 deg, time: 1 h}]
 YAML
 sed 's/855,/855 MeV,/; s/curent/current/' bad.yaml >good.yaml

@@ -114,9 +114,9 @@ START_TEST(digits_give_way_before_the_width_does)
 {
     struct evaluated e = evaluate(
         BEAM TARGET
-        "arms:\n  - {name: turning, solid_angle: 5 msr}\n"
-        "  - {name: monitor, angle: 25 deg, solid_angle: 2 msr}\n"
-        "settings:\n  - {name: backward, arm: turning, angle: [40 deg, 80 deg], time: 200 h}\n");
+        "arms:\n  - {name: turning, solid_angle: 5 msr, energy_cut: 5 MeV}\n"
+        "  - {name: monitor, angle: 25 deg, solid_angle: 2 msr, energy_cut: 5 MeV}\n"
+        "settings:\n  - {name: backward, arm: turning, angle: [40 deg, 80 deg], time: 20 h}\n");
     bh_text text = text_of(&e, &(bh_selection_request){0}, 80);
     ck_assert_int_le(widest(&text), 80);
     bh_text_free(&text);

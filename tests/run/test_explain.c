@@ -13,7 +13,7 @@ static const char *const hydrogen =
     "    - {material: liquid-hydrogen, thickness: 50 ± 1 mm}\n"
     "arms:\n"
     "  - {name: A, in_plane: ±28 mrad, out_of_plane: ±70 mrad, bins: 2, efficiency: 95 %,\n"
-    "     dead_time: 5 us, prescale: 2}\n"
+    "     dead_time: 5 us, prescale: 2, energy_cut: 12 MeV}\n"
     "  - {name: M, side: left, angle: 30 deg, solid_angle: 2 ± 0.01 msr}\n"
     "settings:\n"
     "  - {name: K, arm: A, angle: [25 deg, 40 deg], goal: 0.5 %}\n";
@@ -101,8 +101,14 @@ START_TEST(factors_lead_from_the_point_charge_to_the_rate)
     ck_assert_relative(number(x, "from signal counts") + number(x, "from windows") +
                            number(x, "from other nuclides") + number(x, "from the empty target"),
                        100, 1e-4, "shares of the variance");
-    ck_assert_relative(number(x, "27Al in layer 1 (aluminium)"), number(x, "background rate"), 1e-4,
-                       "background");
+    ck_assert_relative(number(x, "27Al in layer 1 (aluminium)") +
+                           number(x, "hard radiative tail on 27Al in layer 1") +
+                           number(x, "quasi-elastic on 27Al in layer 1"),
+                       number(x, "background rate"), 1e-4, "background");
+    ck_assert_relative(number(x, "internal factor") * number(x, "external bremsstrahlung") *
+                           number(x, "single hard collisions"),
+                       number(x, "radiative factor"), 2e-3, "radiation");
+    ck_assert_relative(number(x, "energy that may be lost"), 12, 1e-6, "cut");
     ck_assert_relative(number(x, "1H in layer 2 (liquid-hydrogen)") +
                            number(x, "2H in layer 2 (liquid-hydrogen)"),
                        number(x, "scatterer nuclei seen"), 1e-5, "nuclei");
@@ -247,7 +253,7 @@ START_TEST(assumptions_are_listed)
     for (size_t i = 0; i < bh_explanation_lines(x); i++) {
         const bh_line *line = bh_explanation_line(x, i);
         notes += line->kind == BH_LINE_NOTE;
-        radiation += line->remark && strstr(line->remark, "without radiation") != NULL;
+        radiation += line->remark && strstr(line->remark, "without radiation of their own") != NULL;
     }
     ck_assert_int_ge(notes, 8);
     ck_assert_int_eq(radiation, 1);

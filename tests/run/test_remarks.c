@@ -7,7 +7,7 @@
 #define HYDROGEN                                                                             \
     "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 5 cm, " \
     "density_loss: 0.02 %/uA}]}\n"
-#define POINT "arms: [{name: A, solid_angle: 5 msr}]\n"
+#define POINT "arms: [{name: A, solid_angle: 5 msr, energy_cut: 15 MeV}]\n"
 
 static const struct {
     const char *plan, *words;
@@ -47,6 +47,30 @@ static const struct {
           "window}, {material: liquid-hydrogen, thickness: 5 cm, density_loss: 0.02 %/uA}]}\n" POINT
           "settings: [{name: K, angle: 30 deg, time: 1 h}]\n",
      "t has windows and no empty_target", 3},
+    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr}]\n"
+                   "settings: [{name: K, angle: 20 deg, time: 1 h}]\n",
+     "A has neither energy_cut nor momentum_bite", 4},
+    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, momentum_bite: ±6 %}]\n"
+                   "settings: [{name: K, angle: [20 deg, 30 deg], time: 1 h}]\n",
+     "what A lets electrons and muons lose is up to 5.99 % of the scattered energy in K.1 and 1 "
+     "more setting;",
+     4},
+    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, energy_cut: 40 MeV, momentum_bite: ±6 "
+                   "%}]\nsettings: [{name: K, angle: 20 deg, time: 1 h}]\n",
+     "is up to 4.94 % of the scattered energy in K;", 4},
+    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, energy_cut: 5 MeV, detects: recoil}]\n"
+                   "settings: [{name: K, angle: 50 deg, time: 1 h}]\n",
+     "A sees recoils: the radiative factor in K", 4},
+    {BEAM HYDROGEN "models: {radiative: mo-tsai}\n"
+                   "arms: [{name: A, solid_angle: 5 msr, energy_cut: 5 MeV}]\n"
+                   "settings: [{name: K, angle: 0.3 deg, time: 1 h}]\n",
+     "an electron is not light enough for mo-tsai", 5},
+    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, threshold: 10 MeV}]\n"
+                   "settings: [{name: K, angle: 40 deg, time: 1 h}]\n",
+     "the background on 1H in K is a lower limit: not computed: inelastic scattering between", 1},
+    {"plan: 1\nbeam: {particle: muon-, momentum: 200 MeV/c, particle_rate: 1e6 /s, fraction: 80 %, "
+     "others: {pion-: 20 %}}\n" HYDROGEN POINT "settings: [{name: K, angle: 40 deg, time: 1 h}]\n",
+     "the background by the beam's pion- in K: nuclear forces are left out", 2},
     {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, momentum_bite: ±2 %}]\n"
                    "settings: [{name: K, angle: 40 deg, central_momentum: 300 MeV/c, time: 1 h}]\n",
      "nothing scattered by H is counted by A in K", 5},

@@ -344,12 +344,22 @@ START_TEST(texts_and_notes)
     ck_assert_str_eq(bh_table_text(e.table, false, 0, BH_COL_PARTICLE), "electron");
     ck_assert_str_eq(bh_table_text(e.table, false, 0, BH_COL_TARGET), "cell");
     ck_assert_str_eq(bh_table_text(e.table, false, 0, BH_COL_SCATTERER), "H");
-    ck_assert_ptr_nonnull(strstr(bh_table_note(e.table, 0), "radiation"));
-    ck_assert_ptr_null(bh_table_note(e.table, 1));
+    ck_assert_ptr_null(bh_table_note(e.table, 0));
     ck_assert_ptr_null(bh_table_note(e.table, 100));
     ck_assert_uint_ge(bh_table_cautions(e.table), 1);
     ck_assert_ptr_nonnull(bh_table_caution(e.table, 0)->text);
     ck_assert_ptr_nonnull(strstr(bh_table_totals(e.table)->note, "start-up, change of angle"));
+    done(&e);
+}
+END_TEST
+
+/* What is switched off is said. */
+START_TEST(what_is_left_out_is_noted)
+{
+    char text[2048];
+    snprintf(text, sizeof text, "%smodels: {radiative: none, energy_loss: none}\n", plans[0]);
+    struct evaluated e = evaluate(strstr(plans[0], "models:") ? plans[0] : text);
+    ck_assert_ptr_nonnull(strstr(bh_table_note(e.table, 0), "adiation"));
     done(&e);
 }
 END_TEST
@@ -423,6 +433,7 @@ int main(void)
     tcase_add_test(tests, two_threads_give_the_same);
     tcase_add_test(tests, it_can_be_cancelled);
     tcase_add_test(tests, texts_and_notes);
+    tcase_add_test(tests, what_is_left_out_is_noted);
     tcase_add_test(tests, background_follows_the_windows);
     tcase_add_test(tests, a_dummy_cell_helps);
     return run_suite("table", tests);

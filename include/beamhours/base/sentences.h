@@ -275,6 +275,10 @@
 #define BH_SAY_TWO_SWEEPS    "%s and %s are both swept; sweep one of them in a setting"
 #define BH_SAY_MANY_SETTINGS "%zu settings after sweeps; at most %d would do"
 #define BH_SAY_ANGLE_BEYOND  "%s is beyond the largest angle of %s on %s, %s; less would do"
+#define BH_SAY_CUT_BEYOND                                                                     \
+    "a cut of %s takes in all of the %s that elastic scattering leaves at %s; a smaller one " \
+    "would "                                                                                  \
+    "do"
 #define BH_SAY_RECOIL_BEYOND "%s, but recoils leave at less than 90 deg; less would do"
 #define BH_SAY_Q2_BEYOND     "%s is beyond the largest for %s of %s on %s, %s; less would do"
 #define BH_SAY_OUTSIDE_ANGLES \
@@ -287,12 +291,8 @@
 #define BH_SAY_NOT_COMPUTED "%s is not computed by this version; elastic would do"
 #define BH_SAY_NOT_EVERY    "a name in every_setting; names belong to the settings themselves"
 #define BH_SAY_WANT_TWICE   "%s of the arm beside %s of the setting; keep one of them"
-#define BH_SAY_TASKS_FILL                                                                      \
-    "the tasks that return with every shift or period take %s h of each scheduled hour; give " \
-    "them "                                                                                    \
-    "less time or a longer period"
-#define BH_WARN_NOT_BUILT "read and kept, but this version computes without it"
-#define BH_WARN_DENSITY   "%s is %s from the %s that %s has in the library"
+#define BH_WARN_NOT_BUILT   "read and kept, but this version computes without it"
+#define BH_WARN_DENSITY     "%s is %s from the %s that %s has in the library"
 
 /* run: evaluation */
 #define BH_WARN_MODEL_RANGE                                                                     \
@@ -338,6 +338,18 @@
 #define BH_WARN_NO_SIGNAL                                                                 \
     "nothing scattered by %s is counted by %s in %s; another angle, central_momentum or " \
     "momentum_bite would do"
+
+#define BH_WARN_NOT_COMPUTED "the background on %s in %s is a lower limit: not computed: %s"
+#define BH_WARN_OTHERS       "the background by the beam's %s in %s: %s"
+#define BH_WARN_NO_CUT                                                                           \
+    "%s has neither energy_cut nor momentum_bite, so nothing says what radiation may take: its " \
+    "factor is 1 in %s; an energy_cut, or models.radiative: none, would do"
+#define BH_WARN_CUT_WIDE                                                                        \
+    "what %s lets electrons and muons lose is up to %s %% of the scattered energy in %s; soft " \
+    "photons describe up to 3 %%: a smaller energy_cut would do"
+#define BH_WARN_RECOIL_CUT                                                                        \
+    "%s sees recoils: the radiative factor in %s is that of the unseen lepton losing as much as " \
+    "the cut, and up to half of the correction may be too much"
 
 /* physics: radiation */
 #define BH_WARN_RADIATIVE_ALL                                                                    \

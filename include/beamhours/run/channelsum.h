@@ -7,6 +7,7 @@
 #include "beamhours/rates/acceptance.h"
 #include "beamhours/run/channel.h"
 #include "beamhours/run/passage.h"
+#include "beamhours/run/radiated.h"
 #include "beamhours/run/workspace.h"
 
 /* Steps of the symmetric differences behind the sensitivities: a rate with logarithmic derivatives
@@ -23,17 +24,20 @@ typedef struct {
     const bh_way *way;                 /* NULL: everything happens at the channel's own energy */
     const bh_vertex *vertices;         /* where the nuclei are that are meant */
     size_t vertex_count;
-    const bh_range **ranges; /* room for the sheets of the way */
-    bool bins;               /* sums of the bins are wanted too */
-    bool sensitivities;      /* moved and boosted are wanted too */
+    const bh_range **ranges;     /* room for the sheets of the way */
+    const bh_radiated *radiated; /* NULL: as without radiation */
+    bool radiated_only;          /* total and kept are not wanted, and then equal to radiated */
+    bool bins;                   /* sums of the bins are wanted too */
+    bool sensitivities;          /* moved and boosted are wanted too */
 } bh_channel_request;
 
 /* Over the whole acceptance or over one bin. */
 typedef struct {
     double total;      /* [ub] integral of the cross section over the solid angle */
     double kept;       /* [ub] the part of it inside the bite */
-    double moved[2];   /* [ub] kept with the arm BH_STEP_ANGLE back and on */
-    double boosted[2]; /* [ub] kept with the beam's momentum BH_STEP_MOMENTUM less and more */
+    double radiated;   /* [ub] kept times what radiation leaves of it */
+    double moved[2];   /* [ub] radiated with the arm BH_STEP_ANGLE back and on */
+    double boosted[2]; /* [ub] radiated with the beam's momentum BH_STEP_MOMENTUM less and more */
     bool converged;
 } bh_channel_sum;
 

@@ -46,6 +46,11 @@ void bh_explain_cross_section(bh_explaining *x);
 void bh_explain_rates(bh_explaining *x);
 void bh_explain_time(bh_explaining *x);
 void bh_explain_systematic(bh_explaining *x);
+
+/* Lines of the signal on radiation; lines of the background on all that is not elastic. */
+void bh_explain_radiation(bh_explaining *x);
+void bh_explain_beneath(bh_explaining *x);
+
 void bh_explain_assumptions(bh_explaining *x);
 
 #endif

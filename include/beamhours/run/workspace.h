@@ -62,6 +62,7 @@ size_t bh_workspace_number(bh_workspace *workspace, unsigned char *key);
 typedef struct {
     bh_average whole, bins[BH_MOST_BINS];
     double edges[2][BH_MOST_BINS + 1]; /* [rad] of the bins of an arm moved back and on */
+    double totals[BH_MOST_BINS + 1];   /* [ub/cm2] of an arm and its bins */
     unsigned char key[BH_KEY_ROOM];    /* what they are kept under */
 } bh_sum_scratch;
 

@@ -9,6 +9,7 @@
 #include "beamhours/rates/acceptance.h"
 #include "beamhours/rates/seen.h"
 #include "beamhours/run/channelsum.h"
+#include "beamhours/run/radiated.h"
 #include "beamhours/run/remarks.h"
 #include "beamhours/run/struck.h"
 
@@ -51,13 +52,18 @@ typedef struct {
     bh_way way;   /* of the beam and out of the setting's target */
     bool blocked; /* the beam does not come through what is to be seen of the sample */
     bool stuck;   /* what is scattered along the arm's axis stops before it reaches the detector */
-    double vertex_kinetic;     /* [MeV] of the beam, mean over the scatterer nuclei seen */
-    double axis;               /* [rad] polar angle of the arm's centre */
-    double central_momentum;   /* [MeV/c] NAN where none is written and none follows */
-    bool cut;                  /* a momentum bite is in force */
-    double bite_from, bite_to; /* [MeV/c] */
-    double beam;               /* [1/s] beam particles of the named kind */
-    int parts;                 /* 1, or 1 + bins */
+    double vertex_kinetic;         /* [MeV] of the beam, mean over the scatterer nuclei seen */
+    double axis;                   /* [rad] polar angle of the arm's centre */
+    double central_momentum;       /* [MeV/c] NAN where none is written and none follows */
+    bool cut;                      /* a momentum bite is in force */
+    double bite_from, bite_to;     /* [MeV/c] */
+    const bh_radiative *radiative; /* the model */
+    bh_channel line;               /* of the main nuclide, from whose elastic line a cut counts */
+    bh_gate gate;                  /* energies that are taken */
+    double lost;  /* [MeV] by the detected particle on its way out, mean on the axis */
+    double least; /* [MeV] with which an electron just comes out and is detected */
+    double beam;  /* [1/s] beam particles of the named kind */
+    int parts;    /* 1, or 1 + bins */
 } bh_view;
 
 /* The whole arm or one bin. */
@@ -68,6 +74,7 @@ typedef struct {
     double cross_section;       /* [ub/sr] mean, per scatterer nucleus */
     double point_cross_section; /* [ub/sr] at `angle` */
     double kept;                /* [1] of the signal */
+    double radiative;           /* [1] share of the kept left by radiation inside cut and bite */
     double signal;              /* [Hz] before dead time */
     double windows, other;      /* [Hz] likewise, background */
     double dummy;               /* [Hz] of the dummy cell; equal to windows where there is none */
@@ -102,12 +109,24 @@ typedef struct {
 BH_CHECKED bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view,
                                     const bh_struck *struck, bh_channels *channels, bh_error *err);
 
+/* Fills view->gate, lost and least; `count` vertices of the scatterer are in the yielder.
+ * BH_ENOMEM. */
+BH_CHECKED bh_code bh_view_gate(bh_yielder *yielder, bh_view *view, size_t count);
+
+/* The radiation of the particles of `channel` that come from `count` vertices in the yielder, in
+ * the target of `way`; `signal`: they are the scatterer's. */
+bh_radiated_request bh_view_radiated(const bh_yielder *yielder, const bh_view *view,
+                                     const bh_channel *channel, const bh_way *way, size_t count);
+
 /* Fills the parts of `yield`, whose view is made and whose `part` has room for view.parts. */
 BH_CHECKED bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err);
 
 /* Warns of what the numbers of `yield` rest on: models outside their range, plane waves on heavy
  * nuclei, formulas outside their validity.  While yielder->seen is of this yield. */
 BH_CHECKED bh_code bh_findings(bh_yielder *yielder, const bh_yield *yield, bh_error *err);
+
+/* Warns of what the radiative factor rests on. */
+void bh_find_radiation(bh_yielder *yielder, const bh_yield *yield);
 
 /* One nuclide in one layer, for explain. */
 typedef struct {
@@ -117,6 +136,7 @@ typedef struct {
     double seen;          /* [1/cm2] nuclei seen */
     double cross_section; /* [ub/sr] mean over the part */
     double kept;          /* [1] */
+    double radiative;     /* [1] share of the kept that radiation leaves; background: of all */
     double rate;          /* [Hz] before dead time */
 } bh_contribution;
 
@@ -129,6 +149,22 @@ BH_CHECKED bh_code bh_yield_contributions(bh_yielder *yielder, const bh_yield *y
  * the target of `way`; without sensitivities. */
 bh_channel_request bh_view_request(const bh_yielder *yielder, const bh_view *view,
                                    const bh_channel *channel, const bh_way *way, size_t count);
+
+/* Elastic events of one channel on the nuclei at `count` vertices in the yielder, in the target of
+ * `way`. */
+typedef struct {
+    const bh_channel *channel;
+    const bh_way *way;
+    size_t count;
+    bool signal; /* nuclei of the scatterer in the sample */
+    bool whole;  /* the cross section without radiation is wanted, for explain */
+} bh_elastic_of;
+
+/* Their sums over the arm of `view`, radiation among them: of the signal what is inside the bite,
+ * of background whatever of the line and its soft tail is between the edges.  As bh_channel_sums.
+ */
+const bh_channel_sum *bh_elastic_sums(bh_yielder *yielder, const bh_view *view,
+                                      const bh_elastic_of *of, bh_error *err);
 
 /* Makes room, in `arena`, for where collisions happen.  BH_ENOMEM. */
 BH_CHECKED bh_code bh_places_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err);

@@ -1,0 +1,352 @@
+/* radiated.c - what radiation leaves of elastic events inside a cut, angle by angle. */
+#include "beamhours/run/radiated.h"
+
+#include <math.h>
+
+#include "beamhours/run/channelsum.h"
+#include "beamhours/units/constants.h"
+
+static const double soft_share = 0.03, most_lengths = 0.5;
+static const double least_log = -7; /* a cut of 1/1000 of the reference: resolutions are wider */
+
+double bh_channel_kinetic(const bh_channel *channel, const bh_event *event)
+{
+    return channel->recoil ? event->recoil_kinetic : event->scattered_kinetic;
+}
+
+static bool event_at(const bh_channel *channel, double angle, bh_event *event)
+{
+    return angle <= bh_channel_largest_angle(channel) &&
+           !bh_channel_event(channel, angle, event, NULL);
+}
+
+double bh_gate_from(const bh_gate *gate, const bh_channel *line, double angle)
+{
+    bh_event event;
+    if (!(gate->cut < (double)INFINITY))
+        return gate->from;
+    if (!event_at(line, angle, &event))
+        return (double)INFINITY;
+    return fmax(gate->from, bh_channel_kinetic(line, &event) - gate->cut);
+}
+
+/* --- one angle --- */
+
+/* Mean matter before and after, and what is kept of each. */
+struct matter {
+    const bh_radiated_request *request;
+    const bh_radiated_detail *at;
+    double angle;
+    bh_crossed after[BH_VERTICES_PER_LAYER]; /* of the vertices that are looked at */
+    size_t count, step;
+};
+
+/* One layer's worth of vertices is enough for a mean over many layers. */
+static void set_matter(const bh_radiated_request *r, double angle, struct matter *m)
+{
+    m->request = r;
+    m->angle = angle;
+    m->step = 1 + (r->count > 0 ? (r->count - 1) / BH_VERTICES_PER_LAYER : 0);
+    m->count = 0;
+    for (size_t i = 0; r->way && i < r->count; i += m->step) {
+        bh_crossed c = bh_way_after(r->way, &r->vertices[i], angle);
+        if (!(c.lengths <= most_lengths)) /* along the layers: nothing comes out */
+            c = (bh_crossed){.lengths = most_lengths, .soft = most_lengths * BH_PI / 2};
+        m->after[m->count++] = c;
+    }
+}
+
+static bool is_electron(const bh_encounter *e)
+{
+    return bh_particle_is_electron(e->beam);
+}
+
+static bh_external external_of(const struct matter *m, size_t i, double cut)
+{
+    const bh_encounter *e = &m->request->channel.encounter;
+    const bh_event *event = &m->at->event;
+    const bh_crossed *before = &m->request->vertices[i * m->step].before;
+    bh_external x = {.incident = e->kinetic + e->beam->mass,
+                     .scattered = event->scattered_kinetic + e->beam->mass,
+                     .cut = cut};
+    x.before = bh_crossed_passage(before, e->beam, e->kinetic);
+    x.after = bh_crossed_passage(&m->after[i], e->beam, event->scattered_kinetic);
+    if (!is_electron(e)) /* heavier by 207: their bremsstrahlung is 43000 times rarer */
+        x.before.thickness = x.after.thickness = 0;
+    return x;
+}
+
+static double mean_external(const struct matter *m, double cut)
+{
+    double sum = 0, weight = 0;
+    for (size_t i = 0; i < m->count; i++) {
+        const bh_external x = external_of(m, i, cut);
+        const double w = m->request->vertices[i * m->step].weight;
+        sum += w * bh_external_kept(&x);
+        weight += w;
+    }
+    return weight > 0 ? sum / weight : 1;
+}
+
+/* How much a muon's single collisions can take at most; electrons lose any amount. */
+static double most_transfer(const bh_encounter *e, double kinetic)
+{
+    return is_electron(e) ? (double)INFINITY : bh_flight_of(e->beam, kinetic).transfer;
+}
+
+/* Mean of xi before, scaled to what it does to the scattered energy, and after [MeV]. */
+static double mean_tail(const struct matter *m)
+{
+    double sum = 0, weight = 0;
+    for (size_t i = 0; i < m->count; i++) {
+        const bh_external x = external_of(m, i, 1);
+        const double eta = x.incident / x.scattered;
+        const double w = m->request->vertices[i * m->step].weight;
+        sum += w * (x.before.xi / (eta * eta) + x.after.xi);
+        weight += w;
+    }
+    return weight > 0 ? sum / weight : 0;
+}
+
+static double collisions_kept(double tail, double cut, double most)
+{
+    return cut > 0 ? fmax(0, 1 - tail * fmax(0, 1 / cut - 1 / most)) : 0;
+}
+
+static void set_lengths(const struct matter *m, bh_radiated_detail *out)
+{
+    double weight = 0;
+    out->before = out->after = 0;
+    for (size_t i = 0; i < m->count; i++) {
+        const bh_vertex *v = &m->request->vertices[i * m->step];
+        out->before += v->weight * v->before.lengths;
+        out->after += v->weight * m->after[i].lengths;
+        weight += v->weight;
+    }
+    out->before /= weight > 0 ? weight : 1;
+    out->after /= weight > 0 ? weight : 1;
+}
+
+/* Where the line is between the edges. */
+static bool set_line(const bh_radiated_request *r, double angle, bh_radiated_detail *out)
+{
+    const bh_encounter *e = &r->channel.encounter;
+    if (!event_at(&r->channel, angle, &out->event))
+        return false;
+    const double kinetic = bh_channel_kinetic(&r->channel, &out->event);
+    const double by_bite = r->gate.from > 0 ? kinetic - r->gate.from : (double)INFINITY;
+    out->cut = kinetic - bh_gate_from(&r->gate, &r->line, angle);
+    out->by_bite = out->cut >= by_bite;
+    out->above = r->gate.to < (double)INFINITY ? kinetic - r->gate.to : -(double)INFINITY;
+    out->soft = out->event.scattered_kinetic;
+    if (!r->signal)
+        out->soft = fmin(out->soft, soft_share * (out->event.scattered_kinetic + e->beam->mass));
+    return true;
+}
+
+bool bh_radiated_at(const bh_radiated_request *request, double angle, bh_radiated_detail *out)
+{
+    struct matter m = {.at = out};
+    const bh_encounter *e = &request->channel.encounter;
+    *out = (bh_radiated_detail){.factor = 0};
+    if (!set_line(request, angle, out))
+        return false;
+    set_matter(request, angle, &m);
+    set_lengths(&m, out);
+    const double cut = fmin(out->cut, out->soft);
+    if (!(cut > 0))
+        return true;
+    out->internal = request->model->parts(e, cut, &out->event);
+    out->internal_factor = bh_radiative_combine(&out->internal, e->z);
+    out->external = mean_external(&m, cut);
+    out->ionisation = collisions_kept(mean_tail(&m), cut, most_transfer(e, e->kinetic));
+    out->factor = out->internal_factor * out->external * out->ionisation;
+    return true;
+}
+
+/* --- making --- */
+
+/* Second degree in ln cut through three cuts, each half of the one before. */
+static void set_levels(const struct matter *m, double top, bh_radiated *out, int i)
+{
+    const bh_encounter *e = &m->request->channel.encounter;
+    double value[3];
+    const bh_radiative_parts high = m->request->model->parts(e, top, &m->at->event);
+    const bh_radiative_parts low = m->request->model->parts(e, top / 4, &m->at->event);
+    const double internal = log(bh_radiative_combine(&high, e->z));
+    const double fall = (internal - log(bh_radiative_combine(&low, e->z))) / 2;
+    for (int k = 0; k < 3; k++)
+        value[k] = internal - k * fall + log(mean_external(m, ldexp(top, -k)));
+    const double l = log(2.0), shift = log(top / out->reference);
+    const double curve = (value[0] - 2 * value[1] + value[2]) / (2 * l * l);
+    const double slope = (value[0] - value[1]) / l + curve * l; /* at the top */
+    out->level[2][i] = curve;
+    out->level[1][i] = slope - 2 * curve * shift;
+    out->level[0][i] = value[0] - slope * shift + curve * shift * shift;
+}
+
+static void boost_channel(bh_channel *channel, int boost)
+{
+    static const double by[BH_BOOSTS] = {0, -BH_STEP_MOMENTUM, BH_STEP_MOMENTUM};
+    bh_encounter *e = &channel->encounter;
+    e->kinetic = bh_boosted_kinetic(e->beam, e->kinetic, by[boost]);
+}
+
+/* How far the line of the signal moves with the momentum of the beam. */
+static void set_shift(const bh_radiated_request *r, double angle, double kinetic, bh_radiated *out,
+                      int i)
+{
+    for (int b = 0; b < BH_BOOSTS; b++) {
+        bh_channel there = r->channel;
+        bh_event event;
+        boost_channel(&there, b);
+        out->shift[b][i] = b && r->signal && event_at(&there, angle, &event)
+                               ? bh_channel_kinetic(&there, &event) - kinetic
+                               : 0;
+    }
+}
+
+static void set_node(const bh_radiated_request *r, double angle, bh_radiated *out, int i)
+{
+    static const double far = 1e30; /* of an edge that is not there */
+    const double infinite = (double)INFINITY;
+    bh_radiated_detail at = {.factor = 0};
+    struct matter m = {.at = &at};
+    bh_event event;
+    (void)set_line(r, angle, &at); /* inside the largest angle there is always one */
+    set_matter(r, angle, &m);
+    const double kinetic = bh_channel_kinetic(&r->channel, &at.event);
+    out->cut[i] = r->gate.from > 0 ? kinetic - r->gate.from : far;
+    out->above[i] = r->gate.to < infinite ? at.above : -far;
+    out->soft[i] = at.soft;
+    out->limit[i] = far;
+    if (r->gate.cut < infinite)
+        out->limit[i] = event_at(&r->line, angle, &event)
+                            ? kinetic - bh_channel_kinetic(&r->line, &event) + r->gate.cut
+                            : -kinetic;
+    const double most = most_transfer(&r->channel.encounter, r->channel.encounter.kinetic);
+    set_shift(r, angle, kinetic, out, i);
+    out->tail[i] = mean_tail(&m) * fmax(0, 1 - out->reference / most);
+    set_levels(&m, fmin(out->reference, at.soft), out, i);
+}
+
+/* What is kept inside `cut` [MeV]. */
+static double kept_inside(const bh_radiated *x, const double *share, double cut)
+{
+    if (!(cut > 0))
+        return 0;
+    const double l = fmax(log(cut / x->reference), least_log);
+    const double tail = bh_angle_between(&x->at, share, x->tail);
+    double sum = 0;
+    for (int k = 2; k >= 0; k--)
+        sum = sum * l + bh_angle_between(&x->at, share, x->level[k]);
+    return exp(sum) * fmax(0, 1 - tail / cut);
+}
+
+static double factor_at(const bh_radiated *x, int boost, double angle)
+{
+    const double far = 1e29;
+    double share[BH_ANGLE_NODES], down = far;
+    if (angle > x->largest)
+        return 0;
+    bh_angle_shares(&x->at, angle, share);
+    const double soft = bh_angle_between(&x->at, share, x->soft);
+    if (x->cut[0] < far)
+        down = bh_angle_between(&x->at, share, x->cut) +
+               (boost ? bh_angle_between(&x->at, share, x->shift[boost]) : 0);
+    if (x->limit[0] < far)
+        down = fmin(down, bh_angle_between(&x->at, share, x->limit));
+    const double kept = kept_inside(x, share, fmin(down, soft));
+    if (x->signal || x->above[0] < -far)
+        return kept;
+    const double above = bh_angle_between(&x->at, share, x->above);
+    return fmax(0, kept - kept_inside(x, share, fmin(above, soft)));
+}
+
+/* Whether the polynomials miss the ends, where they are worst. */
+static bool is_rough(const bh_radiated_request *r, const bh_radiated *x, bh_interval polar)
+{
+    static const double most = 3e-3;
+    const double ends[] = {polar.from, polar.to};
+    bool rough = false;
+    for (int i = 0; i < 2; i++) {
+        bh_radiated_detail at;
+        (void)bh_radiated_at(r, ends[i], &at);
+        const double got =
+            x->signal || !(at.above > 0) ? factor_at(x, BH_AS_IT_IS, ends[i]) : at.factor;
+        rough = rough || !(fabs(got - at.factor) <= most * at.factor);
+    }
+    return rough;
+}
+
+static void set_nodes(const bh_radiated_request *r, bh_interval polar, int count, bh_radiated *out)
+{
+    bh_angle_nodes_of(polar, count, &out->at);
+    for (int i = 0; i < count; i++)
+        set_node(r, out->at.angle[i], out, i);
+}
+
+static bool works(const bh_radiated_request *r)
+{
+    return r->gate.given && r->channel.encounter.beam->kind == BH_KIND_LEPTON &&
+           r->model != bh_radiative_find("none") && r->polar.to > 0;
+}
+
+/* The cut in the middle of the angles, or what stands for it. */
+static double reference_for(const bh_radiated_request *r, double angle)
+{
+    bh_radiated_detail at = {.factor = 0};
+    if (!set_line(r, angle, &at))
+        return 0;
+    const double cut = at.cut < (double)INFINITY ? at.cut : at.soft;
+    return fmin(fmax(cut, 1e-3 * at.event.scattered_kinetic), at.soft);
+}
+
+/* The same cut at slightly other momenta of the beam. */
+static void set_boosted(const bh_radiated_request *r, double angle, bh_radiated *out)
+{
+    bh_radiated_request same = *r;
+    bh_radiated_detail here, there;
+    for (int b = 0; b < BH_BOOSTS; b++)
+        out->boosted[b] = 1;
+    same.gate = (bh_gate){.cut = out->reference, .to = (double)INFINITY, .given = true};
+    if (!r->signal || !bh_radiated_at(&same, angle, &here) || !(here.factor > 0))
+        return;
+    for (int b = BH_BOOSTED_DOWN; b < BH_BOOSTS; b++) {
+        bh_radiated_request boosted = same;
+        boost_channel(&boosted.channel, b);
+        boost_channel(&boosted.line, b);
+        if (bh_radiated_at(&boosted, angle, &there))
+            out->boosted[b] = there.factor / here.factor;
+    }
+}
+
+void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out)
+{
+    static const double inside = 1 - 1e-9;
+    bh_interval polar = request->polar;
+    out->idle = !works(request);
+    out->at.count = 0;
+    if (out->idle)
+        return;
+    out->signal = request->signal;
+    out->largest = bh_channel_largest_angle(&request->channel) * inside;
+    polar.to = fmin(polar.to, out->largest);
+    polar.from = fmin(fmax(polar.from, 1e-6), polar.to);
+    out->reference = reference_for(request, (polar.from + polar.to) / 2);
+    if (!(out->reference > 0)) {
+        out->idle = true;
+        return;
+    }
+    set_nodes(request, polar, bh_angle_points(polar), out);
+    if (is_rough(request, out, polar))
+        set_nodes(request, polar, BH_ANGLE_NODES, out);
+    set_boosted(request, (polar.from + polar.to) / 2, out);
+}
+
+void bh_radiated_apply(const bh_radiated *radiated, int boost, size_t n, const double *theta,
+                       double *value)
+{
+    for (size_t i = 0; !radiated->idle && i < n; i++)
+        value[i] *= radiated->boosted[boost] * factor_at(radiated, boost, theta[i]);
+}

@@ -1,0 +1,103 @@
+/* unwanted.c - what lies beneath the elastic lines, nuclide by nuclide, added to what arms count.
+ */
+#include <math.h>
+
+#include "beamhours/run/beneath.h"
+
+/* The request for the scattered particle on a nuclide; its vertices are in the yielder. */
+static bh_code request_for(bh_yielder *yielder, const bh_view *view, const bh_nuclei *nuclei,
+                           const bh_way *way, bh_radiated_request *request, bh_error *err)
+{
+    bh_channels channels;
+    const size_t count = bh_view_vertices(yielder, way, nuclei);
+    const bh_code code =
+        bh_view_channels(yielder, view, &nuclei->list->nuclides[nuclei->nuclide], &channels, err);
+    if (code)
+        return code;
+    *request = bh_view_radiated(yielder, view, &channels.list[0], way, count);
+    request->signal = nuclei->origin == BH_ORIGIN_SIGNAL && !nuclei->all;
+    return BH_OK;
+}
+
+/* What a sum is made in. */
+struct adding {
+    const bh_view *view;
+    const bh_way *way;
+    bh_beneath smooth;
+    double *total; /* [ub/cm2] of all parts */
+};
+
+static bh_code add_nuclei(bh_yielder *yielder, struct adding *a, const bh_nuclei *nuclei,
+                          double number, int which, bh_error *err)
+{
+    bh_radiated_request request;
+    const bh_beneath_of of = {.radiated = &request,
+                              .list = nuclei->list,
+                              .struck = &nuclei->list->nuclides[nuclei->nuclide],
+                              .nuclei = number};
+    bh_code code = request_for(yielder, a->view, nuclei, a->way, &request, err);
+    if (!code)
+        bh_beneath_add(yielder, a->view, &of, which, &a->smooth);
+    return code ? code : bh_beneath_atomic(yielder, a->view, &of, which, a->total, err);
+}
+
+static double *cleared(bh_yielder *yielder, const bh_view *view)
+{
+    double *total = bh_workspace_scratch(yielder->workspace)->totals;
+    for (int i = 0; i < view->parts; i++)
+        total[i] = 0;
+    return total;
+}
+
+/* Everything of one origin, the scatterer's own with what is not a window; or of a dummy cell. */
+static bh_code add_origin(bh_yielder *yielder, struct adding *a, const bh_struck_list *list,
+                          int origin, bh_error *err)
+{
+    const bool dummy = origin == BH_ORIGINS;
+    bh_code code = BH_OK;
+    bh_beneath_begin(a->view, &a->smooth);
+    a->total = cleared(yielder, a->view);
+    for (size_t k = 0; !code && a->smooth.at.count && k < list->count * BH_ORIGINS; k++) {
+        const int o = (int)(k % BH_ORIGINS);
+        const double number = yielder->seen[k / BH_ORIGINS].of[o];
+        const bool meant = dummy || (o == BH_ORIGIN_WINDOW) == (origin == BH_ORIGIN_WINDOW);
+        bh_nuclei nuclei = {.list = list, .nuclide = k / BH_ORIGINS, .origin = (bh_origin)o};
+        nuclei.all = dummy;
+        if (meant && number > 0)
+            code = add_nuclei(yielder, a, &nuclei, number, BH_BENEATH_ALL, err);
+    }
+    return code ? code : bh_beneath_sum(yielder, a->view, &a->smooth, a->total, err);
+}
+
+bh_code bh_beneath_yield(bh_yielder *yielder, bh_yield *yield, const bh_struck_list *list,
+                         const bh_way *way, bh_error *err)
+{
+    struct adding a = {.view = &yield->view, .way = way};
+    const bool dummy = list != yield->view.list;
+    bh_code code = add_origin(yielder, &a, list, dummy ? BH_ORIGINS : BH_ORIGIN_OTHER, err);
+    for (int i = 0; !code && i < yield->view.parts; i++)
+        *(dummy ? &yield->part[i].dummy : &yield->part[i].other) += a.total[i];
+    if (code || dummy)
+        return code;
+    code = add_origin(yielder, &a, list, BH_ORIGIN_WINDOW, err);
+    for (int i = 0; !code && i < yield->view.parts; i++)
+        yield->part[i].windows += a.total[i];
+    return code;
+}
+
+bh_code bh_beneath_presence(bh_yielder *yielder, const bh_view *view, const bh_presence *presence,
+                            int which, double *total, bh_error *err)
+{
+    struct adding a = {.view = view, .way = &view->way, .total = total};
+    const bh_nuclei nuclei = {.list = view->list,
+                              .nuclide = presence->nuclide,
+                              .origin = presence->origin,
+                              .only = presence};
+    for (int i = 0; i < view->parts; i++)
+        total[i] = 0;
+    bh_beneath_begin(view, &a.smooth);
+    if (!a.smooth.at.count)
+        return BH_OK;
+    const bh_code code = add_nuclei(yielder, &a, &nuclei, 1, which, err);
+    return code ? code : bh_beneath_sum(yielder, view, &a.smooth, total, err);
+}
