@@ -35,8 +35,9 @@ tried() { try "$1" "$2"; rm -f "$folder/$1.test" "$folder/$1.o" "$folder/$1.bare
 if [ $# -eq 3 ]; then tried "$2" "$3"; exit; fi
 
 rm -rf "$folder" && mkdir -p "$folder" || exit 1
-# Not yet under this run: backgrounds beside elastic scattering, and particles on their way through matter.
-later='atomic_electron|inclusive|inelastic|quasi_elastic|structure_functions|background|arriving|leaving|passage'
+# Not yet under this run: backgrounds beside elastic scattering, particles on their way through matter, and the
+# uncertainties that follow from a plan's.
+later='atomic_electron|inclusive|inelastic|quasi_elastic|structure_functions|background|arriving|leaving|passage|energies|collect|systematic|model_spread|gate'
 formulas() { find "src/$1" -name '*.c' ! -name '*_table.c' | grep -Ev "$later" | sort; }
 # of run/, what multiplies a row out: not what only says it
 rows() { find src/run -name '*.c' ! -name 'explain*' ! -name 'cautions.c' ! -name 'remarks.c' ! -name 'columns.c' |

@@ -67,6 +67,29 @@ START_TEST(nobody_gave_the_times)
 }
 END_TEST
 
+/* Two arms, of which one moves at a time or neither: K2 moves B, K3 nothing, K4 A, K5 both at once.
+ */
+START_TEST(an_arm_that_moves_is_a_change)
+{
+    static const int degrees[][2] = {{20, 60}, {20, 70}, {20, 70}, {30, 70}, {40, 80}};
+    char text[2048];
+    size_t n = (size_t)snprintf(
+        text, sizeof text,
+        "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 10 uA}\n"
+        "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 4 cm}], scatterer: H}\n"
+        "arms: [{name: A, solid_angle: 1 msr}, {name: B, side: left, solid_angle: 1 msr}]\n"
+        "schedule: {start_up: 0 h, changes: {angle: 1 h}}\nsettings:\n");
+    for (int i = 0; i < COUNT(degrees); i++)
+        n += (size_t)snprintf(text + n, sizeof text - n,
+                              "  - {name: K%d, arms: [{arm: A, angle: %d deg, time: 1 h}, {arm: B, "
+                              "angle: %d deg}]}\n",
+                              i + 1, degrees[i][0], degrees[i][1]);
+    struct evaluated e = evaluate(text);
+    ck_assert_relative(bh_table_totals(e.table)->change_hours, 3, 1e-12, "K2, K4, K5");
+    done(&e);
+}
+END_TEST
+
 /* Muon-lifetime proposal, beam-time estimate: 1e12 events of 12 muons in each cycle of 12 us, 75 %
  * accepted, at 80 % of the time: 2.1e9 an hour (rounded down), 475 h, 3.8 weeks of 125 h.  3 %. The
  * rate of one arm is made 0.75e6 /s by its efficiency. */
@@ -100,6 +123,7 @@ int main(void)
     TCase *tests = tcase_create("totals");
     tcase_add_test(tests, by_hand);
     tcase_add_test(tests, nobody_gave_the_times);
+    tcase_add_test(tests, an_arm_that_moves_is_a_change);
     tcase_add_test(tests, muon_lifetime_proposal);
     return run_suite("run/totals", tests);
 }

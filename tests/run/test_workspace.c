@@ -5,6 +5,7 @@
 
 #include "beamhours/run/row.h"
 #include "beamhours/run/workspace.h"
+#include "beamhours/units/nuclide.h"
 
 START_TEST(kept_by_value)
 {
@@ -72,6 +73,28 @@ START_TEST(reasons_are_sentences)
 }
 END_TEST
 
+/* More structures than a workspace holds, one after the other: it starts anew in time. */
+START_TEST(it_never_runs_out_of_structures)
+{
+    static const char *const names[] = {"point", "uniform", "helm", "fermi-2p"};
+    bh_workspace *workspace = bh_workspace_new();
+    int made = 0;
+    for (int n = 0; n < COUNT(names); n++)
+        for (int z = 1; z < 100; z++)
+            for (int a = z; a < 3 * z + 2; a++) {
+                bh_error err = {.text = ""};
+                if (!bh_nuclide_find(z, a) || (n && a < 4))
+                    continue;
+                bh_workspace_trim(workspace);
+                ck_assert_msg(bh_workspace_structure(workspace, names[n], z, a, &err) != NULL,
+                              "%s of %d, %d: %s", names[n], z, a, err.text);
+                made++;
+            }
+    ck_assert_int_gt(made, 1100);
+    bh_workspace_free(workspace);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("workspace");
@@ -79,5 +102,6 @@ int main(void)
     tcase_add_test(tests, structures_are_made_once);
     tcase_add_test(tests, too_much_is_forgotten);
     tcase_add_test(tests, reasons_are_sentences);
+    tcase_add_test(tests, it_never_runs_out_of_structures);
     return run_suite("workspace", tests);
 }

@@ -2,6 +2,7 @@
  */
 #include "evaluated.h"
 
+#include "beamhours/physics/kinematics.h"
 #include "beamhours/physics/structure.h"
 #include "beamhours/run/channel.h"
 #include "beamhours/units/constants.h"
@@ -76,6 +77,30 @@ START_TEST(a_row_has_the_event_at_its_axis)
         ck_assert_relative(cell(&e, 0, rows[i].column), rows[i].value, 2e-6,
                            bh_column_at(rows[i].column)->key);
     done(&e);
+}
+END_TEST
+
+/* Recoil protons above a threshold are those at angles below that of its energy. */
+START_TEST(a_threshold_is_an_energy)
+{
+    static const char form[] =
+        BEAM "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm}], scatterer: "
+             "1H}\narms: [{name: A, detects: recoil, ring: {from: 20 deg, to: %.12g deg}%s}]\n"
+             "settings: [{name: K, time: 1 h}]\n";
+    const bh_collision in = {BH_MASS_ELECTRON, BH_MASS_PROTON, 855};
+    bh_event e;
+    ck_assert_int_eq(bh_kinematics_q2(&in, 2 * BH_MASS_PROTON * 100, &e, NULL), BH_OK);
+    ck_assert_double_eq_tol(e.recoil_kinetic, 100, 1e-9);
+    char text[1024];
+    snprintf(text, sizeof text, form, 75.0, ", threshold: 100 MeV");
+    struct evaluated cut = evaluate(text);
+    snprintf(text, sizeof text, form, e.recoil_angle / BH_DEGREE, "");
+    struct evaluated short_of = evaluate(text);
+    ck_assert_double_lt(e.recoil_angle / BH_DEGREE, 74);
+    ck_assert_relative(cell(&cut, 0, BH_COL_SIGNAL), cell(&short_of, 0, BH_COL_SIGNAL), 2e-6,
+                       "above 100 MeV");
+    done(&cut);
+    done(&short_of);
 }
 END_TEST
 
@@ -329,6 +354,7 @@ int main(void)
     TCase *tests = tcase_create("yield");
     tcase_add_loop_test(tests, sensitivity_of_a_viewed_target, 0, COUNT(views));
     tcase_add_test(tests, a_row_has_the_event_at_its_axis);
+    tcase_add_test(tests, a_threshold_is_an_energy);
     tcase_add_test(tests, all_that_is_counted_is_the_same_whoever_is_wanted);
     tcase_add_test(tests, the_empty_target_measures_the_windows);
     tcase_add_test(tests, a_dummy_cell_gives_all_of_itself);
