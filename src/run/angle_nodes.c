@@ -17,7 +17,7 @@ int bh_angle_points(bh_interval polar)
     static const struct {
         double span; /* [1] at most, of ln(1 - cos theta) */
         int points;
-    } steps[] = {{0, 1}, {0.15, 3}, {0.5, 4}, {1, 6}, {2, 8}, {4, 13}};
+    } steps[] = {{0, 1}, {0.06, 2}, {0.25, 3}, {0.7, 4}, {1.4, 6}, {2, 8}, {4, 13}};
     const double span = variable_of(polar.to) - variable_of(polar.from);
     for (size_t i = 0; i < sizeof steps / sizeof steps[0]; i++)
         if (span <= steps[i].span)

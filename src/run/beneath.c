@@ -22,7 +22,9 @@ void bh_beneath_begin(const bh_view *view, bh_beneath *sum)
     if (!(sum->polar.to > 0))
         return;
     sum->polar.from = fmax(sum->polar.from, 1e-4);
-    bh_angle_nodes_of(sum->polar, bh_angle_points(sum->polar), &sum->at);
+    const int more =
+        sum->polar.to > sum->polar.from && bh_angle_points(sum->polar) < BH_ANGLE_NODES;
+    bh_angle_nodes_of(sum->polar, bh_angle_points(sum->polar) + more, &sum->at);
 }
 
 static double momentum_of(double mass, double kinetic)

@@ -21,7 +21,8 @@ static bh_code integrals(bh_yielder *yielder, const bh_view *view, int part, bh_
                                   .way = &view->way,
                                   .count = count,
                                   .signal = signal,
-                                  .whole = true};
+                                  .whole = yielder->explaining,
+                                  .binless = part == 0 && !signal};
         const bh_channel_sum *sums = bh_elastic_sums(yielder, view, &of, err);
         if (!sums)
             return err->code;

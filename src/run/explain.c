@@ -223,6 +223,7 @@ bh_explanation *bh_explain(const bh_table *table, const char *setting, const cha
         x->arena = arena;
         x->bin = bin;
         x->evaluator.yielder.workspace = workspace;
+        x->evaluator.yielder.explaining = true;
         code = explain(x, setting, arm, &why);
     } else {
         bh_fail(&why, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));

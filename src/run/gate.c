@@ -104,6 +104,7 @@ const bh_channel_sum *bh_elastic_sums(bh_yielder *yielder, const bh_view *view,
     bh_radiated_make(&radiated, &factor);
     request.radiated = &factor;
     request.sensitivities = of->signal;
+    request.bins = request.bins && !of->binless;
     request.radiated_only = !of->signal && !of->whole;
     if (!of->signal && !factor.idle) /* the factor knows the edges */
         request.cut = false;

@@ -263,20 +263,20 @@ static double factor_at(const bh_radiated *x, int boost, double angle)
     return fmax(0, kept - kept_inside(x, share, fmin(above, soft)));
 }
 
-/* Whether the polynomials miss the ends, where they are worst. */
-static bool is_rough(const bh_radiated_request *r, const bh_radiated *x, bh_interval polar)
+/* Whether the way out changes so much between the angles that few points do not show it. */
+static bool is_rough(const bh_radiated_request *r, bh_interval polar)
 {
-    static const double most = 3e-3;
-    const double ends[] = {polar.from, polar.to};
-    bool rough = false;
-    for (int i = 0; i < 2; i++) {
-        bh_radiated_detail at;
-        (void)bh_radiated_at(r, ends[i], &at);
-        const double got =
-            x->signal || !(at.above > 0) ? factor_at(x, BH_AS_IT_IS, ends[i]) : at.factor;
-        rough = rough || !(fabs(got - at.factor) <= most * at.factor);
+    static const double much = 1.6, some = 0.003; /* [1] and radiation lengths */
+    double least = (double)INFINITY, most = 0;
+    for (int i = 0; i < 3; i++) {
+        struct matter m = {.request = r};
+        bh_radiated_detail at = {.factor = 0};
+        set_matter(r, polar.from + (polar.to - polar.from) * i / 2, &m);
+        set_lengths(&m, &at);
+        least = fmin(least, at.after);
+        most = fmax(most, at.after);
     }
-    return rough;
+    return most > much * least + some;
 }
 
 static void set_nodes(const bh_radiated_request *r, bh_interval polar, int count, bh_radiated *out)
@@ -338,9 +338,8 @@ void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out)
         out->idle = true;
         return;
     }
-    set_nodes(request, polar, bh_angle_points(polar), out);
-    if (is_rough(request, out, polar))
-        set_nodes(request, polar, BH_ANGLE_NODES, out);
+    set_nodes(request, polar, is_rough(request, polar) ? BH_ANGLE_NODES : bh_angle_points(polar),
+              out);
     set_boosted(request, (polar.from + polar.to) / 2, out);
 }
 

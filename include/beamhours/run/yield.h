@@ -28,6 +28,7 @@ typedef struct {
     bh_workspace *workspace;
     bool (*cancelled)(void *asker); /* polled for each nuclide of each arm; NULL: never */
     void *asker;
+    bool explaining;         /* contributions are wanted with cross sections, not rates alone */
     bh_remarks *remarks;     /* warnings go here; NULL: they are not wanted */
     bh_struck_list *lists;   /* of each target of the plan */
     bh_seen_numbers *seen;   /* room for the nuclides of any target */
@@ -156,8 +157,9 @@ typedef struct {
     const bh_channel *channel;
     const bh_way *way;
     size_t count;
-    bool signal; /* nuclei of the scatterer in the sample */
-    bool whole;  /* the cross section without radiation is wanted, for explain */
+    bool signal;  /* nuclei of the scatterer in the sample */
+    bool whole;   /* the cross section without radiation is wanted, for explain */
+    bool binless; /* the sums of bins are not wanted */
 } bh_elastic_of;
 
 /* Their sums over the arm of `view`, radiation among them: of the signal what is inside the bite,
