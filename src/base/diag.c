@@ -9,8 +9,9 @@
 #include "beamhours/base/arena.h"
 
 struct entry {
-    bh_diag diag;    /* first, so that a pointer to it serves for both */
-    size_t file, nr; /* which file, and which entry, in order of appearance */
+    bh_diag diag;       /* first, so that a pointer to it serves for both */
+    struct entry *next; /* with the same hash */
+    size_t file, nr;    /* which file, and which entry, in order of appearance */
 };
 
 struct bh_diags {
@@ -18,6 +19,8 @@ struct bh_diags {
     struct entry **entries;
     const char **files; /* every name that appeared, once; a missing one too */
     size_t count, room, errors, file_count, file_room;
+    struct entry **hashed; /* `buckets` chains of the first `known` entries; NULL: not asked for */
+    size_t buckets, known;
     bool lost; /* memory ran out: `loss` stands for what is missing */
     bh_diag loss;
 };
@@ -43,6 +46,7 @@ void bh_diags_free(bh_diags *diags)
     bh_arena_free(diags->arena);
     free(diags->entries);
     free(diags->files);
+    free(diags->hashed);
     free(diags);
 }
 
@@ -174,6 +178,53 @@ const bh_diag *bh_diags_at(const bh_diags *diags, size_t i)
     return i < diags->count ? &diags->entries[i]->diag : &diags->loss;
 }
 
+/* --- told already? --- */
+
+static size_t hash_of(bh_mark at, const char *text)
+{
+    size_t hash = (size_t)at.line * 31U + (size_t)at.column;
+    for (const char *c = text; *c; c++)
+        hash = hash * 31U + (unsigned char)*c;
+    return hash;
+}
+
+static void note_entry(bh_diags *diags, struct entry *e)
+{
+    struct entry **chain = &diags->hashed[hash_of(e->diag.at, e->diag.text) % diags->buckets];
+    e->next = *chain;
+    *chain = e;
+}
+
+/* Brings the chains up to date; false without memory. */
+static bool know_all(bh_diags *diags)
+{
+    if (!diags->hashed || diags->count > 2 * diags->buckets) {
+        const size_t buckets = diags->buckets ? 4 * diags->buckets : 256;
+        free(diags->hashed);
+        diags->hashed = calloc(buckets, sizeof(struct entry *));
+        diags->buckets = diags->hashed ? buckets : 0;
+        diags->known = 0;
+    }
+    if (!diags->hashed)
+        return false;
+    while (diags->known < diags->count)
+        note_entry(diags, diags->entries[diags->known++]);
+    return true;
+}
+
+bool bh_diags_told(bh_diags *diags, bh_mark at, const char *text)
+{
+    if (!know_all(diags)) {
+        diags->lost = true;
+        return false;
+    }
+    for (const struct entry *e = diags->hashed[hash_of(at, text) % diags->buckets]; e; e = e->next)
+        if (e->diag.at.line == at.line && e->diag.at.column == at.column &&
+            same_name(e->diag.at.file, at.file) && strcmp(e->diag.text, text) == 0)
+            return true;
+    return false;
+}
+
 static int order(size_t a, size_t b)
 {
     return (a > b) - (a < b);
@@ -192,6 +243,9 @@ static int by_place(const void *left, const void *right)
 
 void bh_diags_sort(bh_diags *diags)
 {
+    free(diags->hashed); /* it knows entries by their number */
+    diags->hashed = NULL;
+    diags->buckets = 0;
     if (diags->count > 1)
         qsort(diags->entries, diags->count, sizeof(struct entry *), by_place);
 }

@@ -134,8 +134,8 @@ int bh_cmd_new(const bh_arguments *arguments)
         return bh_usage(arguments, "needs the name of the file to write");
     const char *path = arguments->words[0], *like = arguments->value[BH_OPT_LIKE];
     if (access(path, F_OK) == 0) {
-        fprintf(stderr, "beamhours: new: %s exists and is left as it is: choose another name\n",
-                path);
+        bh_print(stderr, "beamhours: new: %s exists and is left as it is: choose another name\n",
+                 path);
         return EX_CANTCREAT;
     }
     struct demos d = {.count = 0};

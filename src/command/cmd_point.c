@@ -190,8 +190,8 @@ static int answer(const bh_arguments *a, const char *format, const bh_single_req
                                                     : bh_complain(stderr, &err);
     for (size_t i = 0; i < sizeof s.warning / sizeof s.warning[0]; i++)
         if (s.warning[i][0])
-            fprintf(stderr, "beamhours: %s: warning: %s\n", bh_command_name(a->command),
-                    s.warning[i]);
+            bh_print(stderr, "beamhours: %s: warning: %s\n", bh_command_name(a->command),
+                     s.warning[i]);
     int status = 0;
     if (strcmp(format, "json") == 0)
         status = as_json(&s, &out);

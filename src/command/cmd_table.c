@@ -47,8 +47,8 @@ static void say_aside(const bh_table *table, const char *format)
     bh_say_diags(stderr, bh_table_warnings(table));
     for (size_t i = 0; strcmp(format, "csv") == 0 && i < bh_table_cautions(table); i++) {
         const bh_caution *c = bh_table_caution(table, i);
-        fprintf(stderr, "%s:%d:%d: caution: %s: %s\n", c->at.file ? c->at.file : "-", c->at.line,
-                c->at.column, c->key, c->text);
+        bh_print(stderr, "%s:%d:%d: caution: %s: %s\n", c->at.file ? c->at.file : "-", c->at.line,
+                 c->at.column, c->key, c->text);
     }
 }
 

@@ -20,7 +20,7 @@ static int no_memory(void)
 int bh_input_open(const char *name, bh_input *in)
 {
     bh_error err = {.code = BH_OK};
-    *in = (bh_input){.name = name};
+    *in = (bh_input){.name = name, .shown = bh_plain(name)};
     const bh_code bad = strcmp(name, "-") == 0 ? bh_file_read_stream(stdin, "standard input",
                                                                      MOST_BYTES, &in->bytes, &err)
                                                : bh_file_read(name, MOST_BYTES, &in->bytes, &err);
@@ -39,6 +39,7 @@ void bh_input_close(bh_input *in)
     bh_diags_free(in->diags);
     bh_material_library_free(in->library);
     bh_text_free(&in->bytes);
+    free(in->shown);
     *in = (bh_input){0};
 }
 
@@ -48,10 +49,10 @@ void bh_say_diags(FILE *to, const bh_diags *diags)
         const bh_diag *d = bh_diags_at(diags, i);
         const char *kind = d->severity == BH_SEVERITY_WARNING ? "warning: " : "";
         if (d->at.line > 0)
-            fprintf(to, "%s:%d:%d: %s%s: %s\n", d->at.file, d->at.line, d->at.column, kind, d->key,
-                    d->text);
+            bh_print(to, "%s:%d:%d: %s%s: %s\n", d->at.file, d->at.line, d->at.column, kind, d->key,
+                     d->text);
         else
-            fprintf(to, "%s: %s%s: %s\n", d->at.file ? d->at.file : "-", kind, d->key, d->text);
+            bh_print(to, "%s: %s%s: %s\n", d->at.file ? d->at.file : "-", kind, d->key, d->text);
     }
 }
 
@@ -83,8 +84,9 @@ int bh_input_plan(bh_input *in, const bh_arguments *arguments)
     if (status == 0 && !in->diags)
         status = no_memory();
     if (status == 0) {
-        in->plan = bh_plan_read(in->bytes.bytes ? in->bytes.bytes : "", in->bytes.length, in->name,
-                                changes, count, in->library, in->diags);
+        in->plan =
+            bh_plan_read(in->bytes.bytes ? in->bytes.bytes : "", in->bytes.length,
+                         in->shown ? in->shown : in->name, changes, count, in->library, in->diags);
         if (!in->plan) {
             bh_say_diags(stderr, in->diags);
             status = bh_diags_count(in->diags) ? EX_DATAERR : no_memory();

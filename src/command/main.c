@@ -5,6 +5,7 @@
 #include <sysexits.h>
 
 #include "beamhours.h"
+#include "beamhours/command/complain.h"
 #include "beamhours/command/options.h"
 
 static int (*const functions[])(const bh_arguments *) = {
@@ -28,8 +29,8 @@ static int introduce(void)
 static int unknown(const char *word)
 {
     const char *near = word[0] == '-' ? NULL : bh_command_suggest(word);
-    fprintf(stderr, "beamhours: no %s \"%s\"%s%s%s\n", word[0] == '-' ? "option" : "command", word,
-            near ? "; did you mean " : "", near ? near : "", near ? "?" : "");
+    bh_print(stderr, "beamhours: no %s \"%s\"%s%s%s\n", word[0] == '-' ? "option" : "command", word,
+             near ? "; did you mean " : "", near ? near : "", near ? "?" : "");
     fputs("beamhours: try: beamhours --help\n", stderr);
     return EX_USAGE;
 }

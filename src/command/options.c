@@ -1,6 +1,7 @@
 /* options.c - GNU-style options from one list: --name VALUE, --name=VALUE, -x VALUE, -xVALUE, --.
  */
 #include "beamhours/command/options.h"
+#include "beamhours/command/complain.h"
 
 #include <string.h>
 #include <sysexits.h>
@@ -85,21 +86,21 @@ static int find_short(bh_command_id command, char letter)
 
 static int see_help(const char *command)
 {
-    fprintf(stderr, "beamhours: try: beamhours %s --help\n", command);
+    bh_print(stderr, "beamhours: try: beamhours %s --help\n", command);
     return EX_USAGE;
 }
 
 int bh_usage(const bh_arguments *arguments, const char *sentence)
 {
     const char *command = commands[arguments->command].name;
-    fprintf(stderr, "beamhours: %s: %s\n", command, sentence);
+    bh_print(stderr, "beamhours: %s: %s\n", command, sentence);
     return see_help(command);
 }
 
 int bh_usage_option(const bh_arguments *arguments, bh_option_id id, const char *sentence)
 {
     const char *command = commands[arguments->command].name;
-    fprintf(stderr, "beamhours: %s: --%s: %s\n", command, options[id].name, sentence);
+    bh_print(stderr, "beamhours: %s: --%s: %s\n", command, options[id].name, sentence);
     return see_help(command);
 }
 
@@ -113,8 +114,8 @@ static int unknown(bh_command_id command, const char *word)
     char bare[40];
     (void)snprintf(bare, sizeof bare, "%.*s", (int)strcspn(word + 1, "="), word + 1);
     const char *near = bh_nearest(bare + strspn(bare, "-"), names, n);
-    fprintf(stderr, "beamhours: %s: no option %s%s%s%s\n", commands[command].name, word,
-            near ? "; did you mean --" : "", near ? near : "", near ? "?" : "");
+    bh_print(stderr, "beamhours: %s: no option %s%s%s%s\n", commands[command].name, word,
+             near ? "; did you mean --" : "", near ? near : "", near ? "?" : "");
     return see_help(commands[command].name);
 }
 

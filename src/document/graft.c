@@ -75,6 +75,10 @@ static bool split(struct walk *w)
         if (dot)
             *dot++ = '\0';
     }
+    if (w->count > BH_NESTING_LIMIT) {
+        SAY(w, BH_NESTING_LIMIT, BH_SAY_DEPTH, BH_NESTING_LIMIT);
+        return false;
+    }
     for (size_t i = 0; i < w->count; i++)
         if (w->parts[i][0] == '\0') {
             SAY(w, i, BH_SAY_PATH_PART, w->path);

@@ -139,6 +139,9 @@ static bh_code check_masses(const bh_collision *in, bh_error *err)
     return BH_OK;
 }
 
+/* [1] How far past both limits a step of a derivative may go. */
+static const double beyond = 1e-3;
+
 static double kinetic_most(const bh_collision *in)
 {
     return T_MOST * fmax(1.0, in->mass / BH_MASS_U);
@@ -149,7 +152,8 @@ static bh_code check(const bh_collision *in, bh_error *err)
     const bh_code bad = check_masses(in, err);
     if (bad)
         return bad;
-    if (!(in->kinetic >= T_LEAST && in->kinetic <= kinetic_most(in)))
+    if (!(in->kinetic >= T_LEAST * (1.0 - beyond) &&
+          in->kinetic <= kinetic_most(in) * (1.0 + beyond)))
         return bh_fail(err, BH_EDOMAIN, BH_SAY_KINEMATICS_ENERGY, in->kinetic, T_LEAST,
                        kinetic_most(in));
     return BH_OK;

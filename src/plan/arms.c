@@ -41,7 +41,8 @@ static void check_edges(const bh_making *making, const bh_raw_arm *raw)
     if (edges->count > BH_MOST_ARM_BINS + 1)
         bh_tell(making, edges->at, &raw->section, "edges", BH_SAY_ARM_BINS, edges->count - 1,
                 BH_MOST_ARM_BINS);
-    for (size_t i = 1; i < edges->count; i++)
+    /* Of too many edges none is looked at. */
+    for (size_t i = 1; i < edges->count && edges->count <= BH_MOST_ARM_BINS + 1; i++)
         if (edges->items[i].value <= edges->items[i - 1].value)
             bh_tell(making, edges->items[i].at, &raw->section, "edges", BH_SAY_EDGES_RISE,
                     bh_angle_text(edges->items[i].value, here),
@@ -81,7 +82,7 @@ static void check_ring(const bh_making *making, const bh_raw_arm *raw, const bh_
     if (raw->ring.from <= 0.0)
         bh_tell(making, raw->ring.at, &raw->section, "ring", BH_SAY_RING_BEAM,
                 bh_angle_text(raw->ring.from, text));
-    for (size_t i = 0; i < raw->edges.count; i++) {
+    for (size_t i = 0; i < raw->edges.count && raw->edges.count <= BH_MOST_ARM_BINS + 1; i++) {
         const bh_value *edge = &raw->edges.items[i];
         if (edge->value < arm->ring.from - 1e-9 || edge->value > arm->ring.to + 1e-9)
             bh_tell(making, edge->at, &raw->section, "edges", BH_SAY_EDGE_OUTSIDE,
@@ -137,7 +138,8 @@ bh_code bh_make_arms(bh_making *making)
     const bh_raw_arm *raw = making->raw.arms.items;
     const size_t n = making->raw.arms.count;
     making->arms = bh_arena_take(making->reading.arena, n + 1, sizeof *making->arms);
-    if (!making->arms)
+    making->edges_missed = bh_arena_take(making->reading.arena, n + 1, sizeof(bool));
+    if (!making->arms || !making->edges_missed)
         return BH_ENOMEM;
     making->plan.arms = making->arms;
     making->plan.arm_count = n;

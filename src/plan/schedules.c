@@ -1,7 +1,11 @@
 /* schedules.c - beam time and all around it. */
 #include "beamhours/plan/making.h"
 
+#include <math.h>
 #include <string.h>
+
+#include "beamhours/base/number.h"
+#include "beamhours/base/sentences.h"
 
 static void make_task(const bh_raw_task *raw, bh_task *task)
 {
@@ -16,6 +20,27 @@ static void make_task(const bh_raw_task *raw, bh_task *task)
         task->every = BH_EVERY_TIME;
         task->period = raw->every.value;
     }
+}
+
+/* Hours of what returns with every shift or period, for each scheduled hour: from 1 on the time
+ * would never end. */
+static void check_returning(const bh_making *making, const bh_schedule *schedule)
+{
+    const bh_list *list = &making->raw.schedule.tasks;
+    char number[BH_NUMBER_SIZE];
+    double share = 0.0;
+    for (size_t i = 0; i < schedule->task_count; i++) {
+        const bh_task *t = &schedule->tasks[i];
+        const double beam = t->needs_beam ? schedule->availability.value : 1.0;
+        const double period = t->every == BH_EVERY_SHIFT  ? schedule->shift.value
+                              : t->every == BH_EVERY_TIME ? t->period.value
+                                                          : INFINITY;
+        share += t->time.value / beam / period;
+    }
+    if (!(share >= 1.0))
+        return;
+    bh_number_digits(share, 4, number, sizeof number);
+    bh_tell(making, list->at, &making->raw.schedule.section, "tasks", BH_SAY_TASKS_FILL, number);
 }
 
 bh_code bh_make_schedule(bh_making *making)
@@ -44,5 +69,6 @@ bh_code bh_make_schedule(bh_making *making)
         .contingency = raw->contingency,
         .at = raw->section.at,
     };
+    check_returning(making, &making->plan.schedule);
     return BH_OK;
 }

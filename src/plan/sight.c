@@ -153,11 +153,15 @@ static void check_edges(const bh_sight *sight)
     char here[BH_QUANTITY_SIZE], low[BH_QUANTITY_SIZE], high[BH_QUANTITY_SIZE];
     const bh_raw_arm *raw = sight->making->raw.arms.items;
     for (size_t i = 0; i < sight->making->plan.arm_count; i++) {
-        if (sight->making->arms[i].edges != arm->edges || raw[i].edges.count == 0)
+        bool *missed = &sight->making->edges_missed[i];
+        const size_t count = raw[i].edges.count;
+        if (sight->making->arms[i].edges != arm->edges || *missed || count > BH_MOST_ARM_BINS + 1)
             continue;
-        for (size_t k = 0; k < raw[i].edges.count; k++) {
+        for (size_t k = 0; k < count; k++) {
             const bh_value *edge = &raw[i].edges.items[k];
-            if (edge->value < from - slack || edge->value > to + slack)
+            const bool outside = edge->value < from - slack || edge->value > to + slack;
+            *missed = *missed || outside;
+            if (outside)
                 bh_tell(sight->making, edge->at, &raw[i].section, "edges", BH_SAY_EDGE_OUTSIDE,
                         bh_angle_text(edge->value, here), bh_angle_text(from, low),
                         bh_angle_text(to, high));

@@ -20,25 +20,25 @@
 /* --- beam --- */
 
 static const bh_key spot_keys[] = {
-    {QUANTITY(bh_raw_spot, x, BH_DIM_LENGTH), .least = "0 mm", .fallback = "0 mm",
+    {QUANTITY(bh_raw_spot, x, BH_DIM_LENGTH), .least = "0 mm", .most = "1e30 m", .fallback = "0 mm",
      .flags = BH_KEY_NOT_BUILT, .meaning = "horizontal rms size", .example = "0.2 mm"},
-    {QUANTITY(bh_raw_spot, y, BH_DIM_LENGTH), .least = "0 mm", .fallback = "0 mm",
+    {QUANTITY(bh_raw_spot, y, BH_DIM_LENGTH), .least = "0 mm", .most = "1e30 m", .fallback = "0 mm",
      .flags = BH_KEY_NOT_BUILT, .meaning = "vertical rms size", .example = "0.2 mm"},
 };
 static const bh_schema spot_schema = {"the spot", sizeof(bh_raw_spot), ROWS(spot_keys), 0, 0};
 
 static const bh_key raster_keys[] = {
-    {QUANTITY(bh_raw_spot, x, BH_DIM_LENGTH), .least = "0 mm", .fallback = "0 mm",
+    {QUANTITY(bh_raw_spot, x, BH_DIM_LENGTH), .least = "0 mm", .most = "1e30 m", .fallback = "0 mm",
      .flags = BH_KEY_NOT_BUILT, .meaning = "horizontal full width", .example = "2 mm"},
-    {QUANTITY(bh_raw_spot, y, BH_DIM_LENGTH), .least = "0 mm", .fallback = "0 mm",
+    {QUANTITY(bh_raw_spot, y, BH_DIM_LENGTH), .least = "0 mm", .most = "1e30 m", .fallback = "0 mm",
      .flags = BH_KEY_NOT_BUILT, .meaning = "vertical full width", .example = "2 mm"},
 };
 static const bh_schema raster_schema = {"the raster", sizeof(bh_raw_spot), ROWS(raster_keys), 0, 0};
 
 static const bh_key limits_keys[] = {
-    {QUANTITY(bh_raw_limits, current, BH_DIM_CURRENT), .above = "0 A",
+    {QUANTITY(bh_raw_limits, current, BH_DIM_CURRENT), .above = "0 A", .most = "1e30 A",
      .meaning = "largest current the facility allows; past it an error", .example = "100 uA"},
-    {QUANTITY(bh_raw_limits, power, BH_DIM_POWER), .above = "0 W",
+    {QUANTITY(bh_raw_limits, power, BH_DIM_POWER), .above = "0 W", .most = "1e60 W",
      .meaning = "largest beam power the facility allows; past it an error", .example = "50 kW"},
 };
 static const bh_schema limits_schema = {"the limits", sizeof(bh_raw_limits), ROWS(limits_keys), 0,
@@ -53,18 +53,22 @@ static const bh_key beam_keys[] = {
     {COUNT(bh_raw_beam, charge), .meaning = "charge in units of e of an ion that is not bare",
      .example = "1"},
     {SWEEP(bh_raw_beam, kinetic_energy, BH_DIM_ENERGY_OR_PER_U), .group = ENERGY, .above = "0 MeV",
+     .most = "1e30 MeV",
      .meaning = "kinetic energy of the whole particle; in MeV/u per mass number",
      .example = "855 MeV"},
     {SWEEP(bh_raw_beam, total_energy, BH_DIM_ENERGY_OR_PER_U), .group = ENERGY, .above = "0 MeV",
-     .meaning = "energy with the rest mass, of the whole particle", .example = "855 MeV"},
+     .most = "1e30 MeV", .meaning = "energy with the rest mass, of the whole particle",
+     .example = "855 MeV"},
     {SWEEP(bh_raw_beam, momentum, BH_DIM_MOMENTUM), .group = ENERGY, .above = "0 MeV/c",
-     .meaning = "momentum of the whole particle", .example = "170 MeV/c"},
+     .most = "1e30 MeV/c", .meaning = "momentum of the whole particle", .example = "170 MeV/c"},
     {QUANTITY(bh_raw_beam, momentum_spread, BH_DIM_SHARE), .least = "0 %", .most = "100 %",
      .fallback = "0 %", .flags = BH_KEY_NOT_BUILT, .meaning = "rms spread of the momentum",
      .example = "0.02 %"},
     {SWEEP(bh_raw_beam, current, BH_DIM_CURRENT), .group = CURRENT, .above = "0 A",
-     .meaning = "electrical current of the whole beam, mean over time", .example = "20 uA"},
+     .most = "1e30 A", .meaning = "electrical current of the whole beam, mean over time",
+     .example = "20 uA"},
     {QUANTITY(bh_raw_beam, particle_rate, BH_DIM_RATE), .group = CURRENT, .above = "0 /s",
+     .most = "1e50 /s",
      .meaning = "particles per second of the whole beam, all kinds together, mean over time",
      .example = "3e5 /s"},
     {QUANTITY(bh_raw_beam, fraction, BH_DIM_SHARE), .above = "0 %", .most = "100 %",
@@ -100,35 +104,36 @@ static const bh_key layer_keys[] = {
      .meaning = "a name of the library, a file ending in .yaml, or vacuum",
      .example = "liquid-hydrogen"},
     {QUANTITY(bh_raw_layer, thickness, BH_DIM_LENGTH), .group = SIZE, .above = "0 mm",
-     .meaning = "thickness along the normal of the layer", .example = "50 mm"},
+     .most = "1e30 m", .meaning = "thickness along the normal of the layer", .example = "50 mm"},
     {QUANTITY(bh_raw_layer, areal_density, BH_DIM_AREAL_DENSITY), .group = SIZE, .above = "0 g/cm2",
-     .meaning = "mass per area", .example = "20 mg/cm2"},
+     .most = "1e30 g/cm2", .meaning = "mass per area", .example = "20 mg/cm2"},
     {QUANTITY(bh_raw_layer, areal_number, BH_DIM_AREAL_NUMBER), .group = SIZE, .above = "0 /cm2",
-     .meaning = "atoms per area, of all elements together", .example = "1.6e18 /cm2"},
+     .most = "1e60 /cm2", .meaning = "atoms per area, of all elements together",
+     .example = "1.6e18 /cm2"},
     {WORD(bh_raw_layer, role, bh_words_role), .fallback = "sample",
      .meaning = "sample: what is measured; window: stays when the sample is out; backing: goes "
                 "with it",
      .example = "window"},
-    {QUANTITY(bh_raw_layer, density, BH_DIM_DENSITY), .above = "0 g/cm3",
+    {QUANTITY(bh_raw_layer, density, BH_DIM_DENSITY), .above = "0 g/cm3", .most = "1e30 g/cm3",
      .meaning = "density; default: the material's", .example = "0.0723 g/cm3"},
-    {QUANTITY(bh_raw_layer, temperature, BH_DIM_TEMPERATURE), .above = "0 K",
+    {QUANTITY(bh_raw_layer, temperature, BH_DIM_TEMPERATURE), .above = "0 K", .most = "1e30 K",
      .meaning = "of a gas, with pressure in the place of density", .example = "293 K"},
-    {QUANTITY(bh_raw_layer, pressure, BH_DIM_PRESSURE), .above = "0 Pa",
+    {QUANTITY(bh_raw_layer, pressure, BH_DIM_PRESSURE), .above = "0 Pa", .most = "1e30 Pa",
      .meaning = "of a gas, with temperature in the place of density", .example = "1 bar"},
     {QUANTITY(bh_raw_layer, density_loss, BH_DIM_SHARE_PER_CURRENT), .least = "0 %/uA",
-     .fallback = "0 %/uA", .meaning = "relative loss of density for each unit of current",
-     .example = "0.02 %/uA"},
+     .most = "1e30 %/uA", .fallback = "0 %/uA",
+     .meaning = "relative loss of density for each unit of current", .example = "0.02 %/uA"},
 };
 const bh_schema bh_schema_layer = {"a layer", sizeof(bh_raw_layer), ROWS(layer_keys), 0,
                                    1U << SIZE};
 
 static const bh_key wall_keys[] = {
-    {QUANTITY(bh_raw_wall, radius, BH_DIM_LENGTH), .above = "0 mm", .flags = BH_KEY_REQUIRED,
-     .meaning = "distance of the wall from the beam", .example = "30 mm"},
+    {QUANTITY(bh_raw_wall, radius, BH_DIM_LENGTH), .above = "0 mm", .most = "1e30 m",
+     .flags = BH_KEY_REQUIRED, .meaning = "distance of the wall from the beam", .example = "30 mm"},
     {TEXT(bh_raw_wall, material), .flags = BH_KEY_REQUIRED, .meaning = "a name of the library",
      .example = "aluminium"},
-    {QUANTITY(bh_raw_wall, thickness, BH_DIM_LENGTH), .above = "0 mm", .flags = BH_KEY_REQUIRED,
-     .meaning = "thickness of the wall", .example = "0.13 mm"},
+    {QUANTITY(bh_raw_wall, thickness, BH_DIM_LENGTH), .above = "0 mm", .most = "1e30 m",
+     .flags = BH_KEY_REQUIRED, .meaning = "thickness of the wall", .example = "0.13 mm"},
 };
 static const bh_schema wall_schema = {"the wall", sizeof(bh_raw_wall), ROWS(wall_keys), 0, 0};
 
@@ -217,7 +222,7 @@ static const bh_key arm_keys[] = {
      .example = "±5 cm"},
     {LIST(bh_raw_arm, exit, bh_schema_layer), .meaning = "layers between target and detector",
      .example = "[{material: kapton, thickness: 0.1 mm}]"},
-    {QUANTITY(bh_raw_arm, energy_cut, BH_DIM_ENERGY), .above = "0 MeV",
+    {QUANTITY(bh_raw_arm, energy_cut, BH_DIM_ENERGY), .above = "0 MeV", .most = "1e30 MeV",
      .meaning = "events that lost more than this below the elastic line are not counted",
      .example = "15 MeV"},
     {QUANTITY(bh_raw_arm, angle_resolution, BH_DIM_ANGLE), .least = "0 mrad", .fallback = "0 mrad",
@@ -226,26 +231,27 @@ static const bh_key arm_keys[] = {
      .fallback = "0 %", .flags = BH_KEY_NOT_BUILT, .meaning = "rms resolution of the momentum",
      .example = "0.01 %"},
     {QUANTITY(bh_raw_arm, energy_resolution, BH_DIM_ENERGY), .group = RESOLUTION, .least = "0 keV",
-     .fallback = "0 keV", .flags = BH_KEY_NOT_BUILT, .meaning = "rms resolution of the energy",
-     .example = "20 keV"},
-    {QUANTITY(bh_raw_arm, threshold, BH_DIM_ENERGY), .least = "0 MeV", .fallback = "0 MeV",
-     .meaning = "least kinetic energy that it detects, on arrival", .example = "1 MeV"},
+     .most = "1e30 MeV", .fallback = "0 keV", .flags = BH_KEY_NOT_BUILT,
+     .meaning = "rms resolution of the energy", .example = "20 keV"},
+    {QUANTITY(bh_raw_arm, threshold, BH_DIM_ENERGY), .least = "0 MeV", .most = "1e30 MeV",
+     .fallback = "0 MeV", .meaning = "least kinetic energy that it detects, on arrival",
+     .example = "1 MeV"},
     {QUANTITY(bh_raw_arm, pointing, BH_DIM_ANGLE), .least = "-90 deg", .most = "90 deg",
      .fallback = "0 mrad", .meaning = "how well its angle is known: the uncertainty counts",
      .example = "0 ± 0.2 mrad"},
     {QUANTITY(bh_raw_arm, efficiency, BH_DIM_SHARE), .above = "0 %", .most = "100 %",
      .fallback = "100 %", .meaning = "share of the particles in the acceptance that it detects",
      .example = "95 %"},
-    {QUANTITY(bh_raw_arm, dead_time, BH_DIM_TIME), .least = "0 s", .fallback = "0 s",
-     .meaning = "dead time for each recorded event", .example = "5 us"},
+    {QUANTITY(bh_raw_arm, dead_time, BH_DIM_TIME), .least = "0 s", .most = "1e30 s",
+     .fallback = "0 s", .meaning = "dead time for each recorded event", .example = "5 us"},
     {WORD(bh_raw_arm, dead_time_model, bh_words_dead_time_model), .fallback = "non-paralysable",
      .meaning = "whether events during the dead time prolong it", .example = "paralysable"},
-    {QUANTITY(bh_raw_arm, rate_limit, BH_DIM_RATE), .above = "0 Hz",
+    {QUANTITY(bh_raw_arm, rate_limit, BH_DIM_RATE), .above = "0 Hz", .most = "1e50 /s",
      .meaning = "what the readout records at most", .example = "4 kHz"},
     {COUNT(bh_raw_arm, prescale), .least = "1", .most = "1000000000", .fallback = "1",
      .meaning = "one of so many triggers is recorded", .example = "10"},
-    {QUANTITY(bh_raw_arm, other_rate, BH_DIM_RATE), .least = "0 Hz", .fallback = "0 Hz",
-     .meaning = "triggers from what is not computed", .example = "100 Hz"},
+    {QUANTITY(bh_raw_arm, other_rate, BH_DIM_RATE), .least = "0 Hz", .most = "1e50 /s",
+     .fallback = "0 Hz", .meaning = "triggers from what is not computed", .example = "100 Hz"},
 };
 const bh_schema bh_schema_arm = {"an arm", sizeof(bh_raw_arm), ROWS(arm_keys), 0, 0};
 
@@ -301,8 +307,10 @@ enum { PLACE = 1, WANT = 2, WHO = 3 };
          .above = "0 GeV2",                                                                       \
          .meaning = "four-momentum transfer squared that the angle follows from",                 \
          .example = "0.6 GeV2"},                                                                  \
-        {AIM(type, central_momentum, at, BH_KEY_QUANTITY), .dimension = BH_DIM_MOMENTUM,          \
+        {AIM(type, central_momentum, at, BH_KEY_QUANTITY),                                        \
+         .dimension = BH_DIM_MOMENTUM,                                                            \
          .above = "0 MeV/c",                                                                      \
+         .most = "1e30 MeV/c",                                                                    \
          .meaning = "that the arm is set to; default: the detected particle's at the central "    \
                     "angle, after losses",                                                        \
          .example = "700 MeV/c"},                                                                 \
@@ -317,12 +325,14 @@ enum { PLACE = 1, WANT = 2, WHO = 3 };
          .dimension = BH_DIM_TIME,                                                                \
          .group = WANT,                                                                           \
          .above = "0 s",                                                                          \
+         .most = "1e30 s",                                                                        \
          .meaning = "time with full target",                                                      \
          .example = "2 h"},                                                                       \
         {AIM(type, charge, at, BH_KEY_QUANTITY),                                                  \
          .dimension = BH_DIM_CHARGE,                                                              \
          .group = WANT,                                                                           \
          .above = "0 C",                                                                          \
+         .most = "1e30 C",                                                                        \
          .meaning = "beam charge on the full target",                                             \
          .example = "20 mC"},                                                                     \
         {AIM(type, counts, at, BH_KEY_COUNT), .group = WANT, .least = "1",                        \
@@ -369,14 +379,14 @@ const bh_schema bh_schema_setting = {"a setting", sizeof(bh_raw_setting), ROWS(s
 /* --- schedule --- */
 
 static const bh_key changes_keys[] = {
-    {QUANTITY(bh_raw_changes, energy, BH_DIM_TIME), .least = "0 s", .fallback = "0 s",
-     .meaning = "to change the beam energy", .example = "8 h"},
-    {QUANTITY(bh_raw_changes, particle, BH_DIM_TIME), .least = "0 s", .fallback = "0 s",
-     .meaning = "to change the beam particle", .example = "6 h"},
-    {QUANTITY(bh_raw_changes, target, BH_DIM_TIME), .least = "0 s", .fallback = "0 s",
-     .meaning = "to change the target", .example = "20 min"},
-    {QUANTITY(bh_raw_changes, angle, BH_DIM_TIME), .least = "0 s", .fallback = "0 s",
-     .meaning = "to move arms", .example = "30 min"},
+    {QUANTITY(bh_raw_changes, energy, BH_DIM_TIME), .least = "0 s", .most = "1e30 s",
+     .fallback = "0 s", .meaning = "to change the beam energy", .example = "8 h"},
+    {QUANTITY(bh_raw_changes, particle, BH_DIM_TIME), .least = "0 s", .most = "1e30 s",
+     .fallback = "0 s", .meaning = "to change the beam particle", .example = "6 h"},
+    {QUANTITY(bh_raw_changes, target, BH_DIM_TIME), .least = "0 s", .most = "1e30 s",
+     .fallback = "0 s", .meaning = "to change the target", .example = "20 min"},
+    {QUANTITY(bh_raw_changes, angle, BH_DIM_TIME), .least = "0 s", .most = "1e30 s",
+     .fallback = "0 s", .meaning = "to move arms", .example = "30 min"},
 };
 static const bh_schema changes_schema = {"the changes", sizeof(bh_raw_changes), ROWS(changes_keys),
                                          0, 0};
@@ -388,7 +398,7 @@ static const bh_key task_keys[] = {
     {TEXT(bh_raw_task, name), .flags = BH_KEY_REQUIRED, .meaning = "what totals call it",
      .example = "optics"},
     {QUANTITY(bh_raw_task, time, BH_DIM_TIME), .flags = BH_KEY_REQUIRED, .least = "0 s",
-     .meaning = "how long it takes each time", .example = "8 h"},
+     .most = "1e30 s", .meaning = "how long it takes each time", .example = "8 h"},
     {KEY(bh_raw_task, every, BH_KEY_EITHER), .dimension = BH_DIM_TIME, .words = bh_words_every,
      .above = "0 s", .fallback = "once",
      .meaning = "when it is due: once, at each new energy, particle, target, setting or shift, or "
@@ -401,19 +411,19 @@ const bh_schema bh_schema_task = {"a task", sizeof(bh_raw_task), ROWS(task_keys)
 
 static const char *const words_as[] = {"calendar", "beam", NULL};
 static const bh_key schedule_keys[] = {
-    {QUANTITY(bh_raw_schedule, available, BH_DIM_TIME), .above = "0 s",
+    {QUANTITY(bh_raw_schedule, available, BH_DIM_TIME), .above = "0 s", .most = "1e30 s",
      .meaning = "time that is granted or asked for", .example = "14 d"},
     {WORD(bh_raw_schedule, available_as, words_as), .fallback = "calendar",
      .meaning = "what `available` counts: scheduled time, or beam time alone", .example = "beam"},
     {QUANTITY(bh_raw_schedule, availability, BH_DIM_SHARE), .above = "0 %", .most = "100 %",
      .fallback = "100 %", .meaning = "usable beam per scheduled time", .example = "60 %"},
-    {QUANTITY(bh_raw_schedule, shift, BH_DIM_TIME), .above = "0 s", .fallback = "8 h",
-     .meaning = "length of a shift", .example = "8 h"},
+    {QUANTITY(bh_raw_schedule, shift, BH_DIM_TIME), .above = "0 s", .most = "1e30 s",
+     .fallback = "8 h", .meaning = "length of a shift", .example = "8 h"},
     {QUANTITY(bh_raw_schedule, week, BH_DIM_TIME), .above = "0 s", .most = "168 h",
      .fallback = "168 h", .meaning = "scheduled hours that the facility counts as a week",
      .example = "125 h"},
-    {QUANTITY(bh_raw_schedule, start_up, BH_DIM_TIME), .least = "0 s", .fallback = "0 s",
-     .meaning = "time before the first setting", .example = "16 h"},
+    {QUANTITY(bh_raw_schedule, start_up, BH_DIM_TIME), .least = "0 s", .most = "1e30 s",
+     .fallback = "0 s", .meaning = "time before the first setting", .example = "16 h"},
     {PART(bh_raw_schedule, changes, changes_schema), .meaning = "times between settings",
      .example = "{energy: 8 h, angle: 30 min}"},
     {LIST(bh_raw_schedule, tasks, bh_schema_task), .flags = BH_KEY_UNIQUE,

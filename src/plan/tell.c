@@ -11,22 +11,6 @@
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
-static bool same_place(bh_mark a, bh_mark b)
-{
-    return a.line == b.line && a.column == b.column && a.file && b.file &&
-           strcmp(a.file, b.file) == 0;
-}
-
-static bool told(const bh_diags *diags, bh_mark at, const char *text)
-{
-    for (size_t i = 0; i < bh_diags_count(diags); i++) {
-        const bh_diag *d = bh_diags_at(diags, i);
-        if (same_place(d->at, at) && strcmp(d->text, text) == 0)
-            return true;
-    }
-    return false;
-}
-
 void bh_tell(const bh_making *making, bh_mark at, const bh_section *section, const char *key,
              const char *fmt, ...)
 {
@@ -35,7 +19,7 @@ void bh_tell(const bh_making *making, bh_mark at, const bh_section *section, con
     va_start(args, fmt);
     (void)vsnprintf(text, sizeof text, fmt, args);
     va_end(args);
-    if (!told(making->reading.diags, at, text))
+    if (!bh_diags_told(making->reading.diags, at, text))
         bh_say(&making->reading, at, section, key, "%s", text);
 }
 

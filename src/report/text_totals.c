@@ -100,6 +100,9 @@ void bh_report_text_totals(const bh_table *table, int width, bh_text *out)
         bh_report_wrapped("  ", t->note, width, out);
 }
 
+/* Where its lead leaves no room a sentence gets so many cells: lines are then too long. */
+enum { LEAST_ROOM = 20 };
+
 /* The length of the piece of `s` that fits into `room` cells, cut at a blank where there is one. */
 static size_t fitting(const char *s, int room)
 {
@@ -119,7 +122,7 @@ void bh_report_wrapped(const char *lead, const char *sentence, int width, bh_tex
     const int indent = (int)strlen(lead);
     bh_text_append(out, lead);
     for (const char *s = sentence; *s;) {
-        const size_t n = fitting(s, width - indent);
+        const size_t n = fitting(s, width > indent ? width - indent : LEAST_ROOM);
         bh_text_append_bytes(out, s, n);
         bh_text_append(out, "\n");
         s += n;

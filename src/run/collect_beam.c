@@ -4,6 +4,7 @@
 #include <stdlib.h>
 
 #include "beamhours/run/collecting.h"
+#include "beamhours/run/passage.h"
 #include "beamhours/units/constants.h"
 
 /* A kind of particle with another charge changes how many a current brings. */
@@ -36,6 +37,18 @@ static void collect_energy(bh_collecting *c)
     bh_collect_sensitive(c, &cause, offsetof(bh_part, per_momentum), by);
 }
 
+/* The share by which the signal falls, from less density, for a share more of current. */
+static double thinned(const bh_collecting *c)
+{
+    const bh_target *target = c->setting->target;
+    double sum = 0;
+    for (size_t l = 0; l < target->layer_count; l++) {
+        const double left = bh_density_left(&target->layers[l], &c->setting->beam);
+        sum += left > 0 ? c->layers[l].signal * (1 - left) / left : 0;
+    }
+    return sum;
+}
+
 void bh_collect_beam(bh_collecting *c)
 {
     const bh_beam *b = &c->setting->beam;
@@ -44,7 +57,7 @@ void bh_collect_beam(bh_collecting *c)
     bh_cause cause = bh_collect_cause(
         b->rate_written ? BH_CAUSE_PARTICLE_RATE : BH_CAUSE_CURRENT, many->at,
         bh_collect_beam_key(c, many->at, b->rate_written ? "particle_rate" : "current", key));
-    bh_collect_same(c, &cause, bh_collect_relative(many));
+    bh_collect_same(c, &cause, bh_collect_relative(many) * (1 - thinned(c)));
     cause = bh_collect_cause(BH_CAUSE_FRACTION, b->fraction.at,
                              bh_collect_beam_key(c, b->fraction.at, "fraction", key));
     bh_collect_same(c, &cause, bh_collect_relative(&b->fraction));

@@ -1,8 +1,10 @@
 /* collect_target.c - what the uncertainties of the target make of the rates of an arm. */
 #include <math.h>
+#include <stddef.h>
 #include <stdio.h>
 
 #include "beamhours/run/collecting.h"
+#include "beamhours/run/passage.h"
 
 static const char *text_of(const bh_word *name)
 {
@@ -32,6 +34,38 @@ static void collect_nuclei(bh_collecting *c, const bh_cause *cause, size_t layer
         const double wrong = p->other * share->other + (measured ? 0 : p->windows * share->windows);
         to[i] += by * share->signal - (p->signal > 0 ? by * wrong / p->signal : 0);
     }
+}
+
+/* [MeV] that the beam loses in a layer before the average collision. */
+static double lost_in(const bh_collecting *c, size_t layer)
+{
+    const bh_view *view = &c->arm->yield->view;
+    const size_t last = view->way.layer_count - 1;
+    double behind = 1;                                      /* share of the signal */
+    double rest = view->way.kinetic - view->vertex_kinetic; /* what the layers before do not take */
+    for (size_t l = 0; l < layer; l++) {
+        const double crossed = behind - c->layers[l].signal / 2;
+        rest -= crossed * (view->way.sheets[l].entering[0] - view->way.sheets[l + 1].entering[0]);
+        behind -= c->layers[l].signal;
+    }
+    if (layer == last)
+        return rest;
+    return (behind - c->layers[layer].signal / 2) *
+           (view->way.sheets[layer].entering[0] - view->way.sheets[layer + 1].entering[0]);
+}
+
+/* Thicker by the share `by`, a layer also slows the beam down more. */
+static void collect_slowing(bh_collecting *c, const bh_cause *cause, size_t layer, double by)
+{
+    const bh_beam *b = &c->setting->beam;
+    const double mass = b->particle.mass, kinetic = b->kinetic_energy.value;
+    const bh_way *way = &c->arm->yield->view.way;
+    if (!way->losing || way->stops < way->layer_count || by == 0)
+        return;
+    const double lost = by * lost_in(c, layer);
+    if (lost != 0)
+        bh_collect_sensitive(c, cause, offsetof(bh_part, per_momentum),
+                             -lost * (kinetic + mass) / (kinetic * (kinetic + 2 * mass)));
 }
 
 /* Where the arm sees a part of the target: the paths with layer `layer` (none: past the last)
@@ -96,6 +130,7 @@ static void collect_layer_value(bh_collecting *c, size_t layer, const struct lay
     const bh_cause cause =
         bh_collect_cause(v->kind, v->value->at, layer_key(c, layer, v->member, key));
     collect_nuclei(c, &cause, layer, v->by);
+    collect_slowing(c, &cause, layer, v->by);
     if (c->plan->arm.target_view.given && v->thicker != 0)
         collect_paths(c, &cause, layer, v->thicker, 0);
 }
@@ -110,6 +145,8 @@ static void collect_layer(bh_collecting *c, size_t i)
     const double dense = bh_collect_relative(&l->density),
                  hot = bh_collect_relative(&l->temperature),
                  press = bh_collect_relative(&l->pressure);
+    const double warm = l->density_loss.uncertainty * c->setting->beam.current.value;
+    const double left = bh_density_left(l, &c->setting->beam);
     const bh_value written = {.uncertainty = l->areal_number.uncertainty, .at = l->size_key.at};
     const struct layer_value values[] = {
         {BH_CAUSE_THICKNESS, size, &written, bh_collect_relative(&l->areal_number),
@@ -117,7 +154,8 @@ static void collect_layer(bh_collecting *c, size_t i)
         {BH_CAUSE_DENSITY, "density", &l->density, number * dense, length * thick * dense},
         {BH_CAUSE_TEMPERATURE, "temperature", &l->temperature, -number * hot,
          -length * thick * hot},
-        {BH_CAUSE_PRESSURE, "pressure", &l->pressure, number * press, length * thick * press}};
+        {BH_CAUSE_PRESSURE, "pressure", &l->pressure, number * press, length * thick * press},
+        {BH_CAUSE_DENSITY_LOSS, "density_loss", &l->density_loss, left > 0 ? -warm / left : 0, 0}};
     for (size_t k = 0; k < sizeof values / sizeof values[0]; k++)
         collect_layer_value(c, i, &values[k]);
 }

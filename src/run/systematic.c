@@ -8,6 +8,9 @@
 
 enum { FIRST_ROOM = 32 };
 
+/* What is subtracted over the signal. */
+static const double worth_subtracting = 1e-4;
+
 static bh_code out_of_memory(bh_error *err)
 {
     return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
@@ -162,19 +165,41 @@ static void add_rate(bh_share *to, bh_origin origin, double rate)
         to->other += rate;
 }
 
+/* Whether the shares follow from numbers of nuclei: one layer of scatterers, of one element, and
+ * nothing to speak of that is subtracted as computed. */
+static bool is_simple(const bh_collecting *c)
+{
+    const bh_part *whole = c->arm->yield->part;
+    const bh_struck_list *list = c->arm->yield->view.list;
+    const double windows = c->arm->empty.measured ? 0 : whole->windows;
+    const bh_presence *first = NULL;
+    for (size_t i = 0; i < list->presence_count; i++) {
+        const bh_presence *p = &list->presences[i];
+        if (p->origin != BH_ORIGIN_SIGNAL)
+            continue;
+        if (first && first->layer != p->layer)
+            return false;
+        first = p;
+    }
+    return !(windows + whole->other > worth_subtracting * whole->signal);
+}
+
 static void set_shares(bh_collecting *c)
 {
     const bh_struck_list *list = c->arm->yield->view.list;
     const size_t layers = c->setting->target->layer_count;
     const bh_contribution *all = c->with->contributions;
+    const bool simple = is_simple(c);
     c->layers = c->with->shares;
     c->nuclides = c->layers + layers;
     memset(c->layers, 0, (layers + list->count) * sizeof *c->layers);
-    bh_collect_fail(
-        c, bh_yield_contributions(c->yielder, c->arm->yield, 0, c->with->contributions, c->err));
+    if (!simple) /* sums over each layer alone take their time */
+        bh_collect_fail(c, bh_yield_contributions(c->yielder, c->arm->yield, 0,
+                                                  c->with->contributions, c->err));
     for (size_t i = 0; !c->code && i < list->presence_count; i++) {
-        add_rate(&c->layers[all[i].presence->layer], all[i].presence->origin, all[i].rate);
-        add_rate(&c->nuclides[all[i].presence->nuclide], all[i].presence->origin, all[i].rate);
+        const bh_presence *p = &list->presences[i];
+        add_rate(&c->layers[p->layer], p->origin, simple ? p->number : all[i].rate);
+        add_rate(&c->nuclides[p->nuclide], p->origin, simple ? p->number : all[i].rate);
     }
     normalise(c->layers, layers);
     normalise(c->nuclides, list->count);

@@ -28,6 +28,16 @@ struct bh_table {
     const char *notes[NOTES];
 };
 
+/* Numbers the rows of bins of one arm; returns the next free row. */
+static bh_row *lay_out_bins(bh_row *bin, size_t setting, size_t arm, int bins)
+{
+    for (int b = 1; bin && b <= bins; b++) {
+        *bin = (bh_row){.setting = setting, .arm = arm, .bin = b};
+        bin++;
+    }
+    return bin;
+}
+
 /* Numbers the rows: where each stands in the plan. */
 static void lay_out(bh_table *table)
 {
@@ -37,10 +47,7 @@ static void lay_out(bh_table *table)
         for (size_t a = 0; a < setting->arm_count; a++) {
             *whole = (bh_row){.setting = s, .arm = a};
             whole++;
-            for (int b = 1; bin && b <= setting->arms[a].arm.bins; b++) {
-                *bin = (bh_row){.setting = s, .arm = a, .bin = b};
-                bin++;
-            }
+            bin = lay_out_bins(bin, s, a, setting->arms[a].arm.bins);
         }
     }
 }

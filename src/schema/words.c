@@ -60,7 +60,7 @@ static const char *all_of(const bh_key *key, char *out, size_t size)
     };
     const char *all[MOST_WORDS + 2] = {NULL};
     size_t n = 0;
-    while (key->words[n] && n < MOST_WORDS) {
+    while (n < MOST_WORDS && key->words[n]) {
         all[n] = key->words[n];
         n++;
     }

@@ -94,6 +94,26 @@ START_TEST(expected_files_go_first)
 }
 END_TEST
 
+START_TEST(what_was_told_is_known)
+{
+    bh_diags *diags = bh_diags_new();
+    char text[32];
+    for (int i = 0; i < 3000; i++) { /* more than one table of chains */
+        const bh_mark at = {i % 2 ? "a" : "b", 1 + i / 10, 1 + i % 10};
+        (void)snprintf(text, sizeof text, "text %d", i % 7);
+        ck_assert(!bh_diags_told(diags, at, text));
+        bh_diags_add(diags, BH_SEVERITY_ERROR, at, "k", "%s", text);
+        ck_assert(bh_diags_told(diags, at, text));
+        ck_assert(!bh_diags_told(diags, at, "another text"));
+        ck_assert(!bh_diags_told(diags, (bh_mark){"c", at.line, at.column}, text));
+    }
+    bh_diags_sort(diags);
+    for (size_t i = 0; i < bh_diags_count(diags); i++)
+        ck_assert(bh_diags_told(diags, bh_diags_at(diags, i)->at, bh_diags_at(diags, i)->text));
+    bh_diags_free(diags);
+}
+END_TEST
+
 START_TEST(a_loss_is_the_last_error)
 {
     bh_diags *diags = bh_diags_new();
@@ -116,6 +136,7 @@ int main(void)
     tcase_add_test(tests, sorts_by_file_line_column_and_keeps_equals);
     tcase_add_test(tests, pointers_stay_good_while_it_grows);
     tcase_add_test(tests, expected_files_go_first);
+    tcase_add_test(tests, what_was_told_is_known);
     tcase_add_test(tests, a_loss_is_the_last_error);
     return run_suite("base/diag", tests);
 }

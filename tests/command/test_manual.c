@@ -162,8 +162,9 @@ START_TEST(completions_load)
 {
     static const char *const load[] = {
         "bash --norc -c '. \"$built\"/completions/bash' 2>&1",
-        "zsh -f -c 'zsh -n \"$built\"/completions/zsh && functions[_beamhours]=$(<\"$built\""
-        "/completions/zsh)' 2>&1",
+        /* one string, two lines */
+        ("zsh -f -c 'zsh -n \"$built\"/completions/zsh && functions[_beamhours]=$(<\"$built\""
+         "/completions/zsh)' 2>&1"),
         "fish --no-config -c 'source $built/completions/fish' 2>&1"};
     char folder[1024], out[4096];
     ck_assert_int_eq(setenv("built", build(folder), 1), 0);

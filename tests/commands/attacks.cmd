@@ -21,7 +21,7 @@ echo "size"; { cat good.yaml; yes '#' | head -c 1048577; } >long.yaml; says beam
 echo; echo "zeros without end"; says beamhours table /dev/zero
 echo "a folder"; says beamhours table .
 echo "a loop"; ln -s loop loop; says beamhours table loop
-echo "a pipe"; mkfifo pipe; cat good.yaml >pipe & says beamhours check pipe; wait
+echo "a pipe"; mkfifo pipe; cat good.yaml >pipe & runs beamhours check pipe; wait
 echo "a program"; says beamhours table /bin/true
 echo "NUL"; printf 'plan: 1\000\n' >nul.yaml; says beamhours table nul.yaml; cat said.txt
 echo "brackets"; { printf 'plan: '; repeat 100000 '['; } >deep.yaml; says beamhours table deep.yaml
@@ -40,7 +40,7 @@ echo "65 changes"; set --; for i in $(seq 65); do set -- "$@" --with 'beam.curre
 
 echo "orders to a terminal"
 cp good.yaml "$esc"; says beamhours table "$esc" --with 'beam.current=1'; cat said.txt
-runs beamhours explain "$esc" K; head -1 said.txt
+runs beamhours explain "$esc" K; grep -m 1 "setting K, arm A" said.txt
 says beamhours table good.yaml --with "beam.$esc=1"
 for command in "$esc" "--$esc" "table --$esc" "table none-$esc" "table good.yaml --only $esc" "table good.yaml --columns $esc" \
     "table good.yaml --format $esc" "explain good.yaml $esc" "keys $esc" "materials $esc" "models $esc" "plans $esc" "new $esc" \

@@ -37,7 +37,7 @@ static void same_as_plan(const bh_curve *curve, size_t i, double kinetic, double
                                            BH_COL_EPSILON, BH_COL_ANGLE};
     for (int c = 0; c < COUNT(columns); c++)
         ck_assert_relative(bh_curve_y(curve, i, columns[c]), cell(&there, 0, columns[c]), 1e-7,
-                           bh_column_at(columns[c])->key);
+                           bh_column_at((int)columns[c])->key);
     done(&there);
 }
 

@@ -208,6 +208,23 @@ static const struct {
     {BEAM_500 "target: {name: t, scatterer: H, layers: [{material: hydrogen-gas, thickness: 10 cm, "
               "temperature: 295 K, pressure: %s}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
      2, 0.02, "bar", BH_CAUSE_PRESSURE, BH_COL_SIGNAL},
+    {BEAM_500
+     "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 5 cm, "
+     "density_loss: %s}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
+     1, 0.1, "%/uA", BH_CAUSE_DENSITY_LOSS, BH_COL_SIGNAL},
+    {"plan: 1\nbeam: {particle: electron, kinetic_energy: 500 MeV, current: %s}\n"
+     "target: {name: t, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 5 cm, "
+     "density_loss: 1 %%/uA}]}\n" ARM "settings: [{name: K, angle: 30 deg}]\n",
+     20, 0.2, "uA", BH_CAUSE_CURRENT, BH_COL_SIGNAL},
+    {"plan: 1\nbeam: {particle: alpha, kinetic_energy: 20 MeV, particle_rate: 1e6 /s}\n"
+     "target: {name: t, layers: [{material: gold, thickness: %s}]}\n"
+     "arms: [{name: A, solid_angle: 1 msr}]\nsettings: [{name: K, angle: 150 deg}]\n",
+     8, 0.4, "um", BH_CAUSE_THICKNESS, BH_COL_SIGNAL}, /* slows down and reflects more */
+    {"plan: 1\nbeam: {particle: alpha, kinetic_energy: 20 MeV, particle_rate: 1e6 /s}\n"
+     "target: {name: t, layers: [{material: aluminium, thickness: %s, role: window}, {material: "
+     "gold, thickness: 1 um}]}\narms: [{name: A, solid_angle: 1 msr}]\n"
+     "settings: [{name: K, angle: 150 deg}]\n",
+     10, 0.5, "um", BH_CAUSE_THICKNESS, BH_COL_SIGNAL}, /* slows down only */
     {BEAM_500 HYDROGEN "arms: [{name: A, ring: {from: 20 deg, to: 40 deg}, azimuth: %s}]\n"
                        "settings: [{name: K}]\n",
      180, 2, "deg", BH_CAUSE_AZIMUTH, BH_COL_SIGNAL},
@@ -261,7 +278,7 @@ START_TEST(one_input_moves_the_rate_by_what_the_row_says)
             got += effects.effect[k];
     ck_assert_msg(fabs(got) > 1e-6 || fabs(up - down) < 1e-6 * at, "no effect: %g, %g", got,
                   (up - down) / at);
-    ck_assert_relative(got, (up - down) / 2 / at, 0.01, bh_cause_source(inputs[_i].kind));
+    ck_assert_relative(got, (up - down) / 2 / at, 0.02, bh_cause_source(inputs[_i].kind));
     done(&e);
 }
 END_TEST
@@ -279,9 +296,9 @@ START_TEST(windows_count_as_long_as_no_empty_target_measures_them)
     struct evaluated measured = evaluate(WINDOWS("empty_target: {share: 20 %}, "));
     const double share = cell(&computed, 0, BH_COL_BACKGROUND) / cell(&computed, 0, BH_COL_SIGNAL);
     ck_assert(share > 1e-3);
-    ck_assert_relative(from(&computed, 0, BH_CAUSE_THICKNESS), 0.05 * share, 1e-9, "thickness");
+    ck_assert_relative(from(&computed, 0, BH_CAUSE_THICKNESS), 0.05 * share, 0.03, "thickness");
     ck_assert(from(&computed, 0, BH_CAUSE_BACKGROUND) > 0.001 * share);
-    ck_assert(from(&measured, 0, BH_CAUSE_THICKNESS) == 0);
+    ck_assert(from(&measured, 0, BH_CAUSE_THICKNESS) < 0.002 * share); /* it slows the beam */
     ck_assert(from(&measured, 0, BH_CAUSE_BACKGROUND) == 0);
     ck_assert(cell(&measured, 0, BH_COL_SYSTEMATIC) < cell(&computed, 0, BH_COL_SYSTEMATIC));
     done(&computed);

@@ -75,7 +75,7 @@ START_TEST(a_row_has_the_event_at_its_axis)
                 {BH_COL_EPSILON, 0.867186448657}};
     for (int i = 0; i < COUNT(rows); i++)
         ck_assert_relative(cell(&e, 0, rows[i].column), rows[i].value, 2e-6,
-                           bh_column_at(rows[i].column)->key);
+                           bh_column_at((int)rows[i].column)->key);
     done(&e);
 }
 END_TEST

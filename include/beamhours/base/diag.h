@@ -45,6 +45,9 @@ size_t bh_diags_count(const bh_diags *diags);
 size_t bh_diags_errors(const bh_diags *diags);
 const bh_diag *bh_diags_at(const bh_diags *diags, size_t i);
 
+/* Whether the same text at the same place is in the list; of a long list too this takes no time. */
+bool bh_diags_told(bh_diags *diags, bh_mark at, const char *text);
+
 /* The file called `name` counts as having appeared now, for the order of files. */
 void bh_diags_expect(bh_diags *diags, const char *name);
 

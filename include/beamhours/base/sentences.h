@@ -291,8 +291,12 @@
 #define BH_SAY_NOT_COMPUTED "%s is not computed by this version; elastic would do"
 #define BH_SAY_NOT_EVERY    "a name in every_setting; names belong to the settings themselves"
 #define BH_SAY_WANT_TWICE   "%s of the arm beside %s of the setting; keep one of them"
-#define BH_WARN_NOT_BUILT   "read and kept, but this version computes without it"
-#define BH_WARN_DENSITY     "%s is %s from the %s that %s has in the library"
+#define BH_SAY_TASKS_FILL                                                                      \
+    "the tasks that return with every shift or period take %s h of each scheduled hour; give " \
+    "them "                                                                                    \
+    "less time or a longer period"
+#define BH_WARN_NOT_BUILT "read and kept, but this version computes without it"
+#define BH_WARN_DENSITY   "%s is %s from the %s that %s has in the library"
 
 /* run: evaluation */
 #define BH_WARN_MODEL_RANGE                                                                     \

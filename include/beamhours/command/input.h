@@ -11,6 +11,7 @@
 typedef struct {
     bh_text bytes;
     const char *name; /* as given; "-" for standard input */
+    char *shown;      /* the same without what a terminal would obey */
     bh_material_library *library;
     bh_diags *diags; /* of the last bh_input_plan */
     bh_plan *plan;

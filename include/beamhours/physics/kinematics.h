@@ -10,7 +10,8 @@ typedef struct {
     double mass;    /* [MeV] of the beam particle, 0 .. 1e6 */
     double target;  /* [MeV] mass of the struck particle, 0.1 .. 1e6 */
     double kinetic; /* [MeV] beam kinetic energy of the whole particle, 1e-3 .. 1e6, for beam
-                       particles heavier than 1 u up to 1e6 per u */
+                       particles heavier than 1 u up to 1e6 per u; 0.1 % past either
+                       limit is let by */
 } bh_collision;
 
 /* One elastic event, every quantity in the laboratory unless it says otherwise. */

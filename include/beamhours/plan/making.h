@@ -20,6 +20,7 @@ typedef struct {
     bh_material_library *library;
     bh_target *targets; /* plan.targets while they are made */
     bh_arm *arms;
+    bool *edges_missed; /* for each arm: that a setting misses its edges has been said */
 } bh_making;
 
 /* As bh_say, but not the same sentence at the same place again: what settings share is looked at

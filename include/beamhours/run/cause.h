@@ -22,6 +22,7 @@
     X(BH_CAUSE_DENSITY, "density", "density of a layer")                                       \
     X(BH_CAUSE_TEMPERATURE, "temperature", "temperature of a gas")                             \
     X(BH_CAUSE_PRESSURE, "pressure", "pressure of a gas")                                      \
+    X(BH_CAUSE_DENSITY_LOSS, "density_loss", "density that a liquid loses to the beam")        \
     X(BH_CAUSE_TILT, "tilt", "tilt of the target")                                             \
     X(BH_CAUSE_ANGLE, "angle", "angle of the arm")                                             \
     X(BH_CAUSE_POINTING, "pointing", "pointing of the arm")                                    \
