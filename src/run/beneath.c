@@ -104,14 +104,15 @@ static void add_row(bh_yielder *yielder, const bh_view *view, const bh_beneath_o
     note(yielder, view, of, &worst);
 }
 
-void bh_beneath_add(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *of, int which,
+void bh_beneath_add(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *of,
                     bh_beneath *sum)
 {
     const bh_background *row;
-    for (int i = 0; i < sum->at.count && (which == BH_BENEATH_ALL || which == BH_BENEATH_TAIL); i++)
+    for (int i = 0;
+         i < sum->at.count && (of->which == BH_BENEATH_ALL || of->which == BH_BENEATH_TAIL); i++)
         sum->value[i] += of->nuclei * tail_at(of->radiated, sum->at.angle[i]);
     for (int k = 0; sum->at.count && (row = bh_background_at(k)); k++)
-        if (which == BH_BENEATH_ALL || which == k)
+        if (of->which == BH_BENEATH_ALL || of->which == k)
             add_row(yielder, view, of, row, sum);
 }
 
@@ -211,7 +212,7 @@ static bool gets_in(struct sharp *s, const bh_beneath *grid)
 }
 
 bh_code bh_beneath_atomic(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *of,
-                          int which, double *total, bh_error *err)
+                          double *total, bh_error *err)
 {
     const bh_encounter *e = &of->radiated->channel.encounter;
     const bh_background *row;
@@ -222,7 +223,7 @@ bh_code bh_beneath_atomic(bh_yielder *yielder, const bh_view *view, const bh_ben
         return BH_OK;
     for (int k = 0; !code && grid.at.count && (row = bh_background_at(k)); k++) {
         if (!row->sharp || !row->applies(e->beam, of->struck->z, of->struck->a) ||
-            (which != BH_BENEATH_ALL && which != k))
+            (of->which != BH_BENEATH_ALL && of->which != k))
             continue;
         struct sharp s = {.of = of,
                           .row = row,

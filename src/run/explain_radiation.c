@@ -120,7 +120,8 @@ static void explain_one(bh_explaining *x, const bh_presence *p, int which)
     const bh_background *row = bh_background_at(which);
     double *total = bh_workspace_scratch(x->evaluator.yielder.workspace)->totals;
     bh_error ignored;
-    if (bh_beneath_presence(&x->evaluator.yielder, v, p, which, total, &ignored)) {
+    const bh_beneath_wanted wanted = {p, which};
+    if (bh_beneath_presence(&x->evaluator.yielder, v, &wanted, total, &ignored)) {
         x->failed = true; /* it worked when the row was made */
         return;
     }

@@ -61,8 +61,9 @@ static void add_part(bh_part *to, bool window, bool dummy, double ub)
 
 /* One nuclide, one origin; losses in the target are left out. */
 static bh_code add_nuclei(bh_yielder *yielder, bh_yield *yield, struct beside *b,
-                          const bh_nuclei *nuclei, double number, bh_error *err)
+                          const bh_nuclei *nuclei, bh_error *err)
 {
+    const double number = yielder->seen[nuclei->nuclide].of[nuclei->origin];
     const bool dummy = nuclei->list != yield->view.list;
     bh_channels channels;
     bh_code code = bh_view_channels(yielder, &b->view, &nuclei->list->nuclides[nuclei->nuclide],
@@ -92,9 +93,8 @@ bh_code bh_others_yield(bh_yielder *yielder, bh_yield *yield, const bh_struck_li
         for (size_t k = 0; !code && k < list->count * BH_ORIGINS; k++) {
             const bh_nuclei nuclei = {
                 .list = list, .nuclide = k / BH_ORIGINS, .origin = (bh_origin)(k % BH_ORIGINS)};
-            const double number = yielder->seen[nuclei.nuclide].of[nuclei.origin];
-            if (number > 0)
-                code = add_nuclei(yielder, yield, &b, &nuclei, number, err);
+            if (yielder->seen[nuclei.nuclide].of[nuclei.origin] > 0)
+                code = add_nuclei(yielder, yield, &b, &nuclei, err);
         }
     }
     return code;

@@ -97,6 +97,7 @@ static void write_way(const bh_channel_request *r, const bh_leaver *leaver, stru
     }
 }
 
+/* NOLINTNEXTLINE(readability-non-const-parameter): written through the struct */
 size_t bh_sum_key(const bh_channel_request *request, const bh_leaver *leaver, unsigned char *room,
                   size_t size)
 {

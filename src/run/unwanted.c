@@ -4,41 +4,43 @@
 
 #include "beamhours/run/beneath.h"
 
-/* The request for the scattered particle on a nuclide; its vertices are in the yielder. */
-static bh_code request_for(bh_yielder *yielder, const bh_view *view, const bh_nuclei *nuclei,
-                           const bh_way *way, bh_radiated_request *request, bh_error *err)
-{
-    bh_channels channels;
-    const size_t count = bh_view_vertices(yielder, way, nuclei);
-    const bh_code code =
-        bh_view_channels(yielder, view, &nuclei->list->nuclides[nuclei->nuclide], &channels, err);
-    if (code)
-        return code;
-    *request = bh_view_radiated(yielder, view, &channels.list[0], way, count);
-    request->signal = nuclei->origin == BH_ORIGIN_SIGNAL && !nuclei->all;
-    return BH_OK;
-}
-
 /* What a sum is made in. */
 struct adding {
     const bh_view *view;
     const bh_way *way;
     bh_beneath smooth;
+    int which;
     double *total; /* [ub/cm2] of all parts */
 };
 
+/* The request for the scattered particle on a nuclide; its vertices are in the yielder. */
+static bh_code request_for(bh_yielder *yielder, const struct adding *a, const bh_nuclei *nuclei,
+                           bh_radiated_request *request, bh_error *err)
+{
+    bh_channels channels;
+    const size_t count = bh_view_vertices(yielder, a->way, nuclei);
+    const bh_code code = bh_view_channels(yielder, a->view,
+                                          &nuclei->list->nuclides[nuclei->nuclide], &channels, err);
+    if (code)
+        return code;
+    *request = bh_view_radiated(yielder, a->view, &channels.list[0], a->way, count);
+    request->signal = nuclei->origin == BH_ORIGIN_SIGNAL && !nuclei->all;
+    return BH_OK;
+}
+
 static bh_code add_nuclei(bh_yielder *yielder, struct adding *a, const bh_nuclei *nuclei,
-                          double number, int which, bh_error *err)
+                          double number, bh_error *err)
 {
     bh_radiated_request request;
     const bh_beneath_of of = {.radiated = &request,
                               .list = nuclei->list,
                               .struck = &nuclei->list->nuclides[nuclei->nuclide],
-                              .nuclei = number};
-    bh_code code = request_for(yielder, a->view, nuclei, a->way, &request, err);
+                              .nuclei = number,
+                              .which = a->which};
+    bh_code code = request_for(yielder, a, nuclei, &request, err);
     if (!code)
-        bh_beneath_add(yielder, a->view, &of, which, &a->smooth);
-    return code ? code : bh_beneath_atomic(yielder, a->view, &of, which, a->total, err);
+        bh_beneath_add(yielder, a->view, &of, &a->smooth);
+    return code ? code : bh_beneath_atomic(yielder, a->view, &of, a->total, err);
 }
 
 static double *cleared(bh_yielder *yielder, const bh_view *view)
@@ -64,7 +66,7 @@ static bh_code add_origin(bh_yielder *yielder, struct adding *a, const bh_struck
         bh_nuclei nuclei = {.list = list, .nuclide = k / BH_ORIGINS, .origin = (bh_origin)o};
         nuclei.all = dummy;
         if (meant && number > 0)
-            code = add_nuclei(yielder, a, &nuclei, number, BH_BENEATH_ALL, err);
+            code = add_nuclei(yielder, a, &nuclei, number, err);
     }
     return code ? code : bh_beneath_sum(yielder, a->view, &a->smooth, a->total, err);
 }
@@ -72,7 +74,7 @@ static bh_code add_origin(bh_yielder *yielder, struct adding *a, const bh_struck
 bh_code bh_beneath_yield(bh_yielder *yielder, bh_yield *yield, const bh_struck_list *list,
                          const bh_way *way, bh_error *err)
 {
-    struct adding a = {.view = &yield->view, .way = way};
+    struct adding a = {.view = &yield->view, .way = way, .which = BH_BENEATH_ALL};
     const bool dummy = list != yield->view.list;
     bh_code code = add_origin(yielder, &a, list, dummy ? BH_ORIGINS : BH_ORIGIN_OTHER, err);
     for (int i = 0; !code && i < yield->view.parts; i++)
@@ -85,10 +87,11 @@ bh_code bh_beneath_yield(bh_yielder *yielder, bh_yield *yield, const bh_struck_l
     return code;
 }
 
-bh_code bh_beneath_presence(bh_yielder *yielder, const bh_view *view, const bh_presence *presence,
-                            int which, double *total, bh_error *err)
+bh_code bh_beneath_presence(bh_yielder *yielder, const bh_view *view,
+                            const bh_beneath_wanted *wanted, double *total, bh_error *err)
 {
-    struct adding a = {.view = view, .way = &view->way, .total = total};
+    const bh_presence *presence = wanted->presence;
+    struct adding a = {.view = view, .way = &view->way, .which = wanted->which, .total = total};
     const bh_nuclei nuclei = {.list = view->list,
                               .nuclide = presence->nuclide,
                               .origin = presence->origin,
@@ -98,6 +101,6 @@ bh_code bh_beneath_presence(bh_yielder *yielder, const bh_view *view, const bh_p
     bh_beneath_begin(view, &a.smooth);
     if (!a.smooth.at.count)
         return BH_OK;
-    const bh_code code = add_nuclei(yielder, &a, &nuclei, 1, which, err);
+    const bh_code code = add_nuclei(yielder, &a, &nuclei, 1, err);
     return code ? code : bh_beneath_sum(yielder, view, &a.smooth, total, err);
 }

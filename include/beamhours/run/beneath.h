@@ -24,17 +24,18 @@ typedef struct {
     const bh_struck_list *list;          /* of their target, whose numbers are in yielder->seen */
     const bh_struck *struck;
     double nuclei; /* [1/cm2] seen */
+    int which;     /* BH_BENEATH_ALL, BH_BENEATH_TAIL, or the number of a row */
 } bh_beneath_of;
 
 /* An empty sum over the arm of `view`. */
 void bh_beneath_begin(const bh_view *view, bh_beneath *sum);
 
 /*
- * Adds everything that is smooth in angle, or `which` of it alone.  Notes in the yielder's remarks
+ * Adds everything that is smooth in angle, or what of->which says.  Notes in the yielder's remarks
  * what cannot be computed, for nuclides that are a hundredth of what is seen or more. Quasi-elastic
  * and inelastic spectra as they are without radiation.
  */
-void bh_beneath_add(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *of, int which,
+void bh_beneath_add(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *of,
                     bh_beneath *sum);
 
 /* Adds the sum over the solid angle to total [ub/cm2], one for each part of the view, the whole arm
@@ -46,8 +47,7 @@ BH_CHECKED bh_code bh_beneath_sum(bh_yielder *yielder, const bh_view *view, cons
  * or `which` alone), of which each angle has one energy.  Nothing where the arm has neither
  * threshold, bite nor cut: then nobody says which of these slow electrons count. */
 BH_CHECKED bh_code bh_beneath_atomic(bh_yielder *yielder, const bh_view *view,
-                                     const bh_beneath_of *of, int which, double *total,
-                                     bh_error *err);
+                                     const bh_beneath_of *of, double *total, bh_error *err);
 
 /*
  * Adds all of it to the parts of `yield`: to windows or other, or, for a target that is not the
@@ -56,10 +56,16 @@ BH_CHECKED bh_code bh_beneath_atomic(bh_yielder *yielder, const bh_view *view,
 BH_CHECKED bh_code bh_beneath_yield(bh_yielder *yielder, bh_yield *yield,
                                     const bh_struck_list *list, const bh_way *way, bh_error *err);
 
-/* Fills total [ub], one for each part of the view, with what `which` gives for each nucleus of
- * `presence`, for explain; the yielder's paths are of the setting's target. */
+/* What explain asks for: nuclei of one kind in one layer. */
+typedef struct {
+    const bh_presence *presence;
+    int which; /* as above */
+} bh_beneath_wanted;
+
+/* Fills total [ub], one for each part of the view, with what each nucleus gives of what is wanted;
+ * the yielder's paths are of the setting's target. */
 BH_CHECKED bh_code bh_beneath_presence(bh_yielder *yielder, const bh_view *view,
-                                       const bh_presence *presence, int which, double *total,
+                                       const bh_beneath_wanted *wanted, double *total,
                                        bh_error *err);
 
 /*
