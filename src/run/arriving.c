@@ -44,45 +44,45 @@ static bool within(double angle, bh_interval polar)
 
 /* --- at a glance --- */
 
-/* The momenta of several vertices at several angles. */
+/* The momenta from several depths at several angles. */
 struct glance {
     const bh_arrival *arrival;
-    const bh_vertex *vertices;
-    size_t last, step;         /* the first, every step-th, the last are looked at */
-    double least, most, apart; /* [MeV/c] apart: vertices at one angle */
+    double least, most, apart; /* [MeV/c] apart: depths at one angle */
 };
 
-static void look(struct glance *g, double angle)
+/* From both ends of the pieces of layers that two vertices are of. */
+static void look(struct glance *g, const bh_vertex ends[2], double angle)
 {
-    double least = (double)INFINITY, most = 0;
-    for (size_t i = 0; i <= g->last; i += g->step) {
-        const double p = bh_arrival_momentum(g->arrival, &g->vertices[i], angle);
-        least = fmin(least, p);
-        most = fmax(most, p);
-    }
-    g->least = fmin(g->least, least);
-    g->most = fmax(g->most, most);
-    g->apart = fmax(g->apart, most - least);
+    const double one = bh_arrival_momentum(g->arrival, &ends[0], angle);
+    const double other = bh_arrival_momentum(g->arrival, &ends[1], angle);
+    g->least = fmin(g->least, fmin(one, other));
+    g->most = fmax(g->most, fmax(one, other));
+    g->apart = fmax(g->apart, fabs(one - other));
+}
+
+static void look_around(struct glance *g, const bh_vertex ends[2])
+{
+    const bh_interval polar = reached(g->arrival);
+    const double longest = grazing(g->arrival, ends);
+    for (int i = 0; i < 3; i++)
+        look(g, ends, polar.from + (polar.to - polar.from) * i / 2);
+    if (within(longest, polar))
+        look(g, ends, longest);
 }
 
 bh_arriving bh_arrival_at_a_glance(const bh_arrival *arrival, const bh_vertex *vertices,
                                    size_t count)
 {
     const bh_way *way = arrival->leaver->way;
-    const bh_interval polar = reached(arrival);
-    struct glance g = {.arrival = arrival,
-                       .vertices = vertices,
-                       .last = count - 1,
-                       .step = count > 2 ? count - 1 : 1,
-                       .least = (double)INFINITY};
-    if (way->ring && way->sine != 0) /* neighbours lie at other azimuths */
-        g.step = 1;
-    for (int i = 0; i < 3; i++)
-        look(&g, polar.from + (polar.to - polar.from) * i / 2);
-    for (size_t i = 0; i < count; i += g.step)
-        if (within(grazing(arrival, &vertices[i]), polar))
-            look(&g, grazing(arrival, &vertices[i]));
-    /* Vertices between the outermost lose more than both only where some leave by the wall; the
+    const bool around = way->ring && way->sine != 0; /* neighbours lie at other azimuths */
+    struct glance g = {.arrival = arrival, .least = (double)INFINITY};
+    for (size_t i = 0; i < (around ? count : 1); i++) {
+        const bh_vertex *last = &vertices[around ? i : count - 1];
+        const bh_vertex ends[2] = {bh_way_vertex(way, &vertices[i], vertices[i].from),
+                                   bh_way_vertex(way, last, last->to)};
+        look_around(&g, ends);
+    }
+    /* Depths between the outermost lose more than both only where some leave by the wall; the
      * rest is for boosts and the angles between these. */
     const double margin = (way->wall_radius > 0 ? 3 : 0) * g.apart + 2e-3 * g.most;
     if (g.least > fmax(arrival->from, 0) + margin && g.most < arrival->to - margin)
@@ -94,9 +94,7 @@ bh_arriving bh_arrival_at_a_glance(const bh_arrival *arrival, const bh_vertex *v
 
 /* --- angle by angle --- */
 
-/* Returns [1] how far inside the momenta, negative outside: its sign is exact, its size good enough
- * to find where it changes. */
-static double inside(const bh_arrival *a, const bh_vertex *v, double angle)
+double bh_arrival_inside(const bh_arrival *a, const bh_vertex *v, double angle)
 {
     const double p = bh_arrival_momentum(a, v, angle);
     if (!(p > 0))
@@ -143,7 +141,7 @@ static double end_between(const bh_arrival *a, const bh_vertex *v, struct side o
         const double part = abs(b.stayed) > 3 ? 0.5 : b.one.f / (b.one.f - b.other.f);
         const double before = x.x;
         x.x = b.one.x + (b.other.x - b.one.x) * part;
-        x.f = inside(a, v, x.x);
+        x.f = bh_arrival_inside(a, v, x.x);
         if (fabs(x.x - before) < close && fabs(x.f) < close)
             break;
         narrow(&b, x);
@@ -166,11 +164,11 @@ size_t bh_arrival_angles(const bh_arrival *arrival, const bh_vertex *vertex,
     const double middle = grazing(arrival, vertex);
     const int steps = within(middle, polar) ? 2 * STEPS : STEPS;
     size_t count = 0;
-    struct side here = {polar.from, inside(arrival, vertex, polar.from)};
+    struct side here = {polar.from, bh_arrival_inside(arrival, vertex, polar.from)};
     double begin = 0;
     for (int i = 1; i <= steps; i++) {
         const double x = step_to(polar, steps > STEPS ? middle : polar.to, i);
-        const struct side next = {x, inside(arrival, vertex, x)};
+        const struct side next = {x, bh_arrival_inside(arrival, vertex, x)};
         if ((here.f < 0) != (next.f < 0)) {
             const double end = end_between(arrival, vertex, here, next);
             if (here.f < 0)

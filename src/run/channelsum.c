@@ -261,8 +261,12 @@ static bh_code sum_depths(struct making *m, struct task *t, int boost, bh_error 
     const bh_arrival arrival = arrival_of(m, boost);
     bh_code code = BH_OK;
     t->request.cut = true;
-    for (size_t i = 0; !code && i < r->vertex_count; i++) {
-        const bh_vertex *v = &r->vertices[i];
+    bh_vertex refined[BH_MOST_REFINED];
+    const size_t more = bh_arrival_refine(&arrival, r->vertices, r->vertex_count, refined);
+    const bh_vertex *vertices = more > 0 ? refined : r->vertices;
+    const size_t count = more > 0 ? more : r->vertex_count;
+    for (size_t i = 0; !code && i < count; i++) {
+        const bh_vertex *v = &vertices[i];
         t->energies = (bh_energies){.count = 1, .kinetic = {v->kinetic[boost]}, .weight = {1}};
         t->request.allowed_count = bh_arrival_angles(&arrival, v, t->allowed);
         code = sum_task(m, t, v->weight, boost, err);

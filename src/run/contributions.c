@@ -2,18 +2,21 @@
 #include "beamhours/rates/counting.h"
 #include "beamhours/run/yield.h"
 
-/* The integrals of one nuclide over one part of the arm, its channels summed. */
+/* The integrals of one nuclide over one part of the arm, its channels summed: of the signal in its
+ * own layer, of background the mean over all layers that it has the same origin in. */
 static bh_code integrals(bh_yielder *yielder, const bh_view *view, int part, bh_contribution *c,
                          bh_error *err)
 {
-    const bh_nuclei nuclei = {
-        .list = view->list, .nuclide = c->presence->nuclide, .all = true, .only = c->presence};
+    const bool signal = c->presence->origin == BH_ORIGIN_SIGNAL;
+    const bh_nuclei nuclei = {.list = view->list,
+                              .nuclide = c->presence->nuclide,
+                              .origin = c->presence->origin,
+                              .only = signal ? c->presence : NULL};
     const size_t count = bh_view_vertices(yielder, &view->way, &nuclei);
     bh_channels channels;
     const bh_code code = bh_view_channels(yielder, view, c->struck, &channels, err);
     if (code)
         return code;
-    const bool signal = c->presence->origin == BH_ORIGIN_SIGNAL;
     double total = 0, kept = 0, radiated = 0;
     c->structure = channels.list[0].encounter.structure;
     for (size_t k = 0; count > 0 && k < channels.count; k++) {

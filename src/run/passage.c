@@ -168,8 +168,7 @@ static int depths_for(double lost, double lengths)
     return BH_MOST_DEPTHS;
 }
 
-/* Point i of n of Gauss and Legendre's rule on 0 .. 1. */
-static double gauss_point(int i, int n, double *weight)
+double bh_depth_point(int i, int n, double *weight)
 {
     static const double x[BH_MOST_DEPTHS + 1][BH_MOST_DEPTHS / 2] = {
         [1] = {0},
@@ -197,13 +196,15 @@ static double gauss_point(int i, int n, double *weight)
     return (1 + (from_middle < 0 ? -x[n][k] : x[n][k])) / 2;
 }
 
-static bh_vertex vertex_at(const bh_way *way, size_t layer, double depth)
+bh_vertex bh_way_vertex(const bh_way *way, const bh_vertex *like, double depth)
 {
-    const bh_sheet *s = &way->sheets[layer];
+    const bh_sheet *s = &way->sheets[like->layer];
     const double share = s->thickness > 0 ? depth / s->thickness : 0.5;
     const double path = share * s->areal / way->cosine;
-    bh_vertex v = {
-        .layer = layer, .depth = depth, .towards = 1, .before = bh_crossed_add(s->before, s, path)};
+    bh_vertex v = *like;
+    v.depth = depth;
+    v.weight = 0;
+    v.before = bh_crossed_add(s->before, s, path);
     for (int b = 0; b < BH_BOOSTS; b++)
         v.kinetic[b] = left(s->range, s->entering[b], path);
     return v;
@@ -227,14 +228,16 @@ static size_t turn_around(const bh_way *way, const bh_vertex *vertex, bh_vertex 
 
 static size_t fill_layer(const bh_way *way, size_t layer, const bh_occupied *o, bh_vertex *out)
 {
-    const bh_vertex first = vertex_at(way, layer, o->from), last = vertex_at(way, layer, o->to);
+    const bh_vertex like = {.layer = layer, .from = o->from, .to = o->to, .towards = 1};
+    const bh_vertex first = bh_way_vertex(way, &like, o->from),
+                    last = bh_way_vertex(way, &like, o->to);
     const double lost = 1 - last.kinetic[BH_AS_IT_IS] / first.kinetic[BH_AS_IT_IS];
     const int n = depths_for(lost, last.before.lengths - first.before.lengths);
     size_t count = 0;
     for (int i = 0; i < n; i++) {
         double weight;
-        const double at = gauss_point(i, n, &weight);
-        bh_vertex v = vertex_at(way, layer, o->from + at * (o->to - o->from));
+        const double at = bh_depth_point(i, n, &weight);
+        bh_vertex v = bh_way_vertex(way, &like, o->from + at * (o->to - o->from));
         v.weight = weight * o->nuclei;
         count += turn_around(way, &v, out + count);
     }

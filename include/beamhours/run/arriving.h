@@ -33,4 +33,19 @@ enum { BH_MOST_ARRIVALS = 16 };
 size_t bh_arrival_angles(const bh_arrival *arrival, const bh_vertex *vertex,
                          bh_interval out[BH_MOST_ARRIVALS]);
 
+enum { BH_MOST_REFINED = 256 };
+
+/*
+ * Vertices in the place of `count` others of the same nuclei, for sums over what arrives: pieces of
+ * layers are cut at the depths from which particles at either end of the polar angles begin or
+ * cease to, so that between cuts the sums change smoothly with the depth.  Fills `out` (room for
+ * BH_MOST_REFINED) and returns how many; 0 where there would be more.
+ */
+size_t bh_arrival_refine(const bh_arrival *arrival, const bh_vertex *vertices, size_t count,
+                         bh_vertex *out);
+
+/* Returns [1] how far inside the momenta the particle scattered to `angle` [rad] arrives, negative
+ * outside; the sign is exact. */
+double bh_arrival_inside(const bh_arrival *arrival, const bh_vertex *vertex, double angle);
+
 #endif

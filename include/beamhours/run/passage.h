@@ -95,6 +95,7 @@ double bh_way_leaving(const bh_way *way, size_t layer);
 typedef struct {
     size_t layer;
     double depth;              /* [cm] in the layer, along its normal from the first face */
+    double from, to;           /* [cm] the piece of the layer that it is one point of, likewise */
     double weight;             /* [1] share of the nuclei; all weights add to 1 */
     double kinetic[BH_BOOSTS]; /* [MeV] of the beam there */
     double towards;            /* [1] cosine of the azimuth to the arm's plane: 1 but for rings */
@@ -116,6 +117,13 @@ enum { BH_MOST_DEPTHS = 16, BH_AZIMUTHS = 6, BH_VERTICES_PER_LAYER = BH_MOST_DEP
  * and behind which the beam stops have none.
  */
 size_t bh_way_vertices(const bh_way *way, const bh_occupied *occupied, bh_vertex *vertices);
+
+/* A vertex of weight 0 at `depth` [cm] in the piece of a layer that `like` is of. */
+bh_vertex bh_way_vertex(const bh_way *way, const bh_vertex *like, double depth);
+
+/* Returns [1] point number i of n of Gauss and Legendre's rule on 0 .. 1 and fills `weight` [1]; n
+ * is 1, 2, 3, 5, 8 or BH_MOST_DEPTHS. */
+double bh_depth_point(int i, int n, double *weight);
 
 /* Returns [MeV] the mean kinetic energy of the beam over the vertices. */
 double bh_vertices_mean(const bh_vertex *vertices, size_t count);

@@ -182,7 +182,7 @@ typedef struct {
     size_t nuclide;
     bool all;                /* whatever their origin */
     bh_origin origin;        /* else these */
-    const bh_presence *only; /* in one layer; NULL: in all */
+    const bh_presence *only; /* of these, in one layer; NULL: in all */
 } bh_nuclei;
 
 /* Fills yielder->vertices and returns how many; the yielder's paths are of this target. */
