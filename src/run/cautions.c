@@ -7,10 +7,13 @@
 #include "beamhours/base/number.h"
 #include "beamhours/base/text.h"
 #include "beamhours/matter/hazard.h"
+#include "beamhours/run/beam_power.h"
+#include "beamhours/run/heat_cautions.h"
 #include "beamhours/units/constants.h"
 
 #define DECIDE          ", its rules and licensed practice decide."
 #define DEFER_RADIATION " The facility's radiation-protection group" DECIDE
+#define DEFER_TARGET    ". The facility's target group" DECIDE
 #define DEFER_SAFETY    " The facility's safety and radiation-protection groups" DECIDE
 
 /* At most: source or power, secondary beam, pressure, windows, magnets. */
@@ -19,7 +22,7 @@ enum { OTHER_CAUTIONS = 5 };
 typedef struct {
     const bh_plan *plan;
     bh_arena *arena;
-    bh_caution *list; /* room for one a layer + OTHER_CAUTIONS */
+    bh_caution *list; /* room for one a layer and a target + OTHER_CAUTIONS */
     size_t count;
     bool failed; /* memory ran out */
 } caution_list;
@@ -51,33 +54,12 @@ static void add(caution_list *to, bh_mark at, bh_text *key, bh_text *text)
     next->text = keep(to, text);
 }
 
-/* "17.1 kW": three digits and the prefix that reads best. */
-static void append_power(bh_text *text, double watts)
-{
-    static const struct {
-        double size; /* [W] */
-        const char *unit;
-    } units[] = {{1e6, "MW"}, {1e3, "kW"}, {1, "W"}, {1e-3, "mW"}, {1e-6, "uW"}, {1e-9, "nW"}};
-    size_t i = 0;
-    while (i + 1 < sizeof units / sizeof units[0] && watts < units[i].size)
-        i++;
-    char number[BH_NUMBER_SIZE];
-    bh_number_digits(watts / units[i].size, 3, number, sizeof number);
-    bh_text_appendf(text, "%s %s", number, units[i].unit);
-}
-
-/* [W] carried by the named particle and its companions, all taken at its energy. */
-static double beam_power(const bh_beam *beam)
-{
-    return beam->particle_rate.value * beam->kinetic_energy.value * 1e6 * BH_ELEMENTARY;
-}
-
 /* The setting with the most powerful beam, or NULL: the plan's own. */
 static const bh_setting *strongest(const bh_plan *plan)
 {
     const bh_setting *best = NULL;
     for (size_t i = 0; i < plan->setting_count; i++)
-        if (!best || beam_power(&plan->settings[i].beam) > beam_power(&best->beam))
+        if (!best || bh_beam_power(&plan->settings[i].beam) > bh_beam_power(&best->beam))
             best = &plan->settings[i];
     return best;
 }
@@ -126,7 +108,7 @@ static void caution_of_beam(caution_list *to)
 {
     const bh_setting *setting = strongest(to->plan);
     const bh_beam *beam = setting ? &setting->beam : &to->plan->beam;
-    const double watts = beam_power(beam);
+    const double watts = bh_beam_power(beam);
     bh_text text = {0};
     if (is_sealed_source(beam)) {
         bh_text_appendf(&text,
@@ -135,7 +117,7 @@ static void caution_of_beam(caution_list *to)
                         beam->particle.name);
     } else {
         bh_text_append(&text, "Beam of up to ");
-        append_power(&text, watts);
+        bh_power_append(&text, watts);
         bh_text_append(&text, power_sentence(watts));
     }
     bh_text_append(&text, DEFER_RADIATION);
@@ -380,14 +362,30 @@ static void caution_of_magnets(caution_list *to)
     }
 }
 
+static void caution_of_heat(caution_list *to)
+{
+    stack from;
+    for (size_t i = 0; i < to->plan->target_count && stack_at(to->plan, 2 * i, &from); i++) {
+        const bh_setting *setting = bh_heat_setting(to->plan, &to->plan->targets[i]);
+        bh_text text = {0};
+        if (setting && bh_heat_say(setting, &text)) {
+            bh_text key = stack_key(&from);
+            bh_text_append(&text, DEFER_TARGET);
+            add(to, from.layers[0].at, &key, &text);
+        }
+    }
+}
+
 const bh_caution *bh_cautions_from_plan(const bh_plan *plan, bh_arena *arena, size_t *count)
 {
     *count = 0;
     caution_list to = {.plan = plan, .arena = arena};
-    to.list = bh_arena_take(arena, count_layers(plan) + OTHER_CAUTIONS, sizeof *to.list);
+    to.list = bh_arena_take(arena, count_layers(plan) + plan->target_count + OTHER_CAUTIONS,
+                            sizeof *to.list);
     if (!to.list)
         return NULL;
     caution_of_beam(&to);
+    caution_of_heat(&to);
     caution_of_secondary_beam(&to);
     caution_of_materials(&to);
     caution_of_pressure(&to);

@@ -186,6 +186,7 @@ static bh_code write_all(bh_explaining *x, bh_error *err)
 {
     write_title(x);
     bh_explain_inputs(x);
+    bh_explain_target(x);
     if (x->reached)
         bh_explain_cross_section(x);
     bh_explain_rates(x);

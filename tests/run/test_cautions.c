@@ -363,8 +363,9 @@ START_TEST(from_a_plan_as_written)
     bh_plan *plan = bh_plan_read(text, sizeof text - 1, "p.yaml", NULL, 0, library, diags);
     ck_assert_msg(plan != NULL, "%s", bh_diags_count(diags) ? bh_diags_at(diags, 0)->text : "");
     derive(plan);
-    ck_assert_uint_eq(count, 4);
+    ck_assert_uint_eq(count, 5);
     expect("34.2 kW", "settings.K2.beam.current", 16);
+    expect("the beam leaves about", "target.layers", 10);
     expect("liquid-hydrogen: flammable", "target.layers", 11);
     expect("burns skin", "target.layers", 11);
     expect("this one of aluminium", "target.layers", 10);

@@ -42,6 +42,7 @@ void bh_explain_section(bh_explaining *x, const char *name);
 
 /* The parts of an explanation, in their order. */
 void bh_explain_inputs(bh_explaining *x);
+void bh_explain_target(bh_explaining *x);
 void bh_explain_cross_section(bh_explaining *x);
 void bh_explain_rates(bh_explaining *x);
 void bh_explain_time(bh_explaining *x);
