@@ -37,7 +37,7 @@ void bh_remarks_free(bh_remarks *remarks)
 
 static bool of_the_whole_plan(bh_remark_kind kind)
 {
-    return kind <= BH_REMARK_NO_EMPTY;
+    return kind <= BH_REMARK_LIMIT;
 }
 
 static const char *or_empty(const char *text)
@@ -48,17 +48,22 @@ static const char *or_empty(const char *text)
 /* One line for a cause, whatever the nuclides. */
 static bool joins(bh_remark_kind kind)
 {
-    return kind == BH_REMARK_NOT_COMPUTED;
+    return kind == BH_REMARK_NOT_COMPUTED || kind == BH_REMARK_FLAGGED || kind == BH_REMARK_RANGE;
+}
+
+static bool same_place(const bh_remark *a, const bh_remark *b)
+{
+    return of_the_whole_plan(a->kind) ||
+           (a->at.line == b->at.line && a->at.column == b->at.column);
 }
 
 static bool same(const struct kept *k, const bh_remark *r)
 {
-    if (joins(r->kind) && k->remark.kind == r->kind)
-        return strcmp(k->what, or_empty(r->what)) == 0;
-    return k->remark.kind == r->kind && strcmp(k->who, or_empty(r->who)) == 0 &&
-           strcmp(k->what, or_empty(r->what)) == 0 &&
-           (of_the_whole_plan(r->kind) ||
-            (k->remark.at.line == r->at.line && k->remark.at.column == r->at.column));
+    if (k->remark.kind != r->kind || strcmp(k->what, or_empty(r->what)) != 0)
+        return false;
+    if (k->remark.from != r->from && r->kind <= BH_REMARK_LIMIT) /* another limit or range */
+        return false;
+    return joins(r->kind) || (strcmp(k->who, or_empty(r->who)) == 0 && same_place(&k->remark, r));
 }
 
 static void copy(char to[TEXT], const char *from)

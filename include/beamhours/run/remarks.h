@@ -48,8 +48,9 @@ bh_remarks *bh_remarks_new(void);
 void bh_remarks_free(bh_remarks *remarks);
 
 /* Notes `remark`; texts are copied.  One of the same kind about the same who and what at the same
- * line is widened (lowest low, highest high) and counted instead.  Those on models, which concern
- * the whole plan, are joined whatever the line. */
+ * line is widened (lowest low, highest high) and counted instead.  Those up to BH_REMARK_LIMIT,
+ * which concern the whole plan, are joined whatever the line when `from` is the same, and those
+ * on structure models and backgrounds for all nuclides together. */
 void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark);
 
 /* Adds them all to `diags` as warnings, in the words of base/sentences.h.  False when memory had
