@@ -53,8 +53,7 @@ static bool joins(bh_remark_kind kind)
 
 static bool same_place(const bh_remark *a, const bh_remark *b)
 {
-    return of_the_whole_plan(a->kind) ||
-           (a->at.line == b->at.line && a->at.column == b->at.column);
+    return of_the_whole_plan(a->kind) || (a->at.line == b->at.line && a->at.column == b->at.column);
 }
 
 static bool same(const struct kept *k, const bh_remark *r)

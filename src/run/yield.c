@@ -79,8 +79,7 @@ static bh_code add_origin(bh_yielder *yielder, bh_yield *yield, const bh_nuclei 
     bh_seen_numbers *seen = &yielder->seen[nuclei->nuclide];
     const bool signal = nuclei->origin == BH_ORIGIN_SIGNAL;
     const size_t count = bh_view_vertices(yielder, &yield->view.way, nuclei);
-    bh_code code = BH_OK;
-    for (size_t c = 0; !code && c < channels->count; c++) {
+    for (size_t c = 0; c < channels->count; c++) {
         const bh_elastic_of of = {.channel = &channels->list[c],
                                   .way = &yield->view.way,
                                   .count = count,
@@ -95,7 +94,7 @@ static bh_code add_origin(bh_yielder *yielder, bh_yield *yield, const bh_nuclei 
         if (signal)
             add_point(yield, &channels->list[c], seen->of[BH_ORIGIN_SIGNAL]);
     }
-    return code;
+    return BH_OK;
 }
 
 static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, size_t nuclide, bh_error *err)

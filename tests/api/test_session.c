@@ -94,7 +94,7 @@ START_TEST(files_are_loaded)
     bh_session *s = bh_session_new(folders);
     ck_assert_int_eq(bh_session_load(s, "plans/lead.yaml"), BH_DONE);
     ck_assert_int_eq(bh_session_evaluate(s), BH_DONE);
-    ck_assert_uint_eq(bh_session_rows(s), 7);
+    ck_assert_uint_eq(bh_session_rows(s), 6);
     int cautions = 0, warnings = 0;
     for (size_t i = 0; i < bh_session_messages(s); i++) {
         const char *m = bh_session_message(s, i);
