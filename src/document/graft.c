@@ -7,6 +7,7 @@
 #include "beamhours/document/node.h"
 #include "beamhours/document/scalar.h"
 #include "beamhours/document/source.h"
+#include "beamhours/document/trail.h"
 #include "beamhours/document/tree.h"
 
 enum { SNIPPET = 64, NAMES = 12 /* item names told, at most */ };
@@ -87,39 +88,11 @@ static bool split(struct walk *w)
     return true;
 }
 
-static size_t find_key(const bh_node *mapping, const char *key)
-{
-    size_t i = 0;
-    while (i < mapping->count && strcmp(mapping->keys[i]->text, key) != 0)
-        i++;
-    return i;
-}
-
-static const char *name_of(const bh_node *item)
-{
-    const bh_node *name = bh_node_get(item, "name");
-    return name && name->kind == BH_NODE_SCALAR ? name->text : NULL;
-}
-
-/* The item by its name or else by its number; the count when there is none. */
-static size_t find_item(const bh_node *list, const char *part)
-{
-    for (size_t i = 0; i < list->count; i++) {
-        const char *name = name_of(list->items[i]);
-        if (name && strcmp(name, part) == 0)
-            return i;
-    }
-    char *end = NULL;
-    const bool digits = strspn(part, "0123456789") == strlen(part) && strlen(part) < 9;
-    const unsigned long number = digits ? strtoul(part, &end, 10) : 0;
-    return number >= 1 && number <= list->count ? (size_t)number - 1 : list->count;
-}
-
 static void say_no_item(struct walk *w, const bh_node *list, const char *part)
 {
     bh_text names = {0};
     for (size_t i = 0; i < list->count && i < NAMES; i++) {
-        const char *name = name_of(list->items[i]);
+        const char *name = bh_item_name(list->items[i]);
         if (name)
             bh_text_appendf(&names, "%s%s", names.length ? ", " : "", name);
     }
@@ -146,7 +119,7 @@ static bool step(struct walk *w, bh_node *node)
         w->parent = NULL;
         return false;
     }
-    w->index = node->kind == BH_NODE_LIST ? find_item(node, part) : find_key(node, part);
+    w->index = node->kind == BH_NODE_LIST ? bh_list_find(node, part) : bh_key_find(node, part);
     if (w->index < node->count)
         return true;
     if (node->kind == BH_NODE_LIST) {
@@ -326,7 +299,7 @@ void bh_document_drop(bh_document *document, const bh_node *mapping, const char 
 {
     if (!mapping || mapping->kind != BH_NODE_MAPPING)
         return;
-    const size_t found = find_key(mapping, key);
+    const size_t found = bh_key_find(mapping, key);
     if (found == mapping->count)
         return;
     bh_node *own = document->root; /* the same node, ours to change */

@@ -79,6 +79,32 @@
 #define BH_WARN_CUT \
     "everything from `%s` on is left out as a comment; put the text in quotes if it belongs to it"
 
+/* document: a change that is not made, and why */
+#define BH_REFUSE_NOTHING_THERE "there is no `%s` to change; name what is in the file"
+#define BH_REFUSE_ROOT          "the whole file cannot be changed at once; change its parts"
+#define BH_REFUSE_PARTS                                                                            \
+    "`%s` has parts and comments of its own on several lines; change its parts, or remove it and " \
+    "add it again"
+#define BH_REFUSE_LAYOUT \
+    "`%s` is laid out in a way that only an editor can change safely; change it there"
+#define BH_REFUSE_MORE                                                                           \
+    "the change would have changed something else in the file too, so nothing was done; change " \
+    "`%s` with an editor"
+#define BH_REFUSE_BLOCK                                                                          \
+    "a text under | or > cannot begin with blanks, nor a text under > have lines that do; take " \
+    "the "                                                                                       \
+    "blanks away"
+#define BH_REFUSE_HIDDEN  "the character U+%04X cannot be seen in an editor; leave it out"
+#define BH_REFUSE_NO_NAME "a key in `%s` needs a name of one line; type one"
+#define BH_REFUSE_TAKEN   "there is a `%s` here already; type another name"
+#define BH_REFUSE_NO_LIKE "there is nothing else beside `%s` to move it past"
+#define BH_REFUSE_NO_KEY  "`%s` is an item of a list and has no key; change its name in it"
+#define BH_REFUSE_ALONE   "`%s` is all there is in the file; the file cannot be left empty"
+#define BH_REFUSE_NO_LIST "`%s` holds a single value, to which nothing can be added; add beside it"
+#define BH_REFUSE_NO_COLON \
+    "`%s` has no colon with a blank behind it; type a key and its value as `key: value`"
+#define BH_REFUSE_PLACE "there is no place %zu among %zu; give one from 1 to %zu"
+
 /* units: quantities.  First the text, then what is needed and two units that would do. */
 #define BH_SAY_NO_NUMBER       "'%s' does not begin with a number: %s is needed, in %s"
 #define BH_SAY_NO_QUANTITY     "'%s' is not one number with one unit: %s is needed, in %s"

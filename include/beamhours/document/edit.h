@@ -32,9 +32,11 @@ const bh_diags *bh_edit_said(const bh_edit *edit);
 size_t bh_edit_version(const bh_edit *edit);
 
 typedef enum {
-    BH_EDIT_SET,       /* the value at `path` becomes `text`; a key that is not there is added */
+    BH_EDIT_SET,       /* the value at `path` becomes `text`; a key that is not there is added, at
+                          `place`, with those it stands in */
     BH_EDIT_RENAME,    /* the key at `path` becomes `text`, its value stays */
-    BH_EDIT_INSERT,    /* `text` becomes a new item of the list at `path`, at `place` */
+    BH_EDIT_INSERT,    /* `text` becomes a new item, at `place`, of the list at `path`; `key: value`
+                          of the mapping there */
     BH_EDIT_DUPLICATE, /* the item or key at `path` again, just behind it, with its comments; `text`
                           names the copy: NULL for an item that keeps its name or has none */
     BH_EDIT_REMOVE,    /* the item or key at `path` goes, with its comments */
@@ -43,8 +45,7 @@ typedef enum {
 
 /*
  * One change.  `path` is dotted, list items by name or by number from 1; where `node` is not NULL
- * it, a node of bh_edit_document, is meant instead (the list or mapping for what is added to it:
- * then `text` of a mapping reads `key: value`).
+ * it, a value of bh_edit_document, is meant instead.
  *
  * `text` is what the user typed, not YAML: it is put in quotes where it needs them, and keeps the
  * quotes, or the | or > above it, that the old value had.  Two texts are taken as they stand where
@@ -53,8 +54,8 @@ typedef enum {
  * a | or > text may have line ends (LF) in it; it ends with as many as its heading says.
  *
  * Full lines of comment just above an item or key are its own; so is what follows it on its line,
- * and full lines of comment just below it that are indented more than it.  Those at the top of the
- * file belong to the file.
+ * and full lines of comment below it that are indented more than it.  Those at the top of the file
+ * belong to the file.
  */
 typedef struct {
     bh_edit_kind kind;

@@ -28,6 +28,6 @@ const bh_node *bh_document_find(const bh_document *document, const char *path);
 /* Appends the path of a node of a document (of a key: that of its value) so that the function above
  * finds it again, as long as no key has a dot in it: items by name where that is certain, else by
  * number.  Nothing for the root. */
-void bh_node_path(const bh_node *node, bh_text *into);
+void bh_trail_of(const bh_node *node, bh_text *into);
 
 #endif

@@ -1,0 +1,37 @@
+/* form.h - a text written as YAML: plain, in quotes, or under | and >. */
+#ifndef BH_DOCUMENT_FORM_H
+#define BH_DOCUMENT_FORM_H
+
+#include <stdbool.h>
+#include <stddef.h>
+
+#include "beamhours/base/text.h"
+#include "beamhours/document/node.h"
+#include "beamhours/document/pieces.h"
+
+typedef enum {
+    BH_FORM_AS_IT_IS, /* the text is YAML already */
+    BH_FORM_PLAIN,
+    BH_FORM_SINGLE,
+    BH_FORM_DOUBLE
+} bh_form;
+
+/* Could the text be written so, within brackets (`flow`) or not?  May say no where it could. */
+bool bh_form_fits(bh_form form, const char *text, bool flow);
+
+/* The plainest form that fits. */
+bh_form bh_form_choose(const char *text, bool flow);
+
+/* Appends the text in a form that fits. */
+void bh_form_append(bh_form form, const char *text, bh_text *into);
+
+/*
+ * Writes `text` (lines ended by LF) in place of `node`, a | or > text of `whole`, under the same
+ * heading and with the same indentation: the bytes to replace are cut->from to cut->to, those to
+ * stand there are appended to `written`, and what will be read from them to `value`.
+ * False where the heading cannot hold the text.
+ */
+bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bh_cut *cut,
+                   bh_text *written, bh_text *value);
+
+#endif
