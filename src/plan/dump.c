@@ -304,6 +304,19 @@ static void row_of(const struct out *out, const bh_setting_arm *row)
     end(out);
 }
 
+/* The row of a coincidence is written as the key that made it, and what the setting wants of it. */
+static void coincidence_of(const struct out *out, const bh_setting_arm *row)
+{
+    begin(out, "coincidence");
+    begin_list(out, "arms");
+    text(out, NULL, row->first->arm.name.text);
+    text(out, NULL, row->second->arm.name.text);
+    end(out);
+    measured(out, "window", &row->window, BH_DIM_TIME);
+    end(out);
+    want_of(out, row);
+}
+
 static void settings(const struct out *out, const bh_plan *plan)
 {
     begin_list(out, "settings");
@@ -312,9 +325,16 @@ static void settings(const struct out *out, const bh_plan *plan)
         begin(out, NULL);
         text(out, "name", setting->name);
         begin_list(out, "arms");
-        for (size_t k = 0; k < setting->arm_count; k++)
-            row_of(out, &setting->arms[k]);
+        const bh_setting_arm *pair = NULL;
+        for (size_t k = 0; k < setting->arm_count; k++) {
+            if (setting->arms[k].first)
+                pair = &setting->arms[k];
+            else
+                row_of(out, &setting->arms[k]);
+        }
         end(out);
+        if (pair)
+            coincidence_of(out, pair);
         text(out, "target", setting->target ? setting->target->name.text : NULL);
         measured(out, "tilt", &setting->tilt, BH_DIM_ANGLE);
         beam_of(out, &setting->beam);

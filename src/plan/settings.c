@@ -14,6 +14,7 @@ struct prepared {
     const bh_target *target;
     const char *name;
     size_t aim_count;
+    bh_raw_aim wants;    /* of the setting: with a coincidence, its alone */
     bh_raw_aim *aims;    /* one for each arm that takes part */
     const bh_arm **arms; /* of each aim */
     const bh_sweep *swept;
@@ -135,7 +136,7 @@ static bool takes_part(const struct prepared *p, const bh_arm *arm)
     return false;
 }
 
-static const bh_value *want_of(const bh_raw_aim *aim, bh_want *want, const char **name)
+const bh_value *bh_want_of(const bh_raw_aim *aim, bh_want *want, const char **name)
 {
     const struct {
         bh_want want;
@@ -191,14 +192,14 @@ static bh_code aims_of_list(const bh_making *making, const bh_raw_setting *own, 
     bh_want want;
     const char *setting_want, *arm_want;
     shared.arm = (bh_word){.text = NULL};
-    (void)want_of(&own->aim, &want, &setting_want);
+    (void)bh_want_of(&own->aim, &want, &setting_want);
     for (size_t i = 0; i < p->raw.arms.count; i++) {
         bh_raw_aim aim;
         const bh_arm *arm;
         bh_schema_merge(&bh_schema_aim, &shared, &items[i], &aim);
         aim.section = items[i].section;
-        const bh_value *value = want_of(&items[i], &want, &arm_want);
-        if (value && setting_want)
+        const bh_value *value = bh_want_of(&items[i], &want, &arm_want);
+        if (value && setting_want && !p->raw.coincidence.section.given)
             bh_tell(making, value->at, &aim.section, arm_want, BH_SAY_WANT_TWICE, arm_want,
                     setting_want);
         if (arm_of_item(making, &aim, &arm))
@@ -325,6 +326,10 @@ static bh_code prepare(const bh_making *making, const bh_raw_setting *own, size_
         p->name = number;
     }
     bh_schema_merge(&bh_schema_beam, &making->raw.beam, &p->raw.beam, &p->beam);
+    p->wants = p->raw.aim;
+    p->wants.section = own->section;
+    if (p->raw.coincidence.section.given) /* what the setting wants is not each arm's */
+        bh_forget_wants(&p->raw.aim);
     bh_check_process(making, &p->raw.section, &p->raw.process);
     if (find_target(making, p) || set_aims(making, own, p))
         return BH_ENOMEM;
@@ -345,7 +350,7 @@ static void fill_row(const bh_making *making, const struct prepared *p, size_t s
     if (aim->prescale.given && aim->prescale.value >= 1.0)
         row->arm.prescale = (int)aim->prescale.value;
     row->central_momentum = aim->central_momentum;
-    const bh_value *wanted = want_of(aim, &row->want, &name);
+    const bh_value *wanted = bh_want_of(aim, &row->want, &name);
     if (wanted)
         row->wanted = *wanted;
     row->each_bin = aim->goal_for.text && strcmp(aim->goal_for.text, "each-bin") == 0;
@@ -355,6 +360,9 @@ static void fill_row(const bh_making *making, const struct prepared *p, size_t s
         row->angle = arm->angle;
     } else if (aim->q2.given) {
         row->q2 = bh_sweep_value(&aim->q2, step);
+    } else if (aim->angle.word) { /* follows from another arm */
+        row->angle = (bh_value){.value = NAN, .given = true, .at = aim->angle.at};
+        return;
     } else {
         row->angle = bh_sweep_value(&aim->angle, step);
         if (!aim->angle.given && aim->section.node)
@@ -370,7 +378,7 @@ static bh_code fill_setting(const bh_making *making, const struct prepared *p, s
 {
     const size_t size = strlen(p->name) + 24;
     char *name = bh_arena_take(making->reading.arena, 1, size);
-    bh_setting_arm *rows = bh_arena_take(making->reading.arena, p->aim_count + 1, sizeof *rows);
+    bh_setting_arm *rows = bh_arena_take(making->reading.arena, p->aim_count + 2, sizeof *rows);
     if (!name || !rows)
         return BH_ENOMEM;
     if (p->swept)
@@ -394,7 +402,14 @@ static bh_code fill_setting(const bh_making *making, const struct prepared *p, s
         return BH_ENOMEM;
     for (size_t i = 0; i < p->aim_count; i++)
         fill_row(making, p, step, out, &rows[i]);
-    return BH_OK;
+    const bh_joining joining = {.making = making,
+                                .raw = &p->raw.coincidence,
+                                .aims = p->aims,
+                                .wants = &p->wants,
+                                .setting = out,
+                                .rows = rows};
+    bh_place_conjugates(&joining);
+    return p->raw.coincidence.section.given ? bh_add_coincidence(&joining) : BH_OK;
 }
 
 /* --- all of them --- */
@@ -409,8 +424,13 @@ static bool within_limits(const bh_making *making, const struct prepared *all, s
     *total = 0;
     for (size_t i = 0; i < n; i++) {
         *total += all[i].steps;
-        for (size_t k = 0; k < all[i].aim_count; k++)
+        size_t most = 0;
+        for (size_t k = 0; k < all[i].aim_count; k++) {
             bins += all[i].steps * (size_t)all[i].arms[k]->bins;
+            most = (size_t)all[i].arms[k]->bins > most ? (size_t)all[i].arms[k]->bins : most;
+        }
+        if (all[i].raw.coincidence.section.given) /* as many as its first arm has */
+            bins += all[i].steps * most;
     }
     if (*total > BH_MOST_SETTINGS)
         bh_tell(making, at, section, "settings", BH_SAY_MANY_SETTINGS, *total, BH_MOST_SETTINGS);

@@ -62,8 +62,7 @@ static const bh_key beam_keys[] = {
     {SWEEP(bh_raw_beam, momentum, BH_DIM_MOMENTUM), .group = ENERGY, .above = "0 MeV/c",
      .most = "1e30 MeV/c", .meaning = "momentum of the whole particle", .example = "170 MeV/c"},
     {QUANTITY(bh_raw_beam, momentum_spread, BH_DIM_SHARE), .least = "0 %", .most = "100 %",
-     .fallback = "0 %", .flags = BH_KEY_NOT_BUILT, .meaning = "rms spread of the momentum",
-     .example = "0.02 %"},
+     .fallback = "0 %", .meaning = "rms spread of the momentum", .example = "0.02 %"},
     {SWEEP(bh_raw_beam, current, BH_DIM_CURRENT), .group = CURRENT, .above = "0 A",
      .most = "1e30 A", .meaning = "electrical current of the whole beam, mean over time",
      .example = "20 uA"},
@@ -226,13 +225,12 @@ static const bh_key arm_keys[] = {
      .meaning = "events that lost more than this below the elastic line are not counted",
      .example = "15 MeV"},
     {QUANTITY(bh_raw_arm, angle_resolution, BH_DIM_ANGLE), .least = "0 mrad", .fallback = "0 mrad",
-     .flags = BH_KEY_NOT_BUILT, .meaning = "rms resolution of the angle", .example = "3 mrad"},
+     .meaning = "rms resolution of the angle", .example = "3 mrad"},
     {QUANTITY(bh_raw_arm, momentum_resolution, BH_DIM_SHARE), .group = RESOLUTION, .least = "0 %",
-     .fallback = "0 %", .flags = BH_KEY_NOT_BUILT, .meaning = "rms resolution of the momentum",
-     .example = "0.01 %"},
+     .fallback = "0 %", .meaning = "rms resolution of the momentum", .example = "0.01 %"},
     {QUANTITY(bh_raw_arm, energy_resolution, BH_DIM_ENERGY), .group = RESOLUTION, .least = "0 keV",
-     .most = "1e30 MeV", .fallback = "0 keV", .flags = BH_KEY_NOT_BUILT,
-     .meaning = "rms resolution of the energy", .example = "20 keV"},
+     .most = "1e30 MeV", .fallback = "0 keV", .meaning = "rms resolution of the energy",
+     .example = "20 keV"},
     {QUANTITY(bh_raw_arm, threshold, BH_DIM_ENERGY), .least = "0 MeV", .most = "1e30 MeV",
      .fallback = "0 MeV", .meaning = "least kinetic energy that it detects, on arrival",
      .example = "1 MeV"},
@@ -289,6 +287,8 @@ static const char *const words_goal_for[] = {"acceptance", "each-bin", NULL};
 
 enum { PLACE = 1, WANT = 2, WHO = 3 };
 
+const char *const bh_words_angle[] = {"conjugate", NULL};
+
 /* The same rows for a setting of one arm and for each arm of a setting; `at` leads to the member.
  */
 #define AIM(type, member, at, what) \
@@ -299,7 +299,10 @@ enum { PLACE = 1, WANT = 2, WHO = 3 };
      .group = PLACE,                                                                              \
      .least = "0 deg",                                                                            \
      .most = "180 deg",                                                                           \
-     .meaning = "of the arm's axis from the beam; left out for a ring and a fixed arm",           \
+     .words = bh_words_angle,                                                                     \
+     .meaning = "of the arm's axis from the beam; left out for a ring and a fixed arm; "          \
+                "conjugate: where the partner of the particle in the middle of the other "        \
+                "arm goes",                                                                       \
      .example = "30 deg"},                                                                        \
         {AIM(type, q2, at, BH_KEY_SWEEP),                                                         \
          .dimension = BH_DIM_Q2,                                                                  \
@@ -354,6 +357,16 @@ static const bh_key aim_keys[] = {
 };
 const bh_schema bh_schema_aim = {"an arm of a setting", sizeof(bh_raw_aim), ROWS(aim_keys), 0, 0};
 
+static const bh_key coincidence_keys[] = {
+    {KEY(bh_raw_coincidence, arms, BH_KEY_WORDS), .flags = BH_KEY_REQUIRED | BH_KEY_NOT_EMPTY,
+     .meaning = "the two arms; bins are those of the first", .example = "[A, B]"},
+    {QUANTITY(bh_raw_coincidence, window, BH_DIM_TIME), .flags = BH_KEY_REQUIRED, .above = "0 s",
+     .meaning = "time by which the two may differ, from the earliest to the latest",
+     .example = "30 ns"},
+};
+const bh_schema bh_schema_coincidence = {"a coincidence", sizeof(bh_raw_coincidence),
+                                         ROWS(coincidence_keys), 0, 0};
+
 static const bh_key setting_keys[] = {
     {NAME(bh_raw_setting, name), .meaning = "what tables call it; default: its number",
      .example = "K1"},
@@ -363,6 +376,10 @@ static const bh_key setting_keys[] = {
     {LIST(bh_raw_setting, arms, bh_schema_aim), .group = WHO, .flags = BH_KEY_NOT_EMPTY,
      .meaning = "several arms at once: a row each, the same hours; the slowest goal decides",
      .example = "[{arm: A, angle: 40 deg, goal: 1 %}, {arm: B, angle: 25 deg}]"},
+    {PART(bh_raw_setting, coincidence, bh_schema_coincidence),
+     .meaning = "both particles of an event in two of its arms: a row more, which goal, time, "
+                "charge or counts of the setting are then for",
+     .example = "{arms: [A, B], window: 30 ns}"},
     {NAME(bh_raw_setting, target), .meaning = "which target; may be left out where there is one",
      .example = "hydrogen"},
     {QUANTITY(bh_raw_setting, tilt, BH_DIM_ANGLE), .least = "-89 deg", .most = "89 deg",

@@ -135,6 +135,25 @@ double bh_pair_partner(const bh_collision *in, bh_detected detected, double thet
     return detected == BH_DETECTED_RECOIL ? event.scattered_angle : event.recoil_angle;
 }
 
+int bh_pair_breaks(const bh_collision *in, bh_detected detected, const bh_acceptance_part *second,
+                   double *breaks)
+{
+    double kinks[BH_KINKS];
+    const int count = bh_acceptance_kinks(second, kinks);
+    const bool both = detected == BH_DETECTED_RECOIL && in->mass > in->target;
+    int n = 0;
+    for (int i = 0; i < count; i++) {
+        if (detected != BH_DETECTED_RECOIL) {
+            breaks[n++] = bh_pair_partner(in, BH_DETECTED_RECOIL, kinks[i]);
+            continue;
+        }
+        breaks[n++] = bh_pair_partner(in, BH_DETECTED_SCATTERED, kinks[i]);
+        if (both)
+            breaks[n++] = bh_pair_partner(in, BH_DETECTED_SLOW, kinks[i]);
+    }
+    return n;
+}
+
 /* --- sums --- */
 
 enum { POINTS = 15, SUMS = 3, DEEPEST = 40, USUAL = 1000000 };
@@ -241,7 +260,7 @@ static int set_breaks(const bh_pair_request *r, double *at)
     const bh_interval polar = r->shape.first->polar;
     const double to = r->limit > 0 ? fmin(polar.to, r->limit) : polar.to;
     int count = bh_acceptance_kinks(r->shape.first, at), kept = 0;
-    for (int i = 0; i < r->break_count && i < BH_PAIR_BREAKS; i++)
+    for (int i = 0; i < r->break_count && i < BH_PAIR_MOST_BREAKS; i++)
         at[count++] = r->breaks[i];
     at[count++] = to;
     for (int i = 0; i < count; i++)
@@ -257,7 +276,7 @@ static int set_breaks(const bh_pair_request *r, double *at)
 
 bh_code bh_pair_add_up(const bh_pair_request *request, bh_pair_sum *out, bh_error *err)
 {
-    double at[BH_KINKS + BH_PAIR_BREAKS + 1];
+    double at[BH_KINKS + BH_PAIR_MOST_BREAKS + 1];
     const bh_pair_shape *shape = &request->shape;
     if (!(shape->first->polar.from < shape->first->polar.to &&
           shape->second->polar.from < shape->second->polar.to)) {

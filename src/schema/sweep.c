@@ -1,6 +1,7 @@
 /* sweep.c - one quantity or several that take turns. */
 #include <math.h>
 #include <stddef.h>
+#include <string.h>
 
 #include "beamhours/base/sentences.h"
 #include "beamhours/schema/ends.h"
@@ -172,6 +173,11 @@ static bh_code read_one(const bh_reading *reading, bh_written written, bh_sweep 
 {
     bh_quantity q;
     bh_quantity *values;
+    for (size_t i = 0; written.key->words && written.key->words[i]; i++)
+        if (strcmp(written.node->text, written.key->words[i]) == 0)
+            out->word = written.key->words[i];
+    if (out->word)
+        return BH_OK;
     if (!bh_read_quantity(reading, written, &q))
         return BH_OK;
     if (make_room(reading, 1, out, &values))

@@ -94,6 +94,12 @@ static const struct {
      {RECTANGLE(12, 0.04, 0.05), false},
      {RECTANGLE(25, 0.3, 0.3), true},
      false},
+    {"protons first, alphas of either speed",
+     {BH_MASS_ALPHA, BH_MASS_PROTON, 40},
+     BH_DETECTED_RECOIL,
+     {RECTANGLE(25, 0.3, 0.3), false},
+     {RECTANGLE(12, 0.04, 0.05), true},
+     false},
     {"both on one side",
      {BH_MASS_ELECTRON, BH_MASS_PROTON, 855},
      BH_DETECTED_SCATTERED,
@@ -107,11 +113,6 @@ static const struct {
      {RECTANGLE(65, 0.05, 0.3), true},
      true},
 };
-
-static bh_detected other(bh_detected detected)
-{
-    return detected == BH_DETECTED_RECOIL ? BH_DETECTED_SCATTERED : BH_DETECTED_RECOIL;
-}
 
 /* Whether a direction is in a shape, from its vector. */
 static bool within(const struct arm *arm, const double v[3])
@@ -152,17 +153,6 @@ static void smooth(void *context, size_t n, const double *theta, bh_pair_value *
     }
 }
 
-/* Places of the second shape's kinks. */
-static int breaks_of(const bh_collision *in, bh_detected first, const bh_acceptance_part *second,
-                     double *breaks)
-{
-    double kinks[BH_KINKS];
-    const int n = bh_acceptance_kinks(second, kinks);
-    for (int i = 0; i < n; i++)
-        breaks[i] = bh_pair_partner(in, other(first), kinks[i]);
-    return n;
-}
-
 static bh_pair_sum joint(int i, double tolerance)
 {
     struct tested tested = {&pairs[i].in, pairs[i].first};
@@ -176,7 +166,7 @@ static bh_pair_sum joint(int i, double tolerance)
         .function = smooth,
         .context = &tested,
         .limit = pairs[i].first == BH_DETECTED_RECOIL ? 0 : largest,
-        .break_count = breaks_of(&pairs[i].in, pairs[i].first, &two.whole, breaks),
+        .break_count = bh_pair_breaks(&pairs[i].in, pairs[i].first, &two.whole, breaks),
         .breaks = breaks,
         .tolerance = tolerance};
     bh_pair_sum sum;

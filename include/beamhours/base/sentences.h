@@ -292,11 +292,37 @@
 #define BH_SAY_RING_BEAM  "a ring from %s holds the beam itself; let it begin at a larger angle"
 #define BH_SAY_OVERLAPS_BEAM \
     "at %s the acceptance, %s inwards, overlaps the beam; more than %s would do"
-#define BH_SAY_NO_ARM        "no arm is called %s; did you mean %s?"
-#define BH_SAY_NO_ARM_OF     "no arm is called %s; there is %s"
-#define BH_SAY_WHICH_ARM     "there are several arms; add arm: %s"
-#define BH_SAY_ARM_TWICE     "arm %s takes part twice in setting %s; once would do"
-#define BH_SAY_ARM_FIXED     "arm %s is fixed at %s; leave %s out"
+#define BH_SAY_NO_ARM    "no arm is called %s; did you mean %s?"
+#define BH_SAY_NO_ARM_OF "no arm is called %s; there is %s"
+#define BH_SAY_WHICH_ARM "there are several arms; add arm: %s"
+#define BH_SAY_ARM_TWICE "arm %s takes part twice in setting %s; once would do"
+#define BH_SAY_ARM_FIXED "arm %s is fixed at %s; leave %s out"
+#define BH_SAY_PAIR_TWO \
+    "a coincidence has two arms, and here %s named; two names such as [A, B] would do"
+#define BH_SAY_PAIR_SAME "arm %s twice; a coincidence has two different arms"
+#define BH_SAY_PAIR_ABSENT \
+    "arm %s takes no part in setting %s; name it under arms of the setting too"
+#define BH_SAY_PAIR_DETECTS                                                                     \
+    "arms %s and %s both detect the %s particle, and of an event there is one; detects: %s in " \
+    "one "                                                                                      \
+    "of them would do"
+#define BH_SAY_PAIR_POINT                                                                     \
+    "arm %s has a solid_angle and no shape; in a coincidence in_plane with out_of_plane, or " \
+    "ring, "                                                                                  \
+    "would do"
+#define BH_SAY_PAIR_NAME \
+    "the row of the coincidence would be called %s as an arm is; another name of the arm would do"
+#define BH_SAY_PAIR_APART                                                                        \
+    "no elastic event of %s on %s has one particle in %s and the other in %s; angle: conjugate " \
+    "for "                                                                                       \
+    "one of them, on the other side of the beam, would do"
+#define BH_SAY_CONJUGATE_ALONE                                                                     \
+    "arm %s has no partner in setting %s; conjugate wants a second arm with an angle of its own, " \
+    "or a coincidence that names it"
+#define BH_SAY_CONJUGATE_NONE                                                                 \
+    "the partner of what arm %s detects at %s goes nowhere that an arm could stand; another " \
+    "angle "                                                                                  \
+    "would do"
 #define BH_SAY_NO_ANGLE      "arm %s has no angle in setting %s; add angle or q2"
 #define BH_SAY_TWO_SWEEPS    "%s and %s are both swept; sweep one of them in a setting"
 #define BH_SAY_MANY_SETTINGS "%zu settings after sweeps; at most %d would do"

@@ -89,6 +89,27 @@ typedef struct {
 void bh_check_row(const bh_sight *sight);
 void bh_check_process(const bh_making *making, const bh_section *section, const bh_word *process);
 
+/* What an aim wants, and its key; NULL where it wants nothing. */
+const bh_value *bh_want_of(const bh_raw_aim *aim, bh_want *want, const char **name);
+void bh_forget_wants(bh_raw_aim *aim);
+
+/* The arms of a setting, their rows filled, about to be joined. */
+typedef struct {
+    const bh_making *making;
+    const bh_raw_coincidence *raw;
+    const bh_raw_aim *aims;  /* of each row */
+    const bh_raw_aim *wants; /* of the setting */
+    bh_setting *setting;
+    bh_setting_arm *rows; /* those of the setting, and room for one more */
+} bh_joining;
+
+/* Turns each arm whose angle is `conjugate` to where the partner of the particle in the middle of
+ * the other arm goes, and checks it; complains. */
+void bh_place_conjugates(const bh_joining *joining);
+
+/* Adds the row of the coincidence; complains.  BH_ENOMEM. */
+BH_CHECKED bh_code bh_add_coincidence(const bh_joining *joining);
+
 /* Applies change `i` (from 0) to the document. */
 void bh_apply_change(bh_document *document, const bh_change *change, size_t i,
                      const bh_reading *reading);

@@ -9,6 +9,7 @@
 #include "beamhours/base/diag.h"
 #include "beamhours/document/node.h"
 #include "beamhours/matter/material.h"
+#include "beamhours/rates/acceptance.h"
 #include "beamhours/schema/value.h"
 #include "beamhours/units/particle.h"
 
@@ -138,8 +139,9 @@ typedef enum {
     BH_WANT_COUNTS
 } bh_want;
 
-/* One arm of one setting: a row of the run table. */
-typedef struct {
+/* One arm of one setting, or two in coincidence: a row of the run table. */
+typedef struct bh_setting_arm bh_setting_arm;
+struct bh_setting_arm {
     bh_arm arm;     /* with what this setting overrides (prescale) already in it */
     bh_value angle; /* [rad] of its axis, resolved from q2 where that was written; ring: 0 */
     bh_value q2;    /* [MeV^2] as written, else absent */
@@ -147,8 +149,12 @@ typedef struct {
     bh_want want;              /* of this arm; goal and counts may differ between arms */
     bh_value wanted;           /* [1] goal; [s] time; [C] charge; [1] counts */
     bool each_bin;             /* the worst bin must reach the goal */
+    /* Of a coincidence: its arms, of the same setting, and its window; NULL for an arm alone. `arm`
+     * is then the first, with the name "A+B", both efficiencies, and no readout of its own. */
+    const bh_setting_arm *first, *second;
+    bh_value window; /* [s] */
     bh_mark at;
-} bh_setting_arm;
+};
 
 /* One setting after sweeps: everything it is measured with. */
 typedef struct {
@@ -158,7 +164,7 @@ typedef struct {
     bh_value tilt; /* [rad] the setting's own, else the target's */
     bh_word process;
     size_t arm_count;
-    const bh_setting_arm *arms;
+    const bh_setting_arm *arms; /* a coincidence is the last of them */
     bh_mark at;
 } bh_setting;
 
@@ -225,6 +231,9 @@ typedef struct {
 bh_plan *bh_plan_read(const char *bytes, size_t length, const char *name, const bh_change *changes,
                       size_t change_count, bh_material_library *library, bh_diags *diags);
 void bh_plan_free(bh_plan *plan);
+
+/* The acceptance of an arm where it stands, as the rates room wants it; edges stay the arm's. */
+bh_acceptance_spec bh_arm_acceptance(const bh_setting_arm *arm);
 
 /* The structure model chosen for nucleus z, a: "default" unless the plan says otherwise. */
 const char *bh_plan_structure(const bh_plan *plan, int z, int a);

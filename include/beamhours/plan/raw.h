@@ -97,9 +97,16 @@ typedef struct {
 
 typedef struct {
     bh_section section;
+    bh_words arms;
+    bh_value window;
+} bh_raw_coincidence;
+
+typedef struct {
+    bh_section section;
     bh_word name;
     bh_raw_aim aim; /* its keys stand in the setting itself */
     bh_list arms;   /* of bh_raw_aim */
+    bh_raw_coincidence coincidence;
     bh_word target;
     bh_value tilt;
     bh_raw_beam beam;
@@ -145,12 +152,13 @@ typedef struct {
 
 /* The one table of keys: of the whole plan, and of the parts that are read or merged alone. */
 extern const bh_schema bh_schema_plan, bh_schema_beam, bh_schema_layer, bh_schema_target,
-    bh_schema_arm, bh_schema_models, bh_schema_aim, bh_schema_setting, bh_schema_schedule,
-    bh_schema_task;
+    bh_schema_arm, bh_schema_models, bh_schema_aim, bh_schema_coincidence, bh_schema_setting,
+    bh_schema_schedule, bh_schema_task;
 
 /* Words that are told apart by their place in these lists (enums of plan.h). */
-extern const char *const bh_words_role[],
-    *const bh_words_side[], *const bh_words_detects[], *const bh_words_dead_time_model[],
-                                                           *const bh_words_every[];
+extern const char *const bh_words_angle[],
+    *const bh_words_role[], *const bh_words_side[], *const bh_words_detects[],
+                                                        *const bh_words_dead_time_model[],
+                                                            *const bh_words_every[];
 
 #endif

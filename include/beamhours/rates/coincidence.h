@@ -32,6 +32,13 @@ double bh_pair_azimuth(const bh_pair_shape *pair, double theta, double partner);
  * where there is no such event. */
 double bh_pair_partner(const bh_collision *in, bh_detected detected, double theta);
 
+enum { BH_PAIR_BREAKS = 2 * BH_KINKS };
+
+/* Fills breaks [rad] (room for BH_PAIR_BREAKS) with the polar angles of a first particle `detected`
+ * whose partner is at a kink of the second shape, and returns how many there are. */
+int bh_pair_breaks(const bh_collision *in, bh_detected detected, const bh_acceptance_part *second,
+                   double *breaks);
+
 /* Fills, for n polar angles theta [rad] of the first particle, total and kept [ub/sr], per solid
  * angle of the first particle, and partner [rad], NAN where there is no event. */
 typedef struct {
@@ -42,14 +49,14 @@ typedef struct {
 /* Fills n values [1] at polar angles theta [rad]. */
 typedef void bh_pair_function(void *context, size_t n, const double *theta, bh_pair_value *value);
 
-enum { BH_PAIR_BREAKS = 64 };
+enum { BH_PAIR_MOST_BREAKS = BH_PAIR_BREAKS + 64 };
 
 typedef struct {
     bh_pair_shape shape;
     bh_pair_function *function;
     void *context;
     double limit;         /* [rad] no event beyond this polar angle; 0: none */
-    int break_count;      /* at most BH_PAIR_BREAKS */
+    int break_count;      /* at most BH_PAIR_MOST_BREAKS */
     const double *breaks; /* [rad] polar angles where the function or the partner's place in the
                              second arm is not smooth, in any order */
     double tolerance;     /* [1] relative; 0: 1e-6 */

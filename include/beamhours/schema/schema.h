@@ -22,7 +22,7 @@ typedef enum {
     BH_KEY_NAME,     /* bh_word: letters, digits, _ - + */
     BH_KEY_TEXT,     /* bh_word: any text */
     BH_KEY_EITHER,   /* bh_either: a quantity, or one of `words` */
-    BH_KEY_SWEEP,    /* bh_sweep: a quantity, or several */
+    BH_KEY_SWEEP,    /* bh_sweep: a quantity, or several, or one of `words` */
     BH_KEY_TABLE,    /* bh_pairs: a mapping with free keys; of what: `item` */
     BH_KEY_VALUES,   /* bh_values: a list of quantities */
     BH_KEY_WORDS,    /* bh_words: a list of `words` (of any texts where there are none) */

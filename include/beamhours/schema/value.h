@@ -53,6 +53,7 @@ typedef struct {
     const bh_mark *marks; /* of each */
     bool given;
     bool swept;          /* a list or a mapping was written, even one of a single value */
+    const char *word;    /* the word that was written in the place of a quantity; else NULL */
     const bh_node *node; /* NULL for a default */
     bh_mark at;
 } bh_sweep;
