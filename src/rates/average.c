@@ -11,6 +11,10 @@
 #define QUADRATURE_SHARE 0.5
 #define USUAL_TOLERANCE  1e-6
 
+/* Kept pieces exceed the total by rounding and quadrature; by more where the total, summed without
+ * knowing of them, is the worse of the two. */
+#define RAGGED 1e-6
+
 struct bh_average_workspace {
     bh_interpolant *interpolant;
 };
@@ -109,7 +113,7 @@ static double sum_kept(const summing *s, const bh_acceptance_part *part, double 
         kept += q.sum;
         *converged = *converged && q.error <= tolerance_of(r) * fmax(q.sum, total);
     }
-    return fmin(kept, total);
+    return kept < total * (1 + RAGGED) ? fmin(kept, total) : kept;
 }
 
 static bh_average sum_part(const summing *s, const bh_acceptance_part *part)

@@ -7,12 +7,16 @@
 
 #include "beamhours/units/constants.h"
 
-/* No event goes further than this many sigma: the normal tail beyond is 1e-19. */
-static const double furthest = 9;
+/* No event goes further than this many sigma: the normal tail beyond is 1e-9. */
+static const double furthest = 6;
 
 /* A density that changes by more within one cell, or within one sigma, is taken to change by that
  * much: what is that steep is no smooth density. */
 static const double steepest_cell = 30, steepest_sigma = 2;
+
+/* A cell that is narrower than this share of sigma is as good as one with all events in the middle.
+ */
+static const double narrow = 0.4;
 
 /* Below this change over a cell the closed form cancels and its series is exact. */
 static const double flat = 1e-4;
@@ -62,10 +66,14 @@ static double second_integral(double t)
 
 /* --- one cell --- */
 
+enum { POINTS = 3 };
+
 struct cell {
     double from, to; /* [rad] */
     double sigma;    /* [rad] */
     double slope;    /* [1/rad] */
+    bool narrow;
+    double at[POINTS], weight[POINTS]; /* [rad] [1] of a narrow one */
 };
 
 /* Share measured below `edge` of a density 1 + slope (x - centre). */
@@ -91,15 +99,42 @@ static double below_steep(const struct cell *c, double edge)
     return (ends + moved) / (2 * sinh(s * half));
 }
 
+/* A cell no wider than the resolution by Gauss and Legendre's three points. */
+static double below_points(const struct cell *c, double edge)
+{
+    double sum = 0;
+    for (int i = 0; i < POINTS; i++)
+        sum += c->weight[i] * below((edge - c->at[i]) / c->sigma);
+    return sum;
+}
+
 static double measured_below(const struct cell *c, double edge)
 {
     if (edge >= c->to + furthest * c->sigma)
         return 1;
     if (edge <= c->from - furthest * c->sigma)
         return 0;
+    if (c->narrow)
+        return below_points(c, edge);
     const bool level = fabs(c->slope) * (c->to - c->from) < flat;
     const double share = level ? below_flat(c, edge) : below_steep(c, edge);
     return fmin(fmax(share, 0), 1);
+}
+
+static void set_points(struct cell *c)
+{
+    static const double node[POINTS] = {-0.774596669241483377, 0, 0.774596669241483377};
+    static const double share[POINTS] = {5, 8, 5};
+    const double half = (c->to - c->from) / 2;
+    double sum = 0;
+    c->narrow = 2 * half < narrow * c->sigma && fabs(c->slope) * half < 1;
+    for (int i = 0; c->narrow && i < POINTS; i++) {
+        c->at[i] = (c->from + c->to) / 2 + half * node[i];
+        c->weight[i] = share[i] * exp(c->slope * half * node[i]);
+        sum += c->weight[i];
+    }
+    for (int i = 0; c->narrow && i < POINTS; i++)
+        c->weight[i] /= sum;
 }
 
 static struct cell cell_of(const bh_migration *m, int i, double slope)
@@ -107,18 +142,19 @@ static struct cell cell_of(const bh_migration *m, int i, double slope)
     struct cell c = {.from = m->edges[i], .to = m->edges[i + 1], .sigma = m->sigma};
     const double most = fmin(steepest_cell / (c.to - c.from), steepest_sigma / m->sigma);
     c.slope = fmin(fmax(slope, -most), most);
+    set_points(&c);
     return c;
 }
 
 /* --- columns of the matrix --- */
 
-void bh_migration_move(const bh_migration *m, int from, double slope, double counts,
-                       double *measured)
+void bh_migration_reach(const bh_migration *m, int from, double slope, bh_migration_column *column)
 {
-    if (!(m->sigma > 0) || m->cells == 1) {
-        measured[from] += counts;
+    column->first = from;
+    column->count = 1;
+    column->share[0] = 1;
+    if (!(m->sigma > 0) || m->cells == 1)
         return;
-    }
     const struct cell c = cell_of(m, from, slope);
     const int last = m->cells - 1;
     const double reach = furthest * m->sigma;
@@ -126,20 +162,27 @@ void bh_migration_move(const bh_migration *m, int from, double slope, double cou
     while (first > 0 && m->edges[first] > c.from - reach)
         first--;
     double sum = 0; /* what is measured below the cell at hand */
+    int n = 0;
     for (int i = first; i <= last; i++) {
         const double next = i == last ? 1 : fmax(sum, measured_below(&c, m->edges[i + 1]));
-        measured[i] += counts * (next - sum);
+        column->share[n++] = next - sum;
         sum = next;
         if (m->edges[i + 1] >= c.to + reach)
             break;
     }
+    column->first = first;
+    column->count = n;
 }
 
 void bh_migration_shares(const bh_migration *m, int from, double slope, double *share)
 {
+    bh_migration_column column = {.share = share};
+    bh_migration_reach(m, from, slope, &column);
+    for (int i = column.count - 1; i >= 0; i--)
+        share[column.first + i] = share[i];
     for (int i = 0; i < m->cells; i++)
-        share[i] = 0;
-    bh_migration_move(m, from, slope, 1, share);
+        if (i < column.first || i >= column.first + column.count)
+            share[i] = 0;
 }
 
 /* --- slopes --- */

@@ -61,7 +61,8 @@ static const bh_setting *find_setting(const bh_plan *plan, const char *name, bh_
 static const bh_setting_arm *find_arm(const bh_setting *s, const char *name, bh_error *err)
 {
     for (size_t i = 0; i < s->arm_count; i++)
-        if (!name || (s->arms[i].arm.name.text && strcmp(s->arms[i].arm.name.text, name) == 0))
+        if (!s->arms[i].first && /* the angle of a coincidence is its arms' */
+            (!name || (s->arms[i].arm.name.text && strcmp(s->arms[i].arm.name.text, name) == 0)))
             return &s->arms[i];
     (void)bh_fail(err, BH_EDOMAIN, "setting %s has no arm \"%s\"; there is %s", s->name,
                   name ? name : "", s->arm_count ? s->arms[0].arm.name.text : "none");

@@ -1,5 +1,6 @@
 /* evaluate.c - one setting of a plan, computed into its rows. */
 #include "beamhours/run/evaluate.h"
+#include "beamhours/run/pair.h"
 
 #include <math.h>
 #include <stdio.h>
@@ -39,6 +40,21 @@ bh_code bh_evaluator_prepare(bh_evaluator *evaluator, const bh_plan *plan, bh_ar
                                          evaluator->systematics.causes, err);
 }
 
+/* The coincidence in row `a` of a setting, whose arms stand before it. */
+static bh_code measure_pair(bh_evaluator *evaluator, const bh_setting *setting, size_t a,
+                            bh_error *err)
+{
+    const bh_setting_arm *arm = &setting->arms[a];
+    const size_t one = (size_t)(arm->first - setting->arms);
+    const size_t other = (size_t)(arm->second - setting->arms);
+    const bh_arm_pair pair = {
+        .arm = arm, .one = &evaluator->yields[one], .other = &evaluator->yields[other]};
+    const bh_code code = bh_pair_make(&evaluator->yielder, &pair, &evaluator->yields[a], err);
+    if (!code)
+        bh_pair_record(&evaluator->arms[a], &evaluator->arms[one], &evaluator->arms[other]);
+    return code;
+}
+
 /* Yields and recorded rates of all arms of a setting. */
 static bh_code measure(bh_evaluator *evaluator, const bh_setting *setting, bool bins, bh_error *err)
 {
@@ -50,6 +66,11 @@ static bh_code measure(bh_evaluator *evaluator, const bh_setting *setting, bool 
         bh_arm_hours *hours = &evaluator->arms[a];
         *hours = (bh_arm_hours){.yield = yield, .recorded = evaluator->recorded + used};
         yield->part = evaluator->parts + used;
+        if (arm->first) {
+            code = measure_pair(evaluator, setting, a, err);
+            used += (size_t)yield->view.parts;
+            continue;
+        }
         code = bh_view_make(&evaluator->yielder, setting, arm, &yield->view, err);
         if (bins || arm->arm.bins > 1) /* an arm in bins is their sum, shown or not */
             yield->view.parts = 1 + arm->arm.bins;

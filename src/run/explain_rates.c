@@ -62,6 +62,7 @@ static void explain_signal(bh_explaining *x)
                                               : "of the detected particle at the arm's centre");
     factor(x, "kept", bh_explain_number(x, p->kept, ""),
            v->cut ? "share of the events whose momentum is inside the bite" : "no momentum bite");
+    bh_explain_resolution(x);
     bh_explain_add(x, (bh_line){.kind = BH_LINE_FACTOR,
                                 .name = "efficiency of the arm",
                                 .value = bh_explain_number(x, v->arm->arm.efficiency.value, "")});
@@ -133,6 +134,10 @@ static void explain_sensitivities(bh_explaining *x)
 void bh_explain_rates(bh_explaining *x)
 {
     const bh_yield *y = x->arm->yield;
+    if (y->view.arm->first) {
+        bh_explain_pair(x);
+        return;
+    }
     const size_t count = y->view.list->presence_count;
     bh_contribution *all = bh_arena_take(x->arena, count + 1, sizeof *all);
     bh_error ignored;

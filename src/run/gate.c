@@ -1,6 +1,7 @@
 /* gate.c - which energies at the scattering point an arm takes. */
 #include <math.h>
 
+#include "beamhours/run/taking.h"
 #include "beamhours/run/yield.h"
 #include "beamhours/units/constants.h"
 
@@ -58,6 +59,15 @@ static bh_code least_electron(bh_yielder *yielder, const bh_view *view, size_t c
     return code;
 }
 
+/* With what rms [MeV] the energy at the lower end of the bite is measured. */
+static double blur_at(const bh_view *view, double mass, double kinetic)
+{
+    const double momentum = bh_bite_momentum(mass, kinetic);
+    const bh_momentum_rms rms = bh_taking_rms(&view->arm->arm, &view->setting->beam);
+    const double sigma = bh_bite_sigma(&rms, mass, momentum, momentum);
+    return sigma * momentum / (kinetic + mass);
+}
+
 bh_code bh_view_gate(bh_yielder *yielder, bh_view *view, size_t count)
 {
     const bh_arm *arm = &view->arm->arm;
@@ -70,6 +80,7 @@ bh_code bh_view_gate(bh_yielder *yielder, bh_view *view, size_t count)
         (bh_gate){.cut = arm->energy_cut.given ? arm->energy_cut.value : (double)INFINITY,
                   .from = from > 0 ? from + lost : 0,
                   .to = view->cut ? kinetic_of(mass, view->bite_to) + lost : (double)INFINITY,
+                  .blur = from > 0 ? blur_at(view, mass, from) : 0,
                   .given = arm->energy_cut.given || view->cut};
     view->lost = lost;
     view->least = 0;

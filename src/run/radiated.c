@@ -127,6 +127,18 @@ static void set_lengths(const struct matter *m, bh_radiated_detail *out)
     out->after /= weight > 0 ? weight : 1;
 }
 
+/* What a line `cut` above an edge may lose where it is measured above it. */
+static double blurred(double cut, double blur)
+{
+    return blur > 0 && cut < 30 * blur ? blur * log1p(exp(cut / blur)) : cut;
+}
+
+/* Share of a line `cut` above an edge that is measured above it. */
+static double measured_above(double cut, double blur)
+{
+    return blur > 0 ? erfc(-cut / (blur * sqrt(2.0))) / 2 : 1;
+}
+
 /* Where the line is between the edges. */
 static bool set_line(const bh_radiated_request *r, double angle, bh_radiated_detail *out)
 {
@@ -134,8 +146,12 @@ static bool set_line(const bh_radiated_request *r, double angle, bh_radiated_det
     if (!event_at(&r->channel, angle, &out->event))
         return false;
     const double kinetic = bh_channel_kinetic(&r->channel, &out->event);
-    const double by_bite = r->gate.from > 0 ? kinetic - r->gate.from : (double)INFINITY;
-    out->cut = kinetic - bh_gate_from(&r->gate, &r->line, angle);
+    const bh_gate by_cut = {.cut = r->gate.cut};
+    const double by_bite =
+        r->gate.from > 0 ? blurred(kinetic - r->gate.from, r->gate.blur) : (double)INFINITY;
+    out->cut = fmin(by_bite, r->gate.cut < (double)INFINITY
+                                 ? kinetic - bh_gate_from(&by_cut, &r->line, angle)
+                                 : (double)INFINITY);
     out->by_bite = out->cut >= by_bite;
     out->above = r->gate.to < (double)INFINITY ? kinetic - r->gate.to : -(double)INFINITY;
     out->soft = out->event.scattered_kinetic;
@@ -251,16 +267,23 @@ static double factor_at(const bh_radiated *x, int boost, double angle)
         return 0;
     bh_angle_shares(&x->at, angle, share);
     const double soft = bh_angle_between(&x->at, share, x->soft);
-    if (x->cut[0] < far)
-        down = bh_angle_between(&x->at, share, x->cut) +
-               (boost ? bh_angle_between(&x->at, share, x->shift[boost]) : 0);
+    double inside = 1;
+    if (x->cut[0] < far) {
+        const double line = bh_angle_between(&x->at, share, x->cut) +
+                            (boost ? bh_angle_between(&x->at, share, x->shift[boost]) : 0);
+        inside = measured_above(line, x->blur);
+        down = blurred(line, x->blur);
+    }
     if (x->limit[0] < far)
         down = fmin(down, bh_angle_between(&x->at, share, x->limit));
     const double kept = kept_inside(x, share, fmin(down, soft));
-    if (x->signal || x->above[0] < -far)
+    if (x->signal)
         return kept;
+    if (x->above[0] < -far)
+        return kept * inside;
     const double above = bh_angle_between(&x->at, share, x->above);
-    return fmax(0, kept - kept_inside(x, share, fmin(above, soft)));
+    const double beyond = kept_inside(x, share, fmin(blurred(above, x->blur), soft));
+    return fmax(0, kept * inside - beyond * measured_above(above, x->blur));
 }
 
 /* Whether the way out changes so much between the angles that few points do not show it. */
@@ -330,6 +353,7 @@ void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out)
     if (out->idle)
         return;
     out->signal = request->signal;
+    out->blur = request->gate.blur;
     out->largest = bh_channel_largest_angle(&request->channel) * inside;
     polar.to = fmin(polar.to, out->largest);
     polar.from = fmin(fmax(polar.from, 1e-6), polar.to);

@@ -10,7 +10,7 @@ struct key {
     char beam[16];
     int charge, z, a, recoil, branch, bins, cut, sensitivities, only, shape;
     double target, kinetic, momentum_from, momentum_to;
-    double shape_numbers[9];
+    double shape_numbers[9], rms[3];
 };
 
 /* The room that the key is written into. */
@@ -36,7 +36,7 @@ static void write_radiated(const bh_radiated *x, struct writing *w)
     const double *const lists[] = {x->level[0], x->level[1], x->level[2], x->tail,
                                    x->cut,      x->limit,    x->above,    x->soft,
                                    x->at.node,  x->shift[1], x->shift[2]};
-    const double numbers[] = {x->signal, x->reference, x->boosted[1], x->boosted[2]};
+    const double numbers[] = {x->signal, x->reference, x->boosted[1], x->boosted[2], x->blur};
     write_bytes(w, numbers, sizeof numbers);
     for (size_t i = 0; i < sizeof lists / sizeof lists[0]; i++)
         write_bytes(w, lists[i], size);
@@ -69,6 +69,8 @@ static void write_numbers(const bh_channel_request *r, struct writing *w)
         s->angle,     s->in_plane_from, s->in_plane_to, s->out_of_plane_from, s->out_of_plane_to,
         s->ring_from, s->ring_to,       s->azimuth,     s->solid_angle};
     memcpy(k.shape_numbers, numbers, sizeof numbers);
+    const double rms[] = {r->rms.momentum, r->rms.energy, r->rms.beam};
+    memcpy(k.rms, rms, sizeof rms);
     write_bytes(w, &k, sizeof k);
     if (r->radiated && !r->radiated->idle)
         write_radiated(r->radiated, w);

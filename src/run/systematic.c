@@ -5,6 +5,7 @@
 #include <string.h>
 
 #include "beamhours/run/collecting.h"
+#include "beamhours/run/pair.h"
 
 enum { FIRST_ROOM = 32 };
 
@@ -58,7 +59,9 @@ bh_code bh_systematics_prepare(bh_systematics *systematics, bh_yielder *yielder,
     for (int i = 0; i < 2; i++) {
         systematics->signals[i] = bh_arena_take(arena, most.parts, sizeof(double));
         systematics->paths[i] = bh_arena_take(arena, most.layers + 1, sizeof(double));
-        made = made && systematics->signals[i] && systematics->paths[i];
+        systematics->pair_parts[i] = bh_arena_take(arena, most.parts, sizeof(bh_part));
+        made =
+            made && systematics->signals[i] && systematics->paths[i] && systematics->pair_parts[i];
     }
     return made ? BH_OK : out_of_memory(err);
 }
@@ -123,16 +126,44 @@ void bh_collect_same(bh_collecting *c, const bh_cause *cause, double effect)
         to[i] += effect;
 }
 
+static bh_code make_yield(bh_collecting *c, const bh_setting *setting, const bh_setting_arm *arm,
+                          bh_yield *yield)
+{
+    bh_code code = bh_view_make(c->yielder, setting, arm, &yield->view, c->err);
+    yield->view.parts = 1 + arm->arm.bins;
+    return code ? code : bh_yield_make(c->yielder, yield, c->err);
+}
+
+/* A coincidence whose first arm is as `arm` has it. */
+static bh_code make_pair(bh_collecting *c, const bh_setting *setting, const bh_setting_arm *arm,
+                         bh_yield *yield)
+{
+    bh_setting_arm first = *arm;
+    first.first = first.second = NULL;
+    bh_yield one = {.part = c->with->pair_parts[0]}, other = {.part = c->with->pair_parts[1]};
+    const bh_arm_pair pair = {.arm = arm, .one = &one, .other = &other};
+    bh_code code = make_yield(c, setting, &first, &one);
+    if (!code)
+        code = make_yield(c, setting, arm->second, &other);
+    one.view.parts = (int)c->parts;
+    return code ? code : bh_pair_make(c->yielder, &pair, yield, c->err);
+}
+
 void bh_collect_signals(bh_collecting *c, const bh_setting *setting, const bh_setting_arm *arm,
                         double *signal)
 {
     bh_remarks *remarks = c->yielder->remarks;
     bh_yield yield = {.part = c->with->parts};
     c->yielder->remarks = NULL;
-    bh_code code = bh_view_make(c->yielder, setting, arm, &yield.view, c->err);
-    yield.view.parts = (int)c->parts;
-    if (!code)
-        code = bh_yield_make(c->yielder, &yield, c->err);
+    bh_code code = BH_OK;
+    if (arm->first) {
+        code = make_pair(c, setting, arm, &yield);
+    } else {
+        code = bh_view_make(c->yielder, setting, arm, &yield.view, c->err);
+        yield.view.parts = (int)c->parts;
+        if (!code)
+            code = bh_yield_make(c->yielder, &yield, c->err);
+    }
     c->yielder->remarks = remarks;
     bh_collect_fail(c, code);
     for (size_t i = 0; i < c->parts; i++)

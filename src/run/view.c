@@ -3,32 +3,9 @@
 #include <string.h>
 
 #include "beamhours/physics/validity.h"
+#include "beamhours/run/resolution.h"
+#include "beamhours/run/taking.h"
 #include "beamhours/run/yield.h"
-
-static bh_acceptance_spec spec_of(const bh_setting_arm *arm)
-{
-    const bh_arm *a = &arm->arm;
-    static const bh_acceptance_shape shapes[] = {[BH_SHAPE_RECTANGLE] = BH_ACCEPTANCE_RECTANGLE,
-                                                 [BH_SHAPE_RING] = BH_ACCEPTANCE_RING,
-                                                 [BH_SHAPE_POINT] = BH_ACCEPTANCE_POINT};
-    bh_acceptance_spec spec = {.shape = shapes[a->shape],
-                               .angle = arm->angle.value,
-                               .solid_angle = a->solid_angle.given ? a->solid_angle.value : 0,
-                               .bins = a->bins,
-                               .edges = a->edges};
-    if (a->shape == BH_SHAPE_RING) {
-        spec.angle = 0;
-        spec.ring_from = a->ring.from;
-        spec.ring_to = a->ring.to;
-        spec.azimuth = a->azimuth.value;
-    } else if (a->shape == BH_SHAPE_RECTANGLE) {
-        spec.in_plane_from = a->in_plane.from;
-        spec.in_plane_to = a->in_plane.to;
-        spec.out_of_plane_from = a->out_of_plane.from;
-        spec.out_of_plane_to = a->out_of_plane.to;
-    }
-    return spec;
-}
 
 /* A hadron or ion too slow to reach the nucleus meets all of its charge from outside, where it acts
  * as a point (Gauss); the form factor of a plane wave would be wrong by orders of magnitude. */
@@ -93,6 +70,7 @@ bh_channel_request bh_view_request(const bh_yielder *yielder, const bh_view *vie
                                 .cut = view->cut || least > 0,
                                 .momentum_from = fmax(view->bite_from, least),
                                 .momentum_to = fmax(view->bite_to, least),
+                                .rms = bh_taking_rms(&view->arm->arm, &view->setting->beam),
                                 .bins = view->parts > 1,
                                 .way = way,
                                 .vertices = yielder->vertices,
@@ -155,6 +133,7 @@ static bh_code set_momentum(bh_yielder *yielder, bh_view *view, size_t count, bh
     }
     if (view->arm->central_momentum.given)
         view->central_momentum = view->arm->central_momentum.value;
+    view->angle_rms = bh_view_angle_rms(yielder, view, &channels.list[0], count);
     view->bite_to = (double)INFINITY;
     view->cut = arm->momentum_bite.given && view->central_momentum > 0;
     if (!view->cut || code)
@@ -211,7 +190,7 @@ bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_se
                       .arm = arm,
                       .list = &yielder->lists[setting->target - yielder->plan->targets],
                       .process = bh_process_find(setting->process.text),
-                      .spec = spec_of(arm),
+                      .spec = bh_arm_acceptance(arm),
                       .beam = setting->beam.particle_rate.value * setting->beam.fraction.value,
                       .parts = 1};
     if (!view->process)

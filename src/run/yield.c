@@ -5,6 +5,8 @@
 
 #include "beamhours/rates/counting.h"
 #include "beamhours/run/beneath.h"
+#include "beamhours/run/pair.h"
+#include "beamhours/run/resolution.h"
 #include "beamhours/units/constants.h"
 
 bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err)
@@ -21,8 +23,10 @@ bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err)
     }
     yielder->seen = bh_arena_take(arena, nuclides, sizeof *yielder->seen);
     made = made && yielder->seen;
-    return made ? bh_places_prepare(yielder, arena, err)
-                : bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    if (!made)
+        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    const bh_code code = bh_places_prepare(yielder, arena, err);
+    return code ? code : bh_pair_prepare(yielder, arena, err);
 }
 
 /* Adds up over the layers what the arm sees of each nuclide. */
@@ -128,12 +132,13 @@ static bh_code set_geometry(bh_yield *yield, bh_error *err)
 }
 
 /* From sums to means and rates. */
-static void finish(const bh_yield *yield, bh_part *part)
+void bh_yield_finish(const bh_yield *yield, bh_part *part)
 {
     const bh_view *view = &yield->view;
     const double efficiency = view->arm->arm.efficiency.value;
     const double per_ub = view->beam * 1e-30 * efficiency;
     const double kept = part->kept, radiated = part->radiative;
+    part->belonging /= part->cross_section;
     part->kept = part->cross_section > 0 ? kept / part->cross_section : (double)NAN;
     part->radiative = kept > 0 ? radiated / kept : (double)NAN;
     part->per_radian = part->per_radian / (2 * BH_STEP_ANGLE * radiated);
@@ -224,7 +229,10 @@ bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err)
         code = bh_findings(yielder, yield, err);
     if (!code && target->empty != BH_EMPTY_NONE && target->empty_use)
         code = add_dummy(yielder, yield, target->empty_use, err);
-    for (int i = 0; !code && i < yield->view.parts; i++)
-        finish(yield, &yield->part[i]);
-    return code;
+    if (code)
+        return code;
+    bh_resolve_bins(yield);
+    for (int i = 0; i < yield->view.parts; i++)
+        bh_yield_finish(yield, &yield->part[i]);
+    return BH_OK;
 }

@@ -31,9 +31,15 @@ void bh_migration_slopes(const bh_migration *migration, const double *counts, do
  * add to 1 to rounding. */
 void bh_migration_shares(const bh_migration *migration, int from, double slope, double *share);
 
-/* Adds to `measured` [1], one for each cell, what is measured of counts [1] in cell `from`,
- * spread with slope [1/rad]; cells out of reach are left alone. */
-void bh_migration_move(const bh_migration *migration, int from, double slope, double counts,
-                       double *measured);
+/* Cells that lie together, and the share [1] measured in each. */
+typedef struct {
+    int first, count;
+    double *share; /* [1] as many as count; room for all cells */
+} bh_migration_column;
+
+/* The same without the zeros: fills first, count and share (whose room is the caller's) with the
+ * cells within reach of `from`, spread with slope [1/rad]. */
+void bh_migration_reach(const bh_migration *migration, int from, double slope,
+                        bh_migration_column *column);
 
 #endif

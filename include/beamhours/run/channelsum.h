@@ -5,6 +5,7 @@
 #include <stdbool.h>
 
 #include "beamhours/rates/acceptance.h"
+#include "beamhours/rates/bite.h"
 #include "beamhours/run/channel.h"
 #include "beamhours/run/passage.h"
 #include "beamhours/run/radiated.h"
@@ -21,6 +22,7 @@ typedef struct {
     bh_acceptance_spec acceptance;
     bool cut;                          /* there is a momentum bite or a threshold */
     double momentum_from, momentum_to; /* [MeV/c] of the detected particle, losses behind it */
+    bh_momentum_rms rms;               /* with which that momentum is measured */
     const bh_way *way;                 /* NULL: everything happens at the channel's own energy */
     const bh_vertex *vertices;         /* where the nuclei are that are meant */
     size_t vertex_count;

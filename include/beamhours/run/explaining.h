@@ -40,11 +40,15 @@ const char *bh_explain_mark(bh_explaining *x, bh_mark at);
 void bh_explain_add(bh_explaining *x, bh_line line);
 void bh_explain_section(bh_explaining *x, const char *name);
 
+/* How well the row's arm measures, where it matters. */
+void bh_explain_resolution(bh_explaining *x);
+
 /* The parts of an explanation, in their order. */
 void bh_explain_inputs(bh_explaining *x);
 void bh_explain_target(bh_explaining *x);
 void bh_explain_cross_section(bh_explaining *x);
 void bh_explain_rates(bh_explaining *x);
+void bh_explain_pair(bh_explaining *x); /* in the place of rates, of a coincidence */
 void bh_explain_time(bh_explaining *x);
 void bh_explain_systematic(bh_explaining *x);
 

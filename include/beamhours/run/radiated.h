@@ -15,6 +15,7 @@ typedef struct {
     double cut;  /* [MeV] below the elastic line of the scatterer at each angle; infinite: none */
     double from; /* [MeV] from bite or threshold, with what is lost on the way out; 0: all */
     double to;   /* [MeV] likewise; infinite: all */
+    double blur; /* [MeV] rms with which energies at these ends are measured */
     bool given;  /* there is a cut or a bite */
 } bh_gate;
 
@@ -33,7 +34,8 @@ typedef struct {
 
 /* Everything at one angle. */
 typedef struct {
-    double cut;                  /* [MeV] that the elastic line lies above the lower edge */
+    double cut;                  /* [MeV] that the elastic line lies above the lower edge, as far as
+                                    it is measured there */
     bool by_bite;                /* the bite is tighter there than the energy cut */
     double above;                /* [MeV] that it lies above the upper edge */
     double soft;                 /* [MeV] largest loss that is soft: 3 % of the scattered energy; of
@@ -57,6 +59,7 @@ typedef struct {
     double largest;         /* [rad] beyond it there is no event */
     bh_angle_nodes at;      /* the angles of what follows */
     double reference;       /* [MeV] of the logarithms */
+    double blur;            /* [MeV] rms of the edges of the bite */
     double level[3][BH_ANGLE_NODES]; /* [1] degrees 0, 1, 2 */
     double tail[BH_ANGLE_NODES];     /* [MeV] of single collisions: 1 - tail / cut is kept */
     double cut[BH_ANGLE_NODES];      /* [MeV] below the line, from the gate's energies */
@@ -71,9 +74,11 @@ typedef struct {
  *   internal (radiative.h) x external (bremsstrahlung.h, mean over the vertices) x (1 - tail /
  * cut), at each angle for the cut there: the tighter of the energy cut and of how far the elastic
  * line is above the lower edge of the bite, so that no loss counts twice: kept_fraction says
- * whether the line itself is inside, the factor what of its tail is.  Idle for the model "none",
- * beams that are no leptons, and arms with neither cut nor bite.  1e-5 of the same without the
- * polynomials.
+ * whether the line itself is inside, the factor what of its tail is.  Under a resolution the cut to
+ * the edge of the bite is blur x ln(1 + exp(cut / blur)), what a line near the edge may lose on
+ * average where it is counted (its share left is good to 2 % within one blur of the edge).  Idle
+ * for the model "none", beams that are no leptons, and arms with neither cut nor bite.  1e-5 of the
+ * same without the polynomials.
  */
 void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out);
 
@@ -81,7 +86,8 @@ void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out);
  * Multiplies value [ub/sr], n of them, at polar angles theta [rad] by the factor, at one of the
  * beam's momenta (`boost`: BH_AS_IT_IS, or for a signal the other two).  Of background
  * nuclei (not signal) what is beyond the upper edge of the gate is taken off: F(down to the lower
- * edge) - F(down to the upper edge), soft losses only; harder ones are bh_elastic_tail's.
+ * edge) - F(down to the upper edge), each times the share of the line that is measured above that
+ * edge, soft losses only; harder ones are bh_elastic_tail's.
  */
 void bh_radiated_apply(const bh_radiated *radiated, int boost, size_t n, const double *theta,
                        double *value);

@@ -20,6 +20,7 @@ typedef struct {
     bh_causes *causes;              /* of all settings so far */
     bh_contribution *contributions; /* room for the presences of any target */
     bh_part *parts;                 /* room for those of any arm */
+    bh_part *pair_parts[2];         /* likewise, of the arms of a coincidence */
     double *signals[2];             /* [Hz] likewise */
     size_t most_parts, room;        /* of any arm; of the two below, causes */
     unsigned *cause;                /* while an arm's are collected */

@@ -28,19 +28,22 @@ typedef struct {
     bh_workspace *workspace;
     bool (*cancelled)(void *asker); /* polled for each nuclide of each arm; NULL: never */
     void *asker;
-    bool explaining;         /* contributions are wanted with cross sections, not rates alone */
-    bh_remarks *remarks;     /* warnings go here; NULL: they are not wanted */
-    bh_struck_list *lists;   /* of each target of the plan */
-    bh_seen_numbers *seen;   /* room for the nuclides of any target */
-    bh_seen_layer *layers;   /* room for the layers of any target */
-    double *paths[3];        /* [1] likewise: as it stands, and seen by an arm moved both ways */
-    bh_seen_span *spans;     /* likewise */
-    bh_occupied *occupied;   /* likewise */
-    bh_vertex *vertices;     /* room for those in any target */
-    size_t most_sheets;      /* of a way in this plan */
-    bh_sheet *sheets;        /* room for the ways of the arms of any setting */
-    bh_sheet *spare, *dummy; /* and for one that is tried, and one in a dummy cell */
-    const bh_range **ranges; /* room for one particle leaving */
+    bool explaining;          /* contributions are wanted with cross sections, not rates alone */
+    bh_remarks *remarks;      /* warnings go here; NULL: they are not wanted */
+    bh_struck_list *lists;    /* of each target of the plan */
+    bh_seen_numbers *seen;    /* room for the nuclides of any target */
+    bh_seen_layer *layers;    /* room for the layers of any target */
+    double *paths[3];         /* [1] likewise: as it stands, and seen by an arm moved both ways */
+    bh_seen_span *spans;      /* likewise */
+    bh_occupied *occupied;    /* likewise */
+    bh_vertex *vertices;      /* room for those in any target */
+    size_t most_sheets;       /* of a way in this plan */
+    bh_sheet *sheets;         /* room for the ways of the arms of any setting */
+    bh_sheet *spare, *dummy;  /* and for one that is tried, and one in a dummy cell */
+    const bh_range **ranges;  /* room for one particle leaving */
+    bh_seen_span *pair_spans; /* what the second arm of a coincidence sees of each layer */
+    double *pair_paths;       /* [1] likewise */
+    const bh_range **pair_ranges; /* room for the particle that leaves to it */
 } bh_yielder;
 
 /* One arm of one setting. */
@@ -61,6 +64,7 @@ typedef struct {
     const bh_radiative *radiative; /* the model */
     bh_channel line;               /* of the main nuclide, from whose elastic line a cut counts */
     bh_gate gate;                  /* energies that are taken */
+    double angle_rms;              /* [rad] of measured - true angle in the arm's plane */
     double lost;  /* [MeV] by the detected particle on its way out, mean on the axis */
     double least; /* [MeV] with which an electron just comes out and is detected */
     double beam;  /* [1/s] beam particles of the named kind */
@@ -76,8 +80,10 @@ typedef struct {
     double point_cross_section; /* [ub/sr] at `angle` */
     double kept;                /* [1] of the signal */
     double radiative;           /* [1] share of the kept left by radiation inside cut and bite */
+    double belonging;           /* [1] kept as the true angle has it, before bins exchange events */
     double signal;              /* [Hz] before dead time */
     double windows, other;      /* [Hz] likewise, background */
+    double accidental;          /* [Hz] likewise, in `other`; of a coincidence */
     double dummy;               /* [Hz] of the dummy cell; equal to windows where there is none */
     double per_radian;          /* [1] relative change of the rate for a turn of the arm */
     double per_momentum;        /* [1] relative change for a relative change of beam momentum */
@@ -121,6 +127,9 @@ bh_radiated_request bh_view_radiated(const bh_yielder *yielder, const bh_view *v
 
 /* Fills the parts of `yield`, whose view is made and whose `part` has room for view.parts. */
 BH_CHECKED bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err);
+
+/* From the sums in `part` to means and rates. */
+void bh_yield_finish(const bh_yield *yield, bh_part *part);
 
 /* Warns of what the numbers of `yield` rest on: models outside their range, plane waves on heavy
  * nuclei, formulas outside their validity.  While yielder->seen is of this yield. */
