@@ -1,5 +1,4 @@
 /* file.c - whole files: read at once, written at once. */
-#define _XOPEN_SOURCE 700 /* for realpath; NOLINT: the name is the standard's */
 #include "beamhours/base/file.h"
 
 #include <errno.h>
@@ -11,7 +10,9 @@
 #include <sys/stat.h>
 #include <unistd.h>
 
-enum { CHUNK = 16 * 1024, TRIES = 100 };
+#include "beamhours/base/beside.h"
+
+enum { CHUNK = 16 * 1024 };
 
 /* The sentence of an errno value, without strerror's shared buffer. */
 static void reason(int number, char *out, size_t size)
@@ -74,26 +75,12 @@ struct content {
     size_t length;
 };
 
-static bool write_all(int fd, struct content content)
-{
-    while (content.length > 0) {
-        const ssize_t done = write(fd, content.bytes, content.length);
-        if (done < 0 && errno == EINTR)
-            continue;
-        if (done < 0)
-            return false;
-        content.bytes += done;
-        content.length -= (size_t)done;
-    }
-    return true;
-}
-
 static bh_code write_directly(const char *path, struct content content, bh_error *err)
 {
     const int fd = open(path, O_WRONLY | O_CLOEXEC | O_NOCTTY);
     if (fd < 0)
         return fail(err, BH_ECREATE, path, "cannot be opened for writing");
-    const bool written = write_all(fd, content);
+    const bool written = bh_write_all(fd, content.bytes, content.length);
     const int why = errno;
     const bool closed = close(fd) == 0;
     if (!written)
@@ -101,78 +88,21 @@ static bh_code write_directly(const char *path, struct content content, bh_error
     return written && closed ? BH_OK : fail(err, BH_EIO, path, "cannot be written");
 }
 
-/* Bytes of the folder part of `path`, its last '/' included; 0 where it has none. */
-static size_t folder_length(const char *path)
-{
-    const char *slash = strrchr(path, '/');
-    return slash ? (size_t)(slash - path) + 1 : 0;
-}
-
-/* Creates a hidden file beside `path`; its name goes to `name`, room for strlen(path) + 48. */
-static int open_beside(const char *path, char *name)
-{
-    const size_t folder = folder_length(path), room = strlen(path) + 48;
-    int fd = -1;
-    for (int i = 0; i < TRIES && fd < 0; i++) {
-        (void)snprintf(name, room, "%.*s.%s.%ld-%d~", (int)folder, path, path + folder,
-                       (long)getpid(), i);
-        fd = open(name, O_WRONLY | O_CREAT | O_EXCL | O_CLOEXEC, 0666);
-        if (fd < 0 && errno != EEXIST)
-            break;
-    }
-    return fd;
-}
-
-/* Makes the renaming itself durable; a file system that cannot is no reason to complain. */
-static void sync_folder(const char *path, char *name)
-{
-    const size_t folder = folder_length(path);
-    (void)snprintf(name, folder + 2, "%.*s", (int)folder, path);
-    const int fd = open(folder ? name : ".", O_RDONLY | O_CLOEXEC);
-    if (fd >= 0) {
-        (void)fsync(fd);
-        (void)close(fd);
-    }
-}
-
-/* The owner may stay another's only where the system lets us; the mode is ours to set. */
-static bool take_over(int fd, const struct stat *old)
-{
-    if (fchown(fd, old->st_uid, old->st_gid) != 0 && fchown(fd, (uid_t)-1, old->st_gid) != 0)
-        errno = 0;
-    return fchmod(fd, old->st_mode & 07777) == 0;
-}
-
 /* `old` is the file that is there, or NULL. */
 static bh_code replace(const char *path, const struct stat *old, struct content content,
                        bh_error *err)
 {
-    char *name = malloc(strlen(path) + 48);
-    if (!name)
+    const bh_replacing what = {.bytes = content.bytes, .length = content.length, .old = old};
+    switch (bh_replace(path, &what, NULL)) {
+    case BH_REPLACED:
+        return BH_OK;
+    case BH_REPLACE_NO_MEMORY:
         return fail_because(err, BH_ENOMEM, path, bh_code_text(BH_ENOMEM));
-    const int fd = open_beside(path, name);
-    if (fd < 0) {
-        const bh_code code = fail(err, BH_ECREATE, path, "cannot be created");
-        free(name);
-        return code;
+    case BH_REPLACE_NO_FILE:
+        return fail(err, BH_ECREATE, path, "cannot be created");
+    default:
+        return fail(err, BH_EIO, path, "cannot be written");
     }
-    bool good = write_all(fd, content) && (!old || take_over(fd, old)) && fsync(fd) == 0;
-    int why = errno;
-    if (close(fd) != 0 && good) {
-        good = false;
-        why = errno;
-    }
-    if (good && rename(name, path) != 0) {
-        good = false;
-        why = errno;
-    }
-    if (good)
-        sync_folder(path, name);
-    else
-        (void)unlink(name);
-    free(name);
-    errno = why;
-    return good ? BH_OK : fail(err, BH_EIO, path, "cannot be written");
 }
 
 static bh_code replace_existing(const char *path, const struct stat *old, struct content content,
@@ -188,9 +118,9 @@ static bh_code replace_existing(const char *path, const struct stat *old, struct
                             "give another file");
     if (access(path, W_OK) != 0) /* renaming would not ask */
         return fail(err, BH_ECREATE, path, "may not be replaced");
-    char *real = realpath(path, NULL);
+    char *real = bh_real_path(path);
     if (!real)
-        return fail(err, BH_ECREATE, path, "cannot be found");
+        return fail_because(err, BH_ENOMEM, path, bh_code_text(BH_ENOMEM));
     const bh_code code = replace(real, old, content, err);
     free(real);
     return code;

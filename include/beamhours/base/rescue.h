@@ -64,12 +64,11 @@ typedef struct {
 } bh_rescue_found;
 
 /*
- * Looks for a recovery file and compares it with `length` `bytes` of the file as it is now.  The
- * work goes to `into` (may be NULL), appended; of a damaged file all that is there, without the
- * last line where it is ours.
- * Returns BH_OK also where there is none; BH_EIO, BH_ENOMEM, with the reason in err.
+ * Looks for a recovery file and compares it with `now`, what the file holds.  The work goes to
+ * `into` (may be NULL), appended; of a damaged file all that is there, without the last line where
+ * it is ours. Returns BH_OK also where there is none; BH_EIO, BH_ENOMEM, with the reason in err.
  */
-BH_CHECKED bh_code bh_rescue_find(const bh_rescue *rescue, bh_text now, bh_text *into,
+BH_CHECKED bh_code bh_rescue_find(const bh_rescue *rescue, const bh_text *now, bh_text *into,
                                   bh_rescue_found *found, bh_error *err);
 
 #endif

@@ -12,6 +12,7 @@
 /* What a file was when it was last read or saved.  {0} is a file that was not there. */
 typedef struct {
     bool there;
+    bool settled; /* it was old enough then that a further change would show in its times */
     uint64_t device, inode, size, hash; /* hash: of the content */
     int64_t changed_s, changed_ns;      /* time of the last change of content */
 } bh_stamp;

@@ -1,0 +1,195 @@
+/* presence.c - who else has the same file open for change. */
+#include "beamhours/base/presence.h"
+
+#include <errno.h>
+#include <fcntl.h>
+#include <signal.h>
+#include <stdio.h>
+#include <stdlib.h>
+#include <string.h>
+#include <sys/stat.h>
+#include <unistd.h>
+
+#include "beamhours/base/beside.h"
+
+enum { TRIES = 10, LINE = 160 };
+
+struct bh_presence {
+    char *path;
+    int file; /* -1: no mark */
+};
+
+enum held { HELD_BY_US, HELD_BY_OTHER, HELD_UNKNOWN };
+
+/* --- the line in a mark --- */
+
+static void this_host(char *out, size_t size)
+{
+    if (gethostname(out, size) != 0)
+        (void)snprintf(out, size, "unknown");
+    out[size - 1] = '\0';
+}
+
+static bool write_mark(int file)
+{
+    char host[64], line[LINE];
+    this_host(host, sizeof host);
+    (void)snprintf(line, sizeof line, "%ld %lld %s\n", (long)getpid(), (long long)time(NULL), host);
+    return ftruncate(file, 0) == 0 && lseek(file, 0, SEEK_SET) == 0 &&
+           bh_write_all(file, line, strlen(line));
+}
+
+static bh_other read_mark(int file)
+{
+    bh_other other = {0};
+    char line[LINE], host[64];
+    long long since = 0;
+    const ssize_t got = pread(file, line, sizeof line - 1, 0);
+    line[got > 0 ? got : 0] = '\0';
+    if (sscanf(line, "%ld %lld %63s", &other.process, &since, other.host) !=
+        3) /* NOLINT(cert-err34-c) */
+        return (bh_other){0};
+    this_host(host, sizeof host);
+    other.since = (time_t)since;
+    other.here = strcmp(host, other.host) == 0;
+    return other;
+}
+
+/* --- the lock on it --- */
+
+static bool same_file(int file, const char *path)
+{
+    struct stat ours, there;
+    return fstat(file, &ours) == 0 && lstat(path, &there) == 0 && ours.st_dev == there.st_dev &&
+           ours.st_ino == there.st_ino;
+}
+
+/* Where locks cannot be had, the process of this host tells whether its mark is stale. */
+static enum held held_without_lock(const bh_other *other)
+{
+    if (other->process <= 0)
+        return HELD_UNKNOWN;
+    const bool ended = other->here && kill((pid_t)other->process, 0) != 0 && errno == ESRCH;
+    return ended ? HELD_BY_US : HELD_BY_OTHER;
+}
+
+/* Tries to lock the mark that is open as `file`. */
+static enum held lock_mark(int file, bool made, bh_other *other)
+{
+    struct flock lock = {.l_type = F_WRLCK, .l_whence = SEEK_SET};
+    *other = made ? (bh_other){0} : read_mark(file);
+    if (fcntl(file, F_SETLK, &lock) == 0) /* so nobody of this host has it */
+        return other->process > 0 && !other->here ? HELD_BY_OTHER : HELD_BY_US;
+    if (errno == EACCES || errno == EAGAIN)
+        return HELD_BY_OTHER;
+    return made ? HELD_BY_US : held_without_lock(other);
+}
+
+/* Opens the mark, made where there is none. */
+static int open_mark(const char *path, bool *made)
+{
+    int file = open(path, O_RDWR | O_CREAT | O_EXCL | O_CLOEXEC, 0666);
+    *made = file >= 0;
+    if (file < 0 && errno == EEXIST)
+        file = open(path, O_RDWR | O_NOFOLLOW | O_CLOEXEC);
+    return file;
+}
+
+static bh_presence_state unknown(bh_error *err, const char *path, int number)
+{
+    char why[128];
+    if (strerror_r(number, why, sizeof why) != 0)
+        (void)snprintf(why, sizeof why, "error %d", number);
+    (void)bh_fail(err, BH_EIO, "cannot be marked as open here: %s", why);
+    (void)bh_fail_at(err, BH_EIO, (bh_mark){.file = path});
+    return BH_PRESENCE_UNKNOWN;
+}
+
+/* Another's mark that may only be read still tells who. */
+static bh_presence_state look_only(const char *path, bh_other *other, bh_error *err)
+{
+    const int why = errno;
+    const int file = open(path, O_RDONLY | O_NOFOLLOW | O_CLOEXEC);
+    if (file < 0)
+        return unknown(err, path, why);
+    *other = read_mark(file);
+    (void)close(file);
+    return held_without_lock(other) == HELD_BY_OTHER ? BH_PRESENCE_OTHER : unknown(err, path, why);
+}
+
+/* One try; false where the mark changed under our hands. */
+static bool try_mark(bh_presence *mark, bool insist, bh_presence_state *state, bh_other *other,
+                     bh_error *err)
+{
+    bool made = false;
+    const int file = open_mark(mark->path, &made);
+    if (file < 0) {
+        *state =
+            errno == EACCES ? look_only(mark->path, other, err) : unknown(err, mark->path, errno);
+        return errno != ENOENT; /* ENOENT: just taken away, or no such folder */
+    }
+    const enum held held = lock_mark(file, made, other);
+    const bool same = same_file(file, mark->path);
+    const bool ours = same && held == HELD_BY_US && write_mark(file);
+    const int why = errno;
+    if (ours) {
+        mark->file = file;
+        *state = BH_PRESENCE_ALONE;
+        return true;
+    }
+    (void)close(file);
+    if (!same)
+        return false;
+    if (held == HELD_BY_OTHER && insist)
+        return unlink(mark->path) != 0; /* and again, with a mark of our own */
+    *state = held == HELD_BY_OTHER ? BH_PRESENCE_OTHER : unknown(err, mark->path, why);
+    if (made)
+        (void)unlink(mark->path);
+    return true;
+}
+
+bh_presence_state bh_presence_open(const char *path, bool insist, bh_presence **mark,
+                                   bh_other *other, bh_error *err)
+{
+    char *real = bh_real_path(path);
+    bh_presence *m = calloc(1, sizeof *m);
+    bh_presence_state state = BH_PRESENCE_UNKNOWN;
+    *mark = NULL;
+    *other = (bh_other){0};
+    if (m)
+        *m = (bh_presence){real ? bh_beside_name(real, ".open") : NULL, -1};
+    free(real);
+    if (!m || !m->path) {
+        free(m);
+        (void)bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+        return state;
+    }
+    for (int i = 0; i < TRIES && !try_mark(m, insist, &state, other, err); i++)
+        ;
+    if (state == BH_PRESENCE_ALONE)
+        *other = (bh_other){0};
+    *mark = m;
+    return state;
+}
+
+bool bh_presence_ours(const bh_presence *mark)
+{
+    return mark->file >= 0 && same_file(mark->file, mark->path);
+}
+
+const char *bh_presence_path(const bh_presence *mark)
+{
+    return mark->path;
+}
+
+void bh_presence_close(bh_presence *mark)
+{
+    if (!mark)
+        return;
+    if (bh_presence_ours(mark))
+        (void)unlink(mark->path);
+    if (mark->file >= 0)
+        (void)close(mark->file);
+    free(mark->path);
+    free(mark);
+}
