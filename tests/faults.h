@@ -14,6 +14,7 @@
 static long fault_at;    /* which call is to fail, counted from 1; 0: none */
 static long fault_calls; /* calls so far */
 static bool fault_hit;   /* has one failed? */
+static int fault_number; /* what errno then is; 0: EIO or ENOMEM */
 static bool fault_disk;  /* do calls to the disk count, instead of those for memory? */
 
 static inline void fail_at(long call, bool disk)
@@ -30,6 +31,8 @@ static inline bool fails(bool disk)
         return false;
     fault_hit = true;
     errno = disk ? EIO : ENOMEM;
+    if (fault_number)
+        errno = fault_number;
     return true;
 }
 

@@ -24,6 +24,7 @@ enum { LAST_LINE = 160, LIMIT = 64 * 1024 * 1024, NAMES = 2 };
 struct ready {
     char *bytes;
     size_t length; /* [bytes] with its last line */
+    size_t number; /* counted from 1 */
     struct ready *before;
 };
 
@@ -31,7 +32,8 @@ struct bh_rescue {
     char *path, *folder;
     char *fresh[NAMES]; /* where it is written; the second where a signal comes in between */
     _Atomic(struct ready *) now;
-    struct ready *written;
+    size_t count;   /* how many were made ready */
+    size_t written; /* the number of the one in the file; 0: none of ours */
     volatile sig_atomic_t busy;
 };
 
@@ -99,6 +101,7 @@ static void exchange(bh_rescue *rescue, struct ready *next)
 {
     struct ready *last = atomic_load(&rescue->now);
     next->before = last;
+    next->number = ++rescue->count;
     atomic_store(&rescue->now, next);
     if (last) {
         free_ready(last->before);
@@ -134,7 +137,6 @@ void bh_rescue_clear(bh_rescue *rescue)
 {
     struct ready *last = atomic_load(&rescue->now);
     atomic_store(&rescue->now, NULL);
-    rescue->written = NULL;
     free_ready(last);
 }
 
@@ -167,14 +169,14 @@ static void sync_folder(const char *folder)
 bool bh_rescue_write(bh_rescue *rescue)
 {
     struct ready *ready = atomic_load(&rescue->now);
-    if (!ready || ready == rescue->written)
+    if (!ready || ready->number == rescue->written)
         return true;
     const char *name = rescue->fresh[rescue->busy ? 1 : 0];
     rescue->busy++;
     const bool good = write_fresh(name, ready) && rename(name, rescue->path) == 0;
     const int why = errno;
     if (good) {
-        rescue->written = ready;
+        rescue->written = ready->number;
         sync_folder(rescue->folder);
     } else {
         (void)unlink(name);
@@ -187,7 +189,7 @@ bool bh_rescue_write(bh_rescue *rescue)
 bool bh_rescue_pending(const bh_rescue *rescue)
 {
     const struct ready *now = atomic_load(&((bh_rescue *)(uintptr_t)rescue)->now);
-    return now && now != rescue->written;
+    return now && now->number != rescue->written;
 }
 
 bh_code bh_rescue_discard(bh_rescue *rescue, bh_error *err)
@@ -225,27 +227,42 @@ static bool take_last_line(bh_text *content, uint64_t *base)
     return length == content->length && hash == bh_stamp_hash(content->bytes, content->length);
 }
 
-/* How many lines of `work` there are between what both begin and end with. */
+/* Do the last `tail` bytes begin a line? */
+static bool begins_line(const bh_text *text, size_t tail)
+{
+    return tail == text->length || text->bytes[text->length - tail - 1] == '\n';
+}
+
+/* How many lines of `work` there are between the lines that both begin and end with. */
 static int lines_apart(const bh_text *work, const bh_text *now)
 {
     const size_t most = work->length < now->length ? work->length : now->length;
     size_t head = 0, tail = 0;
     while (head < most && work->bytes[head] == now->bytes[head])
         head++;
-    while (tail < most - head &&
-           work->bytes[work->length - 1 - tail] == now->bytes[now->length - 1 - tail])
-        tail++;
-    int n = work->length == now->length && head == most ? 0 : 1;
-    for (size_t i = head; i + tail < work->length; i++)
-        n += work->bytes[i] == '\n' && i + tail + 1 < work->length;
+    if (head < work->length || head < now->length)
+        while (head > 0 && work->bytes[head - 1] != '\n')
+            head--;
+    for (size_t i = 1;
+         i <= most - head && work->bytes[work->length - i] == now->bytes[now->length - i]; i++)
+        if (begins_line(work, i) && begins_line(now, i))
+            tail = i;
+    int n = 0;
+    for (size_t i = head; i < work->length - tail; i++)
+        n += work->bytes[i] == '\n' || i + 1 == work->length - tail;
     return n;
+}
+
+static bool equal(const bh_text *a, const bh_text *b)
+{
+    return a->length == b->length && (a->length == 0 || memcmp(a->bytes, b->bytes, a->length) == 0);
 }
 
 static void compare(bh_rescue_found *found, const bh_text *work, const bh_text *now, uint64_t base)
 {
     found->length = work->length;
     found->lines = lines_apart(work, now);
-    found->differs = found->lines > 0;
+    found->differs = !equal(work, now);
     found->same_base = found->whole && base == bh_stamp_hash(now->bytes, now->length);
     const double age = difftime(time(NULL), found->written);
     found->age = age > 0 ? age : 0;
