@@ -12,7 +12,8 @@ FAST  := -fopenmp-simd -fno-math-errno  # never -ffast-math: NaN and infinity ar
 ALL_C  = $(STD) -fPIC -fvisibility=hidden $(WARN) $(WERROR) $(HARDEN) $(CPPFLAGS) $(FAST) $(CFLAGS)
 LINK   = $(quiet) $(CC) $(CFLAGS) -Wl,-z,relro,-z,now,--as-needed $(LDFLAGS) -o $@
 LIBS  := $(shell pkg-config --libs $(PKGS) 2>/dev/null) -lm
-TEST_LIBS  := $(shell pkg-config --libs check 2>/dev/null)
+SCREEN_LIBS := $(shell pkg-config --libs ncursesw 2>/dev/null) -pthread
+TEST_LIBS  := $(shell pkg-config --libs check vterm 2>/dev/null)
 
 MAIN     := src/command/main.c
 FRONT    := $(sort $(filter-out $(MAIN),$(shell find src -path 'src/command/*.c' -o -path 'src/screen/*.c')))
@@ -35,12 +36,14 @@ MAKEFLAGS += --no-print-directory
 COMPLETE := $(addprefix $(BUILD)/completions/,bash zsh fish)
 all: $(addprefix $(BUILD)/,beamhours libbeamhours.a libbeamhours.so.0) $(COMPLETE) ## build the program and the library
 everything: all $(call bin,$(TESTS) $(BENCH))            ## and the tests, without running them
-$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(LIBS)
+$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(SCREEN_LIBS) $(LIBS)
 $(BUILD)/libbeamhours.a $(BUILD)/libbeamhours.so.0: $(call obj,$(ENGINE)) $(FOLDERS)
 $(BUILD)/front.a: $(call obj,$(FRONT)) $(FOLDERS)
 $(BUILD)/%.a: ; $(quiet) rm -f $@ && ar rcs $@ $(filter %.o,$^)
 $(BUILD)/%.so.0: ; $(LINK) -shared -Wl,-soname,$(@F) $(if $(HARDEN),-Xlinker --no-undefined) $(filter %.o,$^) $(LIBS)
-$(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(TEST_LIBS) $(LIBS)
+TTY := $(filter $(BUILD)/tests/terminal/%,$(call bin,$(TESTS) $(BENCH)))
+$(TTY): $(BUILD)/tests/terminal/tty.o
+$(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $(filter %.o,$^) $(filter %.a,$^) $(TEST_LIBS) $(SCREEN_LIBS) $(LIBS)
 $(call bin,$(filter %_faults.c,$(TESTS))): LDFLAGS += $(patsubst %,-Xlinker --wrap=%,malloc calloc realloc write fsync fchmod close rename)
 $(call bin,$(FUZZ)): %: %.o $(BUILD)/libbeamhours.a ; $(LINK) -fsanitize=fuzzer $^ $(LIBS)
 $(BUILD)/%.o: %.c $(BUILD)/flags ; $(quiet) mkdir -p $(@D) && $(CC) $(ALL_C) -MMD -MP -c -o $@ $<

@@ -16,8 +16,12 @@ need pkg-config command -v pkg-config
 library libgsl-dev gsl
 library libyaml-dev yaml-0.1
 library libjson-c-dev json-c
+library libncurses-dev ncursesw
 case $want in
-check | lint) library check check ;;
+check | lint)
+    library check check
+    library libvterm-dev vterm
+    ;;
 esac
 if [ "$want" = lint ]; then
     for tool in clang clang-format clang-tidy cppcheck valgrind gcovr mandoc units zsh fish; do need $tool command -v $tool; done

@@ -9,11 +9,12 @@
 #include "beamhours/base/number.h"
 #include "beamhours/base/sentences.h"
 
-enum { TEXT = 240, FIRST_ROOM = 16 };
+enum { TEXT = 240, FIRST_ROOM = 4 };
 
 struct kept {
     bh_remark remark;                                                 /* its texts point below */
     char key[TEXT], who[TEXT], what[TEXT], setting[TEXT], last[TEXT]; /* own copies */
+    char plain[TEXT];                                                 /* the key as it was noted */
     int settings;
 };
 
@@ -153,10 +154,45 @@ void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark)
     struct kept *k = &remarks->list[remarks->count++];
     *k = (struct kept){.remark = *remark, .settings = 1};
     set_key(k->key, remark);
+    copy(k->plain, remark->key);
     copy(k->who, remark->who);
     copy(k->what, remark->what);
     copy(k->setting, remark->setting);
     copy(k->last, remark->setting);
+}
+
+/* One of another list: its names one by one, its settings all. */
+static void add_kept(bh_remarks *remarks, const struct kept *from, const char *file)
+{
+    bh_remark r = from->remark;
+    char who[TEXT];
+    copy(who, from->who);
+    if (r.at.file)
+        r.at.file = file;
+    r.what = from->what;
+    r.setting = from->setting;
+    r.key = from->plain;
+    for (char *name = who; name;) {
+        char *comma = joins(r.kind) ? strstr(name, ", ") : NULL;
+        if (comma)
+            *comma = '\0';
+        r.who = name;
+        bh_remarks_note(remarks, &r);
+        name = comma ? comma + 2 : NULL;
+    }
+    for (size_t i = remarks->count; i-- > 0;)
+        if (same(&remarks->list[i], &r)) {
+            remarks->list[i].settings += from->settings - 1;
+            copy(remarks->list[i].last, from->last);
+            return;
+        }
+}
+
+void bh_remarks_add(bh_remarks *remarks, const bh_remarks *from, const char *file)
+{
+    for (size_t i = 0; i < from->count; i++)
+        add_kept(remarks, &from->list[i], file);
+    remarks->failed = remarks->failed || from->failed;
 }
 
 struct words {

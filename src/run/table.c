@@ -5,11 +5,8 @@
 #include <string.h>
 
 #include "beamhours/base/arena.h"
-#include "beamhours/base/number.h"
-#include "beamhours/base/sentences.h"
-#include "beamhours/run/cautions.h"
+#include "beamhours/run/conclude.h"
 #include "beamhours/run/evaluate.h"
-#include "beamhours/run/remarks.h"
 #include "beamhours/run/totals.h"
 #include "beamhours/run/workspace.h"
 
@@ -21,10 +18,7 @@ struct bh_table {
     size_t count[2]; /* rows of arms, rows of bins */
     bh_row *rows[2];
     const bh_causes *causes;
-    bh_totals totals;
-    size_t caution_count;
-    const bh_caution *cautions;
-    bh_diags *warnings;
+    bh_conclusion end;
     const char *notes[NOTES];
 };
 
@@ -91,21 +85,7 @@ static bh_code evaluate(bh_table *table, bh_evaluator *evaluator, bh_error *err)
         out.whole += plan->settings[s].arm_count;
         out.bins += out.bins ? bins_of(&plan->settings[s]) : 0;
     }
-    return bh_totals_from_plan(plan, hours, table->arena, &table->totals, err);
-}
-
-/* The plan asks for more than the facility grants. */
-static void find_shortage(const bh_table *table, bh_diags *diags)
-{
-    const bh_totals *t = &table->totals;
-    if (!(t->spare_hours < 0))
-        return;
-    char asked[BH_NUMBER_SIZE], granted[BH_NUMBER_SIZE];
-    const bh_schedule *schedule = &table->plan->schedule;
-    bh_number_digits(t->available_hours - t->spare_hours, 3, asked, sizeof asked);
-    bh_number_print(t->available_hours, granted, sizeof granted);
-    bh_diags_add(diags, BH_SEVERITY_WARNING, schedule->available.at, "schedule.available",
-                 BH_WARN_SHORTAGE, asked, schedule->available_is_beam ? "with beam " : "", granted);
+    return bh_totals_from_plan(plan, hours, table->arena, &table->end.totals, err);
 }
 
 static void take_notes(bh_table *table)
@@ -127,14 +107,6 @@ static void take_notes(bh_table *table)
         }
 }
 
-static void copy_diags(bh_diags *to, const bh_diags *from)
-{
-    for (size_t i = 0; from && i < bh_diags_count(from); i++) {
-        const bh_diag *d = bh_diags_at(from, i);
-        bh_diags_add(to, d->severity, d->at, d->key, "%s", d->text);
-    }
-}
-
 static bh_code out_of_memory(bh_error *err)
 {
     return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
@@ -144,13 +116,9 @@ static bh_code out_of_memory(bh_error *err)
 static bh_code conclude(bh_table *table, const bh_remarks *remarks, const bh_diags *said,
                         bh_error *err)
 {
-    copy_diags(table->warnings, said);
-    const bool complete = bh_remarks_say(remarks, table->warnings);
-    find_shortage(table, table->warnings);
-    bh_diags_sort(table->warnings);
-    table->cautions = bh_cautions_from_plan(table->plan, table->arena, &table->caution_count);
     take_notes(table);
-    return complete && table->cautions ? BH_OK : out_of_memory(err);
+    return bh_conclude(table->plan, remarks, said, table->arena, &table->end) ? out_of_memory(err)
+                                                                              : BH_OK;
 }
 
 static bh_code fill(bh_table *table, const bh_evaluation *how, const bh_diags *said, bh_error *err)
@@ -184,10 +152,10 @@ bh_table *bh_table_new(const bh_plan *plan, const bh_evaluation *how, const bh_d
     if (table) {
         table->plan = plan;
         table->arena = bh_arena_new();
-        table->warnings = bh_diags_new();
+        table->end.warnings = bh_diags_new();
     }
-    const bh_code code = table && table->arena && table->warnings ? fill(table, how, said, &why)
-                                                                  : out_of_memory(&why);
+    const bh_code code = table && table->arena && table->end.warnings ? fill(table, how, said, &why)
+                                                                      : out_of_memory(&why);
     if (!code)
         return table;
     if (err)
@@ -200,7 +168,7 @@ void bh_table_free(bh_table *table)
 {
     if (!table)
         return;
-    bh_diags_free(table->warnings);
+    bh_diags_free(table->end.warnings);
     bh_arena_free(table->arena);
     free(table);
 }
@@ -268,20 +236,20 @@ const char *bh_table_note(const bh_table *table, size_t i)
 
 const bh_totals *bh_table_totals(const bh_table *table)
 {
-    return &table->totals;
+    return &table->end.totals;
 }
 
 size_t bh_table_cautions(const bh_table *table)
 {
-    return table->caution_count;
+    return table->end.caution_count;
 }
 
 const bh_caution *bh_table_caution(const bh_table *table, size_t i)
 {
-    return &table->cautions[i];
+    return &table->end.cautions[i];
 }
 
 const bh_diags *bh_table_warnings(const bh_table *table)
 {
-    return table->warnings;
+    return table->end.warnings;
 }

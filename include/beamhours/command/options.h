@@ -18,6 +18,8 @@
     X(BH_CMD_POINT, "point", "", "one point without a plan", bh_cmd_point)                         \
     X(BH_CMD_CURVE, "curve", "PLAN", "a column against angle, energy, q2 or epsilon",              \
       bh_cmd_curve)                                                                                \
+    X(BH_CMD_EDIT, "edit", "[PLAN]", "change a plan on the screen and see the run table follow",   \
+      bh_cmd_edit)                                                                                 \
     X(BH_CMD_MATERIALS, "materials", "[NAME]",                                                     \
       "the library of materials; what one does to a particle", bh_cmd_materials)                   \
     X(BH_CMD_MODELS, "models", "[NAME]", "processes and models: range and source", bh_cmd_models)  \
@@ -30,7 +32,7 @@ typedef enum {
         BH_COMMAND_COUNT
 } bh_command_id;
 
-#define BH_EVERY_COMMAND "new,plans,keys,check,table,explain,point,curve,materials,models,help"
+#define BH_EVERY_COMMAND "new,plans,keys,check,table,explain,point,curve,edit,materials,models,help"
 
 /* X(id, short letter or 0, long name, argument or "", commands that know it, values to complete,
  * meaning).  Commands and values are lists with commas; `file` completes files. */
@@ -81,6 +83,7 @@ typedef enum {
     X(BH_OPT_CURVE_FORMAT, 'f', "format", "FORMAT", "curve", "text,csv", "text (default) or csv")  \
     X(BH_OPT_OUTPUT, 'o', "output", "FILE", "table,curve", "file",                                 \
       "write to FILE, whole or not at all")                                                        \
+    X(BH_OPT_ASCII, 0, "ascii", "", "edit", "", "draw with plain letters only")                    \
     X(BH_OPT_HELP, 0, "help", "", BH_EVERY_COMMAND, "", "what the command does and its options")   \
     X(BH_OPT_VERSION, 0, "version", "", BH_EVERY_COMMAND, "", "the edition of the program")
 

@@ -53,6 +53,10 @@ void bh_remarks_free(bh_remarks *remarks);
  * on structure models and backgrounds for all nuclides together. */
 void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark);
 
+/* Notes all of `from`, in their order, as if they had been noted here; `file` is the name that
+ * marks in the plan bear from now on. */
+void bh_remarks_add(bh_remarks *remarks, const bh_remarks *from, const char *file);
+
 /* Adds them all to `diags` as warnings, in the words of base/sentences.h.  False when memory had
  * run out and some are missing. */
 bool bh_remarks_say(const bh_remarks *remarks, bh_diags *diags);

@@ -1,0 +1,25 @@
+/* setting_key.h - what the rows of one setting depend on, as a number. */
+#ifndef BH_RUN_SETTING_KEY_H
+#define BH_RUN_SETTING_KEY_H
+
+#include <stdbool.h>
+#include <stdint.h>
+
+#include "beamhours/base/arena.h"
+#include "beamhours/plan/plan.h"
+
+/* 128 bits: two settings of the same key depend on the same. */
+typedef struct {
+    uint64_t word[2];
+} bh_setting_key;
+
+/*
+ * Fills keys[s] for each setting s of `plan`: from the bytes of the plan, and their place in it, of
+ * the setting, its beam, target, arms, models and whatever else its rows and the warnings on them
+ * follow from.  Of a setting whose text cannot be told (a plan with changes of its own) both words
+ * are 0: it has no key.  Materials count by their names: a library is read once.
+ * False when there is no memory.
+ */
+bool bh_setting_keys(const bh_plan *plan, bh_arena *arena, bh_setting_key *keys);
+
+#endif

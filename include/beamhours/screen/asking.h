@@ -1,0 +1,62 @@
+/* asking.h - the two threads of a worker and what they share; for worker.c and answers.c only. */
+#ifndef BH_SCREEN_ASKING_H
+#define BH_SCREEN_ASKING_H
+
+#include <pthread.h>
+#include <stdatomic.h>
+
+#include "beamhours/run/stepwise.h"
+#include "beamhours/screen/worker.h"
+
+/* A job with copies of its own. */
+typedef struct {
+    size_t number;
+    char *bytes;
+    size_t length; /* [bytes] */
+    size_t *first, *opened;
+    size_t first_count, opened_count;
+} bh_own_job;
+
+typedef struct {
+    size_t number; /* 0: none waits */
+    bh_question question;
+    char *bytes, *setting, *arm;
+} bh_own_question;
+
+enum { BH_MOST_ANSWERS = 16 };
+
+struct bh_worker {
+    pthread_mutex_t lock;
+    pthread_cond_t more;
+    pthread_t threads[2];
+    int started;
+    int wake[2]; /* a pipe */
+    char *name;
+    bh_material_library *libraries[2];
+    atomic_bool stop;
+    atomic_size_t newest; /* number of the newest job */
+    atomic_size_t evaluated;
+    size_t numbers;
+    bool working[2];
+    bh_own_job waiting; /* number 0: none */
+    bh_outcome *out;
+    bh_own_question questions[BH_ASK_KINDS];
+    bh_answer *answers[BH_MOST_ANSWERS];
+    size_t answer_count;
+    bh_results *results; /* of the first thread */
+    bh_workspace *workspace;
+    bh_reading_of *last[2];
+};
+
+/* The text read by thread `which`, again only where it is another one than last time: with one
+ * more user.  NULL without memory. */
+bh_reading_of *bh_worker_read(bh_worker *worker, int which, const char *bytes, size_t length);
+
+/* Makes whoever waits for the worker look. */
+void bh_worker_ring(bh_worker *worker);
+
+/* The second thread. */
+void *bh_worker_answers(void *worker);
+void bh_worker_drop_question(bh_own_question *question);
+
+#endif

@@ -1,0 +1,38 @@
+/* press.h - what the user does: keys, the mouse. */
+#ifndef BH_SCREEN_PRESS_H
+#define BH_SCREEN_PRESS_H
+
+#include <stdint.h>
+
+typedef enum {
+    BH_PRESS_POINT, /* a character: `point` */
+    BH_PRESS_UP,
+    BH_PRESS_DOWN,
+    BH_PRESS_LEFT,
+    BH_PRESS_RIGHT,
+    BH_PRESS_PAGE_UP,
+    BH_PRESS_PAGE_DOWN,
+    BH_PRESS_HOME,
+    BH_PRESS_END,
+    BH_PRESS_TAB,
+    BH_PRESS_BACK_TAB,
+    BH_PRESS_ENTER,
+    BH_PRESS_ESCAPE,
+    BH_PRESS_RUBOUT, /* takes the character before the cursor */
+    BH_PRESS_DELETE, /* and the one at it */
+    BH_PRESS_INTERRUPT,
+    BH_PRESS_SUSPEND,
+    BH_PRESS_CLICK, /* at row, column */
+    BH_PRESS_DOUBLE_CLICK,
+    BH_PRESS_WHEEL_UP,
+    BH_PRESS_WHEEL_DOWN,
+    BH_PRESS_NOTHING /* what means nothing here */
+} bh_press_kind;
+
+typedef struct {
+    bh_press_kind kind;
+    uint32_t point;
+    int row, column; /* from 0 */
+} bh_press;
+
+#endif

@@ -1,0 +1,129 @@
+/* answers.c - the second thread of a worker: explanations and curves. */
+#include <stdlib.h>
+#include <string.h>
+
+#include "beamhours/screen/asking.h"
+
+void bh_answer_free(bh_answer *answer)
+{
+    if (!answer)
+        return;
+    bh_explanation_free(answer->explanation);
+    bh_curve_free(answer->curve);
+    bh_table_free(answer->table);
+    bh_reading_of_leave(answer->of);
+    free(answer);
+}
+
+void bh_worker_drop_question(bh_own_question *question)
+{
+    free(question->bytes);
+    free(question->setting);
+    free(question->arm);
+    *question = (bh_own_question){0};
+}
+
+static bool stopped(void *asker)
+{
+    return atomic_load(&((bh_worker *)asker)->stop);
+}
+
+static void explain(bh_worker *w, const bh_own_question *q, bh_answer *a)
+{
+    const bh_evaluation how = {.bins = q->question.bin > 0, .cancelled = stopped, .asker = w};
+    a->table = bh_table_new(a->of->plan, &how, NULL, &a->why);
+    if (a->table)
+        a->explanation = bh_explain(a->table, q->setting, q->arm, q->question.bin, &a->why);
+}
+
+static void answer(bh_worker *w, const bh_own_question *q)
+{
+    bh_answer *a = calloc(1, sizeof *a);
+    if (!a)
+        return;
+    a->kind = q->question.kind;
+    a->number = q->number;
+    a->of = bh_worker_read(w, 1, q->bytes, q->question.length);
+    if (!a->of || !a->of->plan)
+        bh_fail(&a->why, BH_EPLAN, "the plan has errors: they come first");
+    else if (a->kind == BH_ASK_EXPLAIN)
+        explain(w, q, a);
+    else
+        a->curve = bh_curve_new(a->of->plan,
+                                &(bh_curve_request){.setting = q->setting, .arm = q->arm}, &a->why);
+    (void)pthread_mutex_lock(&w->lock);
+    if (w->answer_count < BH_MOST_ANSWERS) {
+        w->answers[w->answer_count++] = a;
+        a = NULL;
+    }
+    (void)pthread_mutex_unlock(&w->lock);
+    bh_answer_free(a);
+    bh_worker_ring(w);
+}
+
+static bool take(bh_worker *w, bh_own_question *out)
+{
+    for (int i = 0; i < BH_ASK_KINDS; i++)
+        if (w->questions[i].number) {
+            *out = w->questions[i];
+            w->questions[i] = (bh_own_question){0};
+            return true;
+        }
+    return false;
+}
+
+void *bh_worker_answers(void *of)
+{
+    bh_worker *w = of;
+    bh_own_question question;
+    (void)pthread_mutex_lock(&w->lock);
+    while (!atomic_load(&w->stop)) {
+        if (!take(w, &question)) {
+            w->working[1] = false;
+            (void)pthread_cond_wait(&w->more, &w->lock);
+            continue;
+        }
+        w->working[1] = true;
+        (void)pthread_mutex_unlock(&w->lock);
+        answer(w, &question);
+        bh_worker_drop_question(&question);
+        (void)pthread_mutex_lock(&w->lock);
+    }
+    (void)pthread_mutex_unlock(&w->lock);
+    return NULL;
+}
+
+size_t bh_worker_ask(bh_worker *worker, const bh_question *question)
+{
+    bh_own_question own = {.question = *question,
+                           .bytes = malloc(question->length + 1),
+                           .setting = question->setting ? strdup(question->setting) : NULL,
+                           .arm = question->arm ? strdup(question->arm) : NULL};
+    if (!own.bytes) {
+        bh_worker_drop_question(&own);
+        return 0;
+    }
+    memcpy(own.bytes, question->bytes, question->length);
+    (void)pthread_mutex_lock(&worker->lock);
+    bh_own_question *place = &worker->questions[question->kind];
+    bh_worker_drop_question(place);
+    const size_t number = own.number = ++worker->numbers;
+    *place = own;
+    worker->working[1] = true;
+    (void)pthread_cond_broadcast(&worker->more);
+    (void)pthread_mutex_unlock(&worker->lock);
+    return number;
+}
+
+bh_answer *bh_worker_answer(bh_worker *worker)
+{
+    (void)pthread_mutex_lock(&worker->lock);
+    bh_answer *a = worker->answer_count ? worker->answers[0] : NULL;
+    if (a) {
+        worker->answer_count--;
+        memmove(worker->answers, worker->answers + 1,
+                worker->answer_count * sizeof *worker->answers);
+    }
+    (void)pthread_mutex_unlock(&worker->lock);
+    return a;
+}

@@ -1,0 +1,295 @@
+/* draw.c - the whole screen: title, messages, cautions, the menu line. */
+#include <stdio.h>
+#include <string.h>
+
+#include "beamhours/base/number.h"
+#include "beamhours/schema/reading.h"
+#include "beamhours/screen/model.h"
+
+/* --- title --- */
+
+static void append_quantity(bh_text *into, const bh_value *value, bh_dimension dimension)
+{
+    char written[BH_QUANTITY_SIZE];
+    bh_text_append(into, bh_quantity_text(value->value, dimension, written));
+}
+
+/* electron 855 MeV, 20 uA on 5 cm liquid-hydrogen */
+static void append_summary(const bh_plan *plan, bh_text *into)
+{
+    const bh_beam *beam = &plan->beam;
+    bh_text_appendf(into, "%s ", beam->particle.name);
+    append_quantity(into, &beam->kinetic_energy, BH_DIM_ENERGY);
+    bh_text_append(into, ", ");
+    append_quantity(into, beam->rate_written ? &beam->particle_rate : &beam->current,
+                    beam->rate_written ? BH_DIM_RATE : BH_DIM_CURRENT);
+    for (size_t i = 0; plan->target_count && i < plan->targets[0].layer_count; i++) {
+        const bh_layer *layer = &plan->targets[0].layers[i];
+        if (layer->role != BH_ROLE_SAMPLE || layer->material->state == BH_STATE_VACUUM)
+            continue;
+        bh_text_append(into, " on ");
+        append_quantity(into, &layer->thickness, BH_DIM_LENGTH);
+        bh_text_appendf(into, " %s", layer->material->name);
+        break;
+    }
+}
+
+static const char *base_name(const char *path)
+{
+    const char *slash = strrchr(path, '/');
+    return slash && slash[1] ? slash + 1 : path;
+}
+
+static void draw_title(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    char right[40];
+    const size_t unsaved = bh_model_unsaved(model);
+    const bh_outcome *o = model->now && model->now->of->plan ? model->now : model->kept;
+    bh_spot spot = {places->title, 0, canvas->columns};
+    if (unsaved)
+        (void)snprintf(right, sizeof right, " %zu unsaved", unsaved);
+    else
+        (void)snprintf(right, sizeof right, " %s",
+                       !model->edit   ? "shown only"
+                       : model->fresh ? "new"
+                                      : "saved");
+    const int used = bh_text_columns(right, canvas->ascii);
+    spot.width -= used;
+    const int name = bh_canvas_put(canvas, spot, BH_LOOK_TITLE, base_name(model->file));
+    bh_text text = {0};
+    if (o && o->of->plan)
+        append_summary(o->of->plan, &text);
+    if (text.bytes)
+        (void)bh_canvas_put(canvas, (bh_spot){places->title, name + 3, spot.width - name - 3},
+                            model->trying ? BH_LOOK_TRIAL : BH_LOOK_PLAIN, text.bytes);
+    bh_text_free(&text);
+    (void)bh_canvas_put(canvas, (bh_spot){places->title, canvas->columns - used, used},
+                        unsaved ? BH_LOOK_WARNING : BH_LOOK_QUIET, right);
+}
+
+/* --- messages --- */
+
+static void say(bh_canvas *canvas, int row, bh_look look, const bh_diag *d)
+{
+    char at[24] = "";
+    if (d->at.line > 0)
+        (void)snprintf(at, sizeof at, " line %d", d->at.line);
+    const int used = (int)strlen(at);
+    bh_text text = {0};
+    bh_text_appendf(&text, "%s%s: %s", d->severity == BH_SEVERITY_ERROR ? "ERROR " : "", d->key,
+                    d->text);
+    if (text.bytes)
+        (void)bh_canvas_put(canvas, (bh_spot){row, 0, canvas->columns - used}, look, text.bytes);
+    bh_text_free(&text);
+    (void)bh_canvas_put_right(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_QUIET, at);
+}
+
+static void draw_said(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    const bh_diags *said = !model->edit ? model->said
+                           : model->now ? bh_outcome_diags(model->now)
+                                        : NULL;
+    int row = places->message;
+    const size_t count = said ? bh_diags_count(said) : 0;
+    for (int errors = 1; errors >= 0; errors--) /* errors first */
+        for (size_t i = 0; i < count && row < places->message + places->message_rows; i++) {
+            const bh_diag *d = bh_diags_at(said, i);
+            if ((d->severity == BH_SEVERITY_ERROR) == (errors == 1))
+                say(canvas, row++, errors ? BH_LOOK_ERROR : BH_LOOK_WARNING, d);
+        }
+    if (count > (size_t)places->message_rows) {
+        char more[40];
+        (void)snprintf(more, sizeof more, " [m: all %zu]", count);
+        (void)bh_canvas_put_right(canvas, (bh_spot){places->caution - 1, 0, canvas->columns},
+                                  BH_LOOK_KEY, more);
+    }
+}
+
+static void draw_prompt(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas,
+                        const char *what)
+{
+    const int row = places->message >= 0 ? places->message : places->menu;
+    bh_canvas_clear(canvas, (bh_spot){row, 0, canvas->columns});
+    const int used = bh_canvas_put(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_TITLE, what);
+    bh_draw_field(canvas, (bh_spot){row, used + 1, canvas->columns - used - 1}, &model->field);
+}
+
+/* Of what is typed: what is wrong with it, or what it was. */
+static void draw_typed(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    const bh_spot spot = {places->message, 0, canvas->columns};
+    bh_text text = {0};
+    if (model->why[0]) {
+        bh_text_appendf(&text, "NOT YET  %s", model->why);
+    } else {
+        bh_text_append(&text, model->field_path);
+        if (model->was[0])
+            bh_text_appendf(&text, " was %s", model->was);
+        bh_text_appendf(&text, "; Enter keeps it, Escape leaves it as it was");
+    }
+    if (text.bytes)
+        (void)bh_canvas_put(canvas, spot, model->why[0] ? BH_LOOK_ERROR : BH_LOOK_TRIAL,
+                            text.bytes);
+    bh_text_free(&text);
+}
+
+static void draw_messages(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    const bool typing = model->over == BH_OVER_FIELD ||
+                        (model->over == BH_OVER_CHOOSE && model->chooser.kind == BH_CHOOSE_VALUE);
+    if (model->over == BH_OVER_FIND)
+        draw_prompt(model, places, canvas, "look for");
+    if (model->over == BH_OVER_NAME)
+        draw_prompt(model, places, canvas, "save as");
+    if (places->message < 0)
+        return;
+    if (typing) {
+        draw_typed(model, places, canvas);
+    } else if (model->note[0] && model->over != BH_OVER_NAME) {
+        bh_spot spot = {places->message, 0, canvas->columns};
+        if (model->over == BH_OVER_FIND)
+            spot = (bh_spot){places->message, canvas->columns / 2, canvas->columns / 2};
+        (void)bh_canvas_put(canvas, spot, model->note_bad ? BH_LOOK_ERROR : BH_LOOK_PLAIN,
+                            model->note);
+    } else if (model->over != BH_OVER_FIND && model->over != BH_OVER_NAME) {
+        draw_said(model, places, canvas);
+    }
+}
+
+/* --- cautions --- */
+
+/* The gist: up to the first break of the sentence, behind a name that it begins with. */
+static size_t gist(const char *text)
+{
+    const char *colon = strchr(text, ':');
+    const char *from = text;
+    if (colon && memchr(text, ' ', (size_t)(colon - text)) == NULL)
+        from = colon + 1;
+    size_t n = strcspn(from, from == text ? ":,;" : ",;");
+    const char *stop = strstr(from, ". ");
+    if (stop && (size_t)(stop - from) < n)
+        n = (size_t)(stop - from);
+    return (size_t)(from - text) + n;
+}
+
+static void draw_caution(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    static const char defer[] = " \u00B7 the facility's rules decide", more[] = " [c: more]";
+    const bh_outcome *o = bh_model_concluded(model);
+    const int row = places->caution, end = bh_text_columns(more, canvas->ascii);
+    const int room = canvas->columns - end - bh_text_columns(defer, canvas->ascii);
+    if (row < 0)
+        return;
+    int at = bh_canvas_put(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_CAUTION, "CAUTION ");
+    for (size_t i = 0; o && i < o->end.caution_count; i++) {
+        bh_text text = {0};
+        const char *said = o->end.cautions[i].text;
+        size_t length = gist(said);
+        const char *power = strstr(said, "kW"); /* the figure is enough: the text is a key away */
+        if (i == 0 && power && (size_t)(power + 2 - said) < length)
+            length = (size_t)(power + 2 - said);
+        bh_text_appendf(&text, "%s%.*s", i ? " \u00B7 " : "", (int)length, said);
+        const int width = text.bytes ? bh_text_columns(text.bytes, canvas->ascii) : 0;
+        if (text.bytes && at + width <= room)
+            at += bh_canvas_put(canvas, (bh_spot){row, at, width}, BH_LOOK_CAUTION, text.bytes);
+        bh_text_free(&text);
+    }
+    (void)bh_canvas_put(canvas, (bh_spot){row, at, canvas->columns - at - end}, BH_LOOK_CAUTION,
+                        o ? defer : "the facility's rules decide");
+    (void)bh_canvas_put_right(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_KEY, more);
+}
+
+/* --- the menu line --- */
+
+static const char *hint(const bh_model *model)
+{
+    switch (model->over) {
+    case BH_OVER_FIELD:
+        return "Enter keep   Escape leave   Up Down step the digit";
+    case BH_OVER_SHEET:
+        return "arrows, Page Up, Page Down read on   any other key closes";
+    case BH_OVER_CHOOSE:
+        return model->chooser.kind == BH_CHOOSE_VALUE
+                   ? "type to narrow   Enter take   Escape leave   Tab type it"
+                   : "type to narrow   Enter take   Escape leave";
+    case BH_OVER_ASK:
+        return "Up Down, Enter, or the letter";
+    case BH_OVER_FIND:
+        return "type a word   Enter next   Escape done";
+    case BH_OVER_NAME:
+        return "type a file name   Enter save   Escape leave";
+    case BH_OVER_NOTHING:
+        break;
+    }
+    return NULL;
+}
+
+static void draw_menu(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    const char *only = hint(model);
+    static const char always[] = "? help";
+    const int end = canvas->columns - (int)sizeof always;
+    int at = 0;
+    if (only) {
+        (void)bh_canvas_put(canvas, (bh_spot){places->menu, 0, canvas->columns}, BH_LOOK_KEY, only);
+        return;
+    }
+    const bh_action *a;
+    for (size_t i = 0; (a = bh_action_at(i)); i++) {
+        if (!bh_action_means(model, a) || a->key[0] == '?')
+            continue;
+        const int key = (int)strlen(a->key), width = key + (int)strlen(a->word) + 3;
+        if (at + width - 2 > end)
+            break;
+        (void)bh_canvas_put(canvas, (bh_spot){places->menu, at, key}, BH_LOOK_KEY, a->key);
+        (void)bh_canvas_put(canvas, (bh_spot){places->menu, at + key + 1, width}, BH_LOOK_PLAIN,
+                            a->word);
+        at += width;
+    }
+    (void)bh_canvas_put_right(canvas, (bh_spot){places->menu, 0, canvas->columns}, BH_LOOK_KEY,
+                              always);
+}
+
+void bh_draw_field(bh_canvas *canvas, bh_spot spot, const bh_field *field)
+{
+    char before[BH_FIELD_SIZE];
+    const int room = spot.width - 1;
+    (void)snprintf(before, sizeof before, "%.*s", (int)field->cursor, field->bytes);
+    int cursor = bh_text_columns(before, canvas->ascii);
+    const char *text = field->bytes;
+    while (cursor > room && *text) { /* the end is what is typed */
+        text += bh_text_fit(text, 1) ? bh_text_fit(text, 1) : bh_text_fit(text, 2);
+        (void)snprintf(before, sizeof before, "%.*s",
+                       (int)(field->cursor - (size_t)(text - field->bytes)), text);
+        cursor = bh_text_columns(before, canvas->ascii);
+    }
+    bh_canvas_clear(canvas, spot);
+    bh_canvas_paint(canvas, spot, BH_LOOK_FIELD);
+    (void)bh_canvas_put(canvas, spot, BH_LOOK_FIELD, text);
+    canvas->cursor_row = spot.row;
+    canvas->cursor_column = spot.column + cursor;
+}
+
+void bh_draw(const bh_model *model, bh_canvas *canvas)
+{
+    canvas->ascii = model->ascii;
+    if (!bh_canvas_size(canvas, model->rows, model->columns))
+        return;
+    const bh_arrangement places = bh_arrange(model);
+    canvas->cursor_row = places.menu;
+    if (places.title >= 0)
+        draw_title(model, &places, canvas);
+    if (places.plan_columns)
+        bh_draw_plan(model, &places, canvas);
+    for (int r = 0; places.plan_columns && places.table_columns && r < places.body_rows; r++)
+        (void)bh_canvas_put(canvas, (bh_spot){places.body + r, places.plan_columns, 1},
+                            BH_LOOK_QUIET, "\u2502");
+    if (places.table_columns)
+        bh_draw_table(model, &places, canvas);
+    if (places.curve >= 0)
+        bh_draw_curve(model, &places, canvas);
+    draw_caution(model, &places, canvas);
+    draw_menu(model, &places, canvas);
+    bh_draw_over(model, &places, canvas);
+    draw_messages(model, &places, canvas);
+}

@@ -1,0 +1,186 @@
+/* draw_curve.c - cross section, rate or counts against angle, with what the arms accept. */
+#include <math.h>
+#include <stdio.h>
+#include <string.h>
+
+#include "beamhours/base/number.h"
+#include "beamhours/screen/model.h"
+#include "beamhours/units/constants.h"
+
+enum { MOST_WIDE = 240, MOST_HIGH = 64, LABEL = 9 };
+
+/* Where what is drawn belongs on the terminal, and the values at its edges. */
+struct plot {
+    bh_canvas *canvas;
+    int row, column, rows, columns;
+    double x[2], y[2];
+    bool logarithmic;
+    unsigned char dots[MOST_HIGH][MOST_WIDE]; /* 2 x 4 dots a cell, as braille numbers them */
+};
+
+static const bh_column_id column_of[] = {BH_COL_POINT_CROSS_SECTION, BH_COL_SIGNAL, BH_COL_COUNTS};
+
+static bool set_range(struct plot *p, const bh_curve *curve, bh_column_id column)
+{
+    p->y[0] = INFINITY;
+    p->y[1] = -INFINITY;
+    p->x[0] = INFINITY;
+    p->x[1] = -INFINITY;
+    for (size_t i = 0; i < bh_curve_count(curve); i++) {
+        const double y = bh_curve_y(curve, i, column);
+        if (!isfinite(y))
+            continue;
+        p->y[0] = fmin(p->y[0], y);
+        p->y[1] = fmax(p->y[1], y);
+        p->x[0] = fmin(p->x[0], bh_curve_x(curve, i));
+        p->x[1] = fmax(p->x[1], bh_curve_x(curve, i));
+    }
+    p->logarithmic = p->y[0] > 0 && p->y[1] > 3 * p->y[0];
+    return p->x[1] > p->x[0];
+}
+
+static double share(double value, const double edge[2], bool logarithmic)
+{
+    if (!(edge[1] > edge[0]))
+        return 0.5;
+    return logarithmic ? log(value / edge[0]) / log(edge[1] / edge[0])
+                       : (value - edge[0]) / (edge[1] - edge[0]);
+}
+
+static void dot(struct plot *p, int x, int y)
+{
+    static const unsigned char bits[4][2] = {{1, 8}, {2, 16}, {4, 32}, {64, 128}};
+    if (x >= 0 && y >= 0 && x < 2 * p->columns && y < 4 * p->rows)
+        p->dots[y / 4][x / 2] |= bits[y % 4][x % 2];
+}
+
+static void trace(struct plot *p, const bh_curve *curve, bh_column_id column)
+{
+    double before = NAN;
+    int last = 0;
+    for (size_t i = 0; i < bh_curve_count(curve); i++) {
+        const double value = bh_curve_y(curve, i, column);
+        if (!isfinite(value)) {
+            before = NAN;
+            continue;
+        }
+        const int x = (int)lrint(share(bh_curve_x(curve, i), p->x, false) * (2 * p->columns - 1));
+        const double y = (1 - share(value, p->y, p->logarithmic)) * (4 * p->rows - 1);
+        for (int k = isnan(before) ? x : last; k <= x; k++) {
+            const double part = x > last && !isnan(before) ? (double)(k - last) / (x - last) : 1;
+            dot(p, k, (int)lrint(isnan(before) ? y : before + part * (y - before)));
+        }
+        before = y;
+        last = x;
+    }
+}
+
+static void show_dots(const struct plot *p)
+{
+    for (int r = 0; r < p->rows; r++)
+        for (int c = 0; c < p->columns; c++) {
+            bh_cell *cell = bh_canvas_at(p->canvas, p->row + r, p->column + c);
+            const unsigned char dots = p->dots[r][c];
+            if (!cell || !dots)
+                continue;
+            const bool high = dots & (1 | 8 | 2 | 16), low = dots & (4 | 32 | 64 | 128);
+            cell->point = !p->canvas->ascii ? 0x2800U + dots
+                          : high && low     ? '|'
+                          : high            ? '\''
+                                            : '.';
+        }
+}
+
+static void label(const struct plot *p, int row, double value, const char *unit)
+{
+    char number[BH_NUMBER_SIZE];
+    if (!isfinite(value))
+        return;
+    (void)bh_number_digits(value, 3, number, sizeof number);
+    (void)bh_canvas_put_right(p->canvas, (bh_spot){row, p->column - LABEL, LABEL - 1},
+                              BH_LOOK_QUIET, number);
+    (void)unit;
+}
+
+/* The in-plane acceptance of each row, below the curve; that of the row in focus stands out. */
+static void show_acceptances(const bh_model *model, const struct plot *p)
+{
+    const bh_table_view *v = &model->table;
+    const int row = p->row + p->rows;
+    for (int pass = 0; pass < 2; pass++)
+        for (size_t i = 0; i < v->count; i++) {
+            const bh_table_row *r = &v->rows[i];
+            const bool here = i == v->at;
+            if (r->bin || here != (pass == 1))
+                continue;
+            const bh_setting_arm *arm = &bh_table_setting(model, r)->arms[r->now->arm];
+            const bool ring = arm->arm.shape == BH_SHAPE_RING;
+            const double middle = ring ? 0 : arm->angle.value;
+            const bh_extent *wide = ring ? &arm->arm.ring : &arm->arm.in_plane;
+            const double from = (middle + wide->from) * 180 / BH_PI,
+                         to = (middle + wide->to) * 180 / BH_PI;
+            const int last = (int)lrint(share(to, p->x, false) * (p->columns - 1));
+            for (int c = (int)lrint(share(from, p->x, false) * (p->columns - 1)); c <= last; c++)
+                if (c >= 0 && c < p->columns)
+                    (void)bh_canvas_put(p->canvas, (bh_spot){row, p->column + c, 1},
+                                        here ? BH_LOOK_TITLE : BH_LOOK_QUIET,
+                                        here ? "\u2594" : "-");
+        }
+}
+
+static void show_axes(const struct plot *p, const char *unit)
+{
+    char text[80];
+    label(p, p->row, p->y[1], unit);
+    label(p, p->row + p->rows - 1, p->y[0], unit);
+    for (int r = 0; r < p->rows; r++)
+        (void)bh_canvas_put(p->canvas, (bh_spot){p->row + r, p->column - 1, 1}, BH_LOOK_QUIET,
+                            "\u2502");
+    (void)snprintf(text, sizeof text, "%.4g deg", p->x[0]);
+    const int row = p->row + p->rows + 1;
+    (void)bh_canvas_put(p->canvas, (bh_spot){row, p->column, 20}, BH_LOOK_QUIET, text);
+    (void)snprintf(text, sizeof text, "%.4g deg", p->x[1]);
+    (void)bh_canvas_put_right(p->canvas, (bh_spot){row, p->column, p->columns}, BH_LOOK_QUIET,
+                              text);
+}
+
+static void draw_title(const bh_model *model, const bh_arrangement *places, const char *name,
+                       bh_canvas *canvas)
+{
+    const bh_spot spot = {places->curve, places->table_column, places->table_columns};
+    for (int c = 0; c < spot.width; c++)
+        (void)bh_canvas_put(canvas, (bh_spot){spot.row, spot.column + c, 1}, BH_LOOK_QUIET,
+                            "\u2500");
+    (void)bh_canvas_put(canvas, (bh_spot){spot.row, spot.column + 2, spot.width - 2}, BH_LOOK_TITLE,
+                        name);
+    (void)model;
+}
+
+void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    const bh_answer *a = model->curve;
+    const bh_column_id column = column_of[model->curve_shown % BH_SHOW_NO_CURVE];
+    struct plot p = {.canvas = canvas,
+                     .row = places->curve + 1,
+                     .column = places->table_column + LABEL,
+                     .rows = places->curve_rows - 3,
+                     .columns = places->table_columns - LABEL};
+    char name[120];
+    (void)snprintf(name, sizeof name, " %s [%s] of %.40s, against angle ",
+                   bh_column_at((int)column)->heading, bh_column_at((int)column)->unit,
+                   model->table.here[0] ? model->table.here : "the first setting");
+    draw_title(model, places, name, canvas);
+    p.rows = p.rows > MOST_HIGH ? MOST_HIGH : p.rows;
+    p.columns = p.columns > MOST_WIDE ? MOST_WIDE : p.columns;
+    if (p.rows < 2 || p.columns < 10)
+        return;
+    if (!a || !a->curve || !set_range(&p, a->curve, column)) {
+        const char *why = !a ? "being computed \u2026" : a->why.text[0] ? a->why.text : "no values";
+        (void)bh_canvas_put(canvas, (bh_spot){p.row, p.column, p.columns}, BH_LOOK_QUIET, why);
+        return;
+    }
+    trace(&p, a->curve, column);
+    show_dots(&p);
+    show_axes(&p, bh_column_at((int)column)->unit);
+    show_acceptances(model, &p);
+}

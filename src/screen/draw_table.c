@@ -1,0 +1,251 @@
+/* draw_table.c - the run table. */
+#include <math.h>
+#include <stdio.h>
+#include <string.h>
+
+#include "beamhours/base/number.h"
+#include "beamhours/screen/model.h"
+
+/* --- which columns stand where --- */
+
+static void place(bh_column_places *p, int index, int width, int *at)
+{
+    p->index[p->count] = index;
+    p->column[p->count] = *at;
+    p->width[p->count] = width;
+    p->count++;
+    *at += width + 1;
+}
+
+static int width_of_was(const bh_table_view *v)
+{
+    const int width = v->widths[BH_COLUMN_COUNT];
+    return width > 6 ? width : 6;
+}
+
+static bool compares(const bh_model *model)
+{
+    for (size_t i = 0; i < model->table.count; i++)
+        if (model->table.rows[i].before)
+            return true;
+    return false;
+}
+
+/* From the view's column `first` on; whether the one in focus, and what it was, came to stand. */
+static bool place_from(const bh_model *model, const bh_arrangement *places, int first,
+                       bh_column_places *p)
+{
+    const bh_table_view *v = &model->table;
+    const int end = places->table_column + places->table_columns;
+    const bool was = compares(model);
+    const int compared = bh_table_compared(model);
+    bool focus = false;
+    int at = places->table_column;
+    p->count = 0;
+    for (int i = 0; i < v->column_count; i++) {
+        const int width = v->columns[i].width;
+        const bool old = was && v->columns[i].column == compared;
+        if ((i > 0 && i < first) || p->count >= BH_MOST_SHOWN - 2)
+            continue;
+        if (at + width + (old ? 1 + width_of_was(v) : 0) > end)
+            break;
+        place(p, i, width, &at);
+        if (old)
+            place(p, -1, width_of_was(v), &at);
+        focus = focus || i == v->column;
+    }
+    return focus;
+}
+
+void bh_place_columns(const bh_model *model, const bh_arrangement *places, bh_column_places *out)
+{
+    int first = 1;
+    while (!place_from(model, places, first, out) && first < model->table.column_count)
+        first++;
+}
+
+int bh_table_column_at(const bh_model *model, int column)
+{
+    const bh_arrangement places = bh_arrange(model);
+    bh_column_places p;
+    bh_place_columns(model, &places, &p);
+    for (int i = 0; i < p.count; i++)
+        if (column >= p.column[i] && column <= p.column[i] + p.width[i])
+            return p.index[i];
+    return -1;
+}
+
+/* --- heads --- */
+
+static void days(double hours, char out[32])
+{
+    char number[BH_NUMBER_SIZE];
+    const bool long_time = fabs(hours) >= 48;
+    (void)bh_number_digits(long_time ? hours / 24 : hours, 3, number, sizeof number);
+    (void)snprintf(out, 32, "%.24s %s", number, long_time ? "d" : "h");
+}
+
+/* RUN TABLE   asked 2.1 d of 3.0 d   spare 0.9 d */
+static void draw_totals(const bh_model *model, bh_spot spot, bh_canvas *canvas)
+{
+    const bh_outcome *o = bh_model_concluded(model);
+    char text[160], asked[32], granted[32], spare[32];
+    if (!o)
+        return;
+    const bh_totals *t = &o->end.totals;
+    days(t->asked_hours, asked);
+    days(t->available_hours, granted);
+    days(t->spare_hours, spare);
+    if (isnan(t->available_hours))
+        (void)snprintf(text, sizeof text, "asked %s", asked);
+    else
+        (void)snprintf(text, sizeof text, "asked %s of %s  %s %s", asked, granted,
+                       t->spare_hours < 0 ? "OVER by" : "spare", spare + (t->spare_hours < 0));
+    if ((int)strlen(text) + 2 > spot.width)
+        (void)snprintf(text, sizeof text, "asked %s", asked);
+    const bool old = model->trying && o != model->now;
+    (void)bh_canvas_put_right(canvas, spot,
+                              old                  ? BH_LOOK_STALE
+                              : t->spare_hours < 0 ? BH_LOOK_WARNING
+                              : model->trying      ? BH_LOOK_TRIAL
+                                                   : BH_LOOK_PLAIN,
+                              text);
+}
+
+/* What is still to be computed, or what the table is. */
+static int draw_state(const bh_model *model, bh_spot spot, bh_canvas *canvas)
+{
+    char text[64] = "";
+    bh_look look = BH_LOOK_QUIET;
+    const bh_outcome *o = model->now;
+    if (model->edit && o && !o->of->plan && !model->trying)
+        (void)snprintf(text, sizeof text, " (of before: errors)");
+    else if (o && o->failed[0])
+        (void)snprintf(text, sizeof text, " (%.50s)", o->failed);
+    else if (!bh_model_current(model) && o && o->job == model->job && o->unknown)
+        (void)snprintf(text, sizeof text, " computing %zu of %zu", o->unknown, o->setting_count);
+    else if (!bh_model_current(model) && model->edit)
+        (void)snprintf(text, sizeof text, " computing");
+    if (model->trying && !text[0]) {
+        (void)snprintf(text, sizeof text, " PROVISIONAL");
+        look = BH_LOOK_TRIAL;
+    } else if (model->pin && !text[0]) {
+        (void)snprintf(text, sizeof text, " against the pin");
+        look = BH_LOOK_CHANGED;
+    }
+    return bh_canvas_put(canvas, spot, look, text);
+}
+
+static void draw_heads(const bh_model *model, const bh_arrangement *places,
+                       const bh_column_places *p, bh_canvas *canvas)
+{
+    const bh_table_view *v = &model->table;
+    const bh_spot head = {places->body, places->table_column, places->table_columns};
+    int used = bh_canvas_put(
+        canvas, head, model->pane == BH_PANE_TABLE ? BH_LOOK_TITLE : BH_LOOK_QUIET, "RUN TABLE");
+    used += draw_state(model, (bh_spot){head.row, head.column + used, head.width - used}, canvas);
+    draw_totals(model, (bh_spot){head.row, head.column + used, head.width - used}, canvas);
+    for (int i = 0; i < p->count; i++) {
+        const bh_table_column *c = p->index[i] < 0 ? NULL : &v->columns[p->index[i]];
+        const bh_spot spot = {places->body + 1, p->column[i], p->width[i]};
+        const bh_spot below = {places->body + 2, p->column[i], p->width[i]};
+        if (!c) {
+            (void)bh_canvas_put_right(canvas, spot, BH_LOOK_CHANGED, model->pin ? "pin" : "was");
+            continue;
+        }
+        const bool left = c->column == BH_COL_SETTING;
+        char heading[48];
+        (void)snprintf(heading, sizeof heading, "%s%.40s",
+                       v->order != c->column ? ""
+                       : v->falling          ? "\u2193"
+                                             : "\u2191",
+                       bh_column_at(c->column)->heading);
+        (void)(left ? bh_canvas_put : bh_canvas_put_right)(canvas, spot, BH_LOOK_TITLE, heading);
+        (void)bh_canvas_put_right(canvas, below, BH_LOOK_QUIET, c->unit);
+        if (p->index[i] == v->column && model->pane == BH_PANE_TABLE)
+            bh_canvas_paint(canvas, spot, BH_LOOK_CURSOR);
+    }
+}
+
+/* --- rows --- */
+
+static bh_look look_of(const bh_model *model, const bh_table_row *row, int column)
+{
+    if (row->stale)
+        return BH_LOOK_STALE;
+    if (bh_table_changed(row, column))
+        return model->trying ? BH_LOOK_TRIAL : BH_LOOK_CHANGED;
+    return BH_LOOK_PLAIN;
+}
+
+static const bh_table_column *compared_column(const bh_model *model)
+{
+    const bh_table_view *v = &model->table;
+    const int column = bh_table_compared(model);
+    for (int i = 0; i < v->column_count; i++)
+        if (v->columns[i].column == column)
+            return &v->columns[i];
+    return NULL;
+}
+
+/* The old value, where it changed by more than a little of what changed most. */
+static void draw_was(const bh_model *model, const bh_table_row *row, bh_spot spot,
+                     bh_canvas *canvas)
+{
+    char cell[BH_CELL_ROOM];
+    const bh_table_column *c = compared_column(model);
+    if (!c || !row->before || !(row->change > 0) || row->change < 0.2 * model->table.most_change)
+        return;
+    bh_table_cell(model, row, c, true, cell);
+    (void)bh_canvas_put_right(canvas, spot, BH_LOOK_QUIET, cell);
+}
+
+static void draw_row(const bh_model *model, size_t i, int at, const bh_column_places *p,
+                     bh_canvas *canvas)
+{
+    const bh_table_view *v = &model->table;
+    const bh_table_row *row = &v->rows[i];
+    char cell[BH_CELL_ROOM];
+    for (int k = 0; k < p->count; k++) {
+        const bh_spot spot = {at, p->column[k], p->width[k]};
+        if (p->index[k] < 0) {
+            draw_was(model, row, spot, canvas);
+            continue;
+        }
+        const bh_table_column *c = &v->columns[p->index[k]];
+        bh_table_cell(model, row, c, false, cell);
+        const bool left = c->column == BH_COL_SETTING;
+        (void)(left ? bh_canvas_put : bh_canvas_put_right)(
+            canvas, spot, row->bin ? BH_LOOK_QUIET : look_of(model, row, c->column), cell);
+        if (i == v->at && p->index[k] == v->column) {
+            const bool focus = model->pane == BH_PANE_TABLE;
+            bh_canvas_paint(canvas, spot, focus ? BH_LOOK_FOCUS : BH_LOOK_CURSOR);
+            if (focus) {
+                canvas->cursor_row = at;
+                canvas->cursor_column = spot.column;
+            }
+        }
+    }
+}
+
+void bh_draw_table(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    const bh_table_view *v = &model->table;
+    bh_column_places p;
+    bh_place_columns(model, places, &p);
+    draw_heads(model, places, &p, canvas);
+    for (int r = 0; r < places->table_rows && v->top + (size_t)r < v->count; r++) {
+        const size_t i = v->top + (size_t)r;
+        draw_row(model, i, places->body + 3 + r, &p, canvas);
+        if (i == v->at)
+            (void)bh_canvas_put(canvas,
+                                (bh_spot){places->body + 3 + r, places->table_column - 1, 1},
+                                BH_LOOK_PLAIN, ">");
+    }
+    if (v->count == 0)
+        (void)bh_canvas_put(
+            canvas, (bh_spot){places->body + 3, places->table_column, places->table_columns},
+            BH_LOOK_QUIET,
+            bh_model_current(model) ? "no table: the plan has errors"
+                                    : "the table is being computed \u2026");
+}

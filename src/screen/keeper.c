@@ -1,0 +1,267 @@
+/* keeper.c - the user's file is theirs: nothing of it, and nothing of their work, gets lost. */
+#include "beamhours/screen/keeper.h"
+
+#include <errno.h>
+#include <stdio.h>
+#include <string.h>
+#include <unistd.h>
+
+static const double write_after = 1.0, look_after = 1.0; /* s */
+
+static void set_path(bh_keeper *keeper, const char *path)
+{
+    (void)snprintf(keeper->path, sizeof keeper->path, "%s", path);
+    bh_rescue_free(keeper->rescue);
+    keeper->rescue = bh_rescue_new(path);
+    keeper->pending = -1;
+}
+
+bh_code bh_keeper_open(bh_keeper *keeper, const char *path, bh_text *into, bh_error *err)
+{
+    set_path(keeper, path);
+    return bh_stamp_read(path, BH_DOCUMENT_LIMIT, into, &keeper->stamp, err);
+}
+
+void bh_keeper_begin(bh_keeper *keeper, const char *name)
+{
+    char path[300];
+    (void)snprintf(path, sizeof path, "%.200s.yaml", name);
+    for (int i = 2; access(path, F_OK) == 0 && i < 1000; i++)
+        (void)snprintf(path, sizeof path, "%.200s-%d.yaml", name, i);
+    set_path(keeper, path);
+    keeper->stamp = (bh_stamp){.there = false};
+}
+
+void bh_keeper_close(bh_keeper *keeper, bool drop)
+{
+    if (keeper->rescue && drop)
+        (void)!bh_rescue_discard(keeper->rescue, NULL);
+    else if (keeper->rescue)
+        (void)bh_rescue_write(keeper->rescue);
+    bh_rescue_free(keeper->rescue);
+    bh_presence_close(keeper->mark);
+    keeper->rescue = NULL;
+    keeper->mark = NULL;
+}
+
+/* --- before work begins --- */
+
+static void since(double seconds, char out[64])
+{
+    if (seconds < 120)
+        (void)snprintf(out, 64, "%.0f seconds", seconds);
+    else if (seconds < 7200)
+        (void)snprintf(out, 64, "%.0f minutes", seconds / 60);
+    else if (seconds < 172800)
+        (void)snprintf(out, 64, "%.0f hours", seconds / 3600);
+    else
+        (void)snprintf(out, 64, "%.0f days", seconds / 86400);
+}
+
+static bool other_has_it(bh_keeper *keeper, bh_model *model)
+{
+    bh_other other = {.process = 0};
+    bh_error err = {.code = BH_OK};
+    bh_presence_close(keeper->mark);
+    keeper->mark = NULL;
+    const bh_presence_state state =
+        bh_presence_open(keeper->path, keeper->insists, &keeper->mark, &other, &err);
+    if (state != BH_PRESENCE_OTHER)
+        return false;
+    (void)snprintf(model->question_text[0], sizeof *model->question_text,
+                   "Someone else has this plan open%s%.60s.", other.host[0] ? ": on " : "",
+                   other.host);
+    (void)snprintf(model->question_text[1], sizeof *model->question_text,
+                   "Process %ld. Whoever saves last is asked about the other's changes.",
+                   other.process);
+    model->question_text[2][0] = '\0';
+    bh_ask(model, BH_QUESTION_OTHER);
+    return true;
+}
+
+static bool work_is_there(bh_keeper *keeper, bh_model *model)
+{
+    bh_rescue_found found = {.there = false};
+    bh_error err = {.code = BH_OK};
+    char age[64];
+    size_t length = 0;
+    const char *bytes = bh_model_bytes(model, &length);
+    bh_text now = {0};
+    bh_text_append_bytes(&now, bytes, length);
+    const bh_code bad = !keeper->rescue || bh_rescue_find(keeper->rescue, &now, NULL, &found, &err);
+    bh_text_free(&now);
+    if (bad || !found.there || !found.differs)
+        return false;
+    since(found.age, age);
+    (void)snprintf(model->question_text[0], sizeof *model->question_text,
+                   "Unsaved work on this plan is there, from %s ago: %d lines of it are not in "
+                   "the file.",
+                   age, found.lines);
+    (void)snprintf(model->question_text[1], sizeof *model->question_text, "%s",
+                   !found.whole      ? "It is damaged: what can be read of it would be used."
+                   : found.same_base ? "The file is as it was when that work began."
+                                     : "The file was changed since that work began.");
+    (void)snprintf(model->question_text[2], sizeof *model->question_text, "Kept in %.200s",
+                   bh_rescue_path(keeper->rescue));
+    bh_ask(model, BH_QUESTION_RESCUE);
+    return true;
+}
+
+void bh_keeper_greet(bh_keeper *keeper, bh_model *model)
+{
+    if (!other_has_it(keeper, model))
+        (void)work_is_there(keeper, model);
+}
+
+void bh_keeper_take_over(bh_keeper *keeper, bh_model *model)
+{
+    keeper->insists = true;
+    bh_keeper_greet(keeper, model);
+}
+
+bool bh_keeper_rescued(bh_keeper *keeper, bh_model *model, bh_text *into)
+{
+    bh_rescue_found found;
+    bh_error err = {.code = BH_OK};
+    if (!bh_rescue_find(keeper->rescue, &(bh_text){0}, into, &found, &err) && !into->failed)
+        return true;
+    bh_model_note(model, true, "the unsaved work cannot be read: %.160s", err.text);
+    return false;
+}
+
+void bh_keeper_refuse(bh_keeper *keeper)
+{
+    (void)!bh_rescue_discard(keeper->rescue, NULL);
+}
+
+/* --- saving --- */
+
+static void ask_changed(bh_model *model, bool gone)
+{
+    (void)snprintf(model->question_text[0], sizeof *model->question_text,
+                   gone ? "The file is not there any more."
+                        : "The file changed on disk since it was read.");
+    (void)snprintf(model->question_text[1], sizeof *model->question_text,
+                   "Nothing is lost yet: your work is kept here.");
+    model->question_text[2][0] = '\0';
+    bh_ask(model, gone ? BH_QUESTION_GONE : BH_QUESTION_CHANGED);
+}
+
+static bool say_save(bh_keeper *keeper, bh_model *model, bh_save_state state, const bh_error *err)
+{
+    switch (state) {
+    case BH_SAVE_DONE:
+        bh_model_saved(model);
+        (void)!bh_rescue_discard(keeper->rescue, NULL);
+        keeper->pending = -1;
+        bh_model_note(model, false, "saved in %.200s", keeper->path);
+        return true;
+    case BH_SAVE_CHANGED:
+    case BH_SAVE_GONE:
+        ask_changed(model, state == BH_SAVE_GONE);
+        return false;
+    default:
+        bh_model_note(model, true, "NOT SAVED  %.220s", err->text);
+        return false;
+    }
+}
+
+bool bh_keeper_save(bh_keeper *keeper, bh_model *model, bool over)
+{
+    size_t length = 0;
+    bh_error err = {.code = BH_OK};
+    const char *bytes = bh_model_bytes(model, &length);
+    if (over && bh_stamp_accept(keeper->path, &keeper->stamp, &err)) {
+        bh_model_note(model, true, "NOT SAVED  %.220s", err.text);
+        return false;
+    }
+    const bh_save_state state = bh_stamp_save(keeper->path, bytes, length, &keeper->stamp, &err);
+    return say_save(keeper, model, state, &err);
+}
+
+bool bh_keeper_save_as(bh_keeper *keeper, bh_model *model)
+{
+    const char *path = model->field.bytes;
+    if (strcmp(path, keeper->path) == 0)
+        return bh_keeper_save(keeper, model, false);
+    if (access(path, F_OK) == 0) {
+        bh_model_note(model, true, "NOT SAVED  %.150s exists: choose another name", path);
+        return false;
+    }
+    bh_error err = {.code = BH_OK};
+    bh_stamp stamp = {.there = false};
+    size_t length = 0;
+    const char *bytes = bh_model_bytes(model, &length);
+    const bh_save_state state = bh_stamp_save(path, bytes, length, &stamp, &err);
+    if (state != BH_SAVE_DONE)
+        return say_save(keeper, model, state, &err);
+    bh_keeper_close(keeper, true);
+    set_path(keeper, path);
+    keeper->stamp = stamp;
+    (void)snprintf(model->file, sizeof model->file, "%.*s", (int)sizeof model->file - 1, path);
+    (void)other_has_it(keeper, model);
+    return say_save(keeper, model, BH_SAVE_DONE, &err);
+}
+
+bool bh_keeper_read(bh_keeper *keeper, bh_model *model, bh_text *into)
+{
+    bh_error err = {.code = BH_OK};
+    if (!bh_stamp_read(keeper->path, BH_DOCUMENT_LIMIT, into, &keeper->stamp, &err)) {
+        (void)!bh_rescue_discard(keeper->rescue, NULL);
+        keeper->pending = -1;
+        return true;
+    }
+    bh_model_note(model, true, "the file cannot be read: %.180s", err.text);
+    return false;
+}
+
+/* --- unsaved work --- */
+
+static void tell_rescue(bh_keeper *keeper, bh_model *model, double now)
+{
+    size_t length = 0;
+    const char *bytes = bh_edit_bytes(model->edit, &length);
+    keeper->version = bh_edit_version(model->edit);
+    if (bh_model_unsaved(model) == 0) {
+        (void)!bh_rescue_discard(keeper->rescue, NULL);
+        keeper->pending = -1;
+        return;
+    }
+    if (bh_rescue_prepare(keeper->rescue, bytes, length, keeper->stamp.hash) && keeper->pending < 0)
+        keeper->pending = now;
+}
+
+double bh_keeper_tend(bh_keeper *keeper, bh_model *model, double now)
+{
+    if (!model->edit || !keeper->rescue)
+        return -1;
+    if (bh_edit_version(model->edit) != keeper->version)
+        tell_rescue(keeper, model, now);
+    if (keeper->pending < 0)
+        return -1;
+    const double left = keeper->pending + write_after - now;
+    if (left > 0)
+        return left;
+    keeper->pending = -1;
+    if (!bh_rescue_write(keeper->rescue) && !keeper->warned) {
+        keeper->warned = true;
+        bh_model_note(model, true, "unsaved work cannot be kept beside the plan (%s): save often",
+                      strerror(errno)); /* NOLINT(concurrency-mt-unsafe): this thread alone */
+    }
+    return -1;
+}
+
+bool bh_keeper_look(bh_keeper *keeper, bh_model *model, double now)
+{
+    if (model->over != BH_OVER_NOTHING || now - keeper->looked < look_after || !keeper->stamp.there)
+        return false;
+    keeper->looked = now;
+    const bh_file_state state = bh_stamp_check(keeper->path, &keeper->stamp);
+    if (state != BH_FILE_CHANGED && state != BH_FILE_GONE)
+        return false;
+    if (keeper->asked)
+        return false;
+    keeper->asked = true; /* once; saving asks again */
+    ask_changed(model, state == BH_FILE_GONE);
+    return true;
+}

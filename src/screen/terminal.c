@@ -1,0 +1,469 @@
+/* terminal.c - the only file that talks to a terminal: keys in, cells out, signals. */
+#define _GNU_SOURCE 1 /* ppoll; wide characters of curses */
+#include "beamhours/screen/terminal.h"
+
+#include <curses.h>
+#include <errno.h>
+#include <langinfo.h>
+#include <locale.h>
+#include <poll.h>
+#include <signal.h>
+#include <stdlib.h>
+#include <string.h>
+#include <sys/ioctl.h>
+#include <termios.h>
+#include <time.h>
+#include <unistd.h>
+
+/* What signal handlers see: the one place of the program with writable data of its own. */
+static struct {
+    volatile sig_atomic_t resized, ended, resumed;
+    volatile sig_atomic_t screen_on;
+    bh_rescue *rescue;
+    const char *mark; /* the file that says the plan is open */
+    struct termios before;
+    char leave[256]; /* what puts the terminal back */
+    size_t leave_length;
+    struct sigaction crash_before;
+} alarm_bell;
+
+struct terminal {
+    bh_desk *desk;
+    SCREEN *screen;
+    bh_canvas shown, wanted;
+    int rows, columns;
+    attr_t looks[BH_LOOK_COUNT];
+    short pairs[BH_LOOK_COUNT];
+    bool drawn;
+};
+
+/* --- signals --- */
+
+static void on_resize(int number)
+{
+    (void)number;
+    alarm_bell.resized = 1;
+}
+
+static void on_end(int number)
+{
+    alarm_bell.ended = number;
+}
+
+static void on_resume(int number)
+{
+    (void)number;
+    alarm_bell.resumed = 1;
+}
+
+/* The program itself failed: save what there is, put the terminal back, and fail as before. */
+static void on_crash(int number)
+{
+    const int kept = errno;
+    if (alarm_bell.rescue)
+        (void)bh_rescue_write(alarm_bell.rescue);
+    if (alarm_bell.mark)
+        (void)unlink(alarm_bell.mark);
+    if (alarm_bell.screen_on) {
+        const ssize_t n = write(STDOUT_FILENO, alarm_bell.leave, alarm_bell.leave_length);
+        (void)n;
+        (void)tcsetattr(STDIN_FILENO, TCSANOW, &alarm_bell.before);
+    }
+    errno = kept;
+    (void)signal(number, SIG_DFL);
+    (void)raise(number);
+}
+
+static void catch_signals(void)
+{
+    static const int ends[] = {SIGINT, SIGTERM, SIGHUP, SIGQUIT};
+    static const int crashes[] = {SIGSEGV, SIGBUS, SIGFPE, SIGILL, SIGABRT};
+    struct sigaction act = {.sa_handler = on_resize};
+    (void)sigemptyset(&act.sa_mask);
+    (void)sigaction(SIGWINCH, &act, NULL);
+    act.sa_handler = on_resume;
+    (void)sigaction(SIGCONT, &act, NULL);
+    act.sa_handler = on_end;
+    for (size_t i = 0; i < sizeof ends / sizeof ends[0]; i++)
+        (void)sigaction(ends[i], &act, NULL);
+    act.sa_handler = on_crash;
+    act.sa_flags = (int)SA_RESETHAND;
+    for (size_t i = 0; i < sizeof crashes / sizeof crashes[0]; i++)
+        (void)sigaction(crashes[i], &act, NULL);
+    (void)signal(SIGPIPE, SIG_IGN);
+}
+
+static void block(bool on, sigset_t *before)
+{
+    sigset_t set;
+    (void)sigemptyset(&set);
+    (void)sigaddset(&set, SIGWINCH);
+    (void)sigaddset(&set, SIGCONT);
+    (void)sigaddset(&set, SIGINT);
+    (void)sigaddset(&set, SIGTERM);
+    (void)sigaddset(&set, SIGHUP);
+    (void)sigaddset(&set, SIGQUIT);
+    (void)sigprocmask(on ? SIG_BLOCK : SIG_UNBLOCK, &set, before);
+}
+
+/* --- looks --- */
+
+/* Hues that people who see few of them tell apart, readable on black and on white; nothing is said
+ * by colour alone. */
+static void set_looks(struct terminal *t)
+{
+    static const attr_t plain[BH_LOOK_COUNT] = {
+        [BH_LOOK_TITLE] = A_BOLD,       [BH_LOOK_FOCUS] = A_REVERSE | A_BOLD,
+        [BH_LOOK_CURSOR] = A_UNDERLINE, [BH_LOOK_FIELD] = A_UNDERLINE,
+        [BH_LOOK_TRIAL] = A_BOLD,       [BH_LOOK_CHANGED] = A_BOLD,
+        [BH_LOOK_STALE] = A_DIM,        [BH_LOOK_QUIET] = A_NORMAL,
+        [BH_LOOK_WARNING] = A_NORMAL,   [BH_LOOK_ERROR] = A_BOLD,
+        [BH_LOOK_CAUTION] = A_BOLD,     [BH_LOOK_KEY] = A_BOLD};
+    memcpy(t->looks, plain, sizeof plain);
+    const char *refused = getenv("NO_COLOR");
+    if (!has_colors() || start_color() == ERR || (refused && refused[0]))
+        return;
+    const bool own = use_default_colors() == OK, many = COLORS >= 256;
+    const short ground = own ? -1 : COLOR_BLACK;
+    const short blue = many ? 32 : COLOR_CYAN, orange = many ? 166 : COLOR_YELLOW;
+    (void)init_pair(1, blue, ground);
+    (void)init_pair(2, orange, ground);
+    t->pairs[BH_LOOK_TRIAL] = t->pairs[BH_LOOK_CHANGED] = t->pairs[BH_LOOK_FIELD] = 1;
+    t->pairs[BH_LOOK_KEY] = 1;
+    t->pairs[BH_LOOK_CAUTION] = t->pairs[BH_LOOK_WARNING] = t->pairs[BH_LOOK_ERROR] = 2;
+    if (!many) { /* on a light ground these two are too pale: their attributes carry them */
+        t->looks[BH_LOOK_TRIAL] |= A_UNDERLINE;
+        t->looks[BH_LOOK_CAUTION] |= A_UNDERLINE;
+        memset(t->pairs, 0, sizeof t->pairs);
+    }
+}
+
+/* --- beginning and end --- */
+
+bool bh_terminal_unicode(void)
+{
+    if (!setlocale(LC_CTYPE, ""))
+        return false;
+    return strcmp(nl_langinfo(CODESET), "UTF-8") == 0;
+}
+
+/* Without the pauses, `$<5>`, that only old terminals need. */
+static void keep_capability(const char *name)
+{
+    char capability[8];
+    (void)strncpy(capability, name, sizeof capability - 1);
+    capability[sizeof capability - 1] = '\0';
+    const char *text = tigetstr(capability);
+    if (!text || text == (const char *)-1)
+        return;
+    for (; *text && alarm_bell.leave_length + 1 < sizeof alarm_bell.leave; text++) {
+        const char *end = text[0] == '$' && text[1] == '<' ? strchr(text, '>') : NULL;
+        if (end)
+            text = end;
+        else
+            alarm_bell.leave[alarm_bell.leave_length++] = *text;
+    }
+}
+
+static void set_modes(void)
+{
+    (void)raw();
+    (void)noecho();
+    (void)nonl();
+    (void)keypad(stdscr, TRUE);
+    (void)nodelay(stdscr, TRUE);
+    (void)set_escdelay(25);
+    (void)mousemask(BUTTON1_CLICKED | BUTTON1_DOUBLE_CLICKED | BUTTON1_PRESSED | BUTTON4_PRESSED |
+                        BUTTON5_PRESSED,
+                    NULL);
+    (void)mouseinterval(0);
+    (void)idlok(stdscr, FALSE);
+    (void)leaveok(stdscr, FALSE);
+}
+
+static bool begin(struct terminal *t)
+{
+    if (!isatty(STDIN_FILENO) || !isatty(STDOUT_FILENO) ||
+        tcgetattr(STDIN_FILENO, &alarm_bell.before))
+        return false;
+    catch_signals();
+    const char *name = getenv("TERM");
+    t->screen = name && strcmp(name, "dumb") != 0 ? newterm(NULL, stdout, stdin) : NULL;
+    if (!t->screen || !tigetstr("cup") || tigetstr("cup") == (char *)-1)
+        return false;
+    alarm_bell.leave_length = 0;
+    keep_capability("sgr0");
+    keep_capability("rmkx");
+    keep_capability("cnorm");
+    keep_capability("rmcup");
+    set_modes();
+    set_looks(t);
+    alarm_bell.screen_on = 1;
+    return true;
+}
+
+static void end(struct terminal *t)
+{
+    alarm_bell.screen_on = 0;
+    if (t->screen) {
+        (void)endwin();
+        delscreen(t->screen);
+    }
+    bh_canvas_free(&t->shown);
+    bh_canvas_free(&t->wanted);
+    alarm_bell.rescue = NULL;
+    alarm_bell.mark = NULL;
+}
+
+static void set_size(struct terminal *t)
+{
+    struct winsize size;
+    alarm_bell.resized = 0;
+    if (ioctl(STDOUT_FILENO, TIOCGWINSZ, &size) || size.ws_row < 1 || size.ws_col < 1) {
+        size.ws_row = 24;
+        size.ws_col = 80;
+    }
+    if (t->rows == size.ws_row && t->columns == size.ws_col)
+        return;
+    t->rows = size.ws_row;
+    t->columns = size.ws_col;
+    (void)resizeterm(t->rows, t->columns);
+    (void)clearok(stdscr, TRUE);
+    t->drawn = false;
+    bh_desk_resize(t->desk, t->rows, t->columns);
+}
+
+static void suspend(struct terminal *t)
+{
+    alarm_bell.screen_on = 0;
+    (void)endwin();
+    (void)signal(SIGTSTP, SIG_DFL);
+    (void)kill(0, SIGTSTP); /* the whole job, as the terminal would do it */
+    alarm_bell.screen_on = 1;
+    alarm_bell.resumed = 1;
+    (void)t;
+}
+
+static void resume(struct terminal *t)
+{
+    alarm_bell.resumed = 0;
+    (void)reset_prog_mode();
+    set_modes();
+    (void)clearok(stdscr, TRUE);
+    t->drawn = false;
+    set_size(t);
+}
+
+/* --- cells out --- */
+
+static bool same_cell(const bh_cell *a, const bh_cell *b)
+{
+    return a->point == b->point && a->mark == b->mark && a->look == b->look;
+}
+
+static void put_cell(const struct terminal *t, int row, int column, const bh_cell *cell)
+{
+    const wchar_t text[3] = {(wchar_t)cell->point, (wchar_t)cell->mark, L'\0'};
+    cchar_t made;
+    (void)setcchar(&made, text, t->looks[cell->look], t->pairs[cell->look], NULL);
+    (void)mvadd_wch(row, column, &made);
+}
+
+/* Tells curses only of cells that changed: it need not compare the rest. */
+static void show(struct terminal *t)
+{
+    bh_desk_draw(t->desk, &t->wanted);
+    const bh_canvas *w = &t->wanted, *s = &t->shown;
+    const bool all = !t->drawn || s->rows != w->rows || s->columns != w->columns;
+    if (all)
+        (void)erase();
+    for (int r = 0; r < w->rows; r++)
+        for (int c = 0; c < w->columns; c++) {
+            const bh_cell *cell = bh_canvas_at(w, r, c);
+            if (cell->point && (all || !same_cell(cell, bh_canvas_at(s, r, c))))
+                put_cell(t, r, c, cell);
+        }
+    (void)move(w->cursor_row, w->cursor_column);
+    (void)refresh();
+    const bh_canvas old = t->shown;
+    t->shown = t->wanted;
+    t->wanted = old;
+    t->drawn = true;
+}
+
+static double now(void)
+{
+    struct timespec t;
+    (void)clock_gettime(CLOCK_MONOTONIC, &t);
+    return (double)t.tv_sec + 1e-9 * (double)t.tv_nsec;
+}
+
+/* --- keys in --- */
+
+static bh_press mouse_press(void)
+{
+    MEVENT event;
+    bh_press p = {.kind = BH_PRESS_NOTHING};
+    if (getmouse(&event) != OK)
+        return p;
+    p.row = event.y;
+    p.column = event.x;
+    if (event.bstate & BUTTON4_PRESSED)
+        p.kind = BH_PRESS_WHEEL_UP;
+    else if (event.bstate & BUTTON5_PRESSED)
+        p.kind = BH_PRESS_WHEEL_DOWN;
+    else if (event.bstate & BUTTON1_DOUBLE_CLICKED)
+        p.kind = BH_PRESS_DOUBLE_CLICK;
+    else if (event.bstate & (BUTTON1_PRESSED | BUTTON1_CLICKED))
+        p.kind = BH_PRESS_CLICK;
+    return p;
+}
+
+static bh_press key_press(wint_t code)
+{
+    static const struct {
+        wint_t code;
+        bh_press_kind kind;
+    } keys[] = {{KEY_UP, BH_PRESS_UP},         {KEY_DOWN, BH_PRESS_DOWN},
+                {KEY_LEFT, BH_PRESS_LEFT},     {KEY_RIGHT, BH_PRESS_RIGHT},
+                {KEY_PPAGE, BH_PRESS_PAGE_UP}, {KEY_NPAGE, BH_PRESS_PAGE_DOWN},
+                {KEY_HOME, BH_PRESS_HOME},     {KEY_END, BH_PRESS_END},
+                {KEY_BTAB, BH_PRESS_BACK_TAB}, {KEY_ENTER, BH_PRESS_ENTER},
+                {KEY_DC, BH_PRESS_DELETE},     {KEY_BACKSPACE, BH_PRESS_RUBOUT}};
+    if (code == KEY_MOUSE)
+        return mouse_press();
+    for (size_t i = 0; i < sizeof keys / sizeof keys[0]; i++)
+        if (keys[i].code == code)
+            return (bh_press){.kind = keys[i].kind};
+    return (bh_press){.kind = BH_PRESS_NOTHING};
+}
+
+static bh_press point_press(wint_t code)
+{
+    static const struct {
+        wint_t code;
+        bh_press_kind kind;
+    } controls[] = {{'\t', BH_PRESS_TAB},    {'\r', BH_PRESS_ENTER}, {'\n', BH_PRESS_ENTER},
+                    {27, BH_PRESS_ESCAPE},   {127, BH_PRESS_RUBOUT}, {8, BH_PRESS_RUBOUT},
+                    {3, BH_PRESS_INTERRUPT}, {26, BH_PRESS_SUSPEND}};
+    for (size_t i = 0; i < sizeof controls / sizeof controls[0]; i++)
+        if (controls[i].code == code)
+            return (bh_press){.kind = controls[i].kind};
+    if (code < ' ' || (code >= 0x7F && code < 0xA0))
+        return (bh_press){.kind = BH_PRESS_NOTHING};
+    return (bh_press){.kind = BH_PRESS_POINT, .point = (uint32_t)code};
+}
+
+/* All keys that are there; false when the terminal is gone. */
+static bool read_keys(struct terminal *t, bool *some)
+{
+    wint_t code = 0;
+    int kind = ERR;
+    bool any = false;
+    while (!bh_desk_over(t->desk) && (kind = get_wch(&code)) != ERR) {
+        const bh_press press = kind == KEY_CODE_YES ? key_press(code) : point_press(code);
+        bh_desk_press(t->desk, &press, now());
+        any = true;
+        if (alarm_bell.resized)
+            set_size(t);
+    }
+    *some = *some || any;
+    return any;
+}
+
+/* --- the loop --- */
+
+static struct timespec span(double seconds)
+{
+    struct timespec t = {.tv_sec = (time_t)seconds};
+    t.tv_nsec = (long)((seconds - (double)t.tv_sec) * 1e9);
+    return t;
+}
+
+/* A frame waits this long for what is in view to be computed: then it is drawn once, not twice. */
+static const double patience = 0.012; /* s */
+
+struct loop {
+    struct terminal *t;
+    sigset_t during; /* signals let through while waiting */
+    bool dirty;
+    double since; /* [s] when it became so */
+};
+
+/* Waits for keys, news, signals or the time; false when the terminal is gone. */
+static bool wait_for_more(struct loop *l, double most)
+{
+    struct pollfd from[] = {{STDIN_FILENO, POLLIN, 0}, {bh_desk_wake(l->t->desk), POLLIN, 0}};
+    const struct timespec limit = span(most < 0 ? 0 : most);
+    const int n = ppoll(from, 2, most < 0 ? NULL : &limit, &l->during);
+    if (n < 0)
+        return errno == EINTR;
+    bool some = false;
+    if (n > 0 && (from[1].revents & POLLIN))
+        some = bh_desk_news(l->t->desk);
+    if (n > 0 && (from[0].revents & (POLLIN | POLLHUP | POLLERR)) && !read_keys(l->t, &some) &&
+        (from[0].revents & (POLLHUP | POLLERR)))
+        return false;
+    if (some && !l->dirty) {
+        l->dirty = true;
+        l->since = now();
+    }
+    return true;
+}
+
+static void mind_signals(struct loop *l)
+{
+    if (alarm_bell.resized) {
+        set_size(l->t);
+        l->dirty = true;
+    }
+    if (bh_desk_suspends(l->t->desk))
+        suspend(l->t);
+    if (alarm_bell.resumed) {
+        resume(l->t);
+        l->dirty = true;
+    }
+}
+
+static void run(struct loop *l)
+{
+    struct terminal *t = l->t;
+    bool there = true;
+    while (there && !bh_desk_over(t->desk) && !alarm_bell.ended) {
+        mind_signals(l);
+        alarm_bell.rescue = bh_desk_rescue(t->desk);
+        alarm_bell.mark = bh_desk_mark(t->desk);
+        double wait = bh_desk_tend(t->desk, now());
+        if (l->dirty) {
+            const double left = l->since + patience - now();
+            if (left <= 0 || bh_desk_settled(t->desk)) {
+                show(t);
+                l->dirty = false;
+            } else if (wait < 0 || left < wait) {
+                wait = left;
+            }
+        }
+        there = wait_for_more(l, wait);
+    }
+    if (!there && !alarm_bell.ended)
+        alarm_bell.ended = SIGHUP;
+}
+
+bh_terminal_end bh_terminal_run(bh_desk *desk, int *signal)
+{
+    struct terminal t = {.desk = desk};
+    struct loop l = {.t = &t, .dirty = true};
+    alarm_bell.resized = alarm_bell.ended = alarm_bell.resumed = 0;
+    *signal = 0;
+    if (!begin(&t)) {
+        end(&t);
+        return BH_TERMINAL_NONE;
+    }
+    block(true, &l.during);
+    set_size(&t);
+    run(&l);
+    end(&t);
+    block(false, NULL);
+    *signal = alarm_bell.ended;
+    return *signal ? BH_TERMINAL_SIGNAL : BH_TERMINAL_DONE;
+}

@@ -1,0 +1,208 @@
+/* typing.c - a value while it is typed: provisional until Enter, gone with Escape. */
+#include <stdio.h>
+#include <string.h>
+
+#include "beamhours/document/trail.h"
+#include "beamhours/screen/model.h"
+
+static void copy(char *to, size_t size, const char *from)
+{
+    (void)snprintf(to, size, "%.*s", (int)size - 1, from ? from : "");
+}
+
+static void first_error(const bh_diags *diags, char *why, size_t size)
+{
+    for (size_t i = 0; i < bh_diags_count(diags); i++) {
+        const bh_diag *d = bh_diags_at(diags, i);
+        if (d->severity == BH_SEVERITY_ERROR) {
+            copy(why, size, d->text);
+            return;
+        }
+    }
+    copy(why, size, "");
+}
+
+size_t bh_model_errors(const bh_model *model, const char *bytes, size_t length, char *why,
+                       size_t size)
+{
+    bh_diags *diags = bh_diags_new();
+    if (!diags)
+        return 0;
+    bh_plan_free(bh_plan_read(bytes, length, model->file, NULL, 0, model->library, diags));
+    const size_t errors = bh_diags_errors(diags);
+    first_error(diags, why, size);
+    bh_diags_free(diags);
+    return errors;
+}
+
+static void stop_trying(bh_model *model)
+{
+    model->trying = false;
+    bh_text_free(&model->trial);
+    if (model->kept) {
+        bh_outcome *kept = bh_outcome_share(model->kept);
+        bh_outcome_leave(model->now);
+        model->now = kept;
+    }
+    bh_table_refresh(model);
+}
+
+static bh_edit_change change_to(const bh_model *model, const char *text)
+{
+    return (bh_edit_change){
+        .kind = BH_EDIT_SET, .node = model->field_node, .path = model->field_path, .text = text};
+}
+
+void bh_value_attempt(bh_model *model, const char *text)
+{
+    bh_diags *diags = bh_diags_new();
+    bh_text trial = {0};
+    const bh_edit_change change = change_to(model, text);
+    size_t length = 0;
+    const char *bytes = bh_edit_bytes(model->edit, &length);
+    const bool can = diags && bh_edit_try(model->edit, &change, 1, &trial, diags);
+    copy(model->why, sizeof model->why, "");
+    if (!can && diags)
+        first_error(diags, model->why, sizeof model->why);
+    bh_diags_free(diags);
+    const bool same =
+        trial.length == length && trial.bytes && memcmp(trial.bytes, bytes, length) == 0;
+    if (!can || trial.failed || same) {
+        bh_text_free(&trial);
+        stop_trying(model);
+        model->job_due = true;
+        return;
+    }
+    bh_text_free(&model->trial);
+    model->trial = trial;
+    model->trying = true;
+    model->job_due = true;
+}
+
+static bool open_field(bh_model *model, const char *path, const bh_node *node, const char *text)
+{
+    if (!bh_field_set(&model->field, text)) {
+        bh_model_note(model, true, "this text is too long to be changed here");
+        return false;
+    }
+    copy(model->field_path, sizeof model->field_path, path);
+    model->field_node = node;
+    copy(model->why, sizeof model->why, "");
+    model->over = BH_OVER_FIELD;
+    return true;
+}
+
+void bh_value_begin(bh_model *model, const bh_press *typed)
+{
+    const bh_plan_line *line = bh_plan_here(model);
+    bh_text old = {0}, path = {0};
+    if (!line || !bh_edit_field(model->edit, line->node, &old)) {
+        bh_model_note(model, true, "this part is changed line by line: Enter opens it");
+        bh_text_free(&old);
+        return;
+    }
+    bh_trail_of(line->node, &path);
+    copy(model->was, sizeof model->was, old.bytes);
+    if (path.bytes && open_field(model, path.bytes, line->node, typed ? "" : old.bytes) && typed) {
+        (void)bh_field_press(&model->field, typed);
+        bh_value_attempt(model, model->field.bytes);
+    }
+    bh_text_free(&path);
+    bh_text_free(&old);
+}
+
+void bh_value_begin_key(bh_model *model, const char *path, const char *example)
+{
+    copy(model->was, sizeof model->was, "");
+    if (open_field(model, path, NULL, example))
+        bh_value_attempt(model, model->field.bytes);
+}
+
+void bh_value_leave(bh_model *model)
+{
+    model->over = BH_OVER_NOTHING;
+    model->job_due = model->job_due || model->trying;
+    copy(model->why, sizeof model->why, "");
+    stop_trying(model);
+}
+
+/* A value that makes the plan unreadable, or less readable than it was, is not kept. */
+static bool spoils(bh_model *model)
+{
+    char why[sizeof model->why];
+    if (!model->trying)
+        return model->why[0] != '\0';
+    const size_t errors =
+        bh_model_errors(model, model->trial.bytes, model->trial.length, why, sizeof why);
+    if (errors <= model->errors)
+        return false;
+    copy(model->why, sizeof model->why, why);
+    return true;
+}
+
+/* What the worker found for the trial is that of the text from now on. */
+static void promote(bh_model *model)
+{
+    size_t length = 0;
+    const char *bytes = bh_edit_bytes(model->edit, &length);
+    const bh_outcome *now = model->now;
+    model->trying = false;
+    bh_text_free(&model->trial);
+    if (now && now->complete && now->of->length == length &&
+        memcmp(now->of->bytes, bytes, length) == 0) {
+        bh_outcome_leave(model->kept);
+        model->kept = bh_outcome_share(model->now);
+    } else {
+        model->job_due = true;
+    }
+}
+
+bool bh_value_keep(bh_model *model, const char *text)
+{
+    bh_value_attempt(model, text);
+    if (spoils(model))
+        return false;
+    if (!model->trying) { /* the same as before */
+        bh_value_leave(model);
+        return true;
+    }
+    bh_diags *diags = bh_diags_new();
+    const bh_edit_change change = change_to(model, text);
+    const bool done = diags && bh_edit_apply(model->edit, &change, 1, diags);
+    if (!done && diags)
+        first_error(diags, model->why, sizeof model->why);
+    bh_diags_free(diags);
+    if (!done)
+        return false;
+    model->over = BH_OVER_NOTHING;
+    promote(model);
+    bh_change_done(model);
+    return true;
+}
+
+bool bh_value_press(bh_model *model, const bh_press *press)
+{
+    switch (press->kind) {
+    case BH_PRESS_ENTER:
+        (void)bh_value_keep(model, model->field.bytes);
+        return true;
+    case BH_PRESS_ESCAPE:
+    case BH_PRESS_INTERRUPT:
+        bh_value_leave(model);
+        return true;
+    case BH_PRESS_UP:
+    case BH_PRESS_DOWN:
+        if (bh_field_step(&model->field, press->kind == BH_PRESS_UP ? 1 : -1))
+            bh_value_attempt(model, model->field.bytes);
+        return true;
+    case BH_PRESS_LEFT:
+    case BH_PRESS_RIGHT:
+    case BH_PRESS_HOME:
+    case BH_PRESS_END:
+        return bh_field_press(&model->field, press);
+    default:
+        if (bh_field_press(&model->field, press))
+            bh_value_attempt(model, model->field.bytes);
+        return true;
+    }
+}

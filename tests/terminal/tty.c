@@ -1,0 +1,352 @@
+/* tty.c - forkpty and libvterm; waits for what is to be seen, never for a time. */
+#define _GNU_SOURCE 1
+#include "tty.h"
+
+#include <errno.h>
+#include <fcntl.h>
+#include <poll.h>
+#include <pty.h>
+#include <signal.h>
+#include <stdio.h>
+#include <stdlib.h>
+#include <string.h>
+#include <sys/ioctl.h>
+#include <sys/stat.h>
+#include <sys/wait.h>
+#include <time.h>
+#include <unistd.h>
+
+#include "beamhours/base/text.h"
+
+static const double patience = 60; /* s: other programs may want the processors */
+
+static double now(void)
+{
+    struct timespec t;
+    clock_gettime(CLOCK_MONOTONIC, &t);
+    return (double)t.tv_sec + 1e-9 * (double)t.tv_nsec;
+}
+
+/* --- files --- */
+
+static void path_of(const tty *t, const char *name, char out[256])
+{
+    snprintf(out, 256, "%s/%s", t->folder, name);
+}
+
+void tty_write(const tty *t, const char *name, const char *text)
+{
+    char path[256];
+    path_of(t, name, path);
+    FILE *f = fopen(path, "w");
+    ck_assert_ptr_nonnull(f);
+    ck_assert_int_ge(fputs(text, f), 0);
+    ck_assert_int_eq(fclose(f), 0);
+}
+
+static char *read_path(const char *path)
+{
+    bh_text text = {0};
+    char bytes[4096];
+    size_t n = 0;
+    FILE *f = fopen(path, "r");
+    ck_assert_msg(f != NULL, "%s: %s", path, strerror(errno));
+    while ((n = fread(bytes, 1, sizeof bytes, f)) > 0)
+        bh_text_append_bytes(&text, bytes, n);
+    fclose(f);
+    bh_text_append(&text, "");
+    return bh_text_take(&text);
+}
+
+char *tty_read(const tty *t, const char *name)
+{
+    char path[256];
+    path_of(t, name, path);
+    return read_path(path);
+}
+
+bool tty_exists(const tty *t, const char *name)
+{
+    char path[256];
+    path_of(t, name, path);
+    return access(path, F_OK) == 0;
+}
+
+void tty_folder(tty *t, const char *demo)
+{
+    *t = (tty){.master = -1};
+    snprintf(t->folder, sizeof t->folder, "/tmp/beamhours-tty-XXXXXX");
+    ck_assert_ptr_nonnull(mkdtemp(t->folder));
+    if (!demo)
+        return;
+    char path[256];
+    snprintf(path, sizeof path, "plans/%s.yaml", demo);
+    char *text = read_path(path);
+    tty_write(t, "plan.yaml", text);
+    free(text);
+}
+
+/* --- the program --- */
+
+/* build/ of build/tests/terminal/test_x, and the folder it was called from. */
+static void find_program(char out[1200])
+{
+    const ssize_t n = readlink("/proc/self/exe", out, 1100);
+    ck_assert_int_gt(n, 0);
+    out[n] = '\0';
+    for (int up = 0; up < 3; up++)
+        *strrchr(out, '/') = '\0';
+    strcat(out, "/beamhours");
+}
+
+static void become(const tty *t, const tty_start *how)
+{
+    char program[1200], *arguments[10] = {program, (char[]){"edit"}};
+    find_program(program);
+    for (int i = 0; i < 6 && how->arguments[i]; i++)
+        arguments[2 + i] = strdup(how->arguments[i]);
+    setenv("TERM", how->term ? how->term : "xterm-256color", 1);
+    setenv("LC_ALL", how->locale ? how->locale : "C.UTF-8", 1);
+    unsetenv("NO_COLOR");
+    unsetenv("COLUMNS");
+    unsetenv("LINES");
+    char *own = how->environment ? strdup(how->environment) : NULL;
+    if (own)
+        putenv(own);
+    if (chdir(t->folder) == 0)
+        execv(program, arguments);
+    _exit(126);
+}
+
+static void answer(const char *bytes, size_t length, void *user)
+{
+    const ssize_t n = write(*(int *)user, bytes, length);
+    (void)n;
+}
+
+void tty_run(tty *t, const tty_start *how)
+{
+    t->rows = how->rows ? how->rows : 24;
+    t->columns = how->columns ? how->columns : 80;
+    t->ended = false;
+    t->received = 0;
+    t->vt = vterm_new(t->rows, t->columns);
+    ck_assert_ptr_nonnull(t->vt);
+    vterm_set_utf8(t->vt, 1);
+    vterm_output_set_callback(t->vt, answer, &t->master);
+    t->screen = vterm_obtain_screen(t->vt);
+    vterm_screen_enable_altscreen(t->screen, 1);
+    vterm_screen_reset(t->screen, 1);
+    const struct winsize size = {.ws_row = (unsigned short)t->rows,
+                                 .ws_col = (unsigned short)t->columns};
+    t->child = forkpty(&t->master, NULL, NULL, &size);
+    ck_assert_int_ge(t->child, 0);
+    if (t->child == 0)
+        become(t, how);
+}
+
+static void stop(tty *t)
+{
+    if (t->child > 0 && !t->ended) {
+        kill(t->child, SIGKILL);
+        waitpid(t->child, &t->status, 0);
+        t->ended = true;
+    }
+    if (t->master >= 0)
+        close(t->master);
+    t->master = -1;
+    if (t->vt)
+        vterm_free(t->vt);
+    t->vt = NULL;
+}
+
+void tty_end(tty *t)
+{
+    char command[200];
+    stop(t);
+    snprintf(command, sizeof command, "chmod -R u+w %s; rm -rf %s", t->folder, t->folder);
+    ck_assert_int_eq(system(command), 0);
+}
+
+/* --- keys --- */
+
+static const struct {
+    const char *name, *bytes;
+} keys[] = {
+    {"Up", "\033OA"},      {"Down", "\033OB"},      {"Right", "\033OC"},   {"Left", "\033OD"},
+    {"PageUp", "\033[5~"}, {"PageDown", "\033[6~"}, {"Home", "\033OH"},    {"End", "\033OF"},
+    {"Tab", "\t"},         {"BackTab", "\033[Z"},   {"Enter", "\r"},       {"Escape", "\033"},
+    {"Rubout", "\177"},    {"Delete", "\033[3~"},   {"Interrupt", "\003"}, {"Suspend", "\032"}};
+
+static void send_bytes(tty *t, const char *bytes, size_t length)
+{
+    while (length > 0) {
+        const ssize_t n = write(t->master, bytes, length);
+        if (n > 0) {
+            bytes += n;
+            length -= (size_t)n;
+        } else {
+            ck_assert_msg(errno == EAGAIN || errno == EINTR, "%s", strerror(errno));
+            tty_pump(t, 10);
+        }
+    }
+}
+
+/* A mouse event as xterm sends it: button, column and row from 1. */
+static void send_button(tty *t, int button, int row, int column)
+{
+    char bytes[64];
+    int n = snprintf(bytes, sizeof bytes, "\033[<%d;%d;%dM", button, column + 1, row + 1);
+    send_bytes(t, bytes, (size_t)n);
+    if (button)
+        return;
+    n = snprintf(bytes, sizeof bytes, "\033[<0;%d;%dm", column + 1, row + 1);
+    send_bytes(t, bytes, (size_t)n);
+}
+
+static size_t send_mouse(tty *t, const char *at)
+{
+    int row = 0, column = 0, used = 0;
+    if (sscanf(at, "<Click %d,%d>%n", &row, &column, &used) == 2 && used)
+        send_button(t, 0, row, column);
+    else if (sscanf(at, "<WheelUp %d,%d>%n", &row, &column, &used) == 2 && used)
+        send_button(t, 64, row, column);
+    else if (sscanf(at, "<WheelDown %d,%d>%n", &row, &column, &used) == 2 && used)
+        send_button(t, 65, row, column);
+    return (size_t)used;
+}
+
+static size_t send_key(tty *t, const char *at)
+{
+    if (at[0] != '<' || at[1] == '<') {
+        send_bytes(t, at, 1);
+        return at[0] == '<' ? 2 : 1;
+    }
+    for (size_t i = 0; i < sizeof keys / sizeof *keys; i++) {
+        const size_t n = strlen(keys[i].name);
+        if (strncmp(at + 1, keys[i].name, n) == 0 && at[n + 1] == '>') {
+            send_bytes(t, keys[i].bytes, strlen(keys[i].bytes));
+            return n + 2;
+        }
+    }
+    const size_t used = send_mouse(t, at);
+    ck_assert_msg(used > 0, "no such key: %s", at);
+    return used;
+}
+
+void tty_type(tty *t, const char *script)
+{
+    while (*script)
+        script += send_key(t, script);
+}
+
+void tty_size(tty *t, int rows, int columns)
+{
+    const struct winsize size = {.ws_row = (unsigned short)rows, .ws_col = (unsigned short)columns};
+    t->rows = rows;
+    t->columns = columns;
+    vterm_set_size(t->vt, rows, columns);
+    ck_assert_int_eq(ioctl(t->master, TIOCSWINSZ, &size), 0);
+}
+
+/* --- the screen --- */
+
+bool tty_pump(tty *t, int milliseconds)
+{
+    char bytes[16384];
+    struct pollfd from = {t->master, POLLIN, 0};
+    if (t->master < 0 || poll(&from, 1, milliseconds) <= 0)
+        return false;
+    const ssize_t n = read(t->master, bytes, sizeof bytes);
+    if (n <= 0) {
+        if (!t->ended && waitpid(t->child, &t->status, 0) == t->child)
+            t->ended = true;
+        return false;
+    }
+    t->received += (size_t)n;
+    vterm_input_write(t->vt, bytes, (size_t)n);
+    return true;
+}
+
+VTermScreenCell tty_cell(const tty *t, int row, int column)
+{
+    VTermScreenCell cell;
+    memset(&cell, 0, sizeof cell);
+    vterm_screen_get_cell(t->screen, (VTermPos){row, column}, &cell);
+    return cell;
+}
+
+const char *tty_row(const tty *t, int row)
+{
+    static char text[4096];
+    const VTermRect whole = {row, row + 1, 0, t->columns};
+    const size_t n = vterm_screen_get_text(t->screen, text, sizeof text - 1, whole);
+    text[n < sizeof text ? n : sizeof text - 1] = '\0';
+    return text;
+}
+
+int tty_find_row(const tty *t, const char *text)
+{
+    for (int r = 0; t->vt && r < t->rows; r++)
+        if (strstr(tty_row(t, r), text))
+            return r;
+    return -1;
+}
+
+bool tty_shows(const tty *t, const char *text)
+{
+    return tty_find_row(t, text) >= 0;
+}
+
+static void give_up(const tty *t, const char *what, const char *text)
+{
+    bh_text all = {0};
+    for (int r = 0; r < t->rows; r++)
+        bh_text_appendf(&all, "%s\n", tty_row(t, r));
+    ck_abort_msg("%s \"%s\"%s:\n%s", what, text, t->ended ? " (the program ended)" : "", all.bytes);
+}
+
+void tty_wait(tty *t, const char *text)
+{
+    const double start = now();
+    while (!tty_shows(t, text)) {
+        if (now() - start > patience || t->ended)
+            give_up(t, "never saw", text);
+        tty_pump(t, 100);
+    }
+}
+
+void tty_wait_row(tty *t, int row, const char *text)
+{
+    const double start = now();
+    while (!strstr(tty_row(t, row), text)) {
+        if (now() - start > patience || t->ended)
+            give_up(t, "never saw in its row", text);
+        tty_pump(t, 100);
+    }
+}
+
+void tty_wait_gone(tty *t, const char *text)
+{
+    const double start = now();
+    while (tty_shows(t, text)) {
+        if (now() - start > patience || t->ended)
+            give_up(t, "it did not go away:", text);
+        tty_pump(t, 100);
+    }
+}
+
+int tty_wait_end(tty *t)
+{
+    const double start = now();
+    while (!t->ended) {
+        if (now() - start > patience)
+            give_up(t, "the program did not end", "");
+        tty_pump(t, 50);
+        if (!t->ended && waitpid(t->child, &t->status, WNOHANG) == t->child)
+            t->ended = true;
+    }
+    while (tty_pump(t, 0))
+        ;
+    return WIFEXITED(t->status) ? WEXITSTATUS(t->status) : 128 + WTERMSIG(t->status);
+}
