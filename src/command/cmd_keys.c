@@ -1,10 +1,12 @@
-/* cmd_keys.c - beamhours keys [KEY]: what a plan can say, from the table that reads it. */
+/* cmd_keys.c - beamhours keys [KEY | columns]: what a plan can say, from the table that reads it,
+ * and what a run table can show. */
 #include <string.h>
 
 #include "beamhours/command/input.h"
 #include "beamhours/command/places.h"
 #include "beamhours/plan/key_list.h"
 #include "beamhours/report/text_table.h"
+#include "beamhours/run/columns.h"
 
 enum { KEY = 30 };
 
@@ -65,6 +67,18 @@ static void all(bh_text *out)
         brief(&key, out);
 }
 
+/* What a run table can show: key, heading unit, meaning. */
+static void columns(bh_text *out)
+{
+    bh_text_append(out, "columns of a run table, for --columns, --sort and --show\n");
+    for (int id = 0; id < BH_COLUMN_COUNT; id++) {
+        const bh_column *column = bh_column_at(id);
+        char lead[96];
+        (void)snprintf(lead, sizeof lead, "%-*s ", KEY, column->key);
+        bh_report_wrapped(lead, column->meaning, bh_places_width(), out);
+    }
+}
+
 /* American spellings of keys are accepted, as in plans. */
 static void british(const char *word, char *out, size_t size)
 {
@@ -111,6 +125,10 @@ int bh_cmd_keys(const bh_arguments *arguments)
         return bh_usage(arguments, "takes one key at most");
     if (arguments->word_count == 0) {
         all(&out);
+        return bh_output(&out, NULL);
+    }
+    if (strcmp(arguments->words[0], "columns") == 0) {
+        columns(&out);
         return bh_output(&out, NULL);
     }
     char word[80];

@@ -172,6 +172,11 @@ static int all(bh_material_library *library, bool json, bh_diags *diags, bh_text
     if (json)
         finish(array, out);
     bh_say_diags(stderr, diags);
+    if (count == 0) {
+        bh_print(stderr, "beamhours: materials: no library found beside the program; name its "
+                         "folder in BEAMHOURS_MATERIALS\n");
+        return EX_NOINPUT;
+    }
     return bh_diags_errors(diags) ? EX_DATAERR : 0;
 }
 

@@ -4,6 +4,7 @@
 #include "beamhours/command/complain.h"
 
 #include <string.h>
+#include <sys/stat.h>
 #include <sysexits.h>
 
 #include "beamhours/base/nearest.h"
@@ -135,6 +136,8 @@ static int store(struct reader *r, int id, const char *value)
         if (!strchr(value, '='))
             return bh_usage(out, "--with needs KEY=VALUE, such as --with 'beam.current=40 uA'");
         out->with[out->with_count++] = value;
+    } else if (out->value[id] && strcmp(out->value[id], value) != 0) {
+        return bh_usage_option(out, (bh_option_id)id, "given twice, with two values");
     }
     out->value[id] = value;
     return 0;
@@ -173,13 +176,28 @@ static int one_option(struct reader *r, const char *word)
     return id < 0 ? unknown(command, word) : take(r, id, word[2] ? word + 2 : NULL);
 }
 
-int bh_arguments_read(bh_command_id command, int argc, char **argv, bh_arguments *out)
+/* What is read must not be written over, under whatever name. */
+static int check_output(const bh_arguments *out)
 {
-    *out = (bh_arguments){.command = command, .words = argv};
-    struct reader r = {argc, 0, argv, out};
+    struct stat output, input;
+    const char *path = out->value[BH_OPT_OUTPUT];
+    if (!path || stat(path, &output) != 0 || !S_ISREG(output.st_mode))
+        return 0;
+    for (int i = 0; i < out->word_count; i++)
+        if (stat(out->words[i], &input) == 0 && input.st_dev == output.st_dev &&
+            input.st_ino == output.st_ino)
+            return bh_usage_option(out, BH_OPT_OUTPUT,
+                                   "this is the plan itself, which would be lost; name another "
+                                   "file");
+    return 0;
+}
+
+static int read_words(struct reader *r)
+{
     bool only_words = false;
-    while (r.next < argc) {
-        char *word = argv[r.next++];
+    bh_arguments *out = r->out;
+    while (r->next < r->argc) {
+        char *word = r->argv[r->next++];
         if (!only_words && strcmp(word, "--") == 0) {
             only_words = true;
             continue;
@@ -188,11 +206,19 @@ int bh_arguments_read(bh_command_id command, int argc, char **argv, bh_arguments
             out->words[out->word_count++] = word;
             continue;
         }
-        const int bad = one_option(&r, word);
+        const int bad = one_option(r, word);
         if (bad)
             return bad;
     }
     return 0;
+}
+
+int bh_arguments_read(bh_command_id command, int argc, char **argv, bh_arguments *out)
+{
+    *out = (bh_arguments){.command = command, .words = argv};
+    struct reader r = {argc, 0, argv, out};
+    const int bad = read_words(&r);
+    return bad ? bad : check_output(out);
 }
 
 /* "text, csv or json" from "text,csv,json". */

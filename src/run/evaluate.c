@@ -119,6 +119,9 @@ static void find_slow_bin(const bh_evaluator *evaluator, const bh_setting_hours 
                                     .from = available->value / BH_SECONDS_PER_HOUR});
 }
 
+/* [1] below this share, whoever plans should know: common practice. */
+static const double mostly_live = 0.8;
+
 static void find(const bh_evaluator *evaluator, const bh_setting_hours *hours)
 {
     for (size_t a = 0; a < hours->setting->arm_count; a++) {
@@ -133,6 +136,13 @@ static void find(const bh_evaluator *evaluator, const bh_setting_hours *hours)
                                         .setting = hours->setting->name,
                                         .high = arm->live.recorded,
                                         .from = plan->arm.rate_limit.value});
+        else if (arm->live.dead_part < mostly_live)
+            note(evaluator, (bh_remark){.kind = BH_REMARK_DEAD,
+                                        .at = plan->at,
+                                        .key = "dead_time",
+                                        .who = plan->arm.name.text,
+                                        .setting = hours->setting->name,
+                                        .low = 100 * arm->live.dead_part});
         if (target->empty == BH_EMPTY_NONE && arm->yield->part->windows > 0)
             note(evaluator, (bh_remark){.kind = BH_REMARK_NO_EMPTY,
                                         .at = target->at,

@@ -38,7 +38,7 @@ void bh_remarks_free(bh_remarks *remarks)
 
 static bool of_the_whole_plan(bh_remark_kind kind)
 {
-    return kind <= BH_REMARK_LIMIT;
+    return kind <= BH_REMARK_DEAD;
 }
 
 static const char *or_empty(const char *text)
@@ -61,7 +61,7 @@ static bool same(const struct kept *k, const bh_remark *r)
 {
     if (k->remark.kind != r->kind || strcmp(k->what, or_empty(r->what)) != 0)
         return false;
-    if (k->remark.from != r->from && r->kind <= BH_REMARK_LIMIT) /* another limit or range */
+    if (k->remark.from != r->from && r->kind <= BH_REMARK_DEAD) /* another limit or range */
         return false;
     return joins(r->kind) || (strcmp(k->who, or_empty(r->who)) == 0 && same_place(&k->remark, r));
 }
@@ -118,6 +118,7 @@ static void set_key(char to[TEXT], const bh_remark *r)
     case BH_REMARK_RECOIL_CUT:
     case BH_REMARK_RADIATION:
     case BH_REMARK_LIMIT:
+    case BH_REMARK_DEAD:
         snprintf(to, TEXT, "arms.%s.%s", or_empty(r->who), r->key);
         break;
     case BH_REMARK_NO_EMPTY:
@@ -300,6 +301,10 @@ static void say(const struct kept *k, const struct words *w, bh_diags *diags)
     case BH_REMARK_LIMIT:
         bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_RATE_LIMIT, k->who, w->high,
                      w->from, w->where, prescale_for(r));
+        break;
+    case BH_REMARK_DEAD:
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_DEAD, k->who, w->low,
+                     w->where);
         break;
     case BH_REMARK_BIN_TOO_SLOW:
         bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_BIN_TOO_SLOW, k->what,

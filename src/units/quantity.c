@@ -119,19 +119,21 @@ static bh_code slipped(const reading *r, const bh_slip *slip)
     return bh_fail(r->err, BH_EPLAN, BH_SAY_POWER_OF_TEN, r->shown, fix);
 }
 
-/* A share without %: 0.97 was meant as 97 %. */
+/* A share without %: 0.97 was meant as 97 %, 5 as 5 %, and 1 as either. */
 static bh_code no_unit(const reading *r, const parts *p)
 {
-    const bh_unit hundredth = {.decade = 2, .factor = 1};
-    double percent;
+    const bh_unit whole = {.factor = 1}, hundredth = {.decade = 2, .factor = 1};
+    double value, percent;
     const bool share = r->dimension == BH_DIM_SHARE && !p->power &&
+                       bh_number_in(p->value.from, p->value.to, &whole, &value) == BH_OK &&
                        bh_number_in(p->value.from, p->value.to, &hundredth, &percent) == BH_OK &&
-                       percent > 0.0 && percent <= 100.0;
+                       percent > 0.0 && value <= 100.0;
     if (!share)
         return bh_fail(r->err, BH_EPLAN, BH_SAY_NO_UNIT, r->shown, name_of(r), units_of(r));
     char number[BH_NUMBER_SIZE];
-    (void)bh_number_print(percent, number, sizeof number);
-    return bh_fail(r->err, BH_EPLAN, BH_SAY_BARE_SHARE, r->shown, number);
+    (void)bh_number_print(value > 1.0 ? value : percent, number, sizeof number);
+    return bh_fail(r->err, BH_EPLAN, BH_SAY_BARE_SHARE, r->shown, value == 1.0 ? "1 % or " : "",
+                   number);
 }
 
 static bh_code unknown_unit(const reading *r, const char *odd)
@@ -158,6 +160,9 @@ static bh_code wrong_dimension(const reading *r, const span *unit, const bh_unit
     if (r->dimension == BH_DIM_TEMPERATURE && strcmp(text, "C") == 0)
         return bh_fail(r->err, BH_EPLAN, BH_SAY_COULOMB, r->shown, name_of(r), units_of(r));
     const char *measured = bh_unit_measures(known);
+    bh_unit areal = *known;
+    if (r->dimension == BH_DIM_LENGTH && bh_unit_convert(&areal, BH_DIM_AREAL_DENSITY))
+        return bh_fail(r->err, BH_EPLAN, BH_SAY_AREAL_DENSITY, r->shown, units_of(r));
     if (measured)
         return bh_fail(r->err, BH_EPLAN, BH_SAY_WRONG_DIMENSION, r->shown, measured, name_of(r),
                        units_of(r));

@@ -38,3 +38,8 @@ says beamhours curve good.yaml --show cuonts
 says beamhours curve good.yaml --setting L
 says beamhours curve good.yaml --arm B
 says beamhours curve good.yaml --structure kelly-2004
+cp good.yaml kept.yaml && ln -s kept.yaml other.csv
+says beamhours table kept.yaml --output other.csv
+says beamhours curve kept.yaml -o ./kept.yaml
+cmp good.yaml kept.yaml && says beamhours point -p electron --scatterer 1H -E 1GeV -a 9deg --angle 8deg
+cp "$build/beamhours" alone && (unset BEAMHOURS_MATERIALS; cd / && says "$OLDPWD/alone" materials)

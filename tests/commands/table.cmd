@@ -15,3 +15,4 @@ beamhours table $plan --columns setting,counts --output out.txt 2>/dev/null; gre
 for columns in 80 100 120 200; do COLUMNS=$columns beamhours table plans/lead.yaml 2>/dev/null | awk '/^setting/ { print; print length }'; done
 for plan in plans/*.yaml; do COLUMNS=80 beamhours table "$plan" 2>/dev/null | awk -v plan="$plan" '{ gsub(/[\200-\277]/, "") } length > 80 { wide++ } END { if (wide) print plan ": " wide " lines wider than 80, long names" }'; done
 for plan in plans/*.yaml; do beamhours table "$plan" --format json 2>/dev/null | tail -2 | head -1 | sed 's/[0-9.]\{5,\}/VERSION/'; done
+beamhours keys columns | head -n 4

@@ -65,7 +65,7 @@ static const struct {
     {{.columns = "cuonts"}, "no column \"cuonts\"; did you mean counts?"},
     {{.columns = "counts,"}, "keys such as q2_GeV2"},
     {{.columns = ""}, "keys such as q2_GeV2"},
-    {{.columns = "completely-different"}, "keys such as angle_deg"},
+    {{.columns = "completely-different"}, "beamhours keys columns"},
     {{.columns = "a-key-that-is-longer-than-any-key-of-any-table-that-was-ever-printed-here"},
      "too long"},
     {{.sort = "angel_deg"}, "did you mean angle_deg?"},

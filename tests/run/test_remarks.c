@@ -36,6 +36,9 @@ static const struct {
     {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, rate_limit: 1 kHz}]\n"
                    "settings: [{name: K, angle: 20 deg, time: 1 h}]\n",
      "over its limit of 1000 Hz, in K; a prescale", 5},
+    {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, energy_cut: 15 MeV, dead_time: 20 us}]\n"
+                   "settings: [{name: K, angle: 20 deg, time: 1 h}]\n",
+     "of its triggers in K, the rest falls into its dead time", 5},
     {BEAM HYDROGEN "arms: [{name: A, in_plane: ±90 mrad, out_of_plane: ±5 mrad, bins: 3}]\n"
                    "settings: [{name: K, angle: 90 deg, goal: 0.001 %, goal_for: each-bin}]\n"
                    "schedule: {available: 10 h}\n",

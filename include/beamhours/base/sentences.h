@@ -106,10 +106,12 @@
 #define BH_REFUSE_PLACE "there is no place %zu among %zu; give one from 1 to %zu"
 
 /* units: quantities.  First the text, then what is needed and two units that would do. */
-#define BH_SAY_NO_NUMBER       "'%s' does not begin with a number: %s is needed, in %s"
-#define BH_SAY_NO_QUANTITY     "'%s' is not one number with one unit: %s is needed, in %s"
-#define BH_SAY_NO_UNIT         "'%s' has no unit: %s is needed, in %s"
-#define BH_SAY_BARE_SHARE      "'%s' has no unit: for a share write %s %%"
+#define BH_SAY_NO_NUMBER   "'%s' does not begin with a number: %s is needed, in %s"
+#define BH_SAY_NO_QUANTITY "'%s' is not one number with one unit: %s is needed, in %s"
+#define BH_SAY_NO_UNIT     "'%s' has no unit: %s is needed, in %s"
+#define BH_SAY_BARE_SHARE  "'%s' has no unit: for a share write %s%s %%"
+#define BH_SAY_AREAL_DENSITY \
+    "'%s' is a mass per area, which the key areal_density takes: a length is needed, in %s"
 #define BH_SAY_UNKNOWN_UNIT    "'%s' has the unknown unit '%s': %s is needed, in %s"
 #define BH_SAY_MISSPELT_UNIT   "'%s' has the unknown unit '%s' ('%s'?): %s is needed, in %s"
 #define BH_SAY_WRONG_DIMENSION "'%s' is %s: %s is needed, in %s"
@@ -363,6 +365,9 @@
 #define BH_WARN_RATE_LIMIT                                                                         \
     "%s would record %s Hz while beam is on, over its limit of %s Hz, in %s; a prescale %d times " \
     "as large, a lower current or a smaller acceptance would do"
+#define BH_WARN_DEAD                                                                          \
+    "%s is ready for only %s %% of its triggers in %s, the rest falls into its dead time; a " \
+    "prescale, a lower current or a smaller acceptance would do"
 #define BH_WARN_BIN_TOO_SLOW                                                                   \
     "bin %s of %s needs %s h to reach the goal, and %s h are available; fewer bins, a weaker " \
     "goal or goal_for: acceptance would do"

@@ -10,7 +10,7 @@
 #define BH_COMMANDS(X)                                                                             \
     X(BH_CMD_NEW, "new", "FILE", "write a short plan that already computes", bh_cmd_new)           \
     X(BH_CMD_PLANS, "plans", "[DEMO]", "list the demonstration plans, or print one", bh_cmd_plans) \
-    X(BH_CMD_KEYS, "keys", "[KEY]", "what a plan file can say", bh_cmd_keys)                       \
+    X(BH_CMD_KEYS, "keys", "[KEY]", "what a plan file can say; columns: a run table", bh_cmd_keys) \
     X(BH_CMD_CHECK, "check", "PLAN...", "errors and warnings of plans, nothing else",              \
       bh_cmd_check)                                                                                \
     X(BH_CMD_TABLE, "table", "PLAN", "the run table", bh_cmd_table)                                \

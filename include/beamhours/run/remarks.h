@@ -19,6 +19,7 @@ typedef enum {
     BH_REMARK_RADIATION,     /* radiative correction outside its validity: `what` */
     BH_REMARK_NO_EMPTY,      /* windows, and no time on an empty target */
     BH_REMARK_LIMIT,         /* high [1/s]: recorded rate over `from` [1/s], the limit */
+    BH_REMARK_DEAD,          /* low [%]: live share after dead time alone, far below 100 % */
     BH_REMARK_BIN_TOO_SLOW,  /* high [h]: need of bin `what`; from [h]: what is available */
     BH_REMARK_NOT_CONVERGED, /* an average over an acceptance */
     BH_REMARK_NO_SIGNAL,     /* nothing of the signal lands in the acceptance */
@@ -48,7 +49,7 @@ bh_remarks *bh_remarks_new(void);
 void bh_remarks_free(bh_remarks *remarks);
 
 /* Notes `remark`; texts are copied.  One of the same kind about the same who and what at the same
- * line is widened (lowest low, highest high) and counted instead.  Those up to BH_REMARK_LIMIT,
+ * line is widened (lowest low, highest high) and counted instead.  Those up to BH_REMARK_DEAD,
  * which concern the whole plan, are joined whatever the line when `from` is the same, and those
  * on structure models and backgrounds for all nuclides together. */
 void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark);
