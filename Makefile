@@ -4,20 +4,21 @@ CFLAGS ?= -O2 -g
 HARDEN ?= -U_FORTIFY_SOURCE -D_FORTIFY_SOURCE=3 -fstack-protector-strong
 BUILD  ?= build
 PKGS := gsl yaml-0.1 json-c
+DRAW := cairo pangocairo # of the program alone, not of the library
 WARN  := -Wall -Wextra -Wpedantic -Wconversion -Wshadow -Wstrict-prototypes -Wmissing-prototypes \
          -Wcast-qual -Wwrite-strings -Wvla -Wformat=2 -Wundef
 SAN   := -O1 -g -fsanitize=address,undefined -fno-sanitize-recover=all
-STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(shell pkg-config --cflags $(PKGS) 2>/dev/null)
+STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(shell pkg-config --cflags $(PKGS) $(DRAW) 2>/dev/null)
 FAST  := -fopenmp-simd -fno-math-errno  # never -ffast-math: NaN and infinity are part of what is checked
 ALL_C  = $(STD) -fPIC -fvisibility=hidden $(WARN) $(WERROR) $(HARDEN) $(CPPFLAGS) $(FAST) $(CFLAGS)
 LINK   = $(quiet) $(CC) $(CFLAGS) -Wl,-z,relro,-z,now,--as-needed $(LDFLAGS) -o $@
 LIBS  := $(shell pkg-config --libs $(PKGS) 2>/dev/null) -lm
-SCREEN_LIBS := $(shell pkg-config --libs ncursesw 2>/dev/null) -pthread
+FRONT_LIBS := $(shell pkg-config --libs ncursesw $(DRAW) 2>/dev/null) -pthread
 TEST_LIBS  := $(shell pkg-config --libs check vterm 2>/dev/null)
 
 MAIN     := src/command/main.c
-FRONT    := $(sort $(filter-out $(MAIN),$(shell find src -path 'src/command/*.c' -o -path 'src/screen/*.c')))
-ENGINE   := $(sort $(shell find src -name '*.c' ! -path 'src/command/*' ! -path 'src/screen/*'))
+FRONT    := $(sort $(filter-out $(MAIN),$(shell find src/command src/screen src/report -name '*.c' 2>/dev/null)))
+ENGINE   := $(sort $(filter-out $(FRONT) $(MAIN),$(shell find src -name '*.c')))
 HEADERS  := $(sort $(shell find include -name '*.h'))
 TESTS    := $(sort $(shell find tests -name 'test_*.c'))
 BENCH    := $(sort $(shell find tests -name 'bench_*.c'))
@@ -36,21 +37,21 @@ MAKEFLAGS += --no-print-directory
 COMPLETE := $(addprefix $(BUILD)/completions/,bash zsh fish)
 all: $(addprefix $(BUILD)/,beamhours libbeamhours.a libbeamhours.so.0) $(COMPLETE) ## build the program and the library
 everything: all $(call bin,$(TESTS) $(BENCH))            ## and the tests, without running them
-$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(SCREEN_LIBS) $(LIBS)
+$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(FRONT_LIBS) $(LIBS)
 $(BUILD)/libbeamhours.a $(BUILD)/libbeamhours.so.0: $(call obj,$(ENGINE)) $(FOLDERS)
 $(BUILD)/front.a: $(call obj,$(FRONT)) $(FOLDERS)
 $(BUILD)/%.a: ; $(quiet) rm -f $@ && ar rcs $@ $(filter %.o,$^)
 $(BUILD)/%.so.0: ; $(LINK) -shared -Wl,-soname,$(@F) $(if $(HARDEN),-Xlinker --no-undefined) $(filter %.o,$^) $(LIBS)
 TTY := $(filter $(BUILD)/tests/terminal/%,$(call bin,$(TESTS) $(BENCH)))
 $(TTY): $(BUILD)/tests/terminal/tty.o
-$(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $(filter %.o,$^) $(filter %.a,$^) $(TEST_LIBS) $(SCREEN_LIBS) $(LIBS)
+$(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $(filter %.o,$^) $(filter %.a,$^) $(TEST_LIBS) $(FRONT_LIBS) $(LIBS)
 $(call bin,$(filter %_faults.c,$(TESTS))): LDFLAGS += $(patsubst %,-Xlinker --wrap=%,malloc calloc realloc write fsync fchmod close rename)
 $(call bin,$(FUZZ)): %: %.o $(BUILD)/libbeamhours.a ; $(LINK) -fsanitize=fuzzer $^ $(LIBS)
 $(BUILD)/%.o: %.c $(BUILD)/flags ; $(quiet) mkdir -p $(@D) && $(CC) $(ALL_C) -MMD -MP -c -o $@ $<
 $(COMPLETE): $(BUILD)/completions/%: include/beamhours/command/options.h src/complete.awk
 	$(quiet) mkdir -p $(@D) && printf '#include "beamhours/command/options.h"\n#define ROW(...) @@ __VA_ARGS__\nBH_COMMANDS(ROW)\nBH_OPTIONS(ROW)\n' | \
 	 $(CC) -E -P -Iinclude - | awk -v shell=$* -f src/complete.awk >$@
-FLAGS := $(CC) $(ALL_C) $(LDFLAGS) $(LIBS) $(TEST_LIBS)
+FLAGS := $(CC) $(ALL_C) $(LDFLAGS) $(LIBS) $(FRONT_LIBS) $(TEST_LIBS)
 $(BUILD)/flags: $(if $(subst x$(FLAGS),,x$(file <$(BUILD)/flags)),changed) # other flags than last time: compile all again
 	@mkdir -p $(@D) && printf '%s\n' '$(subst ','\'',$(FLAGS))' >$@
 
@@ -73,9 +74,10 @@ lint: floors docs-lint                                   ## layout, warnings of 
 	 --suppress=missingIncludeSystem --error-exitcode=1 -Iinclude src
 floors: ; @awk -f tests/rules/floors.awk $(OURS) $(HEADERS) ## a room includes only lower rooms
 docs-lint: ; @awk -f tests/rules/headers.awk $(HEADERS)  ## every number in a header has its unit
-globals:                                                 ## no writable data in the library
-	@$(MAKE) -s CFLAGS=-O0 HARDEN= BUILD=$(BUILD)/globals $(BUILD)/globals/libbeamhours.a
-	@objdump -wht $(patsubst %.c,$(BUILD)/globals/%.o,$(ENGINE)) | awk -v objects=$(words $(ENGINE)) -f tests/rules/globals.awk
+GUARDED := $(ENGINE) $(filter src/report/%,$(FRONT))
+globals:                                                 ## no writable data in the library and in reports
+	@$(MAKE) -s CFLAGS=-O0 HARDEN= BUILD=$(BUILD)/globals $(patsubst %.c,$(BUILD)/globals/%.o,$(GUARDED))
+	@objdump -wht $(patsubst %.c,$(BUILD)/globals/%.o,$(GUARDED)) | awk -v objects=$(words $(GUARDED)) -f tests/rules/globals.awk
 sanitize:                                                ## the tests under ASan and UBSan
 	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
 valgrind:                                                ## the tests under valgrind
@@ -87,7 +89,7 @@ coverage:                                                ## lines of src/ that t
 	@rm -rf $(BUILD)/cov && $(MAKE) check-run CC=gcc HARDEN= BUILD=$(BUILD)/cov CFLAGS='-O0 -g --coverage'
 	gcovr -r . --object-directory $(BUILD)/cov -f src/ --txt | awk -f tests/rules/coverage.awk
 mutate: everything                                       ## one sign, power, mass or factor wrong at a time: a test must notice
-	@CC='$(CC)' COMPILE='$(ALL_C) $(LDFLAGS)' LINKS='$(TEST_LIBS) $(LIBS)' sh tests/mutation/mutate.sh $(BUILD)
+	@CC='$(CC)' COMPILE='$(ALL_C) $(LDFLAGS)' LINKS='$(TEST_LIBS) $(FRONT_LIBS) $(LIBS)' sh tests/mutation/mutate.sh $(BUILD)
 fuzz:                                                    ## each harness for FUZZ_SECONDS (10)
 	@$(MAKE) -k fuzz-run CC=clang HARDEN= BUILD=$(BUILD)/fuzz CFLAGS='$(SAN) -fsanitize=fuzzer-no-link'
 fuzz-run: $(call run,$(FUZZ))

@@ -17,6 +17,9 @@ library libgsl-dev gsl
 library libyaml-dev yaml-0.1
 library libjson-c-dev json-c
 library libncurses-dev ncursesw
+library libcairo2-dev cairo
+library libpango1.0-dev pangocairo
+need fonts-dejavu-core sh -c 'ls /usr/share/fonts/truetype/dejavu/DejaVuSans.ttf || fc-list | grep DejaVuSans.ttf'
 case $want in
 check | lint)
     library check check
@@ -25,6 +28,8 @@ check | lint)
 esac
 if [ "$want" = lint ]; then
     for tool in clang clang-format clang-tidy cppcheck valgrind gcovr mandoc units zsh fish; do need $tool command -v $tool; done
+    need libxml2-utils command -v xmllint
+    need poppler-utils command -v pdffonts
     need libclang-rt-14-dev sh -c 'ls /usr/lib/llvm-*/lib/clang/*/lib/linux/libclang_rt.fuzzer-*.a'
     need python3-numpy sh -c '/usr/bin/python3 -c "import numpy"'
 fi

@@ -1,27 +1,34 @@
-/* cmd_curve.c - beamhours curve PLAN: a column against what varies, as text or CSV. */
-#include <math.h>
-#include <stdlib.h>
+/* cmd_curve.c - beamhours curve PLAN: a column against what varies, listed or drawn. */
 #include <string.h>
 #include <sysexits.h>
+#include <unistd.h>
 
-#include "beamhours/base/number.h"
+#include "beamhours.h"
+#include "beamhours/base/file.h"
 #include "beamhours/command/complain.h"
 #include "beamhours/command/input.h"
 #include "beamhours/command/places.h"
-#include "beamhours/physics/structure.h"
-#include "beamhours/report/csv.h"
-#include "beamhours/run/curve.h"
+#include "beamhours/report/curve_figure.h"
 
-enum { MOST = 8, CELL = 16, NARROW = 12, MARKS = 12 };
+enum { LONGEST_DATA = 1 << 20 };
 
-struct curves {
-    bh_against against;
-    bh_column_id column;
-    char *structures; /* own copy of the list; NULL: the plan's choice */
-    const char *name[MOST];
-    bh_curve *curve[MOST];
-    size_t count;
+/* What was asked for, and what came of it. */
+struct job {
+    const bh_arguments *a;
+    const char *format;
+    int shown;
+    bh_curves_request request;
+    bh_curves curves;
+    bh_input in;
+    bh_arena *arena;
+    bh_text data; /* of --data */
+    bh_measured measured;
 };
+
+static bool is_drawn(const char *format)
+{
+    return strcmp(format, "text") != 0 && strcmp(format, "csv") != 0;
+}
 
 static int variable(const bh_arguments *a, bh_against *out)
 {
@@ -38,209 +45,137 @@ static int variable(const bh_arguments *a, bh_against *out)
     return bh_usage(a, "--against is angle, energy, q2 or epsilon");
 }
 
-static int column(const bh_arguments *a, bh_column_id *out)
+static int column(const bh_arguments *a, int *out)
 {
     const char *given = a->value[BH_OPT_SHOW];
     char sentence[160];
-    *out = BH_COL_POINT_CROSS_SECTION;
-    if (!given)
+    *out = given ? bh_shown_find(given) : BH_COL_POINT_CROSS_SECTION;
+    if (*out >= 0)
         return 0;
-    const int id = bh_column_find(given);
-    if (id >= 0 && bh_column_at(id)->kind == BH_CELL_NUMBER) {
-        *out = (bh_column_id)id;
-        return 0;
-    }
-    const char *near = bh_column_suggest(given);
+    const char *near = bh_shown_suggest(given);
     (void)snprintf(sentence, sizeof sentence, "--show: no column \"%.60s\" with numbers%s%s%s",
                    given, near ? "; did you mean " : "", near ? near : "", near ? "?" : "");
     return bh_usage(a, sentence);
 }
 
-/* Splits --structure A,B. */
-static int structures(const bh_arguments *a, struct curves *c)
+/* A terminal shows no picture, and a figure needs its name where it is not piped. */
+static int destination(const struct job *job)
 {
-    const char *given = a->value[BH_OPT_STRUCTURE];
-    c->count = 1;
-    if (!given)
-        return 0;
-    c->structures = strdup(given);
-    if (!c->structures)
-        return bh_complain(stderr, &(bh_error){.code = BH_ENOMEM});
-    c->count = 0;
-    for (char *s = c->structures; s;) {
-        char *comma = strchr(s, ',');
-        if (comma)
-            *comma = '\0';
-        if (!*s)
-            return bh_usage(a, "--structure has an empty name; `beamhours models` lists them");
-        if (c->count == MOST)
-            return bh_usage(a, "--structure takes 8 names at most");
-        c->name[c->count++] = s;
-        s = comma ? comma + 1 : NULL;
-    }
+    if (job->a->value[BH_OPT_DATA] && !is_drawn(job->format))
+        return bh_usage(job->a, "--data is drawn: it needs --format svg, pdf or png");
+    if ((strcmp(job->format, "pdf") == 0 || strcmp(job->format, "png") == 0) &&
+        !job->a->value[BH_OPT_OUTPUT] && isatty(STDOUT_FILENO))
+        return bh_usage(job->a, "a terminal shows no figure; write it with --output FILE");
     return 0;
 }
 
-static int compute(const bh_arguments *a, const bh_plan *plan, struct curves *c)
+static int wrong(const struct job *job, const bh_error *err)
 {
-    for (size_t i = 0; i < c->count; i++) {
-        const bh_curve_request r = {a->value[BH_OPT_SETTING], a->value[BH_OPT_ARM], c->against,
-                                    c->name[i]};
-        bh_error err = {.code = BH_OK};
-        c->curve[i] = bh_curve_new(plan, &r, &err);
-        if (!c->curve[i])
-            return err.code == BH_EDOMAIN ? bh_usage(a, err.text) : bh_complain(stderr, &err);
+    return err->code == BH_EDOMAIN ? bh_usage(job->a, err->text) : bh_complain(stderr, err);
+}
+
+/* --- drawn --- */
+
+static int read_data(struct job *job)
+{
+    const char *path = job->a->value[BH_OPT_DATA];
+    bh_error err = {.code = BH_OK};
+    const bh_measured_request r = {path, bh_curve_key(job->curves.against),
+                                   bh_shown_key(job->shown)};
+    if (bh_file_read(path, LONGEST_DATA, &job->data, &err))
+        return bh_complain(stderr, &err);
+    bh_code bad = BH_OK;
+    if (job->data.length > LONGEST_DATA) {
+        bad = bh_fail(&err, BH_EPLAN, "the file is longer than 1 MiB; draw fewer points");
+        (void)bh_fail_at(&err, bad, (bh_mark){path, 0, 0});
+    } else {
+        bad = bh_measured_read(job->data.bytes ? job->data.bytes : "", job->data.length, &r,
+                               job->arena, &job->measured, &err);
     }
-    return 0;
+    return bad ? bh_complain(stderr, &err) : 0;
 }
 
-static void as_csv(const struct curves *c, bh_text *out)
+static int draw(struct job *job)
 {
-    const char *key = bh_column_at((int)c->column)->key;
-    bh_text_append(out, bh_curve_key(c->against));
-    for (size_t k = 0; k < c->count; k++) {
-        bh_text head = {0};
-        bh_text_appendf(&head, "%s%s%s", key, c->name[k] ? " " : "", c->name[k] ? c->name[k] : "");
-        bh_text_append(out, ",");
-        bh_csv_field(out, head.bytes ? head.bytes : key);
-        bh_text_free(&head);
-    }
-    bh_text_append(out, ",settings\r\n");
-    for (size_t i = 0; i < bh_curve_count(c->curve[0]); i++) {
-        bh_text_append_number(out, bh_curve_x(c->curve[0], i));
-        for (size_t k = 0; k < c->count; k++) {
-            const double y = bh_curve_y(c->curve[k], i, c->column);
-            bh_text_append(out, ",");
-            if (isfinite(y))
-                bh_text_append_number(out, y);
-        }
-        bh_text_append(out, ",");
-        bh_csv_field(out, bh_curve_marks(c->curve[0], i));
-        bh_text_append(out, "\r\n");
-    }
-}
-
-/* Where the smallest and largest values lie; logarithmic where all are positive. */
-struct span {
-    double lo, hi;
-    bool logarithmic;
-};
-
-static struct span span_of(const struct curves *c)
-{
-    struct span s = {INFINITY, -INFINITY, true};
-    for (size_t k = 0; k < c->count; k++)
-        for (size_t i = 0; i < bh_curve_count(c->curve[k]); i++) {
-            const double y = bh_curve_y(c->curve[k], i, c->column);
-            if (!isfinite(y))
-                continue;
-            s.lo = fmin(s.lo, y);
-            s.hi = fmax(s.hi, y);
-        }
-    s.logarithmic = s.lo > 0.0;
-    return s;
-}
-
-/* Returns 0 to 1 across the plot. */
-static double place(const struct span *s, double y)
-{
-    if (!(s->hi > s->lo))
-        return 0.5;
-    return s->logarithmic ? log(y / s->lo) / log(s->hi / s->lo) : (y - s->lo) / (s->hi - s->lo);
-}
-
-/* A row of marks: a digit a curve where there are several. */
-static void plot_row(const struct curves *c, const struct span *s, size_t i, int width,
-                     bh_text *out)
-{
-    char row[128];
-    memset(row, ' ', sizeof row);
-    for (size_t k = c->count; k-- > 0;) {
-        const double y = bh_curve_y(c->curve[k], i, c->column);
-        if (isfinite(y))
-            row[(int)(place(s, y) * (width - 1))] =
-                (c->count > 1 ? "12345678" : "*")[c->count > 1 ? k : 0];
-    }
-    bh_text_appendf(out, " |%.*s|", width, row);
-}
-
-static int cell_width(const char *name)
-{
-    const int length = name ? (int)strlen(name) : 0;
-    return length > NARROW ? length : NARROW;
-}
-
-static void text_row(const struct curves *c, const struct span *s, size_t i, int plot, bh_text *out)
-{
-    char number[BH_NUMBER_SIZE];
-    (void)bh_number_digits(bh_curve_x(c->curve[0], i), 5, number, sizeof number);
-    bh_text_appendf(out, "%*s", CELL, number);
-    for (size_t k = 0; k < c->count; k++) {
-        const double y = bh_curve_y(c->curve[k], i, c->column);
-        (void)bh_number_digits(y, 5, number, sizeof number);
-        bh_text_appendf(out, " %*s", cell_width(c->name[k]), isfinite(y) ? number : "-");
-    }
-    plot_row(c, s, i, plot, out);
-    const char *marks = bh_curve_marks(c->curve[0], i);
-    bh_text_appendf(out, "%s%s\n", marks[0] ? " " : "", marks);
-}
-
-static void as_text(const struct curves *c, int width, bh_text *out)
-{
-    const struct span s = span_of(c);
-    int plot = width - CELL - MARKS - 3;
-    bh_text_appendf(out, "%s against %s; plot %s, settings at the right\n%*s",
-                    bh_column_at((int)c->column)->key, bh_curve_key(c->against),
-                    s.logarithmic ? "logarithmic" : "linear", CELL, bh_curve_key(c->against));
-    for (size_t k = 0; k < c->count; k++) {
-        bh_text_appendf(out, " %*s", cell_width(c->name[k]), c->name[k] ? c->name[k] : "value");
-        plot -= 1 + cell_width(c->name[k]);
-    }
-    bh_text_append(out, "\n");
-    plot = plot < 10 ? 10 : plot > 100 ? 100 : plot;
-    for (size_t i = 0; i < bh_curve_count(c->curve[0]); i++)
-        text_row(c, &s, i, plot, out);
-}
-
-static int show(const bh_arguments *a, const char *format, const bh_plan *plan)
-{
-    struct curves c = {.count = 0};
+    static const char *const formats[] = {"svg", "pdf", "png"};
+    const char *path = job->a->value[BH_OPT_DATA];
+    bh_figure_format format = BH_FIGURE_SVG;
+    while (strcmp(formats[format], job->format) != 0)
+        format++;
+    const bh_curve_picture picture = {
+        job->in.table, &job->curves, job->shown, path ? &job->measured : NULL, path, bh_version()};
+    bh_figure figure;
     bh_text out = {0};
-    int status = variable(a, &c.against);
+    bh_error err = {.code = BH_OK};
+    bh_code bad = bh_curve_figure(&picture, job->arena, &figure, &err);
+    if (!bad)
+        bad = bh_figure_write(&figure, format, &out, &err);
+    if (!bad)
+        return bh_output(&out, job->a->value[BH_OPT_OUTPUT]);
+    bh_text_free(&out);
+    return wrong(job, &err);
+}
+
+static int drawn(struct job *job)
+{
+    job->arena = bh_arena_new();
+    if (!job->arena)
+        return bh_complain(stderr, &(bh_error){.code = BH_ENOMEM});
+    int status = job->a->value[BH_OPT_DATA] ? read_data(job) : 0;
     if (status == 0)
-        status = column(a, &c.column);
+        status = bh_input_evaluate(&job->in, true);
     if (status == 0)
-        status = structures(a, &c);
-    if (status == 0)
-        status = compute(a, plan, &c);
-    if (status == 0) {
-        if (strcmp(format, "csv") == 0)
-            as_csv(&c, &out);
-        else
-            as_text(&c, bh_places_width(), &out);
-        status = bh_output(&out, a->value[BH_OPT_OUTPUT]);
-    }
-    for (size_t k = 0; k < MOST; k++)
-        bh_curve_free(c.curve[k]);
-    free(c.structures);
-    return status;
+        bh_say_cautions(stderr, job->in.table);
+    return status == 0 ? draw(job) : status;
+}
+
+/* --- listed --- */
+
+static int listed(const struct job *job)
+{
+    bh_text out = {0};
+    if (strcmp(job->format, "csv") == 0)
+        bh_curves_csv(&job->curves, job->shown, &out);
+    else
+        bh_curves_text(&job->curves, job->shown, bh_places_width(), &out);
+    return bh_output(&out, job->a->value[BH_OPT_OUTPUT]);
+}
+
+/* --- all of it --- */
+
+static int run(struct job *job)
+{
+    bh_error err = {.code = BH_OK};
+    bh_say_diags(stderr, job->in.diags);
+    if (bh_curves_make(job->in.plan, &job->request, &job->curves, &err))
+        return wrong(job, &err);
+    return is_drawn(job->format) ? drawn(job) : listed(job);
 }
 
 int bh_cmd_curve(const bh_arguments *arguments)
 {
-    const char *format = bh_arguments_format(arguments, BH_OPT_CURVE_FORMAT);
-    if (!format)
+    struct job job = {.a = arguments,
+                      .format = bh_arguments_format(arguments, BH_OPT_CURVE_FORMAT)};
+    if (!job.format)
         return EX_USAGE;
     if (arguments->word_count != 1)
         return bh_usage(arguments, "needs one plan (or - for standard input)");
-    bh_input in;
-    int status = bh_input_open(arguments->words[0], &in);
-    if (status == 0)
-        status = bh_input_plan(&in, arguments);
-    if (status == 0) {
-        bh_say_diags(stderr, in.diags);
-        status = show(arguments, format, in.plan);
-    }
-    bh_input_close(&in);
+    job.request = (bh_curves_request){.setting = arguments->value[BH_OPT_SETTING],
+                                      .arm = arguments->value[BH_OPT_ARM],
+                                      .structures = arguments->value[BH_OPT_STRUCTURE],
+                                      .coulombs = arguments->value[BH_OPT_COULOMB],
+                                      .bins_do = is_drawn(job.format)};
+    int status = variable(arguments, &job.request.against);
+    status = status ? status : column(arguments, &job.shown);
+    status = status ? status : destination(&job);
+    if (status)
+        return status;
+    status = bh_input_open(arguments->words[0], &job.in);
+    status = status ? status : bh_input_plan(&job.in, arguments);
+    status = status ? status : run(&job);
+    bh_curves_free(&job.curves);
+    bh_arena_free(job.arena);
+    bh_text_free(&job.data);
+    bh_input_close(&job.in);
     return status;
 }

@@ -45,11 +45,8 @@ static bh_code render(const char *format, const bh_selection *before, const bh_s
 static void say_aside(const bh_table *table, const char *format)
 {
     bh_say_diags(stderr, bh_table_warnings(table));
-    for (size_t i = 0; strcmp(format, "csv") == 0 && i < bh_table_cautions(table); i++) {
-        const bh_caution *c = bh_table_caution(table, i);
-        bh_print(stderr, "%s:%d:%d: caution: %s: %s\n", c->at.file ? c->at.file : "-", c->at.line,
-                 c->at.column, c->key, c->text);
-    }
+    if (strcmp(format, "csv") == 0)
+        bh_say_cautions(stderr, table);
 }
 
 static int show(const bh_arguments *arguments, const char *format, const bh_input *before,

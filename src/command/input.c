@@ -113,6 +113,15 @@ int bh_input_table(const char *name, const bh_arguments *arguments, bool bins, b
     return status == 0 ? bh_input_evaluate(in, bins) : status;
 }
 
+void bh_say_cautions(FILE *to, const bh_table *table)
+{
+    for (size_t i = 0; i < bh_table_cautions(table); i++) {
+        const bh_caution *c = bh_table_caution(table, i);
+        bh_print(to, "%s:%d:%d: caution: %s: %s\n", c->at.file ? c->at.file : "-", c->at.line,
+                 c->at.column, c->key, c->text);
+    }
+}
+
 static int to_stdout(const bh_text *text)
 {
     if (text->length && fwrite(text->bytes, 1, text->length, stdout) != text->length)

@@ -5,7 +5,7 @@
 #   #define NAME number         /* [unit] +- uncertainty, or exact; source */
 # A new unit is one word in this list.
 BEGIN {
-    for (n = split("MeV GeV c u rad deg sr cm g fm ub s h Hz K Pa A C V T W mol bytes", w, " "); n > 0; n--) known[w[n]] = 1
+    for (n = split("MeV GeV c u pt rad deg sr cm g fm ub s h Hz K Pa A C V T W mol bytes", w, " "); n > 0; n--) known[w[n]] = 1
 }
 FNR == 1 { finish(); file = FILENAME; start() }
 { read_line($0) }

@@ -36,6 +36,9 @@ int bh_input_table(const char *name, const bh_arguments *arguments, bool bins, b
 /* Writes "FILE:LINE:COLUMN: [warning: ]KEY: text", one a line, to `to`. */
 void bh_say_diags(FILE *to, const bh_diags *diags);
 
+/* Writes the cautions of a table likewise: what has no room for them shows them there. */
+void bh_say_cautions(FILE *to, const bh_table *table);
+
 /* Writes `text` to file `path`, or to standard output where that is NULL, and frees it.
  * Returns 0 or the exit status after saying why. */
 int bh_output(bh_text *text, const char *path);

@@ -64,7 +64,9 @@ typedef enum {
     X(BH_OPT_Q2, 0, "q2", "Q2", "point", "", "four-momentum transfer squared")                     \
     X(BH_OPT_EPSILON, 0, "epsilon", "N", "point", "", "virtual-photon polarisation")               \
     X(BH_OPT_STRUCTURE, 0, "structure", "NAME", "point,curve", "", "structure model (curve: A,B)") \
-    X(BH_OPT_COULOMB, 0, "coulomb", "NAME", "point", "default,plane-wave", "Coulomb model")        \
+    X(BH_OPT_COULOMB, 0, "coulomb", "NAME", "point,curve", "default,plane-wave",                   \
+      "Coulomb model (curve: A,B)")                                                                \
+    X(BH_OPT_DATA, 0, "data", "FILE", "curve", "file", "draw published points from a CSV table")   \
     X(BH_OPT_RADIATIVE, 0, "radiative", "NAME", "point",                                           \
       "default,none,schwinger,mo-tsai,maximon-tjon", "internal radiative correction")              \
     X(BH_OPT_ENERGY_CUT, 0, "energy-cut", "E", "point", "",                                        \
@@ -80,7 +82,8 @@ typedef enum {
       "text (default), csv or json")                                                               \
     X(BH_OPT_LIST_FORMAT, 'f', "format", "FORMAT", "point,materials,models", "text,json",          \
       "text (default) or json")                                                                    \
-    X(BH_OPT_CURVE_FORMAT, 'f', "format", "FORMAT", "curve", "text,csv", "text (default) or csv")  \
+    X(BH_OPT_CURVE_FORMAT, 'f', "format", "FORMAT", "curve", "text,csv,svg,pdf,png",               \
+      "text (default), csv, or a figure: svg, pdf, png")                                           \
     X(BH_OPT_OUTPUT, 'o', "output", "FILE", "table,curve", "file",                                 \
       "write to FILE, whole or not at all")                                                        \
     X(BH_OPT_ASCII, 0, "ascii", "", "edit", "", "draw with plain letters only")                    \

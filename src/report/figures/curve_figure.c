@@ -1,0 +1,406 @@
+/* curve_figure.c - gathers points in the units of the keys, looks how far they reach, chooses axes
+ * and units, and only then scales. */
+#include "beamhours/report/curve_figure.h"
+
+#include <math.h>
+#include <stdarg.h>
+#include <stdio.h>
+#include <string.h>
+
+#include "beamhours/base/number.h"
+#include "beamhours/physics/structure.h"
+#include "beamhours/report/stands.h"
+#include "beamhours/units/constants.h"
+#include "beamhours/units/nuclide.h"
+
+static const double logarithmic_from = 20.0; /* ratio of the largest to the smallest */
+
+enum { MOST_SERIES = BH_MOST_CURVES + 1 + BH_MOST_SOURCES };
+
+/* How far numbers reach. */
+struct reach {
+    double lo, hi;
+    bool positive;
+};
+
+struct maker {
+    const bh_curve_picture *p;
+    bh_arena *arena;
+    bh_figure *out;
+    bh_error *err;
+    struct reach x, y;
+    bh_figure_series series[MOST_SERIES];
+    bh_figure_point *points[MOST_SERIES]; /* of each */
+    double *band;                         /* x, low, high, one behind the other */
+    bh_figure_point *planned;
+    size_t planned_count;
+    bh_figure_span *spans;
+    double **edges;     /* of each */
+    const char *reason; /* why a planned row is empty */
+    bool systematic;    /* some planned point has it */
+};
+
+static bh_code no_memory(const struct maker *m)
+{
+    return bh_fail(m->err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+}
+
+static void widen(struct reach *r, double value)
+{
+    if (!isfinite(value))
+        return;
+    r->lo = fmin(r->lo, value);
+    r->hi = fmax(r->hi, value);
+    r->positive = r->positive && value > 0.0;
+}
+
+/* What varies, as a column. */
+static int variable(const struct maker *m)
+{
+    static const int columns[] = {BH_COL_ANGLE, BH_COL_BEAM_KINETIC, BH_COL_Q2, BH_COL_EPSILON};
+    return columns[m->p->curves->against];
+}
+
+/* A text of the arena, "" without memory. */
+static const char *say(bh_arena *arena, const char *fmt, ...) BH_PRINTF(2, 3);
+
+static const char *say(bh_arena *arena, const char *fmt, ...)
+{
+    va_list args, again;
+    va_start(args, fmt);
+    va_copy(again, args);
+    const int length = vsnprintf(NULL, 0, fmt, args);
+    char *text = length < 0 ? NULL : bh_arena_take(arena, (size_t)length + 1, 1);
+    if (text)
+        (void)vsnprintf(text, (size_t)length + 1, fmt, again);
+    va_end(again);
+    va_end(args);
+    return text ? text : "";
+}
+
+static void add_series(struct maker *m, const bh_figure_series *series, bh_figure_point *point)
+{
+    const size_t n = m->out->series_count++;
+    m->series[n] = *series;
+    m->series[n].point = m->points[n] = point;
+}
+
+/* --- curves --- */
+
+/* The name of the model that stands behind the plan's own choice. */
+static const char *own_model(const struct maker *m)
+{
+    const bh_target *t = m->p->curves->setting->target;
+    const bh_plan *plan = bh_table_plan(m->p->table);
+    size_t count = 0;
+    int a = t->scatterer_a;
+    const bh_nuclide *all = a ? NULL : bh_element_isotopes(t->scatterer_z, &count);
+    double most = -1.0;
+    for (size_t i = 0; i < count; i++)
+        if (all[i].abundance > most) {
+            most = all[i].abundance;
+            a = all[i].a;
+        }
+    bh_structure *s =
+        bh_structure_new(bh_plan_structure(plan, t->scatterer_z, a), t->scatterer_z, a, NULL);
+    const char *name = s ? say(m->arena, "%s", bh_structure_name(s)) : "as planned";
+    bh_structure_free(s);
+    return name;
+}
+
+static bh_code take_curves(struct maker *m)
+{
+    const bh_curves *c = m->p->curves;
+    for (size_t k = 0; k < c->count; k++) {
+        const size_t n = bh_curve_count(c->curve[k]);
+        bh_figure_point *point = bh_arena_take(m->arena, n + 1, sizeof *point);
+        if (!point)
+            return no_memory(m);
+        for (size_t i = 0; i < n; i++) {
+            point[i].x = bh_curve_x(c->curve[k], i);
+            point[i].y = bh_shown_on_curve(c->curve[k], i, m->p->shown);
+            widen(&m->y, point[i].y);
+            if (isfinite(point[i].y))
+                widen(&m->x, point[i].x);
+        }
+        const char *name = c->name[k] ? c->name[k] : own_model(m);
+        add_series(m, &(bh_figure_series){BH_SERIES_LINE, (int)k, name, n, NULL}, point);
+    }
+    return BH_OK;
+}
+
+/* The band from the lowest to the highest of several curves. */
+static bh_code take_band(struct maker *m)
+{
+    const size_t curves = m->out->series_count, n = curves ? m->series[0].count : 0;
+    if (curves < 2)
+        return BH_OK;
+    double *number = bh_arena_take(m->arena, 3 * n, sizeof *number);
+    bh_figure_band *band = bh_arena_take(m->arena, 1, sizeof *band);
+    if (!number || !band)
+        return no_memory(m);
+    double *x = number, *low = number + n, *high = number + 2 * n;
+    for (size_t i = 0; i < n; i++) {
+        x[i] = m->series[0].point[i].x;
+        low[i] = high[i] = m->series[0].point[i].y;
+        for (size_t k = 1; k < curves; k++) {
+            const double y = i < m->series[k].count ? m->series[k].point[i].y : (double)NAN;
+            low[i] = isnan(y) || isnan(low[i]) ? (double)NAN : fmin(low[i], y);
+            high[i] = isnan(y) || isnan(high[i]) ? (double)NAN : fmax(high[i], y);
+        }
+    }
+    m->band = number;
+    *band = (bh_figure_band){"spread of these models", n, x, low, high};
+    m->out->band = band;
+    m->out->band_count = 1;
+    return BH_OK;
+}
+
+/* --- settings --- */
+
+static void take_point(struct maker *m, bool bins, size_t row, double x)
+{
+    const bh_table *t = m->p->table;
+    bh_figure_point p = {x, bh_shown_number(t, bins, row, m->p->shown), 0.0, 0.0};
+    if (!isfinite(p.y) || !isfinite(x)) {
+        if (m->p->shown != BH_SHOWN_MERIT)
+            m->reason = bh_table_reason(t, bins, row, (bh_column_id)m->p->shown);
+        return;
+    }
+    if (bh_shown_measured(m->p->shown)) {
+        const double stat = bh_table_number(t, bins, row, BH_COL_STATISTICAL),
+                     syst = bh_table_number(t, bins, row, BH_COL_SYSTEMATIC);
+        p.inner = isfinite(stat) ? stat * fabs(p.y) : 0.0;
+        p.outer =
+            isfinite(syst) && isfinite(stat) && syst > 0.0 ? hypot(stat, syst) * fabs(p.y) : 0.0;
+        m->systematic = m->systematic || p.outer > 0.0;
+    }
+    widen(&m->x, x);
+    widen(&m->y, p.y);
+    const double half = fmax(p.inner, p.outer);
+    widen(&m->y, p.y + half);
+    if (p.y - half > 0.1 * p.y || p.y < 0.0)
+        widen(&m->y, p.y - half);
+    m->planned[m->planned_count++] = p;
+}
+
+static bh_code take_span(struct maker *m, const bh_setting *setting, const bh_stand *stand)
+{
+    const size_t n = (size_t)stand->edges;
+    double *edges = bh_arena_take(m->arena, n + 1, sizeof *edges);
+    if (!edges)
+        return no_memory(m);
+    memcpy(edges, stand->edge, n * sizeof *edges);
+    m->edges[m->out->span_count] = edges;
+    m->spans[m->out->span_count++] =
+        (bh_figure_span){setting->name, stand->from, stand->to, n, edges};
+    widen(&m->x, stand->from);
+    widen(&m->x, stand->to);
+    return BH_OK;
+}
+
+/* The bins of row `whole` of a ring, by their own angle or Q2. */
+static void take_ring(struct maker *m, const bh_place *whole)
+{
+    const bh_table *t = m->p->table;
+    for (size_t row = 0; row < bh_table_rows(t, true); row++) {
+        const bh_place at = bh_table_place(t, true, row);
+        if (at.setting == whole->setting && at.arm == whole->arm)
+            take_point(m, true, row, bh_table_number(t, true, row, (bh_column_id)variable(m)));
+    }
+}
+
+static bh_code take_settings(struct maker *m)
+{
+    const bh_table *t = m->p->table;
+    const bh_plan *plan = bh_table_plan(t);
+    const bh_curves *c = m->p->curves;
+    const bh_stand_origin origin = {c->setting, c->arm, c->against};
+    const size_t rows = bh_table_rows(t, false);
+    m->planned = bh_arena_take(m->arena, rows + bh_table_rows(t, true) + 1, sizeof *m->planned);
+    m->spans = bh_arena_take(m->arena, rows + 1, sizeof *m->spans);
+    m->edges = bh_arena_take(m->arena, rows + 1, sizeof *m->edges);
+    if (!m->planned || !m->spans || !m->edges)
+        return no_memory(m);
+    for (size_t row = 0; row < rows; row++) {
+        const bh_place at = bh_table_place(t, false, row);
+        const bh_setting *setting = &plan->settings[at.setting];
+        bh_stand stand;
+        if (!bh_stand_on(&origin, setting, &setting->arms[at.arm], &stand))
+            continue;
+        if (take_span(m, setting, &stand))
+            return BH_ENOMEM;
+        if (isnan(stand.at))
+            take_ring(m, &at);
+        else
+            take_point(m, false, row, stand.at);
+    }
+    m->out->span = m->spans;
+    m->out->span_name = c->against == BH_AGAINST_ANGLE || c->against == BH_AGAINST_Q2
+                            ? "settings: acceptance and bins"
+                            : "settings";
+    const char *name = !bh_shown_measured(m->p->shown) ? "planned"
+                       : m->systematic ? "planned; statistical and total uncertainty"
+                                       : "planned; statistical uncertainty";
+    if (m->planned_count)
+        add_series(m, &(bh_figure_series){BH_SERIES_PLANNED, 0, name, m->planned_count, NULL},
+                   m->planned);
+    return BH_OK;
+}
+
+/* --- published points --- */
+
+static bh_code take_measured(struct maker *m)
+{
+    const bh_measured *all = m->p->measured;
+    for (size_t s = 0; all && s < all->source_count; s++) {
+        bh_figure_point *point = bh_arena_take(m->arena, all->count, sizeof *point);
+        size_t n = 0;
+        if (!point)
+            return no_memory(m);
+        for (size_t i = 0; i < all->count; i++) {
+            const bh_measured_point *p = &all->point[i];
+            if (p->source != s)
+                continue;
+            point[n++] = (bh_figure_point){p->x, p->y, p->uncertainty, 0.0};
+            widen(&m->x, p->x);
+            widen(&m->y, p->y);
+            widen(&m->y, p->y + p->uncertainty);
+            if (p->y - p->uncertainty > 0.1 * p->y || p->y < 0.0)
+                widen(&m->y, p->y - p->uncertainty);
+        }
+        const char *name = all->source[s][0]     ? all->source[s]
+                           : m->p->measured_name ? m->p->measured_name
+                                                 : "published";
+        add_series(m, &(bh_figure_series){BH_SERIES_PUBLISHED, (int)s + 1, name, n, NULL}, point);
+    }
+    return BH_OK;
+}
+
+/* --- axes --- */
+
+static void scale_all(struct maker *m, double x, double y)
+{
+    for (size_t s = 0; s < m->out->series_count; s++)
+        for (size_t i = 0; i < m->series[s].count; i++) {
+            const bh_figure_point p = m->points[s][i];
+            m->points[s][i] = (bh_figure_point){p.x * x, p.y * y, p.inner * y, p.outer * y};
+        }
+    for (size_t b = 0; b < m->out->band_count; b++)
+        for (size_t i = 0; i < 3 * m->out->band[b].count; i++)
+            m->band[i] *= i < m->out->band[b].count ? x : y;
+    for (size_t i = 0; i < m->out->span_count; i++) {
+        m->spans[i].from *= x;
+        m->spans[i].to *= x;
+        for (size_t k = 0; k < m->spans[i].edge_count; k++)
+            m->edges[i][k] *= x;
+    }
+}
+
+/* What varies begins and ends close to what is drawn. */
+static bh_axis close_around(double lo, double hi, bool logarithmic)
+{
+    const double room = 0.02;
+    if (!(hi - lo > 1e-6 * fabs(hi)))
+        return bh_axis_around(lo, hi, logarithmic);
+    if (logarithmic) {
+        const double wider = pow(hi / lo, room);
+        return (bh_axis){lo / wider, hi * wider, true};
+    }
+    const double wider = room * (hi - lo);
+    return (bh_axis){lo >= 0.0 ? fmax(lo - wider, 0.0) : lo - wider, hi + wider, false};
+}
+
+static void choose_axes(struct maker *m)
+{
+    bh_figure *f = m->out;
+    const bool x_log = m->p->curves->against == BH_AGAINST_ENERGY && m->x.positive &&
+                       m->x.hi > 2.0 * m->x.lo,
+               y_log = m->y.positive && m->y.hi > logarithmic_from * m->y.lo;
+    const bh_shown_unit x = bh_shown_prefix(variable(m), m->x.lo, m->x.hi, x_log),
+                        y = bh_shown_prefix(m->p->shown, m->y.lo, m->y.hi, y_log);
+    f->x = (bh_figure_scale){bh_shown_words(variable(m)), say(m->arena, "%s", x.unit),
+                             close_around(m->x.lo * x.scale, m->x.hi * x.scale, x_log)};
+    f->y = (bh_figure_scale){bh_shown_words(m->p->shown), say(m->arena, "%s", y.unit),
+                             bh_axis_around(m->y.lo * y.scale, m->y.hi * y.scale, y_log)};
+    scale_all(m, x.scale, y.scale);
+}
+
+/* --- words --- */
+
+static const char *short_number(const struct maker *m, double value)
+{
+    char digits[BH_NUMBER_SIZE];
+    double rounded = value;
+    (void)bh_number_digits(value, 5, digits, sizeof digits);
+    if (!bh_number_parse(digits, NULL, &rounded))
+        (void)bh_number_print(rounded, digits, sizeof digits);
+    return say(m->arena, "%s", digits);
+}
+
+/* What the curve keeps: "electron, 855 MeV, on hydrogen; arm A". */
+static void put_subtitle(struct maker *m)
+{
+    const bh_curves *c = m->p->curves;
+    const bh_setting *s = c->setting;
+    const bh_target *t = s->target;
+    const char *energy =
+        c->against == BH_AGAINST_ENERGY || c->against == BH_AGAINST_EPSILON
+            ? ""
+            : say(m->arena, ", %s MeV", short_number(m, s->beam.kinetic_energy.value));
+    const char *angle =
+        c->against == BH_AGAINST_ENERGY && c->arm->arm.shape != BH_SHAPE_RING
+            ? say(m->arena, " at %s deg", short_number(m, c->arm->angle.value / BH_DEGREE))
+            : "";
+    const char *named = t->name.text ? t->name.text : t->scatterer.text;
+    m->out->subtitle =
+        say(m->arena, "%s%s on %s%s%s; arm %s%s; setting %s", s->beam.particle.name, energy,
+            t->scatterer.text, strcmp(named, t->scatterer.text) != 0 ? ", target " : "",
+            strcmp(named, t->scatterer.text) != 0 ? named : "",
+            c->arm->arm.name.text ? c->arm->arm.name.text : "", angle, s->name);
+}
+
+static void put_words(struct maker *m)
+{
+    bh_figure *f = m->out;
+    const bh_plan *plan = bh_table_plan(m->p->table);
+    const char *meaning = m->p->shown == BH_SHOWN_MERIT ? bh_shown_words(m->p->shown)
+                                                        : bh_column_at(m->p->shown)->meaning;
+    f->title = plan->title.text ? plan->title.text : "";
+    put_subtitle(m);
+    f->foot = m->p->version ? say(m->arena, "%s: %s. beamhours %s", bh_shown_key(m->p->shown),
+                                  meaning, m->p->version)
+                            : "";
+    f->description = say(
+        m->arena,
+        "%s [%s] against %s [%s], %s to %s; %zu curve%s, %zu planned and %zu published points. %s.",
+        f->y.words, f->y.unit, f->x.words, f->x.unit, short_number(m, f->x.axis.from),
+        short_number(m, f->x.axis.to), m->p->curves->count, m->p->curves->count == 1 ? "" : "s",
+        m->planned_count, m->p->measured ? m->p->measured->count : (size_t)0, f->subtitle);
+}
+
+bh_code bh_curve_figure(const bh_curve_picture *picture, bh_arena *arena, bh_figure *out,
+                        bh_error *err)
+{
+    struct maker *m = bh_arena_take(arena, 1, sizeof *m);
+    *out = (bh_figure){.title = ""};
+    if (!m)
+        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    const struct reach nothing = {INFINITY, -INFINITY, true};
+    *m = (struct maker){
+        .p = picture, .arena = arena, .out = out, .err = err, .x = nothing, .y = nothing};
+    out->series = m->series;
+    bh_code bad = take_curves(m);
+    bad = bad ? bad : take_band(m);
+    bad = bad ? bad : take_settings(m);
+    bad = bad ? bad : take_measured(m);
+    if (bad)
+        return bad;
+    if (!(m->y.lo <= m->y.hi) || !(m->x.lo <= m->x.hi))
+        return bh_fail(
+            err, BH_EDOMAIN, "there is nothing to draw: %s is empty all along the curve%s%s",
+            bh_shown_key(picture->shown), m->reason ? ": " : "", m->reason ? m->reason : "");
+    choose_axes(m);
+    put_words(m);
+    return BH_OK;
+}

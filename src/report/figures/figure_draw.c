@@ -1,0 +1,349 @@
+/* figure_draw.c - one drawing for all surfaces, from the background to the foreground. */
+#include "beamhours/report/figure_draw.h"
+
+#include <math.h>
+
+#include "beamhours/report/figure_layout.h"
+
+static const double frame_line = 0.8, grid_line = 0.4, curve_line = 1.5, bar_line = 0.9,
+                    thin_bar = 0.5;
+static const double tick_long = 4.0, minor_long = 2.2, cap = 2.4;
+static const double shade_grey = 0.945, grid_grey = 0.86, band_grey = 0.8, span_grey = 0.35;
+
+/* What drawing works with. */
+struct easel {
+    const bh_figure *figure;
+    const bh_figure_layout *l;
+    const bh_pen *pen;
+};
+
+static double at_x(const struct easel *e, double x)
+{
+    return bh_figure_x(e->figure, e->l, x);
+}
+
+/* Kept near the frame: a bar may reach to minus infinity on a logarithmic axis. */
+static double at_y(const struct easel *e, double y)
+{
+    const bh_box *f = &e->l->frame;
+    const double place = bh_figure_y(e->figure, e->l, y);
+    if (isnan(place))
+        return f->y + 2.0 * f->high;
+    return fmin(fmax(place, f->y - f->high), f->y + 2.0 * f->high);
+}
+
+static void clip_to_frame(const struct easel *e)
+{
+    const bh_box *f = &e->l->frame;
+    cairo_save(e->pen->to);
+    cairo_rectangle(e->pen->to, f->x, f->y, f->wide, f->high);
+    cairo_clip(e->pen->to);
+}
+
+/* --- behind the curves --- */
+
+static void shades(const struct easel *e)
+{
+    const bh_box *f = &e->l->frame;
+    bh_pen_grey(e->pen, shade_grey);
+    for (size_t i = 0; i < e->figure->span_count; i++) {
+        const bh_span_place *p = &e->l->spans[i];
+        cairo_rectangle(e->pen->to, p->from, f->y, p->to - p->from, f->high);
+        cairo_fill(e->pen->to);
+    }
+}
+
+static void grid(const struct easel *e)
+{
+    const bh_box *f = &e->l->frame;
+    bh_pen_grey(e->pen, grid_grey);
+    for (int i = 0; i < e->l->x.count; i++) {
+        const double x = at_x(e, e->l->x.tick[i].at);
+        bh_pen_stroke(e->pen, &(bh_stroke){x, f->y, x, f->y + f->high, grid_line});
+    }
+    for (int i = 0; i < e->l->y.count; i++) {
+        const double y = at_y(e, e->l->y.tick[i].at);
+        bh_pen_stroke(e->pen, &(bh_stroke){f->x, y, f->x + f->wide, y, grid_line});
+    }
+}
+
+/* One piece of a band without a gap: forth along its upper edge, back along the lower one. */
+static void band_piece(const struct easel *e, const bh_figure_band *b, size_t from, size_t to)
+{
+    if (to - from < 2)
+        return;
+    for (size_t i = from; i < to; i++)
+        cairo_line_to(e->pen->to, at_x(e, b->x[i]), at_y(e, b->high[i]));
+    for (size_t i = to; i-- > from;)
+        cairo_line_to(e->pen->to, at_x(e, b->x[i]), at_y(e, b->low[i]));
+    cairo_close_path(e->pen->to);
+    cairo_fill(e->pen->to);
+}
+
+static void bands(const struct easel *e)
+{
+    bh_pen_grey(e->pen, band_grey);
+    for (size_t n = 0; n < e->figure->band_count; n++) {
+        const bh_figure_band *b = &e->figure->band[n];
+        size_t from = 0;
+        for (size_t i = 0; i <= b->count; i++) {
+            if (i < b->count && isfinite(b->low[i]) && isfinite(b->high[i]))
+                continue;
+            band_piece(e, b, from, i);
+            from = i + 1;
+        }
+    }
+}
+
+/* --- curves and points --- */
+
+static void set_dashes(const struct easel *e, const bh_figure_style *style)
+{
+    bh_pen_colour(e->pen, style);
+    cairo_set_line_width(e->pen->to, curve_line);
+    cairo_set_dash(e->pen->to, style->dash, style->dash_count, 0.0);
+}
+
+static void curve(const struct easel *e, const bh_figure_series *s)
+{
+    bool open = false;
+    set_dashes(e, bh_figure_style_at(s->style));
+    for (size_t i = 0; i < s->count; i++) {
+        if (!isfinite(s->point[i].y)) {
+            open = false;
+            continue;
+        }
+        const double x = at_x(e, s->point[i].x), y = at_y(e, s->point[i].y);
+        if (open)
+            cairo_line_to(e->pen->to, x, y);
+        else
+            cairo_move_to(e->pen->to, x, y);
+        open = true;
+    }
+    cairo_stroke(e->pen->to);
+    cairo_set_dash(e->pen->to, NULL, 0, 0.0);
+}
+
+/* A bar of `half` the length both ways, with caps or without. */
+static void error_bar(const struct easel *e, const bh_figure_point *p, double half, bool capped)
+{
+    if (!(half > 0.0))
+        return;
+    const double x = at_x(e, p->x), low = at_y(e, p->y - half), high = at_y(e, p->y + half);
+    bh_pen_stroke(e->pen, &(bh_stroke){x, low, x, high, capped ? bar_line : thin_bar});
+    if (!capped)
+        return;
+    bh_pen_stroke(e->pen, &(bh_stroke){x - cap, low, x + cap, low, bar_line});
+    bh_pen_stroke(e->pen, &(bh_stroke){x - cap, high, x + cap, high, bar_line});
+}
+
+static void points(const struct easel *e, const bh_figure_series *s)
+{
+    const bool full = s->kind == BH_SERIES_PLANNED;
+    const bh_figure_style *style = bh_figure_style_at(s->style);
+    for (size_t i = 0; i < s->count; i++) {
+        const bh_figure_point *p = &s->point[i];
+        if (!isfinite(p->y) || !isfinite(p->x))
+            continue;
+        bh_pen_grey(e->pen, full ? 0.0 : 0.2);
+        error_bar(e, p, p->outer, false);
+        error_bar(e, p, p->inner, true);
+        bh_pen_mark(e->pen, style->mark, full, at_x(e, p->x), at_y(e, p->y));
+    }
+}
+
+/* --- in front --- */
+
+static void x_ticks(const struct easel *e)
+{
+    const bh_box *f = &e->l->frame;
+    const bh_lettering how = bh_figure_letters(BH_LETTERS_TICK);
+    const double low = f->y + f->high;
+    for (int i = 0; i < e->l->x.minor_count; i++) {
+        const double x = at_x(e, e->l->x.minor[i]);
+        bh_pen_stroke(e->pen, &(bh_stroke){x, low, x, low + minor_long, frame_line / 2.0});
+    }
+    for (int i = 0; i < e->l->x.count; i++) {
+        const bh_tick *t = &e->l->x.tick[i];
+        const double x = at_x(e, t->at);
+        const bh_text_place at = {.x = x, .y = low + tick_long + 1.0, .align = BH_ALIGN_MIDDLE};
+        bh_pen_stroke(e->pen, &(bh_stroke){x, low, x, low + tick_long, frame_line});
+        bh_pen_write(e->pen, &how, t->label, &at);
+    }
+}
+
+static void y_ticks(const struct easel *e)
+{
+    const bh_box *f = &e->l->frame;
+    const bh_lettering how = bh_figure_letters(BH_LETTERS_TICK);
+    bh_pen_grey(e->pen, 0.0);
+    for (int i = 0; i < e->l->y.minor_count; i++) {
+        const double y = at_y(e, e->l->y.minor[i]);
+        bh_pen_stroke(e->pen, &(bh_stroke){f->x - minor_long, y, f->x, y, frame_line / 2.0});
+    }
+    for (int i = 0; i < e->l->y.count; i++) {
+        const bh_tick *t = &e->l->y.tick[i];
+        const double y = at_y(e, t->at);
+        const bh_text_place at = {
+            .x = f->x - tick_long - 2.0, .y = y, .align = BH_ALIGN_RIGHT, .centred = true};
+        bh_pen_stroke(e->pen, &(bh_stroke){f->x - tick_long, y, f->x, y, frame_line});
+        bh_pen_write(e->pen, &how, t->label, &at);
+    }
+}
+
+static void axes(const struct easel *e)
+{
+    const bh_box *f = &e->l->frame;
+    const bh_lettering how = bh_figure_letters(BH_LETTERS_AXIS);
+    char words[200];
+    bh_pen_grey(e->pen, 0.0);
+    cairo_set_line_width(e->pen->to, frame_line);
+    cairo_rectangle(e->pen->to, f->x, f->y, f->wide, f->high);
+    cairo_stroke(e->pen->to);
+    x_ticks(e);
+    y_ticks(e);
+    bh_figure_axis_words(&e->figure->x, words, sizeof words);
+    bh_pen_write(e->pen, &how, words,
+                 &(bh_text_place){
+                     .x = f->x + f->wide / 2.0, .y = e->l->x_words_y, .align = BH_ALIGN_MIDDLE});
+    bh_figure_axis_words(&e->figure->y, words, sizeof words);
+    bh_pen_write(e->pen, &how, words,
+                 &(bh_text_place){.x = 6.0, .y = f->y + f->high / 2.0, .upright = true});
+}
+
+/* The bar of a span with its ends and the edges of its bins. */
+static void span_bar(const struct easel *e, size_t i)
+{
+    const bh_span_place *p = &e->l->spans[i];
+    const bh_figure_span *s = &e->figure->span[i];
+    const double high = e->l->lane_high, y = e->l->frame.y - 4.0 - high * (p->lane + 0.5),
+                 thick = high * 0.3, tall = fmin(0.36 * high, 2.6);
+    bh_pen_grey(e->pen, span_grey);
+    bh_pen_stroke(e->pen, &(bh_stroke){p->from, y, p->to, y, fmin(thick, 1.8)});
+    bh_pen_stroke(e->pen, &(bh_stroke){p->from, y - tall, p->from, y + tall, 0.7});
+    bh_pen_stroke(e->pen, &(bh_stroke){p->to, y - tall, p->to, y + tall, 0.7});
+    for (size_t k = 0; k < s->edge_count; k++) {
+        const double x = at_x(e, s->edge[k]);
+        if (x > p->from && x < p->to)
+            bh_pen_stroke(e->pen, &(bh_stroke){x, y - tall, x, y + tall, 0.5});
+    }
+    const bh_lettering how = bh_figure_letters(BH_LETTERS_SPAN);
+    if (e->l->names)
+        bh_pen_write(
+            e->pen, &how, s->name,
+            &(bh_text_place){.x = p->name_x, .y = y, .align = p->name_align, .centred = true});
+}
+
+static void sample(const struct easel *e, const bh_legend_entry *entry)
+{
+    const double x = entry->x, y = entry->y, end = x + BH_LEGEND_SAMPLE, middle = (x + end) / 2.0;
+    if (entry->kind == BH_ENTRY_BAND) {
+        bh_pen_grey(e->pen, band_grey);
+        cairo_rectangle(e->pen->to, x, y - 3.5, BH_LEGEND_SAMPLE, 7.0);
+        cairo_fill(e->pen->to);
+        return;
+    }
+    if (entry->kind == BH_ENTRY_SPAN) {
+        bh_pen_grey(e->pen, span_grey);
+        bh_pen_stroke(e->pen, &(bh_stroke){x, y, end, y, 1.8});
+        for (int i = 0; i < 4; i++) {
+            const double at = x + BH_LEGEND_SAMPLE * i / 3.0;
+            bh_pen_stroke(e->pen, &(bh_stroke){at, y - 2.6, at, y + 2.6, 0.6});
+        }
+        return;
+    }
+    const bh_figure_series *s = &e->figure->series[entry->number];
+    const bh_figure_style *style = bh_figure_style_at(s->style);
+    if (s->kind == BH_SERIES_LINE) {
+        set_dashes(e, style);
+        bh_pen_stroke(e->pen, &(bh_stroke){x, y, end, y, curve_line});
+        cairo_set_dash(e->pen->to, NULL, 0, 0.0);
+        return;
+    }
+    bh_pen_grey(e->pen, s->kind == BH_SERIES_PLANNED ? 0.0 : 0.2);
+    bh_pen_stroke(e->pen, &(bh_stroke){middle, y - 5.0, middle, y + 5.0, bar_line});
+    bh_pen_mark(e->pen, style->mark, s->kind == BH_SERIES_PLANNED, middle, y);
+}
+
+static void write_left(const struct easel *e, bh_letters which, const char *text, double y)
+{
+    const bh_lettering how = bh_figure_letters(which);
+    if (text[0])
+        bh_pen_write(e->pen, &how, text, &(bh_text_place){.x = 8.0, .y = y});
+}
+
+static void around(const struct easel *e)
+{
+    const bh_lettering how = bh_figure_letters(BH_LETTERS_LEGEND);
+    for (size_t i = 0; i < e->figure->span_count; i++)
+        span_bar(e, i);
+    for (size_t i = 0; i < e->l->entry_count; i++) {
+        const bh_legend_entry *entry = &e->l->entries[i];
+        sample(e, entry);
+        bh_pen_write(e->pen, &how, entry->name,
+                     &(bh_text_place){.x = entry->x + BH_LEGEND_SAMPLE + BH_LEGEND_GAP,
+                                      .y = entry->y,
+                                      .centred = true});
+    }
+    write_left(e, BH_LETTERS_TITLE, e->figure->title, e->l->title_y);
+    write_left(e, BH_LETTERS_SUBTITLE, e->figure->subtitle, e->l->subtitle_y);
+    write_left(e, BH_LETTERS_FOOT, e->figure->foot, e->l->foot_y);
+}
+
+static void draw(const struct easel *e)
+{
+    clip_to_frame(e);
+    shades(e);
+    grid(e);
+    bands(e);
+    for (size_t i = 0; i < e->figure->series_count; i++)
+        if (e->figure->series[i].kind == BH_SERIES_LINE)
+            curve(e, &e->figure->series[i]);
+    cairo_restore(e->pen->to);
+    axes(e);
+    clip_to_frame(e);
+    for (size_t i = 0; i < e->figure->series_count; i++)
+        if (e->figure->series[i].kind != BH_SERIES_LINE)
+            points(e, &e->figure->series[i]);
+    cairo_restore(e->pen->to);
+    around(e);
+}
+
+bh_code bh_figure_draw(const bh_figure *figure, cairo_t *to, bh_error *err)
+{
+    bh_pen pen;
+    bh_figure_layout layout;
+    bh_code bad = bh_pen_open(to, &pen, err);
+    if (bad)
+        return bad;
+    bad = bh_figure_layout_make(figure, &pen, &layout, err);
+    if (!bad) {
+        cairo_save(to);
+        draw(&(struct easel){figure, &layout, &pen});
+        cairo_restore(to);
+        if (cairo_status(to))
+            bad = bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    }
+    bh_figure_layout_free(&layout);
+    bh_pen_close(&pen);
+    return bad;
+}
+
+bh_code bh_figure_size(const bh_figure *figure, double *wide, double *high, bh_error *err)
+{
+    cairo_surface_t *nowhere = cairo_recording_surface_create(CAIRO_CONTENT_COLOR, NULL);
+    cairo_t *to = cairo_create(nowhere);
+    bh_pen pen;
+    bh_figure_layout layout = {0};
+    bh_code bad = bh_pen_open(to, &pen, err);
+    if (!bad) {
+        bad = bh_figure_layout_make(figure, &pen, &layout, err);
+        *wide = bad ? *wide : layout.wide;
+        *high = bad ? *high : layout.high;
+        bh_figure_layout_free(&layout);
+        bh_pen_close(&pen);
+    }
+    cairo_destroy(to);
+    cairo_surface_destroy(nowhere);
+    return bad;
+}
