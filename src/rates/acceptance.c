@@ -331,7 +331,7 @@ static void polar_angles(void *context, size_t n, const double *versine, double 
 
 double bh_acceptance_mean_angle(const bh_acceptance_part *part)
 {
-    const bh_integrand angle = {polar_angles, NULL, 1e-6};
+    const bh_integrand angle = {.function = polar_angles, .tolerance = 1e-6};
     if (!(part->polar.from < part->polar.to))
         return part->polar.from;
     return bh_quadrature_directions(part, &angle).sum / part->solid_angle;

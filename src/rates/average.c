@@ -4,6 +4,7 @@
 #include <math.h>
 #include <stdlib.h>
 
+#include "beamhours/rates/prepared.h"
 #include "beamhours/rates/quadrature.h"
 
 /* Polynomials are asked for more digits than the sums, so that the sums decide the error. */
@@ -17,6 +18,7 @@
 
 struct bh_average_workspace {
     bh_interpolant *interpolant;
+    bh_prepared prepared;
 };
 
 bh_average_workspace *bh_average_workspace_new(void)
@@ -51,7 +53,8 @@ bh_code bh_average_fit(const bh_average_request *request, bh_interval polar,
                                            .context = request->context,
                                            .polar = polar,
                                            .limit = request->limit,
-                                           .tolerance = FIT_SHARE * tolerance_of(request)};
+                                           .tolerance = FIT_SHARE * tolerance_of(request),
+                                           .common = request->common};
     return bh_interpolant_fit(workspace->interpolant, &wanted, err);
 }
 
@@ -65,7 +68,7 @@ static void read_interpolant(void *context, size_t n, const double *versine, dou
 typedef struct {
     const bh_average_request *request;
     bh_interpolant *interpolant;
-    bh_integrand integrand;
+    bh_prepared *prepared;
 } summing;
 
 /* A point has one value: its solid angle times the function there. */
@@ -78,16 +81,35 @@ static bh_quadrature sum_point(const summing *s, const bh_acceptance_part *part)
     return (bh_quadrature){value * part->solid_angle, 0, true};
 }
 
-/* What of the part lies within `polar`. */
-static bh_quadrature sum_within(const summing *s, const bh_acceptance_part *part, bh_interval polar)
+/* Sums of less than this over the solid angle [ub/sr] are as good as one of it. */
+static double least_of(const summing *s, const bh_acceptance_part *part)
 {
+    const double half = sin((part->polar.from + part->polar.to) / 4);
+    const double versine = 2 * half * half;
+    return s->request->common > 0 ? s->request->common / (versine * versine) : 0;
+}
+
+static bh_integrand integrand_of(const summing *s, const bh_acceptance_part *part)
+{
+    return (bh_integrand){.function = read_interpolant,
+                          .context = s->interpolant,
+                          .tolerance = QUADRATURE_SHARE * tolerance_of(s->request),
+                          .least = least_of(s, part)};
+}
+
+/* What of the part lies within `polar`. */
+static bh_quadrature sum_within(const summing *s, const bh_prepared_part *prepared,
+                                bh_interval polar)
+{
+    const bh_acceptance_part *part = &prepared->part;
+    const bh_integrand f = integrand_of(s, part);
     const bool whole = polar.from <= part->polar.from && polar.to >= part->polar.to;
     if (!(part->solid_angle > 0) || polar.to < part->polar.from || polar.from > part->polar.to)
         return (bh_quadrature){0, 0, true};
     if (part->polar.from == part->polar.to)
         return sum_point(s, part);
-    return whole ? bh_quadrature_directions(part, &s->integrand)
-                 : bh_quadrature_polar(part, polar, &s->integrand);
+    return whole ? bh_quadrature_prepared(part, &prepared->rule, &f)
+                 : bh_quadrature_polar(part, polar, &f);
 }
 
 static bh_interval up_to_limit(const bh_average_request *request, bh_interval polar)
@@ -97,33 +119,36 @@ static bh_interval up_to_limit(const bh_average_request *request, bh_interval po
     return polar;
 }
 
-static double sum_kept(const summing *s, const bh_acceptance_part *part, double total,
+static double sum_kept(const summing *s, const bh_prepared_part *part, double total,
                        bool *converged)
 {
     const bh_average_request *r = s->request;
-    const bh_interval all = up_to_limit(r, part->polar);
+    const bh_interval all = up_to_limit(r, part->part.polar);
     if (!r->cut)
         return total;
     double kept = 0;
+    const double least = least_of(s, &part->part) * part->part.solid_angle;
     for (size_t i = 0; i < r->allowed_count; i++) {
         bh_interval some = up_to_limit(r, r->allowed[i]);
         if (some.from <= all.from && some.to >= all.to)
             return total;
         const bh_quadrature q = sum_within(s, part, some);
         kept += q.sum;
-        *converged = *converged && q.error <= tolerance_of(r) * fmax(q.sum, total);
+        *converged = *converged && q.error <= tolerance_of(r) * fmax(fmax(q.sum, total), least);
     }
     return kept < total * (1 + RAGGED) ? fmin(kept, total) : kept;
 }
 
-static bh_average sum_part(const summing *s, const bh_acceptance_part *part)
+static bh_average sum_part(const summing *s, const bh_prepared_part *part)
 {
-    bh_average out = {.solid_angle = part->solid_angle};
-    const bh_interval all = up_to_limit(s->request, part->polar);
+    bh_average out = {.solid_angle = part->part.solid_angle};
+    const bh_interval all = up_to_limit(s->request, part->part.polar);
     const bh_quadrature q =
         all.from <= all.to ? sum_within(s, part, all) : (bh_quadrature){0, 0, true};
     out.total = q.sum;
-    out.error = q.sum > 0 ? q.error / q.sum + bh_interpolant_error(s->interpolant, all) : 0;
+    const double least = least_of(s, &part->part) * part->part.solid_angle;
+    out.error =
+        q.sum > 0 ? q.error / fmax(q.sum, least) + bh_interpolant_error(s->interpolant, all) : 0;
     out.converged = out.error <= tolerance_of(s->request);
     out.kept = sum_kept(s, part, q.sum, &out.converged);
     return out;
@@ -153,9 +178,7 @@ static void add_left_over(const summing *s, const bh_acceptance *acceptance, bh_
     for (int i = 0; i < 2; i++) {
         bh_acceptance one = {.spec = spec, .bins = 1, .whole = acceptance->whole};
         one.spec.edges = outside[i];
-        bh_acceptance_part part;
-        bh_acceptance_part_of(&one, 1, &part);
-        const bh_average average = sum_part(s, &part);
+        const bh_average average = sum_part(s, bh_prepared_part_of(s->prepared, &one, 1));
         add(whole, &average);
     }
 }
@@ -165,19 +188,14 @@ bh_code bh_average_sum(const bh_acceptance *acceptance, const bh_average_request
 {
     if (!bh_interpolant_covers(workspace->interpolant, acceptance->whole.polar))
         return bh_fail(err, BH_EDOMAIN, "the acceptance reaches outside the fitted polar angles");
-    const summing s = {
-        request,
-        workspace->interpolant,
-        {read_interpolant, workspace->interpolant, QUADRATURE_SHARE * tolerance_of(request)}};
+    const summing s = {request, workspace->interpolant, &workspace->prepared};
     if (!out->bins) {
-        out->whole = sum_part(&s, &acceptance->whole);
+        out->whole = sum_part(&s, bh_prepared_part_of(s.prepared, acceptance, 0));
         return BH_OK;
     }
     bh_average sum = {.solid_angle = acceptance->whole.solid_angle, .converged = true};
     for (int i = 0; i < acceptance->bins; i++) {
-        bh_acceptance_part part;
-        bh_acceptance_part_of(acceptance, i + 1, &part);
-        out->bins[i] = sum_part(&s, &part);
+        out->bins[i] = sum_part(&s, bh_prepared_part_of(s.prepared, acceptance, i + 1));
         add(&sum, &out->bins[i]);
     }
     add_left_over(&s, acceptance, &sum);
@@ -201,6 +219,11 @@ double bh_average_value(const bh_average_workspace *workspace, double theta)
         return (double)NAN;
     bh_interpolant_eval(workspace->interpolant, 1, &versine, &value);
     return value;
+}
+
+double bh_average_top(const bh_average_workspace *workspace)
+{
+    return bh_interpolant_top(workspace->interpolant);
 }
 
 size_t bh_average_calls(const bh_average_workspace *workspace)

@@ -27,6 +27,7 @@ struct bh_interpolant {
     size_t calls;
     int count, unresolved;
     double worst; /* [1] largest tail of the resolved pieces */
+    double top;   /* [ub/sr] largest value times its flattening */
     piece pieces[PIECES];
 };
 
@@ -101,6 +102,7 @@ static void sample(bh_interpolant *in, const piece *p, int first, int step, samp
     n = 0;
     for (int i = first; i < NODES; i += step, n++) {
         s->value[i] = value[n] * flat[n];
+        in->top = fmax(in->top, s->value[i]);
         if (!(value[n] >= 0 && isfinite(s->value[i])) && !s->bad) {
             s->bad = true;
             s->bad_angle = theta[n];
@@ -143,13 +145,14 @@ static int needed(const double *c, int n, double least)
 static bool try_linear(const bh_interpolant *in, piece *p, const samples *s, int step)
 {
     static const double extra = 1e-3;
-    double top = 0;
+    const double common = s->request->common;
+    double top = common;
     for (int i = 0; i < NODES; i += step)
         top = fmax(top, s->value[i]);
     p->logarithm = false;
     p->count = coefficients(in, s->value, step, p->c);
     p->tail = top > 0 ? tail_of(p->c, p->count) / top : 0;
-    const double wanted = s->request->tolerance * extra;
+    const double wanted = s->request->tolerance * (common > 0 ? 1 : extra);
     p->resolved = p->tail <= wanted;
     p->count = needed(p->c, p->count, top * wanted / NODES);
     return p->resolved;
@@ -197,6 +200,7 @@ static void start(bh_interpolant *in, const bh_interpolant_request *request)
     in->calls = 0;
     in->count = in->unresolved = 0;
     in->worst = 0;
+    in->top = 0;
 }
 
 static void keep(bh_interpolant *in, const piece *p)
@@ -345,6 +349,11 @@ double bh_interpolant_error(const bh_interpolant *interpolant, bh_interval polar
             error += fmin(1, p->tail) * (to > from ? inside / (to - from) : 1);
     }
     return error;
+}
+
+double bh_interpolant_top(const bh_interpolant *interpolant)
+{
+    return interpolant->top;
 }
 
 size_t bh_interpolant_calls(const bh_interpolant *interpolant)

@@ -84,7 +84,7 @@ static void refine(const scheme *s, panel first, bh_quadrature *result)
         const panel p = pending[--count];
         const estimate e = s->rules(s->part, s->f, &p);
         if (pieces++ == 0)
-            scale = 0.01 * fabs(e.fine);
+            scale = fmax(0.01 * fabs(e.fine), s->f->least * s->part->solid_angle / s->part->scale);
         const double off = fabs(e.fine - e.coarse);
         const bool agreed = off <= s->f->tolerance * fmax(fabs(e.fine), scale);
         if (agreed || p.depth >= DEPTH || pieces >= MOST_PIECES || !isfinite(e.fine)) {
@@ -140,18 +140,31 @@ static double dot(size_t n, const double *a, const double *b)
     return sum;
 }
 
-static estimate panel_rules(const bh_acceptance_part *part, const bh_integrand *f, const panel *p)
+/* Both rules on a panel. */
+static void place_rules(const panel *p, bh_quadrature_rule *rule)
 {
     static const tensor fine[2] = {{gauss_5, gauss_4, 5, 4}, {gauss_5, even_6, 5, 3}};
     static const tensor coarse[2] = {{gauss_4, gauss_3, 4, 3}, {gauss_4, even_4, 4, 2}};
-    (void)part;
-    double versine[BH_QUADRATURE_BATCH];
-    double weight[BH_QUADRATURE_BATCH];
+    const size_t n = place_nodes(p, &fine[p->even], rule->versine, rule->weight);
+    rule->fine = (int)n;
+    rule->coarse = (int)place_nodes(p, &coarse[p->even], rule->versine + n, rule->weight + n);
+}
+
+static estimate apply_rules(const bh_quadrature_rule *rule, const bh_integrand *f, double times)
+{
     double value[BH_QUADRATURE_BATCH];
-    const size_t n = place_nodes(p, &fine[p->even], versine, weight);
-    const size_t m = place_nodes(p, &coarse[p->even], versine + n, weight + n);
-    f->function(f->context, n + m, versine, value);
-    return (estimate){p->times * dot(n, value, weight), p->times * dot(m, value + n, weight + n)};
+    const size_t n = (size_t)rule->fine, m = (size_t)rule->coarse;
+    f->function(f->context, n + m, rule->versine, value);
+    return (estimate){times * dot(n, value, rule->weight),
+                      times * dot(m, value + n, rule->weight + n)};
+}
+
+static estimate panel_rules(const bh_acceptance_part *part, const bh_integrand *f, const panel *p)
+{
+    bh_quadrature_rule rule;
+    (void)part;
+    place_rules(p, &rule);
+    return apply_rules(&rule, f, p->times);
 }
 
 /* Along the angle over which the versine changes more. */
@@ -179,6 +192,17 @@ static void halve_panel(const panel *p, panel *lower, panel *upper)
     lower->out_to = upper->out_from = (half.out_from + half.out_to) / 2;
 }
 
+static panel whole_of(const bh_acceptance_part *part)
+{
+    return (panel){part->in_from,
+                   part->in_to,
+                   part->out_from,
+                   part->out_to,
+                   1,
+                   0,
+                   part->out_from == -part->out_to};
+}
+
 bh_quadrature bh_quadrature_directions(const bh_acceptance_part *part, const bh_integrand *f)
 {
     if (part->azimuth > 0)
@@ -187,10 +211,29 @@ bh_quadrature bh_quadrature_directions(const bh_acceptance_part *part, const bh_
     if (!(part->in_from < part->in_to))
         return result;
     const scheme s = {part, f, panel_rules, halve_panel};
-    const bool even = part->out_from == -part->out_to;
-    refine(&s, (panel){part->in_from, part->in_to, part->out_from, part->out_to, 1, 0, even},
-           &result);
+    refine(&s, whole_of(part), &result);
     return scaled(result, part->scale);
+}
+
+void bh_quadrature_prepare(const bh_acceptance_part *part, bh_quadrature_rule *rule)
+{
+    rule->fine = rule->coarse = 0;
+    if (part->azimuth > 0 || !(part->in_from < part->in_to))
+        return;
+    const panel whole = whole_of(part);
+    place_rules(&whole, rule);
+}
+
+bh_quadrature bh_quadrature_prepared(const bh_acceptance_part *part, const bh_quadrature_rule *rule,
+                                     const bh_integrand *f)
+{
+    if (rule->fine == 0)
+        return bh_quadrature_directions(part, f);
+    const estimate e = apply_rules(rule, f, 1);
+    const double off = fabs(e.fine - e.coarse);
+    if (!(off <= f->tolerance * fmax(fabs(e.fine), f->least * part->solid_angle / part->scale)))
+        return bh_quadrature_directions(part, f);
+    return scaled((bh_quadrature){e.fine, off, true}, part->scale);
 }
 
 /* --- polar angle --- */

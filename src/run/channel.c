@@ -27,6 +27,13 @@ bh_particle bh_channel_detected(const bh_channel *channel)
     return particle;
 }
 
+bh_detected bh_channel_as_detected(const bh_channel *channel)
+{
+    if (channel->recoil)
+        return BH_DETECTED_RECOIL;
+    return channel->branch == BH_BRANCH_SLOW ? BH_DETECTED_SLOW : BH_DETECTED_SCATTERED;
+}
+
 double bh_channel_largest_angle(const bh_channel *channel)
 {
     const bh_collision in = collision_of(channel);

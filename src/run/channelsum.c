@@ -7,16 +7,14 @@
 #include "beamhours/rates/average.h"
 #include "beamhours/rates/bite.h"
 #include "beamhours/run/arriving.h"
+#include "beamhours/run/counted.h"
 #include "beamhours/run/energies.h"
 #include "beamhours/run/sum_key.h"
 #include "beamhours/run/sum_places.h"
-#include "beamhours/run/taking.h"
 #include "beamhours/units/constants.h"
 
 enum { BATCH = 64 };
 
-/* The share of events that is never lost, and then is: a logarithm is fitted. */
-#define BARELY 1e-9
 /* --- one function to be fitted --- */
 
 /* With the energies it is averaged over and the angles that are kept. */
@@ -25,8 +23,7 @@ struct task {
     const bh_radiated *radiated; /* NULL: without radiation */
     int boost;                   /* BH_AS_IT_IS ... */
     bh_energies energies;
-    const struct smeared *smeared; /* what is kept under a resolution, and nothing else */
-    const bh_vertex *vertex;       /* from there */
+    bh_counted *counted; /* what is kept under a resolution, and nothing else */
     bh_interval allowed[BH_MOST_ARRIVALS];
     bh_average_request request;
 };
@@ -53,38 +50,12 @@ static void evaluate(void *context, size_t n, const double *theta, double *value
         evaluate_batch(context, n - i < BATCH ? n - i : BATCH, theta + i, value + i);
 }
 
-/* Depths, and the probability that a particle from there is counted. */
-struct smeared {
-    bh_taking taking;
-    bh_taken taken;
-    const bh_vertex *vertices;
-    size_t count;
-    bh_vertex alone;  /* where nothing is lost, the only one */
-    double tolerance; /* [1] of sums */
-};
-
-/* What is kept of the events at one depth; never quite nothing, for a logarithm is fitted. */
 static void evaluate_kept(void *context, size_t n, const double *theta, double *value)
 {
     const struct task *t = context;
-    bh_channel there = t->channel;
-    bh_taken taken = t->smeared->taken;
-    double momentum[BATCH];
-    taken.boost = t->boost;
-    there.encounter.kinetic = t->vertex->kinetic[t->boost];
-    for (size_t i = 0; i < n; i += BATCH)
-        bh_channel_eval(&there, n - i < BATCH ? n - i : BATCH, theta + i, value + i, momentum);
-    for (size_t i = 0; i < n; i++)
-        value[i] *= value[i] > 0 ? bh_taken_share(&taken, t->vertex, theta[i]) + BARELY : 0;
+    bh_counted_eval(t->counted, n, theta, value);
     if (t->radiated)
         bh_radiated_apply(t->radiated, t->boost, n, theta, value);
-}
-
-static bh_detected detected_of(const bh_channel *channel)
-{
-    if (channel->recoil)
-        return BH_DETECTED_RECOIL;
-    return channel->branch == BH_BRANCH_SLOW ? BH_DETECTED_SLOW : BH_DETECTED_SCATTERED;
 }
 
 /* All but the energies and what is kept. */
@@ -94,7 +65,7 @@ static void set_function(const bh_channel_request *r, struct task *t)
     t->channel = r->channel;
     t->radiated = NULL;
     t->boost = BH_AS_IT_IS;
-    t->smeared = NULL;
+    t->counted = NULL;
     t->request = (bh_average_request){.function = evaluate,
                                       .context = t,
                                       .limit = largest < BH_PI ? largest : 0,
@@ -109,7 +80,7 @@ static bh_code set_up_lossless(const bh_channel_request *r, int boost, struct ta
     const bh_encounter *e = &r->channel.encounter;
     const double kinetic = boost ? bh_boosted_kinetic(e->beam, e->kinetic, by[boost]) : e->kinetic;
     const bh_collision in = {.mass = e->beam->mass, .target = e->target, .kinetic = kinetic};
-    const bh_bite bite = {.detected = detected_of(&r->channel),
+    const bh_bite bite = {.detected = bh_channel_as_detected(&r->channel),
                           .momentum_from = r->momentum_from,
                           .momentum_to = r->momentum_to};
     t->energies = (bh_energies){.count = 1, .kinetic = {kinetic}, .weight = {1}};
@@ -130,8 +101,8 @@ struct making {
     bh_channel_sum *sums;
     int parts;              /* the whole arm and its bins */
     bh_channel_request all; /* the same where the resolution lets everything through */
-    struct smeared smeared;
-    bool is_smeared;
+    bh_counted *counted;
+    double common; /* [ub/sr] as averages want it: of all events */
 };
 
 /* Sums the fitted function over one place. */
@@ -157,7 +128,13 @@ static bh_code fit_radiated(struct making *m, const struct task *t, int boost, s
     *out = *t;
     out->request.context = out;
     out->request.allowed = out->allowed;
-    if (x && !x->idle) {
+    if (x && !x->idle) { /* it ends in a step, and where there is little all of it is enough */
+        const bh_code code =
+            m->common > 0 ? BH_OK : bh_average_fit(&t->request, m->places.polar, m->averages, err);
+        if (code)
+            return code;
+        m->common = m->common > 0 ? m->common : bh_average_top(m->averages);
+        out->request.common = m->common;
         out->radiated = x;
         out->boost = boost;
     }
@@ -171,7 +148,7 @@ static bh_code sum_total(struct making *m, const struct task *t, double weight, 
     if (!code)
         code = add_up(m, &t->request, &m->places.at, err);
     for (int i = 0; !code && i < m->parts; i++) {
-        m->sums[i].total += t->smeared ? 0 : weight * part_of(m, i)->total;
+        m->sums[i].total += t->counted ? 0 : weight * part_of(m, i)->total;
         m->sums[i].kept += weight * part_of(m, i)->kept;
         m->sums[i].converged = m->sums[i].converged && part_of(m, i)->converged;
     }
@@ -271,83 +248,30 @@ static bh_code sum_depths(struct making *m, struct task *t, int boost, bh_error 
     return code;
 }
 
-/* Where the bite without resolution begins and ends at the depth of a task. */
-static bh_code set_sharp(const struct making *m, struct task *t, bh_error *err)
-{
-    const bh_channel_request *r = m->request;
-    const bh_encounter *e = &r->channel.encounter;
-    if (m->leaver) {
-        const bh_arrival arrival = arrival_of(m, t->boost);
-        t->request.allowed_count = bh_arrival_angles(&arrival, t->vertex, t->allowed);
-        return BH_OK;
-    }
-    const bh_collision in = {
-        .mass = e->beam->mass, .target = e->target, .kinetic = t->vertex->kinetic[t->boost]};
-    const bh_bite bite = {.detected = detected_of(&r->channel),
-                          .momentum_from = r->momentum_from,
-                          .momentum_to = r->momentum_to};
-    return bh_bite_angles(&in, &bite, t->allowed, &t->request.allowed_count, err);
-}
-
-/* Splits the polar angles about each end of the bite, where what is kept changes within a few
- * standard deviations: sums over whole pieces are sums of smooth functions. */
-static bh_code set_pieces(const struct making *m, struct task *t, bh_error *err)
-{
-    enum { MOST = 5 }; /* ends that fit */
-    static const double wide = 7;
-    const bh_interval polar = m->places.polar;
-    const bh_code code = set_sharp(m, t, err);
-    if (code)
-        return code;
-    bh_taken taken = t->smeared->taken;
-    taken.boost = t->boost;
-    double at[3 * MOST + 1];
-    size_t n = 0;
-    for (size_t i = 0; i < 2 * t->request.allowed_count && n < 3 * MOST; i++) {
-        const double end = i % 2 ? t->allowed[i / 2].to : t->allowed[i / 2].from;
-        if (!(end > polar.from && end < polar.to))
-            continue;
-        const double width = wide * bh_taken_width(&taken, t->vertex, end);
-        const double before = n ? at[n - 1] : polar.from;
-        at[n] = fmin(fmax(end - width, before), end);
-        at[n + 1] = fmax(end, before);
-        at[n + 2] = fmax(at[n + 1], fmin(end + width, polar.to));
-        n += 3;
-    }
-    at[n] = (double)INFINITY;
-    t->request.allowed_count = 0;
-    for (size_t i = 0; i <= n; i++) {
-        const double from = i ? at[i - 1] : 0;
-        if (at[i] > from)
-            t->allowed[t->request.allowed_count++] = (bh_interval){from, at[i]};
-    }
-    return BH_OK;
-}
-
 /* One fit for all events, one for those that are counted. */
-static bh_code sum_smeared(struct making *m, struct task *t, int boost, bh_error *err)
+static bh_code sum_counted(struct making *m, struct task *t, int boost, bh_error *err)
 {
-    const struct smeared *s = &m->smeared;
+    bh_counted *c = m->counted;
     bh_code code = BH_OK;
     if (!boost) {
-        bh_energies_of(s->vertices, s->count, boost, &t->energies);
+        bh_energies_of(c->vertices, c->count, boost, &t->energies);
         t->request.cut = true; /* nothing is kept of it */
         t->request.allowed_count = 0;
         code = sum_total(m, t, 1, err);
+        m->common = bh_average_top(m->averages);
     }
-    t->smeared = s;
+    bh_counted_boost(c, boost);
+    t->counted = c;
     t->boost = boost;
     t->request.function = evaluate_kept;
-    t->request.tolerance = s->tolerance;
+    t->request.tolerance = c->tolerance;
+    t->request.common = m->common;
     t->request.cut = true;
-    for (size_t i = 0; !code && i < s->count; i++) {
-        t->vertex = &s->vertices[i];
-        code = set_pieces(m, t, err);
-        if (!code)
-            code = sum_task(m, t, t->vertex->weight, boost, err);
-    }
+    t->request.allowed_count = bh_counted_pieces(c, m->places.polar, t->allowed);
+    if (!code)
+        code = sum_task(m, t, 1, boost, err);
     for (int i = 0; !boost && i < m->parts; i++) /* what the floor under the logarithm gave */
-        if (m->sums[i].kept < 2 * BARELY * m->sums[i].total)
+        if (m->sums[i].kept < 2 * BH_COUNTED_LEAST * m->sums[i].total)
             m->sums[i].kept = m->sums[i].radiated = 0;
     return code;
 }
@@ -356,8 +280,8 @@ static bh_code sum_boost(struct making *m, bh_arriving arriving, int boost, bh_e
 {
     struct task t;
     set_function(m->request, &t);
-    if (m->is_smeared)
-        return sum_smeared(m, &t, boost, err);
+    if (m->counted->smearing == BH_SMEARED_SOME)
+        return sum_counted(m, &t, boost, err);
     if (!m->leaver) {
         const bh_code code = set_up_lossless(m->request, boost, &t, err);
         return code ? code : sum_task(m, &t, 1, boost, err);
@@ -370,43 +294,21 @@ static bh_code sum_boost(struct making *m, bh_arriving arriving, int boost, bh_e
     return sum_task(m, &t, 1, boost, err);
 }
 
-/* How the momentum resolution acts; true where it takes care that all are counted. */
-static bool set_smearing(struct making *m)
-{
-    const bh_channel_request *r = m->request;
-    const bh_encounter *e = &r->channel.encounter;
-    struct smeared *s = &m->smeared;
-    const bh_particle detected = bh_channel_detected(&r->channel);
-    s->taking =
-        (bh_taking){.cut = r->cut,
-                    .bite = {.momentum_from = r->momentum_from, .momentum_to = r->momentum_to},
-                    .rms = r->rms,
-                    .mass = detected.mass};
-    s->taken = (bh_taken){.channel = &r->channel, .leaver = m->leaver, .taking = &s->taking};
-    s->alone = (bh_vertex){.weight = 1,
-                           .kinetic = {e->kinetic,
-                                       bh_boosted_kinetic(e->beam, e->kinetic, -BH_STEP_MOMENTUM),
-                                       bh_boosted_kinetic(e->beam, e->kinetic, BH_STEP_MOMENTUM)}};
-    s->vertices = m->leaver ? r->vertices : &s->alone;
-    s->count = m->leaver ? r->vertex_count : 1;
-    const bh_smearing how = bh_taken_smearing(&s->taken, s->vertices, s->count, m->places.polar);
-    m->is_smeared = how == BH_SMEARED_SOME;
-    s->tolerance = fmin(1e-4, fmax(2e-7, 1e-9 / bh_taken_fineness(&s->taking)));
-    return how == BH_SMEARED_ALL;
-}
-
 static bh_code make(struct making *m, bh_error *err)
 {
     const bh_channel_request *r = m->request;
     bh_arriving arriving = BH_ARRIVE_ALL;
     bh_code code = bh_sum_places_of(r, &m->places, m->scratch->edges[0], err);
-    const bool all = !code && set_smearing(m);
+    if (code)
+        return code;
+    bh_counted_make(r, m->leaver, m->places.polar, m->counted);
+    const bool all = m->counted->smearing == BH_SMEARED_ALL;
     if (all) {
         m->all = *r;
         m->all.cut = false;
         m->request = &m->all;
     }
-    if (!code && m->leaver && !all) {
+    if (m->leaver && !all) {
         const bh_arrival arrival = arrival_of(m, BH_AS_IT_IS);
         arriving = bh_arrival_at_a_glance(&arrival, r->vertices, r->vertex_count);
     }
@@ -425,6 +327,8 @@ const bh_channel_sum *bh_channel_sums(bh_workspace *workspace, const bh_channel_
                        .scratch = bh_workspace_scratch(workspace),
                        .parts = request->bins ? 1 + request->acceptance.bins : 1};
     bh_leaver leaver = {.ranges = request->ranges};
+    bh_counted counted; /* large, and filled where it is read */
+    m.counted = &counted;
     if (request->way && request->way->losing) {
         const bh_particle detected = bh_channel_detected(&request->channel);
         const bh_code code =

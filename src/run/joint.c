@@ -9,13 +9,6 @@ enum { BATCH = 32 };
 
 /* --- events --- */
 
-static bh_detected detected_of(const bh_channel *channel)
-{
-    if (channel->recoil)
-        return BH_DETECTED_RECOIL;
-    return channel->branch == BH_BRANCH_SLOW ? BH_DETECTED_SLOW : BH_DETECTED_SCATTERED;
-}
-
 static bh_collision collision_of(const bh_joint *j)
 {
     const bh_encounter *e = &j->channel[0].encounter;
@@ -96,7 +89,7 @@ static int add_bites(const bh_joint *j, const bh_collision *in, double *breaks, 
         bh_bite bite = j->taking[k].bite;
         bh_interval angles;
         size_t n = 0;
-        bite.detected = detected_of(&j->channel[k]);
+        bite.detected = bh_channel_as_detected(&j->channel[k]);
         if (!j->taking[k].cut || bh_bite_angles(in, &bite, &angles, &n, NULL) || n == 0)
             continue;
         const double ends[] = {angles.from, angles.to};
@@ -140,7 +133,7 @@ static bh_code add_up(bh_joint *j, struct where where, bh_pair_sum *sum, bh_erro
     double breaks[BH_PAIR_MOST_BREAKS];
     j->boost = where.boost;
     const bh_collision in = collision_of(j);
-    const bh_detected detected = detected_of(&j->channel[0]);
+    const bh_detected detected = bh_channel_as_detected(&j->channel[0]);
     const bool recoil = detected == BH_DETECTED_RECOIL;
     bh_acceptance_part_of(&s->first[where.place], where.request->part, &one);
     const int count =

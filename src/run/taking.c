@@ -59,7 +59,7 @@ static double momentum_at(const bh_taken *t, double kinetic, double angle)
 }
 
 /* At the edge of what is reached, where one of the two has no event, the spread does nothing. */
-static double per_beam(const bh_taken *t, const bh_vertex *v, double angle)
+double bh_taken_per_beam(const bh_taken *t, const bh_vertex *v, double angle)
 {
     if (!(t->taking->rms.beam > 0))
         return 0;
@@ -77,7 +77,7 @@ static bh_arriver arriver_at(const bh_taken *t, const bh_vertex *v, double angle
     const double kinetic = t->channel->recoil ? event.recoil_kinetic : event.scattered_kinetic;
     return (bh_arriver){.kinetic =
                             t->leaver ? bh_leaver_left(t->leaver, v, angle, kinetic) : kinetic,
-                        .per_beam = per_beam(t, v, angle)};
+                        .per_beam = bh_taken_per_beam(t, v, angle)};
 }
 
 double bh_taken_share(const bh_taken *taken, const bh_vertex *vertex, double angle)
@@ -97,6 +97,16 @@ double bh_taken_width(const bh_taken *taken, const bh_vertex *vertex, double ang
         (bh_bite_momentum(mass, on.kinetic) - bh_bite_momentum(mass, back.kinetic)) / (2 * step);
     const double width = sigma_of(taken->taking, &here) / fabs(slope);
     return here.kinetic > 0 && back.kinetic > 0 && on.kinetic > 0 ? width : (double)INFINITY;
+}
+
+double bh_taken_apart(const bh_taken *taken, const bh_vertex ends[2], double angle)
+{
+    const double mass = taken->taking->mass;
+    const bh_arriver one = arriver_at(taken, &ends[0], angle);
+    const bh_arriver other = arriver_at(taken, &ends[1], angle);
+    const double sigma = fmax(sigma_of(taken->taking, &one), sigma_of(taken->taking, &other));
+    const double off = bh_bite_momentum(mass, one.kinetic) - bh_bite_momentum(mass, other.kinetic);
+    return sigma > 0 ? fabs(off) / sigma : 0;
 }
 
 /* What the outermost vertices send to both ends and the middle. */

@@ -269,6 +269,36 @@ START_TEST(matter_deflects)
 }
 END_TEST
 
+/* A layer split into five is the same layer: depths stand as close as the resolution asks for. */
+START_TEST(splitting_changes_nothing)
+{
+    static const char *const layers[] = {
+        "{material: liquid-hydrogen, thickness: 50 mm}",
+        "{material: liquid-hydrogen, thickness: 10 mm}, {material: liquid-hydrogen, thickness: "
+        "10 mm}, {material: liquid-hydrogen, thickness: 10 mm}, {material: liquid-hydrogen, "
+        "thickness: 10 mm}, {material: liquid-hydrogen, thickness: 10 mm}"};
+    static const char *const resolutions[] = {"0.1 %", "1 %"};
+    struct evaluated e[2];
+    for (int k = 0; k < 2; k++) {
+        char text[2048];
+        snprintf(text, sizeof text,
+                 "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 1 uA}\n"
+                 "target: {scatterer: H, layers: [%s]}\n"
+                 "arms:\n  - {name: A, bins: 6, in_plane: ±28 mrad, out_of_plane: ±70 mrad, "
+                 "momentum_bite: ±1 %%, momentum_resolution: %s}\n"
+                 "settings:\n  - {name: K, angle: 65 deg, time: 1 h}\n",
+                 layers[k], resolutions[_i]);
+        e[k] = evaluate(text);
+    }
+    ck_assert_double_lt(cell(&e[0], 0, BH_COL_KEPT), 0.9);
+    for (size_t i = 0; i < BINS; i++)
+        ck_assert_relative(bin_cell(&e[1], i, BH_COL_SIGNAL), bin_cell(&e[0], i, BH_COL_SIGNAL),
+                           2e-5, resolutions[_i]);
+    done(&e[0]);
+    done(&e[1]);
+}
+END_TEST
+
 /* A bite that nothing reaches keeps nothing, resolution or not; a hopeless threshold likewise. */
 START_TEST(nothing_is_kept)
 {
@@ -328,6 +358,7 @@ int main(void)
     tcase_add_test(tests, narrow_resolutions_are_none);
     tcase_add_test(tests, bins_inside_the_aperture);
     tcase_add_test(tests, matter_deflects);
+    tcase_add_loop_test(tests, splitting_changes_nothing, 0, 2);
     tcase_add_test(tests, nothing_is_kept);
     tcase_add_loop_test(tests, sensitivities_follow, 0, 2);
     return run_suite("resolution", tests);

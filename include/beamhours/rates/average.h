@@ -27,6 +27,9 @@ typedef struct {
     size_t allowed_count; /* with cut: 0 keeps nothing */
     const bh_interval *allowed; /* [rad] rising, apart: from bh_bite_angles */
     double tolerance;           /* [1] relative; 0: 1e-6 */
+    double common; /* [ub/sr] the tolerance is relative to sums of common / (1 - cos theta)^2 where
+                      those of the function are smaller: bins with little are no better; 0: never.
+                      From bh_average_top */
 } bh_average_request;
 
 /* Of the whole acceptance, or of a bin. */
@@ -44,7 +47,7 @@ typedef struct {
     bh_average *bins; /* room for acceptance->bins of them; NULL: not wanted */
 } bh_averages;
 
-/* Memory for sums: never grows, about 100 kB; one thread at a time.  Results do not depend on what
+/* Memory for sums: never grows, about 500 kB; one thread at a time.  Results do not depend on what
  * it was used for before.  NULL when there is no memory; NULL may be freed. */
 typedef struct bh_average_workspace bh_average_workspace;
 bh_average_workspace *bh_average_workspace_new(void);
@@ -77,6 +80,9 @@ BH_CHECKED bh_code bh_average_sum(const bh_acceptance *acceptance,
 
 /* Returns [ub/sr] the fitted function at polar angle theta [rad]; NAN outside the fitted range. */
 double bh_average_value(const bh_average_workspace *workspace, double theta);
+
+/* Returns [ub/sr] the largest value times (1 - cos theta)^2 that the last fit saw. */
+double bh_average_top(const bh_average_workspace *workspace);
 
 /* How many values of the function the last fit asked for. */
 size_t bh_average_calls(const bh_average_workspace *workspace);

@@ -24,6 +24,8 @@ typedef struct {
     double limit;      /* [rad] f may grow like 1/sqrt(limit - theta) towards it and is not called
                           there or beyond; 0: none */
     double tolerance;  /* [1] relative, at each theta */
+    double common;     /* [ub/sr] of f y^2: the tolerance is relative to this where f is smaller, as
+                          of steps that fade away; 0: to f */
 } bh_interpolant_request;
 
 /* About 100 kB, or NULL when there is no memory.  NULL may be freed. */
@@ -48,6 +50,9 @@ bool bh_interpolant_covers(const bh_interpolant *interpolant, bh_interval polar)
 /* Returns [1] relative error, estimated, of the mean over the polar angles `polar`: the largest
  * tail of the polynomials, unresolved pieces by their share of the range. */
 double bh_interpolant_error(const bh_interpolant *interpolant, bh_interval polar);
+
+/* Returns [ub/sr] the largest f y^2 that the fit saw. */
+double bh_interpolant_top(const bh_interpolant *interpolant);
 
 /* How many values of the function the fit asked for. */
 size_t bh_interpolant_calls(const bh_interpolant *interpolant);

@@ -8,6 +8,7 @@
 
 #include "beamhours/physics/kinematics.h"
 #include "beamhours/physics/process.h"
+#include "beamhours/rates/bite.h"
 
 /* A nucleus, the beam on it, and the detected one of the two after the collision. */
 typedef struct {
@@ -19,6 +20,9 @@ typedef struct {
 
 /* The particle that is detected. */
 bh_particle bh_channel_detected(const bh_channel *channel);
+
+/* What momentum bites call that particle. */
+bh_detected bh_channel_as_detected(const bh_channel *channel);
 
 /* Returns [rad] the largest lab angle at which the detected particle can appear. */
 double bh_channel_largest_angle(const bh_channel *channel);

@@ -47,6 +47,13 @@ typedef struct {
  * 0 where there is no such event. */
 double bh_taken_share(const bh_taken *taken, const bh_vertex *vertex, double angle);
 
+/* Returns [MeV/c] per_beam of the particle scattered at `vertex` to angle [rad]; 0 where the beam
+ * has no spread or there is no such event. */
+double bh_taken_per_beam(const bh_taken *taken, const bh_vertex *vertex, double angle);
+
+/* Returns [1] how many standard deviations the momenta from two vertices arrive apart. */
+double bh_taken_apart(const bh_taken *taken, const bh_vertex ends[2], double angle);
+
 /* Returns [rad] over how much of the angle [rad] the momentum changes by one standard deviation
  * there; INFINITY where it does not change. */
 double bh_taken_width(const bh_taken *taken, const bh_vertex *vertex, double angle);
