@@ -56,8 +56,7 @@ void bh_say_diags(FILE *to, const bh_diags *diags)
     }
 }
 
-/* Splits "KEY=VALUE" at the first '='; the paths are copies in `keys`. */
-static int split_changes(const bh_arguments *arguments, bh_change *changes, char **keys)
+int bh_input_changes(const bh_arguments *arguments, bh_change *changes, char **keys)
 {
     for (int i = 0; i < arguments->with_count; i++) {
         const char *equals = strchr(arguments->with[i], '=');
@@ -74,7 +73,7 @@ int bh_input_plan(bh_input *in, const bh_arguments *arguments)
     bh_change changes[BH_MOST_CHANGES];
     char *keys[BH_MOST_CHANGES] = {NULL};
     const size_t count = arguments ? (size_t)arguments->with_count : 0;
-    int status = arguments ? split_changes(arguments, changes, keys) : 0;
+    int status = arguments ? bh_input_changes(arguments, changes, keys) : 0;
     bh_table_free(in->table);
     in->table = NULL;
     bh_plan_free(in->plan);

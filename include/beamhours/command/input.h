@@ -23,6 +23,11 @@ typedef struct {
 int bh_input_open(const char *name, bh_input *in);
 void bh_input_close(bh_input *in);
 
+/* The --with changes of a command line, split at their first '='; `changes` and `keys` (all NULL)
+ * have room for BH_MOST_CHANGES; the caller frees the keys in any case.  Returns 0 or the exit
+ * status. */
+int bh_input_changes(const bh_arguments *arguments, bh_change *changes, char **keys);
+
 /* Makes in->plan from the bytes and, unless `arguments` is NULL, its --with changes; replaces an
  * earlier plan and table.  Returns 0, or 65 after writing every error and warning. */
 int bh_input_plan(bh_input *in, const bh_arguments *arguments);

@@ -18,6 +18,8 @@
     X(BH_CMD_POINT, "point", "", "one point without a plan", bh_cmd_point)                         \
     X(BH_CMD_CURVE, "curve", "PLAN", "a column against angle, energy, q2 or epsilon",              \
       bh_cmd_curve)                                                                                \
+    X(BH_CMD_SOLVE, "solve", "PLAN SETTING KEY=VALUE",                                             \
+      "what it would take: the input that gives a wanted output", bh_cmd_solve)                    \
     X(BH_CMD_EDIT, "edit", "[PLAN]", "change a plan on the screen and see the run table follow",   \
       bh_cmd_edit)                                                                                 \
     X(BH_CMD_MATERIALS, "materials", "[NAME]",                                                     \
@@ -32,12 +34,13 @@ typedef enum {
         BH_COMMAND_COUNT
 } bh_command_id;
 
-#define BH_EVERY_COMMAND "new,plans,keys,check,table,explain,point,curve,edit,materials,models,help"
+#define BH_EVERY_COMMAND \
+    "new,plans,keys,check,table,explain,point,curve,solve,edit,materials,models,help"
 
 /* X(id, short letter or 0, long name, argument or "", commands that know it, values to complete,
  * meaning).  Commands and values are lists with commas; `file` completes files. */
 #define BH_OPTIONS(X)                                                                              \
-    X(BH_OPT_WITH, 0, "with", "KEY=VALUE", "check,table,explain,curve", "",                        \
+    X(BH_OPT_WITH, 0, "with", "KEY=VALUE", "check,table,explain,curve,solve", "",                  \
       "change one value for this run only (repeatable)")                                           \
     X(BH_OPT_BINS, 0, "bins", "", "table", "", "one row a bin")                                    \
     X(BH_OPT_COLUMNS, 0, "columns", "KEY,...", "table", "", "only these columns, in this order")   \
@@ -45,7 +48,8 @@ typedef enum {
     X(BH_OPT_ONLY, 0, "only", "SETTING,...", "table", "", "only these settings")                   \
     X(BH_OPT_BEFORE_AFTER, 0, "against", "", "table", "",                                          \
       "show each row before and after the changes of --with")                                      \
-    X(BH_OPT_ARM, 0, "arm", "ARM", "explain,curve", "", "the arm, where a setting has several")    \
+    X(BH_OPT_ARM, 0, "arm", "ARM", "explain,curve,solve", "",                                      \
+      "the arm, where a setting has several")                                                      \
     X(BH_OPT_BIN, 0, "bin", "N", "explain", "", "a bin of the arm, counted from 1")                \
     X(BH_OPT_LIKE, 0, "like", "DEMO", "new", "", "copy this demonstration instead")                \
     X(BH_OPT_SETTING, 0, "setting", "NAME", "curve", "", "the setting to start from")              \
@@ -53,6 +57,10 @@ typedef enum {
       "what varies: angle (default), energy, q2, epsilon")                                         \
     X(BH_OPT_SHOW, 0, "show", "KEY", "curve", "",                                                  \
       "the column to show (default: point_cross_section_ub_per_sr)")                               \
+    X(BH_OPT_BY, 0, "by", "INPUT", "solve", "angle,current,energy,thickness,solid-angle",          \
+      "what may move: one of these, or a path such as beam.current")                               \
+    X(BH_OPT_FROM, 0, "from", "VALUE", "solve", "", "the least value of it to try")                \
+    X(BH_OPT_TO, 0, "to", "VALUE", "solve", "", "the largest value of it to try")                  \
     X(BH_OPT_PARTICLE, 'p', "particle", "P", "point,materials",                                    \
       "electron,positron,muon-,muon+,pion-,pion+,proton,deuteron,triton,helion,alpha",             \
       "the beam particle, or the one that passes")                                                 \
