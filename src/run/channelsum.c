@@ -225,6 +225,7 @@ static bh_arrival arrival_of(const struct making *m, int boost)
                         .from = m->request->cut ? m->request->momentum_from : 0,
                         .to = m->request->cut ? m->request->momentum_to : (double)INFINITY,
                         .polar = m->places.polar,
+                        .bins = m->parts > 1 ? &m->places.at : NULL,
                         .boost = boost};
 }
 

@@ -12,19 +12,20 @@ static double kinetic_of(double mass, double momentum)
 
 /* Energy [MeV] that the detected particle of an elastic event on the arm's axis loses on its way
  * out, mean over the depths it comes out of. */
-static bh_code lost_behind(bh_yielder *yielder, const bh_view *view, size_t count, double *lost)
+static bh_code lost_behind(bh_yielder *yielder, const bh_view *view, const bh_way *way,
+                           size_t count, double *lost)
 {
     bh_leaver leaver = {.ranges = yielder->ranges};
     const bh_particle particle = bh_channel_detected(&view->line);
     double sum = 0, weight = 0;
     bh_event event;
     *lost = 0;
-    if (!view->way.losing || view->axis > bh_channel_largest_angle(&view->line) ||
+    if (!way->losing || view->axis > bh_channel_largest_angle(&view->line) ||
         bh_channel_event(&view->line, view->axis, &event, NULL))
         return BH_OK;
     const double kinetic = bh_channel_kinetic(&view->line, &event);
-    const bh_code code = bh_leaver_make(yielder->workspace, &view->way, &particle,
-                                        fmax(kinetic, view->way.kinetic), &leaver);
+    const bh_code code =
+        bh_leaver_make(yielder->workspace, way, &particle, fmax(kinetic, way->kinetic), &leaver);
     for (size_t i = 0; !code && i < count; i++) {
         const bh_vertex *v = &yielder->vertices[i];
         const double left = bh_leaver_left(&leaver, v, view->axis, kinetic);
@@ -74,7 +75,7 @@ bh_code bh_view_gate(bh_yielder *yielder, bh_view *view, size_t count)
     const double mass = bh_channel_detected(&view->line).mass;
     const double threshold = arm->threshold.given ? arm->threshold.value : 0;
     double lost = 0;
-    bh_code code = lost_behind(yielder, view, count, &lost);
+    bh_code code = lost_behind(yielder, view, &view->way, count, &lost);
     const double from = fmax(threshold, view->cut ? kinetic_of(mass, view->bite_from) : 0);
     view->gate =
         (bh_gate){.cut = arm->energy_cut.given ? arm->energy_cut.value : (double)INFINITY,
@@ -86,6 +87,19 @@ bh_code bh_view_gate(bh_yielder *yielder, bh_view *view, size_t count)
     view->least = 0;
     if (!code && !view->cut && view->setting->beam.particle.kind == BH_KIND_LEPTON)
         code = least_electron(yielder, view, count, threshold, &view->least);
+    return code;
+}
+
+bh_code bh_gate_there(bh_yielder *yielder, const bh_view *view, const bh_way *way, size_t count,
+                      bh_gate *gate)
+{
+    double lost = view->lost;
+    *gate = view->gate;
+    if (!(gate->from > 0) && !(gate->to < (double)INFINITY))
+        return BH_OK;
+    const bh_code code = lost_behind(yielder, view, way, count, &lost);
+    gate->from += gate->from > 0 ? lost - view->lost : 0;
+    gate->to += lost - view->lost;
     return code;
 }
 

@@ -34,8 +34,7 @@ static bool leave_layers(const bh_way *way, const bh_vertex *from, course c, vis
     }
 }
 
-/* Everything behind the vertex, in the order the particle meets it. */
-static void leave(const bh_way *way, const bh_vertex *from, double angle, visit *see, void *context)
+static course course_of(const bh_way *way, const bh_vertex *from, double angle)
 {
     static const double along = 1e-9;       /* so close to parallel never comes out */
     const double across = fabs(sin(angle)); /* sin(pi) is not quite 0 */
@@ -44,6 +43,31 @@ static void leave(const bh_way *way, const bh_vertex *from, double angle, visit 
                 .reach = wall && across > along ? way->wall_radius / across : HUGE_VAL};
     if (fabs(c.slant) < along)
         c.slant = copysign(along, c.slant);
+    return c;
+}
+
+void bh_way_turning(const bh_way *way, const bh_vertex *vertex, double angle, double depth[2])
+{
+    const course c = course_of(way, vertex, angle);
+    const bool forward = c.slant > 0;
+    const size_t first = forward ? vertex->layer : 0;
+    const size_t end = forward ? way->layer_count : vertex->layer;
+    depth[0] = depth[1] = (double)NAN;
+    if (!(way->wall_radius > 0))
+        return;
+    /* a face ahead lies this far off when it and the wall are reached together */
+    depth[0] = c.reach * -c.slant + (forward ? way->sheets[vertex->layer].thickness : 0);
+    depth[1] = c.reach * -c.slant;
+    for (size_t i = first; i < end; i++)
+        depth[1] += forward ? way->sheets[i].thickness : -way->sheets[i].thickness;
+}
+
+/* Everything behind the vertex, in the order the particle meets it. */
+static void leave(const bh_way *way, const bh_vertex *from, double angle, visit *see, void *context)
+{
+    const double across = fabs(sin(angle));
+    const bool wall = way->wall_radius > 0;
+    const course c = course_of(way, from, angle);
     const bool sideways = leave_layers(way, from, c, see, context);
     if (sideways)
         see(context, way->layer_count, way->sheets[way->layer_count].areal / across);

@@ -196,11 +196,23 @@ double bh_depth_point(int i, int n, double *weight)
     return (1 + (from_middle < 0 ? -x[n][k] : x[n][k])) / 2;
 }
 
+/* [g/cm2] along the beam from the first face of a layer to a depth [cm]. */
+static double path_to(const bh_way *way, const bh_sheet *s, double depth)
+{
+    const double share = s->thickness > 0 ? depth / s->thickness : 0.5;
+    return share * s->areal / way->cosine;
+}
+
+bh_crossed bh_way_before(const bh_way *way, const bh_vertex *vertex, double depth)
+{
+    const bh_sheet *s = &way->sheets[vertex->layer];
+    return bh_crossed_add(s->before, s, path_to(way, s, depth));
+}
+
 bh_vertex bh_way_vertex(const bh_way *way, const bh_vertex *like, double depth)
 {
     const bh_sheet *s = &way->sheets[like->layer];
-    const double share = s->thickness > 0 ? depth / s->thickness : 0.5;
-    const double path = share * s->areal / way->cosine;
+    const double path = path_to(way, s, depth);
     bh_vertex v = *like;
     v.depth = depth;
     v.weight = 0;

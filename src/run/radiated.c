@@ -4,6 +4,7 @@
 #include <math.h>
 
 #include "beamhours/run/channelsum.h"
+#include "beamhours/run/crossings.h"
 #include "beamhours/units/constants.h"
 
 static const double soft_share = 0.03, most_lengths = 0.5;
@@ -32,28 +33,22 @@ double bh_gate_from(const bh_gate *gate, const bh_channel *line, double angle)
 
 /* --- one angle --- */
 
-/* Mean matter before and after, and what is kept of each. */
+/* Matter before and after, depth by depth. */
 struct matter {
     const bh_radiated_request *request;
     const bh_radiated_detail *at;
-    double angle;
-    bh_crossed after[BH_VERTICES_PER_LAYER]; /* of the vertices that are looked at */
-    size_t count, step;
+    size_t count;
+    bh_crossing crossed[BH_MOST_CROSSINGS];
 };
 
-/* One layer's worth of vertices is enough for a mean over many layers. */
 static void set_matter(const bh_radiated_request *r, double angle, struct matter *m)
 {
     m->request = r;
-    m->angle = angle;
-    m->step = 1 + (r->count > 0 ? (r->count - 1) / BH_VERTICES_PER_LAYER : 0);
-    m->count = 0;
-    for (size_t i = 0; r->way && i < r->count; i += m->step) {
-        bh_crossed c = bh_way_after(r->way, &r->vertices[i], angle);
-        if (!(c.lengths <= most_lengths)) /* along the layers: nothing comes out */
-            c = (bh_crossed){.lengths = most_lengths, .soft = most_lengths * BH_PI / 2};
-        m->after[m->count++] = c;
-    }
+    m->count = r->way ? bh_crossings_at(r->way, r->vertices, r->count, angle, m->crossed) : 0;
+    for (size_t i = 0; i < m->count; i++) /* along the layers: nothing comes out */
+        if (!(m->crossed[i].after.lengths <= most_lengths))
+            m->crossed[i].after =
+                (bh_crossed){.lengths = most_lengths, .soft = most_lengths * BH_PI / 2};
 }
 
 static bool is_electron(const bh_encounter *e)
@@ -65,12 +60,11 @@ static bh_external external_of(const struct matter *m, size_t i, double cut)
 {
     const bh_encounter *e = &m->request->channel.encounter;
     const bh_event *event = &m->at->event;
-    const bh_crossed *before = &m->request->vertices[i * m->step].before;
     bh_external x = {.incident = e->kinetic + e->beam->mass,
                      .scattered = event->scattered_kinetic + e->beam->mass,
                      .cut = cut};
-    x.before = bh_crossed_passage(before, e->beam, e->kinetic);
-    x.after = bh_crossed_passage(&m->after[i], e->beam, event->scattered_kinetic);
+    x.before = bh_crossed_passage(&m->crossed[i].before, e->beam, e->kinetic);
+    x.after = bh_crossed_passage(&m->crossed[i].after, e->beam, event->scattered_kinetic);
     if (!is_electron(e)) /* heavier by 207: their bremsstrahlung is 43000 times rarer */
         x.before.thickness = x.after.thickness = 0;
     return x;
@@ -81,7 +75,7 @@ static double mean_external(const struct matter *m, double cut)
     double sum = 0, weight = 0;
     for (size_t i = 0; i < m->count; i++) {
         const bh_external x = external_of(m, i, cut);
-        const double w = m->request->vertices[i * m->step].weight;
+        const double w = m->crossed[i].weight;
         sum += w * bh_external_kept(&x);
         weight += w;
     }
@@ -101,7 +95,7 @@ static double mean_tail(const struct matter *m)
     for (size_t i = 0; i < m->count; i++) {
         const bh_external x = external_of(m, i, 1);
         const double eta = x.incident / x.scattered;
-        const double w = m->request->vertices[i * m->step].weight;
+        const double w = m->crossed[i].weight;
         sum += w * (x.before.xi / (eta * eta) + x.after.xi);
         weight += w;
     }
@@ -118,10 +112,10 @@ static void set_lengths(const struct matter *m, bh_radiated_detail *out)
     double weight = 0;
     out->before = out->after = 0;
     for (size_t i = 0; i < m->count; i++) {
-        const bh_vertex *v = &m->request->vertices[i * m->step];
-        out->before += v->weight * v->before.lengths;
-        out->after += v->weight * m->after[i].lengths;
-        weight += v->weight;
+        const bh_crossing *c = &m->crossed[i];
+        out->before += c->weight * c->before.lengths;
+        out->after += c->weight * c->after.lengths;
+        weight += c->weight;
     }
     out->before /= weight > 0 ? weight : 1;
     out->after /= weight > 0 ? weight : 1;

@@ -3,7 +3,7 @@
 
 #include "beamhours/run/arriving.h"
 
-enum { STEPS = 8, CUTS = 8, HALVINGS = 40, LEAST_DEPTHS = 2 };
+enum { STEPS = 8, CUTS = 8, HALVINGS = 40, LEAST_DEPTHS = 2, MOST_EDGES = 64 };
 
 /* A piece of a layer, and the depths [cm] at which it is cut. */
 struct piece {
@@ -58,6 +58,16 @@ static void find_cuts(struct piece *p, double angle)
         before = next;
         was_inside = inside;
     }
+}
+
+/* Where particles between two bins of a ring begin or cease to arrive; the bins of a rectangle have
+ * no such sharp angle. */
+static void find_cuts_between(struct piece *p, const bh_acceptance *bins)
+{
+    if (!bins || bins->spec.shape != BH_ACCEPTANCE_RING || bins->bins > MOST_EDGES)
+        return;
+    for (int i = 1; i < bins->bins; i++)
+        find_cuts(p, bh_acceptance_edge(bins, i));
 }
 
 static bool same_piece(const bh_vertex *a, const bh_vertex *b)
@@ -122,6 +132,7 @@ size_t bh_arrival_refine(const bh_arrival *arrival, const bh_vertex *vertices, s
         find_cuts(&p, arrival->polar.from);
         if (arrival->polar.to > arrival->polar.from)
             find_cuts(&p, arrival->polar.to);
+        find_cuts_between(&p, arrival->bins);
         if (used + (size_t)((p.depths + 1) * (p.count + 1)) > BH_MOST_REFINED)
             return 0;
         used += fill_piece(&p, out + used);

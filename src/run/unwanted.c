@@ -25,7 +25,8 @@ static bh_code request_for(bh_yielder *yielder, const struct adding *a, const bh
         return code;
     *request = bh_view_radiated(yielder, a->view, &channels.list[0], a->way, count);
     request->signal = nuclei->origin == BH_ORIGIN_SIGNAL && !nuclei->all;
-    return BH_OK;
+    const bh_code lost = bh_gate_there(yielder, a->view, a->way, count, &request->gate);
+    return lost ? bh_fail(err, lost, "%s", bh_code_text(lost)) : BH_OK;
 }
 
 static bh_code add_nuclei(bh_yielder *yielder, struct adding *a, const bh_nuclei *nuclei,

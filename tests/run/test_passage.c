@@ -1,6 +1,9 @@
 /* test_passage.c - where collisions happen, and what beam and detected particle cross and lose. */
 #include "evaluated.h"
 
+#include <gsl/gsl_integration.h>
+
+#include "beamhours/run/crossings.h"
 #include "beamhours/run/passage.h"
 #include "beamhours/units/constants.h"
 
@@ -277,10 +280,79 @@ START_TEST(thickness_in_radiation_lengths)
 }
 END_TEST
 
+/* --- where particles leave by the wall from some depths, by a face from others --- */
+
+#define WALLED CELL "  wall: {radius: 15 mm, material: aluminium, thickness: 0.3 mm}\n"
+
+struct depth {
+    const struct walk *walk;
+    double angle;
+};
+
+/* What is crossed behind a depth of the sample, bent so that the mean of it is not that of a
+ * straight line. */
+static double bent(double depth, void *context)
+{
+    const struct depth *d = context;
+    bh_vertex v = d->walk->vertices[0];
+    v.depth = depth;
+    return exp(-5 * bh_way_after(&d->walk->way, &v, d->angle).lengths);
+}
+
+START_TEST(crossings_are_cut_where_the_wall_begins)
+{
+    static const double angles[] = {10, 17.5, 20, 30, 45, 80, 91, 110, 150, 160, 175};
+    struct walk *w = walk_through(PLAN(ELECTRONS, WALLED, ""), true);
+    gsl_integration_workspace *points = gsl_integration_workspace_alloc(200);
+    bh_crossing out[BH_MOST_CROSSINGS];
+    for (int i = 0; i < COUNT(angles); i++) {
+        struct depth d = {w, angles[i] * BH_DEGREE};
+        gsl_function f = {bent, &d};
+        double mean, error, sum = 0, weight = 0, before = 0;
+        ck_assert(
+            !gsl_integration_qag(&f, 0, 5, 0, 1e-8, 200, GSL_INTEG_GAUSS15, points, &mean, &error));
+        const size_t count = bh_crossings_at(&w->way, w->vertices, w->count, d.angle, out);
+        for (size_t k = 0; k < count; k++) {
+            sum += out[k].weight * exp(-5 * out[k].after.lengths);
+            before += out[k].weight * out[k].before.path;
+            weight += out[k].weight;
+        }
+        ck_assert_relative(weight, 1, 1e-12, "weights");
+        ck_assert_msg(fabs(sum - mean / 5) < 1e-6, "%g deg: %.9g, wanted %.9g", angles[i], sum,
+                      mean / 5);
+        ck_assert_relative(before, 0.1 * 0.2699 + 2.5 * 0.0708, 1e-9, "crossed before");
+    }
+    gsl_integration_workspace_free(points);
+    leave(w);
+}
+END_TEST
+
+START_TEST(the_wall_begins_at_a_depth)
+{
+    struct walk *w = walk_through(PLAN(ELECTRONS, WALLED, ""), true);
+    /* 1.5 cm to the wall at 30 deg is 2.598 cm along the beam: 5 cm of sample, 0.02 of window */
+    double depth[2];
+    const double far = 1.5 / tan(30 * BH_DEGREE);
+    bh_way_turning(&w->way, &w->vertices[0], 30 * BH_DEGREE, depth);
+    ck_assert_double_eq_tol(depth[0], 5 - far, 1e-9);
+    ck_assert_double_eq_tol(depth[1], 5 + 0.02 - far, 1e-9);
+    bh_way_turning(&w->way, &w->vertices[0], 150 * BH_DEGREE, depth);
+    ck_assert_double_eq_tol(depth[0], far, 1e-9);
+    ck_assert_double_eq_tol(depth[1], far - 0.01, 1e-9);
+    leave(w);
+    w = walk_through(PLAN(ELECTRONS, CELL, ""), true);
+    bh_way_turning(&w->way, &w->vertices[0], 0.5, depth);
+    ck_assert(isnan(depth[0]) && isnan(depth[1]));
+    leave(w);
+}
+END_TEST
+
 int main(void)
 {
     TCase *t = tcase_create("passage");
     tcase_add_test(t, energy_is_conserved_layer_by_layer);
+    tcase_add_test(t, crossings_are_cut_where_the_wall_begins);
+    tcase_add_test(t, the_wall_begins_at_a_depth);
     tcase_add_test(t, vertices_share_the_nuclei_and_lie_in_the_sample);
     tcase_add_test(t, without_loss_nothing_is_lost);
     tcase_add_test(t, the_way_out);

@@ -10,9 +10,10 @@
 typedef struct {
     const bh_leaver *leaver;
     const bh_channel *channel;
-    double from, to;   /* [MeV/c] that are taken; from 0: all that come out */
-    bh_interval polar; /* [rad] the polar angles of interest */
-    int boost;         /* BH_AS_IT_IS ... */
+    double from, to;           /* [MeV/c] that are taken; from 0: all that come out */
+    bh_interval polar;         /* [rad] the polar angles of interest */
+    int boost;                 /* BH_AS_IT_IS ... */
+    const bh_acceptance *bins; /* whose bins have sums of their own; NULL: none have */
 } bh_arrival;
 
 /* Returns [MeV/c] the momentum with which the particle scattered at `vertex` to `angle` [rad]
@@ -37,9 +38,9 @@ enum { BH_MOST_REFINED = 256 };
 
 /*
  * Vertices in the place of `count` others of the same nuclei, for sums over what arrives: pieces of
- * layers are cut at the depths from which particles at either end of the polar angles begin or
- * cease to, so that between cuts the sums change smoothly with the depth.  Fills `out` (room for
- * BH_MOST_REFINED) and returns how many; 0 where there would be more.
+ * layers are cut at the depths from which particles at either end of the polar angles, or between
+ * two bins of a ring, begin or cease to, so that between cuts the sums change smoothly with the
+ * depth.  Fills `out` (room for BH_MOST_REFINED) and returns how many; 0 where there would be more.
  */
 size_t bh_arrival_refine(const bh_arrival *arrival, const bh_vertex *vertices, size_t count,
                          bh_vertex *out);

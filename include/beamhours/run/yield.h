@@ -120,6 +120,11 @@ BH_CHECKED bh_code bh_view_channels(bh_yielder *yielder, const bh_view *view,
  * BH_ENOMEM. */
 BH_CHECKED bh_code bh_view_gate(bh_yielder *yielder, bh_view *view, size_t count);
 
+/* Fills `gate` with the view's as it is for particles from `count` vertices in the yielder, in the
+ * target of `way`, which lose more or less on their way out than the scatterer's.  BH_ENOMEM. */
+BH_CHECKED bh_code bh_gate_there(bh_yielder *yielder, const bh_view *view, const bh_way *way,
+                                 size_t count, bh_gate *gate);
+
 /* The radiation of the particles of `channel` that come from `count` vertices in the yielder, in
  * the target of `way`; `signal`: they are the scatterer's. */
 bh_radiated_request bh_view_radiated(const bh_yielder *yielder, const bh_view *view,
