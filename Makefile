@@ -61,7 +61,9 @@ check-run: all
 	@{ $(MAKE) -k -Otarget $(call run,$(TESTS) $(COMMANDS) rules); echo "status $$?"; } 2>&1 | tee $(BUILD)/check.log | grep -v '^status'; \
 	 awk -f tests/rules/summary.awk $(BUILD)/check.log
 check-all:                                               ## check, all that follows up to fuzz, a trial installation
-	@$(MAKE) -k check lint globals sanitize valgrind coverage fuzz mutate installed
+	@$(MAKE) -k check lint globals sanitize valgrind coverage fuzz mutate installed montecarlo
+montecarlo: $(BUILD)/tests/montecarlo/test_montecarlo     ## the demonstrations counted event by event, 10 million a plan and seed
+	@MONTE_CARLO_EVENTS=1e7 $<
 $(call run,$(TESTS)): %.run: % ; @$(UNDER) $<
 $(call run,$(COMMANDS)): $(BUILD)/%.run: %.cmd all ; @UNDER='$(UNDER)' sh tests/commands/run.sh $(BUILD) $<
 $(call run,rules): ; @CC='$(CC)' sh tests/rules/selftest.sh
@@ -81,7 +83,7 @@ globals:                                                 ## no writable data in 
 sanitize:                                                ## the tests under ASan and UBSan
 	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
 valgrind:                                                ## the tests under valgrind
-	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
+	@CK_FORK=no MONTE_CARLO_EVENTS=3000 $(MAKE) check-run HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
 valgrind-demo: all                                       ## the main job under valgrind: the demonstrations' tables, one explained row
 	@for c in $(patsubst %,'table --bins %',$(wildcard plans/*.yaml)) 'explain plans/hydrogen-separation.yaml low-1'; do \
 	 valgrind -q --leak-check=full --error-exitcode=99 $(BUILD)/beamhours $$c >$(BUILD)/valgrind.out 2>&1 || { cat $(BUILD)/valgrind.out; exit 1; }; done
