@@ -22,6 +22,14 @@ static void set_key(const bh_acceptance *a, int bin, double *key)
     memcpy(key, numbers, sizeof numbers);
 }
 
+static bool same_key(const double *a, const double *b)
+{
+    for (int i = 0; i < BH_PREPARED_NUMBERS; i++)
+        if (a[i] != b[i])
+            return false;
+    return true;
+}
+
 /* Neighbouring bins, and the same bin of an arm that is moved, go to different places. */
 static size_t place_of(const double *key, int bin)
 {
@@ -37,7 +45,7 @@ const bh_prepared_part *bh_prepared_part_of(bh_prepared *prepared, const bh_acce
     double key[BH_PREPARED_NUMBERS];
     set_key(acceptance, bin, key);
     bh_prepared_part *p = &prepared->parts[place_of(key, bin)];
-    if (p->used && memcmp(p->key, key, sizeof key) == 0)
+    if (p->used && same_key(p->key, key))
         return p;
     memcpy(p->key, key, sizeof key);
     p->used = true;

@@ -166,35 +166,42 @@ static double kinetic_of(double mass, double momentum)
     return momentum * momentum / (hypot(momentum, mass) + mass);
 }
 
-static void add_vertex(const bh_counted *c, const bh_vertex *v, size_t n, const double *theta,
-                       const struct following *f, double *value)
+/* Angles that are not known yet. */
+struct batch {
+    size_t n;
+    const double *theta; /* [rad] */
+    struct following f[BATCH];
+    double *value; /* [ub/sr] */
+};
+
+static void add_vertex(const bh_counted *c, const bh_vertex *v, const struct batch *b)
 {
     double sigma[BATCH], momentum[BATCH];
     bh_channel there = c->channel;
     there.encounter.kinetic = v->kinetic[c->boost];
-    bh_channel_eval(&there, n, theta, sigma, momentum);
-    for (size_t i = 0; i < n; i++) {
+    bh_channel_eval(&there, b->n, b->theta, sigma, momentum);
+    for (size_t i = 0; i < b->n; i++) {
         if (!(sigma[i] > 0))
             continue;
         const double kinetic = kinetic_of(c->taking.mass, momentum[i]);
+        const struct following *f = &b->f[i];
         const bh_arriver arriver = {
-            .kinetic = c->leaver ? bh_leaver_left(c->leaver, v, theta[i], kinetic) : kinetic,
-            .per_beam = f[i].first + f[i].slope * (v->kinetic[c->boost] - f[i].kinetic)};
-        value[i] +=
+            .kinetic = c->leaver ? bh_leaver_left(c->leaver, v, b->theta[i], kinetic) : kinetic,
+            .per_beam = f->first + f->slope * (v->kinetic[c->boost] - f->kinetic)};
+        b->value[i] +=
             v->weight * sigma[i] * (bh_taking_share(&c->taking, &arriver) + BH_COUNTED_LEAST);
     }
 }
 
-/* At angles that are not known yet. */
 static void eval_new(bh_counted *c, size_t n, const double *theta, double *value)
 {
-    struct following f[BATCH];
+    struct batch b = {.n = n, .theta = theta, .value = value};
     for (size_t i = 0; i < n; i++) {
         value[i] = 0;
-        set_following(c, theta[i], &f[i]);
+        set_following(c, theta[i], &b.f[i]);
     }
     for (size_t k = 0; k < c->count; k++)
-        add_vertex(c, &c->vertices[k], n, theta, f, value);
+        add_vertex(c, &c->vertices[k], &b);
     for (size_t i = 0; i < n; i++)
         *place_of(c, theta[i]) = (bh_counted_value){theta[i], value[i]};
 }

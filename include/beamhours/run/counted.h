@@ -39,7 +39,7 @@ void bh_counted_boost(bh_counted *counted, int boost);
  * least BH_COUNTED_LEAST of them all, for logarithms are fitted. */
 void bh_counted_eval(bh_counted *counted, size_t n, const double *theta, double *value);
 
-#define BH_COUNTED_LEAST 1e-9 /* [1] exact, a choice */
+#define BH_COUNTED_LEAST 1e-9 /* [1] +- 0, a choice; exact */
 
 /* Fills `pieces` [rad], rising and without gaps, between which the function changes smoothly or
  * over no less than a standard deviation, and returns how many. */

@@ -51,7 +51,8 @@ double bh_taken_share(const bh_taken *taken, const bh_vertex *vertex, double ang
  * has no spread or there is no such event. */
 double bh_taken_per_beam(const bh_taken *taken, const bh_vertex *vertex, double angle);
 
-/* Returns [1] how many standard deviations the momenta from two vertices arrive apart. */
+/* Returns [1] how many standard deviations the momenta from two vertices arrive apart at
+ * angle [rad]. */
 double bh_taken_apart(const bh_taken *taken, const bh_vertex ends[2], double angle);
 
 /* Returns [rad] over how much of the angle [rad] the momentum changes by one standard deviation
