@@ -99,6 +99,7 @@ $(call run,$(FUZZ)): $(BUILD)/%.run: $(BUILD)/%
 	@mkdir -p $<.found && $< -max_total_time=$(or $(FUZZ_SECONDS),10) -artifact_prefix=$<. $<.found $(wildcard $*.seeds) $(addprefix -dict=,$(wildcard $*.dict))
 bench: all $(call bin,$(BENCH))                          ## times as ratios, a goal a line; BENCH_STRICT=1: a miss fails
 	@bad=0; for b in $(call bin,$(BENCH)); do echo "$${b##*/}:"; $$b || bad=1; done; exit $$bad
+screens: $(BUILD)/tests/screen/test_shown ; @ACCEPT=yes $< && git diff --stat docs/screens ## write docs/screens anew
 format: ; @clang-format -i $(LAID_OUT)                    ## rewrite the layout
 install: all ; @BUILD=$(BUILD) PKGS='$(PKGS)' sh src/install.sh ## into PREFIX (/usr/local), LIBDIR, DESTDIR
 uninstall: ; @sh src/install.sh remove                   ## with the same PREFIX, LIBDIR, DESTDIR

@@ -16,6 +16,7 @@ struct kept {
     char key[TEXT], who[TEXT], what[TEXT], setting[TEXT], last[TEXT]; /* own copies */
     char plain[TEXT];                                                 /* the key as it was noted */
     int settings;
+    bool moved;
 };
 
 struct bh_remarks {
@@ -194,6 +195,23 @@ void bh_remarks_add(bh_remarks *remarks, const bh_remarks *from, const char *fil
     for (size_t i = 0; i < from->count; i++)
         add_kept(remarks, &from->list[i], file);
     remarks->failed = remarks->failed || from->failed;
+}
+
+void bh_remarks_move(bh_remarks *remarks, int from, int to, int by)
+{
+    for (size_t i = 0; i < remarks->count; i++) {
+        struct kept *k = &remarks->list[i];
+        if (k->moved || k->remark.at.line < from || k->remark.at.line > to)
+            continue;
+        k->remark.at.line += by;
+        k->moved = true;
+    }
+}
+
+void bh_remarks_moved(bh_remarks *remarks)
+{
+    for (size_t i = 0; i < remarks->count; i++)
+        remarks->list[i].moved = false;
 }
 
 struct words {

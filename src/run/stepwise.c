@@ -13,6 +13,8 @@ enum { BUCKETS = 4096, KEEP_FOR = 8 };
 struct result {
     struct result *next;
     bh_setting_key key;
+    size_t line_count;
+    bh_lines *lines; /* where what it follows from stood in the file */
     unsigned used; /* generation in which it was last of use */
     size_t arms, bins;
     bh_row *whole, *bin; /* bin NULL: not evaluated */
@@ -31,7 +33,7 @@ struct bh_stepwise {
     bh_arena *arena;
     bh_results *results;
     bh_evaluator evaluator;
-    bh_setting_key *keys;
+    bh_setting_source *sources;
     const struct result **known; /* of each setting, or NULL */
     struct result *loose;        /* those without a key */
 };
@@ -46,6 +48,7 @@ static void free_result(struct result *r)
     bh_remarks_free(r->remarks);
     free(r->whole);
     free(r->bin);
+    free(r->lines);
     free(r);
 }
 
@@ -104,11 +107,11 @@ bh_stepwise *bh_stepwise_new(const bh_plan *plan, const bh_evaluation *how, bh_r
         s->results = results;
         results->generation++;
         forget_old(results);
-        s->keys = bh_arena_take(s->arena, plan->setting_count + 1, sizeof *s->keys);
+        s->sources = bh_arena_take(s->arena, plan->setting_count + 1, sizeof *s->sources);
         s->known = bh_arena_take(s->arena, plan->setting_count + 1, sizeof *s->known);
         s->evaluator.yielder = (bh_yielder){
             .workspace = how->workspace, .cancelled = how->cancelled, .asker = how->asker};
-        if (s->keys && s->known && bh_setting_keys(plan, s->arena, s->keys) &&
+        if (s->sources && s->known && bh_setting_sources(plan, s->arena, s->sources) &&
             !bh_evaluator_prepare(&s->evaluator, plan, s->arena, err))
             return s;
     }
@@ -124,6 +127,19 @@ void bh_stepwise_free(bh_stepwise *steps)
     free_chain(steps->loose);
     bh_arena_free(steps->arena);
     free(steps);
+}
+
+/* Remarks tell lines of the file: those of a part that moved move with it. */
+static void move_remarks(struct result *r, const bh_setting_source *source)
+{
+    for (size_t i = 0; i < r->line_count && i < source->count; i++) {
+        const int by = source->lines[i].from - r->lines[i].from;
+        if (by && r->lines[i].from)
+            bh_remarks_move(r->remarks, r->lines[i].from, r->lines[i].to, by);
+    }
+    bh_remarks_moved(r->remarks);
+    for (size_t i = 0; i < r->line_count && i < source->count; i++)
+        r->lines[i] = source->lines[i];
 }
 
 static bool keyed(const bh_setting_key *key)
@@ -142,12 +158,13 @@ static void number_rows(struct result *r, size_t setting)
 
 bool bh_stepwise_recall(bh_stepwise *steps, size_t setting, bool bins)
 {
-    const bh_setting_key *key = &steps->keys[setting];
+    const bh_setting_key *key = &steps->sources[setting].key;
     struct result *r = keyed(key) ? *place_of(steps->results, key) : NULL;
     if (!r || (bins && !r->bin))
         return false;
     r->used = steps->results->generation;
     number_rows(r, setting);
+    move_remarks(r, &steps->sources[setting]);
     steps->known[setting] = r;
     return true;
 }
@@ -179,7 +196,10 @@ static struct result *lay_out(const bh_setting *setting, size_t number, bool bin
 /* Puts it where it belongs, in the place of one without bins. */
 static void store(bh_stepwise *steps, size_t setting, struct result *r)
 {
-    r->key = steps->keys[setting];
+    const bh_setting_source *source = &steps->sources[setting];
+    r->key = source->key;
+    memcpy(r->lines, source->lines, source->count * sizeof *r->lines);
+    r->line_count = source->count;
     r->used = steps->results->generation;
     struct result **place = keyed(&r->key) ? place_of(steps->results, &r->key) : &steps->loose;
     if (keyed(&r->key) && *place) {
@@ -196,6 +216,12 @@ static void store(bh_stepwise *steps, size_t setting, struct result *r)
 bh_code bh_stepwise_evaluate(bh_stepwise *steps, size_t setting, bool bins, bh_error *err)
 {
     struct result *r = lay_out(&steps->plan->settings[setting], setting, bins);
+    if (r)
+        r->lines = calloc(steps->sources[setting].count + 1, sizeof *r->lines);
+    if (r && !r->lines) {
+        free_result(r);
+        r = NULL;
+    }
     if (!r)
         return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
     bh_setting_rows rows = {.whole = r->whole, .bins = r->bin};

@@ -4,7 +4,7 @@
 
 #include "beamhours/screen/asking.h"
 
-void bh_answer_free(bh_answer *answer)
+void bh_reply_free(bh_reply *answer)
 {
     if (!answer)
         return;
@@ -15,12 +15,12 @@ void bh_answer_free(bh_answer *answer)
     free(answer);
 }
 
-void bh_worker_drop_question(bh_own_question *question)
+void bh_worker_drop_question(bh_own_query *question)
 {
     free(question->bytes);
     free(question->setting);
     free(question->arm);
-    *question = (bh_own_question){0};
+    *question = (bh_own_query){0};
 }
 
 static bool stopped(void *asker)
@@ -28,7 +28,7 @@ static bool stopped(void *asker)
     return atomic_load(&((bh_worker *)asker)->stop);
 }
 
-static void explain(bh_worker *w, const bh_own_question *q, bh_answer *a)
+static void explain(bh_worker *w, const bh_own_query *q, bh_reply *a)
 {
     const bh_evaluation how = {.bins = q->question.bin > 0, .cancelled = stopped, .asker = w};
     a->table = bh_table_new(a->of->plan, &how, NULL, &a->why);
@@ -36,9 +36,9 @@ static void explain(bh_worker *w, const bh_own_question *q, bh_answer *a)
         a->explanation = bh_explain(a->table, q->setting, q->arm, q->question.bin, &a->why);
 }
 
-static void answer(bh_worker *w, const bh_own_question *q)
+static void answer(bh_worker *w, const bh_own_query *q)
 {
-    bh_answer *a = calloc(1, sizeof *a);
+    bh_reply *a = calloc(1, sizeof *a);
     if (!a)
         return;
     a->kind = q->question.kind;
@@ -57,16 +57,16 @@ static void answer(bh_worker *w, const bh_own_question *q)
         a = NULL;
     }
     (void)pthread_mutex_unlock(&w->lock);
-    bh_answer_free(a);
+    bh_reply_free(a);
     bh_worker_ring(w);
 }
 
-static bool take(bh_worker *w, bh_own_question *out)
+static bool take(bh_worker *w, bh_own_query *out)
 {
     for (int i = 0; i < BH_ASK_KINDS; i++)
         if (w->questions[i].number) {
             *out = w->questions[i];
-            w->questions[i] = (bh_own_question){0};
+            w->questions[i] = (bh_own_query){0};
             return true;
         }
     return false;
@@ -75,7 +75,7 @@ static bool take(bh_worker *w, bh_own_question *out)
 void *bh_worker_answers(void *of)
 {
     bh_worker *w = of;
-    bh_own_question question;
+    bh_own_query question;
     (void)pthread_mutex_lock(&w->lock);
     while (!atomic_load(&w->stop)) {
         if (!take(w, &question)) {
@@ -93,9 +93,9 @@ void *bh_worker_answers(void *of)
     return NULL;
 }
 
-size_t bh_worker_ask(bh_worker *worker, const bh_question *question)
+size_t bh_worker_ask(bh_worker *worker, const bh_query *question)
 {
-    bh_own_question own = {.question = *question,
+    bh_own_query own = {.question = *question,
                            .bytes = malloc(question->length + 1),
                            .setting = question->setting ? strdup(question->setting) : NULL,
                            .arm = question->arm ? strdup(question->arm) : NULL};
@@ -105,7 +105,7 @@ size_t bh_worker_ask(bh_worker *worker, const bh_question *question)
     }
     memcpy(own.bytes, question->bytes, question->length);
     (void)pthread_mutex_lock(&worker->lock);
-    bh_own_question *place = &worker->questions[question->kind];
+    bh_own_query *place = &worker->questions[question->kind];
     bh_worker_drop_question(place);
     const size_t number = own.number = ++worker->numbers;
     *place = own;
@@ -115,10 +115,10 @@ size_t bh_worker_ask(bh_worker *worker, const bh_question *question)
     return number;
 }
 
-bh_answer *bh_worker_answer(bh_worker *worker)
+bh_reply *bh_worker_answer(bh_worker *worker)
 {
     (void)pthread_mutex_lock(&worker->lock);
-    bh_answer *a = worker->answer_count ? worker->answers[0] : NULL;
+    bh_reply *a = worker->answer_count ? worker->answers[0] : NULL;
     if (a) {
         worker->answer_count--;
         memmove(worker->answers, worker->answers + 1,

@@ -210,7 +210,7 @@ static void ask_about_row(bh_desk *d, bh_ask_kind kind)
 {
     bh_model *m = &d->model;
     const bh_table_row *row = bh_table_here(m);
-    bh_question q = {.kind = kind};
+    bh_query q = {.kind = kind};
     q.bytes = bh_model_bytes(m, &q.length);
     if (!row)
         return;
@@ -253,7 +253,7 @@ int bh_desk_wake(const bh_desk *desk)
 bool bh_desk_news(bh_desk *desk)
 {
     bh_outcome *outcome = desk->worker ? bh_worker_take(desk->worker) : NULL;
-    bh_answer *answer = NULL;
+    bh_reply *answer = NULL;
     bool some = outcome != NULL;
     bh_model_adopt(&desk->model, outcome);
     while (desk->worker && (answer = bh_worker_answer(desk->worker))) {

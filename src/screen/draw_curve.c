@@ -91,15 +91,17 @@ static void show_dots(const struct plot *p)
         }
 }
 
-static void label(const struct plot *p, int row, double value, const char *unit)
+static void label(const struct plot *p, int row, double value)
 {
     char number[BH_NUMBER_SIZE];
     if (!isfinite(value))
         return;
-    (void)bh_number_digits(value, 3, number, sizeof number);
+    if (value > 0 && (value < 0.01 || value >= 1e5))
+        (void)snprintf(number, sizeof number, "%.1e", value);
+    else
+        (void)bh_number_digits(value, 3, number, sizeof number);
     (void)bh_canvas_put_right(p->canvas, (bh_spot){row, p->column - LABEL, LABEL - 1},
                               BH_LOOK_QUIET, number);
-    (void)unit;
 }
 
 /* The in-plane acceptance of each row, below the curve; that of the row in focus stands out. */
@@ -128,11 +130,11 @@ static void show_acceptances(const bh_model *model, const struct plot *p)
         }
 }
 
-static void show_axes(const struct plot *p, const char *unit)
+static void show_axes(const struct plot *p)
 {
     char text[80];
-    label(p, p->row, p->y[1], unit);
-    label(p, p->row + p->rows - 1, p->y[0], unit);
+    label(p, p->row, p->y[1]);
+    label(p, p->row + p->rows - 1, p->y[0]);
     for (int r = 0; r < p->rows; r++)
         (void)bh_canvas_put(p->canvas, (bh_spot){p->row + r, p->column - 1, 1}, BH_LOOK_QUIET,
                             "\u2502");
@@ -144,8 +146,7 @@ static void show_axes(const struct plot *p, const char *unit)
                               text);
 }
 
-static void draw_title(const bh_model *model, const bh_arrangement *places, const char *name,
-                       bh_canvas *canvas)
+static void draw_title(const bh_arrangement *places, const char *name, bh_canvas *canvas)
 {
     const bh_spot spot = {places->curve, places->table_column, places->table_columns};
     for (int c = 0; c < spot.width; c++)
@@ -153,12 +154,11 @@ static void draw_title(const bh_model *model, const bh_arrangement *places, cons
                             "\u2500");
     (void)bh_canvas_put(canvas, (bh_spot){spot.row, spot.column + 2, spot.width - 2}, BH_LOOK_TITLE,
                         name);
-    (void)model;
 }
 
 void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
-    const bh_answer *a = model->curve;
+    const bh_reply *a = model->curve;
     const bh_column_id column = column_of[model->curve_shown % BH_SHOW_NO_CURVE];
     struct plot p = {.canvas = canvas,
                      .row = places->curve + 1,
@@ -166,10 +166,11 @@ void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canva
                      .rows = places->curve_rows - 3,
                      .columns = places->table_columns - LABEL};
     char name[120];
-    (void)snprintf(name, sizeof name, " %s [%s] of %.40s, against angle ",
-                   bh_column_at((int)column)->heading, bh_column_at((int)column)->unit,
-                   model->table.here[0] ? model->table.here : "the first setting");
-    draw_title(model, places, name, canvas);
+    static const char *const what[] = {"cross section", "signal rate", "counts"};
+    (void)snprintf(name, sizeof name, " %s [%s] against angle, %.40s ",
+                   what[model->curve_shown % BH_SHOW_NO_CURVE], bh_column_at((int)column)->unit,
+                   model->table.here);
+    draw_title(places, name, canvas);
     p.rows = p.rows > MOST_HIGH ? MOST_HIGH : p.rows;
     p.columns = p.columns > MOST_WIDE ? MOST_WIDE : p.columns;
     if (p.rows < 2 || p.columns < 10)
@@ -181,6 +182,6 @@ void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canva
     }
     trace(&p, a->curve, column);
     show_dots(&p);
-    show_axes(&p, bh_column_at((int)column)->unit);
+    show_axes(&p);
     show_acceptances(model, &p);
 }

@@ -31,29 +31,29 @@ static bool compares(const bh_model *model)
     return false;
 }
 
-/* From the view's column `first` on; whether the one in focus, and what it was, came to stand. */
+/* From the view's column `first` on; whether the one in focus came to stand.  What the compared one
+ * was stands at the right end, so that nothing else moves when it comes or goes. */
 static bool place_from(const bh_model *model, const bh_arrangement *places, int first,
                        bh_column_places *p)
 {
     const bh_table_view *v = &model->table;
+    const int was = compares(model) ? width_of_was(v) : 0;
     const int end = places->table_column + places->table_columns;
-    const bool was = compares(model);
-    const int compared = bh_table_compared(model);
     bool focus = false;
     int at = places->table_column;
     p->count = 0;
     for (int i = 0; i < v->column_count; i++) {
         const int width = v->columns[i].width;
-        const bool old = was && v->columns[i].column == compared;
         if ((i > 0 && i < first) || p->count >= BH_MOST_SHOWN - 2)
             continue;
-        if (at + width + (old ? 1 + width_of_was(v) : 0) > end)
+        if (at + width + (was ? was + 1 : 0) > end)
             break;
         place(p, i, width, &at);
-        if (old)
-            place(p, -1, width_of_was(v), &at);
         focus = focus || i == v->column;
     }
+    at = end - was;
+    if (was)
+        place(p, -1, was, &at);
     return focus;
 }
 
@@ -136,6 +136,16 @@ static int draw_state(const bh_model *model, bh_spot spot, bh_canvas *canvas)
     return bh_canvas_put(canvas, spot, look, text);
 }
 
+/* In some row that is in view. */
+static bool column_changed(const bh_model *model, const bh_arrangement *places, int column)
+{
+    const bh_table_view *v = &model->table;
+    for (size_t i = v->top; i < v->count && i < v->top + (size_t)places->table_rows; i++)
+        if (bh_table_changed(&v->rows[i], column))
+            return true;
+    return false;
+}
+
 static void draw_heads(const bh_model *model, const bh_arrangement *places,
                        const bh_column_places *p, bh_canvas *canvas)
 {
@@ -160,7 +170,12 @@ static void draw_heads(const bh_model *model, const bh_arrangement *places,
                        : v->falling          ? "\u2193"
                                              : "\u2191",
                        bh_column_at(c->column)->heading);
-        (void)(left ? bh_canvas_put : bh_canvas_put_right)(canvas, spot, BH_LOOK_TITLE, heading);
+        const bool changed = column_changed(model, places, c->column);
+        (void)(left ? bh_canvas_put : bh_canvas_put_right)(canvas, spot,
+                                                           !changed        ? BH_LOOK_TITLE
+                                                           : model->trying ? BH_LOOK_TRIAL
+                                                                           : BH_LOOK_CHANGED,
+                                                           heading);
         (void)bh_canvas_put_right(canvas, below, BH_LOOK_QUIET, c->unit);
         if (p->index[i] == v->column && model->pane == BH_PANE_TABLE)
             bh_canvas_paint(canvas, spot, BH_LOOK_CURSOR);
@@ -169,11 +184,14 @@ static void draw_heads(const bh_model *model, const bh_arrangement *places,
 
 /* --- rows --- */
 
+/* The name of a row that changed, and the column that is compared, stand out; which other columns
+ * changed is marked in their heads, lest every digit of a large table be sent twice. */
 static bh_look look_of(const bh_model *model, const bh_table_row *row, int column)
 {
+    const bool named = column == BH_COL_SETTING && row->change > 0;
     if (row->stale)
         return BH_LOOK_STALE;
-    if (bh_table_changed(row, column))
+    if (named || (column == bh_table_compared(model) && bh_table_changed(row, column)))
         return model->trying ? BH_LOOK_TRIAL : BH_LOOK_CHANGED;
     return BH_LOOK_PLAIN;
 }

@@ -20,7 +20,7 @@ bool bh_model_open(bh_model *model, const char *bytes, size_t length, const char
     bh_outcome_leave(model->now);
     bh_outcome_leave(model->kept);
     bh_outcome_leave(model->pin);
-    bh_answer_free(model->curve);
+    bh_reply_free(model->curve);
     model->now = model->kept = model->pin = NULL;
     model->curve = NULL;
     model->trying = model->rescued = false;
@@ -42,7 +42,7 @@ void bh_model_close(bh_model *model)
     bh_outcome_leave(model->now);
     bh_outcome_leave(model->kept);
     bh_outcome_leave(model->pin);
-    bh_answer_free(model->curve);
+    bh_reply_free(model->curve);
     bh_sheet_close(&model->sheet);
     bh_choose_close(&model->chooser);
 }
@@ -144,16 +144,16 @@ void bh_model_adopt(bh_model *model, bh_outcome *outcome)
     bh_table_refresh(model);
 }
 
-void bh_model_answer(bh_model *model, bh_answer *answer)
+void bh_model_answer(bh_model *model, bh_reply *answer)
 {
     if (answer->kind == BH_ASK_CURVE) {
-        bh_answer_free(model->curve);
+        bh_reply_free(model->curve);
         model->curve = answer;
         return;
     }
     if (answer->number == model->explain_asked)
         bh_sheet_explain(model, answer);
-    bh_answer_free(answer);
+    bh_reply_free(answer);
 }
 
 void bh_model_resize(bh_model *model, int rows, int columns)

@@ -152,7 +152,7 @@ void bh_sheet_show(bh_model *model, bh_sheet_kind kind)
     sheets[kind].write(model, &w);
 }
 
-void bh_sheet_explain(bh_model *model, const bh_answer *answer)
+void bh_sheet_explain(bh_model *model, const bh_reply *answer)
 {
     bh_sheet_writer w;
     if (model->over != BH_OVER_SHEET || model->sheet.kind != BH_SHEET_EXPLAIN ||

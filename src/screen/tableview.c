@@ -96,7 +96,7 @@ static void push_setting(struct building *b, size_t s)
         const size_t r = o->first_row[s] + a;
         const bh_row *was = old ? row_in(kept, t, a) : NULL;
         push(b, (bh_table_row){.row = r,
-                               .stale = !o->known[s] || o != b->model->now,
+                               .stale = !o->known[s],
                                .now = o->known[s] || !was ? &o->rows[r] : was,
                                .before = b->against ? row_in(b->against, u, a) : NULL});
     }

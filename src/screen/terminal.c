@@ -172,7 +172,7 @@ static void set_modes(void)
     (void)nonl();
     (void)keypad(stdscr, TRUE);
     (void)nodelay(stdscr, TRUE);
-    (void)set_escdelay(25);
+    (void)set_escdelay(8); /* a terminal sends what belongs together at once */
     (void)mousemask(BUTTON1_CLICKED | BUTTON1_DOUBLE_CLICKED | BUTTON1_PRESSED | BUTTON4_PRESSED |
                         BUTTON5_PRESSED,
                     NULL);

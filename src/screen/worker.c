@@ -307,7 +307,7 @@ static void free_all(bh_worker *w)
     for (int i = 0; i < BH_ASK_KINDS; i++)
         bh_worker_drop_question(&w->questions[i]);
     for (size_t i = 0; i < w->answer_count; i++)
-        bh_answer_free(w->answers[i]);
+        bh_reply_free(w->answers[i]);
     for (int i = 0; i < 2; i++) {
         bh_reading_of_leave(w->last[i]);
         if (w->wake[i] >= 0)

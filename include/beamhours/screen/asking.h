@@ -19,9 +19,9 @@ typedef struct {
 
 typedef struct {
     size_t number; /* 0: none waits */
-    bh_question question;
+    bh_query question;
     char *bytes, *setting, *arm;
-} bh_own_question;
+} bh_own_query;
 
 enum { BH_MOST_ANSWERS = 16 };
 
@@ -40,8 +40,8 @@ struct bh_worker {
     bool working[2];
     bh_own_job waiting; /* number 0: none */
     bh_outcome *out;
-    bh_own_question questions[BH_ASK_KINDS];
-    bh_answer *answers[BH_MOST_ANSWERS];
+    bh_own_query questions[BH_ASK_KINDS];
+    bh_reply *answers[BH_MOST_ANSWERS];
     size_t answer_count;
     bh_results *results; /* of the first thread */
     bh_workspace *workspace;
@@ -57,6 +57,6 @@ void bh_worker_ring(bh_worker *worker);
 
 /* The second thread. */
 void *bh_worker_answers(void *worker);
-void bh_worker_drop_question(bh_own_question *question);
+void bh_worker_drop_question(bh_own_query *question);
 
 #endif

@@ -195,7 +195,7 @@ typedef struct {
     int answer; /* in focus */
 
     bh_curve_shown curve_shown;
-    bh_answer *curve;
+    bh_reply *curve;
     size_t curve_asked, explain_asked;
     bool curve_due, explain_due;
 
@@ -234,7 +234,7 @@ void bh_model_saved(bh_model *model); /* it is in the file now */
 
 /* What the worker handed back; the model takes it. */
 void bh_model_adopt(bh_model *model, bh_outcome *outcome);
-void bh_model_answer(bh_model *model, bh_answer *answer);
+void bh_model_answer(bh_model *model, bh_reply *answer);
 
 /* Settings in view, and those whose bins are open, for the next job.  Fills at most `room`. */
 size_t bh_model_in_view(const bh_model *model, size_t *settings, size_t room);
@@ -308,7 +308,7 @@ void bh_table_columns(bh_model *model);
 void bh_sheet_show(bh_model *model, bh_sheet_kind kind);
 void bh_sheet_close(bh_sheet *sheet);
 bool bh_sheet_press(bh_model *model, const bh_press *press);
-void bh_sheet_explain(bh_model *model, const bh_answer *answer);
+void bh_sheet_explain(bh_model *model, const bh_reply *answer);
 
 /* --- chooser.c --- */
 bool bh_choose_value(bh_model *model); /* for the line in focus; false: nothing to choose from */

@@ -52,7 +52,7 @@ typedef struct {
     size_t length; /* [bytes] */
     const char *setting, *arm;
     int bin; /* explain */
-} bh_question;
+} bh_query;
 
 /* What came of it.  Belongs to who took it. */
 typedef struct {
@@ -63,13 +63,13 @@ typedef struct {
     bh_explanation *explanation;
     bh_curve *curve;
     bh_error why; /* where there is none */
-} bh_answer;
+} bh_reply;
 
 /* Asks; a question of the same kind that waits is replaced.  Returns its number, or 0. */
-size_t bh_worker_ask(bh_worker *worker, const bh_question *question);
+size_t bh_worker_ask(bh_worker *worker, const bh_query *question);
 
 /* An answer that was not taken yet, or NULL. */
-bh_answer *bh_worker_answer(bh_worker *worker);
-void bh_answer_free(bh_answer *answer);
+bh_reply *bh_worker_answer(bh_worker *worker);
+void bh_reply_free(bh_reply *answer);
 
 #endif

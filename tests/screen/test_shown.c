@@ -1,0 +1,162 @@
+/* test_shown.c - keys in, screens out, compared with docs/screens; `make screens` writes them anew. */
+#include "../suite.h"
+
+#include <errno.h>
+#include <gsl/gsl_errno.h>
+#include <limits.h>
+#include <stdbool.h>
+#include <stdlib.h>
+#include <unistd.h>
+
+#include "beamhours/base/file.h"
+#include "driven.h"
+
+static const struct {
+    const char *name, *demo, *keys;
+    int rows, columns;
+    bool ascii;
+    size_t evaluated; /* settings, all in all; 0: whatever */
+} screens[] = {
+    {"start", "hydrogen-separation", "", 24, 80, false, 6},
+    {"typing", "hydrogen-separation", "lcurrent<Escape>4 uA", 24, 80, false, 12},
+    {"invalid", "hydrogen-separation", "lcurrent<Escape>30 uX", 24, 80, false, 6},
+    {"kept", "hydrogen-separation", "lcurrent<Escape>4 uA<Enter>", 24, 80, false, 12},
+    {"left", "hydrogen-separation", "lcurrent<Escape>4 uA<Escape>", 24, 80, false, 12},
+    {"stepped", "hydrogen-separation", "lefficiency<Escape><Enter><Home><Right><Right><Up><Up>", 24, 80, false,
+     0},
+    {"back", "hydrogen-separation", "lcurrent<Escape>4 uA<Enter>b", 24, 80, false, 12},
+    {"forth", "hydrogen-separation", "lcurrent<Escape>4 uA<Enter>bf", 24, 80, false, 12},
+    {"added", "hydrogen-separation", "lsettings<Escape>a", 24, 80, false, 7},
+    {"added-key", "hydrogen-separation", "lbeam<Escape>afraction<Enter><Rubout><Rubout><Rubout><Rubout>90 %<Enter>",
+     24, 80, false, 0},
+    {"duplicated", "positron-electron", "lplus-forward<Escape><Left><Left>d", 24, 80, false, 5},
+    {"removed", "positron-electron", "lplus-forward<Escape><Left><Left>r", 24, 80, false, 4},
+    {"moved", "positron-electron", "lplus-forward<Escape><Left><Left>>>", 24, 80, false, 4},
+    {"ordered", "positron-electron", "<Tab><Right><Right><Right><Right>oo", 24, 80, false, 4},
+    {"pinned", "hydrogen-separation", "<Tab>p<Tab>lefficiency<Escape>80 %<Enter>", 24, 80, false, 12},
+    {"bins", "hydrogen-separation", "<Tab><Down><Enter>", 24, 80, false, 7},
+    {"choose-material", "hydrogen-separation", "lmaterial<Escape><Enter>", 24, 80, false, 0},
+    {"choose-narrowed", "hydrogen-separation", "lmaterial<Escape><Enter>tung", 24, 80, false, 0},
+    {"choose-particle", "hydrogen-separation", "lparticle<Escape><Enter><Down>", 24, 80, false, 0},
+    {"choose-key", "hydrogen-separation", "lbeam<Escape>a", 24, 80, false, 6},
+    {"choose-model", "hydrogen-separation",
+     "<Home>amodels<Enter><Rubout><Rubout><Escape><Home>", 24, 80, false, 0},
+    {"rates", "positron-electron", "<Tab>v", 24, 80, false, 4},
+    {"counts", "hydrogen-separation", "<Tab>vv", 24, 80, false, 6},
+    {"no-curve", "hydrogen-separation", "vvv", 24, 80, false, 6},
+    {"help", "hydrogen-separation", "?", 24, 80, false, 6},
+    {"help-end", "hydrogen-separation", "?<End>", 24, 80, false, 6},
+    {"cautions", "hydrogen-separation", "c", 24, 80, false, 6},
+    {"messages", "positron-electron", "m", 24, 80, false, 4},
+    {"to-the-line", "hydrogen-separation", "m<Enter>", 24, 80, false, 6},
+    {"to-the-plan", "hydrogen-separation", "<Tab><Down><Down>t", 24, 80, false, 6},
+    {"explained", "hydrogen-separation", "<Tab>e<PageDown>", 24, 80, false, 6},
+    {"info", "hydrogen-separation", "lmomentum_bite<Escape>i", 24, 80, false, 6},
+    {"history", "hydrogen-separation", "lcurrent<Escape>4 uA<Enter>lgoal<Escape>2 %<Enter>bh", 24, 80, false,
+     0},
+    {"leave", "hydrogen-separation", "lcurrent<Escape>4 uA<Enter>q", 24, 80, false, 12},
+    {"looked-for", "hydrogen-separation", "lmaterial<Enter>", 24, 80, false, 6},
+    {"not-found", "hydrogen-separation", "lxyzzy", 24, 80, false, 6},
+    {"as-text", "hydrogen-separation", "lin_plane<Escape>=", 24, 80, false, 6},
+    {"columns-further", "hydrogen-separation",
+     "<Tab><Right><Right><Right><Right><Right><Right><Right><Right><Right><Right>", 24, 80, false, 6},
+    {"large", "hydrogen-separation", "", 60, 200, false, 6},
+    {"small", "hydrogen-separation", "", 10, 40, false, 6},
+    {"small-table", "hydrogen-separation", "<Tab>", 10, 40, false, 6},
+    {"tiny", "hydrogen-separation", "", 3, 12, false, 6},
+    {"resized-while-typing", "hydrogen-separation",
+     "lcurrent<Escape>4<Size 200x60> u<Size 40x10>A<Size 80x24>", 24, 80, false, 0},
+    {"ascii", "hydrogen-separation", "lin_plane<Escape>", 24, 80, true, 6},
+    {"rings", "muon-rings", "<Tab>", 24, 100, false, 0},
+    {"no-plan", "-lead: [1, 2", "", 24, 80, false, 0},
+    {"errors", "-plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uX}\n", "m",
+     24, 80, false, 0},
+};
+
+/* The folder of the sources, which tests are run in; another one while a screen is made. */
+static char here[PATH_MAX];
+
+static void put_plan(const char *demo)
+{
+    char path[PATH_MAX + 64];
+    bh_text text = {0};
+    bh_error err = {.code = BH_OK};
+    snprintf(path, sizeof path, "%s/plans/%s.yaml", here, demo);
+    if (demo[0] == '-')
+        bh_text_append(&text, demo + 1);
+    else
+        ck_assert_msg(!bh_file_read(path, 1 << 20, &text, &err), "%s", err.text);
+    ck_assert(!bh_file_write("plan.yaml", text.bytes, text.length, &err));
+    bh_text_free(&text);
+}
+
+static bh_desk *open_desk(bool ascii)
+{
+    char materials[PATH_MAX + 16];
+    snprintf(materials, sizeof materials, "%s/materials", here);
+    const char *const folders[] = {materials, NULL};
+    bh_error err = {.code = BH_OK};
+    bh_desk *desk = bh_desk_open(
+        &(bh_desk_start){.path = "plan.yaml", .folders = folders, .ascii = ascii}, &err);
+    ck_assert_msg(desk != NULL, "%s", err.text);
+    return desk;
+}
+
+static void enter_folder(char folder[64])
+{
+    snprintf(folder, 64, "/tmp/beamhours-shown-XXXXXX");
+    ck_assert(getcwd(here, sizeof here) && mkdtemp(folder) && chdir(folder) == 0);
+}
+
+static void leave_folder(const char *folder)
+{
+    char command[128];
+    snprintf(command, sizeof command, "rm -rf %s", folder);
+    ck_assert_int_eq(chdir(here), 0);
+    ck_assert_int_eq(system(command), 0);
+}
+
+static void compare(const char *name, const bh_text *got)
+{
+    char path[128];
+    bh_text wanted = {0};
+    bh_error err = {.code = BH_OK};
+    snprintf(path, sizeof path, "docs/screens/%s.txt", name);
+    const char *accept = getenv("ACCEPT");
+    if (accept && accept[0])
+        ck_assert_msg(!bh_file_write(path, got->bytes, got->length, &err), "%s", err.text);
+    ck_assert_msg(!bh_file_read(path, 1 << 20, &wanted, &err), "%s; make screens", err.text);
+    ck_assert_msg(wanted.length == got->length &&
+                      memcmp(wanted.bytes, got->bytes, got->length) == 0,
+                  "%s is not as in %s (make screens; git diff):\n%s", name, path, got->bytes);
+    bh_text_free(&wanted);
+}
+
+START_TEST(as_in_docs)
+{
+    char folder[64];
+    bh_text got = {0};
+    gsl_set_error_handler_off();
+    enter_folder(folder);
+    put_plan(screens[_i].demo);
+    bh_desk *desk = open_desk(screens[_i].ascii);
+    bh_desk_resize(desk, screens[_i].rows, screens[_i].columns);
+    ck_assert(driven_settle(desk) && driven_press(desk, screens[_i].keys));
+    driven_draw(desk, &got);
+    const size_t evaluated = bh_desk_evaluated(desk);
+    bh_desk_close(desk);
+    leave_folder(folder);
+    compare(screens[_i].name, &got);
+    if (screens[_i].evaluated)
+        ck_assert_uint_eq(evaluated, screens[_i].evaluated);
+    bh_text_free(&got);
+}
+END_TEST
+
+int main(void)
+{
+    TCase *tests = tcase_create("shown");
+    tcase_set_timeout(tests, 300);
+    tcase_add_loop_test(tests, as_in_docs, 0, COUNT(screens));
+    return run_suite("screen/shown", tests);
+}
