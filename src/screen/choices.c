@@ -242,8 +242,9 @@ void bh_choices_more(const bh_model *model, const bh_choice *choice, bh_text *ou
         bh_diags_free(diags);
         return;
     }
-    if (model->chooser.kind == BH_CHOOSE_KEY && choice->more)
-        bh_text_appendf(out, "for example %s: %s", choice->name, choice->more);
+    bh_text_append(out, choice->about);
+    if (choice->more && model->chooser.kind == BH_CHOOSE_KEY)
+        bh_text_appendf(out, "; for example %s: %s", choice->name, choice->more);
     else if (choice->more)
-        bh_text_append(out, choice->more);
+        bh_text_appendf(out, "%s%s", out->length ? "; " : "", choice->more);
 }

@@ -18,9 +18,11 @@ static void append_quantity(bh_text *into, const bh_value *value, bh_dimension d
 static void append_summary(const bh_plan *plan, bh_text *into)
 {
     const bh_beam *beam = &plan->beam;
+    const char *key = beam->energy_key.text ? beam->energy_key.text : "";
+    const bool momentum = strcmp(key, "momentum") == 0;
     bh_text_appendf(into, "%s ", beam->particle.name);
-    append_quantity(into, &beam->kinetic_energy, BH_DIM_ENERGY);
-    bh_text_append(into, ", ");
+    append_quantity(into, &beam->energy_written, momentum ? BH_DIM_MOMENTUM : BH_DIM_ENERGY);
+    bh_text_append(into, strcmp(key, "total_energy") == 0 ? " total, " : ", ");
     append_quantity(into, beam->rate_written ? &beam->particle_rate : &beam->current,
                     beam->rate_written ? BH_DIM_RATE : BH_DIM_CURRENT);
     for (size_t i = 0; plan->target_count && i < plan->targets[0].layer_count; i++) {
@@ -195,7 +197,7 @@ static void draw_caution(const bh_model *model, const bh_arrangement *places, bh
         bh_text_free(&text);
     }
     (void)bh_canvas_put(canvas, (bh_spot){row, at, canvas->columns - at - end}, BH_LOOK_CAUTION,
-                        o ? defer : "the facility's rules decide");
+                        at > 8 ? defer : "the facility's rules decide");
     (void)bh_canvas_put_right(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_KEY, more);
 }
 

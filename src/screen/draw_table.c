@@ -19,7 +19,7 @@ static void place(bh_column_places *p, int index, int width, int *at)
 
 static int width_of_was(const bh_table_view *v)
 {
-    const int width = v->widths[BH_COLUMN_COUNT];
+    const int width = v->widths[v->compared];
     return width > 6 ? width : 6;
 }
 
@@ -101,8 +101,8 @@ static void draw_totals(const bh_model *model, bh_spot spot, bh_canvas *canvas)
     else
         (void)snprintf(text, sizeof text, "asked %s of %s  %s %s", asked, granted,
                        t->spare_hours < 0 ? "OVER by" : "spare", spare + (t->spare_hours < 0));
-    if ((int)strlen(text) + 2 > spot.width)
-        (void)snprintf(text, sizeof text, "asked %s", asked);
+    if ((int)strlen(text) + 2 > spot.width && !isnan(t->available_hours))
+        (void)snprintf(text, sizeof text, "asked %s of %s", asked, granted);
     const bool old = model->trying && o != model->now;
     (void)bh_canvas_put_right(canvas, spot,
                               old                  ? BH_LOOK_STALE
@@ -191,7 +191,7 @@ static bh_look look_of(const bh_model *model, const bh_table_row *row, int colum
     const bool named = column == BH_COL_SETTING && row->change > 0;
     if (row->stale)
         return BH_LOOK_STALE;
-    if (named || (column == bh_table_compared(model) && bh_table_changed(row, column)))
+    if (named || (column == model->table.compared && bh_table_changed(row, column)))
         return model->trying ? BH_LOOK_TRIAL : BH_LOOK_CHANGED;
     return BH_LOOK_PLAIN;
 }
@@ -199,7 +199,7 @@ static bh_look look_of(const bh_model *model, const bh_table_row *row, int colum
 static const bh_table_column *compared_column(const bh_model *model)
 {
     const bh_table_view *v = &model->table;
-    const int column = bh_table_compared(model);
+    const int column = model->table.compared;
     for (int i = 0; i < v->column_count; i++)
         if (v->columns[i].column == column)
             return &v->columns[i];

@@ -242,10 +242,16 @@ static void base_press(bh_model *model, const bh_press *press)
 
 void bh_leave(bh_model *model)
 {
-    if (bh_model_unsaved(model))
-        bh_ask(model, BH_QUESTION_LEAVE);
-    else
+    const size_t unsaved = bh_model_unsaved(model);
+    if (!unsaved) {
         model->wish = BH_WISH_LEAVE;
+        return;
+    }
+    (void)snprintf(model->question_text[0], sizeof *model->question_text,
+                   "%zu change%s not saved in %.180s.", unsaved, unsaved == 1 ? " is" : "s are",
+                   model->file);
+    model->question_text[1][0] = model->question_text[2][0] = '\0';
+    bh_ask(model, BH_QUESTION_LEAVE);
 }
 
 static void name_press(bh_model *model, const bh_press *press)

@@ -148,6 +148,19 @@ void bh_plan_value(const bh_model *model, const bh_plan_line *line, bh_text *int
 
 /* --- opening and closing --- */
 
+/* Scrolls so that lines `first` to `last` are in view, as far as there is room. */
+static void show_lines(bh_model *model, size_t first, size_t last)
+{
+    bh_plan_view *v = &model->plan;
+    const bh_arrangement places = bh_arrange(model);
+    const size_t rows = places.body_rows > 1 ? (size_t)places.body_rows - 1 : 1;
+    if (last >= v->top + rows)
+        v->top = last - rows + 1;
+    if (v->top > first)
+        v->top = first;
+    bh_plan_keep_in_view(model);
+}
+
 static bool forget_turned(bh_plan_view *v, const char *path)
 {
     for (size_t i = 0; i < v->turned_count; i++)
@@ -184,6 +197,10 @@ void bh_plan_turn(bh_model *model, size_t line)
         return;
     turn(v, v->lines[line].node);
     bh_plan_lines_make(model);
+    size_t last = line + 1;
+    while (last < v->count && v->lines[last].depth > v->lines[line].depth)
+        last++;
+    show_lines(model, line, last - 1);
 }
 
 static size_t line_of(const bh_plan_view *v, const bh_node *node)
@@ -216,29 +233,33 @@ void bh_plan_go(bh_model *model, const char *path)
     bh_plan_keep_in_view(model);
 }
 
-/* The innermost node that begins at or before a line of the file. */
+/* The outermost node that begins in a line of the file; else the last one before it. */
+struct sought {
+    int line;
+    const bh_node *exact, *before;
+};
+
 /* NOLINTBEGIN(misc-no-recursion): as deep as a document may be */
-static const bh_node *node_at(const bh_node *node, int line)
+static void seek(struct sought *s, const bh_node *node)
 {
-    const bh_node *found = node->at.line <= line ? node : NULL;
-    for (size_t i = 0; i < node->count && node->items[i]->at.line <= line; i++) {
-        const bh_node *inside = node_at(node->items[i], line);
-        found = inside && inside->at.line >= found->at.line ? inside : found;
-        if (inside && inside->at.line == line && inside->style == BH_STYLE_FLOW)
-            break; /* the line itself, not the last thing on it */
-    }
-    return found;
+    if (node->parent && node->at.line == s->line && !s->exact)
+        s->exact = node;
+    if (node->parent && node->at.line < s->line)
+        s->before = node;
+    for (size_t i = 0; i < node->count && !s->exact; i++)
+        seek(s, node->items[i]);
 }
 /* NOLINTEND(misc-no-recursion) */
 
 void bh_plan_go_line(bh_model *model, int line)
 {
     bh_text path = {0};
-    const bh_node *node =
-        model->edit ? node_at(bh_document_root(bh_edit_document(model->edit)), line) : NULL;
-    if (!node || line < 1)
+    struct sought s = {.line = line};
+    if (!model->edit || line < 1)
         return;
-    bh_trail_of(node, &path);
+    seek(&s, bh_document_root(bh_edit_document(model->edit)));
+    if (s.exact || s.before)
+        bh_trail_of(s.exact ? s.exact : s.before, &path);
     if (path.bytes) {
         model->pane = BH_PANE_PLAN;
         bh_plan_go(model, path.bytes);

@@ -217,7 +217,7 @@ static void find_again(bh_model *model)
 
 static double relative(const bh_table_row *row, int column)
 {
-    if (!row->before || column >= BH_COLUMN_COUNT)
+    if (!row->before)
         return 0;
     const double a = row->before->number[column], b = row->now->number[column];
     if (isnan(a) || isnan(b))
@@ -230,18 +230,17 @@ bool bh_table_changed(const bh_table_row *row, int column)
     return !row->stale && relative(row, column) > 1e-9;
 }
 
-int bh_table_compared(const bh_model *model)
+/* The column of which the old value is shown: the one in focus, or hours. */
+static int compared(const bh_table_view *v)
 {
-    const bh_table_view *v = &model->table;
     const int column = v->column < v->column_count ? v->columns[v->column].column : BH_COL_HOURS;
-    const bool number = column < BH_COLUMN_COUNT && bh_column_at(column)->kind == BH_CELL_NUMBER;
-    return number ? column : BH_COL_HOURS;
+    return bh_column_at(column)->kind == BH_CELL_NUMBER ? column : BH_COL_HOURS;
 }
 
 static void measure_changes(bh_model *model)
 {
     bh_table_view *v = &model->table;
-    const int column = bh_table_compared(model);
+    const int column = v->compared = compared(v);
     v->most_change = 0;
     for (size_t i = 0; i < v->count; i++) {
         v->rows[i].change = v->rows[i].stale ? 0 : relative(&v->rows[i], column);
@@ -334,7 +333,7 @@ void bh_table_order(bh_model *model)
 {
     bh_table_view *v = &model->table;
     const int column = v->column < v->column_count ? v->columns[v->column].column : -1;
-    if (column < 0 || column >= BH_COLUMN_COUNT)
+    if (column < 0)
         return;
     if (v->order != column) {
         v->order = column;

@@ -40,7 +40,7 @@ static const struct {
     {"choose-particle", "hydrogen-separation", "lparticle<Escape><Enter><Down>", 24, 80, false, 0},
     {"choose-key", "hydrogen-separation", "lbeam<Escape>a", 24, 80, false, 6},
     {"choose-model", "hydrogen-separation",
-     "<Home>amodels<Enter><Rubout><Rubout><Escape><Home>", 24, 80, false, 0},
+     "<Home>amodels<Enter>", 24, 80, false, 0},
     {"rates", "positron-electron", "<Tab>v", 24, 80, false, 4},
     {"counts", "hydrogen-separation", "<Tab>vv", 24, 80, false, 6},
     {"no-curve", "hydrogen-separation", "vvv", 24, 80, false, 6},

@@ -66,7 +66,8 @@ typedef struct {
     char here[64]; /* the row in focus: its setting, arm and bin */
     size_t here_arm;
     int here_bin;
-    int widths[BH_COLUMN_COUNT + 1]; /* the widest cell that was in view; last: of what was */
+    int widths[BH_COLUMN_COUNT]; /* the widest cell that was in view */
+    int compared;                /* bh_column_id: the column of which the old value is shown */
     double most_change;              /* [1] relative, of the column in focus */
     char **opened;                   /* names of settings whose bins are open */
     size_t opened_count;
@@ -291,7 +292,6 @@ enum { BH_CELL_ROOM = 64 };
 void bh_table_cell(const bh_model *model, const bh_table_row *row, const bh_table_column *column,
                    bool before, char out[BH_CELL_ROOM]);
 bool bh_table_changed(const bh_table_row *row, int column);
-int bh_table_compared(const bh_model *model); /* the column of which the old value is shown */
 void bh_table_order(bh_model *model);
 void bh_table_pin(bh_model *model);
 void bh_table_open_bins(bh_model *model);
