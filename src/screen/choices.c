@@ -204,6 +204,9 @@ void bh_choices_of_keys(bh_model *model, const char *path)
     const bh_node *mapping = bh_document_find(bh_edit_document(model->edit), path);
     bh_plan_key key;
     key_path(path, prefix);
+    const char *last = strrchr(prefix, '.');
+    if (last && strcmp(last, ".beam") == 0) /* of a setting: the keys of the plan's */
+        (void)snprintf(prefix, sizeof prefix, "beam");
     const size_t n = strlen(prefix);
     for (size_t i = 0; mapping && bh_plan_key_at(i, &key); i++) {
         const char *rest = key.path + (n ? n + 1 : 0);

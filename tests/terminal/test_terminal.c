@@ -1,46 +1,374 @@
 /* test_terminal.c - the real program in a pseudo-terminal: what a user sees, cell by cell. */
 #include "../suite.h"
 
+#include <signal.h>
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
 #include "tty.h"
 
-static void begin(tty *t)
+static void begin_with(tty *t, const tty_start *how)
 {
     tty_folder(t, "hydrogen-separation");
-    tty_run(t, &(tty_start){.arguments = {"plan.yaml"}});
-    tty_wait(t, "asked 3.28 d of 6.00 d");
+    tty_run(t, how);
+    tty_wait(t, "3.28 d");
 }
 
-START_TEST(start_edit_save_leave)
+static void begin(tty *t)
+{
+    begin_with(t, &(tty_start){.arguments = {"plan.yaml"}});
+}
+
+/* To a line of the plan by a word in it. */
+static void look_for(tty *t, const char *word)
+{
+    tty_type(t, "<Home>l");
+    tty_wait(t, "look for");
+    tty_type(t, word);
+    tty_wait(t, word);
+    tty_type(t, "<Escape>");
+    tty_wait_gone(t, "look for");
+}
+
+static void leave(tty *t)
+{
+    tty_type(t, "q");
+    ck_assert_int_eq(tty_wait_end(t), 0);
+    tty_end(t);
+}
+
+static void leave_unsaved(tty *t)
+{
+    tty_type(t, "q");
+    tty_wait(t, "leave without saving");
+    tty_type(t, "w");
+    ck_assert_int_eq(tty_wait_end(t), 0);
+    tty_end(t);
+}
+
+static void file_has(const tty *t, const char *text)
+{
+    char *all = tty_read(t, "plan.yaml");
+    ck_assert_msg(strstr(all, text) != NULL, "no \"%s\" in\n%s", text, all);
+    free(all);
+}
+
+static void save(tty *t)
+{
+    tty_type(t, "s");
+    tty_wait(t, "saved in plan.yaml");
+}
+
+START_TEST(edits_live_and_saves)
 {
     tty t;
     begin(&t);
     tty_wait_row(&t, 0, "plan.yaml   electron 900 MeV, 2 uA on 9 cm liquid-hydrogen");
-    tty_wait(&t, "low-1   60.18 0.5485  13.96  122.6  0.6737");
-    tty_type(&t, "<Down><Down><Down><Down><Down><Down>4 uA");
+    tty_wait(&t, "low-1   60.18 0.5485  13.96  122.4  0.6763");
+    look_for(&t, "current");
+    tty_type(&t, "4 uA");
     tty_wait(&t, "PROVISIONAL");
-    tty_wait(&t, "0.6737"); /* what it was */
+    tty_wait(&t, "0.3388  0.6763"); /* what it becomes, what it was */
     tty_type(&t, "<Enter>");
     tty_wait_gone(&t, "PROVISIONAL");
     tty_wait_row(&t, 0, "1 unsaved");
+    save(&t);
+    tty_wait_row(&t, 0, "saved");
+    file_has(&t, "  current: 4 uA\n");
+    leave(&t);
+}
+END_TEST
+
+START_TEST(says_what_is_wrong)
+{
+    tty t;
+    begin(&t);
+    look_for(&t, "current");
+    tty_type(&t, "30 uX");
+    tty_wait(&t, "NOT YET");
+    tty_wait(&t, "in uA o"); /* units that would do */
+    tty_type(&t, "<Enter>");
+    tty_wait(&t, "NOT YET");
+    tty_type(&t, "<Rubout>A");
+    tty_wait(&t, "PROVISIONAL");
+    tty_type(&t, "<Escape>");
+    tty_wait_gone(&t, "PROVISIONAL");
+    tty_wait_row(&t, 0, "2 uA");
+    leave(&t);
+}
+END_TEST
+
+START_TEST(takes_back_and_does_again)
+{
+    tty t;
+    begin(&t);
+    look_for(&t, "current");
+    tty_type(&t, "4 uA<Enter>");
+    tty_wait_row(&t, 0, "1 unsaved");
+    tty_type(&t, "5 uA<Enter>");
+    tty_wait_row(&t, 0, "2 unsaved");
+    tty_type(&t, "b");
+    tty_wait(&t, "taken back: beam.current: 4 uA -> 5 uA");
+    tty_wait_row(&t, 0, "4 uA");
+    tty_type(&t, "b");
+    tty_wait(&t, "taken back: beam.current: 2 uA -> 4 uA");
+    tty_wait_row(&t, 0, "saved"); /* it is as the file has it */
+    tty_type(&t, "b");
+    tty_wait(&t, "nothing is left to take back");
+    tty_type(&t, "ff");
+    tty_wait(&t, "done again: beam.current: 4 uA -> 5 uA");
+    save(&t);
+    file_has(&t, "  current: 5 uA\n");
+    leave(&t);
+}
+END_TEST
+
+START_TEST(changes_lists)
+{
+    tty t;
+    begin(&t);
+    look_for(&t, "low-2");
+    tty_type(&t, "d");
+    tty_wait(&t, "low-4");
+    tty_wait(&t, "low-4   37.80");
+    tty_type(&t, "<<");
+    tty_wait_row(&t, 0, "2 unsaved");
+    look_for(&t, "low-3");
+    tty_type(&t, "<Left><Left>r");
+    tty_wait(&t, "removed");
+    tty_wait_gone(&t, "low-3");
+    look_for(&t, "layers");
+    tty_type(&t, "a");
+    tty_wait_row(&t, 0, "4 unsaved");
+    save(&t);
+    file_has(&t, "    - {material: aluminium, thickness: 0.1 mm, role: window}\n"
+                 "    - {material: aluminium, thickness: 1 mm}\n  wall:");
+    file_has(&t, "  - {name: low-1, q2: 0.55 GeV2}\n"
+                 "  - {name: low-4, q2: 0.55 GeV2, beam: {kinetic_energy: 1300 MeV}}\n"
+                 "  - {name: low-2, q2: 0.55 GeV2, beam: {kinetic_energy: 1300 MeV}}\n"
+                 "  - {name: high-1,");
+    leave(&t);
+}
+END_TEST
+
+START_TEST(orders_and_pins)
+{
+    tty t;
+    begin(&t);
+    tty_type(&t, "<Tab><Right><Right><Right>oo");
+    tty_wait(&t, "rows by sigma, falling");
+    tty_wait_row(&t, 4, "low-3");
+    tty_type(&t, "p");
+    tty_wait(&t, "against the pin");
+    tty_type(&t, "<Tab>");
+    look_for(&t, "current");
+    tty_type(&t, "4 uA<Enter>");
+    tty_wait(&t, "against the pin");
+    tty_type(&t, "<Tab><Right><Right>"); /* hours */
+    tty_wait(&t, "0.3388  0.6763");
+    tty_type(&t, "p");
+    tty_wait(&t, "the pin is off");
+    tty_type(&t, "o");
+    tty_wait(&t, "rows by hours, rising");
+    leave_unsaved(&t);
+}
+END_TEST
+
+START_TEST(chooses)
+{
+    tty t;
+    begin(&t);
+    look_for(&t, "particle");
+    tty_type(&t, "<Enter>");
+    tty_wait(&t, "CHOOSE particle");
+    tty_type(&t, "posi");
+    tty_wait_row(&t, 0, "positron");
+    tty_wait(&t, "PROVISIONAL");
+    tty_type(&t, "<Enter>");
+    tty_wait_gone(&t, "CHOOSE");
+    tty_wait_row(&t, 0, "1 unsaved");
+    look_for(&t, "material");
+    tty_type(&t, "<Enter>");
+    tty_wait(&t, "CHOOSE material");
+    tty_wait(&t, "g/cm3"); /* what it is */
+    tty_type(&t, "kapt<Enter>");
+    tty_wait_row(&t, 0, "2 unsaved");
+    look_for(&t, "beam");
+    tty_type(&t, "a");
+    tty_wait(&t, "ADD A KEY");
+    tty_type(&t, "duty<Enter>");
+    tty_wait(&t, "beam.duty_factor");
+    tty_type(&t, "<Enter>");
+    tty_wait_row(&t, 0, "3 unsaved");
+    save(&t);
+    file_has(&t, "particle: positron\n");
+    file_has(&t, "{material: kapton, thickness: 0.1 mm, role: window}");
+    file_has(&t, "duty_factor: ");
+    leave(&t);
+}
+END_TEST
+
+START_TEST(explains_and_shows)
+{
+    tty t;
+    begin(&t);
+    tty_type(&t, "?");
+    tty_wait(&t, "ALL KEYS");
+    tty_type(&t, "<Escape>");
+    tty_wait_gone(&t, "ALL KEYS");
+    tty_type(&t, "c");
+    tty_wait(&t, "radiation-protection group");
+    tty_type(&t, "<Escape>m");
+    tty_wait(&t, "MESSAGES");
+    tty_type(&t, "<Escape><Tab>e");
+    tty_wait(&t, "Inputs");
+    tty_type(&t, "<PageDown><PageDown>");
+    tty_wait(&t, "37 to");
+    tty_type(&t, "<Escape>v");
+    tty_wait(&t, "signal rate [Hz] against angle");
+    tty_type(&t, "<Down><Enter>");
+    tty_wait(&t, "bin 4");
+    tty_type(&t, "<Enter>");
+    tty_wait_gone(&t, "bin 4");
+    tty_type(&t, "t");
+    tty_wait(&t, "> 2");
+    leave(&t);
+}
+END_TEST
+
+START_TEST(resizes)
+{
+    tty t;
+    begin(&t);
+    look_for(&t, "current");
+    tty_type(&t, "4 u");
+    tty_wait(&t, "NOT YET");
+    tty_size(&t, 60, 200);
+    tty_wait_row(&t, 59, "Enter keep");
+    tty_type(&t, "A");
+    tty_wait(&t, "PROVISIONAL");
+    tty_size(&t, 10, 40);
+    tty_wait_row(&t, 9, "Enter keep");
+    tty_size(&t, 24, 80);
+    tty_wait_row(&t, 23, "Enter keep");
+    tty_wait(&t, "[4 uA     ]");
+    tty_type(&t, "<Enter>");
+    tty_wait_row(&t, 0, "1 unsaved");
+    for (int i = 0; i < 20; i++)
+        tty_size(&t, 10 + i, 40 + 5 * i);
+    tty_wait_row(&t, 28, "? help");
+    leave_unsaved(&t);
+}
+END_TEST
+
+START_TEST(plain_letters)
+{
+    tty t;
+    begin_with(&t, &(tty_start){.locale = "C", .arguments = {"plan.yaml"}});
+    look_for(&t, "in_plane");
+    tty_wait(&t, "+-20 mrad");
+    for (int r = 0; r < t.rows; r++)
+        for (const char *c = tty_row(&t, r); *c; c++)
+            ck_assert_int_lt((unsigned char)*c, 0x80);
+    leave(&t);
+}
+END_TEST
+
+static bool coloured(const tty *t)
+{
+    VTermColor plain, ground;
+    vterm_state_get_default_colors(vterm_obtain_state(t->vt), &plain, &ground);
+    for (int r = 0; r < t->rows; r++)
+        for (int c = 0; c < t->columns; c++) {
+            const VTermScreenCell cell = tty_cell(t, r, c);
+            if (!vterm_color_is_equal(&cell.fg, &plain))
+                return true;
+        }
+    return false;
+}
+
+/* The focus is to be seen without colour. */
+static bool reversed(const tty *t, const char *text)
+{
+    const int row = tty_find_row(t, text);
+    for (int c = 0; row >= 0 && c < t->columns; c++)
+        if (tty_cell(t, row, c).attrs.reverse)
+            return true;
+    return false;
+}
+
+START_TEST(no_colours)
+{
+    tty t;
+    begin(&t);
+    ck_assert(coloured(&t) && reversed(&t, ">plan"));
+    leave(&t);
+    begin_with(&t, &(tty_start){.environment = "NO_COLOR=1", .arguments = {"plan.yaml"}});
+    ck_assert(!coloured(&t) && reversed(&t, ">plan"));
+    leave(&t);
+    begin_with(&t, &(tty_start){.term = "vt100", .arguments = {"plan.yaml"}});
+    ck_assert(!coloured(&t) && reversed(&t, ">plan"));
+    leave(&t);
+}
+END_TEST
+
+START_TEST(mouse)
+{
+    tty t;
+    begin(&t);
+    tty_type(&t, "<Click 8,20>");
+    tty_wait(&t, "> current");
+    tty_type(&t, "<WheelDown 8,20>");
+    tty_wait(&t, "> name");
+    tty_type(&t, "<Click 5,45>");
+    tty_wait(&t, ">low-2");
+    tty_type(&t, "<Click 2,55>"); /* a heading */
+    tty_wait(&t, "rows by sigma, rising");
+    tty_type(&t, "<Click 22,60>"); /* cautions */
+    tty_wait(&t, "CAUTIONS");
+    tty_type(&t, "<Escape>");
+    tty_wait_gone(&t, "CAUTIONS");
+    tty_type(&t, "<Click 23,76>"); /* ? help */
+    tty_wait(&t, "ALL KEYS");
+    tty_type(&t, "<Escape>");
+    tty_wait_gone(&t, "ALL KEYS");
+    leave(&t);
+}
+END_TEST
+
+START_TEST(begins_without_a_plan)
+{
+    tty t;
+    tty_folder(&t, NULL);
+    tty_run(&t, &(tty_start){.rows = 24});
+    tty_wait(&t, "BEGIN WITH A PLAN");
+    tty_wait(&t, "hydrogen-separation");
+    tty_type(&t, "my-plan<Enter>");
+    tty_wait(&t, "scan.3");
+    tty_wait_row(&t, 0, "new");
     tty_type(&t, "s");
-    tty_wait(&t, "saved in plan.yaml");
-    char *text = tty_read(&t, "plan.yaml");
-    ck_assert_ptr_nonnull(strstr(text, "  current: 4 uA\n"));
-    free(text);
-    tty_type(&t, "q");
-    ck_assert_int_eq(tty_wait_end(&t), 0);
-    tty_end(&t);
+    tty_wait(&t, "saved in my-plan.yaml");
+    ck_assert(tty_exists(&t, "my-plan.yaml"));
+    leave(&t);
 }
 END_TEST
 
 int main(void)
 {
     TCase *tests = tcase_create("terminal");
-    tcase_set_timeout(tests, 300);
-    tcase_add_test(tests, start_edit_save_leave);
+    tcase_set_timeout(tests, 600);
+    tcase_add_test(tests, edits_live_and_saves);
+    tcase_add_test(tests, says_what_is_wrong);
+    tcase_add_test(tests, takes_back_and_does_again);
+    tcase_add_test(tests, changes_lists);
+    tcase_add_test(tests, orders_and_pins);
+    tcase_add_test(tests, chooses);
+    tcase_add_test(tests, explains_and_shows);
+    tcase_add_test(tests, resizes);
+    tcase_add_test(tests, plain_letters);
+    tcase_add_test(tests, no_colours);
+    tcase_add_test(tests, mouse);
+    tcase_add_test(tests, begins_without_a_plan);
     return run_suite("terminal", tests);
 }
