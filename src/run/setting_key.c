@@ -156,8 +156,8 @@ static bool trace(const struct sources *x, const bh_setting *s, const bh_node *n
                   bh_setting_source *source)
 {
     source->key = empty;
-    bool whole = node && feed_node(&source->key, x->plan, node) &&
-                 (x->common.word[0] || x->common.word[1]);
+    bool whole =
+        node && feed_node(&source->key, x->plan, node) && (x->common.word[0] || x->common.word[1]);
     feed(&source->key, &x->common, sizeof x->common);
     for (size_t i = 0; i < SHARED; i++)
         source->lines[source->count++] = x->common_lines[i];

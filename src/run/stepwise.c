@@ -15,7 +15,7 @@ struct result {
     bh_setting_key key;
     size_t line_count;
     bh_lines *lines; /* where what it follows from stood in the file */
-    unsigned used; /* generation in which it was last of use */
+    unsigned used;   /* generation in which it was last of use */
     size_t arms, bins;
     bh_row *whole, *bin; /* bin NULL: not evaluated */
     bh_stretch hours;

@@ -96,9 +96,9 @@ void *bh_worker_answers(void *of)
 size_t bh_worker_ask(bh_worker *worker, const bh_query *question)
 {
     bh_own_query own = {.question = *question,
-                           .bytes = malloc(question->length + 1),
-                           .setting = question->setting ? strdup(question->setting) : NULL,
-                           .arm = question->arm ? strdup(question->arm) : NULL};
+                        .bytes = malloc(question->length + 1),
+                        .setting = question->setting ? strdup(question->setting) : NULL,
+                        .arm = question->arm ? strdup(question->arm) : NULL};
     if (!own.bytes) {
         bh_worker_drop_question(&own);
         return 0;

@@ -177,13 +177,13 @@ void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canva
         return;
     if (!a || !a->curve || !set_range(&p, a->curve, column)) {
         const bh_table_row *row = bh_table_here(model);
-        const bool ring = row && bh_table_setting(model, row)->arms[row->now->arm].arm.shape ==
-                                     BH_SHAPE_RING;
-        const char *why = !row               ? ""
-                          : ring             ? "a ring has no angle to vary"
-                          : !a               ? "being computed \u2026"
-                          : a->why.text[0]   ? a->why.text
-                                             : "no values";
+        const bool ring =
+            row && bh_table_setting(model, row)->arms[row->now->arm].arm.shape == BH_SHAPE_RING;
+        const char *why = !row             ? ""
+                          : ring           ? "a ring has no angle to vary"
+                          : !a             ? "being computed \u2026"
+                          : a->why.text[0] ? a->why.text
+                                           : "no values";
         (void)bh_canvas_put(canvas, (bh_spot){p.row, p.column, p.columns}, BH_LOOK_QUIET, why);
         return;
     }

@@ -1,5 +1,5 @@
-/* test_stepwise.c - a table made setting by setting is the table, bit for bit; what did not change is
- * not evaluated again. */
+/* test_stepwise.c - a table made setting by setting is the table, bit for bit; what did not change
+ * is not evaluated again. */
 #include "../suite.h"
 
 #include <math.h>
@@ -143,15 +143,20 @@ static const char base[] =
 static const struct {
     const char *from, *to;
     size_t touched; /* of four settings */
-} changes[] = {{"60 deg", "61 deg", 1},       {"50 deg]", "51 deg]", 2},
-               {"50 mm", "51 mm", 3},         {"1 mm", "2 mm", 1},
-               {"\u00B120 mrad", "\u00B121 mrad", 1}, {"\u00B128 mrad", "\u00B127 mrad", 3},
-               {"20 uA", "30 uA", 4},         {"goal: 1 %", "goal: 2 %", 4},
-               {"plan: 1", "title: x\nplan: 1", 0},
-               {"available: 9 d}", "available: 9 d, contingency: 10 %}", 0},
-               {"name: K2,", "name: K2b,", 1}, {"settings:\n", "settings: # in order\n", 0},
-               {"  - {name: K3", "  - {name: K0, arm: B, target: two, angle: 20 deg}\n  - {name: K3",
-                1}};
+} changes[] = {
+    {"60 deg", "61 deg", 1},
+    {"50 deg]", "51 deg]", 2},
+    {"50 mm", "51 mm", 3},
+    {"1 mm", "2 mm", 1},
+    {"\u00B120 mrad", "\u00B121 mrad", 1},
+    {"\u00B128 mrad", "\u00B127 mrad", 3},
+    {"20 uA", "30 uA", 4},
+    {"goal: 1 %", "goal: 2 %", 4},
+    {"plan: 1", "title: x\nplan: 1", 0},
+    {"available: 9 d}", "available: 9 d, contingency: 10 %}", 0},
+    {"name: K2,", "name: K2b,", 1},
+    {"settings:\n", "settings: # in order\n", 0},
+    {"  - {name: K3", "  - {name: K0, arm: B, target: two, angle: 20 deg}\n  - {name: K3", 1}};
 
 START_TEST(touches_no_more)
 {

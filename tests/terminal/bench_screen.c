@@ -1,4 +1,5 @@
-/* bench_screen.c - from a key to the finished screen, through a pseudo-terminal; bytes sent; idle. */
+/* bench_screen.c - from a key to the finished screen, through a pseudo-terminal; bytes sent; idle.
+ */
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
@@ -6,8 +7,8 @@
 #include <unistd.h>
 
 #include "../bench/bench.h"
-#include "beamhours/base/text.h"
 #include "../suite.h"
+#include "beamhours/base/text.h"
 #include "tty.h"
 
 /* What the screen promises on a machine of two ordinary cores. */
@@ -27,22 +28,23 @@ static void write_plan(const tty *t, int settings)
 {
     bh_text text = {0};
     bh_text_append(
-        &text,
-        "plan: 1\n"
-        "beam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uA}\n"
-        "target:\n  name: cell\n  scatterer: H\n  empty_target: {share: 10 %}\n  layers:\n"
-        "    - {material: aluminium, thickness: 0.1 mm, role: window}\n"
-        "    - {material: liquid-hydrogen, thickness: 50 mm, density_loss: 0.02 %/uA}\n"
-        "    - {material: aluminium, thickness: 0.1 mm, role: window}\n"
-        "  wall: {radius: 35 mm, material: aluminium, thickness: 0.2 mm}\n"
-        "arms:\n"
-        "  - {name: A, in_plane: \u00B128 mrad, out_of_plane: \u00B170 mrad, bins: 20,\n"
-        "     momentum_bite: \u00B14.5 %, dead_time: 5 us, energy_cut: 15 MeV, target_view: \u00B160 mm}\n"
-        "settings:\n");
+        &text, "plan: 1\n"
+               "beam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uA}\n"
+               "target:\n  name: cell\n  scatterer: H\n  empty_target: {share: 10 %}\n  layers:\n"
+               "    - {material: aluminium, thickness: 0.1 mm, role: window}\n"
+               "    - {material: liquid-hydrogen, thickness: 50 mm, density_loss: 0.02 %/uA}\n"
+               "    - {material: aluminium, thickness: 0.1 mm, role: window}\n"
+               "  wall: {radius: 35 mm, material: aluminium, thickness: 0.2 mm}\n"
+               "arms:\n"
+               "  - {name: A, in_plane: \u00B128 mrad, out_of_plane: \u00B170 mrad, bins: 20,\n"
+               "     momentum_bite: \u00B14.5 %, dead_time: 5 us, energy_cut: 15 MeV, target_view: "
+               "\u00B160 mm}\n"
+               "settings:\n");
     for (int i = 0; i < settings; i += 10)
-        bh_text_appendf(&text,
-                        "  - {name: K%d, angle: {from: %.3f deg, to: %.3f deg, count: 10}, goal: 1 %%}\n",
-                        i / 10 + 1, 15 + 80.0 * i / settings, 15 + 80.0 * (i + 9.5) / settings);
+        bh_text_appendf(
+            &text,
+            "  - {name: K%d, angle: {from: %.3f deg, to: %.3f deg, count: 10}, goal: 1 %%}\n",
+            i / 10 + 1, 15 + 80.0 * i / settings, 15 + 80.0 * (i + 9.5) / settings);
     bh_text_append(&text, "schedule: {available: 30 d}\n");
     tty_write(t, "plan.yaml", text.bytes);
     bh_text_free(&text);
@@ -102,15 +104,15 @@ static double quantile(const double *values, int count, double q)
 /* What someone does who asks "what if": types values, looks around, takes changes back. */
 static void work(tty *t, struct times *times, int rounds)
 {
-    static const char *const keys[] = {
-        /* the goal of a sweep */
-        "l", "g", "o", "a", "l", "<Escape>", "2", " ", "%", "<Enter>", "b",
-        /* the current: every row */
-        "<Home>", "l", "c", "u", "r", "r", "<Escape>", "2", "1", " ", "u", "A", "<Up>", "<Up>",
-        "<Escape>",
-        /* around in the table */
-        "<Tab>", "<Down>", "<Down>", "<PageDown>", "<Right>", "<Right>", "o", "o", "o", "<Home>",
-        "<Tab>"};
+    static const char *const keys[] = {/* the goal of a sweep */
+                                       "l", "g", "o", "a", "l", "<Escape>", "2", " ", "%",
+                                       "<Enter>", "b",
+                                       /* the current: every row */
+                                       "<Home>", "l", "c", "u", "r", "r", "<Escape>", "2", "1", " ",
+                                       "u", "A", "<Up>", "<Up>", "<Escape>",
+                                       /* around in the table */
+                                       "<Tab>", "<Down>", "<Down>", "<PageDown>", "<Right>",
+                                       "<Right>", "o", "o", "o", "<Home>", "<Tab>"};
     for (int r = 0; r < rounds; r++)
         for (size_t i = 0; i < sizeof keys / sizeof *keys; i++)
             press(t, keys[i], times);
@@ -127,8 +129,8 @@ static double processor_time(pid_t pid)
     char *got = fgets(line, sizeof line, f);
     fclose(f);
     const char *from = got ? strrchr(line, ')') : NULL;
-    if (!from || sscanf(from, ") %*c %*d %*d %*d %*d %*d %*u %*u %*u %*u %*u %lu %lu", &user,
-                        &system) != 2)
+    if (!from ||
+        sscanf(from, ") %*c %*d %*d %*d %*d %*d %*u %*u %*u %*u %*u %lu %lu", &user, &system) != 2)
         return -1;
     return (double)(user + system) / (double)sysconf(_SC_CLK_TCK);
 }
@@ -157,13 +159,14 @@ static bool fifty(void)
         tty_pump(&t, 500);
     const double idle = processor_time(t.child) - before;
     printf("      %d keys, 50 settings of 20 bins: 90 %% within %.2f ms, longest %.1f ms\n",
-           times.count, quantile(times.view, times.count, 0.9), quantile(times.view, times.count, 1));
+           times.count, quantile(times.view, times.count, 0.9),
+           quantile(times.view, times.count, 1));
     bool good = bench_goal("50 settings: key to rows in view, median",
-                          quantile(times.view, times.count, 0.5), most_median, "ms");
-    good &= bench_goal("the same, 99 of 100 keys", quantile(times.view, times.count, 0.99), most_p99,
-                      "ms");
+                           quantile(times.view, times.count, 0.5), most_median, "ms");
+    good &= bench_goal("the same, 99 of 100 keys", quantile(times.view, times.count, 0.99),
+                       most_p99, "ms");
     good &= bench_goal("50 settings: key to all of it, 99 of 100 keys",
-                      quantile(times.all, times.count, 0.99), most_rest, "ms");
+                       quantile(times.all, times.count, 0.99), most_rest, "ms");
     good &= bench_goal("processor time while nothing happens, of 2 s", idle + 1e-9, 0.02, "s");
     tty_end(&t);
     return good;
@@ -178,9 +181,9 @@ static bool five_hundred(void)
     printf("      %d keys, 500 settings of 20 bins: longest %.1f ms in view, %.1f ms all\n",
            times.count, quantile(times.view, times.count, 1), quantile(times.all, times.count, 1));
     bool good = bench_goal("500 settings: key to rows in view, 99 of 100 keys",
-                          quantile(times.view, times.count, 0.99), most_p99, "ms");
+                           quantile(times.view, times.count, 0.99), most_p99, "ms");
     good &= bench_goal("500 settings: key to all of it, 99 of 100 keys",
-                      quantile(times.all, times.count, 0.99), most_rest, "ms");
+                       quantile(times.all, times.count, 0.99), most_rest, "ms");
     tty_end(&t);
     return good;
 }
@@ -191,8 +194,8 @@ static bool large_terminal(void)
     tty t;
     start(&t, 50, 60, 200);
     work(&t, &times, 2);
-    const bool good = bench_goal("200x60: bytes sent for a key, largest", times.bytes, most_bytes,
-                                "bytes");
+    const bool good =
+        bench_goal("200x60: bytes sent for a key, largest", times.bytes, most_bytes, "bytes");
     printf("      median %.2f ms\n", quantile(times.view, times.count, 0.5));
     tty_end(&t);
     return good;

@@ -275,14 +275,14 @@ START_TEST(plain_letters)
 }
 END_TEST
 
+/* Has any cell another colour than a plain one? */
 static bool coloured(const tty *t)
 {
-    VTermColor plain, ground;
-    vterm_state_get_default_colors(vterm_obtain_state(t->vt), &plain, &ground);
+    const VTermScreenCell plain = tty_cell(t, 3, 1);
     for (int r = 0; r < t->rows; r++)
         for (int c = 0; c < t->columns; c++) {
             const VTermScreenCell cell = tty_cell(t, r, c);
-            if (!vterm_color_is_equal(&cell.fg, &plain))
+            if (cell.chars[0] && !vterm_color_is_equal(&cell.fg, &plain.fg))
                 return true;
         }
     return false;

@@ -58,8 +58,8 @@ void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark);
  * marks in the plan bear from now on. */
 void bh_remarks_add(bh_remarks *remarks, const bh_remarks *from, const char *file);
 
-/* Those that stand in lines `from` to `to` of the plan stand `by` lines further down; each moves once
- * until bh_remarks_moved. */
+/* Those that stand in lines `from` to `to` of the plan stand `by` lines further down; each moves
+ * once until bh_remarks_moved. */
 void bh_remarks_move(bh_remarks *remarks, int from, int to, int by);
 void bh_remarks_moved(bh_remarks *remarks);
 

@@ -27,10 +27,10 @@ typedef struct {
 } bh_setting_source;
 
 /*
- * Fills sources[s] for each setting s of `plan`: from the bytes of the plan of the setting, its beam, target, arms, models and whatever else its rows and the warnings on them
- * follow from.  Of a setting whose text cannot be told (a plan with changes of its own) both words
- * are 0: it has no key.  Materials count by their names: a library is read once.
- * False when there is no memory.
+ * Fills sources[s] for each setting s of `plan`: from the bytes of the plan of the setting, its
+ * beam, target, arms, models and whatever else its rows and the warnings on them follow from.  Of a
+ * setting whose text cannot be told (a plan with changes of its own) both words are 0: it has no
+ * key.  Materials count by their names: a library is read once. False when there is no memory.
  */
 bool bh_setting_sources(const bh_plan *plan, bh_arena *arena, bh_setting_source *sources);
 

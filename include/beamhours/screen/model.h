@@ -68,8 +68,8 @@ typedef struct {
     int here_bin;
     int widths[BH_COLUMN_COUNT]; /* the widest cell that was in view */
     int compared;                /* bh_column_id: the column of which the old value is shown */
-    double most_change;              /* [1] relative, of the column in focus */
-    char **opened;                   /* names of settings whose bins are open */
+    double most_change;          /* [1] relative, of the column in focus */
+    char **opened;               /* names of settings whose bins are open */
     size_t opened_count;
 } bh_table_view;
 
