@@ -10,7 +10,7 @@
 #include "beamhours/command/places.h"
 #include "beamhours/report/curve_figure.h"
 
-enum { LONGEST_DATA = 1 << 20 };
+enum { LONGEST_DATA = 1 << 20, DRAWN_POINTS = 181 };
 
 /* What was asked for, and what came of it. */
 struct job {
@@ -164,6 +164,7 @@ int bh_cmd_curve(const bh_arguments *arguments)
                                       .arm = arguments->value[BH_OPT_ARM],
                                       .structures = arguments->value[BH_OPT_STRUCTURE],
                                       .coulombs = arguments->value[BH_OPT_COULOMB],
+                                      .points = is_drawn(job.format) ? DRAWN_POINTS : 0,
                                       .bins_do = is_drawn(job.format)};
     int status = variable(arguments, &job.request.against);
     status = status ? status : column(arguments, &job.shown);

@@ -12,15 +12,15 @@
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
-enum { POINTS = 61, MEV2_PER_GEV2 = 1000000 };
+enum { POINTS = 61, MOST_POINTS = 481, MEV2_PER_GEV2 = 1000000 };
 
 struct bh_curve {
     bh_structure_choice choice; /* of the struck nuclide, where the caller names a model */
     size_t count;
-    double x[POINTS];
-    char *marks[POINTS];
-    bh_setting settings[POINTS];
-    bh_setting_arm arms[POINTS];
+    double x[MOST_POINTS];
+    char *marks[MOST_POINTS];
+    bh_setting settings[MOST_POINTS];
+    bh_setting_arm arms[MOST_POINTS];
     bh_plan plan;
     bh_table *table;
 };
@@ -303,8 +303,9 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
         bh_structure_free(named);
     }
     limits(o, &lo, &hi);
-    for (int i = 0; i < POINTS && hi > lo; i++)
-        add_point(c, o, i == POINTS - 1 ? hi : lo + (hi - lo) * i / (POINTS - 1));
+    const int points = r->points < 2 ? POINTS : r->points > MOST_POINTS ? MOST_POINTS : r->points;
+    for (int i = 0; i < points && hi > lo; i++)
+        add_point(c, o, i == points - 1 ? hi : lo + (hi - lo) * i / (points - 1));
     if (c->count == 0)
         return bh_fail(err, BH_EDOMAIN, "this arm can stand at no point of the curve");
     c->plan = *plan;

@@ -87,4 +87,7 @@ BH_CHECKED bh_code bh_figure_write(const bh_figure *figure, bh_figure_format for
 BH_CHECKED bh_code bh_figure_inline(const bh_figure *figure, const char *id, bh_text *out,
                                     bh_error *err);
 
+/* "cross section [nb/sr]" into `out` of `size` bytes. */
+void bh_figure_axis_words(const bh_figure_scale *scale, char *out, size_t size);
+
 #endif

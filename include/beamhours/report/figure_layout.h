@@ -69,7 +69,4 @@ double bh_figure_x(const bh_figure *figure, const bh_figure_layout *layout, doub
 /* Returns [pt] where a value y [1] of the axis stands, downwards. */
 double bh_figure_y(const bh_figure *figure, const bh_figure_layout *layout, double y);
 
-/* "cross section [nb/sr]" into `out` of `size` bytes. */
-void bh_figure_axis_words(const bh_figure_scale *scale, char *out, size_t size);
-
 #endif

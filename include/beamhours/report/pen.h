@@ -54,6 +54,9 @@ typedef struct {
 } bh_stroke;
 void bh_pen_stroke(const bh_pen *pen, const bh_stroke *stroke);
 
+/* Strokes of the same thickness and colour, drawn at once: fewer bytes. */
+void bh_pen_strokes(const bh_pen *pen, size_t count, const bh_stroke *stroke);
+
 /* A mark around x, y [pt], in the present colour: full, or open on white. */
 void bh_pen_mark(const bh_pen *pen, bh_mark_shape shape, bool full, double x, double y);
 

@@ -16,6 +16,7 @@ typedef struct {
     const char *arm;     /* name; NULL where the setting has one */
     bh_against against;
     const char *structure; /* of the struck nuclide, instead of the plan's; NULL: the plan's */
+    int points;            /* of the grid, 2 to 481; below 2: 61 */
 } bh_curve_request;
 
 typedef struct bh_curve bh_curve;

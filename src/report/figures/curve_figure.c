@@ -338,26 +338,57 @@ static const char *short_number(const struct maker *m, double value)
     return say(m->arena, "%s", digits);
 }
 
-/* What the curve keeps: "electron, 855 MeV, on hydrogen; arm A". */
+/* What the curve keeps, behind the particle: ", 855 MeV", " at 30 deg", " at Q² 0.55 GeV²". */
+static const char *kept(const struct maker *m)
+{
+    const bh_curves *c = m->p->curves;
+    const bh_table *t = m->p->table;
+    if (c->against == BH_AGAINST_ANGLE || c->against == BH_AGAINST_Q2)
+        return say(m->arena, ", %s MeV", short_number(m, c->setting->beam.kinetic_energy.value));
+    if (c->against == BH_AGAINST_ENERGY)
+        return c->arm->arm.shape == BH_SHAPE_RING
+                   ? ""
+                   : say(m->arena, ", %s deg", short_number(m, c->arm->angle.value / BH_DEGREE));
+    for (size_t row = 0; row < bh_table_rows(t, false); row++) {
+        const bh_place at = bh_table_place(t, false, row);
+        const bh_setting *s = &bh_table_plan(t)->settings[at.setting];
+        if (s == c->setting && &s->arms[at.arm] == c->arm)
+            return say(m->arena, ", Q² %.3g GeV²", bh_table_number(t, false, row, BH_COL_Q2));
+    }
+    return "";
+}
+
+/* "electron, 855 MeV on H, target cell; arm A; setting K1". */
 static void put_subtitle(struct maker *m)
 {
     const bh_curves *c = m->p->curves;
-    const bh_setting *s = c->setting;
-    const bh_target *t = s->target;
-    const char *energy =
-        c->against == BH_AGAINST_ENERGY || c->against == BH_AGAINST_EPSILON
-            ? ""
-            : say(m->arena, ", %s MeV", short_number(m, s->beam.kinetic_energy.value));
-    const char *angle =
-        c->against == BH_AGAINST_ENERGY && c->arm->arm.shape != BH_SHAPE_RING
-            ? say(m->arena, " at %s deg", short_number(m, c->arm->angle.value / BH_DEGREE))
-            : "";
+    const bh_target *t = c->setting->target;
     const char *named = t->name.text ? t->name.text : t->scatterer.text;
+    const bool other = strcmp(named, t->scatterer.text) != 0;
     m->out->subtitle =
-        say(m->arena, "%s%s on %s%s%s; arm %s%s; setting %s", s->beam.particle.name, energy,
-            t->scatterer.text, strcmp(named, t->scatterer.text) != 0 ? ", target " : "",
-            strcmp(named, t->scatterer.text) != 0 ? named : "",
-            c->arm->arm.name.text ? c->arm->arm.name.text : "", angle, s->name);
+        say(m->arena, "%s%s on %s%s%s; arm %s; setting %s", c->setting->beam.particle.name, kept(m),
+            t->scatterer.text, other ? ", target " : "", other ? named : "",
+            c->arm->arm.name.text ? c->arm->arm.name.text : "", c->setting->name);
+}
+
+/* What is drawn, for who cannot see it. */
+static const char *description(struct maker *m)
+{
+    const bh_figure *f = m->out;
+    char x[200], y[200];
+    bh_text lines = {0};
+    bh_figure_axis_words(&f->x, x, sizeof x);
+    bh_figure_axis_words(&f->y, y, sizeof y);
+    for (size_t s = 0; s < f->series_count; s++)
+        if (m->series[s].kind == BH_SERIES_LINE)
+            bh_text_appendf(&lines, "%s%s", lines.length ? ", " : "; curves: ", m->series[s].name);
+    const char *said =
+        say(m->arena, "%s against %s, from %s to %s%s; %zu planned and %zu published points. %s.",
+            y, x, short_number(m, f->x.axis.from), short_number(m, f->x.axis.to),
+            lines.bytes ? lines.bytes : "", m->planned_count,
+            m->p->measured ? m->p->measured->count : (size_t)0, f->subtitle);
+    bh_text_free(&lines);
+    return said;
 }
 
 static void put_words(struct maker *m)
@@ -371,12 +402,7 @@ static void put_words(struct maker *m)
     f->foot = m->p->version ? say(m->arena, "%s: %s. beamhours %s", bh_shown_key(m->p->shown),
                                   meaning, m->p->version)
                             : "";
-    f->description = say(
-        m->arena,
-        "%s [%s] against %s [%s], %s to %s; %zu curve%s, %zu planned and %zu published points. %s.",
-        f->y.words, f->y.unit, f->x.words, f->x.unit, short_number(m, f->x.axis.from),
-        short_number(m, f->x.axis.to), m->p->curves->count, m->p->curves->count == 1 ? "" : "s",
-        m->planned_count, m->p->measured ? m->p->measured->count : (size_t)0, f->subtitle);
+    f->description = description(m);
 }
 
 bh_code bh_curve_figure(const bh_curve_picture *picture, bh_arena *arena, bh_figure *out,

@@ -111,7 +111,7 @@ static bh_code add_all(const bh_plan *plan, const bh_curves_request *r, bh_curve
         do {
             c = c ? next_name(c, coulomb) : NULL;
             const bh_curve_request one = {r->setting, r->arm, r->against,
-                                          r->structures ? structure : NULL};
+                                          r->structures ? structure : NULL, r->points};
             bad = add(plan, &one, r->coulombs ? coulomb : NULL, out, err);
         } while (!bad && c);
     } while (!bad && s);

@@ -98,6 +98,20 @@ static bool begins(const char *s, const char *word)
     return strncmp(s, word, strlen(word)) == 0;
 }
 
+/* Copies a number without the decimals that nobody sees: a thousandth of a point is kept. */
+static const char *number(const char *s, bh_text *out)
+{
+    enum { KEPT = 4 }; /* the point and three digits */
+    size_t n = strspn(s, "0123456789");
+    if (s[n] == '.') {
+        const size_t decimals = 1 + strspn(s + n + 1, "0123456789");
+        bh_text_append_bytes(out, s, n + (decimals < KEPT ? decimals : KEPT));
+        return s + n + decimals;
+    }
+    bh_text_append_bytes(out, s, n);
+    return s + n;
+}
+
 /* Copies cairo's drawing, all ids led by `id`; groups named after a count of all surfaces that the
  * program ever made lose that name. */
 static void rename_ids(const char *s, const char *id, bh_text *out)
@@ -116,8 +130,12 @@ static void rename_ids(const char *s, const char *id, bh_text *out)
             s += strlen(before[i]);
             continue;
         }
+        if (*s >= '0' && *s <= '9') {
+            s = number(s, out);
+            continue;
+        }
         size_t plain = 1;
-        while (s[plain] && !strchr("ixu ", s[plain]))
+        while (s[plain] && !strchr("ixu 0123456789", s[plain]))
             plain++;
         bh_text_append_bytes(out, s, plain);
         s += plain;

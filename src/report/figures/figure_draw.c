@@ -49,22 +49,37 @@ static void shades(const struct easel *e)
     for (size_t i = 0; i < e->figure->span_count; i++) {
         const bh_span_place *p = &e->l->spans[i];
         cairo_rectangle(e->pen->to, p->from, f->y, p->to - p->from, f->high);
-        cairo_fill(e->pen->to);
     }
+    cairo_fill(e->pen->to);
+}
+
+/* Strokes along x at the ticks: from `low` up or down by `by`. */
+static void strokes_x(const struct easel *e, double low, double by, double thick)
+{
+    bh_stroke s[BH_MOST_TICKS];
+    for (int i = 0; i < e->l->x.count; i++) {
+        const double x = at_x(e, e->l->x.tick[i].at);
+        s[i] = (bh_stroke){x, low, x, low + by, thick};
+    }
+    bh_pen_strokes(e->pen, (size_t)e->l->x.count, s);
+}
+
+static void strokes_y(const struct easel *e, double left, double by, double thick)
+{
+    bh_stroke s[BH_MOST_TICKS];
+    for (int i = 0; i < e->l->y.count; i++) {
+        const double y = at_y(e, e->l->y.tick[i].at);
+        s[i] = (bh_stroke){left, y, left + by, y, thick};
+    }
+    bh_pen_strokes(e->pen, (size_t)e->l->y.count, s);
 }
 
 static void grid(const struct easel *e)
 {
     const bh_box *f = &e->l->frame;
     bh_pen_grey(e->pen, grid_grey);
-    for (int i = 0; i < e->l->x.count; i++) {
-        const double x = at_x(e, e->l->x.tick[i].at);
-        bh_pen_stroke(e->pen, &(bh_stroke){x, f->y, x, f->y + f->high, grid_line});
-    }
-    for (int i = 0; i < e->l->y.count; i++) {
-        const double y = at_y(e, e->l->y.tick[i].at);
-        bh_pen_stroke(e->pen, &(bh_stroke){f->x, y, f->x + f->wide, y, grid_line});
-    }
+    strokes_x(e, f->y, f->high, grid_line);
+    strokes_y(e, f->x, f->wide, grid_line);
 }
 
 /* One piece of a band without a gap: forth along its upper edge, back along the lower one. */
@@ -156,39 +171,40 @@ static void points(const struct easel *e, const bh_figure_series *s)
 
 static void x_ticks(const struct easel *e)
 {
-    const bh_box *f = &e->l->frame;
     const bh_lettering how = bh_figure_letters(BH_LETTERS_TICK);
-    const double low = f->y + f->high;
+    const double low = e->l->frame.y + e->l->frame.high;
+    bh_stroke minor[BH_MOST_MINOR_TICKS];
     for (int i = 0; i < e->l->x.minor_count; i++) {
         const double x = at_x(e, e->l->x.minor[i]);
-        bh_pen_stroke(e->pen, &(bh_stroke){x, low, x, low + minor_long, frame_line / 2.0});
+        minor[i] = (bh_stroke){x, low, x, low + minor_long, frame_line / 2.0};
     }
-    for (int i = 0; i < e->l->x.count; i++) {
-        const bh_tick *t = &e->l->x.tick[i];
-        const double x = at_x(e, t->at);
-        const bh_text_place at = {.x = x, .y = low + tick_long + 1.0, .align = BH_ALIGN_MIDDLE};
-        bh_pen_stroke(e->pen, &(bh_stroke){x, low, x, low + tick_long, frame_line});
-        bh_pen_write(e->pen, &how, t->label, &at);
-    }
+    bh_pen_strokes(e->pen, (size_t)e->l->x.minor_count, minor);
+    strokes_x(e, low, tick_long, frame_line);
+    for (int i = 0; i < e->l->x.count; i++)
+        bh_pen_write(e->pen, &how, e->l->x.tick[i].label,
+                     &(bh_text_place){.x = at_x(e, e->l->x.tick[i].at),
+                                      .y = low + tick_long + 1.0,
+                                      .align = BH_ALIGN_MIDDLE});
 }
 
 static void y_ticks(const struct easel *e)
 {
-    const bh_box *f = &e->l->frame;
     const bh_lettering how = bh_figure_letters(BH_LETTERS_TICK);
+    const double left = e->l->frame.x;
+    bh_stroke minor[BH_MOST_MINOR_TICKS];
     bh_pen_grey(e->pen, 0.0);
     for (int i = 0; i < e->l->y.minor_count; i++) {
         const double y = at_y(e, e->l->y.minor[i]);
-        bh_pen_stroke(e->pen, &(bh_stroke){f->x - minor_long, y, f->x, y, frame_line / 2.0});
+        minor[i] = (bh_stroke){left - minor_long, y, left, y, frame_line / 2.0};
     }
-    for (int i = 0; i < e->l->y.count; i++) {
-        const bh_tick *t = &e->l->y.tick[i];
-        const double y = at_y(e, t->at);
-        const bh_text_place at = {
-            .x = f->x - tick_long - 2.0, .y = y, .align = BH_ALIGN_RIGHT, .centred = true};
-        bh_pen_stroke(e->pen, &(bh_stroke){f->x - tick_long, y, f->x, y, frame_line});
-        bh_pen_write(e->pen, &how, t->label, &at);
-    }
+    bh_pen_strokes(e->pen, (size_t)e->l->y.minor_count, minor);
+    strokes_y(e, left, -tick_long, frame_line);
+    for (int i = 0; i < e->l->y.count; i++)
+        bh_pen_write(e->pen, &how, e->l->y.tick[i].label,
+                     &(bh_text_place){.x = left - tick_long - 2.0,
+                                      .y = at_y(e, e->l->y.tick[i].at),
+                                      .align = BH_ALIGN_RIGHT,
+                                      .centred = true});
 }
 
 static void axes(const struct easel *e)
@@ -211,27 +227,57 @@ static void axes(const struct easel *e)
                  &(bh_text_place){.x = 6.0, .y = f->y + f->high / 2.0, .upright = true});
 }
 
-/* The bar of a span with its ends and the edges of its bins. */
-static void span_bar(const struct easel *e, size_t i)
+static double lane_y(const struct easel *e, size_t i)
 {
-    const bh_span_place *p = &e->l->spans[i];
-    const bh_figure_span *s = &e->figure->span[i];
-    const double high = e->l->lane_high, y = e->l->frame.y - 4.0 - high * (p->lane + 0.5),
-                 thick = high * 0.3, tall = fmin(0.36 * high, 2.6);
+    return e->l->frame.y - 4.0 - e->l->lane_high * (e->l->spans[i].lane + 0.5);
+}
+
+static void upright(const struct easel *e, double x, double y)
+{
+    const double tall = fmin(0.36 * e->l->lane_high, 2.6);
+    cairo_move_to(e->pen->to, x, y - tall);
+    cairo_line_to(e->pen->to, x, y + tall);
+}
+
+static void stroke_path(const struct easel *e, double thick)
+{
+    cairo_set_line_width(e->pen->to, thick);
+    cairo_stroke(e->pen->to);
+}
+
+/* The bars of the spans, then their ends, then the edges of their bins, each kind at once. */
+static void span_bars(const struct easel *e)
+{
+    const bh_figure *f = e->figure;
     bh_pen_grey(e->pen, span_grey);
-    bh_pen_stroke(e->pen, &(bh_stroke){p->from, y, p->to, y, fmin(thick, 1.8)});
-    bh_pen_stroke(e->pen, &(bh_stroke){p->from, y - tall, p->from, y + tall, 0.7});
-    bh_pen_stroke(e->pen, &(bh_stroke){p->to, y - tall, p->to, y + tall, 0.7});
-    for (size_t k = 0; k < s->edge_count; k++) {
-        const double x = at_x(e, s->edge[k]);
-        if (x > p->from && x < p->to)
-            bh_pen_stroke(e->pen, &(bh_stroke){x, y - tall, x, y + tall, 0.5});
+    for (size_t i = 0; i < f->span_count; i++) {
+        cairo_move_to(e->pen->to, e->l->spans[i].from, lane_y(e, i));
+        cairo_line_to(e->pen->to, e->l->spans[i].to, lane_y(e, i));
     }
+    stroke_path(e, fmin(0.3 * e->l->lane_high, 1.8));
+    for (size_t i = 0; i < f->span_count; i++) {
+        upright(e, e->l->spans[i].from, lane_y(e, i));
+        upright(e, e->l->spans[i].to, lane_y(e, i));
+    }
+    stroke_path(e, 0.7);
+    for (size_t i = 0; i < f->span_count; i++)
+        for (size_t k = 0; k < f->span[i].edge_count; k++) {
+            const double x = at_x(e, f->span[i].edge[k]);
+            if (x > e->l->spans[i].from && x < e->l->spans[i].to)
+                upright(e, x, lane_y(e, i));
+        }
+    stroke_path(e, 0.5);
+}
+
+static void span_names(const struct easel *e)
+{
     const bh_lettering how = bh_figure_letters(BH_LETTERS_SPAN);
-    if (e->l->names)
-        bh_pen_write(
-            e->pen, &how, s->name,
-            &(bh_text_place){.x = p->name_x, .y = y, .align = p->name_align, .centred = true});
+    for (size_t i = 0; e->l->names && i < e->figure->span_count; i++)
+        bh_pen_write(e->pen, &how, e->figure->span[i].name,
+                     &(bh_text_place){.x = e->l->spans[i].name_x,
+                                      .y = lane_y(e, i),
+                                      .align = e->l->spans[i].name_align,
+                                      .centred = true});
 }
 
 static void sample(const struct easel *e, const bh_legend_entry *entry)
@@ -262,6 +308,8 @@ static void sample(const struct easel *e, const bh_legend_entry *entry)
     }
     bh_pen_grey(e->pen, s->kind == BH_SERIES_PLANNED ? 0.0 : 0.2);
     bh_pen_stroke(e->pen, &(bh_stroke){middle, y - 5.0, middle, y + 5.0, bar_line});
+    bh_pen_stroke(e->pen, &(bh_stroke){middle - cap, y - 5.0, middle + cap, y - 5.0, bar_line});
+    bh_pen_stroke(e->pen, &(bh_stroke){middle - cap, y + 5.0, middle + cap, y + 5.0, bar_line});
     bh_pen_mark(e->pen, style->mark, s->kind == BH_SERIES_PLANNED, middle, y);
 }
 
@@ -275,8 +323,8 @@ static void write_left(const struct easel *e, bh_letters which, const char *text
 static void around(const struct easel *e)
 {
     const bh_lettering how = bh_figure_letters(BH_LETTERS_LEGEND);
-    for (size_t i = 0; i < e->figure->span_count; i++)
-        span_bar(e, i);
+    span_bars(e);
+    span_names(e);
     for (size_t i = 0; i < e->l->entry_count; i++) {
         const bh_legend_entry *entry = &e->l->entries[i];
         sample(e, entry);

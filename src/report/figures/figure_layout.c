@@ -17,10 +17,10 @@ bh_lettering bh_figure_letters(bh_letters which)
 {
     static const bh_lettering letters[] = {
         [BH_LETTERS_TITLE] = {10.5, true, 0.0, 0.0},
-        [BH_LETTERS_SUBTITLE] = {8.0, false, 0.2, 0.0},
-        [BH_LETTERS_AXIS] = {9.0, false, 0.0, 0.0},
-        [BH_LETTERS_TICK] = {8.0, false, 0.0, 0.0},
-        [BH_LETTERS_LEGEND] = {8.0, false, 0.0, 0.0},
+        [BH_LETTERS_SUBTITLE] = {8.5, false, 0.2, 0.0},
+        [BH_LETTERS_AXIS] = {8.5, false, 0.0, 0.0},
+        [BH_LETTERS_TICK] = {8.5, false, 0.0, 0.0},
+        [BH_LETTERS_LEGEND] = {8.5, false, 0.0, 0.0},
         [BH_LETTERS_SPAN] = {6.5, false, 0.15, 0.0},
         [BH_LETTERS_FOOT] = {6.5, false, 0.3, 0.0},
     };

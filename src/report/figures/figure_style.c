@@ -9,7 +9,7 @@ static const bh_figure_style styles[BH_STYLES] = {
     {4, 124, 164, 2, {1.5, 2.0}, BH_MARK_DIAMOND},
     {4, 82, 43, 2, {11.0, 3.0}, BH_MARK_DOWN},
     {227, 60, 172, 6, {6.0, 2.0, 1.2, 1.6, 1.2, 2.0}, BH_MARK_CROSS},
-    {114, 9, 53, 2, {3.5, 1.5}, BH_MARK_PLUS},
+    {94, 43, 0, 2, {3.5, 1.5}, BH_MARK_PLUS},
     {125, 64, 210, 4, {12.0, 2.0, 3.0, 2.0}, BH_MARK_HEXAGON},
 };
 

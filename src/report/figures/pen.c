@@ -109,12 +109,21 @@ void bh_pen_colour(const bh_pen *pen, const bh_figure_style *style)
     cairo_set_source_rgb(pen->to, style->red / 255.0, style->green / 255.0, style->blue / 255.0);
 }
 
-void bh_pen_stroke(const bh_pen *pen, const bh_stroke *s)
+void bh_pen_strokes(const bh_pen *pen, size_t count, const bh_stroke *s)
 {
+    if (count == 0)
+        return;
     cairo_set_line_width(pen->to, s->thick);
-    cairo_move_to(pen->to, s->x1, s->y1);
-    cairo_line_to(pen->to, s->x2, s->y2);
+    for (size_t i = 0; i < count; i++) {
+        cairo_move_to(pen->to, s[i].x1, s[i].y1);
+        cairo_line_to(pen->to, s[i].x2, s[i].y2);
+    }
     cairo_stroke(pen->to);
+}
+
+void bh_pen_stroke(const bh_pen *pen, const bh_stroke *stroke)
+{
+    bh_pen_strokes(pen, 1, stroke);
 }
 
 /* --- marks --- */
