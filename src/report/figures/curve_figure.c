@@ -349,11 +349,13 @@ static const char *kept(const struct maker *m)
         return c->arm->arm.shape == BH_SHAPE_RING
                    ? ""
                    : say(m->arena, ", %s deg", short_number(m, c->arm->angle.value / BH_DEGREE));
+    if (c->arm->q2.given)
+        return say(m->arena, ", Q² %.4g GeV²", c->arm->q2.value * 1e-6);
     for (size_t row = 0; row < bh_table_rows(t, false); row++) {
         const bh_place at = bh_table_place(t, false, row);
         const bh_setting *s = &bh_table_plan(t)->settings[at.setting];
         if (s == c->setting && &s->arms[at.arm] == c->arm)
-            return say(m->arena, ", Q² %.3g GeV²", bh_table_number(t, false, row, BH_COL_Q2));
+            return say(m->arena, ", Q² %.4g GeV²", bh_table_number(t, false, row, BH_COL_Q2));
     }
     return "";
 }
