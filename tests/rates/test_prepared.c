@@ -22,7 +22,7 @@ START_TEST(same_as_made_anew)
     bh_prepared *prepared = calloc(1, sizeof *prepared);
     ck_assert_ptr_nonnull(prepared);
     for (int round = 0; round < 2; round++)
-        for (int k = 0; k < 8; k++) {
+        for (int k = 0; k < 20; k++) {
             const bh_acceptance a = arm_at(0.5 + 0.01 * k, 60);
             for (int bin = 0; bin <= 60; bin++) {
                 bh_acceptance_part part;

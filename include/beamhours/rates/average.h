@@ -47,7 +47,7 @@ typedef struct {
     bh_average *bins; /* room for acceptance->bins of them; NULL: not wanted */
 } bh_averages;
 
-/* Memory for sums: never grows, about 500 kB; one thread at a time.  Results do not depend on what
+/* Memory for sums: never grows, about 1 MB; one thread at a time.  Results do not depend on what
  * it was used for before.  NULL when there is no memory; NULL may be freed. */
 typedef struct bh_average_workspace bh_average_workspace;
 bh_average_workspace *bh_average_workspace_new(void);

@@ -16,7 +16,7 @@ typedef struct {
 } bh_prepared_part;
 
 /* Never grows; begin with zeros.  One thread at a time. */
-enum { BH_PREPARED_PARTS = 256 };
+enum { BH_PREPARED_PARTS = 1024 };
 
 typedef struct {
     bh_prepared_part parts[BH_PREPARED_PARTS];
