@@ -2,6 +2,7 @@
 #include "beamhours/run/beneath.h"
 
 #include <math.h>
+#include <stdio.h>
 
 #include "beamhours/rates/average.h"
 #include "beamhours/run/elastic_tail.h"
@@ -57,15 +58,17 @@ static bool matters(const bh_yielder *yielder, const bh_beneath_of *of)
 static void note(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *of,
                  const bh_background_validity *validity)
 {
-    char nuclide[8];
+    char nuclide[8], what[256];
     if (!yielder->remarks || validity->state == BH_COMPUTED || !matters(yielder, of))
         return;
     bh_nuclide_name(of->struck->z, of->struck->a, nuclide);
+    snprintf(what, sizeof what, "%s%s%s", view->beside ? view->beside : "",
+             view->beside ? "s in the beam: " : "", validity->reason);
     bh_remarks_note(yielder->remarks, &(bh_remark){.kind = BH_REMARK_NOT_COMPUTED,
                                                    .at = view->setting->process.at,
                                                    .key = "models.process",
                                                    .who = nuclide,
-                                                   .what = validity->reason,
+                                                   .what = what,
                                                    .setting = view->setting->name});
 }
 

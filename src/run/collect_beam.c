@@ -1,6 +1,7 @@
 /* collect_beam.c - what the uncertainties of the beam make of the rates of an arm. */
 #include <math.h>
 #include <stddef.h>
+#include <stdio.h>
 #include <stdlib.h>
 
 #include "beamhours/run/collecting.h"
@@ -11,13 +12,13 @@
 static void collect_others(bh_collecting *c)
 {
     const bh_beam *b = &c->setting->beam;
-    char key[BH_CAUSE_KEY];
+    char key[BH_CAUSE_KEY], member[32];
     const double per_particle = b->current.value / b->particle_rate.value / BH_ELEMENTARY;
     for (size_t i = 0; !b->rate_written && i < b->other_count; i++) {
         const bh_beam_other *other = &b->others[i];
-        const bh_cause cause =
-            bh_collect_cause(BH_CAUSE_OTHERS, other->share.at,
-                             bh_collect_beam_key(c, other->share.at, "others", key));
+        snprintf(member, sizeof member, "others.%s", other->particle.name);
+        const bh_cause cause = bh_collect_cause(
+            BH_CAUSE_OTHERS, other->share.at, bh_collect_beam_key(c, other->share.at, member, key));
         const double more = abs(other->particle.charge) - abs(b->charge);
         bh_collect_same(c, &cause, -more / per_particle * other->share.uncertainty);
     }

@@ -9,6 +9,11 @@ double bh_collect_relative(const bh_value *v)
     return v->value != 0 ? v->uncertainty / fabs(v->value) : 0;
 }
 
+static bool same_place(bh_mark a, bh_mark b)
+{
+    return a.line == b.line && a.column == b.column;
+}
+
 const char *bh_collect_beam_key(const bh_collecting *c, bh_mark at, const char *member,
                                 char key[BH_CAUSE_KEY])
 {
@@ -17,7 +22,9 @@ const char *bh_collect_beam_key(const bh_collecting *c, bh_mark at, const char *
                              all->fraction.at, all->momentum_spread.at, all->duty_factor.at};
     bool common = false;
     for (size_t i = 0; i < sizeof marks / sizeof marks[0]; i++)
-        common = common || (marks[i].line == at.line && marks[i].column == at.column);
+        common = common || same_place(marks[i], at);
+    for (size_t i = 0; i < all->other_count; i++)
+        common = common || same_place(all->others[i].share.at, at);
     if (common)
         snprintf(key, BH_CAUSE_KEY, "beam.%s", member);
     else

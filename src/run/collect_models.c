@@ -66,8 +66,9 @@ static void collect_part(bh_collecting *c, const bh_encounter *e, const bh_model
 static double subtracted(const bh_collecting *c, const bh_share *share, size_t part)
 {
     const bh_part *p = &c->arm->yield->part[part];
-    const double windows = c->arm->empty.measured ? 0 : p->windows * share->windows;
-    return p->signal > 0 ? (windows + p->other * share->other) / p->signal : 0;
+    const double windows =
+        c->arm->empty.measured ? 0 : (p->windows - p->beside[0]) * share->windows;
+    return p->signal > 0 ? (windows + (p->other - p->beside[1]) * share->other) / p->signal : 0;
 }
 
 static void collect_in_part(bh_collecting *c, const bh_channel *channel, const bh_share *share,
@@ -87,7 +88,7 @@ static void collect_in_part(bh_collecting *c, const bh_channel *channel, const b
         collect_part(c, e, &spread, part, share->signal);
     const bh_cause cause = model_cause(c, BH_CAUSE_BACKGROUND, e);
     if (over > worth_subtracting && !stays_outside(e))
-        add_one(c, &cause, part, -over * hypot(bh_model_spread_size(&spread), spread.coulomb));
+        add_one(c, &cause, part, over * hypot(bh_model_spread_size(&spread), spread.coulomb));
 }
 
 void bh_collect_models(bh_collecting *c)

@@ -23,7 +23,7 @@ static const char *layer_key(const bh_collecting *c, size_t layer, const char *m
 }
 
 /* More nuclei of a layer by the share `by`: more signal where they are scatterers; where they are
- * subtracted as computed, the signal is wrong by as much. */
+ * subtracted as computed, more of them are left in the signal. */
 static void collect_nuclei(bh_collecting *c, const bh_cause *cause, size_t layer, double by)
 {
     const bh_share *share = &c->layers[layer];
@@ -31,8 +31,12 @@ static void collect_nuclei(bh_collecting *c, const bh_cause *cause, size_t layer
     double *to = by != 0 && isfinite(by) ? bh_collect(c, cause, 0) : NULL;
     for (size_t i = 0; to && i < c->parts; i++) {
         const bh_part *p = &c->arm->yield->part[i];
-        const double wrong = p->other * share->other + (measured ? 0 : p->windows * share->windows);
-        to[i] += by * share->signal - (p->signal > 0 ? by * wrong / p->signal : 0);
+        const double wrong =
+            (p->other - p->beside[1]) * share->other + p->beside[1] * share->beside[1] +
+            (measured
+                 ? 0
+                 : (p->windows - p->beside[0]) * share->windows + p->beside[0] * share->beside[0]);
+        to[i] += by * share->signal + (p->signal > 0 ? by * wrong / p->signal : 0);
     }
 }
 

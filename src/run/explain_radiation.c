@@ -1,11 +1,8 @@
-/* explain_radiation.c - the radiative factor of a row, and what lies beneath the elastic lines. */
+/* explain_radiation.c - the radiative factor of a row. */
 #include <math.h>
 
-#include "beamhours/rates/counting.h"
-#include "beamhours/run/beneath.h"
 #include "beamhours/run/explaining.h"
 #include "beamhours/units/constants.h"
-#include "beamhours/units/nuclide.h"
 
 static void factor(bh_explaining *x, const char *name, const char *value, const char *formula)
 {
@@ -17,8 +14,6 @@ static const char *number(bh_explaining *x, double value, const char *unit)
 {
     return bh_explain_number(x, value, unit);
 }
-
-/* --- the radiative factor --- */
 
 static void explain_cut(bh_explaining *x, const bh_radiated_detail *at)
 {
@@ -102,52 +97,4 @@ void bh_explain_radiation(bh_explaining *x)
     factor(x, "radiative factor", number(x, x->part->radiative, ""),
            idle ? why_one(v)
                 : "internal x external x single collisions, mean over what is kept of the row");
-}
-
-/* --- beneath the lines --- */
-
-static const char *name_of(bh_explaining *x, const bh_presence *p, const char *what)
-{
-    char nuclide[8];
-    const bh_struck *s = &x->arm->yield->view.list->nuclides[p->nuclide];
-    return bh_explain_text(x, "%s on %s in layer %zu", what, bh_nuclide_name(s->z, s->a, nuclide),
-                           p->layer + 1);
-}
-
-static void explain_one(bh_explaining *x, const bh_presence *p, int which)
-{
-    const bh_view *v = &x->arm->yield->view;
-    const bh_background *row = bh_background_at(which);
-    double *total = bh_workspace_scratch(x->evaluator.yielder.workspace)->totals;
-    bh_error ignored;
-    const bh_beneath_wanted wanted = {p, which};
-    if (bh_beneath_presence(&x->evaluator.yielder, v, &wanted, total, &ignored)) {
-        x->failed = true; /* it worked when the row was made */
-        return;
-    }
-    const double seen = p->number * x->evaluator.yielder.paths[0][p->layer];
-    const double rate = v->beam * seen * total[x->bin] * 1e-30 * v->arm->arm.efficiency.value;
-    const double all = x->part->signal + x->part->windows + x->part->other;
-    if (!(rate > 0))
-        return;
-    bh_explain_add(
-        x,
-        (bh_line){
-            .kind = BH_LINE_FACTOR,
-            .name = name_of(x, p, row ? row->name : "hard radiative tail"),
-            .value = number(x, rate, "Hz"),
-            .formula = row ? row->summary : "electrons that lost more than 3 % to radiation on it",
-            .source = row ? row->source : "Mo & Tsai, Rev. Mod. Phys. 41 (1969) 205: peaking",
-            .remark = bh_explain_text(x, "%s of all events%s%s", number(x, 100 * rate / all, "%"),
-                                      row ? "; " : "", row ? row->range : "")});
-}
-
-void bh_explain_beneath(bh_explaining *x)
-{
-    const bh_struck_list *list = x->arm->yield->view.list;
-    for (size_t i = 0; i < list->presence_count; i++) {
-        explain_one(x, &list->presences[i], BH_BENEATH_TAIL);
-        for (int k = 0; bh_background_at(k); k++)
-            explain_one(x, &list->presences[i], k);
-    }
 }

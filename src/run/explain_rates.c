@@ -16,15 +16,6 @@ static const char *percent(bh_explaining *x, double share)
     return bh_explain_number(x, 100 * share, "%");
 }
 
-static const char *place(bh_explaining *x, const bh_contribution *c)
-{
-    char nuclide[8];
-    const bh_layer *l = &x->setting->target->layers[c->presence->layer];
-    return bh_explain_text(x, "%s in layer %zu (%s)",
-                           bh_nuclide_name(c->struck->z, c->struck->a, nuclide),
-                           c->presence->layer + 1, l->material->name);
-}
-
 static void explain_luminosity(bh_explaining *x, const bh_contribution *all, size_t count)
 {
     const bh_yield *y = x->arm->yield;
@@ -38,7 +29,7 @@ static void explain_luminosity(bh_explaining *x, const bh_contribution *all, siz
                                 .source = "e exact, SI 2019"});
     for (size_t i = 0; i < count; i++)
         if (all[i].presence->origin == BH_ORIGIN_SIGNAL)
-            factor(x, place(x, &all[i]), bh_explain_number(x, all[i].seen, "/cm2"),
+            factor(x, bh_explain_place(x, &all[i]), bh_explain_number(x, all[i].seen, "/cm2"),
                    "nuclei along the beam in the part of the layer that is seen");
     factor(x, "scatterer nuclei seen", bh_explain_number(x, y->seen, "/cm2"),
            "sum over sample layers and isotopes");
@@ -70,35 +61,6 @@ static void explain_signal(bh_explaining *x)
     factor(x, "signal rate", bh_explain_number(x, p->signal, "Hz"),
            "luminosity x 1e-30 cm2/ub x mean cross section x solid angle x radiative factor x kept "
            "x efficiency");
-}
-
-static void explain_background(bh_explaining *x, const bh_contribution *all, size_t count)
-{
-    const bh_part *p = x->part;
-    const double sum = p->signal + p->windows + p->other;
-    bh_explain_section(x, "Background");
-    for (size_t i = 0; i < count; i++) {
-        if (all[i].presence->origin == BH_ORIGIN_SIGNAL)
-            continue;
-        bh_explain_add(
-            x, (bh_line){.kind = BH_LINE_FACTOR,
-                         .name = place(x, &all[i]),
-                         .value = bh_explain_number(x, all[i].rate, "Hz"),
-                         .formula = bh_explain_text(x, "%s ub/sr x %s /cm2, kept %s",
-                                                    bh_explain_number(x, all[i].cross_section, ""),
-                                                    bh_explain_number(x, all[i].seen, ""),
-                                                    bh_explain_number(x, all[i].kept, "")),
-                         .source = bh_explain_text(x, "%s", bh_structure_name(all[i].structure)),
-                         .remark = bh_explain_text(x, "%s of all events; %s",
-                                                   percent(x, sum > 0 ? all[i].rate / sum : 0),
-                                                   all[i].presence->origin == BH_ORIGIN_WINDOW
-                                                       ? "stays when the sample is out"
-                                                       : "leaves with the sample")});
-    }
-    bh_explain_beneath(x);
-    factor(
-        x, "background rate", bh_explain_number(x, p->windows + p->other, "Hz"),
-        "all that lands in the bite and is not the signal, other particles of the beam among it");
 }
 
 static void explain_live(bh_explaining *x)
@@ -147,7 +109,7 @@ void bh_explain_rates(bh_explaining *x)
     }
     explain_luminosity(x, all, count);
     explain_signal(x);
-    explain_background(x, all, count);
+    bh_explain_background(x, all, count);
     explain_live(x);
     explain_sensitivities(x);
 }

@@ -68,7 +68,8 @@ static void explain_variance(bh_explaining *x)
         return;
     factor(x, "from signal counts", percent(x, r->signal / sum), "share of the variance");
     factor(x, "from windows", percent(x, r->windows / sum), "share of the variance");
-    factor(x, "from other nuclides", percent(x, r->other / sum), "share of the variance");
+    factor(x, "from background computed", percent(x, r->other / sum),
+           "what no empty target measures: share of the variance");
     factor(x, "from the empty target", percent(x, second / sum),
            e->measured ? "share of the variance" : "background taken as known exactly");
     bh_explain_add(x, (bh_line){.kind = BH_LINE_FACTOR,
@@ -95,7 +96,7 @@ void bh_explain_assumptions(bh_explaining *x)
         "The target covers the beam and is uniform.",
         "Atoms are at rest and nuclei spherical.",
         "One photon is exchanged; the beam is a plane wave.",
-        "Other particles in the beam have its momentum, scatter elastically and lose no energy.",
+        "Other particles in the beam have its momentum and lose no energy in the target.",
         "Quasi-elastic and inelastic spectra are without radiation of their own.",
         "Excited levels of nuclei, pions and other hadrons, and decays are not counted.",
         "The vertices of background lose on their way out what the scatterer's do on the axis."};

@@ -146,8 +146,8 @@ void bh_resolve_bins(bh_yield *yield)
         {4,
          {offsetof(bh_part, kept), offsetof(bh_part, radiative), offsetof(bh_part, per_radian),
           offsetof(bh_part, per_momentum)}},
-        {2, {offsetof(bh_part, windows), offsetof(bh_part, dummy)}},
-        {1, {offsetof(bh_part, other)}}};
+        {3, {offsetof(bh_part, windows), offsetof(bh_part, dummy), offsetof(bh_part, beside[0])}},
+        {2, {offsetof(bh_part, other), offsetof(bh_part, beside[1])}}};
     bh_acceptance acceptance;
     struct cells c;
     const int bins = yield->view.parts - 1;

@@ -178,11 +178,15 @@ static void normalise(bh_share *list, size_t count)
         sum.signal += list[i].signal;
         sum.windows += list[i].windows;
         sum.other += list[i].other;
+        sum.beside[0] += list[i].beside[0];
+        sum.beside[1] += list[i].beside[1];
     }
     for (size_t i = 0; i < count; i++) {
         list[i].signal = sum.signal > 0 ? list[i].signal / sum.signal : 0;
         list[i].windows = sum.windows > 0 ? list[i].windows / sum.windows : 0;
         list[i].other = sum.other > 0 ? list[i].other / sum.other : 0;
+        for (int k = 0; k < 2; k++)
+            list[i].beside[k] = sum.beside[k] > 0 ? list[i].beside[k] / sum.beside[k] : 0;
     }
 }
 
@@ -232,6 +236,8 @@ static void set_shares(bh_collecting *c)
         add_rate(&c->layers[p->layer], p->origin, simple ? p->number : all[i].rate);
         add_rate(&c->nuclides[p->nuclide], p->origin, simple ? p->number : all[i].rate);
     }
+    if (!simple)
+        bh_collect_beside(c);
     normalise(c->layers, layers);
     normalise(c->nuclides, list->count);
 }
@@ -269,5 +275,6 @@ bh_code bh_systematic_arm(bh_systematics *systematics, const bh_arm_hours *arm, 
     bh_collect_arm(&c);
     bh_collect_readout(&c);
     bh_collect_models(&c);
+    bh_collect_beside_models(&c);
     return c.code ? c.code : hand_over(&c, out);
 }

@@ -18,13 +18,15 @@ static bh_code request_for(bh_yielder *yielder, const struct adding *a, const bh
                            bh_radiated_request *request, bh_error *err)
 {
     bh_channels channels;
-    const size_t count = bh_view_vertices(yielder, a->way, nuclei);
+    const size_t count = a->way ? bh_view_vertices(yielder, a->way, nuclei) : 0;
     const bh_code code = bh_view_channels(yielder, a->view,
                                           &nuclei->list->nuclides[nuclei->nuclide], &channels, err);
     if (code)
         return code;
     *request = bh_view_radiated(yielder, a->view, &channels.list[0], a->way, count);
-    request->signal = nuclei->origin == BH_ORIGIN_SIGNAL && !nuclei->all;
+    request->signal = nuclei->origin == BH_ORIGIN_SIGNAL && !nuclei->all && !a->view->beside;
+    if (!a->way)
+        return BH_OK;
     const bh_code lost = bh_gate_there(yielder, a->view, a->way, count, &request->gate);
     return lost ? bh_fail(err, lost, "%s", bh_code_text(lost)) : BH_OK;
 }
@@ -44,47 +46,45 @@ static bh_code add_nuclei(bh_yielder *yielder, struct adding *a, const bh_nuclei
     return code ? code : bh_beneath_atomic(yielder, a->view, &of, a->total, err);
 }
 
-static double *cleared(bh_yielder *yielder, const bh_view *view)
+bh_code bh_beneath_group_sum(bh_yielder *yielder, const bh_beneath_group *group, double *total,
+                             bh_error *err)
 {
-    double *total = bh_workspace_scratch(yielder->workspace)->totals;
-    for (int i = 0; i < view->parts; i++)
-        total[i] = 0;
-    return total;
-}
-
-/* Everything of one origin, the scatterer's own with what is not a window; or of a dummy cell. */
-static bh_code add_origin(bh_yielder *yielder, struct adding *a, const bh_struck_list *list,
-                          int origin, bh_error *err)
-{
-    const bool dummy = origin == BH_ORIGINS;
+    struct adding a = {
+        .view = group->view, .way = group->way, .which = BH_BENEATH_ALL, .total = total};
+    const bool any = group->origin == BH_ORIGINS, windows = group->origin == BH_ORIGIN_WINDOW;
     bh_code code = BH_OK;
-    bh_beneath_begin(a->view, &a->smooth);
-    a->total = cleared(yielder, a->view);
-    for (size_t k = 0; !code && a->smooth.at.count && k < list->count * BH_ORIGINS; k++) {
-        const int o = (int)(k % BH_ORIGINS);
+    bh_beneath_begin(a.view, &a.smooth);
+    for (int i = 0; i < a.view->parts; i++)
+        total[i] = 0;
+    for (size_t k = 0; !code && a.smooth.at.count && k < group->list->count * BH_ORIGINS; k++) {
+        const bh_origin o = (bh_origin)(k % BH_ORIGINS);
         const double number = yielder->seen[k / BH_ORIGINS].of[o];
-        const bool meant = dummy || (o == BH_ORIGIN_WINDOW) == (origin == BH_ORIGIN_WINDOW);
-        bh_nuclei nuclei = {.list = list, .nuclide = k / BH_ORIGINS, .origin = (bh_origin)o};
-        nuclei.all = dummy;
-        if (meant && number > 0)
-            code = add_nuclei(yielder, a, &nuclei, number, err);
+        const bh_nuclei nuclei = {
+            .list = group->list, .nuclide = k / BH_ORIGINS, .all = any, .origin = o};
+        if ((any || (o == BH_ORIGIN_WINDOW) == windows) && number > 0)
+            code = add_nuclei(yielder, &a, &nuclei, number, err);
     }
-    return code ? code : bh_beneath_sum(yielder, a->view, &a->smooth, a->total, err);
+    return code ? code : bh_beneath_sum(yielder, a.view, &a.smooth, total, err);
 }
 
 bh_code bh_beneath_yield(bh_yielder *yielder, bh_yield *yield, const bh_struck_list *list,
                          const bh_way *way, bh_error *err)
 {
-    struct adding a = {.view = &yield->view, .way = way, .which = BH_BENEATH_ALL};
     const bool dummy = list != yield->view.list;
-    bh_code code = add_origin(yielder, &a, list, dummy ? BH_ORIGINS : BH_ORIGIN_OTHER, err);
+    double *total = bh_workspace_scratch(yielder->workspace)->totals;
+    bh_beneath_group group = {.view = &yield->view,
+                              .list = list,
+                              .way = way,
+                              .origin = dummy ? BH_ORIGINS : BH_ORIGIN_OTHER};
+    bh_code code = bh_beneath_group_sum(yielder, &group, total, err);
     for (int i = 0; !code && i < yield->view.parts; i++)
-        *(dummy ? &yield->part[i].dummy : &yield->part[i].other) += a.total[i];
+        *(dummy ? &yield->part[i].dummy : &yield->part[i].other) += total[i];
     if (code || dummy)
         return code;
-    code = add_origin(yielder, &a, list, BH_ORIGIN_WINDOW, err);
+    group.origin = BH_ORIGIN_WINDOW;
+    code = bh_beneath_group_sum(yielder, &group, total, err);
     for (int i = 0; !code && i < yield->view.parts; i++)
-        yield->part[i].windows += a.total[i];
+        yield->part[i].windows += total[i];
     return code;
 }
 
@@ -92,7 +92,10 @@ bh_code bh_beneath_presence(bh_yielder *yielder, const bh_view *view,
                             const bh_beneath_wanted *wanted, double *total, bh_error *err)
 {
     const bh_presence *presence = wanted->presence;
-    struct adding a = {.view = view, .way = &view->way, .which = wanted->which, .total = total};
+    struct adding a = {.view = view,
+                       .way = view->beside ? NULL : &view->way,
+                       .which = wanted->which,
+                       .total = total};
     const bh_nuclei nuclei = {.list = view->list,
                               .nuclide = presence->nuclide,
                               .origin = presence->origin,

@@ -157,6 +157,8 @@ void bh_yield_finish(const bh_yield *yield, bh_part *part)
     part->windows *= per_ub;
     part->other *= per_ub;
     part->dummy *= per_ub;
+    part->beside[0] *= per_ub;
+    part->beside[1] *= per_ub;
 }
 
 /* What one nuclide of the dummy cell gives. */

@@ -99,7 +99,8 @@ START_TEST(factors_lead_from_the_point_charge_to_the_rate)
                            number(x, "rate limit leaves"),
                        number(x, "live fraction"), 1e-4, "live fraction");
     ck_assert_relative(number(x, "from signal counts") + number(x, "from windows") +
-                           number(x, "from other nuclides") + number(x, "from the empty target"),
+                           number(x, "from background computed") +
+                           number(x, "from the empty target"),
                        100, 1e-4, "shares of the variance");
     ck_assert_relative(number(x, "27Al in layer 1 (aluminium)") +
                            number(x, "hard radiative tail on 27Al in layer 1") +
@@ -333,6 +334,62 @@ START_TEST(every_kind_of_row)
 }
 END_TEST
 
+/* Rows whose background has many parts; all of them, in words or in one sum, are the whole. */
+static const struct {
+    const char *plan;
+    int bin;
+    const char *item; /* that must be among them */
+} mixed[] = {
+#define MUONS                                                                                    \
+    "plan: 1\nbeam: {particle: muon-, momentum: 210 MeV/c, particle_rate: 1e6 /s, fraction: 22 " \
+    "%, "                                                                                        \
+    "others: {electron: 68 %, pion-: 10 %}}\n"                                                   \
+    "target: {name: t, scatterer: H, empty_target: {share: 20 %}, layers: [{material: kapton, "  \
+    "thickness: 0.1 mm, role: window}, {material: polyethylene, thickness: 5 mm}, {material: "   \
+    "kapton, thickness: 0.1 mm, role: window}]}\n"
+    {MUONS "arms: [{name: A, ring: {from: 20 deg, to: 90 deg}, bins: 4, energy_cut: 9 MeV}]\n"
+           "settings: [{name: K, time: 1 h}]\n",
+     0, "electron: quasi-elastic on 12C outside windows"},
+    {MUONS "arms: [{name: A, ring: {from: 20 deg, to: 90 deg}, bins: 4, energy_cut: 9 MeV}]\n"
+           "settings: [{name: K, time: 1 h}]\n",
+     3, "pion-: elastic on 1H outside windows"},
+    {MUONS
+     "arms: [{name: A, in_plane: ±80 mrad, out_of_plane: ±50 mrad, bins: 8, angle_resolution: "
+     "10 mrad, momentum_bite: ±8 %}]\nsettings: [{name: K, angle: 40 deg, time: 1 h}]\n",
+     2, "exchanged with other bins"}};
+
+START_TEST(the_items_of_the_background_add_up)
+{
+    struct evaluated e = evaluate(mixed[_i].plan);
+    bh_explanation *x = bh_explain(e.table, "K", "A", mixed[_i].bin, NULL);
+    const double all = number(x, "background rate");
+    double sum = 0;
+    bool inside = false, found = false;
+    int cited = 0;
+    for (size_t i = 0; i < bh_explanation_lines(x); i++) {
+        const bh_line *line = bh_explanation_line(x, i);
+        inside = line->kind == BH_LINE_SECTION ? strcmp(line->name, "Background") == 0 : inside;
+        if (!inside || line->kind != BH_LINE_FACTOR || strcmp(line->name, "background rate") == 0)
+            continue;
+        sum += atof(line->value);
+        found = found || strcmp(line->name, mixed[_i].item) == 0;
+        cited += line->source && strstr(line->source, "scaling function") != NULL;
+        ck_assert_msg(strstr(line->name, "smaller") || strstr(line->name, "bins") ||
+                          atof(line->value) >= 0.9999e-4 * all,
+                      "%s", line->name);
+    }
+    ck_assert_msg(found, "%s", mixed[_i].item);
+    ck_assert_int_le(cited, 1);
+    ck_assert_relative(sum, all, 1e-4, mixed[_i].item);
+    ck_assert_relative(all,
+                       mixed[_i].bin ? bin_cell(&e, (size_t)mixed[_i].bin - 1, BH_COL_BACKGROUND)
+                                     : cell(&e, 0, BH_COL_BACKGROUND),
+                       1e-5, "row");
+    bh_explanation_free(x);
+    done(&e);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("explain");
@@ -345,6 +402,7 @@ int main(void)
     tcase_add_test(tests, ratios_are_surer_than_rates);
     tcase_add_test(tests, assumptions_are_listed);
     tcase_add_loop_test(tests, what_is_not_there_is_refused, 0, COUNT(refusals));
+    tcase_add_loop_test(tests, the_items_of_the_background_add_up, 0, COUNT(mixed));
     tcase_add_loop_test(tests, every_kind_of_row, 0, COUNT(others));
     return run_suite("explain", tests);
 }

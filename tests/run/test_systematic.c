@@ -306,6 +306,55 @@ START_TEST(windows_count_as_long_as_no_empty_target_measures_them)
 }
 END_TEST
 
+/* Of others, with their share written as `share`, on hydrogen behind a window. */
+static struct evaluated beside(const char *others, const char *empty)
+{
+    char text[1024];
+    snprintf(
+        text, sizeof text,
+        "plan: 1\nbeam: {particle: muon-, momentum: 200 MeV/c, particle_rate: 1e6 /s, fraction: "
+        "30 %%, others: {%s}}\ntarget: {name: t, scatterer: H, %slayers: [{material: kapton, "
+        "thickness: 0.5 mm, role: window}, {material: liquid-hydrogen, thickness: 50 ± 1 "
+        "mm}]}\n" ARM "settings: [{name: K, angle: 50 deg}]\n",
+        others, empty);
+    return evaluate(text);
+}
+
+/* What an empty target does not measure of other particles is subtracted as computed. */
+static const char *const empties[] = {"", "empty_target: {share: 20 %}, "};
+
+START_TEST(other_particles_are_subtracted_as_computed)
+{
+    struct evaluated e = beside("electron: 40 ± 5 %", empties[_i]);
+    struct evaluated more = beside("electron: 45 %", empties[_i]);
+    struct evaluated pions = beside("pion-: 10 %", empties[_i]);
+    const double signal = cell(&e, 0, BH_COL_SIGNAL);
+    const double by = (cell(&more, 0, BH_COL_BACKGROUND) - cell(&e, 0, BH_COL_BACKGROUND)) / signal;
+    ck_assert_double_gt(by, 0.1);
+    const double known = _i ? from(&e, 0, BH_CAUSE_OTHERS) : by;
+    ck_assert_relative(from(&e, 0, BH_CAUSE_OTHERS), known, 1e-3, "share");
+    ck_assert_double_gt(by, (_i ? 1.1 : 0.999) * from(&e, 0, BH_CAUSE_OTHERS));
+    ck_assert_double_gt(from(&e, 0, BH_CAUSE_OTHERS), by / 4);
+    ck_assert(from(&more, 0, BH_CAUSE_OTHERS) == 0);
+    ck_assert_double_gt(from(&e, 0, BH_CAUSE_BACKGROUND), 1e-3 * 8 * by);
+    ck_assert_double_lt(from(&e, 0, BH_CAUSE_BACKGROUND), 0.1 * 8 * by);
+    /* without nuclear forces nothing is known of pions */
+    struct evaluated none = beside("electron: 0 %", empties[_i]);
+    const double pion =
+        (cell(&pions, 0, BH_COL_BACKGROUND) - cell(&none, 0, BH_COL_BACKGROUND)) / signal;
+    ck_assert_double_gt(from(&pions, 0, BH_CAUSE_BACKGROUND), 0.5 * pion);
+    ck_assert_double_lt(from(&pions, 0, BH_CAUSE_BACKGROUND), 1.001 * pion);
+    /* more hydrogen is more of both */
+    const double own = from(&none, 0, BH_CAUSE_THICKNESS);
+    ck_assert_relative(own, 0.02, 0.05, "thickness");
+    ck_assert_double_gt(from(&e, 0, BH_CAUSE_THICKNESS), own * (1 + 4 * by));
+    done(&e);
+    done(&more);
+    done(&pions);
+    done(&none);
+}
+END_TEST
+
 /* --- pointing --- */
 
 START_TEST(pointing_acts_through_the_sensitivity_to_the_angle)
@@ -391,6 +440,7 @@ int main(void)
     tcase_add_test(tests, as_wide_as_the_rates_of_plans_drawn_at_random);
     tcase_add_loop_test(tests, one_input_moves_the_rate_by_what_the_row_says, 0, COUNT(inputs));
     tcase_add_test(tests, windows_count_as_long_as_no_empty_target_measures_them);
+    tcase_add_loop_test(tests, other_particles_are_subtracted_as_computed, 0, COUNT(empties));
     tcase_add_test(tests, pointing_acts_through_the_sensitivity_to_the_angle);
     tcase_add_test(tests, json_has_sources_that_add_up_and_causes_with_rows);
     return run_suite("systematic", tests);

@@ -68,11 +68,39 @@ BH_CHECKED bh_code bh_beneath_presence(bh_yielder *yielder, const bh_view *view,
                                        const bh_beneath_wanted *wanted, double *total,
                                        bh_error *err);
 
+/* The same arm in a beam of another particle, as bh_view has it; not to be copied. */
+typedef struct {
+    bh_setting setting;
+    bh_view view;
+    double share; /* [1] of it for each particle of the named kind */
+} bh_beside;
+
+/* Makes number `other` of the others in the beam of `view`.  As bh_view_channels. */
+BH_CHECKED bh_code bh_beside_make(bh_yielder *yielder, const bh_view *view, size_t other,
+                                  bh_beside *out, bh_error *err);
+
+/* Fills total [ub] likewise with elastic events of a particle beside, on each nucleus. */
+BH_CHECKED bh_code bh_beside_elastic(bh_yielder *yielder, const bh_beside *beside,
+                                     const bh_struck *struck, double *total, bh_error *err);
+
 /*
- * Adds likewise the elastic events of what else is in the beam, at the same momentum as its named
- * particle, without losses in the target; hadrons among them scatter by their charge alone.
+ * Adds likewise what else is in the beam does: elastic events and, of leptons, all of the above, at
+ * the same momentum as the named particle, without losses in the target; a cut counts from their
+ * own line.  Hadrons scatter by their charge alone.
  */
 BH_CHECKED bh_code bh_others_yield(bh_yielder *yielder, bh_yield *yield, const bh_struck_list *list,
                                    bh_error *err);
+
+/* All nuclei of one origin. */
+typedef struct {
+    const bh_view *view;
+    const bh_struck_list *list;
+    const bh_way *way; /* NULL: nothing is lost, and nothing is signal */
+    int origin;        /* BH_ORIGIN_OTHER: the scatterer's own among them; BH_ORIGINS: any */
+} bh_beneath_group;
+
+/* Fills total [ub/cm2] likewise with what they give beside elastic events. */
+BH_CHECKED bh_code bh_beneath_group_sum(bh_yielder *yielder, const bh_beneath_group *group,
+                                        double *total, bh_error *err);
 
 #endif

@@ -64,11 +64,16 @@ typedef struct {
  * below least [1], in its unit. */
 void bh_collect_moved(bh_collecting *c, const bh_cause *cause, bh_moved *moved, double least);
 
+/* Fills what each layer gives of the background by other particles in the beam [Hz], on the whole
+ * arm; the yielder's paths are of the setting's target. */
+void bh_collect_beside(bh_collecting *c);
+
 /* The steps. */
 void bh_collect_beam(bh_collecting *c);
 void bh_collect_target(bh_collecting *c);
 void bh_collect_arm(bh_collecting *c);
 void bh_collect_readout(bh_collecting *c);
 void bh_collect_models(bh_collecting *c);
+void bh_collect_beside_models(bh_collecting *c); /* shares and cross sections of other particles */
 
 #endif

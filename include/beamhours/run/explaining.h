@@ -52,9 +52,15 @@ void bh_explain_pair(bh_explaining *x); /* in the place of rates, of a coinciden
 void bh_explain_time(bh_explaining *x);
 void bh_explain_systematic(bh_explaining *x);
 
-/* Lines of the signal on radiation; lines of the background on all that is not elastic. */
+/* Lines of the signal on radiation. */
 void bh_explain_radiation(bh_explaining *x);
-void bh_explain_beneath(bh_explaining *x);
+
+/* "12C in layer 1 (kapton)". */
+const char *bh_explain_place(bh_explaining *x, const bh_contribution *c);
+
+/* The background, item by item: its lines add up to the last. `all` are the `count` contributions
+ * of the row's part. */
+void bh_explain_background(bh_explaining *x, const bh_contribution *all, size_t count);
 
 void bh_explain_assumptions(bh_explaining *x);
 

@@ -10,7 +10,9 @@
 /* What each layer, or each nuclide, gives of the rates of the whole arm. */
 typedef struct {
     double signal;         /* [1] of the signal rate */
-    double windows, other; /* [1] of the background rates from windows, from other nuclides */
+    double windows, other; /* [1] of the background rates of the named particle from windows, and
+                              from other nuclides */
+    double beside[2];      /* [1] of those of other particles of the beam, likewise */
 } bh_share;
 
 /* What uncertainties are collected with; one for an evaluation. */

@@ -52,6 +52,7 @@ typedef struct {
     const bh_setting_arm *arm;
     const bh_struck_list *list;
     const bh_process *process;
+    const char *beside; /* name of another particle in the beam, when it is meant; else NULL */
     bh_acceptance_spec spec;
     bh_way way;   /* of the beam and out of the setting's target */
     bool blocked; /* the beam does not come through what is to be seen of the sample */
@@ -83,6 +84,7 @@ typedef struct {
     double belonging;           /* [1] kept as the true angle has it, before bins exchange events */
     double signal;              /* [Hz] before dead time */
     double windows, other;      /* [Hz] likewise, background */
+    double beside[2];           /* [Hz] likewise, of them by other particles of the beam */
     double accidental;          /* [Hz] likewise, in `other`; of a coincidence */
     double dummy;               /* [Hz] of the dummy cell; equal to windows where there is none */
     double per_radian;          /* [1] relative change of the rate for a turn of the arm */
