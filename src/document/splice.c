@@ -26,7 +26,7 @@ static bool memory_lost(const bh_diags *diags)
     return count > 0 && strcmp(bh_diags_at(diags, count - 1)->text, bh_code_text(BH_ENOMEM)) == 0;
 }
 
-bool bh_splice_settle(bh_splice *s, bh_text *proposed)
+static bool settles(bh_splice *s, const bh_text *proposed)
 {
     bh_diags *said = bh_diags_new();
     bh_document *after = NULL;
@@ -34,7 +34,6 @@ bool bh_splice_settle(bh_splice *s, bh_text *proposed)
         after =
             bh_document_parse(proposed->bytes, proposed->length, bh_document_name(s->before), said);
     s->lost = s->lost || !said || proposed->failed || memory_lost(said);
-    bh_text_free(proposed);
     if (after && bh_as_meant(bh_document_root(s->before), bh_document_root(after), &s->meant)) {
         s->after = after;
         s->said = said;
@@ -43,6 +42,20 @@ bool bh_splice_settle(bh_splice *s, bh_text *proposed)
     bh_document_free(after);
     bh_diags_free(said);
     return false;
+}
+
+/* A text whose last line has no end may need one: a | text that now stands last lost its own. */
+bool bh_splice_settle(bh_splice *splice, bh_text *proposed)
+{
+    const bh_bytes text = splice->text;
+    const bool ended = text.length > 0 && text.bytes[text.length - 1] == '\n';
+    bool good = settles(splice, proposed);
+    if (!good && !splice->lost && !ended) {
+        bh_text_append(proposed, bh_line_break(text));
+        good = settles(splice, proposed);
+    }
+    bh_text_free(proposed);
+    return good;
 }
 
 /* --- what is meant --- */

@@ -336,9 +336,271 @@ START_TEST(a_change)
 }
 END_TEST
 
+static bool set(bh_edit *edit, const char *path, const char *text)
+{
+    bh_diags *diags = bh_diags_new();
+    const bool done = bh_edit_set(edit, path, text, diags);
+    bh_diags_free(diags);
+    return done;
+}
+
+static void undo(bh_edit *edit, int times)
+{
+    bh_diags *diags = bh_diags_new();
+    for (; times > 0; times--)
+        ck_assert(bh_edit_undo(edit, diags));
+    for (; times < 0; times++)
+        ck_assert(bh_edit_redo(edit, diags));
+    bh_diags_free(diags);
+}
+
+/* A plan with 200 lines of comment, saved after three changes, differs in exactly three values. */
+START_TEST(three_changes_among_comments)
+{
+    bh_text text = {0}, wanted = {0};
+    for (int round = 0; round < 2; round++) {
+        bh_text *to = round ? &wanted : &text;
+        for (int i = 0; i < 200; i++) {
+            bh_text_appendf(to, "%*s# comment %d: 20 uA\n", i % 7, "", i);
+            if (i == 40)
+                bh_text_appendf(to, "beam:\n   current:  %s # why\n", round ? "30 uA" : "20 uA");
+            if (i == 90)
+                bh_text_appendf(to, "title: '%s'\n", round ? "it''s" : "old");
+            if (i == 150)
+                bh_text_appendf(to, "l: [1, {a: %s,\n b: x}] # why\n", round ? "7" : "6");
+        }
+    }
+    bh_edit *edit = open_text(text.bytes);
+    ck_assert(set(edit, "beam.current", "30 uA") && set(edit, "title", "it's"));
+    ck_assert(set(edit, "l.2.a", "7"));
+    expect_bytes(edit, wanted.bytes, "comments");
+    bh_edit_range r[8];
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 8), 3);
+    ck_assert_uint_eq(r[0].to - r[0].from, 1);
+    ck_assert_int_eq(strncmp(wanted.bytes + r[0].from, "30 uA", 1), 0);
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 2), 2);
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 1), 1);
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 0), 0);
+    ck_assert_int_eq(bh_edit_step_at(edit, 0)->lines_after, 1);
+    bh_edit_free(edit);
+    bh_text_free(&text);
+    bh_text_free(&wanted);
+}
+END_TEST
+
+START_TEST(several_at_once_or_none)
+{
+    static const bh_edit_change both[] = {{BH_EDIT_REMOVE, "b.kinetic_energy", NULL, 0, NULL},
+                                          {BH_EDIT_SET, "b.momentum", "1 GeV/c", 1, NULL}};
+    static const bh_edit_change bad[] = {{BH_EDIT_SET, "b.momentum", "1 GeV/c", 0, NULL},
+                                         {BH_EDIT_REMOVE, "b.x", NULL, 0, NULL}};
+    bh_diags *diags = bh_diags_new();
+    bh_edit *edit = open_text("b: {kinetic_energy: 1, p: 2}\n");
+    ck_assert(!bh_edit_apply(edit, bad, 2, diags));
+    ck_assert_uint_eq(bh_edit_steps(edit), 0);
+    ck_assert(bh_edit_apply(edit, both, 2, diags));
+    expect_bytes(edit, "b: {momentum: 1 GeV/c, p: 2}\n", "both");
+    ck_assert_uint_eq(bh_edit_steps(edit), 1);
+    ck_assert_str_eq(bh_edit_step_at(edit, 0)->text, "b.kinetic_energy removed, and 1 more");
+    ck_assert_ptr_null(bh_edit_step_at(edit, 1));
+    bh_text tried = {0};
+    ck_assert(bh_edit_try(edit, &bad[0], 1, &tried, diags));
+    ck_assert_str_eq(tried.bytes, "b: {momentum: 1 GeV/c, p: 2}\n");
+    ck_assert(set(edit, "b.p", "2")); /* no change, no step */
+    ck_assert_uint_eq(bh_edit_steps(edit), 1);
+    undo(edit, 1);
+    ck_assert(!bh_edit_undo(edit, diags));
+    undo(edit, -1);
+    ck_assert(!bh_edit_redo(edit, diags));
+    bh_text_free(&tried);
+    bh_diags_free(diags);
+    bh_edit_free(edit);
+}
+END_TEST
+
+START_TEST(distance_to_what_is_saved)
+{
+    bh_edit *edit = open_text("a: 1\n");
+    bh_edit_range r[4];
+    for (int i = 2; i < 7; i++)
+        ck_assert(set(edit, "a", (char[]){(char)('0' + i), '\0'}));
+    ck_assert_uint_eq(bh_edit_unsaved(edit), 5);
+    ck_assert(bh_edit_saved(edit));
+    undo(edit, 2);
+    ck_assert_uint_eq(bh_edit_unsaved(edit), 2);
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 4), 1);
+    ck_assert(set(edit, "a", "x")); /* what was saved cannot be redone any more */
+    ck_assert_uint_eq(bh_edit_steps(edit), 4);
+    ck_assert_uint_eq(bh_edit_unsaved(edit), 3);
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 4), 1);
+    undo(edit, 3);
+    ck_assert_uint_eq(bh_edit_unsaved(edit), 4);
+    ck_assert(set(edit, "a", "6")); /* the same bytes, another way */
+    ck_assert_uint_eq(bh_edit_unsaved(edit), 0);
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 4), 0);
+    bh_edit_free(edit);
+    bh_edit_free(NULL);
+}
+END_TEST
+
+/* Values on opposite sides of what changed shift, and ranges that meet are joined. */
+START_TEST(ranges_follow_the_text)
+{
+    bh_edit *edit = open_text("a: 1\nb: 2\nc: 3\nd: 4\n");
+    bh_edit_range r[4];
+    ck_assert(set(edit, "d", "44444") && set(edit, "b", "22222"));
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 4), 2);
+    ck_assert(r[0].from == 9 && r[0].to == 13 && r[1].from == 23 && r[1].to == 27);
+    const bh_edit_change removed = {.kind = BH_EDIT_REMOVE, .path = "c"};
+    bh_diags *diags = bh_diags_new();
+    ck_assert(bh_edit_apply(edit, &removed, 1, diags));
+    ck_assert_uint_eq(bh_edit_changed(edit, r, 4), 3);
+    ck_assert(bh_edit_saved(edit));
+    undo(edit, 3);
+    ck_assert_uint_ge(bh_edit_changed(edit, r, 4), 2);
+    bh_diags_free(diags);
+    bh_edit_free(edit);
+}
+END_TEST
+
+static const struct {
+    const char *text, *path;
+    bh_edit_kind kind;
+    const char *why; /* NULL: allowed */
+} allowed[] = {
+    {"a: 1\n", "a", BH_EDIT_SET, NULL},
+    {"a: 1\n", "a", BH_EDIT_RENAME, NULL},
+    {"a: 1\n", "a", BH_EDIT_DUPLICATE, NULL},
+    {"a: 1\n", "a", BH_EDIT_REMOVE, "`a` is all there is"},
+    {"a: 1\n", "a", BH_EDIT_MOVE, "there is nothing else"},
+    {"a: 1\n", "a", BH_EDIT_INSERT, "`a` holds a single value"},
+    {"a: 1\n", "", BH_EDIT_INSERT, NULL},
+    {"a: 1\n", "", BH_EDIT_REMOVE, "the whole file"},
+    {"a: [1, 2]\n", "a", BH_EDIT_SET, NULL},
+    {"a: [1, 2]\n", "a", BH_EDIT_INSERT, NULL},
+    {"a: [1, 2]\n", "a.2", BH_EDIT_MOVE, NULL},
+    {"a: [1, 2]\n", "a.1", BH_EDIT_MOVE, NULL},
+    {"a: [1, 2]\n", "a.1", BH_EDIT_DUPLICATE, NULL},
+    {"a: [1, 2]\n", "a.1", BH_EDIT_RENAME, "`a.1` is an item"},
+    {"a:\n  b: 1\n", "a", BH_EDIT_SET, "`a` has parts"},
+    {"a:\nb: |\n  x\n", "a", BH_EDIT_SET, NULL},
+    {"a:\nb: |\n  x\n", "b", BH_EDIT_SET, NULL},
+    {"? a\n: 1\n? b\n: 2\n", "a", BH_EDIT_REMOVE, "`a` is laid out"},
+    {"? a\n: 1\n? b\n: 2\n", "a", BH_EDIT_SET, NULL},
+    {"a: [1, # c\n 2]\n", "a.1", BH_EDIT_REMOVE, "`a.1` is laid out"},
+};
+
+START_TEST(may_it_be_changed)
+{
+    bh_edit *edit = open_text(allowed[_i].text);
+    bh_diags *diags = bh_diags_new();
+    const bh_node *node = bh_document_find(bh_edit_document(edit), allowed[_i].path);
+    const bool may = bh_edit_allows(edit, allowed[_i].kind, node, diags);
+    ck_assert_msg(may == !allowed[_i].why, "row %d: %s", _i,
+                  may ? "" : bh_diags_at(diags, 0)->text);
+    if (!may)
+        ck_assert_int_eq(
+            strncmp(bh_diags_at(diags, 0)->text, allowed[_i].why, strlen(allowed[_i].why)), 0);
+    expect_bytes(edit, allowed[_i].text, "asked only");
+    ck_assert_uint_eq(bh_edit_version(edit), 0);
+    bh_diags_free(diags);
+    bh_edit_free(edit);
+}
+END_TEST
+
+START_TEST(what_the_field_shows)
+{
+    static const char *const rows_of_fields[][2] = {
+        {"q", "it's # x"}, {"f", "[1, {x: 2}]"}, {"n", "two\nlines\n"}, {"e", ""}};
+    bh_edit *edit =
+        open_text("q: 'it''s # x'\nf: [1, {x: 2}] # c\nn: |\n  two\n  lines\ne:\nb:\n  c: 1\n");
+    const bh_document *document = bh_edit_document(edit);
+    for (int i = 0; i < COUNT(rows_of_fields); i++) {
+        bh_text text = {0};
+        const bh_node *node = bh_document_find(document, rows_of_fields[i][0]);
+        ck_assert(bh_edit_field(edit, node, &text));
+        ck_assert_str_eq(text.bytes, rows_of_fields[i][1]);
+        bh_text_free(&text);
+    }
+    bh_text text = {0};
+    ck_assert(!bh_edit_field(edit, bh_document_find(document, "b"), &text));
+    bh_edit_free(edit);
+}
+END_TEST
+
+START_TEST(what_cannot_be_read_is_not_opened)
+{
+    bh_diags *diags = bh_diags_new();
+    ck_assert_ptr_null(bh_edit_open("a: &x 1\n", 8, "p.yaml", diags));
+    ck_assert_uint_eq(bh_diags_errors(diags), 1);
+    ck_assert_str_eq(bh_diags_at(diags, 0)->at.file, "p.yaml");
+    bh_diags_free(diags);
+    diags = bh_diags_new();
+    bh_edit *edit = bh_edit_open("a: Run #3\n", 10, "p.yaml", diags);
+    ck_assert_uint_eq(bh_diags_count(diags), 1); /* a warning */
+    ck_assert_uint_eq(bh_diags_count(bh_edit_said(edit)), 1);
+    ck_assert(bh_edit_set(edit, "a", "Run #4", diags));
+    ck_assert_uint_eq(bh_diags_count(bh_edit_said(edit)), 0); /* in quotes nothing is cut */
+    expect_bytes(edit, "a: \"Run #4\" #3\n", "a comment");
+    bh_edit_free(edit);
+    bh_diags_free(diags);
+}
+END_TEST
+
+/* Every node is found again by its path, whatever items are called. */
+START_TEST(paths_lead_back)
+{
+    static const char *const paths[][2] = {
+        {"a.1", "a.2"}, {"a.2", "a.2"}, {"a.x", "a.x"}, {"a.4", "a.4"}, {"a.5.b", "a.5.b"},
+        {"a.9", NULL},  {"a.", NULL},   {"b.c", NULL},  {"b", "b"},     {"", ""}};
+    bh_edit *edit = open_text(
+        "a: [{name: 2}, {name: 1}, {name: x}, {name: x}, {name: p.q, b: 1}]\nb: {d: 1}\n");
+    const bh_document *document = bh_edit_document(edit);
+    const bh_node *list = bh_document_find(document, "a");
+    for (size_t i = 0; i < list->count; i++) {
+        bh_text path = {0};
+        bh_trail_of(list->items[i], &path);
+        if (i > 1) /* 1 is named 2, and 2 is named 1: by name they are found */
+            ck_assert_ptr_eq(bh_document_find(document, path.bytes), list->items[i]);
+        bh_text_free(&path);
+    }
+    for (int i = 0; i < COUNT(paths); i++) {
+        const bh_node *node = bh_document_find(document, paths[i][0]);
+        ck_assert_msg((node != NULL) == (paths[i][1] != NULL), "%s", paths[i][0]);
+    }
+    bh_edit_free(edit);
+}
+END_TEST
+
+/* Long texts: the name in a message is cut, the path of a step is not. */
+START_TEST(long_names)
+{
+    bh_text text = {0};
+    for (int i = 0; i < 100; i++)
+        bh_text_append(&text, "name");
+    bh_text_append(&text, ": 1\nb: 2\n");
+    bh_edit *edit = open_text(text.bytes);
+    text.bytes[400] = '\0';
+    ck_assert(set(edit, text.bytes, "2"));
+    ck_assert_uint_lt(strlen(bh_edit_step_at(edit, 0)->text), 140);
+    ck_assert_uint_eq(strlen(bh_edit_step_at(edit, 0)->path), 400);
+    bh_edit_free(edit);
+    bh_text_free(&text);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("edit");
     tcase_add_loop_test(tests, a_change, 0, COUNT(rows));
+    tcase_add_test(tests, three_changes_among_comments);
+    tcase_add_test(tests, several_at_once_or_none);
+    tcase_add_test(tests, distance_to_what_is_saved);
+    tcase_add_test(tests, ranges_follow_the_text);
+    tcase_add_loop_test(tests, may_it_be_changed, 0, COUNT(allowed));
+    tcase_add_test(tests, what_the_field_shows);
+    tcase_add_test(tests, what_cannot_be_read_is_not_opened);
+    tcase_add_test(tests, paths_lead_back);
+    tcase_add_test(tests, long_names);
     return run_suite("document/edit", tests);
 }
