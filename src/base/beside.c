@@ -40,8 +40,9 @@ char *bh_real_path(const char *path)
     char *real = realpath(path, NULL);
     if (real || errno == ENOMEM)
         return real;
-    real = malloc(strlen(path) + 1);
-    return real ? strcpy(real, path) : NULL;
+    const size_t size = strlen(path) + 1;
+    real = malloc(size);
+    return real ? memcpy(real, path, size) : NULL;
 }
 
 /* --- writing --- */
@@ -79,15 +80,14 @@ static int open_beside(const char *path, mode_t mode, char *name)
 static bool left_behind(const char *entry, const char *name)
 {
     const size_t length = strlen(name);
-    long process = 0, number = 0;
-    char tilde = 0, end = 0;
+    char *end = NULL;
     if (entry[0] != '.' || strncmp(entry + 1, name, length) != 0 || entry[length + 1] != '.')
         return false;
-    if (sscanf(entry + length + 2, "%ld-%ld%c%c", &process, &number, &tilde, &end) !=
-            3 || /* NOLINT(cert-err34-c): a name, no number to count with */
-        tilde != '~')
+    const long process = strtol(entry + length + 2, &end, 10);
+    if (process <= 0 || *end != '-' || end[1 + strspn(end + 1, "0123456789")] != '~' ||
+        entry[strlen(entry) - 1] != '~')
         return false;
-    return process > 0 && kill((pid_t)process, 0) != 0 && errno == ESRCH;
+    return kill((pid_t)process, 0) != 0 && errno == ESRCH;
 }
 
 /* Takes away what an earlier program left beside `path` when it was killed in mid-save. */
@@ -198,9 +198,8 @@ bh_replace_result bh_replace(const char *path, const bh_replacing *what, struct 
     struct place p = {path, malloc(strlen(path) + NUMBERS), malloc(folder + 2)};
     bh_replace_result result = BH_REPLACE_NO_MEMORY;
     if (p.name && p.folder) {
-        (void)snprintf(p.folder, folder + 2, "%.*s", (int)folder, path);
-        if (folder == 0)
-            (void)strcpy(p.folder, ".");
+        (void)snprintf(p.folder, folder + 2, "%.*s", (int)(folder ? folder : 1),
+                       folder ? path : ".");
         result = replace_at(&p, what, made);
     }
     const int why = errno;

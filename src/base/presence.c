@@ -42,15 +42,19 @@ static bool write_mark(int file)
 static bh_other read_mark(int file)
 {
     bh_other other = {0};
-    char line[LINE], host[64];
-    long long since = 0;
+    char line[LINE], host[sizeof other.host];
+    char *end = NULL;
     const ssize_t got = pread(file, line, sizeof line - 1, 0);
     line[got > 0 ? got : 0] = '\0';
-    if (sscanf(line, "%ld %lld %63s", &other.process, &since, other.host) !=
-        3) /* NOLINT(cert-err34-c) */
+    other.process = strtol(line, &end, 10);
+    if (other.process <= 0 || *end != ' ')
         return (bh_other){0};
+    other.since = (time_t)strtoll(end, &end, 10);
+    if (*end != ' ')
+        return (bh_other){0};
+    end[1 + strcspn(end + 1, "\n")] = '\0';
+    (void)snprintf(other.host, sizeof other.host, "%.*s", (int)sizeof other.host - 1, end + 1);
     this_host(host, sizeof host);
-    other.since = (time_t)since;
     other.here = strcmp(host, other.host) == 0;
     return other;
 }
@@ -77,7 +81,8 @@ static enum held held_without_lock(const bh_other *other)
 static enum held lock_mark(int file, bool made, bh_other *other)
 {
     struct flock lock = {.l_type = F_WRLCK, .l_whence = SEEK_SET};
-    *other = made ? (bh_other){0} : read_mark(file);
+    const bh_other nobody = {0};
+    *other = made ? nobody : read_mark(file);
     if (fcntl(file, F_SETLK, &lock) == 0) /* so nobody of this host has it */
         return other->process > 0 && !other->here ? HELD_BY_OTHER : HELD_BY_US;
     if (errno == EACCES || errno == EAGAIN)

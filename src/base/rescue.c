@@ -1,6 +1,7 @@
 /* rescue.c - unsaved work beside the file it belongs to. */
 #include "beamhours/base/rescue.h"
 
+#include <ctype.h>
 #include <errno.h>
 #include <fcntl.h>
 #include <inttypes.h>
@@ -16,7 +17,7 @@
 #include "beamhours/base/file.h"
 #include "beamhours/base/stamp.h"
 
-enum { LAST_LINE = 160, LIMIT = 64 * 1024 * 1024, NAMES = 2 };
+enum { LIMIT = 64 * 1024 * 1024, NAMES = 2 };
 
 #define LAST_LINE_BEGINS "\n# beamhours: unsaved work, "
 
@@ -33,6 +34,7 @@ struct bh_rescue {
     char *fresh[NAMES]; /* where it is written; the second where a signal comes in between */
     _Atomic(struct ready *) now;
     size_t count;   /* how many were made ready */
+    size_t latest;  /* the number of the one to be rescued; 0: none */
     size_t written; /* the number of the one in the file; 0: none of ours */
     volatile sig_atomic_t busy;
 };
@@ -59,9 +61,7 @@ static bool name_all(bh_rescue *r, const char *real)
     r->folder = malloc(folder + 2);
     if (!r->path || !r->fresh[0] || !r->fresh[1] || !r->folder)
         return false;
-    (void)snprintf(r->folder, folder + 2, "%.*s", (int)folder, real);
-    if (folder == 0)
-        (void)strcpy(r->folder, ".");
+    (void)snprintf(r->folder, folder + 2, "%.*s", (int)(folder ? folder : 1), folder ? real : ".");
     return true;
 }
 
@@ -103,6 +103,7 @@ static void exchange(bh_rescue *rescue, struct ready *next)
     next->before = last;
     next->number = ++rescue->count;
     atomic_store(&rescue->now, next);
+    rescue->latest = next->number;
     if (last) {
         free_ready(last->before);
         last->before = NULL;
@@ -137,6 +138,7 @@ void bh_rescue_clear(bh_rescue *rescue)
 {
     struct ready *last = atomic_load(&rescue->now);
     atomic_store(&rescue->now, NULL);
+    rescue->latest = 0;
     free_ready(last);
 }
 
@@ -188,8 +190,7 @@ bool bh_rescue_write(bh_rescue *rescue)
 
 bool bh_rescue_pending(const bh_rescue *rescue)
 {
-    const struct ready *now = atomic_load(&((bh_rescue *)(uintptr_t)rescue)->now);
-    return now && now->number != rescue->written;
+    return rescue->latest > 0 && rescue->latest != rescue->written;
 }
 
 bh_code bh_rescue_discard(bh_rescue *rescue, bh_error *err)
@@ -206,21 +207,31 @@ bh_code bh_rescue_discard(bh_rescue *rescue, bh_error *err)
 
 /* --- finding --- */
 
+/* Reads "WORDS NUMBER" at `*at` and moves behind it; false where something else stands there. */
+static bool read_number(const char **at, const char *words, int base, uint64_t *number)
+{
+    char *end = NULL;
+    const size_t length = strlen(words);
+    if (strncmp(*at, words, length) != 0 || !isxdigit((unsigned char)(*at)[length]))
+        return false;
+    *number = strtoull(*at + length, &end, base);
+    *at = end;
+    return true;
+}
+
 /* Takes the last line off the content; false where it is not ours or does not fit. */
 static bool take_last_line(bh_text *content, uint64_t *base)
 {
-    char line[LAST_LINE];
-    size_t length = 0, at = content->length > 0 ? content->length - 1 : 0;
-    uint64_t hash = 0;
+    size_t at = content->length > 0 ? content->length - 1 : 0;
+    uint64_t length = 0, hash = 0;
     while (at > 0 && content->bytes[at - 1] != '\n')
         at--;
-    if (at == 0 || content->length - at >= sizeof line - 1 ||
-        content->bytes[content->length - 1] != '\n')
+    if (at == 0 || content->bytes[content->length - 1] != '\n')
         return false;
-    memcpy(line, content->bytes + at - 1, content->length - at + 1);
-    line[content->length - at + 1] = '\0';
-    if (sscanf(line, LAST_LINE_BEGINS "%zu bytes, %" SCNx64 ", begun from %" SCNx64, &length, &hash,
-               base) != 3) /* NOLINT(cert-err34-c): compared with what it is of below */
+    const char *line = content->bytes + at - 1;
+    if (!read_number(&line, LAST_LINE_BEGINS, 10, &length) ||
+        !read_number(&line, " bytes, ", 16, &hash) ||
+        !read_number(&line, ", begun from ", 16, base) || *line != '\n')
         return false;
     content->length = at - 1;
     content->bytes[at - 1] = '\0';

@@ -33,27 +33,28 @@ static int read_wanted(const bh_arguments *arguments, bh_question *q)
     return status;
 }
 
-static int ask(const bh_arguments *arguments, bh_input *in, bh_question *q)
+static int ask(const bh_arguments *arguments, const bh_input *in, const bh_question *asked)
 {
+    bh_question q = *asked;
     bh_change changes[BH_MOST_CHANGES];
     char *keys[BH_MOST_CHANGES] = {NULL};
     bh_answer answer;
     bh_error err = {.text = ""};
     bh_text out = {0};
     int status = bh_input_changes(arguments, changes, keys);
-    q->changes = changes;
-    q->change_count = (size_t)arguments->with_count;
-    q->bytes = in->bytes.bytes ? in->bytes.bytes : "";
-    q->length = in->bytes.length;
-    q->name = in->shown ? in->shown : in->name;
-    q->library = in->library;
-    const bh_code code = status ? BH_OK : bh_solve(q, &answer, &err);
+    q.changes = changes;
+    q.change_count = (size_t)arguments->with_count;
+    q.bytes = in->bytes.bytes ? in->bytes.bytes : "";
+    q.length = in->bytes.length;
+    q.name = in->shown ? in->shown : in->name;
+    q.library = in->library;
+    const bh_code code = status ? BH_OK : bh_solve(&q, &answer, &err);
     if (code == BH_EDOMAIN)
         status = bh_usage(arguments, err.text);
     else if (code)
         status = bh_complain(stderr, &err);
     if (!status) {
-        bh_answer_say(q, &answer, &out);
+        bh_answer_say(&q, &answer, &out);
         bh_text_append(&out, "\n");
         status = bh_output(&out, NULL);
     }

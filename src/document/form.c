@@ -199,18 +199,16 @@ static void write_lines(const struct block *b, const char *value, bh_text *writt
     }
 }
 
-bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bh_cut *cut,
-                   bh_text *written, bh_text *value)
+bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bh_block *block)
 {
     const struct block b = block_of(whole, node);
     const char *first = text + strspn(text, "\n");
     if ((*first == ' ' || *first == '\t') && !b.given)
         return false; /* its blanks would count as indentation */
-    end_value(&b, text, value);
-    if (value->failed)
-        return true;
-    const size_t heading = bh_line_end(whole, node->from);
-    write_lines(&b, value->bytes, written);
-    *cut = (bh_cut){.from = heading, .to = b.end};
+    end_value(&b, text, &block->value);
+    block->from = bh_line_end(whole, node->from);
+    block->to = b.end;
+    if (!block->value.failed)
+        write_lines(&b, block->value.bytes, &block->written);
     return true;
 }

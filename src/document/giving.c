@@ -216,24 +216,24 @@ static bool try_forms(struct giving *g, const bh_form *first, const char *key)
 
 static bool give_block(struct giving *g)
 {
-    bh_cut cut = {0};
-    bh_text written = {0}, value = {0}, proposed = {0};
+    bh_block block = {0};
+    bh_text proposed = {0};
     bh_splice *s = g->s;
-    bool fits = bh_form_block(s->text, s->target.node, g->text, &cut, &written, &value);
-    s->lost = s->lost || written.failed || value.failed;
+    bool fits = bh_form_block(s->text, s->target.node, g->text, &block);
+    s->lost = s->lost || block.written.failed || block.value.failed;
     if (fits && !s->lost) {
-        g->scalar = (bh_node){.kind = BH_NODE_SCALAR, .text = value.bytes, .length = value.length};
+        g->scalar = (bh_node){
+            .kind = BH_NODE_SCALAR, .text = block.value.bytes, .length = block.value.length};
         s->meant.value = &g->scalar;
-        cut.with = written.bytes;
-        cut.length = written.length;
+        const bh_cut cut = {block.from, block.to, block.written.bytes, block.written.length};
         bh_cuts_make(s->text, &cut, 1, &proposed);
         fits = bh_splice_settle(s, &proposed);
     }
     if (!fits && !s->lost)
         bh_diags_add(s->diags, BH_SEVERITY_ERROR, s->target.node->at,
                      bh_target_call(s->target.node).text, BH_REFUSE_BLOCK);
-    bh_text_free(&written);
-    bh_text_free(&value);
+    bh_text_free(&block.written);
+    bh_text_free(&block.value);
     return fits && !s->lost;
 }
 

@@ -28,7 +28,8 @@ bh_edit_range bh_bytes_differ(bh_bytes before, bh_bytes after)
     size_t head = 0, tail = 0;
     while (head < most && before.bytes[head] == after.bytes[head])
         head++;
-    while (tail < most - head &&
+    const size_t left = most - head;
+    while (tail < left &&
            before.bytes[before.length - 1 - tail] == after.bytes[after.length - 1 - tail])
         tail++;
     return (bh_edit_range){head, after.length - tail};

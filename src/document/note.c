@@ -40,10 +40,10 @@ static void append_short(const bh_document *document, const bh_node *node, bh_te
 static void append_name(const bh_node *node, bh_text *note)
 {
     bh_text path = {0};
-    char out[2 * SHORT];
     bh_trail_of(node, &path);
     note->failed = note->failed || path.failed;
     if (!path.failed) {
+        char out[2 * SHORT];
         bh_scalar_short(path.length ? path.bytes : "plan", out, sizeof out);
         bh_text_append(note, out);
     }

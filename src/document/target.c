@@ -63,7 +63,7 @@ static bool step(struct search *s, const bh_node *node, const char *part, bh_tar
 
 static bool well_formed(const struct search *s)
 {
-    const char *p = s->change->path;
+    const char *p = s->at;
     const size_t length = strlen(p);
     if (length > 0 && (p[0] == '.' || p[length - 1] == '.' || strstr(p, "..")))
         return REFUSE(s, bh_document_root(s->document), BH_SAY_PATH_PART, p);

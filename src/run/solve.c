@@ -122,31 +122,42 @@ static void close_in(bh_search *s, struct point a, struct point b)
     gsl_root_fsolver_free(solver);
 }
 
-/* Three points on one side, the middle one nearest to what is wanted: does the output reach it in
- * between?  Golden section, until it is passed. */
-static void look_at_turn(bh_search *s, struct point a, struct point b, struct point c)
+/* Three points on one side of what is wanted, the middle one nearest to it. */
+struct turn {
+    struct point a, b, c;
+};
+
+/* Looks once between them, by golden section.  False where the search for a turn is over. */
+static bool narrow(bh_search *s, struct turn *t)
 {
     const double golden = 0.5 * (3 - sqrt(5.0));
-    for (int i = 0; i < TURN && !s->code; i++) {
-        const bool right = c.place - b.place > b.place - a.place;
-        const double step = golden * (right ? c.place - b.place : a.place - b.place);
-        const struct point x = point_at(s, b.place + step);
-        if (!isfinite(x.miss))
-            return;
-        if (x.miss * a.miss <= 0) {
-            close_in(s, right ? b : a, x);
-            close_in(s, x, right ? c : b);
-            return;
-        }
-        if (fabs(x.miss) < fabs(b.miss)) {
-            *(right ? &a : &c) = b;
-            b = x;
-        } else {
-            *(right ? &c : &a) = x;
-        }
+    const bool right = t->c.place - t->b.place > t->b.place - t->a.place;
+    struct point *far = right ? &t->c : &t->a, *near = right ? &t->a : &t->c;
+    const struct point x = point_at(s, t->b.place + golden * (far->place - t->b.place));
+    if (!isfinite(x.miss))
+        return false;
+    if (x.miss * t->b.miss <= 0) { /* it passes what is wanted, and comes back */
+        close_in(s, right ? t->b : x, right ? x : t->b);
+        close_in(s, right ? x : *far, right ? *far : x);
+        return false;
     }
-    if (fabs(b.miss) < close_enough)
-        add(s, b.place);
+    if (fabs(x.miss) < fabs(t->b.miss)) {
+        *near = t->b;
+        t->b = x;
+    } else {
+        *far = x;
+    }
+    return true;
+}
+
+static void look_at_turn(bh_search *s, const struct point p[3])
+{
+    struct turn t = {p[0], p[1], p[2]};
+    int i = 0;
+    while (i < TURN && !s->code && narrow(s, &t))
+        i++;
+    if (i == TURN && fabs(t.b.miss) < close_enough)
+        add(s, t.b.place);
 }
 
 /* --- the search --- */
@@ -168,7 +179,7 @@ static void search_points(bh_search *s, const struct point *p, size_t count)
         else if (i > 0 && p[i].miss * p[i - 1].miss < 0)
             close_in(s, p[i - 1], p[i]);
         else if (i > 0 && i + 1 < count && turns(p + i - 1))
-            look_at_turn(s, p[i - 1], p[i], p[i + 1]);
+            look_at_turn(s, p + i - 1);
     }
 }
 

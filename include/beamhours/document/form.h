@@ -25,13 +25,16 @@ bh_form bh_form_choose(const char *text, bool flow);
 /* Appends the text in a form that fits. */
 void bh_form_append(bh_form form, const char *text, bh_text *into);
 
-/*
- * Writes `text` (lines ended by LF) in place of `node`, a | or > text of `whole`, under the same
- * heading and with the same indentation: the bytes to replace are cut->from to cut->to, those to
- * stand there are appended to `written`, and what will be read from them to `value`.
- * False where the heading cannot hold the text.
- */
-bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bh_cut *cut,
-                   bh_text *written, bh_text *value);
+/* A text under | or > as it is to be. */
+typedef struct {
+    size_t from, to; /* [bytes] to be replaced */
+    bh_text written; /* what is to stand there */
+    bh_text value;   /* what will be read from it */
+} bh_block;
+
+/* Writes `text` (lines ended by LF) in place of `node`, a | or > text of `whole`, under the same
+ * heading and with the same indentation, into `block`, whose texts the caller frees.
+ * False where the heading cannot hold the text. */
+bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bh_block *block);
 
 #endif
