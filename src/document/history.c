@@ -22,17 +22,27 @@ void bh_history_free(bh_history *history)
     *history = (bh_history){0};
 }
 
+static size_t common_head(bh_bytes a, bh_bytes b, size_t most)
+{
+    size_t n = 0;
+    while (n < most && a.bytes[n] == b.bytes[n])
+        n++;
+    return n;
+}
+
+static size_t common_tail(bh_bytes a, bh_bytes b, size_t most)
+{
+    size_t n = 0;
+    while (n < most && a.bytes[a.length - 1 - n] == b.bytes[b.length - 1 - n])
+        n++;
+    return n;
+}
+
 bh_edit_range bh_bytes_differ(bh_bytes before, bh_bytes after)
 {
     const size_t most = before.length < after.length ? before.length : after.length;
-    size_t head = 0, tail = 0;
-    while (head < most && before.bytes[head] == after.bytes[head])
-        head++;
-    const size_t left = most - head;
-    while (tail < left &&
-           before.bytes[before.length - 1 - tail] == after.bytes[after.length - 1 - tail])
-        tail++;
-    return (bh_edit_range){head, after.length - tail};
+    const size_t head = common_head(before, after, most);
+    return (bh_edit_range){head, after.length - common_tail(before, after, most - head)};
 }
 
 static int lines_in(bh_bytes text, size_t from, size_t to)
