@@ -10,6 +10,8 @@ void bh_reply_free(bh_reply *answer)
         return;
     bh_explanation_free(answer->explanation);
     bh_curve_free(answer->curve);
+    free(answer->solved);
+    bh_text_free(&answer->sentence);
     bh_table_free(answer->table);
     bh_reading_of_leave(answer->of);
     free(answer);
@@ -20,6 +22,7 @@ void bh_worker_drop_question(bh_own_query *question)
     free(question->bytes);
     free(question->setting);
     free(question->arm);
+    free(question->by);
     *question = (bh_own_query){0};
 }
 
@@ -36,6 +39,44 @@ static void explain(bh_worker *w, const bh_own_query *q, bh_reply *a)
         a->explanation = bh_explain(a->table, q->setting, q->arm, q->question.bin, &a->why);
 }
 
+/* Given up when the program ends, or when another value is wanted. */
+static bool overtaken(void *asker)
+{
+    bh_worker *w = asker;
+    if (atomic_load(&w->stop))
+        return true;
+    (void)pthread_mutex_lock(&w->lock);
+    const bool newer = w->questions[BH_ASK_SOLVE].number != 0;
+    (void)pthread_mutex_unlock(&w->lock);
+    return newer;
+}
+
+static void solve(bh_worker *w, const bh_own_query *q, bh_reply *a)
+{
+    const bh_question question = {.bytes = q->bytes,
+                                  .length = q->question.length,
+                                  .name = w->name,
+                                  .library = w->libraries[1],
+                                  .setting = q->setting,
+                                  .arm = q->arm,
+                                  .column = q->question.column,
+                                  .wanted = q->question.wanted,
+                                  .by = q->by,
+                                  .cancelled = overtaken,
+                                  .asker = w};
+    a->solved = calloc(1, sizeof *a->solved);
+    if (!a->solved) {
+        bh_fail(&a->why, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+        return;
+    }
+    if (!bh_solve(&question, a->solved, &a->why)) {
+        bh_answer_say(&question, a->solved, &a->sentence);
+        return;
+    }
+    free(a->solved);
+    a->solved = NULL;
+}
+
 static void answer(bh_worker *w, const bh_own_query *q)
 {
     bh_reply *a = calloc(1, sizeof *a);
@@ -48,6 +89,8 @@ static void answer(bh_worker *w, const bh_own_query *q)
         bh_fail(&a->why, BH_EPLAN, "the plan has errors: they come first");
     else if (a->kind == BH_ASK_EXPLAIN)
         explain(w, q, a);
+    else if (a->kind == BH_ASK_SOLVE)
+        solve(w, q, a);
     else
         a->curve = bh_curve_new(a->of->plan,
                                 &(bh_curve_request){.setting = q->setting, .arm = q->arm}, &a->why);
@@ -98,7 +141,8 @@ size_t bh_worker_ask(bh_worker *worker, const bh_query *question)
     bh_own_query own = {.question = *question,
                         .bytes = malloc(question->length + 1),
                         .setting = question->setting ? strdup(question->setting) : NULL,
-                        .arm = question->arm ? strdup(question->arm) : NULL};
+                        .arm = question->arm ? strdup(question->arm) : NULL,
+                        .by = question->by ? strdup(question->by) : NULL};
     if (!own.bytes) {
         bh_worker_drop_question(&own);
         return 0;

@@ -225,12 +225,29 @@ static void ask_about_row(bh_desk *d, bh_ask_kind kind)
         m->curve_asked = number;
 }
 
+static void ask_to_solve(bh_desk *d)
+{
+    bh_solving *s = &d->model.solving;
+    bh_query q = {.kind = BH_ASK_SOLVE,
+                  .setting = s->setting,
+                  .arm = s->arm[0] ? s->arm : NULL,
+                  .column = s->output,
+                  .wanted = s->value,
+                  .by = bh_solve_input_name((bh_solve_input)s->by)};
+    q.bytes = bh_model_bytes(&d->model, &q.length);
+    s->due = false;
+    s->asked = bh_worker_ask(d->worker, &q);
+    s->waiting = s->asked != 0;
+}
+
 double bh_desk_tend(bh_desk *desk, double now)
 {
     bh_model *m = &desk->model;
     double wait = bh_keeper_tend(&desk->keeper, m, now);
     if (m->job_due && m->edit && desk->worker)
         begin_job(desk);
+    if (m->over == BH_OVER_SOLVE && m->solving.due)
+        ask_to_solve(desk);
     if (m->explain_due && bh_table_here(m)) {
         m->explain_due = false;
         ask_about_row(desk, BH_ASK_EXPLAIN);
@@ -281,7 +298,7 @@ bool bh_desk_quiet(bh_desk *desk)
 {
     const bh_model *m = &desk->model;
     const bool curve = m->curve_due && bh_arrange(m).curve >= 0 && bh_table_here(m);
-    return (!m->edit || bh_model_current(m)) && !m->explain_due && !curve &&
+    return (!m->edit || bh_model_current(m)) && !m->explain_due && !curve && !m->solving.due &&
            !(desk->worker && bh_worker_busy(desk->worker));
 }
 

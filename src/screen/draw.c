@@ -137,8 +137,10 @@ static void draw_typed(const bh_model *model, const bh_arrangement *places, bh_c
 
 static void draw_messages(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
-    const bool typing = model->over == BH_OVER_FIELD ||
-                        (model->over == BH_OVER_CHOOSE && model->chooser.kind == BH_CHOOSE_VALUE);
+    const bool solving = model->over == BH_OVER_SOLVE && (model->trying || model->why[0]);
+    const bool choosing =
+        model->over == BH_OVER_CHOOSE && model->chooser.kind == BH_CHOOSE_VALUE;
+    const bool typing = model->over == BH_OVER_FIELD || solving || choosing;
     if (model->over == BH_OVER_FIND)
         draw_prompt(model, places, canvas, "look for");
     if (model->over == BH_OVER_NAME)
@@ -214,6 +216,8 @@ static const char *hint(const bh_model *model)
         return model->chooser.kind == BH_CHOOSE_VALUE
                    ? "type to narrow   Enter take   Escape leave   Tab type it"
                    : "type to narrow   Enter take   Escape leave";
+    case BH_OVER_SOLVE:
+        return "Up Down lines   Left Right choose   Enter take   Escape leave";
     case BH_OVER_ASK:
         return "Up Down, Enter, or the letter";
     case BH_OVER_FIND:

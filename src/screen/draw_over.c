@@ -147,6 +147,8 @@ void bh_draw_over(const bh_model *model, const bh_arrangement *places, bh_canvas
         draw_sheet(model, places, canvas);
     if (model->over == BH_OVER_CHOOSE)
         draw_chooser(model, places, canvas);
+    if (model->over == BH_OVER_SOLVE)
+        bh_draw_solving(model, places, canvas);
     if (model->over == BH_OVER_ASK)
         draw_ask(model, places, canvas);
 }

@@ -151,8 +151,10 @@ void bh_model_answer(bh_model *model, bh_reply *answer)
         model->curve = answer;
         return;
     }
-    if (answer->number == model->explain_asked)
+    if (answer->kind == BH_ASK_EXPLAIN && answer->number == model->explain_asked)
         bh_sheet_explain(model, answer);
+    if (answer->kind == BH_ASK_SOLVE && answer->number == model->solving.asked)
+        bh_solving_answered(model, answer);
     bh_reply_free(answer);
 }
 
@@ -232,6 +234,10 @@ static void base_press(bh_model *model, const bh_press *press)
         bh_value_begin(model, press);
         return;
     }
+    if (model->pane == BH_PANE_TABLE && begins_value(press) && bh_table_here(model)) {
+        bh_solving_begin(model, press);
+        return;
+    }
     if (bh_action_press(model, press))
         return;
     if (model->pane == BH_PANE_PLAN)
@@ -288,6 +294,9 @@ void bh_model_press(bh_model *model, const bh_press *press)
         break;
     case BH_OVER_CHOOSE:
         (void)bh_choose_press(model, press);
+        break;
+    case BH_OVER_SOLVE:
+        (void)bh_solving_press(model, press);
         break;
     case BH_OVER_ASK:
         (void)bh_ask_press(model, press);

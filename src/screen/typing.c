@@ -3,6 +3,7 @@
 #include <string.h>
 
 #include "beamhours/document/trail.h"
+#include "beamhours/plan/key_list.h"
 #include "beamhours/screen/model.h"
 
 static void copy(char *to, size_t size, const char *from)
@@ -47,20 +48,58 @@ static void stop_trying(bh_model *model)
     bh_table_refresh(model);
 }
 
-static bh_edit_change change_to(const bh_model *model, const char *text)
+/* The change that is typed, with what it takes the place of. */
+enum { MOST_PLACES = 8 };
+struct typed {
+    bh_edit_change changes[MOST_PLACES];
+    char paths[MOST_PLACES][640];
+    size_t count;
+};
+
+/* A key that is new here goes in the place of another one of which there may only be one: an angle
+ * for a q2. */
+static void replace_others(const bh_model *model, struct typed *t)
 {
-    return (bh_edit_change){
-        .kind = BH_EDIT_SET, .node = model->field_node, .path = model->field_path, .text = text};
+    bh_plan_key key;
+    const char *dot = strrchr(model->field_path, '.');
+    const int parent = dot ? (int)(dot - model->field_path) : 0;
+    const bh_document *document = bh_edit_document(model->edit);
+    if (bh_document_find(document, model->field_path) ||
+        !bh_plan_key_find(model->field_path, &key, NULL))
+        return;
+    const char *word = strstr(key.group, " one of ");
+    for (word = word ? word + 8 : ""; *word && t->count < MOST_PLACES;) {
+        const size_t n = strcspn(word, " ");
+        char *path = t->paths[t->count];
+        (void)snprintf(path, sizeof *t->paths, "%.*s%s%.*s", parent, model->field_path,
+                       dot ? "." : "", (int)n, word);
+        if (bh_document_find(document, path))
+            t->changes[t->count++] = (bh_edit_change){.kind = BH_EDIT_REMOVE, .path = path};
+        word += n;
+        word += strspn(word, " |");
+    }
+}
+
+static void type_change(const bh_model *model, const char *text, struct typed *t)
+{
+    t->changes[0] = (bh_edit_change){.kind = BH_EDIT_SET,
+                                     .node = model->field_node,
+                                     .path = model->field_path,
+                                     .text = text};
+    t->count = 1;
+    if (!model->field_node)
+        replace_others(model, t);
 }
 
 void bh_value_attempt(bh_model *model, const char *text)
 {
     bh_diags *diags = bh_diags_new();
     bh_text trial = {0};
-    const bh_edit_change change = change_to(model, text);
+    struct typed typed;
     size_t length = 0;
+    type_change(model, text, &typed);
     const char *bytes = bh_edit_bytes(model->edit, &length);
-    const bool can = diags && bh_edit_try(model->edit, &change, 1, &trial, diags);
+    const bool can = diags && bh_edit_try(model->edit, typed.changes, typed.count, &trial, diags);
     copy(model->why, sizeof model->why, "");
     if (!can && diags)
         first_error(diags, model->why, sizeof model->why);
@@ -167,8 +206,9 @@ bool bh_value_keep(bh_model *model, const char *text)
         return true;
     }
     bh_diags *diags = bh_diags_new();
-    const bh_edit_change change = change_to(model, text);
-    const bool done = diags && bh_edit_apply(model->edit, &change, 1, diags);
+    struct typed typed;
+    type_change(model, text, &typed);
+    const bool done = diags && bh_edit_apply(model->edit, typed.changes, typed.count, diags);
     if (!done && diags)
         first_error(diags, model->why, sizeof model->why);
     bh_diags_free(diags);

@@ -20,7 +20,7 @@ typedef struct {
 typedef struct {
     size_t number; /* 0: none waits */
     bh_query question;
-    char *bytes, *setting, *arm;
+    char *bytes, *setting, *arm, *by;
 } bh_own_query;
 
 enum { BH_MOST_ANSWERS = 16 };

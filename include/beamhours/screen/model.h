@@ -81,6 +81,7 @@ typedef enum {
     BH_OVER_SHEET,  /* a text to read */
     BH_OVER_CHOOSE, /* a list to choose from */
     BH_OVER_ASK,    /* a question */
+    BH_OVER_SOLVE,  /* what it would take */
     BH_OVER_FIND,   /* a word is looked for */
     BH_OVER_NAME    /* a file name is typed */
 } bh_over;
@@ -125,6 +126,21 @@ typedef struct {
     size_t shown_count, at, top;
     bh_field typed;
 } bh_chooser;
+
+/* What would it take: an output, its wanted value, the input that may move. */
+typedef struct {
+    char setting[64], arm[64];
+    int line;           /* in focus: output, wanted, input, then the solutions */
+    bh_column_id output;
+    int by;             /* bh_solve_input */
+    bh_field wanted;
+    bool due, waiting;  /* to be asked; asked */
+    size_t asked;       /* number of the question */
+    double value;       /* [1] wanted, in the unit of the output's key */
+    bh_answer answer;   /* of no use with a count of 0 */
+    char said[512];     /* what came of it, or why nothing did */
+    bool bad;
+} bh_solving;
 
 /* Everything the user can be asked; the answers are in asks.c. */
 typedef enum {
@@ -191,6 +207,7 @@ typedef struct {
 
     bh_sheet sheet;
     bh_chooser chooser;
+    bh_solving solving;
     bh_question_kind question;
     char question_text[3][240];
     int answer; /* in focus */
@@ -317,6 +334,11 @@ void bh_choose_plan(bh_model *model);
 void bh_choose_close(bh_chooser *chooser);
 bool bh_choose_press(bh_model *model, const bh_press *press);
 
+/* --- solving.c --- */
+void bh_solving_begin(bh_model *model, const bh_press *typed);
+bool bh_solving_press(bh_model *model, const bh_press *press);
+void bh_solving_answered(bh_model *model, const bh_reply *reply);
+
 /* --- asks.c --- */
 void bh_ask(bh_model *model, bh_question_kind kind);
 bool bh_ask_press(bh_model *model, const bh_press *press);
@@ -365,6 +387,7 @@ void bh_draw_plan(const bh_model *model, const bh_arrangement *places, bh_canvas
 void bh_draw_table(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
 void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
 void bh_draw_over(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
+void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
 void bh_draw_field(bh_canvas *canvas, bh_spot spot, const bh_field *field);
 
 #endif

@@ -7,6 +7,7 @@
 
 #include "beamhours/run/curve.h"
 #include "beamhours/run/explain.h"
+#include "beamhours/run/solve.h"
 #include "beamhours/screen/outcome.h"
 
 /* Two threads: one for the table, abandoned as soon as a newer text is there; one for questions
@@ -43,7 +44,7 @@ bool bh_worker_busy(bh_worker *worker);
 /* Settings evaluated so far, not taken from before. */
 size_t bh_worker_evaluated(bh_worker *worker);
 
-typedef enum { BH_ASK_EXPLAIN, BH_ASK_CURVE, BH_ASK_KINDS } bh_ask_kind;
+typedef enum { BH_ASK_EXPLAIN, BH_ASK_SOLVE, BH_ASK_CURVE, BH_ASK_KINDS } bh_ask_kind;
 
 /* A question on the text `bytes`.  Texts are copied. */
 typedef struct {
@@ -52,6 +53,9 @@ typedef struct {
     size_t length; /* [bytes] */
     const char *setting, *arm;
     int bin; /* explain */
+    bh_column_id column; /* solve: which output */
+    double wanted;       /* [1] in the unit of the column's key */
+    const char *by;      /* the name of an input */
 } bh_query;
 
 /* What came of it.  Belongs to who took it. */
@@ -62,6 +66,8 @@ typedef struct {
     bh_table *table;
     bh_explanation *explanation;
     bh_curve *curve;
+    bh_answer *solved;
+    bh_text sentence; /* what came of it */
     bh_error why; /* where there is none */
 } bh_reply;
 
