@@ -92,7 +92,7 @@ static const bh_action actions[] = {
     {"a", "add", "add a key, a setting, a layer, an arm", PLAN, bh_change_add},
     {"d", "duplicate", "the same setting, layer or arm again, behind it", PLAN, bh_change_double},
     {"r", "remove", "take the line, or the whole item, out of the plan", PLAN, bh_change_remove},
-    {"w", "what would it take", "a wanted value of this column: what input gives it", TABLE, solve},
+    {"w", "what it takes", "a wanted value of this column: what input gives it", TABLE, solve},
     {"e", "explain", "where each number of the row comes from", TABLE, explain},
     {"o", "order", "order the rows by this column: rising, falling, as in the plan", TABLE,
      bh_table_order},

@@ -138,8 +138,7 @@ static void draw_typed(const bh_model *model, const bh_arrangement *places, bh_c
 static void draw_messages(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
     const bool solving = model->over == BH_OVER_SOLVE && (model->trying || model->why[0]);
-    const bool choosing =
-        model->over == BH_OVER_CHOOSE && model->chooser.kind == BH_CHOOSE_VALUE;
+    const bool choosing = model->over == BH_OVER_CHOOSE && model->chooser.kind == BH_CHOOSE_VALUE;
     const bool typing = model->over == BH_OVER_FIELD || solving || choosing;
     if (model->over == BH_OVER_FIND)
         draw_prompt(model, places, canvas, "look for");

@@ -103,7 +103,8 @@ void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_can
         bh_canvas_clear(canvas, (bh_spot){places->body + r, 0, columns});
     (void)bh_canvas_put(canvas, (bh_spot){p.row++, 0, columns}, BH_LOOK_TITLE,
                         "WHAT WOULD IT TAKE");
-    (void)snprintf(text, sizeof text, "%.60s%s%.60s", s->setting, s->arm[0] ? ", arm " : "", s->arm);
+    (void)snprintf(text, sizeof text, "%.60s%s%.60s", s->setting, s->arm[0] ? ", arm " : "",
+                   s->arm);
     (void)bh_canvas_put(canvas, (bh_spot){p.row, 1, columns - 1}, BH_LOOK_PLAIN, text);
     p.row += 2;
     (void)snprintf(text, sizeof text, "%s %s", column->heading,

@@ -141,8 +141,7 @@ static void take(bh_model *model)
         return;
     }
     char said[200];
-    (void)snprintf(said, sizeof said, "%.120s: %.60s", s->answer.path,
-                   s->answer.solutions[i].text);
+    (void)snprintf(said, sizeof said, "%.120s: %.60s", s->answer.path, s->answer.solutions[i].text);
     (void)snprintf(model->field_path, sizeof model->field_path, "%s", s->answer.path);
     model->field_node = NULL;
     if (!bh_value_keep(model, s->answer.solutions[i].text)) {

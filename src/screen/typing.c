@@ -82,10 +82,8 @@ static void replace_others(const bh_model *model, struct typed *t)
 
 static void type_change(const bh_model *model, const char *text, struct typed *t)
 {
-    t->changes[0] = (bh_edit_change){.kind = BH_EDIT_SET,
-                                     .node = model->field_node,
-                                     .path = model->field_path,
-                                     .text = text};
+    t->changes[0] = (bh_edit_change){
+        .kind = BH_EDIT_SET, .node = model->field_node, .path = model->field_path, .text = text};
     t->count = 1;
     if (!model->field_node)
         replace_others(model, t);

@@ -180,8 +180,9 @@ END_TEST
 START_TEST(orders_and_pins)
 {
     tty t;
-    char hours[32], was[32];
+    char before[32], hours[32], was[32];
     begin(&t);
+    cell_of(&t, "low-1 ", HOURS, before);
     tty_type(&t, "<Tab><Right><Right><Right>oo");
     tty_wait(&t, "rows by sigma, falling");
     tty_wait_row(&t, 4, "low-3");
@@ -192,9 +193,10 @@ START_TEST(orders_and_pins)
     tty_type(&t, "4 uA<Enter>");
     tty_wait(&t, "against the pin");
     tty_type(&t, "<Tab><Right><Right>"); /* hours */
-    tty_wait_row(&t, 2, "pin");
+    tty_wait(&t, before); /* the hours of the pin */
     cell_of(&t, "low-1 ", HOURS, hours);
     cell_of(&t, "low-1 ", WAS, was);
+    ck_assert_str_eq(was, before);
     ck_assert_double_lt(atof(hours), 0.7 * atof(was));
     tty_type(&t, "p");
     tty_wait(&t, "the pin is off");
@@ -366,6 +368,28 @@ START_TEST(mouse)
 }
 END_TEST
 
+START_TEST(what_it_would_take)
+{
+    tty t;
+    begin(&t);
+    tty_type(&t, "<Tab>w");
+    tty_wait(&t, "WHAT WOULD IT TAKE");
+    tty_type(&t, "0.3 h<Down><Right>");
+    tty_wait(&t, "< current >");
+    tty_wait(&t, "Enter takes it");
+    tty_wait(&t, "0.3000 ");
+    tty_type(&t, "<Escape>");
+    tty_wait_gone(&t, "WHAT WOULD");
+    tty_wait_row(&t, 0, "saved");
+    tty_type(&t, "0.5");
+    tty_wait(&t, "Enter takes it");
+    tty_type(&t, "<Enter>");
+    tty_wait(&t, "taken: settings.low-1.");
+    tty_wait_row(&t, 0, "1 unsaved");
+    leave_unsaved(&t);
+}
+END_TEST
+
 START_TEST(begins_without_a_plan)
 {
     tty t;
@@ -398,6 +422,7 @@ int main(void)
     tcase_add_test(tests, plain_letters);
     tcase_add_test(tests, no_colours);
     tcase_add_test(tests, mouse);
+    tcase_add_test(tests, what_it_would_take);
     tcase_add_test(tests, begins_without_a_plan);
     return run_suite("terminal", tests);
 }

@@ -130,15 +130,15 @@ typedef struct {
 /* What would it take: an output, its wanted value, the input that may move. */
 typedef struct {
     char setting[64], arm[64];
-    int line;           /* in focus: output, wanted, input, then the solutions */
+    int line; /* in focus: output, wanted, input, then the solutions */
     bh_column_id output;
-    int by;             /* bh_solve_input */
+    int by; /* bh_solve_input */
     bh_field wanted;
-    bool due, waiting;  /* to be asked; asked */
-    size_t asked;       /* number of the question */
-    double value;       /* [1] wanted, in the unit of the output's key */
-    bh_answer answer;   /* of no use with a count of 0 */
-    char said[512];     /* what came of it, or why nothing did */
+    bool due, waiting; /* to be asked; asked */
+    size_t asked;      /* number of the question */
+    double value;      /* [1] wanted, in the unit of the output's key */
+    bh_answer answer;  /* of no use with a count of 0 */
+    char said[512];    /* what came of it, or why nothing did */
     bool bad;
 } bh_solving;
 

@@ -52,7 +52,7 @@ typedef struct {
     const char *bytes;
     size_t length; /* [bytes] */
     const char *setting, *arm;
-    int bin; /* explain */
+    int bin;             /* explain */
     bh_column_id column; /* solve: which output */
     double wanted;       /* [1] in the unit of the column's key */
     const char *by;      /* the name of an input */
@@ -68,7 +68,7 @@ typedef struct {
     bh_curve *curve;
     bh_answer *solved;
     bh_text sentence; /* what came of it */
-    bh_error why; /* where there is none */
+    bh_error why;     /* where there is none */
 } bh_reply;
 
 /* Asks; a question of the same kind that waits is replaced.  Returns its number, or 0. */
