@@ -126,7 +126,10 @@ static int draw_state(const bh_model *model, bh_spot spot, bh_canvas *canvas)
         (void)snprintf(text, sizeof text, " computing %zu of %zu", o->unknown, o->setting_count);
     else if (!bh_model_current(model) && model->edit)
         (void)snprintf(text, sizeof text, " computing");
-    if (model->trying && !text[0]) {
+    const bool unread = model->trying && o && !o->of->plan;
+    if (unread) {
+        (void)snprintf(text, sizeof text, " as it was");
+    } else if (model->trying && !text[0]) {
         (void)snprintf(text, sizeof text, " PROVISIONAL");
         look = BH_LOOK_TRIAL;
     } else if (model->pin && !text[0]) {

@@ -25,9 +25,8 @@ static void forget(bh_solving *s)
     s->answer.count = 0;
     s->said[0] = '\0';
     s->bad = false;
-    s->waiting = false;
+    s->waiting = s->due = s->enter = false;
     s->asked = 0;
-    s->due = false;
 }
 
 /* What is typed is wanted: asks, or says why it cannot. */
@@ -82,24 +81,6 @@ static void attempt(bh_model *model)
     bh_value_attempt(model, s->answer.solutions[i].text);
 }
 
-void bh_solving_answered(bh_model *model, const bh_reply *reply)
-{
-    bh_solving *s = &model->solving;
-    if (model->over != BH_OVER_SOLVE)
-        return;
-    s->waiting = false;
-    s->bad = !reply->solved;
-    (void)snprintf(s->said, sizeof s->said, "%.500s",
-                   reply->solved && reply->sentence.bytes ? reply->sentence.bytes
-                                                          : reply->why.text);
-    if (!reply->solved)
-        return;
-    s->answer = *reply->solved;
-    if (s->answer.count > BH_SOLVE_MOST)
-        s->answer.count = BH_SOLVE_MOST;
-    attempt(model);
-}
-
 static void turn(bh_model *model, int by)
 {
     bh_solving *s = &model->solving;
@@ -136,7 +117,8 @@ static void take(bh_model *model)
     bh_solving *s = &model->solving;
     const size_t i = s->line >= SOLUTIONS ? (size_t)(s->line - SOLUTIONS) : 0;
     if (i >= s->answer.count) {
-        if (!s->waiting && !s->said[0])
+        s->enter = s->waiting || s->due;
+        if (!s->enter && !s->said[0])
             (void)snprintf(s->said, sizeof s->said, "type the value that is wanted");
         return;
     }
@@ -152,6 +134,26 @@ static void take(bh_model *model)
     }
     forget(s);
     bh_model_note(model, false, "taken: %s", said);
+}
+
+void bh_solving_answered(bh_model *model, const bh_reply *reply)
+{
+    bh_solving *s = &model->solving;
+    if (model->over != BH_OVER_SOLVE)
+        return;
+    s->waiting = false;
+    s->bad = !reply->solved;
+    (void)snprintf(s->said, sizeof s->said, "%.500s",
+                   reply->solved && reply->sentence.bytes ? reply->sentence.bytes
+                                                          : reply->why.text);
+    if (!reply->solved)
+        return;
+    s->answer = *reply->solved;
+    if (s->answer.count > BH_SOLVE_MOST)
+        s->answer.count = BH_SOLVE_MOST;
+    attempt(model);
+    if (s->enter)
+        take(model);
 }
 
 bool bh_solving_press(bh_model *model, const bh_press *press)

@@ -21,24 +21,38 @@ static void begin(tty *t)
     begin_with(t, &(tty_start){.arguments = {"plan.yaml"}});
 }
 
-/* The n-th word (from 0) behind `name` in the row of the table that begins with it. */
-static void cell_of(const tty *t, const char *name, int n, char out[32])
+/* A row with one byte a column. */
+static void plain_row(const tty *t, int row, char out[256])
 {
-    char focused[64], other[64];
-    snprintf(focused, sizeof focused, "\u2502>%s", name);
-    snprintf(other, sizeof other, "\u2502 %s", name);
-    const int row = tty_find_row(t, tty_shows(t, focused) ? focused : other);
-    const char *at = row < 0 ? "" : strstr(tty_row(t, row), name) + strlen(name);
-    for (int i = 0; i < n; i++) {
-        at += strspn(at, " ");
-        at += strcspn(at, " ");
+    for (int c = 0; c < t->columns; c++) {
+        const uint32_t point = tty_cell(t, row, c).chars[0];
+        out[c] = point == 0 ? ' ' : point < 0x7F ? (char)point : '?';
     }
-    at += strspn(at, " ");
-    snprintf(out, 32, "%.*s", (int)strcspn(at, " "), at);
-    ck_assert_msg(out[0] != '\0', "no word %d behind %s", n, name);
+    out[t->columns] = '\0';
 }
 
-enum { HOURS = 4, WAS = 5 }; /* words of a row, 80 columns wide */
+/* The cell of the run table below a heading, in the row of a setting. */
+static void cell_of(const tty *t, const char *name, const char *heading, char out[32])
+{
+    char text[256], row_name[64];
+    plain_row(t, 2, text);
+    const char *head = strstr(text, heading);
+    ck_assert_msg(head != NULL, "no heading %s in %s", heading, text);
+    const int last = (int)(head - text) + (int)strlen(heading) - 1;
+    snprintf(row_name, sizeof row_name, "%s ", name);
+    for (int r = 4; r < t->rows - 3; r++) {
+        plain_row(t, r, text);
+        const char *at = strstr(text + 28, row_name);
+        if (!at || at > text + 32)
+            continue;
+        int first = last;
+        while (first > 0 && text[first] != ' ')
+            first--;
+        snprintf(out, 32, "%.*s", last - first, text + first + 1);
+        return;
+    }
+    ck_abort_msg("no row %s", name);
+}
 
 /* To a line of the plan by a word in it. */
 static void look_for(tty *t, const char *word)
@@ -86,12 +100,12 @@ START_TEST(edits_live_and_saves)
     begin(&t);
     tty_wait_row(&t, 0, "plan.yaml   electron 900 MeV, 2 uA on 9 cm liquid-hydrogen");
     char before[32], hours[32], was[32];
-    cell_of(&t, "low-1 ", HOURS, before);
+    cell_of(&t, "low-1", "hours", before);
     look_for(&t, "current");
     tty_type(&t, "4 uA");
     tty_wait(&t, "PROVISIONAL");
-    cell_of(&t, "low-1 ", HOURS, hours);
-    cell_of(&t, "low-1 ", WAS, was);
+    cell_of(&t, "low-1", "hours", hours);
+    cell_of(&t, "low-1", "was", was);
     ck_assert_str_eq(was, before); /* what it was, beside what it becomes */
     ck_assert_str_ne(hours, before);
     ck_assert_double_lt(atof(hours), 0.7 * atof(before));
@@ -182,7 +196,7 @@ START_TEST(orders_and_pins)
     tty t;
     char before[32], hours[32], was[32];
     begin(&t);
-    cell_of(&t, "low-1 ", HOURS, before);
+    cell_of(&t, "low-1", "hours", before);
     tty_type(&t, "<Tab><Right><Right><Right>oo");
     tty_wait(&t, "rows by sigma, falling");
     tty_wait_row(&t, 4, "low-3");
@@ -191,11 +205,12 @@ START_TEST(orders_and_pins)
     tty_type(&t, "<Tab>");
     look_for(&t, "current");
     tty_type(&t, "4 uA<Enter>");
-    tty_wait(&t, "against the pin");
+    tty_wait_row(&t, 0, "1 unsaved");
+    tty_wait_gone(&t, before);
     tty_type(&t, "<Tab><Right><Right>"); /* hours */
-    tty_wait(&t, before); /* the hours of the pin */
-    cell_of(&t, "low-1 ", HOURS, hours);
-    cell_of(&t, "low-1 ", WAS, was);
+    tty_wait(&t, before);                /* the hours of the pin */
+    cell_of(&t, "low-1", "hours", hours);
+    cell_of(&t, "low-1", "pin", was);
     ck_assert_str_eq(was, before);
     ck_assert_double_lt(atof(hours), 0.7 * atof(was));
     tty_type(&t, "p");

@@ -134,11 +134,11 @@ typedef struct {
     bh_column_id output;
     int by; /* bh_solve_input */
     bh_field wanted;
-    bool due, waiting; /* to be asked; asked */
-    size_t asked;      /* number of the question */
-    double value;      /* [1] wanted, in the unit of the output's key */
-    bh_answer answer;  /* of no use with a count of 0 */
-    char said[512];    /* what came of it, or why nothing did */
+    bool due, waiting, enter; /* to be asked; asked; to be taken as soon as it is there */
+    size_t asked;             /* number of the question */
+    double value;             /* [1] wanted, in the unit of the output's key */
+    bh_answer answer;         /* of no use with a count of 0 */
+    char said[512];           /* what came of it, or why nothing did */
     bool bad;
 } bh_solving;
 
