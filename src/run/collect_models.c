@@ -52,6 +52,8 @@ static void collect_part(bh_collecting *c, const bh_encounter *e, const bh_model
     const bool known = !stays_outside(e);
     if (known && spread->fit >= 0)
         set_one(c, &cause, part, share * spread->fit);
+    if (known && spread->data > 0)
+        set_one(c, &cause, part, share * spread->data);
     for (int i = 0; known && i < spread->count; i++) {
         cause.model = spread->name[i];
         set_one(c, &cause, part, share * spread->off[i]);

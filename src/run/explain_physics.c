@@ -126,10 +126,24 @@ static void compare(bh_explaining *x, struct spread *spread, const char *name)
                                 .source = bh_explain_text(x, "%s", bh_structure_source(s))});
 }
 
-/* A definition (point, dipole) is no fit. */
-static bool is_fit(const bh_structure_model *m)
+/* What the measurements behind the model are uncertain by; where its fit says more, that. */
+static void explain_data(bh_explaining *x)
 {
-    return strcmp(m->source, "definition") != 0;
+    const bh_structure *s = x->channel.encounter.structure;
+    const bh_structure_data data = bh_structure_measured(s);
+    const double fit = bh_structure_uncertainty(s, x->event.q2);
+    if (fit >= 0)
+        factor(x, "uncertainty of the fit", bh_explain_percent(x, fit),
+               "as published with it, of the cross section");
+    else if (data.uncertainty > 0)
+        bh_explain_add(
+            x, (bh_line){
+                   .kind = BH_LINE_FACTOR,
+                   .name = "uncertainty of the data",
+                   .value = bh_explain_percent(x, bh_structure_data_uncertainty(s, x->event.q2)),
+                   .formula = bh_explain_text(x, "%s of measured cross sections x (1 - GE^2 / Z^2)",
+                                              bh_explain_percent(x, data.uncertainty)),
+                   .source = data.source});
 }
 
 static void explain_spread(bh_explaining *x)
@@ -138,11 +152,9 @@ static void explain_spread(bh_explaining *x)
     struct spread spread = {.own = sigma_with(x, e->structure)};
     const bh_structure_model *m;
     for (int i = 0; spread.own > 0 && (m = bh_structure_model_at(i)); i++) {
-        const int sets = is_fit(m) ? bh_structure_sets(m, e->z, e->a) : 0;
-        if (sets > 0)
-            compare(x, &spread, m->name);
-        for (int k = 2; k <= sets && k < MOST_SETS; k++)
-            compare(x, &spread, bh_explain_text(x, "%s/%d", m->name, k));
+        for (int k = 1; k < MOST_SETS; k++)
+            if (bh_structure_compares(m, k, e->z, e->a))
+                compare(x, &spread, bh_explain_text(x, k > 1 ? "%s/%d" : "%s", m->name, k));
     }
     const double half = (spread.high - spread.low) / 2;
     if (spread.count)
@@ -178,6 +190,7 @@ void bh_explain_cross_section(bh_explaining *x)
     explain_point_charge(x, sigma);
     explain_model(x);
     explain_spread(x);
+    explain_data(x);
     bh_explain_add(x, (bh_line){.kind = BH_LINE_FACTOR,
                                 .name = "cross section",
                                 .value = bh_explain_number(x, sigma, "ub/sr"),

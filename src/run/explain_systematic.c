@@ -64,17 +64,21 @@ static bool same_nuclide(const bh_cause *a, const bh_cause *b)
 static void explain_structure(bh_explaining *x, const struct row *row, size_t first)
 {
     const bh_cause *c = bh_causes_at(row->causes, row->own->cause[first]);
-    size_t count = 1, known = 0;
+    size_t count = 1, others = 0;
     while (first + count < row->own->count &&
            same_nuclide(c, bh_causes_at(row->causes, row->own->cause[first + count])))
         count++;
     for (size_t i = 0; i < count; i++)
-        known += isnan(row->own->effect[first + i]) ? 0 : 1;
+        others += bh_causes_at(row->causes, row->own->cause[first + i])->model &&
+                  !isnan(row->own->effect[first + i]);
     const bh_effects all = {count, row->own->cause + first, row->own->effect + first};
     const double size = bh_effects_of(row->causes, &all, BH_CAUSE_STRUCTURE);
     const char *how =
-        c->model ? bh_explain_text(x, "half the range over the model in use and %zu others", known)
-                 : "as published with the fit";
+        others ? bh_explain_text(x,
+                                 "half the range over the model in use and %zu other%s, in "
+                                 "quadrature with the data behind it",
+                                 others, others > 1 ? "s" : "")
+               : "as published with the fit or the data behind it";
     bh_explain_add(x, (bh_line){.kind = BH_LINE_FACTOR,
                                 .name = "from structure",
                                 .value = bh_explain_percent(x, size),

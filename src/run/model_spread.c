@@ -69,21 +69,16 @@ static void add_other(bh_workspace *workspace, const bh_encounter *e, const char
     f->other[f->count++] = s;
 }
 
-/* A definition (point, dipole) is no fit. */
-static bool is_fit(const bh_structure_model *m)
-{
-    return strcmp(m->source, "definition") != 0;
-}
-
 static void list_others(bh_workspace *workspace, const bh_encounter *e, struct family *f)
 {
     const bh_structure_model *m;
     for (int i = 0; (m = bh_structure_model_at(i)); i++) {
-        const int sets = is_fit(m) ? bh_structure_sets(m, e->z, e->a) : 0;
+        const int sets = bh_structure_sets(m, e->z, e->a);
         for (int k = 1; k <= sets && k <= MOST_SETS; k++) {
             char name[48];
             snprintf(name, sizeof name, k > 1 ? "%s/%d" : "%s", m->name, k);
-            add_other(workspace, e, name, f);
+            if (bh_structure_compares(m, k, e->z, e->a))
+                add_other(workspace, e, name, f);
         }
     }
 }
@@ -295,8 +290,10 @@ bh_code bh_model_spread_make(bh_workspace *workspace, const bh_channel *channel,
     out->screening = sums.screened / sums.own;
     if (is_within(f->own, middle))
         out->fit = bh_structure_uncertainty(f->own, middle);
-    if (!(out->fit >= 0))
-        set_others(f, &sums, middle, out);
+    if (out->fit >= 0)
+        return BH_OK;
+    set_others(f, &sums, middle, out);
+    out->data = bh_structure_data_uncertainty(f->own, middle);
     return BH_OK;
 }
 
@@ -309,5 +306,5 @@ double bh_model_spread_size(const bh_model_spread *spread)
         low = fmin(low, spread->off[i]); /* fmin, fmax pass NAN over */
         high = fmax(high, spread->off[i]);
     }
-    return (high - low) / 2;
+    return hypot((high - low) / 2, spread->data);
 }

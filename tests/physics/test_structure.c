@@ -390,6 +390,68 @@ START_TEST(a_short_list_of_factors_is_not_overrun)
 }
 END_TEST
 
+/* What may doubt another description, and what measurements leave of it. */
+START_TEST(doubts_are_founded)
+{
+    static const struct {
+        const char *model;
+        int set, z, a;
+        bool compares;
+    } rows[] = {
+        {"point", 1, 6, 12, false},       {"dipole", 1, 1, 1, false},
+        {"kelly-2004", 1, 1, 1, true},    {"kelly-2004", 2, 1, 1, false},
+        {"uniform", 1, 1, 2, false},      {"helm", 1, 2, 4, false},
+        {"fermi-2p", 1, 1, 3, false},     {"fermi-2p", 1, 2, 4, false},
+        {"fermi-3p", 2, 2, 4, true},      {"sum-of-gaussians", 1, 2, 3, true},
+        {"amroun-1994", 1, 1, 3, true},   {"helm", 1, 6, 12, true},
+        {"fermi-2p", 3, 13, 27, true},    {"fermi-2p", 4, 13, 27, false},
+        {"abbott-2000-i", 1, 1, 2, true}, {"abbott-2000-i", 0, 1, 2, false},
+        {"fermi-2p", 1, 3, 6, true},
+    };
+    for (int i = 0; i < COUNT(rows); i++) {
+        const bh_structure_model *m = NULL;
+        for (int k = 0; (m = bh_structure_model_at(k)) && strcmp(m->name, rows[i].model) != 0; k++)
+            ;
+        ck_assert_ptr_nonnull(m);
+        ck_assert_msg(bh_structure_compares(m, rows[i].set, rows[i].z, rows[i].a) ==
+                          rows[i].compares,
+                      "%s/%d of %d, %d", rows[i].model, rows[i].set, rows[i].z, rows[i].a);
+    }
+}
+END_TEST
+
+START_TEST(data_are_uncertain_where_form_factors_matter)
+{
+    static const struct {
+        const char *name;
+        int z, a;
+        double known;
+        const char *source;
+    } rows[] = {{NULL, 1, 1, 0.01, "Walker"},      {"prad-2019", 1, 1, 0.005, "Xiong"},
+                {NULL, 1, 2, 0.03, "Platchkov"},   {NULL, 1, 3, 0.03, "Amroun"},
+                {NULL, 2, 3, 0.03, "Amroun"},      {NULL, 2, 4, 0.02, "McCarthy"},
+                {NULL, 6, 12, 0.01, "Reuter"},     {NULL, 6, 13, 0.02, "de Vries"},
+                {NULL, 82, 208, 0.02, "de Vries"}, {NULL, 0, 1, 0, ""}};
+    for (int i = 0; i < COUNT(rows); i++) {
+        bh_structure *s = model(rows[i].name, rows[i].z, rows[i].a);
+        const bh_structure_data data = bh_structure_measured(s);
+        const double q2 = 1e4, none = 0;
+        double ge2, gm2, charge2;
+        ck_assert_double_eq(data.uncertainty, rows[i].known);
+        ck_assert_ptr_nonnull(strstr(data.source, rows[i].source));
+        bh_structure_eval(s, 1, &q2, &ge2, &gm2);
+        bh_structure_eval(s, 1, &none, &charge2, &gm2);
+        if (rows[i].z > 0) {
+            ck_assert_double_eq_tol(bh_structure_data_uncertainty(s, q2),
+                                    rows[i].known * (1 - ge2 / charge2), 1e-12);
+            ck_assert_double_eq_tol(bh_structure_data_uncertainty(s, 0), 0, 1e-12);
+        }
+        ck_assert_double_le(bh_structure_data_uncertainty(s, 1e7), rows[i].known);
+        bh_structure_free(s);
+    }
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("structure");
@@ -404,6 +466,8 @@ int main(void)
     tcase_add_test(tests, what_cannot_be_is_refused_with_a_way_out);
     tcase_add_test(tests, ranges_are_those_of_the_data);
     tcase_add_test(tests, uncertainties_are_those_published);
+    tcase_add_test(tests, doubts_are_founded);
+    tcase_add_test(tests, data_are_uncertain_where_form_factors_matter);
     tcase_add_test(tests, a_short_list_of_factors_is_not_overrun);
     return run_suite("physics/structure", tests);
 }

@@ -58,6 +58,25 @@ void bh_structure_eval(const bh_structure *structure, size_t n, const double *q2
  * the publication gives one: the larger of those at epsilon 0 and 1.  Returns [1], -1 not known. */
 double bh_structure_uncertainty(const bh_structure *structure, double q2);
 
+/* Of the measurements that a description rests on. */
+typedef struct {
+    double uncertainty; /* [1] relative standard uncertainty of their cross sections as their
+                           authors quote it: normalisations and fits to them; 0 not known */
+    const char *source; /* who says so, and from where it is known; "" */
+} bh_structure_data;
+
+bh_structure_data bh_structure_measured(const bh_structure *structure);
+
+/* Returns [1] what that makes of a cross section at q2 [MeV^2]: all of it where the form factor has
+ * fallen, nothing at q2 = 0, where every description has the charge: uncertainty times
+ * 1 - GE^2 / Z^2. */
+double bh_structure_data_uncertainty(const bh_structure *structure, double q2);
+
+/* Whether set number `set` of a model describes z, a well enough to doubt another by: a fit, not a
+ * definition (point, dipole), and up to four nucleons no shape of heavier nuclei that is made to
+ * fit a radius (uniform, helm, the last set of fermi-2p). */
+bool bh_structure_compares(const bh_structure_model *model, int set, int z, int a);
+
 /* The model behind it; the full name used ("fourier-bessel/2"); what was assumed ("radius from
  * Angeli & Marinova 2013: no published density", "charge alone: no magnetic form factor"), or "".
  */

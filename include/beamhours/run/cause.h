@@ -60,9 +60,9 @@ bool bh_cause_on_counts(bh_cause_kind kind);
 
 /*
  * One cause.  Two rows that share it move together.  A form factor is a case of its own: where its
- * publication gives an uncertainty, that is one cause (`model` NULL); elsewhere each other
- * published description of the nuclide is a cause, its effect the whole difference, and all of
- * them together count as half the range they span with the model in use.
+ * publication gives an uncertainty, that is one cause (`model` NULL); elsewhere the data behind it
+ * are one, likewise, and each other published description of the nuclide is a cause, its effect the
+ * whole difference: all of those together count as half the range they span with the model in use.
  */
 typedef struct {
     bh_cause_kind kind;

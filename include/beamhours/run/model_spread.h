@@ -17,6 +17,8 @@ typedef struct {
     const char *const *name;    /* of each; valid until bh_workspace_trim */
     double off[BH_MOST_OTHERS]; /* [1] relative change of the cross section with each; NAN where the
                                    middle lies outside its data while others have some there */
+    double data;                /* [1] relative standard uncertainty by the measurements behind the
+                                   model in use, in quadrature; 0 where `fit` is given */
     double coulomb;             /* [1] relative size of what plane waves leave out */
     double screening;           /* [1] relative size of what atomic electrons would change */
 } bh_model_spread;
@@ -24,7 +26,8 @@ typedef struct {
 /*
  * Fills `out` for `channel` between the polar angles of `where` [rad].
  *
- * Other descriptions are all the registry has for the nuclide but definitions (point, dipole);
+ * Other descriptions are all the registry has for the nuclide but definitions (point, dipole)
+ * and, up to four nucleons, shapes of heavier nuclei made to fit a radius;
  * those with data at this momentum transfer, or all where none has.  Their form factors are kept on
  * a grid of momentum transfers, 0.01/fm apart, linear between: good to 1e-3 of the spread away from
  * diffraction minima.
@@ -44,7 +47,7 @@ BH_CHECKED bh_code bh_model_spread_make(bh_workspace *workspace, const bh_channe
                                         bh_interval where, bh_model_spread *out, bh_error *err);
 
 /* Returns [1] one number for it: the fit's uncertainty, or half the range of `off` with 0 among
- * them. */
+ * them, in quadrature with the data. */
 double bh_model_spread_size(const bh_model_spread *spread);
 
 #endif
