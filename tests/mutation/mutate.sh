@@ -9,7 +9,7 @@ export CK_FORK=no LC_ALL=C
 # The tests of a file: the one of its name first, then those of its room and of the rooms above, the quickest first.
 programs() {
     room=${1#src/} room=${room%%/*}
-    case $room in physics) above='physics|rates|run' ;; rates) above='rates|run' ;; *) above=run ;; esac
+    case $room in matter) above='matter|run' ;; physics) above='physics|rates|run' ;; rates) above='rates|run' ;; *) above=run ;; esac
     {
         ls "$build/tests/$room/test_$(basename "$1" .c)" 2>/dev/null
         grep -E "/tests/($above)/" "$folder/quickest"
@@ -42,14 +42,18 @@ formulas() { find "src/$1" -name '*.c' ! -name '*_table.c' | grep -Ev "$later" |
 # of run/, what multiplies a row out: not what only says it
 rows() { find src/run -name '*.c' ! -name 'explain*' ! -name 'cautions.c' ! -name 'remarks.c' ! -name 'columns.c' |
     grep -Ev "$later" | sort; }
-for program in $(find "$build"/tests/physics "$build"/tests/rates "$build"/tests/run -name 'test_*' ! -name '*.*' ! -name '*_faults'); do
+# what particles cross and lose, and the heat of it: so far a few
+passing='src/matter/heating.c src/run/passage.c src/run/leaving.c src/run/gate.c'
+for program in $(find "$build"/tests/physics "$build"/tests/rates "$build"/tests/run "$build"/tests/matter/test_heating \
+    -name 'test_*' ! -name '*.*' ! -name '*_faults'); do
     start=$(date +%s%N) # a test that fails anyway would notice everything
     "$program" >"$folder/said" 2>&1 || { echo "mutate.sh: $program fails before any mistake is made" >&2; exit 1; }
     echo "$(($(date +%s%N) - start)) $program"
 done >"$folder/times"
 sort -n "$folder/times" | cut -d' ' -f2 >"$folder/quickest"
 awk -v out="$folder" -f tests/mutation/mutants.awk keep="${KEEP:-40}" $(formulas physics) \
-    keep="${KEEP:-10}" $(formulas rates) keep="${KEEP:-8}" $(rows) >"$folder/list" || exit 1
+    keep="${KEEP:-10}" $(formulas rates) keep="${KEEP:-8}" $(rows) \
+    keep="${KEEP:-60}" $passing >"$folder/list" || exit 1
 for file in $(cut -f2 "$folder/list" | sort -u); do
     name=$folder/$(basename "$file" .c)
     compile "$file" "$name.o" && objcopy --strip-all "$name.o" "$name.bare" || exit 1
