@@ -27,7 +27,7 @@ static int beginnings(bh_demos *demos, bh_desk_start *start)
         status ? NULL : bh_arena_take(demos->arena, demos->count + 1, sizeof *list);
     if (!status && !list)
         status = bh_complain(stderr, &(bh_error){.code = BH_ENOMEM});
-    for (size_t i = 0; !status && i < demos->count; i++) {
+    for (size_t i = 0; list && !status && i < demos->count; i++) {
         bh_text bytes = {0}, title = {0};
         status = bh_demos_read(demos, i, &bytes);
         bh_demos_title(&bytes, &title);
@@ -37,7 +37,7 @@ static int beginnings(bh_demos *demos, bh_desk_start *start)
         bh_text_free(&bytes);
         bh_text_free(&title);
     }
-    if (!status)
+    if (!status && list)
         list[0] = (bh_beginning){"my-plan", "a short plan that already computes", bh_blank_plan()};
     start->beginnings = list;
     start->beginning_count = status ? 0 : demos->count + 1;

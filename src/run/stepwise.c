@@ -108,7 +108,7 @@ bh_stepwise *bh_stepwise_new(const bh_plan *plan, const bh_evaluation *how, bh_r
         results->generation++;
         forget_old(results);
         s->sources = bh_arena_take(s->arena, plan->setting_count + 1, sizeof *s->sources);
-        s->known = bh_arena_take(s->arena, plan->setting_count + 1, sizeof *s->known);
+        s->known = bh_arena_take(s->arena, plan->setting_count + 1, sizeof(void *));
         s->evaluator.yielder = (bh_yielder){
             .workspace = how->workspace, .cancelled = how->cancelled, .asker = how->asker};
         if (s->sources && s->known && bh_setting_sources(plan, s->arena, s->sources) &&
@@ -256,7 +256,7 @@ bh_code bh_stepwise_conclude(bh_stepwise *steps, const bh_diags *said, bh_arena 
     bh_remarks *remarks = bh_remarks_new();
     bh_code code =
         hours && remarks ? BH_OK : bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
-    for (size_t s = 0; !code && s < count; s++) {
+    for (size_t s = 0; !code && hours && s < count; s++) {
         hours[s] = steps->known[s]->hours;
         bh_remarks_add(remarks, steps->known[s]->remarks, steps->plan->file);
     }

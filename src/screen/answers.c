@@ -165,8 +165,8 @@ bh_reply *bh_worker_answer(bh_worker *worker)
     bh_reply *a = worker->answer_count ? worker->answers[0] : NULL;
     if (a) {
         worker->answer_count--;
-        memmove(worker->answers, worker->answers + 1,
-                worker->answer_count * sizeof *worker->answers);
+        for (size_t i = 0; i < worker->answer_count; i++)
+            worker->answers[i] = worker->answers[i + 1];
     }
     (void)pthread_mutex_unlock(&worker->lock);
     return a;

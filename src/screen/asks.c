@@ -82,11 +82,11 @@ bool bh_ask_press(bh_model *model, const bh_press *press)
     switch (press->kind) {
     case BH_PRESS_UP:
     case BH_PRESS_BACK_TAB:
-        model->answer = (model->answer + n - 1) % n;
+        model->answer = model->answer > 0 ? model->answer - 1 : n - 1;
         return true;
     case BH_PRESS_DOWN:
     case BH_PRESS_TAB:
-        model->answer = (model->answer + 1) % n;
+        model->answer = model->answer + 1 < n ? model->answer + 1 : 0;
         return true;
     case BH_PRESS_ENTER:
         choose(model, model->answer);

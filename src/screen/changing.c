@@ -160,24 +160,29 @@ static bool inside_of(const bh_node *list, const char *root)
     return yes;
 }
 
+/* Appends `form` with `name` in the place of its %s; %% is a %. */
+static void fill_form(const char *form, const char *name, bh_text *into)
+{
+    for (; *form; form++) {
+        if (form[0] == '%' && form[1] == 's')
+            bh_text_append(into, name);
+        else
+            bh_text_append_bytes(into, form, 1);
+        form += form[0] == '%';
+    }
+}
+
 static bool item_text(const bh_node *list, const char *key, bh_text *into)
 {
     for (size_t i = 0; i < sizeof new_items / sizeof new_items[0]; i++) {
-        char name[64];
+        char name[64] = "";
         if (strcmp(key, new_items[i].list) != 0 || !inside_of(list, new_items[i].inside))
             continue;
         if (new_items[i].name)
             (void)snprintf(name, sizeof name, "%s", new_items[i].name);
-        if (new_items[i].name && taken(list, name))
+        if (name[0] && taken(list, name))
             new_name(list, new_items[i].name, name);
-        const char *hole = strstr(new_items[i].text, "%s");
-        const char *end = hole ? hole + 2 : new_items[i].text;
-        if (hole) {
-            bh_text_append_bytes(into, new_items[i].text, (size_t)(hole - new_items[i].text));
-            bh_text_append(into, name);
-        }
-        for (; *end; end += 1 + (end[0] == '%' && end[1] == '%'))
-            bh_text_append_bytes(into, end, 1);
+        fill_form(new_items[i].text, name, into);
         return true;
     }
     const bh_node *last = list->count ? list->items[list->count - 1] : NULL;
@@ -229,16 +234,13 @@ void bh_change_add(bh_model *model)
         return;
     }
     const bh_node *node = line->node;
+    const bool mapping = node->kind == BH_NODE_MAPPING, open = !(line->folds && line->folded);
     if (node->kind == BH_NODE_LIST)
         add_item(model, node, 0);
-    else if (node->kind == BH_NODE_MAPPING && !(line->folds && line->folded))
-        add_key(model, node);
-    else if (node->parent->kind == BH_NODE_LIST)
+    else if (node->parent->kind == BH_NODE_LIST && !(mapping && open))
         add_item(model, node->parent, bh_node_place(node) + 2);
-    else if (node->kind == BH_NODE_MAPPING)
-        add_key(model, node);
     else
-        add_key(model, node->parent);
+        add_key(model, mapping ? node : node->parent);
 }
 
 /* --- back and again --- */

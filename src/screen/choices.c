@@ -14,9 +14,10 @@
 
 static const char *copy(bh_model *model, const char *text)
 {
-    char *own = text ? bh_arena_take(model->chooser.arena, strlen(text) + 1, 1) : NULL;
+    const size_t size = text ? strlen(text) + 1 : 0;
+    char *own = text ? bh_arena_take(model->chooser.arena, size, 1) : NULL;
     if (own)
-        memcpy(own, text, strlen(text));
+        memcpy(own, text, size);
     return own;
 }
 

@@ -86,22 +86,29 @@ static void say(bh_canvas *canvas, int row, bh_look look, const bh_diag *d)
     (void)bh_canvas_put_right(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_QUIET, at);
 }
 
+/* Those of one severity, from `row` on; returns the row behind them. */
+static int say_all(const bh_diags *said, bh_severity severity, int row, int end, bh_canvas *canvas)
+{
+    const bh_look look = severity == BH_SEVERITY_ERROR ? BH_LOOK_ERROR : BH_LOOK_WARNING;
+    for (size_t i = 0; i < bh_diags_count(said) && row < end; i++)
+        if (bh_diags_at(said, i)->severity == severity)
+            say(canvas, row++, look, bh_diags_at(said, i));
+    return row;
+}
+
 static void draw_said(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
-    const bh_diags *said = !model->edit ? model->said
-                           : model->now ? bh_outcome_diags(model->now)
-                                        : NULL;
-    int row = places->message;
-    const size_t count = said ? bh_diags_count(said) : 0;
-    for (int errors = 1; errors >= 0; errors--) /* errors first */
-        for (size_t i = 0; i < count && row < places->message + places->message_rows; i++) {
-            const bh_diag *d = bh_diags_at(said, i);
-            if ((d->severity == BH_SEVERITY_ERROR) == (errors == 1))
-                say(canvas, row++, errors ? BH_LOOK_ERROR : BH_LOOK_WARNING, d);
-        }
-    if (count > (size_t)places->message_rows) {
+    const bh_diags *said = model->now ? bh_outcome_diags(model->now) : NULL;
+    if (!model->edit)
+        said = model->said;
+    if (!said)
+        return;
+    const int end = places->message + places->message_rows;
+    const int row = say_all(said, BH_SEVERITY_ERROR, places->message, end, canvas);
+    (void)say_all(said, BH_SEVERITY_WARNING, row, end, canvas);
+    if (bh_diags_count(said) > (size_t)places->message_rows) {
         char more[40];
-        (void)snprintf(more, sizeof more, " [m: all %zu]", count);
+        (void)snprintf(more, sizeof more, " [m: all %zu]", bh_diags_count(said));
         (void)bh_canvas_put_right(canvas, (bh_spot){places->caution - 1, 0, canvas->columns},
                                   BH_LOOK_KEY, more);
     }
@@ -135,28 +142,37 @@ static void draw_typed(const bh_model *model, const bh_arrangement *places, bh_c
     bh_text_free(&text);
 }
 
+/* What just happened. */
+static void draw_note(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    bh_spot spot = {places->message, 0, canvas->columns};
+    if (model->over == BH_OVER_FIND) /* beside what is looked for */
+        spot = (bh_spot){places->message, canvas->columns / 2, canvas->columns / 2};
+    (void)bh_canvas_put(canvas, spot, model->note_bad ? BH_LOOK_ERROR : BH_LOOK_PLAIN, model->note);
+}
+
+static bool tries(const bh_model *model)
+{
+    if (model->over == BH_OVER_SOLVE)
+        return model->trying || model->why[0];
+    if (model->over == BH_OVER_CHOOSE)
+        return model->chooser.kind == BH_CHOOSE_VALUE;
+    return model->over == BH_OVER_FIELD;
+}
+
 static void draw_messages(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
-    const bool solving = model->over == BH_OVER_SOLVE && (model->trying || model->why[0]);
-    const bool choosing = model->over == BH_OVER_CHOOSE && model->chooser.kind == BH_CHOOSE_VALUE;
-    const bool typing = model->over == BH_OVER_FIELD || solving || choosing;
-    if (model->over == BH_OVER_FIND)
-        draw_prompt(model, places, canvas, "look for");
-    if (model->over == BH_OVER_NAME)
-        draw_prompt(model, places, canvas, "save as");
-    if (places->message < 0)
+    const bool find = model->over == BH_OVER_FIND, name = model->over == BH_OVER_NAME;
+    if (find || name)
+        draw_prompt(model, places, canvas, find ? "look for" : "save as");
+    if (places->message < 0 || name)
         return;
-    if (typing) {
+    if (tries(model))
         draw_typed(model, places, canvas);
-    } else if (model->note[0] && model->over != BH_OVER_NAME) {
-        bh_spot spot = {places->message, 0, canvas->columns};
-        if (model->over == BH_OVER_FIND)
-            spot = (bh_spot){places->message, canvas->columns / 2, canvas->columns / 2};
-        (void)bh_canvas_put(canvas, spot, model->note_bad ? BH_LOOK_ERROR : BH_LOOK_PLAIN,
-                            model->note);
-    } else if (model->over != BH_OVER_FIND && model->over != BH_OVER_NAME) {
+    else if (model->note[0])
+        draw_note(model, places, canvas);
+    else if (!find)
         draw_said(model, places, canvas);
-    }
 }
 
 /* --- cautions --- */

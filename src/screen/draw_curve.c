@@ -75,19 +75,21 @@ static void trace(struct plot *p, const bh_curve *curve, bh_column_id column)
     }
 }
 
+static uint32_t dots_as(unsigned char dots, bool ascii)
+{
+    const bool high = dots & (1 | 8 | 2 | 16), low = dots & (4 | 32 | 64 | 128);
+    if (!ascii)
+        return 0x2800U + dots;
+    return high && low ? '|' : high ? '\'' : '.';
+}
+
 static void show_dots(const struct plot *p)
 {
     for (int r = 0; r < p->rows; r++)
         for (int c = 0; c < p->columns; c++) {
             bh_cell *cell = bh_canvas_at(p->canvas, p->row + r, p->column + c);
-            const unsigned char dots = p->dots[r][c];
-            if (!cell || !dots)
-                continue;
-            const bool high = dots & (1 | 8 | 2 | 16), low = dots & (4 | 32 | 64 | 128);
-            cell->point = !p->canvas->ascii ? 0x2800U + dots
-                          : high && low     ? '|'
-                          : high            ? '\''
-                                            : '.';
+            if (cell && p->dots[r][c])
+                cell->point = dots_as(p->dots[r][c], p->canvas->ascii);
         }
 }
 
@@ -104,30 +106,30 @@ static void label(const struct plot *p, int row, double value)
                               BH_LOOK_QUIET, number);
 }
 
-/* The in-plane acceptance of each row, below the curve; that of the row in focus stands out. */
+/* The in-plane acceptance of one row. */
+static void show_acceptance(const struct plot *p, const bh_setting_arm *arm, bool here)
+{
+    const bool ring = arm->arm.shape == BH_SHAPE_RING;
+    const double middle = ring ? 0 : arm->angle.value;
+    const bh_extent *wide = ring ? &arm->arm.ring : &arm->arm.in_plane;
+    const double from = (middle + wide->from) * 180 / BH_PI, to = (middle + wide->to) * 180 / BH_PI;
+    const int first = (int)lrint(share(from, p->x, false) * (p->columns - 1));
+    const int last = (int)lrint(share(to, p->x, false) * (p->columns - 1));
+    for (int c = first < 0 ? 0 : first; c <= last && c < p->columns; c++)
+        (void)bh_canvas_put(p->canvas, (bh_spot){p->row + p->rows, p->column + c, 1},
+                            here ? BH_LOOK_TITLE : BH_LOOK_QUIET, here ? "\u2594" : "-");
+}
+
+/* Those of all rows, below the curve; that of the row in focus stands out. */
 static void show_acceptances(const bh_model *model, const struct plot *p)
 {
     const bh_table_view *v = &model->table;
-    const int row = p->row + p->rows;
-    for (int pass = 0; pass < 2; pass++)
-        for (size_t i = 0; i < v->count; i++) {
-            const bh_table_row *r = &v->rows[i];
-            const bool here = i == v->at;
-            if (r->bin || here != (pass == 1))
-                continue;
-            const bh_setting_arm *arm = &bh_table_setting(model, r)->arms[r->now->arm];
-            const bool ring = arm->arm.shape == BH_SHAPE_RING;
-            const double middle = ring ? 0 : arm->angle.value;
-            const bh_extent *wide = ring ? &arm->arm.ring : &arm->arm.in_plane;
-            const double from = (middle + wide->from) * 180 / BH_PI,
-                         to = (middle + wide->to) * 180 / BH_PI;
-            const int last = (int)lrint(share(to, p->x, false) * (p->columns - 1));
-            for (int c = (int)lrint(share(from, p->x, false) * (p->columns - 1)); c <= last; c++)
-                if (c >= 0 && c < p->columns)
-                    (void)bh_canvas_put(p->canvas, (bh_spot){row, p->column + c, 1},
-                                        here ? BH_LOOK_TITLE : BH_LOOK_QUIET,
-                                        here ? "\u2594" : "-");
-        }
+    for (size_t i = 0; i <= v->count; i++) { /* the one in focus last: over the others */
+        const size_t k = i < v->count ? i : v->at;
+        const bh_table_row *r = k < v->count ? &v->rows[k] : NULL;
+        if (r && !r->bin)
+            show_acceptance(p, &bh_table_setting(model, r)->arms[r->now->arm], k == v->at);
+    }
 }
 
 static void show_axes(const struct plot *p)
@@ -156,38 +158,44 @@ static void draw_title(const bh_arrangement *places, const char *name, bh_canvas
                         name);
 }
 
+/* Why there is no curve. */
+static const char *excuse(const bh_model *model)
+{
+    const bh_table_row *row = bh_table_here(model);
+    if (!row)
+        return "";
+    if (bh_table_setting(model, row)->arms[row->now->arm].arm.shape == BH_SHAPE_RING)
+        return "a ring has no angle to vary";
+    if (!model->curve)
+        return "being computed \u2026";
+    return model->curve->why.text[0] ? model->curve->why.text : "no values";
+}
+
 void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
-    const bh_reply *a = model->curve;
-    const bh_column_id column = column_of[model->curve_shown % BH_SHOW_NO_CURVE];
+    static const char *const what[] = {"cross section", "signal rate", "counts"};
+    const int shown = (int)model->curve_shown % (int)BH_SHOW_NO_CURVE;
+    const bh_curve *curve = model->curve ? model->curve->curve : NULL;
+    const bh_column_id column = column_of[shown];
     struct plot p = {.canvas = canvas,
                      .row = places->curve + 1,
                      .column = places->table_column + LABEL,
                      .rows = places->curve_rows - 3,
                      .columns = places->table_columns - LABEL};
     char name[120];
-    static const char *const what[] = {"cross section", "signal rate", "counts"};
-    (void)snprintf(name, sizeof name, " %s [%s] against angle, %.40s ",
-                   what[model->curve_shown % BH_SHOW_NO_CURVE], bh_column_at((int)column)->unit,
-                   model->table.here);
+    (void)snprintf(name, sizeof name, " %s [%s] against angle, %.40s ", what[shown],
+                   bh_column_at((int)column)->unit, model->table.here);
     draw_title(places, name, canvas);
     p.rows = p.rows > MOST_HIGH ? MOST_HIGH : p.rows;
     p.columns = p.columns > MOST_WIDE ? MOST_WIDE : p.columns;
     if (p.rows < 2 || p.columns < 10)
         return;
-    if (!a || !a->curve || !set_range(&p, a->curve, column)) {
-        const bh_table_row *row = bh_table_here(model);
-        const bool ring =
-            row && bh_table_setting(model, row)->arms[row->now->arm].arm.shape == BH_SHAPE_RING;
-        const char *why = !row             ? ""
-                          : ring           ? "a ring has no angle to vary"
-                          : !a             ? "being computed \u2026"
-                          : a->why.text[0] ? a->why.text
-                                           : "no values";
-        (void)bh_canvas_put(canvas, (bh_spot){p.row, p.column, p.columns}, BH_LOOK_QUIET, why);
+    if (!curve || !set_range(&p, curve, column)) {
+        (void)bh_canvas_put(canvas, (bh_spot){p.row, p.column, p.columns}, BH_LOOK_QUIET,
+                            excuse(model));
         return;
     }
-    trace(&p, a->curve, column);
+    trace(&p, curve, column);
     show_dots(&p);
     show_axes(&p);
     show_acceptances(model, &p);

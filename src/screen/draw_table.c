@@ -149,39 +149,41 @@ static bool column_changed(const bh_model *model, const bh_arrangement *places, 
     return false;
 }
 
+/* Its name, with the mark of the order, and its unit. */
+static void draw_column_head(const bh_model *model, const bh_arrangement *places,
+                             const bh_table_column *c, bh_spot spot, bh_canvas *canvas)
+{
+    const bh_table_view *v = &model->table;
+    const char *mark = v->order != c->column ? "" : v->falling ? "\u2193" : "\u2191";
+    bh_look look = BH_LOOK_TITLE;
+    char heading[48];
+    if (column_changed(model, places, c->column))
+        look = model->trying ? BH_LOOK_TRIAL : BH_LOOK_CHANGED;
+    (void)snprintf(heading, sizeof heading, "%s%.40s", mark, bh_column_at(c->column)->heading);
+    if (c->column == BH_COL_SETTING)
+        (void)bh_canvas_put(canvas, spot, look, heading);
+    else
+        (void)bh_canvas_put_right(canvas, spot, look, heading);
+    if (c == &v->columns[v->column] && model->pane == BH_PANE_TABLE)
+        bh_canvas_paint(canvas, spot, BH_LOOK_CURSOR);
+    spot.row++;
+    (void)bh_canvas_put_right(canvas, spot, BH_LOOK_QUIET, c->unit);
+}
+
 static void draw_heads(const bh_model *model, const bh_arrangement *places,
                        const bh_column_places *p, bh_canvas *canvas)
 {
-    const bh_table_view *v = &model->table;
     const bh_spot head = {places->body, places->table_column, places->table_columns};
-    int used = bh_canvas_put(
-        canvas, head, model->pane == BH_PANE_TABLE ? BH_LOOK_TITLE : BH_LOOK_QUIET, "RUN TABLE");
+    const bool focus = model->pane == BH_PANE_TABLE;
+    int used = bh_canvas_put(canvas, head, focus ? BH_LOOK_TITLE : BH_LOOK_QUIET, "RUN TABLE");
     used += draw_state(model, (bh_spot){head.row, head.column + used, head.width - used}, canvas);
     draw_totals(model, (bh_spot){head.row, head.column + used, head.width - used}, canvas);
     for (int i = 0; i < p->count; i++) {
-        const bh_table_column *c = p->index[i] < 0 ? NULL : &v->columns[p->index[i]];
         const bh_spot spot = {places->body + 1, p->column[i], p->width[i]};
-        const bh_spot below = {places->body + 2, p->column[i], p->width[i]};
-        if (!c) {
+        if (p->index[i] < 0)
             (void)bh_canvas_put_right(canvas, spot, BH_LOOK_CHANGED, model->pin ? "pin" : "was");
-            continue;
-        }
-        const bool left = c->column == BH_COL_SETTING;
-        char heading[48];
-        (void)snprintf(heading, sizeof heading, "%s%.40s",
-                       v->order != c->column ? ""
-                       : v->falling          ? "\u2193"
-                                             : "\u2191",
-                       bh_column_at(c->column)->heading);
-        const bool changed = column_changed(model, places, c->column);
-        (void)(left ? bh_canvas_put : bh_canvas_put_right)(canvas, spot,
-                                                           !changed        ? BH_LOOK_TITLE
-                                                           : model->trying ? BH_LOOK_TRIAL
-                                                                           : BH_LOOK_CHANGED,
-                                                           heading);
-        (void)bh_canvas_put_right(canvas, below, BH_LOOK_QUIET, c->unit);
-        if (p->index[i] == v->column && model->pane == BH_PANE_TABLE)
-            bh_canvas_paint(canvas, spot, BH_LOOK_CURSOR);
+        else
+            draw_column_head(model, places, &model->table.columns[p->index[i]], spot, canvas);
     }
 }
 
@@ -221,31 +223,35 @@ static void draw_was(const bh_model *model, const bh_table_row *row, bh_spot spo
     (void)bh_canvas_put_right(canvas, spot, BH_LOOK_QUIET, cell);
 }
 
+static void draw_cell(const bh_model *model, const bh_table_row *row, const bh_table_column *c,
+                      bh_spot spot, bh_canvas *canvas)
+{
+    char cell[BH_CELL_ROOM];
+    const bh_look look = row->bin ? BH_LOOK_QUIET : look_of(model, row, c->column);
+    bh_table_cell(model, row, c, false, cell);
+    if (c->column == BH_COL_SETTING)
+        (void)bh_canvas_put(canvas, spot, look, cell);
+    else
+        (void)bh_canvas_put_right(canvas, spot, look, cell);
+}
+
 static void draw_row(const bh_model *model, size_t i, int at, const bh_column_places *p,
                      bh_canvas *canvas)
 {
     const bh_table_view *v = &model->table;
-    const bh_table_row *row = &v->rows[i];
-    char cell[BH_CELL_ROOM];
+    const bool focus = model->pane == BH_PANE_TABLE;
     for (int k = 0; k < p->count; k++) {
         const bh_spot spot = {at, p->column[k], p->width[k]};
         if (p->index[k] < 0) {
-            draw_was(model, row, spot, canvas);
+            draw_was(model, &v->rows[i], spot, canvas);
             continue;
         }
-        const bh_table_column *c = &v->columns[p->index[k]];
-        bh_table_cell(model, row, c, false, cell);
-        const bool left = c->column == BH_COL_SETTING;
-        (void)(left ? bh_canvas_put : bh_canvas_put_right)(
-            canvas, spot, row->bin ? BH_LOOK_QUIET : look_of(model, row, c->column), cell);
-        if (i == v->at && p->index[k] == v->column) {
-            const bool focus = model->pane == BH_PANE_TABLE;
-            bh_canvas_paint(canvas, spot, focus ? BH_LOOK_FOCUS : BH_LOOK_CURSOR);
-            if (focus) {
-                canvas->cursor_row = at;
-                canvas->cursor_column = spot.column;
-            }
-        }
+        draw_cell(model, &v->rows[i], &v->columns[p->index[k]], spot, canvas);
+        if (i != v->at || p->index[k] != v->column)
+            continue;
+        bh_canvas_paint(canvas, spot, focus ? BH_LOOK_FOCUS : BH_LOOK_CURSOR);
+        canvas->cursor_row = focus ? at : canvas->cursor_row;
+        canvas->cursor_column = focus ? spot.column : canvas->cursor_column;
     }
 }
 

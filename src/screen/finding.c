@@ -12,7 +12,7 @@ void bh_find_begin(bh_model *model)
 
 static char lower(char c)
 {
-    return c >= 'A' && c <= 'Z' ? (char)(c + 32) : c;
+    return (char)(c >= 'A' && c <= 'Z' ? c + 32 : c);
 }
 
 /* Is `word` in `text`, small and capital letters alike? */

@@ -84,7 +84,7 @@ void bh_plan_lines_make(bh_model *model)
         return;
     const bh_document *document = bh_edit_document(model->edit);
     const bh_node *root = bh_document_root(document);
-    struct making m = {.view = v, .turned = calloc(v->turned_count + 1, sizeof *m.turned)};
+    struct making m = {.view = v, .turned = calloc(v->turned_count + 1, sizeof(void *))};
     if (m.turned) {
         find_turned(&m, document);
         for (size_t i = 0; i < root->count; i++)

@@ -86,6 +86,23 @@ static void write_cautions(bh_model *model, bh_sheet_writer *w)
                      "decide.");
 }
 
+static void write_key(bh_sheet_writer *w, const bh_plan_key *key)
+{
+    const struct {
+        const char *name, *text;
+    } rows[] = {{"means", key->meaning},
+                {"takes", key->kind},
+                {"units", key->units[0] ? key->units : NULL},
+                {"required", key->required ? "yes" : "no"},
+                {"", key->group[0] ? key->group : NULL},
+                {"default", key->preset},
+                {"example", key->example},
+                {"", key->built ? NULL : "read and checked, but no number depends on it yet"}};
+    for (size_t i = 0; i < sizeof rows / sizeof rows[0]; i++)
+        if (rows[i].text)
+            bh_sheet_pair(w, rows[i].name, rows[i].text);
+}
+
 static void write_about(bh_model *model, bh_sheet_writer *w)
 {
     const bh_plan_line *line = bh_plan_here(model);
@@ -93,25 +110,11 @@ static void write_about(bh_model *model, bh_sheet_writer *w)
     bh_plan_key key;
     if (line)
         bh_trail_of(line->node, &path);
-    const bool known = path.bytes && bh_plan_key_find(path.bytes, &key, NULL);
     bh_sheet_add(w, BH_LOOK_TITLE, "", path.bytes ? path.bytes : "the plan");
-    if (known) {
-        bh_sheet_pair(w, "means", key.meaning);
-        bh_sheet_pair(w, "takes", key.kind);
-        if (key.units[0])
-            bh_sheet_pair(w, "units", key.units);
-        bh_sheet_pair(w, "required", key.required ? "yes" : "no");
-        if (key.group[0])
-            bh_sheet_pair(w, "", key.group);
-        if (key.preset)
-            bh_sheet_pair(w, "default", key.preset);
-        if (key.example)
-            bh_sheet_pair(w, "example", key.example);
-        if (!key.built)
-            bh_sheet_pair(w, "", "read and checked, but no number depends on it yet");
-    } else {
+    if (path.bytes && bh_plan_key_find(path.bytes, &key, NULL))
+        write_key(w, &key);
+    else
         bh_sheet_add(w, BH_LOOK_PLAIN, "", "An item of a list: its keys stand below it.");
-    }
     bh_text_free(&path);
 }
 

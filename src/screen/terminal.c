@@ -1,5 +1,6 @@
 /* terminal.c - the only file that talks to a terminal: keys in, cells out, signals. */
-#define _GNU_SOURCE 1 /* ppoll; wide characters of curses */
+/* ppoll; wide characters of curses */
+#define _GNU_SOURCE 1 /* NOLINT */
 #include "beamhours/screen/terminal.h"
 
 #include <curses.h>
@@ -8,6 +9,7 @@
 #include <locale.h>
 #include <poll.h>
 #include <signal.h>
+#include <stdint.h>
 #include <stdlib.h>
 #include <string.h>
 #include <sys/ioctl.h>
@@ -154,7 +156,7 @@ static void keep_capability(const char *name)
     (void)strncpy(capability, name, sizeof capability - 1);
     capability[sizeof capability - 1] = '\0';
     const char *text = tigetstr(capability);
-    if (!text || text == (const char *)-1)
+    if ((intptr_t)text <= 0) /* -1: no such capability */
         return;
     for (; *text && alarm_bell.leave_length + 1 < sizeof alarm_bell.leave; text++) {
         const char *end = text[0] == '$' && text[1] == '<' ? strchr(text, '>') : NULL;
@@ -189,7 +191,7 @@ static bool begin(struct terminal *t)
     catch_signals();
     const char *name = getenv("TERM");
     t->screen = name && strcmp(name, "dumb") != 0 ? newterm(NULL, stdout, stdin) : NULL;
-    if (!t->screen || !tigetstr("cup") || tigetstr("cup") == (char *)-1)
+    if (!t->screen || (intptr_t)tigetstr("cup") <= 0)
         return false;
     alarm_bell.leave_length = 0;
     keep_capability("sgr0");
@@ -425,24 +427,30 @@ static void mind_signals(struct loop *l)
     }
 }
 
+/* Draws when what is in view is there, or when that takes too long; else shortens the wait. */
+static void draw_when_due(struct loop *l, double *wait)
+{
+    const double left = l->since + patience - now();
+    if (!l->dirty)
+        return;
+    if (left <= 0 || bh_desk_settled(l->t->desk)) {
+        show(l->t);
+        l->dirty = false;
+    } else if (*wait < 0 || left < *wait) {
+        *wait = left;
+    }
+}
+
 static void run(struct loop *l)
 {
-    struct terminal *t = l->t;
+    bh_desk *desk = l->t->desk;
     bool there = true;
-    while (there && !bh_desk_over(t->desk) && !alarm_bell.ended) {
+    while (there && !bh_desk_over(desk) && !alarm_bell.ended) {
         mind_signals(l);
-        alarm_bell.rescue = bh_desk_rescue(t->desk);
-        alarm_bell.mark = bh_desk_mark(t->desk);
-        double wait = bh_desk_tend(t->desk, now());
-        if (l->dirty) {
-            const double left = l->since + patience - now();
-            if (left <= 0 || bh_desk_settled(t->desk)) {
-                show(t);
-                l->dirty = false;
-            } else if (wait < 0 || left < wait) {
-                wait = left;
-            }
-        }
+        alarm_bell.rescue = bh_desk_rescue(desk);
+        alarm_bell.mark = bh_desk_mark(desk);
+        double wait = bh_desk_tend(desk, now());
+        draw_when_due(l, &wait);
         there = wait_for_more(l, wait);
     }
     if (!there && !alarm_bell.ended)

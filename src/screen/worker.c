@@ -152,30 +152,27 @@ static bool one(struct doing *d, size_t s)
     return true;
 }
 
-/* Everything that need not be evaluated; how many settings are left. */
-static size_t recall(struct doing *d)
+/* Settings that are not known yet. */
+static size_t unknown(const struct doing *d)
 {
     size_t left = 0;
     for (size_t s = 0; s < d->of->plan->setting_count; s++)
-        if (!bh_stepwise_recall(d->steps, s, d->opened[s]))
-            left++;
+        left += bh_stepwise_rows(d->steps, s).whole == NULL;
     return left;
 }
 
+/* What need not be evaluated, what is in view, the rest. */
 static bool in_order(struct doing *d)
 {
     const size_t count = d->of->plan->setting_count;
-    size_t left = recall(d);
+    for (size_t s = 0; s < count; s++)
+        (void)bh_stepwise_recall(d->steps, s, d->opened[s]);
     for (size_t i = 0; i < d->job->first_count; i++)
         if (d->job->first[i] < count && !one(d, d->job->first[i]))
             return false;
-    for (size_t s = left = 0; s < count; s++)
-        left += bh_stepwise_rows(d->steps, s).whole == NULL;
-    if (left) {
-        bh_outcome *o = snapshot(d);
-        if (o)
-            hand_over(d, o);
-    }
+    bh_outcome *o = unknown(d) ? snapshot(d) : NULL;
+    if (o)
+        hand_over(d, o);
     for (size_t s = 0; s < count; s++)
         if (!one(d, s))
             return false;

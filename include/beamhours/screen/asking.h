@@ -56,7 +56,7 @@ bh_reading_of *bh_worker_read(bh_worker *worker, int which, const char *bytes, s
 void bh_worker_ring(bh_worker *worker);
 
 /* The second thread. */
-void *bh_worker_answers(void *worker);
+void *bh_worker_answers(void *of);
 void bh_worker_drop_question(bh_own_query *question);
 
 #endif

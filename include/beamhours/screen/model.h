@@ -177,13 +177,16 @@ typedef enum {
 
 typedef struct {
     int rows, columns; /* of the terminal */
-    bool ascii;
     bh_pane pane;
     bh_over over;
+    bool ascii;
+    bool rescued; /* the text is not that of the file, though it was not changed here */
+    bool fresh;   /* there is no file yet */
+    bool job_due; /* a job is to begin */
+    bool trying;  /* trial is what the text would become */
+    bool curve_due, explain_due, note_bad;
     char file[512]; /* its name, for the title */
 
-    bool rescued;   /* the text is not that of the file, though it was not changed here */
-    bool fresh;     /* there is no file yet */
     bh_edit *edit;  /* NULL: the text cannot be read as a document, or there is none yet */
     bh_text unread; /* then the text */
     bh_diags *said; /* and why */
@@ -193,14 +196,12 @@ typedef struct {
     bh_outcome *now;  /* of the text that is shown, as far as it is known */
     bh_outcome *kept; /* complete, of the text without what is being typed */
     bh_outcome *pin;
-    size_t job;   /* that was begun last */
-    bool job_due; /* another one is to begin */
+    size_t job; /* that was begun last */
 
     bh_field field;            /* a value, a word to find, a name */
     char field_path[512];      /* of what is edited */
     const bh_node *field_node; /* or NULL where it is not there yet */
     char was[160];             /* the old value */
-    bool trying;               /* trial is what the text would become */
     bh_text trial;
     char why[512]; /* what is wrong with what is typed; else empty */
     size_t errors; /* of the plan as it is kept */
@@ -215,14 +216,12 @@ typedef struct {
     bh_curve_shown curve_shown;
     bh_reply *curve;
     size_t curve_asked, explain_asked;
-    bool curve_due, explain_due;
 
     bh_material_library *library;
     const bh_beginning *beginnings;
     size_t beginning_count, chosen;
     bh_wish wish;
     char note[240]; /* what just happened, until the next key */
-    bool note_bad;
 } bh_model;
 
 /* A model of the text `bytes`; `library` is for choosers and outlives it.  False without memory. */
