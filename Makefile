@@ -8,7 +8,7 @@ DRAW := cairo pangocairo # of the program alone, not of the library
 WARN  := -Wall -Wextra -Wpedantic -Wconversion -Wshadow -Wstrict-prototypes -Wmissing-prototypes \
          -Wcast-qual -Wwrite-strings -Wvla -Wformat=2 -Wundef
 SAN   := -O1 -g -fsanitize=address,undefined -fno-sanitize-recover=all
-STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(shell pkg-config --cflags $(PKGS) $(DRAW) 2>/dev/null)
+STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(patsubst -I%,-isystem %,$(shell pkg-config --cflags $(PKGS) $(DRAW) 2>/dev/null))
 FAST  := -fopenmp-simd -fno-math-errno  # never -ffast-math: NaN and infinity are part of what is checked
 ALL_C  = $(STD) -fPIC -fvisibility=hidden $(WARN) $(WERROR) $(HARDEN) $(CPPFLAGS) $(FAST) $(CFLAGS)
 LINK   = $(quiet) $(CC) $(CFLAGS) -Wl,-z,relro,-z,now,--as-needed $(LDFLAGS) -o $@

@@ -99,9 +99,10 @@ static int draw(struct job *job)
 {
     static const char *const formats[] = {"svg", "pdf", "png"};
     const char *path = job->a->value[BH_OPT_DATA];
-    bh_figure_format format = BH_FIGURE_SVG;
-    while (strcmp(formats[format], job->format) != 0)
-        format++;
+    int format = BH_FIGURE_SVG;
+    for (int i = 0; i < 3; i++)
+        if (strcmp(formats[i], job->format) == 0)
+            format = i;
     const bh_curve_picture picture = {
         job->in.table, &job->curves, job->shown, path ? &job->measured : NULL, path, bh_version()};
     bh_figure figure;
@@ -109,7 +110,7 @@ static int draw(struct job *job)
     bh_error err = {.code = BH_OK};
     bh_code bad = bh_curve_figure(&picture, job->arena, &figure, &err);
     if (!bad)
-        bad = bh_figure_write(&figure, format, &out, &err);
+        bad = bh_figure_write(&figure, (bh_figure_format)format, &out, &err);
     if (!bad)
         return bh_output(&out, job->a->value[BH_OPT_OUTPUT]);
     bh_text_free(&out);

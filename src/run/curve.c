@@ -292,20 +292,25 @@ static bool mark(bh_curve *c, const bh_plan *plan, const struct origin *o)
 
 /* --- all of it --- */
 
+static void add_points(bh_curve *c, const struct origin *o, int wanted)
+{
+    double lo = 0.0, hi = 0.0;
+    const int points = wanted < 2 ? POINTS : wanted > MOST_POINTS ? MOST_POINTS : wanted;
+    limits(o, &lo, &hi);
+    for (int i = 0; i < points && hi > lo; i++)
+        add_point(c, o, i == points - 1 ? hi : lo + (hi - lo) * i / (points - 1));
+}
+
 static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request *r,
                         const struct origin *o, bh_error *err)
 {
-    double lo = 0.0, hi = 0.0;
     if (r->structure && o->nuclide) {
         bh_structure *named = bh_structure_new(r->structure, o->nuclide->z, o->nuclide->a, err);
         if (!named)
             return err->code = BH_EDOMAIN;
         bh_structure_free(named);
     }
-    limits(o, &lo, &hi);
-    const int points = r->points < 2 ? POINTS : r->points > MOST_POINTS ? MOST_POINTS : r->points;
-    for (int i = 0; i < points && hi > lo; i++)
-        add_point(c, o, i == points - 1 ? hi : lo + (hi - lo) * i / (points - 1));
+    add_points(c, o, r->points);
     if (c->count == 0)
         return bh_fail(err, BH_EDOMAIN, "this arm can stand at no point of the curve");
     c->plan = *plan;

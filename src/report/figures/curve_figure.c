@@ -3,15 +3,10 @@
 #include "beamhours/report/curve_figure.h"
 
 #include <math.h>
-#include <stdarg.h>
-#include <stdio.h>
 #include <string.h>
 
-#include "beamhours/base/number.h"
-#include "beamhours/physics/structure.h"
+#include "beamhours/report/curve_words.h"
 #include "beamhours/report/stands.h"
-#include "beamhours/units/constants.h"
-#include "beamhours/units/nuclide.h"
 
 static const double logarithmic_from = 20.0; /* ratio of the largest to the smallest */
 
@@ -54,30 +49,6 @@ static void widen(struct reach *r, double value)
     r->positive = r->positive && value > 0.0;
 }
 
-/* What varies, as a column. */
-static int variable(const struct maker *m)
-{
-    static const int columns[] = {BH_COL_ANGLE, BH_COL_BEAM_KINETIC, BH_COL_Q2, BH_COL_EPSILON};
-    return columns[m->p->curves->against];
-}
-
-/* A text of the arena, "" without memory. */
-static const char *say(bh_arena *arena, const char *fmt, ...) BH_PRINTF(2, 3);
-
-static const char *say(bh_arena *arena, const char *fmt, ...)
-{
-    va_list args, again;
-    va_start(args, fmt);
-    va_copy(again, args);
-    const int length = vsnprintf(NULL, 0, fmt, args);
-    char *text = length < 0 ? NULL : bh_arena_take(arena, (size_t)length + 1, 1);
-    if (text)
-        (void)vsnprintf(text, (size_t)length + 1, fmt, again);
-    va_end(again);
-    va_end(args);
-    return text ? text : "";
-}
-
 static void add_series(struct maker *m, const bh_figure_series *series, bh_figure_point *point)
 {
     const size_t n = m->out->series_count++;
@@ -86,27 +57,6 @@ static void add_series(struct maker *m, const bh_figure_series *series, bh_figur
 }
 
 /* --- curves --- */
-
-/* The name of the model that stands behind the plan's own choice. */
-static const char *own_model(const struct maker *m)
-{
-    const bh_target *t = m->p->curves->setting->target;
-    const bh_plan *plan = bh_table_plan(m->p->table);
-    size_t count = 0;
-    int a = t->scatterer_a;
-    const bh_nuclide *all = a ? NULL : bh_element_isotopes(t->scatterer_z, &count);
-    double most = -1.0;
-    for (size_t i = 0; i < count; i++)
-        if (all[i].abundance > most) {
-            most = all[i].abundance;
-            a = all[i].a;
-        }
-    bh_structure *s =
-        bh_structure_new(bh_plan_structure(plan, t->scatterer_z, a), t->scatterer_z, a, NULL);
-    const char *name = s ? say(m->arena, "%s", bh_structure_name(s)) : "as planned";
-    bh_structure_free(s);
-    return name;
-}
 
 static bh_code take_curves(struct maker *m)
 {
@@ -123,10 +73,22 @@ static bh_code take_curves(struct maker *m)
             if (isfinite(point[i].y))
                 widen(&m->x, point[i].x);
         }
-        const char *name = c->name[k] ? c->name[k] : own_model(m);
+        const char *name = c->name[k] ? c->name[k] : bh_curve_own_model(m->p, m->arena);
         add_series(m, &(bh_figure_series){BH_SERIES_LINE, (int)k, name, n, NULL}, point);
     }
     return BH_OK;
+}
+
+/* From the lowest to the highest of all curves at point i; NAN where one of them is empty. */
+static struct reach reach_of(const struct maker *m, size_t curves, size_t i)
+{
+    struct reach r = {INFINITY, -INFINITY, true};
+    for (size_t k = 0; k < curves; k++) {
+        if (i >= m->series[k].count || isnan(m->series[k].point[i].y))
+            return (struct reach){NAN, NAN, false};
+        widen(&r, m->series[k].point[i].y);
+    }
+    return r;
 }
 
 /* The band from the lowest to the highest of several curves. */
@@ -141,13 +103,10 @@ static bh_code take_band(struct maker *m)
         return no_memory(m);
     double *x = number, *low = number + n, *high = number + 2 * n;
     for (size_t i = 0; i < n; i++) {
+        const struct reach at = reach_of(m, curves, i);
         x[i] = m->series[0].point[i].x;
-        low[i] = high[i] = m->series[0].point[i].y;
-        for (size_t k = 1; k < curves; k++) {
-            const double y = i < m->series[k].count ? m->series[k].point[i].y : (double)NAN;
-            low[i] = isnan(y) || isnan(low[i]) ? (double)NAN : fmin(low[i], y);
-            high[i] = isnan(y) || isnan(high[i]) ? (double)NAN : fmax(high[i], y);
-        }
+        low[i] = at.lo;
+        high[i] = at.hi;
     }
     m->band = number;
     *band = (bh_figure_band){"spread of these models", n, x, low, high};
@@ -157,6 +116,17 @@ static bh_code take_band(struct maker *m)
 }
 
 /* --- settings --- */
+
+/* A point with its bars; those that reach to 0 are cut at the frame rather than widen it. */
+static void widen_to(struct maker *m, const bh_figure_point *p)
+{
+    const double half = fmax(p->inner, p->outer);
+    widen(&m->x, p->x);
+    widen(&m->y, p->y);
+    widen(&m->y, p->y + half);
+    if (p->y - half > 0.1 * p->y || p->y < 0.0)
+        widen(&m->y, p->y - half);
+}
 
 static void take_point(struct maker *m, bool bins, size_t row, double x)
 {
@@ -175,12 +145,7 @@ static void take_point(struct maker *m, bool bins, size_t row, double x)
             isfinite(syst) && isfinite(stat) && syst > 0.0 ? hypot(stat, syst) * fabs(p.y) : 0.0;
         m->systematic = m->systematic || p.outer > 0.0;
     }
-    widen(&m->x, x);
-    widen(&m->y, p.y);
-    const double half = fmax(p.inner, p.outer);
-    widen(&m->y, p.y + half);
-    if (p.y - half > 0.1 * p.y || p.y < 0.0)
-        widen(&m->y, p.y - half);
+    widen_to(m, &p);
     m->planned[m->planned_count++] = p;
 }
 
@@ -206,14 +171,32 @@ static void take_ring(struct maker *m, const bh_place *whole)
     for (size_t row = 0; row < bh_table_rows(t, true); row++) {
         const bh_place at = bh_table_place(t, true, row);
         if (at.setting == whole->setting && at.arm == whole->arm)
-            take_point(m, true, row, bh_table_number(t, true, row, (bh_column_id)variable(m)));
+            take_point(m, true, row,
+                       bh_table_number(t, true, row,
+                                       (bh_column_id)bh_curve_variable(m->p->curves->against)));
     }
+}
+
+/* One row of the table, where it lies on the curve. */
+static bh_code take_row(struct maker *m, const bh_stand_origin *origin, size_t row)
+{
+    const bh_place at = bh_table_place(m->p->table, false, row);
+    const bh_setting *setting = &bh_table_plan(m->p->table)->settings[at.setting];
+    bh_stand stand;
+    if (!bh_stand_on(origin, setting, &setting->arms[at.arm], &stand))
+        return BH_OK;
+    if (take_span(m, setting, &stand))
+        return BH_ENOMEM;
+    if (isnan(stand.at))
+        take_ring(m, &at);
+    else
+        take_point(m, false, row, stand.at);
+    return BH_OK;
 }
 
 static bh_code take_settings(struct maker *m)
 {
     const bh_table *t = m->p->table;
-    const bh_plan *plan = bh_table_plan(t);
     const bh_curves *c = m->p->curves;
     const bh_stand_origin origin = {c->setting, c->arm, c->against};
     const size_t rows = bh_table_rows(t, false);
@@ -222,19 +205,9 @@ static bh_code take_settings(struct maker *m)
     m->edges = bh_arena_take(m->arena, rows + 1, sizeof *m->edges);
     if (!m->planned || !m->spans || !m->edges)
         return no_memory(m);
-    for (size_t row = 0; row < rows; row++) {
-        const bh_place at = bh_table_place(t, false, row);
-        const bh_setting *setting = &plan->settings[at.setting];
-        bh_stand stand;
-        if (!bh_stand_on(&origin, setting, &setting->arms[at.arm], &stand))
-            continue;
-        if (take_span(m, setting, &stand))
+    for (size_t row = 0; row < rows; row++)
+        if (take_row(m, &origin, row))
             return BH_ENOMEM;
-        if (isnan(stand.at))
-            take_ring(m, &at);
-        else
-            take_point(m, false, row, stand.at);
-    }
     m->out->span = m->spans;
     m->out->span_name = c->against == BH_AGAINST_ANGLE || c->against == BH_AGAINST_Q2
                             ? "settings: acceptance and bins"
@@ -250,25 +223,28 @@ static bh_code take_settings(struct maker *m)
 
 /* --- published points --- */
 
+/* Those of one source; returns how many. */
+static size_t take_source(struct maker *m, size_t source, bh_figure_point *point)
+{
+    size_t n = 0;
+    for (size_t i = 0; i < m->p->measured->count; i++) {
+        const bh_measured_point *p = &m->p->measured->point[i];
+        if (p->source != source)
+            continue;
+        point[n] = (bh_figure_point){p->x, p->y, p->uncertainty, 0.0};
+        widen_to(m, &point[n++]);
+    }
+    return n;
+}
+
 static bh_code take_measured(struct maker *m)
 {
     const bh_measured *all = m->p->measured;
     for (size_t s = 0; all && s < all->source_count; s++) {
         bh_figure_point *point = bh_arena_take(m->arena, all->count, sizeof *point);
-        size_t n = 0;
         if (!point)
             return no_memory(m);
-        for (size_t i = 0; i < all->count; i++) {
-            const bh_measured_point *p = &all->point[i];
-            if (p->source != s)
-                continue;
-            point[n++] = (bh_figure_point){p->x, p->y, p->uncertainty, 0.0};
-            widen(&m->x, p->x);
-            widen(&m->y, p->y);
-            widen(&m->y, p->y + p->uncertainty);
-            if (p->y - p->uncertainty > 0.1 * p->y || p->y < 0.0)
-                widen(&m->y, p->y - p->uncertainty);
-        }
+        const size_t n = take_source(m, s, point);
         const char *name = all->source[s][0]     ? all->source[s]
                            : m->p->measured_name ? m->p->measured_name
                                                  : "published";
@@ -286,9 +262,9 @@ static void scale_all(struct maker *m, double x, double y)
             const bh_figure_point p = m->points[s][i];
             m->points[s][i] = (bh_figure_point){p.x * x, p.y * y, p.inner * y, p.outer * y};
         }
-    for (size_t b = 0; b < m->out->band_count; b++)
-        for (size_t i = 0; i < 3 * m->out->band[b].count; i++)
-            m->band[i] *= i < m->out->band[b].count ? x : y;
+    const size_t n = m->out->band_count && m->band ? m->out->band[0].count : 0;
+    for (size_t i = 0; i < 3 * n; i++)
+        m->band[i] *= i < n ? x : y;
     for (size_t i = 0; i < m->out->span_count; i++) {
         m->spans[i].from *= x;
         m->spans[i].to *= x;
@@ -317,94 +293,15 @@ static void choose_axes(struct maker *m)
     const bool x_log = m->p->curves->against == BH_AGAINST_ENERGY && m->x.positive &&
                        m->x.hi > 2.0 * m->x.lo,
                y_log = m->y.positive && m->y.hi > logarithmic_from * m->y.lo;
-    const bh_shown_unit x = bh_shown_prefix(variable(m), m->x.lo, m->x.hi, x_log),
+    const bh_shown_unit x = bh_shown_prefix(bh_curve_variable(m->p->curves->against), m->x.lo,
+                                            m->x.hi, x_log),
                         y = bh_shown_prefix(m->p->shown, m->y.lo, m->y.hi, y_log);
-    f->x = (bh_figure_scale){bh_shown_words(variable(m)), say(m->arena, "%s", x.unit),
+    f->x = (bh_figure_scale){bh_shown_words(bh_curve_variable(m->p->curves->against)),
+                             bh_curve_say(m->arena, "%s", x.unit),
                              close_around(m->x.lo * x.scale, m->x.hi * x.scale, x_log)};
-    f->y = (bh_figure_scale){bh_shown_words(m->p->shown), say(m->arena, "%s", y.unit),
+    f->y = (bh_figure_scale){bh_shown_words(m->p->shown), bh_curve_say(m->arena, "%s", y.unit),
                              bh_axis_around(m->y.lo * y.scale, m->y.hi * y.scale, y_log)};
     scale_all(m, x.scale, y.scale);
-}
-
-/* --- words --- */
-
-static const char *short_number(const struct maker *m, double value)
-{
-    char digits[BH_NUMBER_SIZE];
-    double rounded = value;
-    (void)bh_number_digits(value, 5, digits, sizeof digits);
-    if (!bh_number_parse(digits, NULL, &rounded))
-        (void)bh_number_print(rounded, digits, sizeof digits);
-    return say(m->arena, "%s", digits);
-}
-
-/* What the curve keeps, behind the particle: ", 855 MeV", " at 30 deg", " at Q² 0.55 GeV²". */
-static const char *kept(const struct maker *m)
-{
-    const bh_curves *c = m->p->curves;
-    const bh_table *t = m->p->table;
-    if (c->against == BH_AGAINST_ANGLE || c->against == BH_AGAINST_Q2)
-        return say(m->arena, ", %s MeV", short_number(m, c->setting->beam.kinetic_energy.value));
-    if (c->against == BH_AGAINST_ENERGY)
-        return c->arm->arm.shape == BH_SHAPE_RING
-                   ? ""
-                   : say(m->arena, ", %s deg", short_number(m, c->arm->angle.value / BH_DEGREE));
-    if (c->arm->q2.given)
-        return say(m->arena, ", Q² %.4g GeV²", c->arm->q2.value * 1e-6);
-    for (size_t row = 0; row < bh_table_rows(t, false); row++) {
-        const bh_place at = bh_table_place(t, false, row);
-        const bh_setting *s = &bh_table_plan(t)->settings[at.setting];
-        if (s == c->setting && &s->arms[at.arm] == c->arm)
-            return say(m->arena, ", Q² %.4g GeV²", bh_table_number(t, false, row, BH_COL_Q2));
-    }
-    return "";
-}
-
-/* "electron, 855 MeV on H, target cell; arm A; setting K1". */
-static void put_subtitle(struct maker *m)
-{
-    const bh_curves *c = m->p->curves;
-    const bh_target *t = c->setting->target;
-    const char *named = t->name.text ? t->name.text : t->scatterer.text;
-    const bool other = strcmp(named, t->scatterer.text) != 0;
-    m->out->subtitle =
-        say(m->arena, "%s%s on %s%s%s; arm %s; setting %s", c->setting->beam.particle.name, kept(m),
-            t->scatterer.text, other ? ", target " : "", other ? named : "",
-            c->arm->arm.name.text ? c->arm->arm.name.text : "", c->setting->name);
-}
-
-/* What is drawn, for who cannot see it. */
-static const char *description(struct maker *m)
-{
-    const bh_figure *f = m->out;
-    char x[200], y[200];
-    bh_text lines = {0};
-    bh_figure_axis_words(&f->x, x, sizeof x);
-    bh_figure_axis_words(&f->y, y, sizeof y);
-    for (size_t s = 0; s < f->series_count; s++)
-        if (m->series[s].kind == BH_SERIES_LINE)
-            bh_text_appendf(&lines, "%s%s", lines.length ? ", " : "; curves: ", m->series[s].name);
-    const char *said =
-        say(m->arena, "%s against %s, from %s to %s%s; %zu planned and %zu published points. %s.",
-            y, x, short_number(m, f->x.axis.from), short_number(m, f->x.axis.to),
-            lines.bytes ? lines.bytes : "", m->planned_count,
-            m->p->measured ? m->p->measured->count : (size_t)0, f->subtitle);
-    bh_text_free(&lines);
-    return said;
-}
-
-static void put_words(struct maker *m)
-{
-    bh_figure *f = m->out;
-    const bh_plan *plan = bh_table_plan(m->p->table);
-    const char *meaning = m->p->shown == BH_SHOWN_MERIT ? bh_shown_words(m->p->shown)
-                                                        : bh_column_at(m->p->shown)->meaning;
-    f->title = plan->title.text ? plan->title.text : "";
-    put_subtitle(m);
-    f->foot = m->p->version ? say(m->arena, "%s: %s. beamhours %s", bh_shown_key(m->p->shown),
-                                  meaning, m->p->version)
-                            : "";
-    f->description = description(m);
 }
 
 bh_code bh_curve_figure(const bh_curve_picture *picture, bh_arena *arena, bh_figure *out,
@@ -429,6 +326,6 @@ bh_code bh_curve_figure(const bh_curve_picture *picture, bh_arena *arena, bh_fig
             err, BH_EDOMAIN, "there is nothing to draw: %s is empty all along the curve%s%s",
             bh_shown_key(picture->shown), m->reason ? ": " : "", m->reason ? m->reason : "");
     choose_axes(m);
-    put_words(m);
+    bh_curve_words(picture, m->planned_count, arena, out);
     return BH_OK;
 }

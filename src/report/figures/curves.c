@@ -98,22 +98,30 @@ static bh_code add(const bh_plan *plan, const bh_curve_request *r, const char *c
     return out->curve[out->count++] ? BH_OK : err->code;
 }
 
-/* Each structure with each Coulomb model. */
+/* One structure with each Coulomb model. */
+static bh_code add_each(const bh_plan *plan, const bh_curve_request *one, const char *coulombs,
+                        bh_curves *out, bh_error *err)
+{
+    char coulomb[LONGEST_NAME];
+    const char *c = coulombs;
+    bh_code bad = BH_OK;
+    do {
+        c = c ? next_name(c, coulomb) : NULL;
+        bad = add(plan, one, coulombs ? coulomb : NULL, out, err);
+    } while (!bad && c);
+    return bad;
+}
+
 static bh_code add_all(const bh_plan *plan, const bh_curves_request *r, bh_curves *out,
                        bh_error *err)
 {
-    char structure[LONGEST_NAME], coulomb[LONGEST_NAME];
+    char structure[LONGEST_NAME];
     const char *s = r->structures;
+    const bh_curve_request one = {r->setting, r->arm, r->against, s ? structure : NULL, r->points};
     bh_code bad = BH_OK;
     do {
         s = s ? next_name(s, structure) : NULL;
-        const char *c = r->coulombs;
-        do {
-            c = c ? next_name(c, coulomb) : NULL;
-            const bh_curve_request one = {r->setting, r->arm, r->against,
-                                          r->structures ? structure : NULL, r->points};
-            bad = add(plan, &one, r->coulombs ? coulomb : NULL, out, err);
-        } while (!bad && c);
+        bad = add_each(plan, &one, r->coulombs, out, err);
     } while (!bad && s);
     return bad;
 }

@@ -174,7 +174,7 @@ static bh_code to_svg(const bh_figure *figure, const char *id, bh_text *out, bh_
     body = body ? strchr(body, '>') : NULL;
     if (!bad && !body)
         bad = no_memory(err);
-    if (!bad) {
+    if (!bad && body) {
         open_svg(figure, id, wide, high, out);
         rename_ids(body + 1 + (body[1] == '\n'), id, out);
         bad = out->failed ? no_memory(err) : BH_OK;

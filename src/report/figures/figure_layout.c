@@ -10,7 +10,7 @@ static const double page_wide = 468.0; /* 6.5 inches: inside the margins of A4 a
 static const double frame_high = 232.0, margin = 8.0, gap = 4.0;
 static const double tick_long = 4.0;
 static const double named_lane = 9.5, bare_lane = 5.0, rail_high = 60.0;
-static const double shortest_bar = 2.0;
+static const double half_a_bar = 1.0; /* the shortest */
 enum { MOST_NAMED_LANES = 6, MOST_LANES = 20 };
 
 bh_lettering bh_figure_letters(bh_letters which)
@@ -116,10 +116,10 @@ static void bar(const bh_figure *figure, const bh_figure_layout *l, size_t i, bh
     const double left = l->frame.x, right = left + l->frame.wide;
     p->from = fmin(fmax(bh_figure_x(figure, l, figure->span[i].from), left), right);
     p->to = fmin(fmax(bh_figure_x(figure, l, figure->span[i].to), left), right);
-    if (p->to - p->from < shortest_bar) {
+    if (p->to - p->from < 2.0 * half_a_bar) {
         const double middle = (p->from + p->to) / 2.0;
-        p->from = middle - shortest_bar / 2.0;
-        p->to = middle + shortest_bar / 2.0;
+        p->from = middle - half_a_bar;
+        p->to = middle + half_a_bar;
     }
 }
 
@@ -175,8 +175,9 @@ static bh_code rail(const bh_figure *figure, const bh_pen *pen, bh_figure_layout
         order[i] = (struct order){figure->span[i].from, i};
     qsort(order, figure->span_count, sizeof *order, by_from);
     l->names = true;
-    l->lanes = figure->span_count > MOST_LANES * MOST_NAMED_LANES ? MOST_NAMED_LANES + 1
-                                                                  : assign(figure, pen, order, l);
+    l->lanes = figure->span_count > (size_t)MOST_LANES * MOST_NAMED_LANES
+                   ? MOST_NAMED_LANES + 1
+                   : assign(figure, pen, order, l);
     l->lane_high = named_lane;
     if (l->lanes > MOST_NAMED_LANES) {
         l->names = false;
@@ -184,7 +185,7 @@ static bh_code rail(const bh_figure *figure, const bh_pen *pen, bh_figure_layout
         for (size_t i = 0; i < figure->span_count; i++)
             l->spans[i].lane %= MOST_LANES;
         l->lanes = l->lanes > MOST_LANES ? MOST_LANES : l->lanes;
-        l->lane_high = l->lanes > 0 ? fmin(bare_lane, rail_high / l->lanes) : bare_lane;
+        l->lane_high = fmin(bare_lane, rail_high / (l->lanes < 1 ? 1 : l->lanes));
     }
     free(order);
     return l->lanes < 0 ? BH_ENOMEM : BH_OK;

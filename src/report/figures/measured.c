@@ -21,8 +21,8 @@ static const char *const role_names[] = {[IS_UNCERTAINTY] = "uncertainty",
                                          [IS_SOURCE] = "source"};
 
 struct cell {
-    char *text; /* in the arena, quotes taken off */
-    int column; /* where it begins */
+    const char *text; /* in the arena, quotes taken off */
+    int column;       /* where it begins */
 };
 
 /* Where reading stands. */
@@ -146,6 +146,7 @@ static bh_code read_cell(struct reader *r)
 /* Reads the cells of the next line that is not blank; none at the end of the file. */
 static bh_code read_row(struct reader *r)
 {
+    static const char empty[] = "";
     r->cells = 0;
     while (r->at < r->end && line_ends(r))
         step(r);
@@ -158,8 +159,7 @@ static bh_code read_row(struct reader *r)
             return BH_OK;
         step(r); /* the comma */
         if (line_ends(r) && r->cells < MOST_CELLS)
-            r->cell[r->cells++] = (struct cell){.text = r->cell[0].text + strlen(r->cell[0].text),
-                                                .column = r->column};
+            r->cell[r->cells++] = (struct cell){.text = empty, .column = r->column};
         if (line_ends(r))
             return BH_OK;
     }
@@ -309,39 +309,57 @@ static bh_code check_text(struct reader *r, const char *text, size_t length)
                   "the byte 0x%02X is not UTF-8 text; save the file as UTF-8", (unsigned char)*bad);
 }
 
+static bh_code make_room(struct reader *r)
+{
+    size_t lines = 1;
+    for (const char *c = r->at; c < r->end; c++)
+        lines += *c == '\n';
+    r->point = bh_arena_take(r->arena, lines < BH_MOST_MEASURED ? lines : BH_MOST_MEASURED,
+                             sizeof *r->point);
+    r->source = bh_arena_take(r->arena, BH_MOST_SOURCES, sizeof *r->source);
+    r->out->point = r->point;
+    r->out->source = r->source;
+    return r->point && r->source ? BH_OK : no_memory(r);
+}
+
+static bh_code read_points(struct reader *r)
+{
+    for (;;) {
+        bh_code bad = read_row(r);
+        if (bad || r->cells == 0)
+            return bad;
+        bad = read_point(r);
+        if (bad)
+            return bad;
+    }
+}
+
+static bh_code read_all(struct reader *r)
+{
+    bh_code bad = check_text(r, r->at, (size_t)(r->end - r->at));
+    bad = bad ? bad : make_room(r);
+    bad = bad ? bad : read_header(r);
+    bad = bad ? bad : read_points(r);
+    if (!bad && r->out->count == 0)
+        bad = REFUSE(r, r->row_line, 0, "there is no row below the header; write a point a line");
+    return bad;
+}
+
 bh_code bh_measured_read(const char *text, size_t length, const bh_measured_request *request,
                          bh_arena *arena, bh_measured *out, bh_error *err)
 {
     static const char mark[] = "\xEF\xBB\xBF"; /* some programs begin a file with it */
+    const size_t skip = length >= 3 && memcmp(text, mark, 3) == 0 ? 3 : 0;
+    struct reader r = {.request = request,
+                       .arena = arena,
+                       .err = err,
+                       .at = text + skip,
+                       .end = text + length,
+                       .line = 1,
+                       .column = 1,
+                       .out = out};
     *out = (bh_measured){.count = 0};
-    struct reader r = {
-        .request = request, .arena = arena, .err = err, .line = 1, .column = 1, .out = out};
-    if (length >= 3 && memcmp(text, mark, 3) == 0) {
-        text += 3;
-        length -= 3;
-    }
-    r.at = text;
-    r.end = text + length;
-    bh_code bad = check_text(&r, text, length);
-    if (bad)
-        return bad;
-    size_t lines = 1;
-    for (const char *c = text; c < r.end; c++)
-        lines += *c == '\n';
-    r.point =
-        bh_arena_take(arena, lines < BH_MOST_MEASURED ? lines : BH_MOST_MEASURED, sizeof *r.point);
-    r.source = bh_arena_take(arena, BH_MOST_SOURCES, sizeof *r.source);
-    out->point = r.point;
-    out->source = r.source;
-    bad = r.point && r.source ? read_header(&r) : no_memory(&r);
-    while (!bad) {
-        bad = read_row(&r);
-        if (!bad && r.cells == 0)
-            break;
-        bad = bad ? bad : read_point(&r);
-    }
-    if (!bad && out->count == 0)
-        bad = REFUSE(&r, r.row_line, 0, "there is no row below the header; write a point a line");
+    const bh_code bad = read_all(&r);
     if (bad)
         *out = (bh_measured){.count = 0};
     return bad;

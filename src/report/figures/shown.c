@@ -24,46 +24,46 @@ static const struct prefix energies[] = {
 static const struct prefix shares[] = {{100.0, "%"}, {0.0, NULL}};
 
 static const struct words {
-    int shown;
     const char *words, *unit;
     const struct prefix *prefixes;
-    bool measured;
+    int shown;
+    int measured; /* 1: with the uncertainty of the signal */
 } all_words[] = {
-    {BH_COL_BEAM_KINETIC, "beam kinetic energy", "MeV", energies, false},
-    {BH_COL_VERTEX_KINETIC, "beam kinetic energy at the vertex", "MeV", energies, false},
-    {BH_COL_ANGLE, "laboratory angle of the detected particle", "deg", NULL, false},
-    {BH_COL_SCATTERED_ANGLE, "laboratory angle of the scattered particle", "deg", NULL, false},
-    {BH_COL_SCATTERED_KINETIC, "kinetic energy of the scattered particle", "MeV", energies, false},
-    {BH_COL_SCATTERED_MOMENTUM, "momentum of the scattered particle", "MeV/c", NULL, false},
-    {BH_COL_RECOIL_KINETIC, "kinetic energy of the recoil", "MeV", energies, false},
-    {BH_COL_RECOIL_ANGLE, "laboratory angle of the recoil", "deg", NULL, false},
-    {BH_COL_CENTRAL_MOMENTUM, "central momentum of the arm", "MeV/c", NULL, false},
-    {BH_COL_Q2, "four-momentum transfer squared Q²", "GeV²", NULL, false},
-    {BH_COL_Q, "three-momentum transfer", "1/fm", NULL, false},
-    {BH_COL_EPSILON, "polarisation of the virtual photon ε", "", NULL, false},
+    {"beam kinetic energy", "MeV", energies, BH_COL_BEAM_KINETIC, 0},
+    {"beam kinetic energy at the vertex", "MeV", energies, BH_COL_VERTEX_KINETIC, 0},
+    {"laboratory angle of the detected particle", "deg", NULL, BH_COL_ANGLE, 0},
+    {"laboratory angle of the scattered particle", "deg", NULL, BH_COL_SCATTERED_ANGLE, 0},
+    {"kinetic energy of the scattered particle", "MeV", energies, BH_COL_SCATTERED_KINETIC, 0},
+    {"momentum of the scattered particle", "MeV/c", NULL, BH_COL_SCATTERED_MOMENTUM, 0},
+    {"kinetic energy of the recoil", "MeV", energies, BH_COL_RECOIL_KINETIC, 0},
+    {"laboratory angle of the recoil", "deg", NULL, BH_COL_RECOIL_ANGLE, 0},
+    {"central momentum of the arm", "MeV/c", NULL, BH_COL_CENTRAL_MOMENTUM, 0},
+    {"four-momentum transfer squared Q²", "GeV²", NULL, BH_COL_Q2, 0},
+    {"three-momentum transfer", "1/fm", NULL, BH_COL_Q, 0},
+    {"polarisation of the virtual photon ε", "", NULL, BH_COL_EPSILON, 0},
     {BH_COL_POINT_CROSS_SECTION, "cross section per nucleus, laboratory", "µb/sr", cross_sections,
      true},
     {BH_COL_CROSS_SECTION, "mean cross section per nucleus, laboratory", "µb/sr", cross_sections,
      true},
-    {BH_COL_SOLID_ANGLE, "solid angle", "msr", NULL, false},
-    {BH_COL_BEAM, "beam particles", "/s", NULL, false},
-    {BH_COL_SEEN, "nuclei seen", "/cm²", NULL, false},
-    {BH_COL_LUMINOSITY, "luminosity per nucleus", "/cm²/s", NULL, false},
-    {BH_COL_RADIATIVE, "share left by radiation", "", NULL, false},
-    {BH_COL_KEPT, "share inside bite and resolution", "", NULL, false},
-    {BH_COL_SIGNAL, "signal rate", "Hz", rates, true},
-    {BH_COL_BACKGROUND, "background rate", "Hz", rates, false},
-    {BH_COL_LIVE, "live fraction", "%", shares, false},
-    {BH_COL_HOURS, "hours on the full target", "h", NULL, false},
-    {BH_COL_EMPTY_HOURS, "hours on the empty target", "h", NULL, false},
-    {BH_COL_CHARGE, "beam charge", "mC", NULL, false},
-    {BH_COL_COUNTS, "signal counts recorded", "", NULL, true},
-    {BH_COL_STATISTICAL, "statistical uncertainty of the signal", "%", shares, false},
-    {BH_COL_SYSTEMATIC, "systematic uncertainty of the signal", "%", shares, false},
-    {BH_COL_HOURS_TO_GOAL, "hours that reach the goal", "h", NULL, false},
-    {BH_COL_PER_MRAD, "change of the rate for +1 mrad", "%", shares, false},
-    {BH_COL_PER_PERMILLE, "change of the rate for +0.1 % of momentum", "%", shares, false},
-    {BH_SHOWN_MERIT, "figure of merit, 1/(uncertainty² × hours)", "/h", NULL, false},
+    {"solid angle", "msr", NULL, BH_COL_SOLID_ANGLE, 0},
+    {"beam particles", "/s", NULL, BH_COL_BEAM, 0},
+    {"nuclei seen", "/cm²", NULL, BH_COL_SEEN, 0},
+    {"luminosity per nucleus", "/cm²/s", NULL, BH_COL_LUMINOSITY, 0},
+    {"share left by radiation", "", NULL, BH_COL_RADIATIVE, 0},
+    {"share inside bite and resolution", "", NULL, BH_COL_KEPT, 0},
+    {"signal rate", "Hz", rates, BH_COL_SIGNAL, 1},
+    {"background rate", "Hz", rates, BH_COL_BACKGROUND, 0},
+    {"live fraction", "%", shares, BH_COL_LIVE, 0},
+    {"hours on the full target", "h", NULL, BH_COL_HOURS, 0},
+    {"hours on the empty target", "h", NULL, BH_COL_EMPTY_HOURS, 0},
+    {"beam charge", "mC", NULL, BH_COL_CHARGE, 0},
+    {"signal counts recorded", "", NULL, BH_COL_COUNTS, 1},
+    {"statistical uncertainty of the signal", "%", shares, BH_COL_STATISTICAL, 0},
+    {"systematic uncertainty of the signal", "%", shares, BH_COL_SYSTEMATIC, 0},
+    {"hours that reach the goal", "h", NULL, BH_COL_HOURS_TO_GOAL, 0},
+    {"change of the rate for +1 mrad", "%", shares, BH_COL_PER_MRAD, 0},
+    {"change of the rate for +0.1 % of momentum", "%", shares, BH_COL_PER_PERMILLE, 0},
+    {"figure of merit, 1/(uncertainty² × hours)", "/h", NULL, BH_SHOWN_MERIT, 0},
 };
 
 static const struct words *find(int shown)
@@ -134,7 +134,7 @@ double bh_shown_on_curve(const bh_curve *curve, size_t i, int shown)
 bool bh_shown_measured(int shown)
 {
     const struct words *w = find(shown);
-    return w && w->measured;
+    return w && w->measured != 0;
 }
 
 /* "10³⁶ /cm²/s" where bare numbers would need too many digits. */
@@ -143,11 +143,10 @@ static bh_shown_unit with_power(const char *unit, double most)
     static const char *const raised[] = {"⁰", "¹", "²", "³", "⁴", "⁵", "⁶", "⁷", "⁸", "⁹"};
     bh_shown_unit out = {1.0, ""};
     char power[24] = "", digits[16];
-    size_t used = 0;
     if (most > 0.0 && isfinite(most) && (most >= 1e5 || most < 1e-3)) {
         const int n = 3 * (int)floor(log10(most) / 3.0);
         out.scale = n < 0 ? pow(10.0, -n) : 1.0 / pow(10.0, n);
-        used = (size_t)snprintf(power, sizeof power, "10%s", n < 0 ? "⁻" : "");
+        size_t used = (size_t)snprintf(power, sizeof power, "10%s", n < 0 ? "⁻" : "");
         (void)snprintf(digits, sizeof digits, "%d", n < 0 ? -n : n);
         for (const char *d = digits; *d; d++)
             used += (size_t)snprintf(power + used, sizeof power - used, "%s", raised[*d - '0']);

@@ -135,10 +135,10 @@ static void linear_minor(const bh_axis *axis, struct step s, bh_ticks *out)
     out->minor_count = 0;
     if (last - first >= BH_MOST_MINOR_TICKS)
         return;
-    const int each = s.digit == 2 ? 4 : 5;
-    for (double n = first; n <= last; n++)
-        if (fabs(remainder(n, each)) > 0.5)
-            out->minor[out->minor_count++] = multiple(n, f);
+    const int each = s.digit == 2 ? 4 : 5, count = (int)(last - first) + 1;
+    for (int i = 0; i < count; i++)
+        if (fabs(remainder(first + i, each)) > 0.5)
+            out->minor[out->minor_count++] = multiple(first + i, f);
 }
 
 static bool linear_try(const bh_axis *axis, struct step s, bh_ticks *out)
@@ -147,10 +147,10 @@ static bool linear_try(const bh_axis *axis, struct step s, bh_ticks *out)
     inside(axis, s, &first, &last);
     if (last - first >= BH_MOST_TICKS)
         return false;
-    out->count = 0;
-    for (double n = first; n <= last; n++) {
-        bh_tick *t = &out->tick[out->count++];
-        t->at = multiple(n, s);
+    out->count = (int)(last - first) + 1;
+    for (int i = 0; i < out->count; i++) {
+        bh_tick *t = &out->tick[i];
+        t->at = multiple(first + i, s);
         plain_label(t->at, s.power < 0 ? -s.power : 0, t->label);
     }
     return true;
@@ -185,9 +185,9 @@ struct plan {
     int every;
 };
 
-static double power_of_ten(int power)
+static double times_power(int digit, int power)
 {
-    return power < 0 ? 1.0 / pow(10.0, -power) : pow(10.0, power);
+    return power < 0 ? digit / pow(10.0, -power) : digit * pow(10.0, power);
 }
 
 static bool within(const bh_axis *axis, double value)
@@ -201,26 +201,31 @@ static void add_minor(bh_ticks *out, double value)
         out->minor[out->minor_count++] = value;
 }
 
+static bool add_major(bh_ticks *out, int digit, int power, bool plain)
+{
+    if (out->count == BH_MOST_TICKS)
+        return false;
+    bh_tick *t = &out->tick[out->count++];
+    t->at = times_power(digit, power);
+    if (plain)
+        plain_label(t->at, power < 0 ? -power : 0, t->label);
+    else
+        power_label(digit, power, t->label);
+    return true;
+}
+
 /* One decade: ten to the `power` and its multiples. */
 static bool decade(const bh_axis *axis, const struct plan *p, int power, bool plain, bh_ticks *out)
 {
     for (int digit = 1; digit <= 9; digit++) {
-        const double value = power < 0 ? digit / pow(10.0, -power) : digit * power_of_ten(power);
+        const double value = times_power(digit, power);
         if (!within(axis, value))
             continue;
-        if (!strchr(p->digits, '0' + digit) || power % p->every != 0) {
-            if (p->every == 1 || digit == 1)
-                add_minor(out, value);
-            continue;
-        }
-        if (out->count == BH_MOST_TICKS)
+        const bool labelled = strchr(p->digits, '0' + digit) && power % p->every == 0;
+        if (labelled && !add_major(out, digit, power, plain))
             return false;
-        bh_tick *t = &out->tick[out->count++];
-        t->at = value;
-        if (plain)
-            plain_label(value, power < 0 ? -power : 0, t->label);
-        else
-            power_label(digit, power, t->label);
+        if (!labelled && (p->every == 1 || digit == 1))
+            add_minor(out, value);
     }
     return true;
 }
