@@ -80,8 +80,6 @@ static int read_data(struct job *job)
 {
     const char *path = job->a->value[BH_OPT_DATA];
     bh_error err = {.code = BH_OK};
-    const bh_measured_request r = {path, bh_curve_key(job->curves.against),
-                                   bh_shown_key(job->shown)};
     if (bh_file_read(path, LONGEST_DATA, &job->data, &err))
         return bh_complain(stderr, &err);
     bh_code bad = BH_OK;
@@ -89,8 +87,10 @@ static int read_data(struct job *job)
         bad = bh_fail(&err, BH_EPLAN, "the file is longer than 1 MiB; draw fewer points");
         (void)bh_fail_at(&err, bad, (bh_mark){path, 0, 0});
     } else {
-        bad = bh_measured_read(job->data.bytes ? job->data.bytes : "", job->data.length, &r,
-                               job->arena, &job->measured, &err);
+        const bh_measured_request r = {job->data.bytes ? job->data.bytes : "", job->data.length,
+                                       path, bh_curve_key(job->curves.against),
+                                       bh_shown_key(job->shown)};
+        bad = bh_measured_read(&r, job->arena, &job->measured, &err);
     }
     return bad ? bh_complain(stderr, &err) : 0;
 }

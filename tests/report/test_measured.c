@@ -6,13 +6,12 @@
 
 #include "beamhours/report/measured.h"
 
-static const bh_measured_request request = {"p.csv", "angle_deg", "counts"};
-
 static bh_code read(const char *text, size_t length, bh_arena *arena, bh_measured *out,
                     bh_error *err)
 {
     *err = (bh_error){.code = BH_OK};
-    return bh_measured_read(text, length, &request, arena, out, err);
+    const bh_measured_request request = {text, length, "p.csv", "angle_deg", "counts"};
+    return bh_measured_read(&request, arena, out, err);
 }
 
 static const struct {

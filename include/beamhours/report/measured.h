@@ -22,20 +22,21 @@ typedef struct {
     const char *const *source;      /* in the order they appear; "" where the table has none */
 } bh_measured;
 
-/* What to look for in the table. */
+/* A table, and what to look for in it. */
 typedef struct {
+    const char *text;          /* may hold any bytes */
+    size_t length;             /* [bytes] */
     const char *file;          /* its name in messages */
     const char *x_key, *y_key; /* headings of the two columns: "angle_deg" */
 } bh_measured_request;
 
 /*
- * Reads `text` (docs/output.md, Published points): RFC 4180, UTF-8, a header, the columns x_key
+ * Reads the table (docs/output.md, Published points): RFC 4180, UTF-8, a header, the columns x_key
  * and y_key, at will `uncertainty` (in the unit of y_key) or `relative_uncertainty`, and `source`.
  * Other columns that the run table has are let by.  Texts live in `arena`.
  * BH_EPLAN with file, line and column of what is wrong and what would do; BH_ENOMEM.
  */
-BH_CHECKED bh_code bh_measured_read(const char *text, size_t length,
-                                    const bh_measured_request *request, bh_arena *arena,
+BH_CHECKED bh_code bh_measured_read(const bh_measured_request *request, bh_arena *arena,
                                     bh_measured *out, bh_error *err);
 
 #endif

@@ -181,11 +181,12 @@ static bh_code rail(const bh_figure *figure, const bh_pen *pen, bh_figure_layout
     l->lane_high = named_lane;
     if (l->lanes > MOST_NAMED_LANES) {
         l->names = false;
-        l->lanes = assign(figure, pen, order, l);
+        const int needed = assign(figure, pen, order, l);
         for (size_t i = 0; i < figure->span_count; i++)
             l->spans[i].lane %= MOST_LANES;
-        l->lanes = l->lanes > MOST_LANES ? MOST_LANES : l->lanes;
-        l->lane_high = fmin(bare_lane, rail_high / (l->lanes < 1 ? 1 : l->lanes));
+        l->lanes = needed > MOST_LANES ? MOST_LANES : needed;
+        l->lane_high = fmin(bare_lane, rail_high / fmax(needed, 1.0));
+        l->lane_high = fmax(l->lane_high, rail_high / MOST_LANES);
     }
     free(order);
     return l->lanes < 0 ? BH_ENOMEM : BH_OK;

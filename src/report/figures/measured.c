@@ -43,12 +43,14 @@ struct reader {
     bh_measured *out;
 };
 
-static bh_code at(struct reader *r, bh_code code, int line, int column)
+static bh_code at(const struct reader *r, bh_code code, bh_mark mark)
 {
-    return bh_fail_at(r->err, code, (bh_mark){r->request->file, line, column});
+    mark.file = r->request->file;
+    return bh_fail_at(r->err, code, mark);
 }
 
-#define REFUSE(r, line, column, ...) at(r, bh_fail((r)->err, BH_EPLAN, __VA_ARGS__), line, column)
+#define REFUSE(r, line, column, ...) \
+    at(r, bh_fail((r)->err, BH_EPLAN, __VA_ARGS__), (bh_mark){NULL, line, column})
 
 static bh_code no_memory(const struct reader *r)
 {
@@ -345,16 +347,16 @@ static bh_code read_all(struct reader *r)
     return bad;
 }
 
-bh_code bh_measured_read(const char *text, size_t length, const bh_measured_request *request,
-                         bh_arena *arena, bh_measured *out, bh_error *err)
+bh_code bh_measured_read(const bh_measured_request *request, bh_arena *arena, bh_measured *out,
+                         bh_error *err)
 {
     static const char mark[] = "\xEF\xBB\xBF"; /* some programs begin a file with it */
-    const size_t skip = length >= 3 && memcmp(text, mark, 3) == 0 ? 3 : 0;
+    const size_t skip = request->length >= 3 && memcmp(request->text, mark, 3) == 0 ? 3 : 0;
     struct reader r = {.request = request,
                        .arena = arena,
                        .err = err,
-                       .at = text + skip,
-                       .end = text + length,
+                       .at = request->text + skip,
+                       .end = request->text + request->length,
                        .line = 1,
                        .column = 1,
                        .out = out};
