@@ -108,6 +108,13 @@ static const struct {
      "n: >\n  old\n  text\nb: 1\n",
      "n: >\n  one\n\n  two\nb: 1\n",
      NULL},
+    {{BH_EDIT_SET, "n",
+      "words that are so many that they cannot stand on one line of sixty bytes and are folded", 0,
+      NULL},
+     "n: >-\n  old\nb: 1\n",
+     "n: >-\n  words that are so many that they cannot stand on one line of\n  sixty bytes and are "
+     "folded\nb: 1\n",
+     NULL},
     {{BH_EDIT_SET, "n", "one", 0, NULL}, "n: |\n  old", "n: |\n  one", NULL},
     {{BH_EDIT_SET, "n", "one\ntwo", 0, NULL},
      "n: |\r\n  old\r\nb: 1\r\n",
