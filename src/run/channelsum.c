@@ -58,6 +58,8 @@ static void evaluate_kept(void *context, size_t n, const double *theta, double *
         bh_radiated_apply(t->radiated, t->boost, n, theta, value);
 }
 
+static const double trace_tolerance = 1e-4; /* [1] of sums over nuclei that are a trace */
+
 /* All but the energies and what is kept. */
 static void set_function(const bh_channel_request *r, struct task *t)
 {
@@ -69,6 +71,7 @@ static void set_function(const bh_channel_request *r, struct task *t)
     t->request = (bh_average_request){.function = evaluate,
                                       .context = t,
                                       .limit = largest < BH_PI ? largest : 0,
+                                      .tolerance = r->trace ? trace_tolerance : 0,
                                       .allowed = t->allowed};
 }
 
@@ -265,7 +268,7 @@ static bh_code sum_counted(struct making *m, struct task *t, int boost, bh_error
     t->counted = c;
     t->boost = boost;
     t->request.function = evaluate_kept;
-    t->request.tolerance = c->tolerance;
+    t->request.tolerance = m->request->trace ? fmax(trace_tolerance, c->tolerance) : c->tolerance;
     t->request.common = m->common;
     t->request.cut = true;
     t->request.allowed_count = bh_counted_pieces(c, m->places.polar, t->allowed);

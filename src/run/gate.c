@@ -128,7 +128,8 @@ const bh_channel_sum *bh_elastic_sums(bh_yielder *yielder, const bh_view *view,
     radiated.signal = of->signal;
     bh_radiated_make(&radiated, &factor);
     request.radiated = &factor;
-    request.sensitivities = of->signal;
+    request.sensitivities = of->signal && !of->trace;
+    request.trace = of->trace;
     request.bins = request.bins && !of->binless;
     request.radiated_only = !of->signal && !of->whole;
     if (!of->signal && !factor.idle) /* the factor knows the edges */

@@ -38,7 +38,7 @@ struct matter {
     const bh_radiated_request *request;
     const bh_radiated_detail *at;
     size_t count;
-    bh_crossing crossed[BH_MOST_CROSSINGS];
+    bh_crossing crossed[BH_MOST_CROSSINGS]; /* 14 kB: only `count` of them are set */
 };
 
 static void set_matter(const bh_radiated_request *r, double angle, struct matter *m)
@@ -156,7 +156,8 @@ static bool set_line(const bh_radiated_request *r, double angle, bh_radiated_det
 
 bool bh_radiated_at(const bh_radiated_request *request, double angle, bh_radiated_detail *out)
 {
-    struct matter m = {.at = out};
+    struct matter m;
+    m.at = out;
     const bh_encounter *e = &request->channel.encounter;
     *out = (bh_radiated_detail){.factor = 0};
     if (!set_line(request, angle, out))
@@ -221,7 +222,8 @@ static void set_node(const bh_radiated_request *r, double angle, bh_radiated *ou
     static const double far = 1e30; /* of an edge that is not there */
     const double infinite = (double)INFINITY;
     bh_radiated_detail at = {.factor = 0};
-    struct matter m = {.at = &at};
+    struct matter m;
+    m.at = &at;
     bh_event event;
     (void)set_line(r, angle, &at); /* inside the largest angle there is always one */
     set_matter(r, angle, &m);
@@ -284,9 +286,9 @@ static double factor_at(const bh_radiated *x, int boost, double angle)
 static bool is_rough(const bh_radiated_request *r, bh_interval polar)
 {
     static const double much = 1.6, some = 0.003; /* [1] and radiation lengths */
+    struct matter m;
     double least = (double)INFINITY, most = 0;
     for (int i = 0; i < 3; i++) {
-        struct matter m = {.request = r};
         bh_radiated_detail at = {.factor = 0};
         set_matter(r, polar.from + (polar.to - polar.from) * i / 2, &m);
         set_lengths(&m, &at);

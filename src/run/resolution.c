@@ -3,6 +3,7 @@
 
 #include <math.h>
 #include <stddef.h>
+#include <string.h>
 
 #include "beamhours/matter/multiple_scattering.h"
 #include "beamhours/rates/migration.h"
@@ -120,9 +121,11 @@ struct kinds {
 static void move(const bh_yield *yield, const struct kinds *kinds, struct cells *c)
 {
     const int bins = yield->view.parts - 1, cells = c->migration.cells;
-    double counts[MOST_KINDS][MOST_CELLS], measured[MOST_KINDS][MOST_CELLS] = {{0}};
+    double counts[MOST_KINDS][MOST_CELLS], measured[MOST_KINDS][MOST_CELLS];
     double share[MOST_CELLS];
     bh_migration_column column = {.share = share};
+    for (size_t k = 0; k < kinds->count; k++)
+        memset(measured[k], 0, (size_t)cells * sizeof measured[k][0]);
     fill_counts(yield, kinds->at[0], 0.5, c, c->counts);
     bh_migration_slopes(&c->migration, c->counts, c->slope);
     const double front = share_in_front(c, bins);

@@ -59,7 +59,7 @@ static void write_numbers(const bh_channel_request *r, struct writing *w)
     k.bins = r->bins ? s->bins : 0;
     k.cut = r->cut;
     k.sensitivities = r->sensitivities;
-    k.only = r->radiated_only;
+    k.only = r->radiated_only + 2 * r->trace;
     k.shape = (int)s->shape;
     k.target = e->target;
     k.kinetic = e->kinetic;

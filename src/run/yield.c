@@ -76,6 +76,17 @@ static void add_point(const bh_yield *yield, const bh_channel *channel, double s
     }
 }
 
+/* Isotopes of the scatterer that are rarer than this, like deuterium in natural hydrogen, change a
+ * rate by no more than that share of it, and a sensitivity by less. */
+static const double trace_share = 2e-4;
+
+static bool is_trace(const bh_yielder *yielder, const bh_nuclei *nuclei)
+{
+    const double main = yielder->seen[nuclei->list->main].of[BH_ORIGIN_SIGNAL];
+    return nuclei->origin == BH_ORIGIN_SIGNAL &&
+           yielder->seen[nuclei->nuclide].of[BH_ORIGIN_SIGNAL] < trace_share * main;
+}
+
 /* A nuclide where it is signal, or one kind of background. */
 static bh_code add_origin(bh_yielder *yielder, bh_yield *yield, const bh_nuclei *nuclei,
                           const bh_channels *channels, bh_error *err)
@@ -87,7 +98,8 @@ static bh_code add_origin(bh_yielder *yielder, bh_yield *yield, const bh_nuclei 
         const bh_elastic_of of = {.channel = &channels->list[c],
                                   .way = &yield->view.way,
                                   .count = count,
-                                  .signal = signal};
+                                  .signal = signal,
+                                  .trace = is_trace(yielder, nuclei)};
         const bh_channel_sum *sums = bh_elastic_sums(yielder, &yield->view, &of, err);
         if (!sums)
             return err->code;

@@ -135,9 +135,9 @@ bh_crossed bh_way_after(const bh_way *way, const bh_vertex *vertex, double angle
 /* What the beam has crossed at `depth` [cm] of the layer of `vertex`. */
 bh_crossed bh_way_before(const bh_way *way, const bh_vertex *vertex, double depth);
 
-/* Fills depth [cm] in the layer of `vertex`: from its one side particles at polar `angle` [rad] come
- * to the wall inside that layer, from the other outside it [0]; inside the target, or to a face
- * first [1].  Outside the layer where it is the same from everywhere, NAN without a wall. */
+/* Fills depth [cm] in the layer of `vertex`: from its one side particles at polar `angle` [rad]
+ * come to the wall inside that layer, from the other outside it [0]; inside the target, or to a
+ * face first [1].  Outside the layer where it is the same from everywhere, NAN without a wall. */
 void bh_way_turning(const bh_way *way, const bh_vertex *vertex, double angle, double depth[2]);
 
 /* A particle on its way out: its ranges in each sheet. */

@@ -175,6 +175,7 @@ typedef struct {
     size_t count;
     bool signal;  /* nuclei of the scatterer in the sample */
     bool whole;   /* the cross section without radiation is wanted, for explain */
+    bool trace;   /* so few nuclei that 1e-4 of their rate is enough, and no sensitivity */
     bool binless; /* the sums of bins are not wanted */
 } bh_elastic_of;
 
