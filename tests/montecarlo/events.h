@@ -6,11 +6,12 @@
 #include "beamhours/physics/process.h"
 #include "beamhours/physics/quasi_elastic.h"
 #include "beamhours/physics/radiative.h"
+#include "beamhours/physics/radiative_tail.h"
 #include "throwing.h"
 
 /* --- one kind of event: a process on a nuclide in a layer --- */
 
-enum kind { ELASTIC, QUASI_ELASTIC, INELASTIC };
+enum kind { ELASTIC, TAIL, QUASI_ELASTIC, INELASTIC };
 
 struct part {
     enum kind kind;
@@ -164,41 +165,66 @@ static double throw_elastic(const struct thrown *t, double z, const struct direc
     return sigma * taken(t, &e, &v);
 }
 
-/* ub: one momentum of the spectrum */
+/* Energies [MeV] at the collision that may be taken. */
+static struct span energies(const struct thrown *t, size_t layer, double z, double angle,
+                            double most)
+{
+    const struct scene *x = t->scene;
+    struct span s = {0, most};
+    struct matter ignored;
+    if (x->arm->arm.energy_cut.given)
+        s.from = fmax(0, line_at(t, angle) - x->arm->arm.energy_cut.value);
+    if (!x->bite)
+        return s;
+    s.from = fmax(s.from, x->bite_from);
+    /* none that loses enough to fit starts above this */
+    const double lost = x->bite_to - leaving(x, layer, z, angle, x->bite_to, &ignored);
+    s.to = fmin(most, x->bite_to + 1.2 * lost + 0.1);
+    return s;
+}
+
+/* ub/sr/MeV */
+static double spectrum(const struct part *p, const bh_inclusive *in, double kinetic)
+{
+    const double momentum = sqrt(kinetic * (kinetic + 2 * in->mass));
+    const bh_transfer at = bh_inclusive_transfer(in, momentum);
+    const int a = p->encounter.a;
+    double tail, soft;
+    if (p->kind == TAIL) {
+        bh_radiative_tail_exact(&p->encounter, in->angle, 1, &kinetic, &tail);
+        bh_radiative_tail_soft(&p->encounter, in->angle, 1, &kinetic, &soft);
+        return tail * soft;
+    }
+    if (p->kind == QUASI_ELASTIC)
+        return bh_quasi_outside(&p->nucleus, &at) ? 0
+                                                  : bh_quasi_cross_section(&p->nucleus, in, &at);
+    return bh_inelastic_outside(a, &at) ? 0 : bh_inelastic_cross_section(a, in, &at);
+}
+
+/* ub: one energy of a spectrum */
 static double throw_inclusive(const struct thrown *t, double z, const struct direction *d)
 {
     const struct scene *x = t->scene;
     const struct part *p = t->part;
-    const double mass = p->beam.mass;
-    struct matter before, behind;
-    double u[2], from = 0;
-    const bh_inclusive in = {mass, beam_at(x, p->layer, z, &before), d->angle};
-    if (x->arm->arm.energy_cut.given)
-        from = line_at(t, d->angle) - x->arm->arm.energy_cut.value;
-    if (x->bite)
-        from = fmax(from, x->bite_from);
-    from = fmax(from, 0);
-    double to = in.kinetic;
-    if (x->bite) { /* none that loses enough to fit starts above this */
-        const double left = leaving(x, p->layer, z, d->angle, x->bite_to, &behind);
-        to = fmin(to, x->bite_to + 1.2 * (x->bite_to - left) + 0.1);
+    struct matter ignored;
+    double u[2];
+    const bh_inclusive in = {p->beam.mass,
+                             p->beside ? p->kinetic : beam_at(x, p->layer, z, &ignored), d->angle};
+    double most = in.kinetic;
+    if (p->kind == TAIL) {
+        const double line = scattered_kinetic(in.mass, p->encounter.target, most, d->angle);
+        most = line - 0.03 * (line + in.mass);
     }
+    const struct span s = energies(t, p->layer, z, d->angle, most);
     even_pair(t->seed, t->number, 2, u);
-    const double kinetic = from + (to - from) * u[0];
-    if (!(to > from))
+    const double kinetic = s.from + (s.to - s.from) * u[0];
+    if (!(s.to > s.from) || !measured(t, d))
         return 0;
-    const double arrives = leaving(x, p->layer, z, d->angle, kinetic, &behind);
-    if (!measured(t, d))
-        return 0;
+    const double arrives =
+        p->beside ? kinetic : leaving(x, p->layer, z, d->angle, kinetic, &ignored);
     if (!(arrives > 0) || (x->bite && (arrives < x->bite_from || arrives > x->bite_to)))
         return 0;
-    const bh_transfer at = bh_inclusive_transfer(&in, sqrt(kinetic * (kinetic + 2 * mass)));
-    const int a = p->encounter.a;
-    if (p->kind == QUASI_ELASTIC)
-        return bh_quasi_outside(&p->nucleus, &at)
-                   ? 0
-                   : (to - from) * bh_quasi_cross_section(&p->nucleus, &in, &at);
-    return bh_inelastic_outside(a, &at) ? 0 : (to - from) * bh_inelastic_cross_section(a, &in, &at);
+    return (s.to - s.from) * spectrum(p, &in, kinetic);
 }
 
 /* Hz */

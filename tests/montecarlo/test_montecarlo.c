@@ -4,12 +4,12 @@
  * hardest collision before and behind: all thrown.  Shared with the program are the plan and the
  * materials as read, constants, and what holds at one point: the elastic cross section of an event,
  * the share that internal radiation leaves inside a cut, and the spectra of quasi-elastic and
- * inelastic scattering.  Everything else is written down once more here and beside: kinematics,
- * losses, geometry, acceptances, bins, bites, cuts, views, nuclei.
+ * inelastic scattering and of the hard tail of a line.  Everything else is written down once more
+ * here and beside: kinematics, losses, geometry, acceptances, bins, bites, cuts, views, nuclei.
  *
  * As the program states it: cross sections belong to the energy at the collision, before photons;
- * photons and single collisions count apart.  Left out: hard tails of lines that are background and
- * electrons of atoms, both below 1e-4 of the counts of these plans.
+ * photons and single collisions count apart.  Left out: hard tails of the named particle's lines
+ * that are background and electrons of atoms, both below 1e-4 of the counts of these plans.
  *
  * MONTE_CARLO_EVENTS: how many events of each plan and seed, 200000 without; MONTE_CARLO_PLAN: one
  * plan alone; MONTE_CARLO_TELL: print every rate. */
@@ -31,7 +31,7 @@ static const uint64_t seeds[] = {20240229, 271828, 1609344};
  * none in the middle. */
 static const double of_arms = 1e-4, of_beneath = 1e-3, of_bins = 1e-3, of_bins_along = 1e-2;
 
-enum { MOST_PARTS = 96, PILOT = 32, LEAST = 64 };
+enum { MOST_PARTS = 128, PILOT = 32, LEAST = 64 };
 
 /* --- what can happen --- */
 
@@ -57,7 +57,7 @@ static void add_part(struct parts *to, const struct scene *x, struct part part)
     p->encounter.beam = &p->beam;
     p->encounter.charge = p->beam.charge;
     p->encounter.kinetic = p->kinetic;
-    if (p->kind == ELASTIC) {
+    if (p->kind <= TAIL) {
         const char *name = structure_for(x->plan, &p->encounter);
         p->structure = bh_structure_new(name, p->encounter.z, p->encounter.a, &err);
         p->encounter.structure = p->structure;
@@ -65,6 +65,18 @@ static void add_part(struct parts *to, const struct scene *x, struct part part)
     } else if (p->kind == QUASI_ELASTIC &&
                bh_quasi_find(p->encounter.z, p->encounter.a, BH_QUASI_SCALING, &p->nucleus, NULL))
         to->count--; /* too light: not computed */
+}
+
+/* Of leptons: what is no line. */
+static void add_spectra(struct parts *to, const struct scene *x, struct part part)
+{
+    part.signal = false;
+    part.kind = QUASI_ELASTIC;
+    if (part.encounter.a > 2)
+        add_part(to, x, part);
+    part.kind = INELASTIC;
+    if (part.encounter.z == 1 && part.encounter.a <= 2)
+        add_part(to, x, part);
 }
 
 /* Other particles of the beam, of the same momentum; the program takes them without losses. */
@@ -79,6 +91,11 @@ static void add_beside(struct parts *to, const struct scene *x, struct part part
         other.beam = beam->others[i].particle;
         other.kinetic = sqrt(p2 + other.beam.mass * other.beam.mass) - other.beam.mass;
         other.rate *= beam->others[i].share.value / beam->fraction.value;
+        add_part(to, x, other);
+        if (other.beam.kind != BH_KIND_LEPTON)
+            continue;
+        add_spectra(to, x, other);
+        other.kind = TAIL;
         add_part(to, x, other);
     }
 }
@@ -103,13 +120,8 @@ static void add_nuclide(struct parts *to, const struct scene *x, size_t layer,
         return;
     add_part(to, x, part);
     add_beside(to, x, part);
-    part.signal = false;
-    part.kind = QUASI_ELASTIC;
-    if (beam->particle.kind == BH_KIND_LEPTON && c->a > 2)
-        add_part(to, x, part);
-    part.kind = INELASTIC;
-    if (beam->particle.kind == BH_KIND_LEPTON && c->z == 1 && c->a <= 2)
-        add_part(to, x, part);
+    if (beam->particle.kind == BH_KIND_LEPTON)
+        add_spectra(to, x, part);
 }
 
 static void make_parts(struct parts *to, const struct scene *x)
