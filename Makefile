@@ -83,7 +83,7 @@ globals:                                                 ## no writable data in 
 sanitize:                                                ## the tests under ASan and UBSan
 	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
 valgrind:                                                ## the tests under valgrind
-	@CK_FORK=no MONTE_CARLO_EVENTS=3000 $(MAKE) check-run HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
+	@CK_FORK=no MONTE_CARLO_EVENTS=20000 $(MAKE) check-run HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
 valgrind-demo: all                                       ## the main job under valgrind: the demonstrations' tables, one explained row
 	@for c in $(patsubst %,'table --bins %',$(wildcard plans/*.yaml)) 'explain plans/hydrogen-separation.yaml low-1'; do \
 	 valgrind -q --leak-check=full --error-exitcode=99 $(BUILD)/beamhours $$c >$(BUILD)/valgrind.out 2>&1 || { cat $(BUILD)/valgrind.out; exit 1; }; done
