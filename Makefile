@@ -46,6 +46,7 @@ TTY := $(filter $(BUILD)/tests/terminal/%,$(call bin,$(TESTS) $(BENCH)))
 $(TTY): $(BUILD)/tests/terminal/tty.o
 $(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $(filter %.o,$^) $(filter %.a,$^) $(TEST_LIBS) $(FRONT_LIBS) $(LIBS)
 $(call bin,$(filter %_faults.c,$(TESTS))): LDFLAGS += $(patsubst %,-Xlinker --wrap=%,malloc calloc realloc write fsync fchmod close rename)
+$(call bin,$(filter %_slow.c,$(TESTS))): LDFLAGS += -Xlinker --wrap=bh_structure_eval
 $(call bin,$(FUZZ)): %: %.o $(BUILD)/libbeamhours.a ; $(LINK) -fsanitize=fuzzer $^ $(LIBS)
 $(BUILD)/%.o: %.c $(BUILD)/flags ; $(quiet) mkdir -p $(@D) && $(CC) $(ALL_C) -MMD -MP -c -o $@ $<
 $(COMPLETE): $(BUILD)/completions/%: include/beamhours/command/options.h src/complete.awk

@@ -1,0 +1,151 @@
+/* test_slow.c - a structure model that takes its time, in this program only: no key waits for it,
+ * and what a newer value overtakes is given up. */
+#include "../suite.h"
+
+#include <gsl/gsl_errno.h>
+#include <stdatomic.h>
+#include <stdlib.h>
+#include <unistd.h>
+
+#include "beamhours/base/file.h"
+#include "beamhours/physics/structure.h"
+#include "driven.h"
+
+/* Linked in the place of bh_structure_eval (--wrap). */
+void __real_bh_structure_eval(const bh_structure *structure, size_t n, const double *q2,
+                              double *ge2, double *gm2);
+void __wrap_bh_structure_eval(const bh_structure *structure, size_t n, const double *q2,
+                              double *ge2, double *gm2);
+
+static atomic_bool slow;
+static atomic_size_t calls;
+
+void __wrap_bh_structure_eval(const bh_structure *structure, size_t n, const double *q2,
+                              double *ge2, double *gm2)
+{
+    (void)atomic_fetch_add(&calls, 1U);
+    if (atomic_load(&slow)) {
+        const struct timespec pause = {0, 3000000};
+        nanosleep(&pause, NULL);
+    }
+    __real_bh_structure_eval(structure, n, q2, ge2, gm2);
+}
+
+static const char plan[] =
+    "plan: 1\n"
+    "beam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uA}\n"
+    "target: {name: cell, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 50 mm}]}\n"
+    "arms: [{name: A, in_plane: \u00B128 mrad, out_of_plane: \u00B170 mrad, energy_cut: 9 MeV}]\n"
+    "settings: [{name: K, angle: {from: 20 deg, to: 90 deg, count: 36}, goal: 1 %}]\n";
+
+static bh_desk *open_desk(const char *path)
+{
+    static const char *const folders[] = {"materials", NULL};
+    bh_error err = {.code = BH_OK};
+    gsl_set_error_handler_off();
+    ck_assert(!bh_file_write(path, plan, strlen(plan), &err));
+    bh_desk *desk = bh_desk_open(&(bh_desk_start){.path = path, .folders = folders}, &err);
+    ck_assert_msg(desk != NULL, "%s", err.text);
+    bh_desk_resize(desk, 24, 80);
+    return desk;
+}
+
+/* Presses a key and draws at once, as the terminal does; returns the seconds of this thread. */
+static double press(bh_desk *desk, const char *key, bh_text *screen)
+{
+    struct timespec from, to;
+    bh_press p;
+    clock_gettime(CLOCK_THREAD_CPUTIME_ID, &from);
+    const double start = driven_now();
+    (void)driven_key(key, &p);
+    bh_desk_press(desk, &p, start);
+    (void)bh_desk_tend(desk, start);
+    (void)bh_desk_news(desk);
+    screen->length = 0;
+    driven_draw(desk, screen);
+    clock_gettime(CLOCK_THREAD_CPUTIME_ID, &to);
+    ck_assert_double_lt(driven_now() - start, 5); /* it waited for nothing */
+    return (double)(to.tv_sec - from.tv_sec) + 1e-9 * (double)(to.tv_nsec - from.tv_nsec);
+}
+
+static bool wait_for(bh_desk *desk, const char *text, bh_text *screen)
+{
+    const double start = driven_now();
+    while (driven_now() - start < 60) {
+        (void)bh_desk_tend(desk, driven_now());
+        (void)bh_desk_news(desk);
+        screen->length = 0;
+        driven_draw(desk, screen);
+        if (strstr(screen->bytes, text))
+            return true;
+        struct pollfd from = {bh_desk_wake(desk), POLLIN, 0};
+        (void)poll(&from, 1, 20);
+    }
+    return false;
+}
+
+START_TEST(no_key_waits)
+{
+    char path[] = "/tmp/beamhours-slow-XXXXXX";
+    const int file = mkstemp(path);
+    ck_assert_int_ge(file, 0);
+    close(file);
+    bh_text screen = {0};
+    bh_desk *desk = open_desk(path);
+    ck_assert(driven_settle(desk));
+    ck_assert_uint_eq(bh_desk_evaluated(desk), 36);
+    atomic_store(&slow, true);
+    const char *keys[] = {"l", "e", "n", "e", "r", "g", "y", "<Escape>", "8", "6", "0", " ",
+                          "M", "e", "V", "<Up>", "<Up>", "<Up>"};
+    double most = 0;
+    for (size_t i = 0; i < sizeof keys / sizeof *keys; i++) {
+        const double took = press(desk, keys[i], &screen);
+        most = took > most ? took : most;
+    }
+    ck_assert_double_lt(most, 0.1); /* s of the processor */
+    ck_assert_msg(wait_for(desk, "computing", &screen), "%s", screen.bytes);
+    /* it says how much is left, and goes on saying it */
+    ck_assert_msg(wait_for(desk, " of 36", &screen), "%s", screen.bytes);
+    /* the value is dropped in the middle: the old table is there at once */
+    (void)press(desk, "<Escape>", &screen);
+    ck_assert_ptr_null(strstr(screen.bytes, "PROVISIONAL"));
+    ck_assert_ptr_nonnull(strstr(screen.bytes, "855 MeV"));
+    atomic_store(&slow, false);
+    ck_assert(driven_settle(desk));
+    ck_assert_uint_lt(bh_desk_evaluated(desk), 36 + 36); /* overtaken values were given up */
+    bh_desk_close(desk);
+    bh_text_free(&screen);
+    unlink(path);
+}
+END_TEST
+
+/* Closing does not wait for a long computation either. */
+START_TEST(leaves_at_once)
+{
+    char path[] = "/tmp/beamhours-slow-XXXXXX";
+    const int file = mkstemp(path);
+    ck_assert_int_ge(file, 0);
+    close(file);
+    atomic_store(&slow, true);
+    const size_t before = atomic_load(&calls);
+    bh_desk *desk = open_desk(path);
+    bh_text screen = {0};
+    ck_assert(wait_for(desk, "computing", &screen));
+    while (atomic_load(&calls) == before)
+        (void)bh_desk_tend(desk, driven_now());
+    bh_desk_close(desk);
+    const size_t after = atomic_load(&calls);
+    ck_assert_uint_lt(after - before, 400); /* the whole table takes some thousands */
+    bh_text_free(&screen);
+    unlink(path);
+}
+END_TEST
+
+int main(void)
+{
+    TCase *tests = tcase_create("slow");
+    tcase_set_timeout(tests, 300);
+    tcase_add_test(tests, no_key_waits);
+    tcase_add_test(tests, leaves_at_once);
+    return run_suite("screen/slow", tests);
+}
