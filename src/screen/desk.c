@@ -244,6 +244,9 @@ double bh_desk_tend(bh_desk *desk, double now)
 {
     bh_model *m = &desk->model;
     double wait = bh_keeper_tend(&desk->keeper, m, now);
+    if (m->abandon && desk->worker)
+        bh_worker_abandon(desk->worker);
+    m->abandon = false;
     if (m->job_due && m->edit && desk->worker)
         begin_job(desk);
     if (m->over == BH_OVER_SOLVE && m->solving.due)

@@ -8,6 +8,8 @@
 
 /* --- which columns stand where --- */
 
+enum { WIDE = 100 }; /* there room for the old value is always kept: nothing has to be redrawn */
+
 static void place(bh_column_places *p, int index, int width, int *at)
 {
     p->index[p->count] = index;
@@ -37,7 +39,8 @@ static bool place_from(const bh_model *model, const bh_arrangement *places, int 
                        bh_column_places *p)
 {
     const bh_table_view *v = &model->table;
-    const int was = compares(model) ? width_of_was(v) : 0;
+    const bool compared = compares(model), wide = places->table_columns >= WIDE;
+    const int was = compared || wide ? width_of_was(v) : 0;
     const int end = places->table_column + places->table_columns;
     bool focus = false;
     int at = places->table_column;
@@ -52,7 +55,7 @@ static bool place_from(const bh_model *model, const bh_arrangement *places, int 
         focus = focus || i == v->column;
     }
     at = end - was;
-    if (was)
+    if (compared)
         place(p, -1, was, &at);
     return focus;
 }
@@ -189,14 +192,13 @@ static void draw_heads(const bh_model *model, const bh_arrangement *places,
 
 /* --- rows --- */
 
-/* The name of a row that changed, and the column that is compared, stand out; which other columns
- * changed is marked in their heads, lest every digit of a large table be sent twice. */
+/* The column that is compared stands out; which others changed is marked in their heads, and a row
+ * that is still of before by its name: else every cell of a large table would be sent twice. */
 static bh_look look_of(const bh_model *model, const bh_table_row *row, int column)
 {
-    const bool named = column == BH_COL_SETTING && row->change > 0;
     if (row->stale)
-        return BH_LOOK_STALE;
-    if (named || (column == model->table.compared && bh_table_changed(row, column)))
+        return column == BH_COL_SETTING ? BH_LOOK_STALE : BH_LOOK_PLAIN;
+    if (column == model->table.compared && bh_table_changed(row, column))
         return model->trying ? BH_LOOK_TRIAL : BH_LOOK_CHANGED;
     return BH_LOOK_PLAIN;
 }

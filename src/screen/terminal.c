@@ -130,8 +130,7 @@ static void set_looks(struct terminal *t)
     const short blue = many ? 32 : COLOR_CYAN, orange = many ? 166 : COLOR_YELLOW;
     (void)init_pair(1, blue, ground);
     (void)init_pair(2, orange, ground);
-    t->pairs[BH_LOOK_TRIAL] = t->pairs[BH_LOOK_CHANGED] = t->pairs[BH_LOOK_FIELD] = 1;
-    t->pairs[BH_LOOK_KEY] = 1;
+    t->pairs[BH_LOOK_FIELD] = t->pairs[BH_LOOK_KEY] = 1;
     t->pairs[BH_LOOK_CAUTION] = t->pairs[BH_LOOK_WARNING] = t->pairs[BH_LOOK_ERROR] = 2;
     if (!many) { /* on a light ground these two are too pale: their attributes carry them */
         t->looks[BH_LOOK_TRIAL] |= A_UNDERLINE;

@@ -36,6 +36,14 @@ size_t bh_model_errors(const bh_model *model, const char *bytes, size_t length, 
     return errors;
 }
 
+/* Is it the whole table of the text as it is kept? */
+static bool is_of_text(const bh_model *model, const bh_outcome *o)
+{
+    size_t length = 0;
+    const char *bytes = bh_edit_bytes(model->edit, &length);
+    return o && o->complete && o->of->length == length && memcmp(o->of->bytes, bytes, length) == 0;
+}
+
 static void stop_trying(bh_model *model)
 {
     model->trying = false;
@@ -44,6 +52,13 @@ static void stop_trying(bh_model *model)
         bh_outcome *kept = bh_outcome_share(model->kept);
         bh_outcome_leave(model->now);
         model->now = kept;
+    }
+    if (is_of_text(model, model->kept)) { /* nothing is to be computed */
+        model->job = model->kept->job;
+        model->job_due = false;
+        model->abandon = true;
+    } else {
+        model->job_due = true;
     }
     bh_table_refresh(model);
 }
@@ -107,7 +122,6 @@ void bh_value_attempt(bh_model *model, const char *text)
     if (!can || trial.failed || same) {
         bh_text_free(&trial);
         stop_trying(model);
-        model->job_due = true;
         return;
     }
     bh_text_free(&model->trial);
@@ -158,7 +172,6 @@ void bh_value_begin_key(bh_model *model, const char *path, const char *example)
 void bh_value_leave(bh_model *model)
 {
     model->over = BH_OVER_NOTHING;
-    model->job_due = model->job_due || model->trying;
     copy(model->why, sizeof model->why, "");
     stop_trying(model);
 }
@@ -180,13 +193,9 @@ static bool spoils(bh_model *model)
 /* What the worker found for the trial is that of the text from now on. */
 static void promote(bh_model *model)
 {
-    size_t length = 0;
-    const char *bytes = bh_edit_bytes(model->edit, &length);
-    const bh_outcome *now = model->now;
     model->trying = false;
     bh_text_free(&model->trial);
-    if (now && now->complete && now->of->length == length &&
-        memcmp(now->of->bytes, bytes, length) == 0) {
+    if (is_of_text(model, model->now)) {
         bh_outcome_leave(model->kept);
         model->kept = bh_outcome_share(model->now);
     } else {

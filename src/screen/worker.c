@@ -367,6 +367,14 @@ size_t bh_worker_begin(bh_worker *worker, const bh_job *job)
     return number;
 }
 
+void bh_worker_abandon(bh_worker *worker)
+{
+    (void)pthread_mutex_lock(&worker->lock);
+    drop_job(&worker->waiting);
+    atomic_store(&worker->newest, ++worker->numbers);
+    (void)pthread_mutex_unlock(&worker->lock);
+}
+
 int bh_worker_wake(const bh_worker *worker)
 {
     return worker->wake[0];

@@ -31,6 +31,9 @@ typedef struct {
 /* Begins it, abandoning the one before.  Returns its number, 0 when there is no memory. */
 size_t bh_worker_begin(bh_worker *worker, const bh_job *job);
 
+/* Gives up the job it works on; none follows. */
+void bh_worker_abandon(bh_worker *worker);
+
 /* A file descriptor that can be read when something has been handed back. */
 int bh_worker_wake(const bh_worker *worker);
 
