@@ -4,6 +4,21 @@
 
 #include "beamhours/screen/asking.h"
 
+bh_reading_of *bh_worker_read(bh_worker *worker, int which, const char *bytes, size_t length)
+{
+    bh_reading_of *last = worker->last[which];
+    if (last && last->length == length && memcmp(last->bytes, bytes, length) == 0)
+        return bh_reading_of_share(last);
+    bh_reading_of *made = bh_reading_of_new(bytes, length);
+    if (!made)
+        return NULL;
+    made->plan = bh_plan_read(made->bytes, length, worker->name, NULL, 0, worker->libraries[which],
+                              made->said);
+    bh_reading_of_leave(last);
+    worker->last[which] = bh_reading_of_share(made);
+    return made;
+}
+
 void bh_reply_free(bh_reply *answer)
 {
     if (!answer)

@@ -240,29 +240,43 @@ static void ask_to_solve(bh_desk *d)
     s->waiting = s->asked != 0;
 }
 
+/* The curve is asked for once typing pauses; returns [s] until then, below 0: nothing is due. */
+static double mind_curve(bh_desk *d, double now)
+{
+    bh_model *m = &d->model;
+    if (!m->curve_due || bh_arrange(m).curve < 0 || !bh_model_current(m) || !bh_table_here(m))
+        return -1;
+    const double left = pause_first - (now - d->pressed);
+    if (left > 0)
+        return left;
+    m->curve_due = false;
+    ask_about_row(d, BH_ASK_CURVE);
+    return -1;
+}
+
+static void mind_job(bh_desk *d)
+{
+    bh_model *m = &d->model;
+    if (m->abandon && d->worker)
+        bh_worker_abandon(d->worker);
+    m->abandon = false;
+    if (m->job_due && m->edit && d->worker)
+        begin_job(d);
+}
+
 double bh_desk_tend(bh_desk *desk, double now)
 {
     bh_model *m = &desk->model;
-    double wait = bh_keeper_tend(&desk->keeper, m, now);
-    if (m->abandon && desk->worker)
-        bh_worker_abandon(desk->worker);
-    m->abandon = false;
-    if (m->job_due && m->edit && desk->worker)
-        begin_job(desk);
+    const double wait = bh_keeper_tend(&desk->keeper, m, now);
+    mind_job(desk);
     if (m->over == BH_OVER_SOLVE && m->solving.due)
         ask_to_solve(desk);
     if (m->explain_due && bh_table_here(m)) {
         m->explain_due = false;
         ask_about_row(desk, BH_ASK_EXPLAIN);
     }
-    if (m->curve_due && bh_arrange(m).curve >= 0 && bh_model_current(m) && bh_table_here(m)) {
-        const double left = pause_first - (now - desk->pressed);
-        if (left > 0)
-            return wait < 0 || left < wait ? left : wait;
-        m->curve_due = false;
-        ask_about_row(desk, BH_ASK_CURVE);
-    }
-    return wait;
+    const double curve = mind_curve(desk, now);
+    return wait < 0 || (curve >= 0 && curve < wait) ? curve : wait;
 }
 
 int bh_desk_wake(const bh_desk *desk)

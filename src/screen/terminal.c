@@ -10,6 +10,7 @@
 #include <poll.h>
 #include <signal.h>
 #include <stdint.h>
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 #include <sys/ioctl.h>
@@ -17,17 +18,7 @@
 #include <time.h>
 #include <unistd.h>
 
-/* What signal handlers see: the one place of the program with writable data of its own. */
-static struct {
-    volatile sig_atomic_t resized, ended, resumed;
-    volatile sig_atomic_t screen_on;
-    bh_rescue *rescue;
-    const char *mark; /* the file that says the plan is open */
-    struct termios before;
-    char leave[256]; /* what puts the terminal back */
-    size_t leave_length;
-    struct sigaction crash_before;
-} alarm_bell;
+#include "beamhours/screen/alarm.h"
 
 struct terminal {
     bh_desk *desk;
@@ -38,75 +29,6 @@ struct terminal {
     short pairs[BH_LOOK_COUNT];
     bool drawn;
 };
-
-/* --- signals --- */
-
-static void on_resize(int number)
-{
-    (void)number;
-    alarm_bell.resized = 1;
-}
-
-static void on_end(int number)
-{
-    alarm_bell.ended = number;
-}
-
-static void on_resume(int number)
-{
-    (void)number;
-    alarm_bell.resumed = 1;
-}
-
-/* The program itself failed: save what there is, put the terminal back, and fail as before. */
-static void on_crash(int number)
-{
-    const int kept = errno;
-    if (alarm_bell.rescue)
-        (void)bh_rescue_write(alarm_bell.rescue);
-    if (alarm_bell.mark)
-        (void)unlink(alarm_bell.mark);
-    if (alarm_bell.screen_on) {
-        const ssize_t n = write(STDOUT_FILENO, alarm_bell.leave, alarm_bell.leave_length);
-        (void)n;
-        (void)tcsetattr(STDIN_FILENO, TCSANOW, &alarm_bell.before);
-    }
-    errno = kept;
-    (void)signal(number, SIG_DFL);
-    (void)raise(number);
-}
-
-static void catch_signals(void)
-{
-    static const int ends[] = {SIGINT, SIGTERM, SIGHUP, SIGQUIT};
-    static const int crashes[] = {SIGSEGV, SIGBUS, SIGFPE, SIGILL, SIGABRT};
-    struct sigaction act = {.sa_handler = on_resize};
-    (void)sigemptyset(&act.sa_mask);
-    (void)sigaction(SIGWINCH, &act, NULL);
-    act.sa_handler = on_resume;
-    (void)sigaction(SIGCONT, &act, NULL);
-    act.sa_handler = on_end;
-    for (size_t i = 0; i < sizeof ends / sizeof ends[0]; i++)
-        (void)sigaction(ends[i], &act, NULL);
-    act.sa_handler = on_crash;
-    act.sa_flags = (int)SA_RESETHAND;
-    for (size_t i = 0; i < sizeof crashes / sizeof crashes[0]; i++)
-        (void)sigaction(crashes[i], &act, NULL);
-    (void)signal(SIGPIPE, SIG_IGN);
-}
-
-static void block(bool on, sigset_t *before)
-{
-    sigset_t set;
-    (void)sigemptyset(&set);
-    (void)sigaddset(&set, SIGWINCH);
-    (void)sigaddset(&set, SIGCONT);
-    (void)sigaddset(&set, SIGINT);
-    (void)sigaddset(&set, SIGTERM);
-    (void)sigaddset(&set, SIGHUP);
-    (void)sigaddset(&set, SIGQUIT);
-    (void)sigprocmask(on ? SIG_BLOCK : SIG_UNBLOCK, &set, before);
-}
 
 /* --- looks --- */
 
@@ -148,21 +70,17 @@ bool bh_terminal_unicode(void)
     return strcmp(nl_langinfo(CODESET), "UTF-8") == 0;
 }
 
-/* Without the pauses, `$<5>`, that only old terminals need. */
-static void keep_capability(const char *name)
+/* How the terminal is put back, for the day the program itself cannot. */
+static void keep_way_back(const struct termios *before)
 {
-    char capability[8];
-    (void)strncpy(capability, name, sizeof capability - 1);
-    capability[sizeof capability - 1] = '\0';
-    const char *text = tigetstr(capability);
-    if ((intptr_t)text <= 0) /* -1: no such capability */
-        return;
-    for (; *text && alarm_bell.leave_length + 1 < sizeof alarm_bell.leave; text++) {
-        const char *end = text[0] == '$' && text[1] == '<' ? strchr(text, '>') : NULL;
-        if (end)
-            text = end;
-        else
-            alarm_bell.leave[alarm_bell.leave_length++] = *text;
+    static const char *const names[] = {"sgr0", "rmkx", "cnorm", "rmcup"};
+    bh_alarm_begin(before);
+    for (size_t i = 0; i < sizeof names / sizeof names[0]; i++) {
+        char capability[8];
+        (void)snprintf(capability, sizeof capability, "%s", names[i]);
+        const char *text = tigetstr(capability);
+        if ((intptr_t)text > 0) /* -1: no such capability */
+            bh_alarm_way_back(text);
     }
 }
 
@@ -184,42 +102,36 @@ static void set_modes(void)
 
 static bool begin(struct terminal *t)
 {
-    if (!isatty(STDIN_FILENO) || !isatty(STDOUT_FILENO) ||
-        tcgetattr(STDIN_FILENO, &alarm_bell.before))
+    struct termios before;
+    if (!isatty(STDIN_FILENO) || !isatty(STDOUT_FILENO) || tcgetattr(STDIN_FILENO, &before))
         return false;
-    catch_signals();
+    bh_alarm_catch();
     const char *name = getenv("TERM");
     t->screen = name && strcmp(name, "dumb") != 0 ? newterm(NULL, stdout, stdin) : NULL;
     if (!t->screen || (intptr_t)tigetstr("cup") <= 0)
         return false;
-    alarm_bell.leave_length = 0;
-    keep_capability("sgr0");
-    keep_capability("rmkx");
-    keep_capability("cnorm");
-    keep_capability("rmcup");
+    keep_way_back(&before);
     set_modes();
     set_looks(t);
-    alarm_bell.screen_on = 1;
+    bh_alarm_screen(true);
     return true;
 }
 
 static void end(struct terminal *t)
 {
-    alarm_bell.screen_on = 0;
+    bh_alarm_screen(false);
     if (t->screen) {
         (void)endwin();
         delscreen(t->screen);
     }
     bh_canvas_free(&t->shown);
     bh_canvas_free(&t->wanted);
-    alarm_bell.rescue = NULL;
-    alarm_bell.mark = NULL;
+    bh_alarm_keep(NULL, NULL);
 }
 
 static void set_size(struct terminal *t)
 {
     struct winsize size;
-    alarm_bell.resized = 0;
     if (ioctl(STDOUT_FILENO, TIOCGWINSZ, &size) || size.ws_row < 1 || size.ws_col < 1) {
         size.ws_row = 24;
         size.ws_col = 80;
@@ -236,18 +148,17 @@ static void set_size(struct terminal *t)
 
 static void suspend(struct terminal *t)
 {
-    alarm_bell.screen_on = 0;
+    bh_alarm_screen(false);
     (void)endwin();
     (void)signal(SIGTSTP, SIG_DFL);
     (void)kill(0, SIGTSTP); /* the whole job, as the terminal would do it */
-    alarm_bell.screen_on = 1;
-    alarm_bell.resumed = 1;
+    bh_alarm_screen(true);
+    bh_alarm_resume();
     (void)t;
 }
 
 static void resume(struct terminal *t)
 {
-    alarm_bell.resumed = 0;
     (void)reset_prog_mode();
     set_modes();
     (void)clearok(stdscr, TRUE);
@@ -365,7 +276,7 @@ static bool read_keys(struct terminal *t, bool *some)
         const bh_press press = kind == KEY_CODE_YES ? key_press(code) : point_press(code);
         bh_desk_press(t->desk, &press, now());
         any = true;
-        if (alarm_bell.resized)
+        if (bh_alarm_resized())
             set_size(t);
     }
     *some = *some || any;
@@ -414,13 +325,13 @@ static bool wait_for_more(struct loop *l, double most)
 
 static void mind_signals(struct loop *l)
 {
-    if (alarm_bell.resized) {
+    if (bh_alarm_resized()) {
         set_size(l->t);
         l->dirty = true;
     }
     if (bh_desk_suspends(l->t->desk))
         suspend(l->t);
-    if (alarm_bell.resumed) {
+    if (bh_alarm_resumed()) {
         resume(l->t);
         l->dirty = true;
     }
@@ -444,33 +355,32 @@ static void run(struct loop *l)
 {
     bh_desk *desk = l->t->desk;
     bool there = true;
-    while (there && !bh_desk_over(desk) && !alarm_bell.ended) {
+    while (there && !bh_desk_over(desk) && !bh_alarm_ended()) {
         mind_signals(l);
-        alarm_bell.rescue = bh_desk_rescue(desk);
-        alarm_bell.mark = bh_desk_mark(desk);
+        bh_alarm_keep(bh_desk_rescue(desk), bh_desk_mark(desk));
         double wait = bh_desk_tend(desk, now());
         draw_when_due(l, &wait);
         there = wait_for_more(l, wait);
     }
-    if (!there && !alarm_bell.ended)
-        alarm_bell.ended = SIGHUP;
+    if (!there && !bh_alarm_ended())
+        bh_alarm_end(SIGHUP);
 }
 
 bh_terminal_end bh_terminal_run(bh_desk *desk, int *signal)
 {
     struct terminal t = {.desk = desk};
     struct loop l = {.t = &t, .dirty = true};
-    alarm_bell.resized = alarm_bell.ended = alarm_bell.resumed = 0;
+    bh_alarm_clear();
     *signal = 0;
     if (!begin(&t)) {
         end(&t);
         return BH_TERMINAL_NONE;
     }
-    block(true, &l.during);
+    bh_alarm_block(true, &l.during);
     set_size(&t);
     run(&l);
     end(&t);
-    block(false, NULL);
-    *signal = alarm_bell.ended;
+    bh_alarm_block(false, NULL);
+    *signal = bh_alarm_ended();
     return *signal ? BH_TERMINAL_SIGNAL : BH_TERMINAL_DONE;
 }

@@ -35,21 +35,6 @@ void bh_worker_ring(bh_worker *worker)
     (void)written;
 }
 
-bh_reading_of *bh_worker_read(bh_worker *worker, int which, const char *bytes, size_t length)
-{
-    bh_reading_of *last = worker->last[which];
-    if (last && last->length == length && memcmp(last->bytes, bytes, length) == 0)
-        return bh_reading_of_share(last);
-    bh_reading_of *made = bh_reading_of_new(bytes, length);
-    if (!made)
-        return NULL;
-    made->plan = bh_plan_read(made->bytes, length, worker->name, NULL, 0, worker->libraries[which],
-                              made->said);
-    bh_reading_of_leave(last);
-    worker->last[which] = bh_reading_of_share(made);
-    return made;
-}
-
 /* --- the first thread: tables --- */
 
 struct doing {

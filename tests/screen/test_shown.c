@@ -128,8 +128,8 @@ static void leave_folder(const char *folder)
     ck_assert_int_eq(system(command), 0);
 }
 
-/* Numbers have tests of their own, and change a little whenever physics gets better: here a digit is
- * a digit.  The files hold the digits as they were when they were written. */
+/* Numbers have tests of their own, and change a little whenever physics gets better: here a digit
+ * is a digit.  The files hold the digits as they were when they were written. */
 static bool alike(const bh_text *a, const bh_text *b)
 {
     if (a->length != b->length)

@@ -95,8 +95,8 @@ START_TEST(no_key_waits)
     ck_assert(driven_settle(desk));
     ck_assert_uint_eq(bh_desk_evaluated(desk), 36);
     atomic_store(&slow, true);
-    const char *keys[] = {"l", "e", "n", "e", "r", "g", "y", "<Escape>", "8", "6", "0", " ",
-                          "M", "e", "V", "<Up>", "<Up>", "<Up>"};
+    const char *keys[] = {"l", "e", "n", "e", "r", "g", "y",    "<Escape>", "8",
+                          "6", "0", " ", "M", "e", "V", "<Up>", "<Up>",     "<Up>"};
     double most = 0;
     for (size_t i = 0; i < sizeof keys / sizeof *keys; i++) {
         const double took = press(desk, keys[i], &screen);

@@ -1,0 +1,34 @@
+/* alarm.h - signals, for the file that shows the screen. */
+#ifndef BH_SCREEN_ALARM_H
+#define BH_SCREEN_ALARM_H
+
+#include <signal.h>
+#include <stdbool.h>
+#include <termios.h>
+
+#include "beamhours/base/rescue.h"
+
+/* Catches what resizes, ends, resumes or fails the program.  There is one of it in a process. */
+void bh_alarm_catch(void);
+void bh_alarm_clear(void);
+
+/* Keeps these signals back (the mask before goes to `before`), or lets them through. */
+void bh_alarm_block(bool on, sigset_t *before);
+
+/* For a failure of the program itself: how the terminal was, what is sent to put it back, whether
+ * it has to be put back, what unsaved work there is and which mark of an open file. */
+void bh_alarm_begin(const struct termios *before);
+void bh_alarm_way_back(const char *text);
+void bh_alarm_screen(bool on);
+void bh_alarm_keep(bh_rescue *rescue, const char *mark);
+
+/* What happened since it was last asked; the signal that is to end the program, or 0. */
+bool bh_alarm_resized(void);
+bool bh_alarm_resumed(void);
+int bh_alarm_ended(void);
+
+/* As if a signal had come. */
+void bh_alarm_resume(void);
+void bh_alarm_end(int number);
+
+#endif

@@ -1,0 +1,148 @@
+/* alarm.c - what signals do: a note for the loop, or, when the program itself fails, the last
+ * things that can be done. */
+#include "beamhours/screen/alarm.h"
+
+#include <errno.h>
+#include <string.h>
+#include <unistd.h>
+
+/* What signal handlers see: the one place of the program with writable data of its own. */
+static struct {
+    volatile sig_atomic_t resized, ended, resumed;
+    volatile sig_atomic_t screen_on;
+    bh_rescue *rescue;
+    const char *mark; /* the file that says the plan is open */
+    struct termios before;
+    char leave[256]; /* what puts the terminal back */
+    size_t leave_length;
+} alarm_bell;
+
+static void on_resize(int number)
+{
+    (void)number;
+    alarm_bell.resized = 1;
+}
+
+static void on_end(int number)
+{
+    alarm_bell.ended = number;
+}
+
+static void on_resume(int number)
+{
+    (void)number;
+    alarm_bell.resumed = 1;
+}
+
+/* The program itself failed: save what there is, put the terminal back, and fail as before. */
+static void on_crash(int number)
+{
+    const int kept = errno;
+    if (alarm_bell.rescue)
+        (void)bh_rescue_write(alarm_bell.rescue);
+    if (alarm_bell.mark)
+        (void)unlink(alarm_bell.mark);
+    if (alarm_bell.screen_on) {
+        const ssize_t n = write(STDOUT_FILENO, alarm_bell.leave, alarm_bell.leave_length);
+        (void)n;
+        (void)tcsetattr(STDIN_FILENO, TCSANOW, &alarm_bell.before);
+    }
+    errno = kept;
+    (void)signal(number, SIG_DFL);
+    (void)raise(number);
+}
+
+void bh_alarm_catch(void)
+{
+    static const int ends[] = {SIGINT, SIGTERM, SIGHUP, SIGQUIT};
+    static const int crashes[] = {SIGSEGV, SIGBUS, SIGFPE, SIGILL, SIGABRT};
+    struct sigaction act = {.sa_handler = on_resize};
+    (void)sigemptyset(&act.sa_mask);
+    (void)sigaction(SIGWINCH, &act, NULL);
+    act.sa_handler = on_resume;
+    (void)sigaction(SIGCONT, &act, NULL);
+    act.sa_handler = on_end;
+    for (size_t i = 0; i < sizeof ends / sizeof ends[0]; i++)
+        (void)sigaction(ends[i], &act, NULL);
+    act.sa_handler = on_crash;
+    act.sa_flags = (int)SA_RESETHAND;
+    for (size_t i = 0; i < sizeof crashes / sizeof crashes[0]; i++)
+        (void)sigaction(crashes[i], &act, NULL);
+    (void)signal(SIGPIPE, SIG_IGN);
+}
+
+void bh_alarm_block(bool on, sigset_t *before)
+{
+    sigset_t set;
+    (void)sigemptyset(&set);
+    (void)sigaddset(&set, SIGWINCH);
+    (void)sigaddset(&set, SIGCONT);
+    (void)sigaddset(&set, SIGINT);
+    (void)sigaddset(&set, SIGTERM);
+    (void)sigaddset(&set, SIGHUP);
+    (void)sigaddset(&set, SIGQUIT);
+    (void)sigprocmask(on ? SIG_BLOCK : SIG_UNBLOCK, &set, before);
+}
+
+void bh_alarm_begin(const struct termios *before)
+{
+    alarm_bell.before = *before;
+    alarm_bell.leave_length = 0;
+}
+
+/* Pauses, `$<5>`, are left out: only old terminals need them. */
+void bh_alarm_way_back(const char *text)
+{
+    for (; *text && alarm_bell.leave_length + 1 < sizeof alarm_bell.leave; text++) {
+        const char *end = text[0] == '$' && text[1] == '<' ? strchr(text, '>') : NULL;
+        if (end)
+            text = end;
+        else
+            alarm_bell.leave[alarm_bell.leave_length++] = *text;
+    }
+}
+
+void bh_alarm_screen(bool on)
+{
+    alarm_bell.screen_on = on;
+}
+
+void bh_alarm_keep(bh_rescue *rescue, const char *mark)
+{
+    alarm_bell.rescue = rescue;
+    alarm_bell.mark = mark;
+}
+
+void bh_alarm_clear(void)
+{
+    alarm_bell.resized = alarm_bell.ended = alarm_bell.resumed = 0;
+}
+
+bool bh_alarm_resized(void)
+{
+    const bool yes = alarm_bell.resized;
+    alarm_bell.resized = 0;
+    return yes;
+}
+
+bool bh_alarm_resumed(void)
+{
+    const bool yes = alarm_bell.resumed;
+    alarm_bell.resumed = 0;
+    return yes;
+}
+
+void bh_alarm_resume(void)
+{
+    alarm_bell.resumed = 1;
+}
+
+int bh_alarm_ended(void)
+{
+    return alarm_bell.ended;
+}
+
+void bh_alarm_end(int number)
+{
+    alarm_bell.ended = number;
+}
