@@ -82,12 +82,14 @@ globals:                                                 ## no writable data in 
 	@$(MAKE) -s CFLAGS=-O0 HARDEN= BUILD=$(BUILD)/globals $(patsubst %.c,$(BUILD)/globals/%.o,$(GUARDED))
 	@objdump -wht $(patsubst %.c,$(BUILD)/globals/%.o,$(GUARDED)) | awk -v objects=$(words $(GUARDED)) -f tests/rules/globals.awk
 sanitize:                                                ## the tests under ASan and UBSan
-	@CK_FORK=no $(MAKE) check-run HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
+	@LSAN_OPTIONS=suppressions=$(CURDIR)/tests/rules/leaks.lsan:print_suppressions=0 CK_FORK=no \
+	 $(MAKE) check-run HARDEN= BUILD=$(BUILD)/san CFLAGS='$(SAN)'
+GRIND := valgrind -q --leak-check=full --error-exitcode=99 --suppressions=$(CURDIR)/tests/rules/leaks.valgrind
 valgrind:                                                ## the tests under valgrind
-	@CK_FORK=no MONTE_CARLO_EVENTS=20000 $(MAKE) check-run HARDEN= BUILD=$(BUILD)/valgrind UNDER='valgrind -q --leak-check=full --error-exitcode=99'
+	@CK_FORK=no MONTE_CARLO_EVENTS=20000 $(MAKE) check-run HARDEN= BUILD=$(BUILD)/valgrind UNDER='$(GRIND)'
 valgrind-demo: all                                       ## the main job under valgrind: the demonstrations' tables, one explained row
 	@for c in $(patsubst %,'table --bins %',$(wildcard plans/*.yaml)) 'explain plans/hydrogen-separation.yaml low-1'; do \
-	 valgrind -q --leak-check=full --error-exitcode=99 $(BUILD)/beamhours $$c >$(BUILD)/valgrind.out 2>&1 || { cat $(BUILD)/valgrind.out; exit 1; }; done
+	 $(GRIND) $(BUILD)/beamhours $$c >$(BUILD)/valgrind.out 2>&1 || { cat $(BUILD)/valgrind.out; exit 1; }; done
 coverage:                                                ## lines of src/ that the tests reach
 	@rm -rf $(BUILD)/cov && $(MAKE) check-run CC=gcc HARDEN= BUILD=$(BUILD)/cov CFLAGS='-O0 -g --coverage'
 	gcovr -r . --object-directory $(BUILD)/cov -f src/ --txt | awk -f tests/rules/coverage.awk
