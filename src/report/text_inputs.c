@@ -4,6 +4,7 @@
 #include <string.h>
 
 #include "beamhours/base/number.h"
+#include "beamhours/report/input_words.h"
 #include "beamhours/report/text_table.h"
 #include "beamhours/units/nuclide.h"
 #include "beamhours/units/quantity.h"
@@ -131,7 +132,7 @@ static void add_particles(bh_text *to, const bh_plan *plan)
     bh_text_append(to, " particles per second in all");
 }
 
-static void beam_line(const bh_plan *plan, bh_text *to)
+void bh_say_beam(const bh_plan *plan, bh_text *to)
 {
     const bh_beam *first = &plan->settings[0].beam;
     bh_text_append(to, first->particle.name);
@@ -168,7 +169,7 @@ static void layer(const bh_layer *l, const char *lead, bh_text *to)
     bh_text_append(to, roles[l->role]);
 }
 
-static void target_line(const bh_target *t, bh_text *to)
+void bh_say_target(const bh_target *t, bh_text *to)
 {
     char name[8];
     if (t->name.text)
@@ -185,7 +186,7 @@ static void target_line(const bh_target *t, bh_text *to)
     }
 }
 
-static void arm_line(const bh_arm *a, bh_text *to)
+void bh_say_arm(const bh_arm *a, bh_text *to)
 {
     static const char *const sides[] = {"right", "left"};
     static const char *const detected[] = {"scattered", "recoil", "either"};
@@ -223,14 +224,14 @@ void bh_report_text_inputs(const bh_selection *view, int width, bh_text *out)
     bh_text piece = {0};
     if (plan->title.text)
         bh_report_wrapped("", plan->title.text, width, out);
-    beam_line(plan, &piece);
+    bh_say_beam(plan, &piece);
     wrapped("beam    ", &piece, width, out);
     for (size_t i = 0; i < plan->target_count; i++) {
-        target_line(&plan->targets[i], &piece);
+        bh_say_target(&plan->targets[i], &piece);
         wrapped("target  ", &piece, width, out);
     }
     for (size_t i = 0; i < plan->arm_count; i++) {
-        arm_line(&plan->arms[i], &piece);
+        bh_say_arm(&plan->arms[i], &piece);
         wrapped("arm     ", &piece, width, out);
     }
     bh_text_append(out, "\n");

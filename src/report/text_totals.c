@@ -4,13 +4,14 @@
 #include <string.h>
 
 #include "beamhours/base/number.h"
+#include "beamhours/report/input_words.h"
 #include "beamhours/report/text_table.h"
 #include "beamhours/units/quantity.h"
 
 enum { NAME = 14, VALUE = 6, BEHIND = 3 };
 
 /* "74.19", "0.576": two decimals of an hour are half a minute, and nobody plans finer. */
-static void hours_text(double hours, char out[BH_NUMBER_SIZE])
+void bh_hours_print(double hours, char out[BH_NUMBER_SIZE])
 {
     double whole = 0.0;
     const double part = fabs(modf(round(hours * 100.0) / 100.0, &whole));
@@ -28,7 +29,7 @@ static void row(const char *name, double hours, const char *remark, int width, b
     bh_text lead = {0};
     if (!isfinite(hours))
         return;
-    hours_text(hours, number);
+    bh_hours_print(hours, number);
     const int before = (int)strcspn(number, ".");
     bh_text_appendf(&lead, "  %-*s%*.*s%s", NAME, name, VALUE, before, number, number + before);
     if (remark[0]) {

@@ -89,7 +89,7 @@ void bh_explain_time(bh_explaining *x)
     explain_variance(x);
 }
 
-void bh_explain_assumptions(bh_explaining *x)
+const char *bh_assumption_at(size_t i)
 {
     static const char *const silent[] = {
         "A point-like, parallel beam on the axis.",
@@ -100,9 +100,15 @@ void bh_explain_assumptions(bh_explaining *x)
         "Quasi-elastic and inelastic spectra are without radiation of their own.",
         "Excited levels of nuclei, pions and other hadrons, and decays are not counted.",
         "The vertices of background lose on their way out what the scatterer's do on the axis."};
+    return i < sizeof silent / sizeof silent[0] ? silent[i] : NULL;
+}
+
+void bh_explain_assumptions(bh_explaining *x)
+{
+    const char *sentence;
     bh_explain_section(x, "Assumed without being asked");
-    for (size_t i = 0; i < sizeof silent / sizeof silent[0]; i++)
-        bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE, .remark = silent[i]});
+    for (size_t i = 0; (sentence = bh_assumption_at(i)); i++)
+        bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE, .remark = sentence});
     const char *note;
     for (size_t i = 0; (note = bh_table_note(x->table, i)); i++)
         bh_explain_add(x,

@@ -120,18 +120,39 @@ static bool set_note(unsigned bits, bh_arena *arena, const char **note)
     return done;
 }
 
+bh_code bh_time_of_plan(const bh_plan *plan, const bh_stretch *hours, bh_arena *arena,
+                        bh_time_detail *out, bh_error *err)
+{
+    bh_time_rules rules;
+    const bh_time_steps steps = {.count = plan->setting_count,
+                                 .steps = make_steps(plan, hours, arena)};
+    out->times = bh_arena_take(arena, plan->schedule.task_count + 1, sizeof *out->times);
+    if (!steps.steps || !out->times || !set_rules(&plan->schedule, arena, &rules))
+        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    return bh_time_add_up(&steps, &rules, &out->sum, out->times, err);
+}
+
+void bh_stretches_of(const bh_table *table, bh_stretch *hours)
+{
+    const bh_plan *plan = bh_table_plan(table);
+    for (size_t s = 0; s < plan->setting_count; s++)
+        hours[s] = (bh_stretch){0.0, 0.0};
+    for (size_t i = 0; i < bh_table_rows(table, false); i++) {
+        const double full = bh_table_number(table, false, i, BH_COL_HOURS);
+        const double empty = bh_table_number(table, false, i, BH_COL_EMPTY_HOURS);
+        hours[bh_table_place(table, false, i).setting] =
+            (bh_stretch){isfinite(full) ? full : 0.0, isfinite(empty) ? empty : 0.0};
+    }
+}
+
 bh_code bh_totals_from_plan(const bh_plan *plan, const bh_stretch *hours, bh_arena *arena,
                             bh_totals *out, bh_error *err)
 {
-    bh_time_rules rules;
-    bh_time_sum sum;
-    const bh_time_steps steps = {.count = plan->setting_count,
-                                 .steps = make_steps(plan, hours, arena)};
-    if (!steps.steps || !set_rules(&plan->schedule, arena, &rules))
-        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
-    const bh_code code = bh_time_add_up(&steps, &rules, &sum, NULL, err);
+    bh_time_detail detail;
+    const bh_code code = bh_time_of_plan(plan, hours, arena, &detail, err);
     if (code)
         return code;
+    const bh_time_sum sum = detail.sum;
     *out = (bh_totals){.data_hours = sum.data,
                        .empty_hours = sum.empty,
                        .task_hours = sum.task,

@@ -20,6 +20,7 @@
       bh_cmd_curve)                                                                                \
     X(BH_CMD_SOLVE, "solve", "PLAN SETTING KEY=VALUE",                                             \
       "what it would take: the input that gives a wanted output", bh_cmd_solve)                    \
+    X(BH_CMD_REPORT, "report", "PLAN", "the beam-time section of a proposal", bh_cmd_report)       \
     X(BH_CMD_EDIT, "edit", "[PLAN]", "change a plan on the screen and see the run table follow",   \
       bh_cmd_edit)                                                                                 \
     X(BH_CMD_MATERIALS, "materials", "[NAME]",                                                     \
@@ -35,12 +36,12 @@ typedef enum {
 } bh_command_id;
 
 #define BH_EVERY_COMMAND \
-    "new,plans,keys,check,table,explain,point,curve,solve,edit,materials,models,help"
+    "new,plans,keys,check,table,explain,point,curve,solve,report,edit,materials,models,help"
 
 /* X(id, short letter or 0, long name, argument or "", commands that know it, values to complete,
  * meaning).  Commands and values are lists with commas; `file` completes files. */
 #define BH_OPTIONS(X)                                                                              \
-    X(BH_OPT_WITH, 0, "with", "KEY=VALUE", "check,table,explain,curve,solve", "",                  \
+    X(BH_OPT_WITH, 0, "with", "KEY=VALUE", "check,table,explain,curve,solve,report", "",           \
       "change one value for this run only (repeatable)")                                           \
     X(BH_OPT_BINS, 0, "bins", "", "table", "", "one row a bin")                                    \
     X(BH_OPT_COLUMNS, 0, "columns", "KEY,...", "table", "", "only these columns, in this order")   \
@@ -92,8 +93,11 @@ typedef enum {
       "text (default) or json")                                                                    \
     X(BH_OPT_CURVE_FORMAT, 'f', "format", "FORMAT", "curve", "text,csv,svg,pdf,png",               \
       "text (default), csv, or a figure: svg, pdf, png")                                           \
-    X(BH_OPT_OUTPUT, 'o', "output", "FILE", "table,curve", "file",                                 \
+    X(BH_OPT_OUTPUT, 'o', "output", "FILE", "table,curve,report", "file",                          \
       "write to FILE, whole or not at all")                                                        \
+    X(BH_OPT_PAPER, 0, "paper", "SIZE", "report", "a4,letter", "a4 (default) or letter")           \
+    X(BH_OPT_FRAGMENT, 0, "fragment", "", "report", "",                                            \
+      "of LaTeX only what goes into another document")                                             \
     X(BH_OPT_ASCII, 0, "ascii", "", "edit", "", "draw with plain letters only")                    \
     X(BH_OPT_HELP, 0, "help", "", BH_EVERY_COMMAND, "", "what the command does and its options")   \
     X(BH_OPT_VERSION, 0, "version", "", BH_EVERY_COMMAND, "", "the edition of the program")

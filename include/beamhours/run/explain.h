@@ -33,4 +33,8 @@ void bh_explanation_free(bh_explanation *explanation);
 size_t bh_explanation_lines(const bh_explanation *explanation);
 const bh_line *bh_explanation_line(const bh_explanation *explanation, size_t i);
 
+/* The i-th sentence on what every number assumes without being asked; NULL past the end.  Constant
+ * data. */
+const char *bh_assumption_at(size_t i);
+
 #endif

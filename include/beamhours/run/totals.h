@@ -3,6 +3,7 @@
 #define BH_RUN_TOTALS_H
 
 #include "beamhours/base/arena.h"
+#include "beamhours/rates/schedule.h"
 #include "beamhours/run/table.h"
 
 /* Of one setting. */
@@ -14,5 +15,18 @@ typedef struct {
  * BH_ENOMEM; BH_EDOMAIN when tasks by shift or period never end. */
 BH_CHECKED bh_code bh_totals_from_plan(const bh_plan *plan, const bh_stretch *hours,
                                        bh_arena *arena, bh_totals *out, bh_error *err);
+
+/* Where the hours come from. */
+typedef struct {
+    bh_time_sum sum;
+    double *times; /* [1] how often each task of the plan takes place */
+} bh_time_detail;
+
+/* The same in detail; belongs to `arena`.  Errors as above. */
+BH_CHECKED bh_code bh_time_of_plan(const bh_plan *plan, const bh_stretch *hours, bh_arena *arena,
+                                   bh_time_detail *out, bh_error *err);
+
+/* Fills hours, one for each setting of the plan, with those of its rows; 0 where there are none. */
+void bh_stretches_of(const bh_table *table, bh_stretch *hours);
 
 #endif

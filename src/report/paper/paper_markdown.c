@@ -1,0 +1,98 @@
+/* paper_markdown.c - pipes and dashes: what most sites and editors show as tables. */
+#include "beamhours/report/paper.h"
+
+#include <string.h>
+
+static void escaped(const char *s, bh_text *out)
+{
+    for (; *s; s++) {
+        if (strchr("\\`*_[]<>|#&", *s))
+            bh_text_append(out, "\\");
+        bh_text_append_bytes(out, *s == '\n' ? " " : s, 1);
+    }
+}
+
+static void heading_cell(const bh_paper_column *c, bh_text *out)
+{
+    bh_text_append(out, " ");
+    escaped(c->heading, out);
+    if (c->unit[0]) {
+        bh_text_append(out, " (");
+        escaped(c->unit, out);
+        bh_text_append(out, ")");
+    }
+    bh_text_append(out, " |");
+}
+
+static void table(const bh_block *b, bh_text *out)
+{
+    const bh_paper_table *t = b->table;
+    bh_text_appendf(out, "**Table %d.** ", b->number);
+    escaped(b->text, out);
+    bh_text_append(out, "\n\n|");
+    for (size_t c = 0; c < t->column_count; c++)
+        heading_cell(&t->columns[c], out);
+    bh_text_append(out, "\n|");
+    for (size_t c = 0; c < t->column_count; c++)
+        bh_text_append(out, t->columns[c].number ? " ---: |" : " --- |");
+    for (size_t i = 0; i < t->row_count * t->column_count; i++) {
+        bh_text_append(out, i % t->column_count ? " " : "\n| ");
+        escaped(t->cells[i], out);
+        bh_text_append(out, " |");
+    }
+    bh_text_append(out, "\n\n");
+}
+
+static void words(const char *lead, const char *text, const char *behind, bh_text *out)
+{
+    bh_text_append(out, lead);
+    escaped(text, out);
+    bh_text_append(out, behind);
+}
+
+/* A file of Markdown holds no drawing: what is on it is said. */
+static void figure(const bh_block *b, bh_text *out)
+{
+    bh_text_appendf(out, "**Figure %d.** ", b->number);
+    words("", b->text, ". ", out);
+    words("", b->figure->description, "\n\n", out);
+}
+
+static void block(const bh_paper *paper, size_t i, bh_text *out)
+{
+    const bh_block *b = &paper->blocks[i];
+    const bool last = i + 1 == paper->count || paper->blocks[i + 1].kind != b->kind;
+    switch (b->kind) {
+    case BH_BLOCK_SECTION:
+        bh_text_appendf(out, "## %d. ", b->number);
+        words("", b->text, "\n\n", out);
+        break;
+    case BH_BLOCK_WORDS:
+        words("", b->text, "\n\n", out);
+        break;
+    case BH_BLOCK_ITEM:
+        words("- ", b->text, last ? "\n\n" : "\n", out);
+        break;
+    case BH_BLOCK_CAUTION:
+        words("> **Caution.** ", b->text, "\n\n", out);
+        break;
+    case BH_BLOCK_TABLE:
+        table(b, out);
+        break;
+    case BH_BLOCK_FIGURE:
+        figure(b, out);
+        break;
+    case BH_BLOCK_REFERENCE:
+        bh_text_appendf(out, "%d. ", b->number);
+        words("", b->text, last ? "\n\n" : "\n", out);
+        break;
+    }
+}
+
+bh_code bh_paper_markdown(const bh_paper *paper, bh_text *out, bh_error *err)
+{
+    words("# ", paper->title, "\n\n", out);
+    for (size_t i = 0; i < paper->count; i++)
+        block(paper, i, out);
+    return out->failed ? bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM)) : BH_OK;
+}

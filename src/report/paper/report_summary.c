@@ -1,0 +1,223 @@
+/* report_summary.c - what a committee reads first. */
+#include <math.h>
+#include <string.h>
+
+#include "beamhours/report/input_words.h"
+#include "beamhours/report/prefix.h"
+#include "beamhours/report/reporting.h"
+#include "beamhours/units/nuclide.h"
+
+static void fact(bh_reporting *x, const char *name, const char *text)
+{
+    if (!text[0])
+        return;
+    bh_paper_cell(&x->w, name);
+    bh_paper_cell(&x->w, text);
+}
+
+struct span {
+    double low, high;
+};
+
+static struct span span_of(const bh_reporting *x, int column)
+{
+    struct span s = {INFINITY, -INFINITY};
+    for (size_t i = 0; i < x->view.row_count; i++) {
+        const double v = bh_selection_number(&x->view, i, column);
+        if (isfinite(v)) {
+            s.low = fmin(s.low, v);
+            s.high = fmax(s.high, v);
+        }
+    }
+    return s;
+}
+
+/* "0.55 to 1.2 GeV2", as the tables show it; "" where no row says. */
+static const char *range(bh_reporting *x, int column)
+{
+    const struct span s = span_of(x, column);
+    const bh_shown_column c = bh_prefix_scale(&x->view, NULL, column);
+    if (!(s.low <= s.high))
+        return "";
+    const char *low = bh_report_number(x, s.low * c.scale, c.digits);
+    const char *high = bh_report_number(x, s.high * c.scale, c.digits);
+    return strcmp(low, high) == 0 ? bh_paper_text(&x->w, "%s %s", low, c.unit)
+                                  : bh_paper_text(&x->w, "%s to %s %s", low, high, c.unit);
+}
+
+/* The different texts of a column, with commas. */
+static const char *names(bh_reporting *x, int column)
+{
+    bh_text t = {0};
+    for (size_t i = 0; i < x->view.row_count; i++) {
+        const char *name = bh_selection_text(&x->view, i, column);
+        bool seen = !name;
+        for (size_t k = 0; k < i && !seen; k++) {
+            const char *other = bh_selection_text(&x->view, k, column);
+            seen = other && strcmp(other, name) == 0;
+        }
+        if (!seen)
+            bh_text_appendf(&t, "%s%s", t.length ? ", " : "", name);
+    }
+    return bh_paper_keep(&x->w, &t);
+}
+
+static const char *measured(bh_reporting *x)
+{
+    const size_t settings = x->plan->setting_count;
+    return bh_paper_text(&x->w,
+                         "%s scattering of %s on %s: %zu setting%s; Q2 %s; angle of the detected "
+                         "particle %s",
+                         x->plan->settings[0].process.text, names(x, BH_COL_PARTICLE),
+                         names(x, BH_COL_SCATTERER), settings, settings > 1 ? "s" : "",
+                         range(x, BH_COL_Q2), range(x, BH_COL_ANGLE));
+}
+
+static const char *asked(bh_reporting *x)
+{
+    const bh_totals *t = x->totals;
+    return bh_paper_text(&x->w,
+                         "%s h of beam; %s h on the calendar with availability, changes and "
+                         "contingency: %s shifts, %s weeks",
+                         bh_report_hours(x, t->beam_hours), bh_report_hours(x, t->asked_hours),
+                         bh_report_number(x, t->shifts, 3), bh_report_number(x, t->weeks, 3));
+}
+
+static const char *available(bh_reporting *x)
+{
+    const bh_totals *t = x->totals;
+    if (!isfinite(t->available_hours))
+        return "";
+    const char *of = x->plan->schedule.available_is_beam ? "of beam" : "on the calendar";
+    if (t->spare_hours < 0.0)
+        return bh_paper_text(&x->w, "%s h %s: %s h less than is asked",
+                             bh_report_hours(x, t->available_hours), of,
+                             bh_report_hours(x, -t->spare_hours));
+    return bh_paper_text(&x->w, "%s h %s: %s h to spare", bh_report_hours(x, t->available_hours),
+                         of, bh_report_hours(x, t->spare_hours));
+}
+
+static const char *precision(bh_reporting *x)
+{
+    const char *stat = range(x, BH_COL_STATISTICAL), *syst = range(x, BH_COL_SYSTEMATIC);
+    return bh_paper_text(&x->w, "%s%s%s%s%s", stat, stat[0] ? " statistical" : "",
+                         stat[0] && syst[0] ? "; " : "", syst, syst[0] ? " systematic" : "");
+}
+
+/* --- what limits it --- */
+
+static void longest(bh_reporting *x, bh_text *t)
+{
+    size_t most = 0;
+    double sum = 0.0;
+    for (size_t s = 0; s < x->plan->setting_count; s++) {
+        sum += x->hours[s].full + x->hours[s].empty;
+        if (x->hours[s].full + x->hours[s].empty > x->hours[most].full + x->hours[most].empty)
+            most = s;
+    }
+    const double hours = x->hours[most].full + x->hours[most].empty;
+    if (!(hours > 0.0))
+        return;
+    bh_text_appendf(t, "Setting %s takes %s h, %s %% of the hours on target. ",
+                    x->plan->settings[most].name, bh_report_hours(x, hours),
+                    bh_report_percent(x, hours / sum));
+    if (x->totals->change_hours > sum)
+        bh_text_appendf(t, "Start-up and changes take longer than the data: %s h. ",
+                        bh_report_hours(x, x->totals->change_hours));
+}
+
+static void readout(bh_reporting *x, bh_text *t)
+{
+    size_t worst = 0;
+    double least = 1.0;
+    for (size_t i = 0; i < x->view.row_count; i++) {
+        const double live = bh_selection_number(&x->view, i, BH_COL_LIVE);
+        if (live < least) {
+            least = live;
+            worst = i;
+        }
+    }
+    if (least < 0.95)
+        bh_text_appendf(t, "The readout records %s %% of the events in %s. ",
+                        bh_report_percent(x, least), bh_report_row_name(x, worst));
+}
+
+/* In words, of the cause with the largest effect on any row. */
+static const char *largest_cause(const bh_reporting *x)
+{
+    const bh_causes *causes = bh_table_causes(x->table);
+    double most = 0.0;
+    const char *words = "";
+    for (size_t i = 0; i < x->view.row_count; i++) {
+        const bh_effects e = bh_table_effects(x->table, false, x->view.rows[i]);
+        for (int k = 0; k < BH_CAUSE_DEAD_TIME; k++) {
+            const double size = bh_effects_of(causes, &e, (bh_cause_kind)k);
+            if (size > most) {
+                most = size;
+                words = bh_cause_words((bh_cause_kind)k);
+            }
+        }
+    }
+    return words;
+}
+
+static void larger(bh_reporting *x, bh_text *t)
+{
+    size_t count = 0;
+    const char *cause = largest_cause(x);
+    for (size_t i = 0; i < x->view.row_count; i++)
+        count += bh_selection_number(&x->view, i, BH_COL_SYSTEMATIC) >
+                 bh_selection_number(&x->view, i, BH_COL_STATISTICAL);
+    if (count)
+        bh_text_appendf(t,
+                        "The systematic uncertainty of the rate is larger than the statistical one "
+                        "in %zu of %zu rows; its largest cause: %s. ",
+                        count, x->view.row_count, cause);
+    else
+        bh_text_append(t, "Counting statistics are the largest uncertainty in every row. ");
+}
+
+static const char *limits(bh_reporting *x)
+{
+    bh_text t = {0};
+    longest(x, &t);
+    readout(x, &t);
+    larger(x, &t);
+    if (t.length)
+        t.bytes[--t.length] = '\0';
+    return bh_paper_keep(&x->w, &t);
+}
+
+static const char *trimmed(bh_reporting *x, const char *text)
+{
+    size_t n = strlen(text);
+    while (n > 0 && strchr(" \n", text[n - 1]))
+        n--;
+    return bh_paper_text(&x->w, "%.*s", (int)n, text);
+}
+
+void bh_report_summary(bh_reporting *x)
+{
+    static const bh_paper_column columns[] = {{"what", "", false}, {"answer", "", false}};
+    bh_text t = {0};
+    bh_paper_add(&x->w, BH_BLOCK_SECTION, "Summary");
+    if (x->plan->notes.text)
+        bh_paper_add(&x->w, BH_BLOCK_WORDS, trimmed(x, x->plan->notes.text));
+    bh_paper_table_open(&x->w, "What is asked for, and what for", columns, 2);
+    fact(x, "measured", measured(x));
+    bh_say_beam(x->plan, &t);
+    fact(x, "beam", bh_paper_keep(&x->w, &t));
+    for (size_t i = 0; i < x->plan->target_count; i++) {
+        bh_say_target(&x->plan->targets[i], &t);
+        fact(x, "target", bh_paper_keep(&x->w, &t));
+    }
+    for (size_t i = 0; i < x->plan->arm_count; i++) {
+        bh_say_arm(&x->plan->arms[i], &t);
+        fact(x, "arm", bh_paper_keep(&x->w, &t));
+    }
+    fact(x, "asked", asked(x));
+    fact(x, "available", available(x));
+    fact(x, "uncertainty", precision(x));
+    fact(x, "what limits it", limits(x));
+    bh_paper_table_close(&x->w);
+}
