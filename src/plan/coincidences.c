@@ -108,7 +108,7 @@ static void place(const bh_joining *j, size_t i)
     }
     const bh_setting_arm *there = &j->rows[other];
     bh_collision collision;
-    char nuclide[8], angle[BH_QUANTITY_SIZE];
+    char nuclide[8];
     if (isnan(there->angle.value) || !collision_of(j->setting, &collision, nuclide))
         return;
     /* Of two arms that detect either particle the other one's is the scattered. */
@@ -123,9 +123,11 @@ static void place(const bh_joining *j, size_t i)
         return;
     }
     /* What no event reaches was said of the other arm, unless it may also detect the other kind. */
-    if (there->arm.detects == BH_DETECTS_EITHER)
+    if (there->arm.detects == BH_DETECTS_EITHER) {
+        char angle[BH_QUANTITY_SIZE];
         bh_tell(j->making, aim->angle.at, &aim->section, "angle", BH_SAY_CONJUGATE_NONE,
                 name_of(there), bh_angle_text(there->angle.value, angle));
+    }
 }
 
 void bh_place_conjugates(const bh_joining *joining)
@@ -188,12 +190,15 @@ static bool find_rows(const bh_joining *j, const bh_setting_arm *pair[2], bh_cod
 
 /* --- whether it makes sense --- */
 
+/* Events of which the first arm has `first`. */
+struct events {
+    bh_collision in;
+    bh_detected first;
+};
+
 static void every(void *context, size_t n, const double *theta, bh_pair_value *value)
 {
-    const struct {
-        bh_collision in;
-        bh_detected first;
-    } *c = context;
+    const struct events *c = context;
     for (size_t i = 0; i < n; i++)
         value[i] = (bh_pair_value){1, 1, bh_pair_partner(&c->in, c->first, theta[i])};
 }
@@ -207,10 +212,7 @@ static bool shared(const bh_collision *in, bh_detected first, const bh_setting_a
     if (bh_acceptance_make(&specs[0], &one, NULL) || bh_acceptance_make(&specs[1], &two, NULL))
         return true;
     double breaks[BH_PAIR_BREAKS];
-    struct {
-        bh_collision in;
-        bh_detected first;
-    } context = {*in, first};
+    struct events context = {*in, first};
     const bh_pair_request request = {
         .shape = {&one.whole, &two.whole, pair[0]->arm.side != pair[1]->arm.side},
         .function = every,

@@ -70,7 +70,7 @@ static const struct {
 
 START_TEST(solid_angle_both_ways)
 {
-    const bh_integrand f = {one, NULL, 1e-8};
+    const bh_integrand f = {one, NULL, 1e-8, 0};
     const bh_acceptance_part part =
         rectangle(shapes[_i].angle, shapes[_i].in, shapes[_i].out_from, shapes[_i].out_to);
     const bh_quadrature d = bh_quadrature_directions(&part, &f);
@@ -84,7 +84,7 @@ END_TEST
 START_TEST(mean_direction_in_closed_form)
 {
     /* cos theta over the shape: (sin b - sin a) in the plane, (psi/2 + sin(2 psi)/4) out of it */
-    const bh_integrand f = {cosine, NULL, 1e-8};
+    const bh_integrand f = {cosine, NULL, 1e-8, 0};
     const bh_acceptance_part part =
         rectangle(shapes[_i].angle, shapes[_i].in, shapes[_i].out_from, shapes[_i].out_to);
     const double top = part.out_to / 2 + sin(2 * part.out_to) / 4;
@@ -99,7 +99,7 @@ END_TEST
 START_TEST(steep_functions_are_refined)
 {
     /* around and near the beam the two ways share nothing but the function */
-    const bh_integrand f = {steep, NULL, 1e-8};
+    const bh_integrand f = {steep, NULL, 1e-8, 0};
     const int s = _i == 6 ? 5 : _i; /* the whole half sphere touches the axis: infinite */
     const bh_acceptance_part part =
         rectangle(shapes[s].angle, shapes[s].in, shapes[s].out_from, shapes[s].out_to);
@@ -123,7 +123,7 @@ static void gentle(void *context, size_t n, const double *versine, double *value
 START_TEST(the_first_estimate_is_good)
 {
     static const double edges[][2] = {{-5, 5}, {-4, 5}};
-    const bh_integrand first = {gentle, NULL, 1}, settled = {gentle, NULL, 1e-13};
+    const bh_integrand first = {gentle, NULL, 1, 0}, settled = {gentle, NULL, 1e-13, 0};
     for (int i = 0; i < COUNT(edges); i++) {
         const bh_acceptance_part part = rectangle(60, 5, edges[i][0], edges[i][1]);
         const double wanted = bh_quadrature_directions(&part, &settled).sum;
@@ -139,7 +139,7 @@ END_TEST
 
 START_TEST(parts_of_a_range_add)
 {
-    const bh_integrand f = {steep, NULL, 1e-9};
+    const bh_integrand f = {steep, NULL, 1e-9, 0};
     const bh_acceptance_part part = rectangle(25, 1.6, -4, 3);
     const double whole = bh_quadrature_polar(&part, (bh_interval){0, 4}, &f).sum;
     double sum = 0;
@@ -157,11 +157,11 @@ START_TEST(hopeless_functions_end)
 {
     const bh_acceptance_part part = rectangle(25, 1.6, -4, 4);
     unsigned state = 1;
-    const bh_integrand noise = {restless, &state, 1e-9};
+    const bh_integrand noise = {restless, &state, 1e-9, 0};
     const bh_quadrature q = bh_quadrature_directions(&part, &noise);
     ck_assert(!q.converged && q.error > 0);
     ck_assert(!bh_quadrature_polar(&part, part.polar, &noise).converged);
-    const bh_integrand nan = {broken, NULL, 1e-6};
+    const bh_integrand nan = {broken, NULL, 1e-6, 0};
     const bh_quadrature b = bh_quadrature_directions(&part, &nan);
     ck_assert(isnan(b.sum) && !b.converged);
 }
@@ -170,7 +170,7 @@ END_TEST
 START_TEST(empty_parts_are_nothing)
 {
     const bh_acceptance_part none = {.scale = 1};
-    const bh_integrand f = {one, NULL, 1e-6};
+    const bh_integrand f = {one, NULL, 1e-6, 0};
     ck_assert(bh_quadrature_directions(&none, &f).sum == 0);
     ck_assert(bh_quadrature_polar(&none, (bh_interval){0, 4}, &f).sum == 0);
 }
