@@ -8,6 +8,7 @@
 #include "beamhours/command/places.h"
 #include "beamhours/report/csv.h"
 #include "beamhours/report/json.h"
+#include "beamhours/report/marked_table.h"
 #include "beamhours/report/text_table.h"
 
 static bh_selection_request request_of(const bh_arguments *arguments)
@@ -34,7 +35,11 @@ static bh_code render(const char *format, const bh_selection *before, const bh_s
     if (strcmp(format, "json") == 0)
         return before ? bh_report_json_against(before, view, bh_version(), out)
                       : bh_report_json(view, bh_version(), out);
-    if (before)
+    if (strcmp(format, "markdown") == 0)
+        bh_report_markdown(before, view, out);
+    else if (strcmp(format, "latex") == 0)
+        bh_report_latex(before, view, out);
+    else if (before)
         bh_report_text_against(before, view, bh_places_width(), out);
     else
         bh_report_text(view, bh_places_width(), out);

@@ -127,6 +127,15 @@ static void choose(struct layout *l, const bh_selection *view, const bh_selectio
     }
 }
 
+size_t bh_report_text_columns(const bh_selection *before, const bh_selection *view, int width,
+                              bh_shown_column *out)
+{
+    struct layout l = {0};
+    choose(&l, view, before, width);
+    memcpy(out, l.shown, l.count * sizeof *out);
+    return l.count;
+}
+
 static bool is_name(int column)
 {
     return bh_column_at(column)->kind == BH_CELL_TEXT;

@@ -87,8 +87,8 @@ typedef enum {
     X(BH_OPT_MATERIAL, 0, "material", "NAME", "point", "", "target material, for a rate")          \
     X(BH_OPT_THICKNESS, 0, "thickness", "D", "point", "", "its thickness, for a rate")             \
     X(BH_OPT_SOLID_ANGLE, 0, "solid-angle", "W", "point", "", "solid angle, for a rate")           \
-    X(BH_OPT_TABLE_FORMAT, 'f', "format", "FORMAT", "table", "text,csv,json",                      \
-      "text (default), csv or json")                                                               \
+    X(BH_OPT_TABLE_FORMAT, 'f', "format", "FORMAT", "table", "text,csv,json,latex,markdown",       \
+      "text (default), csv, json, latex or markdown")                                              \
     X(BH_OPT_LIST_FORMAT, 'f', "format", "FORMAT", "point,materials,models", "text,json",          \
       "text (default) or json")                                                                    \
     X(BH_OPT_CURVE_FORMAT, 'f', "format", "FORMAT", "curve", "text,csv,svg,pdf,png",               \
