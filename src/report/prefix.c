@@ -53,10 +53,10 @@ bh_shown_column bh_prefix_scale(const bh_selection *view, const bh_selection *ot
         while (p + 1 < families[f].count && most > 0.0 &&
                most * families[f].prefixes[p].scale < 1.0)
             p++;
-        return (bh_shown_column){column, families[f].prefixes[p].scale,
-                                 families[f].prefixes[p].unit, row->digits};
+        return (bh_shown_column){column, row->digits, families[f].prefixes[p].scale,
+                                 families[f].prefixes[p].unit};
     }
-    return (bh_shown_column){column, 1.0, row->unit, row->digits};
+    return (bh_shown_column){column, row->digits, 1.0, row->unit};
 }
 
 /* Energies of the beam are mostly written as round numbers: their closing zeros say nothing. */

@@ -8,9 +8,9 @@ enum { BH_CELL_SIZE = 64 };
 
 typedef struct {
     int column;       /* bh_column_id */
+    int digits;       /* significant ones */
     double scale;     /* [1] the number shown is the cell's times this */
     const char *unit; /* of the number shown: "nb/sr", "%"; "" for a name */
-    int digits;       /* significant ones */
 } bh_shown_column;
 
 /* Chooses unit and scale so that the column's largest value reads well; over all rows of `view`
