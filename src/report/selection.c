@@ -43,9 +43,9 @@ static bh_code find_column(const char *key, size_t length, int *id, bh_error *er
     if (*id >= 0)
         return BH_OK;
     const char *near = bh_column_suggest(word);
-    return near
-               ? bh_fail(err, BH_EDOMAIN, "no column \"%s\"; did you mean %s?", word, near)
-               : bh_fail(err, BH_EDOMAIN, "no column \"%s\"; `beamhours keys columns` lists them", word);
+    return near ? bh_fail(err, BH_EDOMAIN, "no column \"%s\"; did you mean %s?", word, near)
+                : bh_fail(err, BH_EDOMAIN, "no column \"%s\"; `beamhours keys columns` lists them",
+                          word);
 }
 
 static bh_code pick_columns(const char *list, bh_selection *view, bh_error *err)

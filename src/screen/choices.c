@@ -48,8 +48,8 @@ static void particles(bh_model *model)
         char about[120];
         if (!bh_particle_find(bh_particle_name(i), &p))
             continue;
-        static const char *const kinds[] = {"lepton", "hadron", "ion"};
-        (void)snprintf(about, sizeof about, "%s, charge %+d, mass %.6g MeV", kinds[p.kind],
+        static const char *const sorts[] = {"lepton", "hadron", "ion"};
+        (void)snprintf(about, sizeof about, "%s, charge %+d, mass %.6g MeV", sorts[p.kind],
                        p.charge, p.mass);
         bh_choices_add(model, p.name, about, "any nuclide too, such as 12C: Tab, then type it");
     }

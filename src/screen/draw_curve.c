@@ -186,10 +186,10 @@ void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canva
     (void)snprintf(name, sizeof name, " %s [%s] against angle, %.40s ", what[shown],
                    bh_column_at((int)column)->unit, model->table.here);
     draw_title(places, name, canvas);
-    p.rows = p.rows > MOST_HIGH ? MOST_HIGH : p.rows;
-    p.columns = p.columns > MOST_WIDE ? MOST_WIDE : p.columns;
     if (p.rows < 2 || p.columns < 10)
         return;
+    p.rows = p.rows > MOST_HIGH ? MOST_HIGH : p.rows;
+    p.columns = p.columns > MOST_WIDE ? MOST_WIDE : p.columns;
     if (!curve || !set_range(&p, curve, column)) {
         (void)bh_canvas_put(canvas, (bh_spot){p.row, p.column, p.columns}, BH_LOOK_QUIET,
                             excuse(model));
