@@ -7,10 +7,11 @@
 
 #include "beamhours/base/number.h"
 #include "beamhours/plan/dump.h"
+#include "beamhours/report/json_parts.h"
 #include "beamhours/report/json_systematic.h"
 
 /* NaN does not exist in JSON: null. */
-static json_object *number(double value)
+json_object *bh_json_number(double value)
 {
     char text[BH_NUMBER_SIZE];
     if (!isfinite(value))
@@ -86,7 +87,7 @@ static void integer(void *to, const char *key, long value)
     attach(to, key, json_object_new_int64(value));
 }
 
-static json_object *plan_object(const bh_plan *plan)
+json_object *bh_json_plan(const bh_plan *plan)
 {
     static const bh_dump_sink sink = {begin_mapping, begin_list, end, words, integer};
     struct tree tree = {.depth = -1};
@@ -103,7 +104,7 @@ static json_object *cell(const bh_selection *view, size_t row, int id)
         return text_or_null(bh_selection_text(view, row, id));
     if (bh_column_at(id)->kind == BH_CELL_COUNT && isfinite(value))
         return json_object_new_int64((int64_t)value);
-    return number(value);
+    return bh_json_number(value);
 }
 
 static bool shown(const bh_selection *view, int id)
@@ -132,7 +133,7 @@ static json_object *row_object(const bh_selection *view, size_t row)
     return object;
 }
 
-static json_object *totals_object(const bh_totals *t)
+json_object *bh_json_totals(const bh_totals *t)
 {
     const struct {
         const char *key;
@@ -153,7 +154,7 @@ static json_object *totals_object(const bh_totals *t)
     };
     json_object *object = json_object_new_object();
     for (size_t i = 0; i < sizeof rows / sizeof rows[0]; i++)
-        put(object, rows[i].key, number(rows[i].value));
+        put(object, rows[i].key, bh_json_number(rows[i].value));
     if (t->note)
         put(object, "note", json_object_new_string(t->note));
     return object;
@@ -170,34 +171,39 @@ static json_object *message(bh_mark at, const char *key, const char *sentence)
     return object;
 }
 
-static json_object *table_object(const bh_selection *view, const char *version)
+void bh_json_said(json_object *to, const bh_table *table, const char *version)
 {
-    const bh_table *table = view->table;
-    json_object *object = json_object_new_object(), *rows = json_object_new_array();
     json_object *cautions = json_object_new_array(), *warnings = json_object_new_array();
-    put(object, "plan", plan_object(bh_table_plan(table)));
-    for (size_t i = 0; i < view->row_count; i++)
-        (void)json_object_array_add(rows, row_object(view, i));
-    put(object, "rows", rows);
-    if (shown(view, BH_COL_SYSTEMATIC))
-        put(object, "systematic_causes", bh_json_causes(view));
-    put(object, "totals", totals_object(bh_table_totals(table)));
     for (size_t i = 0; i < bh_table_cautions(table); i++) {
         const bh_caution *c = bh_table_caution(table, i);
         (void)json_object_array_add(cautions, message(c->at, c->key, c->text));
     }
-    put(object, "cautions", cautions);
+    put(to, "cautions", cautions);
     const bh_diags *said = bh_table_warnings(table);
     for (size_t i = 0; i < bh_diags_count(said); i++) {
         const bh_diag *d = bh_diags_at(said, i);
         (void)json_object_array_add(warnings, message(d->at, d->key, d->text));
     }
-    put(object, "warnings", warnings);
-    put(object, "version", json_object_new_string(version));
+    put(to, "warnings", warnings);
+    put(to, "version", json_object_new_string(version));
+}
+
+static json_object *table_object(const bh_selection *view, const char *version)
+{
+    const bh_table *table = view->table;
+    json_object *object = json_object_new_object(), *rows = json_object_new_array();
+    put(object, "plan", bh_json_plan(bh_table_plan(table)));
+    for (size_t i = 0; i < view->row_count; i++)
+        (void)json_object_array_add(rows, row_object(view, i));
+    put(object, "rows", rows);
+    if (shown(view, BH_COL_SYSTEMATIC))
+        put(object, "systematic_causes", bh_json_causes(view));
+    put(object, "totals", bh_json_totals(bh_table_totals(table)));
+    bh_json_said(object, table, version);
     return object;
 }
 
-static bh_code finish(json_object *object, bh_text *out)
+bh_code bh_json_finish(json_object *object, bh_text *out)
 {
     const char *string = json_object_to_json_string_ext(object, JSON_C_TO_STRING_PRETTY |
                                                                     JSON_C_TO_STRING_NOSLASHESCAPE);
@@ -211,7 +217,7 @@ static bh_code finish(json_object *object, bh_text *out)
 
 bh_code bh_report_json(const bh_selection *view, const char *version, bh_text *out)
 {
-    return finish(table_object(view, version), out);
+    return bh_json_finish(table_object(view, version), out);
 }
 
 bh_code bh_report_json_against(const bh_selection *before, const bh_selection *after,
@@ -220,5 +226,5 @@ bh_code bh_report_json_against(const bh_selection *before, const bh_selection *a
     json_object *both = json_object_new_object();
     put(both, "before", table_object(before, version));
     put(both, "after", table_object(after, version));
-    return finish(both, out);
+    return bh_json_finish(both, out);
 }

@@ -122,11 +122,18 @@ static void table(const struct format *f, const bh_selection *before, const bh_s
 
 /* --- time --- */
 
-static void totals(const struct format *f, const bh_selection *before, const bh_selection *view,
-                   bh_text *out)
+static void hours_cell(bh_grid *grid, double hours)
 {
-    const bh_totals *old = bh_table_totals((before ? before : view)->table);
-    const bh_totals *now = bh_table_totals(view->table);
+    bh_text number = {0};
+    bh_hours_words(&number, hours);
+    bh_grid_cell(grid, number.bytes ? number.bytes : "");
+    grid->cells.failed |= number.failed;
+    bh_text_free(&number);
+}
+
+void bh_totals_grid(const bh_totals *before, const bh_totals *now, bh_grid *grid)
+{
+    const bh_totals *old = before ? before : now;
     const struct {
         const char *name;
         double was, is;
@@ -140,23 +147,24 @@ static void totals(const struct format *f, const bh_selection *before, const bh_
                  {"asked", old->asked_hours, now->asked_hours},
                  {"available", old->available_hours, now->available_hours},
                  {"spare", old->spare_hours, now->spare_hours}};
-    bh_grid grid = {0};
-    bh_grid_column_add(&grid, "time", "", false);
+    bh_grid_column_add(grid, "time", "", false);
     if (before)
-        bh_grid_column_add(&grid, "before", "h", true);
-    bh_grid_column_add(&grid, before ? "after" : "hours", "h", true);
+        bh_grid_column_add(grid, "before", "h", true);
+    bh_grid_column_add(grid, before ? "after" : "hours", "h", true);
     for (size_t i = 0; i < sizeof lines / sizeof lines[0]; i++) {
-        bh_text number = {0};
-        bh_grid_cell(&grid, lines[i].name);
-        bh_hours_words(&number, lines[i].was);
+        bh_grid_cell(grid, lines[i].name);
         if (before)
-            bh_grid_cell(&grid, number.bytes ? number.bytes : "");
-        bh_text_free(&number);
-        bh_hours_words(&number, lines[i].is);
-        bh_grid_cell(&grid, number.bytes ? number.bytes : "");
-        out->failed |= number.failed;
-        bh_text_free(&number);
+            hours_cell(grid, lines[i].was);
+        hours_cell(grid, lines[i].is);
     }
+}
+
+static void totals(const struct format *f, const bh_selection *before, const bh_selection *view,
+                   bh_text *out)
+{
+    bh_grid grid = {0};
+    bh_totals_grid(before ? bh_table_totals(before->table) : NULL, bh_table_totals(view->table),
+                   &grid);
     f->grid(&grid, out);
     bh_grid_free(&grid);
 }
@@ -224,6 +232,11 @@ static void whole(const struct format *f, const bh_selection *before, const bh_s
     table(f, before, view, out);
     totals(f, before, view, out);
     notes(f, view->table, out);
+}
+
+void bh_report_markdown_below(const bh_table *table, bh_text *out)
+{
+    notes(&markdown, table, out);
 }
 
 void bh_report_markdown(const bh_selection *before, const bh_selection *view, bh_text *out)

@@ -21,6 +21,8 @@
     X(BH_CMD_SOLVE, "solve", "PLAN SETTING KEY=VALUE",                                             \
       "what it would take: the input that gives a wanted output", bh_cmd_solve)                    \
     X(BH_CMD_REPORT, "report", "PLAN", "the beam-time section of a proposal", bh_cmd_report)       \
+    X(BH_CMD_COMPARE, "compare", "PLAN PLAN", "what changed: inputs, rates, hours, uncertainties", \
+      bh_cmd_compare)                                                                              \
     X(BH_CMD_EDIT, "edit", "[PLAN]", "change a plan on the screen and see the run table follow",   \
       bh_cmd_edit)                                                                                 \
     X(BH_CMD_MATERIALS, "materials", "[NAME]",                                                     \
@@ -35,13 +37,14 @@ typedef enum {
         BH_COMMAND_COUNT
 } bh_command_id;
 
-#define BH_EVERY_COMMAND \
-    "new,plans,keys,check,table,explain,point,curve,solve,report,edit,materials,models,help"
+#define BH_EVERY_COMMAND                                                                         \
+    "new,plans,keys,check,table,explain,point,curve,solve,report,compare,edit,materials,models," \
+    "help"
 
 /* X(id, short letter or 0, long name, argument or "", commands that know it, values to complete,
  * meaning).  Commands and values are lists with commas; `file` completes files. */
 #define BH_OPTIONS(X)                                                                              \
-    X(BH_OPT_WITH, 0, "with", "KEY=VALUE", "check,table,explain,curve,solve,report", "",           \
+    X(BH_OPT_WITH, 0, "with", "KEY=VALUE", "check,table,explain,curve,solve,report,compare", "",   \
       "change one value for this run only (repeatable)")                                           \
     X(BH_OPT_BINS, 0, "bins", "", "table", "", "one row a bin")                                    \
     X(BH_OPT_COLUMNS, 0, "columns", "KEY,...", "table", "", "only these columns, in this order")   \
@@ -93,7 +96,9 @@ typedef enum {
       "text (default) or json")                                                                    \
     X(BH_OPT_CURVE_FORMAT, 'f', "format", "FORMAT", "curve", "text,csv,svg,pdf,png",               \
       "text (default), csv, or a figure: svg, pdf, png")                                           \
-    X(BH_OPT_OUTPUT, 'o', "output", "FILE", "table,curve,report", "file",                          \
+    X(BH_OPT_COMPARE_FORMAT, 'f', "format", "FORMAT", "compare", "text,json,markdown",             \
+      "text (default), json or markdown")                                                          \
+    X(BH_OPT_OUTPUT, 'o', "output", "FILE", "table,curve,report,compare", "file",                  \
       "write to FILE, whole or not at all")                                                        \
     X(BH_OPT_PAPER, 0, "paper", "SIZE", "report", "a4,letter", "a4 (default) or letter")           \
     X(BH_OPT_FRAGMENT, 0, "fragment", "", "report", "",                                            \
