@@ -159,11 +159,11 @@ START_TEST(curves_stand_where_their_numbers_are)
         const char *unit;
         bool logarithmic;
     } rows[] = {
-        {BH_AGAINST_ANGLE, BH_COL_POINT_CROSS_SECTION, "nb/sr", true},
+        {BH_AGAINST_ANGLE, BH_COL_POINT_CROSS_SECTION, "µb/sr", true},
         {BH_AGAINST_ANGLE, BH_COL_Q2, "GeV²", true},
-        {BH_AGAINST_Q2, BH_COL_SIGNAL, "kHz", true},
+        {BH_AGAINST_Q2, BH_COL_SIGNAL, "MHz", true},
         {BH_AGAINST_ENERGY, BH_COL_SIGNAL, "kHz", true},
-        {BH_AGAINST_EPSILON, BH_COL_POINT_CROSS_SECTION, "nb/sr", true},
+        {BH_AGAINST_EPSILON, BH_COL_POINT_CROSS_SECTION, "µb/sr", true},
         {BH_AGAINST_ANGLE, BH_COL_SCATTERED_KINETIC, "MeV", false},
         {BH_AGAINST_ANGLE, BH_SHOWN_MERIT, "/h", true},
         {BH_AGAINST_ANGLE, BH_COL_COUNTS, "", false},
@@ -189,7 +189,7 @@ START_TEST(units_and_scales_agree)
     } rows[] = {
         {BH_COL_CROSS_SECTION, 0.0, 5e3, false, 1e-3, "mb/sr"},
         {BH_COL_CROSS_SECTION, 0.0, 5e-4, false, 1e6, "pb/sr"},
-        {BH_COL_CROSS_SECTION, 1e-6, 1e2, true, 1e3, "nb/sr"},
+        {BH_COL_CROSS_SECTION, 1e-9, 1e0, true, 1e3, "nb/sr"},
         {BH_COL_CROSS_SECTION, 1e-15, 1e-14, true, 1e12, "ab/sr"},
         {BH_COL_SIGNAL, 0.0, 2e6, false, 1e-6, "MHz"},
         {BH_COL_SIGNAL, 0.0, 0.02, false, 1e3, "mHz"},
@@ -244,7 +244,7 @@ START_TEST(planned_points_are_the_rows_of_the_table)
     const bh_figure_series *s = series(&m, "planned");
     ck_assert_uint_eq(s->count, 3); /* K1, K2.1, K2.2: K3 and K4 lie on other curves */
     for (size_t i = 0; i < s->count; i++) {
-        const double sigma = cell(&m.e, i, BH_COL_CROSS_SECTION) * 1e3, /* nb */
+        const double sigma = cell(&m.e, i, BH_COL_CROSS_SECTION), /* ub */
             stat = cell(&m.e, i, BH_COL_STATISTICAL), syst = cell(&m.e, i, BH_COL_SYSTEMATIC);
         ck_assert_relative(s->point[i].x, cell(&m.e, i, BH_COL_ANGLE), 1e-9, "angle");
         ck_assert_relative(s->point[i].y, sigma, 1e-12, "sigma");
@@ -341,13 +341,30 @@ START_TEST(published_points_are_drawn_by_source)
     ck_assert_uint_eq(t->count, 1);
     ck_assert_int_ne(s->style, t->style);
     ck_assert_int_eq(s->kind, BH_SERIES_PUBLISHED);
-    ck_assert_double_eq_tol(s->point[0].y, 500.0, 1e-9);
-    ck_assert_double_eq_tol(s->point[0].inner, 100.0, 1e-9);
+    ck_assert_double_eq_tol(s->point[0].y, 0.5, 1e-12);
+    ck_assert_double_eq_tol(s->point[0].inner, 0.1, 1e-12);
     ck_assert_double_eq_tol(s->point[1].x, 160.0, 1e-12);
-    ck_assert_double_eq_tol(t->point[0].inner, 200.0, 1e-9); /* reaches below 0 */
+    ck_assert_double_eq_tol(t->point[0].inner, 0.2, 1e-12); /* reaches below 0 */
     ck_assert(m.figure.y.axis.logarithmic);
     ck_assert(strstr(m.figure.description, "3 published points") != NULL);
     put_away(&m);
+}
+END_TEST
+
+/* A published 0 does not turn the axis linear, nor does it widen it. */
+START_TEST(a_zero_leaves_a_logarithmic_axis)
+{
+    static const bh_measured_point points[] = {{30, 0.0, 0.0, 0}, {45, 0.05, 0.01, 0}};
+    static const char *const sources[] = {"Nobody, 1971"};
+    const bh_measured measured = {2, 1, points, sources};
+    struct made with = draw(proton, &(bh_curves_request){.against = BH_AGAINST_ANGLE},
+                            BH_COL_POINT_CROSS_SECTION, &measured);
+    struct made without = draw(proton, &(bh_curves_request){.against = BH_AGAINST_ANGLE},
+                               BH_COL_POINT_CROSS_SECTION, NULL);
+    ck_assert(with.figure.y.axis.logarithmic);
+    ck_assert_double_eq(with.figure.y.axis.from, without.figure.y.axis.from);
+    put_away(&with);
+    put_away(&without);
 }
 END_TEST
 
@@ -440,6 +457,7 @@ int main(void)
     tcase_add_test(tests, in_q2_the_acceptance_follows_the_kinematics);
     tcase_add_test(tests, the_band_spans_all_models);
     tcase_add_test(tests, published_points_are_drawn_by_source);
+    tcase_add_test(tests, a_zero_leaves_a_logarithmic_axis);
     tcase_add_loop_test(tests, rings_are_drawn_bin_by_bin, 0, 2);
     tcase_add_test(tests, a_ring_against_energy_is_a_curve);
     tcase_add_test(tests, what_cannot_be_drawn_is_refused);

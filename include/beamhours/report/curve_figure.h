@@ -23,9 +23,10 @@ typedef struct {
  * settings that lie on the curve (same particle, target, arm and energy; angle; or Q2, whichever
  * the curve keeps) by their acceptance with its bins, and as points with error bars where the row
  * says what is shown - statistical with caps, with the systematic uncertainty in quadrature thin;
- * of a ring each bin is a point; the published points.  The axis of what is shown is logarithmic
- * where all is above 0 and spans more than a factor of 20; that of an energy always. BH_EDOMAIN
- * where there is nothing to draw, with the reason; BH_ENOMEM.
+ * of a ring each bin is a point; the published points.  The axis of
+ * what is shown is logarithmic where nothing is below 0 and what is above it spans more than a
+ * factor of 20, down to 1e-14 of the largest; that of an energy always.
+ * BH_EDOMAIN where there is nothing to draw, with the reason; BH_ENOMEM.
  */
 BH_CHECKED bh_code bh_curve_figure(const bh_curve_picture *picture, bh_arena *arena, bh_figure *out,
                                    bh_error *err);

@@ -8,14 +8,15 @@
 #include "beamhours/report/curve_words.h"
 #include "beamhours/report/stands.h"
 
-static const double logarithmic_from = 20.0; /* ratio of the largest to the smallest */
+static const double logarithmic_from = 20.0, /* ratio of the largest to the smallest */
+    most_decades = 1e14;                     /* likewise: what is smaller is not shown */
 
 enum { MOST_SERIES = BH_MOST_CURVES + 1 + BH_MOST_SOURCES };
 
 /* How far numbers reach. */
 struct reach {
     double lo, hi;
-    bool positive;
+    double least; /* above 0 */
 };
 
 struct maker {
@@ -46,7 +47,8 @@ static void widen(struct reach *r, double value)
         return;
     r->lo = fmin(r->lo, value);
     r->hi = fmax(r->hi, value);
-    r->positive = r->positive && value > 0.0;
+    if (value > 0.0)
+        r->least = fmin(r->least, value);
 }
 
 static void add_series(struct maker *m, const bh_figure_series *series, bh_figure_point *point)
@@ -82,10 +84,10 @@ static bh_code take_curves(struct maker *m)
 /* From the lowest to the highest of all curves at point i; NAN where one of them is empty. */
 static struct reach reach_of(const struct maker *m, size_t curves, size_t i)
 {
-    struct reach r = {INFINITY, -INFINITY, true};
+    struct reach r = {INFINITY, -INFINITY, INFINITY};
     for (size_t k = 0; k < curves; k++) {
         if (i >= m->series[k].count || isnan(m->series[k].point[i].y))
-            return (struct reach){NAN, NAN, false};
+            return (struct reach){NAN, NAN, NAN};
         widen(&r, m->series[k].point[i].y);
     }
     return r;
@@ -290,17 +292,19 @@ static bh_axis close_around(double lo, double hi, bool logarithmic)
 static void choose_axes(struct maker *m)
 {
     bh_figure *f = m->out;
-    const bool x_log = m->p->curves->against == BH_AGAINST_ENERGY && m->x.positive &&
+    const bool x_log = m->p->curves->against == BH_AGAINST_ENERGY && m->x.lo > 0.0 &&
                        m->x.hi > 2.0 * m->x.lo,
-               y_log = m->y.positive && m->y.hi > logarithmic_from * m->y.lo;
+               y_log = m->y.lo >= 0.0 && m->y.hi > logarithmic_from * m->y.least;
+    const double lowest =
+        y_log ? fmax(m->y.least, m->y.hi / most_decades) : m->y.lo; /* a zero leaves the frame */
     const bh_shown_unit x = bh_shown_prefix(bh_curve_variable(m->p->curves->against), m->x.lo,
                                             m->x.hi, x_log),
-                        y = bh_shown_prefix(m->p->shown, m->y.lo, m->y.hi, y_log);
+                        y = bh_shown_prefix(m->p->shown, lowest, m->y.hi, y_log);
     f->x = (bh_figure_scale){bh_shown_words(bh_curve_variable(m->p->curves->against)),
                              bh_curve_say(m->arena, "%s", x.unit),
                              close_around(m->x.lo * x.scale, m->x.hi * x.scale, x_log)};
     f->y = (bh_figure_scale){bh_shown_words(m->p->shown), bh_curve_say(m->arena, "%s", y.unit),
-                             bh_axis_around(m->y.lo * y.scale, m->y.hi * y.scale, y_log)};
+                             bh_axis_around(lowest * y.scale, m->y.hi * y.scale, y_log)};
     scale_all(m, x.scale, y.scale);
 }
 
@@ -311,7 +315,7 @@ bh_code bh_curve_figure(const bh_curve_picture *picture, bh_arena *arena, bh_fig
     *out = (bh_figure){.title = ""};
     if (!m)
         return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
-    const struct reach nothing = {INFINITY, -INFINITY, true};
+    const struct reach nothing = {INFINITY, -INFINITY, INFINITY};
     *m = (struct maker){
         .p = picture, .arena = arena, .out = out, .err = err, .x = nothing, .y = nothing};
     out->series = m->series;

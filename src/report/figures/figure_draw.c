@@ -3,27 +3,19 @@
 
 #include <math.h>
 
-#include "beamhours/report/figure_layout.h"
+#include "beamhours/report/easel.h"
 
-static const double frame_line = 0.8, grid_line = 0.4, curve_line = 1.5, bar_line = 0.9,
-                    thin_bar = 0.5;
+static const double frame_line = 0.8, grid_line = 0.4, bar_line = 0.9, thin_bar = 0.5;
 static const double tick_long = 4.0, minor_long = 2.2, cap = 2.4;
-static const double shade_grey = 0.945, grid_grey = 0.86, band_grey = 0.8, span_grey = 0.35;
+static const double shade_grey = 0.945, grid_grey = 0.86, band_grey = 0.8;
 
-/* What drawing works with. */
-struct easel {
-    const bh_figure *figure;
-    const bh_figure_layout *l;
-    const bh_pen *pen;
-};
-
-static double at_x(const struct easel *e, double x)
+static double at_x(const bh_easel *e, double x)
 {
     return bh_figure_x(e->figure, e->l, x);
 }
 
 /* Kept near the frame: a bar may reach to minus infinity on a logarithmic axis. */
-static double at_y(const struct easel *e, double y)
+static double at_y(const bh_easel *e, double y)
 {
     const bh_box *f = &e->l->frame;
     const double place = bh_figure_y(e->figure, e->l, y);
@@ -32,7 +24,7 @@ static double at_y(const struct easel *e, double y)
     return fmin(fmax(place, f->y - f->high), f->y + 2.0 * f->high);
 }
 
-static void clip_to_frame(const struct easel *e)
+static void clip_to_frame(const bh_easel *e)
 {
     const bh_box *f = &e->l->frame;
     cairo_save(e->pen->to);
@@ -42,7 +34,7 @@ static void clip_to_frame(const struct easel *e)
 
 /* --- behind the curves --- */
 
-static void shades(const struct easel *e)
+static void shades(const bh_easel *e)
 {
     const bh_box *f = &e->l->frame;
     bh_pen_grey(e->pen, shade_grey);
@@ -54,7 +46,7 @@ static void shades(const struct easel *e)
 }
 
 /* Strokes along x at the ticks: from `low` up or down by `by`. */
-static void strokes_x(const struct easel *e, double low, double by, double thick)
+static void strokes_x(const bh_easel *e, double low, double by, double thick)
 {
     bh_stroke s[BH_MOST_TICKS];
     for (int i = 0; i < e->l->x.count; i++) {
@@ -64,7 +56,7 @@ static void strokes_x(const struct easel *e, double low, double by, double thick
     bh_pen_strokes(e->pen, (size_t)e->l->x.count, s);
 }
 
-static void strokes_y(const struct easel *e, double left, double by, double thick)
+static void strokes_y(const bh_easel *e, double left, double by, double thick)
 {
     bh_stroke s[BH_MOST_TICKS];
     for (int i = 0; i < e->l->y.count; i++) {
@@ -74,7 +66,7 @@ static void strokes_y(const struct easel *e, double left, double by, double thic
     bh_pen_strokes(e->pen, (size_t)e->l->y.count, s);
 }
 
-static void grid(const struct easel *e)
+static void grid(const bh_easel *e)
 {
     const bh_box *f = &e->l->frame;
     bh_pen_grey(e->pen, grid_grey);
@@ -83,7 +75,7 @@ static void grid(const struct easel *e)
 }
 
 /* One piece of a band without a gap: forth along its upper edge, back along the lower one. */
-static void band_piece(const struct easel *e, const bh_figure_band *b, size_t from, size_t to)
+static void band_piece(const bh_easel *e, const bh_figure_band *b, size_t from, size_t to)
 {
     if (to - from < 2)
         return;
@@ -95,7 +87,7 @@ static void band_piece(const struct easel *e, const bh_figure_band *b, size_t fr
     cairo_fill(e->pen->to);
 }
 
-static void bands(const struct easel *e)
+static void bands(const bh_easel *e)
 {
     bh_pen_grey(e->pen, band_grey);
     for (size_t n = 0; n < e->figure->band_count; n++) {
@@ -112,17 +104,10 @@ static void bands(const struct easel *e)
 
 /* --- curves and points --- */
 
-static void set_dashes(const struct easel *e, const bh_figure_style *style)
-{
-    bh_pen_colour(e->pen, style);
-    cairo_set_line_width(e->pen->to, curve_line);
-    cairo_set_dash(e->pen->to, style->dash, style->dash_count, 0.0);
-}
-
-static void curve(const struct easel *e, const bh_figure_series *s)
+static void curve(const bh_easel *e, const bh_figure_series *s)
 {
     bool open = false;
-    set_dashes(e, bh_figure_style_at(s->style));
+    bh_easel_dashes(e, bh_figure_style_at(s->style));
     for (size_t i = 0; i < s->count; i++) {
         if (!isfinite(s->point[i].y)) {
             open = false;
@@ -140,7 +125,7 @@ static void curve(const struct easel *e, const bh_figure_series *s)
 }
 
 /* A bar of `half` the length both ways, with caps or without. */
-static void error_bar(const struct easel *e, const bh_figure_point *p, double half, bool capped)
+static void error_bar(const bh_easel *e, const bh_figure_point *p, double half, bool capped)
 {
     if (!(half > 0.0))
         return;
@@ -152,24 +137,35 @@ static void error_bar(const struct easel *e, const bh_figure_point *p, double ha
     bh_pen_stroke(e->pen, &(bh_stroke){x - cap, high, x + cap, high, bar_line});
 }
 
-static void points(const struct easel *e, const bh_figure_series *s)
+static void bars(const bh_easel *e, const bh_figure_series *s)
 {
-    const bool full = s->kind == BH_SERIES_PLANNED;
-    const bh_figure_style *style = bh_figure_style_at(s->style);
+    bh_easel_points(e, s);
     for (size_t i = 0; i < s->count; i++) {
         const bh_figure_point *p = &s->point[i];
         if (!isfinite(p->y) || !isfinite(p->x))
             continue;
-        bh_pen_grey(e->pen, full ? 0.0 : 0.2);
         error_bar(e, p, p->outer, false);
         error_bar(e, p, p->inner, true);
-        bh_pen_mark(e->pen, style->mark, full, at_x(e, p->x), at_y(e, p->y));
+    }
+}
+
+/* Whole also where they stand on the frame. */
+static void marks(const bh_easel *e, const bh_figure_series *s)
+{
+    const bh_box *f = &e->l->frame;
+    bh_easel_points(e, s);
+    for (size_t i = 0; i < s->count; i++) {
+        const double x = at_x(e, s->point[i].x), y = at_y(e, s->point[i].y);
+        if (isfinite(s->point[i].y) && x >= f->x && x <= f->x + f->wide && y >= f->y &&
+            y <= f->y + f->high)
+            bh_pen_mark(e->pen, bh_figure_style_at(s->style)->mark, s->kind == BH_SERIES_PLANNED, x,
+                        y);
     }
 }
 
 /* --- in front --- */
 
-static void x_ticks(const struct easel *e)
+static void x_ticks(const bh_easel *e)
 {
     const bh_lettering how = bh_figure_letters(BH_LETTERS_TICK);
     const double low = e->l->frame.y + e->l->frame.high;
@@ -187,7 +183,7 @@ static void x_ticks(const struct easel *e)
                                       .align = BH_ALIGN_MIDDLE});
 }
 
-static void y_ticks(const struct easel *e)
+static void y_ticks(const bh_easel *e)
 {
     const bh_lettering how = bh_figure_letters(BH_LETTERS_TICK);
     const double left = e->l->frame.x;
@@ -207,7 +203,7 @@ static void y_ticks(const struct easel *e)
                                       .centred = true});
 }
 
-static void axes(const struct easel *e)
+static void axes(const bh_easel *e)
 {
     const bh_box *f = &e->l->frame;
     const bh_lettering how = bh_figure_letters(BH_LETTERS_AXIS);
@@ -227,118 +223,7 @@ static void axes(const struct easel *e)
                  &(bh_text_place){.x = 6.0, .y = f->y + f->high / 2.0, .upright = true});
 }
 
-static double lane_y(const struct easel *e, size_t i)
-{
-    return e->l->frame.y - 4.0 - e->l->lane_high * (e->l->spans[i].lane + 0.5);
-}
-
-static void upright(const struct easel *e, double x, double y)
-{
-    const double tall = fmin(0.36 * e->l->lane_high, 2.6);
-    cairo_move_to(e->pen->to, x, y - tall);
-    cairo_line_to(e->pen->to, x, y + tall);
-}
-
-static void stroke_path(const struct easel *e, double thick)
-{
-    cairo_set_line_width(e->pen->to, thick);
-    cairo_stroke(e->pen->to);
-}
-
-/* The bars of the spans, then their ends, then the edges of their bins, each kind at once. */
-static void span_bars(const struct easel *e)
-{
-    const bh_figure *f = e->figure;
-    bh_pen_grey(e->pen, span_grey);
-    for (size_t i = 0; i < f->span_count; i++) {
-        cairo_move_to(e->pen->to, e->l->spans[i].from, lane_y(e, i));
-        cairo_line_to(e->pen->to, e->l->spans[i].to, lane_y(e, i));
-    }
-    stroke_path(e, fmin(0.3 * e->l->lane_high, 1.8));
-    for (size_t i = 0; i < f->span_count; i++) {
-        upright(e, e->l->spans[i].from, lane_y(e, i));
-        upright(e, e->l->spans[i].to, lane_y(e, i));
-    }
-    stroke_path(e, 0.7);
-    for (size_t i = 0; i < f->span_count; i++)
-        for (size_t k = 0; k < f->span[i].edge_count; k++) {
-            const double x = at_x(e, f->span[i].edge[k]);
-            if (x > e->l->spans[i].from && x < e->l->spans[i].to)
-                upright(e, x, lane_y(e, i));
-        }
-    stroke_path(e, 0.5);
-}
-
-static void span_names(const struct easel *e)
-{
-    const bh_lettering how = bh_figure_letters(BH_LETTERS_SPAN);
-    for (size_t i = 0; e->l->names && i < e->figure->span_count; i++)
-        bh_pen_write(e->pen, &how, e->figure->span[i].name,
-                     &(bh_text_place){.x = e->l->spans[i].name_x,
-                                      .y = lane_y(e, i),
-                                      .align = e->l->spans[i].name_align,
-                                      .centred = true});
-}
-
-static void sample(const struct easel *e, const bh_legend_entry *entry)
-{
-    const double x = entry->x, y = entry->y, end = x + BH_LEGEND_SAMPLE, middle = (x + end) / 2.0;
-    if (entry->kind == BH_ENTRY_BAND) {
-        bh_pen_grey(e->pen, band_grey);
-        cairo_rectangle(e->pen->to, x, y - 3.5, BH_LEGEND_SAMPLE, 7.0);
-        cairo_fill(e->pen->to);
-        return;
-    }
-    if (entry->kind == BH_ENTRY_SPAN) {
-        bh_pen_grey(e->pen, span_grey);
-        bh_pen_stroke(e->pen, &(bh_stroke){x, y, end, y, 1.8});
-        for (int i = 0; i < 4; i++) {
-            const double at = x + BH_LEGEND_SAMPLE * i / 3.0;
-            bh_pen_stroke(e->pen, &(bh_stroke){at, y - 2.6, at, y + 2.6, 0.6});
-        }
-        return;
-    }
-    const bh_figure_series *s = &e->figure->series[entry->number];
-    const bh_figure_style *style = bh_figure_style_at(s->style);
-    if (s->kind == BH_SERIES_LINE) {
-        set_dashes(e, style);
-        bh_pen_stroke(e->pen, &(bh_stroke){x, y, end, y, curve_line});
-        cairo_set_dash(e->pen->to, NULL, 0, 0.0);
-        return;
-    }
-    bh_pen_grey(e->pen, s->kind == BH_SERIES_PLANNED ? 0.0 : 0.2);
-    bh_pen_stroke(e->pen, &(bh_stroke){middle, y - 5.0, middle, y + 5.0, bar_line});
-    bh_pen_stroke(e->pen, &(bh_stroke){middle - cap, y - 5.0, middle + cap, y - 5.0, bar_line});
-    bh_pen_stroke(e->pen, &(bh_stroke){middle - cap, y + 5.0, middle + cap, y + 5.0, bar_line});
-    bh_pen_mark(e->pen, style->mark, s->kind == BH_SERIES_PLANNED, middle, y);
-}
-
-static void write_left(const struct easel *e, bh_letters which, const char *text, double y)
-{
-    const bh_lettering how = bh_figure_letters(which);
-    if (text[0])
-        bh_pen_write(e->pen, &how, text, &(bh_text_place){.x = 8.0, .y = y});
-}
-
-static void around(const struct easel *e)
-{
-    const bh_lettering how = bh_figure_letters(BH_LETTERS_LEGEND);
-    span_bars(e);
-    span_names(e);
-    for (size_t i = 0; i < e->l->entry_count; i++) {
-        const bh_legend_entry *entry = &e->l->entries[i];
-        sample(e, entry);
-        bh_pen_write(e->pen, &how, entry->name,
-                     &(bh_text_place){.x = entry->x + BH_LEGEND_SAMPLE + BH_LEGEND_GAP,
-                                      .y = entry->y,
-                                      .centred = true});
-    }
-    write_left(e, BH_LETTERS_TITLE, e->figure->title, e->l->title_y);
-    write_left(e, BH_LETTERS_SUBTITLE, e->figure->subtitle, e->l->subtitle_y);
-    write_left(e, BH_LETTERS_FOOT, e->figure->foot, e->l->foot_y);
-}
-
-static void draw(const struct easel *e)
+static void draw(const bh_easel *e)
 {
     clip_to_frame(e);
     shades(e);
@@ -352,9 +237,12 @@ static void draw(const struct easel *e)
     clip_to_frame(e);
     for (size_t i = 0; i < e->figure->series_count; i++)
         if (e->figure->series[i].kind != BH_SERIES_LINE)
-            points(e, &e->figure->series[i]);
+            bars(e, &e->figure->series[i]);
     cairo_restore(e->pen->to);
-    around(e);
+    for (size_t i = 0; i < e->figure->series_count; i++)
+        if (e->figure->series[i].kind != BH_SERIES_LINE)
+            marks(e, &e->figure->series[i]);
+    bh_easel_around(e);
 }
 
 bh_code bh_figure_draw(const bh_figure *figure, cairo_t *to, bh_error *err)
@@ -367,7 +255,7 @@ bh_code bh_figure_draw(const bh_figure *figure, cairo_t *to, bh_error *err)
     bad = bh_figure_layout_make(figure, &pen, &layout, err);
     if (!bad) {
         cairo_save(to);
-        draw(&(struct easel){figure, &layout, &pen});
+        draw(&(bh_easel){figure, &layout, &pen});
         cairo_restore(to);
         if (cairo_status(to))
             bad = bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));

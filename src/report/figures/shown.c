@@ -159,7 +159,7 @@ static bh_shown_unit with_power(const char *unit, double most)
 bh_shown_unit bh_shown_prefix(int shown, double lo, double hi, bool logarithmic)
 {
     const struct words *w = find(shown);
-    const double most = logarithmic ? sqrt(lo) * sqrt(hi) : fmax(fabs(lo), fabs(hi));
+    const double most = logarithmic ? pow(lo, 0.25) * pow(hi, 0.75) : fmax(fabs(lo), fabs(hi));
     if (!w || !w->prefixes) {
         const char *unit = w ? w->unit : bh_column_at(shown)->unit;
         return with_power(strcmp(unit, "1") == 0 ? "" : unit, logarithmic ? 1.0 : most);
