@@ -24,9 +24,9 @@ static uint32_t turned(uint32_t x, int by)
 
 static void spread(const unsigned char *block, uint32_t *w)
 {
-    for (int i = 0; i < 16; i++)
-        w[i] = (uint32_t)block[4 * i] << 24 | (uint32_t)block[4 * i + 1] << 16 |
-               (uint32_t)block[4 * i + 2] << 8 | (uint32_t)block[4 * i + 3];
+    for (int i = 0; i < 16; i++, block += 4)
+        w[i] = (uint32_t)block[0] << 24 | (uint32_t)block[1] << 16 | (uint32_t)block[2] << 8 |
+               (uint32_t)block[3];
     for (int i = 16; i < ROUNDS; i++) {
         const uint32_t a = w[i - 15], b = w[i - 2];
         w[i] = w[i - 16] + (turned(a, 7) ^ turned(a, 18) ^ a >> 3) + w[i - 7] +

@@ -3,6 +3,7 @@
 #include "beamhours/run/what_if.h"
 
 #include <math.h>
+#include <stdlib.h>
 
 #include "beamhours/run/totals.h"
 
@@ -42,67 +43,97 @@ struct worse {
     double days_less; /* [h] of the calendar */
 };
 
-static double length(const bh_stretch *h)
+/* One setting, to be put in order. */
+struct candidate {
+    double hours; /* [h] on full and empty target */
+    size_t setting;
+};
+
+static int longer_first(const void *a, const void *b)
 {
-    return h->full + h->empty;
+    const struct candidate *p = a, *q = b;
+    if (p->hours > q->hours || p->hours < q->hours)
+        return p->hours > q->hours ? -1 : 1;
+    return p->setting < q->setting ? -1 : 1;
 }
 
-static size_t longest_left(const struct worse *w, const bool *gone)
+/* Where settings are left out, reused from one try to the next. */
+struct trial {
+    const struct worse *worse;
+    size_t *order;
+    size_t *place; /* of each setting in the order */
+    bh_setting *settings;
+    bh_stretch *stretches;
+};
+
+static bool prepare_trial(const struct asking *a, const struct worse *w, struct trial *t)
 {
     const size_t n = w->plan->setting_count;
-    size_t longest = n;
+    struct candidate *list = bh_arena_take(a->arena, n + 1, sizeof *list);
+    *t = (struct trial){.worse = w,
+                        .order = bh_arena_take(a->arena, n + 1, sizeof *t->order),
+                        .place = bh_arena_take(a->arena, n + 1, sizeof *t->place),
+                        .settings = bh_arena_take(a->arena, n + 1, sizeof *t->settings),
+                        .stretches = bh_arena_take(a->arena, n + 1, sizeof *t->stretches)};
+    if (!list || !t->order || !t->place || !t->settings || !t->stretches)
+        return false;
     for (size_t s = 0; s < n; s++)
-        if (!gone[s] && (longest == n || length(&w->hours[s]) > length(&w->hours[longest])))
-            longest = s;
-    return longest;
+        list[s] = (struct candidate){w->hours[s].full + w->hours[s].empty, s};
+    qsort(list, n, sizeof *list, longer_first);
+    for (size_t i = 0; i < n; i++) {
+        t->order[i] = list[i].setting;
+        t->place[list[i].setting] = i;
+    }
+    return true;
 }
 
-/* Sets hours [h] of the calendar that remain without the settings that are gone, their changes and
- * tasks among what is saved. */
-static bh_code without(const struct asking *a, const struct worse *w, const bool *gone,
-                       double *hours, bh_error *err)
+/* Sets hours [h] of the calendar that remain without the first `gone` of the order, their changes
+ * and tasks among what is saved. */
+static bh_code without(const struct asking *a, const struct trial *t, size_t gone, double *hours,
+                       bh_error *err)
 {
-    bh_plan plan = *w->plan;
-    bh_totals t;
-    bh_setting *settings = bh_arena_take(a->arena, plan.setting_count + 1, sizeof *settings);
-    bh_stretch *stretches = bh_arena_take(a->arena, plan.setting_count + 1, sizeof *stretches);
-    if (!settings || !stretches)
-        return no_memory(err);
-    plan.settings = settings;
+    bh_plan plan = *t->worse->plan;
+    bh_totals totals;
+    plan.settings = t->settings;
     plan.setting_count = 0;
-    for (size_t s = 0; s < w->plan->setting_count; s++)
-        if (!gone[s]) {
-            settings[plan.setting_count] = w->plan->settings[s];
-            stretches[plan.setting_count++] = w->hours[s];
+    for (size_t s = 0; s < t->worse->plan->setting_count; s++)
+        if (t->place[s] >= gone) {
+            t->settings[plan.setting_count] = t->worse->plan->settings[s];
+            t->stretches[plan.setting_count++] = t->worse->hours[s];
         }
-    *hours = w->days_less;
+    *hours = t->worse->days_less;
     if (plan.setting_count == 0)
         return BH_OK;
-    const bh_code bad = bh_totals_from_plan(&plan, stretches, a->arena, &t, err);
+    const bh_code bad = bh_totals_from_plan(&plan, t->stretches, a->arena, &totals, err);
     if (!bad)
-        *hours += t.scheduled_hours;
+        *hours += totals.scheduled_hours;
     return bad;
 }
 
-/* The longest settings first, until the rest fits. */
+/* The longest settings first, as many as make the rest fit: their number lies between `fewest` and
+ * `most`, which are halved. */
 static bh_code drop(const struct asking *a, const struct worse *w, bh_what_if *out, bh_error *err)
 {
-    const size_t n = w->plan->setting_count;
     const double granted = a->granted * (1.0 + 1e-9);
-    size_t *list = bh_arena_take(a->arena, n + 1, sizeof *list);
-    bool *gone = bh_arena_take(a->arena, n + 1, sizeof *gone);
+    struct trial t;
     double hours = 0.0;
-    if (!list || !gone)
+    if (!prepare_trial(a, w, &t))
         return no_memory(err);
-    out->drop = list;
-    bh_code bad = without(a, w, gone, &hours, err);
-    out->missing_hours = hours > granted ? hours - a->granted : 0.0;
-    while (!bad && hours > granted && out->drop_count < n) {
-        const size_t longest = longest_left(w, gone);
-        gone[longest] = true;
-        list[out->drop_count++] = longest;
-        bad = without(a, w, gone, &hours, err);
+    out->drop = t.order;
+    bh_code bad = without(a, &t, 0, &hours, err);
+    if (bad || hours <= granted)
+        return bad;
+    out->missing_hours = hours - a->granted;
+    size_t fewest = 0, most = w->plan->setting_count;
+    while (!bad && most - fewest > 1) {
+        const size_t middle = fewest + (most - fewest) / 2;
+        bad = without(a, &t, middle, &hours, err);
+        if (hours > granted)
+            fewest = middle;
+        else
+            most = middle;
     }
+    out->drop_count = most;
     return bad;
 }
 

@@ -2,7 +2,7 @@
  * it know; units that version 3 no longer has are declared. */
 #include "beamhours/report/paper.h"
 
-#include <stdlib.h>
+#include <math.h>
 #include <string.h>
 
 #include "beamhours/base/number.h"
@@ -104,23 +104,25 @@ static const struct {
     {"%", "\\percent"},
 };
 
+/* The macro of a word of `length` bytes, or NULL. */
+static const char *macro_of(const char *word, size_t length)
+{
+    for (size_t i = 0; i < sizeof units / sizeof units[0]; i++)
+        if (strlen(units[i].word) == length && strncmp(units[i].word, word, length) == 0)
+            return units[i].macro;
+    return NULL;
+}
+
 /* "cm2" or "cm": the macro of the word and its power; false for a word that is none. */
 static bool append_unit(const char *word, size_t length, bool per, bh_text *out)
 {
-    size_t letters_long = length;
-    const bool squared = length > 1 && word[length - 1] == '2';
-    const bool cubed = length > 1 && word[length - 1] == '3';
-    letters_long -= squared || cubed;
-    for (size_t i = 0; i < sizeof units / sizeof units[0]; i++)
-        if (strlen(units[i].word) == letters_long &&
-            strncmp(units[i].word, word, letters_long) == 0) {
-            bh_text_appendf(out, "%s%s%s", per ? "\\per" : "", units[i].macro,
-                            squared ? "\\squared"
-                            : cubed ? "\\cubed"
-                                    : "");
-            return true;
-        }
-    return false;
+    const char last = length > 1 ? word[length - 1] : ' ';
+    const char *power = last == '2' ? "\\squared" : last == '3' ? "\\cubed" : "";
+    const char *macro = macro_of(word, length - (power[0] != '\0'));
+    if (!macro)
+        return false;
+    bh_text_appendf(out, "%s%s%s", per ? "\\per" : "", macro, power);
+    return true;
 }
 
 /* "1/cm2/s" as \si{\per\centi\metre\squared\per\second}; what is no such unit as it stands. */
@@ -194,26 +196,30 @@ static size_t longest(const bh_paper_table *t, size_t column)
     return most;
 }
 
+enum { SENTENCE = 28, PAGE = 88, LEAST = 10 }; /* letters */
+
+static bool is_sentence(const bh_paper_table *t, size_t column)
+{
+    return !t->columns[column].number && longest(t, column) > SENTENCE;
+}
+
 /* Columns of sentences share what the others leave of the page. */
 static void columns(const bh_paper_table *t, bh_text *out)
 {
-    enum { SENTENCE = 28, PAGE = 88 };
     size_t taken = 0, sentences = 0;
+    for (size_t c = 0; c < t->column_count; c++)
+        if (is_sentence(t, c))
+            sentences += longest(t, c);
+        else
+            taken += longest(t, c) + 2;
+    const double left = taken + 2 * LEAST < PAGE ? (double)(PAGE - taken) / PAGE : 0.25;
     for (size_t c = 0; c < t->column_count; c++) {
-        const size_t n = longest(t, c);
-        const bool wide = !t->columns[c].number && n > SENTENCE;
-        taken += wide ? 0 : n + 2;
-        sentences += wide ? n : 0;
-    }
-    const double left = taken + 20 < PAGE ? (double)(PAGE - taken) / PAGE : 0.25;
-    for (size_t c = 0; c < t->column_count; c++) {
-        const size_t n = longest(t, c);
-        if (t->columns[c].number || n <= SENTENCE) {
+        if (!is_sentence(t, c)) {
             bh_text_append(out, t->columns[c].number ? "r" : "l");
             continue;
         }
-        const double share = 0.95 * left * (double)n / (double)sentences;
-        bh_text_appendf(out, "p{%.2f\\linewidth}", share > 0.1 ? share : 0.1);
+        const double share = 0.95 * left * (double)longest(t, c) / (double)sentences;
+        bh_text_appendf(out, "p{%.2f\\linewidth}", fmax(share, (double)LEAST / 100.0));
     }
 }
 

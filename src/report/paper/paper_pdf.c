@@ -194,37 +194,41 @@ static double natural(const struct sheet *s, const bh_paper_table *t, size_t col
     return most + 0.5;
 }
 
-/* Columns of words give way until the table fits; false where they cannot. */
+/* [pt] that columns of words take where none is wider than `most`. */
+static double words_wide(const struct grid *g, double most)
+{
+    double sum = 0.0;
+    for (size_t c = 0; c < g->t->column_count; c++)
+        if (!g->t->columns[c].number)
+            sum += fmin(g->width[c], most);
+    return sum;
+}
+
+/* The widest columns of words give way until the table fits; false where they have not the room. */
 static bool fit(const struct sheet *s, struct grid *g)
 {
+    enum { HALVINGS = 24 };
     const size_t n = g->t->column_count;
-    double numbers = cell_gap * (double)(n - 1), words = 0.0;
-    size_t word_columns = 0;
+    double left = inside(s) - cell_gap * (double)(n - 1);
     for (size_t c = 0; c < n; c++) {
         g->width[c] = natural(s, g->t, c);
-        if (g->t->columns[c].number)
-            numbers += g->width[c];
-        else
-            words += g->width[c];
-        word_columns += !g->t->columns[c].number;
+        left -= g->t->columns[c].number ? g->width[c] : 0.0;
     }
-    g->total = numbers + words;
-    const double left = inside(s) - numbers;
-    if (words <= left)
-        return true;
-    /* narrow columns keep their width, the others share the rest */
-    double share = left / (double)(word_columns ? word_columns : 1);
-    double rest = left, wide = 0.0;
-    for (size_t c = 0; c < n; c++)
-        if (!g->t->columns[c].number && g->width[c] <= share)
-            rest -= g->width[c];
-        else if (!g->t->columns[c].number)
-            wide += g->width[c];
-    for (size_t c = 0; c < n; c++)
-        if (!g->t->columns[c].number && g->width[c] > share)
-            g->width[c] *= rest / wide;
-    g->total = inside(s);
-    return share > 45.0;
+    double low = 0.0, most = inside(s);
+    for (int i = 0; i < HALVINGS && words_wide(g, inside(s)) > left; i++) {
+        const double middle = 0.5 * (low + most);
+        if (words_wide(g, middle) > left)
+            most = middle;
+        else
+            low = middle;
+    }
+    g->total = cell_gap * (double)(n - 1);
+    for (size_t c = 0; c < n; c++) {
+        if (!g->t->columns[c].number)
+            g->width[c] = fmin(g->width[c], most);
+        g->total += g->width[c];
+    }
+    return most > 60.0 && left > 0.0;
 }
 
 static void rule(const struct sheet *s, double long_, double thick)

@@ -73,6 +73,28 @@ static bool in_background(const char *section)
     return strcmp(section, "Background") == 0;
 }
 
+/* "quasi-elastic" of "quasi-elastic on 27Al in layer 1": lines of one kind have one source, which
+ * the first of them says. */
+static size_t kind_length(const char *name)
+{
+    const char *on = strstr(name, " on ");
+    return on ? (size_t)(on - name) : strlen(name);
+}
+
+static const char *source_of(const bh_explanation *e, size_t line)
+{
+    const char *name = bh_explanation_line(e, line)->name;
+    const size_t n = kind_length(name);
+    for (size_t i = line + 1; i-- > 0;) {
+        const bh_line *l = bh_explanation_line(e, i);
+        if (l->kind == BH_LINE_SECTION)
+            break;
+        if (l->source && kind_length(l->name) == n && strncmp(l->name, name, n) == 0)
+            return l->source;
+    }
+    return NULL;
+}
+
 static void items(bh_reporting *x, size_t told)
 {
     const bh_explanation *e = x->told[told];
@@ -86,8 +108,9 @@ static void items(bh_reporting *x, size_t told)
         bh_paper_cell(&x->w, bh_report_row_name(x, x->told_row[told]));
         bh_paper_cell(&x->w, bh_paper_text(&x->w, "%s", l->name));
         bh_paper_cell(&x->w, bare(x, l->value));
-        bh_paper_cell(
-            &x->w, l->source ? bh_paper_text(&x->w, "[%d]", bh_paper_cite(&x->w, l->source)) : "");
+        const char *source = source_of(e, i);
+        bh_paper_cell(&x->w,
+                      source ? bh_paper_text(&x->w, "[%d]", bh_paper_cite(&x->w, source)) : "");
     }
 }
 

@@ -142,20 +142,26 @@ static void readout(bh_reporting *x, bh_text *t)
                         bh_report_percent(x, least), bh_report_row_name(x, worst));
 }
 
-/* In words, of the cause with the largest effect on any row. */
-static const char *largest_cause(const bh_reporting *x)
+/* [1] of a kind of cause, on the row where it does most. */
+static double most_of(const bh_reporting *x, bh_cause_kind kind)
 {
-    const bh_causes *causes = bh_table_causes(x->table);
     double most = 0.0;
-    const char *words = "";
     for (size_t i = 0; i < x->view.row_count; i++) {
         const bh_effects e = bh_table_effects(x->table, false, x->view.rows[i]);
-        for (int k = 0; k < BH_CAUSE_DEAD_TIME; k++) {
-            const double size = bh_effects_of(causes, &e, (bh_cause_kind)k);
-            if (size > most) {
-                most = size;
-                words = bh_cause_words((bh_cause_kind)k);
-            }
+        most = fmax(most, bh_effects_of(bh_table_causes(x->table), &e, kind));
+    }
+    return most;
+}
+
+static const char *largest_cause(const bh_reporting *x)
+{
+    double most = 0.0;
+    const char *words = "";
+    for (int k = 0; k < BH_CAUSE_DEAD_TIME; k++) {
+        const double size = most_of(x, (bh_cause_kind)k);
+        if (size > most) {
+            most = size;
+            words = bh_cause_words((bh_cause_kind)k);
         }
     }
     return words;
