@@ -102,6 +102,7 @@ static const struct {
     {"mg", "\\milli\\gram"},
     {"g", "\\gram"},
     {"%", "\\percent"},
+    {"mm", "\\milli\\metre"},
 };
 
 /* The macro of a word of `length` bytes, or NULL. */
@@ -153,6 +154,12 @@ static bool whole_number(const char *s)
     const char *end = NULL;
     double value = 0.0;
     return !bh_number_parse(s, &end, &value) && *end == '\0';
+}
+
+/* Behind the end of a row and an item a bracket or a star would be read as something else. */
+static const char *opening(const char *text)
+{
+    return text[0] == '[' || text[0] == '*' ? "{}" : "";
 }
 
 static void cell(const bh_paper_column *c, const char *text, bh_text *out)
@@ -238,7 +245,7 @@ static void table(const bh_block *b, bh_text *out)
     bh_text_append(out, "\\midrule\n\\endhead\n");
     for (size_t r = 0; r < t->row_count; r++) {
         for (size_t c = 0; c < t->column_count; c++) {
-            bh_text_append(out, c ? " & " : "");
+            bh_text_append(out, c ? " & " : opening(t->cells[r * t->column_count]));
             cell(&t->columns[c], t->cells[r * t->column_count + c], out);
         }
         bh_text_append(out, " \\\\\n");
@@ -275,7 +282,8 @@ static void block(const bh_block *b, bh_text *out)
         break;
     case BH_BLOCK_ITEM:
     case BH_BLOCK_REFERENCE:
-        within("\\item ", b->text, "\n", out);
+        bh_text_appendf(out, "\\item %s", opening(b->text));
+        within("", b->text, "\n", out);
         break;
     case BH_BLOCK_CAUTION:
         within("\\begin{quote}\\textbf{Caution.} ", b->text, "\\end{quote}\n\n", out);
