@@ -7,13 +7,26 @@
 #include <stdio.h>
 #include <stdlib.h>
 
+#include "beamhours/base/sentences.h"
+#include "beamhours/physics/kinematics.h"
 #include "beamhours/units/constants.h"
 
 #define BOZOIAN "Bozoian et al. 1990"
 #define CLINE   "estimate: nuclear surfaces 5 fm apart, Cline 1986"
 #define BARE    "no repulsion keeps the two apart"
+#define PION    134.9768           /* [MeV] the lightest */
 #define SLOWEST 0.01               /* [MeV] electrons */
 #define FORWARD (15.0 * BH_DEGREE) /* arms of unknown angle stand behind this */
+
+/* Kinetic energy [MeV] at which a head-on orbit of these charges, repelled, brings the nuclear
+ * surfaces within 5 fm of each other. */
+static double apart(const bh_encounter *encounter)
+{
+    const bh_particle *beam = encounter->beam;
+    const double closest = 1.25 * (cbrt(beam->a) + cbrt(encounter->a)) + 5.0; /* [fm] */
+    const double cm = abs(beam->charge) * encounter->z * BH_ALPHA * BH_HBARC / closest;
+    return cm * (beam->mass + encounter->target) / encounter->target;
+}
 
 bh_nuclear_limit bh_validity_nuclear(const bh_encounter *encounter)
 {
@@ -29,9 +42,31 @@ bh_nuclear_limit bh_validity_nuclear(const bh_encounter *encounter)
         return (bh_nuclear_limit){0.12 * z - 0.5, BOZOIAN ", unconfirmed"};
     if (beam->charge == 3)
         return (bh_nuclear_limit){0.33 * z + 1.4, BOZOIAN ", unconfirmed"};
-    const double closest = 1.25 * (cbrt(beam->a) + cbrt(encounter->a)) + 5.0; /* [fm] */
-    const double cm = beam->charge * z * BH_ALPHA * BH_HBARC / closest;
-    return (bh_nuclear_limit){cm * (beam->mass + encounter->target) / encounter->target, CLINE};
+    return (bh_nuclear_limit){apart(encounter), CLINE};
+}
+
+double bh_validity_excess(const bh_encounter *encounter, double q2)
+{
+    const bh_particle *beam = encounter->beam;
+    const bh_collision in = {beam->mass, encounter->target, encounter->kinetic};
+    const bh_nuclear_limit from = bh_validity_nuclear(encounter);
+    if (beam->kind == BH_KIND_LEPTON)
+        return 0.0;
+    const double most = bh_kinematics_largest_q2(&in);
+    const double wide = q2 > 0.0 && q2 < most ? sqrt(most / q2) : 1.0; /* 1 / sin(theta/2) */
+    const double limit =
+        from.kinetic > 0.0 ? from.kinetic * (wide + 1.0) : apart(encounter) * (wide - 1.0);
+    return limit > 0.0 ? 2.0 * encounter->kinetic / limit : (double)INFINITY;
+}
+
+bool bh_validity_reacts(const bh_encounter *encounter)
+{
+    const bh_particle *beam = encounter->beam;
+    const double M = encounter->target, m = beam->mass, T = encounter->kinetic;
+    if (!(T > bh_validity_nuclear(encounter).kinetic))
+        return false;
+    const double threshold = PION * (PION + 2.0 * (m + M)) / (2.0 * M);
+    return encounter->a > 1 || beam->a > 1 || T > threshold;
 }
 
 /* Classical scattering, where the electrons take a share v = V1/E of the energy off. */
@@ -79,6 +114,8 @@ static void say_nuclear(const bh_encounter *x, char *out, size_t size, int *leng
     else
         say(out, size, length, "they matter for %s at every energy (%s)", x->beam->name,
             from.source);
+    if (bh_validity_excess(x, 0.0) > BH_NUCLEAR_RULES)
+        say(out, size, length, BH_SAY_NUCLEAR_RULES);
 }
 
 static void say_screening(const bh_encounter *x, char *out, size_t size, int *length)

@@ -169,6 +169,28 @@ static void layer(const bh_layer *l, const char *lead, bh_text *to)
     bh_text_append(to, roles[l->role]);
 }
 
+/* The mass number of the one isotope of a scatterer named as an element, where nature has others
+ * too; else 0. */
+static int only_isotope(const bh_target *t)
+{
+    int only = 0;
+    size_t natural = 0, occurring = 0;
+    const bh_nuclide *all = bh_element_isotopes(t->scatterer_z, &natural);
+    for (size_t i = 0; i < natural; i++)
+        occurring += all[i].abundance > 0;
+    for (size_t l = 0; l < t->layer_count && t->scatterer_a == 0; l++)
+        for (size_t i = 0; t->layers[l].role == BH_ROLE_SAMPLE && i < t->layers[l].material->count;
+             i++) {
+            const bh_constituent *part = &t->layers[l].material->parts[i];
+            if (part->z != t->scatterer_z)
+                continue;
+            if (only && only != part->a)
+                return 0;
+            only = part->a;
+        }
+    return occurring > 1 ? only : 0;
+}
+
 void bh_say_target(const bh_target *t, bh_text *to)
 {
     char name[8];
@@ -177,6 +199,9 @@ void bh_say_target(const bh_target *t, bh_text *to)
     for (size_t i = 0; i < t->layer_count; i++)
         layer(&t->layers[i], i ? ", " : "", to);
     bh_text_appendf(to, "; scatterer %s", bh_nuclide_name(t->scatterer_z, t->scatterer_a, name));
+    const int only = only_isotope(t);
+    if (only)
+        bh_text_appendf(to, " (%s)", bh_nuclide_name(t->scatterer_z, only, name));
     add_given(to, "tilt", &t->tilt, BH_DIM_ANGLE);
     if (t->empty == BH_EMPTY_BEST)
         bh_text_append(to, ", empty target: best share");

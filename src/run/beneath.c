@@ -3,7 +3,9 @@
 
 #include <math.h>
 #include <stdio.h>
+#include <string.h>
 
+#include "beamhours/base/sentences.h"
 #include "beamhours/rates/average.h"
 #include "beamhours/run/elastic_tail.h"
 #include "beamhours/units/constants.h"
@@ -55,21 +57,44 @@ static bool matters(const bh_yielder *yielder, const bh_beneath_of *of)
     return of->nuclei * of->struck->a > worth_saying * all;
 }
 
+/* How far below the elastic line of a deuteron [MeV] its break-up begins at an angle, for light
+ * leptons: where the final mass is that of two nucleons. */
+static double breakup_below(const bh_encounter *e, double angle)
+{
+    static const double free = BH_MASS_PROTON + BH_MASS_NEUTRON;
+    const double total = e->kinetic + e->beam->mass;
+    return (free * free - e->target * e->target) / (2 * (e->target + total * (1 - cos(angle))));
+}
+
+/* The least of that over the arm: what a cut must stay below to leave no break-up.  0 where the
+ * nuclide is no deuteron, or not the one that a cut counts from. */
+static double spared_below(const bh_view *view, const bh_beneath_of *of,
+                           const bh_background_validity *validity, const bh_beneath *grid)
+{
+    const bh_encounter *line = &view->line.encounter;
+    const bool deuteron = of->struck->z == 1 && of->struck->a == 2;
+    if (validity->state == BH_COMPUTED || !deuteron || line->z != 1 || line->a != 2 ||
+        strcmp(validity->reason, BH_SAY_INELASTIC_BREAKUP) != 0)
+        return 0;
+    return breakup_below(&of->radiated->channel.encounter, grid->polar.to);
+}
+
 static void note(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *of,
-                 const bh_background_validity *validity)
+                 const bh_background_validity *validity, double spared)
 {
     char nuclide[8], what[256];
     if (!yielder->remarks || validity->state == BH_COMPUTED || !matters(yielder, of))
         return;
     bh_nuclide_name(of->struck->z, of->struck->a, nuclide);
-    snprintf(what, sizeof what, "%s%s%s", view->beside ? view->beside : "",
-             view->beside ? "s in the beam: " : "", validity->reason);
+    snprintf(what, sizeof what, BH_SAY_BESIDE, view->beside ? view->beside : "", validity->reason);
     bh_remarks_note(yielder->remarks, &(bh_remark){.kind = BH_REMARK_NOT_COMPUTED,
                                                    .at = view->setting->process.at,
                                                    .key = "models.process",
                                                    .who = nuclide,
-                                                   .what = what,
-                                                   .setting = view->setting->name});
+                                                   .what = view->beside ? what : validity->reason,
+                                                   .setting = view->setting->name,
+                                                   .low = spared,
+                                                   .high = spared});
 }
 
 /* The hard part of the tail of a line that is background. */
@@ -104,7 +129,7 @@ static void add_row(bh_yielder *yielder, const bh_view *view, const bh_beneath_o
         if (validity.state > worst.state)
             worst = validity;
     }
-    note(yielder, view, of, &worst);
+    note(yielder, view, of, &worst, spared_below(view, of, &worst, sum));
 }
 
 void bh_beneath_add(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *of,
@@ -237,7 +262,7 @@ bh_code bh_beneath_atomic(bh_yielder *yielder, const bh_view *view, const bh_ben
                 yielder, view,
                 &(bh_average_request){.function = evaluate_sharp, .context = &s, .tolerance = 1e-4},
                 total, err);
-        note(yielder, view, of, &s.worst);
+        note(yielder, view, of, &s.worst, 0);
     }
     return code;
 }

@@ -9,6 +9,7 @@
 #include "beamhours/physics/kinematics.h"
 #include "beamhours/physics/structure.h"
 #include "beamhours/run/event_search.h"
+#include "beamhours/run/struck.h"
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
@@ -69,17 +70,16 @@ static const bh_setting_arm *find_arm(const bh_setting *s, const char *name, bh_
     return NULL;
 }
 
-/* The struck nuclide: the named isotope, else the most abundant one of the element. */
+/* The struck nuclide: the isotope of the scatterer with most nuclei in the samples. */
 static const bh_nuclide *struck(const bh_target *t)
 {
-    if (t->scatterer_a)
-        return bh_nuclide_find(t->scatterer_z, t->scatterer_a);
-    size_t count = 0;
-    const bh_nuclide *all = bh_element_isotopes(t->scatterer_z, &count), *most = all;
-    for (size_t i = 1; i < count; i++)
-        if (all[i].abundance > most->abundance)
-            most = &all[i];
-    return most;
+    bh_arena *arena = bh_arena_new();
+    bh_struck_list list;
+    const bh_nuclide *found = NULL;
+    if (arena && bh_struck_from_target(t, arena, &list) && list.count > 0)
+        found = bh_nuclide_find(list.nuclides[list.main].z, list.nuclides[list.main].a);
+    bh_arena_free(arena);
+    return found;
 }
 
 static bh_code start(const bh_plan *plan, const bh_curve_request *r, struct origin *o,

@@ -166,13 +166,16 @@ bh_code bh_setting_measure(bh_evaluator *evaluator, size_t setting, bool bins,
     return BH_OK;
 }
 
-static void put_effects(const bh_evaluator *evaluator, const bh_effects *effects, bh_row *row)
+static void put_effects(const bh_evaluator *evaluator, const bh_view *view,
+                        const bh_effects *effects, bh_row *row)
 {
     const bool any = row->number[BH_COL_SIGNAL] > 0;
-    row->effects = *effects;
+    const bool known = bh_systematic_known(view, row->number[BH_COL_Q2]);
+    row->effects = known ? *effects : (bh_effects){.count = 0};
     bh_row_put(row, BH_COL_SYSTEMATIC,
-               any ? bh_effects_total(evaluator->systematics.causes, effects) : (double)NAN,
-               BH_WHY_NO_EVENTS);
+               any && known ? bh_effects_total(evaluator->systematics.causes, effects)
+                            : (double)NAN,
+               any ? BH_WHY_NUCLEAR : BH_WHY_NO_EVENTS);
 }
 
 /* The rows of one arm, with those of its bins where they are wanted. */
@@ -188,9 +191,10 @@ static bh_code fill_arm(bh_evaluator *evaluator, const bh_setting_hours *hours, 
         bh_systematic_arm(&evaluator->systematics, of, 1 + (size_t)bins, evaluator->effects, err);
     if (code)
         return code;
-    put_effects(evaluator, &evaluator->effects[0], &rows->whole[arm]);
+    const bh_view *view = &of->yield->view;
+    put_effects(evaluator, view, &evaluator->effects[0], &rows->whole[arm]);
     for (int b = 0; b < bins; b++)
-        put_effects(evaluator, &evaluator->effects[1 + b], &rows->bins[b]);
+        put_effects(evaluator, view, &evaluator->effects[1 + b], &rows->bins[b]);
     return BH_OK;
 }
 

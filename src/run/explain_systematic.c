@@ -140,7 +140,7 @@ static void explain_ratios_of_arms(bh_explaining *x, const struct row *row)
         const bh_place place = bh_table_place(x->table, false, i);
         const bh_setting *setting = &bh_table_plan(x->table)->settings[place.setting];
         const bh_setting_arm *arm = &setting->arms[place.arm];
-        const bool rate = bh_table_number(x->table, false, i, BH_COL_SIGNAL) > 0;
+        const bool rate = bh_table_number(x->table, false, i, BH_COL_SYSTEMATIC) >= 0;
         if (arm == x->arm->yield->view.arm || !rate)
             continue;
         const bh_effects effects = bh_table_effects(x->table, false, i);
@@ -176,6 +176,10 @@ void bh_explain_systematic(bh_explaining *x)
     bh_explain_section(x, "Systematic uncertainty");
     if (!(x->part->signal > 0))
         return;
+    if (!bh_systematic_known(&x->arm->yield->view, x->reached ? x->event.q2 * 1e-6 : 0)) {
+        bh_explain_add(x, (bh_line){.kind = BH_LINE_NOTE, .remark = bh_why_text(BH_WHY_NUCLEAR)});
+        return;
+    }
     struct row row = {.causes = with->causes, .parts = effects, .own = &effects[x->bin]};
     row.total = bh_effects_total(row.causes, row.own);
     explain_causes(x, &row);

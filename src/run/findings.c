@@ -2,6 +2,8 @@
 #include <math.h>
 #include <stdio.h>
 
+#include "beamhours/base/sentences.h"
+#include "beamhours/physics/validity.h"
 #include "beamhours/run/yield.h"
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
@@ -100,6 +102,15 @@ static void find_caveat(const struct finding *f)
                             .at = f->yield->view.setting->process.at,
                             .key = "models.process",
                             .what = text});
+}
+
+static void find_reactions(const struct finding *f)
+{
+    if (bh_validity_reacts(&f->channel->encounter))
+        note(f, (bh_remark){.kind = BH_REMARK_NOT_COMPUTED,
+                            .at = f->yield->view.setting->process.at,
+                            .key = "models.process",
+                            .what = BH_SAY_REACTIONS});
 }
 
 static void find_in_arm(bh_yielder *yielder, const bh_yield *yield, double signal)
@@ -217,6 +228,7 @@ bh_code bh_findings(bh_yielder *yielder, const bh_yield *yield, bh_error *err)
         bh_nuclide_name(struck->z, struck->a, f.nuclide);
         find_structure(&f);
         find_caveat(&f);
+        find_reactions(&f);
     }
     return code;
 }

@@ -1,8 +1,11 @@
 /* others.c - what else is in the beam, scattered into an arm. */
 #include <math.h>
-#include <stdlib.h>
+#include <stdio.h>
 
+#include "beamhours/base/sentences.h"
+#include "beamhours/physics/validity.h"
 #include "beamhours/run/beneath.h"
+#include "beamhours/units/nuclide.h"
 
 /* The kinetic energy of another particle of the same momentum: one beam line brings them all. */
 static double kinetic_beside(const bh_beam *beam, const bh_particle *other)
@@ -55,26 +58,38 @@ bh_code bh_beside_elastic(bh_yielder *yielder, const bh_beside *beside, const bh
     return code;
 }
 
-/* Where its formula does not hold. */
+static void note(bh_yielder *yielder, const bh_beside *b, bh_remark remark)
+{
+    remark.at = b->setting.beam.at;
+    remark.key = "beam.others";
+    remark.setting = b->setting.name;
+    bh_remarks_note(yielder->remarks, &remark);
+}
+
+/* Where its formula does not hold, and what hadrons do beside. */
 static bh_code note_caveat(bh_yielder *yielder, const bh_beside *b, const bh_struck_list *list,
                            bh_error *err)
 {
-    char text[512];
+    char text[512], nuclide[8];
     bh_channels channels;
     if (!yielder->remarks)
         return BH_OK;
     const bh_code code =
         bh_view_channels(yielder, &b->view, &list->nuclides[list->main], &channels, err);
-    const bh_channel *channel = &channels.list[0];
-    if (!code && channel->process->caveat &&
-        channel->process->caveat(&channel->encounter, text, sizeof text) > 0)
-        bh_remarks_note(yielder->remarks, &(bh_remark){.kind = BH_REMARK_OTHERS,
-                                                       .at = b->setting.beam.at,
-                                                       .key = "beam.others",
-                                                       .who = b->view.beside,
-                                                       .what = text,
-                                                       .setting = b->setting.name});
-    return code;
+    if (code)
+        return code;
+    const bh_encounter *e = &channels.list[0].encounter;
+    const bh_process *process = channels.list[0].process;
+    if (process->caveat && process->caveat(e, text, sizeof text) > 0)
+        note(yielder, b,
+             (bh_remark){.kind = BH_REMARK_OTHERS, .who = b->view.beside, .what = text});
+    snprintf(text, sizeof text, BH_SAY_BESIDE, b->view.beside, BH_SAY_REACTIONS);
+    if (bh_validity_reacts(e))
+        note(yielder, b,
+             (bh_remark){.kind = BH_REMARK_NOT_COMPUTED,
+                         .who = bh_nuclide_name(e->z, e->a, nuclide),
+                         .what = text});
+    return BH_OK;
 }
 
 static void add_part(bh_part *to, bool dummy, bool window, double ub)

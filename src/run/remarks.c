@@ -1,6 +1,7 @@
 /* remarks.c - warnings of an evaluation, each said once however many settings it concerns. */
 #include "beamhours/run/remarks.h"
 
+#include <math.h>
 #include <stdbool.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -9,11 +10,11 @@
 #include "beamhours/base/number.h"
 #include "beamhours/base/sentences.h"
 
-enum { TEXT = 240, FIRST_ROOM = 4 };
+enum { TEXT = 240, LONG = 480, FIRST_ROOM = 4 };
 
 struct kept {
     bh_remark remark;                                                 /* its texts point below */
-    char key[TEXT], who[TEXT], what[TEXT], setting[TEXT], last[TEXT]; /* own copies */
+    char key[TEXT], who[TEXT], what[LONG], setting[TEXT], last[TEXT]; /* own copies */
     char plain[TEXT];                                                 /* the key as it was noted */
     int settings;
     bool moved;
@@ -158,7 +159,7 @@ void bh_remarks_note(bh_remarks *remarks, const bh_remark *remark)
     set_key(k->key, remark);
     copy(k->plain, remark->key);
     copy(k->who, remark->who);
-    copy(k->what, remark->what);
+    snprintf(k->what, LONG, "%s", or_empty(remark->what));
     copy(k->setting, remark->setting);
     copy(k->last, remark->setting);
 }
@@ -240,6 +241,21 @@ static int prescale_for(const bh_remark *r)
     return needed < 1e9 ? (int)needed + 1 : 1000000000;
 }
 
+/* The background that is a lower limit, and the cut that would leave it none. */
+static void say_left_out(const struct kept *k, const struct words *w, bh_diags *diags)
+{
+    const bh_remark *r = &k->remark;
+    char cut[BH_NUMBER_SIZE];
+    if (!(r->low > 0)) {
+        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NOT_COMPUTED, k->who,
+                     w->where, k->what);
+        return;
+    }
+    bh_number_digits(floor(95 * r->low) / 100, 2, cut, sizeof cut);
+    bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NOT_COMPUTED_BEGINS, k->who,
+                 w->where, k->what, w->low, cut);
+}
+
 static void say_model(const struct kept *k, const struct words *w, bh_diags *diags)
 {
     const bh_remark *r = &k->remark;
@@ -253,8 +269,7 @@ static void say_model(const struct kept *k, const struct words *w, bh_diags *dia
                      k->what);
         break;
     case BH_REMARK_NOT_COMPUTED:
-        bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_NOT_COMPUTED, k->who,
-                     w->where, k->what);
+        say_left_out(k, w, diags);
         break;
     case BH_REMARK_WIDE_CUT:
         bh_diags_add(diags, BH_SEVERITY_WARNING, r->at, k->key, BH_WARN_CUT_WIDE, k->who, w->high,

@@ -4,6 +4,7 @@
 #include <math.h>
 #include <string.h>
 
+#include "beamhours/physics/validity.h"
 #include "beamhours/run/collecting.h"
 #include "beamhours/run/pair.h"
 
@@ -257,6 +258,11 @@ static bh_code hand_over(const bh_collecting *c, bh_effects *out)
     for (size_t p = 0; p < c->parts; p++)
         out[p] = (bh_effects){.count = c->count, .cause = cause, .effect = effect + p * c->count};
     return BH_OK;
+}
+
+bool bh_systematic_known(const bh_view *view, double q2)
+{
+    return !(bh_validity_excess(&view->line.encounter, q2 * 1e6) > BH_NUCLEAR_RULES);
 }
 
 bh_code bh_systematic_arm(bh_systematics *systematics, const bh_arm_hours *arm, size_t parts,

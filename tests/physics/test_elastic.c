@@ -254,6 +254,8 @@ static const struct {
     {"12C", 82, 208, 193687.7, 100.0, 0.0, "point charge", "Cline 1986"},
     {"pion-", 6, 12, 11174.86, 20.0, 0.0, "point charge", "at every energy (no repulsion"},
     {"proton", 0, 1, 939.565, 20.0, 0.0, "magnetic moment", "no repulsion keeps the two apart"},
+    {"proton", 6, 12, 11174.86, 12.0, 0.0, "magnetic moment", "1986); so far above that real"},
+    {"pion-", 6, 12, 11174.86, 20.0, 0.0, "point charge", "apart); so far above that real"},
     {"electron", 79, 197, 183432.9, 0.005, 0.0, "Rosenbluth", "below 10 keV"},
     {"electron", 79, 197, 183432.9, 0.05, 0.0, "Rosenbluth", "1 % forward of about 67 deg"},
     {"electron", 79, 197, 183432.9, 2.0, 5.0, "Rosenbluth", "1 % forward of about 5.9 deg"},
@@ -326,6 +328,64 @@ START_TEST(screening_starts_where_andersen_says)
 }
 END_TEST
 
+/* Closest approach of a Coulomb orbit, zZe2 / 2T (1 + 1/sin(theta/2)), slow and on a heavy nucleus,
+ * against the distance at which the energy of bh_validity_nuclear is head on. */
+START_TEST(forward_orbits_stay_away_from_nuclei)
+{
+    static const struct {
+        const char *beam;
+        double kinetic, degrees; /* [MeV] and c.m. */
+        double limit;            /* [MeV] head on; Bozoian et al. 1990, or Cline 1986 by hand */
+        int sign;                /* of what is added to 1/sin(theta/2) */
+    } orbits[] = {
+        {"alpha", 30.0, 180.0, 0.25 * 79 + 0.4, 1}, {"alpha", 30.0, 40.0, 0.25 * 79 + 0.4, 1},
+        {"alpha", 60.0, 10.0, 0.25 * 79 + 0.4, 1},  {"proton", 20.0, 90.0, 0.12 * 79 - 0.5, 1},
+        {"pion-", 20.0, 60.0, 9.269, -1},           {"pion-", 2.0, 20.0, 9.269, -1},
+    };
+    for (int i = 0; i < COUNT(orbits); i++) {
+        const bh_particle beam = particle(orbits[i].beam);
+        const bh_encounter x = {&beam,    beam.charge,       79,   197,
+                                183432.9, orbits[i].kinetic, NULL, 0.0};
+        const bh_collision in = {beam.mass, x.target, x.kinetic};
+        const double half = sin(0.5 * orbits[i].degrees * D);
+        const double q2 = bh_kinematics_largest_q2(&in) * half * half;
+        const double wanted = 2.0 * x.kinetic / (orbits[i].limit * (1.0 / half + orbits[i].sign));
+        ck_assert_double_eq_tol(bh_validity_excess(&x, q2) / wanted, 1.0, 2e-3);
+    }
+    const bh_particle pion = particle("pion-"), electron = particle("electron");
+    const bh_encounter attracted = {&pion, -1, 79, 197, 183432.9, 1.0, NULL, 0.0};
+    const bh_encounter lepton = {&electron, -1, 79, 197, 183432.9, 500.0, NULL, 0.0};
+    ck_assert(isinf(bh_validity_excess(&attracted, 0.0)));
+    ck_assert(bh_validity_excess(&lepton, 0.0) == 0.0);
+}
+END_TEST
+
+/* Above the barrier, where there is something to excite or energy for a pion (279.7 MeV for
+ * protons on protons, Particle Data Group). */
+START_TEST(hadrons_react_above_the_barrier)
+{
+    static const struct {
+        const char *beam;
+        int z, a;
+        double target, kinetic;
+        bool reacts;
+    } rows_[] = {
+        {"proton", 6, 12, 11174.86, 12.0, true},  {"proton", 6, 12, 11174.86, 0.9, false},
+        {"proton", 1, 1, MP, 12.0, false},        {"proton", 1, 1, MP, 279.0, false},
+        {"proton", 1, 1, MP, 280.0, true},        {"2H", 1, 1, MP, 10.0, true},
+        {"alpha", 79, 197, 183432.9, 5.0, false}, {"pion-", 1, 1, MP, 80.0, false},
+        {"pion-", 1, 1, MP, 200.0, true},         {"electron", 6, 12, 11174.86, 500.0, false},
+        {"muon-", 6, 12, 11174.86, 500.0, false}, {"pion-", 6, 12, 11174.86, 1.0, true},
+    };
+    for (int i = 0; i < COUNT(rows_); i++) {
+        const bh_particle beam = particle(rows_[i].beam);
+        const bh_encounter x = {&beam,           beam.charge,      rows_[i].z, rows_[i].a,
+                                rows_[i].target, rows_[i].kinetic, NULL,       0.0};
+        ck_assert_msg(bh_validity_reacts(&x) == rows_[i].reacts, "row %d", i);
+    }
+}
+END_TEST
+
 START_TEST(registries)
 {
     ck_assert_ptr_eq(bh_process_find("elastic"), bh_process_at(0));
@@ -382,6 +442,8 @@ int main(void)
     tcase_add_loop_test(tests, formula_and_caveat_in_words, 0, COUNT(spoken));
     tcase_add_test(tests, nuclear_limit_of_alphas);
     tcase_add_test(tests, nuclear_limit_of_ions);
+    tcase_add_test(tests, forward_orbits_stay_away_from_nuclei);
+    tcase_add_test(tests, hadrons_react_above_the_barrier);
     tcase_add_test(tests, screening_starts_where_andersen_says);
     tcase_add_test(tests, registries);
     tcase_add_test(tests, plane_waves_change_nothing_but_say_so);

@@ -201,7 +201,7 @@ static const struct {
     const char *plan, *words;
 } inputs[] = {
     {NULL, "electron, 380 MeV to 400 MeV kinetic, 10 uA"},
-    {NULL, "foil: carbon-12 1 mm; scatterer C"},
+    {NULL, "foil: carbon-12 1 mm; scatterer C (12C)"},
     {NULL, "A: right, detects scattered, in_plane ±28 mrad, out_of_plane ±70"},
     {NULL, "M: left, detects scattered, angle 30 deg, solid_angle 2 msr"},
     {"beam: {particle: muon-, momentum: 160 MeV/c, particle_rate: 3e5 /s, fraction: 20 %}\n",

@@ -115,6 +115,31 @@ START_TEST(another_structure_changes_the_struck_nucleus)
 }
 END_TEST
 
+/* Models are asked for what is in the sample, not for what nature has most of. */
+START_TEST(models_of_the_isotope_in_the_sample)
+{
+    struct evaluated e =
+        read_text(BEAM "target: {scatterer: H, layers: [{material: liquid-deuterium, thickness: 1 "
+                       "cm}]}\narms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±70 mrad}]\n"
+                       "settings: [{name: K1, angle: 30 deg}]\n");
+    static const char *const models[] = {"abbott-2000-i", "abbott-2000-ii"};
+    double last = 0;
+    for (int i = 0; i < 2; i++) {
+        bh_curve_request r = {.against = BH_AGAINST_ANGLE, .structure = models[i]};
+        bh_curve *c = curve(&e, &r);
+        const double here = bh_curve_y(c, 20, BH_COL_POINT_CROSS_SECTION);
+        ck_assert(here > 0 && here != last);
+        last = here;
+        bh_curve_free(c);
+    }
+    bh_error err = {.code = BH_OK};
+    const bh_curve_request proton = {.against = BH_AGAINST_ANGLE, .structure = "kelly-2004"};
+    ck_assert_ptr_null(bh_curve_new(e.plan, &proton, &err));
+    ck_assert_ptr_nonnull(strstr(err.text, "does not describe 2H"));
+    done(&e);
+}
+END_TEST
+
 static const struct {
     bh_curve_request request;
     const char *words;
@@ -144,6 +169,7 @@ int main(void)
     tcase_add_loop_test(tests, points_rise_and_settings_are_marked, 0, COUNT(curves));
     tcase_add_test(tests, a_point_is_a_setting);
     tcase_add_test(tests, epsilon_varies_at_the_same_q2);
+    tcase_add_test(tests, models_of_the_isotope_in_the_sample);
     tcase_add_test(tests, another_structure_changes_the_struck_nucleus);
     tcase_add_loop_test(tests, what_cannot_be_drawn_is_refused, 0, COUNT(mistakes));
     bh_curve_free(NULL);

@@ -9,6 +9,16 @@
     "density_loss: 0.02 %/uA}]}\n"
 #define POINT "arms: [{name: A, solid_angle: 5 msr, energy_cut: 15 MeV}]\n"
 
+#define PROTONS(energy)                                                              \
+    "plan: 1\nbeam: {particle: proton, kinetic_energy: " energy ", current: 1 nA}\n" \
+    "target: {name: t, layers: [{material: carbon-12, thickness: 1 um}]}\n"          \
+    "arms: [{name: A, solid_angle: 1 msr}]\n"
+#define DEUTERIUM(cut, angle)                                                              \
+    "plan: 1\nbeam: {particle: electron, kinetic_energy: 400 MeV, current: 1 uA}\n"        \
+    "target: {name: t, scatterer: H, layers: [{material: liquid-deuterium, thickness: 1 "  \
+    "mm}]}\narms: [{name: A, in_plane: ±20 mrad, out_of_plane: ±40 mrad, energy_cut: " cut \
+    "}]\nsettings: [{name: K, angle: " angle ", time: 1 h}]\n"
+
 static const struct {
     const char *plan, *words;
     int line; /* where it must stand */
@@ -74,6 +84,25 @@ static const struct {
     {"plan: 1\nbeam: {particle: muon-, momentum: 200 MeV/c, particle_rate: 1e6 /s, fraction: 80 %, "
      "others: {pion-: 20 %}}\n" HYDROGEN POINT "settings: [{name: K, angle: 40 deg, time: 1 h}]\n",
      "the background by the beam's pion- in K: nuclear forces are left out", 2},
+    {PROTONS("12 MeV") "settings: [{name: K, angle: {from: 40 deg, to: 60 deg, step: 10 deg}}]\n",
+     "the background on 12C in K.1 and 2 more settings is a lower limit: not computed: inelastic "
+     "scattering and other reactions by nuclear forces",
+     1},
+    {PROTONS("12 MeV") "settings: [{name: K, angle: {from: 40 deg, to: 60 deg, step: 10 deg}}]\n",
+     "so far above that real cross sections may differ by orders of magnitude", 1},
+    {"plan: 1\nbeam: {particle: muon-, momentum: 200 MeV/c, particle_rate: 1e6 /s, fraction: 80 %, "
+     "others: {proton: 20 %}}\n"
+     "target: {name: t, scatterer: 12C, layers: [{material: carbon-12, thickness: 1 mm}]}\n" POINT
+     "settings: [{name: K, angle: 40 deg, time: 1 h}]\n",
+     "the background on 12C in K is a lower limit: not computed: protons in the beam: inelastic",
+     2},
+    {DEUTERIUM("2.1 MeV", "{from: 40 deg, to: 60 deg, step: 10 deg}"),
+     "in K.2 and 1 more setting is a lower limit: not computed: break-up of the deuteron and its "
+     "quasi-elastic peak, "
+     "to a final mass W of 1.18 GeV; it begins 2.00 MeV below the line: an energy_cut below 1.9 "
+     "MeV "
+     "would avoid it",
+     1},
     {BEAM HYDROGEN "arms: [{name: A, solid_angle: 5 msr, momentum_bite: ±2 %}]\n"
                    "settings: [{name: K, angle: 40 deg, central_momentum: 300 MeV/c, time: 1 h}]\n",
      "nothing scattered by H is counted by A in K", 5},
@@ -107,6 +136,20 @@ START_TEST(a_sound_plan_has_none)
         evaluate(BEAM HYDROGEN POINT "settings: [{name: K, angle: 40 deg, time: 1 h}]\n");
     print_diags(bh_table_warnings(e.table));
     ck_assert_uint_eq(bh_diags_count(bh_table_warnings(e.table)), 0);
+    done(&e);
+}
+END_TEST
+
+/* The cut that a warning proposes leaves it none; below the barrier protons only scatter. */
+static const char *const avoided[][2] = {
+    {DEUTERIUM("1.9 MeV", "{from: 40 deg, to: 60 deg, step: 10 deg}"), "break-up"},
+    {PROTONS("0.9 MeV") "settings: [{name: K, angle: 60 deg}]\n", "lower limit"},
+    {PROTONS("2 MeV") "settings: [{name: K, angle: 60 deg}]\n", "orders of magnitude"}};
+
+START_TEST(a_warning_can_be_avoided)
+{
+    struct evaluated e = evaluate(avoided[_i][0]);
+    ck_assert(!warns(&e, avoided[_i][1]));
     done(&e);
 }
 END_TEST
@@ -187,6 +230,7 @@ int main(void)
 {
     TCase *tests = tcase_create("remarks");
     tcase_add_loop_test(tests, a_warning_is_given, 0, COUNT(rows));
+    tcase_add_loop_test(tests, a_warning_can_be_avoided, 0, COUNT(avoided));
     tcase_add_test(tests, a_sound_plan_has_none);
     tcase_add_test(tests, warnings_of_the_reader_come_along);
     tcase_add_test(tests, remarks_are_joined);

@@ -355,6 +355,35 @@ START_TEST(other_particles_are_subtracted_as_computed)
 }
 END_TEST
 
+/* --- nuclear forces --- */
+
+START_TEST(where_nuclear_forces_rule_nothing_is_said_of_uncertainty)
+{
+    struct evaluated e =
+        evaluate("plan: 1\nbeam: {particle: proton, kinetic_energy: 12 MeV, current: 1 ± 0.02 nA}\n"
+                 "target: {name: t, layers: [{material: carbon-12, thickness: 1 um}]}\n"
+                 "arms: [{name: A, solid_angle: 1 msr}]\n"
+                 "settings: [{name: K, angle: [8 deg, 60 deg]}, {name: slow, angle: 60 deg, beam: "
+                 "{kinetic_energy: 2 MeV}}]\n");
+    ck_assert_relative(from(&e, 0, BH_CAUSE_CURRENT), 0.02, 1e-6, "forward");
+    ck_assert_relative(from(&e, 2, BH_CAUSE_CURRENT), 0.02, 1e-6, "slow");
+    ck_assert(cell(&e, 0, BH_COL_SYSTEMATIC) >= 0.02 && cell(&e, 2, BH_COL_SYSTEMATIC) >= 0.02);
+    ck_assert(isnan(cell(&e, 1, BH_COL_SYSTEMATIC)));
+    ck_assert_ptr_nonnull(
+        strstr(bh_table_reason(e.table, false, 1, BH_COL_SYSTEMATIC), "nuclear forces"));
+    ck_assert_uint_eq(bh_table_effects(e.table, false, 1).count, 0);
+    bh_explanation *x = bh_explain(e.table, "K.2", "A", 0, NULL);
+    bool said = false;
+    for (size_t i = 0; i < bh_explanation_lines(x); i++) {
+        const bh_line *line = bh_explanation_line(x, i);
+        said = said || (line->remark && strstr(line->remark, "nuclear forces, left out, may"));
+    }
+    ck_assert(said);
+    bh_explanation_free(x);
+    done(&e);
+}
+END_TEST
+
 /* --- pointing --- */
 
 START_TEST(pointing_acts_through_the_sensitivity_to_the_angle)
@@ -441,6 +470,7 @@ int main(void)
     tcase_add_loop_test(tests, one_input_moves_the_rate_by_what_the_row_says, 0, COUNT(inputs));
     tcase_add_test(tests, windows_count_as_long_as_no_empty_target_measures_them);
     tcase_add_loop_test(tests, other_particles_are_subtracted_as_computed, 0, COUNT(empties));
+    tcase_add_test(tests, where_nuclear_forces_rule_nothing_is_said_of_uncertainty);
     tcase_add_test(tests, pointing_acts_through_the_sensitivity_to_the_angle);
     tcase_add_test(tests, json_has_sources_that_add_up_and_causes_with_rows);
     return run_suite("systematic", tests);

@@ -190,6 +190,11 @@
 #define BH_SAY_STRUCTURE_NUCLEUS "%s does not describe %s; one of %s does"
 #define BH_SAY_STRUCTURE_SET     "there is no %s: the sets of %s for %s end at %d"
 
+/* physics: validity, behind why nuclear forces matter */
+#define BH_SAY_NUCLEAR_RULES                                                                   \
+    "; so far above that real cross sections may differ by orders of magnitude: but at small " \
+    "angles these numbers are not usable"
+
 /* physics: background; why something is not computed, behind "not computed: " */
 /* Argument: read. */
 #define BH_SAY_QUASI_NUCLEUS                                                                      \
@@ -215,6 +220,8 @@
     "scattering to the resonances (W2 up to 4 GeV2) at a Q2 above 20 GeV2"
 #define BH_SAY_INELASTIC_X  "inelastic scattering at Bjorken x outside 0.006 to 0.86"
 #define BH_SAY_ATOMIC_BOUND "electrons struck with less than ten times their binding energy"
+#define BH_SAY_BESIDE       "%ss in the beam: %s" /* particle; one of these */
+#define BH_SAY_REACTIONS    "inelastic scattering and other reactions by nuclear forces"
 #define BH_SAY_BACKGROUND_INPUT \
     "a background whose angle, momenta or beam energy are no numbers in range"
 
@@ -401,7 +408,10 @@
     "momentum_bite would do"
 
 #define BH_WARN_NOT_COMPUTED "the background on %s in %s is a lower limit: not computed: %s"
-#define BH_WARN_OTHERS       "the background by the beam's %s in %s: %s"
+#define BH_WARN_NOT_COMPUTED_BEGINS                                                              \
+    "the background on %s in %s is a lower limit: not computed: %s; it begins %s MeV below the " \
+    "line: an energy_cut below %s MeV would avoid it"
+#define BH_WARN_OTHERS "the background by the beam's %s in %s: %s"
 #define BH_WARN_NO_CUT                                                                           \
     "%s has neither energy_cut nor momentum_bite, so nothing says what radiation may take: its " \
     "factor is 1 in %s; an energy_cut, or models.radiative: none, would do"

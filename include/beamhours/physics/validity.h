@@ -3,6 +3,8 @@
 #ifndef BH_PHYSICS_VALIDITY_H
 #define BH_PHYSICS_VALIDITY_H
 
+#include <stdbool.h>
+
 #include "beamhours/physics/process.h"
 
 /* From where nuclear forces change the scattering of a hadron or ion. */
@@ -20,6 +22,24 @@ typedef struct {
  * from memory), an estimate.
  */
 bh_nuclear_limit bh_validity_nuclear(const bh_encounter *encounter);
+
+/* From this excess on nuclear forces rule: a cross section without them is no guide. */
+#define BH_NUCLEAR_RULES 3.0 /* [1] exact; by convention */
+
+/*
+ * Returns [1] how far a hadron or ion is above the energy at which nuclear forces begin to matter
+ * when it transfers `q2` [MeV^2] (0: at backward angles, where they matter most): kinetic energy
+ * over that of bh_validity_nuclear times (1 + 1/sin(theta/2)) / 2, by which a Coulomb orbit to a
+ * smaller c.m. angle theta stays farther away.  Attracted, with 1/sin(theta/2) - 1 and Cline's
+ * distance.  0 for leptons, infinite where no orbit stays away.
+ */
+double bh_validity_excess(const bh_encounter *encounter, double q2);
+
+/*
+ * Whether the beam may do more to the nucleus by nuclear forces than scatter: it is above that
+ * energy, and excites or breaks one of the two, or has the energy for a pion.
+ */
+bool bh_validity_reacts(const bh_encounter *encounter);
 
 /*
  * Returns [rad] the angle below which atomic electrons lower the cross section by more than 1 %:

@@ -11,7 +11,8 @@ typedef enum {
     BH_REMARK_FLAGGED,       /* a structure that had to assume something: `what` */
     BH_REMARK_CAVEAT,        /* a process outside its validity: `what` */
     BH_REMARK_COULOMB,       /* high [1]: Z alpha of plane waves on a heavy nucleus */
-    BH_REMARK_NOT_COMPUTED,  /* background of nuclide `who`: `what` is left out */
+    BH_REMARK_NOT_COMPUTED,  /* background of nuclide `who`: `what` is left out; low, high [MeV]: so
+                                far  below the line it begins, 0 not known */
     BH_REMARK_WIDE_CUT,      /* low, high [%] of the scattered energy: too wide to be soft */
     BH_REMARK_NO_CUT,        /* leptons counted with neither cut nor bite */
     BH_REMARK_RECOIL_CUT,    /* the factor is of a lepton that is not seen */

@@ -8,18 +8,19 @@
 #include "beamhours/run/columns.h"
 
 /* Every reason a cell can be empty for: X(id, sentence). */
-#define BH_REASONS(X)                                                                    \
-    X(BH_WHY_WHOLE_ARM, "the row is the whole arm")                                      \
-    X(BH_WHY_NOT_LEPTON, "defined for lepton beams only")                                \
-    X(BH_WHY_NOT_BUILT, "not computed by this version")                                  \
-    X(BH_WHY_UNREACHED, "no event sends the detected particle to the centre of the row") \
-    X(BH_WHY_EMPTY_BIN, "the bin lies outside the acceptance")                           \
-    X(BH_WHY_RING, "a ring around the beam has no angle to turn")                        \
-    X(BH_WHY_NO_EVENTS, "no signal lands in the acceptance and the bite")                \
-    X(BH_WHY_STOPPED, "the beam stops before it has come through the sample")            \
-    X(BH_WHY_STAYS_INSIDE, "what is scattered along the arm's axis stops on its way")    \
-    X(BH_WHY_NO_WANT, "the setting asks for no goal, time, charge or counts")            \
-    X(BH_WHY_NO_GOAL, "this arm has no goal")                                            \
+#define BH_REASONS(X)                                                                     \
+    X(BH_WHY_WHOLE_ARM, "the row is the whole arm")                                       \
+    X(BH_WHY_NOT_LEPTON, "defined for lepton beams only")                                 \
+    X(BH_WHY_NOT_BUILT, "not computed by this version")                                   \
+    X(BH_WHY_UNREACHED, "no event sends the detected particle to the centre of the row")  \
+    X(BH_WHY_EMPTY_BIN, "the bin lies outside the acceptance")                            \
+    X(BH_WHY_RING, "a ring around the beam has no angle to turn")                         \
+    X(BH_WHY_NO_EVENTS, "no signal lands in the acceptance and the bite")                 \
+    X(BH_WHY_STOPPED, "the beam stops before it has come through the sample")             \
+    X(BH_WHY_STAYS_INSIDE, "what is scattered along the arm's axis stops on its way")     \
+    X(BH_WHY_NUCLEAR, "nuclear forces, left out, may change this by orders of magnitude") \
+    X(BH_WHY_NO_WANT, "the setting asks for no goal, time, charge or counts")             \
+    X(BH_WHY_NO_GOAL, "this arm has no goal")                                             \
     X(BH_WHY_NO_SIGNAL, "no signal would be recorded")
 
 typedef enum {

@@ -51,4 +51,8 @@ BH_CHECKED bh_code bh_systematics_prepare(bh_systematics *systematics, bh_yielde
 BH_CHECKED bh_code bh_systematic_arm(bh_systematics *systematics, const bh_arm_hours *arm,
                                      size_t parts, bh_effects *out, bh_error *err);
 
+/* Whether an uncertainty can be told of a row of this arm at `q2` [GeV2]: not where nuclear forces,
+ * which are left out, rule (BH_NUCLEAR_RULES). */
+bool bh_systematic_known(const bh_view *view, double q2);
+
 #endif
