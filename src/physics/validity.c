@@ -115,7 +115,7 @@ static void say_nuclear(const bh_encounter *x, char *out, size_t size, int *leng
         say(out, size, length, "they matter for %s at every energy (%s)", x->beam->name,
             from.source);
     if (bh_validity_excess(x, 0.0) > BH_NUCLEAR_RULES)
-        say(out, size, length, BH_SAY_NUCLEAR_RULES);
+        say(out, size, length, BH_WARN_NUCLEAR_RULES);
 }
 
 static void say_screening(const bh_encounter *x, char *out, size_t size, int *length)

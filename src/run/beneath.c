@@ -86,7 +86,7 @@ static void note(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *
     if (!yielder->remarks || validity->state == BH_COMPUTED || !matters(yielder, of))
         return;
     bh_nuclide_name(of->struck->z, of->struck->a, nuclide);
-    snprintf(what, sizeof what, BH_SAY_BESIDE, view->beside ? view->beside : "", validity->reason);
+    snprintf(what, sizeof what, BH_WARN_BESIDE, view->beside ? view->beside : "", validity->reason);
     bh_remarks_note(yielder->remarks, &(bh_remark){.kind = BH_REMARK_NOT_COMPUTED,
                                                    .at = view->setting->process.at,
                                                    .key = "models.process",

@@ -110,7 +110,7 @@ static void find_reactions(const struct finding *f)
         note(f, (bh_remark){.kind = BH_REMARK_NOT_COMPUTED,
                             .at = f->yield->view.setting->process.at,
                             .key = "models.process",
-                            .what = BH_SAY_REACTIONS});
+                            .what = BH_WARN_REACTIONS});
 }
 
 static void find_in_arm(bh_yielder *yielder, const bh_yield *yield, double signal)

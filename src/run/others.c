@@ -83,7 +83,7 @@ static bh_code note_caveat(bh_yielder *yielder, const bh_beside *b, const bh_str
     if (process->caveat && process->caveat(e, text, sizeof text) > 0)
         note(yielder, b,
              (bh_remark){.kind = BH_REMARK_OTHERS, .who = b->view.beside, .what = text});
-    snprintf(text, sizeof text, BH_SAY_BESIDE, b->view.beside, BH_SAY_REACTIONS);
+    snprintf(text, sizeof text, BH_WARN_BESIDE, b->view.beside, BH_WARN_REACTIONS);
     if (bh_validity_reacts(e))
         note(yielder, b,
              (bh_remark){.kind = BH_REMARK_NOT_COMPUTED,

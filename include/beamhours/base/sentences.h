@@ -191,7 +191,7 @@
 #define BH_SAY_STRUCTURE_SET     "there is no %s: the sets of %s for %s end at %d"
 
 /* physics: validity, behind why nuclear forces matter */
-#define BH_SAY_NUCLEAR_RULES                                                                   \
+#define BH_WARN_NUCLEAR_RULES                                                                  \
     "; so far above that real cross sections may differ by orders of magnitude: but at small " \
     "angles these numbers are not usable"
 
@@ -220,8 +220,8 @@
     "scattering to the resonances (W2 up to 4 GeV2) at a Q2 above 20 GeV2"
 #define BH_SAY_INELASTIC_X  "inelastic scattering at Bjorken x outside 0.006 to 0.86"
 #define BH_SAY_ATOMIC_BOUND "electrons struck with less than ten times their binding energy"
-#define BH_SAY_BESIDE       "%ss in the beam: %s" /* particle; one of these */
-#define BH_SAY_REACTIONS    "inelastic scattering and other reactions by nuclear forces"
+#define BH_WARN_BESIDE      "%ss in the beam: %s" /* particle; one of these */
+#define BH_WARN_REACTIONS   "inelastic scattering and other reactions by nuclear forces"
 #define BH_SAY_BACKGROUND_INPUT \
     "a background whose angle, momenta or beam energy are no numbers in range"
 
