@@ -90,25 +90,37 @@ static double longest(double so_far, bool takes_place, double hours)
     return takes_place ? fmax(so_far, or_else(hours, 0)) : so_far;
 }
 
+unsigned bh_time_changes(const bh_time_steps *steps, const bh_time_rules *rules, size_t at,
+                         double *hours)
+{
+    *hours = 0;
+    if (at == 0)
+        return 0;
+    const bh_time_step *before = &steps->steps[at - 1];
+    const bh_time_step *now = &steps->steps[at];
+    const bool energy = now->energy != before->energy;
+    const bool particle = now->particle != before->particle;
+    const bool target = now->target != before->target;
+    const bool angle = an_arm_moves(steps, at);
+    *hours = longest(*hours, energy, rules->change_energy);
+    *hours = longest(*hours, particle, rules->change_particle);
+    *hours = longest(*hours, target, rules->change_target);
+    *hours = longest(*hours, angle, rules->change_angle);
+    return (energy ? BH_MISSING_ENERGY : 0U) | (particle ? BH_MISSING_PARTICLE : 0U) |
+           (target ? BH_MISSING_TARGET : 0U) | (angle ? BH_MISSING_ANGLE : 0U);
+}
+
 static changes changes_between(const bh_time_steps *steps, const bh_time_rules *rules)
 {
     changes sum = {0};
     for (size_t i = 1; i < steps->count; i++) {
-        const bh_time_step *before = &steps->steps[i - 1];
-        const bh_time_step *now = &steps->steps[i];
-        const bool energy = now->energy != before->energy;
-        const bool particle = now->particle != before->particle;
-        const bool target = now->target != before->target;
-        const bool angle = an_arm_moves(steps, i);
-        double hours = longest(0, energy, rules->change_energy);
-        hours = longest(hours, particle, rules->change_particle);
-        hours = longest(hours, target, rules->change_target);
-        hours = longest(hours, angle, rules->change_angle);
+        double hours = 0;
+        const unsigned what = bh_time_changes(steps, rules, i, &hours);
         sum.hours += hours;
-        sum.energy += energy;
-        sum.particle += particle;
-        sum.target += target;
-        sum.angle += angle;
+        sum.energy += (what & BH_MISSING_ENERGY) != 0;
+        sum.particle += (what & BH_MISSING_PARTICLE) != 0;
+        sum.target += (what & BH_MISSING_TARGET) != 0;
+        sum.angle += (what & BH_MISSING_ANGLE) != 0;
     }
     return sum;
 }

@@ -16,10 +16,14 @@ struct entry {
     bool item, lone;
 };
 
+struct place {
+    const struct entry *entry;
+};
+
 struct entries {
     bh_arena *arena;
     struct entry *all;
-    const struct entry **sorted; /* by path */
+    struct place *sorted; /* by path */
     size_t count, room;
     bool failed;
 };
@@ -116,17 +120,18 @@ static void lay_out(struct entries *e, json_object *value, const char *path, lon
 
 static int by_path(const void *a, const void *b)
 {
-    const struct entry *const *left = a, *const *right = b;
-    return strcmp((*left)->path, (*right)->path);
+    const struct place *left = a, *right = b;
+    return strcmp(left->entry->path, right->entry->path);
 }
 
 static const struct entry *find(const struct entries *e, const char *path)
 {
-    const struct entry key = {.path = path}, *wanted = &key;
+    const struct entry key = {.path = path};
+    const struct place wanted = {&key};
     if (!e->count)
         return NULL;
-    const struct entry **found = bsearch(&wanted, e->sorted, e->count, sizeof *e->sorted, by_path);
-    return found ? *found : NULL;
+    const struct place *found = bsearch(&wanted, e->sorted, e->count, sizeof *e->sorted, by_path);
+    return found ? found->entry : NULL;
 }
 
 static void entries_of(const bh_plan *plan, struct entries *e)
@@ -140,7 +145,7 @@ static void entries_of(const bh_plan *plan, struct entries *e)
         return;
     }
     for (size_t i = 0; i < e->count; i++)
-        e->sorted[i] = &e->all[i];
+        e->sorted[i].entry = &e->all[i];
     qsort(e->sorted, e->count, sizeof *e->sorted, by_path);
 }
 

@@ -132,6 +132,17 @@ bh_code bh_time_of_plan(const bh_plan *plan, const bh_stretch *hours, bh_arena *
     return bh_time_add_up(&steps, &rules, &out->sum, out->times, err);
 }
 
+bh_code bh_time_layout_of_plan(const bh_plan *plan, const bh_stretch *hours, bh_arena *arena,
+                               bh_time_layout *out, bh_error *err)
+{
+    bh_time_rules rules;
+    const bh_time_steps steps = {.count = plan->setting_count,
+                                 .steps = make_steps(plan, hours, arena)};
+    if (!steps.steps || !set_rules(&plan->schedule, arena, &rules))
+        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    return bh_time_lay_out(&steps, &rules, arena, out, err);
+}
+
 void bh_stretches_of(const bh_table *table, bh_stretch *hours)
 {
     const bh_plan *plan = bh_table_plan(table);

@@ -21,6 +21,8 @@
     X(BH_CMD_SOLVE, "solve", "PLAN SETTING KEY=VALUE",                                             \
       "what it would take: the input that gives a wanted output", bh_cmd_solve)                    \
     X(BH_CMD_REPORT, "report", "PLAN", "the beam-time section of a proposal", bh_cmd_report)       \
+    X(BH_CMD_SCHEDULE, "schedule", "PLAN",                                                         \
+      "settings in run order: clock, what to dial, where to stop", bh_cmd_schedule)                \
     X(BH_CMD_COMPARE, "compare", "PLAN PLAN", "what changed: inputs, rates, hours, uncertainties", \
       bh_cmd_compare)                                                                              \
     X(BH_CMD_EDIT, "edit", "[PLAN]", "change a plan on the screen and see the run table follow",   \
@@ -37,14 +39,16 @@ typedef enum {
         BH_COMMAND_COUNT
 } bh_command_id;
 
-#define BH_EVERY_COMMAND                                                                         \
-    "new,plans,keys,check,table,explain,point,curve,solve,report,compare,edit,materials,models," \
+#define BH_EVERY_COMMAND                                                                           \
+    "new,plans,keys,check,table,explain,point,curve,solve,report,schedule,compare,edit,materials," \
+    "models,"                                                                                      \
     "help"
 
 /* X(id, short letter or 0, long name, argument or "", commands that know it, values to complete,
  * meaning).  Commands and values are lists with commas; `file` completes files. */
 #define BH_OPTIONS(X)                                                                              \
-    X(BH_OPT_WITH, 0, "with", "KEY=VALUE", "check,table,explain,curve,solve,report,compare", "",   \
+    X(BH_OPT_WITH, 0, "with", "KEY=VALUE",                                                         \
+      "check,table,explain,curve,solve,report,schedule,compare", "",                               \
       "change one value for this run only (repeatable)")                                           \
     X(BH_OPT_BINS, 0, "bins", "", "table", "", "one row a bin")                                    \
     X(BH_OPT_COLUMNS, 0, "columns", "KEY,...", "table", "", "only these columns, in this order")   \
@@ -96,9 +100,13 @@ typedef enum {
       "text (default) or json")                                                                    \
     X(BH_OPT_CURVE_FORMAT, 'f', "format", "FORMAT", "curve", "text,csv,svg,pdf,png",               \
       "text (default), csv, or a figure: svg, pdf, png")                                           \
+    X(BH_OPT_START, 0, "start", "TIME", "schedule", "",                                            \
+      "when beam time begins: '2026-03-01 08:00'")                                                 \
+    X(BH_OPT_SCHEDULE_FORMAT, 'f', "format", "FORMAT", "schedule", "text,markdown,csv,json",       \
+      "text (default), markdown, csv or json")                                                     \
     X(BH_OPT_COMPARE_FORMAT, 'f', "format", "FORMAT", "compare", "text,json,markdown",             \
       "text (default), json or markdown")                                                          \
-    X(BH_OPT_OUTPUT, 'o', "output", "FILE", "table,curve,report,compare", "file",                  \
+    X(BH_OPT_OUTPUT, 'o', "output", "FILE", "table,curve,report,schedule,compare", "file",         \
       "write to FILE, whole or not at all")                                                        \
     X(BH_OPT_PAPER, 0, "paper", "SIZE", "report", "a4,letter", "a4 (default) or letter")           \
     X(BH_OPT_FRAGMENT, 0, "fragment", "", "report", "",                                            \

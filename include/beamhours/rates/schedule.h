@@ -6,6 +6,7 @@
 #include <stdbool.h>
 #include <stddef.h>
 
+#include "beamhours/base/arena.h"
 #include "beamhours/base/error.h"
 
 /* One setting, in the order of running; two are alike in energy, particle, target when the numbers
@@ -96,5 +97,48 @@ typedef struct {
  */
 BH_CHECKED bh_code bh_time_add_up(const bh_time_steps *steps, const bh_time_rules *rules,
                                   bh_time_sum *out, double *times, bh_error *err);
+
+/* --- the same in the order of running --- */
+
+typedef enum {
+    BH_SPAN_START_UP,
+    BH_SPAN_CHANGE, /* before a step */
+    BH_SPAN_TASK,
+    BH_SPAN_DATA,
+    BH_SPAN_EMPTY,
+    BH_SPAN_CONTINGENCY /* behind all */
+} bh_span_kind;
+
+typedef struct {
+    bh_span_kind kind;
+    unsigned changes; /* of BH_SPAN_CHANGE: the BH_MISSING_... bits of what changes */
+    size_t step;      /* of a change, data, empty target; the next one of others */
+    size_t task;      /* of BH_SPAN_TASK */
+    int times;        /* [1] how often the task takes place here */
+    double begin;     /* [h] on the clock, from the start */
+    double clock;     /* [h] on the clock: of beam, hours / availability */
+    double hours;     /* [h] of beam, or of the change */
+    double done;      /* [h] data or empty target of this step so far, this span among it */
+} bh_time_span;
+
+typedef struct {
+    size_t count;
+    bh_time_span *spans;
+    bh_time_sum sum;
+} bh_time_layout;
+
+/*
+ * Lays out what bh_time_add_up sums: each change before its step, tasks `once` first, those by
+ * energy, particle, target, setting behind the change and before the data, those by shift or period
+ * when it begins (behind the start-up, a change or a task that is then under way; data are
+ * interrupted).  The last clock time is the scheduled time, then comes the contingency.  Spans
+ * belong to `arena`.  BH_ENOMEM; else as bh_time_add_up.
+ */
+BH_CHECKED bh_code bh_time_lay_out(const bh_time_steps *steps, const bh_time_rules *rules,
+                                   bh_arena *arena, bh_time_layout *out, bh_error *err);
+
+/* What changes before step `at` (bits BH_MISSING_...), and in `hours` [h] how long that takes. */
+unsigned bh_time_changes(const bh_time_steps *steps, const bh_time_rules *rules, size_t at,
+                         double *hours);
 
 #endif

@@ -26,6 +26,10 @@ typedef struct {
 BH_CHECKED bh_code bh_time_of_plan(const bh_plan *plan, const bh_stretch *hours, bh_arena *arena,
                                    bh_time_detail *out, bh_error *err);
 
+/* The same in the order of running; belongs to `arena`.  Errors as above. */
+BH_CHECKED bh_code bh_time_layout_of_plan(const bh_plan *plan, const bh_stretch *hours,
+                                          bh_arena *arena, bh_time_layout *out, bh_error *err);
+
 /* Fills hours, one for each setting of the plan, with those of its rows; 0 where there are none. */
 void bh_stretches_of(const bh_table *table, bh_stretch *hours);
 
