@@ -65,7 +65,8 @@ const char *bh_span_name(bh_span_kind kind)
     return names[kind];
 }
 
-void bh_run_words(const bh_run_schedule *s, const bh_run_line *line, bh_text *out)
+/* "change: energy, angle" */
+static void change_words(unsigned changes, bh_text *out)
 {
     static const struct {
         unsigned bit;
@@ -74,22 +75,28 @@ void bh_run_words(const bh_run_schedule *s, const bh_run_line *line, bh_text *ou
                  {BH_MISSING_PARTICLE, "particle"},
                  {BH_MISSING_TARGET, "target"},
                  {BH_MISSING_ANGLE, "angle"}};
+    const char *lead = "change: ";
+    for (size_t i = 0; i < sizeof parts / sizeof parts[0]; i++) {
+        if (!(changes & parts[i].bit))
+            continue;
+        bh_text_appendf(out, "%s%s", lead, parts[i].name);
+        lead = ", ";
+    }
+}
+
+void bh_run_words(const bh_run_schedule *s, const bh_run_line *line, bh_text *out)
+{
     const bh_time_span *span = line->span;
     if (span->kind == BH_SPAN_CHANGE) {
-        const char *lead = "change: ";
-        for (size_t i = 0; i < sizeof parts / sizeof parts[0]; i++) {
-            bh_text_appendf(out, "%s%s", span->changes & parts[i].bit ? lead : "",
-                            span->changes & parts[i].bit ? parts[i].name : "");
-            lead = span->changes & parts[i].bit ? ", " : lead;
-        }
+        change_words(span->changes, out);
     } else if (span->kind == BH_SPAN_TASK) {
-        bh_text_appendf(out, "task: %s",
-                        bh_table_plan(s->table)->schedule.tasks[span->task].name.text);
+        const bh_task *task = &bh_table_plan(s->table)->schedule.tasks[span->task];
+        bh_text_appendf(out, "task: %s", task->name.text);
         if (span->times > 1)
             bh_text_appendf(out, ", %d times", span->times);
     } else if (on_target(span->kind)) {
-        bh_text_appendf(out, "%s%s", line->setting->name,
-                        span->kind == BH_SPAN_EMPTY ? ", empty target" : "");
+        bh_text_append(out, line->setting->name);
+        bh_text_append(out, span->kind == BH_SPAN_EMPTY ? ", empty target" : "");
     } else {
         bh_text_append(out, bh_span_name(span->kind));
     }

@@ -18,24 +18,37 @@ static int days_of(long year, int month)
     return days[month - 1] + (month == 2 && leap(year));
 }
 
-/* So many digits as a number; -1 when there are others. */
+/* So many digits as a number. */
 static int digits(const char *text, int count)
 {
     int value = 0;
-    for (int i = 0; i < count; i++) {
-        if (text[i] < '0' || text[i] > '9')
-            return -1;
+    for (int i = 0; i < count; i++)
         value = 10 * value + (text[i] - '0');
-    }
     return value;
+}
+
+static bool has_form(const char *text)
+{
+    static const char form[] = "dddd-dd-dd dd:dd";
+    for (size_t i = 0; i < sizeof form; i++)
+        if (form[i] == 'd' ? text[i] < '0' || text[i] > '9' : text[i] != form[i])
+            return false;
+    return true;
+}
+
+static long long minutes_of(int year, int month, int day)
+{
+    long long days = day - 1;
+    for (int y = FIRST_YEAR; y < year; y++)
+        days += leap(y) ? 366 : 365;
+    for (int m = 1; m < month; m++)
+        days += days_of(year, m);
+    return days * DAY;
 }
 
 bh_code bh_wall_read(const char *text, long long *minutes, bh_error *err)
 {
-    static const char form[] = "dddd-dd-dd dd:dd";
-    bool fits = true;
-    for (int i = 0; fits && i < (int)sizeof form; i++)
-        fits = form[i] == 'd' ? text[i] >= '0' && text[i] <= '9' : text[i] == form[i];
+    const bool fits = has_form(text);
     const int year = fits ? digits(text, 4) : 0, month = fits ? digits(text + 5, 2) : 0;
     const int day = fits ? digits(text + 8, 2) : 0;
     const int hour = fits ? digits(text + 11, 2) : 0, minute = fits ? digits(text + 14, 2) : 0;
@@ -43,12 +56,7 @@ bh_code bh_wall_read(const char *text, long long *minutes, bh_error *err)
         hour > 23 || minute > 59)
         return bh_fail(err, BH_EDOMAIN,
                        "\"%.40s\" is no date and time; write it as 2026-03-01 08:00", text);
-    long long count = day - 1;
-    for (int y = FIRST_YEAR; y < year; y++)
-        count += leap(y) ? 366 : 365;
-    for (int m = 1; m < month; m++)
-        count += days_of(year, m);
-    *minutes = count * DAY + hour * 60 + minute;
+    *minutes = minutes_of(year, month, day) + hour * 60LL + minute;
     return BH_OK;
 }
 
