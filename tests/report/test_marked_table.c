@@ -35,7 +35,7 @@ START_TEST(numbers_read_back)
     for (size_t row = 0; row < view.row_count; row++) {
         at = find_row(at, _i, bh_selection_text(&view, row, BH_COL_SETTING));
         for (int c = 0; c < COUNT(ids); c++) {
-            const double wanted = bh_selection_number(&view, row, ids[c]);
+            const double wanted = bh_selection_number(&view, row, (int)ids[c]);
             double got = NAN;
             at = strstr(at, formats[_i].divide) + strlen(formats[_i].divide);
             if (isnan(wanted)) {
@@ -43,7 +43,7 @@ START_TEST(numbers_read_back)
                 continue;
             }
             ck_assert_int_eq(bh_number_parse(at, &end, &got), BH_OK);
-            ck_assert_relative(got, wanted, 6e-4, bh_column_at(ids[c])->key);
+            ck_assert_relative(got, wanted, 6e-4, bh_column_at((int)ids[c])->key);
         }
     }
     bh_text_free(&out);
