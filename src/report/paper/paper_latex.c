@@ -117,8 +117,8 @@ static const char *macro_of(const char *word, size_t length)
 /* "cm2" or "cm": the macro of the word and its power; false for a word that is none. */
 static bool append_unit(const char *word, size_t length, bool per, bh_text *out)
 {
-    const char last = length > 1 ? word[length - 1] : ' ';
-    const char *power = last == '2' ? "\\squared" : last == '3' ? "\\cubed" : "";
+    const char *last = length > 1 ? &word[length - 1] : "";
+    const char *power = *last == '2' ? "\\squared" : *last == '3' ? "\\cubed" : "";
     const char *macro = macro_of(word, length - (power[0] != '\0'));
     if (!macro)
         return false;
@@ -219,7 +219,7 @@ static void columns(const bh_paper_table *t, bh_text *out)
             sentences += longest(t, c);
         else
             taken += longest(t, c) + 2;
-    const double left = taken + 2 * LEAST < PAGE ? (double)(PAGE - taken) / PAGE : 0.25;
+    const double left = taken + LEAST + LEAST < PAGE ? (double)(PAGE - taken) / PAGE : 0.25;
     for (size_t c = 0; c < t->column_count; c++) {
         if (!is_sentence(t, c)) {
             bh_text_append(out, t->columns[c].number ? "r" : "l");
