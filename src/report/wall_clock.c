@@ -36,13 +36,17 @@ static bool has_form(const char *text)
     return true;
 }
 
-static long long minutes_of(int year, int month, int day)
+struct date {
+    int year, month, day;
+};
+
+static long long minutes_of(const struct date *d)
 {
-    long long days = day - 1;
-    for (int y = FIRST_YEAR; y < year; y++)
+    long long days = d->day - 1;
+    for (int y = FIRST_YEAR; y < d->year; y++)
         days += leap(y) ? 366 : 365;
-    for (int m = 1; m < month; m++)
-        days += days_of(year, m);
+    for (int m = 1; m < d->month; m++)
+        days += days_of(d->year, m);
     return days * DAY;
 }
 
@@ -56,7 +60,7 @@ bh_code bh_wall_read(const char *text, long long *minutes, bh_error *err)
         hour > 23 || minute > 59)
         return bh_fail(err, BH_EDOMAIN,
                        "\"%.40s\" is no date and time; write it as 2026-03-01 08:00", text);
-    *minutes = minutes_of(year, month, day) + hour * 60LL + minute;
+    *minutes = minutes_of(&(struct date){year, month, day}) + hour * 60LL + minute;
     return BH_OK;
 }
 
