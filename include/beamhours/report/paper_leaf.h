@@ -19,29 +19,29 @@ typedef struct {
 } bh_leaf;
 
 /* Returns [pt] how wide the page is between its margins. */
-double bh_leaf_inside(const bh_leaf *leaf);
+double bh_leaf_inside(const bh_leaf *s);
 
 /* Returns [pt] how much of its height is left. */
-double bh_leaf_room(const bh_leaf *leaf);
+double bh_leaf_room(const bh_leaf *s);
 
-/* Makes the pen's text ready, its lines broken at `width` [pt] (0: never).  Returns [pt] how high it
- * is. */
-double bh_leaf_prepare(const bh_leaf *leaf, const char *text, bool bold, double width);
+/* Makes the pen's text ready, its lines broken at `width` [pt] (0: never).  Returns [pt] how high
+ * it is. */
+double bh_leaf_prepare(const bh_leaf *s, const char *text, bool bold, double width);
 
 /* Draws the text that was made ready with its upper left corner at x [pt], y [pt]. */
-void bh_leaf_show(const bh_leaf *leaf, double x, double y);
+void bh_leaf_show(const bh_leaf *s, double x, double y);
 
 /* Begins a page. */
-void bh_leaf_next_page(bh_leaf *leaf);
+void bh_leaf_next_page(bh_leaf *s);
 
 /* Begins a page where less than `needed` [pt] is left of the present one. */
-void bh_leaf_need(bh_leaf *leaf, double needed);
+void bh_leaf_need(bh_leaf *s, double needed);
 
 /* Writes a text `indent` [pt] from the margin, over as many pages as it takes. */
-void bh_leaf_paragraph(bh_leaf *leaf, const char *text, bool bold, double indent);
+void bh_leaf_paragraph(bh_leaf *s, const char *text, bool bold, double indent);
 
 /* Draws a table with its caption; columns of words are broken into lines where it is too wide, and
  * letters become smaller where that is not enough. */
-void bh_leaf_table(bh_leaf *leaf, const bh_block *block);
+void bh_leaf_table(bh_leaf *s, const bh_block *b);
 
 #endif
