@@ -12,7 +12,7 @@
 
 /* What is compared of a row; how it is shown. */
 static const struct {
-    bh_column_id column;
+    int column;
     const char *heading, *unit;
     double scale;
     int digits;
@@ -46,9 +46,9 @@ static size_t counterpart(const bh_table *of, size_t row, const bh_table *in)
     return nowhere;
 }
 
-static double number(const bh_table *table, size_t row, bh_column_id column)
+static double number(const bh_table *table, size_t row, int column)
 {
-    return row == nowhere ? (double)NAN : bh_table_number(table, false, row, column);
+    return row == nowhere ? (double)NAN : bh_table_number(table, false, row, (bh_column_id)column);
 }
 
 /* --- rows as a grid --- */

@@ -186,7 +186,6 @@ struct comparing {
     struct entries old, new;
     bh_differences *out;
     const char **parts; /* own_part of each difference, or NULL */
-    size_t room;
 };
 
 static bool taken_over(const struct comparing *c, const char *part, const bh_difference *d)

@@ -152,10 +152,10 @@ static void number_cell(bh_grid *grid, double value, int digits)
 /* What is dialled is mostly a round number: its closing zeros say nothing. */
 static void plain_cell(bh_grid *grid, double value)
 {
-    char digits[BH_NUMBER_SIZE];
-    double rounded = value;
     bh_text text = {0};
     if (isfinite(value)) {
+        char digits[BH_NUMBER_SIZE];
+        double rounded = value;
         (void)bh_number_digits(value, DIALLED, digits, sizeof digits);
         if (!bh_number_parse(digits, NULL, &rounded))
             bh_text_append_number(&text, rounded);
@@ -167,9 +167,9 @@ static void plain_cell(bh_grid *grid, double value)
 
 static void begin_cell(const bh_run_schedule *s, double hours, bh_grid *grid)
 {
-    char wall[BH_WALL_SIZE];
     bh_text text = {0};
     if (s->has_start) {
+        char wall[BH_WALL_SIZE];
         bh_wall_print(s->start, hours, wall);
         bh_text_append(&text, wall);
     } else {
@@ -241,15 +241,18 @@ static void fill(const bh_run_schedule *s, bh_grid *grid)
     end_cells(s, grid);
 }
 
-static const char *const remarks[] = {
-    "begins: calendar time without change of clocks; hours with beam take hours / availability of "
-    "it, as the plan gives "
-    "it: no forecast.",
-    "charge and counts: where to stop, counted since the setting began on this target; hours are "
-    "of "
-    "beam, or of the change.",
-    "angle: of the arm's axis; energy: kinetic, entering the target; central: momentum the arm is "
-    "set to."};
+#define CLOCK                                                                                    \
+    "begins: calendar time without change of clocks; hours with beam take hours / availability " \
+    "of it, as the plan gives it: no forecast."
+#define STOP                                                                                       \
+    "charge and counts: where to stop, counted since the setting began on this target; hours are " \
+    "of beam, or of the change."
+#define DIAL                                                                                     \
+    "angle: of the arm's axis; energy: kinetic, entering the target; central: momentum the arm " \
+    "is "                                                                                        \
+    "set to."
+
+static const char *const remarks[] = {CLOCK, STOP, DIAL};
 
 enum { REMARKS = sizeof remarks / sizeof remarks[0] };
 

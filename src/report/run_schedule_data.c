@@ -92,11 +92,11 @@ static json_object *text_or_null(const char *text)
 
 static void begin_span(struct json *j, const bh_run_line *line)
 {
-    char wall[BH_WALL_SIZE];
     bh_text words = {0};
     j->span = json_object_new_object();
     j->arms = json_object_new_array();
     if (j->s->has_start) {
+        char wall[BH_WALL_SIZE];
         bh_wall_print(j->s->start, line->span->begin, wall);
         put(j->span, "begins", json_object_new_string(wall));
     }

@@ -4,7 +4,7 @@ beamhours | wc -l
 beamhours --version | sed 's/[0-9.]\{5,\}/VERSION/'
 beamhours table --version | sed 's/[0-9.]\{5,\}/VERSION/'
 beamhours --help
-for command in new plans keys check table explain point curve edit materials models help; do
+for command in new plans keys check table explain point curve schedule compare edit materials models help; do
     beamhours "$command" --help >help.txt || echo "no help: $command"
     beamhours help "$command" | cmp - help.txt
     awk -v command="$command" 'length > 100 { print command ": a long line: " $0 }' help.txt

@@ -3,7 +3,7 @@ sed -n '/^```yaml$/,/^```$/p' "$top/README.md" | sed '1d;$d' >my.yaml
 beamhours check my.yaml
 beamhours table my.yaml --columns setting,counts 2>/dev/null | grep -cE '^K1\.[1-4] +[56][0-9]{4}$'
 beamhours table my.yaml 2>/dev/null | grep -E '^(beam|target|arm) '
-rm my.yaml
+cp my.yaml first.yaml && mv my.yaml second.yaml # compared by a line of it
 sed -n '/^## What it answers/,/^A plan names/p; /^Then a plan of your own/,/^## What it answers/p' "$top/README.md" |
     sed -nE 's|^    (build/)?(beamhours .*)|\2|p' | sed -E 's/   +[a-z].*$//' >lines
 { grep ' new ' lines; grep -v ' new ' lines; } >sorted
