@@ -89,7 +89,7 @@ static const struct {
      "scattering and other reactions by nuclear forces",
      1},
     {PROTONS("12 MeV") "settings: [{name: K, angle: {from: 40 deg, to: 60 deg, step: 10 deg}}]\n",
-     "so far above that real cross sections may differ by orders of magnitude", 1},
+     "real cross sections may differ by orders of magnitude", 1},
     {"plan: 1\nbeam: {particle: muon-, momentum: 200 MeV/c, particle_rate: 1e6 /s, fraction: 80 %, "
      "others: {proton: 20 %}}\n"
      "target: {name: t, scatterer: 12C, layers: [{material: carbon-12, thickness: 1 mm}]}\n" POINT

@@ -191,9 +191,9 @@
 #define BH_SAY_STRUCTURE_SET     "there is no %s: the sets of %s for %s end at %d"
 
 /* physics: validity, behind why nuclear forces matter */
-#define BH_WARN_NUCLEAR_RULES                                                                  \
-    "; so far above that real cross sections may differ by orders of magnitude: but at small " \
-    "angles these numbers are not usable"
+#define BH_WARN_NUCLEAR_RULES                                                                     \
+    "; this far above it these numbers are of use at small angles only: real cross sections may " \
+    "differ by orders of magnitude"
 
 /* physics: background; why something is not computed, behind "not computed: " */
 /* Argument: read. */
