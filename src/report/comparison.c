@@ -58,7 +58,7 @@ static void value_cell(bh_grid *grid, double value, int digits)
     char text[BH_NUMBER_SIZE] = "-";
     if (isfinite(value))
         (void)bh_number_digits(value, digits, text, sizeof text);
-    bh_grid_cell(grid, text);
+    bh_grid_cell(grid, fabs(value) > 0.0 || isnan(value) ? text : "0");
 }
 
 static void change_cell(bh_grid *grid, double was, double is)

@@ -146,7 +146,7 @@ static void number_cell(bh_grid *grid, double value, int digits)
     char text[BH_NUMBER_SIZE] = "-";
     if (isfinite(value))
         (void)bh_number_digits(value, digits, text, sizeof text);
-    bh_grid_cell(grid, text);
+    bh_grid_cell(grid, fabs(value) > 0.0 || isnan(value) ? text : "0");
 }
 
 /* What is dialled is mostly a round number: its closing zeros say nothing. */
