@@ -70,7 +70,7 @@ static void note(bh_yielder *yielder, const bh_beside *b, bh_remark remark)
 static bh_code note_caveat(bh_yielder *yielder, const bh_beside *b, const bh_struck_list *list,
                            bh_error *err)
 {
-    char text[512], nuclide[8];
+    char text[512];
     bh_channels channels;
     if (!yielder->remarks)
         return BH_OK;
@@ -83,12 +83,14 @@ static bh_code note_caveat(bh_yielder *yielder, const bh_beside *b, const bh_str
     if (process->caveat && process->caveat(e, text, sizeof text) > 0)
         note(yielder, b,
              (bh_remark){.kind = BH_REMARK_OTHERS, .who = b->view.beside, .what = text});
-    snprintf(text, sizeof text, BH_WARN_BESIDE, b->view.beside, BH_WARN_REACTIONS);
-    if (bh_validity_reacts(e))
+    if (bh_validity_reacts(e)) {
+        char nuclide[8];
+        snprintf(text, sizeof text, BH_WARN_BESIDE, b->view.beside, BH_WARN_REACTIONS);
         note(yielder, b,
              (bh_remark){.kind = BH_REMARK_NOT_COMPUTED,
                          .who = bh_nuclide_name(e->z, e->a, nuclide),
                          .what = text});
+    }
     return BH_OK;
 }
 
