@@ -316,8 +316,9 @@ END_TEST
 /* Leptons beside the named particle do all that a beam of them does: windows, carbon under hydrogen
  * among it; also where a bite in momentum, the same for all, is another one in energy. */
 static const char *const limits[] = {
-    "momentum_bite: ±6 %}]\nsettings: [{name: K, angle: 40 deg, central_momentum: 640 MeV/c, time: "
-    "1 h}]\n",
+    ("momentum_bite: ±6 %}]\nsettings: [{name: K, angle: 40 deg, central_momentum: 640 MeV/c, "
+     "time: "
+     "1 h}]\n"),
     "energy_cut: 20 MeV}]\nsettings: [{name: K, angle: 40 deg, time: 1 h}]\n",
     "threshold: 15 MeV, energy_cut: 700 MeV}]\nsettings: [{name: K, angle: 6 deg, time: 1 h}]\n"};
 

@@ -124,10 +124,7 @@ static void item(bh_leaf *s, const char *lead, const char *text)
     s->size = body_size;
     bh_leaf_need(s, 2.0 * body_size);
     (void)bh_leaf_prepare(s, lead, false, 0.0);
-    const double y = s->y;
-    const int page = s->number;
-    if (page == s->number)
-        bh_leaf_show(s, BH_LEAF_MARGIN, y);
+    bh_leaf_show(s, BH_LEAF_MARGIN, s->y);
     bh_leaf_paragraph(s, text, false, indent);
     s->y += 1.5;
 }

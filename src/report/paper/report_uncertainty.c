@@ -61,9 +61,8 @@ static void budget(bh_reporting *x)
 static const char *what(bh_reporting *x, const bh_cause *c)
 {
     char nuclide[8];
-    const char *name = c->z == 0 && c->a == 0 ? ""
-                       : c->a == 0            ? bh_element_symbol(c->z)
-                                              : bh_nuclide_name(c->z, c->a, nuclide);
+    const char *element = c->z == 0 ? "" : bh_element_symbol(c->z);
+    const char *name = c->a == 0 ? element : bh_nuclide_name(c->z, c->a, nuclide);
     return bh_paper_text(&x->w, "%s%s%s%s%s", c->key ? c->key : "", name[0] ? ": " : "", name,
                          c->model ? " by " : "", c->model ? c->model : "");
 }
