@@ -71,10 +71,13 @@ $(call run,rules): ; @CC='$(CC)' sh tests/rules/selftest.sh
 installed: all ; @CC='$(CC)' sh tests/rules/installed.sh   ## a trial installation, used by another program
 lint: floors docs-lint                                   ## layout, warnings of gcc and clang, clang-tidy, cppcheck
 	@clang-format --dry-run --Werror $(LAID_OUT)
-	@for c in gcc clang; do $(MAKE) everything CC=$$c WERROR=-Werror BUILD=$(BUILD)/$$c || exit 1; done
+	@$(MAKE) objects CC=gcc WERROR=-Werror BUILD=$(BUILD)/gcc
+	@printf '%s\n' $(OURS) $(TESTS) $(BENCH) | xargs -n 8 -P 2 clang -fsyntax-only -Werror $(STD) $(WARN) \
+	 $(shell pkg-config --cflags-only-I check vterm 2>/dev/null)
 	@printf '%s\n' $(OURS) | xargs -n 2 -P 2 sh -c 'clang-tidy --quiet "$$@" -- $(STD) $(WARN)' -
 	@cppcheck --quiet --std=c11 --enable=warning,style,performance,portability --inline-suppr \
 	 --suppress=missingIncludeSystem --error-exitcode=1 -Iinclude src
+objects: $(call obj,$(OURS) $(TESTS) $(BENCH))
 floors: ; @awk -f tests/rules/floors.awk $(OURS) $(HEADERS) ## a room includes only lower rooms
 docs-lint: ; @awk -f tests/rules/headers.awk $(HEADERS)  ## every number in a header has its unit
 GUARDED := $(ENGINE) $(filter src/report/%,$(FRONT))
