@@ -73,6 +73,18 @@ bool bh_scalar_hidden(const char *text, size_t length, uint32_t *point)
     return false;
 }
 
+bool bh_scalar_comma_parts(const bh_node *value, const bh_node *key)
+{
+    if (value->kind != BH_NODE_SCALAR || value->style != BH_STYLE_PLAIN || value->length == 0 ||
+        key->length == 0 || key->style != BH_STYLE_PLAIN || !strchr("0123456789", key->text[0]) ||
+        !strchr("0123456789", value->text[value->length - 1]))
+        return false;
+    int column = value->at.column + 1; /* behind the comma */
+    for (size_t i = 0; i < value->length; i++)
+        column += ((unsigned char)value->text[i] & 0xC0U) != 0x80;
+    return value->at.line == key->at.line && column == key->at.column;
+}
+
 void bh_scalar_short(const char *text, char *out, size_t size)
 {
     const bh_cursor cursor = {.bytes = text, .length = strlen(text)};

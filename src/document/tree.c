@@ -174,36 +174,20 @@ static void check_key(struct builder *b, const bh_node *key)
         SAY(b, key->at, BH_SAY_MERGE);
 }
 
-/* `{a: 1,5 cm}` is read as a value `1` and a key `5 cm` without one. */
-static bool comma_in_number(const struct builder *b, const bh_node *key)
-{
-    const struct frame *f = &b->frames[b->depth - 1];
-    if (b->count < f->first + 2 || !strchr("0123456789", key->text[0]))
-        return false;
-    const bh_node *value = b->waiting[b->count - 2];
-    const bool number = value->kind == BH_NODE_SCALAR && value->style == BH_STYLE_PLAIN &&
-                        value->length > 0 && value->text[value->length - 1] <= '9' &&
-                        value->text[value->length - 1] >= '0';
-    int column = value->at.column + 1; /* behind the comma */
-    for (size_t i = 0; number && i < value->length; i++)
-        column += ((unsigned char)value->text[i] & 0xC0U) != 0x80;
-    return number && value->at.line == key->at.line && column == key->at.column;
-}
-
 /* `{a:1}` is read as a key `a:1` without a value. */
 static void check_value(struct builder *b, const bh_node *value)
 {
-    if (b->depth == 0 || !bh_node_empty(value))
-        return;
-    const bh_node *around = b->frames[b->depth - 1].node;
-    if (around->kind != BH_NODE_MAPPING || around->style != BH_STYLE_FLOW)
+    const bh_node *around = b->depth ? b->frames[b->depth - 1].node : NULL;
+    if (!around || !bh_node_empty(value) || around->kind != BH_NODE_MAPPING ||
+        around->style != BH_STYLE_FLOW)
         return;
     const bh_node *key = b->waiting[b->count - 1];
+    const size_t first = b->frames[b->depth - 1].first;
+    const bh_node *before = b->count >= first + 2 ? b->waiting[b->count - 2] : NULL;
     if (key->style == BH_STYLE_PLAIN && strchr(key->text, ':'))
         SAY(b, key->at, BH_SAY_COLON_TIGHT);
-    else if (key->style == BH_STYLE_PLAIN && comma_in_number(b, key))
-        SAY(b, b->waiting[b->count - 2]->at, BH_SAY_COMMA_PARTS, b->waiting[b->count - 2]->text,
-            key->text);
+    else if (before && bh_scalar_comma_parts(before, key))
+        SAY(b, before->at, BH_SAY_COMMA_PARTS, before->text, key->text);
 }
 
 static void refuse_extras(struct builder *b, const struct span *s, bool anchor, bool tag)
@@ -294,15 +278,13 @@ static void open_node(struct builder *b, const yaml_event_t *event)
 static void refuse_equal(struct builder *b, bh_node **keys, size_t count)
 {
     bh_keys_sort(keys, count);
-    size_t first = 0;
     char key[SNIPPET];
-    for (size_t i = 1; i < count; i++) {
-        if (strcmp(keys[i]->text, keys[first]->text) != 0) {
-            first = i;
-        } else if (keys[i]->length > 0) {
-            bh_scalar_short(keys[i]->text, key, sizeof key);
-            SAY(b, keys[i]->at, BH_SAY_KEY_TWICE, key, keys[first]->at.line);
-        }
+    for (size_t i = 1, first = 0; i < count; i++) {
+        first = strcmp(keys[i]->text, keys[first]->text) ? i : first;
+        if (first == i || keys[i]->length == 0)
+            continue;
+        bh_scalar_short(keys[i]->text, key, sizeof key);
+        SAY(b, keys[i]->at, BH_SAY_KEY_TWICE, key, keys[first]->at.line);
     }
 }
 
@@ -373,8 +355,7 @@ static void take(struct builder *b, const yaml_event_t *event)
 
 static void tell_syntax(struct builder *b)
 {
-    const bh_mark none = {0};
-    bh_syntax_say(&b->parser, b->cursor, b->depth ? b->frames[b->depth - 1].node->at : none,
+    bh_syntax_say(&b->parser, b->cursor, b->depth ? b->frames[b->depth - 1].node->at : (bh_mark){0},
                   path_here(b, false), b->job->diags);
     b->wrong = b->ended = true;
 }

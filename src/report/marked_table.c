@@ -6,6 +6,7 @@
 
 #include "beamhours/base/number.h"
 #include "beamhours/report/grid.h"
+#include "beamhours/report/latex.h"
 #include "beamhours/report/prefix.h"
 #include "beamhours/report/text_table.h"
 #include "beamhours/units/quantity.h"

@@ -158,11 +158,11 @@ static bh_code add_changes(bh_joint *joint, const bh_joint_request *request, bh_
     for (int k = 0; !code && k < 2; k++) {
         if (turns)
             code = add_up(joint, (struct where){request, 1 + k, BH_AS_IT_IS}, &sum, err);
-        out->moved[k] += turns && !code ? weight * sum.kept : (double)NAN;
+        out->events.moved[k] += turns && !code ? weight * sum.kept : (double)NAN;
         const int boost = k ? BH_BOOSTED_UP : BH_BOOSTED_DOWN;
         if (!code)
             code = add_up(joint, (struct where){request, 0, boost}, &sum, err);
-        out->boosted[k] += code ? (double)NAN : weight * sum.kept;
+        out->events.boosted[k] += code ? (double)NAN : weight * sum.kept;
     }
     return code;
 }
@@ -177,15 +177,15 @@ bh_code bh_joint_add(bh_joint *joint, const bh_joint_request *request, bh_joint_
     bh_code code = add_up(joint, (struct where){request, 0, BH_AS_IT_IS}, &sum, err);
     if (code)
         return code;
-    out->total += weight * sum.total;
-    out->kept += weight * sum.kept;
+    out->events.total += weight * sum.total;
+    out->events.kept += weight * sum.kept;
     out->solid_angle += weight * sum.solid_angle;
-    out->converged = out->converged && sum.converged;
+    out->events.converged = out->events.converged && sum.converged;
     joint->radiating = !idle;
     if (!idle)
         code = add_up(joint, (struct where){request, 0, BH_AS_IT_IS}, &sum, err);
     if (code)
         return code;
-    out->radiated += weight * sum.kept;
+    out->events.radiated += weight * sum.kept;
     return request->sensitivities ? add_changes(joint, request, out, err) : BH_OK;
 }

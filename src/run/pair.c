@@ -122,23 +122,6 @@ static void set_radiated(const struct pairing *p, bh_joint *j, size_t count)
     }
 }
 
-static void add_sum(bh_part *to, const bh_joint_sum *sum, const bh_seen_numbers *seen,
-                    bh_origin origin)
-{
-    const double nuclei = seen->of[origin];
-    if (origin == BH_ORIGIN_WINDOW)
-        to->windows += nuclei * sum->radiated;
-    else if (origin == BH_ORIGIN_OTHER)
-        to->other += nuclei * sum->radiated;
-    if (origin != BH_ORIGIN_SIGNAL)
-        return;
-    to->cross_section += nuclei * sum->total;
-    to->kept += nuclei * sum->kept;
-    to->radiative += nuclei * sum->radiated;
-    to->per_radian += seen->moved[1] * sum->moved[1] - seen->moved[0] * sum->moved[0];
-    to->per_momentum += nuclei * (sum->boosted[1] - sum->boosted[0]);
-}
-
 static bh_code add_channel(struct pairing *p, bh_joint *j, const bh_nuclei *nuclei, size_t count,
                            bh_error *err)
 {
@@ -149,17 +132,17 @@ static bh_code add_channel(struct pairing *p, bh_joint *j, const bh_nuclei *nucl
     bh_code code = BH_OK;
     for (int i = 0; !code && i < yield->view.parts; i++) {
         const bh_joint_request request = {p->standing, i, signal};
-        bh_joint_sum sum = {.converged = true};
+        bh_joint_sum sum = {.events = {.converged = true}};
         for (size_t v = 0; !code && v < count; v++) {
             j->vertex = &p->yielder->vertices[v];
             code = bh_joint_add(j, &request, &sum, err);
         }
-        add_sum(&yield->part[i], &sum, seen, nuclei->origin);
+        bh_part_add(&yield->part[i], &sum.events, seen, nuclei->origin);
         if (main) /* fast and slow particles share one solid angle */
             yield->part[i].solid_angle = fmax(yield->part[i].solid_angle, sum.solid_angle);
         if (i == 0)
-            seen->reached += seen->of[nuclei->origin] * sum.radiated;
-        yield->converged = yield->converged && sum.converged;
+            seen->reached += seen->of[nuclei->origin] * sum.events.radiated;
+        yield->converged = yield->converged && sum.events.converged;
     }
     return code;
 }

@@ -328,6 +328,7 @@ static void set_boosted(const bh_radiated_request *r, double angle, bh_radiated 
     bh_radiated_detail here, there;
     for (int b = 0; b < BH_BOOSTS; b++)
         out->boosted[b] = 1;
+    same.line = r->channel; /* the reference lies below the nuclide's own line */
     same.gate = (bh_gate){.cut = out->reference, .to = (double)INFINITY, .given = true};
     if (!r->signal || !bh_radiated_at(&same, angle, &here) || !(here.factor > 0))
         return;

@@ -48,10 +48,8 @@ static bh_code set_seen(bh_yielder *yielder, const bh_view *view, const bh_struc
     return BH_OK;
 }
 
-/* While sums are made, cross_section, kept and radiative hold nuclei times their integrals
- * [ub/cm2], the sensitivities differences of such. */
-static void add_sum(bh_part *to, const bh_channel_sum *sum, const bh_seen_numbers *seen,
-                    bh_origin origin)
+void bh_part_add(bh_part *to, const bh_channel_sum *sum, const bh_seen_numbers *seen,
+                 bh_origin origin)
 {
     const double nuclei = seen->of[origin];
     if (origin == BH_ORIGIN_WINDOW)
@@ -76,8 +74,7 @@ static void add_point(const bh_yield *yield, const bh_channel *channel, double s
     }
 }
 
-/* Isotopes of the scatterer that are rarer than this, like deuterium in natural hydrogen, change a
- * rate by no more than that share of it, and a sensitivity by less. */
+/* [1] Isotopes of the scatterer that are rarer than this, like deuterium in natural hydrogen. */
 static const double trace_share = 2e-4;
 
 static bool is_trace(const bh_yielder *yielder, const bh_nuclei *nuclei)
@@ -85,6 +82,17 @@ static bool is_trace(const bh_yielder *yielder, const bh_nuclei *nuclei)
     const double main = yielder->seen[nuclei->list->main].of[BH_ORIGIN_SIGNAL];
     return nuclei->origin == BH_ORIGIN_SIGNAL &&
            yielder->seen[nuclei->nuclide].of[BH_ORIGIN_SIGNAL] < trace_share * main;
+}
+
+/* Whether so little comes from `nuclei` of them, beside what has been added, that 1e-4 of it and
+ * the sensitivities do not matter: not where the arm is set to the line of a rare isotope. */
+static bool stays_trace(const bh_yield *yield, const bh_channel_sum *sums, double nuclei)
+{
+    static const double much = 1e-3;
+    for (int i = 0; i < yield->view.parts; i++)
+        if (nuclei * sums[i].radiated > much * yield->part[i].radiative)
+            return false;
+    return true;
 }
 
 /* A nuclide where it is signal, or one kind of background. */
@@ -95,16 +103,20 @@ static bh_code add_origin(bh_yielder *yielder, bh_yield *yield, const bh_nuclei 
     const bool signal = nuclei->origin == BH_ORIGIN_SIGNAL;
     const size_t count = bh_view_vertices(yielder, &yield->view.way, nuclei);
     for (size_t c = 0; c < channels->count; c++) {
-        const bh_elastic_of of = {.channel = &channels->list[c],
-                                  .way = &yield->view.way,
-                                  .count = count,
-                                  .signal = signal,
-                                  .trace = is_trace(yielder, nuclei)};
+        bh_elastic_of of = {.channel = &channels->list[c],
+                            .way = &yield->view.way,
+                            .count = count,
+                            .signal = signal,
+                            .trace = is_trace(yielder, nuclei)};
         const bh_channel_sum *sums = bh_elastic_sums(yielder, &yield->view, &of, err);
+        if (sums && of.trace && !stays_trace(yield, sums, seen->of[BH_ORIGIN_SIGNAL])) {
+            of.trace = false;
+            sums = bh_elastic_sums(yielder, &yield->view, &of, err);
+        }
         if (!sums)
             return err->code;
         for (int i = 0; i < yield->view.parts; i++)
-            add_sum(&yield->part[i], &sums[i], seen, nuclei->origin);
+            bh_part_add(&yield->part[i], &sums[i], seen, nuclei->origin);
         seen->reached += seen->of[nuclei->origin] * sums[0].radiated;
         yield->converged = yield->converged && sums[0].converged;
         if (signal)

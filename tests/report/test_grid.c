@@ -2,6 +2,7 @@
 #include "../suite.h"
 
 #include "beamhours/report/grid.h"
+#include "beamhours/report/latex.h"
 
 #include <math.h>
 #include <stdio.h>

@@ -236,9 +236,10 @@ static const char *html_cell(const char *s, char *out)
 /* Lines that begin with "| ", the one of headings and the one of dashes left out. */
 static const char *md_cell(const char *s, char *out)
 {
-    static const char *const pairs[][2] = {
-        {"\\\\", "\\"}, {"\\`", "`"}, {"\\*", "*"}, {"\\_", "_"}, {"\\[", "["}, {"\\]", "]"},
-        {"\\<", "<"},   {"\\>", ">"}, {"\\|", "|"}, {"\\#", "#"}, {"\\&", "&"}, {NULL, NULL}};
+    static const char *const pairs[][2] = {{"\\\\", "\\"}, {"\\`", "`"}, {"\\*", "*"}, {"\\_", "_"},
+                                           {"\\[", "["},   {"\\]", "]"}, {"\\<", "<"}, {"\\>", ">"},
+                                           {"\\|", "|"},   {"\\#", "#"}, {"\\&", "&"}, {"\\~", "~"},
+                                           {NULL, NULL}};
     while (strncmp(s, " |\n\n", 4) != 0 && strncmp(s, " |\n| ", 5) != 0 &&
            strncmp(s, " | ", 3) != 0)
         if (!*s++)
@@ -276,7 +277,13 @@ static const char *tex_cell(const char *s, char *out)
                                            {"\\#", "#"},
                                            {"\\%", "%"},
                                            {"\\_", "_"},
-                                           {"''", "\""},
+                                           {"\\textquotedbl{}", "\""},
+                                           {"\\textasciigrave{}", "`"},
+                                           {"'{}'{}", "''"},
+                                           {"-{}-{}", "--"},
+                                           {"{[}", "["},
+                                           {"{]}", "]"},
+                                           {"{*}", "*"},
                                            {NULL, NULL}};
     if (strncmp(s, " \\\\\n\\bottomrule", 14) == 0 || strncmp(s, "\\documentclass", 14) == 0) {
         s = strstr(s, "\\endhead\n");

@@ -50,6 +50,34 @@ START_TEST(sensitivity_of_a_viewed_target)
 }
 END_TEST
 
+/* --- isotopes that are a trace --- */
+
+/* Deuterium of natural hydrogen is summed with less effort; alone it is the main nuclide. */
+START_TEST(a_trace_adds_what_it_is)
+{
+    static const char form[] =
+        BEAM "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm}], scatterer: "
+             "%s}\narms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±70 mrad, bins: 3%s}]\n"
+             "settings: [{name: K, angle: 60 deg, time: 1 h%s}]\n";
+    static const char *const of[] = {"H", "1H", "2H"};
+    /* all of both, and the line of deuterium alone: 694 MeV/c, hydrogen's is at 587 */
+    static const char *const bites[] = {"", ", momentum_bite: ±3 %"};
+    static const char *const set_to[] = {"", ", central_momentum: 694 MeV/c"};
+    double rate[3], per_permille[3];
+    for (int i = 0; i < 3; i++) {
+        char text[1024];
+        snprintf(text, sizeof text, form, of[i], bites[_i], set_to[_i]);
+        struct evaluated e = evaluate(text);
+        rate[i] = cell(&e, 0, BH_COL_SIGNAL);
+        per_permille[i] = cell(&e, 0, BH_COL_PER_PERMILLE);
+        done(&e);
+    }
+    ck_assert_double_gt(rate[2], 0);
+    ck_assert_relative(rate[0], (_i ? 0 : rate[1]) + rate[2], 1e-8, "both are the sum of each");
+    ck_assert_relative(per_permille[0], per_permille[_i ? 2 : 1], 3e-4, "sensitivity of the main");
+}
+END_TEST
+
 /* --- kinematic columns --- */
 
 /* Electron of 1 GeV at 30 deg on the proton, massless to 1e-6: closed form at 30 digits. */
@@ -352,6 +380,7 @@ END_TEST
 int main(void)
 {
     TCase *tests = tcase_create("yield");
+    tcase_add_loop_test(tests, a_trace_adds_what_it_is, 0, 2);
     tcase_add_loop_test(tests, sensitivity_of_a_viewed_target, 0, COUNT(views));
     tcase_add_test(tests, a_row_has_the_event_at_its_axis);
     tcase_add_test(tests, a_threshold_is_an_energy);

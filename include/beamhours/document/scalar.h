@@ -29,6 +29,9 @@ size_t bh_scalar_trimmed(const char *bytes, size_t from, size_t to);
 /* Holds the value a character that only an escape can have written?  Then `point` is the first. */
 bool bh_scalar_hidden(const char *text, size_t length, uint32_t *point);
 
+/* `{a: 1,5 cm}` is read as a value `1` and a key `5 cm` without one: are `value` and `key` such? */
+bool bh_scalar_comma_parts(const bh_node *value, const bh_node *key);
+
 /* Copies as much of `text` as fits into `size` bytes (at least 8); "..." marks a cut. */
 void bh_scalar_short(const char *text, char *out, size_t size);
 

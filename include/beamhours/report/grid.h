@@ -36,15 +36,11 @@ void bh_grid_text(const bh_grid *grid, bh_text *out);
 void bh_grid_markdown(const bh_grid *grid, bh_text *out);
 
 /* Appends it as a longtable with the rules of booktabs and the S columns of siunitx; needs what
- * bh_latex_needs says. */
+ * bh_latex_needs (latex.h) says. */
 void bh_grid_latex(const bh_grid *grid, bh_text *out);
 
-/* Appends what the preamble must have, each line a comment. */
-void bh_latex_needs(bh_text *out);
-
-/* Appends `words` (UTF-8) so that the format shows just them: nothing in a name is obeyed; a line's
+/* Appends `words` (UTF-8) so that Markdown shows just them: nothing in a name is obeyed; a line's
  * end becomes a blank. */
-void bh_latex_words(bh_text *out, const char *words);
 void bh_markdown_words(bh_text *out, const char *words);
 
 /* Appends hours [h] to a hundredth, below one hour to three digits; "-" where there are none. */

@@ -41,14 +41,10 @@ typedef struct {
     bool sensitivities;
 } bh_joint_request;
 
-/* Like bh_channel_sum; begin with zeros and `converged`. */
+/* Begin with zeros and `converged`. */
 typedef struct {
-    double total, kept; /* [ub] */
-    double radiated;    /* [ub] kept times what radiation leaves of it */
-    double solid_angle; /* [sr] joint, of the first particle */
-    double moved[2];    /* [ub] radiated, the first arm back and on; NAN where it cannot turn */
-    double boosted[2];  /* [ub] radiated, with less and more momentum of the beam */
-    bool converged;
+    bh_channel_sum events; /* of both arms; moved: the first arm, NAN where it cannot turn */
+    double solid_angle;    /* [sr] joint, of the first particle */
 } bh_joint_sum;
 
 /* Adds what comes from joint->vertex, times its weight.  BH_EDOMAIN as bh_pair_add_up. */

@@ -1,153 +1,18 @@
-/* paper_latex.c - LaTeX with booktabs, longtable and siunitx, in commands that versions 2 and 3 of
- * it know; units that version 3 no longer has are declared. */
+/* paper_latex.c - sections, longtables and lists; numbers and units through siunitx. */
 #include "beamhours/report/paper.h"
 
 #include <math.h>
 #include <string.h>
 
 #include "beamhours/base/number.h"
-
-/* What a committee's own document needs, too. */
-static const char *const needs[] = {"\\usepackage[utf8]{inputenc}",
-                                    "\\usepackage[T1]{fontenc}",
-                                    "\\usepackage{booktabs}",
-                                    "\\usepackage{longtable}",
-                                    "\\usepackage{siunitx}",
-                                    "\\DeclareSIUnit\\bhbarn{b}",
-                                    "\\DeclareSIUnit\\bhlight{\\ensuremath{c}}",
-                                    "\\DeclareSIUnit\\bhhour{h}",
-                                    "\\DeclareSIUnit\\bhday{d}",
-                                    "\\DeclareSIUnit\\bhweek{weeks}",
-                                    "\\DeclareSIUnit\\bhshift{shifts}"};
-
-static const struct {
-    const char *read, *written;
-} letters[] = {
-    {"\\", "\\textbackslash{}"},
-    {"{", "\\{"},
-    {"}", "\\}"},
-    {"$", "\\$"},
-    {"&", "\\&"},
-    {"#", "\\#"},
-    {"%", "\\%"},
-    {"_", "\\_"},
-    {"^", "\\textasciicircum{}"},
-    {"~", "\\textasciitilde{}"},
-    {"<", "\\textless{}"},
-    {">", "\\textgreater{}"},
-    {"|", "\\textbar{}"},
-    {"\"", "''"},
-    {"±", "\\ensuremath{\\pm}"},
-    {"²", "\\ensuremath{^2}"},
-    {"µ", "\\ensuremath{\\mu}"},
-    {"θ", "\\ensuremath{\\theta}"},
-    {"σ", "\\ensuremath{\\sigma}"},
-    {"×", "\\ensuremath{\\times}"},
-};
-
-enum { LETTERS = sizeof letters / sizeof letters[0] };
-
-static void escaped(const char *s, bh_text *out)
-{
-    while (*s) {
-        size_t i = 0;
-        while (i < LETTERS && strncmp(s, letters[i].read, strlen(letters[i].read)) != 0)
-            i++;
-        if (i < LETTERS) {
-            bh_text_append(out, letters[i].written);
-            s += strlen(letters[i].read);
-        } else {
-            bh_text_append_bytes(out, *s == '\n' ? " " : s, 1);
-            s++;
-        }
-    }
-}
+#include "beamhours/report/latex.h"
 
 static void within(const char *before, const char *text, const char *behind, bh_text *out)
 {
     bh_text_append(out, before);
-    escaped(text, out);
+    bh_latex_words(out, text);
     bh_text_append(out, behind);
 }
-
-/* --- units --- */
-
-static const struct {
-    const char *word, *macro;
-} units[] = {
-    {"MeV", "\\mega\\electronvolt"},
-    {"GeV", "\\giga\\electronvolt"},
-    {"keV", "\\kilo\\electronvolt"},
-    {"c", "\\bhlight"},
-    {"b", "\\bhbarn"},
-    {"mb", "\\milli\\bhbarn"},
-    {"ub", "\\micro\\bhbarn"},
-    {"nb", "\\nano\\bhbarn"},
-    {"pb", "\\pico\\bhbarn"},
-    {"fb", "\\femto\\bhbarn"},
-    {"sr", "\\steradian"},
-    {"msr", "\\milli\\steradian"},
-    {"deg", "\\degree"},
-    {"fm", "\\femto\\metre"},
-    {"cm", "\\centi\\metre"},
-    {"s", "\\second"},
-    {"h", "\\bhhour"},
-    {"d", "\\bhday"},
-    {"weeks", "\\bhweek"},
-    {"shifts", "\\bhshift"},
-    {"Hz", "\\hertz"},
-    {"mC", "\\milli\\coulomb"},
-    {"uA", "\\micro\\ampere"},
-    {"W", "\\watt"},
-    {"mg", "\\milli\\gram"},
-    {"g", "\\gram"},
-    {"%", "\\percent"},
-    {"mm", "\\milli\\metre"},
-};
-
-/* The macro of a word of `length` bytes, or NULL. */
-static const char *macro_of(const char *word, size_t length)
-{
-    for (size_t i = 0; i < sizeof units / sizeof units[0]; i++)
-        if (strlen(units[i].word) == length && strncmp(units[i].word, word, length) == 0)
-            return units[i].macro;
-    return NULL;
-}
-
-/* "cm2" or "cm": the macro of the word and its power; false for a word that is none. */
-static bool append_unit(const char *word, size_t length, bool per, bh_text *out)
-{
-    const char *last = length > 1 ? &word[length - 1] : "";
-    const char *power = *last == '2' ? "\\squared" : *last == '3' ? "\\cubed" : "";
-    const char *macro = macro_of(word, length - (power[0] != '\0'));
-    if (!macro)
-        return false;
-    bh_text_appendf(out, "%s%s%s", per ? "\\per" : "", macro, power);
-    return true;
-}
-
-/* "1/cm2/s" as \si{\per\centi\metre\squared\per\second}; what is no such unit as it stands. */
-static void unit(const char *s, bh_text *out)
-{
-    bh_text macros = {0};
-    bool known = true, per = false;
-    const char *at = s;
-    while (known && *at) {
-        const size_t n = strcspn(at, "/");
-        if (per || n != 1 || at[0] != '1')
-            known = append_unit(at, n, per, &macros);
-        per = true;
-        at += n + (at[n] == '/');
-    }
-    if (known && macros.bytes)
-        bh_text_appendf(out, "\\si{%s}", macros.bytes);
-    else
-        escaped(s, out);
-    out->failed |= macros.failed;
-    bh_text_free(&macros);
-}
-
-/* --- blocks --- */
 
 static bool whole_number(const char *s)
 {
@@ -156,18 +21,12 @@ static bool whole_number(const char *s)
     return !bh_number_parse(s, &end, &value) && *end == '\0';
 }
 
-/* Behind the end of a row and an item a bracket or a star would be read as something else. */
-static const char *opening(const char *text)
-{
-    return text[0] == '[' || text[0] == '*' ? "{}" : "";
-}
-
 static void cell(const bh_paper_column *c, const char *text, bh_text *out)
 {
     if (c->number && whole_number(text))
         bh_text_appendf(out, "\\num{%s}", text);
     else
-        escaped(text, out);
+        bh_latex_words(out, text);
 }
 
 static void heading_row(const bh_paper_table *t, bool of_units, bh_text *out)
@@ -178,7 +37,7 @@ static void heading_row(const bh_paper_table *t, bool of_units, bh_text *out)
             within("{", t->columns[c].heading, "}", out);
         else if (t->columns[c].unit[0]) {
             bh_text_append(out, "{");
-            unit(t->columns[c].unit, out);
+            bh_latex_unit(out, t->columns[c].unit);
             bh_text_append(out, "}");
         }
     }
@@ -245,7 +104,7 @@ static void table(const bh_block *b, bh_text *out)
     bh_text_append(out, "\\midrule\n\\endhead\n");
     for (size_t r = 0; r < t->row_count; r++) {
         for (size_t c = 0; c < t->column_count; c++) {
-            bh_text_append(out, c ? " & " : opening(t->cells[r * t->column_count]));
+            bh_text_append(out, c ? " & " : "");
             cell(&t->columns[c], t->cells[r * t->column_count + c], out);
         }
         bh_text_append(out, " \\\\\n");
@@ -282,8 +141,7 @@ static void block(const bh_block *b, bh_text *out)
         break;
     case BH_BLOCK_ITEM:
     case BH_BLOCK_REFERENCE:
-        bh_text_appendf(out, "\\item %s", opening(b->text));
-        within("", b->text, "\n", out);
+        within("\\item ", b->text, "\n", out);
         break;
     case BH_BLOCK_CAUTION:
         within("\\begin{quote}\\textbf{Caution.} ", b->text, "\\end{quote}\n\n", out);
@@ -299,15 +157,13 @@ static void block(const bh_block *b, bh_text *out)
 
 static void preamble(const bh_paper *paper, bh_page page, bool fragment, bh_text *out)
 {
-    if (fragment)
-        bh_text_append(out, "% To be read with \\input; the preamble needs:\n");
-    else
-        bh_text_appendf(out, "\\documentclass[%s]{article}\n",
-                        page == BH_PAGE_A4 ? "a4paper" : "letterpaper");
-    for (size_t i = 0; i < sizeof needs / sizeof needs[0]; i++)
-        bh_text_appendf(out, "%s%s\n", fragment ? "% " : "", needs[i]);
-    if (fragment)
+    if (fragment) {
+        bh_latex_needs(out);
         return;
+    }
+    bh_text_appendf(out, "\\documentclass[%s]{article}\n",
+                    page == BH_PAGE_A4 ? "a4paper" : "letterpaper");
+    bh_latex_packages(out, "");
     bh_text_append(out, "\\usepackage[margin=20mm]{geometry}\n\\setlength{\\parindent}{0pt}\n"
                         "\\setlength{\\parskip}{4pt}\n\\sloppy\n");
     within("\\title{", paper->title, "}\n\\author{}\n\\date{}\n", out);

@@ -1,24 +1,15 @@
 /* paper_markdown.c - pipes and dashes: what most sites and editors show as tables. */
 #include "beamhours/report/paper.h"
 
-#include <string.h>
-
-static void escaped(const char *s, bh_text *out)
-{
-    for (; *s; s++) {
-        if (strchr("\\`*_[]<>|#&", *s))
-            bh_text_append(out, "\\");
-        bh_text_append_bytes(out, *s == '\n' ? " " : s, 1);
-    }
-}
+#include "beamhours/report/grid.h"
 
 static void heading_cell(const bh_paper_column *c, bh_text *out)
 {
     bh_text_append(out, " ");
-    escaped(c->heading, out);
+    bh_markdown_words(out, c->heading);
     if (c->unit[0]) {
         bh_text_append(out, " (");
-        escaped(c->unit, out);
+        bh_markdown_words(out, c->unit);
         bh_text_append(out, ")");
     }
     bh_text_append(out, " |");
@@ -28,7 +19,7 @@ static void table(const bh_block *b, bh_text *out)
 {
     const bh_paper_table *t = b->table;
     bh_text_appendf(out, "**Table %d.** ", b->number);
-    escaped(b->text, out);
+    bh_markdown_words(out, b->text);
     bh_text_append(out, "\n\n|");
     for (size_t c = 0; c < t->column_count; c++)
         heading_cell(&t->columns[c], out);
@@ -37,7 +28,7 @@ static void table(const bh_block *b, bh_text *out)
         bh_text_append(out, t->columns[c].number ? " ---: |" : " --- |");
     for (size_t i = 0; i < t->row_count * t->column_count; i++) {
         bh_text_append(out, i % t->column_count ? " " : "\n| ");
-        escaped(t->cells[i], out);
+        bh_markdown_words(out, t->cells[i]);
         bh_text_append(out, " |");
     }
     bh_text_append(out, "\n\n");
@@ -46,7 +37,7 @@ static void table(const bh_block *b, bh_text *out)
 static void words(const char *lead, const char *text, const char *behind, bh_text *out)
 {
     bh_text_append(out, lead);
-    escaped(text, out);
+    bh_markdown_words(out, text);
     bh_text_append(out, behind);
 }
 
