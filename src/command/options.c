@@ -176,19 +176,26 @@ static int one_option(struct reader *r, const char *word)
     return id < 0 ? unknown(command, word) : take(r, id, word[2] ? word + 2 : NULL);
 }
 
+static bool same_file(const char *one, const char *other)
+{
+    struct stat a, b;
+    return one && other && stat(one, &a) == 0 && stat(other, &b) == 0 && S_ISREG(a.st_mode) &&
+           a.st_dev == b.st_dev && a.st_ino == b.st_ino;
+}
+
 /* What is read must not be written over, under whatever name. */
 static int check_output(const bh_arguments *out)
 {
-    struct stat output, input;
     const char *path = out->value[BH_OPT_OUTPUT];
-    if (!path || stat(path, &output) != 0 || !S_ISREG(output.st_mode))
-        return 0;
     for (int i = 0; i < out->word_count; i++)
-        if (stat(out->words[i], &input) == 0 && input.st_dev == output.st_dev &&
-            input.st_ino == output.st_ino)
+        if (same_file(path, out->words[i]))
             return bh_usage_option(out, BH_OPT_OUTPUT,
                                    "this is the plan itself, which would be lost; name another "
                                    "file");
+    if (same_file(path, out->value[BH_OPT_DATA]))
+        return bh_usage_option(out, BH_OPT_OUTPUT,
+                               "these are the data themselves, which would be lost; name another "
+                               "file");
     return 0;
 }
 

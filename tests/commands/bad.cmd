@@ -43,3 +43,5 @@ says beamhours table kept.yaml --output other.csv
 says beamhours curve kept.yaml -o ./kept.yaml
 cmp good.yaml kept.yaml && says beamhours point -p electron --scatterer 1H -E 1GeV -a 9deg --angle 8deg
 cp "$build/beamhours" alone && (unset BEAMHOURS_MATERIALS; cd / && says "$OLDPWD/alone" materials)
+echo kept >data.csv
+says beamhours curve good.yaml --format svg --data data.csv --output ./data.csv && cat data.csv
