@@ -321,7 +321,7 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
         c->plan.models.by_nuclide = &c->choice;
         c->plan.models.choice_count = 1;
     }
-    const bh_evaluation how = {.bins = false};
+    const bh_evaluation how = {.cancelled = r->cancelled, .asker = r->asker};
     c->table = bh_table_new(&c->plan, &how, NULL, err);
     if (!c->table)
         return err->code;

@@ -210,26 +210,43 @@ static bh_code explain(bh_explaining *x, const char *setting, const char *arm, b
     return code ? code : write_all(x, err);
 }
 
-bh_explanation *bh_explain(const bh_table *table, const char *setting, const char *arm, int bin,
-                           bh_error *err)
+/* Which row, and as what evaluation. */
+struct asked {
+    const bh_table *table;
+    const bh_evaluation *how; /* NULL: of its own */
+    bh_explained_row row;
+};
+
+static bh_code begin(bh_explaining *x, const struct asked *asked, bh_workspace *workspace,
+                     bh_error *err)
+{
+    x->table = asked->table;
+    x->bin = asked->row.bin;
+    x->evaluator.yielder.workspace = workspace;
+    x->evaluator.yielder.explaining = true;
+    if (asked->how) {
+        x->evaluator.yielder.cancelled = asked->how->cancelled;
+        x->evaluator.yielder.asker = asked->how->asker;
+    }
+    return explain(x, asked->row.setting, asked->row.arm, err);
+}
+
+static bh_explanation *make(const struct asked *asked, bh_error *err)
 {
     bh_explanation *made = calloc(1, sizeof *made);
     bh_arena *arena = bh_arena_new();
-    bh_workspace *workspace = bh_workspace_new();
+    bh_workspace *own = bh_workspace_new();
+    bh_workspace *workspace = asked->how && asked->how->workspace ? asked->how->workspace : own;
     bh_explaining *x = arena ? bh_arena_take(arena, 1, sizeof *x) : NULL;
     bh_error why = {.code = BH_OK};
     bh_code code = BH_ENOMEM;
     if (made && workspace && x) {
-        x->table = table;
         x->arena = arena;
-        x->bin = bin;
-        x->evaluator.yielder.workspace = workspace;
-        x->evaluator.yielder.explaining = true;
-        code = explain(x, setting, arm, &why);
+        code = begin(x, asked, workspace, &why);
     } else {
         bh_fail(&why, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
     }
-    bh_workspace_free(workspace);
+    bh_workspace_free(own);
     if (!code) {
         *made = (bh_explanation){.arena = arena, .lines = x->lines, .count = x->count};
         return made;
@@ -239,6 +256,26 @@ bh_explanation *bh_explain(const bh_table *table, const char *setting, const cha
     bh_arena_free(arena);
     free(made);
     return NULL;
+}
+
+bh_explanation *bh_explain(const bh_table *table, const char *setting, const char *arm, int bin,
+                           bh_error *err)
+{
+    const struct asked asked = {.table = table, .row = {setting, arm, bin}};
+    return make(&asked, err);
+}
+
+bh_explanation *bh_explain_alone(const bh_plan *plan, const bh_explained_row *row,
+                                 const bh_evaluation *how, bh_error *err)
+{
+    bh_evaluation few = *how;
+    few.bins = false;
+    few.enough = row->bin > 0 ? 1 : BH_EXPLAIN_RATIOS + 1; /* one may be the row itself */
+    bh_table *table = bh_table_new(plan, &few, NULL, err);
+    const struct asked asked = {table, how, *row};
+    bh_explanation *made = table ? make(&asked, err) : NULL;
+    bh_table_free(table);
+    return made;
 }
 
 void bh_explanation_free(bh_explanation *explanation)

@@ -4,8 +4,6 @@
 #include "beamhours/run/explaining.h"
 #include "beamhours/units/nuclide.h"
 
-enum { MOST_RATIOS = 8 };
-
 /* The row that is explained. */
 struct row {
     const bh_causes *causes;
@@ -136,7 +134,7 @@ static void explain_ratio(bh_explaining *x, const struct row *row, const char *o
 static void explain_ratios_of_arms(bh_explaining *x, const struct row *row)
 {
     int shown = 0;
-    for (size_t i = 0; i < bh_table_rows(x->table, false) && shown < MOST_RATIOS; i++) {
+    for (size_t i = 0; i < bh_table_rows(x->table, false) && shown < BH_EXPLAIN_RATIOS; i++) {
         const bh_place place = bh_table_place(x->table, false, i);
         const bh_setting *setting = &bh_table_plan(x->table)->settings[place.setting];
         const bh_setting_arm *arm = &setting->arms[place.arm];
@@ -155,7 +153,7 @@ static void explain_ratios_of_arms(bh_explaining *x, const struct row *row)
 static void explain_ratios_of_bins(bh_explaining *x, const struct row *row)
 {
     int shown = 0;
-    for (int i = 1; i < x->arm->yield->view.parts && shown < MOST_RATIOS; i++) {
+    for (int i = 1; i < x->arm->yield->view.parts && shown < BH_EXPLAIN_RATIOS; i++) {
         if (i == x->bin || !(x->arm->yield->part[i].signal > 0))
             continue;
         explain_ratio(x, row, bh_explain_text(x, "bin %d", i), &row->parts[i]);

@@ -70,6 +70,33 @@ static size_t bins_of(const bh_setting *setting)
     return bins;
 }
 
+/* How many of the arms of a setting have a systematic uncertainty. */
+static size_t rated(const bh_row *rows, size_t arms)
+{
+    size_t count = 0;
+    for (size_t a = 0; a < arms; a++)
+        count += rows[a].number[BH_COL_SYSTEMATIC] >= 0;
+    return count;
+}
+
+/* Only as many settings as there is need of. */
+static bh_code evaluate_few(bh_table *table, bh_evaluator *evaluator, size_t enough, bh_error *err)
+{
+    const bh_plan *plan = table->plan;
+    bh_setting_rows out = {.whole = table->rows[0]};
+    size_t found = 0;
+    for (size_t s = 0; s < plan->setting_count && found < enough; s++) {
+        const bh_code code = bh_setting_evaluate(evaluator, s, &out, err);
+        if (code)
+            return code;
+        found += rated(out.whole, plan->settings[s].arm_count);
+        out.whole += plan->settings[s].arm_count;
+    }
+    table->count[0] = (size_t)(out.whole - table->rows[0]);
+    table->count[1] = 0;
+    return BH_OK;
+}
+
 static bh_code evaluate(bh_table *table, bh_evaluator *evaluator, bh_error *err)
 {
     const bh_plan *plan = table->plan;
@@ -135,7 +162,8 @@ static bh_code fill(bh_table *table, const bh_evaluation *how, const bh_diags *s
     if (!code)
         code = bh_evaluator_prepare(&evaluator, table->plan, table->arena, err);
     if (!code)
-        code = evaluate(table, &evaluator, err);
+        code = how->enough ? evaluate_few(table, &evaluator, how->enough, err)
+                           : evaluate(table, &evaluator, err);
     table->causes = evaluator.systematics.causes;
     if (!code)
         code = conclude(table, remarks, said, err);

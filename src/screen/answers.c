@@ -1,4 +1,4 @@
-/* answers.c - the second thread of a worker: explanations and curves. */
+/* answers.c - the second thread of a worker: explanations, curves, what it would take. */
 #include <stdlib.h>
 #include <string.h>
 
@@ -27,7 +27,6 @@ void bh_reply_free(bh_reply *answer)
     bh_curve_free(answer->curve);
     free(answer->solved);
     bh_text_free(&answer->sentence);
-    bh_table_free(answer->table);
     bh_reading_of_leave(answer->of);
     free(answer);
 }
@@ -41,33 +40,46 @@ void bh_worker_drop_question(bh_own_query *question)
     *question = (bh_own_query){0};
 }
 
-static bool stopped(void *asker)
-{
-    return atomic_load(&((bh_worker *)asker)->stop);
-}
+/* A question while it is answered. */
+struct asking {
+    bh_worker *worker;
+    bh_ask_kind kind;
+    size_t number;
+};
 
-static void explain(bh_worker *w, const bh_own_query *q, bh_reply *a)
-{
-    const bh_evaluation how = {.bins = q->question.bin > 0, .cancelled = stopped, .asker = w};
-    a->table = bh_table_new(a->of->plan, &how, NULL, &a->why);
-    if (a->table)
-        a->explanation = bh_explain(a->table, q->setting, q->arm, q->question.bin, &a->why);
-}
-
-/* Given up when the program ends, or when another value is wanted. */
+/* Given up when the program ends, and when it is withdrawn or asked anew; a curve, which is below
+ * the table all the time, gives way to what the user is waiting for. */
 static bool overtaken(void *asker)
 {
-    bh_worker *w = asker;
+    const struct asking *a = asker;
+    bh_worker *w = a->worker;
     if (atomic_load(&w->stop))
         return true;
     (void)pthread_mutex_lock(&w->lock);
-    const bool newer = w->questions[BH_ASK_SOLVE].number != 0;
+    bool newer = w->wanted[a->kind] != a->number;
+    for (int i = 0; a->kind == BH_ASK_CURVE && i < BH_ASK_KINDS; i++)
+        newer = newer || w->questions[i].number != 0;
     (void)pthread_mutex_unlock(&w->lock);
     return newer;
 }
 
-static void solve(bh_worker *w, const bh_own_query *q, bh_reply *a)
+static void explain(struct asking *by, const bh_own_query *q, bh_reply *a)
 {
+    const bh_explained_row row = {q->setting, q->arm, q->question.bin};
+    const bh_evaluation how = {.cancelled = overtaken, .asker = by};
+    a->explanation = bh_explain_alone(a->of->plan, &row, &how, &a->why);
+}
+
+static void draw_curve(struct asking *by, const bh_own_query *q, bh_reply *a)
+{
+    const bh_curve_request request = {
+        .setting = q->setting, .arm = q->arm, .cancelled = overtaken, .asker = by};
+    a->curve = bh_curve_new(a->of->plan, &request, &a->why);
+}
+
+static void solve(struct asking *by, const bh_own_query *q, bh_reply *a)
+{
+    bh_worker *w = by->worker;
     const bh_question question = {.bytes = q->bytes,
                                   .length = q->question.length,
                                   .name = w->name,
@@ -78,7 +90,7 @@ static void solve(bh_worker *w, const bh_own_query *q, bh_reply *a)
                                   .wanted = q->question.wanted,
                                   .by = q->by,
                                   .cancelled = overtaken,
-                                  .asker = w};
+                                  .asker = by};
     a->solved = calloc(1, sizeof *a->solved);
     if (!a->solved) {
         bh_fail(&a->why, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
@@ -92,27 +104,46 @@ static void solve(bh_worker *w, const bh_own_query *q, bh_reply *a)
     a->solved = NULL;
 }
 
-static void answer(bh_worker *w, const bh_own_query *q)
+/* What came of it; NULL without memory. */
+static bh_reply *reply_to(struct asking *by, const bh_own_query *q)
 {
     bh_reply *a = calloc(1, sizeof *a);
     if (!a)
-        return;
-    a->kind = q->question.kind;
+        return NULL;
+    a->kind = by->kind;
     a->number = q->number;
-    a->of = bh_worker_read(w, 1, q->bytes, q->question.length);
+    a->of = bh_worker_read(by->worker, 1, q->bytes, q->question.length);
     if (!a->of || !a->of->plan)
         bh_fail(&a->why, BH_EPLAN, "the plan has errors: they come first");
     else if (a->kind == BH_ASK_EXPLAIN)
-        explain(w, q, a);
+        explain(by, q, a);
     else if (a->kind == BH_ASK_SOLVE)
-        solve(w, q, a);
+        solve(by, q, a);
     else
-        a->curve = bh_curve_new(a->of->plan,
-                                &(bh_curve_request){.setting = q->setting, .arm = q->arm}, &a->why);
+        draw_curve(by, q, a);
+    return a;
+}
+
+/* A curve that gave way is asked for again, unless it is of no use by now. */
+static void ask_again(bh_worker *w, bh_own_query *q)
+{
+    if (q->question.kind != BH_ASK_CURVE || w->wanted[BH_ASK_CURVE] != q->number)
+        return;
+    w->questions[BH_ASK_CURVE] = *q;
+    *q = (bh_own_query){0};
+}
+
+static void answer(bh_worker *w, bh_own_query *q)
+{
+    struct asking by = {w, q->question.kind, q->number};
+    bh_reply *a = reply_to(&by, q);
+    const bool done = a && (a->explanation || a->curve || a->solved || !overtaken(&by));
     (void)pthread_mutex_lock(&w->lock);
-    if (w->answer_count < BH_MOST_ANSWERS) {
+    if (done && w->answer_count < BH_MOST_ANSWERS) {
         w->answers[w->answer_count++] = a;
         a = NULL;
+    } else if (!done) {
+        ask_again(w, q);
     }
     (void)pthread_mutex_unlock(&w->lock);
     bh_reply_free(a);
@@ -167,11 +198,20 @@ size_t bh_worker_ask(bh_worker *worker, const bh_query *question)
     bh_own_query *place = &worker->questions[question->kind];
     bh_worker_drop_question(place);
     const size_t number = own.number = ++worker->numbers;
+    worker->wanted[question->kind] = number;
     *place = own;
     worker->working[1] = true;
     (void)pthread_cond_broadcast(&worker->more);
     (void)pthread_mutex_unlock(&worker->lock);
     return number;
+}
+
+void bh_worker_withdraw(bh_worker *worker, bh_ask_kind kind)
+{
+    (void)pthread_mutex_lock(&worker->lock);
+    bh_worker_drop_question(&worker->questions[kind]);
+    worker->wanted[kind] = 0;
+    (void)pthread_mutex_unlock(&worker->lock);
 }
 
 bh_reply *bh_worker_answer(bh_worker *worker)

@@ -20,6 +20,7 @@ struct bh_desk {
     bh_desk_start start;
     bool over, suspends;
     bool drop;      /* unsaved work, when it is over */
+    bool solving;   /* a question of what it would take was asked */
     double pressed; /* [s] when a key was last pressed */
 };
 
@@ -192,10 +193,22 @@ void bh_desk_resize(bh_desk *desk, int rows, int columns)
     bh_model_resize(&desk->model, rows, columns);
 }
 
+/* The curve that is on its way is asked for again once the table is there. */
+static void put_off_curve(bh_desk *d)
+{
+    bh_model *m = &d->model;
+    if (!m->curve_asked || (m->curve && m->curve->number == m->curve_asked))
+        return;
+    bh_worker_withdraw(d->worker, BH_ASK_CURVE);
+    m->curve_asked = 0;
+    m->curve_due = true;
+}
+
 static void begin_job(bh_desk *d)
 {
     size_t first[MOST_VIEW], opened[MOST_OPEN];
     bh_job job = {.first = first, .opened = opened};
+    put_off_curve(d);
     job.bytes = bh_model_text(&d->model, &job.length);
     job.first_count = bh_model_in_view(&d->model, first, MOST_VIEW);
     job.opened_count = bh_model_opened(&d->model, opened, MOST_OPEN);
@@ -237,7 +250,7 @@ static void ask_to_solve(bh_desk *d)
     q.bytes = bh_model_bytes(&d->model, &q.length);
     s->due = false;
     s->asked = bh_worker_ask(d->worker, &q);
-    s->waiting = s->asked != 0;
+    s->waiting = d->solving = s->asked != 0;
 }
 
 /* The curve is asked for once typing pauses; returns [s] until then, below 0: nothing is due. */
@@ -252,6 +265,27 @@ static double mind_curve(bh_desk *d, double now)
     m->curve_due = false;
     ask_about_row(d, BH_ASK_CURVE);
     return -1;
+}
+
+/* What was asked for a part of the screen that was closed since. */
+static void mind_questions(bh_desk *d)
+{
+    bh_model *m = &d->model;
+    if (m->explain_asked &&
+        (m->over != BH_OVER_SHEET || m->sheet.kind != BH_SHEET_EXPLAIN || m->explain_due)) {
+        bh_worker_withdraw(d->worker, BH_ASK_EXPLAIN);
+        m->explain_asked = 0;
+    }
+    if (d->solving && m->over != BH_OVER_SOLVE) {
+        bh_worker_withdraw(d->worker, BH_ASK_SOLVE);
+        d->solving = false;
+    }
+    if (m->over == BH_OVER_SOLVE && m->solving.due)
+        ask_to_solve(d);
+    if (m->explain_due && bh_table_here(m)) {
+        m->explain_due = false;
+        ask_about_row(d, BH_ASK_EXPLAIN);
+    }
 }
 
 static void mind_job(bh_desk *d)
@@ -269,12 +303,7 @@ double bh_desk_tend(bh_desk *desk, double now)
     bh_model *m = &desk->model;
     const double wait = bh_keeper_tend(&desk->keeper, m, now);
     mind_job(desk);
-    if (m->over == BH_OVER_SOLVE && m->solving.due)
-        ask_to_solve(desk);
-    if (m->explain_due && bh_table_here(m)) {
-        m->explain_due = false;
-        ask_about_row(desk, BH_ASK_EXPLAIN);
-    }
+    mind_questions(desk);
     const double curve = mind_curve(desk, now);
     return wait < 0 || (curve >= 0 && curve < wait) ? curve : wait;
 }

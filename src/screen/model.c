@@ -146,7 +146,7 @@ void bh_model_adopt(bh_model *model, bh_outcome *outcome)
 
 void bh_model_answer(bh_model *model, bh_reply *answer)
 {
-    if (answer->kind == BH_ASK_CURVE) {
+    if (answer->kind == BH_ASK_CURVE && answer->number == model->curve_asked) {
         bh_reply_free(model->curve);
         model->curve = answer;
         return;

@@ -3,6 +3,7 @@
 #include "../suite.h"
 
 #include <gsl/gsl_errno.h>
+#include <pthread.h>
 #include <stdatomic.h>
 #include <stdlib.h>
 #include <unistd.h>
@@ -18,12 +19,16 @@ void __wrap_bh_structure_eval(const bh_structure *structure, size_t n, const dou
                               double *ge2, double *gm2);
 
 static atomic_bool slow;
-static atomic_size_t calls;
+static atomic_size_t calls, curve_calls;
+static _Atomic(pthread_t) last_thread, curve_thread;
 
 void __wrap_bh_structure_eval(const bh_structure *structure, size_t n, const double *q2,
                               double *ge2, double *gm2)
 {
     (void)atomic_fetch_add(&calls, 1U);
+    atomic_store(&last_thread, pthread_self());
+    if (pthread_equal(pthread_self(), atomic_load(&curve_thread)))
+        (void)atomic_fetch_add(&curve_calls, 1U);
     if (atomic_load(&slow)) {
         const struct timespec pause = {0, 3000000};
         nanosleep(&pause, NULL);
@@ -141,11 +146,82 @@ START_TEST(leaves_at_once)
 }
 END_TEST
 
+/* Until some more calls were made than there were. */
+static bool wait_for_calls(bh_desk *desk, size_t before, size_t more)
+{
+    const double start = driven_now();
+    while (atomic_load(&calls) < before + more && driven_now() - start < 60) {
+        (void)bh_desk_tend(desk, driven_now());
+        (void)bh_desk_news(desk);
+        const struct timespec pause = {0, 1000000};
+        nanosleep(&pause, NULL);
+    }
+    return atomic_load(&calls) >= before + more;
+}
+
+/* A table that is there, quickly made, and a curve on its way that is slow. */
+static bh_desk *open_with_slow_curve(const char *path, bh_text *screen)
+{
+    atomic_store(&slow, false);
+    bh_desk *desk = open_desk(path);
+    bh_desk_resize(desk, 60, 120);
+    const double start = driven_now();
+    bh_press key = {.kind = BH_PRESS_HOME};
+    bh_desk_press(desk, &key, start); /* the curve waits for a pause after it */
+    do {
+        ck_assert_double_lt(driven_now() - start, 60);
+        (void)bh_desk_tend(desk, start);
+        (void)bh_desk_news(desk);
+        screen->length = 0;
+        driven_draw(desk, screen);
+    } while (bh_desk_evaluated(desk) < 36 || strstr(screen->bytes, " of 36"));
+    ck_assert_ptr_nonnull(strstr(screen->bytes, "being computed"));
+    atomic_store(&slow, true);
+    ck_assert(wait_for_calls(desk, atomic_load(&calls), 4));
+    atomic_store(&curve_thread, atomic_load(&last_thread));
+    return desk;
+}
+
+/* A curve is given up when the plan changes, when something is asked that the user waits for, and
+ * when the program ends: of its thousands of calls not many more are made. */
+START_TEST(curves_give_way)
+{
+    enum { ANOTHER_PLAN, EXPLANATION, THE_END };
+    char path[] = "/tmp/beamhours-slow-XXXXXX";
+    const int file = mkstemp(path);
+    ck_assert_int_ge(file, 0);
+    close(file);
+    bh_text screen = {0};
+    bh_desk *desk = open_with_slow_curve(path, &screen);
+    const char *const typed[] = {"l", "e", "n", "e", "r", "g", "y", "<Escape>",
+                                 "8", "6", "0", " ", "M", "e", NULL};
+    for (int i = 0; _i == ANOTHER_PLAN && typed[i]; i++)
+        (void)press(desk, typed[i], &screen);
+    const size_t before = atomic_load(&calls), of_curve = atomic_load(&curve_calls);
+    if (_i == ANOTHER_PLAN) {
+        (void)press(desk, "V", &screen);
+        ck_assert(wait_for_calls(desk, before, 60));
+    } else if (_i == EXPLANATION) {
+        (void)press(desk, "<Tab>", &screen);
+        (void)press(desk, "e", &screen);
+        ck_assert(wait_for(desk, "Inputs", &screen));
+        ck_assert_uint_lt(atomic_load(&calls) - before, 1500);
+    }
+    bh_desk_close(desk);
+    if (_i != EXPLANATION)
+        ck_assert_uint_lt(atomic_load(&curve_calls) - of_curve, 20);
+    ck_assert_uint_lt(atomic_load(&calls) - before, 1500);
+    bh_text_free(&screen);
+    unlink(path);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("slow");
     tcase_set_timeout(tests, 300);
     tcase_add_test(tests, no_key_waits);
     tcase_add_test(tests, leaves_at_once);
+    tcase_add_loop_test(tests, curves_give_way, 0, 3);
     return run_suite("screen/slow", tests);
 }

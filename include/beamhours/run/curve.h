@@ -17,6 +17,8 @@ typedef struct {
     bh_against against;
     const char *structure; /* of the struck nuclide, instead of the plan's; NULL: the plan's */
     int points;            /* of the grid, 2 to 481; below 2: 61 */
+    bool (*cancelled)(void *asker); /* as bh_evaluation has it */
+    void *asker;
 } bh_curve_request;
 
 typedef struct bh_curve bh_curve;

@@ -29,6 +29,17 @@ typedef struct bh_explanation bh_explanation;
  * `table`.  Returns NULL with the names that would do in err when there is none. */
 bh_explanation *bh_explain(const bh_table *table, const char *setting, const char *arm, int bin,
                            bh_error *err);
+
+/* Which row, as bh_explain has it. */
+typedef struct {
+    const char *setting, *arm;
+    int bin; /* from 1; 0 for the whole arm */
+} bh_explained_row;
+
+/* The same of a plan whose table there is no need of: evaluates, as `how` says (its `bins` and
+ * `enough` are not looked at), only what the row needs. */
+bh_explanation *bh_explain_alone(const bh_plan *plan, const bh_explained_row *row,
+                                 const bh_evaluation *how, bh_error *err);
 void bh_explanation_free(bh_explanation *explanation);
 size_t bh_explanation_lines(const bh_explanation *explanation);
 const bh_line *bh_explanation_line(const bh_explanation *explanation, size_t i);

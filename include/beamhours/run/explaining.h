@@ -7,6 +7,9 @@
 #include "beamhours/run/explain.h"
 #include "beamhours/units/quantity.h"
 
+/* Ratios to so many other rows are explained. */
+enum { BH_EXPLAIN_RATIOS = 8 };
+
 typedef struct {
     const bh_table *table;
     bh_arena *arena; /* of the lines and their texts */

@@ -41,6 +41,8 @@ typedef struct {
     bool (*cancelled)(void *asker); /* polled at least each 5 ms; NULL: never */
     void *asker;
     bh_workspace *workspace; /* kept by the caller; NULL: one for this evaluation alone */
+    size_t enough; /* 0: all rows; else the table ends with the setting that makes it so many rows
+                      with a systematic uncertainty, and has no totals */
 } bh_evaluation;
 
 /*

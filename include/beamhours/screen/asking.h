@@ -41,6 +41,7 @@ struct bh_worker {
     bh_own_job waiting; /* number 0: none */
     bh_outcome *out;
     bh_own_query questions[BH_ASK_KINDS];
+    size_t wanted[BH_ASK_KINDS]; /* number of the last question of each kind; 0: withdrawn */
     bh_reply *answers[BH_MOST_ANSWERS];
     size_t answer_count;
     bh_results *results; /* of the first thread */

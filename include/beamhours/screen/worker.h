@@ -66,7 +66,6 @@ typedef struct {
     bh_ask_kind kind;
     size_t number;
     bh_reading_of *of;
-    bh_table *table;
     bh_explanation *explanation;
     bh_curve *curve;
     bh_answer *solved;
@@ -76,6 +75,9 @@ typedef struct {
 
 /* Asks; a question of the same kind that waits is replaced.  Returns its number, or 0. */
 size_t bh_worker_ask(bh_worker *worker, const bh_query *question);
+
+/* Drops the question of this kind that waits, gives up the one that is being answered. */
+void bh_worker_withdraw(bh_worker *worker, bh_ask_kind kind);
 
 /* An answer that was not taken yet, or NULL. */
 bh_reply *bh_worker_answer(bh_worker *worker);
