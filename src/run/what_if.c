@@ -1,13 +1,14 @@
 /* what_if.c - counting statistics go with the root of the hours, so that most of it follows from
- * the table; only another current is evaluated. */
+ * the table; another current is evaluated, and another background passes through dead time. */
 #include "beamhours/run/what_if.h"
 
 #include <math.h>
 #include <stdlib.h>
 
-#include "beamhours/run/totals.h"
+#include "beamhours/rates/counting.h"
 
 static const double less_beam = 0.4, lost_day = 24.0; /* [1], [h] */
+static const double slack = 1.0 + 1e-9;               /* [1] what fits but for rounding fits */
 
 /* What all cases are made from. */
 struct asking {
@@ -61,7 +62,7 @@ static int longer_first(const void *a, const void *b)
 struct trial {
     const struct worse *worse;
     size_t *order;
-    size_t *place; /* of each setting in the order */
+    bool *gone; /* of each setting */
     bh_setting *settings;
     bh_stretch *stretches;
 };
@@ -72,32 +73,29 @@ static bool prepare_trial(const struct asking *a, const struct worse *w, struct 
     struct candidate *list = bh_arena_take(a->arena, n + 1, sizeof *list);
     *t = (struct trial){.worse = w,
                         .order = bh_arena_take(a->arena, n + 1, sizeof *t->order),
-                        .place = bh_arena_take(a->arena, n + 1, sizeof *t->place),
+                        .gone = bh_arena_take(a->arena, n + 1, sizeof *t->gone),
                         .settings = bh_arena_take(a->arena, n + 1, sizeof *t->settings),
                         .stretches = bh_arena_take(a->arena, n + 1, sizeof *t->stretches)};
-    if (!list || !t->order || !t->place || !t->settings || !t->stretches)
+    if (!list || !t->order || !t->gone || !t->settings || !t->stretches)
         return false;
     for (size_t s = 0; s < n; s++)
         list[s] = (struct candidate){w->hours[s].full + w->hours[s].empty, s};
     qsort(list, n, sizeof *list, longer_first);
-    for (size_t i = 0; i < n; i++) {
+    for (size_t i = 0; i < n; i++)
         t->order[i] = list[i].setting;
-        t->place[list[i].setting] = i;
-    }
     return true;
 }
 
-/* Sets hours [h] of the calendar that remain without the first `gone` of the order, their changes
- * and tasks among what is saved. */
-static bh_code without(const struct asking *a, const struct trial *t, size_t gone, double *hours,
-                       bh_error *err)
+/* Sets hours [h] of the calendar that remain without those that are gone, their changes and tasks
+ * among what is saved. */
+static bh_code rest_of(const struct asking *a, const struct trial *t, double *hours, bh_error *err)
 {
     bh_plan plan = *t->worse->plan;
     bh_totals totals;
     plan.settings = t->settings;
     plan.setting_count = 0;
     for (size_t s = 0; s < t->worse->plan->setting_count; s++)
-        if (t->place[s] >= gone) {
+        if (!t->gone[s]) {
             t->settings[plan.setting_count] = t->worse->plan->settings[s];
             t->stretches[plan.setting_count++] = t->worse->hours[s];
         }
@@ -110,11 +108,40 @@ static bh_code without(const struct asking *a, const struct trial *t, size_t gon
     return bad;
 }
 
+/* The same without the first `gone` of the order. */
+static bh_code without(const struct asking *a, const struct trial *t, size_t gone, double *hours,
+                       bh_error *err)
+{
+    for (size_t i = 0; i < t->worse->plan->setting_count; i++)
+        t->gone[t->order[i]] = i < gone;
+    return rest_of(a, t, hours, err);
+}
+
+/* Takes those back that need not go: one that stood alone between two changes may save more than
+ * the longer ones before it.  The shortest comes back first. */
+static bh_code take_back(const struct asking *a, const struct trial *t, bh_what_if *out,
+                         bh_error *err)
+{
+    double hours = 0.0;
+    size_t kept = 0;
+    bh_code bad = without(a, t, out->drop_count, &hours, err);
+    for (size_t i = out->drop_count; !bad && i-- > 0;) {
+        t->gone[t->order[i]] = false;
+        bad = rest_of(a, t, &hours, err);
+        t->gone[t->order[i]] = hours > a->granted * slack;
+    }
+    for (size_t i = 0; i < out->drop_count; i++)
+        if (t->gone[t->order[i]])
+            t->order[kept++] = t->order[i];
+    out->drop_count = kept;
+    return bad;
+}
+
 /* The longest settings first, as many as make the rest fit: their number lies between `fewest` and
  * `most`, which are halved. */
 static bh_code drop(const struct asking *a, const struct worse *w, bh_what_if *out, bh_error *err)
 {
-    const double granted = a->granted * (1.0 + 1e-9);
+    const double granted = a->granted * slack;
     struct trial t;
     double hours = 0.0;
     if (!prepare_trial(a, w, &t))
@@ -134,7 +161,7 @@ static bh_code drop(const struct asking *a, const struct worse *w, bh_what_if *o
             most = middle;
     }
     out->drop_count = most;
-    return bad;
+    return bad ? bad : take_back(a, &t, out, err);
 }
 
 /* --- the cases --- */
@@ -148,27 +175,49 @@ static double *uncertainties(const struct asking *a, bh_what_if *out)
     return u;
 }
 
+/* Sets what share of the planned hours of data fits with `days_less` [h] fewer on the calendar and
+ * beam in a `share` [1] of it, cuts the statistics to it, and says what would be asked. */
+static bh_code fit(const struct asking *a, double days_less, double share, bh_what_if *out,
+                   double *u, bh_error *err)
+{
+    bh_plan changed = *a->plan;
+    bh_totals t;
+    changed.schedule.availability.value = share;
+    changed.schedule.availability.given = true;
+    const bh_code bad = bh_totals_from_plan(&changed, a->hours, a->arena, &t, err);
+    if (bad)
+        return bad;
+    const double planned = t.data_hours + t.empty_hours;
+    const double beam = (a->granted - days_less - t.change_hours) * share - t.task_hours;
+    const bool all = !(planned > 0.0) || beam * slack >= planned;
+    out->data_left = all ? 1.0 : fmax(0.0, beam / planned);
+    for (size_t i = 0; i < a->rows; i++)
+        u[i] = out->data_left > 0.0 ? u[i] / sqrt(out->data_left) : (double)NAN;
+    out->asked_hours = t.asked_hours + days_less;
+    return BH_OK;
+}
+
+static bh_code as_planned(const struct asking *a, bh_what_if *out, bh_error *err)
+{
+    double *u = uncertainties(a, out);
+    if (!u)
+        return no_memory(err);
+    const bh_code bad = fit(a, 0.0, availability(a->plan), out, u, err);
+    return bad ? bad : drop(a, &(struct worse){a->plan, a->hours, 0.0}, out, err);
+}
+
 /* Fewer hours of the calendar, or fewer of them with beam. */
 static bh_code shorter(const struct asking *a, double days_less, double share, bh_what_if *out,
                        bh_error *err)
 {
     double *u = uncertainties(a, out);
     bh_plan changed = *a->plan;
-    bh_totals t;
     changed.schedule.availability.value = share;
     changed.schedule.availability.given = true;
     if (!u)
         return no_memory(err);
-    const bh_code bad = bh_totals_from_plan(&changed, a->hours, a->arena, &t, err);
-    if (bad)
-        return bad;
-    const double planned = t.data_hours + t.empty_hours;
-    const double beam = (a->granted - days_less - t.change_hours) * share - t.task_hours;
-    out->data_left = planned > 0.0 ? fmin(1.0, fmax(0.0, beam / planned)) : 1.0;
-    for (size_t i = 0; i < a->rows; i++)
-        u[i] = out->data_left > 0.0 ? u[i] / sqrt(out->data_left) : (double)NAN;
-    out->asked_hours = t.asked_hours + days_less;
-    return drop(a, &(struct worse){&changed, a->hours, days_less}, out, err);
+    const bh_code bad = fit(a, days_less, share, out, u, err);
+    return bad ? bad : drop(a, &(struct worse){&changed, a->hours, days_less}, out, err);
 }
 
 static bh_plan *with_half_current(const struct asking *a)
@@ -202,15 +251,57 @@ static bh_code half_current(const struct asking *a, bh_what_if *out, bh_error *e
         u[i] = cell(half, i, BH_COL_STATISTICAL) *
                sqrt(cell(half, i, BH_COL_HOURS) / cell(a->table, i, BH_COL_HOURS));
     bh_stretch *longer = bh_arena_take(a->arena, plan->setting_count + 1, sizeof *longer);
+    bh_code bad = longer ? fit(a, 0.0, availability(plan), out, u, err) : no_memory(err);
     if (longer)
         bh_stretches_of(half, longer);
     out->asked_hours = bh_table_totals(half)->asked_hours;
     bh_table_free(half);
-    return longer ? drop(a, &(struct worse){plan, longer, 0.0}, out, err) : no_memory(err);
+    return bad ? bad : drop(a, &(struct worse){plan, longer, 0.0}, out, err);
 }
 
-/* sigma^2 = 1/N + background / N^2, both backgrounds of it in the second term: doubled, it is
- * 2 sigma^2 - 1/N.  Settings with goals take longer, others as long as they did. */
+/* --- twice the background --- */
+
+/* What an arm's readout leaves [1] of its own row with all but the signal `times` [1] as much. */
+static double live_of(const struct asking *a, size_t row, double times)
+{
+    const bh_place p = bh_table_place(a->table, false, row);
+    const bh_setting *setting = &a->plan->settings[p.setting];
+    const bh_arm *arm = &setting->arms[p.arm].arm;
+    const bh_readout readout = {.dead_time = arm->dead_time.value,
+                                .paralysable = arm->dead_time_model == BH_DEAD_PARALYSABLE,
+                                .prescale = arm->prescale,
+                                .rate_limit = arm->rate_limit.given ? arm->rate_limit.value : 0,
+                                .duty_factor = setting->beam.duty_factor.value};
+    const double beside = cell(a->table, row, BH_COL_BACKGROUND) + arm->other_rate.value;
+    bh_live live;
+    return bh_counting_live(&readout, cell(a->table, row, BH_COL_SIGNAL) + times * beside, &live,
+                            NULL)
+               ? (double)NAN
+               : live.live_fraction;
+}
+
+/* The live fraction [1] with twice the background in units of the planned one; of a coincidence
+ * both arms have theirs. */
+static double live_left(const struct asking *a, size_t row)
+{
+    const bh_place p = bh_table_place(a->table, false, row);
+    const bh_setting *setting = &a->plan->settings[p.setting];
+    const bh_setting_arm *pair = &setting->arms[p.arm];
+    if (!pair->first)
+        return live_of(a, row, 2.0) / live_of(a, row, 1.0);
+    double left = 1.0;
+    for (size_t i = 0; i < a->rows; i++) {
+        const bh_place q = bh_table_place(a->table, false, i);
+        const bh_setting_arm *arm = &setting->arms[q.arm];
+        if (q.setting == p.setting && (arm == pair->first || arm == pair->second))
+            left *= live_of(a, i, 2.0) / live_of(a, i, 1.0);
+    }
+    return left;
+}
+
+/* sigma^2 = 1/N + background / N^2, both backgrounds of it in the second term.  Doubled, with
+ * `left` of the live fraction, it is (2 sigma^2 - 1/N) / left.  Settings with goals take longer,
+ * others as long as they did. */
 static bh_code double_background(const struct asking *a, bh_what_if *out, bh_error *err)
 {
     double *u = uncertainties(a, out);
@@ -224,17 +315,26 @@ static bh_code double_background(const struct asking *a, bh_what_if *out, bh_err
         const double was = u[i], counts = cell(a->table, i, BH_COL_COUNTS);
         const double to_goal = cell(a->table, i, BH_COL_HOURS_TO_GOAL);
         const size_t s = bh_table_place(a->table, false, i).setting;
-        u[i] = sqrt(fmax(was * was, 2.0 * was * was - 1.0 / counts));
+        u[i] = sqrt(fmax(was * was, 2.0 * was * was - 1.0 / counts) / live_left(a, i));
         const double factor = u[i] * u[i] / (was * was);
         const double share = a->hours[s].empty / a->hours[s].full;
         if (to_goal * factor > longer[s].full)
             longer[s] = (bh_stretch){to_goal * factor, to_goal * factor * share};
     }
-    const bh_code bad = bh_totals_from_plan(a->plan, longer, a->arena, &t, err);
+    bh_code bad = fit(a, 0.0, availability(a->plan), out, u, err);
+    bad = bad ? bad : bh_totals_from_plan(a->plan, longer, a->arena, &t, err);
     if (bad)
         return bad;
     out->asked_hours = t.asked_hours;
     return drop(a, &(struct worse){a->plan, longer, 0.0}, out, err);
+}
+
+double bh_what_if_granted(const bh_plan *plan, const bh_totals *t)
+{
+    const double available = plan->schedule.available_is_beam
+                                 ? t->available_hours / availability(plan) + t->change_hours
+                                 : t->available_hours;
+    return isfinite(available) ? fmin(available, t->asked_hours) : t->asked_hours;
 }
 
 bh_code bh_what_if_make(const bh_table *table, bh_arena *arena, bh_what_if out[BH_IF_COUNT],
@@ -242,26 +342,19 @@ bh_code bh_what_if_make(const bh_table *table, bh_arena *arena, bh_what_if out[B
 {
     bh_error unseen = {.code = BH_OK};
     err = err ? err : &unseen;
-    const bh_totals *t = bh_table_totals(table);
     const bh_plan *plan = bh_table_plan(table);
-    const bool calendar = isfinite(t->available_hours) && !plan->schedule.available_is_beam;
     struct asking a = {.table = table,
                        .plan = plan,
                        .arena = arena,
                        .hours = bh_arena_take(arena, plan->setting_count + 1, sizeof *a.hours),
                        .rows = bh_table_rows(table, false),
-                       .granted =
-                           calendar ? fmin(t->available_hours, t->asked_hours) : t->asked_hours};
+                       .granted = bh_what_if_granted(plan, bh_table_totals(table))};
     if (!a.hours)
         return no_memory(err);
     bh_stretches_of(table, a.hours);
     for (int i = 0; i < BH_IF_COUNT; i++)
         out[i] = (bh_what_if){.data_left = 1.0};
-    bh_what_if *planned = &out[BH_IF_AS_PLANNED];
-    if (!uncertainties(&a, planned))
-        return no_memory(err);
-    planned->asked_hours = t->asked_hours;
-    bh_code bad = drop(&a, &(struct worse){plan, a.hours, 0.0}, planned, err);
+    bh_code bad = as_planned(&a, &out[BH_IF_AS_PLANNED], err);
     bad = bad ? bad : half_current(&a, &out[BH_IF_HALF_CURRENT], err);
     bad = bad ? bad : double_background(&a, &out[BH_IF_DOUBLE_BACKGROUND], err);
     bad = bad ? bad : shorter(&a, 0.0, less_beam, &out[BH_IF_LESS_BEAM], err);

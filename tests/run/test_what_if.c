@@ -102,6 +102,46 @@ START_TEST(twice_the_background_by_hand)
 }
 END_TEST
 
+/* u^2 = (s + b) / (s^2 live T): the doubled background, and what else the arm triggers on, pass
+ * through dead time, 1 / (1 + n tau) (Knoll, Radiation Detection and Measurement, chapter 4). */
+START_TEST(twice_the_background_passes_through_dead_time)
+{
+    struct asked a =
+        ask("plan: 1\nbeam: {particle: electron, kinetic_energy: 400 MeV, current: 10 uA}\n"
+            "target:\n  layers: [{material: polyethylene, thickness: 0.1 mm}]\n  scatterer: C\n"
+            "arms: [{name: A, solid_angle: 2 msr, momentum_bite: ±20 %, dead_time: 40 us,\n"
+            "  other_rate: 3 kHz}]\n"
+            "settings: [{name: K, angle: 50 deg, goal: 0.5 %}]\n");
+    const double s = number_in(&a, 0, BH_COL_SIGNAL), b = number_in(&a, 0, BH_COL_BACKGROUND);
+    const double seconds = 3600.0 * number_in(&a, 0, BH_COL_HOURS), tau = 40e-6, other = 3e3;
+    const double live = 1.0 / (1.0 + (s + 2.0 * b + 2.0 * other) * tau);
+    near(number_in(&a, 0, BH_COL_LIVE), 1.0 / (1.0 + (s + b + other) * tau), "live fraction");
+    near(a.what[BH_IF_DOUBLE_BACKGROUND].uncertainty[0], sqrt((s + 2.0 * b) / (live * seconds)) / s,
+         "uncertainty");
+    put_away(&a);
+}
+END_TEST
+
+/* 42 h of data and 20 h for the change of energy, 35 h granted.  The longest first, K2, L2, K1 go;
+ * without K1 and K2 the change is saved, and L2 comes back. */
+START_TEST(none_is_dropped_that_need_not_go)
+{
+    struct asked a =
+        ask(FOIL "settings:\n"
+                 "  - {name: K1, angle: 30 deg, time: 10 h}\n"
+                 "  - {name: K2, angle: 30 deg, time: 12 h}\n"
+                 "  - {name: L1, angle: 30 deg, time: 9 h, beam: {kinetic_energy: 300 MeV}}\n"
+                 "  - {name: L2, angle: 30 deg, time: 11 h, beam: {kinetic_energy: 300 "
+                 "MeV}}\nschedule: {changes: {energy: 20 h}, available: 35 h}\n");
+    const bh_what_if *w = &a.what[BH_IF_AS_PLANNED];
+    near(w->missing_hours, 62.0 - 35.0, "missing");
+    ck_assert_uint_eq(w->drop_count, 2);
+    ck_assert_uint_eq(w->drop[0], 1);
+    ck_assert_uint_eq(w->drop[1], 0);
+    put_away(&a);
+}
+END_TEST
+
 /* Granted: 93.5 h.  At 40 %: (93.5 - 10) x 0.4 h of beam for 60 h of data. */
 START_TEST(beam_in_forty_per_cent_of_the_time)
 {
@@ -138,8 +178,25 @@ START_TEST(what_is_available_limits_what_is_granted)
     near(a.what[BH_IF_AS_PLANNED].missing_hours, 4.0, "missing");
     near(a.what[BH_IF_LESS_BEAM].data_left, 16.0 * 0.4 / 20.0, "data");
     ck_assert_uint_eq(a.what[BH_IF_AS_PLANNED].drop_count, 1);
+    near(a.what[BH_IF_AS_PLANNED].data_left, 0.8, "data as planned");
+    near(a.what[BH_IF_DOUBLE_BACKGROUND].data_left, 0.8, "data with twice the background");
+    near(a.what[BH_IF_HALF_CURRENT].uncertainty[0],
+         number_in(&a, 0, BH_COL_STATISTICAL) * sqrt(2.0 / 0.8), "half the current in that time");
     ck_assert_double_eq(a.what[BH_IF_LOST_DAY].data_left, 0.0);
     ck_assert(isnan(a.what[BH_IF_LOST_DAY].uncertainty[0]));
+    put_away(&a);
+}
+END_TEST
+
+/* Hours of beam that are available come on the calendar with availability, and changes beside. */
+START_TEST(beam_hours_limit_too)
+{
+    struct asked a =
+        ask(FOIL
+            "settings: [{name: K, angle: 30 deg, time: 20 h}]\n"
+            "schedule: {available: 15 h, available_as: beam, start_up: 8 h, availability: 50 %}\n");
+    near(a.what[BH_IF_AS_PLANNED].data_left, 0.75, "data");
+    near(a.what[BH_IF_AS_PLANNED].missing_hours, 48.0 - 38.0, "missing");
     put_away(&a);
 }
 END_TEST
@@ -159,6 +216,9 @@ int main(void)
     tcase_add_test(tests, half_the_current_is_half_the_events);
     tcase_add_test(tests, goals_take_twice_as_long_at_half_the_current);
     tcase_add_test(tests, twice_the_background_by_hand);
+    tcase_add_test(tests, twice_the_background_passes_through_dead_time);
+    tcase_add_test(tests, none_is_dropped_that_need_not_go);
+    tcase_add_test(tests, beam_hours_limit_too);
     tcase_add_test(tests, beam_in_forty_per_cent_of_the_time);
     tcase_add_test(tests, a_day_less);
     tcase_add_test(tests, what_is_available_limits_what_is_granted);

@@ -24,14 +24,13 @@ typedef struct {
     size_t told_count; /* rows explained: all where there are few, else one of each kind */
     size_t told_row[BH_MOST_TOLD];
     bh_explanation *told[BH_MOST_TOLD];
-    bool all_told;
 } bh_reporting;
 
 /* The sections, in their order. */
 void bh_report_summary(bh_reporting *x);
 void bh_report_kinematics(bh_reporting *x);
 void bh_report_rates(bh_reporting *x);
-void bh_report_backgrounds(bh_reporting *x);
+BH_CHECKED bh_code bh_report_backgrounds(bh_reporting *x, bh_error *err);
 void bh_report_time(bh_reporting *x);
 void bh_report_uncertainty(bh_reporting *x);
 void bh_report_sensitivities(bh_reporting *x);
@@ -42,6 +41,9 @@ void bh_report_assumptions(bh_reporting *x);
 void bh_report_models(bh_reporting *x);
 void bh_report_cautions(bh_reporting *x);
 void bh_report_again(bh_reporting *x);
+
+/* One row explained; free with bh_explanation_free.  NULL with `err` filled. */
+bh_explanation *bh_report_explain(const bh_reporting *x, size_t row, bh_error *err);
 
 /* A table of these columns of the run table; names that all rows share are left out, and columns
  * that are empty throughout. */

@@ -96,15 +96,20 @@ static bool like_an_earlier(const bh_reporting *x, size_t row)
     return false;
 }
 
+bh_explanation *bh_report_explain(const bh_reporting *x, size_t row, bh_error *err)
+{
+    const bh_place p = bh_table_place(x->table, false, row);
+    const bh_setting *s = &x->plan->settings[p.setting];
+    return bh_explain(x->table, s->name, s->arms[p.arm].arm.name.text, 0, err);
+}
+
 static bh_code tell(bh_reporting *x, bh_error *err)
 {
-    x->all_told = x->view.row_count <= BH_MOST_TOLD / 2;
+    const bool all = x->view.row_count <= BH_MOST_TOLD / 2;
     for (size_t i = 0; i < x->view.row_count && x->told_count < BH_MOST_TOLD; i++) {
-        const bh_place p = bh_table_place(x->table, false, i);
-        const bh_setting *s = &x->plan->settings[p.setting];
-        if (!x->all_told && like_an_earlier(x, i))
+        if (!all && like_an_earlier(x, i))
             continue;
-        bh_explanation *e = bh_explain(x->table, s->name, s->arms[p.arm].arm.name.text, 0, err);
+        bh_explanation *e = bh_report_explain(x, i, err);
         if (!e)
             return err->code;
         x->told_row[x->told_count] = i;
@@ -133,12 +138,14 @@ static bh_code write_all(bh_reporting *x, bh_error *err)
     bh_report_summary(x);
     bh_report_kinematics(x);
     bh_report_rates(x);
-    bh_report_backgrounds(x);
+    bh_code bad = bh_report_backgrounds(x, err);
+    if (bad)
+        return bad;
     bh_report_time(x);
     bh_report_uncertainty(x);
     bh_report_sensitivities(x);
     bh_report_what_if(x);
-    const bh_code bad = bh_report_figures(x, err);
+    bad = bh_report_figures(x, err);
     if (bad)
         return bad;
     bh_report_facility(x);

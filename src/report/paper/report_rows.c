@@ -2,6 +2,7 @@
 #include <math.h>
 #include <string.h>
 
+#include "beamhours/base/number.h"
 #include "beamhours/report/prefix.h"
 #include "beamhours/report/reporting.h"
 
@@ -61,12 +62,13 @@ void bh_report_rates(bh_reporting *x)
                    rates, COUNT(rates));
 }
 
-/* "1.06276 Hz" without its unit. */
-static const char *bare(bh_reporting *x, const char *value)
-{
-    const char *end = strstr(value, " Hz");
-    return end ? bh_paper_text(&x->w, "%.*s", (int)(end - value), value) : value;
-}
+/* A line of the background, and whether it is the sum of them. */
+struct share {
+    const char *name;
+    double rate; /* [Hz] */
+    const char *source;
+    bool is_sum;
+};
 
 static bool in_background(const char *section)
 {
@@ -95,41 +97,99 @@ static const char *source_of(const bh_explanation *e, size_t line)
     return NULL;
 }
 
-static void items(bh_reporting *x, size_t told)
+/* The i-th line of an explanation, where it is a rate of background. */
+static bool is_share(const bh_explanation *e, size_t i, struct share *out)
 {
-    const bh_explanation *e = x->told[told];
+    const bh_line *l = bh_explanation_line(e, i);
+    const char *unit = NULL;
+    if (l->kind != BH_LINE_FACTOR || !l->value || bh_number_parse(l->value, &unit, &out->rate) ||
+        strcmp(unit, " Hz") != 0)
+        return false;
+    out->name = l->name;
+    out->source = source_of(e, i);
+    out->is_sum = strcmp(l->name, "background rate") == 0;
+    return true;
+}
+
+static void share(bh_reporting *x, size_t row, const struct share *of)
+{
+    bh_paper_cell(&x->w, bh_report_row_name(x, row));
+    bh_paper_cell(&x->w, bh_paper_text(&x->w, "%s", of->name));
+    bh_paper_cell(&x->w, bh_report_number(x, of->rate, 4));
+    bh_paper_cell(&x->w,
+                  of->source ? bh_paper_text(&x->w, "[%d]", bh_paper_cite(&x->w, of->source)) : "");
+}
+
+static double background_of(const bh_explanation *e)
+{
+    struct share s;
+    for (size_t i = 0; i < bh_explanation_lines(e); i++)
+        if (is_share(e, i, &s) && s.is_sum)
+            return s.rate;
+    return 0.0;
+}
+
+/* Each share that shows in the four digits of the sum, what the others give together, and the sum;
+ * nothing where nothing is counted. */
+static void items(bh_reporting *x, size_t row, const bh_explanation *e)
+{
+    const double all = background_of(e), least = 1e-3 * all, shown = 5e-5 * all;
+    double said = 0.0;
     bool inside = false;
-    for (size_t i = 0; i < bh_explanation_lines(e); i++) {
+    for (size_t i = 0; all > 0.0 && i < bh_explanation_lines(e); i++) {
         const bh_line *l = bh_explanation_line(e, i);
+        struct share s;
         if (l->kind == BH_LINE_SECTION)
             inside = in_background(l->name);
-        if (!inside || l->kind != BH_LINE_FACTOR || !l->value || !strstr(l->value, " Hz"))
+        if (!inside || !is_share(e, i, &s) || (s.rate < least && !s.is_sum))
             continue;
-        bh_paper_cell(&x->w, bh_report_row_name(x, x->told_row[told]));
-        bh_paper_cell(&x->w, bh_paper_text(&x->w, "%s", l->name));
-        bh_paper_cell(&x->w, bare(x, l->value));
-        const char *source = source_of(e, i);
-        bh_paper_cell(&x->w,
-                      source ? bh_paper_text(&x->w, "[%d]", bh_paper_cite(&x->w, source)) : "");
+        if (s.is_sum && fabs(all - said) > shown)
+            share(x, row, &(struct share){.name = "all else together", .rate = all - said});
+        said += s.rate;
+        share(x, row, &s);
     }
 }
 
-void bh_report_backgrounds(bh_reporting *x)
+/* Of rows that are not told elsewhere the explanation is made, read and forgotten. */
+static bh_code items_of(bh_reporting *x, size_t row, bh_error *err)
+{
+    for (size_t i = 0; i < x->told_count; i++)
+        if (x->told_row[i] == row) {
+            items(x, row, x->told[i]);
+            return BH_OK;
+        }
+    if (!(bh_selection_number(&x->view, row, BH_COL_BACKGROUND) > 0.0))
+        return BH_OK;
+    bh_explanation *e = bh_report_explain(x, row, err);
+    if (!e)
+        return err->code;
+    items(x, row, e);
+    bh_explanation_free(e);
+    return BH_OK;
+}
+
+bh_code bh_report_backgrounds(bh_reporting *x, bh_error *err)
 {
     static const bh_paper_column columns[] = {
         {"setting", "", false}, {"from", "", false}, {"rate", "Hz", true}, {"source", "", false}};
+    bool any = false;
     bh_paper_add(&x->w, BH_BLOCK_SECTION, "Backgrounds");
-    if (!x->all_told)
+    for (size_t row = 0; row < x->view.row_count; row++)
+        any |= bh_selection_number(&x->view, row, BH_COL_BACKGROUND) > 0.0;
+    if (!any)
         bh_paper_add(&x->w, BH_BLOCK_WORDS,
-                     "Item by item for the first setting of each beam particle, target and arm; "
-                     "the sums of all settings stand in the table of rates.");
+                     "No arm counts anything beside its signal, of what is computed here: see what "
+                     "is assumed.");
     bh_paper_table_open(&x->w,
                         "What each arm counts beside the signal, before dead time, largest first; "
-                        "the last of a setting is the sum",
+                        "the last of a setting is the sum, in which depths are averaged: it may "
+                        "differ in its last digit",
                         columns, COUNT(columns));
-    for (size_t i = 0; i < x->told_count; i++)
-        items(x, i);
+    bh_code bad = BH_OK;
+    for (size_t row = 0; !bad && row < x->view.row_count; row++)
+        bad = items_of(x, row, err);
     bh_paper_table_close(&x->w);
+    return bad;
 }
 
 void bh_report_sensitivities(bh_reporting *x)

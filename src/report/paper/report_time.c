@@ -157,9 +157,9 @@ static void cases(bh_reporting *x)
                                               {"missing", "h", true},
                                               {"dropped first", "", false}};
     bh_paper_table_open(&x->w,
-                        "What would be asked to keep every goal, what share of the planned hours "
-                        "of data fits into the time granted, what is missing once the "
-                        "contingency is used up, and which settings save it together with "
+                        "What would be asked to keep every goal; what share of the planned hours "
+                        "of data fits into the time granted; what is missing to keep every goal "
+                        "once the contingency is used up; which settings save that together with "
                         "their changes and tasks, the longest first",
                         columns, COUNT(columns));
     for (int i = 0; i < BH_IF_COUNT; i++) {
@@ -173,22 +173,36 @@ static void cases(bh_reporting *x)
     bh_paper_table_close(&x->w);
 }
 
+/* Where all that is asked is granted, what is planned fits, and has no column of its own. */
+static int first_case(const bh_reporting *x)
+{
+    return x->what_if[BH_IF_AS_PLANNED].data_left < 1.0 ? BH_IF_AS_PLANNED : BH_IF_HALF_CURRENT;
+}
+
 static void precisions(bh_reporting *x)
 {
     const bh_paper_column columns[] = {{"setting", "", false},
+                                       {"all hours asked", "%", true},
                                        {"as planned", "%", true},
                                        {"half the current", "%", true},
                                        {"twice the background", "%", true},
                                        {"beam 40 % of the time", "%", true},
                                        {"a day lost", "%", true}};
+    const int from = first_case(x);
+    bh_paper_column chosen[COUNT(columns)] = {columns[0], columns[1]};
+    for (int i = from; i < BH_IF_COUNT; i++)
+        chosen[2 + i - from] = columns[2 + i];
     bh_paper_table_open(&x->w,
-                        "The statistical uncertainty that survives in the time granted where "
-                        "nothing is dropped and all settings are cut alike (relative, of the "
-                        "background-subtracted signal)",
-                        columns, COUNT(columns));
+                        "The statistical uncertainty with all hours that are asked, and what of it "
+                        "survives in the time granted where nothing is dropped and all settings "
+                        "are cut alike (relative, of the background-subtracted signal; -: no time "
+                        "is left for data)",
+                        chosen, (size_t)(2 + BH_IF_COUNT - from));
     for (size_t r = 0; r < x->view.row_count; r++) {
         bh_paper_cell(&x->w, bh_report_row_name(x, r));
-        for (int i = 0; i < BH_IF_COUNT; i++)
+        bh_paper_cell(&x->w,
+                      bh_report_percent(x, bh_selection_number(&x->view, r, BH_COL_STATISTICAL)));
+        for (int i = from; i < BH_IF_COUNT; i++)
             bh_paper_cell(&x->w, bh_report_percent(x, x->what_if[i].uncertainty[r]));
     }
     bh_paper_table_close(&x->w);
@@ -196,11 +210,19 @@ static void precisions(bh_reporting *x)
 
 void bh_report_what_if(bh_reporting *x)
 {
+    const bh_schedule *s = &x->plan->schedule;
     bh_paper_add(&x->w, BH_BLOCK_SECTION, "What if");
-    bh_paper_add(&x->w, BH_BLOCK_WORDS,
-                 "The time granted is what is asked, or what is available on the calendar where "
-                 "that is less. Half the current is evaluated anew; twice the background "
-                 "leaves live fractions as they are; contingency is used up before data are cut.");
+    bh_paper_add(
+        &x->w, BH_BLOCK_WORDS,
+        bh_paper_text(&x->w,
+                      "The time granted is what is asked, or what is available where that is less: "
+                      "here %s h of the calendar%s. Half the current is evaluated anew; twice the "
+                      "background, and twice whatever else triggers, pass through dead time; "
+                      "contingency is used up before data are cut.",
+                      bh_report_hours(x, bh_what_if_granted(x->plan, x->totals)),
+                      s->available.given && s->available_is_beam
+                          ? " (available hours of beam / availability + changes)"
+                          : ""));
     cases(x);
     precisions(x);
 }

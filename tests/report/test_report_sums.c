@@ -1,0 +1,247 @@
+/* test_report_sums.c - who redoes the sums of a report with a pocket calculator, from the numbers
+ * printed in it alone, comes to what is printed, within the digits that are. */
+#include "../run/evaluated.h"
+
+#include "beamhours/base/file.h"
+#include "beamhours/base/number.h"
+#include "beamhours/report/report.h"
+
+static const char *const demos[] = {
+    "plans/alpha-gold.yaml", "plans/hydrogen-jet.yaml", "plans/hydrogen-separation.yaml",
+    "plans/lead.yaml",       "plans/muon-rings.yaml",   "plans/positron-electron.yaml"};
+
+/* More rows than are told one by one. */
+static const char many[] =
+    "plan: 1\nbeam: {particle: electron, kinetic_energy: 400 MeV, current: 10 uA}\n"
+    "target:\n  name: foil\n  layers: [{material: polyethylene, thickness: 0.1 mm}]\n"
+    "  scatterer: C\narms: [{name: A, solid_angle: 2 msr, momentum_bite: ±20 %}]\n"
+    "settings: [{name: K, angle: {from: 30 deg, to: 68 deg, count: 20}, time: 1 h}]\n";
+
+struct read {
+    struct evaluated e;
+    bh_text bytes;
+    bh_report report;
+};
+
+static struct read read_plan(const char *text)
+{
+    struct read r = {.e = evaluate(text)};
+    bh_error err = {.code = BH_OK};
+    const bh_report_request request = {.table = r.e.table, .version = "9.9", .command = "x"};
+    ck_assert_msg(!bh_report_make(&request, &r.report, &err), "%s", err.text);
+    return r;
+}
+
+static struct read read_demo(int i)
+{
+    bh_text bytes = {0};
+    ck_assert(!bh_file_read(demos[i], 1 << 20, &bytes, NULL));
+    struct read r = read_plan(bytes.bytes);
+    r.bytes = bytes;
+    return r;
+}
+
+static void put_away(struct read *r)
+{
+    bh_report_free(&r->report);
+    bh_text_free(&r->bytes);
+    done(&r->e);
+}
+
+static int column_of(const bh_paper_table *t, const char *heading)
+{
+    for (size_t c = 0; c < t->column_count; c++)
+        if (strcmp(t->columns[c].heading, heading) == 0)
+            return (int)c;
+    return -1;
+}
+
+/* The table with a column of this heading whose first column has the other. */
+static const bh_paper_table *table_with(const struct read *r, const char *first,
+                                        const char *heading)
+{
+    for (size_t i = 0; i < r->report.paper.count; i++) {
+        const bh_paper_table *t = r->report.paper.blocks[i].table;
+        if (t && strcmp(t->columns[0].heading, first) == 0 && column_of(t, heading) > 0)
+            return t;
+    }
+    return NULL;
+}
+
+static const char *cell_of(const bh_paper_table *t, size_t row, int column)
+{
+    ck_assert_int_ge(column, 0);
+    return t->cells[row * t->column_count + (size_t)column];
+}
+
+/* NAN for "-". */
+static double number(const bh_paper_table *t, size_t row, const char *heading)
+{
+    double value = NAN;
+    const char *text = cell_of(t, row, column_of(t, heading));
+    if (strcmp(text, "-") != 0)
+        ck_assert_msg(!bh_number_parse(text, NULL, &value), "%s: %s", heading, text);
+    return value;
+}
+
+static double prefix(const bh_paper_table *t, const char *heading)
+{
+    static const struct {
+        const char *unit;
+        double size;
+    } sizes[] = {{"b/sr", 1e-24},  {"mb/sr", 1e-27}, {"ub/sr", 1e-30},
+                 {"nb/sr", 1e-33}, {"pb/sr", 1e-36}, {"fb/sr", 1e-39}};
+    const char *unit = t->columns[column_of(t, heading)].unit;
+    for (int i = 0; i < COUNT(sizes); i++)
+        if (strcmp(sizes[i].unit, unit) == 0)
+            return sizes[i].size;
+    ck_abort_msg("%s in %s", heading, unit);
+}
+
+static void follows(double got, double wanted, double slack, const char *what, size_t row)
+{
+    ck_assert_msg(fabs(got - wanted) <= slack, "%s, row %zu: %.9g, but %.9g is printed", what, row,
+                  got, wanted);
+}
+
+/* Six factors of four digits make 6 x 0.05 %; three of the rate itself 0.5 %. */
+START_TEST(the_rate_is_the_product_that_is_said)
+{
+    struct read r = read_demo(_i);
+    const bh_paper_table *one = table_with(&r, "setting", "luminosity"),
+                         *two = table_with(&r, "setting", "radiative");
+    int compared = 0;
+    ck_assert(one && two && one->row_count == two->row_count);
+    for (size_t i = 0; i < one->row_count; i++) {
+        const double rate = number(one, i, "luminosity") * number(one, i, "sigma") *
+                            prefix(one, "sigma") * number(one, i, "solid") * 1e-3 *
+                            number(two, i, "radiative") * number(two, i, "kept") *
+                            number(two, i, "eff");
+        const double said = number(two, i, "signal");
+        if (!isfinite(rate) || !isfinite(said))
+            continue;
+        follows(rate, said, 4e-3 * said, "signal rate", i);
+        follows(number(one, i, "beam") * number(one, i, "nuclei"), number(one, i, "luminosity"),
+                1.5e-3 * number(one, i, "luminosity"), "luminosity", i);
+        compared++;
+    }
+    ck_assert_int_gt(compared, 0);
+    put_away(&r);
+}
+END_TEST
+
+START_TEST(counts_are_rate_times_live_times_hours)
+{
+    struct read r = read_demo(_i);
+    const bh_paper_table *rates = table_with(&r, "setting", "radiative"),
+                         *time = table_with(&r, "setting", "to goal");
+    time = time ? time : table_with(&r, "setting", "charge");
+    ck_assert(rates && time);
+    for (size_t i = 0; i < rates->row_count; i++) {
+        const double counts = number(rates, i, "signal") * number(rates, i, "live") * 3600.0 *
+                              number(time, i, "hours"),
+                     said = number(rates, i, "counts");
+        if (isfinite(counts))
+            follows(counts, said, 5e-3 * said + 1.0, "counts", i);
+    }
+    put_away(&r);
+}
+END_TEST
+
+/* The last digit of four, for each that is added. */
+static void check_backgrounds(const struct read *r, size_t sums_wanted)
+{
+    const bh_paper_table *t = table_with(r, "setting", "from");
+    double sum = 0.0;
+    size_t sums = 0;
+    for (size_t i = 0; t && i < t->row_count; i++) {
+        const double rate = number(t, i, "rate");
+        ck_assert_double_ge(rate, 0.0);
+        if (strcmp(cell_of(t, i, 1), "background rate") != 0) {
+            sum += rate;
+            continue;
+        }
+        follows(sum, rate, 1.1e-3 * rate, "background", i);
+        sum = 0.0;
+        sums++;
+    }
+    ck_assert_uint_eq(sums, sums_wanted);
+}
+
+static size_t rows_with_background(const struct read *r)
+{
+    size_t n = 0;
+    for (size_t i = 0; i < bh_table_rows(r->e.table, false); i++)
+        n += bh_table_number(r->e.table, false, i, BH_COL_BACKGROUND) > 0.0;
+    return n;
+}
+
+START_TEST(each_background_adds_up)
+{
+    struct read r = read_demo(_i);
+    check_backgrounds(&r, rows_with_background(&r));
+    put_away(&r);
+}
+END_TEST
+
+START_TEST(backgrounds_of_many_rows_are_all_there)
+{
+    struct read r = read_plan(many);
+    ck_assert_uint_eq(rows_with_background(&r), 20);
+    check_backgrounds(&r, 20);
+    put_away(&r);
+}
+END_TEST
+
+static double hours_of(const bh_paper_table *t, const char *line)
+{
+    for (size_t i = 0; i < t->row_count; i++)
+        if (strcmp(cell_of(t, i, 0), line) == 0)
+            return number(t, i, "hours");
+    return 0.0;
+}
+
+START_TEST(hours_add_up)
+{
+    struct read r = read_demo(_i);
+    const bh_plan *plan = bh_table_plan(r.e.table);
+    const bh_paper_table *t = table_with(&r, "time", "hours");
+    const double share = plan->schedule.availability.given ? plan->schedule.availability.value : 1;
+    ck_assert_ptr_nonnull(t);
+    follows(hours_of(t, "data") + hours_of(t, "empty target") + hours_of(t, "tasks"),
+            hours_of(t, "beam hours"), 0.016, "beam hours", 0);
+    follows(hours_of(t, "beam hours") / share + hours_of(t, "changes"), hours_of(t, "scheduled"),
+            0.011 + 0.005 / share, "scheduled", 0);
+    follows(hours_of(t, "scheduled") + hours_of(t, "contingency"), hours_of(t, "asked"), 0.016,
+            "asked", 0);
+    put_away(&r);
+}
+END_TEST
+
+START_TEST(causes_add_up_in_quadrature)
+{
+    struct read r = read_demo(_i);
+    const bh_paper_table *t = table_with(&r, "setting", "together");
+    ck_assert_ptr_nonnull(t);
+    for (size_t i = 0; i < t->row_count; i++) {
+        const double all = number(t, i, "together");
+        if (isfinite(all))
+            follows(hypot(number(t, i, "syst"), number(t, i, "stat")), all, 0.011 * all, "together",
+                    i);
+    }
+    put_away(&r);
+}
+END_TEST
+
+int main(void)
+{
+    TCase *tests = tcase_create("sums");
+    tcase_set_timeout(tests, 120);
+    tcase_add_loop_test(tests, the_rate_is_the_product_that_is_said, 0, COUNT(demos));
+    tcase_add_loop_test(tests, counts_are_rate_times_live_times_hours, 0, COUNT(demos));
+    tcase_add_loop_test(tests, each_background_adds_up, 0, COUNT(demos));
+    tcase_add_test(tests, backgrounds_of_many_rows_are_all_there);
+    tcase_add_loop_test(tests, hours_add_up, 0, COUNT(demos));
+    tcase_add_loop_test(tests, causes_add_up_in_quadrature, 0, COUNT(demos));
+    return run_suite("report/report_sums", tests);
+}
