@@ -6,69 +6,6 @@
 #include "beamhours/schema/reading.h"
 #include "beamhours/screen/model.h"
 
-/* --- title --- */
-
-static void append_quantity(bh_text *into, const bh_value *value, bh_dimension dimension)
-{
-    char written[BH_QUANTITY_SIZE];
-    bh_text_append(into, bh_quantity_text(value->value, dimension, written));
-}
-
-/* electron 855 MeV, 20 uA on 5 cm liquid-hydrogen */
-static void append_summary(const bh_plan *plan, bh_text *into)
-{
-    const bh_beam *beam = &plan->beam;
-    const char *key = beam->energy_key.text ? beam->energy_key.text : "";
-    const bool momentum = strcmp(key, "momentum") == 0;
-    bh_text_appendf(into, "%s ", beam->particle.name);
-    append_quantity(into, &beam->energy_written, momentum ? BH_DIM_MOMENTUM : BH_DIM_ENERGY);
-    bh_text_append(into, strcmp(key, "total_energy") == 0 ? " total, " : ", ");
-    append_quantity(into, beam->rate_written ? &beam->particle_rate : &beam->current,
-                    beam->rate_written ? BH_DIM_RATE : BH_DIM_CURRENT);
-    for (size_t i = 0; plan->target_count && i < plan->targets[0].layer_count; i++) {
-        const bh_layer *layer = &plan->targets[0].layers[i];
-        if (layer->role != BH_ROLE_SAMPLE || layer->material->state == BH_STATE_VACUUM)
-            continue;
-        bh_text_append(into, " on ");
-        append_quantity(into, &layer->thickness, BH_DIM_LENGTH);
-        bh_text_appendf(into, " %s", layer->material->name);
-        break;
-    }
-}
-
-static const char *base_name(const char *path)
-{
-    const char *slash = strrchr(path, '/');
-    return slash && slash[1] ? slash + 1 : path;
-}
-
-static void draw_title(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
-{
-    char right[40];
-    const size_t unsaved = bh_model_unsaved(model);
-    const bh_outcome *o = model->now && model->now->of->plan ? model->now : model->kept;
-    bh_spot spot = {places->title, 0, canvas->columns};
-    if (unsaved)
-        (void)snprintf(right, sizeof right, " %zu unsaved", unsaved);
-    else
-        (void)snprintf(right, sizeof right, " %s",
-                       !model->edit   ? "shown only"
-                       : model->fresh ? "new"
-                                      : "saved");
-    const int used = bh_text_columns(right, canvas->ascii);
-    spot.width -= used;
-    const int name = bh_canvas_put(canvas, spot, BH_LOOK_TITLE, base_name(model->file));
-    bh_text text = {0};
-    if (o && o->of->plan)
-        append_summary(o->of->plan, &text);
-    if (text.bytes)
-        (void)bh_canvas_put(canvas, (bh_spot){places->title, name + 3, spot.width - name - 3},
-                            model->trying ? BH_LOOK_TRIAL : BH_LOOK_PLAIN, text.bytes);
-    bh_text_free(&text);
-    (void)bh_canvas_put(canvas, (bh_spot){places->title, canvas->columns - used, used},
-                        unsaved ? BH_LOOK_WARNING : BH_LOOK_QUIET, right);
-}
-
 /* --- messages --- */
 
 static void say(bh_canvas *canvas, int row, bh_look look, const bh_diag *d)
@@ -299,7 +236,7 @@ void bh_draw(const bh_model *model, bh_canvas *canvas)
     const bh_arrangement places = bh_arrange(model);
     canvas->cursor_row = places.menu;
     if (places.title >= 0)
-        draw_title(model, &places, canvas);
+        bh_draw_title(model, &places, canvas);
     if (places.plan_columns)
         bh_draw_plan(model, &places, canvas);
     for (int r = 0; places.plan_columns && places.table_columns && r < places.body_rows; r++)

@@ -1,20 +1,20 @@
 /* draw_curve.c - cross section, rate or counts against angle, with what the arms accept. */
 #include <math.h>
 #include <stdio.h>
+#include <stdlib.h>
 #include <string.h>
 
-#include "beamhours/base/number.h"
+#include "beamhours/base/ticks.h"
 #include "beamhours/screen/model.h"
 #include "beamhours/units/constants.h"
 
 enum { MOST_WIDE = 240, MOST_HIGH = 64, LABEL = 9 };
 
-/* Where what is drawn belongs on the terminal, and the values at its edges. */
+/* Where what is drawn belongs on the terminal, and what its sides run over. */
 struct plot {
     bh_canvas *canvas;
     int row, column, rows, columns;
-    double x[2], y[2];
-    bool logarithmic;
+    bh_axis x, y;
     unsigned char dots[MOST_HIGH][MOST_WIDE]; /* 2 x 4 dots a cell, as braille numbers them */
 };
 
@@ -22,29 +22,21 @@ static const bh_column_id column_of[] = {BH_COL_POINT_CROSS_SECTION, BH_COL_SIGN
 
 static bool set_range(struct plot *p, const bh_curve *curve, bh_column_id column)
 {
-    p->y[0] = INFINITY;
-    p->y[1] = -INFINITY;
-    p->x[0] = INFINITY;
-    p->x[1] = -INFINITY;
+    double low = INFINITY, high = -INFINITY;
+    p->x = (bh_axis){.from = INFINITY, .to = -INFINITY};
     for (size_t i = 0; i < bh_curve_count(curve); i++) {
         const double y = bh_curve_y(curve, i, column);
         if (!isfinite(y))
             continue;
-        p->y[0] = fmin(p->y[0], y);
-        p->y[1] = fmax(p->y[1], y);
-        p->x[0] = fmin(p->x[0], bh_curve_x(curve, i));
-        p->x[1] = fmax(p->x[1], bh_curve_x(curve, i));
+        low = fmin(low, y);
+        high = fmax(high, y);
+        p->x.from = fmin(p->x.from, bh_curve_x(curve, i));
+        p->x.to = fmax(p->x.to, bh_curve_x(curve, i));
     }
-    p->logarithmic = p->y[0] > 0 && p->y[1] > 3 * p->y[0];
-    return p->x[1] > p->x[0];
-}
-
-static double share(double value, const double edge[2], bool logarithmic)
-{
-    if (!(edge[1] > edge[0]))
-        return 0.5;
-    return logarithmic ? log(value / edge[0]) / log(edge[1] / edge[0])
-                       : (value - edge[0]) / (edge[1] - edge[0]);
+    if (!(p->x.to > p->x.from))
+        return false;
+    p->y = bh_axis_around(low, high, low > 0 && high > 3 * low);
+    return true;
 }
 
 static void dot(struct plot *p, int x, int y)
@@ -54,24 +46,41 @@ static void dot(struct plot *p, int x, int y)
         p->dots[y / 4][x / 2] |= bits[y % 4][x % 2];
 }
 
+/* From one point to the next, so that steep parts have no gaps: of two columns each has the half
+ * of the way up or down that is nearer to it. */
+static void stroke(struct plot *p, const int from[2], const int to[2])
+{
+    const int steps = to[0] > from[0] ? to[0] - from[0] : 1;
+    int before = from[1];
+    for (int k = 1; k <= steps; k++) {
+        const int y = (int)lrint(from[1] + (double)k / steps * (to[1] - from[1]));
+        const int column = from[0] + (to[0] > from[0] ? k : 0), left = column - (to[0] > from[0]);
+        const int towards = y > before ? 1 : -1;
+        for (int at = before + towards; (y - at) * towards > 0; at += towards)
+            dot(p, abs(at - before) < abs(y - at) ? left : column, at);
+        dot(p, column, y);
+        before = y;
+    }
+}
+
 static void trace(struct plot *p, const bh_curve *curve, bh_column_id column)
 {
-    double before = NAN;
-    int last = 0;
+    bool joins = false;
+    int before[2] = {0, 0};
     for (size_t i = 0; i < bh_curve_count(curve); i++) {
         const double value = bh_curve_y(curve, i, column);
         if (!isfinite(value)) {
-            before = NAN;
+            joins = false;
             continue;
         }
-        const int x = (int)lrint(share(bh_curve_x(curve, i), p->x, false) * (2 * p->columns - 1));
-        const double y = (1 - share(value, p->y, p->logarithmic)) * (4 * p->rows - 1);
-        for (int k = isnan(before) ? x : last; k <= x; k++) {
-            const double part = x > last && !isnan(before) ? (double)(k - last) / (x - last) : 1;
-            dot(p, k, (int)lrint(isnan(before) ? y : before + part * (y - before)));
-        }
-        before = y;
-        last = x;
+        const double along = bh_axis_place(&p->x, bh_curve_x(curve, i));
+        const int here[2] = {
+            (int)lrint(along * (2 * p->columns - 1)),
+            (int)lrint((1 - bh_axis_place(&p->y, value)) * (4 * p->rows - 1)),
+        };
+        stroke(p, joins ? before : here, here);
+        memcpy(before, here, sizeof before);
+        joins = true;
     }
 }
 
@@ -93,59 +102,116 @@ static void show_dots(const struct plot *p)
         }
 }
 
-static void label(const struct plot *p, int row, double value)
+/* "2·10⁻³" becomes "2e⁻³" where a canvas makes plain digits of raised ones. */
+static void spell(const char *label, bool ascii, char out[BH_TICK_LABEL])
 {
-    char number[BH_NUMBER_SIZE];
-    if (!isfinite(value))
-        return;
-    if (value > 0 && (value < 0.01 || value >= 1e5))
-        (void)snprintf(number, sizeof number, "%.1e", value);
+    static const char times[] = "\u00b710";
+    const char *power = strstr(label, times);
+    if (ascii && power)
+        (void)snprintf(out, BH_TICK_LABEL, "%.*se%s", (int)(power - label), label,
+                       power + sizeof times - 1);
+    else if (ascii && strncmp(label, "10", 2) == 0 && (unsigned char)label[2] >= 0x80)
+        (void)snprintf(out, BH_TICK_LABEL, "1e%s", label + 2);
     else
-        (void)bh_number_digits(value, 3, number, sizeof number);
-    (void)bh_canvas_put_right(p->canvas, (bh_spot){row, p->column - LABEL, LABEL - 1},
-                              BH_LOOK_QUIET, number);
+        (void)snprintf(out, BH_TICK_LABEL, "%s", label);
 }
 
-/* The in-plane acceptance of one row. */
-static void show_acceptance(const struct plot *p, const bh_setting_arm *arm, bool here)
+/* [1] rows or columns that a label takes along its axis. */
+static double one_row(void *asker, const char *text)
 {
-    const bool ring = arm->arm.shape == BH_SHAPE_RING;
-    const double middle = ring ? 0 : arm->angle.value;
-    const bh_extent *wide = ring ? &arm->arm.ring : &arm->arm.in_plane;
-    const double from = (middle + wide->from) * 180 / BH_PI, to = (middle + wide->to) * 180 / BH_PI;
-    const int first = (int)lrint(share(from, p->x, false) * (p->columns - 1));
-    const int last = (int)lrint(share(to, p->x, false) * (p->columns - 1));
-    for (int c = first < 0 ? 0 : first; c <= last && c < p->columns; c++)
-        (void)bh_canvas_put(p->canvas, (bh_spot){p->row + p->rows, p->column + c, 1},
-                            here ? BH_LOOK_TITLE : BH_LOOK_QUIET, here ? "\u2594" : "-");
+    (void)asker;
+    (void)text;
+    return 1;
 }
 
-/* Those of all rows, below the curve; that of the row in focus stands out. */
+static double its_columns(void *asker, const char *text)
+{
+    const bool *ascii = asker;
+    char shown[BH_TICK_LABEL];
+    spell(text, *ascii, shown);
+    return bh_text_columns(shown, *ascii);
+}
+
+/* A line below the curve from one angle [rad] to another. */
+static void underline(const struct plot *p, double from, double to, bh_look look, const char *with)
+{
+    const double last = p->columns - 1;
+    const int first = (int)lrint(bh_axis_place(&p->x, from / BH_DEGREE) * last);
+    const int end = (int)lrint(bh_axis_place(&p->x, to / BH_DEGREE) * last);
+    for (int c = first < 0 ? 0 : first; c <= end && c < p->columns; c++)
+        (void)bh_canvas_put(p->canvas, (bh_spot){p->row + p->rows, p->column + c, 1}, look, with);
+}
+
+/* The angles in the plane that a row's arm accepts, and those of its bin. */
+static void show_acceptance(const struct plot *p, const bh_setting_arm *arm, int bin, bool here)
+{
+    bh_acceptance a;
+    const bh_acceptance_spec spec = bh_arm_acceptance(arm);
+    if (bh_acceptance_make(&spec, &a, NULL))
+        return;
+    underline(p, fabs(a.whole.in_from), a.whole.in_to, here ? BH_LOOK_TITLE : BH_LOOK_QUIET,
+              here ? "\u2594" : "-");
+    if (bin > 0 && bin <= a.bins)
+        underline(p, fabs(bh_acceptance_edge(&a, bin - 1)), bh_acceptance_edge(&a, bin),
+                  BH_LOOK_FOCUS, "\u2580");
+}
+
+/* Those of all rows; that of the row in focus stands out. */
 static void show_acceptances(const bh_model *model, const struct plot *p)
 {
     const bh_table_view *v = &model->table;
     for (size_t i = 0; i <= v->count; i++) { /* the one in focus last: over the others */
-        const size_t k = i < v->count ? i : v->at;
-        const bh_table_row *r = k < v->count ? &v->rows[k] : NULL;
-        if (r && !r->bin)
-            show_acceptance(p, &bh_table_setting(model, r)->arms[r->now->arm], k == v->at);
+        const bool here = i == v->count;
+        const bh_table_row *r = here ? bh_table_here(model) : &v->rows[i];
+        if (r && (here || !r->bin))
+            show_acceptance(p, &bh_table_setting(model, r)->arms[r->now->arm],
+                            here ? r->now->bin : 0, here);
     }
 }
 
-static void show_axes(const struct plot *p)
+static void show_rising(const struct plot *p)
 {
-    char text[80];
-    label(p, p->row, p->y[1]);
-    label(p, p->row + p->rows - 1, p->y[0]);
+    const bh_tick_room room = {.length = p->rows - 1, .apart = 0.2, .space = 1, .extent = one_row};
+    bh_ticks ticks;
+    char shown[BH_TICK_LABEL];
+    bh_ticks_choose(&p->y, &room, &ticks);
     for (int r = 0; r < p->rows; r++)
         (void)bh_canvas_put(p->canvas, (bh_spot){p->row + r, p->column - 1, 1}, BH_LOOK_QUIET,
                             "\u2502");
-    (void)snprintf(text, sizeof text, "%.4g deg", p->x[0]);
+    for (int i = 0; i < ticks.count; i++) {
+        const double up = bh_axis_place(&p->y, ticks.tick[i].at);
+        const int row = p->row + (int)lrint((1 - up) * (4 * p->rows - 1)) / 4;
+        spell(ticks.tick[i].label, p->canvas->ascii, shown);
+        (void)bh_canvas_put_right(p->canvas, (bh_spot){row, p->column - LABEL, LABEL - 1},
+                                  BH_LOOK_QUIET, shown);
+        (void)bh_canvas_put(p->canvas, (bh_spot){row, p->column - 1, 1}, BH_LOOK_QUIET, "\u2524");
+    }
+}
+
+/* Angles below the acceptances, each at its place. */
+static void show_angles(const struct plot *p)
+{
+    const bh_tick_room room = {.length = p->columns - 1,
+                               .apart = 3,
+                               .space = 6,
+                               .extent = its_columns,
+                               .asker = &p->canvas->ascii};
     const int row = p->row + p->rows + 1;
-    (void)bh_canvas_put(p->canvas, (bh_spot){row, p->column, 20}, BH_LOOK_QUIET, text);
-    (void)snprintf(text, sizeof text, "%.4g deg", p->x[1]);
-    (void)bh_canvas_put_right(p->canvas, (bh_spot){row, p->column, p->columns}, BH_LOOK_QUIET,
-                              text);
+    bh_ticks ticks;
+    char shown[BH_TICK_LABEL];
+    bh_ticks_choose(&p->x, &room, &ticks);
+    (void)bh_canvas_put_right(p->canvas, (bh_spot){row, p->column - LABEL, LABEL - 1},
+                              BH_LOOK_QUIET, "deg");
+    for (int i = 0; i < ticks.count; i++) {
+        spell(ticks.tick[i].label, p->canvas->ascii, shown);
+        const int wide = bh_text_columns(shown, p->canvas->ascii);
+        const double along = bh_axis_place(&p->x, ticks.tick[i].at);
+        int column = (int)lrint(along * (p->columns - 1)) - wide / 2;
+        if (column > p->columns - wide)
+            column = p->columns - wide;
+        (void)bh_canvas_put(p->canvas, (bh_spot){row, p->column + (column < 0 ? 0 : column), wide},
+                            BH_LOOK_QUIET, shown);
+    }
 }
 
 static void draw_title(const bh_arrangement *places, const char *name, bh_canvas *canvas)
@@ -197,6 +263,7 @@ void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canva
     }
     trace(&p, curve, column);
     show_dots(&p);
-    show_axes(&p);
+    show_rising(&p);
+    show_angles(&p);
     show_acceptances(model, &p);
 }

@@ -119,7 +119,7 @@ START_TEST(edits_live_and_saves)
 {
     tty t;
     begin(&t);
-    tty_wait_row(&t, 0, "plan.yaml   electron 900 MeV, 2 uA on 9 cm liquid-hydrogen");
+    tty_wait_row(&t, 0, "plan.yaml   electron 900 MeV to 2.6 GeV, 2 uA to 10 uA on 9 cm");
     char before[32], hours[32];
     cell_of(&t, "low-1", "hours", before);
     look_for(&t, "current");

@@ -7,7 +7,7 @@
 
 #include "beamhours/base/error.h"
 #include "beamhours/base/text.h"
-#include "beamhours/report/ticks.h"
+#include "beamhours/base/ticks.h"
 
 /* Numbers of a figure are in the units written beside its axes. */
 

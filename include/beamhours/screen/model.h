@@ -383,6 +383,7 @@ int bh_table_column_at(const bh_model *model, int column); /* -1: none */
 
 /* --- draw.c and its like --- */
 void bh_draw(const bh_model *model, bh_canvas *canvas);
+void bh_draw_title(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
 void bh_draw_plan(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
 void bh_draw_table(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
 void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);

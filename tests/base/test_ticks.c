@@ -7,7 +7,7 @@
 #include <string.h>
 
 #include "beamhours/base/number.h"
-#include "beamhours/report/ticks.h"
+#include "beamhours/base/ticks.h"
 
 /* Every character of a label is five long, so that rows can be checked by hand. */
 static double extent(void *asker, const char *label)

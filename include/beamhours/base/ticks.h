@@ -1,6 +1,6 @@
 /* ticks.h - where an axis has its ticks, and what stands beside them. */
-#ifndef BH_REPORT_TICKS_H
-#define BH_REPORT_TICKS_H
+#ifndef BH_BASE_TICKS_H
+#define BH_BASE_TICKS_H
 
 #include <stdbool.h>
 

@@ -1,5 +1,5 @@
 /* ticks.c - steps of 1, 2, 5, from fine to coarse, until the labels have room. */
-#include "beamhours/report/ticks.h"
+#include "beamhours/base/ticks.h"
 
 #include <math.h>
 #include <stdio.h>
