@@ -113,7 +113,8 @@ static bh_code fill_setting(const bh_making *making, const bh_setting_draft *p, 
 {
     const size_t size = strlen(p->name) + 24;
     char *name = bh_arena_take(making->reading.arena, 1, size);
-    bh_setting_arm *rows = bh_arena_take(making->reading.arena, p->aim_count + 2, sizeof *rows);
+    const size_t joint = p->raw.coincidence.section.given ? 1 : 0;
+    bh_setting_arm *rows = bh_arena_take(making->reading.arena, p->aim_count + joint, sizeof *rows);
     if (!name || !rows)
         return BH_ENOMEM;
     if (p->swept)

@@ -3,9 +3,11 @@
 #include <stddef.h>
 #include <string.h>
 
+#include "beamhours/base/number.h"
 #include "beamhours/base/sentences.h"
 #include "beamhours/schema/ends.h"
 #include "beamhours/schema/reading.h"
+#include "beamhours/units/unit.h"
 
 /* A sweep longer than the settings of a whole plan is refused before memory is taken. */
 enum { MOST_VALUES = 10000 };
@@ -105,14 +107,64 @@ static bool complete(const struct steps *s)
            !isnan(s->step.given ? s->step.value : s->count.value);
 }
 
-/* Steps written in decimals should stay decimals: 40 deg, not 39.99999999999999 deg. */
+/* The unit behind a plain number; false where it is not that simple. */
+static bool unit_of(const char *text, bh_dimension dimension, bh_unit *unit)
+{
+    char plain[BH_PLAIN_SIZE], odd[BH_PLAIN_SIZE];
+    const char *end = plain;
+    double number;
+    if (!bh_plain_text(text, plain) || bh_number_parse(plain, &end, &number))
+        return false;
+    end += *end == ' ';
+    return bh_unit_parse(end, end + strlen(end), unit, odd) && bh_unit_convert(unit, dimension) &&
+           !unit->celsius;
+}
+
+/* Digits that a step written as a decimal may have, and how near a sum of steps comes to it. */
+enum { STEP_DIGITS = 7 };
+static const double step_near = 1e-13;
+
+/* The decimal of few digits that `value` is but for rounding, in the unit of the sweep's ends. */
+static double snap_in(double value, const bh_unit *unit)
+{
+    char text[BH_NUMBER_SIZE];
+    bh_unit plain = *unit;
+    double near;
+    plain.decade = 0; /* digits are the same in every power of ten */
+    const double quotient = value / unit->factor;
+    if (!(fabs(quotient) > 0))
+        return value;
+    const double digits = quotient * pow(10, STEP_DIGITS - 1 - floor(log10(fabs(quotient))));
+    if (!(fabs(digits - nearbyint(digits)) < 1e-5)) /* far from step_near of 10^7 */
+        return value;
+    const size_t n = bh_number_digits(quotient, STEP_DIGITS, text, sizeof text);
+    if (bh_number_in(text, text + n, &plain, &near))
+        return value;
+    return fabs(near - value) <= step_near * fabs(value) ? near : value;
+}
+
+/* The same where the ends say no plain unit: in the one that reads best. */
 static double snap(double value, bh_dimension dimension)
 {
     char text[BH_QUANTITY_SIZE];
     bh_quantity near;
     if (bh_quantity_parse(bh_quantity_text(value, dimension, text), dimension, &near, NULL))
         return value;
-    return fabs(near.value - value) <= 1e-13 * fabs(value) ? near.value : value;
+    return fabs(near.value - value) <= step_near * fabs(value) ? near.value : value;
+}
+
+/* Steps written in decimals should stay decimals: 40 deg, not 39.99999999999999 deg. */
+static void place_steps(bh_written written, const struct steps *s, size_t n, bh_quantity *values)
+{
+    const bh_dimension dimension = written.key->dimension;
+    bh_unit unit;
+    const bool plain = unit_of(bh_node_get(written.node, "from")->text, dimension, &unit);
+    for (size_t i = 0; i + 1 < n; i++) {
+        const double part = (double)i / (double)(n - 1);
+        const double value = s->from.value + (s->to.value - s->from.value) * part;
+        values[i].value = plain ? snap_in(value, &unit) : snap(value, dimension);
+    }
+    values[n - 1].value = s->to.value;
 }
 
 static bh_code fill(const bh_reading *reading, bh_written written, const struct steps *s,
@@ -128,12 +180,11 @@ static bh_code fill(const bh_reading *reading, bh_written written, const struct 
     if (make_room(reading, n, out, &values))
         return BH_ENOMEM;
     out->count = n;
+    place_steps(written, s, n, values);
     for (size_t i = 0; i < n; i++) {
         const double part = (double)i / (double)(n - 1);
         values[i] = (bh_quantity){
-            .value = i + 1 == n ? s->to.value
-                                : snap(s->from.value + (s->to.value - s->from.value) * part,
-                                       written.key->dimension),
+            .value = values[i].value,
             .uncertainty = s->from.uncertainty * (1.0 - part) + s->to.uncertainty * part,
             .uncertain = s->from.uncertainty > 0.0 || s->to.uncertainty > 0.0,
             .per_u = per_u,

@@ -4,18 +4,28 @@
 
 #include "beamhours/screen/asking.h"
 
+/* Puts number `i` of the last readings, or another in its place, before the others. */
+static void put_first(bh_reading_of **last, size_t i, bh_reading_of *reading)
+{
+    memmove(last + 1, last, i * sizeof(bh_reading_of *));
+    last[0] = reading;
+}
+
 bh_reading_of *bh_worker_read(bh_worker *worker, int which, const char *bytes, size_t length)
 {
-    bh_reading_of *last = worker->last[which];
-    if (last && last->length == length && memcmp(last->bytes, bytes, length) == 0)
-        return bh_reading_of_share(last);
+    bh_reading_of **last = worker->last[which];
+    for (size_t i = 0; i < BH_READINGS_KEPT && last[i]; i++)
+        if (last[i]->length == length && memcmp(last[i]->bytes, bytes, length) == 0) {
+            put_first(last, i, last[i]);
+            return bh_reading_of_share(last[0]);
+        }
     bh_reading_of *made = bh_reading_of_new(bytes, length);
     if (!made)
         return NULL;
     made->plan = bh_plan_read(made->bytes, length, worker->name, NULL, 0, worker->libraries[which],
                               made->said);
-    bh_reading_of_leave(last);
-    worker->last[which] = bh_reading_of_share(made);
+    bh_reading_of_leave(last[BH_READINGS_KEPT - 1]);
+    put_first(last, BH_READINGS_KEPT - 1, bh_reading_of_share(made));
     return made;
 }
 

@@ -8,15 +8,11 @@
 
 void bh_change_done(bh_model *model)
 {
-    size_t length = 0;
-    const char *bytes = bh_edit_bytes(model->edit, &length);
-    char why[sizeof model->why];
     bh_plan_lines_make(model);
     const size_t done = bh_edit_done(model->edit);
     const bh_edit_step *step = done ? bh_edit_step_at(model->edit, done - 1) : NULL;
     if (step && step->path[0])
         bh_plan_go(model, step->path);
-    model->errors = bh_model_errors(model, bytes, length, why, sizeof why);
     model->curve_due = true;
     bh_table_refresh(model);
 }

@@ -25,8 +25,6 @@ bool bh_model_open(bh_model *model, const char *bytes, size_t length, const char
     model->curve = NULL;
     model->trying = model->rescued = false;
     model->job_due = model->curve_due = true;
-    char why[sizeof model->why];
-    model->errors = bh_model_errors(model, bytes, length, why, sizeof why);
     bh_plan_lines_make(model);
     return model->said && !model->unread.failed;
 }

@@ -23,9 +23,21 @@ static void first_error(const bh_diags *diags, char *why, size_t size)
     copy(why, size, "");
 }
 
-size_t bh_model_errors(const bh_model *model, const char *bytes, size_t length, char *why,
-                       size_t size)
+static bool is_of(const bh_outcome *o, const char *bytes, size_t length)
 {
+    return o && o->of->length == length && memcmp(o->of->bytes, bytes, length) == 0;
+}
+
+/* How many errors the text has as a plan; the first goes to `why`.  What the worker read is not
+ * read again. */
+static size_t errors_of(const bh_model *model, const char *bytes, size_t length, char *why,
+                        size_t size)
+{
+    const bh_outcome *o = is_of(model->now, bytes, length) ? model->now : model->kept;
+    if (is_of(o, bytes, length)) {
+        first_error(o->of->said, why, size);
+        return bh_diags_errors(o->of->said);
+    }
     bh_diags *diags = bh_diags_new();
     if (!diags)
         return 0;
@@ -41,7 +53,7 @@ static bool is_of_text(const bh_model *model, const bh_outcome *o)
 {
     size_t length = 0;
     const char *bytes = bh_edit_bytes(model->edit, &length);
-    return o && o->complete && o->of->length == length && memcmp(o->of->bytes, bytes, length) == 0;
+    return is_of(o, bytes, length) && o->complete;
 }
 
 static void stop_trying(bh_model *model)
@@ -124,6 +136,11 @@ void bh_value_attempt(bh_model *model, const char *text)
         stop_trying(model);
         return;
     }
+    if (model->trying && trial.length == model->trial.length &&
+        memcmp(trial.bytes, model->trial.bytes, trial.length) == 0) {
+        bh_text_free(&trial); /* it is being evaluated, or was */
+        return;
+    }
     bh_text_free(&model->trial);
     model->trial = trial;
     model->trying = true;
@@ -179,18 +196,20 @@ void bh_value_leave(bh_model *model)
 /* A value that makes the plan unreadable, or less readable than it was, is not kept. */
 static bool spoils(bh_model *model)
 {
-    char why[sizeof model->why];
+    char why[sizeof model->why], other[sizeof model->why];
+    const bh_text *trial = &model->trial;
+    size_t length = 0;
+    const char *bytes = bh_edit_bytes(model->edit, &length);
     if (!model->trying)
         return model->why[0] != '\0';
-    const size_t errors =
-        bh_model_errors(model, model->trial.bytes, model->trial.length, why, sizeof why);
-    if (errors <= model->errors)
+    const size_t errors = errors_of(model, trial->bytes, trial->length, why, sizeof why);
+    if (errors == 0 || errors <= errors_of(model, bytes, length, other, sizeof other))
         return false;
     copy(model->why, sizeof model->why, why);
     return true;
 }
 
-/* What the worker found for the trial is that of the text from now on. */
+/* What the worker found for the trial, or is about to find, is that of the text from now on. */
 static void promote(bh_model *model)
 {
     model->trying = false;
@@ -198,8 +217,6 @@ static void promote(bh_model *model)
     if (is_of_text(model, model->now)) {
         bh_outcome_leave(model->kept);
         model->kept = bh_outcome_share(model->now);
-    } else {
-        model->job_due = true;
     }
 }
 

@@ -291,7 +291,8 @@ static void free_all(bh_worker *w)
     for (size_t i = 0; i < w->answer_count; i++)
         bh_reply_free(w->answers[i]);
     for (int i = 0; i < 2; i++) {
-        bh_reading_of_leave(w->last[i]);
+        for (size_t k = 0; k < BH_READINGS_KEPT; k++)
+            bh_reading_of_leave(w->last[i][k]);
         if (w->wake[i] >= 0)
             (void)close(w->wake[i]);
     }

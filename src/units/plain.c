@@ -61,6 +61,12 @@ static char superscript(const char *text, size_t *length)
 static size_t next_form(const char *text, bool *raised, char plain[5])
 {
     size_t length = 0;
+    if (text[0] > ' ' && text[0] < 0x7f && text[0] != '+') { /* what most are: nothing to look up */
+        *raised = false;
+        plain[0] = text[0];
+        plain[1] = '\0';
+        return 1;
+    }
     const char digit = superscript(text, &length);
     if (digit) {
         const char *mark = *raised ? "" : "^";

@@ -210,6 +210,49 @@ START_TEST(swept)
 }
 END_TEST
 
+/* Steps that are decimals in the unit of the sweep are these decimals to the last bit, as if each
+ * had been written; others stay where the ends put them. */
+static const struct {
+    const char *sweep;
+    size_t place;
+    const char *written;
+} steps[] = {
+    {"angle: {from: 10 deg, to: 40.7 deg, count: 308}", 123, "22.3 deg"},
+    {"angle: {from: 10 deg, to: 40.7 deg, count: 308}", 306, "40.6 deg"},
+    {"angle: {from: 100 mrad, to: 0.4 rad, step: 1 mrad}", 37, "137 mrad"},
+    {"angle: {from: 0.1\u00B0, to: 0.7\u00B0, step: 0.1\u00B0}", 2, "0.3 deg"},
+    {"angle: {from: 10 \u00B1 0.1 deg, to: 11 \u00B1 0.1 deg, step: 0.1 deg}", 3, "10.3 deg"},
+    {"angle: {from: -1 deg, to: 1 deg, step: 0.2 deg}", 5, "0 deg"},
+    {"energy: {from: 0.1 GeV, to: 1.3 GeV, step: 0.1 GeV}", 2, "300 MeV"},
+    {"energy: {from: 100 MeV/u, to: 101 MeV/u, step: 0.1 MeV/u}", 7, "100.7 MeV/u"},
+};
+
+START_TEST(steps_are_decimals)
+{
+    struct reads r;
+    bh_quantity wanted;
+    read_it(&r, steps[_i].sweep, false);
+    const bool angle = r.w.angle.given;
+    const bh_sweep *s = angle ? &r.w.angle : &r.w.energy;
+    ck_assert(!bh_quantity_parse(steps[_i].written, angle ? BH_DIM_ANGLE : BH_DIM_ENERGY_OR_PER_U,
+                                 &wanted, NULL));
+    ck_assert_uint_gt(s->count, steps[_i].place);
+    ck_assert_double_eq(s->values[steps[_i].place].value, wanted.value);
+    done(&r);
+}
+END_TEST
+
+START_TEST(steps_between_decimals)
+{
+    struct reads r;
+    read_it(&r, "angle: {from: 10 deg, to: 11 deg, count: 4}", false);
+    const double deg = 3.14159265358979323846 / 180.0;
+    ck_assert_uint_eq(r.w.angle.count, 4);
+    ck_assert_double_eq_tol(r.w.angle.values[1].value, (10 + 1 / 3.0) * deg, 1e-16);
+    done(&r);
+}
+END_TEST
+
 /* --- complaints: line:column key: words --- */
 
 static const struct {
@@ -468,6 +511,8 @@ int main(void)
     tcase_add_test(tests, values);
     tcase_add_test(tests, absent_keys);
     tcase_add_loop_test(tests, swept, 0, COUNT(sweeps));
+    tcase_add_loop_test(tests, steps_are_decimals, 0, COUNT(steps));
+    tcase_add_test(tests, steps_between_decimals);
     tcase_add_loop_test(tests, complains, 0, COUNT(bad));
     tcase_add_test(tests, all_at_once);
     tcase_add_test(tests, meant_keys_are_not_missing);

@@ -124,6 +124,37 @@ START_TEST(no_key_waits)
 }
 END_TEST
 
+/* What was computed while the value was typed is the table once it is kept: at once, no key waits.
+ */
+START_TEST(kept_as_shown)
+{
+    char path[] = "/tmp/beamhours-slow-XXXXXX";
+    const int file = mkstemp(path);
+    ck_assert_int_ge(file, 0);
+    close(file);
+    bh_text screen = {0};
+    atomic_store(&slow, false);
+    bh_desk *desk = open_desk(path);
+    ck_assert(driven_settle(desk) && driven_press(desk, "lenergy<Escape>860 MeV"));
+    ck_assert(driven_settle(desk));
+    driven_draw(desk, &screen);
+    ck_assert_ptr_nonnull(strstr(screen.bytes, "PROVISIONAL"));
+    const size_t evaluated = bh_desk_evaluated(desk);
+    atomic_store(&slow, true);
+    (void)press(desk, "<Enter>", &screen);
+    ck_assert_ptr_null(strstr(screen.bytes, "PROVISIONAL"));
+    ck_assert_ptr_null(strstr(screen.bytes, "computing"));
+    ck_assert_ptr_nonnull(strstr(screen.bytes, "1 unsaved"));
+    ck_assert(bh_desk_settled(desk));
+    atomic_store(&slow, false);
+    ck_assert(driven_settle(desk));
+    ck_assert_uint_eq(bh_desk_evaluated(desk), evaluated);
+    bh_desk_close(desk);
+    bh_text_free(&screen);
+    unlink(path);
+}
+END_TEST
+
 /* Closing does not wait for a long computation either. */
 START_TEST(leaves_at_once)
 {
@@ -221,6 +252,7 @@ int main(void)
     TCase *tests = tcase_create("slow");
     tcase_set_timeout(tests, 300);
     tcase_add_test(tests, no_key_waits);
+    tcase_add_test(tests, kept_as_shown);
     tcase_add_test(tests, leaves_at_once);
     tcase_add_loop_test(tests, curves_give_way, 0, 3);
     return run_suite("screen/slow", tests);

@@ -23,7 +23,7 @@ typedef struct {
     char *bytes, *setting, *arm, *by;
 } bh_own_query;
 
-enum { BH_MOST_ANSWERS = 16 };
+enum { BH_MOST_ANSWERS = 16, BH_READINGS_KEPT = 4 };
 
 struct bh_worker {
     pthread_mutex_t lock;
@@ -46,11 +46,11 @@ struct bh_worker {
     size_t answer_count;
     bh_results *results; /* of the first thread */
     bh_workspace *workspace;
-    bh_reading_of *last[2];
+    bh_reading_of *last[2][BH_READINGS_KEPT]; /* of each thread, the newest first */
 };
 
-/* The text read by thread `which`, again only where it is another one than last time: with one
- * more user.  NULL without memory. */
+/* The text read by thread `which`, again only where it is none of the last ones: with one more
+ * user.  NULL without memory. */
 bh_reading_of *bh_worker_read(bh_worker *worker, int which, const char *bytes, size_t length);
 
 /* Makes whoever waits for the worker look. */

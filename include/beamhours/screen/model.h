@@ -205,7 +205,6 @@ typedef struct {
     char was[160];             /* the old value */
     bh_text trial;
     char why[512]; /* what is wrong with what is typed; else empty */
-    size_t errors; /* of the plan as it is kept */
 
     bh_sheet sheet;
     bh_chooser chooser;
@@ -260,10 +259,6 @@ size_t bh_model_opened(const bh_model *model, size_t *settings, size_t room);
 
 /* Is the table that of the text? */
 bool bh_model_current(const bh_model *model);
-
-/* The first error of reading `bytes` as a plan goes to `why`; returns how many there are. */
-size_t bh_model_errors(const bh_model *model, const char *bytes, size_t length, char *why,
-                       size_t size);
 
 /* The newest outcome with totals and cautions, or NULL. */
 const bh_outcome *bh_model_concluded(const bh_model *model);
