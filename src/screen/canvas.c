@@ -163,6 +163,14 @@ int bh_canvas_put(bh_canvas *canvas, bh_spot spot, bh_look look, const char *tex
     return used;
 }
 
+void bh_canvas_put_cut(bh_canvas *canvas, bh_spot spot, bh_look look, const char *text)
+{
+    (void)bh_canvas_put(canvas, spot, look, text);
+    if (spot.width > 0 && bh_text_columns(text, canvas->ascii) > spot.width)
+        (void)bh_canvas_put(canvas, (bh_spot){spot.row, spot.column + spot.width - 1, 1},
+                            BH_LOOK_QUIET, "\u2026");
+}
+
 int bh_canvas_put_right(bh_canvas *canvas, bh_spot spot, bh_look look, const char *text)
 {
     const int columns = bh_text_columns(text, canvas->ascii);

@@ -25,10 +25,7 @@ static void draw_value(const bh_model *model, const bh_plan_line *line, bh_spot 
     bh_text value = {0};
     bh_plan_value(model, line, &value);
     if (value.bytes)
-        (void)bh_canvas_put(canvas, spot, BH_LOOK_PLAIN, value.bytes);
-    if (value.bytes && spot.width > 0 && bh_text_columns(value.bytes, canvas->ascii) > spot.width)
-        (void)bh_canvas_put(canvas, (bh_spot){spot.row, spot.column + spot.width - 1, 1},
-                            BH_LOOK_QUIET, "\u2026");
+        bh_canvas_put_cut(canvas, spot, BH_LOOK_PLAIN, value.bytes);
     bh_text_free(&value);
 }
 

@@ -122,14 +122,9 @@ void bh_draw_title(const bh_model *model, const bh_arrangement *places, bh_canva
     bh_text text = {0};
     if (o && o->of->plan)
         append_summary(o->of->plan, &text);
-    if (text.bytes) {
-        const bh_spot rest = {places->title, name + 3, spot.width - name - 3};
-        (void)bh_canvas_put(canvas, rest, model->trying ? BH_LOOK_TRIAL : BH_LOOK_PLAIN,
-                            text.bytes);
-        if (bh_text_columns(text.bytes, canvas->ascii) > rest.width && rest.width > 1)
-            (void)bh_canvas_put(canvas, (bh_spot){rest.row, rest.column + rest.width - 1, 1},
-                                BH_LOOK_QUIET, "\u2026");
-    }
+    if (text.bytes)
+        bh_canvas_put_cut(canvas, (bh_spot){places->title, name + 3, spot.width - name - 3},
+                          model->trying ? BH_LOOK_TRIAL : BH_LOOK_PLAIN, text.bytes);
     bh_text_free(&text);
     (void)bh_canvas_put(canvas, (bh_spot){places->title, canvas->columns - used, used},
                         unsaved ? BH_LOOK_WARNING : BH_LOOK_QUIET, right);

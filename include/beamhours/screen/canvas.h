@@ -54,6 +54,9 @@ typedef struct {
  * Returns the columns used. */
 int bh_canvas_put(bh_canvas *canvas, bh_spot spot, bh_look look, const char *text);
 
+/* The same; what does not fit ends in an ellipsis. */
+void bh_canvas_put_cut(bh_canvas *canvas, bh_spot spot, bh_look look, const char *text);
+
 /* The same at the right end of the spot. */
 int bh_canvas_put_right(bh_canvas *canvas, bh_spot spot, bh_look look, const char *text);
 
