@@ -49,19 +49,6 @@ static bh_code set_paths(bh_yielder *yielder, const bh_arm_pair *pair, bh_error 
     return code;
 }
 
-static void set_seen(bh_yielder *yielder, const bh_struck_list *list)
-{
-    for (size_t n = 0; n < list->count; n++)
-        yielder->seen[n] = (bh_seen_numbers){.reached = 0};
-    for (size_t i = 0; i < list->presence_count; i++) {
-        const bh_presence *p = &list->presences[i];
-        bh_seen_numbers *s = &yielder->seen[p->nuclide];
-        s->of[p->origin] += p->number * yielder->paths[0][p->layer];
-        for (int k = 0; k < 2 && p->origin == BH_ORIGIN_SIGNAL; k++)
-            s->moved[k] += p->number * yielder->paths[1 + k][p->layer];
-    }
-}
-
 /* --- nuclides --- */
 
 struct pairing {
@@ -237,7 +224,7 @@ bh_code bh_pair_make(bh_yielder *yielder, const bh_arm_pair *pair, bh_yield *yie
         code = set_paths(yielder, pair, err);
     if (code)
         return code;
-    set_seen(yielder, list);
+    bh_seen_set(yielder, list);
     for (size_t n = 0; !code && !yield->view.blocked && n < list->count; n++)
         code = add_nuclide(&p, n, err);
     for (size_t n = 0; n < list->count; n++)

@@ -30,12 +30,8 @@ bh_code bh_yielder_prepare(bh_yielder *yielder, bh_arena *arena, bh_error *err)
 }
 
 /* Adds up over the layers what the arm sees of each nuclide. */
-static bh_code set_seen(bh_yielder *yielder, const bh_view *view, const bh_struck_list *list,
-                        const bh_way *way, bh_error *err)
+void bh_seen_set(bh_yielder *yielder, const bh_struck_list *list)
 {
-    const bh_code code = bh_view_paths(yielder, view, list->target, way, err);
-    if (code)
-        return code;
     for (size_t n = 0; n < list->count; n++)
         yielder->seen[n] = (bh_seen_numbers){.reached = 0};
     for (size_t i = 0; i < list->presence_count; i++) {
@@ -45,6 +41,15 @@ static bh_code set_seen(bh_yielder *yielder, const bh_view *view, const bh_struc
         for (int k = 0; k < 2 && p->origin == BH_ORIGIN_SIGNAL; k++)
             s->moved[k] += p->number * yielder->paths[1 + k][p->layer];
     }
+}
+
+static bh_code set_seen(bh_yielder *yielder, const bh_view *view, const bh_struck_list *list,
+                        const bh_way *way, bh_error *err)
+{
+    const bh_code code = bh_view_paths(yielder, view, list->target, way, err);
+    if (code)
+        return code;
+    bh_seen_set(yielder, list);
     return BH_OK;
 }
 

@@ -135,6 +135,10 @@ bh_radiated_request bh_view_radiated(const bh_yielder *yielder, const bh_view *v
 /* Fills the parts of `yield`, whose view is made and whose `part` has room for view.parts. */
 BH_CHECKED bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err);
 
+/* Adds up in yielder->seen [1/cm2] what of each nuclide stands in the layers, by the paths that
+ * yielder->paths has. */
+void bh_seen_set(bh_yielder *yielder, const bh_struck_list *list);
+
 /* Adds the events on nuclei of one origin.  While sums are made, cross_section, kept and radiative
  * hold nuclei times their integrals [ub/cm2], the sensitivities differences of such. */
 void bh_part_add(bh_part *to, const bh_channel_sum *sum, const bh_seen_numbers *seen,

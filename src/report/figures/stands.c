@@ -74,28 +74,6 @@ static bool kept_alike(const bh_stand_origin *o, const bh_setting *setting,
            event_at(o->setting, recoil, o->arm->angle.value, &f) && near(e.q2, f.q2);
 }
 
-static bool make_acceptance(const bh_setting_arm *arm, bh_acceptance *out)
-{
-    const bh_arm *a = &arm->arm;
-    const bh_acceptance_spec spec = {
-        .shape = a->shape == BH_SHAPE_RING        ? BH_ACCEPTANCE_RING
-                 : a->shape == BH_SHAPE_RECTANGLE ? BH_ACCEPTANCE_RECTANGLE
-                                                  : BH_ACCEPTANCE_POINT,
-        .angle = arm->angle.value,
-        .in_plane_from = a->in_plane.from,
-        .in_plane_to = a->in_plane.to,
-        .out_of_plane_from = a->out_of_plane.from,
-        .out_of_plane_to = a->out_of_plane.to,
-        .ring_from = a->ring.from,
-        .ring_to = a->ring.to,
-        .azimuth = a->azimuth.value,
-        .solid_angle = a->solid_angle.value,
-        .bins = a->bins,
-        .edges = a->edges,
-    };
-    return !bh_acceptance_make(&spec, out, NULL);
-}
-
 /* Extent and edges of the acceptance; its angles stay in the plane of beam and arm, where the edges
  * are lab angles too. */
 static void cover(const bh_stand_origin *o, const bh_setting *setting, const bh_setting_arm *arm,
@@ -103,7 +81,8 @@ static void cover(const bh_stand_origin *o, const bh_setting *setting, const bh_
 {
     bh_acceptance acceptance;
     const bool recoil = arm->arm.detects == BH_DETECTS_RECOIL;
-    if (arm->arm.shape == BH_SHAPE_POINT || !make_acceptance(arm, &acceptance))
+    const bh_acceptance_spec spec = bh_arm_acceptance(arm);
+    if (arm->arm.shape == BH_SHAPE_POINT || bh_acceptance_make(&spec, &acceptance, NULL))
         return;
     const bh_acceptance_part *whole = &acceptance.whole;
     const double a = along(o->against, setting, recoil, fabs(whole->in_from)),
