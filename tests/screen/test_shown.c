@@ -10,6 +10,7 @@
 #include <unistd.h>
 
 #include "beamhours/base/file.h"
+#include "beamhours/screen/model.h"
 #include "driven.h"
 
 static const struct {
@@ -180,10 +181,32 @@ START_TEST(as_in_docs)
 }
 END_TEST
 
+/* docs/screen.md lists each key with the words of the help. */
+START_TEST(keys_are_documented)
+{
+    static const char *const where[] = {"", "plan", "table", "both"};
+    bh_text page = {0};
+    bh_error err = {.code = BH_OK};
+    char row[160];
+    size_t rows = 0, actions = 0;
+    ck_assert_msg(!bh_file_read("docs/screen.md", 1 << 20, &page, &err), "%s", err.text);
+    for (; bh_action_at(actions); actions++) {
+        const bh_action *a = bh_action_at(actions);
+        snprintf(row, sizeof row, "\n| `%s` | %s | %s |\n", a->key, where[a->where], a->help);
+        ck_assert_msg(strstr(page.bytes, row) != NULL, "no row in docs/screen.md:%s", row);
+    }
+    for (const char *at = page.bytes; (at = strstr(at, "\n| `")) != NULL; at++)
+        rows++;
+    ck_assert_uint_eq(rows, actions);
+    bh_text_free(&page);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("shown");
     tcase_set_timeout(tests, 300);
     tcase_add_loop_test(tests, as_in_docs, 0, COUNT(screens));
+    tcase_add_test(tests, keys_are_documented);
     return run_suite("screen/shown", tests);
 }
