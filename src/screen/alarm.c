@@ -8,7 +8,7 @@
 
 /* What signal handlers see: the one place of the program with writable data of its own. */
 static struct {
-    volatile sig_atomic_t resized, ended, resumed;
+    volatile sig_atomic_t resized, ended, stopping, resumed;
     volatile sig_atomic_t screen_on;
     bh_rescue *rescue;
     const char *mark; /* the file that says the plan is open */
@@ -26,6 +26,12 @@ static void on_resize(int number)
 static void on_end(int number)
 {
     alarm_bell.ended = number;
+}
+
+static void on_stop(int number)
+{
+    (void)number;
+    alarm_bell.stopping = 1;
 }
 
 static void on_resume(int number)
@@ -59,6 +65,8 @@ void bh_alarm_catch(void)
     struct sigaction act = {.sa_handler = on_resize};
     (void)sigemptyset(&act.sa_mask);
     (void)sigaction(SIGWINCH, &act, NULL);
+    act.sa_handler = on_stop;
+    (void)sigaction(SIGTSTP, &act, NULL);
     act.sa_handler = on_resume;
     (void)sigaction(SIGCONT, &act, NULL);
     act.sa_handler = on_end;
@@ -76,6 +84,7 @@ void bh_alarm_block(bool on, sigset_t *before)
     sigset_t set;
     (void)sigemptyset(&set);
     (void)sigaddset(&set, SIGWINCH);
+    (void)sigaddset(&set, SIGTSTP);
     (void)sigaddset(&set, SIGCONT);
     (void)sigaddset(&set, SIGINT);
     (void)sigaddset(&set, SIGTERM);
@@ -115,7 +124,7 @@ void bh_alarm_keep(bh_rescue *rescue, const char *mark)
 
 void bh_alarm_clear(void)
 {
-    alarm_bell.resized = alarm_bell.ended = alarm_bell.resumed = 0;
+    alarm_bell.resized = alarm_bell.ended = alarm_bell.stopping = alarm_bell.resumed = 0;
 }
 
 bool bh_alarm_resized(void)
@@ -123,6 +132,32 @@ bool bh_alarm_resized(void)
     const bool yes = alarm_bell.resized;
     alarm_bell.resized = 0;
     return yes;
+}
+
+bool bh_alarm_stopping(void)
+{
+    const bool yes = alarm_bell.stopping;
+    alarm_bell.stopping = 0;
+    return yes;
+}
+
+/* The signal is held back while it is sent, so that the program stops in one place.  A job that no
+ * shell looks after is not stopped by it: then no SIGCONT waits behind. */
+bool bh_alarm_stop(bool whole)
+{
+    const struct sigaction usual = {.sa_handler = SIG_DFL};
+    struct sigaction ours;
+    sigset_t stop, before, waiting;
+    (void)sigemptyset(&stop);
+    (void)sigaddset(&stop, SIGTSTP);
+    (void)sigprocmask(SIG_BLOCK, &stop, &before);
+    (void)sigaction(SIGTSTP, &usual, &ours);
+    (void)kill(whole ? 0 : getpid(), SIGTSTP);
+    (void)sigprocmask(SIG_UNBLOCK, &stop, NULL);
+    (void)sigpending(&waiting);
+    (void)sigaction(SIGTSTP, &ours, NULL);
+    (void)sigprocmask(SIG_SETMASK, &before, NULL);
+    return sigismember(&waiting, SIGCONT) == 1;
 }
 
 bool bh_alarm_resumed(void)

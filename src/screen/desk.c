@@ -5,13 +5,11 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "beamhours/screen/inquiry.h"
 #include "beamhours/screen/keeper.h"
 #include "beamhours/screen/model.h"
 
 enum { MOST_VIEW = 256, MOST_OPEN = 256 };
-
-/* Questions that may take long are asked once typing pauses. */
-static const double pause_first = 0.12; /* s */
 
 struct bh_desk {
     bh_model model;
@@ -20,7 +18,6 @@ struct bh_desk {
     bh_desk_start start;
     bool over, suspends;
     bool drop;      /* unsaved work, when it is over */
-    bool solving;   /* a question of what it would take was asked */
     double pressed; /* [s] when a key was last pressed */
 };
 
@@ -79,7 +76,10 @@ void bh_desk_close(bh_desk *desk)
 {
     if (!desk)
         return;
-    bh_keeper_close(&desk->keeper, desk->over && desk->drop);
+    const bool drop = desk->over && desk->drop;
+    if (!drop)
+        bh_keeper_tell(&desk->keeper, &desk->model, 0);
+    bh_keeper_close(&desk->keeper, drop);
     bh_model_close(&desk->model); /* outcomes speak of materials of the worker */
     bh_worker_free(desk->worker);
     bh_material_library_free(desk->model.library);
@@ -193,22 +193,11 @@ void bh_desk_resize(bh_desk *desk, int rows, int columns)
     bh_model_resize(&desk->model, rows, columns);
 }
 
-/* The curve that is on its way is asked for again once the table is there. */
-static void put_off_curve(bh_desk *d)
-{
-    bh_model *m = &d->model;
-    if (!m->curve_asked || (m->curve && m->curve->number == m->curve_asked))
-        return;
-    bh_worker_withdraw(d->worker, BH_ASK_CURVE);
-    m->curve_asked = 0;
-    m->curve_due = true;
-}
-
 static void begin_job(bh_desk *d)
 {
     size_t first[MOST_VIEW], opened[MOST_OPEN];
     bh_job job = {.first = first, .opened = opened};
-    put_off_curve(d);
+    bh_inquire_put_off(&d->model, d->worker);
     job.bytes = bh_model_text(&d->model, &job.length);
     job.first_count = bh_model_in_view(&d->model, first, MOST_VIEW);
     job.opened_count = bh_model_opened(&d->model, opened, MOST_OPEN);
@@ -216,75 +205,6 @@ static void begin_job(bh_desk *d)
     if (number) {
         d->model.job = number;
         d->model.job_due = false;
-    }
-}
-
-static void ask_about_row(bh_desk *d, bh_ask_kind kind)
-{
-    bh_model *m = &d->model;
-    const bh_table_row *row = bh_table_here(m);
-    bh_query q = {.kind = kind};
-    q.bytes = bh_model_bytes(m, &q.length);
-    if (!row)
-        return;
-    const bh_setting *setting = bh_table_setting(m, row);
-    q.setting = setting->name;
-    q.arm = setting->arms[row->now->arm].arm.name.text;
-    q.bin = row->bin ? row->now->bin : 0;
-    const size_t number = bh_worker_ask(d->worker, &q);
-    if (kind == BH_ASK_EXPLAIN)
-        m->explain_asked = number;
-    else
-        m->curve_asked = number;
-}
-
-static void ask_to_solve(bh_desk *d)
-{
-    bh_solving *s = &d->model.solving;
-    bh_query q = {.kind = BH_ASK_SOLVE,
-                  .setting = s->setting,
-                  .arm = s->arm[0] ? s->arm : NULL,
-                  .column = s->output,
-                  .wanted = s->value,
-                  .by = bh_solve_input_name((bh_solve_input)s->by)};
-    q.bytes = bh_model_bytes(&d->model, &q.length);
-    s->due = false;
-    s->asked = bh_worker_ask(d->worker, &q);
-    s->waiting = d->solving = s->asked != 0;
-}
-
-/* The curve is asked for once typing pauses; returns [s] until then, below 0: nothing is due. */
-static double mind_curve(bh_desk *d, double now)
-{
-    bh_model *m = &d->model;
-    if (!m->curve_due || bh_arrange(m).curve < 0 || !bh_model_current(m) || !bh_table_here(m))
-        return -1;
-    const double left = pause_first - (now - d->pressed);
-    if (left > 0)
-        return left;
-    m->curve_due = false;
-    ask_about_row(d, BH_ASK_CURVE);
-    return -1;
-}
-
-/* What was asked for a part of the screen that was closed since. */
-static void mind_questions(bh_desk *d)
-{
-    bh_model *m = &d->model;
-    if (m->explain_asked &&
-        (m->over != BH_OVER_SHEET || m->sheet.kind != BH_SHEET_EXPLAIN || m->explain_due)) {
-        bh_worker_withdraw(d->worker, BH_ASK_EXPLAIN);
-        m->explain_asked = 0;
-    }
-    if (d->solving && m->over != BH_OVER_SOLVE) {
-        bh_worker_withdraw(d->worker, BH_ASK_SOLVE);
-        d->solving = false;
-    }
-    if (m->over == BH_OVER_SOLVE && m->solving.due)
-        ask_to_solve(d);
-    if (m->explain_due && bh_table_here(m)) {
-        m->explain_due = false;
-        ask_about_row(d, BH_ASK_EXPLAIN);
     }
 }
 
@@ -303,8 +223,7 @@ double bh_desk_tend(bh_desk *desk, double now)
     bh_model *m = &desk->model;
     const double wait = bh_keeper_tend(&desk->keeper, m, now);
     mind_job(desk);
-    mind_questions(desk);
-    const double curve = mind_curve(desk, now);
+    const double curve = bh_inquire(m, desk->worker, now - desk->pressed);
     return wait < 0 || (curve >= 0 && curve < wait) ? curve : wait;
 }
 
@@ -363,6 +282,25 @@ bool bh_desk_suspends(bh_desk *desk)
     const bool yes = desk->suspends;
     desk->suspends = false;
     return yes;
+}
+
+void bh_desk_secure(bh_desk *desk, double now)
+{
+    bh_keeper_tell(&desk->keeper, &desk->model, now);
+    if (desk->keeper.rescue && bh_rescue_write(desk->keeper.rescue))
+        desk->keeper.pending = -1;
+}
+
+void bh_desk_awake(bh_desk *desk, double now)
+{
+    desk->keeper.looked = -1e9;
+    if (desk->model.edit)
+        (void)bh_keeper_look(&desk->keeper, &desk->model, now);
+}
+
+void bh_desk_say(bh_desk *desk, const char *text)
+{
+    bh_model_note(&desk->model, false, "%s", text);
 }
 
 size_t bh_desk_evaluated(bh_desk *desk)

@@ -216,9 +216,11 @@ bool bh_keeper_read(bh_keeper *keeper, bh_model *model, bh_text *into)
 
 /* --- unsaved work --- */
 
-static void tell_rescue(bh_keeper *keeper, bh_model *model, double now)
+void bh_keeper_tell(bh_keeper *keeper, bh_model *model, double now)
 {
     size_t length = 0;
+    if (!model->edit || !keeper->rescue || bh_edit_version(model->edit) == keeper->version)
+        return;
     const char *bytes = bh_edit_bytes(model->edit, &length);
     keeper->version = bh_edit_version(model->edit);
     if (bh_model_unsaved(model) == 0) {
@@ -234,8 +236,7 @@ double bh_keeper_tend(bh_keeper *keeper, bh_model *model, double now)
 {
     if (!model->edit || !keeper->rescue)
         return -1;
-    if (bh_edit_version(model->edit) != keeper->version)
-        tell_rescue(keeper, model, now);
+    bh_keeper_tell(keeper, model, now);
     if (keeper->pending < 0)
         return -1;
     const double left = keeper->pending + write_after - now;

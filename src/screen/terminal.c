@@ -146,24 +146,38 @@ static void set_size(struct terminal *t)
     bh_desk_resize(t->desk, t->rows, t->columns);
 }
 
-static void suspend(struct terminal *t)
+static double now(void)
 {
-    bh_alarm_screen(false);
-    (void)endwin();
-    (void)signal(SIGTSTP, SIG_DFL);
-    (void)kill(0, SIGTSTP); /* the whole job, as the terminal would do it */
-    bh_alarm_screen(true);
-    bh_alarm_resume();
-    (void)t;
+    struct timespec t;
+    (void)clock_gettime(CLOCK_MONOTONIC, &t);
+    return (double)t.tv_sec + 1e-9 * (double)t.tv_nsec;
 }
 
+/* `whole`: as the terminal itself would do it when the key is pressed, with the whole job. */
+static void suspend(struct terminal *t, bool whole)
+{
+    bh_desk_secure(t->desk, now()); /* nobody knows whether it is ever resumed */
+    bh_alarm_screen(false);
+    (void)endwin();
+    if (!bh_alarm_stop(whole))
+        bh_desk_say(t->desk, "nothing is there that this could be left to: no shell runs it");
+    bh_alarm_screen(true);
+    bh_alarm_resume();
+}
+
+/* Whatever the terminal was made to do meanwhile.  In the background setting its modes stops the
+ * program before anything is written to it. */
 static void resume(struct terminal *t)
 {
+    (void)reset_prog_mode();
+    if (!isendwin()) /* it was stopped without a warning: all is set up anew */
+        (void)endwin();
     (void)reset_prog_mode();
     set_modes();
     (void)clearok(stdscr, TRUE);
     t->drawn = false;
     set_size(t);
+    bh_desk_awake(t->desk, now());
 }
 
 /* --- cells out --- */
@@ -201,13 +215,6 @@ static void show(struct terminal *t)
     t->shown = t->wanted;
     t->wanted = old;
     t->drawn = true;
-}
-
-static double now(void)
-{
-    struct timespec t;
-    (void)clock_gettime(CLOCK_MONOTONIC, &t);
-    return (double)t.tv_sec + 1e-9 * (double)t.tv_nsec;
 }
 
 /* --- keys in --- */
@@ -329,8 +336,9 @@ static void mind_signals(struct loop *l)
         set_size(l->t);
         l->dirty = true;
     }
-    if (bh_desk_suspends(l->t->desk))
-        suspend(l->t);
+    const bool key = bh_desk_suspends(l->t->desk), signal = bh_alarm_stopping();
+    if (key || signal)
+        suspend(l->t, key);
     if (bh_alarm_resumed()) {
         resume(l->t);
         l->dirty = true;

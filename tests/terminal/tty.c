@@ -13,6 +13,7 @@
 #include <sys/ioctl.h>
 #include <sys/stat.h>
 #include <sys/wait.h>
+#include <termios.h>
 #include <time.h>
 #include <unistd.h>
 
@@ -113,8 +114,15 @@ static void become(const tty *t, const tty_start *how)
     char *own = how->environment ? strdup(how->environment) : NULL;
     if (own)
         putenv(own);
-    if (chdir(t->folder) == 0)
-        execv(program, arguments);
+    if (chdir(t->folder) != 0)
+        _exit(126);
+    if (how->shell) {
+        setenv("PROGRAM", program, 1);
+        setenv("PS1", "ready> ", 1);
+        unsetenv("ENV");
+        execl("/bin/sh", "sh", "-i", (char *)NULL);
+    }
+    execv(program, arguments);
     _exit(126);
 }
 
@@ -122,6 +130,25 @@ static void answer(const char *bytes, size_t length, void *user)
 {
     const ssize_t n = write(*(int *)user, bytes, length);
     (void)n;
+}
+
+static int set_property(VTermProp property, VTermValue *value, void *user)
+{
+    tty *t = user;
+    if (property == VTERM_PROP_ALTSCREEN)
+        t->other = value->boolean;
+    return 1;
+}
+
+/* Of several modes that are set at once this libvterm minds the first only. */
+static void mind_mouse(tty *t, const char *bytes, size_t length)
+{
+    for (size_t i = 0; i < length; i++) {
+        memmove(t->last, t->last + 1, 4);
+        t->last[4] = bytes[i];
+        if (strcmp(t->last, "1000h") == 0 || strcmp(t->last, "1000l") == 0)
+            t->mice = bytes[i] == 'h';
+    }
 }
 
 void tty_run(tty *t, const tty_start *how)
@@ -134,7 +161,11 @@ void tty_run(tty *t, const tty_start *how)
     ck_assert_ptr_nonnull(t->vt);
     vterm_set_utf8(t->vt, 1);
     vterm_output_set_callback(t->vt, answer, &t->master);
+    static const VTermScreenCallbacks callbacks = {.settermprop = set_property};
+    t->other = t->mice = false;
+    memcpy(t->last, "-----", sizeof t->last);
     t->screen = vterm_obtain_screen(t->vt);
+    vterm_screen_set_callbacks(t->screen, &callbacks, t);
     vterm_screen_enable_altscreen(t->screen, 1);
     vterm_screen_reset(t->screen, 1);
     const struct winsize size = {.ws_row = (unsigned short)t->rows,
@@ -264,6 +295,7 @@ bool tty_pump(tty *t, int milliseconds)
         return false;
     }
     t->received += (size_t)n;
+    mind_mouse(t, bytes, (size_t)n);
     vterm_input_write(t->vt, bytes, (size_t)n);
     return true;
 }
@@ -334,6 +366,14 @@ void tty_wait_gone(tty *t, const char *text)
             give_up(t, "it did not go away:", text);
         tty_pump(t, 100);
     }
+}
+
+bool tty_cooked(const tty *t)
+{
+    struct termios modes;
+    ck_assert_int_eq(tcgetattr(t->master, &modes), 0);
+    const tcflag_t local = ICANON | ECHO | ISIG;
+    return (modes.c_lflag & local) == local && (modes.c_iflag & ICRNL) && (modes.c_oflag & OPOST);
 }
 
 int tty_wait_end(tty *t)

@@ -16,8 +16,10 @@ typedef struct {
     int rows, columns;
     size_t received; /* [bytes] from the program, since the test last set it to 0 */
     bool ended;
-    int status;      /* as waitpid has it, once it ended */
-    char folder[64]; /* where it runs: a new one, removed with the test */
+    int status;       /* as waitpid has it, once it ended */
+    bool other, mice; /* it has the other screen; it wants mouse events */
+    char last[6];     /* bytes that came last */
+    char folder[64];  /* where it runs: a new one, removed with the test */
 } tty;
 
 /* How to start it; NULL and 0 for what is usual: 80x24, xterm-256color, C.UTF-8. */
@@ -25,6 +27,8 @@ typedef struct {
     const char *term, *locale, *environment; /* one more NAME=VALUE */
     int rows, columns;
     const char *arguments[6]; /* behind `edit` */
+    bool shell;               /* a shell with job control instead: its prompt is "ready> ", and
+                                 "$PROGRAM" is the program */
 } tty_start;
 
 /* A new folder with a copy of a plan of plans/, called plan.yaml (NULL: none). */
@@ -47,6 +51,9 @@ void tty_size(tty *t, int rows, int columns);
 void tty_wait(tty *t, const char *text);
 void tty_wait_row(tty *t, int row, const char *text);
 void tty_wait_gone(tty *t, const char *text);
+/* Whether the terminal hands on whole lines and shows what is typed, as a shell leaves it. */
+bool tty_cooked(const tty *t);
+
 /* Waits until the program ended, and returns its exit status, or 128 + signal. */
 int tty_wait_end(tty *t);
 

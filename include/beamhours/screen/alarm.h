@@ -8,7 +8,8 @@
 
 #include "beamhours/base/rescue.h"
 
-/* Catches what resizes, ends, resumes or fails the program.  There is one of it in a process. */
+/* Catches what resizes, ends, stops, resumes or fails the program.  There is one of it in a
+ * process. */
 void bh_alarm_catch(void);
 void bh_alarm_clear(void);
 
@@ -24,8 +25,13 @@ void bh_alarm_keep(bh_rescue *rescue, const char *mark);
 
 /* What happened since it was last asked; the signal that is to end the program, or 0. */
 bool bh_alarm_resized(void);
+bool bh_alarm_stopping(void); /* it is to stop, the terminal put back before */
 bool bh_alarm_resumed(void);
 int bh_alarm_ended(void);
+
+/* Stops the program, `whole`: with the job it belongs to, until it is resumed; false at once where
+ * nobody is there who could resume it. */
+bool bh_alarm_stop(bool whole);
 
 /* As if a signal had come. */
 void bh_alarm_resume(void);

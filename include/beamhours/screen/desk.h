@@ -51,6 +51,14 @@ void bh_desk_draw(const bh_desk *desk, bh_canvas *canvas);
 bool bh_desk_over(const bh_desk *desk);
 bool bh_desk_suspends(bh_desk *desk); /* asked once for each wish */
 
+/* Writes unsaved work beside the plan now, at the time `now` [s]. */
+void bh_desk_secure(bh_desk *desk, double now);
+
+/* Back at the time `now` [s], when much may have happened to the plan: looks at it. */
+void bh_desk_awake(bh_desk *desk, double now);
+
+void bh_desk_say(bh_desk *desk, const char *text); /* in the line of messages */
+
 /* For a signal handler: writes unsaved work beside the plan.  NULL before one is open. */
 bh_rescue *bh_desk_rescue(bh_desk *desk);
 const char *bh_desk_mark(const bh_desk *desk); /* path of the mark that it is open, or NULL */

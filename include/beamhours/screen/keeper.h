@@ -47,6 +47,9 @@ bool bh_keeper_save_as(bh_keeper *keeper, bh_model *model);
 /* Reads the file again, for BH_WISH_RELOAD. */
 bool bh_keeper_read(bh_keeper *keeper, bh_model *model, bh_text *into);
 
+/* Makes unsaved work ready to be written, at the time `now` [s]. */
+void bh_keeper_tell(bh_keeper *keeper, bh_model *model, double now);
+
 /* Looks after unsaved work at the time `now` [s]; returns [s] after how long it has to again, below
  * 0: never. */
 double bh_keeper_tend(bh_keeper *keeper, bh_model *model, double now);

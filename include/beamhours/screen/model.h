@@ -215,7 +215,7 @@ typedef struct {
 
     bh_curve_shown curve_shown;
     bh_reply *curve;
-    size_t curve_asked, explain_asked;
+    size_t curve_asked, explain_asked, solve_asked; /* numbers; 0: nothing is asked */
 
     bh_material_library *library;
     const bh_beginning *beginnings;
