@@ -18,6 +18,9 @@ struct plot {
     unsigned char dots[MOST_HIGH][MOST_WIDE]; /* 2 x 4 dots a cell, as braille numbers them */
 };
 
+/* A logarithmic axis ends here, as a share of the largest value: nobody counts what is below. */
+static const double smallest = 1e-12;
+
 static const bh_column_id column_of[] = {BH_COL_POINT_CROSS_SECTION, BH_COL_SIGNAL, BH_COL_COUNTS};
 
 static bool set_range(struct plot *p, const bh_curve *curve, bh_column_id column)
@@ -35,7 +38,8 @@ static bool set_range(struct plot *p, const bh_curve *curve, bh_column_id column
     }
     if (!(p->x.to > p->x.from))
         return false;
-    p->y = bh_axis_around(low, high, low > 0 && high > 3 * low);
+    const bool logarithmic = low > 0 && high > 3 * low;
+    p->y = bh_axis_around(logarithmic ? fmax(low, high * smallest) : low, high, logarithmic);
     return true;
 }
 
