@@ -8,22 +8,20 @@
 
 /* --- messages --- */
 
-/* Where there is no room for both, the line number says which key is meant. */
+/* A warning says what it is about; where there is no room, the line number stands for its key. */
 static void say(bh_canvas *canvas, int row, bh_look look, const bh_diag *d)
 {
-    const char *const lead = d->severity == BH_SEVERITY_ERROR ? "ERROR " : "";
+    const bool error = d->severity == BH_SEVERITY_ERROR;
     char at[24] = "";
     if (d->at.line > 0)
         (void)snprintf(at, sizeof at, " line %d", d->at.line);
     const int room = canvas->columns - (int)strlen(at);
     bh_text text = {0};
-    bh_text_appendf(&text, "%s%s: %s", lead, d->key, d->text);
-    if (at[0] && text.bytes && bh_text_columns(text.bytes, canvas->ascii) > room) {
-        bh_text_free(&text);
-        bh_text_appendf(&text, "%s%s", lead, d->text);
-    }
+    bh_text_appendf(&text, "%s%s: %s", error ? "ERROR " : "", d->key, d->text);
+    const bool fits = text.bytes && bh_text_columns(text.bytes, canvas->ascii) <= room;
     if (text.bytes)
-        bh_canvas_put_cut(canvas, (bh_spot){row, 0, room}, look, text.bytes);
+        bh_canvas_put_cut(canvas, (bh_spot){row, 0, room}, look,
+                          fits || error || !at[0] ? text.bytes : d->text);
     bh_text_free(&text);
     (void)bh_canvas_put_right(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_QUIET, at);
 }
