@@ -175,35 +175,24 @@ static double *uncertainties(const struct asking *a, bh_what_if *out)
     return u;
 }
 
-/* Sets what share of the planned hours of data fits with `days_less` [h] fewer on the calendar and
- * beam in a `share` [1] of it, cuts the statistics to it, and says what would be asked. */
-static bh_code fit(const struct asking *a, double days_less, double share, bh_what_if *out,
-                   double *u, bh_error *err)
+/* Sets what share of the planned hours of data fits into what is granted where things are worse,
+ * cuts the statistics `u` to it, and says what would be asked. */
+static bh_code fit(const struct asking *a, const struct worse *w, bh_what_if *out, double *u,
+                   bh_error *err)
 {
-    bh_plan changed = *a->plan;
     bh_totals t;
-    changed.schedule.availability.value = share;
-    changed.schedule.availability.given = true;
-    const bh_code bad = bh_totals_from_plan(&changed, a->hours, a->arena, &t, err);
+    const bh_code bad = bh_totals_from_plan(w->plan, a->hours, a->arena, &t, err);
     if (bad)
         return bad;
     const double planned = t.data_hours + t.empty_hours;
-    const double beam = (a->granted - days_less - t.change_hours) * share - t.task_hours;
+    const double beam =
+        (a->granted - w->days_less - t.change_hours) * availability(w->plan) - t.task_hours;
     const bool all = !(planned > 0.0) || beam * slack >= planned;
     out->data_left = all ? 1.0 : fmax(0.0, beam / planned);
     for (size_t i = 0; i < a->rows; i++)
         u[i] = out->data_left > 0.0 ? u[i] / sqrt(out->data_left) : (double)NAN;
-    out->asked_hours = t.asked_hours + days_less;
+    out->asked_hours = t.asked_hours + w->days_less;
     return BH_OK;
-}
-
-static bh_code as_planned(const struct asking *a, bh_what_if *out, bh_error *err)
-{
-    double *u = uncertainties(a, out);
-    if (!u)
-        return no_memory(err);
-    const bh_code bad = fit(a, 0.0, availability(a->plan), out, u, err);
-    return bad ? bad : drop(a, &(struct worse){a->plan, a->hours, 0.0}, out, err);
 }
 
 /* Fewer hours of the calendar, or fewer of them with beam. */
@@ -214,10 +203,11 @@ static bh_code shorter(const struct asking *a, double days_less, double share, b
     bh_plan changed = *a->plan;
     changed.schedule.availability.value = share;
     changed.schedule.availability.given = true;
+    const struct worse worse = {&changed, a->hours, days_less};
     if (!u)
         return no_memory(err);
-    const bh_code bad = fit(a, days_less, share, out, u, err);
-    return bad ? bad : drop(a, &(struct worse){&changed, a->hours, days_less}, out, err);
+    const bh_code bad = fit(a, &worse, out, u, err);
+    return bad ? bad : drop(a, &worse, out, err);
 }
 
 static bh_plan *with_half_current(const struct asking *a)
@@ -251,7 +241,8 @@ static bh_code half_current(const struct asking *a, bh_what_if *out, bh_error *e
         u[i] = cell(half, i, BH_COL_STATISTICAL) *
                sqrt(cell(half, i, BH_COL_HOURS) / cell(a->table, i, BH_COL_HOURS));
     bh_stretch *longer = bh_arena_take(a->arena, plan->setting_count + 1, sizeof *longer);
-    bh_code bad = longer ? fit(a, 0.0, availability(plan), out, u, err) : no_memory(err);
+    bh_code bad =
+        longer ? fit(a, &(struct worse){plan, a->hours, 0.0}, out, u, err) : no_memory(err);
     if (longer)
         bh_stretches_of(half, longer);
     out->asked_hours = bh_table_totals(half)->asked_hours;
@@ -321,7 +312,7 @@ static bh_code double_background(const struct asking *a, bh_what_if *out, bh_err
         if (to_goal * factor > longer[s].full)
             longer[s] = (bh_stretch){to_goal * factor, to_goal * factor * share};
     }
-    bh_code bad = fit(a, 0.0, availability(a->plan), out, u, err);
+    bh_code bad = fit(a, &(struct worse){a->plan, a->hours, 0.0}, out, u, err);
     bad = bad ? bad : bh_totals_from_plan(a->plan, longer, a->arena, &t, err);
     if (bad)
         return bad;
@@ -354,7 +345,7 @@ bh_code bh_what_if_make(const bh_table *table, bh_arena *arena, bh_what_if out[B
     bh_stretches_of(table, a.hours);
     for (int i = 0; i < BH_IF_COUNT; i++)
         out[i] = (bh_what_if){.data_left = 1.0};
-    bh_code bad = as_planned(&a, &out[BH_IF_AS_PLANNED], err);
+    bh_code bad = shorter(&a, 0.0, availability(plan), &out[BH_IF_AS_PLANNED], err);
     bad = bad ? bad : half_current(&a, &out[BH_IF_HALF_CURRENT], err);
     bad = bad ? bad : double_background(&a, &out[BH_IF_DOUBLE_BACKGROUND], err);
     bad = bad ? bad : shorter(&a, 0.0, less_beam, &out[BH_IF_LESS_BEAM], err);
