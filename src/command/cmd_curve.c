@@ -103,8 +103,12 @@ static int draw(struct job *job)
     for (int i = 0; i < 3; i++)
         if (strcmp(formats[i], job->format) == 0)
             format = i;
-    const bh_curve_picture picture = {
-        job->in.table, &job->curves, job->shown, path ? &job->measured : NULL, path, bh_version()};
+    const bh_curve_picture picture = {.table = job->in.table,
+                                      .curves = &job->curves,
+                                      .shown = job->shown,
+                                      .measured = path ? &job->measured : NULL,
+                                      .measured_name = path,
+                                      .version = bh_version()};
     bh_figure figure;
     bh_text out = {0};
     bh_error err = {.code = BH_OK};
@@ -165,8 +169,7 @@ int bh_cmd_curve(const bh_arguments *arguments)
                                       .arm = arguments->value[BH_OPT_ARM],
                                       .structures = arguments->value[BH_OPT_STRUCTURE],
                                       .coulombs = arguments->value[BH_OPT_COULOMB],
-                                      .points = is_drawn(job.format) ? DRAWN_POINTS : 0,
-                                      .bins_do = is_drawn(job.format)};
+                                      .points = is_drawn(job.format) ? DRAWN_POINTS : 0};
     int status = variable(arguments, &job.request.against);
     status = status ? status : column(arguments, &job.shown);
     status = status ? status : destination(&job);

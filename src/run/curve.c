@@ -8,6 +8,7 @@
 #include "beamhours/base/text.h"
 #include "beamhours/physics/kinematics.h"
 #include "beamhours/physics/structure.h"
+#include "beamhours/run/arm_at.h"
 #include "beamhours/run/event_search.h"
 #include "beamhours/run/struck.h"
 #include "beamhours/units/constants.h"
@@ -17,6 +18,7 @@ enum { POINTS = 61, MOST_POINTS = 481, MEV2_PER_GEV2 = 1000000 };
 
 struct bh_curve {
     bh_structure_choice choice; /* of the struck nuclide, where the caller names a model */
+    bool slices;                /* of a ring */
     size_t count;
     double x[MOST_POINTS];
     char *marks[MOST_POINTS];
@@ -34,6 +36,8 @@ struct origin {
     bh_collision collision;
     double q2;   /* [MeV^2] at the arm's angle; NAN where there is none */
     bool recoil; /* the arm detects the recoil */
+    bool slices; /* of a ring */
+    bool centre; /* of the arm alone */
     bh_against against;
 };
 
@@ -95,11 +99,15 @@ static bh_code start(const bh_plan *plan, const bh_curve_request *r, struct orig
                        "the scatterer of this setting has no isotope to compute with");
     o->nuclide = nuclide;
     o->against = r->against;
+    o->centre = r->centre;
     o->recoil = o->arm->arm.detects == BH_DETECTS_RECOIL;
     o->collision = (bh_collision){o->setting->beam.particle.mass, nuclide->mass,
                                   o->setting->beam.kinetic_energy.value};
-    if (o->arm->arm.shape == BH_SHAPE_RING && r->against != BH_AGAINST_ENERGY)
-        return bh_fail(err, BH_EDOMAIN, "a ring stands still: only --against energy varies it");
+    const bool ring = o->arm->arm.shape == BH_SHAPE_RING;
+    o->slices = ring && (r->against == BH_AGAINST_ANGLE || r->against == BH_AGAINST_Q2);
+    if (ring && r->against == BH_AGAINST_EPSILON)
+        return bh_fail(err, BH_EDOMAIN,
+                       "a ring stands still: --against angle, q2 or energy varies it");
     bh_event e;
     const bh_known at = {o->collision.kinetic, o->arm->angle.value, NAN, NAN, o->recoil};
     double kinetic = 0.0;
@@ -126,6 +134,10 @@ static void angle_limits(const struct origin *o, double *lo, double *hi)
     const double most = o->recoil ? BH_PI / 2.0 : bh_kinematics_largest_angle(&o->collision);
     *lo = arm->angle_range.given ? arm->angle_range.from : 5.0 * BH_DEGREE;
     *hi = arm->angle_range.given ? arm->angle_range.to : 175.0 * BH_DEGREE;
+    if (o->slices) {
+        *lo = arm->ring.from;
+        *hi = arm->ring.to;
+    }
     *lo = fmax(*lo, reach);
     *hi = fmin(*hi, fmin(most, BH_PI) - (most < BH_PI ? reach : 0.0));
 }
@@ -205,6 +217,10 @@ static void add_point(bh_curve *c, const struct origin *o, double x)
         angle_limits(o, &lo, &hi);
         if (a.angle.value < lo || a.angle.value > hi)
             return;
+        if (o->centre)
+            bh_arm_centre(&a);
+        else if (o->slices)
+            bh_arm_slice(&a);
     }
     c->x[c->count] = shown(o->against, x);
     c->settings[c->count] = s;
@@ -237,7 +253,9 @@ static size_t closest(const bh_curve *c, double x)
 /* Whether the acceptance of `a` covers the angle at which the arm stands at point `at`. */
 static bool covers(const bh_curve *c, const bh_setting_arm *a, size_t at)
 {
-    const double off = c->arms[at].angle.value - a->angle.value;
+    const double angle = c->arms[at].angle.value, off = angle - a->angle.value;
+    if (a->arm.shape == BH_SHAPE_RING)
+        return angle >= a->arm.ring.from && angle <= a->arm.ring.to;
     return a->arm.shape == BH_SHAPE_RECTANGLE && off >= a->arm.in_plane.from &&
            off <= a->arm.in_plane.to;
 }
@@ -316,6 +334,7 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
     c->plan = *plan;
     c->plan.settings = c->settings;
     c->plan.setting_count = c->count;
+    c->slices = o->slices || o->centre;
     if (r->structure && o->nuclide) {
         c->choice = (bh_structure_choice){o->nuclide->z, o->nuclide->a, {.text = r->structure}};
         c->plan.models.by_nuclide = &c->choice;
@@ -368,6 +387,8 @@ double bh_curve_x(const bh_curve *curve, size_t i)
 
 double bh_curve_y(const bh_curve *curve, size_t i, bh_column_id column)
 {
+    if (curve->slices && column == BH_COL_LIVE)
+        return (double)NAN;
     return bh_table_number(curve->table, false, i, column);
 }
 

@@ -56,7 +56,12 @@ static struct made draw(const char *plan, const bh_curves_request *request, int 
     struct made m = {.e = evaluate(plan), .arena = bh_arena_new()};
     bh_error err = {.code = BH_OK};
     ck_assert_msg(!bh_curves_make(m.e.plan, request, &m.curves, &err), "%s", err.text);
-    const bh_curve_picture p = {m.e.table, &m.curves, shown, measured, "points.csv", "9.9"};
+    const bh_curve_picture p = {.table = m.e.table,
+                                .curves = &m.curves,
+                                .shown = shown,
+                                .measured = measured,
+                                .measured_name = "points.csv",
+                                .version = "9.9"};
     ck_assert_msg(!bh_curve_figure(&p, m.arena, &m.figure, &err), "%s", err.text);
     ck_assert_msg(!bh_figure_write(&m.figure, BH_FIGURE_SVG, &m.svg, &err), "%s", err.text);
     lay_out(&m);
@@ -370,24 +375,116 @@ END_TEST
 
 START_TEST(rings_are_drawn_bin_by_bin)
 {
-    const bh_curves_request r = {.against = _i ? BH_AGAINST_Q2 : BH_AGAINST_ANGLE, .bins_do = true};
+    const bh_curves_request r = {.against = _i ? BH_AGAINST_Q2 : BH_AGAINST_ANGLE};
     struct made m = draw(rings, &r, BH_COL_SIGNAL, NULL);
     const bh_figure_series *s = series(&m, "planned");
-    ck_assert_uint_eq(m.curves.count, 0);
     ck_assert_uint_eq(s->count, 8);
     for (size_t i = 0; i < 8; i++)
         ck_assert_relative(s->point[i].x, bin_cell(&m.e, i, _i ? BH_COL_Q2 : BH_COL_ANGLE), 1e-12,
                            "bin");
+    compare_curves(&m, BH_COL_SIGNAL);
+    ck_assert_double_eq_tol(bh_curve_x(m.curves.curve[0], 0), _i ? 0.0041 : 20.0, _i ? 1e-3 : 1e-9);
     ck_assert_uint_eq(m.figure.span_count, 1);
     ck_assert_uint_eq(m.figure.span[0].edge_count, 7);
     put_away(&m);
 }
 END_TEST
 
+/* What the readout and the hours of the whole ring decide has no curve, only the bins. */
+START_TEST(counts_of_a_ring_are_bins_alone)
+{
+    struct made m =
+        draw(rings, &(bh_curves_request){.against = BH_AGAINST_ANGLE}, BH_COL_COUNTS, NULL);
+    ck_assert_uint_eq(m.figure.series_count, 1);
+    ck_assert_uint_eq(series(&m, "planned")->count, 8);
+    put_away(&m);
+}
+END_TEST
+
+/* --- below --- */
+
+/* Of all that is drawn the ratio to the first curve, at the points of which it is exact. */
+START_TEST(models_stand_below_as_ratios)
+{
+    const bh_curves_request r = {.against = BH_AGAINST_ANGLE,
+                                 .structures = "kelly-2004,arrington-2004,ye-2018",
+                                 .points = 121};
+    struct made m = draw(proton, &r, BH_COL_POINT_CROSS_SECTION, NULL);
+    const bh_figure *below = m.figure.below;
+    ck_assert_ptr_nonnull(below);
+    ck_assert_str_eq(below->title, "ratio to kelly-2004");
+    ck_assert_ptr_nonnull(strstr(m.figure.description, "below it the ratio to kelly-2004"));
+    for (size_t s = 0; s < 3; s++)
+        for (size_t i = 0; i < below->series[s].count; i++) {
+            const double ratio = m.figure.series[s].point[i].y / m.figure.series[0].point[i].y,
+                         got = below->series[s].point[i].y;
+            ck_assert_double_eq_tol(got, ratio, 1e-9);
+            ck_assert(got > below->y.axis.from && got < below->y.axis.to);
+            ck_assert(below->band[0].low[i] <= got * (1.0 + 1e-9));
+            ck_assert(below->band[0].high[i] >= got * (1.0 - 1e-9));
+        }
+    ck_assert_double_gt(m.layout.below.y, m.layout.frame.y + m.layout.frame.high);
+    ck_assert_double_gt(m.layout.below.high, 50.0);
+    put_away(&m);
+}
+END_TEST
+
+/* The plan's own model first: planned points stand at 1, their bars relative. */
+START_TEST(planned_points_stand_at_one_below)
+{
+    const bh_curves_request r = {
+        .against = BH_AGAINST_ANGLE, .structures = "amt-2007-effective,kelly-2004", .points = 121};
+    struct made m = draw(proton, &r, BH_COL_POINT_CROSS_SECTION, NULL);
+    const bh_figure_series *s = &m.figure.below->series[2];
+    ck_assert_int_eq(s->kind, BH_SERIES_PLANNED);
+    ck_assert_uint_eq(s->count, 3);
+    for (size_t i = 0; i < 3; i++) {
+        ck_assert_double_eq_tol(s->point[i].y, 1.0, 2e-4);
+        ck_assert_double_eq_tol(s->point[i].inner, cell(&m.e, i, BH_COL_STATISTICAL), 1e-4);
+    }
+    put_away(&m);
+}
+END_TEST
+
+START_TEST(one_curve_has_nothing_below)
+{
+    struct made m = draw(proton, &(bh_curves_request){.against = BH_AGAINST_ANGLE},
+                         BH_COL_POINT_CROSS_SECTION, NULL);
+    ck_assert_ptr_null(m.figure.below);
+    put_away(&m);
+}
+END_TEST
+
+START_TEST(the_legend_says_where_models_are_from)
+{
+    static const struct {
+        bh_curves_request r;
+        const char *legend;
+    } rows[] = {
+        {{.against = BH_AGAINST_ANGLE},
+         "amt-2007-effective: Arrington, Melnitchouk & Tjon, Phys. Rev. C 76 (2007) 035205"},
+        {{.against = BH_AGAINST_ANGLE, .structures = "kelly-2004"},
+         "kelly-2004: Kelly, Phys. Rev. C 70 (2004) 068202"},
+        {{.against = BH_AGAINST_ANGLE, .structures = "kelly-2004", .coulombs = "plane-wave"},
+         "kelly-2004 plane-wave: Kelly, Phys. Rev. C 70 (2004) 068202; Born, Z. Phys. 38 (1926) "
+         "803"},
+        {{.against = BH_AGAINST_ANGLE, .coulombs = "plane-wave"},
+         "plane-wave: Born, Z. Phys. 38 (1926) 803"},
+    };
+    struct made m = draw(proton, &rows[_i].r, BH_COL_POINT_CROSS_SECTION, NULL);
+    ck_assert_str_eq(m.figure.series[0].name, rows[_i].legend);
+    for (size_t i = 0; i < m.layout.entry_count; i++) /* long ones are broken, inside the page */
+        ck_assert_double_le(m.layout.entries[i].x + BH_LEGEND_SAMPLE + BH_LEGEND_GAP +
+                                m.layout.entries[i].wide,
+                            m.layout.wide + m.layout.entries[i].x - m.layout.frame.x);
+    put_away(&m);
+}
+END_TEST
+
 START_TEST(a_ring_against_energy_is_a_curve)
 {
-    struct made m = draw(rings, &(bh_curves_request){.against = BH_AGAINST_ENERGY, .bins_do = true},
-                         BH_COL_SIGNAL, NULL);
+    struct made m =
+        draw(rings, &(bh_curves_request){.against = BH_AGAINST_ENERGY}, BH_COL_SIGNAL, NULL);
     compare_curves(&m, BH_COL_SIGNAL);
     ck_assert_uint_eq(series(&m, "planned")->count, 1);
     ck_assert(m.figure.x.axis.logarithmic);
@@ -435,7 +532,7 @@ START_TEST(an_empty_column_says_why)
     bh_figure figure;
     bh_error err = {.code = BH_OK};
     ck_assert(!bh_curves_make(e.plan, &(bh_curves_request){.against = BH_AGAINST_ANGLE}, &c, &err));
-    const bh_curve_picture p = {e.table, &c, BH_COL_COUNTS, NULL, NULL, NULL};
+    const bh_curve_picture p = {.table = e.table, .curves = &c, .shown = BH_COL_COUNTS};
     ck_assert_int_eq(bh_curve_figure(&p, arena, &figure, &err), BH_EDOMAIN);
     ck_assert_msg(strstr(err.text, "counts is empty all along the curve: the setting asks for"),
                   "%s", err.text);
@@ -460,6 +557,11 @@ int main(void)
     tcase_add_test(tests, a_zero_leaves_a_logarithmic_axis);
     tcase_add_loop_test(tests, rings_are_drawn_bin_by_bin, 0, 2);
     tcase_add_test(tests, a_ring_against_energy_is_a_curve);
+    tcase_add_test(tests, counts_of_a_ring_are_bins_alone);
+    tcase_add_test(tests, models_stand_below_as_ratios);
+    tcase_add_test(tests, planned_points_stand_at_one_below);
+    tcase_add_test(tests, one_curve_has_nothing_below);
+    tcase_add_loop_test(tests, the_legend_says_where_models_are_from, 0, 4);
     tcase_add_test(tests, what_cannot_be_drawn_is_refused);
     tcase_add_test(tests, an_empty_column_says_why);
     return run_suite("report/curve_figure", tests);

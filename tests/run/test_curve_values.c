@@ -259,10 +259,10 @@ START_TEST(what_cannot_be_is_refused)
     static const struct {
         bh_curve_request r;
         const char *words;
-    } rows[] = {{{.arm = "R", .against = BH_AGAINST_ANGLE}, "a ring stands still"},
+    } rows[] = {{{.arm = "R", .against = BH_AGAINST_EPSILON}, "a ring stands still"},
                 {{.setting = "X", .arm = "B", .against = BH_AGAINST_ANGLE}, "X"},
                 {{.setting = "K", .arm = "C", .against = BH_AGAINST_ANGLE}, "C"},
-                {{.setting = "K", .against = BH_AGAINST_ANGLE}, "a ring stands still"}};
+                {{.setting = "K", .against = BH_AGAINST_EPSILON}, "a ring stands still"}};
     struct evaluated e = read_text(text);
     for (int i = 0; i < COUNT(rows); i++) {
         bh_error err = {.text = ""};
@@ -271,6 +271,63 @@ START_TEST(what_cannot_be_is_refused)
     }
     done(&e);
     ck_assert_str_eq(bh_curve_key(BH_AGAINST_ANGLE), "angle_deg");
+}
+END_TEST
+
+/* Slices as wide as the bins, at the bins' own middle: nearly the bins of the table, whose angles
+ * are averages. */
+START_TEST(a_ring_is_seen_slice_by_slice)
+{
+    static const char text[] =
+        "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 10 nA}\n"
+        "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 mm}], scatterer: 1H}\n"
+        "arms:\n  - {name: R, ring: {from: 30 deg, to: 50 deg}, edges: [30 deg, 35 deg, 38 deg, "
+        "50 deg], azimuth: 90 deg}\n"
+        "settings:\n  - {name: K, time: 1 h}\n";
+    static const double middles[] = {32.5, 36.5, 44.0}, tolerances[] = {0.03, 0.01, 0.1};
+    struct evaluated e = evaluate(text);
+    bh_error err = {.text = ""};
+    bh_curve *c =
+        bh_curve_new(e.plan, &(bh_curve_request){.against = BH_AGAINST_ANGLE, .points = 41}, &err);
+    ck_assert_msg(c != NULL, "%s", err.text);
+    ck_assert_uint_eq(bh_curve_count(c), 41); /* half a degree apart */
+    for (int i = 0; i < 3; i++) {
+        const size_t at = (size_t)((middles[i] - 30.0) / 0.5 + 0.5);
+        ck_assert_double_eq_tol(bh_curve_x(c, at), middles[i], 1e-9);
+        ck_assert_relative(bh_curve_y(c, at, BH_COL_SOLID_ANGLE),
+                           bin_cell(&e, (size_t)i, BH_COL_SOLID_ANGLE), 1e-6, "solid angle");
+        ck_assert_relative(bh_curve_y(c, at, BH_COL_SIGNAL), bin_cell(&e, (size_t)i, BH_COL_SIGNAL),
+                           tolerances[i], "signal");
+        ck_assert(isnan(bh_curve_y(c, at, BH_COL_LIVE)));
+        ck_assert(isnan(bh_curve_y(c, at, BH_COL_HOURS)));
+        ck_assert_str_eq(bh_curve_marks(c, at), "K");
+    }
+    bh_curve_free(c);
+    done(&e);
+}
+END_TEST
+
+/* What is quick is the same at the centre of the arm. */
+START_TEST(the_centre_is_the_centre)
+{
+    static const char text[] =
+        "plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 10 nA}\n"
+        "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 5 cm}], scatterer: 1H}\n"
+        "arms: [{name: A, in_plane: ±60 mrad, out_of_plane: ±80 mrad, energy_cut: 10 MeV}]\n"
+        "settings: [{name: K, angle: 40 deg, time: 1 h}]\n";
+    struct evaluated e = evaluate(text);
+    bh_curve_request r = {.against = BH_AGAINST_ANGLE, .points = 11};
+    bh_curve *whole = bh_curve_new(e.plan, &r, NULL);
+    r.centre = true;
+    bh_curve *centre = bh_curve_new(e.plan, &r, NULL);
+    ck_assert(whole && centre);
+    ck_assert_uint_eq(bh_curve_count(whole), bh_curve_count(centre));
+    for (size_t i = 0; i < bh_curve_count(whole); i++)
+        ck_assert_relative(bh_curve_y(centre, i, BH_COL_POINT_CROSS_SECTION),
+                           bh_curve_y(whole, i, BH_COL_POINT_CROSS_SECTION), 1e-9, "at angle");
+    bh_curve_free(whole);
+    bh_curve_free(centre);
+    done(&e);
 }
 END_TEST
 
@@ -287,5 +344,7 @@ int main(void)
     tcase_add_test(tests, up_to_the_largest_angle);
     tcase_add_test(tests, another_structure_moves_the_curve);
     tcase_add_test(tests, what_cannot_be_is_refused);
+    tcase_add_test(tests, a_ring_is_seen_slice_by_slice);
+    tcase_add_test(tests, the_centre_is_the_centre);
     return run_suite("run/curve_values", tests);
 }

@@ -15,11 +15,13 @@ typedef struct {
     const bh_measured *measured; /* in the keys of the two axes; NULL: none */
     const char *measured_name;   /* for points without a source: the file's name; may be NULL */
     const char *version;         /* of the program, for the foot; NULL: no foot */
+    const char *const *names;    /* of the curves, in the legend; NULL: their models with sources */
 } bh_curve_picture;
 
 /*
  * Makes the figure in `arena`; it points into the texts of what it is made from, which must outlive
- * it.  Drawn are: the curves; where there are several, the band from the lowest to the highest;
+ * it.  Drawn are: the curves; where there are several, the band from the lowest to the highest, and
+ * below it all of this divided by the first;
  * settings that lie on the curve (same particle, target, arm and energy; angle; or Q2, whichever
  * the curve keeps) by their acceptance with its bins, and as points with error bars where the row
  * says what is shown - statistical with caps, with the systematic uncertainty in quadrature thin;

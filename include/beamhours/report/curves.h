@@ -18,8 +18,7 @@ typedef struct {
     const char *structures; /* "kelly-2004,ye-2018": of the struck nuclide */
     const char *coulombs;   /* "plane-wave,default"; with several of both: each with each */
     int points;             /* as in bh_curve_request */
-    bool bins_do;           /* a ring cannot turn: it gives no curve, not an error, where the angle
-                               would have to move */
+    bool centre;            /* likewise */
 } bh_curves_request;
 
 /* All have the same points.  Free with bh_curves_free. */

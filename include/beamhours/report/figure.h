@@ -54,7 +54,7 @@ typedef struct {
 } bh_figure_scale;
 
 /* All of it belongs to who made it, and texts are UTF-8. */
-typedef struct {
+typedef struct bh_figure {
     const char *title, *subtitle; /* "" for none */
     const char *foot;             /* small, below: what made it, per what */
     const char *description;      /* for who cannot see it */
@@ -63,7 +63,9 @@ typedef struct {
     const bh_figure_band *band;
     const bh_figure_series *series;
     const bh_figure_span *span;
-    const char *span_name; /* in the legend */
+    const char *span_name;         /* in the legend */
+    const struct bh_figure *below; /* a lower frame on the same x: its y, bands, series and, above
+                                      it, title; NULL: none */
 } bh_figure;
 
 typedef enum { BH_FIGURE_SVG, BH_FIGURE_PDF, BH_FIGURE_PNG } bh_figure_format;

@@ -26,14 +26,17 @@ typedef struct {
     size_t number; /* of the band or series */
     const char *name;
     double x, y; /* [pt] left, middle of its height */
+    double wide; /* [pt] its name is broken at */
 } bh_legend_entry;
 
 typedef struct {
     double wide, high;                             /* [pt] the page */
     bh_box frame;                                  /* of the two axes */
+    bh_box below;                                  /* likewise of figure.below; no height: none */
     double title_y, subtitle_y, x_words_y, foot_y; /* [pt] upper edges */
-    bh_ticks x, y;
-    double lane_high; /* [pt] */
+    bh_ticks x, y, below_y;
+    double below_title_y; /* [pt] upper edge */
+    double lane_high;     /* [pt] */
     int lanes;
     bool names;           /* of spans are shown */
     bh_span_place *spans; /* one for each of the figure */

@@ -19,13 +19,14 @@ typedef struct {
     const bh_report_file *files; /* the plan first, then the materials in use */
 } bh_report_request;
 
-enum { BH_MOST_REPORT_CURVES = 3 };
+enum { BH_MOST_REPORT_CURVES = 6 };
 
 /* Free with bh_report_free, also after a failure. */
 typedef struct {
     bh_paper paper;
     bh_arena *arena;
     bh_curves curves[BH_MOST_REPORT_CURVES]; /* behind its figures */
+    bh_curves models[BH_MOST_REPORT_CURVES]; /* likewise, one a model */
 } bh_report;
 
 /* Makes the paper.  BH_ENOMEM, and as bh_explain. */

@@ -16,16 +16,22 @@ typedef struct {
     const char *arm;     /* name; NULL where the setting has one */
     bh_against against;
     const char *structure; /* of the struck nuclide, instead of the plan's; NULL: the plan's */
-    int points;            /* of the grid, 2 to 481; below 2: 61 */
+    bool centre; /* the arm is a point without cuts: quick, for cross sections at its centre */
+    int points;  /* of the grid, 2 to 481; below 2: 61 */
     bool (*cancelled)(void *asker); /* as bh_evaluation has it */
     void *asker;
 } bh_curve_request;
 
 typedef struct bh_curve bh_curve;
 
-/* Evaluates the curve on a grid over all that the arm and the kinematics allow: angles from the
+/*
+ * Evaluates the curve on a grid over all that the arm and the kinematics allow: angles from the
  * arm's angle_range (else 5 to 175 deg), energies from a quarter to four times the setting's,
- * logarithmic. `plan` must outlive it.  NULL with what would do in err. */
+ * logarithmic.  Of a ring, against angle or Q2, each point is a slice of it around that angle, as
+ * wide as the bin there, and what belongs to the readout and the hours of the whole ring is empty:
+ * live fraction, hours, charge, counts, uncertainty of counting.
+ * `plan` must outlive it.  NULL with what would do in err.
+ */
 bh_curve *bh_curve_new(const bh_plan *plan, const bh_curve_request *request, bh_error *err);
 void bh_curve_free(bh_curve *curve);
 

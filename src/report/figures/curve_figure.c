@@ -6,6 +6,7 @@
 #include <string.h>
 
 #include "beamhours/report/curve_words.h"
+#include "beamhours/report/figure_ratio.h"
 #include "beamhours/report/stands.h"
 
 static const double logarithmic_from = 20.0, /* ratio of the largest to the smallest */
@@ -65,6 +66,7 @@ static bh_code take_curves(struct maker *m)
     const bh_curves *c = m->p->curves;
     for (size_t k = 0; k < c->count; k++) {
         const size_t n = bh_curve_count(c->curve[k]);
+        bool some = false;
         bh_figure_point *point = bh_arena_take(m->arena, n + 1, sizeof *point);
         if (!point)
             return no_memory(m);
@@ -74,8 +76,11 @@ static bh_code take_curves(struct maker *m)
             widen(&m->y, point[i].y);
             if (isfinite(point[i].y))
                 widen(&m->x, point[i].x);
+            some |= isfinite(point[i].y);
         }
-        const char *name = c->name[k] ? c->name[k] : bh_curve_own_model(m->p, m->arena);
+        if (!some)
+            continue;
+        const char *name = m->p->names ? m->p->names[k] : bh_curve_legend(m->p, k, m->arena);
         add_series(m, &(bh_figure_series){BH_SERIES_LINE, (int)k, name, n, NULL}, point);
     }
     return BH_OK;
@@ -330,6 +335,8 @@ bh_code bh_curve_figure(const bh_curve_picture *picture, bh_arena *arena, bh_fig
             err, BH_EDOMAIN, "there is nothing to draw: %s is empty all along the curve%s%s",
             bh_shown_key(picture->shown), m->reason ? ": " : "", m->reason ? m->reason : "");
     choose_axes(m);
-    bh_curve_words(picture, m->planned_count, arena, out);
-    return BH_OK;
+    bad = bh_figure_add_ratio(out, arena, err);
+    if (!bad)
+        bh_curve_words(picture, m->planned_count, arena, out);
+    return bad;
 }

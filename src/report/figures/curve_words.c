@@ -6,6 +6,7 @@
 #include <string.h>
 
 #include "beamhours/base/number.h"
+#include "beamhours/physics/coulomb.h"
 #include "beamhours/physics/structure.h"
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
@@ -37,10 +38,10 @@ int bh_curve_variable(bh_against against)
     return columns[against];
 }
 
-const char *bh_curve_own_model(const bh_curve_picture *p, bh_arena *arena)
+/* A structure model made ready for what the curves strike: the most abundant isotope. */
+static bh_structure *structure_of(const bh_curve_picture *p, const char *name)
 {
     const bh_target *t = p->curves->setting->target;
-    const bh_plan *plan = bh_table_plan(p->table);
     size_t count = 0;
     int a = t->scatterer_a;
     const bh_nuclide *all = a ? NULL : bh_element_isotopes(t->scatterer_z, &count);
@@ -50,11 +51,40 @@ const char *bh_curve_own_model(const bh_curve_picture *p, bh_arena *arena)
             most = all[i].abundance;
             a = all[i].a;
         }
-    bh_structure *s =
-        bh_structure_new(bh_plan_structure(plan, t->scatterer_z, a), t->scatterer_z, a, NULL);
+    const bh_plan *plan = bh_table_plan(p->table);
+    return bh_structure_new(name ? name : bh_plan_structure(plan, t->scatterer_z, a),
+                            t->scatterer_z, a, NULL);
+}
+
+const char *bh_curve_own_model(const bh_curve_picture *p, bh_arena *arena)
+{
+    bh_structure *s = structure_of(p, NULL);
     const char *name = s ? bh_curve_say(arena, "%s", bh_structure_name(s)) : "as planned";
     bh_structure_free(s);
     return name;
+}
+
+/* "kelly-2004: Kelly, Phys. Rev. C 70 (2004) 068202", and the Coulomb model behind it. */
+static const char *with_sources(const bh_structure *s, const bh_coulomb *coulomb, bh_arena *arena)
+{
+    if (!coulomb)
+        return bh_curve_say(arena, "%s: %s", bh_structure_name(s), bh_structure_source(s));
+    return bh_curve_say(arena, "%s %s: %s; %s", bh_structure_name(s), coulomb->name,
+                        bh_structure_source(s), coulomb->source);
+}
+
+/* The name of a curve is a structure model, a Coulomb model, or both with a blank between them. */
+const char *bh_curve_legend(const bh_curve_picture *p, size_t k, bh_arena *arena)
+{
+    const char *name = p->curves->name[k] ? p->curves->name[k] : "";
+    const size_t n = strcspn(name, " ");
+    const bh_coulomb *coulomb = name[0] ? bh_coulomb_find(name[n] ? name + n + 1 : name) : NULL;
+    if (coulomb && !name[n])
+        return bh_curve_say(arena, "%s: %s", name, coulomb->source);
+    bh_structure *s = structure_of(p, name[0] ? bh_curve_say(arena, "%.*s", (int)n, name) : NULL);
+    const char *said = s ? with_sources(s, coulomb, arena) : "as planned";
+    bh_structure_free(s);
+    return said;
 }
 
 static const char *short_number(const struct writer *m, double value)
@@ -116,11 +146,16 @@ static const char *description(const struct writer *m)
     for (size_t s = 0; s < f->series_count; s++)
         if (f->series[s].kind == BH_SERIES_LINE)
             bh_text_appendf(&lines, "%s%s", lines.length ? ", " : "; curves: ", f->series[s].name);
+    const char *below = f->below
+                            ? bh_curve_say(m->arena, "; below it the %s, from %s to %s",
+                                           f->below->title, short_number(m, f->below->y.axis.from),
+                                           short_number(m, f->below->y.axis.to))
+                            : "";
     const char *said = bh_curve_say(
-        m->arena, "%s against %s, from %s to %s%s; %zu planned and %zu published points. %s.", y, x,
-        short_number(m, f->x.axis.from), short_number(m, f->x.axis.to),
+        m->arena, "%s against %s, from %s to %s%s; %zu planned and %zu published points%s. %s.", y,
+        x, short_number(m, f->x.axis.from), short_number(m, f->x.axis.to),
         lines.bytes ? lines.bytes : "", m->planned,
-        m->p->measured ? m->p->measured->count : (size_t)0, f->subtitle);
+        m->p->measured ? m->p->measured->count : (size_t)0, below, f->subtitle);
     bh_text_free(&lines);
     return said;
 }

@@ -117,7 +117,12 @@ static bh_code add_all(const bh_plan *plan, const bh_curves_request *r, bh_curve
 {
     char structure[LONGEST_NAME];
     const char *s = r->structures;
-    const bh_curve_request one = {r->setting, r->arm, r->against, s ? structure : NULL, r->points};
+    const bh_curve_request one = {.setting = r->setting,
+                                  .arm = r->arm,
+                                  .against = r->against,
+                                  .structure = s ? structure : NULL,
+                                  .points = r->points,
+                                  .centre = r->centre};
     bh_code bad = BH_OK;
     do {
         s = s ? next_name(s, structure) : NULL;
@@ -136,9 +141,6 @@ bh_code bh_curves_make(const bh_plan *plan, const bh_curves_request *request, bh
     if (bad)
         return bad;
     find(plan, request, out);
-    const bool turns = request->against != BH_AGAINST_ENERGY;
-    if (request->bins_do && turns && out->arm && out->arm->arm.shape == BH_SHAPE_RING)
-        return BH_OK;
     bad = add_all(plan, request, out, err);
     if (bad)
         bh_curves_free(out);

@@ -118,12 +118,13 @@ static void write_left(const bh_easel *e, bh_letters which, const char *text, do
 
 void bh_easel_around(const bh_easel *e)
 {
-    const bh_lettering how = bh_figure_letters(BH_LETTERS_LEGEND);
+    bh_lettering how = bh_figure_letters(BH_LETTERS_LEGEND);
     span_bars(e);
     span_names(e);
     for (size_t i = 0; i < e->l->entry_count; i++) {
         const bh_legend_entry *entry = &e->l->entries[i];
         sample(e, entry);
+        how.wide = entry->wide;
         bh_pen_write(e->pen, &how, entry->name,
                      &(bh_text_place){.x = entry->x + BH_LEGEND_SAMPLE + BH_LEGEND_GAP,
                                       .y = entry->y,
@@ -132,4 +133,8 @@ void bh_easel_around(const bh_easel *e)
     write_left(e, BH_LETTERS_TITLE, e->figure->title, e->l->title_y);
     write_left(e, BH_LETTERS_SUBTITLE, e->figure->subtitle, e->l->subtitle_y);
     write_left(e, BH_LETTERS_FOOT, e->figure->foot, e->l->foot_y);
+    const bh_lettering below = bh_figure_letters(BH_LETTERS_SUBTITLE);
+    if (e->figure->below)
+        bh_pen_write(e->pen, &below, e->figure->below->title,
+                     &(bh_text_place){.x = e->l->frame.x, .y = e->l->below_title_y});
 }

@@ -165,7 +165,7 @@ static void marks(const bh_easel *e, const bh_figure_series *s)
 
 /* --- in front --- */
 
-static void x_ticks(const bh_easel *e)
+static void x_ticks(const bh_easel *e, bool labels)
 {
     const bh_lettering how = bh_figure_letters(BH_LETTERS_TICK);
     const double low = e->l->frame.y + e->l->frame.high;
@@ -176,7 +176,7 @@ static void x_ticks(const bh_easel *e)
     }
     bh_pen_strokes(e->pen, (size_t)e->l->x.minor_count, minor);
     strokes_x(e, low, tick_long, frame_line);
-    for (int i = 0; i < e->l->x.count; i++)
+    for (int i = 0; labels && i < e->l->x.count; i++)
         bh_pen_write(e->pen, &how, e->l->x.tick[i].label,
                      &(bh_text_place){.x = at_x(e, e->l->x.tick[i].at),
                                       .y = low + tick_long + 1.0,
@@ -203,7 +203,7 @@ static void y_ticks(const bh_easel *e)
                                       .centred = true});
 }
 
-static void axes(const bh_easel *e)
+static void axes(const bh_easel *e, bool labels)
 {
     const bh_box *f = &e->l->frame;
     const bh_lettering how = bh_figure_letters(BH_LETTERS_AXIS);
@@ -212,18 +212,21 @@ static void axes(const bh_easel *e)
     cairo_set_line_width(e->pen->to, frame_line);
     cairo_rectangle(e->pen->to, f->x, f->y, f->wide, f->high);
     cairo_stroke(e->pen->to);
-    x_ticks(e);
+    x_ticks(e, labels);
     y_ticks(e);
     bh_figure_axis_words(&e->figure->x, words, sizeof words);
-    bh_pen_write(e->pen, &how, words,
-                 &(bh_text_place){
-                     .x = f->x + f->wide / 2.0, .y = e->l->x_words_y, .align = BH_ALIGN_MIDDLE});
+    if (labels)
+        bh_pen_write(e->pen, &how, words,
+                     &(bh_text_place){.x = f->x + f->wide / 2.0,
+                                      .y = e->l->x_words_y,
+                                      .align = BH_ALIGN_MIDDLE});
     bh_figure_axis_words(&e->figure->y, words, sizeof words);
     bh_pen_write(e->pen, &how, words,
                  &(bh_text_place){.x = 6.0, .y = f->y + f->high / 2.0, .upright = true});
 }
 
-static void draw(const bh_easel *e)
+/* A frame and all within it; `labels`: of the x axis. */
+static void framed(const bh_easel *e, bool labels)
 {
     clip_to_frame(e);
     shades(e);
@@ -233,7 +236,7 @@ static void draw(const bh_easel *e)
         if (e->figure->series[i].kind == BH_SERIES_LINE)
             curve(e, &e->figure->series[i]);
     cairo_restore(e->pen->to);
-    axes(e);
+    axes(e, labels);
     clip_to_frame(e);
     for (size_t i = 0; i < e->figure->series_count; i++)
         if (e->figure->series[i].kind != BH_SERIES_LINE)
@@ -242,6 +245,18 @@ static void draw(const bh_easel *e)
     for (size_t i = 0; i < e->figure->series_count; i++)
         if (e->figure->series[i].kind != BH_SERIES_LINE)
             marks(e, &e->figure->series[i]);
+}
+
+static void draw(const bh_easel *e)
+{
+    const bh_figure *below = e->figure->below;
+    framed(e, !below);
+    if (below) {
+        bh_figure_layout l = *e->l;
+        l.frame = l.below;
+        l.y = l.below_y;
+        framed(&(bh_easel){below, &l, e->pen}, true);
+    }
     bh_easel_around(e);
 }
 

@@ -8,6 +8,7 @@
 
 static const double page_wide = 468.0; /* 6.5 inches: inside the margins of A4 and of letter */
 static const double frame_high = 232.0, margin = 8.0, gap = 4.0;
+static const double below_high = 96.0;
 static const double tick_long = 4.0;
 static const double named_lane = 9.5, bare_lane = 5.0, rail_high = 60.0;
 static const double half_a_bar = 1.0; /* the shortest */
@@ -197,26 +198,33 @@ static bh_code rail(const bh_figure *figure, const bh_pen *pen, bh_figure_layout
 static void add_entry(bh_figure_layout *l, bh_entry_kind kind, size_t number, const char *name)
 {
     if (name)
-        l->entries[l->entry_count++] = (bh_legend_entry){kind, number, name, 0.0, 0.0};
+        l->entries[l->entry_count++] =
+            (bh_legend_entry){.kind = kind, .number = number, .name = name};
 }
 
 /* Rows below the axis, as many entries in each as have room; returns the lower edge. */
 static double flow(const bh_pen *pen, bh_figure_layout *l, double top)
 {
-    const double row = height(pen, BH_LETTERS_LEGEND, "X") + 2.0;
-    double x = l->frame.x, y = top + row / 2.0;
+    const double before = BH_LEGEND_SAMPLE + BH_LEGEND_GAP;
+    double x = l->frame.x, y = top, high = 0.0;
     for (size_t i = 0; i < l->entry_count; i++) {
-        const double wide =
-            BH_LEGEND_SAMPLE + BH_LEGEND_GAP + width(pen, BH_LETTERS_LEGEND, l->entries[i].name);
-        if (x > l->frame.x && x + wide > l->wide - margin) {
+        bh_lettering how = bh_figure_letters(BH_LETTERS_LEGEND);
+        how.wide = l->wide - margin - l->frame.x - before;
+        double wide = 0.0, tall = 0.0;
+        bh_pen_measure(pen, &how, l->entries[i].name, NULL, &tall);
+        wide = fmin(width(pen, BH_LETTERS_LEGEND, l->entries[i].name), how.wide);
+        if (x > l->frame.x && x + before + wide > l->wide - margin) {
             x = l->frame.x;
-            y += row;
+            y += high;
+            high = 0.0;
         }
         l->entries[i].x = x;
-        l->entries[i].y = y;
-        x += wide + 3.0 * BH_LEGEND_GAP;
+        l->entries[i].y = y + tall / 2.0 + 1.0;
+        l->entries[i].wide = how.wide;
+        high = fmax(high, tall + 2.0);
+        x += before + wide + 3.0 * BH_LEGEND_GAP;
     }
-    return l->entry_count ? y + row / 2.0 : top;
+    return y + high;
 }
 
 static bh_code legend(const bh_figure *figure, bh_figure_layout *l)
@@ -241,16 +249,33 @@ static bool usable(const bh_axis *axis)
            (!axis->logarithmic || axis->from > 0.0);
 }
 
+/* The lower frame with its title above it; returns [pt] where the lowest frame ends. */
+static double place_below(const bh_figure *figure, const bh_pen *pen, bh_figure_layout *l)
+{
+    const double end = l->frame.y + l->frame.high;
+    if (!figure->below)
+        return end;
+    l->below = l->frame;
+    l->below_title_y = end + gap + 1.0;
+    l->below.y = l->below_title_y + height(pen, BH_LETTERS_SUBTITLE, figure->below->title) + 1.0;
+    l->below.high = below_high;
+    return l->below.y + below_high;
+}
+
 bh_code bh_figure_layout_make(const bh_figure *figure, const bh_pen *pen, bh_figure_layout *l,
                               bh_error *err)
 {
     *l = (bh_figure_layout){.wide = page_wide};
-    if (!usable(&figure->x.axis) || !usable(&figure->y.axis))
+    if (!usable(&figure->x.axis) || !usable(&figure->y.axis) ||
+        (figure->below && !usable(&figure->below->y.axis)))
         return bh_fail(err, BH_EDOMAIN, "an axis of the figure has no length");
     choose(pen, &figure->y.axis, frame_high, true, &l->y);
+    if (figure->below)
+        choose(pen, &figure->below->y.axis, below_high, true, &l->below_y);
     const double tick_row = height(pen, BH_LETTERS_TICK, "0"),
                  words_row = height(pen, BH_LETTERS_AXIS, "X");
-    l->frame.x = margin + words_row + gap + widest_label(pen, &l->y) + tick_long + 2.0;
+    l->frame.x = margin + words_row + gap +
+                 fmax(widest_label(pen, &l->y), widest_label(pen, &l->below_y)) + tick_long + 2.0;
     l->frame.wide = page_wide - l->frame.x - 2.0 * margin;
     l->frame.high = frame_high;
     bh_code bad = rail(figure, pen, l);
@@ -262,7 +287,8 @@ bh_code bh_figure_layout_make(const bh_figure *figure, const bh_pen *pen, bh_fig
     l->subtitle_y = l->title_y + height(pen, BH_LETTERS_TITLE, figure->title) + 1.0;
     const double above = l->subtitle_y + height(pen, BH_LETTERS_SUBTITLE, figure->subtitle);
     l->frame.y = above + 1.5 * gap + l->lanes * l->lane_high + (l->lanes ? gap : 0.0);
-    l->x_words_y = l->frame.y + frame_high + tick_long + 1.0 + tick_row + 1.0;
+    const double bottom = place_below(figure, pen, l);
+    l->x_words_y = bottom + tick_long + 1.0 + tick_row + 1.0;
     const double below = flow(pen, l, l->x_words_y + words_row + 1.5 * gap);
     l->foot_y = below + 1.5 * gap;
     l->high = ceil(l->foot_y + height(pen, BH_LETTERS_FOOT, figure->foot) + margin / 2.0);

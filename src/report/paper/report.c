@@ -185,8 +185,10 @@ bh_code bh_report_make(const bh_report_request *request, bh_report *out, bh_erro
 
 void bh_report_free(bh_report *report)
 {
-    for (size_t i = 0; i < BH_MOST_REPORT_CURVES; i++)
+    for (size_t i = 0; i < BH_MOST_REPORT_CURVES; i++) {
         bh_curves_free(&report->curves[i]);
+        bh_curves_free(&report->models[i]);
+    }
     bh_arena_free(report->arena);
     *report = (bh_report){.arena = NULL};
 }
