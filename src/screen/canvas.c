@@ -199,6 +199,17 @@ void bh_canvas_clear(bh_canvas *canvas, bh_spot spot)
     }
 }
 
+void bh_canvas_join_words(bh_canvas *canvas, const bool blank[BH_LOOK_COUNT])
+{
+    for (int r = 0; r < canvas->rows; r++)
+        for (int c = 1; c < canvas->columns; c++) {
+            bh_cell *cell = bh_canvas_at(canvas, r, c);
+            const bh_look before = bh_canvas_at(canvas, r, c - 1)->look;
+            if (cell->point == ' ' && !cell->mark && blank[cell->look] && blank[before])
+                cell->look = before;
+        }
+}
+
 static void append_point(bh_text *into, uint32_t point)
 {
     char out[5] = {0};

@@ -38,9 +38,10 @@ static int say_all(const bh_diags *said, bh_severity severity, int row, int end,
 
 static void draw_said(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
-    const bh_diags *said = model->now ? bh_outcome_diags(model->now) : NULL;
-    if (!model->edit)
-        said = model->said;
+    const bh_outcome *o = model->now;
+    if (o && o->of->plan && !o->complete && !o->failed[0] && bh_model_concluded(model))
+        o = bh_model_concluded(model); /* until the new ones are known, like the rows */
+    const bh_diags *said = !model->edit ? model->said : o ? bh_outcome_diags(o) : NULL;
     if (!said)
         return;
     const int end = places->message + places->message_rows;
@@ -100,9 +101,15 @@ static bool tries(const bh_model *model)
     return model->over == BH_OVER_FIELD;
 }
 
+/* What is typed and what happened takes the first line; the others, where there are some, stay. */
 static void draw_messages(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
     const bool find = model->over == BH_OVER_FIND, name = model->over == BH_OVER_NAME;
+    if (places->message >= 0) {
+        draw_said(model, places, canvas);
+        if (find || name || tries(model) || model->note[0])
+            bh_canvas_clear(canvas, (bh_spot){places->message, 0, canvas->columns});
+    }
     if (find || name)
         draw_prompt(model, places, canvas, find ? "look for" : "save as");
     if (places->message < 0 || name)
@@ -111,8 +118,6 @@ static void draw_messages(const bh_model *model, const bh_arrangement *places, b
         draw_typed(model, places, canvas);
     else if (model->note[0])
         draw_note(model, places, canvas);
-    else if (!find)
-        draw_said(model, places, canvas);
 }
 
 /* --- cautions --- */

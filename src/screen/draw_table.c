@@ -143,11 +143,12 @@ static int draw_state(const bh_model *model, bh_spot spot, bh_canvas *canvas)
 }
 
 /* In some row that is in view. */
-static bool column_changed(const bh_model *model, const bh_arrangement *places, int column)
+static bool column_changed(const bh_model *model, const bh_arrangement *places,
+                           const bh_table_column *column)
 {
     const bh_table_view *v = &model->table;
     for (size_t i = v->top; i < v->count && i < v->top + (size_t)places->table_rows; i++)
-        if (bh_table_changed(&v->rows[i], column))
+        if (bh_table_changed(model, &v->rows[i], column))
             return true;
     return false;
 }
@@ -160,7 +161,7 @@ static void draw_column_head(const bh_model *model, const bh_arrangement *places
     const char *mark = v->order != c->column ? "" : v->falling ? "\u2193" : "\u2191";
     bh_look look = BH_LOOK_TITLE;
     char heading[48];
-    if (column_changed(model, places, c->column))
+    if (column_changed(model, places, c))
         look = model->trying ? BH_LOOK_TRIAL : BH_LOOK_CHANGED;
     (void)snprintf(heading, sizeof heading, "%s%.40s", mark, bh_column_at(c->column)->heading);
     if (c->column == BH_COL_SETTING)
@@ -194,11 +195,12 @@ static void draw_heads(const bh_model *model, const bh_arrangement *places,
 
 /* The column that is compared stands out; which others changed is marked in their heads, and a row
  * that is still of before by its name: else every cell of a large table would be sent twice. */
-static bh_look look_of(const bh_model *model, const bh_table_row *row, int column)
+static bh_look look_of(const bh_model *model, const bh_table_row *row,
+                       const bh_table_column *column)
 {
     if (row->stale)
-        return column == BH_COL_SETTING ? BH_LOOK_STALE : BH_LOOK_PLAIN;
-    if (column == model->table.compared && bh_table_changed(row, column))
+        return column->column == BH_COL_SETTING ? BH_LOOK_STALE : BH_LOOK_PLAIN;
+    if (column->column == model->table.compared && bh_table_changed(model, row, column))
         return model->trying ? BH_LOOK_TRIAL : BH_LOOK_CHANGED;
     return BH_LOOK_PLAIN;
 }
@@ -219,7 +221,8 @@ static void draw_was(const bh_model *model, const bh_table_row *row, bh_spot spo
 {
     char cell[BH_CELL_ROOM];
     const bh_table_column *c = compared_column(model);
-    if (!c || !row->before || !(row->change > 0) || row->change < 0.2 * model->table.most_change)
+    if (!c || !row->before || !(row->change > 0) || row->change < 0.2 * model->table.most_change ||
+        !bh_table_changed(model, row, c))
         return;
     bh_table_cell(model, row, c, true, cell);
     (void)bh_canvas_put_right(canvas, spot, BH_LOOK_QUIET, cell);
@@ -229,7 +232,7 @@ static void draw_cell(const bh_model *model, const bh_table_row *row, const bh_t
                       bh_spot spot, bh_canvas *canvas)
 {
     char cell[BH_CELL_ROOM];
-    const bh_look look = row->bin ? BH_LOOK_QUIET : look_of(model, row, c->column);
+    const bh_look look = row->bin ? BH_LOOK_QUIET : look_of(model, row, c);
     bh_table_cell(model, row, c, false, cell);
     if (c->column == BH_COL_SETTING)
         (void)bh_canvas_put(canvas, spot, look, cell);

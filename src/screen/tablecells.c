@@ -100,11 +100,41 @@ static int widest(int a, int b)
     return a > b ? a : b;
 }
 
-/* Columns are as wide as what was in view since the plan was opened: they do not jump about. */
+static void widen(const bh_model *model, size_t row, const bh_table_column *c, int *width)
+{
+    char cell[BH_CELL_ROOM];
+    bh_table_cell(model, &model->table.rows[row], c, false, cell);
+    *width = widest(*width, bh_text_columns(cell, model->ascii));
+}
+
+/* The longest cells of a column are its smallest and its largest: few need to be written out. */
+static void measure_ends(const bh_model *model, const bh_table_column *c, int *width)
+{
+    const bh_table_view *v = &model->table;
+    size_t small = v->count, large = v->count, least = v->count;
+    for (size_t i = 0; i < v->count; i++) {
+        const double x = v->rows[i].now->number[c->column];
+        if (!isfinite(x) || !(fabs(x) > 0))
+            continue;
+        if (small == v->count || fabs(x) < fabs(v->rows[small].now->number[c->column]))
+            small = i;
+        if (large == v->count || fabs(x) > fabs(v->rows[large].now->number[c->column]))
+            large = i;
+        if (least == v->count || x < v->rows[least].now->number[c->column])
+            least = i;
+    }
+    if (small == v->count)
+        return;
+    widen(model, small, c, width);
+    widen(model, large, c, width);
+    widen(model, least, c, width);
+}
+
+/* Columns are as wide as what the table has had since the plan was opened: they do not jump about
+ * when other rows come into view. */
 static void set_widths(bh_model *model)
 {
     bh_table_view *v = &model->table;
-    char cell[BH_CELL_ROOM];
     const size_t rows = (size_t)bh_arrange(model).table_rows;
     for (int i = 0; i < v->column_count; i++) {
         bh_table_column *c = &v->columns[i];
@@ -112,10 +142,9 @@ static void set_widths(bh_model *model)
         int *width = &v->widths[c->column];
         const int heads = widest((int)strlen(row->heading), (int)strlen(c->unit));
         *width = widest(*width, heads);
-        for (size_t r = v->top; r < v->count && r < v->top + rows; r++) {
-            bh_table_cell(model, &v->rows[r], c, false, cell);
-            *width = widest(*width, bh_text_columns(cell, model->ascii));
-        }
+        measure_ends(model, c, width);
+        for (size_t r = v->top; r < v->count && r < v->top + rows; r++)
+            widen(model, r, c, width);
         if (c->column == BH_COL_SETTING && *width > 20)
             *width = 20;
         c->width = *width;
@@ -182,6 +211,17 @@ void bh_table_cell(const bh_model *model, const bh_table_row *row, const bh_tabl
         (void)snprintf(out, BH_CELL_ROOM, "0");
     else
         (void)bh_number_digits(value * column->scale, column->digits, out, BH_CELL_ROOM);
+}
+
+bool bh_table_changed(const bh_model *model, const bh_table_row *row, const bh_table_column *column)
+{
+    char now[BH_CELL_ROOM], before[BH_CELL_ROOM];
+    const int c = column->column;
+    if (row->stale || !row->before || fabs(row->now->number[c] - row->before->number[c]) <= 0)
+        return false;
+    bh_table_cell(model, row, column, false, now);
+    bh_table_cell(model, row, column, true, before);
+    return strcmp(now, before) != 0;
 }
 
 /* --- keys --- */

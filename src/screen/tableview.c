@@ -225,11 +225,6 @@ static double relative(const bh_table_row *row, int column)
     return fabs(a) > 0 ? fabs(b / a - 1) : fabs(b) > 0 ? 1 : 0;
 }
 
-bool bh_table_changed(const bh_table_row *row, int column)
-{
-    return !row->stale && relative(row, column) > 1e-9;
-}
-
 /* The column of which the old value is shown: the one in focus, or hours. */
 static int compared(const bh_table_view *v)
 {

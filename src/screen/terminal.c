@@ -27,6 +27,7 @@ struct terminal {
     int rows, columns;
     attr_t looks[BH_LOOK_COUNT];
     short pairs[BH_LOOK_COUNT];
+    bool blank[BH_LOOK_COUNT]; /* the look does not show on a blank */
     bool drawn;
 };
 
@@ -52,7 +53,7 @@ static void set_looks(struct terminal *t)
     const short blue = many ? 32 : COLOR_CYAN, orange = many ? 166 : COLOR_YELLOW;
     (void)init_pair(1, blue, ground);
     (void)init_pair(2, orange, ground);
-    t->pairs[BH_LOOK_FIELD] = t->pairs[BH_LOOK_KEY] = 1;
+    t->pairs[BH_LOOK_FIELD] = 1; /* not keys: a menu has many, and bold is enough */
     t->pairs[BH_LOOK_CAUTION] = t->pairs[BH_LOOK_WARNING] = t->pairs[BH_LOOK_ERROR] = 2;
     if (!many) { /* on a light ground these two are too pale: their attributes carry them */
         t->looks[BH_LOOK_TRIAL] |= A_UNDERLINE;
@@ -100,6 +101,12 @@ static void set_modes(void)
     (void)leaveok(stdscr, FALSE);
 }
 
+static void find_blank(struct terminal *t)
+{
+    for (int i = 0; i < BH_LOOK_COUNT; i++)
+        t->blank[i] = (t->looks[i] & (A_REVERSE | A_UNDERLINE)) == 0;
+}
+
 static bool begin(struct terminal *t)
 {
     struct termios before;
@@ -113,6 +120,7 @@ static bool begin(struct terminal *t)
     keep_way_back(&before);
     set_modes();
     set_looks(t);
+    find_blank(t);
     bh_alarm_screen(true);
     return true;
 }
@@ -199,6 +207,7 @@ static void put_cell(const struct terminal *t, int row, int column, const bh_cel
 static void show(struct terminal *t)
 {
     bh_desk_draw(t->desk, &t->wanted);
+    bh_canvas_join_words(&t->wanted, t->blank);
     const bh_canvas *w = &t->wanted, *s = &t->shown;
     const bool all = !t->drawn || s->rows != w->rows || s->columns != w->columns;
     if (all)

@@ -23,6 +23,11 @@ static void first_error(const bh_diags *diags, char *why, size_t size)
     copy(why, size, "");
 }
 
+static bool same_text(const bh_text *a, const char *bytes, size_t length)
+{
+    return a->bytes && bytes && a->length == length && memcmp(a->bytes, bytes, length) == 0;
+}
+
 static bool is_of(const bh_outcome *o, const char *bytes, size_t length)
 {
     return o && o->of->length == length && memcmp(o->of->bytes, bytes, length) == 0;
@@ -53,7 +58,7 @@ static bool is_of_text(const bh_model *model, const bh_outcome *o)
 {
     size_t length = 0;
     const char *bytes = bh_edit_bytes(model->edit, &length);
-    return is_of(o, bytes, length) && o->complete;
+    return o && o->complete && is_of(o, bytes, length);
 }
 
 static void stop_trying(bh_model *model)
@@ -129,15 +134,12 @@ void bh_value_attempt(bh_model *model, const char *text)
     if (!can && diags)
         first_error(diags, model->why, sizeof model->why);
     bh_diags_free(diags);
-    const bool same =
-        trial.length == length && trial.bytes && memcmp(trial.bytes, bytes, length) == 0;
-    if (!can || trial.failed || same) {
+    if (!can || trial.failed || same_text(&trial, bytes, length)) {
         bh_text_free(&trial);
         stop_trying(model);
         return;
     }
-    if (model->trying && trial.length == model->trial.length &&
-        memcmp(trial.bytes, model->trial.bytes, trial.length) == 0) {
+    if (model->trying && same_text(&trial, model->trial.bytes, model->trial.length)) {
         bh_text_free(&trial); /* it is being evaluated, or was */
         return;
     }

@@ -74,6 +74,10 @@ static const struct {
      "<Tab><Right><Right><Right><Right><Right><Right><Right><Right><Right><Right>", 24, 80, false,
      6},
     {"large", "hydrogen-separation", "", 60, 200, false, 6},
+    /* warnings stay while something is typed; a change of the last digits, as that of Q2 here, is
+     * none that is shown */
+    {"large-typing", "hydrogen-separation", "<Tab><Right><Right><Tab>lcurrent<Escape>4 uA", 60, 200,
+     false, 12},
     {"small", "hydrogen-separation", "", 10, 40, false, 6},
     {"small-table", "hydrogen-separation", "<Tab>", 10, 40, false, 6},
     {"tiny", "hydrogen-separation", "", 3, 12, false, 6},

@@ -72,6 +72,10 @@ bh_cell *bh_canvas_at(const bh_canvas *canvas, int row, int column);
 int bh_text_columns(const char *text, bool ascii);
 size_t bh_text_fit(const char *text, int columns);
 
+/* Blanks take the look of what stands before them where neither look shows on a blank (`blank`): a
+ * terminal is told of fewer changes of look, and the user sees the same. */
+void bh_canvas_join_words(bh_canvas *canvas, const bool blank[BH_LOOK_COUNT]);
+
 /* Appends the canvas as text, a line a row, blanks at the ends left out. */
 void bh_canvas_print(const bh_canvas *canvas, bh_text *into);
 

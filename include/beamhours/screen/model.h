@@ -303,7 +303,9 @@ bool bh_table_press(bh_model *model, const bh_press *press);
 enum { BH_CELL_ROOM = 64 };
 void bh_table_cell(const bh_model *model, const bh_table_row *row, const bh_table_column *column,
                    bool before, char out[BH_CELL_ROOM]);
-bool bh_table_changed(const bh_table_row *row, int column);
+/* Is another number shown than before? */
+bool bh_table_changed(const bh_model *model, const bh_table_row *row,
+                      const bh_table_column *column);
 void bh_table_order(bh_model *model);
 void bh_table_pin(bh_model *model);
 void bh_table_open_bins(bh_model *model);
