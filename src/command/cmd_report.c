@@ -8,6 +8,7 @@
 #include "beamhours/base/sha256.h"
 #include "beamhours/command/complain.h"
 #include "beamhours/command/input.h"
+#include "beamhours/command/waiting.h"
 #include "beamhours/report/report.h"
 
 enum { LONGEST_MATERIAL = 1 << 20, MOST_FILES = 256 };
@@ -150,15 +151,20 @@ static int make(struct job *job)
     bh_report report;
     bh_text out = {0};
     bh_error err = {.code = BH_OK};
+    bh_waiting waiting;
+    bh_waiting_begin(&waiting, stderr);
     say_command(job);
     const bh_report_request request = {.table = job->in.table,
                                        .version = bh_version(),
                                        .command = job->command.bytes ? job->command.bytes : "",
                                        .file_count = job->count,
-                                       .files = job->files};
+                                       .files = job->files,
+                                       .progress = &waiting.progress};
     bh_code bad = bh_report_make(&request, &report, &err);
+    bh_progress_tell(&waiting.progress, "pages", 0, 0);
     if (!bad)
         bad = write_as(job, &report.paper, &out, &err);
+    bh_waiting_end(&waiting);
     bh_report_free(&report);
     if (!bad)
         return bh_output(&out, job->a->value[BH_OPT_OUTPUT]);

@@ -8,6 +8,7 @@
 #include "beamhours/base/file.h"
 #include "beamhours/command/complain.h"
 #include "beamhours/command/places.h"
+#include "beamhours/command/waiting.h"
 
 enum { MOST_BYTES = 1024 * 1024 };
 
@@ -99,8 +100,11 @@ int bh_input_plan(bh_input *in, const bh_arguments *arguments)
 int bh_input_evaluate(bh_input *in, bool bins)
 {
     bh_error err = {.code = BH_OK};
-    const bh_evaluation how = {.bins = bins};
+    bh_waiting waiting;
+    bh_waiting_begin(&waiting, stderr);
+    const bh_evaluation how = {.bins = bins, .progress = &waiting.progress};
     in->table = bh_table_new(in->plan, &how, in->diags, &err);
+    bh_waiting_end(&waiting);
     return in->table ? 0 : bh_complain(stderr, &err);
 }
 

@@ -97,7 +97,8 @@ static bh_code evaluate_few(bh_table *table, bh_evaluator *evaluator, size_t eno
     return BH_OK;
 }
 
-static bh_code evaluate(bh_table *table, bh_evaluator *evaluator, bh_error *err)
+static bh_code evaluate(bh_table *table, bh_evaluator *evaluator, const bh_progress *progress,
+                        bh_error *err)
 {
     const bh_plan *plan = table->plan;
     bh_stretch *hours = bh_arena_take(table->arena, plan->setting_count + 1, sizeof *hours);
@@ -111,6 +112,7 @@ static bh_code evaluate(bh_table *table, bh_evaluator *evaluator, bh_error *err)
         hours[s] = (bh_stretch){.full = out.full, .empty = out.empty};
         out.whole += plan->settings[s].arm_count;
         out.bins += out.bins ? bins_of(&plan->settings[s]) : 0;
+        bh_progress_tell(progress, "settings", s + 1, plan->setting_count);
     }
     return bh_totals_from_plan(plan, hours, table->arena, &table->end.totals, err);
 }
@@ -163,7 +165,7 @@ static bh_code fill(bh_table *table, const bh_evaluation *how, const bh_diags *s
         code = bh_evaluator_prepare(&evaluator, table->plan, table->arena, err);
     if (!code)
         code = how->enough ? evaluate_few(table, &evaluator, how->enough, err)
-                           : evaluate(table, &evaluator, err);
+                           : evaluate(table, &evaluator, how->progress, err);
     table->causes = evaluator.systematics.causes;
     if (!code)
         code = conclude(table, remarks, said, err);

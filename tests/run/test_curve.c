@@ -33,12 +33,20 @@ static const struct {
     double lo, hi;
     const char *marks; /* names, one point after the other, without repetition */
 } curves[] = {
-    {{"K1", "A", BH_AGAINST_ANGLE, NULL, 0, NULL, NULL}, "angle_deg", 5, 175, "K1 K2"},
-    {{"K2", "A", BH_AGAINST_Q2, NULL, 0, NULL, NULL}, "q2_GeV2", 4e-4, 0.7, "K1 K2"},
-    {{"K2", "A", BH_AGAINST_ENERGY, NULL, 0, NULL, NULL}, "beam_kinetic_MeV", 100, 1600, "K2 K3"},
-    {{"K2", "A", BH_AGAINST_EPSILON, NULL, 0, NULL, NULL}, "epsilon", 0.02, 0.98, "K2"},
-    {{"K4", "R", BH_AGAINST_ANGLE, NULL, 0, NULL, NULL}, "angle_deg", 20, 80, "K4"},
-    {{"K6", "O", BH_AGAINST_ENERGY, NULL, 0, NULL, NULL}, "beam_kinetic_MeV", 100, 1600, "K6"},
+    {{"K1", "A", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL}, "angle_deg", 5, 175, "K1 K2"},
+    {{"K2", "A", BH_AGAINST_Q2, NULL, false, 0, NULL, NULL}, "q2_GeV2", 4e-4, 0.7, "K1 K2"},
+    {{"K2", "A", BH_AGAINST_ENERGY, NULL, false, 0, NULL, NULL},
+     "beam_kinetic_MeV",
+     100,
+     1600,
+     "K2 K3"},
+    {{"K2", "A", BH_AGAINST_EPSILON, NULL, false, 0, NULL, NULL}, "epsilon", 0.02, 0.98, "K2"},
+    {{"K4", "R", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL}, "angle_deg", 20, 80, "K4"},
+    {{"K6", "O", BH_AGAINST_ENERGY, NULL, false, 0, NULL, NULL},
+     "beam_kinetic_MeV",
+     100,
+     1600,
+     "K6"},
 };
 
 START_TEST(points_rise_and_settings_are_marked)
@@ -69,7 +77,8 @@ END_TEST
 START_TEST(a_point_is_a_setting)
 {
     struct evaluated e = read_text(plan);
-    bh_curve *c = curve(&e, &(bh_curve_request){"K1", "A", BH_AGAINST_ANGLE, NULL, 0, NULL, NULL});
+    bh_curve *c =
+        curve(&e, &(bh_curve_request){"K1", "A", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL});
     for (size_t i = 0; i < bh_curve_count(c); i += 20) {
         char text[1024];
         snprintf(text, sizeof text,
@@ -91,7 +100,7 @@ START_TEST(epsilon_varies_at_the_same_q2)
 {
     struct evaluated e = read_text(plan);
     bh_curve *c =
-        curve(&e, &(bh_curve_request){"K1", "A", BH_AGAINST_EPSILON, NULL, 0, NULL, NULL});
+        curve(&e, &(bh_curve_request){"K1", "A", BH_AGAINST_EPSILON, NULL, false, 0, NULL, NULL});
     for (size_t i = 0; i < bh_curve_count(c); i++) {
         ck_assert_relative(bh_curve_y(c, i, BH_COL_Q2), bh_curve_y(c, 0, BH_COL_Q2), 1e-9, "Q2");
         ck_assert_relative(bh_curve_y(c, i, BH_COL_EPSILON), bh_curve_x(c, i), 1e-9, "epsilon");
@@ -105,8 +114,9 @@ START_TEST(another_structure_changes_the_struck_nucleus)
 {
     struct evaluated e = read_text(plan);
     bh_curve *a =
-        curve(&e, &(bh_curve_request){"K1", "A", BH_AGAINST_ANGLE, "point", 0, NULL, NULL});
-    bh_curve *b = curve(&e, &(bh_curve_request){"K1", "A", BH_AGAINST_ANGLE, NULL, 0, NULL, NULL});
+        curve(&e, &(bh_curve_request){"K1", "A", BH_AGAINST_ANGLE, "point", false, 0, NULL, NULL});
+    bh_curve *b =
+        curve(&e, &(bh_curve_request){"K1", "A", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL});
     ck_assert_uint_eq(bh_curve_count(a), bh_curve_count(b));
     for (size_t i = 0; i < bh_curve_count(a); i++)
         ck_assert_double_gt(bh_curve_y(a, i, BH_COL_POINT_CROSS_SECTION),
@@ -146,12 +156,13 @@ static const struct {
     bh_curve_request request;
     const char *words;
 } mistakes[] = {
-    {{"K9", NULL, BH_AGAINST_ANGLE, NULL, 0, NULL, NULL},
+    {{"K9", NULL, BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL},
      "no setting \"K9\"; there are K1, K2, K3"},
-    {{"K1", "B", BH_AGAINST_ANGLE, NULL, 0, NULL, NULL}, "setting K1 has no arm \"B\"; there is A"},
-    {{"K6", "O", BH_AGAINST_ANGLE, NULL, 0, NULL, NULL}, "only --against energy varies it"},
-    {{"K1", "A", BH_AGAINST_ANGLE, "kelly-2004", 0, NULL, NULL}, "does not describe 12C"},
-    {{"K1", "A", BH_AGAINST_ANGLE, "fermi-2q", 0, NULL, NULL}, "did you mean"},
+    {{"K1", "B", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL},
+     "setting K1 has no arm \"B\"; there is A"},
+    {{"K6", "O", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL}, "only --against energy varies it"},
+    {{"K1", "A", BH_AGAINST_ANGLE, "kelly-2004", false, 0, NULL, NULL}, "does not describe 12C"},
+    {{"K1", "A", BH_AGAINST_ANGLE, "fermi-2q", false, 0, NULL, NULL}, "did you mean"},
 };
 
 START_TEST(what_cannot_be_drawn_is_refused)

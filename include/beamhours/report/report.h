@@ -17,6 +17,7 @@ typedef struct {
     const char *command;   /* that makes the report again */
     size_t file_count;
     const bh_report_file *files; /* the plan first, then the materials in use */
+    const bh_progress *progress; /* told what is being written; NULL: not */
 } bh_report_request;
 
 enum { BH_MOST_REPORT_CURVES = 6 };

@@ -6,6 +6,7 @@
 #include <stddef.h>
 
 #include "beamhours/base/diag.h"
+#include "beamhours/base/progress.h"
 #include "beamhours/plan/plan.h"
 #include "beamhours/run/cause.h"
 #include "beamhours/run/columns.h"
@@ -40,7 +41,8 @@ typedef struct {
     bool bins;                      /* rows of bins are wanted too */
     bool (*cancelled)(void *asker); /* polled at least each 5 ms; NULL: never */
     void *asker;
-    bh_workspace *workspace; /* kept by the caller; NULL: one for this evaluation alone */
+    const bh_progress *progress; /* told after each setting; NULL: not */
+    bh_workspace *workspace;     /* kept by the caller; NULL: one for this evaluation alone */
     size_t enough; /* 0: all rows; else the table ends with the setting that makes it so many rows
                       with a systematic uncertainty, and has no totals */
 } bh_evaluation;

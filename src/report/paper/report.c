@@ -109,6 +109,7 @@ static bh_code tell(bh_reporting *x, bh_error *err)
     for (size_t i = 0; i < x->view.row_count && x->told_count < BH_MOST_TOLD; i++) {
         if (!all && like_an_earlier(x, i))
             continue;
+        bh_progress_tell(x->request->progress, "rows", i, x->view.row_count);
         bh_explanation *e = bh_report_explain(x, i, err);
         if (!e)
             return err->code;
@@ -129,6 +130,7 @@ static bh_code prepare(bh_reporting *x, bh_error *err)
         return bad;
     bh_stretches_of(x->table, x->hours);
     bad = bh_time_of_plan(x->plan, x->hours, x->w.arena, &x->time, err);
+    bh_progress_tell(x->request->progress, "what if", 0, 0);
     bad = bad ? bad : bh_what_if_make(x->table, x->w.arena, x->what_if, err);
     return bad ? bad : tell(x, err);
 }

@@ -178,6 +178,7 @@ bh_code bh_report_figures(bh_reporting *x, bh_error *err)
             left++;
             continue;
         }
+        bh_progress_tell(x->request->progress, "figures", made, BH_MOST_REPORT_CURVES);
         bad = curves_of(x, row, &x->report->curves[made], &x->report->models[made], err);
         made++;
     }

@@ -186,8 +186,10 @@ bh_code bh_report_backgrounds(bh_reporting *x, bh_error *err)
                         "differ in its last digit",
                         columns, COUNT(columns));
     bh_code bad = BH_OK;
-    for (size_t row = 0; !bad && row < x->view.row_count; row++)
+    for (size_t row = 0; !bad && row < x->view.row_count; row++) {
+        bh_progress_tell(x->request->progress, "backgrounds", row, x->view.row_count);
         bad = items_of(x, row, err);
+    }
     bh_paper_table_close(&x->w);
     return bad;
 }
