@@ -42,6 +42,7 @@ static const struct {
      "K2 K3"},
     {{"K2", "A", BH_AGAINST_EPSILON, NULL, false, 0, NULL, NULL}, "epsilon", 0.02, 0.98, "K2"},
     {{"K4", "R", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL}, "angle_deg", 20, 80, "K4"},
+    {{"K6", "O", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL}, "angle_deg", 20, 30, "K6"},
     {{"K6", "O", BH_AGAINST_ENERGY, NULL, false, 0, NULL, NULL},
      "beam_kinetic_MeV",
      100,
@@ -160,7 +161,7 @@ static const struct {
      "no setting \"K9\"; there are K1, K2, K3"},
     {{"K1", "B", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL},
      "setting K1 has no arm \"B\"; there is A"},
-    {{"K6", "O", BH_AGAINST_ANGLE, NULL, false, 0, NULL, NULL}, "only --against energy varies it"},
+    {{"K6", "O", BH_AGAINST_EPSILON, NULL, false, 0, NULL, NULL}, "a ring stands still"},
     {{"K1", "A", BH_AGAINST_ANGLE, "kelly-2004", false, 0, NULL, NULL}, "does not describe 12C"},
     {{"K1", "A", BH_AGAINST_ANGLE, "fermi-2q", false, 0, NULL, NULL}, "did you mean"},
 };
