@@ -44,6 +44,8 @@ $(BUILD)/%.a: ; $(quiet) rm -f $@ && ar rcs $@ $(filter %.o,$^)
 $(BUILD)/%.so.0: ; $(LINK) -shared -Wl,-soname,$(@F) $(if $(HARDEN),-Xlinker --no-undefined) $(filter %.o,$^) $(LIBS)
 TTY := $(filter $(BUILD)/tests/terminal/%,$(call bin,$(TESTS) $(BENCH)))
 $(TTY): $(BUILD)/tests/terminal/tty.o
+$(BUILD)/tests/terminal/test_disk: | $(BUILD)/tests/terminal/failing.so
+$(BUILD)/tests/terminal/failing.so: tests/terminal/failing.c ; $(quiet) mkdir -p $(@D) && $(CC) $(STD) $(WARN) -O1 -fPIC -shared -o $@ $<
 $(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $(filter %.o,$^) $(filter %.a,$^) $(TEST_LIBS) $(FRONT_LIBS) $(LIBS)
 $(call bin,$(filter %_faults.c,$(TESTS))): LDFLAGS += $(patsubst %,-Xlinker --wrap=%,malloc calloc realloc write fsync fchmod close rename)
 $(call bin,$(filter %_slow.c,$(TESTS))): LDFLAGS += -Xlinker --wrap=bh_structure_eval

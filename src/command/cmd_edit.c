@@ -1,4 +1,6 @@
 /* cmd_edit.c - beamhours edit [PLAN]: the terminal screen. */
+#include <errno.h>
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 #include <sysexits.h>
@@ -47,6 +49,19 @@ static int beginnings(bh_demos *demos, bh_desk_start *start)
     return status;
 }
 
+/* What became of unsaved work when a signal ended the program. */
+static void tell_kept(bh_desk *desk)
+{
+    const bh_rescue *rescue = bh_desk_rescue(desk);
+    const bh_kept kept = bh_desk_secure(desk, 0);
+    if (kept == BH_KEPT)
+        fprintf(stderr, "beamhours: edit: unsaved work is kept in %s\n", bh_rescue_path(rescue));
+    else if (kept == BH_KEPT_NOT)
+        fprintf(stderr, "beamhours: edit: unsaved work is LOST: %s cannot be written: %s\n",
+                bh_rescue_path(rescue),
+                strerror(errno)); /* NOLINT(concurrency-mt-unsafe): this thread alone */
+}
+
 static int show(bh_desk *desk)
 {
     int number = 0;
@@ -57,6 +72,7 @@ static int show(bh_desk *desk)
               stderr);
         return EX_UNAVAILABLE;
     case BH_TERMINAL_SIGNAL:
+        tell_kept(desk);
         return 128 + number; /* as a shell would say it */
     case BH_TERMINAL_DONE:
         break;

@@ -284,11 +284,13 @@ bool bh_desk_suspends(bh_desk *desk)
     return yes;
 }
 
-void bh_desk_secure(bh_desk *desk, double now)
+bh_kept bh_desk_secure(bh_desk *desk, double now)
 {
-    bh_keeper_tell(&desk->keeper, &desk->model, now);
-    if (desk->keeper.rescue && bh_rescue_write(desk->keeper.rescue))
-        desk->keeper.pending = -1;
+    bh_keeper *k = &desk->keeper;
+    bh_keeper_tell(k, &desk->model, now);
+    if (!k->rescue || bh_model_unsaved(&desk->model) == 0)
+        return BH_KEPT_NOTHING;
+    return bh_keeper_write(k, &desk->model) ? BH_KEPT : BH_KEPT_NOT;
 }
 
 void bh_desk_awake(bh_desk *desk, double now)
@@ -296,6 +298,13 @@ void bh_desk_awake(bh_desk *desk, double now)
     desk->keeper.looked = -1e9;
     if (desk->model.edit)
         (void)bh_keeper_look(&desk->keeper, &desk->model, now);
+}
+
+bool bh_desk_spoke(bh_desk *desk)
+{
+    const bool yes = desk->model.spoke;
+    desk->model.spoke = false;
+    return yes;
 }
 
 void bh_desk_say(bh_desk *desk, const char *text)

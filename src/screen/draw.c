@@ -6,6 +6,8 @@
 #include "beamhours/schema/reading.h"
 #include "beamhours/screen/model.h"
 
+enum { MOST_SAID = 4 /* rows of one sentence */ };
+
 /* --- messages --- */
 
 /* A warning says what it is about; where there is no room, the line number stands for its key. */
@@ -64,10 +66,61 @@ static void draw_prompt(const bh_model *model, const bh_arrangement *places, bh_
     bh_draw_field(canvas, (bh_spot){row, used + 1, canvas->columns - used - 1}, &model->field);
 }
 
+/* How much of `text` goes into one row: words stay whole where they can. */
+static size_t row_of(const char *text, int columns)
+{
+    const size_t most = bh_text_fit(text, columns);
+    size_t n = most;
+    while (text[most] && n > 0 && text[n] != ' ')
+        n--;
+    return n ? n : most;
+}
+
+/* The rows that a sentence takes: at most MOST_SAID, the last one cut. */
+static int rows_of(const char *text, int columns)
+{
+    int rows = 1;
+    for (size_t n = row_of(text, columns); text[n] && n && rows < MOST_SAID; rows++) {
+        text += n + (text[n] == ' ');
+        n = row_of(text, columns);
+    }
+    return rows;
+}
+
+/* Where a sentence of so many rows begins that ends above row `end`: over what is above the rows of
+ * messages where it is long, unless the cursor is there. */
+static int begin_sentence(const bh_canvas *canvas, const bh_arrangement *places, int rows, int end)
+{
+    const int usual = places->message >= 0 ? places->message : places->menu;
+    const int first = end - rows > places->body ? end - rows : places->body;
+    const bool hides = canvas->cursor_row >= first && canvas->cursor_row < end;
+    return first >= usual || hides ? usual : first;
+}
+
+/* A sentence in the rows of messages; in the last one of all where there are none. */
+static void put_sentence(bh_canvas *canvas, const bh_arrangement *places, bh_look look,
+                         const char *text)
+{
+    const bool rows = places->message >= 0;
+    const int end = rows ? places->caution : places->menu + 1;
+    int row = begin_sentence(canvas, places, rows ? rows_of(text, canvas->columns) : 1, end);
+    for (; row < end; row++) {
+        const size_t n = row + 1 == end ? strlen(text) : row_of(text, canvas->columns);
+        const bh_spot spot = {row, 0, canvas->columns};
+        bh_text part = {0};
+        bh_text_append_bytes(&part, text, n);
+        bh_text_append(&part, "");
+        bh_canvas_clear(canvas, spot);
+        if (!part.failed)
+            (void)bh_canvas_put(canvas, spot, look, part.bytes);
+        bh_text_free(&part);
+        text += n + (text[n] == ' ');
+    }
+}
+
 /* Of what is typed: what is wrong with it, or what it was. */
 static void draw_typed(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
-    const bh_spot spot = {places->message, 0, canvas->columns};
     bh_text text = {0};
     if (model->why[0]) {
         bh_text_appendf(&text, "NOT YET  %s", model->why);
@@ -77,8 +130,10 @@ static void draw_typed(const bh_model *model, const bh_arrangement *places, bh_c
             bh_text_appendf(&text, " was %s", model->was);
         bh_text_appendf(&text, "; Enter keeps it, Escape leaves it as it was");
     }
-    if (text.bytes)
-        (void)bh_canvas_put(canvas, spot, model->why[0] ? BH_LOOK_ERROR : BH_LOOK_TRIAL,
+    if (text.bytes && model->why[0])
+        put_sentence(canvas, places, BH_LOOK_ERROR, text.bytes);
+    else if (text.bytes)
+        (void)bh_canvas_put(canvas, (bh_spot){places->message, 0, canvas->columns}, BH_LOOK_TRIAL,
                             text.bytes);
     bh_text_free(&text);
 }
@@ -86,10 +141,12 @@ static void draw_typed(const bh_model *model, const bh_arrangement *places, bh_c
 /* What just happened. */
 static void draw_note(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
-    bh_spot spot = {places->message, 0, canvas->columns};
-    if (model->over == BH_OVER_FIND) /* beside what is looked for */
-        spot = (bh_spot){places->message, canvas->columns / 2, canvas->columns / 2};
-    (void)bh_canvas_put(canvas, spot, model->note_bad ? BH_LOOK_ERROR : BH_LOOK_PLAIN, model->note);
+    const bh_look look = model->note_bad ? BH_LOOK_ERROR : BH_LOOK_PLAIN;
+    const bh_spot half = {places->message, canvas->columns / 2, canvas->columns / 2};
+    if (model->over != BH_OVER_FIND)
+        put_sentence(canvas, places, look, model->note);
+    else if (places->message >= 0) /* beside what is looked for */
+        (void)bh_canvas_put(canvas, half, look, model->note);
 }
 
 static bool tries(const bh_model *model)
@@ -112,7 +169,7 @@ static void draw_messages(const bh_model *model, const bh_arrangement *places, b
     }
     if (find || name)
         draw_prompt(model, places, canvas, find ? "look for" : "save as");
-    if (places->message < 0 || name)
+    if (name || (places->message < 0 && !(model->note[0] && !tries(model))))
         return;
     if (tries(model))
         draw_typed(model, places, canvas);

@@ -6,13 +6,20 @@
 #include <string.h>
 #include <unistd.h>
 
-static const double write_after = 1.0, look_after = 1.0; /* s */
+static const double write_after = 1.0, look_after = 1.0, again_after = 5.0; /* s */
 
 static void set_path(bh_keeper *keeper, const char *path)
 {
     (void)snprintf(keeper->path, sizeof keeper->path, "%s", path);
     bh_rescue_free(keeper->rescue);
     keeper->rescue = bh_rescue_new(path);
+    keeper->pending = -1;
+}
+
+static void drop_rescue(bh_keeper *keeper)
+{
+    if (keeper->rescue)
+        (void)!bh_rescue_discard(keeper->rescue, NULL);
     keeper->pending = -1;
 }
 
@@ -130,7 +137,7 @@ bool bh_keeper_rescued(bh_keeper *keeper, bh_model *model, bh_text *into)
 
 void bh_keeper_refuse(bh_keeper *keeper)
 {
-    (void)!bh_rescue_discard(keeper->rescue, NULL);
+    drop_rescue(keeper);
 }
 
 /* --- saving --- */
@@ -146,13 +153,19 @@ static void ask_changed(bh_model *model, bool gone)
     bh_ask(model, gone ? BH_QUESTION_GONE : BH_QUESTION_CHANGED);
 }
 
+/* `why` says of the file what would do. */
+static void not_saved(bh_model *model, const char *path, const char *why)
+{
+    const char *slash = strrchr(path, '/');
+    bh_model_note(model, true, "NOT SAVED  %.80s: %.150s", slash ? slash + 1 : path, why);
+}
+
 static bool say_save(bh_keeper *keeper, bh_model *model, bh_save_state state, const bh_error *err)
 {
     switch (state) {
     case BH_SAVE_DONE:
         bh_model_saved(model);
-        (void)!bh_rescue_discard(keeper->rescue, NULL);
-        keeper->pending = -1;
+        drop_rescue(keeper);
         bh_model_note(model, false, "saved in %.200s", keeper->path);
         return true;
     case BH_SAVE_CHANGED:
@@ -160,7 +173,7 @@ static bool say_save(bh_keeper *keeper, bh_model *model, bh_save_state state, co
         ask_changed(model, state == BH_SAVE_GONE);
         return false;
     default:
-        bh_model_note(model, true, "NOT SAVED  %.220s", err->text);
+        not_saved(model, keeper->path, err->text);
         return false;
     }
 }
@@ -171,7 +184,7 @@ bool bh_keeper_save(bh_keeper *keeper, bh_model *model, bool over)
     bh_error err = {.code = BH_OK};
     const char *bytes = bh_model_bytes(model, &length);
     if (over && bh_stamp_accept(keeper->path, &keeper->stamp, &err)) {
-        bh_model_note(model, true, "NOT SAVED  %.220s", err.text);
+        not_saved(model, keeper->path, err.text);
         return false;
     }
     const bh_save_state state = bh_stamp_save(keeper->path, bytes, length, &keeper->stamp, &err);
@@ -184,7 +197,7 @@ bool bh_keeper_save_as(bh_keeper *keeper, bh_model *model)
     if (strcmp(path, keeper->path) == 0)
         return bh_keeper_save(keeper, model, false);
     if (access(path, F_OK) == 0) {
-        bh_model_note(model, true, "NOT SAVED  %.150s exists: choose another name", path);
+        not_saved(model, path, "exists; choose another name");
         return false;
     }
     bh_error err = {.code = BH_OK};
@@ -192,8 +205,10 @@ bool bh_keeper_save_as(bh_keeper *keeper, bh_model *model)
     size_t length = 0;
     const char *bytes = bh_model_bytes(model, &length);
     const bh_save_state state = bh_stamp_save(path, bytes, length, &stamp, &err);
-    if (state != BH_SAVE_DONE)
-        return say_save(keeper, model, state, &err);
+    if (state != BH_SAVE_DONE) {
+        not_saved(model, path, err.text);
+        return false;
+    }
     bh_keeper_close(keeper, true);
     set_path(keeper, path);
     keeper->stamp = stamp;
@@ -206,8 +221,7 @@ bool bh_keeper_read(bh_keeper *keeper, bh_model *model, bh_text *into)
 {
     bh_error err = {.code = BH_OK};
     if (!bh_stamp_read(keeper->path, BH_DOCUMENT_LIMIT, into, &keeper->stamp, &err)) {
-        (void)!bh_rescue_discard(keeper->rescue, NULL);
-        keeper->pending = -1;
+        drop_rescue(keeper);
         return true;
     }
     bh_model_note(model, true, "the file cannot be read: %.180s", err.text);
@@ -224,12 +238,27 @@ void bh_keeper_tell(bh_keeper *keeper, bh_model *model, double now)
     const char *bytes = bh_edit_bytes(model->edit, &length);
     keeper->version = bh_edit_version(model->edit);
     if (bh_model_unsaved(model) == 0) {
-        (void)!bh_rescue_discard(keeper->rescue, NULL);
-        keeper->pending = -1;
+        drop_rescue(keeper);
         return;
     }
     if (bh_rescue_prepare(keeper->rescue, bytes, length, keeper->stamp.hash) && keeper->pending < 0)
         keeper->pending = now;
+}
+
+bool bh_keeper_write(bh_keeper *keeper, bh_model *model)
+{
+    const bool good = bh_rescue_write(keeper->rescue);
+    if (!good && !keeper->warned)
+        bh_model_note(model, true,
+                      "unsaved work cannot be kept beside the plan (%s): save often, or n saves it "
+                      "elsewhere",
+                      strerror(errno)); /* NOLINT(concurrency-mt-unsafe): this thread alone */
+    if (good && keeper->warned)
+        bh_model_note(model, false, "unsaved work can be kept beside the plan again");
+    keeper->warned = !good;
+    if (good)
+        keeper->pending = -1;
+    return good;
 }
 
 double bh_keeper_tend(bh_keeper *keeper, bh_model *model, double now)
@@ -242,13 +271,10 @@ double bh_keeper_tend(bh_keeper *keeper, bh_model *model, double now)
     const double left = keeper->pending + write_after - now;
     if (left > 0)
         return left;
-    keeper->pending = -1;
-    if (!bh_rescue_write(keeper->rescue) && !keeper->warned) {
-        keeper->warned = true;
-        bh_model_note(model, true, "unsaved work cannot be kept beside the plan (%s): save often",
-                      strerror(errno)); /* NOLINT(concurrency-mt-unsafe): this thread alone */
-    }
-    return -1;
+    if (bh_keeper_write(keeper, model))
+        return -1;
+    keeper->pending = now + again_after - write_after;
+    return again_after;
 }
 
 bool bh_keeper_look(bh_keeper *keeper, bh_model *model, double now)

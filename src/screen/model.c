@@ -52,6 +52,7 @@ void bh_model_note(bh_model *model, bool bad, const char *fmt, ...)
     (void)vsnprintf(model->note, sizeof model->note, fmt, args);
     va_end(args);
     model->note_bad = bad;
+    model->spoke = true;
 }
 
 const char *bh_model_bytes(const bh_model *model, size_t *length)

@@ -164,7 +164,7 @@ static double now(void)
 /* `whole`: as the terminal itself would do it when the key is pressed, with the whole job. */
 static void suspend(struct terminal *t, bool whole)
 {
-    bh_desk_secure(t->desk, now()); /* nobody knows whether it is ever resumed */
+    (void)bh_desk_secure(t->desk, now()); /* nobody knows whether it is ever resumed */
     bh_alarm_screen(false);
     (void)endwin();
     if (!bh_alarm_stop(whole))
@@ -376,6 +376,7 @@ static void run(struct loop *l)
         mind_signals(l);
         bh_alarm_keep(bh_desk_rescue(desk), bh_desk_mark(desk));
         double wait = bh_desk_tend(desk, now());
+        l->dirty = bh_desk_spoke(desk) || l->dirty;
         draw_when_due(l, &wait);
         there = wait_for_more(l, wait);
     }

@@ -19,7 +19,12 @@
 
 #include "beamhours/base/text.h"
 
-static const double patience = 60; /* s: other programs may want the processors */
+/* [s] other programs may want the processors; PATIENCE=5 where none do. */
+static double patience(void)
+{
+    const char *said = getenv("PATIENCE");
+    return said && atof(said) > 0 ? atof(said) : 60;
+}
 
 static double now(void)
 {
@@ -114,6 +119,8 @@ static void become(const tty *t, const tty_start *how)
     char *own = how->environment ? strdup(how->environment) : NULL;
     if (own)
         putenv(own);
+    for (int i = 0; i < 3 && how->further[i]; i++)
+        putenv(strdup(how->further[i]));
     if (chdir(t->folder) != 0)
         _exit(126);
     if (how->shell) {
@@ -342,7 +349,7 @@ void tty_wait(tty *t, const char *text)
 {
     const double start = now();
     while (!tty_shows(t, text)) {
-        if (now() - start > patience || t->ended)
+        if (now() - start > patience() || t->ended)
             give_up(t, "never saw", text);
         tty_pump(t, 100);
     }
@@ -352,7 +359,7 @@ void tty_wait_row(tty *t, int row, const char *text)
 {
     const double start = now();
     while (!strstr(tty_row(t, row), text)) {
-        if (now() - start > patience || t->ended)
+        if (now() - start > patience() || t->ended)
             give_up(t, "never saw in its row", text);
         tty_pump(t, 100);
     }
@@ -362,7 +369,7 @@ void tty_wait_gone(tty *t, const char *text)
 {
     const double start = now();
     while (tty_shows(t, text)) {
-        if (now() - start > patience || t->ended)
+        if (now() - start > patience() || t->ended)
             give_up(t, "it did not go away:", text);
         tty_pump(t, 100);
     }
@@ -380,7 +387,7 @@ int tty_wait_end(tty *t)
 {
     const double start = now();
     while (!t->ended) {
-        if (now() - start > patience)
+        if (now() - start > patience())
             give_up(t, "the program did not end", "");
         tty_pump(t, 50);
         if (!t->ended && waitpid(t->child, &t->status, WNOHANG) == t->child)

@@ -25,6 +25,7 @@ typedef struct {
 /* How to start it; NULL and 0 for what is usual: 80x24, xterm-256color, C.UTF-8. */
 typedef struct {
     const char *term, *locale, *environment; /* one more NAME=VALUE */
+    const char *further[3];                  /* and more of them */
     int rows, columns;
     const char *arguments[6]; /* behind `edit` */
     bool shell;               /* a shell with job control instead: its prompt is "ready> ", and

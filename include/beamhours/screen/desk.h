@@ -51,12 +51,16 @@ void bh_desk_draw(const bh_desk *desk, bh_canvas *canvas);
 bool bh_desk_over(const bh_desk *desk);
 bool bh_desk_suspends(bh_desk *desk); /* asked once for each wish */
 
+typedef enum { BH_KEPT_NOTHING, BH_KEPT, BH_KEPT_NOT } bh_kept;
+
 /* Writes unsaved work beside the plan now, at the time `now` [s]. */
-void bh_desk_secure(bh_desk *desk, double now);
+bh_kept bh_desk_secure(bh_desk *desk, double now);
 
 /* Back at the time `now` [s], when much may have happened to the plan: looks at it. */
 void bh_desk_awake(bh_desk *desk, double now);
 
+/* Whether it has said something since it was last asked. */
+bool bh_desk_spoke(bh_desk *desk);
 void bh_desk_say(bh_desk *desk, const char *text); /* in the line of messages */
 
 /* For a signal handler: writes unsaved work beside the plan.  NULL before one is open. */

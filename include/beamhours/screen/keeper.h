@@ -50,6 +50,9 @@ bool bh_keeper_read(bh_keeper *keeper, bh_model *model, bh_text *into);
 /* Makes unsaved work ready to be written, at the time `now` [s]. */
 void bh_keeper_tell(bh_keeper *keeper, bh_model *model, double now);
 
+/* Writes what is ready, and says when that becomes impossible or possible again. */
+bool bh_keeper_write(bh_keeper *keeper, bh_model *model);
+
 /* Looks after unsaved work at the time `now` [s]; returns [s] after how long it has to again, below
  * 0: never. */
 double bh_keeper_tend(bh_keeper *keeper, bh_model *model, double now);
