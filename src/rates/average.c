@@ -139,8 +139,34 @@ static double sum_kept(const summing *s, const bh_prepared_part *part, double to
     return kept < total * (1 + RAGGED) ? fmin(kept, total) : kept;
 }
 
+/* Adds the pieces that lie in the part; each is as good as the tolerance asks of all of it. */
+static bh_average sum_pieces(const summing *s, const bh_prepared_part *part)
+{
+    const bh_average_request *r = s->request;
+    const bh_interval all = up_to_limit(r, part->part.polar);
+    bh_average out = {.solid_angle = part->part.solid_angle, .converged = true};
+    double off = 0;
+    for (size_t i = 0; i < r->allowed_count; i++) {
+        const bh_interval some = up_to_limit(r, r->allowed[i]);
+        const bool whole = some.from <= all.from && some.to >= all.to;
+        const bh_quadrature q = sum_within(s, part, whole ? all : some);
+        out.total += q.sum;
+        off += q.error;
+        if (whole)
+            break;
+    }
+    const double least = least_of(s, &part->part) * part->part.solid_angle;
+    if (out.total > 0)
+        out.error = off / fmax(out.total, least) + bh_interpolant_error(s->interpolant, all);
+    out.kept = out.total;
+    out.converged = out.error <= tolerance_of(r);
+    return out;
+}
+
 static bh_average sum_part(const summing *s, const bh_prepared_part *part)
 {
+    if (s->request->cut && s->request->kept_only)
+        return sum_pieces(s, part);
     bh_average out = {.solid_angle = part->part.solid_angle};
     const bh_interval all = up_to_limit(s->request, part->part.polar);
     const bh_quadrature q =

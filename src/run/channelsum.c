@@ -138,6 +138,7 @@ static bh_code fit_radiated(struct making *m, const struct task *t, int boost, s
             return code;
         m->common = m->common > 0 ? m->common : bh_average_top(m->averages);
         out->request.common = m->common;
+        out->request.kept_only = true; /* totals are those without radiation */
         out->radiated = x;
         out->boost = boost;
     }
@@ -183,12 +184,17 @@ static bh_code sum_radiated(struct making *m, const struct task *t, double weigh
     return code;
 }
 
+/* Of the function fitted last: with radiation where there is any. */
 static bh_code sum_moved(struct making *m, const struct task *t, double weight, bh_error *err)
 {
     bh_code code = BH_OK;
+    bh_average_request request = t->request;
+    request.kept_only = true;
+    if (!is_idle(m->request))
+        request.common = m->common;
     for (int k = 0; !code && k < 2; k++) {
         if (m->places.turns)
-            code = add_up(m, &t->request, &m->places.moved[k], err);
+            code = add_up(m, &request, &m->places.moved[k], err);
         for (int i = 0; !code && i < m->parts; i++)
             m->sums[i].moved[k] += m->places.turns ? weight * part_of(m, i)->kept : (double)NAN;
     }
@@ -270,7 +276,7 @@ static bh_code sum_counted(struct making *m, struct task *t, int boost, bh_error
     t->request.function = evaluate_kept;
     t->request.tolerance = m->request->trace ? fmax(trace_tolerance, c->tolerance) : c->tolerance;
     t->request.common = m->common;
-    t->request.cut = true;
+    t->request.cut = t->request.kept_only = true;
     t->request.allowed_count = bh_counted_pieces(c, m->places.polar, t->allowed);
     if (!code)
         code = sum_task(m, t, 1, boost, err);

@@ -26,7 +26,10 @@ typedef struct {
     bool cut;             /* only polar angles inside `allowed` are kept */
     size_t allowed_count; /* with cut: 0 keeps nothing */
     const bh_interval *allowed; /* [rad] rising, apart: from bh_bite_angles */
-    double tolerance;           /* [1] relative; 0: 1e-6 */
+    bool
+        kept_only;    /* with cut: totals are not needed and come out as what is kept.  A function
+                         that   ends in a step where `allowed` does costs most of its time in totals */
+    double tolerance; /* [1] relative; 0: 1e-6 */
     double common; /* [ub/sr] the tolerance is relative to sums of common / (1 - cos theta)^2 where
                       those of the function are smaller: bins with little are no better; 0: never.
                       From bh_average_top */
