@@ -266,6 +266,11 @@ START_TEST(cuts_keep_their_part)
                   shapes[s].what, functions[f].what, (kept.kept + lost.kept) / kept.total - 1);
     const bh_acceptance single = arm(s, 1);
     r.allowed = allowed;
+    r.kept_only = true; /* the same, without what it would be out of */
+    const bh_average alone = sum_of(&a, &r, bins);
+    ck_assert(alone.converged && alone.total == alone.kept);
+    ck_assert_double_eq_tol(alone.kept / kept.kept, 1, 1e-9);
+    r.kept_only = false;
     ck_assert_double_eq_tol(sum_of(&single, &r, NULL).kept / kept.kept, 1, 1e-6);
     /* a grid sees the edges as steps: few digits */
     const double exact = on_a_grid(&a.whole, functions[f].f, allowed);
