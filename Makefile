@@ -64,7 +64,7 @@ check-run: all
 	@{ $(MAKE) -k -Otarget $(call run,$(TESTS) $(COMMANDS) rules); echo "status $$?"; } 2>&1 | tee $(BUILD)/check.log | grep -v '^status'; \
 	 awk -f tests/rules/summary.awk $(BUILD)/check.log
 check-all:                                               ## check, all that follows up to fuzz, a trial installation
-	@$(MAKE) -k check lint globals sanitize valgrind coverage fuzz mutate installed montecarlo
+	@$(MAKE) -k check lint globals sanitize valgrind valgrind-screen enduring coverage fuzz mutate installed montecarlo
 montecarlo: $(BUILD)/tests/montecarlo/test_montecarlo     ## the demonstrations counted event by event, 10 million a plan and seed
 	@MONTE_CARLO_EVENTS=1e7 $<
 $(call run,$(TESTS)): %.run: % ; @$(UNDER) $<
@@ -95,6 +95,15 @@ valgrind:                                                ## the tests under valg
 valgrind-demo: all                                       ## the main job under valgrind: the demonstrations' tables, one explained row
 	@for c in $(patsubst %,'table --bins %',$(wildcard plans/*.yaml)) 'explain plans/hydrogen-separation.yaml low-1'; do \
 	 $(GRIND) $(BUILD)/beamhours $$c >$(BUILD)/valgrind.out 2>&1 || { cat $(BUILD)/valgrind.out; exit 1; }; done
+# A program below the pseudo-terminal says into a file what it finds, and ends with status 99.
+GRIND_LOGS := $(abspath $(BUILD))/grind
+SCREENS := $(filter %/test_terminal %/test_safety %/test_suspend %/test_disk,$(call bin,$(TESTS)))
+valgrind-screen: $(BUILD)/beamhours $(BUILD)/tests/terminal/test_terminal ## a session on the terminal screen under valgrind
+	@rm -rf $(GRIND_LOGS) && mkdir -p $(GRIND_LOGS) && bad=0; \
+	 PATIENCE=300 TTY_UNDER='$(GRIND) --log-file=$(GRIND_LOGS)/%p.log' $(BUILD)/tests/terminal/test_terminal || bad=1; \
+	 find $(GRIND_LOGS) -size +0 -exec cat {} +; exit $$bad
+enduring: all $(SCREENS)                                 ## the tests of the terminal screen ENDURE times (50) in a row, every processor busy
+	@sh tests/terminal/endure.sh '$(or $(ENDURE),50)' $(SCREENS)
 coverage:                                                ## lines of src/ that the tests reach
 	@rm -rf $(BUILD)/cov && $(MAKE) check-run CC=gcc HARDEN= BUILD=$(BUILD)/cov CFLAGS='-O0 -g --coverage'
 	gcovr -r . --object-directory $(BUILD)/cov -f src/ --txt | awk -f tests/rules/coverage.awk

@@ -17,7 +17,7 @@ static pid_t begin(tty *t)
 {
     long process = 0;
     tty_folder(t, "hydrogen-separation");
-    tty_write(t, "begin", "echo $$ >process\nexec \"$PROGRAM\" edit plan.yaml\n");
+    tty_write(t, "begin", "echo $$ >process\nexec $TTY_UNDER \"$PROGRAM\" edit plan.yaml\n");
     tty_run(t, &(tty_start){.shell = true});
     tty_wait(t, "ready>");
     tty_type(t, "sh begin\r");

@@ -146,7 +146,7 @@ START_TEST(says_what_is_wrong)
     look_for(&t, "current");
     tty_type(&t, "30 uX");
     tty_wait(&t, "NOT YET");
-    tty_wait(&t, "in uA o"); /* units that would do */
+    tty_wait(&t, "in uA"); /* units that would do */
     tty_type(&t, "<Enter>");
     tty_wait(&t, "NOT YET");
     tty_type(&t, "<Rubout>A");

@@ -107,10 +107,18 @@ static void find_program(char out[1200])
 
 static void become(const tty *t, const tty_start *how)
 {
-    char program[1200], *arguments[10] = {program, (char[]){"edit"}};
+    enum { MOST = 32 };
+    char program[1200], *arguments[MOST] = {NULL};
+    int n = 0;
     find_program(program);
+    const char *under = getenv("TTY_UNDER");
+    char *words = strdup(under ? under : ""), *rest = NULL;
+    for (char *w = strtok_r(words, " ", &rest); w && n < MOST - 9; w = strtok_r(NULL, " ", &rest))
+        arguments[n++] = w;
+    arguments[n++] = program;
+    arguments[n++] = (char[]){"edit"};
     for (int i = 0; i < 6 && how->arguments[i]; i++)
-        arguments[2 + i] = strdup(how->arguments[i]);
+        arguments[n++] = strdup(how->arguments[i]);
     setenv("TERM", how->term ? how->term : "xterm-256color", 1);
     setenv("LC_ALL", how->locale ? how->locale : "C.UTF-8", 1);
     unsetenv("NO_COLOR");
@@ -129,7 +137,7 @@ static void become(const tty *t, const tty_start *how)
         unsetenv("ENV");
         execl("/bin/sh", "sh", "-i", (char *)NULL);
     }
-    execv(program, arguments);
+    execvp(arguments[0], arguments);
     _exit(126);
 }
 

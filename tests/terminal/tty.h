@@ -1,4 +1,6 @@
-/* tty.h - the real program in a pseudo-terminal, its screen read cell by cell. */
+/* tty.h - the real program in a pseudo-terminal, its screen read cell by cell.  It is started by
+ * the words of TTY_UNDER, where that is set; PATIENCE: how long it may take to show something [s].
+ */
 #ifndef TESTS_TERMINAL_TTY_H
 #define TESTS_TERMINAL_TTY_H
 
