@@ -64,13 +64,16 @@ check-run: all
 	@{ $(MAKE) -k -Otarget $(call run,$(TESTS) $(COMMANDS) rules); echo "status $$?"; } 2>&1 | tee $(BUILD)/check.log | grep -v '^status'; \
 	 awk -f tests/rules/summary.awk $(BUILD)/check.log
 check-all:                                               ## check, all that follows up to fuzz, a trial installation
-	@$(MAKE) -k check lint globals sanitize valgrind valgrind-screen enduring coverage fuzz mutate installed montecarlo
+	@$(MAKE) -k check lint globals sanitize valgrind valgrind-screen enduring coverage fuzz mutate installed papers montecarlo
 montecarlo: $(BUILD)/tests/montecarlo/test_montecarlo     ## the demonstrations counted event by event, 10 million a plan and seed
 	@MONTE_CARLO_EVENTS=1e7 $<
 $(call run,$(TESTS)): %.run: % ; @$(UNDER) $<
 $(call run,$(COMMANDS)): $(BUILD)/%.run: %.cmd all ; @UNDER='$(UNDER)' sh tests/commands/run.sh $(BUILD) $<
 $(call run,rules): ; @CC='$(CC)' sh tests/rules/selftest.sh
 installed: all ; @CC='$(CC)' sh tests/rules/installed.sh   ## a trial installation, used by another program
+papers: all                                              ## reports in TeX, a browser and page by page; skipped where absent
+	@if command -v python3 >/dev/null; then python3 tests/papers/papers.py $(BUILD); \
+	 else echo "skipped: no python3, reports are not looked at"; fi
 lint: floors docs-lint                                   ## layout, warnings of gcc and clang, clang-tidy, cppcheck
 	@clang-format --dry-run --Werror $(LAID_OUT)
 	@$(MAKE) objects CC=gcc WERROR=-Werror BUILD=$(BUILD)/gcc

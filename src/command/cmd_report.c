@@ -1,4 +1,5 @@
 /* cmd_report.c - beamhours report PLAN --output FILE: the beam-time section of a proposal. */
+#include <ctype.h>
 #include <string.h>
 #include <strings.h>
 #include <sysexits.h>
@@ -27,6 +28,7 @@ struct job {
     size_t count;
     bh_report_file files[MOST_FILES];
     char digests[MOST_FILES][BH_SHA256_SIZE];
+    bh_text folder, base; /* "out/" and "report": of figures that are files of their own */
 };
 
 static int choose(struct job *job)
@@ -130,6 +132,46 @@ static void say_command(struct job *job)
     bh_text_appendf(&job->command, " --output FILE%s", endings[job->kind]);
 }
 
+/* --- figures beside it --- */
+
+/* Of "out/my plan.tex" "out/" and "my-plan": what LaTeX or Markdown would read becomes a dash. */
+static void name_figures(struct job *job)
+{
+    const char *path = job->a->value[BH_OPT_OUTPUT], *slash = strrchr(path, '/');
+    const char *name = slash ? slash + 1 : path, *dot = strrchr(name, '.');
+    bh_text_append_bytes(&job->folder, path, (size_t)(name - path));
+    for (const char *c = name; c < dot; c++)
+        bh_text_append_bytes(&job->base, isalnum((unsigned char)*c) || *c == '_' ? c : "-", 1);
+}
+
+static int write_figure(const struct job *job, const bh_block *b)
+{
+    const bool tex = job->kind == KIND_TEX;
+    bh_text out = {0}, path = {0};
+    bh_error err = {.code = BH_OK};
+    bh_text_appendf(&path, "%s%s-%d.%s", job->folder.bytes ? job->folder.bytes : "",
+                    job->base.bytes ? job->base.bytes : "", b->number, tex ? "pdf" : "svg");
+    bh_code bad = path.failed ? BH_ENOMEM : BH_OK;
+    if (!bad)
+        bad = bh_figure_write(b->figure, tex ? BH_FIGURE_PDF : BH_FIGURE_SVG, &out, &err);
+    const int status = bad ? bh_complain(stderr, &err) : bh_output(&out, path.bytes);
+    if (bad)
+        bh_text_free(&out);
+    bh_text_free(&path);
+    return status;
+}
+
+/* Before the text: it names no figure that is not there. */
+static int write_figures(const struct job *job, const bh_paper *paper)
+{
+    int status = 0;
+    for (size_t i = 0; status == 0 && i < paper->count; i++)
+        if (paper->blocks[i].kind == BH_BLOCK_FIGURE &&
+            (job->kind == KIND_TEX || job->kind == KIND_MD))
+            status = write_figure(job, &paper->blocks[i]);
+    return status;
+}
+
 /* --- the file --- */
 
 static bh_code write_as(const struct job *job, const bh_paper *paper, bh_text *out, bh_error *err)
@@ -140,9 +182,10 @@ static bh_code write_as(const struct job *job, const bh_paper *paper, bh_text *o
     case KIND_PDF:
         return bh_paper_pdf(paper, job->page, out, err);
     case KIND_TEX:
-        return bh_paper_latex(paper, job->page, job->fragment, out, err);
+        return bh_paper_latex(paper, &(bh_latex_form){job->page, job->fragment, job->base.bytes},
+                              out, err);
     default:
-        return bh_paper_markdown(paper, out, err);
+        return bh_paper_markdown(paper, job->base.bytes, out, err);
     }
 }
 
@@ -154,6 +197,7 @@ static int make(struct job *job)
     bh_waiting waiting;
     bh_waiting_begin(&waiting, stderr);
     say_command(job);
+    name_figures(job);
     const bh_report_request request = {.table = job->in.table,
                                        .version = bh_version(),
                                        .command = job->command.bytes ? job->command.bytes : "",
@@ -165,11 +209,12 @@ static int make(struct job *job)
     if (!bad)
         bad = write_as(job, &report.paper, &out, &err);
     bh_waiting_end(&waiting);
+    int status = bad ? bh_complain(stderr, &err) : write_figures(job, &report.paper);
     bh_report_free(&report);
-    if (!bad)
+    if (status == 0)
         return bh_output(&out, job->a->value[BH_OPT_OUTPUT]);
     bh_text_free(&out);
-    return bh_complain(stderr, &err);
+    return status;
 }
 
 static int run(struct job *job)
@@ -194,5 +239,7 @@ int bh_cmd_report(const bh_arguments *arguments)
     const int status = run(&job);
     bh_input_close(&job.in);
     bh_text_free(&job.command);
+    bh_text_free(&job.folder);
+    bh_text_free(&job.base);
     return status;
 }

@@ -29,6 +29,17 @@ void bh_latex_needs(bh_text *out)
     bh_latex_packages(out, "% ");
 }
 
+const bh_latex_size *bh_latex_fit(size_t letters, size_t columns)
+{
+    static const bh_latex_size sizes[] = {
+        {"\\footnotesize", 4.6, 6.0}, {"\\scriptsize", 4.1, 6.0}, {"\\tiny", 3.6, 5.0}};
+    size_t i = 0;
+    while (i + 1 < sizeof sizes / sizeof sizes[0] &&
+           sizes[i].letter * (double)letters + sizes[i].gap * (double)columns > BH_LATEX_PAGE)
+        i++;
+    return &sizes[i];
+}
+
 /* --- words --- */
 
 static const struct {

@@ -3,8 +3,8 @@
 for demo in hydrogen-separation hydrogen-jet lead positron-electron muon-rings alpha-gold; do
     for format in html pdf tex md; do
         beamhours report plans/$demo.yaml -o $demo.$format 2>/dev/null || echo "status $?"
-        beamhours report plans/$demo.yaml -o again.$format 2>/dev/null
-        cmp again.$format $demo.$format
+        mkdir -p again; beamhours report plans/$demo.yaml -o again/$demo.$format 2>/dev/null
+        cmp again/$demo.$format $demo.$format
     done
     if command -v xmllint >/dev/null; then xmllint --noout $demo.html 2>&1; fi
     [ $(wc -c <$demo.html) -lt 2097152 ] || echo "$demo.html is too long"
@@ -13,6 +13,13 @@ for demo in hydrogen-separation hydrogen-jet lead positron-electron muon-rings a
     grep -c '^## ' $demo.md
     [ $(grep -c '\\begin{' $demo.tex) = $(grep -c '\\end{' $demo.tex) ] || echo "$demo.tex: begin and end"
     head -c 8 $demo.pdf; echo
+    # figures beside LaTeX and Markdown: as many as are named, whole, the same twice
+    for n in $(seq $(grep -c includegraphics $demo.tex)); do
+        head -c 5 $demo-$n.pdf | grep -q '%PDF-' && grep -q "{$demo-$n.pdf}" $demo.tex || echo "no $demo-$n.pdf"
+        grep -q '</svg>' $demo-$n.svg && grep -q "]($demo-$n.svg)" $demo.md || echo "no $demo-$n.svg"
+        cmp again/$demo-$n.pdf $demo-$n.pdf; cmp again/$demo-$n.svg $demo-$n.svg
+    done
+    ls $demo-*.pdf $demo-*.svg | wc -l
 done
 report() { beamhours report plans/lead.yaml "$@" 2>&1 | grep -v 'warning\|caution\|^beamhours: try'; }
 report -o part.tex --fragment; sed 4q part.tex; grep -c 'document' part.tex
@@ -20,6 +27,7 @@ report -o letter.pdf --paper letter
 if command -v pdfinfo >/dev/null; then pdfinfo letter.pdf | grep 'Page size'; else echo 'Page size:       612 x 792 pts (letter)'; fi
 report -o letter.html --paper letter; grep -o 'size:letter' letter.html
 report -o more.md --with 'beam.current=1 uA'; grep '^| command' more.md
+report -o 'odd & %name.v2.tex'; ls odd*; grep -o '{odd.*pdf}' 'odd & %name.v2.tex'
 # what is wrong
 report
 report -o lead.doc

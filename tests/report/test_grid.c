@@ -25,24 +25,23 @@ START_TEST(each_format_lays_it_out)
     static const struct {
         void (*write)(const bh_grid *grid, bh_text *out);
         const char *wanted;
-    } rows[] = {
-        {bh_grid_text, "name   sigma luminosity\n"
-                       "       nb/sr    1/cm2/s\n"
-                       "A_1     12.5   1.20e+36\n"
-                       "müon|x     -          7\n"},
-        {bh_grid_markdown, "| name | sigma, nb/sr | luminosity, 1/cm2/s |\n"
-                           "| --- | ---: | ---: |\n"
-                           "| A\\_1 | 12.5 | 1.20e+36 |\n"
-                           "| müon\\|x | - | 7 |\n\n"},
-        {bh_grid_latex,
-         "{\\footnotesize\\setlength{\\tabcolsep}{4pt}\n\\begin{longtable}{lSS}\n\\toprule\n"
-         "{name} & {sigma} & {luminosity} \\\\\n"
-         "{} & {\\si{\\nano\\bhbarn\\per\\steradian}} & "
-         "{\\si{\\per\\centi\\metre\\squared\\per\\second}} \\\\\n"
-         "\\midrule\n\\endhead\n\\bottomrule\n\\endfoot\n"
-         "A\\_1 & 12.5 & 1.20e+36 \\\\\n"
-         "müon\\textbar{}x & {-} & 7 \\\\\n"
-         "\\end{longtable}}\n"}};
+    } rows[] = {{bh_grid_text, "name   sigma luminosity\n"
+                               "       nb/sr    1/cm2/s\n"
+                               "A_1     12.5   1.20e+36\n"
+                               "müon|x     -          7\n"},
+                {bh_grid_markdown, "| name | sigma, nb/sr | luminosity, 1/cm2/s |\n"
+                                   "| --- | ---: | ---: |\n"
+                                   "| A\\_1 | 12.5 | 1.20e+36 |\n"
+                                   "| müon\\|x | - | 7 |\n\n"},
+                {bh_grid_latex, "{\\footnotesize\\setlength{\\tabcolsep}{3pt}\n\\begin{longtable}{"
+                                "lS[table-format=2.1]S[table-format=1.2e2]}\n\\toprule\n"
+                                "{name} & {sigma} & {luminosity} \\\\\n"
+                                "{} & {\\si{\\nano\\bhbarn\\per\\steradian}} & "
+                                "{\\si{\\per\\centi\\metre\\squared\\per\\second}} \\\\\n"
+                                "\\midrule\n\\endhead\n\\bottomrule\n\\endfoot\n"
+                                "A\\_1 & 12.5 & 1.20e+36 \\\\\n"
+                                "müon\\textbar{}x & {-} & 7 \\\\\n"
+                                "\\end{longtable}}\n"}};
     bh_grid grid = sample();
     bh_text out = {0};
     rows[_i].write(&grid, &out);

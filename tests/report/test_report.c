@@ -58,10 +58,12 @@ static bh_text write_as(const struct made *m, enum format format, bh_page page)
     bh_text out = {0};
     bh_error err = {.code = BH_OK};
     const bh_paper *p = &m->report.paper;
-    const bh_code bad = format == HTML  ? bh_paper_html(p, page, &out, &err)
-                        : format == PDF ? bh_paper_pdf(p, page, &out, &err)
-                        : format == TEX ? bh_paper_latex(p, page, false, &out, &err)
-                                        : bh_paper_markdown(p, &out, &err);
+    const bh_code bad =
+        format == HTML  ? bh_paper_html(p, page, &out, &err)
+        : format == PDF ? bh_paper_pdf(p, page, &out, &err)
+        : format == TEX
+            ? bh_paper_latex(p, &(bh_latex_form){.page = page, .figures = "r"}, &out, &err)
+            : bh_paper_markdown(p, "r", &out, &err);
     ck_assert_msg(!bad, "%s", err.text);
     return out;
 }
@@ -285,7 +287,10 @@ static const char *tex_cell(const char *s, char *out)
                                            {"{]}", "]"},
                                            {"{*}", "*"},
                                            {NULL, NULL}};
-    if (strncmp(s, " \\\\\n\\bottomrule", 14) == 0 || strncmp(s, "\\documentclass", 14) == 0) {
+    if (strncmp(s, " \\\\*\n", 5) == 0) { /* of a short table, which is not broken */
+        s += 5;
+    } else if (strncmp(s, " \\\\\n\\bottomrule", 14) == 0 ||
+               strncmp(s, "\\documentclass", 14) == 0) {
         s = strstr(s, "\\endhead\n");
         if (!s)
             return NULL;
@@ -294,7 +299,8 @@ static const char *tex_cell(const char *s, char *out)
         s += strncmp(s, " & ", 3) == 0 ? 3 : 4;
     }
     const char *end = s;
-    while (strncmp(end, " & ", 3) != 0 && strncmp(end, " \\\\\n", 4) != 0)
+    while (strncmp(end, " & ", 3) != 0 && strncmp(end, " \\\\\n", 4) != 0 &&
+           strncmp(end, " \\\\*\n", 5) != 0)
         end++;
     unescape(s, (size_t)(end - s), pairs, out);
     if (strncmp(s, "\\num{", 5) == 0)
@@ -519,7 +525,7 @@ START_TEST(a_fragment_has_no_document_around_it)
 {
     struct made m = make(demos[0]);
     bh_text tex = {0};
-    ck_assert(!bh_paper_latex(&m.report.paper, BH_PAGE_A4, true, &tex, NULL));
+    ck_assert(!bh_paper_latex(&m.report.paper, &(bh_latex_form){.fragment = true}, &tex, NULL));
     ck_assert_ptr_null(strstr(tex.bytes, "\\documentclass"));
     ck_assert_ptr_null(strstr(tex.bytes, "{document}"));
     ck_assert_ptr_nonnull(strstr(tex.bytes, "% \\usepackage{siunitx}\n"));

@@ -2,6 +2,8 @@
 #ifndef BH_REPORT_LATEX_H
 #define BH_REPORT_LATEX_H
 
+#include <stddef.h>
+
 #include "beamhours/base/text.h"
 
 /* Appends the packages and units that a preamble must have, `lead` before each line. */
@@ -17,5 +19,18 @@ void bh_latex_words(bh_text *out, const char *words);
 /* Appends a unit as it stands in run/columns.h: "1/cm2/s" becomes
  * \si{\per\centi\metre\squared\per\second}; what is no such unit is shown as it stands. */
 void bh_latex_unit(bh_text *out, const char *unit);
+
+/* A size of letters for a table. */
+typedef struct {
+    const char *name; /* "\footnotesize" */
+    double letter;    /* [pt] how wide one is, rather more than less */
+    double gap;       /* [pt] between columns */
+} bh_latex_size;
+
+#define BH_LATEX_PAGE 480.0 /* [pt] how wide a table may be: A4 within margins of 20 mm */
+
+/* The largest with which `columns` columns of `letters` letters together fit the page; the smallest
+ * where none does. */
+const bh_latex_size *bh_latex_fit(size_t letters, size_t columns);
 
 #endif

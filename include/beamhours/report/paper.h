@@ -51,17 +51,26 @@ typedef struct {
 
 typedef enum { BH_PAGE_A4, BH_PAGE_LETTER } bh_page;
 
-/* Each appends a file that needs nothing from outside.  The same paper gives the same bytes.
- * BH_ENOMEM; BH_EDOMAIN for a figure whose axis is none. */
+/* Each appends a file.  The same paper gives the same bytes.  BH_ENOMEM; BH_EDOMAIN for a figure
+ * whose axis is none.  HTML and PDF need nothing from outside. */
 BH_CHECKED bh_code bh_paper_html(const bh_paper *paper, bh_page page, bh_text *out, bh_error *err);
 BH_CHECKED bh_code bh_paper_pdf(const bh_paper *paper, bh_page page, bh_text *out, bh_error *err);
 
-/* LaTeX with booktabs, longtable and siunitx (version 2 or 3); a fragment is what stands between
- * \begin{document} and \end{document}, and says in comments what it needs.  Figures are left to
- * `beamhours curve`: a sentence says so.  Markdown likewise. */
-BH_CHECKED bh_code bh_paper_latex(const bh_paper *paper, bh_page page, bool fragment, bh_text *out,
+/* How a paper becomes LaTeX. */
+typedef struct {
+    bh_page page;
+    bool fragment; /* only what stands between \begin{document} and \end{document}; comments say
+                      what it needs */
+    const char *figures; /* "report": figure 1 is in the file report-1.pdf beside it; NULL: it is
+                            described in words */
+} bh_latex_form;
+
+/* LaTeX with booktabs, longtable, graphicx and siunitx (version 2 or 3); Markdown, whose figure 1
+ * would be in report-1.svg.  The files of figures are the caller's to write: bh_figure_write. */
+BH_CHECKED bh_code bh_paper_latex(const bh_paper *paper, const bh_latex_form *form, bh_text *out,
                                   bh_error *err);
-BH_CHECKED bh_code bh_paper_markdown(const bh_paper *paper, bh_text *out, bh_error *err);
+BH_CHECKED bh_code bh_paper_markdown(const bh_paper *paper, const char *figures, bh_text *out,
+                                     bh_error *err);
 
 /* --- writing one --- */
 

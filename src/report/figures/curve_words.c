@@ -145,7 +145,7 @@ static const char *description(const struct writer *m)
     bh_figure_axis_words(&f->y, y, sizeof y);
     for (size_t s = 0; s < f->series_count; s++)
         if (f->series[s].kind == BH_SERIES_LINE)
-            bh_text_appendf(&lines, "%s%s", lines.length ? ", " : "; curves: ", f->series[s].name);
+            bh_text_appendf(&lines, "%s%s", lines.length ? "; " : "; curves: ", f->series[s].name);
     const char *below = f->below
                             ? bh_curve_say(m->arena, "; below it the %s, from %s to %s",
                                            f->below->title, short_number(m, f->below->y.axis.from),

@@ -5,7 +5,7 @@
 #include <stdio.h>
 #include <string.h>
 
-static const double far = 2.0;           /* [1] times the curves' own ratios: outside of the axis */
+static const double far = 1.0;           /* [1] times what the curves span: outside of the axis */
 static const double logarithmic = 20.0;  /* [1] ratio of the largest to the smallest */
 static const double least_span = 2.0e-3; /* [1] of the axis */
 
@@ -80,23 +80,25 @@ static bool divide_band(const struct divider *d, const bh_figure_band *from, bh_
     return low && high;
 }
 
-/* Points and their bars count as far as they lie near the curves. */
+/* Points and their bars count as far as they lie near the curves, which are to be told apart. */
 static bh_axis axis_of(const bh_figure *below, struct divider *d)
 {
-    const double least = d->lo / far, most = d->hi * far;
+    const double room = far * fmax(d->hi - d->lo, least_span);
+    const double least = d->lo - room, most = d->hi + room;
     for (size_t s = 0; s < below->series_count; s++)
         for (size_t i = 0; below->series[s].kind != BH_SERIES_LINE && i < below->series[s].count;
              i++) {
             const bh_figure_point *p = &below->series[s].point[i];
+            const double half = fmax(p->inner, p->outer);
             if (!(p->y >= least && p->y <= most))
                 continue;
-            widen(d, fmax(p->y - fmax(p->inner, p->outer), least));
-            widen(d, fmin(p->y + fmax(p->inner, p->outer), most));
+            widen(d, fmax(p->y - half, least));
+            widen(d, fmin(p->y + half, most));
         }
     if (d->lo > 0.0 && d->hi > logarithmic * d->lo)
         return bh_axis_around(d->lo, d->hi, true);
-    const double room = fmax(0.08 * (d->hi - d->lo), least_span / 2.0);
-    return (bh_axis){d->lo - room, d->hi + room, false};
+    const double edge = fmax(0.08 * (d->hi - d->lo), least_span / 2.0);
+    return (bh_axis){d->lo - edge, d->hi + edge, false};
 }
 
 static bool worth_it(const bh_figure *figure)

@@ -41,15 +41,20 @@ static void words(const char *lead, const char *text, const char *behind, bh_tex
     bh_text_append(out, behind);
 }
 
-/* A file of Markdown holds no drawing: what is on it is said. */
-static void figure(const bh_block *b, bh_text *out)
+/* The drawing is a file of its own; what is on it is said for who cannot see it. */
+static void figure(const bh_block *b, const char *figures, bh_text *out)
 {
+    if (figures) {
+        words("![", b->figure->description, "](", out);
+        bh_text_appendf(out, "%s-%d.svg)\n\n", figures, b->number);
+    }
     bh_text_appendf(out, "**Figure %d.** ", b->number);
-    words("", b->text, ". ", out);
-    words("", b->figure->description, "\n\n", out);
+    words("", b->text, figures ? "\n\n" : ". ", out);
+    if (!figures)
+        words("", b->figure->description, "\n\n", out);
 }
 
-static void block(const bh_paper *paper, size_t i, bh_text *out)
+static void block(const bh_paper *paper, size_t i, const char *figures, bh_text *out)
 {
     const bh_block *b = &paper->blocks[i];
     const bool last = i + 1 == paper->count || paper->blocks[i + 1].kind != b->kind;
@@ -71,7 +76,7 @@ static void block(const bh_paper *paper, size_t i, bh_text *out)
         table(b, out);
         break;
     case BH_BLOCK_FIGURE:
-        figure(b, out);
+        figure(b, figures, out);
         break;
     case BH_BLOCK_REFERENCE:
         bh_text_appendf(out, "%d. ", b->number);
@@ -80,10 +85,10 @@ static void block(const bh_paper *paper, size_t i, bh_text *out)
     }
 }
 
-bh_code bh_paper_markdown(const bh_paper *paper, bh_text *out, bh_error *err)
+bh_code bh_paper_markdown(const bh_paper *paper, const char *figures, bh_text *out, bh_error *err)
 {
     words("# ", paper->title, "\n\n", out);
     for (size_t i = 0; i < paper->count; i++)
-        block(paper, i, out);
+        block(paper, i, figures, out);
     return out->failed ? bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM)) : BH_OK;
 }

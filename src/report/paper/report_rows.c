@@ -8,6 +8,20 @@
 
 #define COUNT(list) (sizeof(list) / sizeof(list)[0])
 
+/* Whether a column of an angle repeats that of the arm in every row. */
+static bool says_the_angle(const bh_reporting *x, int column)
+{
+    if (column != BH_COL_SCATTERED_ANGLE && column != BH_COL_RECOIL_ANGLE)
+        return false;
+    for (size_t r = 0; r < x->view.row_count; r++) {
+        const double angle = bh_selection_number(&x->view, r, BH_COL_ANGLE),
+                     other = bh_selection_number(&x->view, r, column);
+        if (isnan(angle) != isnan(other) || fabs(angle - other) > 1e-9 * fabs(angle))
+            return false;
+    }
+    return true;
+}
+
 void bh_report_kinematics(bh_reporting *x)
 {
     static const int columns[] = {BH_COL_SETTING,
@@ -25,12 +39,19 @@ void bh_report_kinematics(bh_reporting *x)
                                   BH_COL_Q2,
                                   BH_COL_Q,
                                   BH_COL_EPSILON};
+    int shown[COUNT(columns)];
+    size_t n = 0;
+    for (size_t c = 0; c < COUNT(columns); c++)
+        if (!says_the_angle(x, columns[c]))
+            shown[n++] = columns[c];
     bh_paper_add(&x->w, BH_BLOCK_SECTION, "Kinematics");
     bh_report_rows(x,
                    "Kinematics of each setting: laboratory angles; energy: kinetic, entering the "
-                   "target; T', p': of the scattered particle at the vertex; T recoil and recoil: "
-                   "of the struck nucleus; Q2 positive; epsilon: virtual-photon polarisation",
-                   columns, COUNT(columns));
+                   "target; angle: of the arm, thus of the particle it detects; T', p': of the "
+                   "scattered particle at the vertex; T recoil and recoil: of the struck nucleus; "
+                   "central: momentum the arm is set to; Q2 positive; epsilon: virtual-photon "
+                   "polarisation",
+                   shown, n);
 }
 
 void bh_report_rates(bh_reporting *x)
@@ -129,11 +150,11 @@ static double background_of(const bh_explanation *e)
     return 0.0;
 }
 
-/* Each share that shows in the four digits of the sum, what the others give together, and the sum;
+/* Each share that shows in the digits of the sum, what the others give together, and the sum;
  * nothing where nothing is counted. */
 static void items(bh_reporting *x, size_t row, const bh_explanation *e)
 {
-    const double all = background_of(e), least = 1e-3 * all, shown = 5e-5 * all;
+    const double all = background_of(e), least = 1e-3 * all, shown = 5e-4 * all;
     double said = 0.0;
     bool inside = false;
     for (size_t i = 0; all > 0.0 && i < bh_explanation_lines(e); i++) {
