@@ -27,7 +27,7 @@ typedef struct {
     double gap;       /* [pt] between columns */
 } bh_latex_size;
 
-#define BH_LATEX_PAGE 480.0 /* [pt] how wide a table may be: A4 within margins of 20 mm */
+#define BH_LATEX_PAGE 480.0 /* [pt] exact; A4 in margins of 20 mm */
 
 /* The largest with which `columns` columns of `letters` letters together fit the page; the smallest
  * where none does. */
