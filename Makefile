@@ -12,8 +12,8 @@ STD   := -std=c11 -D_POSIX_C_SOURCE=200809L -Iinclude $(patsubst -I%,-isystem %,
 FAST  := -fopenmp-simd -fno-math-errno  # never -ffast-math: NaN and infinity are part of what is checked
 ALL_C  = $(STD) -fPIC -fvisibility=hidden $(WARN) $(WERROR) $(HARDEN) $(CPPFLAGS) $(FAST) $(CFLAGS)
 LINK   = $(quiet) $(CC) $(CFLAGS) -Wl,-z,relro,-z,now,--as-needed $(LDFLAGS) -o $@
-LIBS  := $(shell pkg-config --libs $(PKGS) 2>/dev/null) -lm
-FRONT_LIBS := $(shell pkg-config --libs ncursesw $(DRAW) 2>/dev/null) -pthread
+LIBS  := $(shell pkg-config --libs $(PKGS) 2>/dev/null) -lm -pthread
+FRONT_LIBS := $(shell pkg-config --libs ncursesw $(DRAW) 2>/dev/null)
 TEST_LIBS  := $(shell pkg-config --libs check vterm 2>/dev/null)
 
 MAIN     := src/command/main.c

@@ -18,8 +18,9 @@ double bh_external_kept(const bh_external *x)
     const double eta = x->incident / x->scattered;
     const double before = x->before.thickness > 0.0 ? x->before.b * x->before.thickness : 0.0;
     const double after = x->after.thickness > 0.0 ? x->after.b * x->after.thickness : 0.0;
+    const double gamma = tgamma(1.0 + before + after); /* lgamma writes a variable of all threads */
     const double kept = before * log(eta * eta * x->cut / x->incident) +
-                        after * log(x->cut / x->scattered) - lgamma(1.0 + before + after);
+                        after * log(x->cut / x->scattered) - log(gamma);
     return fmin(exp(kept), 1.0);
 }
 

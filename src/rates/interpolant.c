@@ -261,12 +261,15 @@ static void clenshaw(const piece *p, const double *t, double *sum)
 {
     double one[BLOCK] = {0};
     double two[BLOCK] = {0};
-    for (int k = p->count - 1; k > 0; k--)
+    for (int k = p->count - 1; k > 0; k--) {
+        const double c = p->c[k];
+#pragma omp simd
         for (int i = 0; i < BLOCK; i++) {
-            const double next = 2 * t[i] * one[i] - two[i] + p->c[k];
+            const double next = 2 * t[i] * one[i] - two[i] + c;
             two[i] = one[i];
             one[i] = next;
         }
+    }
     for (int i = 0; i < BLOCK; i++)
         sum[i] = t[i] * one[i] - two[i] + p->c[0];
 }

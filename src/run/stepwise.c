@@ -4,14 +4,15 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "beamhours/base/crew.h"
 #include "beamhours/run/setting_key.h"
 #include "beamhours/run/totals.h"
 
 enum { BUCKETS = 4096, KEEP_FOR = 8 };
 
 /* Rows of one setting; its remarks apart, to be added to those of the others. */
-struct result {
-    struct result *next;
+struct bh_result {
+    bh_result *next;
     bh_setting_key key;
     size_t line_count;
     bh_lines *lines; /* where what it follows from stood in the file */
@@ -23,7 +24,7 @@ struct result {
 };
 
 struct bh_results {
-    struct result *buckets[BUCKETS];
+    bh_result *buckets[BUCKETS];
     unsigned generation;
     size_t evaluated;
 };
@@ -32,10 +33,11 @@ struct bh_stepwise {
     const bh_plan *plan;
     bh_arena *arena;
     bh_results *results;
-    bh_evaluator evaluator;
+    bh_evaluator first, *hands;      /* of each thread */
+    bh_arena *arenas[BH_MOST_HANDS]; /* theirs: evaluating takes from them */
     bh_setting_source *sources;
-    const struct result **known; /* of each setting, or NULL */
-    struct result *loose;        /* those without a key */
+    const bh_result **known; /* of each setting, or NULL */
+    bh_result *loose;        /* those without a key */
 };
 
 bh_results *bh_results_new(void)
@@ -43,7 +45,7 @@ bh_results *bh_results_new(void)
     return calloc(1, sizeof(bh_results));
 }
 
-static void free_result(struct result *r)
+static void free_result(bh_result *r)
 {
     bh_remarks_free(r->remarks);
     free(r->whole);
@@ -52,10 +54,10 @@ static void free_result(struct result *r)
     free(r);
 }
 
-static void free_chain(struct result *r)
+static void free_chain(bh_result *r)
 {
     while (r) {
-        struct result *next = r->next;
+        bh_result *next = r->next;
         free_result(r);
         r = next;
     }
@@ -73,9 +75,9 @@ size_t bh_results_evaluated(const bh_results *results)
     return results->evaluated;
 }
 
-static struct result **place_of(bh_results *results, const bh_setting_key *key)
+static bh_result **place_of(bh_results *results, const bh_setting_key *key)
 {
-    struct result **r = &results->buckets[key->word[1] % BUCKETS];
+    bh_result **r = &results->buckets[key->word[1] % BUCKETS];
     while (*r && memcmp(&(*r)->key, key, sizeof *key) != 0)
         r = &(*r)->next;
     return r;
@@ -85,8 +87,8 @@ static struct result **place_of(bh_results *results, const bh_setting_key *key)
 static void forget_old(bh_results *results)
 {
     for (size_t b = 0; b < BUCKETS; b++)
-        for (struct result **r = &results->buckets[b]; *r;) {
-            struct result *old = *r;
+        for (bh_result **r = &results->buckets[b]; *r;) {
+            bh_result *old = *r;
             if (results->generation - old->used <= KEEP_FOR) {
                 r = &old->next;
                 continue;
@@ -109,10 +111,11 @@ bh_stepwise *bh_stepwise_new(const bh_plan *plan, const bh_evaluation *how, bh_r
         forget_old(results);
         s->sources = bh_arena_take(s->arena, plan->setting_count + 1, sizeof *s->sources);
         s->known = bh_arena_take(s->arena, plan->setting_count + 1, sizeof(void *));
-        s->evaluator.yielder = (bh_yielder){
+        s->hands = &s->first;
+        s->first.yielder = (bh_yielder){
             .workspace = how->workspace, .cancelled = how->cancelled, .asker = how->asker};
         if (s->sources && s->known && bh_setting_sources(plan, s->arena, s->sources) &&
-            !bh_evaluator_prepare(&s->evaluator, plan, s->arena, err))
+            !bh_evaluator_prepare(&s->first, plan, s->arena, err))
             return s;
     }
     bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
@@ -120,17 +123,40 @@ bh_stepwise *bh_stepwise_new(const bh_plan *plan, const bh_evaluation *how, bh_r
     return NULL;
 }
 
+bh_code bh_stepwise_hands(bh_stepwise *steps, bh_workspace *const *workspaces, size_t count,
+                          bh_error *err)
+{
+    bh_evaluator *hands = bh_arena_take(steps->arena, count + 1, sizeof *hands);
+    if (!hands || count > BH_MOST_HANDS)
+        return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    bh_code code = BH_OK;
+    for (size_t i = 0; !code && i < count; i++) {
+        steps->arenas[i] = steps->arenas[i] ? steps->arenas[i] : bh_arena_new();
+        if (!steps->arenas[i])
+            return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+        hands[i].yielder = (bh_yielder){.workspace = workspaces[i],
+                                        .cancelled = steps->first.yielder.cancelled,
+                                        .asker = steps->first.yielder.asker};
+        code = bh_evaluator_prepare(&hands[i], steps->plan, steps->arenas[i], err);
+    }
+    if (!code && count)
+        steps->hands = hands;
+    return code;
+}
+
 void bh_stepwise_free(bh_stepwise *steps)
 {
     if (!steps)
         return;
     free_chain(steps->loose);
+    for (size_t i = 0; i < BH_MOST_HANDS; i++)
+        bh_arena_free(steps->arenas[i]);
     bh_arena_free(steps->arena);
     free(steps);
 }
 
 /* Remarks tell lines of the file: those of a part that moved move with it. */
-static void move_remarks(struct result *r, const bh_setting_source *source)
+static void move_remarks(bh_result *r, const bh_setting_source *source)
 {
     for (size_t i = 0; i < r->line_count && i < source->count; i++) {
         const int by = source->lines[i].from - r->lines[i].from;
@@ -148,7 +174,7 @@ static bool keyed(const bh_setting_key *key)
 }
 
 /* Rows say where they stand in the plan: that may be another place now. */
-static void number_rows(struct result *r, size_t setting)
+static void number_rows(bh_result *r, size_t setting)
 {
     for (size_t i = 0; i < r->arms; i++)
         r->whole[i].setting = setting;
@@ -159,7 +185,7 @@ static void number_rows(struct result *r, size_t setting)
 bool bh_stepwise_recall(bh_stepwise *steps, size_t setting, bool bins)
 {
     const bh_setting_key *key = &steps->sources[setting].key;
-    struct result *r = keyed(key) ? *place_of(steps->results, key) : NULL;
+    bh_result *r = keyed(key) ? *place_of(steps->results, key) : NULL;
     if (!r || (bins && !r->bin))
         return false;
     r->used = steps->results->generation;
@@ -169,9 +195,9 @@ bool bh_stepwise_recall(bh_stepwise *steps, size_t setting, bool bins)
     return true;
 }
 
-static struct result *lay_out(const bh_setting *setting, size_t number, bool bins)
+static bh_result *lay_out(const bh_setting *setting, size_t number, bool bins)
 {
-    struct result *r = calloc(1, sizeof *r);
+    bh_result *r = calloc(1, sizeof *r);
     if (!r)
         return NULL;
     r->arms = setting->arm_count;
@@ -193,54 +219,72 @@ static struct result *lay_out(const bh_setting *setting, size_t number, bool bin
     return r;
 }
 
-/* Puts it where it belongs, in the place of one without bins. */
-static void store(bh_stepwise *steps, size_t setting, struct result *r)
+/* It goes where it belongs, in the place of one without bins. */
+void bh_stepwise_take(bh_stepwise *steps, size_t setting, bh_result *result)
 {
-    const bh_setting_source *source = &steps->sources[setting];
-    r->key = source->key;
-    memcpy(r->lines, source->lines, source->count * sizeof *r->lines);
-    r->line_count = source->count;
-    r->used = steps->results->generation;
-    struct result **place = keyed(&r->key) ? place_of(steps->results, &r->key) : &steps->loose;
-    if (keyed(&r->key) && *place) {
-        struct result *old = *place;
-        r->next = old->next;
+    bh_result **place =
+        keyed(&result->key) ? place_of(steps->results, &result->key) : &steps->loose;
+    result->used = steps->results->generation;
+    if (keyed(&result->key) && *place) {
+        bh_result *old = *place;
+        result->next = old->next;
         free_result(old);
     } else {
-        r->next = *place;
+        result->next = *place;
     }
-    *place = r;
-    steps->known[setting] = r;
+    *place = result;
+    steps->known[setting] = result;
+    steps->results->evaluated++;
 }
 
-bh_code bh_stepwise_evaluate(bh_stepwise *steps, size_t setting, bool bins, bh_error *err)
+static bool copy_source(bh_result *r, const bh_setting_source *source)
 {
-    struct result *r = lay_out(&steps->plan->settings[setting], setting, bins);
-    if (r)
-        r->lines = calloc(steps->sources[setting].count + 1, sizeof *r->lines);
-    if (r && !r->lines) {
+    r->key = source->key;
+    r->line_count = source->count;
+    r->lines = calloc(source->count + 1, sizeof *r->lines);
+    if (r->lines)
+        memcpy(r->lines, source->lines, source->count * sizeof *r->lines);
+    return r->lines != NULL;
+}
+
+bh_code bh_stepwise_compute(const bh_stepwise *steps, const bh_step *step, bh_result **out,
+                            bh_error *err)
+{
+    bh_result *r = lay_out(&steps->plan->settings[step->setting], step->setting, step->bins);
+    *out = NULL;
+    if (r && !copy_source(r, &steps->sources[step->setting])) {
         free_result(r);
         r = NULL;
     }
     if (!r)
         return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    bh_evaluator *hand = &steps->hands[step->hand];
     bh_setting_rows rows = {.whole = r->whole, .bins = r->bin};
-    steps->evaluator.yielder.remarks = r->remarks;
-    const bh_code code = bh_setting_evaluate(&steps->evaluator, setting, &rows, err);
-    steps->evaluator.yielder.remarks = NULL;
+    hand->yielder.remarks = r->remarks;
+    const bh_code code = bh_setting_evaluate(hand, step->setting, &rows, err);
+    hand->yielder.remarks = NULL;
     if (code) {
         free_result(r);
         return code;
     }
     r->hours = (bh_stretch){.full = rows.full, .empty = rows.empty};
-    steps->results->evaluated++;
-    store(steps, setting, r);
+    *out = r;
     return BH_OK;
+}
+
+bh_code bh_stepwise_evaluate(bh_stepwise *steps, size_t setting, bool bins, bh_error *err)
+{
+    bh_result *r;
+    const bh_code code =
+        bh_stepwise_compute(steps, &(bh_step){.setting = setting, .bins = bins}, &r, err);
+    if (!code)
+        bh_stepwise_take(steps, setting, r);
+    return code;
 }
 
 bh_setting_rows bh_stepwise_rows(const bh_stepwise *steps, size_t setting)
 {
-    const struct result *r = steps->known[setting];
+    const bh_result *r = steps->known[setting];
     return r ? (bh_setting_rows){.whole = r->whole,
                                  .bins = r->bin,
                                  .full = r->hours.full,

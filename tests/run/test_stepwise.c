@@ -3,31 +3,53 @@
 #include "../suite.h"
 
 #include <math.h>
+#include <pthread.h>
+#include <stdatomic.h>
 #include <stdio.h>
 #include <string.h>
 
+#include "beamhours/base/crew.h"
 #include "beamhours/base/file.h"
 #include "beamhours/run/stepwise.h"
 
 static const char *const demos[] = {"alpha-gold", "hydrogen-jet", "hydrogen-separation",
                                     "lead",       "muon-rings",   "positron-electron"};
 
+enum { HANDS = 4 };
+
 struct made {
     bh_material_library *library;
     bh_workspace *workspace;
     bh_results *results;
+    bh_crew *crew; /* NULL: one thread */
+    bh_workspace *workspaces[HANDS];
 };
 
 static struct made make(void)
 {
     static const char *const folders[] = {"materials", NULL};
-    struct made m = {bh_material_library_new(folders), bh_workspace_new(), bh_results_new()};
+    struct made m = {.library = bh_material_library_new(folders),
+                     .workspace = bh_workspace_new(),
+                     .results = bh_results_new()};
     ck_assert(m.library && m.workspace && m.results);
+    return m;
+}
+
+static struct made make_with_crew(void)
+{
+    struct made m = make();
+    m.crew = bh_crew_new(HANDS);
+    ck_assert(m.crew && bh_crew_hands(m.crew) == HANDS);
+    for (size_t i = 0; i < HANDS; i++)
+        ck_assert_ptr_nonnull(m.workspaces[i] = bh_workspace_new());
     return m;
 }
 
 static void unmake(struct made *m)
 {
+    bh_crew_free(m->crew);
+    for (size_t i = 0; i < HANDS; i++)
+        bh_workspace_free(m->workspaces[i]);
     bh_results_free(m->results);
     bh_workspace_free(m->workspace);
     bh_material_library_free(m->library);
@@ -65,6 +87,43 @@ static void same_said(const bh_diags *a, const bh_diags *b)
     }
 }
 
+/* --- by several threads --- */
+
+struct turns {
+    bh_stepwise *steps;
+    size_t count;
+    bool bins;
+    atomic_size_t next;
+    pthread_mutex_t lock;
+};
+
+static void take_turns(void *of, size_t hand)
+{
+    struct turns *t = of;
+    size_t s;
+    while ((s = atomic_fetch_add(&t->next, 1U)) < t->count) {
+        bh_result *result = NULL;
+        (void)pthread_mutex_lock(&t->lock);
+        const bool known = bh_stepwise_recall(t->steps, s, t->bins);
+        (void)pthread_mutex_unlock(&t->lock);
+        const bh_step step = {.setting = s, .hand = hand, .bins = t->bins};
+        if (known || bh_stepwise_compute(t->steps, &step, &result, NULL))
+            continue;
+        (void)pthread_mutex_lock(&t->lock);
+        bh_stepwise_take(t->steps, s, result);
+        (void)pthread_mutex_unlock(&t->lock);
+    }
+}
+
+static void by_all_hands(struct made *m, bh_stepwise *steps, size_t count, bool bins)
+{
+    struct turns t = {.steps = steps, .count = count, .bins = bins};
+    ck_assert(!bh_stepwise_hands(steps, m->workspaces, HANDS, NULL));
+    ck_assert_int_eq(pthread_mutex_init(&t.lock, NULL), 0);
+    bh_crew_work(m->crew, take_turns, &t);
+    (void)pthread_mutex_destroy(&t.lock);
+}
+
 /* Evaluates the text step by step, the last setting first, and compares it with the table; how many
  * settings had to be evaluated. */
 static size_t compare(struct made *m, const char *text, bool bins)
@@ -79,6 +138,8 @@ static size_t compare(struct made *m, const char *text, bool bins)
     bh_arena *arena = bh_arena_new();
     bh_conclusion end = {.warnings = bh_diags_new()};
     ck_assert(table && steps && arena && end.warnings);
+    if (m->crew)
+        by_all_hands(m, steps, plan->setting_count, bins);
     for (size_t s = plan->setting_count; s-- > 0;)
         if (!bh_stepwise_recall(steps, s, bins))
             ck_assert(!bh_stepwise_evaluate(steps, s, bins, NULL));
@@ -119,6 +180,18 @@ START_TEST(is_the_table)
     ck_assert_uint_eq(compare(&m, moved.bytes, false), 0);
     ck_assert_uint_eq(compare(&m, text.bytes, false), 0);
     bh_text_free(&moved);
+    bh_text_free(&text);
+    unmake(&m);
+}
+END_TEST
+
+/* Whoever evaluates a setting, and in whatever order. */
+START_TEST(is_the_table_by_all_hands)
+{
+    struct made m = make_with_crew();
+    bh_text text = demo_text(demos[_i]);
+    ck_assert_uint_gt(compare(&m, text.bytes, true), 0);
+    ck_assert_uint_eq(compare(&m, text.bytes, true), 0);
     bh_text_free(&text);
     unmake(&m);
 }
@@ -206,6 +279,7 @@ int main(void)
     TCase *tests = tcase_create("stepwise");
     tcase_set_timeout(tests, 120);
     tcase_add_loop_test(tests, is_the_table, 0, COUNT(demos));
+    tcase_add_loop_test(tests, is_the_table_by_all_hands, 0, COUNT(demos));
     tcase_add_loop_test(tests, touches_no_more, 0, COUNT(changes));
     tcase_add_test(tests, can_be_cancelled);
     return run_suite("run/stepwise", tests);

@@ -31,11 +31,34 @@ bh_stepwise *bh_stepwise_new(const bh_plan *plan, const bh_evaluation *how, bh_r
                              bh_error *err);
 void bh_stepwise_free(bh_stepwise *steps);
 
+/* Makes room for `count` [1] threads (up to BH_MOST_HANDS of crew.h) to evaluate side by side, each
+ * with a workspace of its own in `workspaces`, which the caller keeps: hands number 0 to count - 1.
+ * Without it there is the one hand of bh_stepwise_new.  BH_ENOMEM. */
+BH_CHECKED bh_code bh_stepwise_hands(bh_stepwise *steps, bh_workspace *const *workspaces,
+                                     size_t count, bh_error *err);
+
 /* Takes the rows of setting number `setting` from the store; false when they are not in it, or not
  * with the rows of bins that are wanted. */
 bool bh_stepwise_recall(bh_stepwise *steps, size_t setting, bool bins);
 
-/* Evaluates them and puts them into the store; errors as bh_setting_evaluate. */
+/* The rows of one setting, evaluated and not in the store yet. */
+typedef struct bh_result bh_result;
+
+/* What to evaluate, and by which hand. */
+typedef struct {
+    size_t setting, hand; /* [1] numbers from 0 */
+    bool bins;
+} bh_step;
+
+/* Evaluates into `out` (NULL on errors: as bh_setting_evaluate).  Threads may do so side by side,
+ * each with its own hand; the numbers are the same whoever does it. */
+BH_CHECKED bh_code bh_stepwise_compute(const bh_stepwise *steps, const bh_step *step,
+                                       bh_result **out, bh_error *err);
+
+/* Puts it into the store, which takes it.  One thread at a time, and none that asks for rows. */
+void bh_stepwise_take(bh_stepwise *steps, size_t setting, bh_result *result);
+
+/* Evaluates with hand 0 and puts it into the store; errors as bh_setting_evaluate. */
 BH_CHECKED bh_code bh_stepwise_evaluate(bh_stepwise *steps, size_t setting, bool bins,
                                         bh_error *err);
 

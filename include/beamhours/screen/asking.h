@@ -1,10 +1,12 @@
-/* asking.h - the two threads of a worker and what they share; for worker.c and answers.c only. */
+/* asking.h - the threads of a worker and what they share; for worker.c, evaluating.c and answers.c
+ * only. */
 #ifndef BH_SCREEN_ASKING_H
 #define BH_SCREEN_ASKING_H
 
 #include <pthread.h>
 #include <stdatomic.h>
 
+#include "beamhours/base/crew.h"
 #include "beamhours/run/stepwise.h"
 #include "beamhours/screen/worker.h"
 
@@ -44,8 +46,9 @@ struct bh_worker {
     size_t wanted[BH_ASK_KINDS]; /* number of the last question of each kind; 0: withdrawn */
     bh_reply *answers[BH_MOST_ANSWERS];
     size_t answer_count;
-    bh_results *results; /* of the first thread */
-    bh_workspace *workspace;
+    bh_results *results;                      /* of the first thread */
+    bh_crew *crew;                            /* it evaluates for the first thread */
+    bh_workspace *workspaces[BH_MOST_HANDS];  /* of each of its hands */
     bh_reading_of *last[2][BH_READINGS_KEPT]; /* of each thread, the newest first */
 };
 
@@ -55,6 +58,9 @@ bh_reading_of *bh_worker_read(bh_worker *worker, int which, const char *bytes, s
 
 /* Makes whoever waits for the worker look. */
 void bh_worker_ring(bh_worker *worker);
+
+/* What the first thread does with a job: outcomes are handed over until it is done or overtaken. */
+void bh_worker_evaluate(bh_worker *worker, const bh_own_job *job);
 
 /* The second thread. */
 void *bh_worker_answers(void *of);
