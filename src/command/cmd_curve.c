@@ -148,12 +148,31 @@ static int listed(const struct job *job)
 
 /* --- all of it --- */
 
+/* A model beyond the data it was fitted to. */
+static void say_ranges(const struct job *job)
+{
+    const char *plan = job->in.shown ? job->in.shown : job->in.name;
+    for (size_t k = 0; k < job->curves.count; k++) {
+        const bh_curve *c = job->curves.curve[k];
+        const bh_curve_model m = bh_curve_structure(c);
+        size_t beyond = 0;
+        for (size_t i = 0; i < bh_curve_count(c); i++)
+            beyond += !bh_curve_inside(c, i);
+        if (beyond)
+            bh_print(stderr,
+                     "%s: warning: models.structure: %s is fitted to data from Q2 %g to %g GeV2; "
+                     "%zu of %zu points of its curve lie outside\n",
+                     plan, m.name, m.low, m.high, beyond, bh_curve_count(c));
+    }
+}
+
 static int run(struct job *job)
 {
     bh_error err = {.code = BH_OK};
     bh_say_diags(stderr, job->in.diags);
     if (bh_curves_make(job->in.plan, &job->request, &job->curves, &err))
         return wrong(job, &err);
+    say_ranges(job);
     return is_drawn(job->format) ? drawn(job) : listed(job);
 }
 

@@ -2,6 +2,7 @@
 #include "beamhours/run/curve.h"
 
 #include <math.h>
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
@@ -16,7 +17,11 @@
 
 enum { POINTS = 61, MOST_POINTS = 481, MEV2_PER_GEV2 = 1000000 };
 
+enum { LONGEST_NAME = 64 };
+
 struct bh_curve {
+    char model[LONGEST_NAME];   /* "": no structure of one nuclide */
+    double known[2];            /* [GeV2] */
     bh_structure_choice choice; /* of the struck nuclide, where the caller names a model */
     bool slices;                /* of a ring */
     size_t count;
@@ -319,15 +324,29 @@ static void add_points(bh_curve *c, const struct origin *o, int wanted)
         add_point(c, o, i == points - 1 ? hi : lo + (hi - lo) * i / (points - 1));
 }
 
+/* The model of the struck nuclide, and how far it is known. */
+static bh_code name_model(bh_curve *c, const bh_plan *plan, const bh_curve_request *r,
+                          const struct origin *o, bh_error *err)
+{
+    if (!o->nuclide)
+        return BH_OK;
+    const int z = o->nuclide->z, a = o->nuclide->a;
+    const char *name = r->structure ? r->structure : bh_plan_structure(plan, z, a);
+    bh_structure *made = bh_structure_new(name, z, a, r->structure ? err : NULL);
+    if (!made) /* one of the plan complains where it is used */
+        return r->structure ? err->code = BH_EDOMAIN : BH_OK;
+    if (o->setting->beam.particle.kind == BH_KIND_LEPTON) /* others meet all the charge */
+        (void)snprintf(c->model, sizeof c->model, "%s", bh_structure_name(made));
+    bh_structure_range(made, &c->known[0], &c->known[1]);
+    bh_structure_free(made);
+    return BH_OK;
+}
+
 static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request *r,
                         const struct origin *o, bh_error *err)
 {
-    if (r->structure && o->nuclide) {
-        bh_structure *named = bh_structure_new(r->structure, o->nuclide->z, o->nuclide->a, err);
-        if (!named)
-            return err->code = BH_EDOMAIN;
-        bh_structure_free(named);
-    }
+    if (name_model(c, plan, r, o, err))
+        return err->code;
     add_points(c, o, r->points);
     if (c->count == 0)
         return bh_fail(err, BH_EDOMAIN, "this arm can stand at no point of the curve");
@@ -390,6 +409,17 @@ double bh_curve_y(const bh_curve *curve, size_t i, bh_column_id column)
     if (curve->slices && column == BH_COL_LIVE)
         return (double)NAN;
     return bh_table_number(curve->table, false, i, column);
+}
+
+bh_curve_model bh_curve_structure(const bh_curve *curve)
+{
+    return (bh_curve_model){curve->model, curve->known[0], curve->known[1]};
+}
+
+bool bh_curve_inside(const bh_curve *curve, size_t i)
+{
+    const double q2 = bh_table_number(curve->table, false, i, BH_COL_Q2);
+    return !curve->model[0] || !(q2 < curve->known[0] || q2 > curve->known[1]);
 }
 
 const char *bh_curve_marks(const bh_curve *curve, size_t i)

@@ -178,6 +178,30 @@ START_TEST(what_cannot_be_drawn_is_refused)
 }
 END_TEST
 
+/* Bernauer et al. (A1), Phys. Rev. C 90 (2014) 015206: cross sections up to Q2 0.977 GeV2. */
+START_TEST(a_model_ends_somewhere)
+{
+    struct evaluated e = read_text(BEAM "target: {name: T, scatterer: H, layers: [{material: "
+                                        "liquid-hydrogen, thickness: 5 cm}]}\n"
+                                        "arms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±70 "
+                                        "mrad}]\nsettings: [{name: K1, angle: 30 deg, beam: "
+                                        "{kinetic_energy: 1500 MeV}}]\n");
+    const bh_curve_request request = {.structure = "a1-2014"};
+    bh_curve *c = curve(&e, &request);
+    const bh_curve_model m = bh_curve_structure(c);
+    size_t inside = 0;
+    ck_assert_str_eq(m.name, "a1-2014");
+    ck_assert(m.low == 0 && m.high == 0.977);
+    for (size_t i = 0; i < bh_curve_count(c); i++) {
+        ck_assert(bh_curve_inside(c, i) == (bh_curve_y(c, i, BH_COL_Q2) <= 0.977));
+        inside += bh_curve_inside(c, i);
+    }
+    ck_assert(inside > 0 && inside < bh_curve_count(c));
+    bh_curve_free(c);
+    done(&e);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("curve");
@@ -188,5 +212,6 @@ int main(void)
     tcase_add_test(tests, another_structure_changes_the_struck_nucleus);
     tcase_add_loop_test(tests, what_cannot_be_drawn_is_refused, 0, COUNT(mistakes));
     bh_curve_free(NULL);
+    tcase_add_test(tests, a_model_ends_somewhere);
     return run_suite("run/curve", tests);
 }

@@ -48,6 +48,18 @@ double bh_curve_y(const bh_curve *curve, size_t i, bh_column_id column);
  * for none. */
 const char *bh_curve_marks(const bh_curve *curve, size_t i);
 
+/* The structure model of the struck nuclide, and the range of the data behind it. */
+typedef struct {
+    const char *name; /* "" for several nuclides, and for hadrons and ions */
+    double low, high; /* [GeV2] */
+} bh_curve_model;
+
+/* It belongs to the curve. */
+bh_curve_model bh_curve_structure(const bh_curve *curve);
+
+/* Whether point i lies in that range; beyond it the model is continued, not known. */
+bool bh_curve_inside(const bh_curve *curve, size_t i);
+
 /* The key and unit of what varies ("angle_deg"). */
 const char *bh_curve_key(bh_against against);
 
