@@ -92,6 +92,7 @@ static void row_cells(const bh_comparison *c, size_t old, size_t now, bh_grid *g
 
 static void rows_grid(const bh_comparison *c, bh_grid *grid)
 {
+    grid->names = 2;
     bh_grid_column_add(grid, "setting", "", false);
     bh_grid_column_add(grid, "arm", "", false);
     for (size_t w = 0; w < WATCHED; w++) {
@@ -138,6 +139,14 @@ static void show(const bh_comparison *c, make_grid *make, write_grid *write, bh_
     bh_grid_free(&grid);
 }
 
+static void show_text(const bh_comparison *c, make_grid *make, int width, bh_text *out)
+{
+    bh_grid grid = {0};
+    make(c, &grid);
+    bh_grid_text(&grid, width, out);
+    bh_grid_free(&grid);
+}
+
 void bh_comparison_text(const bh_comparison *c, int width, bh_text *out)
 {
     if (c->inputs->count == 0)
@@ -150,9 +159,9 @@ void bh_comparison_text(const bh_comparison *c, int width, bh_text *out)
         bh_text_free(&line);
     }
     bh_text_append(out, "\n");
-    show(c, rows_grid, bh_grid_text, out);
+    show_text(c, rows_grid, width, out);
     bh_text_append(out, "\n");
-    show(c, totals_grid, bh_grid_text, out);
+    show_text(c, totals_grid, width, out);
     bh_report_text_cautions(c->after, width, out);
 }
 

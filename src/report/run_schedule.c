@@ -218,16 +218,20 @@ static void end_cells(const bh_run_schedule *s, bh_grid *grid)
 
 static void fill(const bh_run_schedule *s, bh_grid *grid)
 {
-    static const bh_grid_column columns[] = {{"arm", "", false},         {"angle", "deg", true},
-                                             {"central", "MeV/c", true}, {"prescale", "1", true},
-                                             {"hours", "h", true},       {"charge", "mC", true},
-                                             {"counts", "1", true}};
+    static const struct {
+        const char *heading, *unit;
+        bool number;
+    } columns[] = {{"arm", "", false},      {"angle", "deg", true}, {"central", "MeV/c", true},
+                   {"prescale", "1", true}, {"hours", "h", true},   {"charge", "mC", true},
+                   {"counts", "1", true}};
     const bh_plan *plan = bh_table_plan(s->table);
     struct filling f = {s, grid, false, plan->target_count > 1};
     for (size_t i = 1; i < plan->setting_count; i++)
         f.particles = f.particles || strcmp(plan->settings[i].beam.particle.name,
                                             plan->settings[0].beam.particle.name) != 0;
+    grid->names = 2;
     bh_grid_column_add(grid, "begins", s->has_start ? "" : "h", !s->has_start);
+    grid->columns[0].whole = true;
     bh_grid_column_add(grid, "to do", "", false);
     if (f.particles)
         bh_grid_column_add(grid, "beam", "", false);
@@ -265,7 +269,7 @@ void bh_run_schedule_text(const bh_run_schedule *s, int width, bh_text *out)
         bh_text_append(out, "\n");
     }
     fill(s, &grid);
-    bh_grid_text(&grid, out);
+    bh_grid_text(&grid, width, out);
     bh_grid_free(&grid);
     bh_text_append(out, "\n");
     for (size_t i = 0; i < REMARKS; i++)

@@ -8,6 +8,11 @@
 #include <stdio.h>
 #include <string.h>
 
+static void as_text(const bh_grid *grid, bh_text *out)
+{
+    bh_grid_text(grid, 80, out);
+}
+
 static bh_grid sample(void)
 {
     bh_grid grid = {0};
@@ -25,10 +30,10 @@ START_TEST(each_format_lays_it_out)
     static const struct {
         void (*write)(const bh_grid *grid, bh_text *out);
         const char *wanted;
-    } rows[] = {{bh_grid_text, "name   sigma luminosity\n"
-                               "       nb/sr    1/cm2/s\n"
-                               "A_1     12.5   1.20e+36\n"
-                               "müon|x     -          7\n"},
+    } rows[] = {{as_text, "name   sigma luminosity\n"
+                          "       nb/sr    1/cm2/s\n"
+                          "A_1     12.5   1.20e+36\n"
+                          "müon|x     -          7\n"},
                 {bh_grid_markdown, "| name | sigma, nb/sr | luminosity, 1/cm2/s |\n"
                                    "| --- | ---: | ---: |\n"
                                    "| A\\_1 | 12.5 | 1.20e+36 |\n"
@@ -54,8 +59,8 @@ END_TEST
 /* A grid that lost a cell writes nothing and says so; one without columns is nothing. */
 START_TEST(what_is_incomplete_is_not_shown)
 {
-    static void (*const write[])(const bh_grid *grid,
-                                 bh_text *out) = {bh_grid_text, bh_grid_markdown, bh_grid_latex};
+    static void (*const write[])(const bh_grid *grid, bh_text *out) = {as_text, bh_grid_markdown,
+                                                                       bh_grid_latex};
     bh_grid grid = sample(), empty = {0};
     bh_text out = {0};
     write[_i](&empty, &out);
@@ -65,6 +70,44 @@ START_TEST(what_is_incomplete_is_not_shown)
     write[_i](&grid, &out);
     ck_assert_uint_eq(out.length, 0);
     ck_assert(out.failed);
+    bh_text_free(&out);
+    bh_grid_free(&grid);
+}
+END_TEST
+
+/* What never varies is said above, words are broken, the rest stands below with its names. */
+START_TEST(what_is_too_wide_finds_room)
+{
+    static const char *const cells[] = {
+        "a setting with a name", "east", "1", "x", "2", "and so on", "east", "4", "y", "5"};
+    static const char wanted[] =
+        "in every line: arm east\n\n"
+        "name         a heading that takes some room another heading, still wider\n"
+        "                                         Hz                           Hz\n"
+        "a setting                                 1                            x\n"
+        "with a name\n"
+        "and so on                                 4                            y\n"
+        "\n"
+        "name         the third heading has none left\n"
+        "                                          Hz\n"
+        "a setting                                  2\n"
+        "with a name\n"
+        "and so on                                  5\n";
+    bh_grid grid = {0};
+    bh_text out = {0};
+    bh_grid_column_add(&grid, "name", "", false);
+    bh_grid_column_add(&grid, "arm", "", false);
+    bh_grid_column_add(&grid, "a heading that takes some room", "Hz", true);
+    bh_grid_column_add(&grid, "another heading, still wider", "Hz", true);
+    bh_grid_column_add(&grid, "the third heading has none left", "Hz", true);
+    for (int i = 0; i < COUNT(cells); i++)
+        bh_grid_cell(&grid, cells[i]);
+    as_text(&grid, &out);
+    ck_assert_str_eq(out.bytes, wanted);
+    bh_text_free(&out);
+    bh_grid_text(&grid, 200, &out);
+    ck_assert_ptr_nonnull(strstr(out.bytes, "a setting with a name east"));
+    ck_assert_ptr_null(strstr(out.bytes, "in every line"));
     bh_text_free(&out);
     bh_grid_free(&grid);
 }
@@ -174,6 +217,7 @@ int main(void)
     tcase_add_loop_test(tests, each_format_lays_it_out, 0, 3);
     tcase_add_loop_test(tests, what_is_incomplete_is_not_shown, 0, 3);
     tcase_add_test(tests, more_columns_than_room_are_left_out);
+    tcase_add_test(tests, what_is_too_wide_finds_room);
     tcase_add_loop_test(tests, names_are_shown_not_obeyed, 0, COUNT(escapes));
     tcase_add_loop_test(tests, units_are_those_of_siunitx, 0, COUNT(units));
     tcase_add_test(tests, units_of_our_own_are_declared);

@@ -12,10 +12,12 @@ enum { BH_MOST_GRID_COLUMNS = 64 };
 typedef struct {
     const char *heading, *unit; /* unit as in run/columns.h; "" for words */
     bool number;                /* numbers stand to the right */
+    bool whole;                 /* its words are not broken into lines */
 } bh_grid_column;
 
 /* Begins as {0}; cells come row by row; given back with bh_grid_free. */
 typedef struct {
+    size_t names; /* so many columns at the left name a row, and are repeated; 0: one */
     size_t column_count;
     bh_grid_column columns[BH_MOST_GRID_COLUMNS];
     size_t cell_count;
@@ -29,8 +31,12 @@ void bh_grid_column_add(bh_grid *grid, const char *heading, const char *unit, bo
 void bh_grid_cell(bh_grid *grid, const char *text);
 void bh_grid_free(bh_grid *grid);
 
-/* Appends it: two lines of headings, then the rows. */
-void bh_grid_text(const bh_grid *grid, bh_text *out);
+enum { BH_LEAST_WIDTH = 80 }; /* terminal columns */
+
+/* Appends it `width` terminal columns wide, at least BH_LEAST_WIDTH: two lines of headings, then
+ * the rows.  Where it is wider, columns whose cells all agree are said above it, then words are
+ * broken into several lines, then what has no room follows below with the names repeated. */
+void bh_grid_text(const bh_grid *grid, int width, bh_text *out);
 
 /* Appends it as a table of Markdown, an empty line behind it. */
 void bh_grid_markdown(const bh_grid *grid, bh_text *out);
