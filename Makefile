@@ -32,6 +32,7 @@ bin   = $(patsubst %.c,$(BUILD)/%,$(1))
 run   = $(patsubst %,$(BUILD)/%.run,$(basename $(1)))
 quiet = $(if $(V),,@echo '  $@' &&)
 MAKEFLAGS += --no-print-directory
+JOBS = $(if $(filter -j%,$(MAKEFLAGS)),,-j$(shell getconf _NPROCESSORS_ONLN 2>/dev/null || echo 1)) # unless -j is given
 .DELETE_ON_ERROR:
 
 COMPLETE := $(addprefix $(BUILD)/completions/,bash zsh fish)
@@ -58,8 +59,8 @@ FLAGS := $(CC) $(ALL_C) $(LDFLAGS) $(LIBS) $(FRONT_LIBS) $(TEST_LIBS)
 $(BUILD)/flags: $(if $(subst x$(FLAGS),,x$(file <$(BUILD)/flags)),changed) # other flags than last time: compile all again
 	@mkdir -p $(@D) && printf '%s\n' '$(subst ','\'',$(FLAGS))' >$@
 
-demo: ; @sh src/setup.sh build && $(MAKE) all && $(BUILD)/beamhours table plans/hydrogen-separation.yaml ## install what is missing, build, print the run table of a demonstration
-check: ; @sh src/setup.sh check && $(MAKE) check-run       ## install what is missing, build, run every test (-j works)
+demo: ; @sh src/setup.sh build && $(MAKE) $(JOBS) all && $(BUILD)/beamhours table plans/hydrogen-separation.yaml ## install what is missing, build, print the run table of a demonstration
+check: ; @sh src/setup.sh check && $(MAKE) $(JOBS) check-run       ## install what is missing, build, run every test
 check-run: all
 	@{ $(MAKE) -k -Otarget $(call run,$(TESTS) $(COMMANDS) rules); echo "status $$?"; } 2>&1 | tee $(BUILD)/check.log | grep -v '^status'; \
 	 awk -f tests/rules/summary.awk $(BUILD)/check.log
