@@ -177,10 +177,10 @@ static void fold(const struct block *b, const char *line, size_t length, bh_text
     bh_text_append_bytes(written, line + start, length - start);
 }
 
-/* Every line of the value but the ends of line behind the last. */
-static void write_lines(const struct block *b, const char *value, bh_text *written)
+/* Every line of the value but the ends of line behind the last.  `above`: there is a line above
+ * that has something in it. */
+static void write_lines(const struct block *b, const char *value, bool above, bh_text *written)
 {
-    bool above = false; /* is there a line above that has something in it? */
     while (*value) {
         const size_t length = strcspn(value, "\n");
         if (length > 0 && b->folded) {
@@ -199,7 +199,129 @@ static void write_lines(const struct block *b, const char *value, bh_text *writt
     }
 }
 
-bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bh_block *block)
+/* --- paragraphs of a > text that stay as they are --- */
+
+/* Where a paragraph stands in the value, and in the lines of the document. */
+struct paragraph {
+    size_t from, to;       /* [bytes] in the value */
+    size_t written_before; /* [bytes] end of the line above its first */
+    size_t written_to;     /* [bytes] end of its last line */
+};
+
+/* The paragraph of the value that begins at `from`, whose lines begin behind `line_end`, end of a
+ * line.  False where lines are not simply joined: some are indented further, or there are none. */
+static bool next_paragraph(const struct block *b, bh_bytes value, size_t from, size_t line_end,
+                           struct paragraph *out)
+{
+    size_t line = bh_line_next(b->whole, line_end);
+    *out = (struct paragraph){.from = from, .to = from, .written_before = line_end};
+    while (line < b->end && bh_blank(b->whole, line, bh_line_end(b->whole, line), false)) {
+        out->written_before = bh_line_end(b->whole, line);
+        line = bh_line_next(b->whole, line);
+    }
+    out->written_to = out->written_before;
+    while (out->to < value.length && value.bytes[out->to] != '\n')
+        out->to++;
+    while (line < b->end && !bh_blank(b->whole, line, bh_line_end(b->whole, line), false)) {
+        if (blanks_at(b->whole, line) != b->indent || b->whole.bytes[line + b->indent] == '\t')
+            return false;
+        out->written_to = bh_line_end(b->whole, line);
+        line = bh_line_next(b->whole, line);
+    }
+    return out->to > from && out->written_to > out->written_before;
+}
+
+static size_t ends_of_line(bh_bytes text, size_t at)
+{
+    size_t n = 0;
+    while (at + n < text.length && text.bytes[at + n] == '\n')
+        n++;
+    return n;
+}
+
+static size_t common_head(bh_bytes a, bh_bytes b)
+{
+    size_t n = 0;
+    while (n < a.length && n < b.length && a.bytes[n] == b.bytes[n])
+        n++;
+    return n;
+}
+
+static size_t common_tail(bh_bytes a, bh_bytes b)
+{
+    size_t n = 0;
+    while (n < a.length && n < b.length && a.bytes[a.length - 1 - n] == b.bytes[b.length - 1 - n])
+        n++;
+    return n;
+}
+
+/* Do the last `tail` bytes begin a line? */
+static bool begins_line(bh_bytes text, size_t tail)
+{
+    return tail == text.length || text.bytes[text.length - tail - 1] == '\n';
+}
+
+/* Narrows `block` to what has to be written between paragraphs that stay, which takes the old value
+ * paragraph by paragraph; `middle` is where that is in the new one. */
+static bool narrow(const struct block *b, bh_bytes old, bh_bytes new, bh_block *block,
+                   size_t middle[2])
+{
+    const size_t head = common_head(old, new), tail = common_tail(old, new);
+    struct paragraph p;
+    size_t from = 0, line_end = block->from;
+    middle[0] = 0;
+    middle[1] = new.length;
+    while (from < old.length) {
+        const size_t left = old.length - from;
+        if (!next_paragraph(b, old, from, line_end, &p))
+            return false;
+        const size_t next = p.to + ends_of_line(old, p.to);
+        if (p.to < head && next <= head) { /* it stays, and stands before */
+            block->from = p.written_to;
+            middle[0] = p.to;
+        } else if (left <= tail && begins_line(new, left) && new.length - left >= middle[0]) {
+            block->to = p.written_before; /* it stays, and stands behind */
+            middle[1] = new.length - left;
+            return true;
+        }
+        line_end = p.written_to;
+        from = next;
+    }
+    return true;
+}
+
+/* Writes only the paragraphs that changed; false where that is not so simple. */
+static bool write_changed(const struct block *b, bh_bytes old, bh_block *block)
+{
+    const bh_bytes new = {block->value.bytes, block->value.length};
+    size_t middle[2];
+    bh_text part = {0};
+    if (!narrow(b, old, new, block, middle))
+        return false;
+    size_t length = middle[1] - middle[0], breaks = 0;
+    const char *from = new.bytes + middle[0];
+    const bool above = middle[0] > 0;
+    if (middle[1] < new.length) /* blank lines above what stands behind */
+        while (length > 0 && from[length - 1] == '\n') {
+            length--;
+            breaks++;
+        }
+    if (above && length > 0 && *from == '\n') { /* ends the paragraph above */
+        from++;
+        length--;
+    }
+    bh_text_append_bytes(&part, from, length);
+    bh_text_append(&part, "");
+    if (!part.failed)
+        write_lines(b, part.bytes, above, &block->written);
+    for (; breaks > 0; breaks--)
+        bh_text_append(&block->written, bh_line_break(b->whole));
+    block->written.failed = block->written.failed || part.failed;
+    bh_text_free(&part);
+    return true;
+}
+
+bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bool all, bh_block *block)
 {
     const struct block b = block_of(whole, node);
     const char *first = text + strspn(text, "\n");
@@ -208,7 +330,16 @@ bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bh_blo
     end_value(&b, text, &block->value);
     block->from = bh_line_end(whole, node->from);
     block->to = b.end;
-    if (!block->value.failed)
-        write_lines(&b, block->value.bytes, &block->written);
+    if (block->value.failed)
+        return true;
+    const bh_bytes old = {node->text, node->length};
+    if (block->value.length == old.length &&
+        (!old.length || memcmp(block->value.bytes, old.bytes, old.length) == 0)) {
+        block->from = block->to; /* the same: not a byte of it is to be another */
+        return true;
+    }
+    if (!all)
+        return b.folded && write_changed(&b, old, block);
+    write_lines(&b, block->value.bytes, false, &block->written);
     return true;
 }

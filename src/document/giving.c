@@ -214,12 +214,13 @@ static bool try_forms(struct giving *g, const bh_form *first, const char *key)
 
 /* --- under | or > --- */
 
-static bool give_block(struct giving *g)
+/* Writes all of it, or only the paragraphs that change. */
+static bool try_block(struct giving *g, bool all)
 {
     bh_block block = {0};
     bh_text proposed = {0};
     bh_splice *s = g->s;
-    bool fits = bh_form_block(s->text, s->target.node, g->text, &block);
+    bool fits = bh_form_block(s->text, s->target.node, g->text, all, &block);
     s->lost = s->lost || block.written.failed || block.value.failed;
     if (fits && !s->lost) {
         g->scalar = (bh_node){
@@ -229,12 +230,20 @@ static bool give_block(struct giving *g)
         bh_cuts_make(s->text, &cut, 1, &proposed);
         fits = bh_splice_settle(s, &proposed);
     }
-    if (!fits && !s->lost)
-        bh_diags_add(s->diags, BH_SEVERITY_ERROR, s->target.node->at,
-                     bh_target_call(s->target.node).text, BH_REFUSE_BLOCK);
     bh_text_free(&block.written);
     bh_text_free(&block.value);
     return fits && !s->lost;
+}
+
+static bool give_block(struct giving *g)
+{
+    const bh_splice *s = g->s;
+    if (try_block(g, false) || (!s->lost && try_block(g, true)))
+        return true;
+    if (!s->lost)
+        bh_diags_add(s->diags, BH_SEVERITY_ERROR, s->target.node->at,
+                     bh_target_call(s->target.node).text, BH_REFUSE_BLOCK);
+    return false;
 }
 
 /* --- a value --- */

@@ -33,8 +33,10 @@ typedef struct {
 } bh_block;
 
 /* Writes `text` (lines ended by LF) in place of `node`, a | or > text of `whole`, under the same
- * heading and with the same indentation, into `block`, whose texts the caller frees.
- * False where the heading cannot hold the text. */
-bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bh_block *block);
+ * heading and with the same indentation, into `block`, whose texts the caller frees.  `all`: every
+ * line of it; else only the paragraphs that change, where that is possible.
+ * False where the heading cannot hold the text, or it is not possible. */
+bool bh_form_block(bh_bytes whole, const bh_node *node, const char *text, bool all,
+                   bh_block *block);
 
 #endif
