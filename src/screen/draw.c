@@ -226,6 +226,8 @@ static const char *hint(const bh_model *model)
 {
     switch (model->over) {
     case BH_OVER_FIELD:
+        if (model->field.width)
+            return "Enter keep   Escape leave   Tab new line";
         return "Enter keep   Escape leave   Up Down step the digit";
     case BH_OVER_SHEET:
         return "arrows, Page Up, Page Down read on   any other key closes";

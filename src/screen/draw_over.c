@@ -11,6 +11,42 @@ static void clear_body(const bh_arrangement *places, bh_canvas *canvas, int from
     (void)places;
 }
 
+/* A text of several lines, the row of the cursor in view. */
+static void draw_lines(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
+{
+    const bh_field *f = &model->field;
+    const size_t at = bh_field_at(f);
+    const int most = places->body_rows > 2 ? places->body_rows - 1 : 1;
+    size_t length = 0, from = 0, top = 0;
+    int above = 0; /* rows from the first in view to that of the cursor */
+    while (from < at) {
+        from = bh_field_row(f, from, &length);
+        if (++above == most) {
+            top = bh_field_row(f, top, &length);
+            above--;
+        }
+    }
+    clear_body(places, canvas, places->body, places->body_rows);
+    const int used =
+        bh_canvas_put(canvas, (bh_spot){places->body, 0, canvas->columns}, BH_LOOK_TITLE, "TEXT ");
+    (void)bh_canvas_put(canvas, (bh_spot){places->body, used, canvas->columns - used},
+                        BH_LOOK_TITLE, model->field_path);
+    from = top;
+    for (int r = 0; r < most && from < BH_FIELD_SIZE; r++) {
+        char row[BH_FIELD_SIZE];
+        const size_t next = bh_field_row(f, from, &length);
+        (void)snprintf(row, sizeof row, "%.*s", (int)length, f->bytes + from);
+        const bh_spot spot = {places->body + 1 + r, 1, canvas->columns - 1};
+        bh_canvas_paint(canvas, spot, BH_LOOK_FIELD);
+        (void)bh_canvas_put(canvas, spot, BH_LOOK_FIELD, row);
+        from = next;
+    }
+    char before[BH_FIELD_SIZE];
+    (void)snprintf(before, sizeof before, "%.*s", (int)(f->cursor - at), f->bytes + at);
+    canvas->cursor_row = places->body + 1 + above;
+    canvas->cursor_column = 1 + bh_text_columns(before, canvas->ascii);
+}
+
 static void draw_sheet(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
     const bh_sheet *s = &model->sheet;
@@ -143,6 +179,8 @@ static void draw_ask(const bh_model *model, const bh_arrangement *places, bh_can
 
 void bh_draw_over(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
+    if (model->over == BH_OVER_FIELD && model->field.width)
+        draw_lines(model, places, canvas);
     if (model->over == BH_OVER_SHEET)
         draw_sheet(model, places, canvas);
     if (model->over == BH_OVER_CHOOSE)

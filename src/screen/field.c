@@ -1,9 +1,11 @@
-/* field.c - typing, and stepping a number digit by digit. */
+/* field.c - typing, in one line or several, and stepping a number digit by digit. */
 #include "beamhours/screen/field.h"
 
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
+
+#include "beamhours/screen/canvas.h"
 
 bool bh_field_set(bh_field *field, const char *text)
 {
@@ -11,6 +13,7 @@ bool bh_field_set(bh_field *field, const char *text)
     if (length + 8 >= BH_FIELD_SIZE)
         return false;
     memcpy(field->bytes, text, length + 1);
+    field->width = 0;
     field->length = field->cursor = length;
     return true;
 }
@@ -70,8 +73,83 @@ static void put_in(bh_field *f, uint32_t point)
     f->cursor += n;
 }
 
+/* --- several lines --- */
+
+size_t bh_field_row(const bh_field *field, size_t from, size_t *length)
+{
+    const char *text = field->bytes + from;
+    const size_t line = strcspn(text, "\n");
+    size_t n = bh_text_fit(text, field->width > 1 ? field->width : 1);
+    if (n >= line) {
+        *length = line;
+        return text[line] ? from + line + 1 : BH_FIELD_SIZE;
+    }
+    const size_t most = n ? n : 1;
+    while (n > 0 && text[n] != ' ')
+        n--;
+    *length = n ? n : most;
+    return from + (n ? n + 1 : most); /* the blank stays behind */
+}
+
+size_t bh_field_at(const bh_field *field)
+{
+    size_t from = 0, length = 0;
+    for (;;) {
+        const size_t next = bh_field_row(field, from, &length);
+        if (next > field->cursor || next >= BH_FIELD_SIZE)
+            return from;
+        from = next;
+    }
+}
+
+/* Into the row above or below, at about the same column. */
+static void go_row(bh_field *f, bool down)
+{
+    const size_t at = bh_field_at(f);
+    size_t to = 0, length = 0;
+    char before[BH_FIELD_SIZE];
+    (void)snprintf(before, sizeof before, "%.*s", (int)(f->cursor - at), f->bytes + at);
+    if (down)
+        to = bh_field_row(f, at, &length);
+    for (size_t next = 0; !down && at > 0 && next < at; next = bh_field_row(f, to, &length))
+        to = next;
+    if (to >= BH_FIELD_SIZE || (!down && at == 0))
+        return;
+    (void)bh_field_row(f, to, &length);
+    const size_t fit = bh_text_fit(f->bytes + to, bh_text_columns(before, false));
+    f->cursor = to + (fit < length ? fit : length);
+}
+
+static bool press_in_lines(bh_field *f, const bh_press *press)
+{
+    size_t length = 0;
+    const size_t at = bh_field_at(f);
+    (void)bh_field_row(f, at, &length);
+    switch (press->kind) {
+    case BH_PRESS_UP:
+    case BH_PRESS_DOWN:
+        go_row(f, press->kind == BH_PRESS_DOWN);
+        return true;
+    case BH_PRESS_HOME:
+        f->cursor = at;
+        return true;
+    case BH_PRESS_END:
+        f->cursor = at + length;
+        return true;
+    case BH_PRESS_TAB:
+        put_in(f, '\n');
+        return true;
+    default:
+        return false;
+    }
+}
+
+/* --- keys --- */
+
 bool bh_field_press(bh_field *field, const bh_press *press)
 {
+    if (field->width > 0 && press_in_lines(field, press))
+        return true;
     switch (press->kind) {
     case BH_PRESS_POINT:
         put_in(field, press->point);

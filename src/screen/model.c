@@ -161,6 +161,8 @@ void bh_model_resize(bh_model *model, int rows, int columns)
 {
     model->rows = rows < 1 ? 1 : rows;
     model->columns = columns < 1 ? 1 : columns;
+    if (model->field.width)
+        model->field.width = bh_field_width(model);
     bh_plan_keep_in_view(model);
     bh_table_refresh(model);
     if (model->over == BH_OVER_SHEET && model->sheet.kind != BH_SHEET_EXPLAIN)

@@ -23,6 +23,7 @@ static void write_help(bh_model *model, bh_sheet_writer *w)
                  {"a digit", "begins a value of the line in focus"},
                  {"Enter, Escape", "keep what was typed; leave everything as it was"},
                  {"Up, Down in a value", "one more or less of the digit before the cursor"},
+                 {"Tab in a text", "a new line, where a text may have several: notes"},
                  {"mouse", "a click goes there, a second one opens; a click on a heading orders"},
                  {"Ctrl-C, Ctrl-Z", "leave; suspend"}};
     bh_sheet_add(w, BH_LOOK_TITLE, "", "In every part");

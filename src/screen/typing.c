@@ -162,6 +162,42 @@ static bool open_field(bh_model *model, const char *path, const bh_node *node, c
     return true;
 }
 
+/* A text of several lines, or one that may become so. */
+static bool has_lines(const bh_node *node, const char *path)
+{
+    return node->kind == BH_NODE_SCALAR && (node->style == BH_STYLE_BLOCK ||
+                                            strcmp(path, "notes") == 0 || strchr(node->text, '\n'));
+}
+
+/* The end of the last line belongs to the form of the text, unless its heading keeps all. */
+static void drop_last_end(const bh_model *model, const bh_node *node, bh_text *text)
+{
+    size_t length = 0;
+    const char *heading = bh_edit_bytes(model->edit, &length) + node->from;
+    const bool keeps = memchr(heading, '+', strcspn(heading, "\r\n")) != NULL;
+    if (node->style == BH_STYLE_BLOCK && !keeps && text->length &&
+        text->bytes[text->length - 1] == '\n')
+        text->bytes[--text->length] = '\0';
+}
+
+static void begin_lines(bh_model *model, const char *path, const bh_press *typed, bh_text *old)
+{
+    const bh_node *node = bh_plan_here(model)->node;
+    drop_last_end(model, node, old);
+    if (!open_field(model, path, node, old->bytes))
+        return;
+    model->field.width = bh_field_width(model);
+    if (typed) {
+        (void)bh_field_press(&model->field, typed);
+        bh_value_attempt(model, model->field.bytes);
+    }
+}
+
+int bh_field_width(const bh_model *model)
+{
+    return model->columns > 4 ? model->columns - 2 : 2;
+}
+
 void bh_value_begin(bh_model *model, const bh_press *typed)
 {
     const bh_plan_line *line = bh_plan_here(model);
@@ -173,7 +209,11 @@ void bh_value_begin(bh_model *model, const bh_press *typed)
     }
     bh_trail_of(line->node, &path);
     copy(model->was, sizeof model->was, old.bytes);
-    if (path.bytes && open_field(model, path.bytes, line->node, typed ? "" : old.bytes) && typed) {
+    model->was[strcspn(model->was, "\n")] = '\0';
+    if (path.bytes && has_lines(line->node, path.bytes))
+        begin_lines(model, path.bytes, typed, &old);
+    else if (path.bytes && open_field(model, path.bytes, line->node, typed ? "" : old.bytes) &&
+             typed) {
         (void)bh_field_press(&model->field, typed);
         bh_value_attempt(model, model->field.bytes);
     }
@@ -258,6 +298,8 @@ bool bh_value_press(bh_model *model, const bh_press *press)
         return true;
     case BH_PRESS_UP:
     case BH_PRESS_DOWN:
+        if (model->field.width)
+            return bh_field_press(&model->field, press);
         if (bh_field_step(&model->field, press->kind == BH_PRESS_UP ? 1 : -1))
             bh_value_attempt(model, model->field.bytes);
         return true;

@@ -423,6 +423,38 @@ START_TEST(what_it_would_take)
 }
 END_TEST
 
+/* A text under | gains a line and loses one; all the rest is as it was. */
+START_TEST(texts_have_lines)
+{
+    tty t;
+    begin(&t);
+    char *before = tty_read(&t, "plan.yaml");
+    look_for(&t, "notes");
+    tty_type(&t, "<Enter>");
+    tty_wait(&t, "TEXT notes");
+    tty_wait(&t, "Tab new line");
+    tty_type(&t, "<Tab>Bring a spare cell.");
+    tty_wait(&t, "Bring a spare cell.");
+    tty_type(&t, "<Enter>");
+    tty_wait_gone(&t, "TEXT notes");
+    tty_wait_row(&t, 0, "1 unsaved");
+    save(&t);
+    file_has(&t, "polarisation varies.\n  Bring a spare cell.\n\nbeam:");
+    tty_type(&t, "<Enter>");
+    tty_wait(&t, "Bring a spare cell.");
+    for (int i = 0; i < 20; i++)
+        tty_type(&t, "<Rubout>");
+    tty_type(&t, "<Enter>");
+    tty_wait_gone(&t, "TEXT notes");
+    save(&t);
+    char *after = tty_read(&t, "plan.yaml");
+    ck_assert_str_eq(before, after);
+    free(before);
+    free(after);
+    leave(&t);
+}
+END_TEST
+
 START_TEST(begins_without_a_plan)
 {
     tty t;
@@ -456,6 +488,7 @@ int main(void)
     tcase_add_test(tests, no_colours);
     tcase_add_test(tests, mouse);
     tcase_add_test(tests, what_it_would_take);
+    tcase_add_test(tests, texts_have_lines);
     tcase_add_test(tests, begins_without_a_plan);
     return run_suite("terminal", tests);
 }

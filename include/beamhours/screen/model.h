@@ -286,6 +286,7 @@ bool bh_value_press(bh_model *model, const bh_press *press);
 void bh_value_attempt(bh_model *model, const char *text); /* what it would make of the plan */
 void bh_value_leave(bh_model *model);                     /* leaves everything as it was */
 bool bh_value_keep(bh_model *model, const char *text);
+int bh_field_width(const bh_model *model); /* [columns] of a text of several lines */
 
 /* --- changing.c --- */
 void bh_change_add(bh_model *model);
