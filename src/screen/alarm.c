@@ -4,6 +4,7 @@
 
 #include <errno.h>
 #include <string.h>
+#include <sys/ioctl.h>
 #include <unistd.h>
 
 /* What signal handlers see: the one place of the program with writable data of its own. */
@@ -158,6 +159,19 @@ bool bh_alarm_stop(bool whole)
     (void)sigaction(SIGTSTP, &ours, NULL);
     (void)sigprocmask(SIG_SETMASK, &before, NULL);
     return sigismember(&waiting, SIGCONT) == 1;
+}
+
+bool bh_alarm_size(int *rows, int *columns)
+{
+    struct winsize size;
+    if (ioctl(STDOUT_FILENO, TIOCGWINSZ, &size) || size.ws_row < 1 || size.ws_col < 1) {
+        size.ws_row = 24;
+        size.ws_col = 80;
+    }
+    const bool other = *rows != size.ws_row || *columns != size.ws_col;
+    *rows = size.ws_row;
+    *columns = size.ws_col;
+    return other;
 }
 
 bool bh_alarm_resumed(void)

@@ -30,6 +30,11 @@ void bh_canvas_free(bh_canvas *canvas)
     *canvas = (bh_canvas){.rows = 0};
 }
 
+bool bh_cell_same(const bh_cell *a, const bh_cell *b)
+{
+    return a->point == b->point && a->mark == b->mark && a->look == b->look;
+}
+
 bh_cell *bh_canvas_at(const bh_canvas *canvas, int row, int column)
 {
     if (row < 0 || column < 0 || row >= canvas->rows || column >= canvas->columns)

@@ -107,8 +107,8 @@ static void go_row(bh_field *f, bool down)
 {
     const size_t at = bh_field_at(f);
     size_t to = 0, length = 0;
-    char before[BH_FIELD_SIZE];
-    (void)snprintf(before, sizeof before, "%.*s", (int)(f->cursor - at), f->bytes + at);
+    char left_of_it[BH_FIELD_SIZE];
+    (void)snprintf(left_of_it, sizeof left_of_it, "%.*s", (int)(f->cursor - at), f->bytes + at);
     if (down)
         to = bh_field_row(f, at, &length);
     for (size_t next = 0; !down && at > 0 && next < at; next = bh_field_row(f, to, &length))
@@ -116,7 +116,7 @@ static void go_row(bh_field *f, bool down)
     if (to >= BH_FIELD_SIZE || (!down && at == 0))
         return;
     (void)bh_field_row(f, to, &length);
-    const size_t fit = bh_text_fit(f->bytes + to, bh_text_columns(before, false));
+    const size_t fit = bh_text_fit(f->bytes + to, bh_text_columns(left_of_it, false));
     f->cursor = to + (fit < length ? fit : length);
 }
 

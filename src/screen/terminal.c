@@ -13,12 +13,14 @@
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
-#include <sys/ioctl.h>
 #include <termios.h>
-#include <time.h>
 #include <unistd.h>
 
 #include "beamhours/screen/alarm.h"
+#include "beamhours/screen/clock.h"
+
+/* Keys of our own, above those of curses. */
+enum { PASTE_BEGINS = KEY_MAX + 1, PASTE_ENDS };
 
 struct terminal {
     bh_desk *desk;
@@ -28,7 +30,8 @@ struct terminal {
     attr_t looks[BH_LOOK_COUNT];
     short pairs[BH_LOOK_COUNT];
     bool blank[BH_LOOK_COUNT]; /* the look does not show on a blank */
-    bool drawn;
+    bool drawn, pasting;
+    double pasted; /* [s] when a key last came */
 };
 
 /* --- looks --- */
@@ -71,18 +74,23 @@ bool bh_terminal_unicode(void)
     return strcmp(nl_langinfo(CODESET), "UTF-8") == 0;
 }
 
+/* What the terminal is sent for something; NULL where it cannot do it. */
+static const char *capability(const char *name)
+{
+    char own[8];
+    (void)snprintf(own, sizeof own, "%s", name);
+    const char *text = tigetstr(own);
+    return (intptr_t)text > 0 ? text : NULL; /* -1: no such capability */
+}
+
 /* How the terminal is put back, for the day the program itself cannot. */
 static void keep_way_back(const struct termios *before)
 {
-    static const char *const names[] = {"sgr0", "rmkx", "cnorm", "rmcup"};
+    static const char *const names[] = {"sgr0", "rmkx", "cnorm", "BD", "rmcup"};
     bh_alarm_begin(before);
-    for (size_t i = 0; i < sizeof names / sizeof names[0]; i++) {
-        char capability[8];
-        (void)snprintf(capability, sizeof capability, "%s", names[i]);
-        const char *text = tigetstr(capability);
-        if ((intptr_t)text > 0) /* -1: no such capability */
-            bh_alarm_way_back(text);
-    }
+    for (size_t i = 0; i < sizeof names / sizeof names[0]; i++)
+        if (capability(names[i]))
+            bh_alarm_way_back(capability(names[i]));
 }
 
 static void set_modes(void)
@@ -97,8 +105,19 @@ static void set_modes(void)
                         BUTTON5_PRESSED,
                     NULL);
     (void)mouseinterval(0);
-    (void)idlok(stdscr, FALSE);
-    (void)leaveok(stdscr, FALSE);
+}
+
+/* Where the terminal can mark what is pasted: asks it to, or not to any more. */
+static void mark_pastes(bool on)
+{
+    const char *begins = capability("PS"), *ends = capability("PE");
+    const char *mode = capability(on ? "BE" : "BD");
+    if (!begins || !ends || !mode)
+        return;
+    (void)define_key(begins, on ? PASTE_BEGINS : 0);
+    (void)define_key(ends, on ? PASTE_ENDS : 0);
+    (void)putp(mode);
+    (void)fflush(stdout);
 }
 
 static void find_blank(struct terminal *t)
@@ -115,10 +134,11 @@ static bool begin(struct terminal *t)
     bh_alarm_catch();
     const char *name = getenv("TERM");
     t->screen = name && strcmp(name, "dumb") != 0 ? newterm(NULL, stdout, stdin) : NULL;
-    if (!t->screen || (intptr_t)tigetstr("cup") <= 0)
+    if (!t->screen || !capability("cup"))
         return false;
     keep_way_back(&before);
     set_modes();
+    mark_pastes(true);
     set_looks(t);
     find_blank(t);
     bh_alarm_screen(true);
@@ -129,6 +149,7 @@ static void end(struct terminal *t)
 {
     bh_alarm_screen(false);
     if (t->screen) {
+        mark_pastes(false);
         (void)endwin();
         delscreen(t->screen);
     }
@@ -139,33 +160,20 @@ static void end(struct terminal *t)
 
 static void set_size(struct terminal *t)
 {
-    struct winsize size;
-    if (ioctl(STDOUT_FILENO, TIOCGWINSZ, &size) || size.ws_row < 1 || size.ws_col < 1) {
-        size.ws_row = 24;
-        size.ws_col = 80;
-    }
-    if (t->rows == size.ws_row && t->columns == size.ws_col)
+    if (!bh_alarm_size(&t->rows, &t->columns))
         return;
-    t->rows = size.ws_row;
-    t->columns = size.ws_col;
     (void)resizeterm(t->rows, t->columns);
     (void)clearok(stdscr, TRUE);
     t->drawn = false;
     bh_desk_resize(t->desk, t->rows, t->columns);
 }
 
-static double now(void)
-{
-    struct timespec t;
-    (void)clock_gettime(CLOCK_MONOTONIC, &t);
-    return (double)t.tv_sec + 1e-9 * (double)t.tv_nsec;
-}
-
 /* `whole`: as the terminal itself would do it when the key is pressed, with the whole job. */
 static void suspend(struct terminal *t, bool whole)
 {
-    (void)bh_desk_secure(t->desk, now()); /* nobody knows whether it is ever resumed */
+    (void)bh_desk_secure(t->desk, bh_clock_now()); /* nobody knows whether it is ever resumed */
     bh_alarm_screen(false);
+    mark_pastes(false);
     (void)endwin();
     if (!bh_alarm_stop(whole))
         bh_desk_say(t->desk, "nothing is there that this could be left to: no shell runs it");
@@ -182,18 +190,14 @@ static void resume(struct terminal *t)
         (void)endwin();
     (void)reset_prog_mode();
     set_modes();
+    mark_pastes(true);
     (void)clearok(stdscr, TRUE);
     t->drawn = false;
     set_size(t);
-    bh_desk_awake(t->desk, now());
+    bh_desk_awake(t->desk, bh_clock_now());
 }
 
 /* --- cells out --- */
-
-static bool same_cell(const bh_cell *a, const bh_cell *b)
-{
-    return a->point == b->point && a->mark == b->mark && a->look == b->look;
-}
 
 static void put_cell(const struct terminal *t, int row, int column, const bh_cell *cell)
 {
@@ -215,7 +219,7 @@ static void show(struct terminal *t)
     for (int r = 0; r < w->rows; r++)
         for (int c = 0; c < w->columns; c++) {
             const bh_cell *cell = bh_canvas_at(w, r, c);
-            if (cell->point && (all || !same_cell(cell, bh_canvas_at(s, r, c))))
+            if (cell->point && (all || !bh_cell_same(cell, bh_canvas_at(s, r, c))))
                 put_cell(t, r, c, cell);
         }
     (void)move(w->cursor_row, w->cursor_column);
@@ -266,20 +270,19 @@ static bh_press key_press(wint_t code)
     return (bh_press){.kind = BH_PRESS_NOTHING};
 }
 
-static bh_press point_press(wint_t code)
+/* What is pasted comes between marks; one that lacks its end is over when nothing came for long. */
+static bh_press press_of(struct terminal *t, int kind, wint_t code)
 {
-    static const struct {
-        wint_t code;
-        bh_press_kind kind;
-    } controls[] = {{'\t', BH_PRESS_TAB},    {'\r', BH_PRESS_ENTER}, {'\n', BH_PRESS_ENTER},
-                    {27, BH_PRESS_ESCAPE},   {127, BH_PRESS_RUBOUT}, {8, BH_PRESS_RUBOUT},
-                    {3, BH_PRESS_INTERRUPT}, {26, BH_PRESS_SUSPEND}};
-    for (size_t i = 0; i < sizeof controls / sizeof controls[0]; i++)
-        if (controls[i].code == code)
-            return (bh_press){.kind = controls[i].kind};
-    if (code < ' ' || (code >= 0x7F && code < 0xA0))
-        return (bh_press){.kind = BH_PRESS_NOTHING};
-    return (bh_press){.kind = BH_PRESS_POINT, .point = (uint32_t)code};
+    const double time = bh_clock_now(), gap = time - t->pasted;
+    t->pasted = time;
+    if (kind == KEY_CODE_YES && (code == PASTE_BEGINS || code == PASTE_ENDS)) {
+        t->pasting = code == PASTE_BEGINS;
+        return (bh_press){.kind = t->pasting ? BH_PRESS_NOTHING : BH_PRESS_PASTED};
+    }
+    t->pasting = t->pasting && gap < 2;
+    if (kind == KEY_CODE_YES)
+        return t->pasting ? (bh_press){.kind = BH_PRESS_NOTHING} : key_press(code);
+    return t->pasting ? bh_press_pasted((uint32_t)code) : bh_press_of((uint32_t)code);
 }
 
 /* All keys that are there; false when the terminal is gone. */
@@ -289,8 +292,8 @@ static bool read_keys(struct terminal *t, bool *some)
     int kind = ERR;
     bool any = false;
     while (!bh_desk_over(t->desk) && (kind = get_wch(&code)) != ERR) {
-        const bh_press press = kind == KEY_CODE_YES ? key_press(code) : point_press(code);
-        bh_desk_press(t->desk, &press, now());
+        const bh_press press = press_of(t, kind, code);
+        bh_desk_press(t->desk, &press, bh_clock_now());
         any = true;
         if (bh_alarm_resized())
             set_size(t);
@@ -300,13 +303,6 @@ static bool read_keys(struct terminal *t, bool *some)
 }
 
 /* --- the loop --- */
-
-static struct timespec span(double seconds)
-{
-    struct timespec t = {.tv_sec = (time_t)seconds};
-    t.tv_nsec = (long)((seconds - (double)t.tv_sec) * 1e9);
-    return t;
-}
 
 /* A frame waits this long for what is in view to be computed: then it is drawn once, not twice. */
 static const double patience = 0.012; /* s */
@@ -322,7 +318,7 @@ struct loop {
 static bool wait_for_more(struct loop *l, double most)
 {
     struct pollfd from[] = {{STDIN_FILENO, POLLIN, 0}, {bh_desk_wake(l->t->desk), POLLIN, 0}};
-    const struct timespec limit = span(most < 0 ? 0 : most);
+    const struct timespec limit = bh_clock_span(most < 0 ? 0 : most);
     const int n = ppoll(from, 2, most < 0 ? NULL : &limit, &l->during);
     if (n < 0)
         return errno == EINTR;
@@ -334,7 +330,7 @@ static bool wait_for_more(struct loop *l, double most)
         return false;
     if (some && !l->dirty) {
         l->dirty = true;
-        l->since = now();
+        l->since = bh_clock_now();
     }
     return true;
 }
@@ -357,7 +353,7 @@ static void mind_signals(struct loop *l)
 /* Draws when what is in view is there, or when that takes too long; else shortens the wait. */
 static void draw_when_due(struct loop *l, double *wait)
 {
-    const double left = l->since + patience - now();
+    const double left = l->since + patience - bh_clock_now();
     if (!l->dirty)
         return;
     if (left <= 0 || bh_desk_settled(l->t->desk)) {
@@ -375,7 +371,7 @@ static void run(struct loop *l)
     while (there && !bh_desk_over(desk) && !bh_alarm_ended()) {
         mind_signals(l);
         bh_alarm_keep(bh_desk_rescue(desk), bh_desk_mark(desk));
-        double wait = bh_desk_tend(desk, now());
+        double wait = bh_desk_tend(desk, bh_clock_now());
         l->dirty = bh_desk_spoke(desk) || l->dirty;
         draw_when_due(l, &wait);
         there = wait_for_more(l, wait);

@@ -6,6 +6,7 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "beamhours/base/text.h"
 #include "tty.h"
 
 static void begin_with(tty *t, const tty_start *how)
@@ -455,6 +456,40 @@ START_TEST(texts_have_lines)
 }
 END_TEST
 
+/* What is pasted commands nothing: lines of it are no keys, wherever the focus is. */
+START_TEST(pastes)
+{
+    tty t;
+    begin(&t);
+    tty_paste(&t, "rdq\rs\r");
+    tty_wait(&t, "what is pasted is text for a value");
+    look_for(&t, "current");
+    tty_type(&t, "<Enter><Rubout><Rubout><Rubout><Rubout>");
+    tty_paste(&t, "4\ruA\r");
+    tty_wait(&t, "PROVISIONAL");
+    tty_type(&t, "<Enter>");
+    tty_wait_row(&t, 0, "1 unsaved");
+    look_for(&t, "notes");
+    tty_type(&t, "<Enter><Tab>");
+    tty_paste(&t, "one\rtwo\tthree\r");
+    tty_wait(&t, "two three");
+    tty_type(&t, "<Enter>");
+    tty_wait_gone(&t, "TEXT notes");
+    save(&t);
+    file_has(&t, "current: 4 uA\n");
+    file_has(&t, "varies.\n  one\n  two three\n\nbeam:");
+    tty_type(&t, "<Enter>");
+    bh_text much = {0};
+    for (int i = 0; i < 20000; i++)
+        bh_text_append(&much, "word ");
+    tty_paste(&t, much.bytes); /* more than fits */
+    tty_type(&t, "<Escape>");
+    tty_wait_gone(&t, "TEXT notes");
+    bh_text_free(&much);
+    leave(&t);
+}
+END_TEST
+
 START_TEST(begins_without_a_plan)
 {
     tty t;
@@ -489,6 +524,7 @@ int main(void)
     tcase_add_test(tests, mouse);
     tcase_add_test(tests, what_it_would_take);
     tcase_add_test(tests, texts_have_lines);
+    tcase_add_test(tests, pastes);
     tcase_add_test(tests, begins_without_a_plan);
     return run_suite("terminal", tests);
 }

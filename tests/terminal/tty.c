@@ -286,6 +286,13 @@ void tty_type(tty *t, const char *script)
         script += send_key(t, script);
 }
 
+void tty_paste(tty *t, const char *text)
+{
+    send_bytes(t, "\033[200~", 6);
+    send_bytes(t, text, strlen(text));
+    send_bytes(t, "\033[201~", 6);
+}
+
 void tty_size(tty *t, int rows, int columns)
 {
     const struct winsize size = {.ws_row = (unsigned short)rows, .ws_col = (unsigned short)columns};

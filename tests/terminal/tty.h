@@ -47,6 +47,8 @@ void tty_end(tty *t);
 
 /* Types a script: <Enter>, <Down>, <Click 3,40>...; << is a < itself. */
 void tty_type(tty *t, const char *script);
+/* Pastes, as a terminal does that was asked to mark it. */
+void tty_paste(tty *t, const char *text);
 void tty_size(tty *t, int rows, int columns);
 
 /* Waits until the screen has (not) `text` in it, in any row or in one; fails the test after a long

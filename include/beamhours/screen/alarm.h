@@ -33,6 +33,9 @@ int bh_alarm_ended(void);
  * nobody is there who could resume it. */
 bool bh_alarm_stop(bool whole);
 
+/* The size of the terminal, 24 by 80 where it does not say; whether that is another one. */
+bool bh_alarm_size(int *rows, int *columns);
+
 /* As if a signal had come. */
 void bh_alarm_resume(void);
 void bh_alarm_end(int number);

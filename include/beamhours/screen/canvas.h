@@ -66,6 +66,7 @@ void bh_canvas_paint(bh_canvas *canvas, bh_spot spot, bh_look look);
 /* Makes the spot blank. */
 void bh_canvas_clear(bh_canvas *canvas, bh_spot spot);
 
+bool bh_cell_same(const bh_cell *a, const bh_cell *b);
 bh_cell *bh_canvas_at(const bh_canvas *canvas, int row, int column);
 
 /* Columns that a text takes; the bytes of it that take at most `columns`. */

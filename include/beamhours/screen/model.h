@@ -198,7 +198,8 @@ typedef struct {
     bh_outcome *now;  /* of the text that is shown, as far as it is known */
     bh_outcome *kept; /* complete, of the text without what is being typed */
     bh_outcome *pin;
-    size_t job; /* that was begun last */
+    size_t job;    /* that was begun last */
+    size_t pasted; /* [1] characters of what is being pasted */
 
     bh_field field;            /* a value, a word to find, a name */
     char field_path[512];      /* of what is edited */

@@ -2,6 +2,7 @@
 #ifndef BH_SCREEN_PRESS_H
 #define BH_SCREEN_PRESS_H
 
+#include <stdbool.h>
 #include <stdint.h>
 
 typedef enum {
@@ -26,13 +27,21 @@ typedef enum {
     BH_PRESS_DOUBLE_CLICK,
     BH_PRESS_WHEEL_UP,
     BH_PRESS_WHEEL_DOWN,
+    BH_PRESS_PASTED, /* all of what was pasted has come */
     BH_PRESS_NOTHING /* what means nothing here */
 } bh_press_kind;
 
 typedef struct {
     bh_press_kind kind;
     uint32_t point;
+    bool pasted;     /* a character that nobody typed: it commands nothing */
     int row, column; /* from 0 */
 } bh_press;
+
+/* What the character `code` that a terminal sends means. */
+bh_press bh_press_of(uint32_t code);
+
+/* The same between the marks around what is pasted: a new line is one, and no Enter. */
+bh_press bh_press_pasted(uint32_t code);
 
 #endif
