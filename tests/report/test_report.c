@@ -92,12 +92,12 @@ static int column_named(const char *heading)
     return -1;
 }
 
-static json_object *rows_of(const struct made *m, json_object **root)
+static json_object *rows_of(const struct made *m, bool bins, json_object **root)
 {
     bh_selection view;
     bh_text out = {0};
     json_object *rows = NULL;
-    ck_assert(!bh_selection_new(m->e.table, &(bh_selection_request){.bins = false}, &view, NULL));
+    ck_assert(!bh_selection_new(m->e.table, &(bh_selection_request){.bins = bins}, &view, NULL));
     ck_assert(!bh_report_json(&view, "9.9", &out));
     *root = json_tokener_parse(out.bytes);
     ck_assert(json_object_object_get_ex(*root, "rows", &rows));
@@ -139,18 +139,53 @@ static int compare(const bh_paper_table *t, json_object *rows)
     return compared;
 }
 
+static bool has_column(const bh_paper_table *t, const char *heading)
+{
+    for (size_t c = 0; c < t->column_count; c++)
+        if (strcmp(t->columns[c].heading, heading) == 0)
+            return true;
+    return false;
+}
+
 START_TEST(tables_of_rows_say_what_json_says)
 {
     struct made m = make(demos[_i]);
-    json_object *root = NULL, *rows = rows_of(&m, &root);
+    json_object *root = NULL, *rows = rows_of(&m, false, &root);
     const size_t count = json_object_array_length(rows);
     int compared = 0;
     for (size_t i = 0; i < m.report.paper.count; i++) {
         const bh_paper_table *t = m.report.paper.blocks[i].table;
-        if (t && t->row_count == count && strcmp(t->columns[0].heading, "setting") == 0)
+        if (t && t->row_count == count && strcmp(t->columns[0].heading, "setting") == 0 &&
+            !has_column(t, "bin"))
             compared += compare(t, rows);
     }
     ck_assert_int_ge(compared, (int)count * 25);
+    json_object_put(root);
+    put_away(&m);
+}
+END_TEST
+
+/* Bins of arms that have one alone are no rows of it. */
+START_TEST(the_table_of_bins_says_what_json_says)
+{
+    struct made m = make(demos[_i]);
+    json_object *root = NULL, *all = rows_of(&m, true, &root), *rows = json_object_new_array();
+    for (size_t i = 0; i < json_object_array_length(all); i++) {
+        const bh_place p = bh_table_place(m.e.table, true, i);
+        if (m.e.plan->settings[p.setting].arms[p.arm].arm.bins > 1)
+            json_object_array_add(rows, json_object_get(json_object_array_get_idx(all, i)));
+    }
+    const size_t count = json_object_array_length(rows);
+    int compared = 0;
+    for (size_t i = 0; i < m.report.paper.count; i++) {
+        const bh_paper_table *t = m.report.paper.blocks[i].table;
+        if (t && has_column(t, "bin")) {
+            ck_assert_uint_eq(t->row_count, count);
+            compared += compare(t, rows);
+        }
+    }
+    ck_assert_int_ge(compared, (int)count * 7);
+    json_object_put(rows);
     json_object_put(root);
     put_away(&m);
 }
@@ -173,7 +208,7 @@ START_TEST(the_sum_of_time_says_what_json_says)
         {"asked", "asked_hours"},         {"available", "available_hours"}};
     struct made m = make(demos[_i]);
     json_object *root = NULL;
-    (void)rows_of(&m, &root);
+    (void)rows_of(&m, false, &root);
     int compared = 0;
     for (size_t i = 0; i < m.report.paper.count; i++) {
         const bh_paper_table *t = m.report.paper.blocks[i].table;
@@ -540,6 +575,7 @@ int main(void)
     TCase *tests = tcase_create("report");
     tcase_set_timeout(tests, 120);
     tcase_add_loop_test(tests, tables_of_rows_say_what_json_says, 0, COUNT(demos));
+    tcase_add_loop_test(tests, the_table_of_bins_says_what_json_says, 0, COUNT(demos));
     tcase_add_loop_test(tests, the_sum_of_time_says_what_json_says, 0, COUNT(demos));
     tcase_add_loop_test(tests, html_has_every_cell, 0, COUNT(demos));
     tcase_add_loop_test(tests, markdown_has_every_cell, 0, COUNT(demos));

@@ -168,6 +168,70 @@ static void check_backgrounds(const struct read *r, size_t sums_wanted)
     ck_assert_uint_eq(sums, sums_wanted);
 }
 
+/* What the bins of an arm count is what the arm counts, but for what the angle's resolution moves
+ * over the edges of the arm. */
+START_TEST(bins_add_up_to_their_arm)
+{
+    struct read r = read_demo(_i);
+    const bh_paper_table *whole = table_with(&r, "setting", "radiative"),
+                         *bins = table_with(&r, "setting", "bin");
+    for (size_t i = 0; bins && i < whole->row_count; i++) {
+        double sum = 0.0;
+        const int arm = column_of(whole, "arm");
+        for (size_t k = 0; k < bins->row_count; k++)
+            if (strcmp(cell_of(bins, k, 0), cell_of(whole, i, 0)) == 0 &&
+                (arm < 0 ||
+                 strcmp(cell_of(bins, k, column_of(bins, "arm")), cell_of(whole, i, arm)) == 0))
+                sum += number(bins, k, "signal");
+        if (sum > 0.0)
+            follows(sum, number(whole, i, "signal"), 3e-3 * sum, "signal of bins", i);
+    }
+    put_away(&r);
+}
+END_TEST
+
+/* Which models, goals and lost density are in force stands in the report; nothing reads like a key.
+ */
+START_TEST(what_is_in_force_is_said)
+{
+    static const char *const wanted[] = {"statistical uncertainty 0.2 % in low-1; low-2",
+                                         "default: amt-2007-effective",
+                                         "default: maximon-tjon",
+                                         "default: plane-wave",
+                                         "in plane ±20 mrad",
+                                         "0.0200"};
+    struct read r = read_demo(2);
+    for (int w = 0; w < COUNT(wanted); w++) {
+        bool found = false;
+        for (size_t i = 0; i < r.report.paper.count; i++) {
+            const bh_paper_table *t = r.report.paper.blocks[i].table;
+            for (size_t c = 0; t && c < t->row_count * t->column_count; c++)
+                found = found || strstr(t->cells[c], wanted[w]) != NULL;
+        }
+        ck_assert_msg(found, "%s is not said", wanted[w]);
+    }
+    put_away(&r);
+}
+END_TEST
+
+/* Every line of a background has its source, and the largest stands first. */
+START_TEST(backgrounds_are_in_order_and_have_sources)
+{
+    struct read r = read_demo(_i);
+    const bh_paper_table *t = table_with(&r, "setting", "from");
+    double before = INFINITY;
+    for (size_t i = 0; t && i < t->row_count; i++) {
+        const char *from = cell_of(t, i, 1);
+        const bool sum = strcmp(from, "background rate") == 0,
+                   rest = strcmp(from, "all else together") == 0;
+        ck_assert_msg(sum || rest || cell_of(t, i, 3)[0] == '[', "%s has no source", from);
+        ck_assert_msg(sum || rest || number(t, i, "rate") <= before, "%s is larger", from);
+        before = sum ? INFINITY : number(t, i, "rate");
+    }
+    put_away(&r);
+}
+END_TEST
+
 static size_t rows_with_background(const struct read *r)
 {
     size_t n = 0;
@@ -241,6 +305,9 @@ int main(void)
     tcase_add_loop_test(tests, counts_are_rate_times_live_times_hours, 0, COUNT(demos));
     tcase_add_loop_test(tests, each_background_adds_up, 0, COUNT(demos));
     tcase_add_test(tests, backgrounds_of_many_rows_are_all_there);
+    tcase_add_loop_test(tests, bins_add_up_to_their_arm, 0, COUNT(demos));
+    tcase_add_loop_test(tests, backgrounds_are_in_order_and_have_sources, 0, COUNT(demos));
+    tcase_add_test(tests, what_is_in_force_is_said);
     tcase_add_loop_test(tests, hours_add_up, 0, COUNT(demos));
     tcase_add_loop_test(tests, causes_add_up_in_quadrature, 0, COUNT(demos));
     return run_suite("report/report_sums", tests);

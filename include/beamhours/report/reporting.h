@@ -18,6 +18,7 @@ typedef struct {
     const bh_plan *plan;
     const bh_totals *totals;
     bh_selection view; /* arms, in plan order */
+    bh_selection bins; /* of the arms that have several */
     bh_stretch *hours; /* of each setting */
     bh_time_detail time;
     bh_what_if what_if[BH_IF_COUNT];
@@ -48,6 +49,10 @@ bh_explanation *bh_report_explain(const bh_reporting *x, size_t row, bh_error *e
 /* A table of these columns of the run table; names that all rows share are left out, and columns
  * that are empty throughout. */
 void bh_report_rows(bh_reporting *x, const char *caption, const int *columns, size_t count);
+
+/* The same of another view, such as the bins. */
+void bh_report_rows_of(bh_reporting *x, const bh_selection *view, const char *caption,
+                       const int *columns, size_t count);
 
 /* "K1" or "K1, A" where arms have to be told apart. */
 const char *bh_report_row_name(bh_reporting *x, size_t row);

@@ -56,27 +56,33 @@ static bool left_out(const bh_selection *view, int column)
     return (name && bh_prefix_constant(view, column)) || is_empty(view, column);
 }
 
-void bh_report_rows(bh_reporting *x, const char *caption, const int *columns, size_t count)
+void bh_report_rows_of(bh_reporting *x, const bh_selection *view, const char *caption,
+                       const int *columns, size_t count)
 {
     bh_paper_column heads[BH_COLUMN_COUNT];
     bh_shown_column shown[BH_COLUMN_COUNT];
     char text[BH_CELL_SIZE];
     size_t n = 0;
     for (size_t i = 0; i < count; i++) {
-        if (left_out(&x->view, columns[i]))
+        if (left_out(view, columns[i]))
             continue;
-        shown[n] = bh_prefix_scale(&x->view, NULL, columns[i]);
+        shown[n] = bh_prefix_scale(view, NULL, columns[i]);
         heads[n] = (bh_paper_column){bh_column_at(columns[i])->heading, shown[n].unit,
                                      bh_column_at(columns[i])->kind != BH_CELL_TEXT};
         n++;
     }
     bh_paper_table_open(&x->w, caption, heads, n);
-    for (size_t r = 0; r < x->view.row_count; r++)
+    for (size_t r = 0; r < view->row_count; r++)
         for (size_t c = 0; c < n; c++) {
-            bh_prefix_print(&x->view, r, &shown[c], text);
+            bh_prefix_print(view, r, &shown[c], text);
             bh_paper_cell(&x->w, bh_paper_text(&x->w, "%s", text));
         }
     bh_paper_table_close(&x->w);
+}
+
+void bh_report_rows(bh_reporting *x, const char *caption, const int *columns, size_t count)
+{
+    bh_report_rows_of(x, &x->view, caption, columns, count);
 }
 
 /* --- what they are written from --- */
@@ -119,10 +125,26 @@ static bh_code tell(bh_reporting *x, bh_error *err)
     return BH_OK;
 }
 
+/* The bins of arms that have several. */
+static bh_code find_bins(bh_reporting *x, bh_error *err)
+{
+    const bh_selection_request each = {.bins = true};
+    const bh_code bad = bh_selection_new(x->table, &each, &x->bins, err);
+    size_t kept = 0;
+    for (size_t i = 0; !bad && i < x->bins.row_count; i++) {
+        const bh_place p = bh_table_place(x->table, true, x->bins.rows[i]);
+        if (x->plan->settings[p.setting].arms[p.arm].arm.bins > 1)
+            x->bins.rows[kept++] = x->bins.rows[i];
+    }
+    x->bins.row_count = kept;
+    return bad;
+}
+
 static bh_code prepare(bh_reporting *x, bh_error *err)
 {
     const bh_selection_request all = {.bins = false};
     bh_code bad = bh_selection_new(x->table, &all, &x->view, err);
+    bad = bad ? bad : find_bins(x, err);
     x->hours = bh_arena_take(x->w.arena, x->plan->setting_count + 1, sizeof *x->hours);
     if (!bad && !x->hours)
         bad = bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
@@ -175,6 +197,7 @@ bh_code bh_report_make(const bh_report_request *request, bh_report *out, bh_erro
     bh_code bad = prepare(x, err);
     bad = bad ? bad : write_all(x, err);
     bh_selection_free(&x->view);
+    bh_selection_free(&x->bins);
     for (size_t i = 0; i < x->told_count; i++)
         bh_explanation_free(x->told[i]);
     out->paper = (bh_paper){

@@ -59,6 +59,15 @@ static void beams(bh_reporting *x)
     bh_paper_table_close(&x->w);
 }
 
+static bool loses_density(const bh_plan *plan)
+{
+    for (size_t i = 0; i < plan->target_count; i++)
+        for (size_t k = 0; k < plan->targets[i].layer_count; k++)
+            if (plan->targets[i].layers[k].density_loss.value > 0.0)
+                return true;
+    return false;
+}
+
 static void layer(bh_reporting *x, const char *target, const bh_layer *l, const char *role)
 {
     const double areal = l->areal_density.value;
@@ -71,6 +80,8 @@ static void layer(bh_reporting *x, const char *target, const bh_layer *l, const 
     bh_paper_cell(&x->w, matter ? bh_report_number(x, l->density.value, 4) : "-");
     bh_paper_cell(&x->w, matter ? bh_report_number(x, areal * 1e3, 4) : "-");
     bh_paper_cell(&x->w, matter ? bh_report_percent(x, areal / length) : "-");
+    if (loses_density(x->plan))
+        bh_paper_cell(&x->w, bh_report_number(x, l->density_loss.value * 100.0 / 1e6, 3));
     bh_text hazards = {0};
     for (size_t i = 0; i < l->material->hazard_count; i++)
         bh_text_appendf(&hazards, "%s%s", i ? ", " : "", l->material->hazards[i]);
@@ -86,12 +97,18 @@ static void targets(bh_reporting *x)
                                               {"density", "g/cm3", true},
                                               {"areal density", "mg/cm2", true},
                                               {"radiation lengths", "%", true},
+                                              {"density lost", "%/uA", true},
                                               {"hazards noted", "", false}};
+    bh_paper_column chosen[COUNT(columns)];
+    size_t n = 0;
+    for (size_t c = 0; c < COUNT(columns); c++)
+        if (strcmp(columns[c].heading, "density lost") != 0 || loses_density(x->plan))
+            chosen[n++] = columns[c];
     static const char *const roles[] = {"sample", "window", "backing"};
     bh_paper_table_open(&x->w,
                         "Targets: layers in the order the beam meets them, along the beam at no "
-                        "tilt",
-                        columns, COUNT(columns));
+                        "tilt, without beam; rates have the density that the beam leaves",
+                        chosen, n);
     for (size_t i = 0; i < x->plan->target_count; i++) {
         const bh_target *t = &x->plan->targets[i];
         const char *name = t->name.text ? t->name.text : "-";

@@ -2,6 +2,7 @@
  */
 #include <string.h>
 
+#include "beamhours/physics/coulomb.h"
 #include "beamhours/report/reporting.h"
 
 #define COUNT(list) (sizeof(list) / sizeof(list)[0])
@@ -31,6 +32,26 @@ static bool told_before(const bh_reporting *x, size_t told, size_t line)
     return false;
 }
 
+/* "default: amt-2007-effective", where another line says what the default comes down to. */
+static const char *default_value(bh_reporting *x, size_t told, const bh_line *l)
+{
+    static const char *const pairs[][2] = {{"models.structure", "structure model"},
+                                           {"models.radiative", "internal radiation"}};
+    const char *value = l->value ? l->value : "-", *means = NULL;
+    if (strcmp(l->name, "models.coulomb") == 0 && bh_coulomb_find(value))
+        means = bh_coulomb_find(value)->name;
+    for (size_t p = 0; p < COUNT(pairs); p++)
+        for (size_t i = 0;
+             strcmp(l->name, pairs[p][0]) == 0 && !means && i < bh_explanation_lines(x->told[told]);
+             i++) {
+            const bh_line *other = bh_explanation_line(x->told[told], i);
+            if (other->kind == BH_LINE_MODEL && strcmp(other->name, pairs[p][1]) == 0)
+                means = other->value;
+        }
+    return means && strcmp(means, value) != 0 ? bh_paper_text(&x->w, "%s: %s", value, means)
+                                              : bh_paper_text(&x->w, "%s", value);
+}
+
 static void defaults(bh_reporting *x)
 {
     static const bh_paper_column columns[] = {{"key", "", false}, {"value", "", false}};
@@ -42,7 +63,7 @@ static void defaults(bh_reporting *x)
             if (l->kind != BH_LINE_DEFAULT || told_before(x, t, i))
                 continue;
             bh_paper_cell(&x->w, bh_paper_text(&x->w, "%s", l->name));
-            bh_paper_cell(&x->w, bh_paper_text(&x->w, "%s", l->value ? l->value : "-"));
+            bh_paper_cell(&x->w, default_value(x, t, l));
         }
     bh_paper_table_close(&x->w);
 }

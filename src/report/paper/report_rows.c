@@ -54,6 +54,27 @@ void bh_report_kinematics(bh_reporting *x)
                    shown, n);
 }
 
+/* What each bin counts; a ring is little without it. */
+static void bins(bh_reporting *x)
+{
+    enum { MOST_BINS = 300 };
+    static const int columns[] = {BH_COL_SETTING, BH_COL_ARM,         BH_COL_BIN,
+                                  BH_COL_ANGLE,   BH_COL_Q2,          BH_COL_CROSS_SECTION,
+                                  BH_COL_SIGNAL,  BH_COL_BACKGROUND,  BH_COL_SOLID_ANGLE,
+                                  BH_COL_COUNTS,  BH_COL_STATISTICAL, BH_COL_SYSTEMATIC};
+    if (x->bins.row_count > MOST_BINS) {
+        bh_paper_add(&x->w, BH_BLOCK_WORDS,
+                     bh_paper_text(&x->w,
+                                   "There are %zu bins: \"beamhours table --bins\" lists them.",
+                                   x->bins.row_count));
+        return;
+    }
+    bh_report_rows_of(x, &x->bins,
+                      "Bins of the acceptance, in the hours of their setting: angle and Q2: means "
+                      "over the bin; stat and syst: relative, of the background-subtracted signal",
+                      columns, COUNT(columns));
+}
+
 void bh_report_rates(bh_reporting *x)
 {
     static const int sections[] = {
@@ -64,10 +85,15 @@ void bh_report_rates(bh_reporting *x)
         BH_COL_SETTING, BH_COL_ARM,        BH_COL_RADIATIVE, BH_COL_KEPT,   BH_COL_EFFICIENCY,
         BH_COL_SIGNAL,  BH_COL_BACKGROUND, BH_COL_LIVE,      BH_COL_COUNTS, BH_COL_STATISTICAL};
     bh_paper_add(&x->w, BH_BLOCK_SECTION, "Rates");
-    bh_paper_add(&x->w, BH_BLOCK_WORDS,
-                 "Signal rate = luminosity x mean cross section x solid angle x radiative factor x "
-                 "kept share x efficiency, before dead time. Cross sections, nuclei and "
-                 "luminosities are per nucleus of the scatterer, in the laboratory.");
+    bh_paper_add(
+        &x->w, BH_BLOCK_WORDS,
+        "Signal rate = luminosity x mean cross section x solid angle x radiative factor x "
+        "kept share x efficiency, before dead time. Cross sections, nuclei and "
+        "luminosities are per nucleus of the scatterer, in the laboratory. Counts = signal "
+        "rate x live fraction x 3600 s/h x hours. Statistical uncertainty = sqrt((s + w + "
+        "o) T + w T / phi) / (s T), with the recorded rates s of the signal, w of windows "
+        "(measured with the empty target) and o of all other background, T seconds on the "
+        "full target, and phi hours of empty target for one of full target.");
     bh_report_rows(
         x,
         "Cross sections per nucleus (at angle: at the arm's centre; sigma: mean over "
@@ -81,7 +107,10 @@ void bh_report_rates(bh_reporting *x)
                    "and rate limit; counts: signal recorded; stat: relative, of the "
                    "background-subtracted signal",
                    rates, COUNT(rates));
+    bins(x);
 }
+
+enum { MOST_SHARES = 64 };
 
 /* A line of the background, and whether it is the sum of them. */
 struct share {
@@ -96,23 +125,26 @@ static bool in_background(const char *section)
     return strcmp(section, "Background") == 0;
 }
 
-/* "quasi-elastic" of "quasi-elastic on 27Al in layer 1": lines of one kind have one source, which
- * the first of them says. */
-static size_t kind_length(const char *name)
+/* "quasi-elastic" of "quasi-elastic on 27Al in layer 1", "elastic" of "pion-: elastic on 1H": lines
+ * of one kind have one source, which the first of them says. */
+static size_t kind_of(const char **name)
 {
-    const char *on = strstr(name, " on ");
-    return on ? (size_t)(on - name) : strlen(name);
+    const char *by = strstr(*name, ": ");
+    *name = by ? by + 2 : *name;
+    const char *on = strstr(*name, " on ");
+    return on ? (size_t)(on - *name) : strlen(*name);
 }
 
 static const char *source_of(const bh_explanation *e, size_t line)
 {
     const char *name = bh_explanation_line(e, line)->name;
-    const size_t n = kind_length(name);
+    const size_t n = kind_of(&name);
     for (size_t i = line + 1; i-- > 0;) {
         const bh_line *l = bh_explanation_line(e, i);
+        const char *other = l->name;
         if (l->kind == BH_LINE_SECTION)
             break;
-        if (l->source && kind_length(l->name) == n && strncmp(l->name, name, n) == 0)
+        if (l->source && kind_of(&other) == n && strncmp(other, name, n) == 0)
             return l->source;
     }
     return NULL;
@@ -150,25 +182,48 @@ static double background_of(const bh_explanation *e)
     return 0.0;
 }
 
-/* Each share that shows in the digits of the sum, what the others give together, and the sum;
- * nothing where nothing is counted. */
+/* The shares of one row, found in its explanation. */
+struct shares {
+    size_t count;
+    double all, said; /* [Hz] their sum as the table has it; of those kept */
+    struct share list[MOST_SHARES];
+};
+
+/* Keeps each share that shows in the digits of the sum, the largest first. */
+static void keep(struct shares *all, const struct share *s)
+{
+    size_t at = all->count;
+    if (s->rate < 1e-3 * all->all || all->count == MOST_SHARES)
+        return;
+    while (at > 0 && all->list[at - 1].rate < s->rate) {
+        all->list[at] = all->list[at - 1];
+        at--;
+    }
+    all->list[at] = *s;
+    all->count++;
+    all->said += s->rate;
+}
+
+/* Each of them, what the others give together, and the sum; nothing where nothing is counted. */
 static void items(bh_reporting *x, size_t row, const bh_explanation *e)
 {
-    const double all = background_of(e), least = 1e-3 * all, shown = 5e-4 * all;
-    double said = 0.0;
+    struct shares all = {.all = background_of(e)};
+    struct share sum = {.name = "background rate", .rate = all.all};
     bool inside = false;
-    for (size_t i = 0; all > 0.0 && i < bh_explanation_lines(e); i++) {
+    for (size_t i = 0; all.all > 0.0 && i < bh_explanation_lines(e); i++) {
         const bh_line *l = bh_explanation_line(e, i);
         struct share s;
         if (l->kind == BH_LINE_SECTION)
             inside = in_background(l->name);
-        if (!inside || !is_share(e, i, &s) || (s.rate < least && !s.is_sum))
-            continue;
-        if (s.is_sum && fabs(all - said) > shown)
-            share(x, row, &(struct share){.name = "all else together", .rate = all - said});
-        said += s.rate;
-        share(x, row, &s);
+        if (inside && is_share(e, i, &s) && !s.is_sum)
+            keep(&all, &s);
     }
+    for (size_t i = 0; i < all.count; i++)
+        share(x, row, &all.list[i]);
+    if (fabs(all.all - all.said) > 5e-4 * all.all)
+        share(x, row, &(struct share){.name = "all else together", .rate = all.all - all.said});
+    if (all.all > 0.0)
+        share(x, row, &sum);
 }
 
 /* Of rows that are not told elsewhere the explanation is made, read and forgotten. */

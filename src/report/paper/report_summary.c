@@ -2,6 +2,7 @@
 #include <math.h>
 #include <string.h>
 
+#include "beamhours/base/number.h"
 #include "beamhours/report/input_words.h"
 #include "beamhours/report/prefix.h"
 #include "beamhours/report/reporting.h"
@@ -19,16 +20,31 @@ struct span {
     double low, high;
 };
 
+static void widen(struct span *s, double v)
+{
+    if (!isfinite(v))
+        return;
+    s->low = fmin(s->low, v);
+    s->high = fmax(s->high, v);
+}
+
+static bool is_ring(const bh_reporting *x, const bh_place *p)
+{
+    return x->plan->settings[p->setting].arms[p->arm].arm.shape == BH_SHAPE_RING;
+}
+
+/* A ring reaches over its bins where kinematics is asked for. */
 static struct span span_of(const bh_reporting *x, int column)
 {
     struct span s = {INFINITY, -INFINITY};
-    for (size_t i = 0; i < x->view.row_count; i++) {
-        const double v = bh_selection_number(&x->view, i, column);
-        if (isfinite(v)) {
-            s.low = fmin(s.low, v);
-            s.high = fmax(s.high, v);
-        }
+    const bool reaches = column == BH_COL_Q2 || column == BH_COL_ANGLE;
+    for (size_t i = 0; reaches && i < x->bins.row_count; i++) {
+        const bh_place p = bh_table_place(x->table, true, x->bins.rows[i]);
+        if (is_ring(x, &p))
+            widen(&s, bh_selection_number(&x->bins, i, column));
     }
+    for (size_t i = 0; i < x->view.row_count; i++)
+        widen(&s, bh_selection_number(&x->view, i, column));
     return s;
 }
 
@@ -66,11 +82,80 @@ static const char *measured(bh_reporting *x)
 {
     const size_t settings = x->plan->setting_count;
     return bh_paper_text(&x->w,
-                         "%s scattering of %s on %s: %zu setting%s; Q2 %s; angle of the detected "
+                         "%s scattering on %s in %zu setting%s; Q2 %s; angle of the detected "
                          "particle %s",
-                         x->plan->settings[0].process.text, names(x, BH_COL_PARTICLE),
-                         names(x, BH_COL_SCATTERER), settings, settings > 1 ? "s" : "",
-                         range(x, BH_COL_Q2), range(x, BH_COL_ANGLE));
+                         x->plan->settings[0].process.text, names(x, BH_COL_SCATTERER), settings,
+                         settings > 1 ? "s" : "", range(x, BH_COL_Q2), range(x, BH_COL_ANGLE));
+}
+
+/* --- what each setting is measured for --- */
+
+static const bh_setting_arm *arm_of(const bh_reporting *x, size_t row)
+{
+    const bh_place p = bh_table_place(x->table, false, x->view.rows[row]);
+    return &x->plan->settings[p.setting].arms[p.arm];
+}
+
+static bool same_wish(const bh_setting_arm *a, const bh_setting_arm *b)
+{
+    return a->want == b->want && a->each_bin == b->each_bin &&
+           !(fabs(a->wanted.value - b->wanted.value) > 0.0);
+}
+
+/* The number as it would be written: five digits at most, no closing zeros. */
+static void plain(bh_text *t, double value)
+{
+    char digits[BH_NUMBER_SIZE];
+    double rounded = value;
+    (void)bh_number_digits(value, 5, digits, sizeof digits);
+    if (!bh_number_parse(digits, NULL, &rounded))
+        bh_text_append_number(t, rounded);
+}
+
+/* "statistical uncertainty 0.2 %", "20 h on the full target" */
+static void wish(const bh_setting_arm *a, bh_text *t)
+{
+    static const struct {
+        const char *before, *behind;
+        double scale;
+    } words[] = {[BH_WANT_GOAL] = {"statistical uncertainty ", " %", 100.0},
+                 [BH_WANT_TIME] = {"", " h on the full target", 1.0 / 3600.0},
+                 [BH_WANT_CHARGE] = {"", " mC", 1e3},
+                 [BH_WANT_COUNTS] = {"", " counts", 1.0}};
+    bh_text_append(t, words[a->want].before);
+    plain(t, a->wanted.value * words[a->want].scale);
+    bh_text_appendf(t, "%s%s", words[a->want].behind,
+                    a->each_bin && a->want == BH_WANT_GOAL ? " of each bin" : "");
+}
+
+/* The rows from `from` on that have the same wish. */
+static void wish_in(bh_reporting *x, size_t from, bh_text *t)
+{
+    enum { NAMED = 8 };
+    size_t count = 0;
+    for (size_t k = from; k < x->view.row_count; k++)
+        if (same_wish(arm_of(x, k), arm_of(x, from)) && ++count <= NAMED)
+            bh_text_appendf(t, "%s%s", count > 1 ? "; " : " in ", bh_report_row_name(x, k));
+    if (count > NAMED)
+        bh_text_appendf(t, " and %zu more", count - NAMED);
+}
+
+/* Each wish with the rows that have it. */
+static const char *wishes(bh_reporting *x)
+{
+    bh_text t = {0};
+    for (size_t i = 0; i < x->view.row_count; i++) {
+        const bh_setting_arm *a = arm_of(x, i);
+        size_t first = 0;
+        while (first < i && !same_wish(arm_of(x, first), a))
+            first++;
+        if (first < i || a->want == BH_WANT_NOTHING)
+            continue;
+        bh_text_append(&t, t.length ? ". " : "");
+        wish(a, &t);
+        wish_in(x, i, &t);
+    }
+    return bh_paper_keep(&x->w, &t);
 }
 
 static const char *asked(bh_reporting *x)
@@ -218,9 +303,14 @@ void bh_report_summary(bh_reporting *x)
         fact(x, "target", bh_paper_keep(&x->w, &t));
     }
     for (size_t i = 0; i < x->plan->arm_count; i++) {
+        const char *name = x->plan->arms[i].name.text;
         bh_say_arm(&x->plan->arms[i], &t);
+        for (size_t k = name ? strlen(name) : 0; k < t.length; k++)
+            if (t.bytes[k] == '_') /* of a key: "in_plane" */
+                t.bytes[k] = ' ';
         fact(x, "arm", bh_paper_keep(&x->w, &t));
     }
+    fact(x, "goals", wishes(x));
     fact(x, "asked", asked(x));
     fact(x, "available", available(x));
     fact(x, "uncertainty", precision(x));
