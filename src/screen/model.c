@@ -275,43 +275,9 @@ static void name_press(bh_model *model, const bh_press *press)
     }
 }
 
-/* What was pasted is text for a field, and commands nothing: no line of it is an Enter.  It is
- * tried out when all of it has come. */
-static void take_pasted(bh_model *model, const bh_press *press)
+/* To the part that is in front. */
+static void dispatch(bh_model *model, const bh_press *press)
 {
-    const bool field = model->over == BH_OVER_FIELD, lines = field && model->field.width > 0;
-    bh_press typed = *press;
-    typed.pasted = false;
-    if (typed.kind == BH_PRESS_POINT && typed.point == '\n')
-        typed = lines ? (bh_press){.kind = BH_PRESS_TAB}
-                      : (bh_press){.kind = BH_PRESS_POINT, .point = ' '};
-    if (field && press->kind == BH_PRESS_PASTED)
-        bh_value_attempt(model, model->field.bytes);
-    else if (field)
-        (void)bh_field_press(&model->field, &typed);
-    else if (model->over == BH_OVER_NOTHING || model->over == BH_OVER_ASK ||
-             model->over == BH_OVER_SHEET)
-        bh_model_note(model, true,
-                      "what is pasted is text for a value: Enter on a line begins one");
-    else if (press->kind != BH_PRESS_PASTED && model->pasted++ < MOST_PASTED)
-        bh_model_press(model, &typed);
-    if (press->kind == BH_PRESS_PASTED)
-        model->pasted = 0;
-}
-
-void bh_model_press(bh_model *model, const bh_press *press)
-{
-    if (press->kind == BH_PRESS_NOTHING)
-        return;
-    if (press->pasted || press->kind == BH_PRESS_PASTED) {
-        take_pasted(model, press);
-        return;
-    }
-    model->note[0] = '\0';
-    if (press->kind == BH_PRESS_SUSPEND) {
-        model->wish = BH_WISH_SUSPEND;
-        return;
-    }
     switch (model->over) {
     case BH_OVER_NOTHING:
         base_press(model, press);
@@ -339,4 +305,45 @@ void bh_model_press(bh_model *model, const bh_press *press)
         name_press(model, press);
         break;
     }
+}
+
+/* What was pasted is text for a field, and commands nothing: no line of it is an Enter.  It is
+ * tried out when all of it has come. */
+static void take_pasted(bh_model *model, const bh_press *press)
+{
+    const bool field = model->over == BH_OVER_FIELD, lines = field && model->field.width > 0;
+    bh_press typed = *press;
+    typed.pasted = false;
+    if (typed.kind == BH_PRESS_POINT && typed.point == '\n') {
+        typed.kind = lines ? BH_PRESS_TAB : BH_PRESS_POINT;
+        typed.point = ' ';
+    }
+    if (field && press->kind == BH_PRESS_PASTED)
+        bh_value_attempt(model, model->field.bytes);
+    else if (field)
+        (void)bh_field_press(&model->field, &typed);
+    else if (model->over == BH_OVER_NOTHING || model->over == BH_OVER_ASK ||
+             model->over == BH_OVER_SHEET)
+        bh_model_note(model, true,
+                      "what is pasted is text for a value: Enter on a line begins one");
+    else if (press->kind != BH_PRESS_PASTED && model->pasted++ < MOST_PASTED)
+        dispatch(model, &typed);
+    if (press->kind == BH_PRESS_PASTED)
+        model->pasted = 0;
+}
+
+void bh_model_press(bh_model *model, const bh_press *press)
+{
+    if (press->kind == BH_PRESS_NOTHING)
+        return;
+    if (press->pasted || press->kind == BH_PRESS_PASTED) {
+        take_pasted(model, press);
+        return;
+    }
+    model->note[0] = '\0';
+    if (press->kind == BH_PRESS_SUSPEND) {
+        model->wish = BH_WISH_SUSPEND;
+        return;
+    }
+    dispatch(model, press);
 }

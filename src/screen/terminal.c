@@ -281,7 +281,7 @@ static bh_press press_of(struct terminal *t, int kind, wint_t code)
     }
     t->pasting = t->pasting && gap < 2;
     if (kind == KEY_CODE_YES)
-        return t->pasting ? (bh_press){.kind = BH_PRESS_NOTHING} : key_press(code);
+        return key_press(t->pasting ? 0 : code);
     return t->pasting ? bh_press_pasted((uint32_t)code) : bh_press_of((uint32_t)code);
 }
 

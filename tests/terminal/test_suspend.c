@@ -12,6 +12,17 @@
 
 #define UNSAVED ".plan.yaml.unsaved"
 
+/* Waits until the terminal is as the screen needs it, or as a shell does. */
+static void wait_modes(tty *t, bool screen)
+{
+    for (int i = 0; i < 3000; i++) {
+        if (t->other == screen && t->mice == screen && tty_cooked(t) != screen)
+            return;
+        tty_pump(t, 20);
+    }
+    ck_abort_msg("other screen %d, mouse %d, cooked %d", t->other, t->mice, tty_cooked(t));
+}
+
 /* The shell says which process the program is before it becomes it. */
 static pid_t begin(tty *t)
 {
@@ -23,7 +34,7 @@ static pid_t begin(tty *t)
     tty_type(t, "sh begin\r");
     tty_wait(t, "asked");
     tty_wait_gone(t, "computing");
-    ck_assert(t->other && t->mice && !tty_cooked(t));
+    wait_modes(t, true);
     char *text = tty_read(t, "process");
     ck_assert_int_eq(sscanf(text, "%ld", &process), 1);
     free(text);
@@ -42,17 +53,14 @@ static void wait_for_shell(tty *t)
 {
     tty_wait_gone(t, "RUN TABLE");
     tty_wait(t, "ready>");
-    for (int i = 0; i < 600 && !tty_cooked(t); i++)
-        tty_pump(t, 100);
-    ck_assert(!t->other && !t->mice);
-    ck_assert(tty_cooked(t));
+    wait_modes(t, false);
 }
 
 static void wait_for_screen(tty *t)
 {
     tty_wait(t, "RUN TABLE");
     tty_wait(t, "? help");
-    ck_assert(t->other && t->mice && !tty_cooked(t));
+    wait_modes(t, true);
 }
 
 /* Leaves the program, and then the shell. */
@@ -177,7 +185,7 @@ START_TEST(ends_while_it_is_stopped)
     ck_assert_int_eq(kill(process, _i ? SIGKILL : SIGTERM), 0);
     tty_type(&t, "fg; echo is-\"here\"\r");
     tty_wait(&t, "is-here");
-    ck_assert(tty_cooked(&t) && !t.other);
+    wait_modes(&t, false);
     char *kept = tty_read(&t, UNSAVED);
     ck_assert_ptr_nonnull(strstr(kept, "current: 4 uA\n"));
     free(kept);
