@@ -274,10 +274,10 @@ bh_code bh_stepwise_compute(const bh_stepwise *steps, const bh_step *step, bh_re
 
 bh_code bh_stepwise_evaluate(bh_stepwise *steps, size_t setting, bool bins, bh_error *err)
 {
-    bh_result *r;
+    bh_result *r = NULL;
     const bh_code code =
         bh_stepwise_compute(steps, &(bh_step){.setting = setting, .bins = bins}, &r, err);
-    if (!code)
+    if (r)
         bh_stepwise_take(steps, setting, r);
     return code;
 }
