@@ -4,7 +4,7 @@ CFLAGS ?= -O2 -g
 HARDEN ?= -U_FORTIFY_SOURCE -D_FORTIFY_SOURCE=3 -fstack-protector-strong
 BUILD  ?= build
 PKGS := gsl yaml-0.1 json-c
-DRAW := cairo pangocairo # of the program alone, not of the library
+DRAW := cairo pangocairo # of what draws alone, which the program loads when it draws
 WARN  := -Wall -Wextra -Wpedantic -Wconversion -Wshadow -Wstrict-prototypes -Wmissing-prototypes \
          -Wcast-qual -Wwrite-strings -Wvla -Wformat=2 -Wundef
 SAN   := -O1 -g -fsanitize=address,undefined -fno-sanitize-recover=all
@@ -13,10 +13,12 @@ FAST  := -fopenmp-simd -fno-math-errno  # never -ffast-math: NaN and infinity ar
 ALL_C  = $(STD) -fPIC -fvisibility=hidden $(WARN) $(WERROR) $(HARDEN) $(CPPFLAGS) $(FAST) $(CFLAGS)
 LINK   = $(quiet) $(CC) $(CFLAGS) -Wl,-z,relro,-z,now,--as-needed $(LDFLAGS) -o $@
 LIBS  := $(shell pkg-config --libs $(PKGS) 2>/dev/null) -lm -pthread
-FRONT_LIBS := $(shell pkg-config --libs ncursesw $(DRAW) 2>/dev/null)
+SCREEN_LIBS := $(shell pkg-config --libs ncursesw 2>/dev/null) -ldl
+DRAW_LIBS := $(shell pkg-config --libs $(DRAW) 2>/dev/null)
+FRONT_LIBS := $(SCREEN_LIBS) $(DRAW_LIBS)
 TEST_LIBS  := $(shell pkg-config --libs check vterm 2>/dev/null)
 
-MAIN     := src/command/main.c
+MAIN     := $(wildcard src/command/main.c src/command/drawing.c) # of the program alone, not of the tests
 FRONT    := $(sort $(filter-out $(MAIN),$(shell find src/command src/screen src/report -name '*.c' 2>/dev/null)))
 ENGINE   := $(sort $(filter-out $(FRONT) $(MAIN),$(shell find src -name '*.c')))
 HEADERS  := $(sort $(shell find include -name '*.h'))
@@ -36,9 +38,11 @@ JOBS = $(if $(filter -j%,$(MAKEFLAGS)),,-j$(shell getconf _NPROCESSORS_ONLN 2>/d
 .DELETE_ON_ERROR:
 
 COMPLETE := $(addprefix $(BUILD)/completions/,bash zsh fish)
-all: $(addprefix $(BUILD)/,beamhours libbeamhours.a libbeamhours.so.0) $(COMPLETE) ## build the program and the library
+all: $(addprefix $(BUILD)/,beamhours beamhours-draw.so libbeamhours.a libbeamhours.so.0) $(COMPLETE) ## build the program and the library
 everything: all $(call bin,$(TESTS) $(BENCH))            ## and the tests, without running them
-$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(FRONT_LIBS) $(LIBS)
+$(BUILD)/beamhours: $(call obj,$(MAIN)) $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $^ $(SCREEN_LIBS) $(LIBS)
+$(BUILD)/beamhours-draw.so: $(call obj,$(wildcard src/report/figures/drawing_module.c)) $(BUILD)/front.a $(BUILD)/libbeamhours.a
+	$(LINK) -shared $(if $(HARDEN),-Xlinker --no-undefined) $^ $(DRAW_LIBS) $(LIBS)
 $(BUILD)/libbeamhours.a $(BUILD)/libbeamhours.so.0: $(call obj,$(ENGINE)) $(FOLDERS)
 $(BUILD)/front.a: $(call obj,$(FRONT)) $(FOLDERS)
 $(BUILD)/%.a: ; $(quiet) rm -f $@ && ar rcs $@ $(filter %.o,$^)

@@ -44,13 +44,19 @@ static bool upwards(char *path)
     return true;
 }
 
+/* Where this program is. */
+static bool find_program(char path[PATH])
+{
+    const ssize_t n = readlink("/proc/self/exe", path, PATH - 1);
+    path[n > 0 ? n : 0] = '\0';
+    return n > 0;
+}
+
 char *bh_places_data(void)
 {
     char path[PATH];
-    const ssize_t n = readlink("/proc/self/exe", path, sizeof path - 1);
-    if (n <= 0)
+    if (!find_program(path))
         return NULL;
-    path[n] = '\0';
     for (int i = 0; i < DEEPEST && upwards(path) && path[0]; i++) {
         if (holds(path, "plans") && holds(path, "materials"))
             return joined(path, ".");
@@ -58,6 +64,48 @@ char *bh_places_data(void)
             return joined(path, "share/beamhours");
     }
     return NULL;
+}
+
+/* `folder`/`name` where it can be read, else NULL. */
+static char *readable(const char *folder, const char *name)
+{
+    char *path = joined(folder, name);
+    if (path && access(path, R_OK) == 0)
+        return path;
+    free(path);
+    return NULL;
+}
+
+#define DRAWING "beamhours-draw.so"
+
+/* Where it was installed, one of the lines of share/beamhours/installed. */
+static char *drawing_as_installed(void)
+{
+    char line[PATH];
+    char *data = bh_places_data(), *list = data ? joined(data, "installed") : NULL, *found = NULL;
+    FILE *f = list ? fopen(list, "r") : NULL;
+    while (f && !found && fgets(line, sizeof line, f)) {
+        line[strcspn(line, "\n")] = '\0';
+        const char *name = strrchr(line, '/');
+        if (name && strcmp(name + 1, DRAWING) == 0 && access(line, R_OK) == 0)
+            found = strdup(line);
+    }
+    if (f)
+        (void)fclose(f);
+    free(list);
+    free(data);
+    return found;
+}
+
+char *bh_places_drawing(void)
+{
+    char path[PATH];
+    if (!find_program(path) || !upwards(path))
+        return NULL;
+    char *found = readable(path, DRAWING);
+    if (!found && upwards(path))
+        found = readable(path, "lib/beamhours/" DRAWING);
+    return found ? found : drawing_as_installed();
 }
 
 struct list {

@@ -7,6 +7,11 @@
  * The caller frees it. */
 char *bh_places_data(void);
 
+/* The shared object that draws, beamhours-draw.so: beside the program, in lib/beamhours beside its
+ * bin, or where the installation wrote down that it put it.  NULL when it is nowhere (or no
+ * memory). The caller frees it. */
+char *bh_places_drawing(void);
+
 /* Folders to look for materials in, NULL-terminated: that of `plan` (NULL or "-": the current one),
  * $BEAMHOURS_MATERIALS, $XDG_DATA_HOME/beamhours/materials, the installed library.  NULL when there
  * is no memory.  Free with bh_places_free. */

@@ -11,6 +11,11 @@
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
+void bh_figure_axis_words(const bh_figure_scale *scale, char *out, size_t size)
+{
+    (void)snprintf(out, size, scale->unit[0] ? "%s [%s]" : "%s", scale->words, scale->unit);
+}
+
 struct writer {
     const bh_curve_picture *p;
     bh_arena *arena;

@@ -31,11 +31,6 @@ bh_lettering bh_figure_letters(bh_letters which)
     return chosen;
 }
 
-void bh_figure_axis_words(const bh_figure_scale *scale, char *out, size_t size)
-{
-    (void)snprintf(out, size, scale->unit[0] ? "%s [%s]" : "%s", scale->words, scale->unit);
-}
-
 double bh_figure_x(const bh_figure *figure, const bh_figure_layout *layout, double x)
 {
     return layout->frame.x + layout->frame.wide * bh_axis_place(&figure->x.axis, x);

@@ -6,10 +6,9 @@
 #include <stdbool.h>
 #include <string.h>
 
-#include <glib.h>
-
 #include "beamhours/base/nearest.h"
 #include "beamhours/base/number.h"
+#include "beamhours/document/source.h"
 #include "beamhours/run/columns.h"
 
 enum { MOST_CELLS = 64 };
@@ -302,8 +301,12 @@ static bh_code read_point(struct reader *r)
 
 static bh_code check_text(struct reader *r, const char *text, size_t length)
 {
-    const char *bad = NULL;
-    if (g_utf8_validate_len(text, length, &bad))
+    const char *bad = text, *const end = text + length;
+    uint32_t point;
+    size_t n = 1;
+    while (bad < end && *bad && (n = bh_utf8_read(bad, (size_t)(end - bad), &point)) > 0)
+        bad += n;
+    if (bad == end)
         return BH_OK;
     while (r->at < bad)
         step(r);
