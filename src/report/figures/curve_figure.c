@@ -61,6 +61,14 @@ static void add_series(struct maker *m, const bh_figure_series *series, bh_figur
 
 /* --- curves --- */
 
+/* The first curve is whole; others, which are laid over it, end where their model is no longer
+ * known. */
+static double height_of(const struct maker *m, size_t k, size_t i)
+{
+    const bh_curve *c = m->p->curves->curve[k];
+    return k > 0 && !bh_curve_inside(c, i) ? (double)NAN : bh_shown_on_curve(c, i, m->p->shown);
+}
+
 static bh_code take_curves(struct maker *m)
 {
     const bh_curves *c = m->p->curves;
@@ -72,7 +80,7 @@ static bh_code take_curves(struct maker *m)
             return no_memory(m);
         for (size_t i = 0; i < n; i++) {
             point[i].x = bh_curve_x(c->curve[k], i);
-            point[i].y = bh_shown_on_curve(c->curve[k], i, m->p->shown);
+            point[i].y = height_of(m, k, i);
             widen(&m->y, point[i].y);
             if (isfinite(point[i].y))
                 widen(&m->x, point[i].x);
@@ -86,16 +94,17 @@ static bh_code take_curves(struct maker *m)
     return BH_OK;
 }
 
-/* From the lowest to the highest of all curves at point i; NAN where one of them is empty. */
+/* From the lowest to the highest of all curves at point i; NAN where there are not two. */
 static struct reach reach_of(const struct maker *m, size_t curves, size_t i)
 {
     struct reach r = {INFINITY, -INFINITY, INFINITY};
-    for (size_t k = 0; k < curves; k++) {
-        if (i >= m->series[k].count || isnan(m->series[k].point[i].y))
-            return (struct reach){NAN, NAN, NAN};
-        widen(&r, m->series[k].point[i].y);
-    }
-    return r;
+    size_t some = 0;
+    for (size_t k = 0; k < curves; k++)
+        if (i < m->series[k].count && isfinite(m->series[k].point[i].y)) {
+            widen(&r, m->series[k].point[i].y);
+            some++;
+        }
+    return some > 1 ? r : (struct reach){NAN, NAN, NAN};
 }
 
 /* The band from the lowest to the highest of several curves. */

@@ -165,6 +165,16 @@ static const char *description(const struct writer *m)
     return said;
 }
 
+/* Whether a curve over the first ends where its model is no longer known. */
+static bool some_end(const bh_curves *curves)
+{
+    for (size_t k = 1; k < curves->count; k++)
+        for (size_t i = 0; i < bh_curve_count(curves->curve[k]); i++)
+            if (!bh_curve_inside(curves->curve[k], i))
+                return true;
+    return false;
+}
+
 void bh_curve_words(const bh_curve_picture *picture, size_t planned, bh_arena *arena,
                     bh_figure *out)
 {
@@ -174,9 +184,14 @@ void bh_curve_words(const bh_curve_picture *picture, size_t planned, bh_arena *a
                                                            : bh_column_at(picture->shown)->meaning;
     out->title = plan->title.text ? plan->title.text : "";
     out->subtitle = subtitle(&m);
-    out->foot = picture->version
-                    ? bh_curve_say(arena, "%s: %s. beamhours %s", bh_shown_key(picture->shown),
-                                   meaning, picture->version)
-                    : "";
+    out->foot =
+        picture->version
+            ? bh_curve_say(arena, "%s: %s.%s beamhours %s", bh_shown_key(picture->shown), meaning,
+                           some_end(picture->curves)
+                               ? " Curves over the first end where the data of their "
+                                 "model do."
+                               : "",
+                           picture->version)
+            : "";
     out->description = description(&m);
 }
