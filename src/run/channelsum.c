@@ -149,6 +149,8 @@ static bh_code fit_radiated(struct making *m, const struct task *t, int boost, s
 static bh_code sum_total(struct making *m, const struct task *t, double weight, bh_error *err)
 {
     bh_code code = bh_average_fit(&t->request, m->places.polar, m->averages, err);
+    if (!code && !(m->common > 0)) /* what fit_radiated would fit again to know */
+        m->common = bh_average_top(m->averages);
     if (!code)
         code = add_up(m, &t->request, &m->places.at, err);
     for (int i = 0; !code && i < m->parts; i++) {

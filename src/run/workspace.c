@@ -99,14 +99,25 @@ bh_sum_scratch *bh_workspace_scratch(bh_workspace *workspace)
     return &workspace->scratch;
 }
 
-/* FNV-1a, Fowler, Noll and Vo. */
+static uint64_t mixed(uint64_t hash, uint64_t word)
+{
+    hash = (hash ^ word) * 1099511628211u;
+    return hash ^ hash >> 29;
+}
+
+/* FNV-1a, Fowler, Noll and Vo, by words of 8 bytes: keys are long, and hashed again and again. */
 static size_t hash_of(const void *key, size_t size)
 {
     const unsigned char *bytes = key;
-    uint64_t hash = 14695981039346656037u;
-    for (size_t i = 0; i < size; i++)
-        hash = (hash ^ bytes[i]) * 1099511628211u;
-    return (size_t)hash;
+    uint64_t hash = 14695981039346656037u, word;
+    size_t i = 0;
+    for (; i + sizeof word <= size; i += sizeof word) {
+        memcpy(&word, bytes + i, sizeof word);
+        hash = mixed(hash, word);
+    }
+    for (; i < size; i++)
+        hash = mixed(hash, bytes[i]);
+    return (size_t)(hash ^ hash >> 32);
 }
 
 const void *bh_workspace_recall(const bh_workspace *workspace, const void *key, size_t size)
