@@ -157,6 +157,18 @@ static void rows(bh_leaf *s, const struct grid *g)
     rule(s, g->total, 1.0);
 }
 
+/* [pt] at least, before a table begins on a page: all of a short one. */
+static double needed(const bh_leaf *s, const struct grid *g)
+{
+    enum { SHORT = 16 };
+    double high = 80.0; /* caption and headings */
+    if (g->t->row_count > SHORT)
+        return 100.0;
+    for (size_t r = 0; r < g->t->row_count; r++)
+        high += row_height(s, g, (long)r);
+    return fmin(high, s->high - 2.0 * BH_LEAF_MARGIN);
+}
+
 void bh_leaf_table(bh_leaf *s, const bh_block *b)
 {
     struct grid g = {.t = b->table};
@@ -169,7 +181,7 @@ void bh_leaf_table(bh_leaf *s, const bh_block *b)
         s->size -= 0.25;
     const double size = s->size;
     s->y += 4.0;
-    bh_leaf_need(s, 100.0);
+    bh_leaf_need(s, needed(s, &g));
     s->size = caption_size;
     bh_leaf_paragraph(s, caption.bytes ? caption.bytes : "", true, 0.0);
     bh_text_free(&caption);

@@ -16,7 +16,8 @@ static const char style[] =
     "font-variant-numeric:tabular-nums}\n"
     "caption{text-align:left;font-weight:bold;padding:.3rem 0}\n"
     "th,td{padding:.2rem .6rem;text-align:left;vertical-align:top}th{font-weight:bold}\n"
-    "tbody th{font-weight:normal}.n{text-align:right}thead th{vertical-align:bottom;"
+    ".rows tbody th{white-space:nowrap}tbody th{font-weight:normal}.n{text-align:right}thead "
+    "th{vertical-align:bottom;"
     "border-top:2px solid #1a1a1a;border-bottom:1px solid #1a1a1a}\n"
     "tbody tr:last-child>*{border-bottom:2px solid #1a1a1a}tbody tr:nth-child(even){"
     "background:#f2f2f2}\n"
@@ -27,7 +28,8 @@ static const char style[] =
     ".caution{border-left:.4rem solid #8a1c00;background:#fff4ef;padding:.5rem 1rem}\n"
     "figure{margin:1.5rem 0}figure svg{max-width:100%;height:auto}figcaption{font-size:.9rem}\n"
     "@media print{nav{display:none}body{font-size:10pt}h2{break-after:avoid}"
-    "figure,tr{break-inside:avoid}.wide{overflow:visible}}\n";
+    "figure,tr,.wide{break-inside:avoid}.wide{overflow:visible}"
+    "th button{display:contents}}\n";
 
 /* Buttons appear only where the script runs: without it headings are plain words. */
 static const char script[] =
@@ -130,8 +132,10 @@ static void table(const bh_block *b, bh_text *out)
     const bh_paper_table *t = b->table;
     bh_text_appendf(out,
                     "<div class=\"wide\" role=\"region\" tabindex=\"0\" aria-label=\"Table %d\">\n"
-                    "<table>\n<caption>Table %d. ",
-                    b->number, b->number);
+                    "<table%s>\n<caption>Table %d. ",
+                    b->number,
+                    strcmp(t->columns[0].heading, "setting") == 0 ? " class=\"rows\"" : "",
+                    b->number);
     within("", b->text, "</caption>\n<thead>\n<tr>", out);
     for (size_t c = 0; c < t->column_count; c++)
         heading_cell(&t->columns[c], out);

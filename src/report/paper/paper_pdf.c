@@ -148,7 +148,7 @@ static bh_code figure(bh_leaf *s, const bh_block *b, bh_error *err)
     if (bad)
         return bad;
     const double scale =
-        fmin(0.8, bh_leaf_inside(s) / wide); /* two on a page, with their captions */
+        fmin(0.76, bh_leaf_inside(s) / wide); /* two on a page, with their captions */
     bh_leaf_need(s, scale * high + 30.0);
     cairo_save(s->pen.to);
     cairo_translate(s->pen.to, BH_LEAF_MARGIN, s->y);

@@ -71,17 +71,17 @@ static bh_code one(bh_reporting *x, const bh_curves *curves, const char *const *
     if (bad)
         bh_paper_add(&x->w, BH_BLOCK_WORDS, bh_paper_text(&x->w, "No figure: %s.", why.text));
     else
-        bh_paper_figure(
-            &x->w,
-            bh_paper_text(&x->w,
-                          "The %s against the %s; setting %s and those that share its "
-                          "beam energy, target and arm %s%s",
-                          bh_shown_words(shown), figure->x.words, curves->setting->name,
-                          curves->arm->arm.name.text,
-                          figure->below ? "; models over each other, and their ratio to the one in "
-                                          "use"
-                                        : ""),
-            figure);
+        bh_paper_figure(&x->w,
+                        bh_paper_text(&x->w,
+                                      "The %s against the %s; setting %s and those that share its "
+                                      "beam energy, target and arm %s%s",
+                                      bh_shown_words(shown), figure->x.words, curves->setting->name,
+                                      curves->arm->arm.name.text,
+                                      figure->below
+                                          ? "; models over each other, each as far as its data "
+                                            "reach, and their ratio to the one in use"
+                                          : ""),
+                        figure);
     return BH_OK;
 }
 
@@ -103,6 +103,13 @@ static void add_model(bh_reporting *x, struct models *m, const char *name, const
         bh_paper_text(&x->w, "%s [%d]", name, bh_paper_cite(&x->w, source ? source : name));
 }
 
+/* [1] what the choice of form factors does to a row: nothing where they are not in doubt. */
+static double doubt(const bh_reporting *x, size_t row)
+{
+    const bh_effects e = bh_table_effects(x->table, false, x->view.rows[row]);
+    return bh_effects_of(bh_table_causes(x->table), &e, BH_CAUSE_STRUCTURE);
+}
+
 /* From what is told of a row like this one. */
 static void find_models(bh_reporting *x, size_t row, struct models *m)
 {
@@ -110,13 +117,14 @@ static void find_models(bh_reporting *x, size_t row, struct models *m)
     while (told < x->told_count && !alike(x, x->told_row[told], row))
         told++;
     const bh_explanation *e = told < x->told_count ? x->told[told] : NULL;
+    const bool compared = doubt(x, row) > 0.0;
     for (size_t i = 0; e && i < bh_explanation_lines(e); i++) {
         const bh_line *l = bh_explanation_line(e, i);
         int end = 0;
         if (l->kind == BH_LINE_MODEL && m->count == 0 && strcmp(l->name, "structure model") == 0)
             add_model(x, m, bh_paper_text(&x->w, "%s", l->value), l->source);
-        else if (m->count > 0 && l->name && sscanf(l->name, "with %*s instead%n", &end) == 0 &&
-                 end > 0)
+        else if (compared && m->count > 0 && l->name &&
+                 sscanf(l->name, "with %*s instead%n", &end) == 0 && end > 0)
             add_model(x, m, bh_paper_text(&x->w, "%.*s", end - OTHERS, l->name + WITH), l->source);
     }
 }
