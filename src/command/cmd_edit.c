@@ -85,6 +85,9 @@ static int edit(const bh_desk_start *start)
     bh_error err = {.code = BH_OK};
     bh_desk *desk = bh_desk_open(start, &err);
     const int status = desk ? show(desk) : bh_complain(stderr, &err);
+    if (err.code == BH_EABSENT)
+        fputs("`beamhours new` begins a plan, and so does `beamhours edit` without a name\n",
+              stderr);
     bh_desk_close(desk);
     return status;
 }

@@ -84,25 +84,25 @@ static void to_plan(bh_model *model)
     bh_plan_go(model, path);
 }
 
-enum { PLAN = 1, TABLE = 2, BOTH = 3 };
+enum { PLAN = 1, TABLE = 2, BOTH = 3, ALWAYS = 7 /* in every part, and always in sight */ };
+
+static void turn_menu(bh_model *model);
 
 static const bh_action actions[] = {
     {"Enter", "edit", "edit the value, or open and close what has lines below it", PLAN, NULL},
     {"Enter", "bins", "open or close the bins of the row", TABLE, NULL},
     {"a", "add", "add a key, a setting, a layer, an arm", PLAN, bh_change_add},
-    {"d", "duplicate", "the same setting, layer or arm again, behind it", PLAN, bh_change_double},
     {"r", "remove", "take the line, or the whole item, out of the plan", PLAN, bh_change_remove},
     {"w", "what it takes", "a wanted value of this column: what input gives it", TABLE, solve},
     {"e", "explain", "where each number of the row comes from", TABLE, explain},
+    {"b", "back", "take the last change back", BOTH, bh_change_back},
+    {"s", "save", "save the plan", BOTH, save},
     {"o", "order", "order the rows by this column: rising, falling, as in the plan", TABLE,
      bh_table_order},
     {"p", "pin", "pin the table as it is, and see every later change against it", TABLE,
      bh_table_pin},
-    {"b", "back", "take the last change back", BOTH, bh_change_back},
     {"f", "forth", "do again what was taken back", BOTH, bh_change_again},
-    {"s", "save", "save the plan", BOTH, save},
-    {"q", "leave", "leave; asks when something is not saved", BOTH, bh_leave},
-    {"?", "help", "all keys", BOTH, help},
+    {"d", "duplicate", "the same setting, layer or arm again, behind it", PLAN, bh_change_double},
     {"l", "look for", "find a word in the plan or a setting in the table", BOTH, bh_find_begin},
     {"<", "earlier", "move the item towards the beginning of its list", PLAN, bh_change_earlier},
     {">", "later", "move the item towards the end of its list", PLAN, bh_change_later},
@@ -114,8 +114,12 @@ static const bh_action actions[] = {
     {"m", "messages", "all errors and warnings; Enter goes to the line", BOTH, messages},
     {"h", "history", "every change so far", BOTH, history},
     {"n", "new name", "save under another name", BOTH, save_as},
+    {"q", "leave", "leave; asks when something is not saved", ALWAYS, bh_leave},
+    {",", "more", "the other keys in this line", ALWAYS, turn_menu},
+    {"?", "help", "all keys", ALWAYS, help},
 };
 
+enum { GAP = 2, LEAST_MENU = 10 /* columns */ };
 enum { ACTIONS = (int)(sizeof actions / sizeof actions[0]) };
 
 const bh_action *bh_action_at(size_t i)
@@ -146,25 +150,75 @@ bool bh_action_press(bh_model *model, const bh_press *press)
     return false;
 }
 
-void bh_menu_click(bh_model *model, int column)
+/* --- the menu line --- */
+
+static int width_of(const bh_action *a)
 {
-    int at = 0;
-    if (column >= model->columns - 6) {
-        help(model);
-        return;
+    return (int)(strlen(a->key) + strlen(a->word)) + 1;
+}
+
+static bool is_always(const bh_action *a)
+{
+    return a->where == ALWAYS;
+}
+
+/* From the right, as far as there is room; returns the column that they begin in. */
+static int place_always(int columns, bh_menu_place *out, int *count)
+{
+    int at = columns + GAP;
+    for (size_t i = ACTIONS; i-- > 0;) {
+        const bh_action *a = &actions[i];
+        if (!is_always(a) || at - GAP - width_of(a) < (*count ? LEAST_MENU : 0))
+            continue;
+        at -= GAP + width_of(a);
+        out[(*count)++] = (bh_menu_place){a, at};
     }
+    return at;
+}
+
+int bh_menu_places(const bh_model *model, bh_menu_place out[BH_MOST_MENU], int *turn)
+{
+    int count = 0, at = 0, skipped = 0;
+    const int end = place_always(model->columns, out, &count);
+    const int fixed = count;
     for (size_t i = 0; i < ACTIONS; i++) {
         const bh_action *a = &actions[i];
-        if (!bh_action_means(model, a) || a->run == help)
+        if (is_always(a) || !bh_action_means(model, a) || skipped++ < model->menu_from)
             continue;
-        const int width = (int)(strlen(a->key) + strlen(a->word)) + 3;
-        if (column >= at && column < at + width - 1) {
-            const bool letter = a->run != NULL;
-            const bh_press press = {.kind = letter ? BH_PRESS_POINT : BH_PRESS_ENTER,
-                                    .point = letter ? (uint32_t)(unsigned char)a->key[0] : 0};
-            bh_model_press(model, &press);
-            return;
-        }
-        at += width;
+        if (at + width_of(a) + GAP > end || count >= BH_MOST_MENU)
+            break;
+        out[count++] = (bh_menu_place){a, at};
+        at += width_of(a) + GAP;
+    }
+    *turn = count - fixed;
+    return count;
+}
+
+static void turn_menu(bh_model *model)
+{
+    bh_menu_place places[BH_MOST_MENU];
+    int turn = 0, all = 0;
+    (void)bh_menu_places(model, places, &turn);
+    for (size_t i = 0; i < ACTIONS; i++)
+        all += !is_always(&actions[i]) && bh_action_means(model, &actions[i]);
+    model->menu_from += turn;
+    if (turn == 0 || model->menu_from >= all)
+        model->menu_from = 0;
+}
+
+void bh_menu_click(bh_model *model, int column)
+{
+    bh_menu_place places[BH_MOST_MENU];
+    int turn = 0;
+    const int count = bh_menu_places(model, places, &turn);
+    for (int i = 0; i < count; i++) {
+        const bh_action *a = places[i].action;
+        if (column < places[i].column || column >= places[i].column + width_of(a))
+            continue;
+        const bool letter = a->run != NULL;
+        const bh_press press = {.kind = letter ? BH_PRESS_POINT : BH_PRESS_ENTER,
+                                .point = letter ? (uint32_t)(unsigned char)a->key[0] : 0};
+        bh_model_press(model, &press);
+        return;
     }
 }

@@ -252,27 +252,21 @@ static const char *hint(const bh_model *model)
 static void draw_menu(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
     const char *only = hint(model);
-    static const char always[] = "? help";
-    const int end = canvas->columns - (int)sizeof always;
-    int at = 0;
+    bh_menu_place menu[BH_MOST_MENU];
+    int turn = 0;
     if (only) {
         (void)bh_canvas_put(canvas, (bh_spot){places->menu, 0, canvas->columns}, BH_LOOK_KEY, only);
         return;
     }
-    const bh_action *a;
-    for (size_t i = 0; (a = bh_action_at(i)); i++) {
-        if (!bh_action_means(model, a) || a->key[0] == '?')
-            continue;
-        const int key = (int)strlen(a->key), width = key + (int)strlen(a->word) + 3;
-        if (at + width - 2 > end)
-            break;
-        (void)bh_canvas_put(canvas, (bh_spot){places->menu, at, key}, BH_LOOK_KEY, a->key);
-        (void)bh_canvas_put(canvas, (bh_spot){places->menu, at + key + 1, width}, BH_LOOK_PLAIN,
-                            a->word);
-        at += width;
+    const int count = bh_menu_places(model, menu, &turn);
+    for (int i = 0; i < count; i++) {
+        const bh_action *a = menu[i].action;
+        bh_spot spot = {places->menu, menu[i].column, canvas->columns - menu[i].column};
+        const int key = bh_canvas_put(canvas, spot, BH_LOOK_KEY, a->key) + 1;
+        spot.column += key;
+        spot.width -= key;
+        (void)bh_canvas_put(canvas, spot, BH_LOOK_PLAIN, a->word);
     }
-    (void)bh_canvas_put_right(canvas, (bh_spot){places->menu, 0, canvas->columns}, BH_LOOK_KEY,
-                              always);
 }
 
 void bh_draw_field(bh_canvas *canvas, bh_spot spot, const bh_field *field)

@@ -187,6 +187,7 @@ static bool begins_value(const bh_press *press)
 
 static void switch_pane(bh_model *model)
 {
+    model->menu_from = 0;
     model->pane = model->pane == BH_PANE_PLAN ? BH_PANE_TABLE : BH_PANE_PLAN;
     bh_table_refresh(model); /* on a narrow terminal it was not laid out */
     bh_plan_keep_in_view(model);

@@ -31,12 +31,12 @@ static void write_help(bh_model *model, bh_sheet_writer *w)
         bh_sheet_pair(w, moves[i].key, moves[i].what);
     static const char *const parts[] = {"", "In the plan", "In the run table",
                                         "In the plan and in the run table"};
-    for (unsigned where = 1; where <= 3; where++) {
+    for (unsigned where = 1; where <= 3; where++) { /* what always is in sight is in both */
         bh_sheet_add(w, BH_LOOK_TITLE, "", "");
         bh_sheet_add(w, BH_LOOK_TITLE, "", parts[where]);
         const bh_action *a;
         for (size_t i = 0; (a = bh_action_at(i)); i++)
-            if (a->where == where) {
+            if ((a->where & 3) == where) {
                 char key[64];
                 (void)snprintf(key, sizeof key, "%s  %s", a->key, a->word);
                 bh_sheet_pair(w, key, a->help);

@@ -5,8 +5,6 @@
 
 #include <curses.h>
 #include <errno.h>
-#include <langinfo.h>
-#include <locale.h>
 #include <poll.h>
 #include <signal.h>
 #include <stdint.h>
@@ -67,13 +65,6 @@ static void set_looks(struct terminal *t)
 
 /* --- beginning and end --- */
 
-bool bh_terminal_unicode(void)
-{
-    if (!setlocale(LC_CTYPE, ""))
-        return false;
-    return strcmp(nl_langinfo(CODESET), "UTF-8") == 0;
-}
-
 /* What the terminal is sent for something; NULL where it cannot do it. */
 static const char *capability(const char *name)
 {
@@ -120,6 +111,15 @@ static void mark_pastes(bool on)
     (void)fflush(stdout);
 }
 
+/* Below what stays where there is no other screen to leave for. */
+static void leave_screen(void)
+{
+    mark_pastes(false);
+    (void)endwin();
+    (void)fputs(capability("rmcup") ? "" : "\n", stdout);
+    (void)fflush(stdout);
+}
+
 static void find_blank(struct terminal *t)
 {
     for (int i = 0; i < BH_LOOK_COUNT; i++)
@@ -149,8 +149,7 @@ static void end(struct terminal *t)
 {
     bh_alarm_screen(false);
     if (t->screen) {
-        mark_pastes(false);
-        (void)endwin();
+        leave_screen();
         delscreen(t->screen);
     }
     bh_canvas_free(&t->shown);
@@ -173,8 +172,7 @@ static void suspend(struct terminal *t, bool whole)
 {
     (void)bh_desk_secure(t->desk, bh_clock_now()); /* nobody knows whether it is ever resumed */
     bh_alarm_screen(false);
-    mark_pastes(false);
-    (void)endwin();
+    leave_screen();
     if (!bh_alarm_stop(whole))
         bh_desk_say(t->desk, "nothing is there that this could be left to: no shell runs it");
     bh_alarm_screen(true);

@@ -199,6 +199,7 @@ typedef struct {
     bh_outcome *kept; /* complete, of the text without what is being typed */
     bh_outcome *pin;
     size_t job;    /* that was begun last */
+    int menu_from; /* so many actions are left out of the menu line, which was turned over */
     size_t pasted; /* [1] characters of what is being pasted */
 
     bh_field field;            /* a value, a word to find, a name */
@@ -355,6 +356,15 @@ typedef struct {
 const bh_action *bh_action_at(size_t i);
 bool bh_action_press(bh_model *model, const bh_press *press);
 bool bh_action_means(const bh_model *model, const bh_action *action);
+enum { BH_MOST_MENU = 40 };
+typedef struct {
+    const bh_action *action;
+    int column; /* of the terminal */
+} bh_menu_place;
+
+/* What stands in the menu line, and where; returns how many, `turn` of them give way to others when
+ * the line is turned over. */
+int bh_menu_places(const bh_model *model, bh_menu_place out[BH_MOST_MENU], int *turn);
 void bh_menu_click(bh_model *model, int column);
 
 /* --- finding.c --- */
