@@ -25,6 +25,7 @@ for round in $(seq "$times"); do
             cat "$log"
         fi
     done
+    printf 'round %s of %s: %s passed, %s failed\n' "$round" "$times" "$passed" "$failed"
 done
 rm -f "$log"
 printf '%s passed, %s failed\n' "$passed" "$failed"
