@@ -55,11 +55,12 @@ static void add_elastic(struct items *items, const bh_contribution *c)
         return;
     add(items, &(struct item){.rate = c->rate,
                               .name = bh_explain_place(x, c),
-                              .formula = bh_explain_text(x, "%s ub/sr x %s /cm2, kept %s",
+                              .formula = bh_explain_text(x, "by %s: %s ub/sr x %s /cm2, kept %s",
+                                                         bh_structure_name(c->structure),
                                                          bh_explain_number(x, c->cross_section, ""),
                                                          bh_explain_number(x, c->seen, ""),
                                                          bh_explain_number(x, c->kept, "")),
-                              .source = bh_explain_text(x, "%s", bh_structure_name(c->structure)),
+                              .source = bh_explain_text(x, "%s", bh_structure_source(c->structure)),
                               .window = c->presence->origin == BH_ORIGIN_WINDOW});
 }
 

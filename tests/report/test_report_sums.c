@@ -4,6 +4,7 @@
 
 #include "beamhours/base/file.h"
 #include "beamhours/base/number.h"
+#include "beamhours/physics/structure.h"
 #include "beamhours/report/report.h"
 
 static const char *const demos[] = {
@@ -214,6 +215,25 @@ START_TEST(what_is_in_force_is_said)
 }
 END_TEST
 
+/* A reference is a publication, a definition or an edition of data, not the name of a model. */
+START_TEST(references_are_no_names_of_models)
+{
+    struct read r = read_demo(_i);
+    int seen = 0;
+    for (size_t i = 0; i < r.report.paper.count; i++) {
+        const bh_block *b = &r.report.paper.blocks[i];
+        if (b->kind != BH_BLOCK_REFERENCE)
+            continue;
+        for (int m = 0; bh_structure_model_at(m); m++)
+            ck_assert_str_ne(b->text, bh_structure_model_at(m)->name);
+        ck_assert(strchr(b->text, ' ') || strcmp(b->text, "definition") == 0);
+        seen++;
+    }
+    ck_assert_int_gt(seen, 5);
+    put_away(&r);
+}
+END_TEST
+
 /* Every line of a background has its source, and the largest stands first. */
 START_TEST(backgrounds_are_in_order_and_have_sources)
 {
@@ -307,6 +327,7 @@ int main(void)
     tcase_add_test(tests, backgrounds_of_many_rows_are_all_there);
     tcase_add_loop_test(tests, bins_add_up_to_their_arm, 0, COUNT(demos));
     tcase_add_loop_test(tests, backgrounds_are_in_order_and_have_sources, 0, COUNT(demos));
+    tcase_add_loop_test(tests, references_are_no_names_of_models, 0, COUNT(demos));
     tcase_add_test(tests, what_is_in_force_is_said);
     tcase_add_loop_test(tests, hours_add_up, 0, COUNT(demos));
     tcase_add_loop_test(tests, causes_add_up_in_quadrature, 0, COUNT(demos));

@@ -13,9 +13,19 @@ static bool is_other(const bh_line *l)
     return l->name && strncmp(l->name, "with ", 5) == 0;
 }
 
-/* Whether two lines say the same; values of factors differ from row to row. */
+/* "12C in layer 1 (kapton)": elastic events of background, each by its form factors. */
+static bool is_in_layer(const bh_line *l)
+{
+    return l->kind == BH_LINE_FACTOR && l->source && l->name && strstr(l->name, " in layer ") &&
+           !strstr(l->name, " on ");
+}
+
+/* Whether two lines say the same; values of factors differ from row to row, and form factors of
+ * background are told once a source. */
 static bool same_line(const bh_line *a, const bh_line *b)
 {
+    if (is_in_layer(a) && is_in_layer(b))
+        return strcmp(a->source, b->source) == 0;
     const char *va = a->value ? a->value : "", *vb = b->value ? b->value : "";
     return a->kind == b->kind && strcmp(a->name ? a->name : "", b->name ? b->name : "") == 0 &&
            (a->kind == BH_LINE_FACTOR || is_other(a) || strcmp(va, vb) == 0) &&

@@ -96,11 +96,13 @@ void bh_report_uncertainty(bh_reporting *x)
                                               {"in", "", false}};
     const size_t count = bh_causes_count(bh_table_causes(x->table));
     bh_paper_add(&x->w, BH_BLOCK_SECTION, "Uncertainties");
-    bh_paper_add(&x->w, BH_BLOCK_WORDS,
-                 "Systematic uncertainties are those that the plan writes behind its values, and "
-                 "those of the models; a value without one counts as exact. Another description of "
-                 "a nucleus shows the whole change that it would make; the budget has half the "
-                 "range of all of them.");
+    bh_paper_add(
+        &x->w, BH_BLOCK_WORDS,
+        "Systematic uncertainties are those that the plan writes behind its values, and "
+        "those of the models; a value without one counts as exact. Another description of "
+        "a nucleus shows the whole change that it would make; the budget has half the "
+        "range of all of them. What the radiative correction is uncertain by stands with its "
+        "model, and is not in these sums.");
     budget(x);
     bh_paper_table_open(&x->w,
                         "Every cause once, with the largest change of a signal rate for one "
