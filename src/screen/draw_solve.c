@@ -6,12 +6,13 @@
 #include "beamhours/base/number.h"
 #include "beamhours/screen/model.h"
 
-enum { OUTPUT, WANTED, INPUT, SOLUTIONS, NAMES = 8 };
+enum { OUTPUT, WANTED, INPUT, SOLUTIONS, NAMES = 8, ROOMY = 14 /* rows */ };
 
 struct page {
     const bh_model *model;
     bh_canvas *canvas;
     int row, columns;
+    bool tight; /* there are few rows */
 };
 
 static void name_line(const struct page *p, int line, const char *name)
@@ -57,11 +58,11 @@ static int wrapped(const struct page *p, bh_look look, const char *text, int mos
     return rows;
 }
 
-static void draw_solutions(struct page *p)
+static void draw_solutions(struct page *p, int last)
 {
     const bh_solving *s = &p->model->solving;
     const bh_column *column = bh_column_at((int)s->output);
-    for (size_t i = 0; i < s->answer.count; i++, p->row++) {
+    for (size_t i = 0; i < s->answer.count && p->row < last; i++, p->row++) {
         char number[BH_NUMBER_SIZE], line[240];
         const bool here = s->line == SOLUTIONS + (int)i || (s->line < SOLUTIONS && i == 0);
         (void)bh_number_digits(s->answer.solutions[i].output, 5, number, sizeof number);
@@ -77,14 +78,16 @@ static void draw_solutions(struct page *p)
 static void draw_answer(struct page *p, int last)
 {
     const bh_solving *s = &p->model->solving;
+    if (p->row >= last)
+        return;
     if (s->waiting || s->due) {
         (void)bh_canvas_put(p->canvas, (bh_spot){p->row, 1, p->columns - 1}, BH_LOOK_QUIET,
                             "being looked for \u2026");
         return;
     }
     if (s->answer.count)
-        draw_solutions(p);
-    p->row++;
+        draw_solutions(p, last);
+    p->row += !p->tight;
     p->row += wrapped(p, s->bad ? BH_LOOK_ERROR : BH_LOOK_PLAIN, s->said, last - p->row);
     if (s->answer.count && p->row < last)
         (void)bh_canvas_put(p->canvas, (bh_spot){p->row, 1, p->columns - 1}, BH_LOOK_QUIET,
@@ -97,7 +100,8 @@ void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_can
     const bh_column *column = bh_column_at((int)s->output);
     const int columns = places->plan_columns ? places->plan_columns : canvas->columns;
     const int last = places->body + places->body_rows;
-    struct page p = {model, canvas, places->body, columns};
+    const bool tight = places->body_rows < ROOMY; /* nothing but what is needed */
+    struct page p = {model, canvas, places->body, columns, tight};
     char text[160];
     for (int r = 0; r < places->body_rows; r++)
         bh_canvas_clear(canvas, (bh_spot){places->body + r, 0, columns});
@@ -105,8 +109,11 @@ void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_can
                         "WHAT WOULD IT TAKE");
     (void)snprintf(text, sizeof text, "%.60s%s%.60s", s->setting, s->arm[0] ? ", arm " : "",
                    s->arm);
-    (void)bh_canvas_put(canvas, (bh_spot){p.row, 1, columns - 1}, BH_LOOK_PLAIN, text);
-    p.row += 2;
+    if (!tight)
+        (void)bh_canvas_put(canvas, (bh_spot){p.row, 1, columns - 1}, BH_LOOK_PLAIN, text);
+    else
+        (void)bh_canvas_put_right(canvas, (bh_spot){p.row - 1, 0, columns}, BH_LOOK_PLAIN, text);
+    p.row += tight ? 0 : 2;
     (void)snprintf(text, sizeof text, "%s %s", column->heading,
                    strcmp(column->unit, "1") == 0 ? "" : column->unit);
     choice_line(&p, OUTPUT, "output", text);
@@ -120,6 +127,7 @@ void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_can
     p.row++;
     choice_line(&p, INPUT, "by", bh_solve_input_name((bh_solve_input)s->by));
     p.row++;
-    p.row += wrapped(&p, BH_LOOK_QUIET, bh_solve_input_meaning((bh_solve_input)s->by), 3) + 1;
+    if (!tight)
+        p.row += wrapped(&p, BH_LOOK_QUIET, bh_solve_input_meaning((bh_solve_input)s->by), 3) + 1;
     draw_answer(&p, last);
 }
