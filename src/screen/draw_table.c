@@ -278,6 +278,6 @@ void bh_draw_table(const bh_model *model, const bh_arrangement *places, bh_canva
         (void)bh_canvas_put(
             canvas, (bh_spot){places->body + 3, places->table_column, places->table_columns},
             BH_LOOK_QUIET,
-            bh_model_current(model) ? "no table: the plan has errors"
-                                    : "the table is being computed \u2026");
+            bh_model_current(model) || !model->edit ? "no table: the plan has errors"
+                                                    : "the table is being computed \u2026");
 }

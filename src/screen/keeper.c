@@ -4,6 +4,7 @@
 #include <errno.h>
 #include <stdio.h>
 #include <string.h>
+#include <sys/stat.h>
 #include <unistd.h>
 
 static const double write_after = 1.0, look_after = 1.0, again_after = 5.0; /* s */
@@ -25,6 +26,11 @@ static void drop_rescue(bh_keeper *keeper)
 
 bh_code bh_keeper_open(bh_keeper *keeper, const char *path, bh_text *into, bh_error *err)
 {
+    struct stat file;
+    if (stat(path, &file) == 0 && !S_ISREG(file.st_mode) && !S_ISDIR(file.st_mode)) {
+        (void)bh_fail(err, BH_EIO, "is a pipe or a device: nothing could be saved in it");
+        return bh_fail_at(err, BH_EIO, (bh_mark){.file = path});
+    }
     set_path(keeper, path);
     return bh_stamp_read(path, BH_DOCUMENT_LIMIT, into, &keeper->stamp, err);
 }
