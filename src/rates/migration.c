@@ -14,9 +14,9 @@ static const double furthest = 6;
  * much: what is that steep is no smooth density. */
 static const double steepest_cell = 30, steepest_sigma = 2;
 
-/* A cell that is narrower than this share of sigma is as good as one with all events in the middle.
- */
-static const double narrow = 0.4;
+/* Cells narrower than these shares of sigma are summed over three points, and over two: shares
+ * are then within 1e-8. */
+static const double narrow = 0.4, thin = 0.12;
 
 /* Below this change over a cell the closed form cancels and its series is exact. */
 static const double flat = 1e-4;
@@ -69,10 +69,10 @@ static double second_integral(double t)
 enum { POINTS = 3 };
 
 struct cell {
-    double from, to; /* [rad] */
-    double sigma;    /* [rad] */
-    double slope;    /* [1/rad] */
-    bool narrow;
+    double from, to;                   /* [rad] */
+    double sigma;                      /* [rad] */
+    double slope;                      /* [1/rad] */
+    int points;                        /* of a narrow one, else 0 */
     double at[POINTS], weight[POINTS]; /* [rad] [1] of a narrow one */
 };
 
@@ -99,11 +99,11 @@ static double below_steep(const struct cell *c, double edge)
     return (ends + moved) / (2 * sinh(s * half));
 }
 
-/* A cell no wider than the resolution by Gauss and Legendre's three points. */
+/* A cell narrower than the resolution by Gauss and Legendre's points. */
 static double below_points(const struct cell *c, double edge)
 {
     double sum = 0;
-    for (int i = 0; i < POINTS; i++)
+    for (int i = 0; i < c->points; i++)
         sum += c->weight[i] * below((edge - c->at[i]) / c->sigma);
     return sum;
 }
@@ -114,7 +114,7 @@ static double measured_below(const struct cell *c, double edge)
         return 1;
     if (edge <= c->from - furthest * c->sigma)
         return 0;
-    if (c->narrow)
+    if (c->points)
         return below_points(c, edge);
     const bool level = fabs(c->slope) * (c->to - c->from) < flat;
     const double share = level ? below_flat(c, edge) : below_steep(c, edge);
@@ -123,17 +123,19 @@ static double measured_below(const struct cell *c, double edge)
 
 static void set_points(struct cell *c)
 {
-    static const double node[POINTS] = {-0.774596669241483377, 0, 0.774596669241483377};
-    static const double share[POINTS] = {5, 8, 5};
+    static const double node[2][POINTS] = {{-0.577350269189625765, 0.577350269189625765},
+                                           {-0.774596669241483377, 0, 0.774596669241483377}};
+    static const double share[2][POINTS] = {{1, 1}, {5, 8, 5}};
     const double half = (c->to - c->from) / 2;
+    const bool three = 2 * half > thin * c->sigma || fabs(c->slope) * half > thin;
     double sum = 0;
-    c->narrow = 2 * half < narrow * c->sigma && fabs(c->slope) * half < 1;
-    for (int i = 0; c->narrow && i < POINTS; i++) {
-        c->at[i] = (c->from + c->to) / 2 + half * node[i];
-        c->weight[i] = share[i] * exp(c->slope * half * node[i]);
+    c->points = !(2 * half < narrow * c->sigma && fabs(c->slope) * half < 1) ? 0 : three ? 3 : 2;
+    for (int i = 0; i < c->points; i++) {
+        c->at[i] = (c->from + c->to) / 2 + half * node[three][i];
+        c->weight[i] = share[three][i] * exp(c->slope * half * node[three][i]);
         sum += c->weight[i];
     }
-    for (int i = 0; c->narrow && i < POINTS; i++)
+    for (int i = 0; i < c->points; i++)
         c->weight[i] /= sum;
 }
 
