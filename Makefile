@@ -1,6 +1,6 @@
 # Build, test, check.  `make help` lists the targets; `make V=1` shows the commands.  All that is made lands in build/.
 CC     ?= cc
-CFLAGS ?= -O2 -g
+CFLAGS ?= -O3 -g
 HARDEN ?= -U_FORTIFY_SOURCE -D_FORTIFY_SOURCE=3 -fstack-protector-strong
 BUILD  ?= build
 PKGS := gsl yaml-0.1 json-c

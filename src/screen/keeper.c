@@ -11,7 +11,7 @@ static const double write_after = 1.0, look_after = 1.0, again_after = 5.0; /* s
 
 static void set_path(bh_keeper *keeper, const char *path)
 {
-    (void)snprintf(keeper->path, sizeof keeper->path, "%s", path);
+    (void)snprintf(keeper->path, sizeof keeper->path, "%.*s", (int)sizeof keeper->path - 1, path);
     bh_rescue_free(keeper->rescue);
     keeper->rescue = bh_rescue_new(path);
     keeper->pending = -1;

@@ -19,8 +19,10 @@ typedef struct {
 
 static int read_row(char *line, row *out)
 {
-    char *field[11];
+    char *field[11], nothing[] = "";
     int n = 0;
+    for (int i = 0; i < 11; i++)
+        field[i] = nothing;
     for (size_t length; n < 11; n++, line += length + 1) {
         length = strcspn(line, ",\n");
         field[n] = line;

@@ -59,7 +59,7 @@ static bool left_out(const bh_selection *view, int column)
 void bh_report_rows_of(bh_reporting *x, const bh_selection *view, const char *caption,
                        const int *columns, size_t count)
 {
-    bh_paper_column heads[BH_COLUMN_COUNT];
+    bh_paper_column heads[BH_COLUMN_COUNT] = {{0}};
     bh_shown_column shown[BH_COLUMN_COUNT];
     char text[BH_CELL_SIZE];
     size_t n = 0;
