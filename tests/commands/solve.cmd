@@ -7,6 +7,9 @@ solve $plan low-1 hours=12min --by current
 solve $plan low-1 time=0.2 --by current --with 'settings.low-1.goal=0.4 %'
 solve $plan low-1 hours=0.2 --by thickness
 solve $plan low-1 rate=1kHz --by solid-angle
+# the nearest first; a unit written on both sides of the sign
+solve plans/lead.yaml scan.4 cross_section_ub_per_sr=2 --by angle 2>/dev/null
+solve plans/lead.yaml forward hours=0.01 --by current --with 'beam.current=2 uA ± 0.1 uA' 2>/dev/null
 solve $plan high-2 hours=1 --by energy
 solve $plan high-2 hours=1 --by energy --from 1.2GeV --to 1.5GeV
 solve $plan low-1 uncertainty=0.1% --by current

@@ -103,6 +103,7 @@ START_TEST(power_of_the_beam)
                 {1450, 0.0251, "Beam of up to 36.4 W:", "heats and activates"},
                 {80, 700, "Beam of up to 56.0 kW:", "melts"},
                 {2000, 1000, "Beam of up to 2.00 MW:", "melts"},
+                {855, 1e-4, "Beam of up to 85.5 mW:", "may activate"},
                 {855, 1e-6, "Beam of up to 855 uW:", "may activate"},
                 {1, 1e-9, "Beam of up to 1.00 nW:", "may activate"},
                 {1, 1e-12, "Beam of up to 0.00100 nW:", "may activate"}};

@@ -72,6 +72,22 @@ START_TEST(half_the_current_is_half_the_events)
 }
 END_TEST
 
+/* A target that thins by 1 % for each microampere has 90 % at 10 uA, 95 % at 5. */
+START_TEST(half_the_current_spares_the_target)
+{
+    struct asked a =
+        ask("plan: 1\nbeam: {particle: electron, kinetic_energy: 400 MeV, current: 10 "
+            "uA}\ntarget:\n  name: foil\n  layers: [{material: carbon-12, thickness: 1 "
+            "um, density_loss: 1 %/uA}]\n"
+            "arms: [{name: A, solid_angle: 2 msr, energy_cut: 10 MeV}]\n"
+            "settings: [{name: K, angle: 30 deg, time: 10 h}]\n");
+    const double more =
+        a.what[BH_IF_HALF_CURRENT].uncertainty[0] / number_in(&a, 0, BH_COL_STATISTICAL);
+    ck_assert_double_eq_tol(more, sqrt(2.0 * 0.90 / 0.95), 1e-4);
+    put_away(&a);
+}
+END_TEST
+
 /* With a goal they double. */
 START_TEST(goals_take_twice_as_long_at_half_the_current)
 {
@@ -166,6 +182,7 @@ START_TEST(a_day_less)
     const bh_what_if *w = &a.what[BH_IF_LOST_DAY];
     near(w->data_left, 59.5 * 0.8 / 60.0, "data");
     near(w->missing_hours, 85.0 + 24.0 - 93.5, "missing");
+    near(w->asked_hours, 93.5 + 24.0, "asked");
     ck_assert_uint_eq(w->drop_count, 1);
     put_away(&a);
 }
@@ -214,6 +231,7 @@ int main(void)
     TCase *tests = tcase_create("what_if");
     tcase_add_test(tests, as_planned_nothing_is_lost);
     tcase_add_test(tests, half_the_current_is_half_the_events);
+    tcase_add_test(tests, half_the_current_spares_the_target);
     tcase_add_test(tests, goals_take_twice_as_long_at_half_the_current);
     tcase_add_test(tests, twice_the_background_by_hand);
     tcase_add_test(tests, twice_the_background_passes_through_dead_time);
