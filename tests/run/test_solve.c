@@ -168,6 +168,49 @@ START_TEST(several_values_and_turns)
 }
 END_TEST
 
+/* Behind a minimum of carbon's form factor three angles give the same cross section. */
+START_TEST(the_nearest_first)
+{
+    bh_answer a;
+    bh_error err;
+    const bh_change change = {"settings.K1.angle", "62 deg"};
+    bh_question q = ask("K1", "angle", BH_COL_CROSS_SECTION, 1);
+    q.changes = &change;
+    q.change_count = 1;
+    ck_assert_int_eq(solve(&q, &a, &err), BH_OK);
+    q.wanted = 0.9 * a.output;
+    ck_assert_int_eq(solve(&q, &a, &err), BH_OK);
+    ck_assert_msg(a.count >= 2, "%zu", a.count);
+    double before = 0, least = 180, first = 0;
+    for (size_t i = 0; i < a.count; i++) {
+        double angle = 0;
+        ck_assert_int_eq(bh_number_parse(a.solutions[i].text, NULL, &angle), BH_OK);
+        ck_assert(fabs(angle - 62) >= before);
+        before = fabs(angle - 62);
+        least = fmin(least, angle);
+        first = i ? first : angle;
+    }
+    ck_assert(first > least); /* they would not come in this order by themselves */
+}
+END_TEST
+
+/* The unit may stand on both sides of the sign. */
+START_TEST(an_uncertainty_keeps_its_unit)
+{
+    bh_answer a;
+    bh_error err;
+    const bh_change change = {"beam.current", "2 uA ± 0.1 uA"};
+    bh_question q = ask("K1", "current", BH_COL_SIGNAL, 1);
+    q.changes = &change;
+    q.change_count = 1;
+    ck_assert_int_eq(solve(&q, &a, &err), BH_OK);
+    q.wanted = 2 * a.output;
+    ck_assert_int_eq(solve(&q, &a, &err), BH_OK);
+    ck_assert_uint_eq(a.count, 1);
+    ck_assert_str_eq(a.solutions[0].text, "4 uA ± 0.1 uA");
+}
+END_TEST
+
 START_TEST(none_is_said)
 {
     bh_answer a;
@@ -300,6 +343,8 @@ int main(void)
     (void)gsl_set_error_handler_off();
     tcase_add_loop_test(tests, the_value_is_the_one_that_does, 0, COUNT(rows));
     tcase_add_test(tests, several_values_and_turns);
+    tcase_add_test(tests, the_nearest_first);
+    tcase_add_test(tests, an_uncertainty_keeps_its_unit);
     tcase_add_test(tests, none_is_said);
     tcase_add_test(tests, questions_without_sense_are_refused);
     tcase_add_test(tests, it_can_be_cancelled);

@@ -113,7 +113,7 @@ static bool worth_it(const bh_figure *figure)
         const double y = figure->series[0].point[i].y;
         if (y <= 0.0)
             return false;
-        some += isfinite(y);
+        some += isfinite(y) ? 1 : 0;
     }
     return some > 2;
 }
