@@ -136,12 +136,12 @@ static double its_columns(void *asker, const char *text)
     return bh_text_columns(shown, *ascii);
 }
 
-/* A line below the curve from one angle [rad] to another. */
-static void underline(const struct plot *p, double from, double to, bh_look look, const char *with)
+/* A line below the curve over some angles [rad]. */
+static void underline(const struct plot *p, bh_interval angles, bh_look look, const char *with)
 {
     const double last = p->columns - 1;
-    const int first = (int)lrint(bh_axis_place(&p->x, from / BH_DEGREE) * last);
-    const int end = (int)lrint(bh_axis_place(&p->x, to / BH_DEGREE) * last);
+    const int first = (int)lrint(bh_axis_place(&p->x, angles.from / BH_DEGREE) * last);
+    const int end = (int)lrint(bh_axis_place(&p->x, angles.to / BH_DEGREE) * last);
     for (int c = first < 0 ? 0 : first; c <= end && c < p->columns; c++)
         (void)bh_canvas_put(p->canvas, (bh_spot){p->row + p->rows, p->column + c, 1}, look, with);
 }
@@ -153,10 +153,11 @@ static void show_acceptance(const struct plot *p, const bh_setting_arm *arm, int
     const bh_acceptance_spec spec = bh_arm_acceptance(arm);
     if (bh_acceptance_make(&spec, &a, NULL))
         return;
-    underline(p, fabs(a.whole.in_from), a.whole.in_to, here ? BH_LOOK_TITLE : BH_LOOK_QUIET,
-              here ? "\u2594" : "-");
+    underline(p, (bh_interval){fabs(a.whole.in_from), a.whole.in_to},
+              here ? BH_LOOK_TITLE : BH_LOOK_QUIET, here ? "\u2594" : "-");
     if (bin > 0 && bin <= a.bins)
-        underline(p, fabs(bh_acceptance_edge(&a, bin - 1)), bh_acceptance_edge(&a, bin),
+        underline(p,
+                  (bh_interval){fabs(bh_acceptance_edge(&a, bin - 1)), bh_acceptance_edge(&a, bin)},
                   BH_LOOK_FOCUS, "\u2580");
 }
 
