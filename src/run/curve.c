@@ -1,5 +1,5 @@
 /* curve.c - a plan of as many settings as there are points, evaluated in one go. */
-#include "beamhours/run/curve.h"
+#include "beamhours/run/curve_parts.h"
 
 #include <math.h>
 #include <stdio.h>
@@ -15,36 +15,7 @@
 #include "beamhours/units/constants.h"
 #include "beamhours/units/nuclide.h"
 
-enum { POINTS = 61, MOST_POINTS = 481, MEV2_PER_GEV2 = 1000000 };
-
-enum { LONGEST_NAME = 64 };
-
-struct bh_curve {
-    char model[LONGEST_NAME];   /* "": no structure of one nuclide */
-    double known[2];            /* [GeV2] */
-    bh_structure_choice choice; /* of the struck nuclide, where the caller names a model */
-    bool slices;                /* of a ring */
-    size_t count;
-    double x[MOST_POINTS];
-    char *marks[MOST_POINTS];
-    bh_setting settings[MOST_POINTS];
-    bh_setting_arm arms[MOST_POINTS];
-    bh_plan plan;
-    bh_table *table;
-};
-
-/* What the points start from. */
-struct origin {
-    const bh_setting *setting;
-    const bh_setting_arm *arm;
-    const bh_nuclide *nuclide;
-    bh_collision collision;
-    double q2;   /* [MeV^2] at the arm's angle; NAN where there is none */
-    bool recoil; /* the arm detects the recoil */
-    bool slices; /* of a ring */
-    bool centre; /* of the arm alone */
-    bh_against against;
-};
+enum { POINTS = 61 };
 
 const char *bh_curve_key(bh_against against)
 {
@@ -91,7 +62,7 @@ static const bh_nuclide *struck(const bh_target *t)
     return found;
 }
 
-static bh_code start(const bh_plan *plan, const bh_curve_request *r, struct origin *o,
+static bh_code start(const bh_plan *plan, const bh_curve_request *r, bh_curve_origin *o,
                      bh_error *err)
 {
     o->setting = find_setting(plan, r->setting, err);
@@ -132,7 +103,7 @@ static double inner_reach(const bh_arm *arm)
     return 0.0;
 }
 
-static void angle_limits(const struct origin *o, double *lo, double *hi)
+static void angle_limits(const bh_curve_origin *o, double *lo, double *hi)
 {
     const bh_arm *arm = &o->arm->arm;
     const double reach = inner_reach(arm) + 1e-3;
@@ -147,7 +118,7 @@ static void angle_limits(const struct origin *o, double *lo, double *hi)
     *hi = fmin(*hi, fmin(most, BH_PI) - (most < BH_PI ? reach : 0.0));
 }
 
-static void limits(const struct origin *o, double *lo, double *hi)
+static void limits(const bh_curve_origin *o, double *lo, double *hi)
 {
     double a = 0.0, b = 0.0;
     switch (o->against) {
@@ -171,7 +142,7 @@ static void limits(const struct origin *o, double *lo, double *hi)
 }
 
 /* What is known at x; the beam's angle or energy follows. */
-static bh_known known_at(const struct origin *o, double x)
+static bh_known known_at(const bh_curve_origin *o, double x)
 {
     bh_known k = {NAN, NAN, NAN, NAN, o->recoil};
     if (o->against == BH_AGAINST_ANGLE || o->against == BH_AGAINST_Q2)
@@ -199,7 +170,7 @@ static void set_energy(bh_setting *s, double kinetic)
 }
 
 /* Adds the point at x where there is an event and the arm can stand there. */
-static void add_point(bh_curve *c, const struct origin *o, double x)
+static void add_point(bh_curve *c, const bh_curve_origin *o, double x)
 {
     bh_setting s = *o->setting;
     bh_setting_arm a = *o->arm;
@@ -235,90 +206,12 @@ static void add_point(bh_curve *c, const struct origin *o, double x)
     c->count++;
 }
 
-/* --- marks --- */
-
-static bool near(double a, double b)
-{
-    return fabs(a - b) <= 1e-6 * fabs(b);
-}
-
-/* The point closest to `x`, in the curve's own variable; count where that is outside the curve. */
-static size_t closest(const bh_curve *c, double x)
-{
-    size_t best = 0;
-    for (size_t i = 1; i < c->count; i++)
-        if (fabs(c->x[i] - x) < fabs(c->x[best] - x))
-            best = i;
-    /* energies stand wider apart the higher they are */
-    const size_t beside = best ? best - 1 : 1;
-    const double step = c->count > 1 ? fabs(c->x[best] - c->x[beside]) : 0.0;
-    return fabs(c->x[best] - x) <= step ? best : c->count;
-}
-
-/* Whether the acceptance of `a` covers the angle at which the arm stands at point `at`. */
-static bool covers(const bh_curve *c, const bh_setting_arm *a, size_t at)
-{
-    const double angle = c->arms[at].angle.value, off = angle - a->angle.value;
-    if (a->arm.shape == BH_SHAPE_RING)
-        return angle >= a->arm.ring.from && angle <= a->arm.ring.to;
-    return a->arm.shape == BH_SHAPE_RECTANGLE && off >= a->arm.in_plane.from &&
-           off <= a->arm.in_plane.to;
-}
-
-/* Whether arm `a` of setting `s` lies on the curve, and there at point `at`: it must agree in what
- * the curve keeps (energy, angle or Q2); where the angle moves its acceptance is marked too. */
-static bool arm_stands_at(const bh_curve *c, const struct origin *o, const bh_setting *s,
-                          const bh_setting_arm *a, size_t at)
-{
-    const double energy = s->beam.kinetic_energy.value;
-    const bh_known known = {energy, a->angle.value, NAN, NAN, o->recoil};
-    bh_event e;
-    double kinetic = 0.0;
-    if (o->against == BH_AGAINST_ENERGY)
-        return near(a->angle.value, o->arm->angle.value) && closest(c, energy) == at;
-    if (bh_event_search(&o->collision, &known, &kinetic, &e, NULL))
-        return false;
-    if (o->against == BH_AGAINST_EPSILON)
-        return near(e.q2, o->q2) && closest(c, e.epsilon) == at;
-    if (!near(energy, o->collision.kinetic))
-        return false;
-    const double x =
-        o->against == BH_AGAINST_ANGLE ? a->angle.value / BH_DEGREE : e.q2 / MEV2_PER_GEV2;
-    return covers(c, a, at) || closest(c, x) == at;
-}
-
-static bool stands_at(const bh_curve *c, const struct origin *o, const bh_setting *s, size_t at)
-{
-    if (s->beam.particle.mass < o->collision.mass || s->beam.particle.mass > o->collision.mass)
-        return false;
-    for (size_t k = 0; k < s->arm_count; k++)
-        if (strcmp(s->arms[k].arm.name.text, o->arm->arm.name.text) == 0 &&
-            arm_stands_at(c, o, s, &s->arms[k], at))
-            return true;
-    return false;
-}
-
-static bool mark(bh_curve *c, const bh_plan *plan, const struct origin *o)
-{
-    for (size_t i = 0; i < c->count; i++) {
-        bh_text names = {0};
-        for (size_t s = 0; s < plan->setting_count; s++)
-            if (stands_at(c, o, &plan->settings[s], i))
-                bh_text_appendf(&names, "%s%s", names.length ? " " : "", plan->settings[s].name);
-        bh_text_append(&names, "");
-        c->marks[i] = bh_text_take(&names);
-        if (!c->marks[i])
-            return false;
-    }
-    return true;
-}
-
 /* --- all of it --- */
 
-static void add_points(bh_curve *c, const struct origin *o, int wanted)
+static void add_points(bh_curve *c, const bh_curve_origin *o, int wanted)
 {
     double lo = 0.0, hi = 0.0;
-    const int points = wanted < 2 ? POINTS : wanted > MOST_POINTS ? MOST_POINTS : wanted;
+    const int points = wanted < 2 ? POINTS : wanted > BH_CURVE_MOST ? BH_CURVE_MOST : wanted;
     limits(o, &lo, &hi);
     for (int i = 0; i < points && hi > lo; i++)
         add_point(c, o, i == points - 1 ? hi : lo + (hi - lo) * i / (points - 1));
@@ -326,7 +219,7 @@ static void add_points(bh_curve *c, const struct origin *o, int wanted)
 
 /* The model of the struck nuclide, and how far it is known. */
 static bh_code name_model(bh_curve *c, const bh_plan *plan, const bh_curve_request *r,
-                          const struct origin *o, bh_error *err)
+                          const bh_curve_origin *o, bh_error *err)
 {
     if (!o->nuclide)
         return BH_OK;
@@ -343,7 +236,7 @@ static bh_code name_model(bh_curve *c, const bh_plan *plan, const bh_curve_reque
 }
 
 static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request *r,
-                        const struct origin *o, bh_error *err)
+                        const bh_curve_origin *o, bh_error *err)
 {
     if (name_model(c, plan, r, o, err))
         return err->code;
@@ -363,12 +256,13 @@ static bh_code evaluate(bh_curve *c, const bh_plan *plan, const bh_curve_request
     c->table = bh_table_new(&c->plan, &how, NULL, err);
     if (!c->table)
         return err->code;
-    return mark(c, plan, o) ? BH_OK : bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    return bh_curve_mark(c, plan, o) ? BH_OK
+                                     : bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
 }
 
 bh_curve *bh_curve_new(const bh_plan *plan, const bh_curve_request *request, bh_error *err)
 {
-    struct origin o = {0};
+    bh_curve_origin o = {0};
     bh_error unseen = {.code = BH_OK};
     err = err ? err : &unseen;
     if (start(plan, request, &o, err))
