@@ -5,9 +5,9 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "beamhours/screen/drawing_parts.h"
 #include "beamhours/screen/inquiry.h"
 #include "beamhours/screen/keeper.h"
-#include "beamhours/screen/model.h"
 
 enum { MOST_VIEW = 256, MOST_OPEN = 256 };
 

@@ -4,7 +4,7 @@
 
 #include "beamhours/base/number.h"
 #include "beamhours/schema/reading.h"
-#include "beamhours/screen/model.h"
+#include "beamhours/screen/drawing_parts.h"
 
 enum { MOST_SAID = 4 /* rows of one sentence */ };
 

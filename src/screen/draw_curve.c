@@ -5,7 +5,7 @@
 #include <string.h>
 
 #include "beamhours/base/ticks.h"
-#include "beamhours/screen/model.h"
+#include "beamhours/screen/drawing_parts.h"
 #include "beamhours/units/constants.h"
 
 enum { MOST_WIDE = 240, MOST_HIGH = 64, LABEL = 9 };

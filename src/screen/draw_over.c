@@ -3,6 +3,7 @@
 #include <string.h>
 
 #include "beamhours/screen/choices.h"
+#include "beamhours/screen/drawing_parts.h"
 
 static void clear_body(const bh_arrangement *places, bh_canvas *canvas, int from, int rows)
 {

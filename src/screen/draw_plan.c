@@ -3,7 +3,7 @@
 #include <string.h>
 
 #include "beamhours/document/trail.h"
-#include "beamhours/screen/model.h"
+#include "beamhours/screen/drawing_parts.h"
 
 enum { KEY_COLUMNS = 16 };
 

@@ -4,7 +4,7 @@
 #include <string.h>
 
 #include "beamhours/base/number.h"
-#include "beamhours/screen/model.h"
+#include "beamhours/screen/drawing_parts.h"
 
 enum { OUTPUT, WANTED, INPUT, SOLUTIONS, NAMES = 8, ROOMY = 14 /* rows */ };
 

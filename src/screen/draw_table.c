@@ -4,7 +4,7 @@
 #include <string.h>
 
 #include "beamhours/base/number.h"
-#include "beamhours/screen/model.h"
+#include "beamhours/screen/drawing_parts.h"
 
 /* --- which columns stand where --- */
 

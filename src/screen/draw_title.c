@@ -4,7 +4,7 @@
 #include <string.h>
 
 #include "beamhours/schema/reading.h"
-#include "beamhours/screen/model.h"
+#include "beamhours/screen/drawing_parts.h"
 
 static void append_quantity(bh_text *into, double value, bh_dimension dimension)
 {

@@ -391,14 +391,4 @@ typedef struct {
 void bh_place_columns(const bh_model *model, const bh_arrangement *places, bh_column_places *out);
 int bh_table_column_at(const bh_model *model, int column); /* -1: none */
 
-/* --- draw.c and its like --- */
-void bh_draw(const bh_model *model, bh_canvas *canvas);
-void bh_draw_title(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
-void bh_draw_plan(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
-void bh_draw_table(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
-void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
-void bh_draw_over(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
-void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas);
-void bh_draw_field(bh_canvas *canvas, bh_spot spot, const bh_field *field);
-
 #endif
