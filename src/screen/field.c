@@ -123,19 +123,20 @@ static void go_row(bh_field *f, bool down)
 static bool press_in_lines(bh_field *f, const bh_press *press)
 {
     size_t length = 0;
-    const size_t at = bh_field_at(f);
-    (void)bh_field_row(f, at, &length);
     switch (press->kind) {
     case BH_PRESS_UP:
     case BH_PRESS_DOWN:
         go_row(f, press->kind == BH_PRESS_DOWN);
         return true;
     case BH_PRESS_HOME:
-        f->cursor = at;
+        f->cursor = bh_field_at(f);
         return true;
-    case BH_PRESS_END:
+    case BH_PRESS_END: {
+        const size_t at = bh_field_at(f);
+        (void)bh_field_row(f, at, &length);
         f->cursor = at + length;
         return true;
+    }
     case BH_PRESS_TAB:
         put_in(f, '\n');
         return true;
