@@ -109,7 +109,7 @@ SCREENS := $(filter %/test_terminal %/test_safety %/test_suspend %/test_disk,$(c
 valgrind-screen: $(BUILD)/beamhours $(BUILD)/tests/terminal/test_terminal ## a session on the terminal screen under valgrind
 	@rm -rf $(GRIND_LOGS) && mkdir -p $(GRIND_LOGS) && bad=0; \
 	 PATIENCE=300 TTY_UNDER='$(GRIND) --log-file=$(GRIND_LOGS)/%p.log' $(BUILD)/tests/terminal/test_terminal || bad=1; \
-	 find $(GRIND_LOGS) -size +0 -exec cat {} +; exit $$bad
+	 find $(GRIND_LOGS) -type f -size +0 -exec cat {} +; exit $$bad
 enduring: all $(SCREENS)                                 ## the tests of the terminal screen ENDURE times (50) in a row, every processor busy
 	@sh tests/terminal/endure.sh '$(or $(ENDURE),50)' $(SCREENS)
 coverage:                                                ## lines of src/ that the tests reach
