@@ -58,7 +58,7 @@ static void read_cell(const tty *t, const char *name, const char *heading, char 
 static void cell_of(tty *t, const char *name, const char *heading, char out[32])
 {
     read_cell(t, name, heading, out);
-    for (int i = 0; i < 600 && !out[0]; i++) {
+    for (int i = 0; i < 600 && (!out[0] || out[0] == '?'); i++) { /* ?: not computed yet */
         tty_pump(t, 100);
         read_cell(t, name, heading, out);
     }
