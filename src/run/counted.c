@@ -140,10 +140,10 @@ static bh_counted_value *place_of(bh_counted *c, double angle)
     return &c->kept[(bits * 0x9e3779b97f4a7c15u >> 40) % BH_COUNTED_KEPT];
 }
 
-/* How the momentum follows the beam's at the outermost depths; between them it is linear in the
- * beam's energy to 1e-4 of itself. */
+/* How the momentum follows the beam's at the outermost depths; between them, as loss and scattering
+ * do, by a power of the beam's energy. */
 struct following {
-    double first, slope; /* [MeV/c] [1/c] */
+    double first, power; /* [MeV/c] [1] */
     double kinetic;      /* [MeV] of the first */
 };
 
@@ -151,13 +151,14 @@ static void set_following(const bh_counted *c, double angle, struct following *f
 {
     const bh_taken taken = taken_of(c);
     const bh_vertex *first = &c->vertices[0], *last = &c->vertices[c->count - 1];
-    const double apart = last->kinetic[c->boost] - first->kinetic[c->boost];
+    const double change = log(last->kinetic[c->boost] / first->kinetic[c->boost]);
     *f = (struct following){.kinetic = first->kinetic[c->boost]};
     if (!(c->taking.rms.beam > 0))
         return;
     f->first = bh_taken_per_beam(&taken, first, angle);
-    if (apart != 0)
-        f->slope = (bh_taken_per_beam(&taken, last, angle) - f->first) / apart;
+    const double ratio = bh_taken_per_beam(&taken, last, angle) / f->first;
+    if (change != 0 && f->first > 0 && ratio > 0)
+        f->power = log(ratio) / change;
 }
 
 /* Kinetic energy of a particle of `mass` and `momentum`. */
@@ -176,6 +177,7 @@ struct batch {
 
 static void add_vertex(const bh_counted *c, const bh_vertex *v, const struct batch *b)
 {
+    const bh_taken taken = taken_of(c);
     double sigma[BATCH], momentum[BATCH];
     bh_channel there = c->channel;
     there.encounter.kinetic = v->kinetic[c->boost];
@@ -185,9 +187,9 @@ static void add_vertex(const bh_counted *c, const bh_vertex *v, const struct bat
             continue;
         const double kinetic = kinetic_of(c->taking.mass, momentum[i]);
         const struct following *f = &b->f[i];
-        const bh_arriver arriver = {
-            .kinetic = c->leaver ? bh_leaver_left(c->leaver, v, b->theta[i], kinetic) : kinetic,
-            .per_beam = f->first + f->slope * (v->kinetic[c->boost] - f->kinetic)};
+        const double grown = f->power != 0 ? pow(v->kinetic[c->boost] / f->kinetic, f->power) : 1;
+        const bh_arriver arriver =
+            bh_taken_arriver(&taken, v, b->theta[i], kinetic, f->first * grown);
         b->value[i] +=
             v->weight * sigma[i] * (bh_taking_share(&c->taking, &arriver) + BH_COUNTED_LEAST);
     }

@@ -69,15 +69,32 @@ double bh_taken_per_beam(const bh_taken *t, const bh_vertex *v, double angle)
     return isnan(slope) ? 0 : slope;
 }
 
+/* The slower of two particles loses more: what their momenta differ by grows on the way out. */
+bh_arriver bh_taken_arriver(const bh_taken *t, const bh_vertex *v, double angle, double kinetic,
+                            double per_beam)
+{
+    static const double step = 2e-4; /* [1] of the energy */
+    const double mass = t->taking->mass, above = kinetic * (1 + step);
+    bh_arriver a = {.kinetic = kinetic, .per_beam = per_beam};
+    if (!t->leaver)
+        return a;
+    a.kinetic = bh_leaver_left(t->leaver, v, angle, kinetic);
+    if (per_beam == 0 || !(a.kinetic > 0) || !t->leaver->way->losing)
+        return a;
+    const double left = bh_leaver_left(t->leaver, v, angle, above);
+    const double apart = bh_bite_momentum(mass, left) - bh_bite_momentum(mass, a.kinetic);
+    if (left > 0) /* else the ranges end here */
+        a.per_beam *= apart / (bh_bite_momentum(mass, above) - bh_bite_momentum(mass, kinetic));
+    return a;
+}
+
 static bh_arriver arriver_at(const bh_taken *t, const bh_vertex *v, double angle)
 {
     bh_event event;
     if (!scattered(t, v->kinetic[t->boost], angle, &event))
         return (bh_arriver){.kinetic = 0};
     const double kinetic = t->channel->recoil ? event.recoil_kinetic : event.scattered_kinetic;
-    return (bh_arriver){.kinetic =
-                            t->leaver ? bh_leaver_left(t->leaver, v, angle, kinetic) : kinetic,
-                        .per_beam = bh_taken_per_beam(t, v, angle)};
+    return bh_taken_arriver(t, v, angle, kinetic, bh_taken_per_beam(t, v, angle));
 }
 
 double bh_taken_share(const bh_taken *taken, const bh_vertex *vertex, double angle)

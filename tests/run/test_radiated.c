@@ -28,6 +28,10 @@ struct scene {
     "    - {material: aluminium, thickness: 0.1 mm, role: window}\n" \
     "    - {material: liquid-hydrogen, thickness: 100 mm}\n"         \
     "    - {material: aluminium, thickness: 0.2 mm, role: window}\n  scatterer: H\n"
+#define SLOW "particle: electron, total_energy: 100 MeV, current: 10 uA"
+#define RADIATOR                                                \
+    "    - {material: gold, thickness: 0.3 mm, role: window}\n" \
+    "    - {material: carbon-12, areal_density: 1 ug/cm2}\n  scatterer: 12C\n"
 #define FOIL "    - {material: carbon-12, areal_density: 1 ug/cm2}\n"
 
 static struct scene *set_scene(const char *text, int z, int a)
@@ -251,17 +255,21 @@ START_TEST(between_two_edges)
 }
 END_TEST
 
-/* The hard tail goes on where the soft photons end. */
+/* The hard tail goes on where the soft photons end: photons of the nucleus, and most of all those
+ * from the matter before it. */
 START_TEST(soft_and_hard_tail_meet)
 {
     static const struct {
         const char *plan;
         int z, a;
+        double low, high; /* [MeV] lost, soft and hard */
         double tolerance;
-    } rows[] = {{PLAN(ELECTRONS, CELL), 1, 1, 0.05}, {PLAN(ELECTRONS, FOIL), 6, 12, 0.08}};
+    } rows[] = {{PLAN(ELECTRONS, CELL), 1, 1, 6, 7, 0.05},
+                {PLAN(ELECTRONS, FOIL), 6, 12, 6, 7, 0.08},
+                {PLAN(SLOW, RADIATOR), 6, 12, 1.5, 1.8, 0.05}};
     for (int r = 0; r < COUNT(rows); r++) {
         struct scene *s = set_scene(rows[r].plan, rows[r].z, rows[r].a);
-        const double angle = 30 * BH_DEGREE, low = 6, high = 7;
+        const double angle = 30 * BH_DEGREE, low = rows[r].low, high = rows[r].high;
         double sigma, momentum;
         bh_radiated_detail below, above;
         s->request.gate.cut = low;

@@ -194,7 +194,7 @@ START_TEST(the_nearest_first)
 }
 END_TEST
 
-/* The unit may stand on both sides of the sign. */
+/* The unit may stand on both sides of the sign, and ends of the range have units of their own. */
 START_TEST(an_uncertainty_keeps_its_unit)
 {
     bh_answer a;
@@ -205,9 +205,13 @@ START_TEST(an_uncertainty_keeps_its_unit)
     q.change_count = 1;
     ck_assert_int_eq(solve(&q, &a, &err), BH_OK);
     q.wanted = 2 * a.output;
-    ck_assert_int_eq(solve(&q, &a, &err), BH_OK);
+    q.from = "500 nA";
+    q.to = "0.01 mA";
+    ck_assert_msg(solve(&q, &a, &err) == BH_OK, "%s", err.text);
     ck_assert_uint_eq(a.count, 1);
     ck_assert_str_eq(a.solutions[0].text, "4 uA ± 0.1 uA");
+    ck_assert_str_eq(a.from, "0.5 uA ± 0.1 uA");
+    ck_assert_str_eq(a.to, "10 uA ± 0.1 uA");
 }
 END_TEST
 

@@ -78,6 +78,35 @@ START_TEST(a_trace_adds_what_it_is)
 }
 END_TEST
 
+/* From a thousandth of the rate on a rare isotope has its part in the sensitivities.  The arm opens
+ * just below the largest angle of alphas on protons, far below that on deuterons: much of the rate
+ * of hydrogen is beyond reach, and what is left follows the momentum as deuterium's does. */
+START_TEST(a_trace_of_a_thousandth_is_none)
+{
+    static const char form[] =
+        "plan: 1\nmodels: {energy_loss: none}\nbeam: {particle: alpha, kinetic_energy: 4 MeV, "
+        "current: 10 nA}\ntarget: {layers: [{material: liquid-hydrogen, thickness: 1 um}], "
+        "scatterer: %s}\narms: [{name: A, in_plane: {from: 0.2 mrad, to: 200 mrad}, out_of_plane: "
+        "±5 mrad}]\nsettings: [{name: K, angle: 14.54 deg, time: 1 h}]\n";
+    static const char *const of[] = {"H", "1H", "2H"};
+    double rate[3], per_permille[3];
+    for (int i = 0; i < 3; i++) {
+        char text[1024];
+        snprintf(text, sizeof text, form, of[i]);
+        struct evaluated e = evaluate(text);
+        rate[i] = cell(&e, 0, BH_COL_SIGNAL);
+        per_permille[i] = cell(&e, 0, BH_COL_PER_PERMILLE);
+        done(&e);
+    }
+    ck_assert_double_gt(rate[2] / rate[1], 1.0e-3);
+    ck_assert_double_lt(rate[2] / rate[1], 1.5e-3);
+    ck_assert_relative(rate[0], rate[1] + rate[2], 1e-8, "both are the sum of each");
+    ck_assert_relative(per_permille[0] * rate[0],
+                       per_permille[1] * rate[1] + per_permille[2] * rate[2], 1e-4,
+                       "changes of rates add");
+}
+END_TEST
+
 /* --- kinematic columns --- */
 
 /* Electron of 1 GeV at 30 deg on the proton, massless to 1e-6: closed form at 30 digits. */
@@ -381,6 +410,7 @@ int main(void)
 {
     TCase *tests = tcase_create("yield");
     tcase_add_loop_test(tests, a_trace_adds_what_it_is, 0, 2);
+    tcase_add_test(tests, a_trace_of_a_thousandth_is_none);
     tcase_add_loop_test(tests, sensitivity_of_a_viewed_target, 0, COUNT(views));
     tcase_add_test(tests, a_row_has_the_event_at_its_axis);
     tcase_add_test(tests, a_threshold_is_an_energy);

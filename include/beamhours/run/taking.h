@@ -25,7 +25,7 @@ bh_momentum_rms bh_taking_rms(const bh_arm *arm, const bh_beam *beam);
 /* A particle that arrives. */
 typedef struct {
     double kinetic;  /* [MeV] at the detector; 0: it has stopped */
-    double per_beam; /* [MeV/c] p_beam dp/dp_beam of its momentum at this angle */
+    double per_beam; /* [MeV/c] p_beam dp/dp_beam of its momentum at this angle, as it arrives */
 } bh_arriver;
 
 /* Returns [1] the probability that it is counted. */
@@ -47,9 +47,14 @@ typedef struct {
  * 0 where there is no such event. */
 double bh_taken_share(const bh_taken *taken, const bh_vertex *vertex, double angle);
 
-/* Returns [MeV/c] per_beam of the particle scattered at `vertex` to angle [rad]; 0 where the beam
- * has no spread or there is no such event. */
+/* Returns [MeV/c] per_beam of the particle as it is scattered at `vertex` to angle [rad]; 0 where
+ * the beam has no spread or there is no such event. */
 double bh_taken_per_beam(const bh_taken *taken, const bh_vertex *vertex, double angle);
+
+/* Returns the particle that leaves `vertex` at angle [rad] with kinetic [MeV] and per_beam [MeV/c],
+ * as it arrives; per_beam [MeV/c] to 1e-3. */
+bh_arriver bh_taken_arriver(const bh_taken *taken, const bh_vertex *vertex, double angle,
+                            double kinetic, double per_beam);
 
 /* Returns [1] how many standard deviations the momenta from two vertices arrive apart at
  * angle [rad]. */
