@@ -103,12 +103,13 @@ valgrind:                                                ## the tests under valg
 valgrind-demo: all                                       ## the main job under valgrind: the demonstrations' tables, one explained row
 	@for c in $(patsubst %,'table --bins %',$(wildcard plans/*.yaml)) 'explain plans/hydrogen-separation.yaml low-1'; do \
 	 $(GRIND) $(BUILD)/beamhours $$c >$(BUILD)/valgrind.out 2>&1 || { cat $(BUILD)/valgrind.out; exit 1; }; done
-# A program below the pseudo-terminal says into a file what it finds, and ends with status 99.
+# A program below the pseudo-terminal says into a file what it finds, and ends with status 99.  Its threads
+# take turns: else one that computes lets the one that minds the keys wait for minutes on a busy machine.
 GRIND_LOGS := $(abspath $(BUILD))/grind
 SCREENS := $(filter %/test_terminal %/test_safety %/test_suspend %/test_disk,$(call bin,$(TESTS)))
 valgrind-screen: $(BUILD)/beamhours $(BUILD)/tests/terminal/test_terminal ## a session on the terminal screen under valgrind
 	@rm -rf $(GRIND_LOGS) && mkdir -p $(GRIND_LOGS) && bad=0; \
-	 PATIENCE=300 TTY_UNDER='$(GRIND) --log-file=$(GRIND_LOGS)/%p.log' $(BUILD)/tests/terminal/test_terminal || bad=1; \
+	 PATIENCE=300 TTY_UNDER='$(GRIND) --fair-sched=yes --log-file=$(GRIND_LOGS)/%p.log' $(BUILD)/tests/terminal/test_terminal || bad=1; \
 	 find $(GRIND_LOGS) -type f -size +0 -exec cat {} +; exit $$bad
 enduring: all $(SCREENS)                                 ## the tests of the terminal screen ENDURE times (50) in a row, every processor busy
 	@sh tests/terminal/endure.sh '$(or $(ENDURE),50)' $(SCREENS)

@@ -83,9 +83,7 @@ static void file_has(const tty *t, const char *name, const char *text)
 
 static void wait_for_file(tty *t, const char *name)
 {
-    for (int i = 0; i < 600 && !tty_exists(t, name); i++)
-        tty_pump(t, 100);
-    ck_assert_msg(tty_exists(t, name), "%s did not come", name);
+    tty_until(t, tty_exists(t, name));
 }
 
 /* Nothing is left behind of a save that failed: no file whose name ends in ~. */
@@ -261,7 +259,7 @@ END_TEST
 int main(void)
 {
     TCase *tests = tcase_create("disk");
-    tcase_set_timeout(tests, 600);
+    tcase_set_timeout(tests, tty_limit());
     tcase_add_loop_test(tests, a_step_of_a_save_fails, 0, COUNT(steps));
     tcase_add_test(tests, the_folder_cannot_be_synced);
     tcase_add_loop_test(tests, unsaved_work_cannot_be_kept, 0, 5);

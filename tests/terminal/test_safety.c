@@ -53,9 +53,7 @@ static void file_has(const tty *t, const char *name, const char *text)
 
 static void wait_for_file(tty *t, const char *name)
 {
-    for (int i = 0; i < 600 && !tty_exists(t, name); i++)
-        tty_pump(t, 100);
-    ck_assert_msg(tty_exists(t, name), "%s did not come", name);
+    tty_until(t, tty_exists(t, name));
 }
 
 /* The program is gone, the folder stays: as another day. */
@@ -339,7 +337,7 @@ static int kills(void)
 int main(void)
 {
     TCase *tests = tcase_create("safety");
-    tcase_set_timeout(tests, 600);
+    tcase_set_timeout(tests, tty_limit());
     tcase_add_test(tests, changed_on_disk);
     tcase_add_test(tests, taken_away);
     tcase_add_test(tests, leaving_unsaved);

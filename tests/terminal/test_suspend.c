@@ -15,12 +15,9 @@
 /* Waits until the terminal is as the screen needs it, or as a shell does. */
 static void wait_modes(tty *t, bool screen)
 {
-    for (int i = 0; i < 3000; i++) {
-        if (t->other == screen && t->mice == screen && tty_cooked(t) != screen)
-            return;
-        tty_pump(t, 20);
-    }
-    ck_abort_msg("other screen %d, mouse %d, cooked %d", t->other, t->mice, tty_cooked(t));
+    tty_until(t, t->other == screen);
+    tty_until(t, t->mice == screen);
+    tty_until(t, tty_cooked(t) != screen);
 }
 
 /* The shell says which process the program is before it becomes it. */
@@ -214,7 +211,7 @@ END_TEST
 int main(void)
 {
     TCase *tests = tcase_create("suspend");
-    tcase_set_timeout(tests, 600);
+    tcase_set_timeout(tests, tty_limit());
     tcase_add_loop_test(tests, gives_the_terminal_back, 0, 2);
     tcase_add_test(tests, keeps_what_is_typed);
     tcase_add_test(tests, survives_a_stop_without_warning);

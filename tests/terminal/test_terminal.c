@@ -55,25 +55,27 @@ static void read_cell(const tty *t, const char *name, const char *heading, char 
     }
 }
 
-static void cell_of(tty *t, const char *name, const char *heading, char out[32])
+static bool is_known(tty *t, const char *name, const char *heading, char out[32])
 {
     read_cell(t, name, heading, out);
-    for (int i = 0; i < 600 && (!out[0] || out[0] == '?'); i++) { /* ?: not computed yet */
-        tty_pump(t, 100);
-        read_cell(t, name, heading, out);
-    }
-    ck_assert_msg(out[0] != '\0', "no %s of %s", heading, name);
+    return out[0] && out[0] != '?'; /* ?: not computed yet */
+}
+
+static void cell_of(tty *t, const char *name, const char *heading, char out[32])
+{
+    tty_until(t, is_known(t, name, heading, out));
+}
+
+static bool has_cell(tty *t, const char *name, const char *heading, const char *wanted)
+{
+    char got[32];
+    read_cell(t, name, heading, got);
+    return strcmp(got, wanted) == 0;
 }
 
 static void wait_cell(tty *t, const char *name, const char *heading, const char *wanted)
 {
-    char got[32];
-    cell_of(t, name, heading, got);
-    for (int i = 0; i < 600 && strcmp(got, wanted) != 0; i++) {
-        tty_pump(t, 100);
-        read_cell(t, name, heading, got);
-    }
-    ck_assert_str_eq(got, wanted);
+    tty_until(t, has_cell(t, name, heading, wanted));
 }
 
 /* To a line of the plan by a word in it. */
@@ -367,13 +369,15 @@ START_TEST(no_colours)
 {
     tty t;
     begin(&t);
-    ck_assert(coloured(&t) && reversed(&t, ">plan"));
+    tty_until(&t, coloured(&t) && reversed(&t, ">plan"));
     leave(&t);
     begin_with(&t, &(tty_start){.environment = "NO_COLOR=1", .arguments = {"plan.yaml"}});
-    ck_assert(!coloured(&t) && reversed(&t, ">plan"));
+    tty_until(&t, reversed(&t, ">plan"));
+    ck_assert(!coloured(&t));
     leave(&t);
     begin_with(&t, &(tty_start){.term = "vt100", .arguments = {"plan.yaml"}});
-    ck_assert(!coloured(&t) && reversed(&t, ">plan"));
+    tty_until(&t, reversed(&t, ">plan"));
+    ck_assert(!coloured(&t));
     leave(&t);
 }
 END_TEST
@@ -510,7 +514,7 @@ END_TEST
 int main(void)
 {
     TCase *tests = tcase_create("terminal");
-    tcase_set_timeout(tests, 600);
+    tcase_set_timeout(tests, tty_limit());
     tcase_add_test(tests, edits_live_and_saves);
     tcase_add_test(tests, says_what_is_wrong);
     tcase_add_test(tests, takes_back_and_does_again);

@@ -360,6 +360,19 @@ static void give_up(const tty *t, const char *what, const char *text)
     ck_abort_msg("%s \"%s\"%s:\n%s", what, text, t->ended ? " (the program ended)" : "", all.bytes);
 }
 
+void tty_more(tty *t, double *since, const char *what)
+{
+    *since = *since < 0 ? now() : *since;
+    if (now() - *since > patience() || t->ended)
+        give_up(t, "this never held:", what);
+    tty_pump(t, 100);
+}
+
+double tty_limit(void)
+{
+    return 10 * patience();
+}
+
 void tty_wait(tty *t, const char *text)
 {
     const double start = now();

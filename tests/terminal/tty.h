@@ -56,6 +56,17 @@ void tty_size(tty *t, int rows, int columns);
 void tty_wait(tty *t, const char *text);
 void tty_wait_row(tty *t, int row, const char *text);
 void tty_wait_gone(tty *t, const char *text);
+/* Takes in what comes until the condition holds; fails as the waits above do. */
+#define tty_until(t, condition)               \
+    do {                                      \
+        double since_ = -1;                   \
+        while (!(condition))                  \
+            tty_more(t, &since_, #condition); \
+    } while (0)
+/* A step of it; `since` is -1 at first [s]. */
+void tty_more(tty *t, double *since, const char *what);
+/* How long one test may take: many waits [s]. */
+double tty_limit(void);
 /* Whether the terminal hands on whole lines and shows what is typed, as a shell leaves it. */
 bool tty_cooked(const tty *t);
 
