@@ -277,10 +277,10 @@ void bh_draw_field(bh_canvas *canvas, bh_spot spot, const bh_field *field)
     int cursor = bh_text_columns(before, canvas->ascii);
     const char *text = field->bytes;
     while (cursor > room && *text) { /* the end is what is typed */
-        text += bh_text_fit(text, 1) ? bh_text_fit(text, 1) : bh_text_fit(text, 2);
-        (void)snprintf(before, sizeof before, "%.*s",
-                       (int)(field->cursor - (size_t)(text - field->bytes)), text);
-        cursor = bh_text_columns(before, canvas->ascii);
+        const size_t one = bh_text_fit(text, 1), first = one ? one : bh_text_fit(text, 2);
+        (void)snprintf(before, sizeof before, "%.*s", (int)first, text);
+        cursor -= bh_text_columns(before, canvas->ascii);
+        text += first;
     }
     bh_canvas_clear(canvas, spot);
     bh_canvas_paint(canvas, spot, BH_LOOK_FIELD);

@@ -16,6 +16,7 @@
 
 #include "beamhours/screen/alarm.h"
 #include "beamhours/screen/clock.h"
+#include "beamhours/screen/pasting.h"
 
 /* Keys of our own, above those of curses. */
 enum { PASTE_BEGINS = KEY_MAX + 1, PASTE_ENDS };
@@ -28,8 +29,8 @@ struct terminal {
     attr_t looks[BH_LOOK_COUNT];
     short pairs[BH_LOOK_COUNT];
     bool blank[BH_LOOK_COUNT]; /* the look does not show on a blank */
-    bool drawn, pasting;
-    double pasted; /* [s] when a key last came */
+    bool drawn;
+    bh_pasting pasting;
 };
 
 /* --- looks --- */
@@ -268,19 +269,13 @@ static bh_press key_press(wint_t code)
     return (bh_press){.kind = BH_PRESS_NOTHING};
 }
 
-/* What is pasted comes between marks; one that lacks its end is over when nothing came for long. */
 static bh_press press_of(struct terminal *t, int kind, wint_t code)
 {
-    const double time = bh_clock_now(), gap = time - t->pasted;
-    t->pasted = time;
-    if (kind == KEY_CODE_YES && (code == PASTE_BEGINS || code == PASTE_ENDS)) {
-        t->pasting = code == PASTE_BEGINS;
-        return (bh_press){.kind = t->pasting ? BH_PRESS_NOTHING : BH_PRESS_PASTED};
-    }
-    t->pasting = t->pasting && gap < 2;
-    if (kind == KEY_CODE_YES)
-        return key_press(t->pasting ? 0 : code);
-    return t->pasting ? bh_press_pasted((uint32_t)code) : bh_press_of((uint32_t)code);
+    if (kind != KEY_CODE_YES)
+        return bh_pasting_take(&t->pasting, (uint32_t)code, bh_clock_now());
+    if (code == PASTE_BEGINS || code == PASTE_ENDS)
+        return bh_pasting_mark(&t->pasting, code == PASTE_BEGINS, bh_clock_now());
+    return key_press(t->pasting.on ? 0 : code);
 }
 
 /* All keys that are there; false when the terminal is gone. */
@@ -316,6 +311,7 @@ struct loop {
 static bool wait_for_more(struct loop *l, double most)
 {
     struct pollfd from[] = {{STDIN_FILENO, POLLIN, 0}, {bh_desk_wake(l->t->desk), POLLIN, 0}};
+    most = bh_pasting_wait(&l->t->pasting, most);
     const struct timespec limit = bh_clock_span(most < 0 ? 0 : most);
     const int n = ppoll(from, 2, most < 0 ? NULL : &limit, &l->during);
     if (n < 0)
@@ -326,6 +322,12 @@ static bool wait_for_more(struct loop *l, double most)
     if (n > 0 && (from[0].revents & (POLLIN | POLLHUP | POLLERR)) && !read_keys(l->t, &some) &&
         (from[0].revents & (POLLHUP | POLLERR)))
         return false;
+    if (n == 0) {
+        const bh_press press = bh_pasting_rest(&l->t->pasting, bh_clock_now());
+        some = press.kind != BH_PRESS_NOTHING;
+        if (some)
+            bh_desk_press(l->t->desk, &press, bh_clock_now());
+    }
     if (some && !l->dirty) {
         l->dirty = true;
         l->since = bh_clock_now();

@@ -5,6 +5,7 @@
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
+#include <time.h>
 
 #include "beamhours/base/text.h"
 #include "tty.h"
@@ -494,6 +495,54 @@ START_TEST(pastes)
 }
 END_TEST
 
+/* The marks around what is pasted come in pieces, as on a slow line, or the last one not at all. */
+START_TEST(pastes_in_pieces)
+{
+    tty t;
+    begin(&t);
+    look_for(&t, "current");
+    tty_type(&t, "<Enter><Rubout><Rubout><Rubout><Rubout>");
+    tty_wait(&t, "[  ");
+    tty_type(&t, "<Escape>[200~4 u");
+    tty_wait(&t, "[4 u ");
+    tty_type(&t, "A<Escape>[2");
+    tty_wait(&t, "[4 uA ");
+    tty_pump(&t, 100); /* or the mark might come in one piece */
+    tty_type(&t, "01~<Enter>");
+    tty_wait_row(&t, 0, "1 unsaved");
+    tty_type(&t, "<Enter><Rubout><Rubout><Rubout><Rubout>");
+    tty_wait(&t, "[  ");
+    tty_type(&t, "<Escape>[200~5 uA\rq");
+    tty_wait(&t, "[5 uA q ");
+    tty_wait(&t, "unknown unit 'q'"); /* it is tried out, and keys are keys again */
+    tty_type(&t, "<Rubout><Rubout><Enter>");
+    tty_wait_row(&t, 0, "2 unsaved");
+    save(&t);
+    file_has(&t, "current: 5 uA\n");
+    leave(&t);
+}
+END_TEST
+
+/* What waits to be read while the program is busy for long is still pasted. */
+START_TEST(pastes_to_a_busy_program)
+{
+    tty t;
+    const struct timespec busy = {2, 200000000};
+    begin(&t);
+    look_for(&t, "current");
+    tty_type(&t, "<Enter><Rubout><Rubout><Rubout><Rubout><Escape>[200~4 u");
+    tty_wait(&t, "[4 u ");
+    ck_assert_int_eq(kill(t.child, SIGSTOP), 0);
+    tty_type(&t, "A\rqw");
+    nanosleep(&busy, NULL);
+    ck_assert_int_eq(kill(t.child, SIGCONT), 0);
+    tty_wait(&t, "[4 uA qw ");
+    tty_type(&t, "<Escape>[201~<Escape>");
+    tty_wait_gone(&t, "[4 uA");
+    leave(&t);
+}
+END_TEST
+
 START_TEST(begins_without_a_plan)
 {
     tty t;
@@ -529,6 +578,8 @@ int main(void)
     tcase_add_test(tests, what_it_would_take);
     tcase_add_test(tests, texts_have_lines);
     tcase_add_test(tests, pastes);
+    tcase_add_test(tests, pastes_in_pieces);
+    tcase_add_test(tests, pastes_to_a_busy_program);
     tcase_add_test(tests, begins_without_a_plan);
     return run_suite("terminal", tests);
 }
