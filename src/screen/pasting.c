@@ -23,7 +23,9 @@ bh_press bh_pasting_take(bh_pasting *pasting, uint32_t code, double now)
         pasting->came = code == (uint32_t)end[0];
     if (!end[pasting->came])
         return bh_pasting_mark(pasting, false, now);
-    return pasting->came ? (bh_press){.kind = BH_PRESS_NOTHING} : bh_press_pasted(code);
+    if (pasting->came)
+        return (bh_press){.kind = BH_PRESS_NOTHING};
+    return bh_press_pasted(code);
 }
 
 bh_press bh_pasting_rest(bh_pasting *pasting, double now)
