@@ -226,36 +226,6 @@ START_TEST(the_end_is_told)
 }
 END_TEST
 
-/* A plan that may not be written says so when it is saved, and goes elsewhere. */
-START_TEST(a_plan_only_to_be_read)
-{
-    tty t;
-    char path[256];
-    tty_folder(&t, "hydrogen-separation");
-    snprintf(path, sizeof path, "%s/plan.yaml", t.folder);
-    ck_assert_int_eq(chmod(path, 0444), 0);
-    if (access(path, W_OK) == 0) {
-        puts("terminal/disk: a plan only to be read: skipped, this user may write everything");
-        tty_end(&t);
-        return;
-    }
-    tty_run(&t, &(tty_start){.arguments = {"plan.yaml"}});
-    tty_wait(&t, "asked");
-    tty_type(&t, "<Home>lcurrent<Escape>");
-    tty_wait_gone(&t, "look for");
-    set_current(&t, "4 uA");
-    tty_type(&t, "s");
-    tty_wait(&t, "NOT SAVED  plan.yaml: ");
-    tty_type(&t, "n");
-    tty_wait(&t, "save as");
-    tty_type(&t, "<Home>my-<Enter>");
-    tty_wait(&t, "saved in my-plan.yaml");
-    file_has(&t, "my-plan.yaml", "current: 4 uA\n");
-    file_has(&t, "plan.yaml", "current: 2 uA\n");
-    leave(&t);
-}
-END_TEST
-
 int main(void)
 {
     TCase *tests = tcase_create("disk");
@@ -264,6 +234,5 @@ int main(void)
     tcase_add_test(tests, the_folder_cannot_be_synced);
     tcase_add_loop_test(tests, unsaved_work_cannot_be_kept, 0, 5);
     tcase_add_loop_test(tests, the_end_is_told, 0, 2);
-    tcase_add_test(tests, a_plan_only_to_be_read);
     return run_suite("terminal/disk", tests);
 }

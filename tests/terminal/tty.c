@@ -4,13 +4,16 @@
 
 #include <errno.h>
 #include <fcntl.h>
+#include <grp.h>
 #include <poll.h>
 #include <pty.h>
+#include <sched.h>
 #include <signal.h>
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 #include <sys/ioctl.h>
+#include <sys/mount.h>
 #include <sys/stat.h>
 #include <sys/wait.h>
 #include <termios.h>
@@ -92,6 +95,53 @@ void tty_folder(tty *t, const char *demo)
     free(text);
 }
 
+/* --- the user --- */
+
+enum { NOBODY = 65534 };
+
+/* Of no rights but those of everybody. */
+static bool become_ordinary(void)
+{
+    return geteuid() != 0 ||
+           (setgroups(0, NULL) == 0 && setgid(NOBODY) == 0 && setuid(NOBODY) == 0);
+}
+
+/* For this process alone the folder is one that may only be read. */
+static bool seal(const char *folder)
+{
+    const unsigned long again = MS_REMOUNT | MS_BIND | MS_RDONLY;
+    return unshare(CLONE_NEWNS) == 0 && mount(NULL, "/", NULL, MS_REC | MS_PRIVATE, NULL) == 0 &&
+           mount(folder, folder, NULL, MS_BIND, NULL) == 0 &&
+           mount(NULL, folder, NULL, again, NULL) == 0;
+}
+
+static void find_program(char out[1200]);
+
+bool tty_binds(bool sealed)
+{
+    char program[1200];
+    int status = -1;
+    find_program(program);
+    const pid_t child = fork();
+    if (child == 0)
+        _exit((!sealed || (geteuid() == 0 && seal("/tmp"))) && become_ordinary() &&
+                      access(program, R_OK | X_OK) == 0
+                  ? 0
+                  : 1);
+    ck_assert_int_eq(waitpid(child, &status, 0), child);
+    return status == 0;
+}
+
+/* Its folder is theirs. */
+static void give(const tty *t)
+{
+    char command[200];
+    if (geteuid() != 0)
+        return;
+    snprintf(command, sizeof command, "chown -R %d:%d %s", NOBODY, NOBODY, t->folder);
+    ck_assert_int_eq(system(command), 0);
+}
+
 /* --- the program --- */
 
 /* build/ of build/tests/terminal/test_x, and the folder it was called from. */
@@ -129,7 +179,8 @@ static void become(const tty *t, const tty_start *how)
         putenv(own);
     for (int i = 0; i < 3 && how->further[i]; i++)
         putenv(strdup(how->further[i]));
-    if (chdir(t->folder) != 0)
+    if ((how->sealed && !seal(t->folder)) || (how->ordinary && !become_ordinary()) ||
+        chdir(t->folder) != 0)
         _exit(126);
     if (how->shell) {
         setenv("PROGRAM", program, 1);
@@ -185,6 +236,8 @@ void tty_run(tty *t, const tty_start *how)
     vterm_screen_reset(t->screen, 1);
     const struct winsize size = {.ws_row = (unsigned short)t->rows,
                                  .ws_col = (unsigned short)t->columns};
+    if (how->ordinary)
+        give(t);
     t->child = forkpty(&t->master, NULL, NULL, &size);
     ck_assert_int_ge(t->child, 0);
     if (t->child == 0)

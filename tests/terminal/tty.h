@@ -30,8 +30,10 @@ typedef struct {
     const char *further[3];                  /* and more of them */
     int rows, columns;
     const char *arguments[6]; /* behind `edit` */
-    bool shell;               /* a shell with job control instead: its prompt is "ready> ", and
-                                 "$PROGRAM" is the program */
+    bool ordinary; /* by a user whom rights bind: another one where the tests are run by root */
+    bool sealed;   /* its folder lies on a file system that may only be read, for root's tests */
+    bool shell;    /* a shell with job control instead: its prompt is "ready> ", and
+                      "$PROGRAM" is the program */
 } tty_start;
 
 /* A new folder with a copy of a plan of plans/, called plan.yaml (NULL: none). */
@@ -40,6 +42,9 @@ void tty_folder(tty *t, const char *demo);
 void tty_write(const tty *t, const char *name, const char *text);
 char *tty_read(const tty *t, const char *name);
 bool tty_exists(const tty *t, const char *name);
+
+/* Whether a test may start it as an ordinary user, and below a sealed folder. */
+bool tty_binds(bool sealed);
 
 void tty_run(tty *t, const tty_start *how);
 /* Kills what still runs and takes the folder away. */
