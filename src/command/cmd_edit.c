@@ -4,6 +4,7 @@
 #include <stdlib.h>
 #include <string.h>
 #include <sysexits.h>
+#include <unistd.h>
 #ifdef __GLIBC__
 #include <malloc.h>
 #endif
@@ -62,14 +63,24 @@ static void tell_kept(bh_desk *desk)
                 strerror(errno)); /* NOLINT(concurrency-mt-unsafe): this thread alone */
 }
 
+/* Where there is one, it is what TERM says that cannot do it. */
+static void need_terminal(void)
+{
+    const char *name = getenv("TERM"); /* NOLINT(concurrency-mt-unsafe): nothing changes it */
+    fputs("beamhours: edit: needs a terminal that can place its cursor and set text off", stderr);
+    if (isatty(STDIN_FILENO) && isatty(STDOUT_FILENO) && name && name[0])
+        fprintf(stderr, ", and TERM is %.60s", name);
+    else if (isatty(STDIN_FILENO) && isatty(STDOUT_FILENO))
+        fputs(", and TERM is not set", stderr);
+    fputs("; `beamhours table` works without\n", stderr);
+}
+
 static int show(bh_desk *desk)
 {
     int number = 0;
     switch (bh_terminal_run(desk, &number)) {
     case BH_TERMINAL_NONE:
-        fputs("beamhours: edit: needs a terminal that can place its cursor; `beamhours table` "
-              "works without\n",
-              stderr);
+        need_terminal();
         return EX_UNAVAILABLE;
     case BH_TERMINAL_SIGNAL:
         tell_kept(desk);

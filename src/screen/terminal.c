@@ -1,6 +1,5 @@
 /* terminal.c - the only file that talks to a terminal: keys in, cells out, signals. */
-/* ppoll; wide characters of curses */
-#define _GNU_SOURCE 1 /* NOLINT */
+#define _GNU_SOURCE 1 /* NOLINT: ppoll; wide characters of curses */
 #include "beamhours/screen/terminal.h"
 
 #include <curses.h>
@@ -40,13 +39,12 @@ struct terminal {
 static void set_looks(struct terminal *t)
 {
     static const attr_t plain[BH_LOOK_COUNT] = {
-        [BH_LOOK_TITLE] = A_BOLD,       [BH_LOOK_FOCUS] = A_REVERSE | A_BOLD,
-        [BH_LOOK_CURSOR] = A_UNDERLINE, [BH_LOOK_FIELD] = A_UNDERLINE,
-        [BH_LOOK_TRIAL] = A_BOLD,       [BH_LOOK_CHANGED] = A_BOLD,
-        [BH_LOOK_STALE] = A_DIM,        [BH_LOOK_QUIET] = A_NORMAL,
-        [BH_LOOK_WARNING] = A_NORMAL,   [BH_LOOK_ERROR] = A_BOLD,
-        [BH_LOOK_CAUTION] = A_BOLD,     [BH_LOOK_KEY] = A_BOLD};
+        [BH_LOOK_TITLE] = A_BOLD,   [BH_LOOK_CURSOR] = A_UNDERLINE, [BH_LOOK_FIELD] = A_UNDERLINE,
+        [BH_LOOK_TRIAL] = A_BOLD,   [BH_LOOK_CHANGED] = A_BOLD,     [BH_LOOK_STALE] = A_DIM,
+        [BH_LOOK_QUIET] = A_NORMAL, [BH_LOOK_WARNING] = A_NORMAL,   [BH_LOOK_ERROR] = A_BOLD,
+        [BH_LOOK_CAUTION] = A_BOLD, [BH_LOOK_KEY] = A_BOLD};
     memcpy(t->looks, plain, sizeof plain);
+    t->looks[BH_LOOK_FOCUS] = termattrs() & A_REVERSE ? A_REVERSE | A_BOLD : A_STANDOUT;
     const char *refused = getenv("NO_COLOR");
     if (!has_colors() || start_color() == ERR || (refused && refused[0]))
         return;
@@ -124,7 +122,7 @@ static void leave_screen(void)
 static void find_blank(struct terminal *t)
 {
     for (int i = 0; i < BH_LOOK_COUNT; i++)
-        t->blank[i] = (t->looks[i] & (A_REVERSE | A_UNDERLINE)) == 0;
+        t->blank[i] = (t->looks[i] & (A_REVERSE | A_STANDOUT | A_UNDERLINE)) == 0;
 }
 
 static bool begin(struct terminal *t)
@@ -135,7 +133,7 @@ static bool begin(struct terminal *t)
     bh_alarm_catch();
     const char *name = getenv("TERM");
     t->screen = name && strcmp(name, "dumb") != 0 ? newterm(NULL, stdout, stdin) : NULL;
-    if (!t->screen || !capability("cup"))
+    if (!t->screen || !capability("cup") || !(termattrs() & (A_REVERSE | A_STANDOUT)))
         return false;
     keep_way_back(&before);
     set_modes();
