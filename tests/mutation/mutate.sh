@@ -27,7 +27,7 @@ try() { # try NUMBER FILE
     fi
     for program in $(programs "$2"); do
         $CC $COMPILE -pie -Wl,-s -o "$new.test" "$program.o" "$new.o" "$build/front.a" "$build/libbeamhours.a" $LINKS || exit 255
-        timeout 60 "$new.test" >"$new.said" 2>&1 || { echo "$1	noticed by $(basename "$program")"; return; }
+        timeout 300 "$new.test" >"$new.said" 2>&1 || { echo "$1	noticed by $(basename "$program")"; return; }
     done
     echo "$1	survives"
 }

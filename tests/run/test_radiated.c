@@ -32,6 +32,9 @@ struct scene {
 #define RADIATOR                                                \
     "    - {material: gold, thickness: 0.3 mm, role: window}\n" \
     "    - {material: carbon-12, areal_density: 1 ug/cm2}\n  scatterer: 12C\n"
+#define BEHIND                                                  \
+    "    - {material: hydrogen-gas, areal_density: 1 ug/cm2}\n" \
+    "    - {material: gold, thickness: 0.2 mm, role: window}\n  scatterer: H\n"
 #define FOIL "    - {material: carbon-12, areal_density: 1 ug/cm2}\n"
 
 static struct scene *set_scene(const char *text, int z, int a)
@@ -285,6 +288,33 @@ START_TEST(soft_and_hard_tail_meet)
 }
 END_TEST
 
+/* Matter behind adds photons of its own, of the whole range of energies: with complete screening
+ * b t (1 - v + 3 v^2 / 4) dk / k of an electron that has k / v before, times v^(b t) / Gamma(1 + b
+ * t) for further ones (Tsai, Rev. Mod. Phys. 46 (1974) 815); loops as below. */
+START_TEST(matter_behind_radiates)
+{
+    static const double share[] = {0.05, 0.2, 0.4, 0.6};
+    struct scene *s = set_scene(PLAN(ELECTRONS, BEHIND), 1, 1);
+    const double angle = 30 * BH_DEGREE, line = line_at(s, angle);
+    double sigma, momentum, soft;
+    bh_channel_eval(&s->request.channel, 1, &angle, &sigma, &momentum);
+    for (int i = 0; i < COUNT(share); i++) {
+        const double v = share[i], lost = v * line, kinetic = line - lost;
+        const double thick = bh_way_after(&s->way, &s->vertices[0], angle).soft;
+        s->request.count = 1;
+        const double with = bh_elastic_tail(&s->request, angle, lost, lost * 1.001);
+        s->request.count = 0;
+        const double without = bh_elastic_tail(&s->request, angle, lost, lost * 1.001);
+        bh_radiative_tail_soft(&s->request.channel.encounter, angle, 1, &kinetic, &soft);
+        const double added = sigma * soft * thick * (1 - v + 0.75 * v * v) * 0.001;
+        ck_assert_double_gt(added, 0.3 * without);
+        const double further = pow(v, thick) / tgamma(1 + thick);
+        ck_assert_relative(with, 1.035 * (without + added) * further, 0.04, "photons behind");
+    }
+    leave(s);
+}
+END_TEST
+
 /* Without matter, against the lowest order exactly (Mo & Tsai 1969) times the same soft photons;
  * loops and vertices make up for the 5 % more. */
 START_TEST(hard_tail_against_the_exact_one)
@@ -345,6 +375,7 @@ int main(void)
     tcase_add_test(t, idle_where_nothing_radiates);
     tcase_add_test(t, between_two_edges);
     tcase_add_test(t, soft_and_hard_tail_meet);
+    tcase_add_test(t, matter_behind_radiates);
     tcase_add_test(t, hard_tail_against_the_exact_one);
     tcase_add_test(t, muon_tail_is_the_exact_one);
     return run_suite("radiated", t);
