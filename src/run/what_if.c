@@ -117,18 +117,30 @@ static bh_code without(const struct asking *a, const struct trial *t, size_t gon
     return rest_of(a, t, hours, err);
 }
 
+/* [h] of the calendar by which a setting that comes back makes the rest longer at least: with one
+ * more between them two settings take no fewer changes and tasks. */
+static double at_least(const struct worse *w, size_t setting)
+{
+    return (w->hours[setting].full + w->hours[setting].empty) / availability(w->plan);
+}
+
 /* Takes those back that need not go: one that stood alone between two changes may save more than
  * the longer ones before it.  The shortest comes back first. */
 static bh_code take_back(const struct asking *a, const struct trial *t, bh_what_if *out,
                          bh_error *err)
 {
-    double hours = 0.0;
+    const double granted = a->granted * slack;
+    double without_it = 0.0, with_it = 0.0;
     size_t kept = 0;
-    bh_code bad = without(a, t, out->drop_count, &hours, err);
+    bh_code bad = without(a, t, out->drop_count, &without_it, err);
     for (size_t i = out->drop_count; !bad && i-- > 0;) {
-        t->gone[t->order[i]] = false;
-        bad = rest_of(a, t, &hours, err);
-        t->gone[t->order[i]] = hours > a->granted * slack;
+        const size_t setting = t->order[i];
+        if (without_it + at_least(t->worse, setting) > granted * slack)
+            continue;
+        t->gone[setting] = false;
+        bad = rest_of(a, t, &with_it, err);
+        t->gone[setting] = with_it > granted;
+        without_it = t->gone[setting] ? without_it : with_it;
     }
     for (size_t i = 0; i < out->drop_count; i++)
         if (t->gone[t->order[i]])

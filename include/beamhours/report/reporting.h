@@ -19,6 +19,7 @@ typedef struct {
     const bh_totals *totals;
     bh_selection view; /* arms, in plan order */
     bh_selection bins; /* of the arms that have several */
+    bool one_arm;      /* all rows are of the same */
     bh_stretch *hours; /* of each setting */
     bh_time_detail time;
     bh_what_if what_if[BH_IF_COUNT];

@@ -37,9 +37,7 @@ const char *bh_report_row_name(bh_reporting *x, size_t row)
 {
     const char *setting = bh_selection_text(&x->view, row, BH_COL_SETTING);
     const char *arm = bh_selection_text(&x->view, row, BH_COL_ARM);
-    return bh_prefix_constant(&x->view, BH_COL_ARM) || !arm
-               ? setting
-               : bh_paper_text(&x->w, "%s, %s", setting, arm);
+    return x->one_arm || !arm ? setting : bh_paper_text(&x->w, "%s, %s", setting, arm);
 }
 
 static bool is_empty(const bh_selection *view, int column)
@@ -145,6 +143,7 @@ static bh_code prepare(bh_reporting *x, bh_error *err)
     const bh_selection_request all = {.bins = false};
     bh_code bad = bh_selection_new(x->table, &all, &x->view, err);
     bad = bad ? bad : find_bins(x, err);
+    x->one_arm = !bad && bh_prefix_constant(&x->view, BH_COL_ARM);
     x->hours = bh_arena_take(x->w.arena, x->plan->setting_count + 1, sizeof *x->hours);
     if (!bad && !x->hours)
         bad = bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));

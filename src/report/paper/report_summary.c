@@ -3,6 +3,7 @@
 #include <string.h>
 
 #include "beamhours/base/number.h"
+#include "beamhours/report/alike.h"
 #include "beamhours/report/input_words.h"
 #include "beamhours/report/prefix.h"
 #include "beamhours/report/reporting.h"
@@ -61,20 +62,46 @@ static const char *range(bh_reporting *x, int column)
                                   : bh_paper_text(&x->w, "%s to %s %s", low, high, c.unit);
 }
 
+/* Rows in the order of kinds, and the first of each. */
+struct kinds {
+    bh_alike *rows;
+    const bh_alike **heads;
+    size_t count, kind_count;
+};
+
+static void sort_kinds(bh_reporting *x, struct kinds *k, bh_alike_order *order)
+{
+    k->heads = bh_arena_take(x->w.arena, k->count + 1, sizeof *k->heads);
+    x->w.failed = x->w.failed || !k->heads || !bh_alike_sort(k->rows, k->count, order);
+    if (!x->w.failed)
+        k->kind_count = bh_alike_heads(k->rows, k->count, order, k->heads);
+}
+
+static struct kinds room_for(bh_reporting *x)
+{
+    struct kinds k = {bh_arena_take(x->w.arena, x->view.row_count + 1, sizeof *k.rows), NULL, 0, 0};
+    x->w.failed = x->w.failed || !k.rows;
+    return k;
+}
+
+static int by_name(const void *a, const void *b)
+{
+    return strcmp(a, b);
+}
+
 /* The different texts of a column, with commas. */
 static const char *names(bh_reporting *x, int column)
 {
     bh_text t = {0};
-    for (size_t i = 0; i < x->view.row_count; i++) {
+    struct kinds k = room_for(x);
+    for (size_t i = 0; k.rows && i < x->view.row_count; i++) {
         const char *name = bh_selection_text(&x->view, i, column);
-        bool seen = !name;
-        for (size_t k = 0; k < i && !seen; k++) {
-            const char *other = bh_selection_text(&x->view, k, column);
-            seen = other && strcmp(other, name) == 0;
-        }
-        if (!seen)
-            bh_text_appendf(&t, "%s%s", t.length ? ", " : "", name);
+        if (name)
+            k.rows[k.count++] = (bh_alike){name, i};
     }
+    sort_kinds(x, &k, by_name);
+    for (size_t i = 0; i < k.kind_count; i++)
+        bh_text_appendf(&t, "%s%s", i ? ", " : "", (const char *)k.heads[i]->what);
     return bh_paper_keep(&x->w, &t);
 }
 
@@ -96,10 +123,14 @@ static const bh_setting_arm *arm_of(const bh_reporting *x, size_t row)
     return &x->plan->settings[p.setting].arms[p.arm];
 }
 
-static bool same_wish(const bh_setting_arm *a, const bh_setting_arm *b)
+static int by_wish(const void *a, const void *b)
 {
-    return a->want == b->want && a->each_bin == b->each_bin &&
-           !(fabs(a->wanted.value - b->wanted.value) > 0.0);
+    const bh_setting_arm *p = a, *q = b;
+    if (p->want != q->want)
+        return p->want < q->want ? -1 : 1;
+    if (p->each_bin != q->each_bin)
+        return p->each_bin ? 1 : -1;
+    return (p->wanted.value > q->wanted.value) - (p->wanted.value < q->wanted.value);
 }
 
 /* The number as it would be written: five digits at most, no closing zeros. */
@@ -128,14 +159,14 @@ static void wish(const bh_setting_arm *a, bh_text *t)
                     a->each_bin && a->want == BH_WANT_GOAL ? " of each bin" : "");
 }
 
-/* The rows from `from` on that have the same wish. */
-static void wish_in(bh_reporting *x, size_t from, bh_text *t)
+/* The rows that have the same wish as the first of them, up to `end`. */
+static void wish_in(bh_reporting *x, const bh_alike *first, const bh_alike *end, bh_text *t)
 {
     enum { NAMED = 8 };
     size_t count = 0;
-    for (size_t k = from; k < x->view.row_count; k++)
-        if (same_wish(arm_of(x, k), arm_of(x, from)) && ++count <= NAMED)
-            bh_text_appendf(t, "%s%s", count > 1 ? "; " : " in ", bh_report_row_name(x, k));
+    for (const bh_alike *r = first; r < end && by_wish(r->what, first->what) == 0; r++)
+        if (++count <= NAMED)
+            bh_text_appendf(t, "%s%s", count > 1 ? "; " : " in ", bh_report_row_name(x, r->row));
     if (count > NAMED)
         bh_text_appendf(t, " and %zu more", count - NAMED);
 }
@@ -144,16 +175,15 @@ static void wish_in(bh_reporting *x, size_t from, bh_text *t)
 static const char *wishes(bh_reporting *x)
 {
     bh_text t = {0};
-    for (size_t i = 0; i < x->view.row_count; i++) {
-        const bh_setting_arm *a = arm_of(x, i);
-        size_t first = 0;
-        while (first < i && !same_wish(arm_of(x, first), a))
-            first++;
-        if (first < i || a->want == BH_WANT_NOTHING)
-            continue;
+    struct kinds k = room_for(x);
+    for (size_t i = 0; k.rows && i < x->view.row_count; i++)
+        if (arm_of(x, i)->want != BH_WANT_NOTHING)
+            k.rows[k.count++] = (bh_alike){arm_of(x, i), i};
+    sort_kinds(x, &k, by_wish);
+    for (size_t i = 0; i < k.kind_count; i++) {
         bh_text_append(&t, t.length ? ". " : "");
-        wish(a, &t);
-        wish_in(x, i, &t);
+        wish(k.heads[i]->what, &t);
+        wish_in(x, k.heads[i], k.rows + k.count, &t);
     }
     return bh_paper_keep(&x->w, &t);
 }
