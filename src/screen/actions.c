@@ -132,14 +132,38 @@ bool bh_action_means(const bh_model *model, const bh_action *action)
     return action->where & (model->pane == BH_PANE_PLAN ? PLAN : TABLE);
 }
 
+static bool is_key(const bh_action *a, uint32_t point)
+{
+    return a->run && !a->key[1] && (uint32_t)(unsigned char)a->key[0] == point;
+}
+
+/* A key that means nothing here is answered, too. */
+static void say_no_key(bh_model *model, uint32_t point)
+{
+    for (size_t i = 0; i < ACTIONS; i++)
+        if (is_key(&actions[i], point)) {
+            bh_model_note(model, true, "%s, %s, is a key of the %s: Tab goes there", actions[i].key,
+                          actions[i].word, actions[i].where == PLAN ? "plan" : "run table");
+            return;
+        }
+    if (point > ' ' && point < 0x7F)
+        bh_model_note(model, true, "%c is no key here; ? shows all keys", (int)point);
+    else
+        bh_model_note(model, true, "this is no key here; ? shows all keys");
+}
+
 bool bh_action_press(bh_model *model, const bh_press *press)
 {
+    if (press->kind == BH_PRESS_RUBOUT || press->kind == BH_PRESS_DELETE)
+        bh_model_note(model, true,
+                      model->pane == BH_PANE_PLAN
+                          ? "r takes this line out of the plan"
+                          : "in the plan r takes a setting out: t goes there");
     if (press->kind != BH_PRESS_POINT)
         return false;
     for (size_t i = 0; i < ACTIONS; i++) {
         const bh_action *a = &actions[i];
-        if (!a->run || a->key[1] || (uint32_t)(unsigned char)a->key[0] != press->point ||
-            !bh_action_means(model, a))
+        if (!is_key(a, press->point) || !bh_action_means(model, a))
             continue;
         if (!model->edit && (a->where == PLAN || a->run == save))
             bh_model_note(model, true, "this text cannot be read as a plan, so it is only shown");
@@ -147,7 +171,8 @@ bool bh_action_press(bh_model *model, const bh_press *press)
             a->run(model);
         return true;
     }
-    return false;
+    say_no_key(model, press->point);
+    return true;
 }
 
 /* --- the menu line --- */

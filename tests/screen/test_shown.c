@@ -46,6 +46,8 @@ static const struct {
     {"rates", "positron-electron", "<Tab>v", 24, 80, false, 4},
     {"counts", "hydrogen-separation", "<Tab>vv", 24, 80, false, 6},
     {"no-curve", "hydrogen-separation", "vvv", 24, 80, false, 6},
+    {"other-part", "hydrogen-separation", "w", 24, 80, false, 6},
+    {"no-key", "hydrogen-separation", "<Tab>x", 24, 80, false, 6},
     {"help", "hydrogen-separation", "?", 24, 80, false, 6},
     {"help-end", "hydrogen-separation", "?<End>", 24, 80, false, 6},
     {"cautions", "hydrogen-separation", "c", 24, 80, false, 6},
