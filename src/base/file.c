@@ -105,23 +105,63 @@ static bh_code replace(const char *path, const struct stat *old, struct content 
     }
 }
 
-static bh_code replace_existing(const char *path, const struct stat *old, struct content content,
-                                bh_error *err)
+/* Whether what is there may become another content. */
+static bh_code may_replace(const char *path, const struct stat *old, bh_error *err)
 {
     if (S_ISDIR(old->st_mode))
         return fail_because(err, BH_ECREATE, path, "is a folder; give the name of a file");
     if (!S_ISREG(old->st_mode))
-        return write_directly(path, content, err);
+        return BH_OK;
     if (old->st_nlink > 1)
         return fail_because(err, BH_ECREATE, path,
                             "has a second name (hard link) that would keep the old content; "
                             "give another file");
     if (access(path, W_OK) != 0) /* renaming would not ask */
         return fail(err, BH_ECREATE, path, "may not be replaced");
+    return BH_OK;
+}
+
+static bh_code may_create(const char *path, bh_error *err)
+{
+    struct stat link;
+    if (errno != ENOENT || !*path)
+        return fail(err, BH_ECREATE, path, "cannot be created");
+    if (lstat(path, &link) == 0)
+        return fail_because(err, BH_ECREATE, path, "is a symbolic link to nothing; remove it");
+    return BH_OK;
+}
+
+bh_code bh_file_may_write(const char *path, bh_error *err)
+{
+    struct stat old;
+    if (stat(path, &old) == 0)
+        return may_replace(path, &old, err);
+    const bh_code code = may_create(path, err);
+    if (code)
+        return code;
+    const size_t folder = bh_folder_length(path);
+    char *name = folder ? strndup(path, folder) : strdup(".");
+    if (!name)
+        return fail_because(err, BH_ENOMEM, path, bh_code_text(BH_ENOMEM));
+    const bool may = access(name, W_OK | X_OK) == 0;
+    const int why = errno;
+    free(name);
+    errno = why;
+    return may ? BH_OK : fail(err, BH_ECREATE, path, "cannot be created");
+}
+
+static bh_code replace_existing(const char *path, const struct stat *old, struct content content,
+                                bh_error *err)
+{
+    bh_code code = may_replace(path, old, err);
+    if (code)
+        return code;
+    if (!S_ISREG(old->st_mode))
+        return write_directly(path, content, err);
     char *real = bh_real_path(path);
     if (!real)
         return fail_because(err, BH_ENOMEM, path, bh_code_text(BH_ENOMEM));
-    const bh_code code = replace(real, old, content, err);
+    code = replace(real, old, content, err);
     free(real);
     return code;
 }
@@ -132,9 +172,6 @@ bh_code bh_file_write(const char *path, const char *bytes, size_t length, bh_err
     struct stat old;
     if (stat(path, &old) == 0)
         return replace_existing(path, &old, content, err);
-    if (errno != ENOENT || !*path)
-        return fail(err, BH_ECREATE, path, "cannot be created");
-    if (lstat(path, &old) == 0)
-        return fail_because(err, BH_ECREATE, path, "is a symbolic link to nothing; remove it");
-    return replace(path, NULL, content, err);
+    const bh_code code = may_create(path, err);
+    return code ? code : replace(path, NULL, content, err);
 }

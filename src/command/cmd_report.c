@@ -219,9 +219,12 @@ static int make(struct job *job)
 
 static int run(struct job *job)
 {
+    bh_error err = {.code = BH_OK};
     int status = choose(job);
     if (status)
         return status;
+    if (bh_file_may_write(job->a->value[BH_OPT_OUTPUT], &err)) /* before its figures are */
+        return bh_complain(stderr, &err);
     status = bh_input_table(job->a->words[0], job->a, true, &job->in);
     if (status)
         return status;

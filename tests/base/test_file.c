@@ -181,7 +181,14 @@ START_TEST(refuses_what_it_may_not_replace)
         ck_assert_int_eq(bh_file_write(rows[i].path, "new", 3, &err), BH_ECREATE);
         ck_assert_int_eq(strncmp(err.text, rows[i].begins, strlen(rows[i].begins)), 0);
         ck_assert_str_eq(err.file, rows[i].path);
+        bh_error before = {.code = BH_OK}; /* asked before, it says the same */
+        ck_assert_int_eq(bh_file_may_write(rows[i].path, &before), BH_ECREATE);
+        ck_assert_str_eq(before.text, err.text);
+        ck_assert_str_eq(before.file, rows[i].path);
     }
+    static const char *const could[] = {"file", "new", "folder/new", "/dev/null"};
+    for (int i = 0; i < COUNT(could); i++)
+        ck_assert_int_eq(bh_file_may_write(could[i], NULL), BH_OK);
     demand_content("one", "old");
     demand_content("file", "old");
     ck_assert_int_eq(files(), 6);

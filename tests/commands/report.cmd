@@ -34,6 +34,8 @@ report -o lead.doc
 report -o lead
 report -o lead.pdf --fragment
 report -o lead.pdf --paper a5
-report -o no/such/folder.md; beamhours report plans/lead.yaml -o no/such/folder.md 2>/dev/null; echo $?
+for e in md tex html pdf; do report -o no/such/folder.$e; done # the report is named, not its first figure
+beamhours report plans/lead.yaml -o no/such/folder.md 2>/dev/null; echo $?
+mkdir here.tex; report -o here.tex
 beamhours report 2>&1 | head -1
 printf 'plan: 1\n' >bad.yaml; beamhours report bad.yaml -o bad.md 2>/dev/null; echo $?; [ ! -e bad.md ] || echo there

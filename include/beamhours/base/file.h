@@ -32,4 +32,8 @@ BH_CHECKED bh_code bh_file_read_stream(FILE *from, const char *name, size_t limi
  */
 BH_CHECKED bh_code bh_file_write(const char *path, const char *bytes, size_t length, bh_error *err);
 
+/* Whether it would: BH_ECREATE with the reason when the file could not be created or replaced.
+ * Writes nothing; asked before a long computation. */
+BH_CHECKED bh_code bh_file_may_write(const char *path, bh_error *err);
+
 #endif
