@@ -8,6 +8,7 @@
 #include "beamhours/command/places.h"
 #include "beamhours/report/csv.h"
 #include "beamhours/report/json.h"
+#include "beamhours/report/latex.h"
 #include "beamhours/report/marked_table.h"
 #include "beamhours/report/text_table.h"
 
@@ -54,6 +55,16 @@ static void say_aside(const bh_table *table, const char *format)
         bh_say_cautions(stderr, table);
 }
 
+static void say_width(const bh_selection *before, const bh_selection *view)
+{
+    const double wide = bh_report_latex_wide(before, view);
+    if (wide > BH_LATEX_PAGE)
+        bh_print(stderr,
+                 "beamhours: table: warning: in the smallest letters these columns are about %.0f "
+                 "pt wide and the page %.0f pt: choose fewer with --columns KEY,...\n",
+                 wide, BH_LATEX_PAGE);
+}
+
 static int show(const bh_arguments *arguments, const char *format, const bh_input *before,
                 const bh_input *after)
 {
@@ -75,6 +86,8 @@ static int show(const bh_arguments *arguments, const char *format, const bh_inpu
         status = bh_complain(stderr, &err);
     if (status == 0) {
         say_aside(after->table, format);
+        if (strcmp(format, "latex") == 0)
+            say_width(before ? &old : NULL, &view);
         status = bh_output(&out, arguments->value[BH_OPT_OUTPUT]);
     }
     bh_text_free(&out);

@@ -106,6 +106,14 @@ static size_t columns(const bh_grid *grid, bh_text *format)
     return letters;
 }
 
+double bh_grid_latex_wide(const bh_grid *grid)
+{
+    bh_text format = {0};
+    const size_t letters = grid->cells.failed ? 0 : columns(grid, &format);
+    bh_text_free(&format);
+    return bh_latex_wide(bh_latex_fit(letters, grid->column_count), letters, grid->column_count);
+}
+
 void bh_grid_latex(const bh_grid *grid, bh_text *out)
 {
     out->failed |= grid->cells.failed;

@@ -29,13 +29,18 @@ void bh_latex_needs(bh_text *out)
     bh_latex_packages(out, "% ");
 }
 
+double bh_latex_wide(const bh_latex_size *size, size_t letters, size_t columns)
+{
+    return size->letter * (double)letters + size->gap * (double)columns;
+}
+
 const bh_latex_size *bh_latex_fit(size_t letters, size_t columns)
 {
     static const bh_latex_size sizes[] = {
         {"\\footnotesize", 4.6, 6.0}, {"\\scriptsize", 4.1, 6.0}, {"\\tiny", 3.6, 5.0}};
     size_t i = 0;
     while (i + 1 < sizeof sizes / sizeof sizes[0] &&
-           sizes[i].letter * (double)letters + sizes[i].gap * (double)columns > BH_LATEX_PAGE)
+           bh_latex_wide(&sizes[i], letters, columns) > BH_LATEX_PAGE)
         i++;
     return &sizes[i];
 }

@@ -102,21 +102,26 @@ static void rows(const bh_selection *view, const bh_shown_column *shown, const c
     }
 }
 
+static void fill(const bh_selection *before, const bh_selection *view, bh_grid *grid)
+{
+    bh_shown_column shown[BH_COLUMN_COUNT];
+    const size_t count = bh_report_text_columns(before, view, NARROW, shown);
+    if (before)
+        bh_grid_column_add(grid, "state", "", false);
+    for (size_t c = 0; c < count; c++) {
+        const bh_column *column = bh_column_at(shown[c].column);
+        bh_grid_column_add(grid, column->heading, shown[c].unit, column->kind != BH_CELL_TEXT);
+    }
+    if (before)
+        rows(before, shown, "before", grid);
+    rows(view, shown, before ? "after" : "", grid);
+}
+
 static void table(const struct format *f, const bh_selection *before, const bh_selection *view,
                   bh_text *out)
 {
-    bh_shown_column shown[BH_COLUMN_COUNT];
     bh_grid grid = {0};
-    const size_t count = bh_report_text_columns(before, view, NARROW, shown);
-    if (before)
-        bh_grid_column_add(&grid, "state", "", false);
-    for (size_t c = 0; c < count; c++) {
-        const bh_column *column = bh_column_at(shown[c].column);
-        bh_grid_column_add(&grid, column->heading, shown[c].unit, column->kind != BH_CELL_TEXT);
-    }
-    if (before)
-        rows(before, shown, "before", &grid);
-    rows(view, shown, before ? "after" : "", &grid);
+    fill(before, view, &grid);
     f->grid(&grid, out);
     bh_grid_free(&grid);
 }
@@ -249,4 +254,13 @@ void bh_report_latex(const bh_selection *before, const bh_selection *view, bh_te
 {
     bh_latex_needs(out);
     whole(&latex, before, view, out);
+}
+
+double bh_report_latex_wide(const bh_selection *before, const bh_selection *view)
+{
+    bh_grid grid = {0};
+    fill(before, view, &grid);
+    const double wide = bh_grid_latex_wide(&grid);
+    bh_grid_free(&grid);
+    return wide;
 }

@@ -45,6 +45,10 @@ void bh_grid_markdown(const bh_grid *grid, bh_text *out);
  * bh_latex_needs (latex.h) says. */
 void bh_grid_latex(const bh_grid *grid, bh_text *out);
 
+/* Returns [pt] how wide that is, rather more than less: above BH_LATEX_PAGE (latex.h) only where
+ * the smallest letters do not help. */
+double bh_grid_latex_wide(const bh_grid *grid);
+
 /* Appends `words` (UTF-8) so that Markdown shows just them: nothing in a name is obeyed; a line's
  * end becomes a blank. */
 void bh_markdown_words(bh_text *out, const char *words);

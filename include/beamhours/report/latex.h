@@ -33,4 +33,7 @@ typedef struct {
  * where none does. */
 const bh_latex_size *bh_latex_fit(size_t letters, size_t columns);
 
+/* Returns [pt] how wide such a table is in letters of `size`. */
+double bh_latex_wide(const bh_latex_size *size, size_t letters, size_t columns);
+
 #endif

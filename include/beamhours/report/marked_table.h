@@ -15,6 +15,9 @@ void bh_report_markdown(const bh_selection *before, const bh_selection *view, bh
  */
 void bh_report_latex(const bh_selection *before, const bh_selection *view, bh_text *out);
 
+/* Returns [pt] how wide its rows are, as bh_grid_latex_wide. */
+double bh_report_latex_wide(const bh_selection *before, const bh_selection *view);
+
 /* The parts: fills an empty grid with the sums of time, `before` them (or NULL) those before a
  * change; notes and cautions as Markdown. */
 void bh_totals_grid(const bh_totals *before, const bh_totals *now, bh_grid *grid);
