@@ -91,9 +91,8 @@ static void set_modes(void)
     (void)keypad(stdscr, TRUE);
     (void)nodelay(stdscr, TRUE);
     (void)set_escdelay(8); /* a terminal sends what belongs together at once */
-    (void)mousemask(BUTTON1_CLICKED | BUTTON1_DOUBLE_CLICKED | BUTTON1_PRESSED | BUTTON4_PRESSED |
-                        BUTTON5_PRESSED,
-                    NULL);
+    /* Behind an event that is not asked for curses waits for the next key: all are. */
+    (void)mousemask(ALL_MOUSE_EVENTS & ~(mmask_t)BUTTON1_TRIPLE_CLICKED, NULL);
     (void)mouseinterval(0);
 }
 

@@ -407,6 +407,28 @@ START_TEST(mouse)
 }
 END_TEST
 
+/* A button that is let go of, and others than the first, mean nothing: news come all the same. */
+START_TEST(other_mouse_events)
+{
+    static const char *const events[] = {"[<<0;21;9m",  "[<<1;21;9M",   "[<<1;21;9m",
+                                         "[<<2;21;9M",  "[<<2;21;9m",   "[<<66;21;9M",
+                                         "[<<67;21;9M", "[<<128;21;9M", "[<<128;21;9m"};
+    tty t;
+    begin(&t);
+    tty_type(&t, "<Escape>[<<0;21;9M");
+    tty_wait(&t, "> current");
+    for (int i = 0; i < COUNT(events); i++) {
+        tty_type(&t, "<Escape>");
+        tty_type(&t, events[i]);
+        tty_pump(&t, 50);
+        tty_size(&t, 25 + i, 90); /* is seen without a key */
+        tty_wait_row(&t, 24 + i, "? help");
+        ck_assert_msg(tty_shows(&t, "> current        2 uA"), "%s", events[i]);
+    }
+    leave(&t);
+}
+END_TEST
+
 START_TEST(what_it_would_take)
 {
     tty t;
@@ -575,6 +597,7 @@ int main(void)
     tcase_add_test(tests, plain_letters);
     tcase_add_test(tests, no_colours);
     tcase_add_test(tests, mouse);
+    tcase_add_test(tests, other_mouse_events);
     tcase_add_test(tests, what_it_would_take);
     tcase_add_test(tests, texts_have_lines);
     tcase_add_test(tests, pastes);
