@@ -41,7 +41,7 @@ void bh_leaf_need(bh_leaf *s, double needed);
 void bh_leaf_paragraph(bh_leaf *s, const char *text, bool bold, double indent);
 
 /* Draws a table with its caption; columns of words are broken into lines where it is too wide, and
- * letters become smaller where that is not enough. */
-void bh_leaf_table(bh_leaf *s, const bh_block *b);
+ * letters become smaller where that is not enough.  False without memory. */
+bool bh_leaf_table(bh_leaf *s, const bh_block *b);
 
 #endif

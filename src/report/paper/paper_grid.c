@@ -2,7 +2,10 @@
 #include "beamhours/report/paper_leaf.h"
 
 #include <math.h>
+#include <stdlib.h>
 #include <string.h>
+
+#include "beamhours/report/power.h"
 
 enum { MOST_COLUMNS = 64 };
 
@@ -169,12 +172,24 @@ static double needed(const bh_leaf *s, const struct grid *g)
     return fmin(high, s->high - 2.0 * BH_LEAF_MARGIN);
 }
 
-void bh_leaf_table(bh_leaf *s, const bh_block *b)
+/* The cells with raised digits, in one text that ends each with a 0; false without memory. */
+static bool raise_powers(const bh_paper_table *t, bh_text *bytes, const char **cells)
 {
-    struct grid g = {.t = b->table};
+    const size_t count = t->row_count * t->column_count;
+    for (size_t i = 0; i < count; i++) {
+        bh_power_raise(t->cells[i], bytes);
+        bh_text_append_bytes(bytes, "", 1);
+    }
+    const char *at = bytes->bytes;
+    for (size_t i = 0; i < count && !bytes->failed; i++, at += strlen(at) + 1)
+        cells[i] = at;
+    return !bytes->failed;
+}
+
+static void draw_table(bh_leaf *s, const bh_block *b, const bh_paper_table *shown)
+{
+    struct grid g = {.t = shown};
     bh_text caption = {0};
-    if (b->table->column_count > MOST_COLUMNS)
-        return;
     bh_text_appendf(&caption, "Table %d. %s", b->number, b->text);
     s->size = largest_cell;
     while (!fit(s, &g) && s->size > least_cell)
@@ -190,4 +205,18 @@ void bh_leaf_table(bh_leaf *s, const bh_block *b)
     headings(s, &g);
     rows(s, &g);
     s->y += 10.0;
+}
+
+bool bh_leaf_table(bh_leaf *s, const bh_block *b)
+{
+    bh_paper_table shown = *b->table;
+    bh_text bytes = {0};
+    const char **cells = malloc((shown.row_count * shown.column_count + 1) * sizeof *cells);
+    const bool raised = cells && raise_powers(b->table, &bytes, cells);
+    shown.cells = cells;
+    if (raised && shown.column_count <= MOST_COLUMNS)
+        draw_table(s, b, &shown);
+    free(cells);
+    bh_text_free(&bytes);
+    return raised;
 }

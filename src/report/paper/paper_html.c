@@ -1,8 +1,10 @@
 /* paper_html.c - one page of HTML that is also XML: landmarks, captions, headings of rows and
  * columns; a few lines of script sort tables, and nothing is fetched from anywhere. */
 #include "beamhours/report/paper.h"
+#include "beamhours/report/power.h"
 
 #include <stdio.h>
+#include <stdlib.h>
 #include <string.h>
 
 /* Contrast of every pair of colours is above 7 to 1. */
@@ -11,7 +13,8 @@ static const char style[] =
     "max-width:72rem;margin:0 auto;padding:0 1rem}\n"
     "h1{font-size:1.7rem;line-height:1.25}h2{font-size:1.25rem;border-bottom:1px solid #555;"
     "margin-top:2.2rem}\n"
-    "a{color:#003a75}a:focus,button:focus{outline:3px solid #003a75;outline-offset:2px}\n"
+    "sup{line-height:0}a{color:#003a75}a:focus,button:focus{outline:3px solid "
+    "#003a75;outline-offset:2px}\n"
     ".wide{overflow-x:auto}table{border-collapse:collapse;margin:1rem 0;font-size:.85rem;"
     "font-variant-numeric:tabular-nums}\n"
     "caption{text-align:left;font-weight:bold;padding:.3rem 0}\n"
@@ -41,7 +44,7 @@ static const char script[] =
     "  h.appendChild(b);\n"
     "  b.addEventListener('click',function(){\n"
     "   var up=h.getAttribute('aria-sort')!=='ascending',number=h.className==='n';\n"
-    "   var value=function(r){var s=r.cells[c].textContent,x=parseFloat(s);\n"
+    "   var value=function(r){var d=r.cells[c],s=d.dataset.sort||d.textContent,x=parseFloat(s);\n"
     "    return number?(isNaN(x)?Infinity:x):s;};\n"
     "   var order=function(p,q){var a=value(p),b=value(q);\n"
     "    return number?(a===b?0:a-b):a.localeCompare(b);};\n"
@@ -53,9 +56,9 @@ static const char script[] =
     " });\n"
     "});\n";
 
-static void escaped(const char *s, bh_text *out)
+static void escaped_part(const char *s, size_t length, bh_text *out)
 {
-    for (; *s; s++)
+    for (const char *end = s + length; s < end; s++)
         switch (*s) {
         case '<':
             bh_text_append(out, "&lt;");
@@ -72,6 +75,11 @@ static void escaped(const char *s, bh_text *out)
         default:
             bh_text_append_bytes(out, s, 1);
         }
+}
+
+static void escaped(const char *s, bh_text *out)
+{
+    escaped_part(s, strlen(s), out);
 }
 
 static void within(const char *before, const char *text, const char *behind, bh_text *out)
@@ -116,13 +124,30 @@ static void heading_cell(const bh_paper_column *c, bh_text *out)
     bh_text_append(out, "</th>");
 }
 
+static void raised(const char *factor, size_t length, int power, bh_text *out)
+{
+    escaped_part(factor, length, out);
+    bh_text_appendf(out, "&#160;×&#160;10<sup>%s%d</sup>", power < 0 ? "−" : "", abs(power));
+}
+
+/* A cell is sorted by what it says, or by its number where that is set with a power of ten. */
+static void cell(const bh_paper_column *c, const char *text, const char *tag, bh_text *out)
+{
+    static const bh_power_style in_print = {escaped_part, raised};
+    bh_power power;
+    bh_text_appendf(out, "<%s%s", tag, c->number ? " class=\"n\"" : "");
+    if (c->number && bh_power_find(text, &power))
+        within(" data-sort=\"", text, "\"", out);
+    bh_text_append(out, ">");
+    bh_power_set(text, &in_print, out);
+}
+
 static void row(const bh_paper_table *t, size_t r, bh_text *out)
 {
     bh_text_append(out, "<tr>");
     for (size_t c = 0; c < t->column_count; c++) {
-        const char *class = t->columns[c].number ? " class=\"n\"" : "";
-        bh_text_appendf(out, c ? "<td%s>" : "<th scope=\"row\"%s>", class);
-        within("", t->cells[r * t->column_count + c], c ? "</td>" : "</th>", out);
+        cell(&t->columns[c], t->cells[r * t->column_count + c], c ? "td" : "th scope=\"row\"", out);
+        bh_text_append(out, c ? "</td>" : "</th>");
     }
     bh_text_append(out, "</tr>\n");
 }

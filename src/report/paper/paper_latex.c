@@ -6,6 +6,7 @@
 
 #include "beamhours/base/number.h"
 #include "beamhours/report/latex.h"
+#include "beamhours/report/power.h"
 
 static void within(const char *before, const char *text, const char *behind, bh_text *out)
 {
@@ -21,12 +22,29 @@ static bool whole_number(const char *s)
     return !bh_number_parse(s, &end, &value) && *end == '\0';
 }
 
+static void words_part(const char *text, size_t length, bh_text *out)
+{
+    bh_text part = {0};
+    bh_text_append_bytes(&part, text, length);
+    bh_latex_words(out, part.bytes ? part.bytes : "");
+    out->failed |= part.failed;
+    bh_text_free(&part);
+}
+
+static void power_of_ten(const char *factor, size_t length, int power, bh_text *out)
+{
+    bh_text_append(out, "\\num{");
+    bh_text_append_bytes(out, factor, length);
+    bh_text_appendf(out, "e%d}", power);
+}
+
 static void cell(const bh_paper_column *c, const char *text, bh_text *out)
 {
+    static const bh_power_style style = {words_part, power_of_ten};
     if (c->number && whole_number(text))
         bh_text_appendf(out, "\\num{%s}", text);
     else
-        bh_latex_words(out, text);
+        bh_power_set(text, &style, out);
 }
 
 static void heading_row(const bh_paper_table *t, bool of_units, bh_text *out)

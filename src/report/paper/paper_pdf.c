@@ -189,7 +189,8 @@ static bh_code block(bh_leaf *s, const bh_block *b, bh_error *err)
         caution(s, b->text);
         break;
     case BH_BLOCK_TABLE:
-        bh_leaf_table(s, b);
+        if (!bh_leaf_table(s, b))
+            return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
         break;
     case BH_BLOCK_FIGURE:
         return figure(s, b, err);
