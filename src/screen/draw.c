@@ -63,7 +63,9 @@ static void draw_prompt(const bh_model *model, const bh_arrangement *places, bh_
     const int row = places->message >= 0 ? places->message : places->menu;
     bh_canvas_clear(canvas, (bh_spot){row, 0, canvas->columns});
     const int used = bh_canvas_put(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_TITLE, what);
-    bh_draw_field(canvas, (bh_spot){row, used + 1, canvas->columns - used - 1}, &model->field);
+    const bool noted = model->over == BH_OVER_FIND && model->note[0] && places->message >= 0;
+    const int end = noted ? canvas->columns / 2 - 1 : canvas->columns;
+    bh_draw_field(canvas, (bh_spot){row, used + 1, end - used - 1}, &model->field);
 }
 
 /* How much of `text` goes into one row: words stay whole where they can. */

@@ -252,8 +252,9 @@ void bh_draw_curve(const bh_model *model, const bh_arrangement *places, bh_canva
                      .rows = places->curve_rows - 3,
                      .columns = places->table_columns - LABEL};
     char name[120];
-    (void)snprintf(name, sizeof name, " %s [%s] against angle, %.40s ", what[shown],
-                   bh_column_at((int)column)->unit, model->table.here);
+    (void)snprintf(name, sizeof name, " %s [%s] against angle%s%.40s ", what[shown],
+                   bh_column_at((int)column)->unit, model->table.here[0] ? ", " : "",
+                   model->table.here);
     draw_title(places, name, canvas);
     if (p.rows < 2 || p.columns < 10)
         return;

@@ -181,6 +181,7 @@ static void draw_heads(const bh_model *model, const bh_arrangement *places,
     const bool focus = model->pane == BH_PANE_TABLE;
     int used = bh_canvas_put(canvas, head, focus ? BH_LOOK_TITLE : BH_LOOK_QUIET, "RUN TABLE");
     used += draw_state(model, (bh_spot){head.row, head.column + used, head.width - used}, canvas);
+    used++; /* a gap */
     draw_totals(model, (bh_spot){head.row, head.column + used, head.width - used}, canvas);
     for (int i = 0; i < p->count; i++) {
         const bh_spot spot = {places->body + 1, p->column[i], p->width[i]};

@@ -107,8 +107,8 @@ static bool work_is_there(bh_keeper *keeper, bh_model *model)
         return false;
     since(found.age, age);
     (void)snprintf(model->question_text[0], sizeof *model->question_text,
-                   "Unsaved work is there, %s old: %d lines of it are not in the file.", age,
-                   found.lines);
+                   "Unsaved work is there, %s old: %d %s not in the file.", age, found.lines,
+                   found.lines == 1 ? "line of it is" : "lines of it are");
     (void)snprintf(model->question_text[1], sizeof *model->question_text, "%s",
                    !found.whole      ? "It is damaged: what can be read of it would be used."
                    : found.same_base ? "The file is as it was when that work began."

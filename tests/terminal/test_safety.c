@@ -171,6 +171,7 @@ START_TEST(killed)
     free(text);
     restart(&t);
     tty_wait(&t, "Unsaved work is there");
+    tty_wait(&t, "1 line of it is not in the file");
     tty_type(&t, "u");
     tty_wait(&t, "the unsaved work is back");
     tty_wait_row(&t, 0, "1 unsaved");
