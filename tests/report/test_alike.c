@@ -19,7 +19,7 @@ START_TEST(as_pairs_find_them)
     static const char *const names[] = {"zinc", "gold", "iron", "lead", "neon", "gold2", ""};
     for (int count = 0; count < MOST; count = count < 40 ? count + 1 : count * 2 + 1) {
         bh_alike rows[MOST];
-        const bh_alike *heads[MOST];
+        bh_alike_head heads[MOST];
         const char *name[MOST];
         for (int i = 0; i < count; i++) {
             double u[2];
@@ -37,7 +37,7 @@ START_TEST(as_pairs_find_them)
             if (seen)
                 continue;
             ck_assert_uint_lt(found, kinds);
-            const bh_alike *of = heads[found++];
+            const bh_alike *of = heads[found++].first;
             for (int k = i; k < count; k++)
                 if (strcmp(name[k], name[i]) == 0)
                     ck_assert_uint_eq((of++)->row, (size_t)k);

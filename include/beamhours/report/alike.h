@@ -16,9 +16,14 @@ typedef int bh_alike_order(const void *a, const void *b);
 /* Sorts by kind; rows of the same kind keep their order.  False without memory. */
 bool bh_alike_sort(bh_alike *rows, size_t count, bh_alike_order *order);
 
-/* Of sorted rows, fills `heads` (room for `count`) with the first of each kind, in the order in
- * which they stand in the table, and returns how many kinds there are. */
+/* The first row of a kind. */
+typedef struct {
+    const bh_alike *first;
+} bh_alike_head;
+
+/* Of sorted rows, fills `heads` (room for `count`) with one for each kind, in the order in which
+ * they stand in the table, and returns how many kinds there are. */
 size_t bh_alike_heads(const bh_alike *rows, size_t count, bh_alike_order *order,
-                      const bh_alike **heads);
+                      bh_alike_head *heads);
 
 #endif

@@ -32,18 +32,18 @@ bool bh_alike_sort(bh_alike *rows, size_t count, bh_alike_order *order)
 
 static int earlier(const void *a, const void *b)
 {
-    const bh_alike *p = *(const bh_alike *const *)a, *q = *(const bh_alike *const *)b;
-    return (p->row > q->row) - (p->row < q->row);
+    const bh_alike_head *p = a, *q = b;
+    return (p->first->row > q->first->row) - (p->first->row < q->first->row);
 }
 
 size_t bh_alike_heads(const bh_alike *rows, size_t count, bh_alike_order *order,
-                      const bh_alike **heads)
+                      bh_alike_head *heads)
 {
     size_t kinds = 0;
     for (size_t i = 0; i < count; i++)
         if (i == 0 || order(rows[i - 1].what, rows[i].what) != 0)
-            heads[kinds++] = &rows[i];
+            heads[kinds++].first = &rows[i];
     if (kinds > 1)
-        qsort(heads, kinds, sizeof(const bh_alike *), earlier);
+        qsort(heads, kinds, sizeof *heads, earlier);
     return kinds;
 }

@@ -211,7 +211,7 @@ bool bh_leaf_table(bh_leaf *s, const bh_block *b)
 {
     bh_paper_table shown = *b->table;
     bh_text bytes = {0};
-    const char **cells = malloc((shown.row_count * shown.column_count + 1) * sizeof *cells);
+    const char **cells = calloc(shown.row_count * shown.column_count + 1, sizeof *cells);
     const bool raised = cells && raise_powers(b->table, &bytes, cells);
     shown.cells = cells;
     if (raised && shown.column_count <= MOST_COLUMNS)

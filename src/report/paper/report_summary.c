@@ -65,7 +65,7 @@ static const char *range(bh_reporting *x, int column)
 /* Rows in the order of kinds, and the first of each. */
 struct kinds {
     bh_alike *rows;
-    const bh_alike **heads;
+    bh_alike_head *heads;
     size_t count, kind_count;
 };
 
@@ -101,7 +101,7 @@ static const char *names(bh_reporting *x, int column)
     }
     sort_kinds(x, &k, by_name);
     for (size_t i = 0; i < k.kind_count; i++)
-        bh_text_appendf(&t, "%s%s", i ? ", " : "", (const char *)k.heads[i]->what);
+        bh_text_appendf(&t, "%s%s", i ? ", " : "", (const char *)k.heads[i].first->what);
     return bh_paper_keep(&x->w, &t);
 }
 
@@ -182,8 +182,8 @@ static const char *wishes(bh_reporting *x)
     sort_kinds(x, &k, by_wish);
     for (size_t i = 0; i < k.kind_count; i++) {
         bh_text_append(&t, t.length ? ". " : "");
-        wish(k.heads[i]->what, &t);
-        wish_in(x, k.heads[i], k.rows + k.count, &t);
+        wish(k.heads[i].first->what, &t);
+        wish_in(x, k.heads[i].first, k.rows + k.count, &t);
     }
     return bh_paper_keep(&x->w, &t);
 }
