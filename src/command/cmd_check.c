@@ -4,7 +4,8 @@
 static int check(const char *name, const bh_arguments *arguments)
 {
     bh_input in;
-    const int status = bh_input_table(name, arguments, false, &in);
+    const int status =
+        bh_input_table(name, arguments, &(bh_evaluation){.without_changes = true}, &in);
     if (status == 0) {
         const bh_diags *said = bh_table_warnings(in.table);
         bh_say_diags(stderr, said);

@@ -53,9 +53,11 @@ int bh_cmd_compare(const bh_arguments *arguments)
         return bh_usage(arguments, "needs two plans: the one before and the one after");
     if (strcmp(arguments->words[0], "-") == 0 && strcmp(arguments->words[1], "-") == 0)
         return bh_usage(arguments, "standard input can be one of the two plans, not both");
-    int status = bh_input_table(arguments->words[0], arguments, false, &before);
+    int status =
+        bh_input_table(arguments->words[0], arguments, &(bh_evaluation){.bins = false}, &before);
     if (status == 0)
-        status = bh_input_table(arguments->words[1], arguments, false, &after);
+        status =
+            bh_input_table(arguments->words[1], arguments, &(bh_evaluation){.bins = false}, &after);
     if (status == 0)
         status = show(arguments, format, &before, &after);
     bh_input_close(&before);

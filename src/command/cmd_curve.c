@@ -128,7 +128,7 @@ static int drawn(struct job *job)
         return bh_complain(stderr, &(bh_error){.code = BH_ENOMEM});
     int status = job->a->value[BH_OPT_DATA] ? read_data(job) : 0;
     if (status == 0)
-        status = bh_input_evaluate(&job->in, true);
+        status = bh_input_evaluate(&job->in, &(bh_evaluation){.bins = true});
     if (status == 0)
         bh_say_cautions(stderr, job->in.table);
     return status == 0 ? draw(job) : status;

@@ -28,7 +28,7 @@ int bh_cmd_explain(const bh_arguments *arguments)
     if (status)
         return status;
     bh_input in;
-    status = bh_input_table(arguments->words[0], arguments, bin > 0, &in);
+    status = bh_input_table(arguments->words[0], arguments, &(bh_evaluation){.bins = bin > 0}, &in);
     if (status == 0) {
         bh_error err = {.code = BH_OK};
         bh_text out = {0};

@@ -225,7 +225,7 @@ static int run(struct job *job)
         return status;
     if (bh_file_may_write(job->a->value[BH_OPT_OUTPUT], &err)) /* before its figures are */
         return bh_complain(stderr, &err);
-    status = bh_input_table(job->a->words[0], job->a, true, &job->in);
+    status = bh_input_table(job->a->words[0], job->a, &(bh_evaluation){.bins = true}, &job->in);
     if (status)
         return status;
     bh_say_diags(stderr, bh_table_warnings(job->in.table));

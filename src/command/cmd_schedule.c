@@ -57,7 +57,8 @@ int bh_cmd_schedule(const bh_arguments *arguments)
         return bh_usage(arguments, "needs one plan (or - for standard input)");
     if (start && bh_wall_read(start, &s.start, &err))
         return bh_usage_option(arguments, BH_OPT_START, err.text);
-    int status = bh_input_table(arguments->words[0], arguments, false, &in);
+    const bh_evaluation wanted = {.without_changes = true};
+    int status = bh_input_table(arguments->words[0], arguments, &wanted, &in);
     if (status == 0)
         status = show(arguments, format, in.table, &s);
     bh_input_close(&in);

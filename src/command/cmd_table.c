@@ -96,10 +96,21 @@ static int show(const bh_arguments *arguments, const char *format, const bh_inpu
     return status;
 }
 
+/* Whether the changes of rates with angle and momentum are in what is shown. */
+static bool shows_changes(const bh_arguments *arguments, const char *format)
+{
+    static const char changes[] = "rate_change_";
+    enum { NARROW = 80 }; /* where they have no room in the text */
+    const char *columns = arguments->value[BH_OPT_COLUMNS], *sort = arguments->value[BH_OPT_SORT];
+    if (sort && strstr(sort, changes))
+        return true;
+    return columns ? strstr(columns, changes) != NULL
+                   : strcmp(format, "text") != 0 || bh_places_width() > NARROW;
+}
+
 int bh_cmd_table(const bh_arguments *arguments)
 {
     const char *format = bh_arguments_format(arguments, BH_OPT_TABLE_FORMAT);
-    const bool bins = arguments->value[BH_OPT_BINS] != NULL;
     const bool against = arguments->value[BH_OPT_BEFORE_AFTER] != NULL;
     if (!format)
         return EX_USAGE;
@@ -107,15 +118,17 @@ int bh_cmd_table(const bh_arguments *arguments)
         return bh_usage(arguments, "needs one plan (or - for standard input)");
     if (against && arguments->with_count == 0)
         return bh_usage(arguments, "--against needs a change: --with KEY=VALUE");
+    const bh_evaluation wanted = {.bins = arguments->value[BH_OPT_BINS] != NULL,
+                                  .without_changes = !shows_changes(arguments, format)};
     bh_input after = {0}, before = {0};
-    int status = bh_input_table(arguments->words[0], arguments, bins, &after);
+    int status = bh_input_table(arguments->words[0], arguments, &wanted, &after);
     if (status == 0 && against) {
         before.name = after.name;
         before.library = after.library;
         before.bytes = after.bytes; /* standard input can be read once only */
         status = bh_input_plan(&before, NULL);
         if (status == 0)
-            status = bh_input_evaluate(&before, bins);
+            status = bh_input_evaluate(&before, &wanted);
     }
     if (status == 0)
         status = show(arguments, format, against ? &before : NULL, &after);

@@ -97,23 +97,26 @@ int bh_input_plan(bh_input *in, const bh_arguments *arguments)
     return status;
 }
 
-int bh_input_evaluate(bh_input *in, bool bins)
+int bh_input_evaluate(bh_input *in, const bh_evaluation *wanted)
 {
     bh_error err = {.code = BH_OK};
     bh_waiting waiting;
     bh_waiting_begin(&waiting, stderr);
-    const bh_evaluation how = {.bins = bins, .progress = &waiting.progress};
+    const bh_evaluation how = {.bins = wanted->bins,
+                               .without_changes = wanted->without_changes,
+                               .progress = &waiting.progress};
     in->table = bh_table_new(in->plan, &how, in->diags, &err);
     bh_waiting_end(&waiting);
     return in->table ? 0 : bh_complain(stderr, &err);
 }
 
-int bh_input_table(const char *name, const bh_arguments *arguments, bool bins, bh_input *in)
+int bh_input_table(const char *name, const bh_arguments *arguments, const bh_evaluation *wanted,
+                   bh_input *in)
 {
     int status = bh_input_open(name, in);
     if (status == 0)
         status = bh_input_plan(in, arguments);
-    return status == 0 ? bh_input_evaluate(in, bins) : status;
+    return status == 0 ? bh_input_evaluate(in, wanted) : status;
 }
 
 void bh_say_cautions(FILE *to, const bh_table *table)

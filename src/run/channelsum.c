@@ -161,6 +161,11 @@ static bh_code sum_total(struct making *m, const struct task *t, double weight, 
     return code;
 }
 
+static bool changes(const bh_channel_request *r)
+{
+    return r->sensitivities && !r->without_changes;
+}
+
 static bool is_idle(const bh_channel_request *r)
 {
     return !r->radiated || r->radiated->idle;
@@ -224,7 +229,7 @@ static bh_code sum_task(struct making *m, const struct task *t, double weight, i
     bh_code code = only ? BH_OK : sum_total(m, t, weight, err);
     if (!code)
         code = sum_radiated(m, t, weight, err);
-    if (!code && m->request->sensitivities)
+    if (!code && changes(m->request))
         code = sum_moved(m, t, weight, err);
     return code;
 }
@@ -326,7 +331,7 @@ static bh_code make(struct making *m, bh_error *err)
     }
     for (int i = 0; i < m->parts; i++)
         m->sums[i].converged = true;
-    for (int boost = 0; !code && boost < (r->sensitivities ? BH_BOOSTS : 1); boost++)
+    for (int boost = 0; !code && boost < (changes(r) ? BH_BOOSTS : 1); boost++)
         code = sum_boost(m, arriving, boost, err);
     return code;
 }

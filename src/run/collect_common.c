@@ -77,3 +77,24 @@ void bh_collect_moved(bh_collecting *c, const bh_cause *cause, bh_moved *m, doub
         to[i] += usual > 0 ? (signal[1][i] - signal[0][i]) / usual * sigma / (high - low) : 0;
     }
 }
+
+/* Thicker or thinner, a layer slows the beam down more or less. */
+static bool layers_uncertain(const bh_target *target)
+{
+    for (size_t i = 0; i < target->layer_count; i++) {
+        const bh_layer *l = &target->layers[i];
+        const bh_value *values[] = {&l->areal_number, &l->density, &l->temperature, &l->pressure,
+                                    &l->density_loss};
+        for (size_t k = 0; k < sizeof values / sizeof values[0]; k++)
+            if (values[k]->uncertainty > 0)
+                return true;
+    }
+    return false;
+}
+
+bool bh_rests_on_changes(const bh_setting *setting, const bh_setting_arm *arm)
+{
+    return setting->beam.kinetic_energy.uncertainty > 0 || arm->angle.uncertainty > 0 ||
+           arm->q2.uncertainty > 0 || arm->arm.pointing.uncertainty > 0 ||
+           layers_uncertain(setting->target);
+}

@@ -99,7 +99,8 @@ static void put_rates(const struct source *s, bh_row *row)
     const bh_part *p = s->part;
     const bh_view *v = s->view;
     const double seen = s->arm->yield->seen;
-    const bh_why turn = v->arm->arm.shape == BH_SHAPE_RING ? BH_WHY_RING : BH_WHY_NO_EVENTS;
+    const bh_why none = v->without_changes ? BH_WHY_NOT_ASKED : BH_WHY_NO_EVENTS;
+    const bh_why turn = v->arm->arm.shape == BH_SHAPE_RING ? BH_WHY_RING : none;
     bh_row_put(row, BH_COL_POINT_CROSS_SECTION, p->point_cross_section, BH_WHY_EMPTY_BIN);
     bh_row_put(row, BH_COL_CROSS_SECTION, p->cross_section, BH_WHY_EMPTY_BIN);
     bh_row_put(row, BH_COL_SOLID_ANGLE, p->solid_angle / msr, BH_WHY_EMPTY_BIN);
@@ -113,7 +114,7 @@ static void put_rates(const struct source *s, bh_row *row)
     bh_row_put(row, BH_COL_BACKGROUND, p->windows + p->other, BH_WHY_NO_EVENTS);
     bh_row_put(row, BH_COL_LIVE, s->arm->live.live_fraction, BH_WHY_NOTHING);
     bh_row_put(row, BH_COL_PER_MRAD, p->per_radian * 1e-3, turn);
-    bh_row_put(row, BH_COL_PER_PERMILLE, p->per_momentum * per_permille, BH_WHY_NO_EVENTS);
+    bh_row_put(row, BH_COL_PER_PERMILLE, p->per_momentum * per_permille, none);
 }
 
 /* Why there is no time, where there is none. */

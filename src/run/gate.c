@@ -129,6 +129,7 @@ const bh_channel_sum *bh_elastic_sums(bh_yielder *yielder, const bh_view *view,
     bh_radiated_make(&radiated, &factor);
     request.radiated = &factor;
     request.sensitivities = of->signal && !of->trace;
+    request.without_changes = view->without_changes;
     request.trace = of->trace;
     request.bins = request.bins && !of->binless;
     request.radiated_only = !of->signal && !of->whole;

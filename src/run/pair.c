@@ -118,7 +118,7 @@ static bh_code add_channel(struct pairing *p, bh_joint *j, const bh_nuclei *nucl
     const bool main = signal && nuclei->nuclide == nuclei->list->main;
     bh_code code = BH_OK;
     for (int i = 0; !code && i < yield->view.parts; i++) {
-        const bh_joint_request request = {p->standing, i, signal};
+        const bh_joint_request request = {p->standing, i, signal && !yield->view.without_changes};
         bh_joint_sum sum = {.events = {.converged = true}};
         for (size_t v = 0; !code && v < count; v++) {
             j->vertex = &p->yielder->vertices[v];

@@ -85,7 +85,9 @@ static bh_code evaluate(const bh_search *s, struct one *o)
     bh_plan alone = *o->plan;
     const bh_evaluation how = {.cancelled = s->question->cancelled,
                                .asker = s->question->asker,
-                               .workspace = s->workspace};
+                               .workspace = s->workspace,
+                               .without_changes = s->question->column != BH_COL_PER_MRAD &&
+                                                  s->question->column != BH_COL_PER_PERMILLE};
     bh_error why = {.code = BH_OK};
     alone.settings = o->setting;
     alone.setting_count = 1;

@@ -98,6 +98,22 @@ static void forget_old(bh_results *results)
         }
 }
 
+static bool keyed(const bh_setting_key *key)
+{
+    return key->word[0] || key->word[1];
+}
+
+/* Rows without changes of rates are not those with them. */
+static bool find_sources(bh_stepwise *s)
+{
+    if (!bh_setting_sources(s->plan, s->arena, s->sources))
+        return false;
+    for (size_t i = 0; s->first.yielder.without_changes && i < s->plan->setting_count; i++)
+        if (keyed(&s->sources[i].key))
+            s->sources[i].key.word[0] = ~s->sources[i].key.word[0];
+    return true;
+}
+
 bh_stepwise *bh_stepwise_new(const bh_plan *plan, const bh_evaluation *how, bh_results *results,
                              bh_error *err)
 {
@@ -112,9 +128,11 @@ bh_stepwise *bh_stepwise_new(const bh_plan *plan, const bh_evaluation *how, bh_r
         s->sources = bh_arena_take(s->arena, plan->setting_count + 1, sizeof *s->sources);
         s->known = bh_arena_take(s->arena, plan->setting_count + 1, sizeof(void *));
         s->hands = &s->first;
-        s->first.yielder = (bh_yielder){
-            .workspace = how->workspace, .cancelled = how->cancelled, .asker = how->asker};
-        if (s->sources && s->known && bh_setting_sources(plan, s->arena, s->sources) &&
+        s->first.yielder = (bh_yielder){.workspace = how->workspace,
+                                        .cancelled = how->cancelled,
+                                        .asker = how->asker,
+                                        .without_changes = how->without_changes};
+        if (s->sources && s->known && find_sources(s) &&
             !bh_evaluator_prepare(&s->first, plan, s->arena, err))
             return s;
     }
@@ -136,7 +154,8 @@ bh_code bh_stepwise_hands(bh_stepwise *steps, bh_workspace *const *workspaces, s
             return bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
         hands[i].yielder = (bh_yielder){.workspace = workspaces[i],
                                         .cancelled = steps->first.yielder.cancelled,
-                                        .asker = steps->first.yielder.asker};
+                                        .asker = steps->first.yielder.asker,
+                                        .without_changes = steps->first.yielder.without_changes};
         code = bh_evaluator_prepare(&hands[i], steps->plan, steps->arenas[i], err);
     }
     if (!code && count)
@@ -166,11 +185,6 @@ static void move_remarks(bh_result *r, const bh_setting_source *source)
     bh_remarks_moved(r->remarks);
     for (size_t i = 0; i < r->line_count && i < source->count; i++)
         r->lines[i] = source->lines[i];
-}
-
-static bool keyed(const bh_setting_key *key)
-{
-    return key->word[0] || key->word[1];
 }
 
 /* Rows say where they stand in the plan: that may be another place now. */

@@ -8,7 +8,7 @@ struct key {
     const bh_process *process;
     const bh_structure *structure;
     char beam[16];
-    int charge, z, a, recoil, branch, bins, cut, sensitivities, only, shape;
+    int charge, z, a, recoil, branch, bins, cut, changes, only, shape;
     double target, kinetic, momentum_from, momentum_to;
     double shape_numbers[9], rms[3];
 };
@@ -58,7 +58,7 @@ static void write_numbers(const bh_channel_request *r, struct writing *w)
     k.branch = (int)r->channel.branch;
     k.bins = r->bins ? s->bins : 0;
     k.cut = r->cut;
-    k.sensitivities = r->sensitivities;
+    k.changes = r->sensitivities + 2 * r->without_changes;
     k.only = r->radiated_only + 2 * r->trace;
     k.shape = (int)s->shape;
     k.target = e->target;

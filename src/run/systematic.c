@@ -154,8 +154,10 @@ void bh_collect_signals(bh_collecting *c, const bh_setting *setting, const bh_se
                         double *signal)
 {
     bh_remarks *remarks = c->yielder->remarks;
+    const bool without_changes = c->yielder->without_changes;
     bh_yield yield = {.part = c->with->parts};
     c->yielder->remarks = NULL;
+    c->yielder->without_changes = true;
     bh_code code = BH_OK;
     if (arm->first) {
         code = make_pair(c, setting, arm, &yield);
@@ -166,6 +168,7 @@ void bh_collect_signals(bh_collecting *c, const bh_setting *setting, const bh_se
             code = bh_yield_make(c->yielder, &yield, c->err);
     }
     c->yielder->remarks = remarks;
+    c->yielder->without_changes = without_changes;
     bh_collect_fail(c, code);
     for (size_t i = 0; i < c->parts; i++)
         signal[i] = code ? (double)NAN : yield.part[i].signal;

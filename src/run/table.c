@@ -157,7 +157,8 @@ static bh_code fill(bh_table *table, const bh_evaluation *how, const bh_diags *s
     bh_evaluator evaluator = {.yielder = {.workspace = how->workspace ? how->workspace : own,
                                           .remarks = remarks,
                                           .cancelled = how->cancelled,
-                                          .asker = how->asker}};
+                                          .asker = how->asker,
+                                          .without_changes = how->without_changes}};
     bh_code code = BH_OK;
     if (!evaluator.yielder.workspace || !remarks || !make_rows(table, how->bins))
         code = out_of_memory(err);

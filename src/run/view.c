@@ -4,6 +4,7 @@
 
 #include "beamhours/physics/validity.h"
 #include "beamhours/run/resolution.h"
+#include "beamhours/run/systematic.h"
 #include "beamhours/run/taking.h"
 #include "beamhours/run/yield.h"
 
@@ -186,13 +187,15 @@ static bh_code set_way(bh_yielder *yielder, bh_view *view, bh_error *err)
 bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_setting_arm *arm,
                      bh_view *view, bh_error *err)
 {
-    *view = (bh_view){.setting = setting,
-                      .arm = arm,
-                      .list = &yielder->lists[setting->target - yielder->plan->targets],
-                      .process = bh_process_find(setting->process.text),
-                      .spec = bh_arm_acceptance(arm),
-                      .beam = setting->beam.particle_rate.value * setting->beam.fraction.value,
-                      .parts = 1};
+    *view =
+        (bh_view){.setting = setting,
+                  .arm = arm,
+                  .list = &yielder->lists[setting->target - yielder->plan->targets],
+                  .process = bh_process_find(setting->process.text),
+                  .spec = bh_arm_acceptance(arm),
+                  .without_changes = yielder->without_changes && !bh_rests_on_changes(setting, arm),
+                  .beam = setting->beam.particle_rate.value * setting->beam.fraction.value,
+                  .parts = 1};
     if (!view->process)
         return bh_fail(err, BH_EPLAN, "no process %s", setting->process.text);
     view->axis = arm->arm.shape == BH_SHAPE_RING ? (arm->arm.ring.from + arm->arm.ring.to) / 2

@@ -243,7 +243,7 @@ static bh_code half_current(const struct asking *a, bh_what_if *out, bh_error *e
 {
     double *u = uncertainties(a, out);
     const bh_plan *plan = with_half_current(a);
-    const bh_evaluation how = {.bins = false};
+    const bh_evaluation how = {.without_changes = true};
     if (!u || !plan)
         return no_memory(err);
     bh_table *half = bh_table_new(plan, &how, NULL, err);

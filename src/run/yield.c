@@ -172,6 +172,8 @@ void bh_yield_finish(const bh_yield *yield, bh_part *part)
     part->radiative = kept > 0 ? radiated / kept : (double)NAN;
     part->per_radian = part->per_radian / (2 * BH_STEP_ANGLE * radiated);
     part->per_momentum = part->per_momentum / (2 * BH_STEP_MOMENTUM * radiated);
+    if (view->without_changes)
+        part->per_radian = part->per_momentum = (double)NAN;
     part->cross_section /= yield->seen * part->solid_angle;
     part->point_cross_section /= yield->seen;
     part->signal = 0;

@@ -32,11 +32,13 @@ int bh_input_changes(const bh_arguments *arguments, bh_change *changes, char **k
  * earlier plan and table.  Returns 0, or 65 after writing every error and warning. */
 int bh_input_plan(bh_input *in, const bh_arguments *arguments);
 
-/* Evaluates in->plan into in->table.  Returns 0 or the exit status after saying why. */
-int bh_input_evaluate(bh_input *in, bool bins);
+/* Evaluates in->plan into in->table: with bins, without changes of rates, as `wanted` says. Returns
+ * 0 or the exit status after saying why. */
+int bh_input_evaluate(bh_input *in, const bh_evaluation *wanted);
 
 /* The usual way: open, plan, evaluate. */
-int bh_input_table(const char *name, const bh_arguments *arguments, bool bins, bh_input *in);
+int bh_input_table(const char *name, const bh_arguments *arguments, const bh_evaluation *wanted,
+                   bh_input *in);
 
 /* Writes "FILE:LINE:COLUMN: [warning: ]KEY: text", one a line, to `to`. */
 void bh_say_diags(FILE *to, const bh_diags *diags);

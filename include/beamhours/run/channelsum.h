@@ -31,7 +31,8 @@ typedef struct {
     bool trace;                  /* so few that 1e-4 of their sums is enough */
     bool radiated_only;          /* total and kept are not wanted, and then equal to radiated */
     bool bins;                   /* sums of the bins are wanted too */
-    bool sensitivities;          /* moved and boosted are wanted too */
+    bool sensitivities;          /* moved and boosted belong to it: what is fitted reaches so far */
+    bool without_changes;        /* but they are not wanted now, and 0 */
 } bh_channel_request;
 
 /* Over the whole acceptance or over one bin. */

@@ -21,6 +21,7 @@
     X(BH_WHY_NUCLEAR, "nuclear forces, left out, may change this by orders of magnitude") \
     X(BH_WHY_NO_WANT, "the setting asks for no goal, time, charge or counts")             \
     X(BH_WHY_NO_GOAL, "this arm has no goal")                                             \
+    X(BH_WHY_NOT_ASKED, "not asked for here")                                             \
     X(BH_WHY_NO_SIGNAL, "no signal would be recorded")
 
 typedef enum {

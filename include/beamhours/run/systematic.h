@@ -51,6 +51,9 @@ BH_CHECKED bh_code bh_systematics_prepare(bh_systematics *systematics, bh_yielde
 BH_CHECKED bh_code bh_systematic_arm(bh_systematics *systematics, const bh_arm_hours *arm,
                                      size_t parts, bh_effects *out, bh_error *err);
 
+/* Whether it needs the changes of the arm's rate with angle or momentum, of any of its parts. */
+bool bh_rests_on_changes(const bh_setting *setting, const bh_setting_arm *arm);
+
 /* Whether an uncertainty can be told of a row of this arm at `q2` [GeV2]: not where nuclear forces,
  * which are left out, rule (BH_NUCLEAR_RULES). */
 bool bh_systematic_known(const bh_view *view, double q2);

@@ -43,6 +43,8 @@ typedef struct {
     void *asker;
     const bh_progress *progress; /* told after each setting; NULL: not */
     bh_workspace *workspace;     /* kept by the caller; NULL: one for this evaluation alone */
+    bool without_changes; /* rate_change_per_mrad and rate_change_per_permille_momentum are not
+                             wanted: they stay empty, every other number is the same */
     size_t enough; /* 0: all rows; else the table ends with the setting that makes it so many rows
                       with a systematic uncertainty, and has no totals */
 } bh_evaluation;

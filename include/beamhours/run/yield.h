@@ -28,6 +28,8 @@ typedef struct {
     bh_workspace *workspace;
     bool (*cancelled)(void *asker); /* polled for each nuclide of each arm; NULL: never */
     void *asker;
+    bool without_changes;     /* of rates with angle and momentum: wanted only where the systematic
+                                 uncertainty rests on them */
     bool explaining;          /* contributions are wanted with cross sections, not rates alone */
     bh_remarks *remarks;      /* warnings go here; NULL: they are not wanted */
     bh_struck_list *lists;    /* of each target of the plan */
@@ -54,9 +56,10 @@ typedef struct {
     const bh_process *process;
     const char *beside; /* name of another particle in the beam, when it is meant; else NULL */
     bh_acceptance_spec spec;
-    bh_way way;   /* of the beam and out of the setting's target */
-    bool blocked; /* the beam does not come through what is to be seen of the sample */
-    bool stuck;   /* what is scattered along the arm's axis stops before it reaches the detector */
+    bh_way way;           /* of the beam and out of the setting's target */
+    bool blocked;         /* the beam does not come through what is to be seen of the sample */
+    bool without_changes; /* per_radian and per_momentum of its parts are NAN */
+    bool stuck; /* what is scattered along the arm's axis stops before it reaches the detector */
     double vertex_kinetic;         /* [MeV] of the beam, mean over the scatterer nuclei seen */
     double axis;                   /* [rad] polar angle of the arm's centre */
     double central_momentum;       /* [MeV/c] NAN where none is written and none follows */
