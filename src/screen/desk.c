@@ -196,7 +196,7 @@ void bh_desk_resize(bh_desk *desk, int rows, int columns)
 static void begin_job(bh_desk *d)
 {
     size_t first[MOST_VIEW], opened[MOST_OPEN];
-    bh_job job = {.first = first, .opened = opened};
+    bh_job job = {.first = first, .opened = opened, .changes = d->model.changes};
     bh_inquire_put_off(&d->model, d->worker);
     job.bytes = bh_model_text(&d->model, &job.length);
     job.first_count = bh_model_in_view(&d->model, first, MOST_VIEW);

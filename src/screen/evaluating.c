@@ -204,7 +204,10 @@ static bool prepare(struct doing *d, bh_error *err)
 {
     const size_t count = d->of->plan->setting_count;
     bh_worker *w = d->worker;
-    const bh_evaluation how = {.cancelled = overtaken, .asker = d, .workspace = w->workspaces[0]};
+    const bh_evaluation how = {.cancelled = overtaken,
+                               .asker = d,
+                               .workspace = w->workspaces[0],
+                               .without_changes = !d->job->changes};
     d->opened = bh_arena_take(d->arena, count + 1, sizeof *d->opened);
     d->steps = d->opened ? bh_stepwise_new(d->of->plan, &how, w->results, err) : NULL;
     for (size_t i = 0; d->steps && i < d->job->opened_count; i++)

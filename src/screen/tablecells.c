@@ -151,6 +151,27 @@ static void set_widths(bh_model *model)
     }
 }
 
+static bool is_of_changes(int column)
+{
+    return column == BH_COL_PER_MRAD || column == BH_COL_PER_PERMILLE;
+}
+
+/* They are computed as soon as they are in view, or the rows are in their order. */
+static void mind_changes(bh_model *model)
+{
+    const bh_table_view *v = &model->table;
+    const bh_arrangement places = bh_arrange(model);
+    bool seen = is_of_changes(v->order);
+    bh_column_places p;
+    if (model->changes)
+        return;
+    bh_place_columns(model, &places, &p);
+    for (int i = 0; i < p.count && !seen; i++)
+        seen = p.index[i] >= 0 && is_of_changes(v->columns[p.index[i]].column);
+    model->changes = seen;
+    model->job_due = model->job_due || seen;
+}
+
 void bh_table_columns(bh_model *model)
 {
     bh_table_view *v = &model->table;
@@ -165,6 +186,7 @@ void bh_table_columns(bh_model *model)
     if (v->column >= v->column_count)
         v->column = 0;
     set_widths(model);
+    mind_changes(model);
 }
 
 static const char *word_of(const bh_model *model, const bh_table_row *row, int column)
@@ -203,7 +225,7 @@ void bh_table_cell(const bh_model *model, const bh_table_row *row, const bh_tabl
                        of->number[BH_COL_SOLID_ANGLE] > 0;
     if (word)
         (void)snprintf(out, BH_CELL_ROOM, "%.*s", BH_CELL_ROOM - 1, word);
-    else if (!known)
+    else if (!known || of->why[column->column] == BH_WHY_NOT_ASKED)
         (void)snprintf(out, BH_CELL_ROOM, "\u2026");
     else if (!isfinite(value))
         (void)snprintf(out, BH_CELL_ROOM, "-");
@@ -217,7 +239,8 @@ bool bh_table_changed(const bh_model *model, const bh_table_row *row, const bh_t
 {
     char now[BH_CELL_ROOM], before[BH_CELL_ROOM];
     const int c = column->column;
-    if (row->stale || !row->before || fabs(row->now->number[c] - row->before->number[c]) <= 0)
+    if (row->stale || !row->before || row->before->why[c] == BH_WHY_NOT_ASKED ||
+        fabs(row->now->number[c] - row->before->number[c]) <= 0)
         return false;
     bh_table_cell(model, row, column, false, now);
     bh_table_cell(model, row, column, true, before);

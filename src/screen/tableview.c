@@ -217,7 +217,7 @@ static void find_again(bh_model *model)
 
 static double relative(const bh_table_row *row, int column)
 {
-    if (!row->before)
+    if (!row->before || row->before->why[column] == BH_WHY_NOT_ASKED)
         return 0;
     const double a = row->before->number[column], b = row->now->number[column];
     if (isnan(a) || isnan(b))

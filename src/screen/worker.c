@@ -163,7 +163,8 @@ size_t bh_worker_begin(bh_worker *worker, const bh_job *job)
                       .first = copy_of(job->first, job->first_count),
                       .opened = copy_of(job->opened, job->opened_count),
                       .first_count = job->first_count,
-                      .opened_count = job->opened_count};
+                      .opened_count = job->opened_count,
+                      .changes = job->changes};
     if (!own.bytes || !own.first || !own.opened) {
         drop_job(&own);
         return 0;

@@ -167,6 +167,68 @@ static size_t compare(struct made *m, const char *text, bool bins)
     return bh_results_evaluated(m->results) - before;
 }
 
+static bool is_of_changes(int column)
+{
+    return column == BH_COL_PER_MRAD || column == BH_COL_PER_PERMILLE;
+}
+
+/* A cell that was not asked for is empty and says so; where the systematic uncertainty rests on it,
+ * and in every other column, it is the same to the last bit. */
+static void same_but_changes(const bh_plan *plan, const bh_row *row, const bh_row *full)
+{
+    const bh_setting *s = &plan->settings[row->setting];
+    const bool rests = bh_rests_on_changes(s, &s->arms[row->arm]);
+    for (int c = 0; c < BH_COLUMN_COUNT; c++) {
+        if (!is_of_changes(c) || rests) {
+            ck_assert_msg(memcmp(&row->number[c], &full->number[c], sizeof(double)) == 0, "%s",
+                          bh_column_at(c)->key);
+            ck_assert_int_eq(row->why[c], full->why[c]);
+            continue;
+        }
+        ck_assert(isnan(row->number[c]));
+        ck_assert(row->why[c] == BH_WHY_NOT_ASKED ||
+                  (row->why[c] == full->why[c] && isnan(full->number[c])));
+    }
+}
+
+START_TEST(changes_are_left_out_alone)
+{
+    struct made m = make();
+    bh_text text = demo_text(demos[_i]);
+    bh_diags *said = bh_diags_new();
+    bh_plan *plan = bh_plan_read(text.bytes, text.length, "plan", NULL, 0, m.library, said);
+    bh_stepwise *steps[2];
+    for (int k = 0; k < 2; k++) {
+        const bh_evaluation how = {
+            .workspace = m.workspace, .bins = true, .without_changes = k == 0};
+        steps[k] = bh_stepwise_new(plan, &how, m.results, NULL);
+        ck_assert_ptr_nonnull(steps[k]);
+        for (size_t s = 0; s < plan->setting_count; s++) {
+            ck_assert(!bh_stepwise_recall(steps[k], s, true)); /* the others are not these */
+            ck_assert(!bh_stepwise_evaluate(steps[k], s, true, NULL));
+        }
+    }
+    for (size_t s = 0; s < plan->setting_count; s++) {
+        const bh_setting_rows rows = bh_stepwise_rows(steps[0], s);
+        const bh_setting_rows full = bh_stepwise_rows(steps[1], s);
+        size_t bins = 0;
+        for (size_t a = 0; a < plan->settings[s].arm_count; a++) {
+            same_but_changes(plan, &rows.whole[a], &full.whole[a]);
+            bins += (size_t)plan->settings[s].arms[a].arm.bins;
+        }
+        for (size_t b = 0; b < bins; b++)
+            same_but_changes(plan, &rows.bins[b], &full.bins[b]);
+        ck_assert(fabs(rows.full - full.full) <= 0);
+    }
+    for (int k = 0; k < 2; k++)
+        bh_stepwise_free(steps[k]);
+    bh_plan_free(plan);
+    bh_diags_free(said);
+    bh_text_free(&text);
+    unmake(&m);
+}
+END_TEST
+
 START_TEST(is_the_table)
 {
     struct made m = make();
@@ -280,6 +342,7 @@ int main(void)
     tcase_set_timeout(tests, 120);
     tcase_add_loop_test(tests, is_the_table, 0, COUNT(demos));
     tcase_add_loop_test(tests, is_the_table_by_all_hands, 0, COUNT(demos));
+    tcase_add_loop_test(tests, changes_are_left_out_alone, 0, COUNT(demos));
     tcase_add_loop_test(tests, touches_no_more, 0, COUNT(changes));
     tcase_add_test(tests, can_be_cancelled);
     return run_suite("run/stepwise", tests);

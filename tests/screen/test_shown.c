@@ -13,6 +13,8 @@
 #include "beamhours/screen/model.h"
 #include "driven.h"
 
+#define TEN_RIGHT "<Right><Right><Right><Right><Right><Right><Right><Right><Right><Right>"
+
 static const struct {
     const char *name, *demo, *keys;
     int rows, columns;
@@ -83,6 +85,9 @@ static const struct {
     {"columns-further", "hydrogen-separation",
      "<Tab><Right><Right><Right><Right><Right><Right><Right><Right><Right><Right>", 24, 80, false,
      6},
+    /* computed when they come into view, and the table is in their order at once */
+    {"columns-of-changes", "hydrogen-separation",
+     "<Tab>" TEN_RIGHT TEN_RIGHT TEN_RIGHT TEN_RIGHT "o", 24, 80, false, 12},
     {"large", "hydrogen-separation", "", 60, 200, false, 6},
     /* warnings stay while something is typed; a change of the last digits, as that of Q2 here, is
      * none that is shown */

@@ -17,6 +17,7 @@ typedef struct {
     size_t length; /* [bytes] */
     size_t *first, *opened;
     size_t first_count, opened_count;
+    bool changes;
 } bh_own_job;
 
 typedef struct {

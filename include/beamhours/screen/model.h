@@ -183,6 +183,7 @@ typedef struct {
     bool rescued; /* the text is not that of the file, though it was not changed here */
     bool fresh;   /* there is no file yet */
     bool job_due; /* a job is to begin */
+    bool changes; /* of rates with angle and momentum came into view, and are computed since */
     bool spoke;   /* a note came that is not drawn yet */
     bool abandon; /* the job that was begun is of no use any more */
     bool trying;  /* trial is what the text would become */

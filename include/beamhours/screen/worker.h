@@ -26,6 +26,7 @@ typedef struct {
     size_t length; /* [bytes] */
     const size_t *first, *opened;
     size_t first_count, opened_count;
+    bool changes; /* of rates with angle and momentum are wanted too */
 } bh_job;
 
 /* Begins it, abandoning the one before.  Returns its number, 0 when there is no memory. */
