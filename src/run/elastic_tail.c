@@ -12,13 +12,15 @@ enum { POINTS = 8 };
 struct sides {
     double before, after;       /* [1] b t */
     double xi_before, xi_after; /* [MeV] */
+    double gamma;               /* [1] 1 / Gamma(1 + before + after) */
+    double line;                /* [ub/sr] at the energy of the beam */
 };
 
 static struct sides sides_of(const bh_radiated_request *r, double angle)
 {
     const bh_particle *beam = r->channel.encounter.beam;
     const double kinetic = r->channel.encounter.kinetic;
-    struct sides s = {0, 0, 0, 0};
+    struct sides s = {0};
     double weight = 0;
     for (size_t i = 0; r->way && i < r->count; i++) {
         const bh_vertex *v = &r->vertices[i];
@@ -32,8 +34,11 @@ static struct sides sides_of(const bh_radiated_request *r, double angle)
         weight += v->weight;
     }
     if (weight > 0)
-        s = (struct sides){s.before / weight, s.after / weight, s.xi_before / weight,
-                           s.xi_after / weight};
+        s = (struct sides){.before = s.before / weight,
+                           .after = s.after / weight,
+                           .xi_before = s.xi_before / weight,
+                           .xi_after = s.xi_after / weight};
+    s.gamma = 1 / tgamma(1 + s.before + s.after);
     return s;
 }
 
@@ -73,33 +78,34 @@ static struct losses losses_of(const bh_encounter *x, double angle, double kinet
     return l;
 }
 
-/* What further soft photons, in the nucleus and beside it, leave. */
-static double softened(const bh_encounter *x, const struct sides *s, double angle,
-                       const struct losses *l)
+/* What further soft photons, in the nucleus (`soft`) and beside it, leave. */
+static double softened(const struct sides *s, const struct losses *l, double soft)
 {
-    const double kinetic = l->left - x->beam->mass;
-    double soft;
-    bh_radiative_tail_soft(x, angle, 1, &kinetic, &soft);
     return soft * pow(l->before / l->energy, s->before) *
-           pow(l->lost / (l->left + l->lost), s->after) / tgamma(1 + s->before + s->after);
+           pow(l->lost / (l->left + l->lost), s->after) * s->gamma;
 }
 
-/* [ub/sr/MeV] of an electron found with `kinetic`, `lost` below the line if lost behind the vertex.
- */
-static double electron(const bh_radiated_request *r, const struct sides *s, double angle,
-                       double kinetic, double lost)
+/* A tail at some energies. */
+struct tail {
+    const bh_radiated_request *request;
+    double angle;                          /* [rad] */
+    double kinetic[POINTS], lost[POINTS];  /* [MeV] of what is found; below the line */
+    double internal[POINTS], soft[POINTS]; /* [ub/sr/MeV] [1] */
+};
+
+/* [ub/sr/MeV] of an electron found with kinetic[i], lost[i] below the line if lost behind the
+ * vertex. */
+static double electron(const struct tail *t, const struct sides *s, int i)
 {
-    const bh_encounter *x = &r->channel.encounter;
-    const struct losses l = losses_of(x, angle, kinetic, lost);
-    double internal;
+    const bh_encounter *x = &t->request->channel.encounter;
+    const struct losses l = losses_of(x, t->angle, t->kinetic[i], t->lost[i]);
     if (!(l.before > 0 && l.before < l.energy))
         return 0;
-    bh_radiative_tail_peaking(x, angle, 1, &kinetic, &internal);
-    const double external = l.stretch * sigma_at(&r->channel, x->kinetic - l.before, angle) *
+    const double external = l.stretch *
+                                sigma_at(&t->request->channel, x->kinetic - l.before, t->angle) *
                                 emitted(s->before, s->xi_before, l.before, l.energy) +
-                            sigma_at(&r->channel, x->kinetic, angle) *
-                                emitted(s->after, s->xi_after, lost, l.left + lost);
-    return (internal + external) * softened(x, s, angle, &l);
+                            s->line * emitted(s->after, s->xi_after, l.lost, l.left + l.lost);
+    return (t->internal[i] + external) * softened(s, &l, t->soft[i]);
 }
 
 /* What loops and vertices change, so that the tail starts where the soft photons end. */
@@ -114,15 +120,9 @@ static double joined(const bh_radiated_request *r, const struct sides *s, double
         return 1;
     const double kinetic = at.event.scattered_kinetic - at.soft;
     const struct losses l = losses_of(x, angle, kinetic, at.soft);
-    return l.before > 0 ? at.factor / softened(x, s, angle, &l) : 1;
-}
-
-static double muon(const bh_radiated_request *r, double angle, double kinetic)
-{
-    double tail, soft;
-    bh_radiative_tail_exact(&r->channel.encounter, angle, 1, &kinetic, &tail);
-    bh_radiative_tail_soft(&r->channel.encounter, angle, 1, &kinetic, &soft);
-    return tail * soft;
+    double soft;
+    bh_radiative_tail_soft(x, angle, 1, &kinetic, &soft);
+    return l.before > 0 ? at.factor / softened(s, &l, soft) : 1;
 }
 
 static bool tails(const bh_radiated_request *r)
@@ -145,15 +145,24 @@ double bh_elastic_tail(const bh_radiated_request *request, double angle, double 
     to = fmin(to, event.scattered_kinetic * (1 - 1e-6));
     if (!(from > 0 && from < to))
         return 0;
-    const struct sides s = sides_of(request, angle);
+    struct tail t = {.request = request, .angle = angle};
     const double middle = log(from * to) / 2, span = log(to / from) / 2;
-    double sum = 0;
     for (int i = 0; i < POINTS; i++) {
-        const double lost = exp(middle + span * (i % 2 ? -x[i / 2] : x[i / 2]));
-        const double kinetic = event.scattered_kinetic - lost;
-        sum +=
-            w[i / 2] * span * lost *
-            (light ? electron(request, &s, angle, kinetic, lost) : muon(request, angle, kinetic));
+        t.lost[i] = exp(middle + span * (i % 2 ? -x[i / 2] : x[i / 2]));
+        t.kinetic[i] = event.scattered_kinetic - t.lost[i];
     }
+    const bh_encounter *e = &request->channel.encounter;
+    (light ? bh_radiative_tail_peaking : bh_radiative_tail_exact)(e, angle, POINTS, t.kinetic,
+                                                                  t.internal);
+    bh_radiative_tail_soft(e, angle, POINTS, t.kinetic, t.soft);
+    double sum = 0;
+    struct sides s = {0};
+    if (light) {
+        s = sides_of(request, angle);
+        s.line = sigma_at(&request->channel, e->kinetic, angle);
+    }
+    for (int i = 0; i < POINTS; i++)
+        sum +=
+            w[i / 2] * span * t.lost[i] * (light ? electron(&t, &s, i) : t.internal[i] * t.soft[i]);
     return light ? sum * joined(request, &s, angle) : sum;
 }

@@ -126,6 +126,7 @@ const bh_channel_sum *bh_elastic_sums(bh_yielder *yielder, const bh_view *view,
     bh_channel_request request = bh_view_request(yielder, view, of->channel, of->way, of->count);
     bh_radiated factor;
     radiated.signal = of->signal;
+    radiated.unboosted = view->without_changes;
     bh_radiated_make(&radiated, &factor);
     request.radiated = &factor;
     request.sensitivities = of->signal && !of->trace;

@@ -211,7 +211,7 @@ static void set_shift(const bh_radiated_request *r, double angle, double kinetic
         bh_channel there = r->channel;
         bh_event event;
         boost_channel(&there, b);
-        out->shift[b][i] = b && r->signal && event_at(&there, angle, &event)
+        out->shift[b][i] = b && r->signal && !r->unboosted && event_at(&there, angle, &event)
                                ? bh_channel_kinetic(&there, &event) - kinetic
                                : 0;
     }
@@ -330,7 +330,7 @@ static void set_boosted(const bh_radiated_request *r, double angle, bh_radiated 
         out->boosted[b] = 1;
     same.line = r->channel; /* the reference lies below the nuclide's own line */
     same.gate = (bh_gate){.cut = out->reference, .to = (double)INFINITY, .given = true};
-    if (!r->signal || !bh_radiated_at(&same, angle, &here) || !(here.factor > 0))
+    if (!r->signal || r->unboosted || !bh_radiated_at(&same, angle, &here) || !(here.factor > 0))
         return;
     for (int b = BH_BOOSTED_DOWN; b < BH_BOOSTS; b++) {
         bh_radiated_request boosted = same;

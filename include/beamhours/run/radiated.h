@@ -26,6 +26,7 @@ typedef struct {
     bh_channel line;    /* the scatterer's, from which the cut counts */
     bh_gate gate;
     bool signal;               /* nuclei of the scatterer itself: all inside the cut is theirs */
+    bool unboosted;            /* other momenta of the beam are not asked for */
     bh_interval polar;         /* [rad] the angles of interest */
     const bh_way *way;         /* NULL: nothing is in the way */
     const bh_vertex *vertices; /* where the nuclei are */

@@ -223,7 +223,9 @@ static double radiator(double log1, double v)
     return log1 * (1.0 - v + 0.75 * v * v);
 }
 
-static double peaked(shape_function *shape, const bh_encounter *x, double angle, double kinetic)
+/* `line`: the elastic cross section at the energy of the beam, the same for all of a tail. */
+static double peaked(shape_function *shape, const bh_encounter *x, double angle, double line,
+                     double kinetic)
 {
     if (kinetic <= 0.0 || !radiates(x))
         return 0.0;
@@ -233,22 +235,29 @@ static double peaked(shape_function *shape, const bh_encounter *x, double angle,
         return 0.0;
     const double first =
         k.stretch * elastic(x, E - k.before, angle) * shape(k.log1, k.before / E) / k.before;
-    const double second = elastic(x, E, angle) * shape(k.log1, k.after / (Es + k.after)) / k.after;
+    const double second = line * shape(k.log1, k.after / (Es + k.after)) / k.after;
     return ALPHA_PI * (first + second);
+}
+
+static double line_of(const bh_encounter *x, double angle)
+{
+    return elastic(x, x->kinetic + x->beam->mass, angle);
 }
 
 void bh_radiative_tail_peaking(const bh_encounter *encounter, double angle, size_t n,
                                const double *kinetic, double *tail)
 {
+    const double line = n ? line_of(encounter, angle) : 0.0;
     for (size_t i = 0; i < n; i++)
-        tail[i] = peaked(almost_real, encounter, angle, kinetic[i]);
+        tail[i] = peaked(almost_real, encounter, angle, line, kinetic[i]);
 }
 
 void bh_radiative_tail_equivalent(const bh_encounter *encounter, double angle, size_t n,
                                   const double *kinetic, double *tail)
 {
+    const double line = n ? line_of(encounter, angle) : 0.0;
     for (size_t i = 0; i < n; i++)
-        tail[i] = peaked(radiator, encounter, angle, kinetic[i]);
+        tail[i] = peaked(radiator, encounter, angle, line, kinetic[i]);
 }
 
 void bh_radiative_tail_soft(const bh_encounter *encounter, double angle, size_t n,
