@@ -103,10 +103,19 @@ static void at_scattered(const frame *f, double angle, bh_branch branch, bh_even
     }
     const double pp2 = x.p_scattered * x.p_scattered;
     x.p_recoil = sqrt(x.recoil * (x.recoil + 2.0 * M));
-    x.recoil_angle = x.recoil > 0.0 ? atan2(x.p_scattered * sn, f->back * x.recoil) : 0.5 * BH_PI;
+    x.recoil_angle = (double)NAN;
     x.transverse2 = pp2 * D * share / (x.recoil + 2.0 * M);
     x.slope = pp2 / root;
     finish(f, &x, out);
+}
+
+/* Apart, as it takes as long as all the rest. */
+static void add_recoil_angle(const frame *f, bh_event *e)
+{
+    const double sn = sin(e->scattered_angle);
+    e->recoil_angle = e->recoil_kinetic > 0.0
+                          ? atan2(e->scattered_momentum * sn, f->back * e->recoil_kinetic)
+                          : 0.5 * BH_PI;
 }
 
 /* From the recoil's direction, cos^2 + sin^2 = 1 given apart because either may be tiny. */
@@ -188,6 +197,7 @@ bh_code bh_kinematics_scattered(const bh_collision *in, double angle, bh_branch 
         return bh_fail(err, BH_EDOMAIN, BH_SAY_KINEMATICS_ONE_BRANCH, in->mass, in->target);
     const frame f = frame_of(in);
     at_scattered(&f, angle, branch, out);
+    add_recoil_angle(&f, out);
     return BH_OK;
 }
 
@@ -197,6 +207,11 @@ void bh_kinematics_batch(const bh_collision *in, size_t n, const double *angle, 
     const frame f = frame_of(in);
     for (size_t i = 0; i < n; i++)
         at_scattered(&f, angle[i], branch, &out[i]);
+}
+
+bool bh_kinematics_in_range(const bh_collision *in)
+{
+    return !check(in, NULL);
 }
 
 bh_code bh_kinematics_recoil(const bh_collision *in, double angle, bh_event *out, bh_error *err)

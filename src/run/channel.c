@@ -47,18 +47,34 @@ bh_code bh_channel_event(const bh_channel *channel, double angle, bh_event *even
                            : bh_kinematics_scattered(&in, angle, channel->branch, event, err);
 }
 
+/* Fills the events that exist, and where each stands; returns how many there are. */
+static size_t events_of(const bh_channel *channel, size_t n, const double *angle, bh_event *event,
+                        size_t *place)
+{
+    const bh_collision in = collision_of(channel);
+    const double largest = bh_channel_largest_angle(channel);
+    bool all = !channel->recoil && bh_kinematics_in_range(&in) &&
+               (channel->branch == BH_BRANCH_FAST || in.mass > in.target);
+    size_t m = 0;
+    for (size_t i = 0; i < n; i++)
+        all = all && angle[i] >= 0 && angle[i] <= largest;
+    if (all)
+        bh_kinematics_batch(&in, n, angle, channel->branch, event);
+    for (size_t i = 0; i < n; i++)
+        if (all || (angle[i] <= largest && !bh_channel_event(channel, angle[i], &event[m], NULL)))
+            place[m++] = i;
+    return m;
+}
+
 static void eval_batch(const bh_channel *channel, size_t n, const double *angle, double *sigma,
                        double *momentum)
 {
-    const double largest = bh_channel_largest_angle(channel);
     bh_event event[BATCH];
     double computed[BATCH];
-    size_t place[BATCH] = {0}, m = 0;
-    for (size_t i = 0; i < n; i++) {
+    size_t place[BATCH];
+    const size_t m = events_of(channel, n, angle, event, place);
+    for (size_t i = 0; i < n; i++)
         sigma[i] = momentum[i] = 0;
-        if (angle[i] <= largest && !bh_channel_event(channel, angle[i], &event[m], NULL))
-            place[m++] = i;
-    }
     channel->process->cross_section(&channel->encounter, m, event, computed);
     for (size_t k = 0; k < m; k++) {
         const bh_event *e = &event[k];

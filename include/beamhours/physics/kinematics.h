@@ -2,6 +2,7 @@
 #ifndef BH_PHYSICS_KINEMATICS_H
 #define BH_PHYSICS_KINEMATICS_H
 
+#include <stdbool.h>
 #include <stddef.h>
 
 #include "beamhours/base/error.h"
@@ -60,11 +61,15 @@ BH_CHECKED bh_code bh_kinematics_recoil(const bh_collision *in, double angle, bh
 BH_CHECKED bh_code bh_kinematics_q2(const bh_collision *in, double q2, bh_event *out,
                                     bh_error *err);
 
-/* The same for n values of `angle` [rad] of one collision, without any check: angles 0 to the
- * largest, BH_BRANCH_SLOW only for mass > target.  For inner loops; equal to the above bit for bit.
- */
+/* Events for n values of `angle` [rad] of one collision, without any check: angles 0 to the
+ * largest, BH_BRANCH_SLOW only for mass > target.  For inner loops; equal to those of
+ * bh_kinematics_scattered bit for bit, but for recoil_angle, which is NAN: it would take as long as
+ * all the rest. */
 void bh_kinematics_batch(const bh_collision *in, size_t n, const double *angle, bh_branch branch,
                          bh_event *out);
+
+/* Whether masses and kinetic energy are in range. */
+bool bh_kinematics_in_range(const bh_collision *in);
 
 /* The event at virtual-photon polarisation `epsilon` [1]; the message names the range that the
  * energy allows, from head on to forward. */
