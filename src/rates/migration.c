@@ -4,6 +4,7 @@
 
 #include <math.h>
 #include <stdbool.h>
+#include <stddef.h>
 
 #include "beamhours/units/constants.h"
 
@@ -139,37 +140,123 @@ static void set_points(struct cell *c)
         c->weight[i] /= sum;
 }
 
+static double slope_within(const bh_migration *m, int i, double slope)
+{
+    const double width = m->edges[i + 1] - m->edges[i];
+    const double most = fmin(steepest_cell / width, steepest_sigma / m->sigma);
+    return fmin(fmax(slope, -most), most);
+}
+
 static struct cell cell_of(const bh_migration *m, int i, double slope)
 {
     struct cell c = {.from = m->edges[i], .to = m->edges[i + 1], .sigma = m->sigma};
-    const double most = fmin(steepest_cell / (c.to - c.from), steepest_sigma / m->sigma);
-    c.slope = fmin(fmax(slope, -most), most);
+    c.slope = slope_within(m, i, slope);
     set_points(&c);
     return c;
 }
 
+/* --- cells that are alike --- */
+
+static bool equal_widths(const bh_migration *m)
+{
+    const double width = (m->edges[m->cells] - m->edges[0]) / m->cells;
+    for (int i = 0; i < m->cells; i++)
+        if (fabs(m->edges[i + 1] - m->edges[i] - width) > 1e-9 * width)
+            return false;
+    return true;
+}
+
+/* Lagrange's polynomials through the slopes that a likeness has, at `slope`. */
+static void lagrange(const bh_migration_likeness *l, double slope, double *part)
+{
+    for (int k = 0; k < BH_MIGRATION_SLOPES; k++) {
+        part[k] = 1;
+        for (int i = 0; i < BH_MIGRATION_SLOPES; i++)
+            if (i != k)
+                part[k] *= (slope - l->slope[i]) / (l->slope[k] - l->slope[i]);
+    }
+}
+
+void bh_migration_compare(const bh_migration *m, const double *slope, bh_migration_likeness *l)
+{
+    static const double too_much =
+        0.2; /* [1] of the density over a cell or a sigma, between slopes */
+    double least = HUGE_VAL, most = -HUGE_VAL;
+    l->alike = false;
+    if (!(m->sigma > 0) || m->cells < 2 * BH_MIGRATION_SLOPES || !equal_widths(m))
+        return;
+    for (int i = 0; i < m->cells; i++) {
+        const double s = slope_within(m, i, slope[i]);
+        least = fmin(least, s);
+        most = fmax(most, s);
+    }
+    const double width = m->edges[1] - m->edges[0], apart = most - least;
+    const double reach = ceil(furthest * m->sigma / width) + 1;
+    if (!(apart * (width + m->sigma) < too_much) || reach > BH_MIGRATION_FAR)
+        return;
+    l->alike = true;
+    l->reach = (int)reach;
+    const int middle = m->cells / 2;
+    for (int k = 0; k < BH_MIGRATION_SLOPES; k++) {
+        const double turn = BH_PI * (2 * k + 1) / (2 * BH_MIGRATION_SLOPES);
+        l->slope[k] = (least + most) / 2 - fmax(apart, 1e-9 / width) / 2 * cos(turn);
+        const struct cell c = cell_of(m, middle, l->slope[k]);
+        for (int n = 0; n < 2 * l->reach + 2; n++)
+            l->below[n][k] = measured_below(&c, c.from + (n - l->reach) * width);
+    }
+}
+
 /* --- columns of the matrix --- */
 
-void bh_migration_reach(const bh_migration *m, int from, double slope, bh_migration_column *column)
+/* What is measured below edge i of an event that belongs in a cell. */
+struct lookup {
+    const bh_migration *m;
+    const bh_migration_likeness *likeness; /* NULL: */
+    struct cell cell;
+    int from;
+    double part[BH_MIGRATION_SLOPES];
+};
+
+static double look_up(const struct lookup *x, int edge)
+{
+    const bh_migration_likeness *l = x->likeness;
+    if (!l)
+        return measured_below(&x->cell, x->m->edges[edge]);
+    const int n = edge - x->from + l->reach;
+    double sum = 0;
+    if (n < 0 || n > 2 * l->reach + 1)
+        return n > 0;
+    for (int k = 0; k < BH_MIGRATION_SLOPES; k++)
+        sum += x->part[k] * l->below[n][k];
+    return sum;
+}
+
+void bh_migration_reach(const bh_migration *m, const bh_migration_likeness *likeness, int from,
+                        double slope, bh_migration_column *column)
 {
     column->first = from;
     column->count = 1;
     column->share[0] = 1;
     if (!(m->sigma > 0) || m->cells == 1)
         return;
-    const struct cell c = cell_of(m, from, slope);
+    struct lookup x = {
+        .m = m, .likeness = likeness && likeness->alike ? likeness : NULL, .from = from};
+    if (x.likeness)
+        lagrange(x.likeness, slope_within(m, from, slope), x.part);
+    else
+        x.cell = cell_of(m, from, slope);
     const int last = m->cells - 1;
-    const double reach = furthest * m->sigma;
+    const double reach = furthest * m->sigma, begin = m->edges[from], end = m->edges[from + 1];
     int first = from;
-    while (first > 0 && m->edges[first] > c.from - reach)
+    while (first > 0 && m->edges[first] > begin - reach)
         first--;
     double sum = 0; /* what is measured below the cell at hand */
     int n = 0;
     for (int i = first; i <= last; i++) {
-        const double next = i == last ? 1 : fmax(sum, measured_below(&c, m->edges[i + 1]));
+        const double next = i == last ? 1 : fmin(fmax(sum, look_up(&x, i + 1)), 1);
         column->share[n++] = next - sum;
         sum = next;
-        if (m->edges[i + 1] >= c.to + reach)
+        if (m->edges[i + 1] >= end + reach)
             break;
     }
     column->first = first;
@@ -179,7 +266,7 @@ void bh_migration_reach(const bh_migration *m, int from, double slope, bh_migrat
 void bh_migration_shares(const bh_migration *m, int from, double slope, double *share)
 {
     bh_migration_column column = {.share = share};
-    bh_migration_reach(m, from, slope, &column);
+    bh_migration_reach(m, NULL, from, slope, &column);
     for (int i = column.count - 1; i >= 0; i--)
         share[column.first + i] = share[i];
     for (int i = 0; i < m->cells; i++)

@@ -9,6 +9,7 @@
 #include "beamhours/run/arriving.h"
 #include "beamhours/run/counted.h"
 #include "beamhours/run/energies.h"
+#include "beamhours/run/sampled.h"
 #include "beamhours/run/sum_key.h"
 #include "beamhours/run/sum_places.h"
 #include "beamhours/units/constants.h"
@@ -23,6 +24,7 @@ struct task {
     const bh_radiated *radiated; /* NULL: without radiation */
     int boost;                   /* BH_AS_IT_IS ... */
     bh_energies energies;
+    bh_sampled *sampled; /* of this channel and these energies */
     bh_counted *counted; /* what is kept under a resolution, and nothing else */
     bh_interval allowed[BH_MOST_ARRIVALS];
     bh_average_request request;
@@ -33,15 +35,19 @@ static void evaluate_batch(const struct task *t, size_t n, const double *theta, 
 {
     double momentum[BATCH], sigma[BATCH];
     bh_channel there = t->channel;
-    for (int k = 0; k < t->energies.count; k++) {
+    const double *known = bh_sampled_find(t->sampled, n, theta);
+    if (known)
+        memcpy(value, known, n * sizeof *value);
+    for (int k = 0; !known && k < t->energies.count; k++) {
         there.encounter.kinetic = t->energies.kinetic[k];
         bh_channel_eval(&there, n, theta, sigma, momentum);
         for (size_t i = 0; i < n; i++)
             value[i] = (k ? value[i] : 0) + t->energies.weight[k] * sigma[i];
     }
-    if (!t->radiated)
-        return;
-    bh_radiated_apply(t->radiated, t->boost, n, theta, value);
+    if (!known)
+        bh_sampled_keep(t->sampled, n, theta, value);
+    if (t->radiated)
+        bh_radiated_apply(t->radiated, t->boost, n, theta, value);
 }
 
 static void evaluate(void *context, size_t n, const double *theta, double *value)
@@ -61,13 +67,14 @@ static void evaluate_kept(void *context, size_t n, const double *theta, double *
 static const double trace_tolerance = 1e-4; /* [1] of sums over nuclei that are a trace */
 
 /* All but the energies and what is kept. */
-static void set_function(const bh_channel_request *r, struct task *t)
+static void set_function(const bh_channel_request *r, bh_sampled *sampled, struct task *t)
 {
     const double largest = bh_channel_largest_angle(&r->channel);
     t->channel = r->channel;
     t->radiated = NULL;
     t->boost = BH_AS_IT_IS;
     t->counted = NULL;
+    t->sampled = sampled;
     t->request = (bh_average_request){.function = evaluate,
                                       .context = t,
                                       .limit = largest < BH_PI ? largest : 0,
@@ -105,6 +112,7 @@ struct making {
     int parts;              /* the whole arm and its bins */
     bh_channel_request all; /* the same where the resolution lets everything through */
     bh_counted *counted;
+    bh_sampled sampled;
     double common; /* [ub/sr] as averages want it: of all events */
 };
 
@@ -223,6 +231,7 @@ static bh_code sum_boosted(struct making *m, const struct task *t, double weight
 static bh_code sum_task(struct making *m, const struct task *t, double weight, int boost,
                         bh_error *err)
 {
+    m->sampled.count = 0;
     if (boost)
         return sum_boosted(m, t, weight, boost, err);
     const bool only = m->request->radiated_only && !is_idle(m->request);
@@ -274,6 +283,7 @@ static bh_code sum_counted(struct making *m, struct task *t, int boost, bh_error
         bh_energies_of(c->vertices, c->count, boost, &t->energies);
         t->request.cut = true; /* nothing is kept of it */
         t->request.allowed_count = 0;
+        m->sampled.count = 0;
         code = sum_total(m, t, 1, err);
         m->common = bh_average_top(m->averages);
     }
@@ -296,7 +306,7 @@ static bh_code sum_counted(struct making *m, struct task *t, int boost, bh_error
 static bh_code sum_boost(struct making *m, bh_arriving arriving, int boost, bh_error *err)
 {
     struct task t;
-    set_function(m->request, &t);
+    set_function(m->request, &m->sampled, &t);
     if (m->counted->smearing == BH_SMEARED_SOME)
         return sum_counted(m, &t, boost, err);
     if (!m->leaver) {

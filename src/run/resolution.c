@@ -124,6 +124,7 @@ static void move(const bh_yield *yield, const struct kinds *kinds, struct cells 
     double counts[MOST_KINDS][MOST_CELLS], measured[MOST_KINDS][MOST_CELLS];
     double share[MOST_CELLS];
     bh_migration_column column = {.share = share};
+    bh_migration_likeness likeness;
     for (size_t k = 0; k < kinds->count; k++)
         memset(measured[k], 0, (size_t)cells * sizeof measured[k][0]);
     fill_counts(yield, kinds->at[0], 0.5, c, c->counts);
@@ -131,8 +132,9 @@ static void move(const bh_yield *yield, const struct kinds *kinds, struct cells 
     const double front = share_in_front(c, bins);
     for (size_t k = 0; k < kinds->count; k++)
         fill_counts(yield, kinds->at[k], front, c, counts[k]);
+    bh_migration_compare(&c->migration, c->slope, &likeness);
     for (int i = 0; i < cells; i++) {
-        bh_migration_reach(&c->migration, i, c->slope[i], &column);
+        bh_migration_reach(&c->migration, &likeness, i, c->slope[i], &column);
         for (size_t k = 0; k < kinds->count; k++)
             for (int n = 0; n < column.count; n++)
                 measured[k][column.first + n] += counts[k][i] * share[n];

@@ -20,7 +20,7 @@ static void move(const bh_migration *m, int from, double slope, double counts, d
 {
     double share[MOST];
     bh_migration_column column = {.share = share};
-    bh_migration_reach(m, from, slope, &column);
+    bh_migration_reach(m, NULL, from, slope, &column);
     for (int i = 0; i < column.count; i++)
         measured[column.first + i] += counts * share[i];
 }
@@ -171,6 +171,55 @@ START_TEST(narrow_resolutions_move_little)
 }
 END_TEST
 
+/* Slopes of cells that are alike, and whether what they share is made use of. */
+static const struct {
+    double sigma, least, most; /* [rad] [1/rad] */
+    bool alike;
+} likenesses[] = {{3e-3, -40, -20, true}, {3e-3, 0, 0, true},    {3e-3, -15, 15, true},
+                  {2e-4, -30, 30, true},  {2e-2, -9, -2, true},  {0.06, -2, 1, true},
+                  {0.5, -1, 1, false},    {3e-3, -90, 30, false}};
+
+/* Columns read between a few slopes are those of each slope, integrated by itself. */
+START_TEST(cells_that_are_alike)
+{
+    enum { CELLS = 24 };
+    double edges[CELLS + 1], slope[CELLS], share[2][CELLS];
+    bh_migration_likeness likeness;
+    set_edges(edges, CELLS, 0.4, 0.4 + 3e-3 * CELLS);
+    const bh_migration m = {CELLS, edges, likenesses[_i].sigma};
+    for (int i = 0; i < CELLS; i++)
+        slope[i] = likenesses[_i].least +
+                   (likenesses[_i].most - likenesses[_i].least) * ((i * 7) % CELLS) / (CELLS - 1.0);
+    bh_migration_compare(&m, slope, &likeness);
+    ck_assert_int_eq(likeness.alike, likenesses[_i].alike);
+    for (int i = 0; i < CELLS; i++) {
+        bh_migration_column column[2] = {{.share = share[0]}, {.share = share[1]}};
+        bh_migration_reach(&m, NULL, i, slope[i], &column[0]);
+        bh_migration_reach(&m, &likeness, i, slope[i], &column[1]);
+        ck_assert_int_eq(column[0].first, column[1].first);
+        ck_assert_int_eq(column[0].count, column[1].count);
+        double sum = 0;
+        for (int n = 0; n < column[0].count; n++) {
+            ck_assert_double_eq_tol(share[0][n], share[1][n], 1e-8);
+            ck_assert_double_ge(share[1][n], 0);
+            sum += share[1][n];
+        }
+        ck_assert_double_eq_tol(sum, 1, 1e-14);
+    }
+}
+END_TEST
+
+START_TEST(cells_that_differ)
+{
+    double edges[25], slope[24] = {0};
+    bh_migration_likeness likeness;
+    set_edges(edges, 24, 0.4, 0.5);
+    edges[7] += 1e-6;
+    bh_migration_compare(&(bh_migration){24, edges, 3e-3}, slope, &likeness);
+    ck_assert(!likeness.alike);
+}
+END_TEST
+
 /* A steep density, smeared event by event: chi^2 of all bins for fixed seeds. */
 START_TEST(as_a_monte_carlo_has_it)
 {
@@ -234,6 +283,8 @@ int main(void)
 {
     TCase *tests = tcase_create("migration");
     tcase_add_loop_test(tests, columns_are_integrals, 0, COUNT(closed));
+    tcase_add_loop_test(tests, cells_that_are_alike, 0, COUNT(likenesses));
+    tcase_add_test(tests, cells_that_differ);
     tcase_add_test(tests, slopes_of_exponentials);
     tcase_add_test(tests, slopes_without_neighbours);
     tcase_add_loop_test(tests, counts_are_conserved, 0, 6);

@@ -2,6 +2,8 @@
 #ifndef BH_RATES_MIGRATION_H
 #define BH_RATES_MIGRATION_H
 
+#include <stdbool.h>
+
 #include "beamhours/base/error.h"
 
 /*
@@ -37,9 +39,26 @@ typedef struct {
     double *share; /* [1] as many as count; room for all cells */
 } bh_migration_column;
 
+enum { BH_MIGRATION_SLOPES = 4, BH_MIGRATION_FAR = 128 };
+
+/* What is measured below the edges beside a cell, where all cells are equal: the same for each but
+ * for its slope, between few of which it is a polynomial. */
+typedef struct {
+    bool alike;                        /* false: of no use, cells or their slopes differ too much */
+    int reach;                         /* [1] cells on either side */
+    double slope[BH_MIGRATION_SLOPES]; /* [1/rad] */
+    double below[2 * BH_MIGRATION_FAR + 2][BH_MIGRATION_SLOPES]; /* [1] share; from the edge `reach`
+                                                                     before the cell's own */
+} bh_migration_likeness;
+
+/* Fills `likeness` for slopes [1/rad], one for each cell; shares from it are the same to 1e-8. */
+void bh_migration_compare(const bh_migration *migration, const double *slope,
+                          bh_migration_likeness *likeness);
+
 /* The same without the zeros: fills first, count and share (whose room is the caller's) with the
- * cells within reach of `from`, spread with slope [1/rad]. */
-void bh_migration_reach(const bh_migration *migration, int from, double slope,
-                        bh_migration_column *column);
+ * cells within reach of `from`, spread with slope [1/rad]; `likeness` of these cells, slope among
+ * those that it was made for, or NULL. */
+void bh_migration_reach(const bh_migration *migration, const bh_migration_likeness *likeness,
+                        int from, double slope, bh_migration_column *column);
 
 #endif
