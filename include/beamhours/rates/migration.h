@@ -51,7 +51,7 @@ typedef struct {
                                                                      before the cell's own */
 } bh_migration_likeness;
 
-/* Fills `likeness` for slopes [1/rad], one for each cell; shares from it are the same to 1e-8. */
+/* Fills `likeness` for slope [1/rad], one for each cell; shares from it are the same to 1e-8. */
 void bh_migration_compare(const bh_migration *migration, const double *slope,
                           bh_migration_likeness *likeness);
 
