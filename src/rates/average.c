@@ -6,6 +6,7 @@
 
 #include "beamhours/rates/prepared.h"
 #include "beamhours/rates/quadrature.h"
+#include "beamhours/rates/series.h"
 
 /* Polynomials are asked for more digits than the sums, so that the sums decide the error. */
 #define FIT_SHARE        0.01
@@ -18,6 +19,8 @@
 
 struct bh_average_workspace {
     bh_interpolant *interpolant;
+    bh_series series; /* the same, where `one_series` */
+    bool one_series;
     bh_prepared prepared;
 };
 
@@ -55,7 +58,9 @@ bh_code bh_average_fit(const bh_average_request *request, bh_interval polar,
                                            .limit = request->limit,
                                            .tolerance = FIT_SHARE * tolerance_of(request),
                                            .common = request->common};
-    return bh_interpolant_fit(workspace->interpolant, &wanted, err);
+    const bh_code code = bh_interpolant_fit(workspace->interpolant, &wanted, err);
+    workspace->one_series = !code && bh_series_of(workspace->interpolant, &workspace->series);
+    return code;
 }
 
 /* The interpolant as a quadrature wants it. */
@@ -68,6 +73,7 @@ static void read_interpolant(void *context, size_t n, const double *versine, dou
 typedef struct {
     const bh_average_request *request;
     bh_interpolant *interpolant;
+    const bh_series *series; /* NULL: it is no single one */
     bh_prepared *prepared;
 } summing;
 
@@ -97,9 +103,20 @@ static bh_integrand integrand_of(const summing *s, const bh_acceptance_part *par
                           .least = least_of(s, part)};
 }
 
+/* By the moments of the part, where they will do. */
+static bh_quadrature sum_whole(const summing *s, bh_prepared_part *prepared, const bh_integrand *f)
+{
+    if (s->series && prepared->rule.fine > 0) {
+        bh_moments_of(&prepared->rule, s->series, &prepared->moments);
+        const bh_quadrature q = bh_series_sum(s->series, &prepared->moments, &prepared->part, f);
+        if (q.converged)
+            return q;
+    }
+    return bh_quadrature_prepared(&prepared->part, &prepared->rule, f);
+}
+
 /* What of the part lies within `polar`. */
-static bh_quadrature sum_within(const summing *s, const bh_prepared_part *prepared,
-                                bh_interval polar)
+static bh_quadrature sum_within(const summing *s, bh_prepared_part *prepared, bh_interval polar)
 {
     const bh_acceptance_part *part = &prepared->part;
     const bh_integrand f = integrand_of(s, part);
@@ -108,8 +125,7 @@ static bh_quadrature sum_within(const summing *s, const bh_prepared_part *prepar
         return (bh_quadrature){0, 0, true};
     if (part->polar.from == part->polar.to)
         return sum_point(s, part);
-    return whole ? bh_quadrature_prepared(part, &prepared->rule, &f)
-                 : bh_quadrature_polar(part, polar, &f);
+    return whole ? sum_whole(s, prepared, &f) : bh_quadrature_polar(part, polar, &f);
 }
 
 static bh_interval up_to_limit(const bh_average_request *request, bh_interval polar)
@@ -119,8 +135,7 @@ static bh_interval up_to_limit(const bh_average_request *request, bh_interval po
     return polar;
 }
 
-static double sum_kept(const summing *s, const bh_prepared_part *part, double total,
-                       bool *converged)
+static double sum_kept(const summing *s, bh_prepared_part *part, double total, bool *converged)
 {
     const bh_average_request *r = s->request;
     const bh_interval all = up_to_limit(r, part->part.polar);
@@ -140,7 +155,7 @@ static double sum_kept(const summing *s, const bh_prepared_part *part, double to
 }
 
 /* Adds the pieces that lie in the part; each is as good as the tolerance asks of all of it. */
-static bh_average sum_pieces(const summing *s, const bh_prepared_part *part)
+static bh_average sum_pieces(const summing *s, bh_prepared_part *part)
 {
     const bh_average_request *r = s->request;
     const bh_interval all = up_to_limit(r, part->part.polar);
@@ -163,7 +178,7 @@ static bh_average sum_pieces(const summing *s, const bh_prepared_part *part)
     return out;
 }
 
-static bh_average sum_part(const summing *s, const bh_prepared_part *part)
+static bh_average sum_part(const summing *s, bh_prepared_part *part)
 {
     if (s->request->cut && s->request->kept_only)
         return sum_pieces(s, part);
@@ -214,7 +229,10 @@ bh_code bh_average_sum(const bh_acceptance *acceptance, const bh_average_request
 {
     if (!bh_interpolant_covers(workspace->interpolant, acceptance->whole.polar))
         return bh_fail(err, BH_EDOMAIN, "the acceptance reaches outside the fitted polar angles");
-    const summing s = {request, workspace->interpolant, &workspace->prepared};
+    const summing s = {.request = request,
+                       .interpolant = workspace->interpolant,
+                       .series = workspace->one_series ? &workspace->series : NULL,
+                       .prepared = &workspace->prepared};
     if (!out->bins) {
         out->whole = sum_part(&s, bh_prepared_part_of(s.prepared, acceptance, 0));
         return BH_OK;

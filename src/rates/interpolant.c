@@ -1,5 +1,5 @@
 /* interpolant.c - a cross section as Chebyshev polynomials on as many pieces as it takes. */
-#include "beamhours/rates/interpolant.h"
+#include "beamhours/rates/interpolant_parts.h"
 
 #include <math.h>
 #include <stdlib.h>
@@ -7,29 +7,9 @@
 
 #include "beamhours/units/constants.h"
 
-enum { NODES = 17, PIECES = 512, DEPTH = 36, BLOCK = 8 };
+enum { PIECES = BH_INTERPOLANT_PIECES, DEPTH = 36, BLOCK = 8, NODES = BH_INTERPOLANT_NODES };
 
-typedef struct {
-    double from, to;      /* [1] of the variable */
-    double middle, slope; /* [1] t = (v - middle) slope runs from -1 to 1 */
-    double tail;          /* [1] size of the last terms, relative to f */
-    bool logarithm, resolved;
-    int count;
-    double c[NODES];
-} piece;
-
-struct bh_interpolant {
-    double cosine[2 * (NODES - 1)]; /* of multiples of pi / 16 */
-    bh_interval polar;
-    double limit;         /* [rad] 0: none */
-    double limit_versine; /* [1] */
-    bool axis;            /* polar angle 0 is inside: f is represented without y^2 */
-    size_t calls;
-    int count, unresolved;
-    double worst; /* [1] largest tail of the resolved pieces */
-    double top;   /* [ub/sr] largest value times its flattening */
-    piece pieces[PIECES];
-};
+typedef bh_interpolant_piece piece;
 
 static double versine_of(double theta)
 {
@@ -110,22 +90,6 @@ static void sample(bh_interpolant *in, const piece *p, int first, int step, samp
     }
 }
 
-/* Chebyshev coefficients of the values at every step-th node; returns how many. */
-static int coefficients(const bh_interpolant *in, const double *value, int step, double *c)
-{
-    const int m = (NODES - 1) / step;
-    const int turn = 2 * (NODES - 1);
-    for (int k = 0; k <= m; k++) {
-        double sum = (value[0] + (k % 2 ? -value[NODES - 1] : value[NODES - 1])) / 2;
-        for (int at = step, angle = k * step; at < NODES - 1; at += step, angle += k * step)
-            sum += value[at] * in->cosine[angle % turn];
-        c[k] = 2 * sum / m;
-    }
-    c[0] /= 2;
-    c[m] /= 2;
-    return m + 1;
-}
-
 /* The last terms, of which the even or the odd may vanish by symmetry. */
 static double tail_of(const double *c, int n)
 {
@@ -150,7 +114,7 @@ static bool try_linear(const bh_interpolant *in, piece *p, const samples *s, int
     for (int i = 0; i < NODES; i += step)
         top = fmax(top, s->value[i]);
     p->logarithm = false;
-    p->count = coefficients(in, s->value, step, p->c);
+    p->count = bh_chebyshev_coefficients(in, s->value, step, p->c);
     p->tail = top > 0 ? tail_of(p->c, p->count) / top : 0;
     const double wanted = s->request->tolerance * (common > 0 ? 1 : extra);
     p->resolved = p->tail <= wanted;
@@ -167,7 +131,7 @@ static bool try_logarithm(const bh_interpolant *in, piece *p, const samples *s, 
         value[i] = log(s->value[i]);
     }
     p->logarithm = true;
-    p->count = coefficients(in, value, step, p->c);
+    p->count = bh_chebyshev_coefficients(in, value, step, p->c);
     p->tail = tail_of(p->c, p->count);
     p->resolved = p->tail <= s->request->tolerance;
     p->count = needed(p->c, p->count, s->request->tolerance / NODES);

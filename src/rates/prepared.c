@@ -39,8 +39,8 @@ static size_t place_of(const double *key, int bin)
     return ((size_t)(bits >> 40) + (size_t)bin) % BH_PREPARED_PARTS;
 }
 
-const bh_prepared_part *bh_prepared_part_of(bh_prepared *prepared, const bh_acceptance *acceptance,
-                                            int bin)
+bh_prepared_part *bh_prepared_part_of(bh_prepared *prepared, const bh_acceptance *acceptance,
+                                      int bin)
 {
     double key[BH_PREPARED_NUMBERS];
     set_key(acceptance, bin, key);
@@ -49,6 +49,7 @@ const bh_prepared_part *bh_prepared_part_of(bh_prepared *prepared, const bh_acce
         return p;
     memcpy(p->key, key, sizeof key);
     p->used = true;
+    p->moments.count = 0;
     bh_acceptance_part_of(acceptance, bin, &p->part);
     bh_quadrature_prepare(&p->part, &p->rule);
     return p;

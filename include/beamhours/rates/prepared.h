@@ -4,6 +4,7 @@
 
 #include "beamhours/rates/acceptance.h"
 #include "beamhours/rates/quadrature.h"
+#include "beamhours/rates/series.h"
 
 /* What a part follows from. */
 enum { BH_PREPARED_NUMBERS = 12 };
@@ -13,6 +14,7 @@ typedef struct {
     bool used;
     bh_acceptance_part part;
     bh_quadrature_rule rule;
+    bh_moments moments; /* of the rule, for the series that was summed last */
 } bh_prepared_part;
 
 /* Never grows; begin with zeros.  One thread at a time. */
@@ -24,7 +26,7 @@ typedef struct {
 
 /* Returns bin `bin` (1 ..) of `acceptance`, or the whole for 0, with its rule; valid until the next
  * call.  The same numbers as made anew. */
-const bh_prepared_part *bh_prepared_part_of(bh_prepared *prepared, const bh_acceptance *acceptance,
-                                            int bin);
+bh_prepared_part *bh_prepared_part_of(bh_prepared *prepared, const bh_acceptance *acceptance,
+                                      int bin);
 
 #endif
