@@ -7,6 +7,7 @@
 #include "beamhours/rates/prepared.h"
 #include "beamhours/rates/quadrature.h"
 #include "beamhours/rates/series.h"
+#include "beamhours/units/constants.h"
 
 /* Polynomials are asked for more digits than the sums, so that the sums decide the error. */
 #define FIT_SHARE        0.01
@@ -125,6 +126,8 @@ static bh_quadrature sum_within(const summing *s, bh_prepared_part *prepared, bh
         return (bh_quadrature){0, 0, true};
     if (part->polar.from == part->polar.to)
         return sum_point(s, part);
+    if (bh_interpolant_vanishes(s->interpolant))
+        return (bh_quadrature){0, 0, true};
     return whole ? sum_whole(s, prepared, &f) : bh_quadrature_polar(part, polar, &f);
 }
 
@@ -247,10 +250,25 @@ bh_code bh_average_sum(const bh_acceptance *acceptance, const bh_average_request
     return BH_OK;
 }
 
+bh_interval bh_average_range(const bh_acceptance *acceptance)
+{
+    bh_interval range = acceptance->whole.polar;
+    if (acceptance->spec.shape == BH_ACCEPTANCE_RING || !(range.from > 0))
+        return range;
+    return (bh_interval){fmax(range.from - BH_AVERAGE_TURN, range.from / 2),
+                         fmin(range.to + BH_AVERAGE_TURN, BH_PI)};
+}
+
+const bh_acceptance_part *bh_average_part(bh_average_workspace *workspace,
+                                          const bh_acceptance *acceptance, int bin)
+{
+    return &bh_prepared_part_of(&workspace->prepared, acceptance, bin)->part;
+}
+
 bh_code bh_average_over(const bh_acceptance *acceptance, const bh_average_request *request,
                         bh_average_workspace *workspace, bh_averages *out, bh_error *err)
 {
-    const bh_code code = bh_average_fit(request, acceptance->whole.polar, workspace, err);
+    const bh_code code = bh_average_fit(request, bh_average_range(acceptance), workspace, err);
     return code == BH_OK ? bh_average_sum(acceptance, request, workspace, out, err) : code;
 }
 

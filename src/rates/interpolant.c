@@ -318,6 +318,11 @@ double bh_interpolant_error(const bh_interpolant *interpolant, bh_interval polar
     return error;
 }
 
+bool bh_interpolant_vanishes(const bh_interpolant *interpolant)
+{
+    return !(interpolant->top > 0);
+}
+
 double bh_interpolant_top(const bh_interpolant *interpolant)
 {
     return interpolant->top;

@@ -32,8 +32,8 @@ bh_code bh_sum_places_of(const bh_channel_request *r, bh_sum_places *p, double *
     const bh_code code = bh_acceptance_make(&r->acceptance, &p->at, err);
     if (code)
         return code;
-    p->polar = p->at.whole.polar;
+    p->polar = bh_average_range(&p->at);
     p->turns = r->sensitivities && r->acceptance.shape != BH_ACCEPTANCE_RING &&
                r->acceptance.angle > BH_STEP_ANGLE && r->acceptance.angle < BH_PI - BH_STEP_ANGLE;
-    return p->turns ? set_moved(r, p, edges, err) : BH_OK;
+    return p->turns && !r->without_changes ? set_moved(r, p, edges, err) : BH_OK;
 }

@@ -2,6 +2,7 @@
 #include "beamhours/run/yield.h"
 
 #include <math.h>
+#include <string.h>
 
 #include "beamhours/rates/counting.h"
 #include "beamhours/run/beneath.h"
@@ -146,16 +147,38 @@ static bh_code add_nuclide(bh_yielder *yielder, bh_yield *yield, size_t nuclide,
     return code;
 }
 
-static bh_code set_geometry(bh_yield *yield, bh_error *err)
+static void polar_angle(void *context, size_t n, const double *theta, double *value)
+{
+    (void)context;
+    memcpy(value, theta, n * sizeof *value);
+}
+
+/* Fills means with the mean angle of each bin, as of any function of the angle; false near the
+ * beam, where that is no smooth function. */
+static bool mean_angles(bh_yielder *yielder, const bh_acceptance *acceptance, bh_averages *means)
+{
+    const bh_average_request request = {.function = polar_angle};
+    return acceptance->whole.polar.from > 0 &&
+           !bh_average_over(acceptance, &request, bh_workspace_averages(yielder->workspace), means,
+                            NULL);
+}
+
+static bh_code set_geometry(bh_yielder *yielder, bh_yield *yield, bh_error *err)
 {
     bh_acceptance acceptance;
+    bh_average_workspace *averages = bh_workspace_averages(yielder->workspace);
+    bh_averages means = {.bins = bh_workspace_scratch(yielder->workspace)->bins};
     const bh_code code = bh_acceptance_make(&yield->view.spec, &acceptance, err);
+    const bool smooth = !code && yield->view.parts > 1 && mean_angles(yielder, &acceptance, &means);
     for (int i = 0; !code && i < yield->view.parts; i++) {
-        bh_acceptance_part part;
-        bh_acceptance_part_of(&acceptance, i, &part);
-        yield->part[i] = (bh_part){.solid_angle = part.solid_angle,
-                                   .polar = part.polar,
-                                   .angle = i ? bh_acceptance_mean_angle(&part) : yield->view.axis};
+        const bh_acceptance_part *part = bh_average_part(averages, &acceptance, i);
+        const bh_average *mean = smooth && i && i <= acceptance.bins ? &means.bins[i - 1] : NULL;
+        const bool known = mean && mean->converged && mean->solid_angle > 0;
+        const double angle = known ? mean->total / mean->solid_angle : 0;
+        yield->part[i] = (bh_part){.solid_angle = part->solid_angle, .polar = part->polar};
+        yield->part[i].angle = !i      ? yield->view.axis
+                               : known ? angle
+                                       : bh_acceptance_mean_angle(part);
     }
     return code;
 }
@@ -255,7 +278,7 @@ bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err)
     const bh_target *target = yield->view.setting->target;
     yield->converged = true;
     yield->seen = 0;
-    bh_code code = set_geometry(yield, err);
+    bh_code code = set_geometry(yielder, yield, err);
     if (!code)
         code = add_target(yielder, yield, err);
     if (!code)

@@ -70,6 +70,17 @@ BH_CHECKED bh_code bh_average_over(const bh_acceptance *acceptance,
                                    bh_average_workspace *workspace, bh_averages *out,
                                    bh_error *err);
 
+/* Returns [rad] the polar angles that sums are fitted over: those of the acceptance, and of a
+ * rectangle so much beside that it may be turned by BH_AVERAGE_TURN.  Functions that are fitted
+ * over the same range share the moments of all parts. */
+#define BH_AVERAGE_TURN 2e-5 /* [rad] +- 0, a choice; exact */
+bh_interval bh_average_range(const bh_acceptance *acceptance);
+
+/* Bin `bin` (1 ..) of an acceptance, or the whole for 0, as sums have it; valid until the workspace
+ * is used again. */
+const bh_acceptance_part *bh_average_part(bh_average_workspace *workspace,
+                                          const bh_acceptance *acceptance, int bin);
+
 /*
  * The same in two steps, so that several acceptances share the calls of one function (an arm moved
  * by a milliradian for sensitivities): fit over the polar range, then sum as often as wanted.  An

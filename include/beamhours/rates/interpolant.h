@@ -51,6 +51,9 @@ bool bh_interpolant_covers(const bh_interpolant *interpolant, bh_interval polar)
  * tail of the polynomials, unresolved pieces by their share of the range. */
 double bh_interpolant_error(const bh_interpolant *interpolant, bh_interval polar);
 
+/* True when every value that the fit saw is 0. */
+bool bh_interpolant_vanishes(const bh_interpolant *interpolant);
+
 /* Returns [ub/sr] the largest f y^2 that the fit saw. */
 double bh_interpolant_top(const bh_interpolant *interpolant);
 

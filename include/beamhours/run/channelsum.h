@@ -4,7 +4,7 @@
 
 #include <stdbool.h>
 
-#include "beamhours/rates/acceptance.h"
+#include "beamhours/rates/average.h"
 #include "beamhours/rates/bite.h"
 #include "beamhours/run/channel.h"
 #include "beamhours/run/passage.h"
@@ -13,8 +13,8 @@
 
 /* Steps of the symmetric differences behind the sensitivities: a rate with logarithmic derivatives
  * of 50 per rad and 12 keeps six digits of them. */
-#define BH_STEP_ANGLE    2e-5 /* [rad] +- 0, a choice; exact */
-#define BH_STEP_MOMENTUM 1e-4 /* [1] relative; a choice; exact */
+#define BH_STEP_ANGLE    BH_AVERAGE_TURN /* [rad] */
+#define BH_STEP_MOMENTUM 1e-4            /* [1] relative; a choice; exact */
 
 /* What to sum. */
 typedef struct {
