@@ -11,7 +11,7 @@ static bool makes_sense(const bh_external *x)
            x->after.thickness >= 0.0 && x->before.xi >= 0.0 && x->after.xi >= 0.0;
 }
 
-double bh_external_kept(const bh_external *x)
+double bh_external_logarithm(const bh_external *x)
 {
     if (!makes_sense(x))
         return (double)NAN;
@@ -19,9 +19,14 @@ double bh_external_kept(const bh_external *x)
     const double before = x->before.thickness > 0.0 ? x->before.b * x->before.thickness : 0.0;
     const double after = x->after.thickness > 0.0 ? x->after.b * x->after.thickness : 0.0;
     const double gamma = tgamma(1.0 + before + after); /* lgamma writes a variable of all threads */
-    const double kept = before * log(eta * eta * x->cut / x->incident) +
-                        after * log(x->cut / x->scattered) - log(gamma);
-    return fmin(exp(kept), 1.0);
+    return before * log(eta * eta * x->cut / x->incident) + after * log(x->cut / x->scattered) -
+           log(gamma);
+}
+
+double bh_external_kept(const bh_external *x)
+{
+    const double l = bh_external_logarithm(x);
+    return l < 0.0 || isnan(l) ? exp(l) : 1.0;
 }
 
 double bh_ionisation_kept(const bh_external *x)

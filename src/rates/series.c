@@ -76,7 +76,7 @@ static bool are_there(const bh_moments *m, const bh_series *s)
 
 void bh_moments_of(const bh_quadrature_rule *rule, const bh_series *series, bh_moments *moments)
 {
-    enum { MOST = BH_QUADRATURE_MOST };
+    enum { MOST = BH_QUADRATURE_MOST, USUAL = 11 }; /* terms, so that few series want more */
     double t[MOST], one[MOST], two[MOST];
     const int n = rule->fine, all = rule->fine + rule->coarse;
     if (are_there(moments, series))
@@ -84,14 +84,14 @@ void bh_moments_of(const bh_quadrature_rule *rule, const bh_series *series, bh_m
     *moments = (bh_moments){.middle = series->middle,
                             .slope = series->slope,
                             .axis = series->axis,
-                            .count = series->count};
+                            .count = series->count > USUAL ? series->count : USUAL};
     for (int i = 0; i < all; i++) {
         const double y = rule->versine[i];
         t[i] = (y - series->middle) * series->slope;
         one[i] = rule->weight[i] / (series->axis ? 1 : y * y);
         two[i] = t[i] * one[i]; /* T_-1 = T_1 */
     }
-    for (int k = 0; k < series->count; k++) {
+    for (int k = 0; k < moments->count; k++) {
         for (int i = 0; i < n; i++)
             moments->fine[k] += one[i];
         for (int i = n; i < all; i++)

@@ -177,18 +177,43 @@ bool bh_radiated_at(const bh_radiated_request *request, double angle, bh_radiate
 
 /* --- making --- */
 
-/* Second degree in ln cut through three cuts, each half of the one before. */
+enum { CUTS = 3 };
+
+static double strength(const bh_passage *p)
+{
+    return p->thickness > 0 ? p->b * p->thickness : 0;
+}
+
+/* Fills mean with what is kept of it at three cuts, each half of the one before. */
+static void mean_externals(const struct matter *m, double top, double mean[CUTS])
+{
+    double sum[CUTS] = {0}, weight = 0;
+    for (size_t i = 0; i < m->count; i++) {
+        const bh_external x = external_of(m, i, top);
+        const double w = m->crossed[i].weight, l = bh_external_logarithm(&x);
+        const double fall = log(2.0) * (strength(&x.before) + strength(&x.after));
+        for (int k = 0; k < CUTS; k++)
+            sum[k] += w * exp(fmin(0, l - k * fall));
+        weight += w;
+    }
+    for (int k = 0; k < CUTS; k++)
+        mean[k] = weight > 0 ? sum[k] / weight : 1;
+}
+
+/* Second degree in ln cut through three cuts. */
 static void set_levels(const struct matter *m, double top, bh_radiated *out, int i)
 {
     const bh_encounter *e = &m->request->channel.encounter;
-    double value[3];
-    const bh_radiative_parts high = m->request->model->parts(e, top, &m->at->event);
-    const bh_radiative_parts low = m->request->model->parts(e, top / 4, &m->at->event);
-    const double internal = log(bh_radiative_combine(&high, e->z));
-    const double fall = (internal - log(bh_radiative_combine(&low, e->z))) / 2;
-    for (int k = 0; k < 3; k++)
-        value[k] = internal - k * fall + log(mean_external(m, ldexp(top, -k)));
+    const bh_radiative *model = m->request->model;
+    double value[CUTS], external[CUTS];
+    const bh_radiative_parts high = model->parts(e, top, &m->at->event);
+    const bh_radiative_parts rate = model->rate(e, top, &m->at->event);
     const double l = log(2.0), shift = log(top / out->reference);
+    const double internal = log(bh_radiative_combine(&high, e->z));
+    const double fall = l * (rate.z0 + e->z * (rate.z1 + e->z * rate.z2));
+    mean_externals(m, top, external);
+    for (int k = 0; k < CUTS; k++)
+        value[k] = internal - k * fall + log(external[k]);
     const double curve = (value[0] - 2 * value[1] + value[2]) / (2 * l * l);
     const double slope = (value[0] - value[1]) / l + curve * l; /* at the top */
     out->level[2][i] = curve;

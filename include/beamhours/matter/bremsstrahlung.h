@@ -28,6 +28,10 @@ typedef struct {
  */
 double bh_external_kept(const bh_external *x);
 
+/* Returns [1] the natural logarithm of the same before it is held to at most 1; it changes by b t +
+ * b t' with ln cut. */
+double bh_external_logarithm(const bh_external *x);
+
 /* Returns [1] the fraction kept in spite of the tail of single collisions: 1 - xi / (eta^2 cut) -
  * xi' / cut, for xi far below the cut; never below 0.  NaN as bh_external_kept. */
 double bh_ionisation_kept(const bh_external *x);

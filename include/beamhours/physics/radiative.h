@@ -39,6 +39,9 @@ typedef struct {
                    double *factor);
     /* What one factor is made of, for the same `encounter`, `cut` [MeV] and event. */
     bh_radiative_parts (*parts)(const bh_encounter *encounter, double cut, const bh_event *event);
+    /* Their derivatives with ln cut, in which they are linear up to the scattered kinetic energy;
+     * vacuum 0. */
+    bh_radiative_parts (*rate)(const bh_encounter *encounter, double cut, const bh_event *event);
     /* A sentence where the cut [MeV] or the event is outside what holds, into `out`; returns its
      * length, 0 when all is well. */
     int (*caveat)(const bh_encounter *encounter, double cut, const bh_event *event, char *out,

@@ -79,6 +79,36 @@ static bh_radiative_parts maximon_tjon(const bh_encounter *x, double cut, const 
                                 .vacuum = bh_vacuum(e->q2)};
 }
 
+/* --- how they change with the logarithm of the cut, in which they are linear --- */
+
+static bh_radiative_parts schwinger_rate(const bh_encounter *x, double cut, const bh_event *e)
+{
+    if (nothing(x, e))
+        return (bh_radiative_parts){0};
+    const bh_soft in = soft_of(x, cut, e);
+    return (bh_radiative_parts){.z0 = bh_soft_rate(&in)};
+}
+
+static bh_radiative_parts maximon_tjon_rate(const bh_encounter *x, double cut, const bh_event *e)
+{
+    if (nothing(x, e))
+        return (bh_radiative_parts){0};
+    const bh_soft in = soft_of(x, cut, e);
+    return (bh_radiative_parts){.z0 = bh_soft_rate(&in),
+                                .z1 = x->beam->charge * bh_soft_interference_rate(&in),
+                                .z2 = bh_soft_target_rate(&in)};
+}
+
+/* Its closed forms for light leptons are taken as they are, from half the cut. */
+static bh_radiative_parts mo_tsai_rate(const bh_encounter *x, double cut, const bh_event *e)
+{
+    const double top = fmin(cut, e->scattered_kinetic), per = 1.0 / log(2.0);
+    const bh_radiative_parts one = mo_tsai(x, top, e), half = mo_tsai(x, top / 2.0, e);
+    return (bh_radiative_parts){.z0 = (one.z0 - half.z0) * per,
+                                .z1 = (one.z1 - half.z1) * per,
+                                .z2 = (one.z2 - half.z2) * per};
+}
+
 double bh_radiative_combine(const bh_radiative_parts *x, int z)
 {
     const double loops = 1.0 - 0.5 * x->vacuum;
@@ -166,20 +196,21 @@ static int light_only(const bh_encounter *x, double cut, const bh_event *e, char
 
 static const bh_radiative models[] = {
     {"none", "no radiation: the cross section as it stands", "definition",
-     "heavy particles; electrons lose 5 to 30 % to radiation", unity, none, silent},
+     "heavy particles; electrons lose 5 to 30 % to radiation", unity, none, none, silent},
     {"schwinger", "the lepton's own photons alone, with recoil and the lepton mass exact",
      "Schwinger, Phys. Rev. 76 (1949) 790; recoil: Maximon & Tjon, Phys. Rev. C 62 (2000) 054320",
      SOFT_RANGE "the target is silent: heavy nuclei at small angles", schwinger_factor, schwinger,
-     wide_cut},
+     schwinger_rate, wide_cut},
     {"mo-tsai", "eq. II.6 for electrons and positrons; for muons its recipe with the mass exact",
      "Mo & Tsai, Rev. Mod. Phys. 41 (1969) 205; Tsai, Phys. Rev. 122 (1961) 1898",
-     SOFT_RANGE "electrons: q2 far above their mass squared", mo_tsai_factor, mo_tsai, light_only},
+     SOFT_RANGE "electrons: q2 far above their mass squared", mo_tsai_factor, mo_tsai, mo_tsai_rate,
+     light_only},
     {"maximon-tjon",
      "lepton, target and their interference, soft integrals and the lepton mass exact",
      "Maximon & Tjon, Phys. Rev. C 62 (2000) 054320; loops of hadrons: Burkhardt & Pietrzyk, Phys. "
      "Lett. B 513 (2001) 46",
      SOFT_RANGE "two-photon exchange: its infrared part", maximon_tjon_factor, maximon_tjon,
-     wide_cut},
+     maximon_tjon_rate, wide_cut},
 };
 
 const bh_radiative *bh_radiative_at(int i)

@@ -137,12 +137,22 @@ double bh_soft_target(const bh_soft *in)
     return -ALPHA_PI * (real + vertex(chi));
 }
 
+static double rate_of(double mass, double q2)
+{
+    if (q2 == 0.0)
+        return 0.0;
+    const double chi = rapidity(mass, q2);
+    return 2.0 * ALPHA_PI * (chi / tanh(chi) - 1.0);
+}
+
 double bh_soft_rate(const bh_soft *in)
 {
-    if (in->q2 == 0.0)
-        return 0.0;
-    const double chi = rapidity(in->mass, in->q2);
-    return 2.0 * ALPHA_PI * (chi / tanh(chi) - 1.0);
+    return rate_of(in->mass, in->q2);
+}
+
+double bh_soft_target_rate(const bh_soft *in)
+{
+    return rate_of(in->target, in->q2);
 }
 
 /* The four pairs of lepton and target, without the logarithm of the photon's energy. */
@@ -169,6 +179,11 @@ double bh_soft_interference(const bh_soft *in)
         return 0.0;
     const double l = 2.0 * log(2.0 * in->slope * in->cut / sqrt(in->q2));
     return 2.0 * ALPHA_PI * (pairs(in) - infrared(in) * l);
+}
+
+double bh_soft_interference_rate(const bh_soft *in)
+{
+    return in->q2 == 0.0 ? 0.0 : -4.0 * ALPHA_PI * infrared(in);
 }
 
 /* K of lepton and target with the lepton's energy `e` and momentum `p`, photon mass the lepton's */
