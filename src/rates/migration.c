@@ -177,16 +177,17 @@ static void lagrange(const bh_migration_likeness *l, double slope, double *part)
     }
 }
 
-void bh_migration_compare(const bh_migration *m, const double *slope, bh_migration_likeness *l)
+void bh_migration_compare(const bh_migration *m, size_t count, const double *slope,
+                          bh_migration_likeness *l)
 {
     static const double too_much =
         0.2; /* [1] of the density over a cell or a sigma, between slopes */
     double least = HUGE_VAL, most = -HUGE_VAL;
     l->alike = false;
-    if (!(m->sigma > 0) || m->cells < 2 * BH_MIGRATION_SLOPES || !equal_widths(m))
+    if (!(m->sigma > 0) || m->cells < 2 * BH_MIGRATION_SLOPES || !equal_widths(m) || !count)
         return;
-    for (int i = 0; i < m->cells; i++) {
-        const double s = slope_within(m, i, slope[i]);
+    for (size_t i = 0; i < count; i++) {
+        const double s = slope_within(m, 0, slope[i]);
         least = fmin(least, s);
         most = fmax(most, s);
     }
@@ -306,30 +307,47 @@ static bool chord(const bh_migration *m, const double *counts, int i, double *ou
     return true;
 }
 
-/* Slope of the parabola through three middles, cell i's and its neighbours' or the next two to one
- * side; of the chord where there are but two. */
-static double slope_at(const bh_migration *m, const double *counts, int i)
+/* The chord from a cell to the next. */
+struct chord {
+    bool there;
+    double slope; /* [1/rad] */
+};
+
+static struct chord chord_at(const bh_migration *m, const double *counts, int i)
 {
-    double back = 0, on = 0, next = 0;
-    const bool behind = chord(m, counts, i - 1, &back);
-    const bool ahead = chord(m, counts, i, &on);
-    if (behind && ahead) {
+    struct chord c = {.slope = 0};
+    c.there = chord(m, counts, i, &c.slope);
+    return c;
+}
+
+/* Slope of the parabola through three middles, cell i's and its neighbours' or the next two to one
+ * side; of the chord where there are but two.  `near`: the chords before and behind the cell. */
+static double slope_at(const bh_migration *m, const double *counts, int i,
+                       const struct chord near[2])
+{
+    if (near[0].there && near[1].there) {
         const double b = centre_of(m, i) - centre_of(m, i - 1);
         const double a = centre_of(m, i + 1) - centre_of(m, i);
-        return (back * a + on * b) / (a + b);
+        return (near[0].slope * a + near[1].slope * b) / (a + b);
     }
-    if (!behind && !ahead)
+    if (!near[0].there && !near[1].there)
         return 0;
+    const bool ahead = near[1].there;
     const int step = ahead ? 1 : -1;
-    const double near = ahead ? on : back;
-    if (!chord(m, counts, ahead ? i + 1 : i - 2, &next))
-        return near;
+    const struct chord next = chord_at(m, counts, ahead ? i + 1 : i - 2);
+    if (!next.there)
+        return near[ahead].slope;
     const double b = centre_of(m, i + step) - centre_of(m, i);
-    return near - (next - near) * b / (centre_of(m, i + 2 * step) - centre_of(m, i));
+    return near[ahead].slope -
+           (next.slope - near[ahead].slope) * b / (centre_of(m, i + 2 * step) - centre_of(m, i));
 }
 
 void bh_migration_slopes(const bh_migration *m, const double *counts, double *slope)
 {
-    for (int i = 0; i < m->cells; i++)
-        slope[i] = slope_at(m, counts, i);
+    struct chord near[2] = {chord_at(m, counts, -1)};
+    for (int i = 0; i < m->cells; i++) {
+        near[1] = chord_at(m, counts, i);
+        slope[i] = slope_at(m, counts, i, near);
+        near[0] = near[1];
+    }
 }

@@ -118,23 +118,32 @@ struct kinds {
     size_t count, at[MOST_KINDS]; /* the first decides how events are spread within their cells */
 };
 
-static void move(const bh_yield *yield, const struct kinds *kinds, struct cells *c)
+/* How events of these kinds are spread within their cells; false where there are none. */
+static bool find_slopes(const bh_yield *yield, const struct kinds *kinds, struct cells *c,
+                        double *slope)
+{
+    if (!(*member(&yield->part[0], kinds->at[0]) != 0))
+        return false;
+    fill_counts(yield, kinds->at[0], 0.5, c, c->counts);
+    bh_migration_slopes(&c->migration, c->counts, slope);
+    return true;
+}
+
+static void move(const bh_yield *yield, const struct kinds *kinds,
+                 const bh_migration_likeness *likeness, struct cells *c)
 {
     const int bins = yield->view.parts - 1, cells = c->migration.cells;
     double counts[MOST_KINDS][MOST_CELLS], measured[MOST_KINDS][MOST_CELLS];
     double share[MOST_CELLS];
     bh_migration_column column = {.share = share};
-    bh_migration_likeness likeness;
     for (size_t k = 0; k < kinds->count; k++)
         memset(measured[k], 0, (size_t)cells * sizeof measured[k][0]);
     fill_counts(yield, kinds->at[0], 0.5, c, c->counts);
-    bh_migration_slopes(&c->migration, c->counts, c->slope);
     const double front = share_in_front(c, bins);
     for (size_t k = 0; k < kinds->count; k++)
         fill_counts(yield, kinds->at[k], front, c, counts[k]);
-    bh_migration_compare(&c->migration, c->slope, &likeness);
     for (int i = 0; i < cells; i++) {
-        bh_migration_reach(&c->migration, &likeness, i, c->slope[i], &column);
+        bh_migration_reach(&c->migration, likeness, i, c->slope[i], &column);
         for (size_t k = 0; k < kinds->count; k++)
             for (int n = 0; n < column.count; n++)
                 measured[k][column.first + n] += counts[k][i] * share[n];
@@ -144,10 +153,34 @@ static void move(const bh_yield *yield, const struct kinds *kinds, struct cells 
             *member(&yield->part[1 + i], kinds->at[k]) = measured[k][c->before + i];
 }
 
+enum { SORTS = 3 };
+
+/* All that is in the cells moves; what cells have in common is found for all of it. */
+static void move_all(const bh_yield *yield, const struct kinds *kinds, struct cells *c)
+{
+    const int cells = c->migration.cells;
+    double slope[SORTS][MOST_CELLS], all[SORTS * MOST_CELLS];
+    bool some[SORTS];
+    bh_migration_likeness likeness;
+    size_t count = 0;
+    for (int k = 0; k < SORTS; k++) {
+        some[k] = find_slopes(yield, &kinds[k], c, slope[k]);
+        for (int i = 0; some[k] && i < cells; i++)
+            all[count++] = slope[k][i];
+    }
+    bh_migration_compare(&c->migration, count, all, &likeness);
+    for (int k = 0; k < SORTS; k++) {
+        if (!some[k])
+            continue;
+        memcpy(c->slope, slope[k], (size_t)cells * sizeof c->slope[0]);
+        move(yield, &kinds[k], &likeness, c);
+    }
+}
+
 void bh_resolve_bins(bh_yield *yield)
 {
     /* sensitivities are differences of the signal and go where it goes */
-    static const struct kinds kinds[] = {
+    static const struct kinds kinds[SORTS] = {
         {4,
          {offsetof(bh_part, kept), offsetof(bh_part, radiative), offsetof(bh_part, per_radian),
           offsetof(bh_part, per_momentum)}},
@@ -164,7 +197,5 @@ void bh_resolve_bins(bh_yield *yield)
     set_cells(yield, &acceptance, &c);
     if (c.migration.cells < 2 || bh_migration_check(&c.migration, NULL))
         return;
-    for (size_t k = 0; k < sizeof kinds / sizeof kinds[0]; k++)
-        if (*member(&yield->part[0], kinds[k].at[0]) != 0)
-            move(yield, &kinds[k], &c);
+    move_all(yield, kinds, &c);
 }

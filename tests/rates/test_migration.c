@@ -190,7 +190,7 @@ START_TEST(cells_that_are_alike)
     for (int i = 0; i < CELLS; i++)
         slope[i] = likenesses[_i].least +
                    (likenesses[_i].most - likenesses[_i].least) * ((i * 7) % CELLS) / (CELLS - 1.0);
-    bh_migration_compare(&m, slope, &likeness);
+    bh_migration_compare(&m, CELLS, slope, &likeness);
     ck_assert_int_eq(likeness.alike, likenesses[_i].alike);
     for (int i = 0; i < CELLS; i++) {
         bh_migration_column column[2] = {{.share = share[0]}, {.share = share[1]}};
@@ -215,7 +215,7 @@ START_TEST(cells_that_differ)
     bh_migration_likeness likeness;
     set_edges(edges, 24, 0.4, 0.5);
     edges[7] += 1e-6;
-    bh_migration_compare(&(bh_migration){24, edges, 3e-3}, slope, &likeness);
+    bh_migration_compare(&(bh_migration){24, edges, 3e-3}, 24, slope, &likeness);
     ck_assert(!likeness.alike);
 }
 END_TEST

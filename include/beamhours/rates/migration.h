@@ -3,6 +3,7 @@
 #define BH_RATES_MIGRATION_H
 
 #include <stdbool.h>
+#include <stddef.h>
 
 #include "beamhours/base/error.h"
 
@@ -51,8 +52,9 @@ typedef struct {
                                                                      before the cell's own */
 } bh_migration_likeness;
 
-/* Fills `likeness` for slope [1/rad], one for each cell; shares from it are the same to 1e-8. */
-void bh_migration_compare(const bh_migration *migration, const double *slope,
+/* Fills `likeness` for `count` values of slope [1/rad] that cells may have; shares from it are the
+ * same to 1e-8. */
+void bh_migration_compare(const bh_migration *migration, size_t count, const double *slope,
                           bh_migration_likeness *likeness);
 
 /* The same without the zeros: fills first, count and share (whose room is the caller's) with the
