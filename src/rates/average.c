@@ -20,8 +20,8 @@
 
 struct bh_average_workspace {
     bh_interpolant *interpolant;
-    bh_series series; /* the same, where `one_series` */
-    bool one_series;
+    bh_series series[BH_SERIES_MOST]; /* of its first pieces, as far as they can be */
+    int series_count;
     bh_prepared prepared;
 };
 
@@ -58,9 +58,11 @@ bh_code bh_average_fit(const bh_average_request *request, bh_interval polar,
                                            .polar = polar,
                                            .limit = request->limit,
                                            .tolerance = FIT_SHARE * tolerance_of(request),
+                                           .kink_count = request->kink_count,
+                                           .kinks = request->kinks,
                                            .common = request->common};
     const bh_code code = bh_interpolant_fit(workspace->interpolant, &wanted, err);
-    workspace->one_series = !code && bh_series_of(workspace->interpolant, &workspace->series);
+    workspace->series_count = code ? 0 : bh_series_of(workspace->interpolant, workspace->series);
     return code;
 }
 
@@ -74,15 +76,21 @@ static void read_interpolant(void *context, size_t n, const double *versine, dou
 typedef struct {
     const bh_average_request *request;
     bh_interpolant *interpolant;
-    const bh_series *series; /* NULL: it is no single one */
+    const bh_series *series;
+    int series_count;
     bh_prepared *prepared;
 } summing;
+
+static double versine_of(double theta)
+{
+    const double half = sin(theta / 2);
+    return 2 * half * half;
+}
 
 /* A point has one value: its solid angle times the function there. */
 static bh_quadrature sum_point(const summing *s, const bh_acceptance_part *part)
 {
-    const double half = sin(part->polar.from / 2);
-    const double versine = 2 * half * half;
+    const double versine = versine_of(part->polar.from);
     double value = 0;
     bh_interpolant_eval(s->interpolant, 1, &versine, &value);
     return (bh_quadrature){value * part->solid_angle, 0, true};
@@ -91,8 +99,7 @@ static bh_quadrature sum_point(const summing *s, const bh_acceptance_part *part)
 /* Sums of less than this over the solid angle [ub/sr] are as good as one of it. */
 static double least_of(const summing *s, const bh_acceptance_part *part)
 {
-    const double half = sin((part->polar.from + part->polar.to) / 4);
-    const double versine = 2 * half * half;
+    const double versine = versine_of((part->polar.from + part->polar.to) / 2);
     return s->request->common > 0 ? s->request->common / (versine * versine) : 0;
 }
 
@@ -104,12 +111,26 @@ static bh_integrand integrand_of(const summing *s, const bh_acceptance_part *par
                           .least = least_of(s, part)};
 }
 
+/* The series that holds all over a part, or NULL. */
+static const bh_series *series_for(const summing *s, const bh_acceptance_part *part)
+{
+    const bh_series *one = s->series;
+    if (s->series_count == 0)
+        return NULL;
+    const double from = versine_of(part->polar.from), to = versine_of(part->polar.to);
+    for (; one < s->series + s->series_count; one++)
+        if (from >= one->from && to <= one->to)
+            return one;
+    return NULL;
+}
+
 /* By the moments of the part, where they will do. */
 static bh_quadrature sum_whole(const summing *s, bh_prepared_part *prepared, const bh_integrand *f)
 {
-    if (s->series && prepared->rule.fine > 0) {
-        bh_moments_of(&prepared->rule, s->series, &prepared->moments);
-        const bh_quadrature q = bh_series_sum(s->series, &prepared->moments, &prepared->part, f);
+    const bh_series *series = series_for(s, &prepared->part);
+    if (series && prepared->rule.fine > 0) {
+        bh_moments_of(&prepared->rule, series, &prepared->moments);
+        const bh_quadrature q = bh_series_sum(series, &prepared->moments, &prepared->part, f);
         if (q.converged)
             return q;
     }
@@ -234,7 +255,8 @@ bh_code bh_average_sum(const bh_acceptance *acceptance, const bh_average_request
         return bh_fail(err, BH_EDOMAIN, "the acceptance reaches outside the fitted polar angles");
     const summing s = {.request = request,
                        .interpolant = workspace->interpolant,
-                       .series = workspace->one_series ? &workspace->series : NULL,
+                       .series = workspace->series,
+                       .series_count = workspace->series_count,
                        .prepared = &workspace->prepared};
     if (!out->bins) {
         out->whole = sum_part(&s, bh_prepared_part_of(s.prepared, acceptance, 0));
@@ -275,8 +297,7 @@ bh_code bh_average_over(const bh_acceptance *acceptance, const bh_average_reques
 double bh_average_value(const bh_average_workspace *workspace, double theta)
 {
     double value = 0;
-    const double half = sin(theta / 2);
-    const double versine = 2 * half * half;
+    const double versine = versine_of(theta);
     if (!bh_interpolant_covers(workspace->interpolant, (bh_interval){theta, theta}))
         return (double)NAN;
     bh_interpolant_eval(workspace->interpolant, 1, &versine, &value);

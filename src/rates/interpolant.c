@@ -138,12 +138,19 @@ static bool try_logarithm(const bh_interpolant *in, piece *p, const samples *s, 
     return p->resolved;
 }
 
-/* 9 points, then 17; true when the piece is good. */
+/* 5 points where few digits are asked for, 9, then 17; true when the piece is good. */
 static bool fit_piece(bh_interpolant *in, piece *p, samples *s)
 {
+    static const double few = 1e-7; /* [1] tolerance for which 5 points may do */
     p->middle = (p->from + p->to) / 2;
     p->slope = p->to > p->from ? 2 / (p->to - p->from) : 0;
-    sample(in, p, 0, 2, s);
+    const bool begin = s->request->tolerance >= few;
+    if (begin) {
+        sample(in, p, 0, 4, s);
+        if (s->bad || try_logarithm(in, p, s, 4))
+            return true;
+    }
+    sample(in, p, begin ? 2 : 0, begin ? 4 : 2, s);
     if (s->bad || try_logarithm(in, p, s, 2) || try_linear(in, p, s, 2))
         return true;
     sample(in, p, 1, 2, s);
@@ -183,37 +190,66 @@ static bh_code refuse(const samples *s, bh_error *err)
                    s->bad_angle / BH_DEGREE);
 }
 
+/* Stretches of the variable that are still to be fitted, the last one first. */
+struct pending {
+    bh_interval part[DEPTH + 2 + BH_INTERPOLANT_KINKS]; /* [1] */
+    int depth[DEPTH + 2 + BH_INTERPOLANT_KINKS];
+    int count;
+};
+
+static void put_off(struct pending *p, double from, double to, int depth)
+{
+    p->part[p->count] = (bh_interval){from, to};
+    p->depth[p->count++] = depth;
+}
+
+/* The whole range, cut at the kinks; the lowest stretch last. */
+static void begin(const bh_interpolant *in, const bh_interpolant_request *request,
+                  struct pending *p)
+{
+    const double one = variable_of(in, versine_of(in->polar.from));
+    const double other = variable_of(in, versine_of(in->polar.to));
+    const double low = fmin(one, other);
+    double high = fmax(one, other);
+    const bool falls = other < one; /* the variable, with the angle */
+    p->count = 0;
+    for (int i = 0; i < request->kink_count; i++) {
+        const double angle = request->kinks[falls ? i : request->kink_count - 1 - i];
+        const double at = variable_of(in, versine_of(angle));
+        if (!(at > low && at < high))
+            continue;
+        put_off(p, at, high, 0);
+        high = at;
+    }
+    put_off(p, low, high, 0);
+}
+
 bh_code bh_interpolant_fit(bh_interpolant *interpolant, const bh_interpolant_request *request,
                            bh_error *err)
 {
     bh_interpolant *in = interpolant;
+    struct pending pending;
     start(in, request);
     if (!(in->polar.from <= in->polar.to))
         return BH_OK; /* all of it is beyond the limit */
-    const double one = variable_of(in, versine_of(in->polar.from));
-    const double other = variable_of(in, versine_of(in->polar.to));
-    bh_interval pending[DEPTH + 2];
-    int depth[DEPTH + 2] = {0};
-    int count = 1;
-    pending[0] = (bh_interval){fmin(one, other), fmax(one, other)};
-    while (count > 0) {
-        count--;
-        piece p = {.from = pending[count].from, .to = pending[count].to};
-        const int deep = depth[count];
+    begin(in, request, &pending);
+    while (pending.count > 0) {
+        pending.count--;
+        const bh_interval part = pending.part[pending.count];
+        const int deep = pending.depth[pending.count];
+        piece p = {.from = part.from, .to = part.to};
         samples s = {.request = request};
         const bool good = fit_piece(in, &p, &s);
         if (s.bad) {
             in->count = 0;
             return refuse(&s, err);
         }
-        if (good || deep >= DEPTH || in->count + count + 2 > PIECES) {
+        if (good || deep >= DEPTH || in->count + pending.count + 2 > PIECES) {
             keep(in, &p);
             continue;
         }
-        pending[count] = (bh_interval){p.middle, p.to};
-        pending[count + 1] = (bh_interval){p.from, p.middle};
-        depth[count] = depth[count + 1] = deep + 1;
-        count += 2;
+        put_off(&pending, p.middle, p.to, deep + 1);
+        put_off(&pending, p.from, p.middle, deep + 1);
     }
     return BH_OK;
 }

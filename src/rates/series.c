@@ -39,13 +39,12 @@ static void values_of(const bh_interpolant *in, const bh_interpolant_piece *p, d
     }
 }
 
-bool bh_series_of(const bh_interpolant *in, bh_series *series)
+static bool series_of(const bh_interpolant *in, const bh_interpolant_piece *p, bh_series *series)
 {
     static const double close = 1e-9, low = 1e-3; /* [1] of the smallest value; of the largest */
-    const bh_interpolant_piece *p = in->pieces;
-    if (in->count != 1 || in->limit > 0 || !(p->to > p->from))
-        return false;
     double value[NODES], least = HUGE_VAL, most = 0;
+    if (!(p->to > p->from))
+        return false;
     values_of(in, p, value);
     for (int i = 0; i < NODES; i++) {
         least = fmin(least, value[i]);
@@ -53,8 +52,12 @@ bool bh_series_of(const bh_interpolant *in, bh_series *series)
     }
     if (!(least > low * most))
         return false;
-    *series =
-        (bh_series){.middle = p->middle, .slope = p->slope, .axis = in->axis, .count = p->count};
+    *series = (bh_series){.from = p->from,
+                          .to = p->to,
+                          .middle = p->middle,
+                          .slope = p->slope,
+                          .axis = in->axis,
+                          .count = p->count};
     if (p->logarithm)
         series->count = bh_chebyshev_coefficients(in, value, 1, series->c);
     for (int k = 0; !p->logarithm && k < p->count; k++)
@@ -64,6 +67,14 @@ bool bh_series_of(const bh_interpolant *in, bh_series *series)
     while (series->count > 1 && fabs(series->c[series->count - 1]) < close / NODES * least)
         series->count--;
     return true;
+}
+
+int bh_series_of(const bh_interpolant *in, bh_series *series)
+{
+    int count = 0;
+    for (int i = 0; i < in->count && !(in->limit > 0) && count < BH_SERIES_MOST; i++)
+        count += series_of(in, &in->pieces[i], &series[count]);
+    return count;
 }
 
 /* --- moments --- */

@@ -27,6 +27,7 @@ struct task {
     bh_sampled *sampled; /* of this channel and these energies */
     bh_counted *counted; /* what is kept under a resolution, and nothing else */
     bh_interval allowed[BH_MOST_ARRIVALS];
+    double kinks[BH_RADIATED_KINKS]; /* [rad] */
     bh_average_request request;
 };
 
@@ -64,7 +65,14 @@ static void evaluate_kept(void *context, size_t n, const double *theta, double *
         bh_radiated_apply(t->radiated, t->boost, n, theta, value);
 }
 
-static const double trace_tolerance = 1e-4; /* [1] of sums over nuclei that are a trace */
+/* [1] Of sums over nuclei that are a trace, and of what is background. */
+static const double trace_tolerance = 1e-4, background_tolerance = 1e-5;
+
+/* 0: the usual one. */
+static double tolerance_of(const bh_channel_request *r)
+{
+    return r->trace ? trace_tolerance : r->radiated_only ? background_tolerance : 0;
+}
 
 /* All but the energies and what is kept. */
 static void set_function(const bh_channel_request *r, bh_sampled *sampled, struct task *t)
@@ -78,7 +86,7 @@ static void set_function(const bh_channel_request *r, bh_sampled *sampled, struc
     t->request = (bh_average_request){.function = evaluate,
                                       .context = t,
                                       .limit = largest < BH_PI ? largest : 0,
-                                      .tolerance = r->trace ? trace_tolerance : 0,
+                                      .tolerance = tolerance_of(r),
                                       .allowed = t->allowed};
 }
 
@@ -147,6 +155,8 @@ static bh_code fit_radiated(struct making *m, const struct task *t, int boost, s
         m->common = m->common > 0 ? m->common : bh_average_top(m->averages);
         out->request.common = m->common;
         out->request.kept_only = true; /* totals are those without radiation */
+        out->request.kink_count = bh_radiated_kinks(x, boost, m->places.polar, out->kinks);
+        out->request.kinks = out->kinks;
         out->radiated = x;
         out->boost = boost;
     }
@@ -291,7 +301,7 @@ static bh_code sum_counted(struct making *m, struct task *t, int boost, bh_error
     t->counted = c;
     t->boost = boost;
     t->request.function = evaluate_kept;
-    t->request.tolerance = m->request->trace ? fmax(trace_tolerance, c->tolerance) : c->tolerance;
+    t->request.tolerance = fmax(tolerance_of(m->request), c->tolerance);
     t->request.common = m->common;
     t->request.cut = t->request.kept_only = true;
     t->request.allowed_count = bh_counted_pieces(c, m->places.polar, t->allowed);

@@ -8,7 +8,6 @@
 #include "beamhours/units/constants.h"
 
 static const double soft_share = 0.03, most_lengths = 0.5;
-static const double least_log = -7; /* a cut of 1/1000 of the reference: resolutions are wider */
 
 double bh_channel_kinetic(const bh_channel *channel, const bh_event *event)
 {
@@ -121,18 +120,6 @@ static void set_lengths(const struct matter *m, bh_radiated_detail *out)
     out->after /= weight > 0 ? weight : 1;
 }
 
-/* What a line `cut` above an edge may lose where it is measured above it. */
-static double blurred(double cut, double blur)
-{
-    return blur > 0 && cut < 30 * blur ? blur * log1p(exp(cut / blur)) : cut;
-}
-
-/* Share of a line `cut` above an edge that is measured above it. */
-static double measured_above(double cut, double blur)
-{
-    return blur > 0 ? erfc(-cut / (blur * sqrt(2.0))) / 2 : 1;
-}
-
 /* Where the line is between the edges. */
 static bool set_line(const bh_radiated_request *r, double angle, bh_radiated_detail *out)
 {
@@ -142,7 +129,7 @@ static bool set_line(const bh_radiated_request *r, double angle, bh_radiated_det
     const double kinetic = bh_channel_kinetic(&r->channel, &out->event);
     const bh_gate by_cut = {.cut = r->gate.cut};
     const double by_bite =
-        r->gate.from > 0 ? blurred(kinetic - r->gate.from, r->gate.blur) : (double)INFINITY;
+        r->gate.from > 0 ? bh_gate_blurred(kinetic - r->gate.from, r->gate.blur) : (double)INFINITY;
     out->cut = fmin(by_bite, r->gate.cut < (double)INFINITY
                                  ? kinetic - bh_gate_from(&by_cut, &r->line, angle)
                                  : (double)INFINITY);
@@ -267,46 +254,6 @@ static void set_node(const bh_radiated_request *r, double angle, bh_radiated *ou
     set_levels(&m, fmin(out->reference, at.soft), out, i);
 }
 
-/* What is kept inside `cut` [MeV]. */
-static double kept_inside(const bh_radiated *x, const double *share, double cut)
-{
-    if (!(cut > 0))
-        return 0;
-    const double l = fmax(log(cut / x->reference), least_log);
-    const double tail = bh_angle_between(&x->at, share, x->tail);
-    double sum = 0;
-    for (int k = 2; k >= 0; k--)
-        sum = sum * l + bh_angle_between(&x->at, share, x->level[k]);
-    return exp(sum) * fmax(0, 1 - tail / cut);
-}
-
-static double factor_at(const bh_radiated *x, int boost, double angle)
-{
-    const double far = 1e29;
-    double share[BH_ANGLE_NODES], down = far;
-    if (angle > x->largest)
-        return 0;
-    bh_angle_shares(&x->at, angle, share);
-    const double soft = bh_angle_between(&x->at, share, x->soft);
-    double inside = 1;
-    if (x->cut[0] < far) {
-        const double line = bh_angle_between(&x->at, share, x->cut) +
-                            (boost ? bh_angle_between(&x->at, share, x->shift[boost]) : 0);
-        inside = measured_above(line, x->blur);
-        down = blurred(line, x->blur);
-    }
-    if (x->limit[0] < far)
-        down = fmin(down, bh_angle_between(&x->at, share, x->limit));
-    const double kept = kept_inside(x, share, fmin(down, soft));
-    if (x->signal)
-        return kept;
-    if (x->above[0] < -far)
-        return kept * inside;
-    const double above = bh_angle_between(&x->at, share, x->above);
-    const double beyond = kept_inside(x, share, fmin(blurred(above, x->blur), soft));
-    return fmax(0, kept * inside - beyond * measured_above(above, x->blur));
-}
-
 /* Whether the way out changes so much between the angles that few points do not show it. */
 static bool is_rough(const bh_radiated_request *r, bh_interval polar)
 {
@@ -387,11 +334,4 @@ void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out)
     set_nodes(request, polar, is_rough(request, polar) ? BH_ANGLE_NODES : bh_angle_points(polar),
               out);
     set_boosted(request, (polar.from + polar.to) / 2, out);
-}
-
-void bh_radiated_apply(const bh_radiated *radiated, int boost, size_t n, const double *theta,
-                       double *value)
-{
-    for (size_t i = 0; !radiated->idle && i < n; i++)
-        value[i] *= radiated->boosted[boost] * factor_at(radiated, boost, theta[i]);
 }

@@ -39,8 +39,8 @@ typedef struct {
                    double *factor);
     /* What one factor is made of, for the same `encounter`, `cut` [MeV] and event. */
     bh_radiative_parts (*parts)(const bh_encounter *encounter, double cut, const bh_event *event);
-    /* Their derivatives with ln cut, in which they are linear up to the scattered kinetic energy;
-     * vacuum 0. */
+    /* Their derivatives with the logarithm of `cut` [MeV], in which they are linear up to the
+     * scattered kinetic energy; vacuum 0. */
     bh_radiative_parts (*rate)(const bh_encounter *encounter, double cut, const bh_event *event);
     /* A sentence where the cut [MeV] or the event is outside what holds, into `out`; returns its
      * length, 0 when all is well. */

@@ -52,9 +52,11 @@ double bh_soft_target(const bh_soft *in);
  * lepton. */
 double bh_soft_rate(const bh_soft *in);
 
-/* Returns [1] the same of bh_soft_interference and bh_soft_interference_tsai, and of
- * bh_soft_target: every delta is linear in the logarithm of the cut. */
+/* Returns [1] the same of bh_soft_interference and bh_soft_interference_tsai:
+ * every delta is linear in the logarithm of the cut. */
 double bh_soft_interference_rate(const bh_soft *in);
+
+/* Returns [1] the same of bh_soft_target. */
 double bh_soft_target_rate(const bh_soft *in);
 
 /* Returns [1] what bh_soft_lepton tends to where q2 >> mass^2: Schwinger's (Phys. Rev. 76 (1949)

@@ -30,6 +30,8 @@ typedef struct {
         kept_only;    /* with cut: totals are not needed and come out as what is kept.  A function
                          that   ends in a step where `allowed` does costs most of its time in totals */
     double tolerance; /* [1] relative; 0: 1e-6 */
+    int kink_count;   /* [1] as in interpolant.h */
+    const double *kinks; /* [rad] likewise */
     double common; /* [ub/sr] the tolerance is relative to sums of common / (1 - cos theta)^2 where
                       those of the function are smaller: bins with little are no better; 0: never.
                       From bh_average_top */

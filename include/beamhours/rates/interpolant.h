@@ -16,16 +16,21 @@ typedef void bh_average_function(void *context, size_t n, const double *theta, d
  * itself where the beam axis is inside.  With a limit in sqrt(y_limit - y), of f times it. */
 typedef struct bh_interpolant bh_interpolant;
 
+enum { BH_INTERPOLANT_KINKS = 4 };
+
 /* What is to be represented. */
 typedef struct {
     bh_average_function *function;
     void *context;
-    bh_interval polar; /* [rad] the range, 0 .. pi; from == to is one value */
-    double limit;      /* [rad] f may grow like 1/sqrt(limit - theta) towards it and is not called
-                          there or beyond; 0: none */
-    double tolerance;  /* [1] relative, at each theta */
-    double common;     /* [ub/sr] of f y^2: the tolerance is relative to this where f is smaller, as
-                          of steps that fade away; 0: to f */
+    bh_interval polar;   /* [rad] the range, 0 .. pi; from == to is one value */
+    double limit;        /* [rad] f may grow like 1/sqrt(limit - theta) towards it and is not called
+                            there or beyond; 0: none */
+    double tolerance;    /* [1] relative, at each theta */
+    int kink_count;      /* at most BH_INTERPOLANT_KINKS */
+    const double *kinks; /* [rad] rising: where the slope of f jumps; pieces end there.  Kinks that
+                            are not told cost some 300 values each */
+    double common; /* [ub/sr] of f y^2: the tolerance is relative to this where f is smaller, as
+                      of steps that fade away; 0: to f */
 } bh_interpolant_request;
 
 /* About 100 kB, or NULL when there is no memory.  NULL may be freed. */

@@ -12,7 +12,7 @@ typedef struct {
     double tail;          /* [1] size of the last terms, relative to f */
     bool logarithm, resolved;
     int count;
-    double c[BH_INTERPOLANT_NODES]; /* [1] [ub/sr] */
+    double c[BH_INTERPOLANT_NODES]; /* [1] of the logarithm of f in ub/sr, or of f in it */
 } bh_interpolant_piece;
 
 struct bh_interpolant {

@@ -11,15 +11,18 @@ enum { BH_SERIES_TERMS = 17 };
  * axis is inside.  A sum of f over a part is then a sum of moments of the part: far cheaper than
  * values of f where several functions are summed over the same parts. */
 typedef struct {
+    double from, to;      /* [1] versines between which it holds */
     double middle, slope; /* [1] */
     bool axis;
     int count;
     double c[BH_SERIES_TERMS]; /* [ub/sr] */
 } bh_series;
 
-/* Fills `series` where one will do: one piece, no limit, and 1e-9 of the smallest value reached.
- * False where it will not. */
-bool bh_series_of(const bh_interpolant *interpolant, bh_series *series);
+enum { BH_SERIES_MOST = 4 };
+
+/* Fills `series`, room for BH_SERIES_MOST, from those of the first pieces that are well described
+ * by one: no limit, and 1e-9 of the smallest value reached.  Returns how many. */
+int bh_series_of(const bh_interpolant *interpolant, bh_series *series);
 
 /* What a rule makes of each T_k(t) / y^2 [sr]: of the finer and of the coarser points. */
 typedef struct {

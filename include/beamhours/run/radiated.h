@@ -93,12 +93,22 @@ void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out);
 void bh_radiated_apply(const bh_radiated *radiated, int boost, size_t n, const double *theta,
                        double *value);
 
+enum { BH_RADIATED_KINKS = 4 };
+
+/* Fills kinks [rad], room for BH_RADIATED_KINKS, rising, with the angles within `polar` [rad] where
+ * the tighter of energy cut and bite becomes the other one.  Returns how many. */
+int bh_radiated_kinks(const bh_radiated *radiated, int boost, bh_interval polar, double *kinks);
+
 /* Fills `out` for polar `angle` [rad].  False where there is no such event. */
 bool bh_radiated_at(const bh_radiated_request *request, double angle, bh_radiated_detail *out);
 
 /* Returns [MeV] the lowest kinetic energy that the gate takes at polar `angle` [rad]; infinite
  * where the scatterer's line does not reach that angle and the cut counts from it. */
 double bh_gate_from(const bh_gate *gate, const bh_channel *line, double angle);
+
+/* Returns [MeV] what a line `cut` [MeV] above an edge may lose where it is measured above it, with
+ * rms `blur` [MeV]. */
+double bh_gate_blurred(double cut, double blur);
 
 /* Returns [MeV] the kinetic energy of the detected particle of `event`. */
 double bh_channel_kinetic(const bh_channel *channel, const bh_event *event);
