@@ -274,11 +274,11 @@ bh_code bh_average_sum(const bh_acceptance *acceptance, const bh_average_request
 
 bh_interval bh_average_range(const bh_acceptance *acceptance)
 {
-    bh_interval range = acceptance->whole.polar;
-    if (acceptance->spec.shape == BH_ACCEPTANCE_RING || !(range.from > 0))
+    static const double margin = BH_AVERAGE_TURN * (1 + 1e-6); /* rounding of turned corners */
+    const bh_interval range = acceptance->whole.polar;
+    if (acceptance->spec.shape != BH_ACCEPTANCE_RECTANGLE || !(range.from > 0))
         return range;
-    return (bh_interval){fmax(range.from - BH_AVERAGE_TURN, range.from / 2),
-                         fmin(range.to + BH_AVERAGE_TURN, BH_PI)};
+    return (bh_interval){fmax(range.from - margin, range.from / 2), fmin(range.to + margin, BH_PI)};
 }
 
 const bh_acceptance_part *bh_average_part(bh_average_workspace *workspace,

@@ -35,5 +35,7 @@ bh_code bh_sum_places_of(const bh_channel_request *r, bh_sum_places *p, double *
     p->polar = bh_average_range(&p->at);
     p->turns = r->sensitivities && r->acceptance.shape != BH_ACCEPTANCE_RING &&
                r->acceptance.angle > BH_STEP_ANGLE && r->acceptance.angle < BH_PI - BH_STEP_ANGLE;
+    if (p->turns && r->acceptance.shape == BH_ACCEPTANCE_POINT)
+        p->polar = (bh_interval){p->polar.from - BH_STEP_ANGLE, p->polar.to + BH_STEP_ANGLE};
     return p->turns && !r->without_changes ? set_moved(r, p, edges, err) : BH_OK;
 }

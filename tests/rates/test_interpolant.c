@@ -71,7 +71,8 @@ static void close_it(void)
 
 static bh_code fit(angular *f, double from, double to, double limit)
 {
-    const bh_interpolant_request request = {call, &f, {from, to}, limit, 1e-8, 0};
+    const bh_interpolant_request request = {
+        .function = call, .context = &f, .polar = {from, to}, .limit = limit, .tolerance = 1e-8};
     bh_error err;
     return bh_interpolant_fit(in, &request, &err);
 }
@@ -163,7 +164,10 @@ END_TEST
 
 START_TEST(refused)
 {
-    const bh_interpolant_request bad = {call, &(angular *){negative}, {0.4, 0.6}, 0, 1e-8, 0};
+    const bh_interpolant_request bad = {.function = call,
+                                        .context = &(angular *){negative},
+                                        .polar = {0.4, 0.6},
+                                        .tolerance = 1e-8};
     bh_error err;
     ck_assert_int_eq(bh_interpolant_fit(in, &bad, &err), BH_EDOMAIN);
     ck_assert_msg(strstr(err.text, " deg is not"), "%s", err.text);

@@ -73,8 +73,8 @@ BH_CHECKED bh_code bh_average_over(const bh_acceptance *acceptance,
                                    bh_error *err);
 
 /* Returns [rad] the polar angles that sums are fitted over: those of the acceptance, and of a
- * rectangle so much beside that it may be turned by BH_AVERAGE_TURN.  Functions that are fitted
- * over the same range share the moments of all parts. */
+ * rectangle so much beside that it may be turned by BH_AVERAGE_TURN either way.  Functions that are
+ * fitted over the same range share the moments of all parts. */
 #define BH_AVERAGE_TURN 2e-5 /* [rad] +- 0, a choice; exact */
 bh_interval bh_average_range(const bh_acceptance *acceptance);
 
