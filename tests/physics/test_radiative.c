@@ -115,6 +115,30 @@ START_TEST(models_agree)
 }
 END_TEST
 
+/* The parts are linear in ln(cut), as soft photons have it, with the slope that the row tells. */
+START_TEST(rates_are_slopes)
+{
+    for (int k = 0; bh_radiative_at(k); k++)
+        for (int b = 0; b < COUNT(leptons); b++)
+            for (int angle = 2; angle < 180; angle += 22) {
+                meeting m;
+                meet(&m, leptons[b], 210.0 + 10.0 * angle, angle);
+                const bh_radiative *row = bh_radiative_at(k);
+                const double cut = 0.8 * m.e.scattered_kinetic, per = 1.0 / log(100.0);
+                const bh_radiative_parts high = row->parts(&m.x, cut, &m.e),
+                                         low = row->parts(&m.x, cut / 100.0, &m.e),
+                                         rate = row->rate(&m.x, cut / 7.0, &m.e);
+                const double slope[3] = {(high.z0 - low.z0) * per, (high.z1 - low.z1) * per,
+                                         (high.z2 - low.z2) * per};
+                const double told[3] = {rate.z0, rate.z1, rate.z2};
+                for (int i = 0; i < 3; i++)
+                    ck_assert_msg(fabs(told[i] - slope[i]) < 1e-9, "%s %s %d deg, part %d: %g, %g",
+                                  row->name, leptons[b], angle, i, told[i], slope[i]);
+                ck_assert_double_eq(rate.vacuum, 0.0);
+            }
+}
+END_TEST
+
 START_TEST(batch_is_the_same_event_by_event)
 {
     enum { N = 70 };
@@ -218,6 +242,7 @@ int main(void)
     tcase_add_test(tests, charge_conjugation);
     tcase_add_test(tests, factor_of_its_parts);
     tcase_add_test(tests, models_agree);
+    tcase_add_test(tests, rates_are_slopes);
     tcase_add_test(tests, batch_is_the_same_event_by_event);
     tcase_add_test(tests, what_does_not_radiate);
     tcase_add_test(tests, odd_cuts);

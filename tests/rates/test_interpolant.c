@@ -162,6 +162,31 @@ START_TEST(unresolved_says_so)
 }
 END_TEST
 
+static double bent(double theta)
+{
+    return rutherford(theta) * (theta < 0.5 ? 1 : 1 + 3 * (theta - 0.5));
+}
+
+/* A kink costs hundreds of values, unless it is told; told in vain, it costs little. */
+START_TEST(kinks_that_are_told)
+{
+    static const double kinks[] = {0.2, 0.5, 0.55};
+    angular *f = bent;
+    bh_interpolant_request request = {
+        .function = call, .context = &f, .polar = {0.4, 0.6}, .tolerance = 1e-8};
+    ck_assert(!bh_interpolant_fit(in, &request, NULL));
+    ck_assert_uint_gt(bh_interpolant_calls(in), 200);
+    request.kinks = kinks;
+    request.kink_count = COUNT(kinks);
+    ck_assert(!bh_interpolant_fit(in, &request, NULL));
+    ck_assert_uint_le(bh_interpolant_calls(in), 3 * 17);
+    for (int i = 0; i <= 500; i++) {
+        const double theta = 0.4 + 0.2 * i / 500;
+        ck_assert_double_eq_tol(at(theta) / bent(theta), 1, 1e-8);
+    }
+}
+END_TEST
+
 START_TEST(refused)
 {
     const bh_interpolant_request bad = {.function = call,
@@ -185,6 +210,7 @@ int main(void)
     tcase_add_test(tests, many_at_once_as_one_by_one);
     tcase_add_test(tests, beyond_the_limit_is_nothing);
     tcase_add_test(tests, unresolved_says_so);
+    tcase_add_test(tests, kinks_that_are_told);
     tcase_add_test(tests, refused);
     return run_suite("interpolant", tests);
 }
