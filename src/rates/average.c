@@ -115,8 +115,8 @@ static bh_integrand integrand_of(const summing *s, const bh_acceptance_part *par
 static const bh_series *series_for(const summing *s, const bh_acceptance_part *part)
 {
     const bh_series *one = s->series;
-    if (s->series_count == 0)
-        return NULL;
+    if (s->series_count == 0 || isinf(one->from))
+        return s->series_count ? one : NULL;
     const double from = versine_of(part->polar.from), to = versine_of(part->polar.to);
     for (; one < s->series + s->series_count; one++)
         if (from >= one->from && to <= one->to)

@@ -74,6 +74,10 @@ int bh_series_of(const bh_interpolant *in, bh_series *series)
     int count = 0;
     for (int i = 0; i < in->count && !(in->limit > 0) && count < BH_SERIES_MOST; i++)
         count += series_of(in, &in->pieces[i], &series[count]);
+    if (in->count == 1 && count == 1) {
+        series->from = -HUGE_VAL;
+        series->to = HUGE_VAL;
+    }
     return count;
 }
 

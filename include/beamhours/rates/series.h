@@ -11,7 +11,7 @@ enum { BH_SERIES_TERMS = 17 };
  * axis is inside.  A sum of f over a part is then a sum of moments of the part: far cheaper than
  * values of f where several functions are summed over the same parts. */
 typedef struct {
-    double from, to;      /* [1] versines between which it holds */
+    double from, to; /* [1] versines between which it holds; infinite where that is everywhere */
     double middle, slope; /* [1] */
     bool axis;
     int count;
