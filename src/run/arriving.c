@@ -15,7 +15,7 @@ double bh_arrival_momentum(const bh_arrival *arrival, const bh_vertex *vertex, d
     bh_channel there = *arrival->channel;
     bh_event event;
     there.encounter.kinetic = vertex->kinetic[arrival->boost];
-    if (angle > bh_channel_largest_angle(&there) || bh_channel_event(&there, angle, &event, NULL))
+    if (!bh_channel_has(&there, angle, &event))
         return 0;
     const double kinetic = there.recoil ? event.recoil_kinetic : event.scattered_kinetic;
     const double left = bh_leaver_left(arrival->leaver, vertex, angle, kinetic);

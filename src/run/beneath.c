@@ -15,13 +15,11 @@ static const double worth_saying = 0.01, soft_share = 0.03;
 
 void bh_beneath_begin(const bh_view *view, bh_beneath *sum)
 {
-    bh_acceptance acceptance;
     *sum = (bh_beneath){.at = {.count = 0}};
     if (view->arm->arm.detects == BH_DETECTS_RECOIL ||
-        view->setting->beam.particle.kind != BH_KIND_LEPTON ||
-        bh_acceptance_make(&view->spec, &acceptance, NULL))
+        view->setting->beam.particle.kind != BH_KIND_LEPTON)
         return;
-    sum->polar = acceptance.whole.polar;
+    sum->polar = view->acceptance.whole.polar;
     if (!(sum->polar.to > 0))
         return;
     sum->polar.from = fmax(sum->polar.from, 1e-4);
@@ -101,8 +99,7 @@ static void note(bh_yielder *yielder, const bh_view *view, const bh_beneath_of *
 static double tail_at(const bh_radiated_request *r, double angle)
 {
     bh_event event;
-    if (r->signal || !r->gate.given || angle > bh_channel_largest_angle(&r->channel) ||
-        bh_channel_event(&r->channel, angle, &event, NULL))
+    if (r->signal || !r->gate.given || !bh_channel_has(&r->channel, angle, &event))
         return 0;
     const double line = event.scattered_kinetic;
     const double soft = soft_share * (line + r->channel.encounter.beam->mass);
@@ -168,13 +165,10 @@ static void evaluate_smooth(void *context, size_t n, const double *theta, double
 static bh_code add_average(bh_yielder *yielder, const bh_view *view,
                            const bh_average_request *request, double *total, bh_error *err)
 {
-    bh_acceptance acceptance;
     bh_sum_scratch *scratch = bh_workspace_scratch(yielder->workspace);
     bh_averages sums = {.bins = view->parts > 1 ? scratch->bins : NULL};
-    bh_code code = bh_acceptance_make(&view->spec, &acceptance, err);
-    if (!code)
-        code = bh_average_over(&acceptance, request, bh_workspace_averages(yielder->workspace),
-                               &sums, err);
+    const bh_code code = bh_average_over(&view->acceptance, request,
+                                         bh_workspace_averages(yielder->workspace), &sums, err);
     for (int i = 0; !code && i < view->parts; i++)
         total[i] += i ? scratch->bins[i - 1].total : sums.whole.total;
     return code;

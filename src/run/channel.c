@@ -47,6 +47,18 @@ bh_code bh_channel_event(const bh_channel *channel, double angle, bh_event *even
                            : bh_kinematics_scattered(&in, angle, channel->branch, event, err);
 }
 
+bool bh_channel_has(const bh_channel *channel, double angle, bh_event *event)
+{
+    const bh_collision in = collision_of(channel);
+    if (!(angle <= bh_channel_largest_angle(channel)))
+        return false;
+    if (channel->recoil || !(angle >= 0) || !bh_kinematics_in_range(&in) ||
+        (channel->branch == BH_BRANCH_SLOW && !(in.mass > in.target)))
+        return !bh_channel_event(channel, angle, event, NULL);
+    bh_kinematics_batch(&in, 1, &angle, channel->branch, event);
+    return true;
+}
+
 /* Fills the events that exist, and where each stands; returns how many there are. */
 static size_t events_of(const bh_channel *channel, size_t n, const double *angle, bh_event *event,
                         size_t *place)

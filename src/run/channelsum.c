@@ -66,7 +66,7 @@ static void evaluate_kept(void *context, size_t n, const double *theta, double *
 }
 
 /* [1] Of sums over nuclei that are a trace, and of what is background. */
-static const double trace_tolerance = 1e-4, background_tolerance = 1e-5;
+static const double trace_tolerance = 1e-3, background_tolerance = 1e-5;
 
 /* 0: the usual one. */
 static double tolerance_of(const bh_channel_request *r)

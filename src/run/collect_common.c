@@ -1,6 +1,5 @@
 /* collect_common.c - what collecting uncertainties has in common. */
 #include <math.h>
-#include <stdio.h>
 
 #include "beamhours/run/collecting.h"
 
@@ -14,6 +13,17 @@ static bool same_place(bh_mark a, bh_mark b)
     return a.line == b.line && a.column == b.column;
 }
 
+/* The words in one, cut where there is no more room; made for every value of every arm. */
+static const char *joined(const char *const *words, char key[BH_CAUSE_KEY])
+{
+    size_t used = 0;
+    for (; *words; words++)
+        for (const char *c = *words; *c && used < BH_CAUSE_KEY - 1; c++)
+            key[used++] = *c;
+    key[used] = '\0';
+    return key;
+}
+
 const char *bh_collect_beam_key(const bh_collecting *c, bh_mark at, const char *member,
                                 char key[BH_CAUSE_KEY])
 {
@@ -25,25 +35,21 @@ const char *bh_collect_beam_key(const bh_collecting *c, bh_mark at, const char *
         common = common || same_place(marks[i], at);
     for (size_t i = 0; i < all->other_count; i++)
         common = common || same_place(all->others[i].share.at, at);
-    if (common)
-        snprintf(key, BH_CAUSE_KEY, "beam.%s", member);
-    else
-        snprintf(key, BH_CAUSE_KEY, "settings.%s.beam.%s", c->setting->name, member);
-    return key;
+    return common ? joined((const char *[]){"beam.", member, NULL}, key)
+                  : joined((const char *[]){"settings.", c->setting->name, ".beam.", member, NULL},
+                           key);
 }
 
 const char *bh_collect_arm_key(const bh_collecting *c, const char *member, char key[BH_CAUSE_KEY])
 {
-    snprintf(key, BH_CAUSE_KEY, "arms.%s.%s", c->plan->arm.name.text ? c->plan->arm.name.text : "",
-             member);
-    return key;
+    const char *name = c->plan->arm.name.text;
+    return joined((const char *[]){"arms.", name ? name : "", ".", member, NULL}, key);
 }
 
 const char *bh_collect_setting_key(const bh_collecting *c, const char *member,
                                    char key[BH_CAUSE_KEY])
 {
-    snprintf(key, BH_CAUSE_KEY, "settings.%s.%s", c->setting->name, member);
-    return key;
+    return joined((const char *[]){"settings.", c->setting->name, ".", member, NULL}, key);
 }
 
 bh_cause bh_collect_cause(bh_cause_kind kind, bh_mark at, const char *key)

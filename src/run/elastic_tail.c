@@ -140,7 +140,7 @@ double bh_elastic_tail(const bh_radiated_request *request, double angle, double 
                                          0.1012285362903763};
     const bool light = bh_particle_is_electron(request->channel.encounter.beam);
     bh_event event;
-    if (!tails(request) || bh_channel_event(&request->channel, angle, &event, NULL))
+    if (!tails(request) || !bh_channel_has(&request->channel, angle, &event))
         return 0;
     to = fmin(to, event.scattered_kinetic * (1 - 1e-6));
     if (!(from > 0 && from < to))

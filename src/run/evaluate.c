@@ -106,17 +106,18 @@ static void find_slow_bin(const bh_evaluator *evaluator, const bh_setting_hours 
             worst = i;
         }
     }
+    if (!(longest > available->value / BH_SECONDS_PER_HOUR))
+        return;
     char bin[16];
     snprintf(bin, sizeof bin, "%d", worst);
-    if (longest > available->value / BH_SECONDS_PER_HOUR)
-        note(evaluator, (bh_remark){.kind = BH_REMARK_BIN_TOO_SLOW,
-                                    .at = plan->wanted.at,
-                                    .key = "goal",
-                                    .who = plan->arm.name.text,
-                                    .what = bin,
-                                    .setting = hours->setting->name,
-                                    .high = longest,
-                                    .from = available->value / BH_SECONDS_PER_HOUR});
+    note(evaluator, (bh_remark){.kind = BH_REMARK_BIN_TOO_SLOW,
+                                .at = plan->wanted.at,
+                                .key = "goal",
+                                .who = plan->arm.name.text,
+                                .what = bin,
+                                .setting = hours->setting->name,
+                                .high = longest,
+                                .from = available->value / BH_SECONDS_PER_HOUR});
 }
 
 /* [1] below this share, whoever plans should know: common practice. */

@@ -31,16 +31,14 @@ static void note(const struct finding *f, bh_remark remark)
 /* The momentum transfers squared between the edges of the arm [GeV2]. */
 static bool reached(const struct finding *f, double *low, double *high)
 {
-    bh_acceptance acceptance;
-    if (bh_acceptance_make(&f->yield->view.spec, &acceptance, NULL))
-        return false;
+    const bh_interval polar = f->yield->view.acceptance.whole.polar;
     const double largest = bh_channel_largest_angle(f->channel);
-    const double ends[] = {acceptance.whole.polar.from, acceptance.whole.polar.to};
+    const double ends[] = {polar.from, polar.to};
     *low = (double)INFINITY;
     *high = 0;
     for (int i = 0; i < 2; i++) {
         bh_event event;
-        if (bh_channel_event(f->channel, fmin(ends[i], largest), &event, NULL))
+        if (!bh_channel_has(f->channel, fmin(ends[i], largest), &event))
             return false;
         *low = fmin(*low, event.q2 * 1e-6);
         *high = fmax(*high, event.q2 * 1e-6);

@@ -20,8 +20,7 @@ static bh_code lost_behind(bh_yielder *yielder, const bh_view *view, const bh_wa
     double sum = 0, weight = 0;
     bh_event event;
     *lost = 0;
-    if (!way->losing || view->axis > bh_channel_largest_angle(&view->line) ||
-        bh_channel_event(&view->line, view->axis, &event, NULL))
+    if (!way->losing || !bh_channel_has(&view->line, view->axis, &event))
         return BH_OK;
     const double kinetic = bh_channel_kinetic(&view->line, &event);
     const bh_code code =
@@ -112,10 +111,8 @@ bh_radiated_request bh_view_radiated(const bh_yielder *yielder, const bh_view *v
                                    .gate = view->gate,
                                    .way = way,
                                    .vertices = yielder->vertices,
+                                   .polar = view->acceptance.whole.polar,
                                    .count = count};
-    bh_acceptance acceptance;
-    if (!bh_acceptance_make(&view->spec, &acceptance, NULL))
-        request.polar = acceptance.whole.polar;
     return request;
 }
 
@@ -126,6 +123,7 @@ const bh_channel_sum *bh_elastic_sums(bh_yielder *yielder, const bh_view *view,
     bh_channel_request request = bh_view_request(yielder, view, of->channel, of->way, of->count);
     bh_radiated factor;
     radiated.signal = of->signal;
+    radiated.trace = of->trace;
     radiated.unboosted = view->without_changes;
     bh_radiated_make(&radiated, &factor);
     request.radiated = &factor;

@@ -49,13 +49,14 @@ static double wider(const bh_radiated *x, int boost, double angle)
 
 int bh_radiated_kinks(const bh_radiated *x, int boost, bh_interval polar, double *kinks)
 {
+    enum { STRETCHES = BH_RADIATED_KINKS };
     int count = 0;
     if (x->idle || !(x->cut[0] < far_off && x->limit[0] < far_off))
         return 0;
     polar.to = fmin(polar.to, x->largest);
     double from = polar.from, before = wider(x, boost, from);
-    for (int i = 1; i <= BH_RADIATED_KINKS && polar.from < polar.to; i++) {
-        const double to = polar.from + (polar.to - polar.from) * i / BH_RADIATED_KINKS;
+    for (int i = 1; i <= STRETCHES && polar.from < polar.to; i++) {
+        const double to = polar.from + (polar.to - polar.from) * i / STRETCHES;
         const double behind = wider(x, boost, to);
         double low = from, high = to;
         for (int k = 0; before * behind < 0 && k < 50; k++) {

@@ -17,8 +17,7 @@ static double deflected(const bh_view *view, const bh_vertex *v, const bh_channe
     bh_channel there = *channel;
     bh_event event;
     there.encounter.kinetic = v->kinetic[BH_AS_IT_IS];
-    if (view->axis > bh_channel_largest_angle(&there) ||
-        bh_channel_event(&there, view->axis, &event, NULL))
+    if (!bh_channel_has(&there, view->axis, &event))
         return 0;
     const bh_particle detected = bh_channel_detected(channel);
     const double behind = bh_way_after(&view->way, v, view->axis).lengths;
@@ -186,15 +185,13 @@ void bh_resolve_bins(bh_yield *yield)
           offsetof(bh_part, per_momentum)}},
         {3, {offsetof(bh_part, windows), offsetof(bh_part, dummy), offsetof(bh_part, beside[0])}},
         {2, {offsetof(bh_part, other), offsetof(bh_part, beside[1])}}};
-    bh_acceptance acceptance;
     struct cells c;
     const int bins = yield->view.parts - 1;
     for (int i = 0; i <= bins; i++)
         yield->part[i].belonging = yield->part[i].kept;
-    if (bins < 1 || !(yield->view.angle_rms > 0) ||
-        bh_acceptance_make(&yield->view.spec, &acceptance, NULL))
+    if (bins < 1 || !(yield->view.angle_rms > 0))
         return;
-    set_cells(yield, &acceptance, &c);
+    set_cells(yield, &yield->view.acceptance, &c);
     if (c.migration.cells < 2 || bh_migration_check(&c.migration, NULL))
         return;
     move_all(yield, kinds, &c);

@@ -46,8 +46,7 @@ static bool scattered(const bh_taken *t, double kinetic, double angle, bh_event 
 {
     bh_channel there = *t->channel;
     there.encounter.kinetic = kinetic;
-    return angle <= bh_channel_largest_angle(&there) &&
-           !bh_channel_event(&there, angle, event, NULL);
+    return bh_channel_has(&there, angle, event);
 }
 
 static double momentum_at(const bh_taken *t, double kinetic, double angle)

@@ -94,8 +94,7 @@ static bh_code arriving(bh_yielder *yielder, const bh_view *view, const bh_chann
         bh_channel there = *channel;
         bh_event event;
         there.encounter.kinetic = v->kinetic[BH_AS_IT_IS];
-        if (view->axis > bh_channel_largest_angle(&there) ||
-            bh_channel_event(&there, view->axis, &event, NULL))
+        if (!bh_channel_has(&there, view->axis, &event))
             continue;
         const double kinetic = channel->recoil ? event.recoil_kinetic : event.scattered_kinetic;
         const double left = bh_leaver_left(&leaver, v, view->axis, kinetic);
@@ -112,8 +111,7 @@ static bh_code arriving(bh_yielder *yielder, const bh_view *view, const bh_chann
 static void set_central(bh_view *view, const bh_channel *first)
 {
     bh_event event;
-    if (view->axis <= bh_channel_largest_angle(first) &&
-        !bh_channel_event(first, view->axis, &event, NULL))
+    if (bh_channel_has(first, view->axis, &event))
         view->central_momentum = first->recoil ? event.recoil_momentum : event.scattered_momentum;
 }
 
@@ -198,6 +196,9 @@ bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_se
                   .parts = 1};
     if (!view->process)
         return bh_fail(err, BH_EPLAN, "no process %s", setting->process.text);
+    const bh_code code = bh_acceptance_make(&view->spec, &view->acceptance, err);
+    if (code)
+        return code;
     view->axis = arm->arm.shape == BH_SHAPE_RING ? (arm->arm.ring.from + arm->arm.ring.to) / 2
                                                  : arm->angle.value;
     return set_way(yielder, view, err);

@@ -90,7 +90,7 @@ static bool is_trace(const bh_yielder *yielder, const bh_nuclei *nuclei)
            yielder->seen[nuclei->nuclide].of[BH_ORIGIN_SIGNAL] < trace_share * main;
 }
 
-/* Whether so little comes from `nuclei` of them, beside what has been added, that 1e-4 of it and
+/* Whether so little comes from `nuclei` of them, beside what has been added, that 1e-3 of it and
  * the sensitivities do not matter: not where the arm is set to the line of a rare isotope. */
 static bool stays_trace(const bh_yield *yield, const bh_channel_sum *sums, double nuclei)
 {
@@ -163,16 +163,15 @@ static bool mean_angles(bh_yielder *yielder, const bh_acceptance *acceptance, bh
                             NULL);
 }
 
-static bh_code set_geometry(bh_yielder *yielder, bh_yield *yield, bh_error *err)
+static void set_geometry(bh_yielder *yielder, bh_yield *yield)
 {
-    bh_acceptance acceptance;
+    const bh_acceptance *acceptance = &yield->view.acceptance;
     bh_average_workspace *averages = bh_workspace_averages(yielder->workspace);
     bh_averages means = {.bins = bh_workspace_scratch(yielder->workspace)->bins};
-    const bh_code code = bh_acceptance_make(&yield->view.spec, &acceptance, err);
-    const bool smooth = !code && yield->view.parts > 1 && mean_angles(yielder, &acceptance, &means);
-    for (int i = 0; !code && i < yield->view.parts; i++) {
-        const bh_acceptance_part *part = bh_average_part(averages, &acceptance, i);
-        const bh_average *mean = smooth && i && i <= acceptance.bins ? &means.bins[i - 1] : NULL;
+    const bool smooth = yield->view.parts > 1 && mean_angles(yielder, acceptance, &means);
+    for (int i = 0; i < yield->view.parts; i++) {
+        const bh_acceptance_part *part = bh_average_part(averages, acceptance, i);
+        const bh_average *mean = smooth && i && i <= acceptance->bins ? &means.bins[i - 1] : NULL;
         const bool known = mean && mean->converged && mean->solid_angle > 0;
         const double angle = known ? mean->total / mean->solid_angle : 0;
         yield->part[i] = (bh_part){.solid_angle = part->solid_angle, .polar = part->polar};
@@ -180,7 +179,6 @@ static bh_code set_geometry(bh_yielder *yielder, bh_yield *yield, bh_error *err)
                                : known ? angle
                                        : bh_acceptance_mean_angle(part);
     }
-    return code;
 }
 
 /* From sums to means and rates. */
@@ -278,9 +276,8 @@ bh_code bh_yield_make(bh_yielder *yielder, bh_yield *yield, bh_error *err)
     const bh_target *target = yield->view.setting->target;
     yield->converged = true;
     yield->seen = 0;
-    bh_code code = set_geometry(yielder, yield, err);
-    if (!code)
-        code = add_target(yielder, yield, err);
+    set_geometry(yielder, yield);
+    bh_code code = add_target(yielder, yield, err);
     if (!code)
         code = bh_findings(yielder, yield, err);
     if (!code && target->empty != BH_EMPTY_NONE && target->empty_use)

@@ -28,7 +28,7 @@ typedef struct {
     size_t vertex_count;
     const bh_range **ranges;     /* room for the sheets of the way */
     const bh_radiated *radiated; /* NULL: as without radiation */
-    bool trace;                  /* so few that 1e-4 of their sums is enough */
+    bool trace;                  /* so few that 1e-3 of their sums is enough */
     bool radiated_only;          /* total and kept are not wanted, and then equal to radiated */
     bool bins;                   /* sums of the bins are wanted too */
     bool sensitivities;          /* moved and boosted belong to it: what is fitted reaches so far */

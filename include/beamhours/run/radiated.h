@@ -26,6 +26,7 @@ typedef struct {
     bh_channel line;    /* the scatterer's, from which the cut counts */
     bh_gate gate;
     bool signal;               /* nuclei of the scatterer itself: all inside the cut is theirs */
+    bool trace;                /* so few that 1e-3 of them is enough */
     bool unboosted;            /* other momenta of the beam are not asked for */
     bh_interval polar;         /* [rad] the angles of interest */
     const bh_way *way;         /* NULL: nothing is in the way */
@@ -93,7 +94,7 @@ void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out);
 void bh_radiated_apply(const bh_radiated *radiated, int boost, size_t n, const double *theta,
                        double *value);
 
-enum { BH_RADIATED_KINKS = 4 };
+enum { BH_RADIATED_KINKS = 2 };
 
 /* Fills kinks [rad], room for BH_RADIATED_KINKS, rising, with the angles within `polar` [rad] where
  * the tighter of energy cut and bite becomes the other one.  Returns how many. */

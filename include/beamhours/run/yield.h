@@ -56,9 +56,10 @@ typedef struct {
     const bh_process *process;
     const char *beside; /* name of another particle in the beam, when it is meant; else NULL */
     bh_acceptance_spec spec;
-    bh_way way;           /* of the beam and out of the setting's target */
-    bool blocked;         /* the beam does not come through what is to be seen of the sample */
-    bool without_changes; /* per_radian and per_momentum of its parts are NAN */
+    bh_acceptance acceptance; /* made of it */
+    bh_way way;               /* of the beam and out of the setting's target */
+    bool blocked;             /* the beam does not come through what is to be seen of the sample */
+    bool without_changes;     /* per_radian and per_momentum of its parts are NAN */
     bool stuck; /* what is scattered along the arm's axis stops before it reaches the detector */
     double vertex_kinetic;         /* [MeV] of the beam, mean over the scatterer nuclei seen */
     double axis;                   /* [rad] polar angle of the arm's centre */
@@ -187,7 +188,7 @@ typedef struct {
     size_t count;
     bool signal;  /* nuclei of the scatterer in the sample */
     bool whole;   /* the cross section without radiation is wanted, for explain */
-    bool trace;   /* so few nuclei that 1e-4 of their rate is enough, and no sensitivity */
+    bool trace;   /* so few nuclei that 1e-3 of their rate is enough, and no sensitivity */
     bool binless; /* the sums of bins are not wanted */
 } bh_elastic_of;
 
