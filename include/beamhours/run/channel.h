@@ -31,7 +31,8 @@ double bh_channel_largest_angle(const bh_channel *channel);
 BH_CHECKED bh_code bh_channel_event(const bh_channel *channel, double angle, bh_event *event,
                                     bh_error *err);
 
-/* The same, false where there is none; the recoil's angle may be NAN.  A third faster. */
+/* The same event for `angle` [rad], false where there is none; the recoil's angle may be NAN.  A
+ * third faster. */
 bool bh_channel_has(const bh_channel *channel, double angle, bh_event *event);
 
 /*
