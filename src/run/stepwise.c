@@ -217,7 +217,7 @@ static bh_result *lay_out(const bh_setting *setting, size_t number, bool bins)
     r->arms = setting->arm_count;
     for (size_t a = 0; a < r->arms; a++)
         r->bins += (size_t)setting->arms[a].arm.bins;
-    r->whole = calloc(r->arms + 1, sizeof *r->whole);
+    r->whole = calloc(r->arms ? r->arms : 1, sizeof *r->whole);
     r->bin = bins ? calloc(r->bins + 1, sizeof *r->bin) : NULL;
     r->remarks = bh_remarks_new();
     if (!r->whole || (bins && !r->bin) || !r->remarks) {

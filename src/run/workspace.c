@@ -12,7 +12,7 @@
 
 enum {
     BUCKETS = 4096,
-    MOST_BYTES = 8 << 20,
+    MOST_BYTES = 1 << 20, /* of sums: those of the settings at hand */
     MOST_STRUCTURES = 1024,
     MOST_RANGES = 512,
     ALIGN = alignof(max_align_t)
@@ -57,6 +57,15 @@ bh_workspace *bh_workspace_new(void)
     return NULL;
 }
 
+static void forget_sums(bh_workspace *w)
+{
+    memset(w->buckets, 0, sizeof w->buckets);
+    if (w->arena)
+        bh_arena_clear(w->arena);
+    w->bytes = 0;
+}
+
+/* Sums name structures and ranges: they go with them. */
 static void forget(bh_workspace *w)
 {
     for (size_t i = 0; i < w->structure_count; i++)
@@ -67,10 +76,7 @@ static void forget(bh_workspace *w)
         bh_stopping_free(w->ranges[i].stopping);
     }
     w->range_count = 0;
-    memset(w->buckets, 0, sizeof w->buckets);
-    bh_arena_free(w->arena);
-    w->arena = NULL;
-    w->bytes = 0;
+    forget_sums(w);
 }
 
 void bh_workspace_free(bh_workspace *workspace)
@@ -78,15 +84,18 @@ void bh_workspace_free(bh_workspace *workspace)
     if (!workspace)
         return;
     forget(workspace);
+    bh_arena_free(workspace->arena);
     bh_average_workspace_free(workspace->averages);
     free(workspace);
 }
 
 void bh_workspace_trim(bh_workspace *workspace)
 {
-    if (workspace->bytes > MOST_BYTES || workspace->structure_count > MOST_STRUCTURES / 2 ||
+    if (workspace->structure_count > MOST_STRUCTURES / 2 ||
         workspace->range_count > MOST_RANGES / 2)
         forget(workspace);
+    else if (workspace->bytes > MOST_BYTES)
+        forget_sums(workspace);
 }
 
 bh_average_workspace *bh_workspace_averages(bh_workspace *workspace)
@@ -131,11 +140,8 @@ const void *bh_workspace_recall(const bh_workspace *workspace, const void *key, 
 
 void *bh_workspace_keep(bh_workspace *workspace, const void *key, size_t size, size_t room)
 {
-    if (!workspace->arena)
-        workspace->arena = bh_arena_new();
     const size_t at = (size + ALIGN - 1) / ALIGN * ALIGN;
-    struct entry *e =
-        workspace->arena ? bh_arena_take(workspace->arena, 1, sizeof *e + at + room) : NULL;
+    struct entry *e = bh_arena_take(workspace->arena, 1, sizeof *e + at + room);
     if (!e)
         return NULL;
     const size_t hash = hash_of(key, size);
