@@ -107,10 +107,16 @@ void bh_moments_of(const bh_quadrature_rule *rule, const bh_series *series, bh_m
         two[i] = t[i] * one[i]; /* T_-1 = T_1 */
     }
     for (int k = 0; k < moments->count; k++) {
+        double fine = 0, coarse = 0;
+#pragma omp simd reduction(+ : fine)
         for (int i = 0; i < n; i++)
-            moments->fine[k] += one[i];
+            fine += one[i];
+#pragma omp simd reduction(+ : coarse)
         for (int i = n; i < all; i++)
-            moments->coarse[k] += one[i];
+            coarse += one[i];
+        moments->fine[k] = fine;
+        moments->coarse[k] = coarse;
+#pragma omp simd
         for (int i = 0; i < all; i++) {
             const double next = 2 * t[i] * one[i] - two[i];
             two[i] = one[i];

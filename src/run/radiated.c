@@ -223,7 +223,8 @@ static void set_shift(const bh_radiated_request *r, double angle, double kinetic
     }
 }
 
-static void set_node(const bh_radiated_request *r, double angle, bh_radiated *out, int i)
+/* Returns the radiation lengths behind, mean. */
+static double set_node(const bh_radiated_request *r, double angle, bh_radiated *out, int i)
 {
     static const double far = 1e30; /* of an edge that is not there */
     const double infinite = (double)INFINITY;
@@ -246,29 +247,23 @@ static void set_node(const bh_radiated_request *r, double angle, bh_radiated *ou
     set_shift(r, angle, kinetic, out, i);
     out->tail[i] = mean_tail(&m) * fmax(0, 1 - out->reference / most);
     set_levels(&m, fmin(out->reference, at.soft), out, i);
+    set_lengths(&m, &at);
+    return at.after;
 }
 
-/* Whether the way out changes so much between the angles that few points do not show it. */
-static bool is_rough(const bh_radiated_request *r, bh_interval polar)
-{
-    static const double much = 1.6, some = 0.003; /* [1] and radiation lengths */
-    struct matter m;
-    double least = (double)INFINITY, most = 0;
-    for (int i = 0; i < 3; i++) {
-        bh_radiated_detail at = {.factor = 0};
-        set_matter(r, polar.from + (polar.to - polar.from) * i / 2, &m);
-        set_lengths(&m, &at);
-        least = fmin(least, at.after);
-        most = fmax(most, at.after);
-    }
-    return most > much * least + some;
-}
-
+/* As many again as there can be where the way out changes so much that few do not show it. */
 static void set_nodes(const bh_radiated_request *r, bh_interval polar, int count, bh_radiated *out)
 {
+    static const double much = 1.3, some = 0.002; /* [1] and radiation lengths, between the nodes */
+    double least = (double)INFINITY, most = 0;
     bh_angle_nodes_of(polar, count, &out->at);
-    for (int i = 0; i < count; i++)
-        set_node(r, out->at.angle[i], out, i);
+    for (int i = 0; i < count; i++) {
+        const double after = set_node(r, out->at.angle[i], out, i);
+        least = fmin(least, after);
+        most = fmax(most, after);
+    }
+    if (most > much * least + some && count < BH_ANGLE_NODES)
+        set_nodes(r, polar, BH_ANGLE_NODES, out);
 }
 
 static bool works(const bh_radiated_request *r)
@@ -326,9 +321,7 @@ void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out)
         out->idle = true;
         return;
     }
-    int nodes = is_rough(request, polar) ? BH_ANGLE_NODES : bh_angle_points(polar);
-    if (request->trace && nodes > FEW && nodes < BH_ANGLE_NODES)
-        nodes = FEW;
-    set_nodes(request, polar, nodes, out);
+    const int nodes = bh_angle_points(polar);
+    set_nodes(request, polar, request->trace && nodes > FEW ? FEW : nodes, out);
     set_boosted(request, (polar.from + polar.to) / 2, out);
 }

@@ -32,16 +32,23 @@ struct ranged {
     bh_range *range;
 };
 
+/* Things kept by their keys. */
+struct store {
+    bh_arena *arena; /* of entries and their contents */
+    size_t bytes;
+    struct entry *buckets[BUCKETS];
+};
+
 struct bh_workspace {
     bh_average_workspace *averages;
-    bh_arena *arena; /* of entries and their contents */
-    size_t bytes, numbers;
+    struct store sums; /* forgotten when there are many of them */
+    struct store made; /* what points to structures and ranges, and matter: as long as these */
+    size_t numbers;
     bh_sum_scratch scratch;
     size_t structure_count;
     bh_structure *structures[MOST_STRUCTURES];
     size_t range_count;
     struct ranged ranges[MOST_RANGES];
-    struct entry *buckets[BUCKETS];
 };
 
 bh_workspace *bh_workspace_new(void)
@@ -50,19 +57,20 @@ bh_workspace *bh_workspace_new(void)
     if (!w)
         return NULL;
     w->averages = bh_average_workspace_new();
-    w->arena = bh_arena_new();
-    if (w->averages && w->arena)
+    w->sums.arena = bh_arena_new();
+    w->made.arena = bh_arena_new();
+    if (w->averages && w->sums.arena && w->made.arena)
         return w;
     bh_workspace_free(w);
     return NULL;
 }
 
-static void forget_sums(bh_workspace *w)
+static void empty(struct store *s)
 {
-    memset(w->buckets, 0, sizeof w->buckets);
-    if (w->arena)
-        bh_arena_clear(w->arena);
-    w->bytes = 0;
+    memset(s->buckets, 0, sizeof s->buckets);
+    if (s->arena)
+        bh_arena_clear(s->arena);
+    s->bytes = 0;
 }
 
 /* Sums name structures and ranges: they go with them. */
@@ -76,7 +84,8 @@ static void forget(bh_workspace *w)
         bh_stopping_free(w->ranges[i].stopping);
     }
     w->range_count = 0;
-    forget_sums(w);
+    empty(&w->made);
+    empty(&w->sums);
 }
 
 void bh_workspace_free(bh_workspace *workspace)
@@ -84,7 +93,8 @@ void bh_workspace_free(bh_workspace *workspace)
     if (!workspace)
         return;
     forget(workspace);
-    bh_arena_free(workspace->arena);
+    bh_arena_free(workspace->sums.arena);
+    bh_arena_free(workspace->made.arena);
     bh_average_workspace_free(workspace->averages);
     free(workspace);
 }
@@ -94,8 +104,8 @@ void bh_workspace_trim(bh_workspace *workspace)
     if (workspace->structure_count > MOST_STRUCTURES / 2 ||
         workspace->range_count > MOST_RANGES / 2)
         forget(workspace);
-    else if (workspace->bytes > MOST_BYTES)
-        forget_sums(workspace);
+    else if (workspace->sums.bytes > MOST_BYTES)
+        empty(&workspace->sums);
 }
 
 bh_average_workspace *bh_workspace_averages(bh_workspace *workspace)
@@ -129,19 +139,19 @@ static size_t hash_of(const void *key, size_t size)
     return (size_t)(hash ^ hash >> 32);
 }
 
-const void *bh_workspace_recall(const bh_workspace *workspace, const void *key, size_t size)
+static const void *recall(const struct store *store, const void *key, size_t size)
 {
     const size_t hash = hash_of(key, size);
-    for (const struct entry *e = workspace->buckets[hash % BUCKETS]; e; e = e->next)
+    for (const struct entry *e = store->buckets[hash % BUCKETS]; e; e = e->next)
         if (e->hash == hash && e->size == size && memcmp(e->data, key, size) == 0)
             return e->data + e->at;
     return NULL;
 }
 
-void *bh_workspace_keep(bh_workspace *workspace, const void *key, size_t size, size_t room)
+static void *keep(struct store *store, const void *key, size_t size, size_t room)
 {
     const size_t at = (size + ALIGN - 1) / ALIGN * ALIGN;
-    struct entry *e = bh_arena_take(workspace->arena, 1, sizeof *e + at + room);
+    struct entry *e = bh_arena_take(store->arena, 1, sizeof *e + at + room);
     if (!e)
         return NULL;
     const size_t hash = hash_of(key, size);
@@ -149,16 +159,26 @@ void *bh_workspace_keep(bh_workspace *workspace, const void *key, size_t size, s
     e->hash = hash;
     e->at = at;
     memcpy(e->data, key, size);
-    e->next = workspace->buckets[hash % BUCKETS];
-    workspace->buckets[hash % BUCKETS] = e;
-    workspace->bytes += sizeof *e + at + room;
+    e->next = store->buckets[hash % BUCKETS];
+    store->buckets[hash % BUCKETS] = e;
+    store->bytes += sizeof *e + at + room;
     return e->data + at;
+}
+
+const void *bh_workspace_recall(const bh_workspace *workspace, const void *key, size_t size)
+{
+    return recall(&workspace->sums, key, size);
+}
+
+void *bh_workspace_keep(bh_workspace *workspace, const void *key, size_t size, size_t room)
+{
+    return keep(&workspace->sums, key, size, room);
 }
 
 void bh_workspace_drop(bh_workspace *workspace, const void *key, size_t size)
 {
     const size_t hash = hash_of(key, size);
-    struct entry **e = &workspace->buckets[hash % BUCKETS];
+    struct entry **e = &workspace->sums.buckets[hash % BUCKETS];
     if (*e && (*e)->hash == hash && (*e)->size == size)
         *e = (*e)->next; /* its memory goes with the arena */
 }
@@ -188,7 +208,7 @@ const bh_structure *bh_workspace_structure(bh_workspace *workspace, const char *
     key.z = z;
     key.a = a;
     strncpy(key.name, name ? name : "", sizeof key.name - 1);
-    const struct made *kept = bh_workspace_recall(workspace, &key, sizeof key);
+    const struct made *kept = recall(&workspace->made, &key, sizeof key);
     if (kept)
         return kept->structure;
     if (workspace->structure_count == MOST_STRUCTURES) {
@@ -199,7 +219,7 @@ const bh_structure *bh_workspace_structure(bh_workspace *workspace, const char *
     if (!made)
         return NULL;
     workspace->structures[workspace->structure_count++] = made;
-    struct made *place = bh_workspace_keep(workspace, &key, sizeof key, sizeof *place);
+    struct made *place = keep(&workspace->made, &key, sizeof key, sizeof *place);
     if (place)
         place->structure = made;
     else
@@ -241,10 +261,10 @@ const bh_matter *bh_workspace_matter(bh_workspace *workspace, const bh_material 
     memset(&key, 0, sizeof key);
     memcpy(key.what, "matter", 6);
     name_material(material, &key.material);
-    const bh_matter *known = bh_workspace_recall(workspace, &key, sizeof key);
+    const bh_matter *known = recall(&workspace->made, &key, sizeof key);
     if (known)
         return known;
-    bh_matter *made = bh_workspace_keep(workspace, &key, sizeof key, sizeof *made);
+    bh_matter *made = keep(&workspace->made, &key, sizeof key, sizeof *made);
     if (!made) {
         bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
         return NULL;
@@ -297,7 +317,7 @@ const bh_range *bh_workspace_range(bh_workspace *workspace, const bh_particle *p
     key.density = in->density;
     key.top = top_for(kinetic);
     name_material(in->material, &key.material);
-    const struct ranged *known = bh_workspace_recall(workspace, &key, sizeof key);
+    const struct ranged *known = recall(&workspace->made, &key, sizeof key);
     if (known)
         return known->range;
     struct ranged made;
@@ -308,7 +328,7 @@ const bh_range *bh_workspace_range(bh_workspace *workspace, const bh_particle *p
     if (make_range(particle, in, key.top, &made, err))
         return NULL;
     workspace->ranges[workspace->range_count++] = made;
-    struct ranged *place = bh_workspace_keep(workspace, &key, sizeof key, sizeof *place);
+    struct ranged *place = keep(&workspace->made, &key, sizeof key, sizeof *place);
     if (place)
         *place = made;
     else

@@ -60,8 +60,10 @@ static bool lay_out(bh_outcome *o)
     o->bin_count = o->first_bin[n];
     o->rows = bh_arena_take(o->arena, o->row_count + 1, sizeof *o->rows);
     for (size_t s = 0; o->rows && s < n; s++)
-        for (size_t a = 0; a < plan->settings[s].arm_count; a++)
-            o->rows[o->first_row[s] + a] = (bh_row){.setting = s, .arm = a};
+        for (size_t a = 0; a < plan->settings[s].arm_count; a++) { /* the rest is 0 */
+            o->rows[o->first_row[s] + a].setting = s;
+            o->rows[o->first_row[s] + a].arm = a;
+        }
     return o->rows != NULL;
 }
 
