@@ -19,6 +19,7 @@ typedef struct {
     /* NULL where it is computed, else what is not. */
     const char *(*outside)(const void *context, const bh_transfer *at);
     size_t count;
+    double fastest;                 /* [MeV/c] beyond it the spectrum is 0; 0: it is nowhere so */
     double edge[BH_SPECTRUM_EDGES]; /* [MeV/c] in any order, also outside the range */
 } bh_spectrum;
 

@@ -84,8 +84,8 @@ static void momentum_integral(const bh_encounter *encounter, const bh_momentum_r
     s.count += bh_inclusive_at_q(&in, BH_QUASI_Q_MOST, s.edge + s.count);
     const double left = encounter->kinetic - nucleus.shift;
     if (left > 0.0) {
-        const double first = sqrt(left * (left + 2.0 * mass));
-        s.edge[s.count++] = at_psi_most(&nucleus, &in, first);
+        s.fastest = sqrt(left * (left + 2.0 * mass));
+        s.edge[s.count++] = at_psi_most(&nucleus, &in, s.fastest);
     }
     bh_momentum_range_integral(&s, range, value, validity);
 }

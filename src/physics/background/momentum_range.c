@@ -107,12 +107,13 @@ void bh_momentum_range_integral(const bh_spectrum *spectrum, const bh_momentum_r
                                 double *value, bh_background_validity *validity)
 {
     const double from = range->momentum_from;
-    const double to = fmin(range->momentum_to, bh_inclusive_beam(spectrum->in));
-    double node[BH_SPECTRUM_EDGES + 2], scale = 0.0, computed = 0.0;
+    const double end = fmin(range->momentum_to, bh_inclusive_beam(spectrum->in));
+    const double to = spectrum->fastest > 0.0 ? fmin(end, fmax(from, spectrum->fastest)) : end;
+    double node[BH_SPECTRUM_EDGES + 2], scale = 0.0, computed = end - to; /* of nothing */
     *value = 0.0;
     *validity = (bh_background_validity){BH_COMPUTED, 1.0, 0.0, ""};
     if (!(from < to))
-        return; /* nothing is faster than the beam */
+        return; /* nothing is so fast */
     const size_t n = nodes(spectrum, from, to, node);
     part piece[BH_SPECTRUM_EDGES + 1], sum = {0};
     size_t pieces = 0;
@@ -129,8 +130,8 @@ void bh_momentum_range_integral(const bh_spectrum *spectrum, const bh_momentum_r
     for (size_t i = 0; i < pieces; i++)
         add_piece(spectrum, piece[i], scale, &sum);
     *value = sum.value;
-    validity->state = state(computed, to - from);
-    validity->share = computed / (to - from);
+    validity->state = state(computed, end - from);
+    validity->share = computed / (end - from);
     validity->uncertainty = sum.value > 0.0 ? sum.doubt / sum.value : 0.0;
     if (validity->state == BH_COMPUTED)
         validity->reason = "";
