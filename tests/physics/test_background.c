@@ -321,6 +321,23 @@ START_TEST(rough_spectra_end)
 }
 END_TEST
 
+/* Up to where no nucleon comes out, momentum transfers under 200 MeV/c are not computed, however
+ * much of the range lies beyond it, where there is nothing to compute. */
+START_TEST(slow_below_the_threshold)
+{
+    const bh_particle electron = particle("electron");
+    const bh_encounter x = on(&electron, 13, 27, 855.0);
+    const double angle = 12.0 * D; /* q = 178 MeV/c along the elastic line */
+    const answer slow = ask("quasi-elastic", &x, (bh_momentum_range){angle, 780.0, 855.0});
+    ck_assert_double_eq(slow.value, 0.0);
+    ck_assert_int_eq(slow.validity.state, BH_COMPUTED_PART);
+    ck_assert_double_lt(slow.validity.share, 0.5);
+    const answer beyond = ask("quasi-elastic", &x, (bh_momentum_range){angle, 850.0, 855.0});
+    ck_assert_double_eq(beyond.value, 0.0);
+    ck_assert_int_eq(beyond.validity.state, BH_COMPUTED);
+}
+END_TEST
+
 int main(void)
 {
     TCase *tests = tcase_create("background");
@@ -336,6 +353,7 @@ int main(void)
     tcase_add_loop_test(tests, bad_input_is_refused, 0, 11);
     tcase_add_loop_test(tests, who_does_what, 0, 14);
     tcase_add_test(tests, registry);
+    tcase_add_test(tests, slow_below_the_threshold);
     tcase_add_test(tests, rough_spectra_end);
     return run_suite("background", tests);
 }
