@@ -106,7 +106,7 @@ valgrind-demo: all                                       ## the main job under v
 # A program below the pseudo-terminal says into a file what it finds, and ends with status 99.  Its threads
 # take turns: else one that computes lets the one that minds the keys wait for minutes on a busy machine.
 GRIND_LOGS := $(abspath $(BUILD))/grind
-SCREENS := $(filter %/test_terminal %/test_safety %/test_suspend %/test_disk %/test_rights,$(call bin,$(TESTS)))
+SCREENS := $(filter %/test_terminal %/test_safety %/test_sessions %/test_suspend %/test_disk %/test_rights,$(call bin,$(TESTS)))
 valgrind-screen: $(BUILD)/beamhours $(BUILD)/tests/terminal/test_terminal ## a session on the terminal screen under valgrind
 	@rm -rf $(GRIND_LOGS) && mkdir -p $(GRIND_LOGS) && bad=0; \
 	 PATIENCE=300 TTY_UNDER='$(GRIND) --fair-sched=yes --log-file=$(GRIND_LOGS)/%p.log' $(BUILD)/tests/terminal/test_terminal || bad=1; \

@@ -35,6 +35,16 @@ char *bh_beside_name(const char *path, const char *ending)
     return name;
 }
 
+char *bh_beside_session(const char *path, const char *ending, int number, const char *tail)
+{
+    char all[NUMBERS];
+    if (number > 1)
+        (void)snprintf(all, sizeof all, "%s-%d%s", ending, number, tail);
+    else
+        (void)snprintf(all, sizeof all, "%s%s", ending, tail);
+    return bh_beside_name(path, all);
+}
+
 char *bh_real_path(const char *path)
 {
     char *real = realpath(path, NULL);

@@ -16,7 +16,8 @@ enum { TRIES = 10, LINE = 160 };
 
 struct bh_presence {
     char *path;
-    int file; /* -1: no mark */
+    int file;   /* -1: no mark */
+    int number; /* of the session; 0: none is left */
 };
 
 enum held { HELD_BY_US, HELD_BY_OTHER, HELD_UNKNOWN };
@@ -110,27 +111,13 @@ static bh_presence_state unknown(bh_error *err, const char *path, int number)
     return BH_PRESENCE_UNKNOWN;
 }
 
-/* Another's mark that may only be read still tells who. */
-static bh_presence_state look_only(const char *path, bh_other *other, bh_error *err)
-{
-    const int why = errno;
-    const int file = open(path, O_RDONLY | O_NOFOLLOW | O_CLOEXEC);
-    if (file < 0)
-        return unknown(err, path, why);
-    *other = read_mark(file);
-    (void)close(file);
-    return held_without_lock(other) == HELD_BY_OTHER ? BH_PRESENCE_OTHER : unknown(err, path, why);
-}
-
 /* One try; false where the mark changed under our hands. */
-static bool try_mark(bh_presence *mark, bool insist, bh_presence_state *state, bh_other *other,
-                     bh_error *err)
+static bool try_mark(bh_presence *mark, bh_presence_state *state, bh_other *other, bh_error *err)
 {
     bool made = false;
     const int file = open_mark(mark->path, &made);
     if (file < 0) {
-        *state =
-            errno == EACCES ? look_only(mark->path, other, err) : unknown(err, mark->path, errno);
+        *state = unknown(err, mark->path, errno);
         return errno != ENOENT; /* ENOENT: just taken away, or no such folder */
     }
     const enum held held = lock_mark(file, made, other);
@@ -145,12 +132,102 @@ static bool try_mark(bh_presence *mark, bool insist, bh_presence_state *state, b
     (void)close(file);
     if (!same)
         return false;
-    if (held == HELD_BY_OTHER && insist)
-        return unlink(mark->path) != 0; /* and again, with a mark of our own */
     *state = held == HELD_BY_OTHER ? BH_PRESENCE_OTHER : unknown(err, mark->path, why);
     if (made)
         (void)unlink(mark->path);
     return true;
+}
+
+/* --- one of several sessions --- */
+
+/* Whether another has this mark, by its lock or, where locks cannot be had, by what it says. */
+static bool is_held(const char *path, bh_other *other)
+{
+    struct flock lock = {.l_type = F_RDLCK, .l_whence = SEEK_SET};
+    const int file = open(path, O_RDONLY | O_NOFOLLOW | O_CLOEXEC);
+    if (file < 0)
+        return false;
+    const bool known = fcntl(file, F_GETLK, &lock) == 0;
+    *other = read_mark(file);
+    (void)close(file);
+    if (known && lock.l_type != F_UNLCK)
+        return true;
+    if (known)
+        return other->process > 0 && !other->here;
+    return held_without_lock(other) == HELD_BY_OTHER;
+}
+
+static bool is_held_number(const char *real, int number, bh_other *other)
+{
+    char *path = bh_beside_session(real, ".open", number, "");
+    const bool held = !path || is_held(path, other); /* without memory nothing of it is touched */
+    free(path);
+    return held;
+}
+
+bool bh_presence_held(const char *path, int number)
+{
+    bh_other other;
+    char *real = bh_real_path(path);
+    const bool held = !real || is_held_number(real, number, &other);
+    free(real);
+    return held;
+}
+
+/* Unsaved work lies there that nobody looks after any more: its number stays free for it. */
+static bool work_lies_there(const char *real, int number)
+{
+    struct stat s;
+    char *path = bh_beside_session(real, ".unsaved", number, "");
+    const bool there = path && lstat(path, &s) == 0;
+    free(path);
+    return there;
+}
+
+static bh_presence_state no_memory(bh_error *err)
+{
+    (void)bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
+    return BH_PRESENCE_UNKNOWN;
+}
+
+/* Marks with this number. */
+static bh_presence_state mark_with(bh_presence *m, const char *real, int number, bh_other *other,
+                                   bh_error *err)
+{
+    bh_presence_state state = BH_PRESENCE_UNKNOWN;
+    free(m->path);
+    m->path = bh_beside_session(real, ".open", number, "");
+    m->number = number;
+    if (!m->path)
+        return no_memory(err);
+    for (int i = 0; i < TRIES && !try_mark(m, &state, other, err); i++)
+        ;
+    return state;
+}
+
+/* The first number that is free. */
+static bh_presence_state mark_any(bh_presence *m, const char *real, bool insist, bh_other *other,
+                                  bh_error *err)
+{
+    bool held[BH_MOST_SESSIONS + 1] = {false};
+    for (int n = 1; n <= BH_MOST_SESSIONS; n++) {
+        bh_other who = {0};
+        held[n] = is_held_number(real, n, &who);
+        if (held[n] && !insist) {
+            *other = who;
+            return BH_PRESENCE_OTHER;
+        }
+    }
+    for (int n = 1; n <= BH_MOST_SESSIONS; n++) {
+        if (held[n] || work_lies_there(real, n))
+            continue;
+        const bh_presence_state state = mark_with(m, real, n, other, err);
+        if (state != BH_PRESENCE_OTHER || !insist)
+            return state;
+    }
+    m->number = 0;
+    (void)bh_fail(err, BH_EIO, "cannot be marked as open here: too much unsaved work lies there");
+    return BH_PRESENCE_UNKNOWN;
 }
 
 bh_presence_state bh_presence_open(const char *path, bool insist, bh_presence **mark,
@@ -158,28 +235,43 @@ bh_presence_state bh_presence_open(const char *path, bool insist, bh_presence **
 {
     char *real = bh_real_path(path);
     bh_presence *m = calloc(1, sizeof *m);
-    bh_presence_state state = BH_PRESENCE_UNKNOWN;
-    *mark = NULL;
+    *mark = m;
     *other = (bh_other){0};
     if (m)
-        *m = (bh_presence){real ? bh_beside_name(real, ".open") : NULL, -1};
+        *m = (bh_presence){.file = -1};
+    const bh_presence_state state =
+        m && real ? mark_any(m, real, insist, other, err) : no_memory(err);
     free(real);
-    if (!m || !m->path) {
-        free(m);
-        (void)bh_fail(err, BH_ENOMEM, "%s", bh_code_text(BH_ENOMEM));
-        return state;
-    }
-    for (int i = 0; i < TRIES && !try_mark(m, insist, &state, other, err); i++)
-        ;
     if (state == BH_PRESENCE_ALONE)
         *other = (bh_other){0};
+    return state;
+}
+
+bh_presence_state bh_presence_take(const char *path, int number, bh_presence **mark, bh_error *err)
+{
+    bh_other other = {0};
+    char *real = bh_real_path(path);
+    bh_presence *m = calloc(1, sizeof *m);
+    bh_presence_state state = BH_PRESENCE_OTHER;
     *mark = m;
+    if (m)
+        *m = (bh_presence){.file = -1, .number = number};
+    if (!m || !real)
+        state = no_memory(err);
+    else if (!is_held_number(real, number, &other))
+        state = mark_with(m, real, number, &other, err);
+    free(real);
     return state;
 }
 
 bool bh_presence_ours(const bh_presence *mark)
 {
     return mark->file >= 0 && same_file(mark->file, mark->path);
+}
+
+int bh_presence_number(const bh_presence *mark)
+{
+    return mark->number;
 }
 
 const char *bh_presence_path(const bh_presence *mark)

@@ -51,13 +51,13 @@ static void free_ready(struct ready *ready)
 
 /* --- one for a file --- */
 
-static bool name_all(bh_rescue *r, const char *real)
+static bool name_all(bh_rescue *r, const char *real, int number)
 {
-    const char *ends[NAMES] = {".unsaved~", ".unsaved~~"};
+    const char *tails[NAMES] = {"~", "~~"};
     const size_t folder = bh_folder_length(real);
-    r->path = bh_beside_name(real, ".unsaved");
+    r->path = bh_beside_session(real, ".unsaved", number, "");
     for (int i = 0; i < NAMES; i++)
-        r->fresh[i] = bh_beside_name(real, ends[i]);
+        r->fresh[i] = bh_beside_session(real, ".unsaved", number, tails[i]);
     r->folder = malloc(folder + 2);
     if (!r->path || !r->fresh[0] || !r->fresh[1] || !r->folder)
         return false;
@@ -65,11 +65,11 @@ static bool name_all(bh_rescue *r, const char *real)
     return true;
 }
 
-bh_rescue *bh_rescue_new(const char *path)
+bh_rescue *bh_rescue_new(const char *path, int number)
 {
     char *real = bh_real_path(path);
     bh_rescue *r = calloc(1, sizeof *r);
-    const bool good = real && r && name_all(r, real);
+    const bool good = real && r && name_all(r, real, number);
     free(real);
     if (good)
         return r;
@@ -206,6 +206,15 @@ bh_code bh_rescue_discard(bh_rescue *rescue, bh_error *err)
 }
 
 /* --- finding --- */
+
+bool bh_rescue_there(const bh_rescue *rescue, int64_t *written)
+{
+    struct stat s;
+    if (lstat(rescue->path, &s) != 0)
+        return false;
+    *written = (int64_t)s.st_mtim.tv_sec * 1000000000 + (int64_t)s.st_mtim.tv_nsec;
+    return true;
+}
 
 /* Reads "WORDS NUMBER" at `*at` and moves behind it; false where something else stands there. */
 static bool read_number(const char **at, const char *words, int base, uint64_t *number)

@@ -115,7 +115,8 @@ static void rescue(bh_desk *d)
         if (!bh_model_replace(&d->model, bytes.bytes ? bytes.bytes : "", bytes.length))
             bh_model_note(&d->model, true, "the unsaved work cannot be used: it stays in its file");
         else
-            bh_model_note(&d->model, false, "the unsaved work is back; s saves it");
+            bh_model_note(&d->model, false, "the unsaved work is back; s saves it%s",
+                          bh_keeper_adopt(&d->keeper) ? "; more is offered at the next start" : "");
     }
     bh_text_free(&bytes);
 }
@@ -167,7 +168,7 @@ static void grant(bh_desk *d, bh_wish wish)
         rescue(d);
         break;
     case BH_WISH_RESCUE_DROP:
-        bh_keeper_refuse(k);
+        bh_keeper_refuse(k, m);
         break;
     case BH_WISH_TAKE_OVER:
         bh_keeper_take_over(k, m);
@@ -324,5 +325,6 @@ bh_rescue *bh_desk_rescue(bh_desk *desk)
 
 const char *bh_desk_mark(const bh_desk *desk)
 {
-    return desk->keeper.mark ? bh_presence_path(desk->keeper.mark) : NULL;
+    const bh_presence *mark = desk->keeper.mark;
+    return mark && bh_presence_ours(mark) ? bh_presence_path(mark) : NULL;
 }

@@ -12,8 +12,7 @@ static const double write_after = 1.0, look_after = 1.0, again_after = 5.0; /* s
 static void set_path(bh_keeper *keeper, const char *path)
 {
     (void)snprintf(keeper->path, sizeof keeper->path, "%.*s", (int)sizeof keeper->path - 1, path);
-    bh_rescue_free(keeper->rescue);
-    keeper->rescue = bh_rescue_new(path);
+    keeper->passed = 0;
     keeper->pending = -1;
 }
 
@@ -47,6 +46,7 @@ void bh_keeper_begin(bh_keeper *keeper, const char *name)
 
 void bh_keeper_close(bh_keeper *keeper, bool drop)
 {
+    bh_keeper_leave_offer(keeper);
     if (keeper->rescue && drop)
         (void)!bh_rescue_discard(keeper->rescue, NULL);
     else if (keeper->rescue)
@@ -55,95 +55,6 @@ void bh_keeper_close(bh_keeper *keeper, bool drop)
     bh_presence_close(keeper->mark);
     keeper->rescue = NULL;
     keeper->mark = NULL;
-}
-
-/* --- before work begins --- */
-
-static void since(double seconds, char out[64])
-{
-    if (seconds < 120)
-        (void)snprintf(out, 64, "%.0f seconds", seconds);
-    else if (seconds < 7200)
-        (void)snprintf(out, 64, "%.0f minutes", seconds / 60);
-    else if (seconds < 172800)
-        (void)snprintf(out, 64, "%.0f hours", seconds / 3600);
-    else
-        (void)snprintf(out, 64, "%.0f days", seconds / 86400);
-}
-
-static bool other_has_it(bh_keeper *keeper, bh_model *model)
-{
-    bh_other other = {.process = 0};
-    bh_error err = {.code = BH_OK};
-    bh_presence_close(keeper->mark);
-    keeper->mark = NULL;
-    const bh_presence_state state =
-        bh_presence_open(keeper->path, keeper->insists, &keeper->mark, &other, &err);
-    if (state != BH_PRESENCE_OTHER)
-        return false;
-    (void)snprintf(model->question_text[0], sizeof *model->question_text,
-                   "Someone else has this plan open%s%.60s.", other.host[0] ? ": on " : "",
-                   other.host);
-    (void)snprintf(model->question_text[1], sizeof *model->question_text,
-                   "Process %ld. Whoever saves last is asked about the other's changes.",
-                   other.process);
-    model->question_text[2][0] = '\0';
-    bh_ask(model, BH_QUESTION_OTHER);
-    return true;
-}
-
-static bool work_is_there(bh_keeper *keeper, bh_model *model)
-{
-    bh_rescue_found found = {.there = false};
-    bh_error err = {.code = BH_OK};
-    char age[64];
-    size_t length = 0;
-    const char *bytes = bh_model_bytes(model, &length);
-    bh_text now = {0};
-    bh_text_append_bytes(&now, bytes, length);
-    const bh_code bad = !keeper->rescue || bh_rescue_find(keeper->rescue, &now, NULL, &found, &err);
-    bh_text_free(&now);
-    if (bad || !found.there || !found.differs)
-        return false;
-    since(found.age, age);
-    (void)snprintf(model->question_text[0], sizeof *model->question_text,
-                   "Unsaved work is there, %s old: %d %s not in the file.", age, found.lines,
-                   found.lines == 1 ? "line of it is" : "lines of it are");
-    (void)snprintf(model->question_text[1], sizeof *model->question_text, "%s",
-                   !found.whole      ? "It is damaged: what can be read of it would be used."
-                   : found.same_base ? "The file is as it was when that work began."
-                                     : "The file was changed since that work began.");
-    (void)snprintf(model->question_text[2], sizeof *model->question_text, "Kept in %.200s",
-                   bh_rescue_path(keeper->rescue));
-    bh_ask(model, BH_QUESTION_RESCUE);
-    return true;
-}
-
-void bh_keeper_greet(bh_keeper *keeper, bh_model *model)
-{
-    if (!other_has_it(keeper, model))
-        (void)work_is_there(keeper, model);
-}
-
-void bh_keeper_take_over(bh_keeper *keeper, bh_model *model)
-{
-    keeper->insists = true;
-    bh_keeper_greet(keeper, model);
-}
-
-bool bh_keeper_rescued(bh_keeper *keeper, bh_model *model, bh_text *into)
-{
-    bh_rescue_found found;
-    bh_error err = {.code = BH_OK};
-    if (!bh_rescue_find(keeper->rescue, &(bh_text){0}, into, &found, &err) && !into->failed)
-        return true;
-    bh_model_note(model, true, "the unsaved work cannot be read: %.160s", err.text);
-    return false;
-}
-
-void bh_keeper_refuse(bh_keeper *keeper)
-{
-    drop_rescue(keeper);
 }
 
 /* --- saving --- */
@@ -219,7 +130,7 @@ bool bh_keeper_save_as(bh_keeper *keeper, bh_model *model)
     set_path(keeper, path);
     keeper->stamp = stamp;
     (void)snprintf(model->file, sizeof model->file, "%.*s", (int)sizeof model->file - 1, path);
-    (void)other_has_it(keeper, model);
+    (void)bh_keeper_others(keeper, model);
     return say_save(keeper, model, BH_SAVE_DONE, &err);
 }
 

@@ -89,10 +89,10 @@ static bool rescue_once(long call, bool disk)
     bh_rescue_found found = {0};
     bh_text work = {0};
     const bh_text now = {0};
-    bh_rescue *old = bh_rescue_new("p");
+    bh_rescue *old = bh_rescue_new("p", 1);
     ck_assert(bh_rescue_prepare(old, "old", 3, 0) && bh_rescue_write(old));
     fail_at(call, disk);
-    bh_rescue *r = bh_rescue_new("p");
+    bh_rescue *r = bh_rescue_new("p", 1);
     const bool ready = r && bh_rescue_prepare(r, "old", 3, 0) && bh_rescue_prepare(r, "new", 3, 0);
     const bool done = ready && bh_rescue_write(r);
     const bool hit = fault_hit;
@@ -126,7 +126,7 @@ END_TEST
 START_TEST(finding_without_memory)
 {
     bool hit = true;
-    bh_rescue *r = bh_rescue_new("p");
+    bh_rescue *r = bh_rescue_new("p", 1);
     ck_assert(bh_rescue_prepare(r, "old", 3, 0) && bh_rescue_write(r));
     for (long call = 1; hit; call++) {
         bh_rescue_found found;

@@ -14,7 +14,7 @@ struct session {
     int end[2], ready[2];
 };
 
-static struct session begin(const char *path, bool killed)
+static struct session start(const char *path, bool insist, bool killed)
 {
     struct session s;
     char byte = 0;
@@ -24,7 +24,7 @@ static struct session begin(const char *path, bool killed)
         bh_presence *mark = NULL;
         bh_other other;
         (void)close(s.end[1]);
-        if (bh_presence_open(path, false, &mark, &other, NULL) != BH_PRESENCE_ALONE)
+        if (bh_presence_open(path, insist, &mark, &other, NULL) != BH_PRESENCE_ALONE)
             _exit(1);
         if (write(s.ready[1], "x", 1) != 1 || read(s.end[0], &byte, 1) != 0)
             _exit(2);
@@ -34,6 +34,16 @@ static struct session begin(const char *path, bool killed)
     }
     ck_assert_int_eq(read(s.ready[0], &byte, 1), 1);
     return s;
+}
+
+static struct session begin(const char *path, bool killed)
+{
+    return start(path, false, killed);
+}
+
+static struct session begin_beside(const char *path)
+{
+    return start(path, true, false);
 }
 
 static void end(struct session *s)
@@ -86,17 +96,67 @@ START_TEST(a_killed_session_leaves_a_stale_mark)
 }
 END_TEST
 
-START_TEST(who_insists_takes_over)
+START_TEST(who_insists_is_the_second)
 {
     bh_other other;
-    bh_presence *mark = NULL;
+    bh_presence *mark = NULL, *none = NULL;
     struct session s = begin("p.yaml", false);
     ck_assert_int_eq(bh_presence_open("p.yaml", true, &mark, &other, NULL), BH_PRESENCE_ALONE);
-    end(&s); /* it leaves the mark, which is not its own any more */
-    ck_assert(bh_presence_ours(mark));
-    ck_assert_str_eq(bh_presence_path(mark) + strlen(bh_presence_path(mark)) - 12, ".p.yaml.open");
-    ck_assert_int_eq(remove(".p.yaml.open"), 0);
+    ck_assert_int_eq(bh_presence_number(mark), 2);
+    ck_assert_int_eq(folder_files(false), 2);
+    ck_assert(bh_presence_held("p.yaml", 1) && !bh_presence_held("p.yaml", 3));
+    ck_assert_int_eq(bh_presence_take("p.yaml", 1, &none, NULL), BH_PRESENCE_OTHER);
+    bh_presence_close(none);
+    end(&s);
+    ck_assert_str_eq(folder_get(".p.yaml.open"), "");
+    ck_assert(bh_presence_ours(mark) && !bh_presence_held("p.yaml", 1));
+    ck_assert_str_eq(bh_presence_path(mark) + strlen(bh_presence_path(mark)) - 14,
+                     ".p.yaml.open-2");
+    ck_assert_int_eq(remove(".p.yaml.open-2"), 0);
     ck_assert(!bh_presence_ours(mark));
+    bh_presence_close(mark);
+}
+END_TEST
+
+/* The first is gone: the second still counts, and a third is told of it. */
+START_TEST(any_of_several_counts)
+{
+    bh_other other;
+    struct session first = begin("p.yaml", false);
+    struct session second = begin_beside("p.yaml");
+    int status = 0;
+    ck_assert_int_eq(kill(first.process, SIGKILL), 0);
+    ck_assert_int_eq(waitpid(first.process, &status, 0), first.process);
+    ck_assert_int_eq(look("p.yaml", false, &other), BH_PRESENCE_OTHER);
+    ck_assert_int_eq(other.process, (long)second.process);
+    ck_assert(bh_presence_held("p.yaml", 2));
+    end(&second);
+    ck_assert_int_eq(look("p.yaml", false, &other), BH_PRESENCE_ALONE);
+    ck_assert_int_eq(folder_files(false), 0);
+}
+END_TEST
+
+/* Unsaved work of a session that ended keeps its number, however many there are. */
+START_TEST(numbers_with_work_stay_free)
+{
+    bh_other other;
+    bh_error err;
+    bh_presence *mark = NULL;
+    folder_put(".p.yaml.unsaved", "a: 1\n");
+    ck_assert_int_eq(bh_presence_open("p.yaml", false, &mark, &other, NULL), BH_PRESENCE_ALONE);
+    ck_assert_int_eq(bh_presence_number(mark), 2);
+    bh_presence_close(mark);
+    ck_assert_int_eq(bh_presence_take("p.yaml", 1, &mark, NULL), BH_PRESENCE_ALONE);
+    ck_assert(bh_presence_number(mark) == 1 && bh_presence_ours(mark));
+    bh_presence_close(mark);
+    for (int i = 2; i <= BH_MOST_SESSIONS; i++) {
+        char name[32];
+        (void)snprintf(name, sizeof name, ".p.yaml.unsaved-%d", i);
+        folder_put(name, "a: 1\n");
+    }
+    ck_assert_int_eq(bh_presence_open("p.yaml", false, &mark, &other, &err), BH_PRESENCE_UNKNOWN);
+    ck_assert_ptr_nonnull(strstr(err.text, "too much unsaved work"));
+    ck_assert_int_eq(bh_presence_number(mark), 0);
     bh_presence_close(mark);
 }
 END_TEST
@@ -156,7 +216,9 @@ int main(void)
     tcase_add_checked_fixture(tests, folder_enter, folder_leave);
     tcase_add_test(tests, one_session_at_a_time);
     tcase_add_test(tests, a_killed_session_leaves_a_stale_mark);
-    tcase_add_test(tests, who_insists_takes_over);
+    tcase_add_test(tests, who_insists_is_the_second);
+    tcase_add_test(tests, any_of_several_counts);
+    tcase_add_test(tests, numbers_with_work_stay_free);
     tcase_add_test(tests, marks_of_other_hosts_are_believed);
     tcase_add_test(tests, no_mark_can_be_made);
     tcase_add_test(tests, where_it_may_not_be_written);

@@ -53,7 +53,7 @@ START_TEST(work_is_found_again)
     };
     struct stat s;
     for (int i = 0; i < COUNT(rows); i++) {
-        bh_rescue *r = bh_rescue_new("p.yaml");
+        bh_rescue *r = bh_rescue_new("p.yaml", 1);
         ck_assert(!bh_rescue_pending(r) && bh_rescue_write(r));
         ck_assert_int_eq(folder_files(false), 0);
         ck_assert(prepare(r, rows[i].work, rows[i].base) && bh_rescue_pending(r));
@@ -61,7 +61,7 @@ START_TEST(work_is_found_again)
         ck_assert_int_eq(folder_files(false), 1);
         ck_assert(stat(".p.yaml.unsaved", &s) == 0 && (s.st_mode & 0777) == 0600);
         bh_rescue_free(r);
-        r = bh_rescue_new("p.yaml");
+        r = bh_rescue_new("p.yaml", 1);
         const bh_rescue_found found = find(r, rows[i].now, rows[i].work);
         ck_assert(found.there && found.whole && found.age >= 0 && found.age < 60);
         ck_assert_int_eq(found.differs, strcmp(rows[i].now, rows[i].work) != 0);
@@ -77,7 +77,7 @@ END_TEST
 
 START_TEST(the_latest_is_written)
 {
-    bh_rescue *r = bh_rescue_new("p.yaml");
+    bh_rescue *r = bh_rescue_new("p.yaml", 1);
     for (int i = 0; i < 100; i++) {
         char work[16];
         (void)snprintf(work, sizeof work, "a: %d\n", i);
@@ -100,7 +100,7 @@ START_TEST(it_lies_beside_the_file_itself)
     ck_assert_int_eq(mkdir("there", 0777), 0);
     folder_put("there/p.yaml", "a: 1\n");
     ck_assert_int_eq(symlink("there/p.yaml", "link"), 0);
-    bh_rescue *r = bh_rescue_new("link");
+    bh_rescue *r = bh_rescue_new("link", 1);
     ck_assert_ptr_nonnull(strstr(bh_rescue_path(r), "/there/.p.yaml.unsaved"));
     ck_assert(prepare(r, "b: 1\n", "") && bh_rescue_write(r));
     ck_assert_str_ne(folder_get("there/.p.yaml.unsaved"), "");
@@ -121,7 +121,7 @@ START_TEST(damage_is_told)
         "# beamhours: unsaved work, 0 bytes, 1, begun from 0\n",
         "a: 1\n\n# beamhours: unsaved"};
     for (int i = 0; i < COUNT(contents); i++) {
-        bh_rescue *r = bh_rescue_new("p.yaml");
+        bh_rescue *r = bh_rescue_new("p.yaml", 1);
         bh_rescue_found found;
         bh_text now = text_of("a: 0\n"), work = {0};
         folder_put(".p.yaml.unsaved", contents[i]);
@@ -141,14 +141,14 @@ START_TEST(failures_are_told)
     bh_error err;
     bh_rescue_found found;
     const bh_text now = {0};
-    bh_rescue *r = bh_rescue_new("no/such/p.yaml");
+    bh_rescue *r = bh_rescue_new("no/such/p.yaml", 1);
     ck_assert(prepare(r, "a: 1\n", ""));
     ck_assert(!bh_rescue_write(r) && bh_rescue_pending(r));
     ck_assert_int_eq(bh_rescue_find(r, &now, NULL, &found, NULL), BH_OK);
     ck_assert(!found.there);
     bh_rescue_free(r);
     ck_assert_int_eq(mkdir(".p.yaml.unsaved", 0777), 0);
-    r = bh_rescue_new("p.yaml");
+    r = bh_rescue_new("p.yaml", 1);
     ck_assert(prepare(r, "a: 1\n", "") && !bh_rescue_write(r));
     ck_assert_int_eq(folder_files(false), 1);
     ck_assert_int_eq(bh_rescue_find(r, &now, NULL, &found, &err), BH_EIO);
@@ -165,7 +165,7 @@ static int write_too_much(void)
     const struct rlimit limit = {5000, 5000};
     (void)signal(SIGXFSZ, SIG_IGN);
     memset(much, 'x', sizeof much - 1);
-    bh_rescue *r = bh_rescue_new("p.yaml");
+    bh_rescue *r = bh_rescue_new("p.yaml", 1);
     const bool before = prepare(r, "a: 1\n", "") && bh_rescue_write(r);
     const bool now =
         setrlimit(RLIMIT_FSIZE, &limit) == 0 && prepare(r, much, "") && bh_rescue_write(r);
@@ -177,7 +177,7 @@ START_TEST(on_a_full_disk_the_older_stays)
 {
     ck_assert_int_eq(folder_as_nobody(write_too_much), 0);
     ck_assert_int_eq(folder_files(false), 1);
-    bh_rescue *r = bh_rescue_new("p.yaml");
+    bh_rescue *r = bh_rescue_new("p.yaml", 1);
     ck_assert(find(r, "", "a: 1\n").whole);
     bh_rescue_free(r);
 }
@@ -200,7 +200,7 @@ START_TEST(a_signal_at_any_moment)
         ck_assert_int_eq(pipe(ready), 0);
         const pid_t child = fork();
         if (child == 0) {
-            of_the_handler = bh_rescue_new("p.yaml");
+            of_the_handler = bh_rescue_new("p.yaml", 1);
             (void)signal(SIGTERM, on_signal);
             for (int i = 0;; i++) {
                 char work[4000];
@@ -217,7 +217,7 @@ START_TEST(a_signal_at_any_moment)
         ck_assert_int_eq(kill(child, SIGTERM), 0);
         ck_assert_int_eq(waitpid(child, &status, 0), child);
         ck_assert(WIFEXITED(status) && WEXITSTATUS(status) == 0);
-        bh_rescue *r = bh_rescue_new("p.yaml");
+        bh_rescue *r = bh_rescue_new("p.yaml", 1);
         bh_rescue_found found;
         const bh_text now = {0};
         bh_text work = {0};

@@ -42,6 +42,10 @@ size_t bh_folder_length(const char *path);
  * The caller frees it. */
 char *bh_beside_name(const char *path, const char *ending);
 
+/* The same for one of several sessions that have `path` open: ".NAME" and `ending`, and for all but
+ * the first of them "-" and its number; at the end `tail`. */
+char *bh_beside_session(const char *path, const char *ending, int number, const char *tail);
+
 /* `path` with all its symbolic links followed; a copy of it where there is no such file; NULL
  * without memory.  The caller frees it. */
 char *bh_real_path(const char *path);

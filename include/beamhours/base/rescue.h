@@ -13,13 +13,14 @@
 /*
  * The unsaved work on PLAN.yaml is kept in .PLAN.yaml.unsaved in the same folder, of mode 0600: the
  * bytes as they would have been saved and behind them one line of comment with their number and
- * fingerprint, and that of the file they began from.  It appears whole or not at all.
+ * fingerprint, and that of the file they began from.  It appears whole or not at all.  Each session
+ * that has the plan open has one of its own: .PLAN.yaml.unsaved-2 the second.
  */
 typedef struct bh_rescue bh_rescue;
 
-/* For the file at `path`, which need not exist; symbolic links are followed.  NULL without memory.
- * Nothing is written yet. */
-bh_rescue *bh_rescue_new(const char *path);
+/* For the file at `path`, which need not exist, and the session of this `number` (presence.h);
+ * symbolic links are followed.  NULL without memory.  Nothing is written yet. */
+bh_rescue *bh_rescue_new(const char *path, int number);
 
 /* Forgets it; the recovery file stays as it is. */
 void bh_rescue_free(bh_rescue *rescue);
@@ -49,6 +50,9 @@ bool bh_rescue_pending(const bh_rescue *rescue);
 /* Takes the recovery file away, after saving or when its offer was refused; also what is to be
  * rescued is cleared.  No file is no error. */
 BH_CHECKED bh_code bh_rescue_discard(bh_rescue *rescue, bh_error *err);
+
+/* Is there a recovery file, and when was it written [ns since 1970]? */
+bool bh_rescue_there(const bh_rescue *rescue, int64_t *written);
 
 /* What was found at the start. */
 typedef struct {
