@@ -190,25 +190,46 @@ static bool run_all(struct run *r, const bh_edit_change *changes, size_t count)
     return true;
 }
 
+/* What was read becomes the text, as one step unless it is the same. */
+static bool add_step(bh_edit *edit, struct reading *next, bh_text *note, bh_text *path)
+{
+    const bh_bytes before = bytes_of(edit->now.document), after = bytes_of(next->document);
+    if (same_bytes(before, after))
+        return true;
+    if (!bh_history_add(&edit->history, before, after, note, path))
+        return false;
+    free_reading(&edit->now);
+    edit->now = *next;
+    *next = (struct reading){0};
+    edit->version++;
+    return true;
+}
+
 bool bh_edit_apply(bh_edit *edit, const bh_edit_change *changes, size_t count, bh_diags *diags)
 {
     struct run r = {.edit = edit, .diags = diags};
     if (!run_all(&r, changes, count))
         return false;
-    const bh_bytes before = bytes_of(edit->now.document), after = bytes_of(current(&r));
-    bool good = true;
-    if (!same_bytes(before, after)) {
-        good = bh_history_add(&edit->history, before, after, &r.note, &r.path);
-        if (good) {
-            free_reading(&edit->now);
-            edit->now = r.now;
-            r.now = (struct reading){0};
-            edit->version++;
-        } else {
-            bh_diags_lose(diags);
-        }
-    }
+    const bool good = !r.now.document || add_step(edit, &r.now, &r.note, &r.path);
+    if (!good)
+        bh_diags_lose(diags);
     end_run(&r);
+    return good;
+}
+
+bool bh_edit_replace(bh_edit *edit, const char *bytes, size_t length, const char *note)
+{
+    struct reading next = {NULL, bh_diags_new()};
+    bh_text said = {0}, path = {0};
+    bh_text_append(&said, note);
+    bh_text_append(&path, "");
+    if (next.said)
+        next.document =
+            bh_document_parse(bytes, length, bh_document_name(edit->now.document), next.said);
+    const bool good = next.document && add_step(edit, &next, &said, &path) && bh_edit_saved(edit);
+    free_reading(&next);
+    bh_text_free(&said);
+    bh_text_free(&path);
     return good;
 }
 

@@ -268,10 +268,28 @@ static void step_by(bh_model *model, bool back)
     bh_model_note(model, false, "%s %s", back ? "taken back:" : "done again:", text);
 }
 
+/* What was dropped for a file that cannot be read as a plan, with all its history. */
+static void bring_back(bh_model *model)
+{
+    bh_diags *said = bh_diags_new();
+    if (said) {
+        bh_diags_free(model->said);
+        model->said = said;
+    }
+    model->edit = model->dropped;
+    model->dropped = NULL;
+    bh_text_free(&model->unread);
+    model->rescued = model->job_due = true;
+    bh_change_done(model);
+    bh_model_note(model, false, "what was dropped is back; s saves it");
+}
+
 void bh_change_back(bh_model *model)
 {
     if (model->edit)
         step_by(model, true);
+    else if (model->dropped)
+        bring_back(model);
 }
 
 void bh_change_again(bh_model *model)

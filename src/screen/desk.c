@@ -88,22 +88,14 @@ void bh_desk_close(bh_desk *desk)
 
 /* --- what the user wished --- */
 
-/* Another text in the place of the one that is open, as one change that can be taken back. */
-static void replace_text(bh_desk *d, const bh_text *bytes)
-{
-    bh_model *m = &d->model;
-    if (!bh_model_open(m, bytes->bytes ? bytes->bytes : "", bytes->length, d->keeper.path))
-        bh_model_note(m, true, "no memory is left to open this");
-    d->keeper.version = 0;
-}
-
+/* The file's text in the place of the one that is open, as one change that can be taken back. */
 static void reload(bh_desk *d)
 {
     bh_text bytes = {0};
-    if (bh_keeper_read(&d->keeper, &d->model, &bytes)) {
-        replace_text(d, &bytes);
-        bh_model_note(&d->model, false, "read again from the file");
-    }
+    if (bh_keeper_read(&d->keeper, &d->model, &bytes) &&
+        !bh_model_reload(&d->model, bytes.bytes ? bytes.bytes : "", bytes.length))
+        bh_model_note(&d->model, true, "no memory is left to open this");
+    d->keeper.version = SIZE_MAX; /* whatever is there next is another one */
     bh_text_free(&bytes);
 }
 

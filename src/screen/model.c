@@ -34,6 +34,7 @@ bool bh_model_open(bh_model *model, const char *bytes, size_t length, const char
 void bh_model_close(bh_model *model)
 {
     bh_edit_free(model->edit);
+    bh_edit_free(model->dropped);
     bh_diags_free(model->said);
     bh_text_free(&model->unread);
     bh_text_free(&model->trial);
@@ -96,6 +97,26 @@ bool bh_model_replace(bh_model *model, const char *bytes, size_t length)
         return false;
     const bool opened = bh_model_open(model, bytes, length, model->file);
     model->rescued = true;
+    return opened;
+}
+
+bool bh_model_reload(bh_model *model, const char *bytes, size_t length)
+{
+    if (model->edit && bh_edit_replace(model->edit, bytes, length, "read again from the file")) {
+        model->rescued = false;
+        model->job_due = true;
+        bh_change_done(model);
+        bh_model_note(model, false, "read again from the file; b brings yours back");
+        return true;
+    }
+    bh_edit *dropped = model->edit;
+    char file[sizeof model->file];
+    memcpy(file, model->file, sizeof file);
+    model->edit = NULL;
+    const bool opened = bh_model_open(model, bytes, length, file);
+    bh_edit_free(model->dropped);
+    model->dropped = dropped;
+    bh_model_note(model, true, "the file cannot be read as a plan; b brings yours back");
     return opened;
 }
 

@@ -554,6 +554,31 @@ START_TEST(what_cannot_be_read_is_not_opened)
 }
 END_TEST
 
+/* What the file holds now is one step, and what is saved. */
+START_TEST(another_text_is_a_step)
+{
+    bh_edit *edit = open_text("a: 1\n");
+    const size_t version = bh_edit_version(edit);
+    ck_assert(set(edit, "a", "2"));
+    ck_assert(!bh_edit_replace(edit, "", 0, "read again")); /* no document */
+    expect_bytes(edit, "a: 2\n", "refused");
+    ck_assert(bh_edit_steps(edit) == 1 && bh_edit_unsaved(edit) == 1);
+    ck_assert(bh_edit_replace(edit, "b: 3\n", 5, "read again"));
+    expect_bytes(edit, "b: 3\n", "replaced");
+    ck_assert(bh_edit_steps(edit) == 2 && bh_edit_unsaved(edit) == 0);
+    ck_assert_uint_eq(bh_edit_version(edit), version + 2);
+    ck_assert_str_eq(bh_edit_step_at(edit, 1)->text, "read again");
+    ck_assert_str_eq(bh_edit_step_at(edit, 1)->path, "");
+    ck_assert(bh_edit_replace(edit, "b: 3\n", 5, "read again") && bh_edit_steps(edit) == 2);
+    ck_assert(bh_edit_undo(edit, NULL));
+    expect_bytes(edit, "a: 2\n", "back");
+    ck_assert_uint_eq(bh_edit_unsaved(edit), 1);
+    ck_assert(bh_edit_undo(edit, NULL));
+    expect_bytes(edit, "a: 1\n", "further back");
+    bh_edit_free(edit);
+}
+END_TEST
+
 /* Every node is found again by its path, whatever items are called. */
 START_TEST(paths_lead_back)
 {
@@ -607,6 +632,7 @@ int main(void)
     tcase_add_loop_test(tests, may_it_be_changed, 0, COUNT(allowed));
     tcase_add_test(tests, what_the_field_shows);
     tcase_add_test(tests, what_cannot_be_read_is_not_opened);
+    tcase_add_test(tests, another_text_is_a_step);
     tcase_add_test(tests, paths_lead_back);
     tcase_add_test(tests, long_names);
     return run_suite("document/edit", tests);

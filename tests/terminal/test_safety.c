@@ -86,8 +86,15 @@ START_TEST(changed_on_disk)
     tty_type(&t, "s");
     tty_wait(&t, "The file changed on disk");
     tty_type(&t, "r");
-    tty_wait(&t, "read again from the file");
+    tty_wait(&t, "read again from the file; b brings yours back");
     tty_wait_row(&t, 0, "2 uA");
+    tty_type(&t, "b");
+    tty_wait(&t, "taken back: read again from the file");
+    tty_wait_row(&t, 0, "4 uA");
+    tty_wait_row(&t, 0, "1 unsaved");
+    tty_type(&t, "f");
+    tty_wait_row(&t, 0, "2 uA");
+    tty_wait_gone(&t, "unsaved");
     go_to_current(&t);
     set_current(&t, "5 uA");
     tty_write(&t, "plan.yaml", text);
@@ -101,6 +108,34 @@ START_TEST(changed_on_disk)
     ck_assert_int_eq(tty_wait_end(&t), 0);
     bh_text_free(&other);
     free(text);
+    tty_end(&t);
+}
+END_TEST
+
+/* Somebody emptied the file: what was dropped for nothing comes back, with its steps. */
+START_TEST(emptied)
+{
+    tty t;
+    begin(&t);
+    go_to_current(&t);
+    set_current(&t, "4 uA");
+    wait_for_file(&t, UNSAVED);
+    tty_write(&t, "plan.yaml", "");
+    tty_type(&t, "s");
+    tty_wait(&t, "The file changed on disk");
+    tty_type(&t, "r");
+    tty_wait(&t, "the file cannot be read as a plan; b brings yours back");
+    tty_type(&t, "b");
+    tty_wait(&t, "what was dropped is back; s saves it");
+    tty_wait_row(&t, 0, "4 uA");
+    wait_for_file(&t, UNSAVED); /* and is kept again */
+    tty_type(&t, "s");
+    tty_wait(&t, "saved in plan.yaml");
+    file_has(&t, "plan.yaml", "current: 4 uA\n");
+    tty_type(&t, "b");
+    tty_wait_row(&t, 0, "2 uA");
+    tty_type(&t, "qw");
+    ck_assert_int_eq(tty_wait_end(&t), 0);
     tty_end(&t);
 }
 END_TEST
@@ -340,6 +375,7 @@ int main(void)
     TCase *tests = tcase_create("safety");
     tcase_set_timeout(tests, tty_limit());
     tcase_add_test(tests, changed_on_disk);
+    tcase_add_test(tests, emptied);
     tcase_add_test(tests, taken_away);
     tcase_add_test(tests, leaving_unsaved);
     tcase_add_loop_test(tests, killed, 0, kills());

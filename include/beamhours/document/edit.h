@@ -77,6 +77,11 @@ bool bh_edit_apply(bh_edit *edit, const bh_edit_change *changes, size_t count, b
 bool bh_edit_try(const bh_edit *edit, const bh_edit_change *changes, size_t count, bh_text *into,
                  bh_diags *diags);
 
+/* Makes `bytes`, which are in the file, the text, as one step of the history called `note`; they
+ * count as saved.  Returns false where they cannot be read as a document or memory ran out: then
+ * the text is what it was, or (without memory) does not count as saved. */
+bool bh_edit_replace(bh_edit *edit, const char *bytes, size_t length, const char *note);
+
 /* The most frequent change: BH_EDIT_SET of `text` at `path`. */
 bool bh_edit_set(bh_edit *edit, const char *path, const char *text, bh_diags *diags);
 

@@ -190,9 +190,10 @@ typedef struct {
     bool curve_due, explain_due, note_bad;
     char file[512]; /* its name, for the title */
 
-    bh_edit *edit;  /* NULL: the text cannot be read as a document, or there is none yet */
-    bh_text unread; /* then the text */
-    bh_diags *said; /* and why */
+    bh_edit *edit;    /* NULL: the text cannot be read as a document, or there is none yet */
+    bh_text unread;   /* then the text */
+    bh_edit *dropped; /* for a text that cannot be read; NULL: none */
+    bh_diags *said;   /* and why */
     bh_plan_view plan;
     bh_table_view table;
 
@@ -235,6 +236,10 @@ void bh_model_close(bh_model *model);
 /* Makes `bytes` the text, what was opened still counting as what is saved.  False where it cannot
  * be read as a document. */
 bool bh_model_replace(bh_model *model, const char *bytes, size_t length);
+
+/* The file was read again: its `bytes` take the place of the text, which can be brought back. False
+ * without memory. */
+bool bh_model_reload(bh_model *model, const char *bytes, size_t length);
 
 /* What a key does. */
 void bh_model_press(bh_model *model, const bh_press *press);
