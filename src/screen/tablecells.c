@@ -147,7 +147,8 @@ static void set_widths(bh_model *model)
             widen(model, r, c, width);
         if (c->column == BH_COL_SETTING && *width > 20)
             *width = 20;
-        c->width = *width;
+        const bool ordered = v->order == c->column; /* by a mark before its heading */
+        c->width = widest(*width, (int)strlen(row->heading) + ordered);
     }
 }
 

@@ -36,6 +36,7 @@ static const struct {
     {"duplicated", "positron-electron", "lplus-forward<Escape><Left><Left>d", 24, 80, false, 5},
     {"removed", "positron-electron", "lplus-forward<Escape><Left><Left>r", 24, 80, false, 4},
     {"moved", "positron-electron", "lplus-forward<Escape><Left><Left>>>", 24, 80, false, 4},
+    {"ordered-by-angle", "hydrogen-separation", "<Tab><Right>o", 24, 80, false, 6},
     {"ordered", "positron-electron", "<Tab><Right><Right><Right><Right>oo", 24, 80, false, 4},
     {"pinned", "hydrogen-separation", "<Tab>p<Tab>lefficiency<Escape>80 %<Enter>", 24, 80, false,
      12},
