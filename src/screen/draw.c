@@ -173,10 +173,10 @@ static void draw_messages(const bh_model *model, const bh_arrangement *places, b
         draw_prompt(model, places, canvas, find ? "look for" : "save as");
     if (name || (places->message < 0 && !(model->note[0] && !tries(model))))
         return;
-    if (tries(model))
-        draw_typed(model, places, canvas);
-    else if (model->note[0])
+    if (model->note[0]) /* until the next key, also while something is typed */
         draw_note(model, places, canvas);
+    else if (tries(model))
+        draw_typed(model, places, canvas);
 }
 
 /* --- cautions --- */

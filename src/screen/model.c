@@ -354,6 +354,19 @@ static void take_pasted(bh_model *model, const bh_press *press)
         model->pasted = 0;
 }
 
+/* F1 is the help; no other has a meaning, and says so.  Where text is typed ? is a letter. */
+static void function_press(bh_model *model, int number)
+{
+    char name[16];
+    const bool base = model->over == BH_OVER_NOTHING;
+    if (number == 1 && base) {
+        bh_sheet_show(model, BH_SHEET_HELP);
+        return;
+    }
+    (void)snprintf(name, sizeof name, number ? "F%d" : "Insert", number);
+    bh_model_note(model, true, "%s is no key here%s", name, base ? "; ? shows all keys" : "");
+}
+
 void bh_model_press(bh_model *model, const bh_press *press)
 {
     if (press->kind == BH_PRESS_NOTHING)
@@ -367,5 +380,8 @@ void bh_model_press(bh_model *model, const bh_press *press)
         model->wish = BH_WISH_SUSPEND;
         return;
     }
-    dispatch(model, press);
+    if (press->kind == BH_PRESS_FUNCTION && model->over != BH_OVER_SHEET) /* that any key closes */
+        function_press(model, (int)press->point);
+    else
+        dispatch(model, press);
 }

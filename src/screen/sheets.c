@@ -25,6 +25,7 @@ static void write_help(bh_model *model, bh_sheet_writer *w)
                  {"Up, Down in a value", "one more or less of the digit before the cursor"},
                  {"Tab in a text", "a new line, where a text may have several: notes"},
                  {"mouse", "a click goes there, a second one opens; a click on a heading orders"},
+                 {"F1", "all keys, as ? does"},
                  {"Ctrl-C, Ctrl-Z", "leave; suspend"}};
     bh_sheet_add(w, BH_LOOK_TITLE, "", "In every part");
     for (size_t i = 0; i < sizeof moves / sizeof moves[0]; i++)

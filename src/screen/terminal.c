@@ -257,9 +257,12 @@ static bh_press key_press(wint_t code)
                 {KEY_PPAGE, BH_PRESS_PAGE_UP}, {KEY_NPAGE, BH_PRESS_PAGE_DOWN},
                 {KEY_HOME, BH_PRESS_HOME},     {KEY_END, BH_PRESS_END},
                 {KEY_BTAB, BH_PRESS_BACK_TAB}, {KEY_ENTER, BH_PRESS_ENTER},
-                {KEY_DC, BH_PRESS_DELETE},     {KEY_BACKSPACE, BH_PRESS_RUBOUT}};
+                {KEY_DC, BH_PRESS_DELETE},     {KEY_BACKSPACE, BH_PRESS_RUBOUT},
+                {KEY_IC, BH_PRESS_FUNCTION}};
     if (code == KEY_MOUSE)
         return mouse_press();
+    if (code > KEY_F0 && code <= KEY_F(63))
+        return (bh_press){.kind = BH_PRESS_FUNCTION, .point = (uint32_t)(code - KEY_F0)};
     for (size_t i = 0; i < sizeof keys / sizeof keys[0]; i++)
         if (keys[i].code == code)
             return (bh_press){.kind = keys[i].kind};

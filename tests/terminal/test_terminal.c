@@ -215,6 +215,36 @@ START_TEST(changes_lists)
 }
 END_TEST
 
+/* Keys with names of their own: F1 is the help, the others are told to mean nothing. */
+START_TEST(function_keys)
+{
+    tty t;
+    tty_folder(&t, "hydrogen-separation");
+    tty_run(&t, &(tty_start){.arguments = {"plan.yaml"}});
+    tty_wait(&t, "asked");
+    tty_type(&t, "<F5>");
+    tty_wait(&t, "F5 is no key here; ? shows all keys");
+    tty_type(&t, "<Insert>");
+    tty_wait(&t, "Insert is no key here; ? shows all keys");
+    tty_type(&t, "<F1>");
+    tty_wait(&t, "In every part");
+    tty_type(&t, "<F12>"); /* any other key closes it */
+    tty_wait_gone(&t, "In every part");
+    tty_type(&t, "lcurrent<Escape>4<F1>"); /* the value stays what it is */
+    tty_wait(&t, "F1 is no key here");
+    ck_assert(!tty_shows(&t, "? shows all keys"));
+    tty_type(&t, " uA");
+    tty_wait(&t, "Enter keeps it");
+    tty_type(&t, "<Enter>");
+    tty_wait_row(&t, 0, "4 uA");
+    tty_type(&t, "q<F5>");
+    tty_wait(&t, "not saved in");
+    tty_type(&t, "w");
+    ck_assert_int_eq(tty_wait_end(&t), 0);
+    tty_end(&t);
+}
+END_TEST
+
 START_TEST(orders_and_pins)
 {
     tty t;
@@ -590,6 +620,7 @@ int main(void)
     tcase_add_test(tests, says_what_is_wrong);
     tcase_add_test(tests, takes_back_and_does_again);
     tcase_add_test(tests, changes_lists);
+    tcase_add_test(tests, function_keys);
     tcase_add_test(tests, orders_and_pins);
     tcase_add_test(tests, chooses);
     tcase_add_test(tests, explains_and_shows);

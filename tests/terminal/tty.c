@@ -275,6 +275,7 @@ static const struct {
     {"Up", "\033OA"},      {"Down", "\033OB"},      {"Right", "\033OC"},   {"Left", "\033OD"},
     {"PageUp", "\033[5~"}, {"PageDown", "\033[6~"}, {"Home", "\033OH"},    {"End", "\033OF"},
     {"Tab", "\t"},         {"BackTab", "\033[Z"},   {"Enter", "\r"},       {"Escape", "\033"},
+    {"F1", "\033OP"},      {"F5", "\033[15~"},      {"F12", "\033[24~"},   {"Insert", "\033[2~"},
     {"Rubout", "\177"},    {"Delete", "\033[3~"},   {"Interrupt", "\003"}, {"Suspend", "\032"}};
 
 static void send_bytes(tty *t, const char *bytes, size_t length)

@@ -19,8 +19,9 @@ typedef enum {
     BH_PRESS_BACK_TAB,
     BH_PRESS_ENTER,
     BH_PRESS_ESCAPE,
-    BH_PRESS_RUBOUT, /* takes the character before the cursor */
-    BH_PRESS_DELETE, /* and the one at it */
+    BH_PRESS_RUBOUT,   /* takes the character before the cursor */
+    BH_PRESS_DELETE,   /* and the one at it */
+    BH_PRESS_FUNCTION, /* F1 and up: its number is `point`; 0: another key with a name, Insert */
     BH_PRESS_INTERRUPT,
     BH_PRESS_SUSPEND,
     BH_PRESS_CLICK, /* at row, column */
