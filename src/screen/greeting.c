@@ -5,7 +5,7 @@
 
 /* Of a mark that nothing here can tell to be stale. */
 static const char lost_there[] =
-    "If that computer failed: remove the hidden file ending in .open beside the plan.";
+    "If it failed: remove the hidden file ending in .open beside the plan.";
 
 /* --- others --- */
 

@@ -167,6 +167,38 @@ START_TEST(both_are_killed)
 }
 END_TEST
 
+/* Whether it still runs cannot be known here: it is left alone until its mark is taken away. */
+START_TEST(on_another_machine)
+{
+    tty t;
+    char mark[128];
+    tty_folder(&t, "hydrogen-separation");
+    tty_write(&t, FIRST, "plan: 1\n");
+    tty_write(&t, ".plan.yaml.open", "17 1700000000 another-host\n");
+    run(&t);
+    tty_wait(&t, OTHERS ": on another-host.");
+    tty_wait(&t, "If it failed: remove the hidden file ending in .open beside the plan.");
+    tty_type(&t, "g");
+    tty_wait(&t, "asked");
+    ck_assert(!tty_shows(&t, "Unsaved work"));
+    set_current(&t, "4 uA", SECOND);
+    tty_type(&t, "qw");
+    ck_assert_int_eq(tty_wait_end(&t), 0);
+    close_session(&t);
+    file_has(&t, FIRST, "plan: 1\n");
+    file_has(&t, ".plan.yaml.open", "another-host");
+    ck_assert(!tty_exists(&t, SECOND) && !tty_exists(&t, ".plan.yaml.open-2"));
+    snprintf(mark, sizeof mark, "%s/.plan.yaml.open", t.folder);
+    ck_assert_int_eq(unlink(mark), 0);
+    run(&t);
+    tty_wait(&t, "Unsaved work is there");
+    tty_type(&t, "<Escape>");
+    ck_assert_int_eq(tty_wait_end(&t), 0);
+    file_has(&t, FIRST, "plan: 1\n");
+    tty_end(&t);
+}
+END_TEST
+
 /* A signal while it is asked about the other leaves the other's mark. */
 START_TEST(ended_at_the_question)
 {
@@ -192,6 +224,7 @@ int main(void)
     tcase_set_timeout(tests, tty_limit());
     tcase_add_loop_test(tests, one_of_two_is_killed, 0, 2);
     tcase_add_loop_test(tests, both_are_killed, 0, 2);
+    tcase_add_test(tests, on_another_machine);
     tcase_add_loop_test(tests, ended_at_the_question, 0, 2);
     return run_suite("terminal/sessions", tests);
 }
