@@ -12,14 +12,10 @@ enum { NODES = BH_INTERPOLANT_NODES };
 /* With value at 0 and 16 halved, as ever in sums over these points. */
 int bh_chebyshev_coefficients(const bh_interpolant *in, const double *value, int step, double *c)
 {
-    const int m = (BH_INTERPOLANT_NODES - 1) / step;
-    const int turn = 2 * (BH_INTERPOLANT_NODES - 1);
+    const int last = NODES - 1, m = last / step, turn = 2 * last;
     for (int k = 0; k <= m; k++) {
-        double sum = (value[0] + (k % 2 ? -value[BH_INTERPOLANT_NODES - 1]
-                                        : value[BH_INTERPOLANT_NODES - 1])) /
-                     2;
-        for (int at = step, angle = k * step; at < BH_INTERPOLANT_NODES - 1;
-             at += step, angle += k * step)
+        double sum = (value[0] + (k % 2 ? -value[last] : value[last])) / 2;
+        for (int at = step, angle = k * step; at < last; at += step, angle += k * step)
             sum += value[at] * in->cosine[angle % turn];
         c[k] = 2 * sum / m;
     }
