@@ -440,16 +440,15 @@ END_TEST
 /* A button that is let go of, and others than the first, mean nothing: news come all the same. */
 START_TEST(other_mouse_events)
 {
-    static const char *const events[] = {"[<<0;21;9m",  "[<<1;21;9M",   "[<<1;21;9m",
-                                         "[<<2;21;9M",  "[<<2;21;9m",   "[<<66;21;9M",
-                                         "[<<67;21;9M", "[<<128;21;9M", "[<<128;21;9m"};
+    static const char *const events[] = {"\033[<0;21;9m",  "\033[<1;21;9M",   "\033[<1;21;9m",
+                                         "\033[<2;21;9M",  "\033[<2;21;9m",   "\033[<66;21;9M",
+                                         "\033[<67;21;9M", "\033[<128;21;9M", "\033[<128;21;9m"};
     tty t;
     begin(&t);
-    tty_type(&t, "<Escape>[<<0;21;9M");
+    tty_send(&t, "\033[<0;21;9M");
     tty_wait(&t, "> current");
     for (int i = 0; i < COUNT(events); i++) {
-        tty_type(&t, "<Escape>");
-        tty_type(&t, events[i]);
+        tty_send(&t, events[i]);
         tty_pump(&t, 50);
         tty_size(&t, 25 + i, 90); /* is seen without a key */
         tty_wait_row(&t, 24 + i, "? help");
@@ -555,16 +554,16 @@ START_TEST(pastes_in_pieces)
     look_for(&t, "current");
     tty_type(&t, "<Enter><Rubout><Rubout><Rubout><Rubout>");
     tty_wait(&t, "[  ");
-    tty_type(&t, "<Escape>[200~4 u");
+    tty_send(&t, "\033[200~4 u");
     tty_wait(&t, "[4 u ");
-    tty_type(&t, "A<Escape>[2");
+    tty_send(&t, "A\033[2");
     tty_wait(&t, "[4 uA ");
     tty_pump(&t, 100); /* or the mark might come in one piece */
     tty_type(&t, "01~<Enter>");
     tty_wait_row(&t, 0, "1 unsaved");
     tty_type(&t, "<Enter><Rubout><Rubout><Rubout><Rubout>");
     tty_wait(&t, "[  ");
-    tty_type(&t, "<Escape>[200~5 uA\rq");
+    tty_send(&t, "\033[200~5 uA\rq");
     tty_wait(&t, "[5 uA q ");
     tty_wait(&t, "unknown unit 'q'"); /* it is tried out, and keys are keys again */
     tty_type(&t, "<Rubout><Rubout><Enter>");
@@ -582,14 +581,16 @@ START_TEST(pastes_to_a_busy_program)
     const struct timespec busy = {2, 200000000};
     begin(&t);
     look_for(&t, "current");
-    tty_type(&t, "<Enter><Rubout><Rubout><Rubout><Rubout><Escape>[200~4 u");
+    tty_type(&t, "<Enter><Rubout><Rubout><Rubout><Rubout>");
+    tty_send(&t, "\033[200~4 u");
     tty_wait(&t, "[4 u ");
     ck_assert_int_eq(kill(t.child, SIGSTOP), 0);
     tty_type(&t, "A\rqw");
     nanosleep(&busy, NULL);
     ck_assert_int_eq(kill(t.child, SIGCONT), 0);
     tty_wait(&t, "[4 uA qw ");
-    tty_type(&t, "<Escape>[201~<Escape>");
+    tty_send(&t, "\033[201~");
+    tty_type(&t, "<Escape>");
     tty_wait_gone(&t, "[4 uA");
     leave(&t);
 }

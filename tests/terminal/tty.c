@@ -340,6 +340,11 @@ void tty_type(tty *t, const char *script)
         script += send_key(t, script);
 }
 
+void tty_send(tty *t, const char *bytes)
+{
+    send_bytes(t, bytes, strlen(bytes));
+}
+
 void tty_paste(tty *t, const char *text)
 {
     send_bytes(t, "\033[200~", 6);

@@ -52,6 +52,9 @@ void tty_end(tty *t);
 
 /* Types a script: <Enter>, <Down>, <Click 3,40>...; << is a < itself. */
 void tty_type(tty *t, const char *script);
+/* Sends bytes at once, as a terminal does what belongs together: apart they are keys of their own.
+ */
+void tty_send(tty *t, const char *bytes);
 /* Pastes, as a terminal does that was asked to mark it. */
 void tty_paste(tty *t, const char *text);
 void tty_size(tty *t, int rows, int columns);
