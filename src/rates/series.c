@@ -88,7 +88,7 @@ static bool are_there(const bh_moments *m, const bh_series *s)
 void bh_moments_of(const bh_quadrature_rule *rule, const bh_series *series, bh_moments *moments)
 {
     enum { MOST = BH_QUADRATURE_MOST, USUAL = 9 }; /* terms, so that few series want more */
-    double t[MOST], one[MOST], two[MOST];
+    double t[MOST], one[MOST] = {0}, two[MOST];
     const int n = rule->fine, all = rule->fine + rule->coarse;
     if (are_there(moments, series))
         return;

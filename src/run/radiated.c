@@ -251,10 +251,10 @@ static double set_node(const bh_radiated_request *r, double angle, bh_radiated *
     return at.after;
 }
 
-/* As many again as there can be where the way out changes so much that few do not show it. */
-static void set_nodes(const bh_radiated_request *r, bh_interval polar, int count, bh_radiated *out)
+/* Whether the way out changes so much between these nodes that they do not show it. */
+static bool set_nodes(const bh_radiated_request *r, bh_interval polar, int count, bh_radiated *out)
 {
-    static const double much = 1.3, some = 0.002; /* [1] and radiation lengths, between the nodes */
+    static const double much = 1.3, some = 0.002; /* [1] and radiation lengths */
     double least = (double)INFINITY, most = 0;
     bh_angle_nodes_of(polar, count, &out->at);
     for (int i = 0; i < count; i++) {
@@ -262,8 +262,7 @@ static void set_nodes(const bh_radiated_request *r, bh_interval polar, int count
         least = fmin(least, after);
         most = fmax(most, after);
     }
-    if (most > much * least + some && count < BH_ANGLE_NODES)
-        set_nodes(r, polar, BH_ANGLE_NODES, out);
+    return most > much * least + some;
 }
 
 static bool works(const bh_radiated_request *r)
@@ -322,6 +321,7 @@ void bh_radiated_make(const bh_radiated_request *request, bh_radiated *out)
         return;
     }
     const int nodes = bh_angle_points(polar);
-    set_nodes(request, polar, request->trace && nodes > FEW ? FEW : nodes, out);
+    if (set_nodes(request, polar, request->trace && nodes > FEW ? FEW : nodes, out))
+        (void)set_nodes(request, polar, BH_ANGLE_NODES, out);
     set_boosted(request, (polar.from + polar.to) / 2, out);
 }

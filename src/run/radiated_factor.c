@@ -47,8 +47,9 @@ static double wider(const bh_radiated *x, int boost, double angle)
            bh_angle_between(&x->at, share, x->limit);
 }
 
-int bh_radiated_kinks(const bh_radiated *x, int boost, bh_interval polar, double *kinks)
+int bh_radiated_kinks(const bh_radiated *radiated, int boost, bh_interval polar, double *kinks)
 {
+    const bh_radiated *x = radiated;
     enum { STRETCHES = BH_RADIATED_KINKS };
     int count = 0;
     if (x->idle || !(x->cut[0] < far_off && x->limit[0] < far_off))
