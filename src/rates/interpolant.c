@@ -144,13 +144,13 @@ static bool fit_piece(bh_interpolant *in, piece *p, samples *s)
     static const double few = 1e-7; /* [1] tolerance for which 5 points may do */
     p->middle = (p->from + p->to) / 2;
     p->slope = p->to > p->from ? 2 / (p->to - p->from) : 0;
-    const bool begin = s->request->tolerance >= few;
-    if (begin) {
+    const bool coarse = s->request->tolerance >= few;
+    if (coarse) {
         sample(in, p, 0, 4, s);
         if (s->bad || try_logarithm(in, p, s, 4))
             return true;
     }
-    sample(in, p, begin ? 2 : 0, begin ? 4 : 2, s);
+    sample(in, p, coarse ? 2 : 0, coarse ? 4 : 2, s);
     if (s->bad || try_logarithm(in, p, s, 2) || try_linear(in, p, s, 2))
         return true;
     sample(in, p, 1, 2, s);

@@ -103,10 +103,10 @@ static bh_radiative_parts maximon_tjon_rate(const bh_encounter *x, double cut, c
 static bh_radiative_parts mo_tsai_rate(const bh_encounter *x, double cut, const bh_event *e)
 {
     const double top = fmin(cut, e->scattered_kinetic), per = 1.0 / log(2.0);
-    const bh_radiative_parts one = mo_tsai(x, top, e), half = mo_tsai(x, top / 2.0, e);
-    return (bh_radiative_parts){.z0 = (one.z0 - half.z0) * per,
-                                .z1 = (one.z1 - half.z1) * per,
-                                .z2 = (one.z2 - half.z2) * per};
+    const bh_radiative_parts full = mo_tsai(x, top, e), half = mo_tsai(x, top / 2.0, e);
+    return (bh_radiative_parts){.z0 = (full.z0 - half.z0) * per,
+                                .z1 = (full.z1 - half.z1) * per,
+                                .z2 = (full.z2 - half.z2) * per};
 }
 
 double bh_radiative_combine(const bh_radiative_parts *x, int z)
