@@ -1,10 +1,11 @@
 /* arrange.c - where everything stands on a terminal of whatever size. */
 #include "beamhours/screen/model.h"
 
-enum { NARROW = 60, LEAST_PLAN = 28, MOST_PLAN = 64, CURVE_FROM = 17 };
+enum { NARROW = 60, LEAST_PLAN = 28, MOST_PLAN = 64, READABLE = 60, CURVE_FROM = 17 };
 
 static void share_columns(const bh_model *model, bh_arrangement *a)
 {
+    a->over_columns = model->columns;
     if (model->columns < NARROW) { /* the part in focus alone */
         if (model->pane == BH_PANE_PLAN)
             a->plan_columns = model->columns;
@@ -17,6 +18,8 @@ static void share_columns(const bh_model *model, bh_arrangement *a)
     a->plan_columns = plan;
     a->table_column = plan + 2; /* a line between them */
     a->table_columns = model->columns - plan - 2;
+    if (plan >= READABLE) /* the table stays in sight, and need not be sent again */
+        a->over_columns = plan;
 }
 
 static void share_rows(const bh_model *model, bh_arrangement *a)

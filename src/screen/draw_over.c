@@ -5,11 +5,10 @@
 #include "beamhours/screen/choices.h"
 #include "beamhours/screen/drawing_parts.h"
 
-static void clear_body(const bh_arrangement *places, bh_canvas *canvas, int from, int rows)
+static void clear_rows(bh_canvas *canvas, int from, int rows, int columns)
 {
     for (int r = from; r < from + rows; r++)
-        bh_canvas_clear(canvas, (bh_spot){r, 0, canvas->columns});
-    (void)places;
+        bh_canvas_clear(canvas, (bh_spot){r, 0, columns});
 }
 
 /* A text of several lines, the row of the cursor in view. */
@@ -27,17 +26,18 @@ static void draw_lines(const bh_model *model, const bh_arrangement *places, bh_c
             above--;
         }
     }
-    clear_body(places, canvas, places->body, places->body_rows);
+    const int columns = places->over_columns;
+    clear_rows(canvas, places->body, places->body_rows, columns);
     const int used =
-        bh_canvas_put(canvas, (bh_spot){places->body, 0, canvas->columns}, BH_LOOK_TITLE, "TEXT ");
-    (void)bh_canvas_put(canvas, (bh_spot){places->body, used, canvas->columns - used},
-                        BH_LOOK_TITLE, model->field_path);
+        bh_canvas_put(canvas, (bh_spot){places->body, 0, columns}, BH_LOOK_TITLE, "TEXT ");
+    (void)bh_canvas_put(canvas, (bh_spot){places->body, used, columns - used}, BH_LOOK_TITLE,
+                        model->field_path);
     from = top;
     for (int r = 0; r < most && from < BH_FIELD_SIZE; r++) {
         char row[BH_FIELD_SIZE];
         const size_t next = bh_field_row(f, from, &length);
         (void)snprintf(row, sizeof row, "%.*s", (int)length, f->bytes + from);
-        const bh_spot spot = {places->body + 1 + r, 1, canvas->columns - 1};
+        const bh_spot spot = {places->body + 1 + r, 1, columns - 1};
         bh_canvas_paint(canvas, spot, BH_LOOK_FIELD);
         (void)bh_canvas_put(canvas, spot, BH_LOOK_FIELD, row);
         from = next;
@@ -51,13 +51,14 @@ static void draw_lines(const bh_model *model, const bh_arrangement *places, bh_c
 static void draw_sheet(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
     const bh_sheet *s = &model->sheet;
-    clear_body(places, canvas, places->body, places->body_rows);
-    const bh_spot head = {places->body, 0, canvas->columns};
+    const int columns = places->over_columns;
+    clear_rows(canvas, places->body, places->body_rows, columns);
+    const bh_spot head = {places->body, 0, columns};
     (void)bh_canvas_put(canvas, head, BH_LOOK_TITLE, s->title);
     const size_t rows = places->body_rows > 1 ? (size_t)places->body_rows - 1 : 0;
     for (size_t r = 0; r < rows && s->top + r < s->count; r++) {
         const bh_sheet_line *line = &s->lines[s->top + r];
-        (void)bh_canvas_put(canvas, (bh_spot){places->body + 1 + (int)r, 1, canvas->columns - 1},
+        (void)bh_canvas_put(canvas, (bh_spot){places->body + 1 + (int)r, 1, columns - 1},
                             line->look, line->text);
     }
     char where[48];
@@ -128,9 +129,10 @@ static void draw_chooser(const bh_model *model, const bh_arrangement *places, bh
     const bh_chooser *c = &model->chooser;
     /* a value that is tried out shows in the table: it stays in sight */
     const bool beside = c->kind == BH_CHOOSE_VALUE && places->table_columns && places->plan_columns;
-    const int columns = beside ? places->plan_columns : canvas->columns;
-    for (int r = 0; r < places->body_rows; r++)
-        bh_canvas_clear(canvas, (bh_spot){places->body + r, 0, columns});
+    const int columns = beside                      ? places->plan_columns
+                        : c->kind == BH_CHOOSE_PLAN ? canvas->columns
+                                                    : places->over_columns;
+    clear_rows(canvas, places->body, places->body_rows, columns);
     const int used =
         bh_canvas_put(canvas, (bh_spot){places->body, 0, columns}, BH_LOOK_TITLE, c->title);
     const char *dot = strrchr(model->field_path, '.');
@@ -141,8 +143,7 @@ static void draw_chooser(const bh_model *model, const bh_arrangement *places, bh
     bh_draw_field(canvas, (bh_spot){places->body + 1, 8, columns - 9}, &c->typed);
     draw_choices(model, places, columns, canvas);
     const int row = places->body + places->body_rows - 3;
-    for (int r = row - 1; r < row + 3; r++)
-        bh_canvas_clear(canvas, (bh_spot){r, 0, canvas->columns});
+    clear_rows(canvas, row - 1, 4, canvas->columns);
     draw_more(model, row, canvas);
 }
 
@@ -158,7 +159,7 @@ int bh_ask_row(const bh_model *model)
 static void draw_ask(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
     const int first = bh_ask_row(model), n = bh_ask_answers(model->question);
-    clear_body(places, canvas, places->body, first + n + 1 - places->body);
+    clear_rows(canvas, places->body, first + n + 1 - places->body, canvas->columns);
     int row = places->body;
     for (int i = 0; i < 3; i++)
         if (model->question_text[i][0])

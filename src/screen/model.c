@@ -188,8 +188,8 @@ void bh_model_resize(bh_model *model, int rows, int columns)
         model->field.width = bh_field_width(model);
     bh_plan_keep_in_view(model);
     bh_table_refresh(model);
-    if (model->over == BH_OVER_SHEET && model->sheet.kind != BH_SHEET_EXPLAIN)
-        bh_sheet_show(model, model->sheet.kind);
+    if (model->over == BH_OVER_SHEET)
+        bh_sheet_resized(model);
 }
 
 /* --- keys --- */

@@ -17,7 +17,7 @@ bool bh_sheet_begin(bh_model *model, bh_sheet_kind kind, const char *title, bh_s
     model->sheet.kind = kind;
     model->sheet.title = title;
     model->over = BH_OVER_SHEET;
-    const int width = model->columns - 2;
+    const int width = bh_arrange(model).over_columns - 2;
     *out = (bh_sheet_writer){&model->sheet, width < NARROWEST ? NARROWEST : width};
     return true;
 }

@@ -138,6 +138,16 @@ static void ask_to_explain(bh_model *model, bh_sheet_writer *w)
     model->explain_due = true;
 }
 
+static void scroll(bh_model *model, long by)
+{
+    bh_sheet *s = &model->sheet;
+    const int room = bh_arrange(model).body_rows - 1;
+    const long most = (long)s->count - room;
+    long top = (long)s->top + by;
+    top = top > most ? most : top;
+    s->top = (size_t)(top < 0 ? 0 : top);
+}
+
 void bh_sheet_show(bh_model *model, bh_sheet_kind kind)
 {
     static const struct {
@@ -157,9 +167,21 @@ void bh_sheet_show(bh_model *model, bh_sheet_kind kind)
     sheets[kind].write(model, &w);
 }
 
+void bh_sheet_resized(bh_model *model)
+{
+    const size_t top = model->sheet.top;
+    if (model->sheet.kind == BH_SHEET_EXPLAIN) {
+        model->explain_due = true; /* what it says now stays until the answer */
+        return;
+    }
+    bh_sheet_show(model, model->sheet.kind);
+    scroll(model, (long)top);
+}
+
 void bh_sheet_explain(bh_model *model, const bh_reply *answer)
 {
     bh_sheet_writer w;
+    const size_t top = model->sheet.top;
     if (model->over != BH_OVER_SHEET || model->sheet.kind != BH_SHEET_EXPLAIN ||
         !bh_sheet_begin(model, BH_SHEET_EXPLAIN, "EXPLAINED", &w))
         return;
@@ -169,19 +191,10 @@ void bh_sheet_explain(bh_model *model, const bh_reply *answer)
     }
     for (size_t i = 0; i < bh_explanation_lines(answer->explanation); i++)
         bh_sheet_explained(&w, bh_explanation_line(answer->explanation, i));
+    scroll(model, (long)top);
 }
 
 /* --- keys --- */
-
-static void scroll(bh_model *model, long by)
-{
-    bh_sheet *s = &model->sheet;
-    const int room = bh_arrange(model).body_rows - 1;
-    const long most = (long)s->count - room;
-    long top = (long)s->top + by;
-    top = top > most ? most : top;
-    s->top = (size_t)(top < 0 ? 0 : top);
-}
 
 /* The message that the first line in view belongs to. */
 static void go_to_line(bh_model *model)

@@ -195,7 +195,8 @@ static void begin_lines(bh_model *model, const char *path, const bh_press *typed
 
 int bh_field_width(const bh_model *model)
 {
-    return model->columns > 4 ? model->columns - 2 : 2;
+    const int columns = bh_arrange(model).over_columns;
+    return columns > 4 ? columns - 2 : 2;
 }
 
 void bh_value_begin(bh_model *model, const bh_press *typed)

@@ -94,6 +94,14 @@ static const struct {
      * none that is shown */
     {"large-typing", "hydrogen-separation", "<Tab><Right><Right><Tab>lcurrent<Escape>4 uA", 60, 200,
      false, 12},
+    /* where the plan's part is wide enough a text stands there, and the table in sight */
+    {"large-explained", "hydrogen-separation", "<Tab>e", 60, 200, false, 6},
+    {"large-key", "hydrogen-separation", "lbeam<Escape>a", 60, 200, false, 6},
+    {"large-text", "hydrogen-separation", "lnotes<Escape><Enter>", 60, 200, false, 0},
+    /* wrapped anew, what was in view about where it was */
+    {"resized-help", "hydrogen-separation", "<Size 200x60>?<Size 80x24><PageDown><Size 70x20>", 24,
+     80, false, 6},
+    {"resized-explained", "hydrogen-separation", "<Tab>e<PageDown><Size 60x20>", 24, 80, false, 6},
     {"small", "hydrogen-separation", "", 10, 40, false, 6},
     {"small-table", "hydrogen-separation", "<Tab>", 10, 40, false, 6},
     {"tiny", "hydrogen-separation", "", 3, 12, false, 6},

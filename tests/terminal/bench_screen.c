@@ -194,6 +194,10 @@ static bool large_terminal(void)
     tty t;
     start(&t, 50, 60, 200);
     work(&t, &times, 2);
+    static const char *const keys[] = {"?", "<Escape>", "c", "<Escape>", "<Tab>",
+                                       "e", "<Escape>", "w", "<Escape>", "<Tab>"};
+    for (size_t i = 0; i < sizeof keys / sizeof *keys; i++)
+        press(&t, keys[i], &times);
     const bool good =
         bench_goal("200x60: bytes sent for a key, largest", times.bytes, most_bytes, "bytes");
     printf("      median %.2f ms\n", quantile(times.view, times.count, 0.5));

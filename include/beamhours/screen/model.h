@@ -331,6 +331,7 @@ void bh_table_columns(bh_model *model);
 /* --- sheets.c --- */
 void bh_sheet_show(bh_model *model, bh_sheet_kind kind);
 void bh_sheet_close(bh_sheet *sheet);
+void bh_sheet_resized(bh_model *model); /* wrapped anew, at about the same place */
 bool bh_sheet_press(bh_model *model, const bh_press *press);
 void bh_sheet_explain(bh_model *model, const bh_reply *answer);
 
@@ -382,7 +383,8 @@ typedef struct {
     int title, message, message_rows, caution, menu;            /* rows; -1: none */
     int body, body_rows;                                        /* the first, how many */
     int plan_column, plan_columns, table_column, table_columns; /* 0 columns: hidden */
-    int table_rows; /* of body, without the heads; the curve has the rest */
+    int over_columns; /* of a text to read: over the plan alone where that is wide enough */
+    int table_rows;   /* of body, without the heads; the curve has the rest */
     int curve, curve_rows;
 } bh_arrangement;
 bh_arrangement bh_arrange(const bh_model *model);
