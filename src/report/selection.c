@@ -7,6 +7,7 @@
 #include <string.h>
 
 #include "beamhours/base/nearest.h"
+#include "beamhours/base/sequence.h"
 
 double bh_selection_number(const bh_selection *view, size_t i, int column)
 {
@@ -136,7 +137,7 @@ static int by_key(const void *left, const void *right)
     const struct key *a = left, *b = right;
     int order = 0;
     if (a->text && b->text)
-        order = a->sign < 0 ? strcmp(b->text, a->text) : strcmp(a->text, b->text);
+        order = a->sign * bh_sequence(a->text, b->text);
     else if (isnan(a->number) || isnan(b->number))
         order = isnan(a->number) - isnan(b->number);
     else

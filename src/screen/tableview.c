@@ -3,6 +3,7 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "beamhours/base/sequence.h"
 #include "beamhours/screen/model.h"
 
 void bh_table_free_view(bh_table_view *view)
@@ -129,7 +130,7 @@ static int by_key(const void *x, const void *y)
     const struct ordered *a = x, *b = y;
     int order = 0;
     if (a->text && b->text)
-        order = strcmp(a->text, b->text);
+        order = bh_sequence(a->text, b->text);
     else if (isnan(a->key) != isnan(b->key))
         return isnan(a->key) ? 1 : -1; /* empty cells last */
     else

@@ -6,6 +6,8 @@ csv | head -1
 csv --columns setting,arm --sort -angle_deg
 csv --columns setting,arm --only backward.3,forward --sort arm
 csv --columns setting,arm --sort -setting | head -3
+printf 'plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 1 uA}\ntarget: {layers: [{material: graphite, thickness: 1 mm}]}\narms: [{name: A, solid_angle: 1 msr}]\nsettings: [{name: s, angle: {from: 30 deg, to: 41 deg, step: 1 deg}, time: 1 h}]\n' >twelve.yaml
+beamhours table twelve.yaml --format csv --columns setting --sort -setting 2>/dev/null | tr -d '\r' | paste -s -d' '
 csv --columns setting,arm,bin --bins | head -2
 csv --columns efficiency,setting,efficiency | head -2
 NO_COLOR=1 beamhours table $plan >without.txt 2>/dev/null

@@ -47,7 +47,7 @@ static const char script[] =
     "   var value=function(r){var d=r.cells[c],s=d.dataset.sort||d.textContent,x=parseFloat(s);\n"
     "    return number?(isNaN(x)?Infinity:x):s;};\n"
     "   var order=function(p,q){var a=value(p),b=value(q);\n"
-    "    return number?(a===b?0:a-b):a.localeCompare(b);};\n"
+    "    return number?(a===b?0:a-b):a.localeCompare(b,undefined,{numeric:true});};\n"
     "   Array.from(body.rows).sort(function(p,q){return up?order(p,q):order(q,p);})\n"
     "    .forEach(function(r){body.appendChild(r);});\n"
     "   heads.forEach(function(o){o.removeAttribute('aria-sort');});\n"
