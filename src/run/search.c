@@ -140,6 +140,20 @@ static void keep_extremes(bh_search *s, const char *text, double output)
     }
 }
 
+/* Evaluates at a value that is tried.  One where nothing can be computed, such as an acceptance
+ * that all but touches the beam, is no more than a value that does not do. */
+static bh_code try_out(bh_search *s, struct one *o)
+{
+    const bh_code code = evaluate(s, o);
+    if (code != BH_EDOMAIN)
+        return code;
+    if (!s->answer->refused[0])
+        (void)snprintf(s->answer->refused, sizeof s->answer->refused, "%.*s",
+                       (int)sizeof s->answer->refused - 1, s->err->text);
+    *s->err = (bh_error){.code = BH_OK};
+    return BH_OK;
+}
+
 static double no_output(bh_search *s, bh_code code)
 {
     s->code = code;
@@ -163,7 +177,7 @@ double bh_search_output(bh_search *search, const char *text)
     if (o.plan)
         search->code = find_row(search, &o);
     if (o.plan && !search->code)
-        search->code = evaluate(search, &o);
+        search->code = try_out(search, &o);
     if (o.table)
         output = number_of(&o, q->column);
     else if (diags && !o.plan)

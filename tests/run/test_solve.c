@@ -215,6 +215,27 @@ START_TEST(an_uncertainty_keeps_its_unit)
 }
 END_TEST
 
+/* Between the angles that the plan takes and those that it does not, an acceptance all but touches
+ * the beam, where the cross section has no number: the search goes on with the other angles. */
+START_TEST(values_without_a_number_do_not_end_it)
+{
+    static const char *const wide =
+        "plan: 1\n"
+        "beam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uA}\n"
+        "target: {name: foil, layers: [{material: carbon-12, thickness: 1 mm}]}\n"
+        "arms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±70 mrad}]\n"
+        "settings: [{name: K1, angle: 25 deg, goal: 1 %}]\n";
+    bh_answer a;
+    bh_error err = {.text = ""};
+    bh_question q = ask("K1", "angle", BH_COL_Q2, 0.2);
+    q.bytes = wide;
+    q.length = strlen(wide);
+    ck_assert_msg(solve(&q, &a, &err) == BH_OK, "%s", err.text);
+    ck_assert_uint_eq(a.count, 1);
+    ck_assert_str_eq(err.text, "");
+}
+END_TEST
+
 START_TEST(none_is_said)
 {
     bh_answer a;
@@ -305,6 +326,7 @@ START_TEST(words_are_read)
         {"q2_GeV2", BH_COL_Q2, "600000 MeV2", 0.6},
         {"rate", BH_COL_SIGNAL, "2 kHz", 2000},
         {"uncertainty", BH_COL_STATISTICAL, "0.5 %", 0.005},
+        {"uncertainty", BH_COL_STATISTICAL, "0.005", 0.005},
         {"time", BH_COL_HOURS, "2 d", 48},
         {"hours", BH_COL_HOURS, " 2", NAN},
         {"hours", BH_COL_HOURS, "2 ", 2},
@@ -349,6 +371,7 @@ int main(void)
     tcase_add_test(tests, several_values_and_turns);
     tcase_add_test(tests, the_nearest_first);
     tcase_add_test(tests, an_uncertainty_keeps_its_unit);
+    tcase_add_test(tests, values_without_a_number_do_not_end_it);
     tcase_add_test(tests, none_is_said);
     tcase_add_test(tests, questions_without_sense_are_refused);
     tcase_add_test(tests, it_can_be_cancelled);
