@@ -73,26 +73,34 @@ bh_code bh_solve_wanted(bh_column_id column, const char *text, double *wanted, b
     return bh_fail(err, BH_EDOMAIN, "'%s' is no number; write one in %s", text, c->unit);
 }
 
-/* --- the answer --- */
-
-static void append_output(const bh_column *c, double output, bh_text *out)
+bool bh_solve_in_percent(bh_column_id column)
 {
-    char number[BH_NUMBER_SIZE];
-    bh_number_digits(output, 4, number, sizeof number);
-    const bool bare = strcmp(c->unit, "1") == 0;
-    bh_text_appendf(out, "%s%s%s", number, bare ? "" : " ", bare ? "" : c->unit);
+    return column == BH_COL_STATISTICAL || column == BH_COL_SYSTEMATIC ||
+           column == BH_COL_PER_MRAD || column == BH_COL_PER_PERMILLE;
 }
 
-static void append_question(const bh_question *q, const bh_column *c, bh_text *out)
+/* --- the answer --- */
+
+static void append_output(const bh_question *q, double output, bh_text *out)
 {
-    bh_text_appendf(out, "%s = ", c->key);
-    append_output(c, q->wanted, out);
+    char number[BH_NUMBER_SIZE];
+    const char *unit = bh_column_at((int)q->column)->unit;
+    const bool percent = bh_solve_in_percent(q->column), bare = strcmp(unit, "1") == 0;
+    bh_number_digits(percent ? 100 * output : output, 4, number, sizeof number);
+    bh_text_appendf(out, "%s%s", number, percent ? " %" : bare ? "" : " ");
+    bh_text_append(out, percent || bare ? "" : unit);
+}
+
+static void append_question(const bh_question *q, bh_text *out)
+{
+    bh_text_appendf(out, "%s = ", bh_column_at((int)q->column)->key);
+    append_output(q, q->wanted, out);
     bh_text_appendf(out, " in setting %s", q->setting);
     if (q->arm)
         bh_text_appendf(out, ", arm %s", q->arm);
 }
 
-static void say_none(const bh_answer *a, const bh_column *c, bh_text *out)
+static void say_none(const bh_question *q, const bh_answer *a, bh_text *out)
 {
     if (!isfinite(a->least)) {
         if (a->refused[0])
@@ -104,23 +112,22 @@ static void say_none(const bh_answer *a, const bh_column *c, bh_text *out)
     bh_text_appendf(out, " from %s to %s: ", a->from, a->to);
     if (a->most - a->least <= 1e-9 * fabs(a->most)) {
         bh_text_append(out, "it stays at ");
-        append_output(c, a->most, out);
+        append_output(q, a->most, out);
         return;
     }
     bh_text_append(out, "it lies between ");
-    append_output(c, a->least, out);
+    append_output(q, a->least, out);
     bh_text_appendf(out, " (at %s) and ", a->at_least);
-    append_output(c, a->most, out);
+    append_output(q, a->most, out);
     bh_text_appendf(out, " (at %s)", a->at_most);
 }
 
 void bh_answer_say(const bh_question *question, const bh_answer *answer, bh_text *out)
 {
-    const bh_column *c = bh_column_at((int)question->column);
     if (answer->count == 0) {
         bh_text_appendf(out, "no value of %s gives ", answer->path);
-        append_question(question, c, out);
-        say_none(answer, c, out);
+        append_question(question, out);
+        say_none(question, answer, out);
         return;
     }
     bh_text_appendf(out, "%s: ", answer->path);
@@ -131,10 +138,10 @@ void bh_answer_say(const bh_question *question, const bh_answer *answer, bh_text
                                                 : " or ",
                         answer->solutions[i].text);
     bh_text_appendf(out, " %s ", answer->count == 1 ? "gives" : "give");
-    append_question(question, c, out);
+    append_question(question, out);
     if (isfinite(answer->output)) {
         bh_text_append(out, "; now it is ");
-        append_output(c, answer->output, out);
+        append_output(question, answer->output, out);
         if (answer->present[0])
             bh_text_appendf(out, " with %s", answer->present);
     }

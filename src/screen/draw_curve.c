@@ -235,6 +235,8 @@ static const char *excuse(const bh_model *model)
     const bh_table_row *row = bh_table_here(model);
     if (!row)
         return "";
+    if (bh_table_setting(model, row)->arms[row->now->arm].first)
+        return "none of a coincidence; each arm has one";
     if (!model->curve)
         return "being computed \u2026";
     return model->curve->why.text[0] ? model->curve->why.text : "no values";

@@ -58,16 +58,22 @@ static int wrapped(const struct page *p, bh_look look, const char *text, int mos
     return rows;
 }
 
+static const char *unit_of(bh_column_id output)
+{
+    const char *unit = bh_column_at((int)output)->unit;
+    return bh_solve_in_percent(output) ? "%" : strcmp(unit, "1") == 0 ? "" : unit;
+}
+
 static void draw_solutions(struct page *p, int last)
 {
     const bh_solving *s = &p->model->solving;
-    const bh_column *column = bh_column_at((int)s->output);
+    const double scale = bh_solve_in_percent(s->output) ? 100 : 1;
     for (size_t i = 0; i < s->answer.count && p->row < last; i++, p->row++) {
         char number[BH_NUMBER_SIZE], line[240];
         const bool here = s->line == SOLUTIONS + (int)i || (s->line < SOLUTIONS && i == 0);
-        (void)bh_number_digits(s->answer.solutions[i].output, 5, number, sizeof number);
+        (void)bh_number_digits(scale * s->answer.solutions[i].output, 5, number, sizeof number);
         (void)snprintf(line, sizeof line, "%s %s  gives %s %s", here ? ">" : " ",
-                       s->answer.solutions[i].text, number, column->unit);
+                       s->answer.solutions[i].text, number, unit_of(s->output));
         const bh_spot spot = {p->row, 1, p->columns - 1};
         (void)bh_canvas_put(p->canvas, spot, here ? BH_LOOK_TRIAL : BH_LOOK_PLAIN, line);
         if (s->line == SOLUTIONS + (int)i)
@@ -114,8 +120,7 @@ void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_can
     else
         (void)bh_canvas_put_right(canvas, (bh_spot){p.row - 1, 0, columns}, BH_LOOK_PLAIN, text);
     p.row += tight ? 0 : 2;
-    (void)snprintf(text, sizeof text, "%s %s", column->heading,
-                   strcmp(column->unit, "1") == 0 ? "" : column->unit);
+    (void)snprintf(text, sizeof text, "%s %s", column->heading, unit_of(s->output));
     choice_line(&p, OUTPUT, "output", text);
     p.row++;
     name_line(&p, WANTED, "wanted");

@@ -33,6 +33,37 @@ static bool compares(const bh_model *model)
     return false;
 }
 
+static bool stands(const bh_column_places *p, int index)
+{
+    for (int i = 0; i < p->count; i++)
+        if (p->index[i] == index)
+            return true;
+    return false;
+}
+
+/* What a column was says nothing where the column itself is not to be seen: it takes the place of
+ * the last ones where there is no room, but for the one in focus.  Whether it came to stand. */
+static bool place_compared(const bh_table_view *v, int end, bh_column_places *p)
+{
+    int c = 0;
+    while (c < v->column_count && v->columns[c].column != v->compared)
+        c++;
+    if (c == v->column_count || stands(p, c))
+        return c < v->column_count;
+    while (p->count > 0) {
+        const int last = p->count - 1;
+        int at = p->column[last] + p->width[last] + 1;
+        if (at + v->columns[c].width <= end) {
+            place(p, c, v->columns[c].width, &at);
+            return true;
+        }
+        if (last == 0 || p->index[last] == v->column)
+            return false;
+        p->count = last;
+    }
+    return false;
+}
+
 /* From the view's column `first` on; whether the one in focus came to stand.  What the compared one
  * was stands at the right end, so that nothing else moves when it comes or goes. */
 static bool place_from(const bh_model *model, const bh_arrangement *places, int first,
@@ -42,7 +73,6 @@ static bool place_from(const bh_model *model, const bh_arrangement *places, int 
     const bool compared = compares(model), wide = places->table_columns >= WIDE;
     const int was = compared || wide ? width_of_was(v) : 0;
     const int end = places->table_column + places->table_columns;
-    bool focus = false;
     int at = places->table_column;
     p->count = 0;
     for (int i = 0; i < v->column_count; i++) {
@@ -52,12 +82,11 @@ static bool place_from(const bh_model *model, const bh_arrangement *places, int 
         if (at + width + (was ? was + 1 : 0) > end)
             break;
         place(p, i, width, &at);
-        focus = focus || i == v->column;
     }
     at = end - was;
-    if (compared)
+    if (compared && place_compared(v, at - 1, p))
         place(p, -1, was, &at);
-    return focus;
+    return stands(p, v->column);
 }
 
 void bh_place_columns(const bh_model *model, const bh_arrangement *places, bh_column_places *out)

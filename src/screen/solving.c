@@ -3,6 +3,7 @@
 #include <stdio.h>
 #include <string.h>
 
+#include "beamhours/base/number.h"
 #include "beamhours/screen/model.h"
 
 enum { OUTPUT, WANTED, INPUT, SOLUTIONS };
@@ -29,6 +30,14 @@ static void forget(bh_solving *s)
     s->asked = 0;
 }
 
+/* A number alone is in the unit that the table shows the column in, and the form says. */
+static bool is_bare(const char *text)
+{
+    const char *end = NULL;
+    double number = 0;
+    return bh_number_parse(text, &end, &number) == BH_OK && end[strspn(end, " ")] == '\0';
+}
+
 /* What is typed is wanted: asks, or says why it cannot. */
 static void ask(bh_model *model)
 {
@@ -45,6 +54,8 @@ static void ask(bh_model *model)
         s->bad = true;
         return;
     }
+    if (bh_solve_in_percent(s->output) && is_bare(s->wanted.bytes))
+        s->value /= 100;
     s->due = true;
 }
 
@@ -57,9 +68,9 @@ void bh_solving_begin(bh_model *model, const bh_press *typed)
     const bh_setting *setting = bh_table_setting(model, row);
     const int column = model->table.columns[model->table.column].column;
     *s = (bh_solving){.line = WANTED, .output = BH_COL_HOURS, .by = BH_BY_ANGLE};
-    (void)snprintf(s->setting, sizeof s->setting, "%.60s", setting->name);
+    (void)snprintf(s->setting, sizeof s->setting, "%.159s", setting->name);
     if (setting->arm_count > 1)
-        (void)snprintf(s->arm, sizeof s->arm, "%.60s", setting->arms[row->now->arm].arm.name.text);
+        (void)snprintf(s->arm, sizeof s->arm, "%.319s", setting->arms[row->now->arm].arm.name.text);
     if (bh_column_at(column)->kind == BH_CELL_NUMBER)
         s->output = (bh_column_id)column;
     (void)bh_field_set(&s->wanted, "");

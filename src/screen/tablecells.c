@@ -95,6 +95,40 @@ static void add_column(bh_table_view *v, int column)
         v->columns[v->column_count++] = scaled(v, column);
 }
 
+/* What a name may take of the table. */
+static int longest_word(const bh_model *model)
+{
+    const int most = bh_arrange(model).table_columns * 2 / 5;
+    return most < 8 ? 8 : most > 40 ? 40 : most;
+}
+
+/* A longer one keeps its two ends, since names of one plan often begin alike. */
+static void shorten(const char *word, int most, char out[BH_CELL_ROOM])
+{
+    const int length = (int)strlen(word), head = (most - 1) / 2;
+    if (length <= most)
+        (void)snprintf(out, BH_CELL_ROOM, "%s", word);
+    else
+        (void)snprintf(out, BH_CELL_ROOM, "%.*s\u2026%s", head, word,
+                       word + length - (most - 1 - head));
+}
+
+/* Of a coincidence each of its two arms. */
+static void write_word(const bh_model *model, const bh_table_row *row, const char *word,
+                       char out[BH_CELL_ROOM])
+{
+    const bh_setting_arm *arm = &bh_table_setting(model, row)->arms[row->now->arm];
+    const int most = longest_word(model);
+    char a[BH_CELL_ROOM], b[BH_CELL_ROOM];
+    if (word != arm->arm.name.text || !arm->first || (int)strlen(word) <= most) {
+        shorten(word, most, out);
+        return;
+    }
+    shorten(arm->first->arm.name.text, (most - 1) / 2, a);
+    shorten(arm->second->arm.name.text, (most - 1) / 2, b);
+    (void)snprintf(out, BH_CELL_ROOM, "%.31s+%.31s", a, b);
+}
+
 static int widest(int a, int b)
 {
     return a > b ? a : b;
@@ -145,8 +179,8 @@ static void set_widths(bh_model *model)
         measure_ends(model, c, width);
         for (size_t r = v->top; r < v->count && r < v->top + rows; r++)
             widen(model, r, c, width);
-        if (c->column == BH_COL_SETTING && *width > 20)
-            *width = 20;
+        if (row->kind != BH_CELL_NUMBER && *width > longest_word(model))
+            *width = longest_word(model);
         const bool ordered = v->order == c->column; /* by a mark before its heading */
         c->width = widest(*width, (int)strlen(row->heading) + ordered);
     }
@@ -225,7 +259,7 @@ void bh_table_cell(const bh_model *model, const bh_table_row *row, const bh_tabl
     const bool known = row->bin || !row->stale || of->number[BH_COL_ANGLE] > 0 ||
                        of->number[BH_COL_SOLID_ANGLE] > 0;
     if (word)
-        (void)snprintf(out, BH_CELL_ROOM, "%.*s", BH_CELL_ROOM - 1, word);
+        write_word(model, row, word, out);
     else if (!known || of->why[column->column] == BH_WHY_NOT_ASKED)
         (void)snprintf(out, BH_CELL_ROOM, "\u2026");
     else if (!isfinite(value))

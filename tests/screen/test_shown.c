@@ -15,6 +15,27 @@
 
 #define TEN_RIGHT "<Right><Right><Right><Right><Right><Right><Right><Right><Right><Right>"
 
+/* Two arms in coincidence; names too long for the table, and of more than 60 characters together.
+ */
+#define LONG_NAMES                                                                                \
+    "-plan: 1\n"                                                                                  \
+    "beam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uA}\n"                       \
+    "target: {name: t, layers: [{material: liquid-hydrogen, thickness: 50 mm}]}\n"                \
+    "arms:\n"                                                                                     \
+    "  - {name: spectrometer-with-a-long-name-A, in_plane: ±28 mrad, out_of_plane: ±70 mrad,\n" \
+    "     energy_cut: 10 MeV}\n"                                                                  \
+    "  - {name: spectrometer-with-a-long-name-B, side: left, detects: recoil,\n"                  \
+    "     in_plane: ±60 mrad, out_of_plane: ±90 mrad, threshold: 5 MeV}\n"                      \
+    "settings:\n"                                                                                 \
+    "  - name: setting-with-a-long-name-1\n"                                                      \
+    "    arms:\n"                                                                                 \
+    "      - {arm: spectrometer-with-a-long-name-A, angle: 40 deg}\n"                             \
+    "      - {arm: spectrometer-with-a-long-name-B, angle: conjugate}\n"                          \
+    "    coincidence:\n"                                                                          \
+    "      arms: [spectrometer-with-a-long-name-A, spectrometer-with-a-long-name-B]\n"            \
+    "      window: 30 ns\n"                                                                       \
+    "    time: 1 h\n"
+
 static const struct {
     const char *name, *demo, *keys;
     int rows, columns;
@@ -68,6 +89,11 @@ static const struct {
     {"take-none", "hydrogen-separation", "<Tab><Right><Right>0.6<Down><Right><Right>", 24, 80,
      false, 0},
     {"take-wrong", "hydrogen-separation", "<Tab><Right><Right>5 h", 24, 80, false, 0},
+    {"take-share", LONG_NAMES, "<Tab><Down><Down>w<Up><Right>0.01<Down><Right>", 24, 80, false, 0},
+    {"long-names", LONG_NAMES, "<Tab><Down><Down>", 24, 80, false, 0},
+    {"long-names-small", LONG_NAMES, "<Tab><Down><Down>", 10, 40, false, 0},
+    /* the hours have no room beside two arms, and take some as soon as it shows what they were */
+    {"typing-arms", "hydrogen-jet", "lcurrent<Escape>600 uA", 24, 80, false, 0},
     {"replaces", "hydrogen-separation",
      "lbeam<Escape>atotal<Enter><Rubout><Rubout><Rubout><Rubout><Rubout><Rubout><Rubout><Rubout>"
      "950 MeV<Enter>",

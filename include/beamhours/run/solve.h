@@ -82,6 +82,9 @@ typedef struct {
  */
 BH_CHECKED bh_code bh_solve(const bh_question *question, bh_answer *answer, bh_error *err);
 
+/* A share that people write, and tables show, in %: an uncertainty, a change of a rate. */
+bool bh_solve_in_percent(bh_column_id column);
+
 /* One sentence that says what came of it, "27.1834 deg gives ...", into `out`. */
 void bh_answer_say(const bh_question *question, const bh_answer *answer, bh_text *out);
 

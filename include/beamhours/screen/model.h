@@ -63,7 +63,7 @@ typedef struct {
     int column, first; /* in focus; the first in view behind the name */
     int order;         /* bh_column_id, -1: as in the plan */
     bool falling;
-    char here[64]; /* the row in focus: its setting, arm and bin */
+    char here[160]; /* the row in focus: its setting, arm and bin */
     size_t here_arm;
     int here_bin;
     int widths[BH_COLUMN_COUNT]; /* the widest cell that was in view */
@@ -129,8 +129,8 @@ typedef struct {
 
 /* What would it take: an output, its wanted value, the input that may move. */
 typedef struct {
-    char setting[64], arm[64];
-    int line; /* in focus: output, wanted, input, then the solutions */
+    char setting[160], arm[320]; /* of a coincidence: A+B */
+    int line;                    /* in focus: output, wanted, input, then the solutions */
     bh_column_id output;
     int by; /* bh_solve_input */
     bh_field wanted;
