@@ -48,7 +48,7 @@ $(BUILD)/front.a: $(call obj,$(FRONT)) $(FOLDERS)
 $(BUILD)/%.a: ; $(quiet) rm -f $@ && ar rcs $@ $(filter %.o,$^)
 $(BUILD)/%.so.0: ; $(LINK) -shared -Wl,-soname,$(@F) $(if $(HARDEN),-Xlinker --no-undefined) $(filter %.o,$^) $(LIBS)
 TTY := $(filter $(BUILD)/tests/terminal/%,$(call bin,$(TESTS) $(BENCH)))
-$(TTY): $(BUILD)/tests/terminal/tty.o
+$(TTY): $(addprefix $(BUILD)/tests/terminal/,tty.o tty_files.o tty_keys.o)
 $(BUILD)/tests/terminal/test_disk: | $(BUILD)/tests/terminal/failing.so
 $(BUILD)/tests/terminal/failing.so: tests/terminal/failing.c ; $(quiet) mkdir -p $(@D) && $(CC) $(STD) $(WARN) -O1 -fPIC -shared -o $@ $<
 $(call bin,$(TESTS) $(BENCH)): %: %.o $(BUILD)/front.a $(BUILD)/libbeamhours.a ; $(LINK) -pie $(filter %.o,$^) $(filter %.a,$^) $(TEST_LIBS) $(FRONT_LIBS) $(LIBS)

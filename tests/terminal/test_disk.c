@@ -64,16 +64,6 @@ static void begin(tty *t)
     tty_wait_gone(t, "look for");
 }
 
-static void set_current(tty *t, const char *value)
-{
-    char shown[64];
-    snprintf(shown, sizeof shown, "> current        %s", value);
-    tty_type(t, value);
-    tty_type(t, "<Enter>");
-    tty_wait(t, shown);
-    tty_wait(t, "unsaved");
-}
-
 static void file_has(const tty *t, const char *name, const char *text)
 {
     char *all = tty_read(t, name);
@@ -133,7 +123,7 @@ START_TEST(a_step_of_a_save_fails)
     tty t;
     begin(&t);
     char *before = tty_read(&t, "plan.yaml");
-    set_current(&t, "4 uA");
+    tty_set_current(&t, "4 uA");
     wait_for_file(&t, UNSAVED);
     break_call(&t, steps[_i].call, steps[_i].number, steps[_i].part);
     tty_type(&t, "s");
@@ -168,7 +158,7 @@ START_TEST(the_folder_cannot_be_synced)
 {
     tty t;
     begin(&t);
-    set_current(&t, "4 uA");
+    tty_set_current(&t, "4 uA");
     char part[80];
     snprintf(part, sizeof part, "=%s", t.folder);
     break_call(&t, "fsync", EINVAL, part);
@@ -187,7 +177,7 @@ START_TEST(unsaved_work_cannot_be_kept)
     tty t;
     begin(&t);
     break_call(&t, calls[_i], ENOSPC, KEEPING);
-    set_current(&t, "4 uA");
+    tty_set_current(&t, "4 uA");
     tty_wait(&t, "unsaved work cannot be kept beside the plan (No space left on device)");
     ck_assert(!tty_exists(&t, UNSAVED));
     tty_type(&t, "<Down>");
@@ -197,7 +187,7 @@ START_TEST(unsaved_work_cannot_be_kept)
     file_has(&t, UNSAVED, "current: 4 uA\n");
     break_call(&t, calls[_i], ENOSPC, KEEPING);
     tty_type(&t, "<Up>");
-    set_current(&t, "5 uA");
+    tty_set_current(&t, "5 uA");
     tty_wait(&t, "cannot be kept");
     file_has(&t, UNSAVED, "current: 4 uA\n"); /* what could be kept still is */
     tty_type(&t, "s");
@@ -215,7 +205,7 @@ START_TEST(the_end_is_told)
     begin(&t);
     if (_i)
         break_call(&t, "write", ENOSPC, KEEPING);
-    set_current(&t, "4 uA");
+    tty_set_current(&t, "4 uA");
     if (_i)
         tty_wait(&t, "cannot be kept");
     kill(t.child, SIGTERM);

@@ -41,16 +41,6 @@ static void run(tty *t, bool sealed)
     tty_wait_gone(t, "look for");
 }
 
-static void set_current(tty *t, const char *value)
-{
-    char shown[64];
-    snprintf(shown, sizeof shown, "> current        %s", value);
-    tty_type(t, value);
-    tty_type(t, "<Enter>");
-    tty_wait(t, shown);
-    tty_wait(t, "unsaved");
-}
-
 /* The plan with another current, and all the rest of it byte for byte; to be freed. */
 static char *with_current(const char *plan, const char *current)
 {
@@ -137,7 +127,7 @@ START_TEST(a_plan_only_to_be_read)
     set_mode(&t, "plan.yaml", 0444);
     run(&t, false);
     char *plan = tty_read(&t, "plan.yaml"), *wanted = with_current(plan, "4 uA");
-    set_current(&t, "4 uA");
+    tty_set_current(&t, "4 uA");
     is_kept(&t, wanted);
     refuses(&t, plan, "it may not be written");
     is_kept(&t, wanted);
@@ -176,13 +166,13 @@ static void goes_elsewhere(bool sealed, const char *why)
     run(&t, sealed);
     char *plan = tty_read(&t, "plan.yaml"), *wanted = with_current(plan, "4 uA");
     char *further = with_current(plan, "5 uA");
-    set_current(&t, "4 uA");
+    tty_set_current(&t, "4 uA");
     tty_wait(&t, "unsaved work cannot be kept beside the plan");
     tty_wait(&t, why);
     refuses(&t, plan, "may not be written");
     save_as(&t, path);
     is_in(&other, "plan.yaml", wanted);
-    set_current(&t, "5 uA");
+    tty_set_current(&t, "5 uA");
     is_kept(&other, further);
     tty_type(&t, "s");
     tty_wait_row(&t, 0, " saved");
@@ -224,10 +214,10 @@ START_TEST(rights_come_and_go)
     run(&t, false);
     char *plan = tty_read(&t, "plan.yaml"), *first = with_current(plan, "4 uA");
     char *second = with_current(plan, "5 uA");
-    set_current(&t, "4 uA");
+    tty_set_current(&t, "4 uA");
     is_kept(&t, first);
     set_mode(&t, ".", 0555);
-    set_current(&t, "5 uA");
+    tty_set_current(&t, "5 uA");
     tty_wait(&t, "unsaved work cannot be kept beside the plan");
     is_kept(&t, first); /* what could be kept still is */
     tty_type(&t, "s");
@@ -259,7 +249,7 @@ START_TEST(the_end_is_told)
     set_mode(&t, ".", 0555);
     run(&t, false);
     char *plan = tty_read(&t, "plan.yaml");
-    set_current(&t, "4 uA");
+    tty_set_current(&t, "4 uA");
     tty_wait(&t, "unsaved work cannot be kept");
     kill(t.child, SIGTERM);
     ck_assert_int_eq(tty_wait_end(&t), 128 + SIGTERM);

@@ -36,65 +36,6 @@ static double now(void)
     return (double)t.tv_sec + 1e-9 * (double)t.tv_nsec;
 }
 
-/* --- files --- */
-
-static void path_of(const tty *t, const char *name, char out[256])
-{
-    snprintf(out, 256, "%s/%s", t->folder, name);
-}
-
-void tty_write(const tty *t, const char *name, const char *text)
-{
-    char path[256];
-    path_of(t, name, path);
-    FILE *f = fopen(path, "w");
-    ck_assert_ptr_nonnull(f);
-    ck_assert_int_ge(fputs(text, f), 0);
-    ck_assert_int_eq(fclose(f), 0);
-}
-
-static char *read_path(const char *path)
-{
-    bh_text text = {0};
-    char bytes[4096];
-    size_t n = 0;
-    FILE *f = fopen(path, "r");
-    ck_assert_msg(f != NULL, "%s: %s", path, strerror(errno));
-    while ((n = fread(bytes, 1, sizeof bytes, f)) > 0)
-        bh_text_append_bytes(&text, bytes, n);
-    fclose(f);
-    bh_text_append(&text, "");
-    return bh_text_take(&text);
-}
-
-char *tty_read(const tty *t, const char *name)
-{
-    char path[256];
-    path_of(t, name, path);
-    return read_path(path);
-}
-
-bool tty_exists(const tty *t, const char *name)
-{
-    char path[256];
-    path_of(t, name, path);
-    return access(path, F_OK) == 0;
-}
-
-void tty_folder(tty *t, const char *demo)
-{
-    *t = (tty){.master = -1};
-    snprintf(t->folder, sizeof t->folder, "/tmp/beamhours-tty-XXXXXX");
-    ck_assert_ptr_nonnull(mkdtemp(t->folder));
-    if (!demo)
-        return;
-    char path[256];
-    snprintf(path, sizeof path, "plans/%s.yaml", demo);
-    char *text = read_path(path);
-    tty_write(t, "plan.yaml", text);
-    free(text);
-}
-
 /* --- the user --- */
 
 enum { NOBODY = 65534 };
@@ -267,90 +208,7 @@ void tty_end(tty *t)
     ck_assert_int_eq(system(command), 0);
 }
 
-/* --- keys --- */
-
-static const struct {
-    const char *name, *bytes;
-} keys[] = {
-    {"Up", "\033OA"},      {"Down", "\033OB"},      {"Right", "\033OC"},   {"Left", "\033OD"},
-    {"PageUp", "\033[5~"}, {"PageDown", "\033[6~"}, {"Home", "\033OH"},    {"End", "\033OF"},
-    {"Tab", "\t"},         {"BackTab", "\033[Z"},   {"Enter", "\r"},       {"Escape", "\033"},
-    {"F1", "\033OP"},      {"F5", "\033[15~"},      {"F12", "\033[24~"},   {"Insert", "\033[2~"},
-    {"Rubout", "\177"},    {"Delete", "\033[3~"},   {"Interrupt", "\003"}, {"Suspend", "\032"}};
-
-static void send_bytes(tty *t, const char *bytes, size_t length)
-{
-    while (length > 0) {
-        const ssize_t n = write(t->master, bytes, length);
-        if (n > 0) {
-            bytes += n;
-            length -= (size_t)n;
-        } else {
-            ck_assert_msg(errno == EAGAIN || errno == EINTR, "%s", strerror(errno));
-            tty_pump(t, 10);
-        }
-    }
-}
-
-/* A mouse event as xterm sends it: button, column and row from 1. */
-static void send_button(tty *t, int button, int row, int column)
-{
-    char bytes[64];
-    int n = snprintf(bytes, sizeof bytes, "\033[<%d;%d;%dM", button, column + 1, row + 1);
-    send_bytes(t, bytes, (size_t)n);
-    if (button)
-        return;
-    n = snprintf(bytes, sizeof bytes, "\033[<0;%d;%dm", column + 1, row + 1);
-    send_bytes(t, bytes, (size_t)n);
-}
-
-static size_t send_mouse(tty *t, const char *at)
-{
-    int row = 0, column = 0, used = 0;
-    if (sscanf(at, "<Click %d,%d>%n", &row, &column, &used) == 2 && used)
-        send_button(t, 0, row, column);
-    else if (sscanf(at, "<WheelUp %d,%d>%n", &row, &column, &used) == 2 && used)
-        send_button(t, 64, row, column);
-    else if (sscanf(at, "<WheelDown %d,%d>%n", &row, &column, &used) == 2 && used)
-        send_button(t, 65, row, column);
-    return (size_t)used;
-}
-
-static size_t send_key(tty *t, const char *at)
-{
-    if (at[0] != '<' || at[1] == '<') {
-        send_bytes(t, at, 1);
-        return at[0] == '<' ? 2 : 1;
-    }
-    for (size_t i = 0; i < sizeof keys / sizeof *keys; i++) {
-        const size_t n = strlen(keys[i].name);
-        if (strncmp(at + 1, keys[i].name, n) == 0 && at[n + 1] == '>') {
-            send_bytes(t, keys[i].bytes, strlen(keys[i].bytes));
-            return n + 2;
-        }
-    }
-    const size_t used = send_mouse(t, at);
-    ck_assert_msg(used > 0, "no such key: %s", at);
-    return used;
-}
-
-void tty_type(tty *t, const char *script)
-{
-    while (*script)
-        script += send_key(t, script);
-}
-
-void tty_send(tty *t, const char *bytes)
-{
-    send_bytes(t, bytes, strlen(bytes));
-}
-
-void tty_paste(tty *t, const char *text)
-{
-    send_bytes(t, "\033[200~", 6);
-    send_bytes(t, text, strlen(text));
-    send_bytes(t, "\033[201~", 6);
-}
+/* --- the screen --- */
 
 void tty_size(tty *t, int rows, int columns)
 {
@@ -360,8 +218,6 @@ void tty_size(tty *t, int rows, int columns)
     vterm_set_size(t->vt, rows, columns);
     ck_assert_int_eq(ioctl(t->master, TIOCSWINSZ, &size), 0);
 }
-
-/* --- the screen --- */
 
 bool tty_pump(tty *t, int milliseconds)
 {
@@ -460,6 +316,16 @@ void tty_wait_gone(tty *t, const char *text)
             give_up(t, "it did not go away:", text);
         tty_pump(t, 100);
     }
+}
+
+void tty_set_current(tty *t, const char *value)
+{
+    char shown[64];
+    snprintf(shown, sizeof shown, "> current        %s", value);
+    tty_type(t, value);
+    tty_type(t, "<Enter>");
+    tty_wait(t, shown);
+    tty_wait(t, "unsaved");
 }
 
 bool tty_cooked(const tty *t)

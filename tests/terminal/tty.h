@@ -78,6 +78,9 @@ double tty_limit(void);
 /* Whether the terminal hands on whole lines and shows what is typed, as a shell leaves it. */
 bool tty_cooked(const tty *t);
 
+/* With the current of the plan in focus: another value, kept, and seen to be unsaved. */
+void tty_set_current(tty *t, const char *value);
+
 /* Waits until the program ended, and returns its exit status, or 128 + signal. */
 int tty_wait_end(tty *t);
 
