@@ -219,7 +219,8 @@ bh_code bh_pair_make(bh_yielder *yielder, const bh_arm_pair *pair, bh_yield *yie
     for (int i = 0; i < yield->view.parts; i++)
         yield->part[i] = (bh_part){.angle = pair->one->part[i].angle};
     const bh_struck_list *list = yield->view.list;
-    bh_code code = bh_stand(&pair->one->view.spec, &pair->other->view.spec, &standing, err);
+    bh_code code = bh_stand(&pair->one->view.acceptance.spec, &pair->other->view.acceptance.spec,
+                            &standing, err);
     if (!code)
         code = set_paths(yielder, pair, err);
     if (code)

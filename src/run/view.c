@@ -67,7 +67,7 @@ bh_channel_request bh_view_request(const bh_yielder *yielder, const bh_view *vie
     const double mass = channel->recoil ? channel->encounter.target : channel->encounter.beam->mass;
     const double least = threshold->given ? momentum_of(mass, threshold->value) : 0;
     return (bh_channel_request){.channel = *channel,
-                                .acceptance = view->spec,
+                                .acceptance = view->acceptance.spec,
                                 .cut = view->cut || least > 0,
                                 .momentum_from = fmax(view->bite_from, least),
                                 .momentum_to = fmax(view->bite_to, least),
@@ -190,13 +190,13 @@ bh_code bh_view_make(bh_yielder *yielder, const bh_setting *setting, const bh_se
                   .arm = arm,
                   .list = &yielder->lists[setting->target - yielder->plan->targets],
                   .process = bh_process_find(setting->process.text),
-                  .spec = bh_arm_acceptance(arm),
                   .without_changes = yielder->without_changes && !bh_rests_on_changes(setting, arm),
                   .beam = setting->beam.particle_rate.value * setting->beam.fraction.value,
                   .parts = 1};
     if (!view->process)
         return bh_fail(err, BH_EPLAN, "no process %s", setting->process.text);
-    const bh_code code = bh_acceptance_make(&view->spec, &view->acceptance, err);
+    const bh_acceptance_spec spec = bh_arm_acceptance(arm);
+    const bh_code code = bh_acceptance_make(&spec, &view->acceptance, err);
     if (code)
         return code;
     view->axis = arm->arm.shape == BH_SHAPE_RING ? (arm->arm.ring.from + arm->arm.ring.to) / 2

@@ -55,11 +55,10 @@ typedef struct {
     const bh_struck_list *list;
     const bh_process *process;
     const char *beside; /* name of another particle in the beam, when it is meant; else NULL */
-    bh_acceptance_spec spec;
-    bh_acceptance acceptance; /* made of it */
-    bh_way way;               /* of the beam and out of the setting's target */
-    bool blocked;             /* the beam does not come through what is to be seen of the sample */
-    bool without_changes;     /* per_radian and per_momentum of its parts are NAN */
+    bh_acceptance acceptance;
+    bh_way way;           /* of the beam and out of the setting's target */
+    bool blocked;         /* the beam does not come through what is to be seen of the sample */
+    bool without_changes; /* per_radian and per_momentum of its parts are NAN */
     bool stuck; /* what is scattered along the arm's axis stops before it reaches the detector */
     double vertex_kinetic;         /* [MeV] of the beam, mean over the scatterer nuclei seen */
     double axis;                   /* [rad] polar angle of the arm's centre */
