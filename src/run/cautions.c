@@ -112,7 +112,7 @@ static void caution_of_beam(caution_list *to)
     bh_text text = {0};
     if (is_sealed_source(beam)) {
         bh_text_appendf(&text,
-                        "So few %s particles, of so few MeV, come from a radioactive source: it "
+                        "A radioactive source, as for so few %s particles of so few MeV: it "
                         "needs a licence and leak tests, and nobody may touch its thin cover.",
                         beam->particle.name);
     } else {

@@ -186,7 +186,8 @@ static size_t gist(const char *text)
 {
     const char *colon = strchr(text, ':');
     const char *from = text;
-    if (colon && memchr(text, ' ', (size_t)(colon - text)) == NULL)
+    const char *name = strncmp(text, "Target ", 7) == 0 ? text + 7 : text;
+    if (colon && memchr(name, ' ', (size_t)(colon - name)) == NULL)
         from = colon + 1;
     size_t n = strcspn(from, from == text ? ":,;" : ",;");
     const char *stop = strstr(from, ". ");

@@ -135,6 +135,7 @@ static const struct {
      "lcurrent<Escape>4<Size 200x60> u<Size 40x10>A<Size 80x24>", 24, 80, false, 0},
     {"ascii", "hydrogen-separation", "lin_plane<Escape>", 24, 80, true, 6},
     {"rings", "muon-rings", "<Tab>", 24, 100, false, 0},
+    {"sealed-source", "alpha-gold", "", 24, 80, false, 0},
     {"no-plan", "-lead: [1, 2", "", 24, 80, false, 0},
     {"errors", "-plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uX}\n",
      "m", 24, 80, false, 0},
