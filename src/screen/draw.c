@@ -135,8 +135,8 @@ static void draw_typed(const bh_model *model, const bh_arrangement *places, bh_c
     if (text.bytes && model->why[0])
         put_sentence(canvas, places, BH_LOOK_ERROR, text.bytes);
     else if (text.bytes)
-        (void)bh_canvas_put(canvas, (bh_spot){places->message, 0, canvas->columns}, BH_LOOK_TRIAL,
-                            text.bytes);
+        bh_canvas_put_cut(canvas, (bh_spot){places->message, 0, canvas->columns}, BH_LOOK_TRIAL,
+                          text.bytes);
     bh_text_free(&text);
 }
 
