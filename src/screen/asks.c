@@ -22,7 +22,7 @@ static const struct answer answers[][MOST_ANSWERS] = {
                           {'k', "keep working, save nothing", BH_WISH_NOTHING}},
     [BH_QUESTION_RESCUE] = {{'u', "use the unsaved work", BH_WISH_RESCUE},
                             {'f', "keep to the file, throw it away", BH_WISH_RESCUE_DROP},
-                            {'l', "leave both as they are", BH_WISH_LEAVE}},
+                            {'l', "leave both as they are, and end", BH_WISH_LEAVE}},
     [BH_QUESTION_OTHER] = {{'l', "leave", BH_WISH_LEAVE},
                            {'g', "go on all the same", BH_WISH_TAKE_OVER}},
 };

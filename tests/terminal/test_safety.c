@@ -232,7 +232,8 @@ START_TEST(refused_work)
     (void)tty_wait_end(&t);
     restart(&t);
     tty_wait(&t, "Unsaved work is there");
-    tty_type(&t, "<Escape>"); /* leaves both as they are */
+    tty_wait(&t, "leave both as they are, and end");
+    tty_type(&t, "<Escape>");
     ck_assert_int_eq(tty_wait_end(&t), 0);
     ck_assert(tty_exists(&t, UNSAVED));
     restart(&t);
