@@ -150,16 +150,16 @@ static int draw_state(const bh_model *model, bh_spot spot, bh_canvas *canvas)
     char text[64] = "";
     bh_look look = BH_LOOK_QUIET;
     const bh_outcome *o = model->now;
-    if (model->edit && o && !o->of->plan && !model->trying)
-        (void)snprintf(text, sizeof text, " (of before: errors)");
+    const bool errors = model->edit && o && !o->of->plan, rows = model->table.count > 0;
+    if (errors && !(model->trying && rows))
+        (void)snprintf(text, sizeof text, rows ? " (of before: errors)" : " (none: errors)");
     else if (o && o->failed[0])
         (void)snprintf(text, sizeof text, " (%.50s)", o->failed);
     else if (!bh_model_current(model) && o && o->job == model->job && o->unknown)
         (void)snprintf(text, sizeof text, " computing %zu of %zu", o->unknown, o->setting_count);
     else if (!bh_model_current(model) && model->edit)
         (void)snprintf(text, sizeof text, " computing");
-    const bool unread = model->trying && o && !o->of->plan;
-    if (unread) {
+    if (errors && model->trying && rows) {
         (void)snprintf(text, sizeof text, " as it was");
     } else if (model->trying && !text[0]) {
         (void)snprintf(text, sizeof text, " PROVISIONAL");

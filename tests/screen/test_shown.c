@@ -139,6 +139,10 @@ static const struct {
     {"no-plan", "-lead: [1, 2", "", 24, 80, false, 0},
     {"errors", "-plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uX}\n",
      "m", 24, 80, false, 0},
+    {"errors-opened",
+     "-plan: 1\nbeam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uX}\n", "", 24, 80,
+     false, 0},
+    {"errors-later", "hydrogen-separation", "lbeam<Escape><Left>r", 24, 80, false, 0},
 };
 
 /* The folder of the sources, which tests are run in; another one while a screen is made. */
