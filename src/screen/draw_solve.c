@@ -100,6 +100,23 @@ static void draw_answer(struct page *p, int last)
                             "Enter takes it");
 }
 
+/* What the page is, and the row of the table that it is about: in one line where rows are few.  Of
+ * that line the name, which is not known without it, keeps up to two thirds. */
+static void draw_heading(struct page *p)
+{
+    const bh_solving *s = &p->model->solving;
+    char about[160];
+    (void)snprintf(about, sizeof about, "%.60s%s%.60s", s->setting, s->arm[0] ? ", arm " : "",
+                   s->arm);
+    const int most = p->tight ? 2 * p->columns / 3 : p->columns - 1;
+    const int all = bh_text_columns(about, p->canvas->ascii), width = all < most ? all : most;
+    bh_spot title = {p->row++, 0, p->columns - (p->tight ? width + 1 : 0)};
+    const bh_spot name = {p->tight ? title.row : p->row, p->tight ? title.width + 1 : 1, width};
+    bh_canvas_put_cut(p->canvas, title, BH_LOOK_TITLE, "WHAT WOULD IT TAKE");
+    bh_canvas_put_cut(p->canvas, name, BH_LOOK_PLAIN, about);
+    p->row += p->tight ? 0 : 2;
+}
+
 void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_canvas *canvas)
 {
     const bh_solving *s = &model->solving;
@@ -111,15 +128,7 @@ void bh_draw_solving(const bh_model *model, const bh_arrangement *places, bh_can
     char text[160];
     for (int r = 0; r < places->body_rows; r++)
         bh_canvas_clear(canvas, (bh_spot){places->body + r, 0, columns});
-    (void)bh_canvas_put(canvas, (bh_spot){p.row++, 0, columns}, BH_LOOK_TITLE,
-                        "WHAT WOULD IT TAKE");
-    (void)snprintf(text, sizeof text, "%.60s%s%.60s", s->setting, s->arm[0] ? ", arm " : "",
-                   s->arm);
-    if (!tight)
-        (void)bh_canvas_put(canvas, (bh_spot){p.row, 1, columns - 1}, BH_LOOK_PLAIN, text);
-    else
-        (void)bh_canvas_put_right(canvas, (bh_spot){p.row - 1, 0, columns}, BH_LOOK_PLAIN, text);
-    p.row += tight ? 0 : 2;
+    draw_heading(&p);
     (void)snprintf(text, sizeof text, "%s %s", column->heading, unit_of(s->output));
     choice_line(&p, OUTPUT, "output", text);
     p.row++;

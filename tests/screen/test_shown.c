@@ -86,6 +86,8 @@ static const struct {
     {"take-taken", "hydrogen-separation", "<Tab>w2 h<Enter>", 24, 80, false, 7},
     {"take-current", "hydrogen-separation", "<Tab>w0.3 h<Down><Right>", 24, 80, false, 0},
     {"take-small", "hydrogen-separation", "<Tab>w2 h", 10, 40, false, 0},
+    {"take-small-arm", "positron-electron", "<Tab><Down>w", 10, 40, false, 0},
+    {"take-small-long", LONG_NAMES, "<Tab>w", 10, 40, false, 0},
     {"take-none", "hydrogen-separation", "<Tab><Right><Right>0.6<Down><Right><Right>", 24, 80,
      false, 0},
     {"take-wrong", "hydrogen-separation", "<Tab><Right><Right>5 h", 24, 80, false, 0},
