@@ -6,6 +6,7 @@
 #include "beamhours/base/number.h"
 #include "beamhours/screen/drawing_parts.h"
 
+enum { MOST_DIGITS = 5, LEAST_DIGITS = 3 };
 enum { OUTPUT, WANTED, INPUT, SOLUTIONS, NAMES = 8, ROOMY = 14 /* rows */ };
 
 struct page {
@@ -64,18 +65,33 @@ static const char *unit_of(bh_column_id output)
     return bh_solve_in_percent(output) ? "%" : strcmp(unit, "1") == 0 ? "" : unit;
 }
 
-static void draw_solutions(struct page *p, int last)
+/* What a value of the input gives: where there is little room, with fewer digits before the unit is
+ * cut.  The sentence below has them all. */
+static void say_solution(const struct page *p, size_t i, const char *mark, int room, char out[240])
 {
     const bh_solving *s = &p->model->solving;
     const double scale = bh_solve_in_percent(s->output) ? 100 : 1;
+    const char *unit = unit_of(s->output);
+    for (int digits = MOST_DIGITS; digits >= LEAST_DIGITS; digits--) {
+        char number[BH_NUMBER_SIZE];
+        (void)bh_number_digits(scale * s->answer.solutions[i].output, digits, number,
+                               sizeof number);
+        (void)snprintf(out, 240, "%s %s gives %s%s%s", mark, s->answer.solutions[i].text, number,
+                       unit[0] ? " " : "", unit);
+        if (bh_text_columns(out, p->canvas->ascii) <= room)
+            break;
+    }
+}
+
+static void draw_solutions(struct page *p, int last)
+{
+    const bh_solving *s = &p->model->solving;
     for (size_t i = 0; i < s->answer.count && p->row < last; i++, p->row++) {
-        char number[BH_NUMBER_SIZE], line[240];
+        char line[240];
         const bool here = s->line == SOLUTIONS + (int)i || (s->line < SOLUTIONS && i == 0);
-        (void)bh_number_digits(scale * s->answer.solutions[i].output, 5, number, sizeof number);
-        (void)snprintf(line, sizeof line, "%s %s  gives %s %s", here ? ">" : " ",
-                       s->answer.solutions[i].text, number, unit_of(s->output));
         const bh_spot spot = {p->row, 1, p->columns - 1};
-        (void)bh_canvas_put(p->canvas, spot, here ? BH_LOOK_TRIAL : BH_LOOK_PLAIN, line);
+        say_solution(p, i, here ? ">" : " ", spot.width, line);
+        bh_canvas_put_cut(p->canvas, spot, here ? BH_LOOK_TRIAL : BH_LOOK_PLAIN, line);
         if (s->line == SOLUTIONS + (int)i)
             bh_canvas_paint(p->canvas, spot, BH_LOOK_FOCUS);
     }
