@@ -218,8 +218,8 @@ static void draw_caution(const bh_model *model, const bh_arrangement *places, bh
             at += bh_canvas_put(canvas, (bh_spot){row, at, width}, BH_LOOK_CAUTION, text.bytes);
         bh_text_free(&text);
     }
-    (void)bh_canvas_put(canvas, (bh_spot){row, at, canvas->columns - at - end}, BH_LOOK_CAUTION,
-                        at > 8 ? defer : "the facility's rules decide");
+    bh_canvas_put_cut(canvas, (bh_spot){row, at, canvas->columns - at - end}, BH_LOOK_CAUTION,
+                      at > 8 ? defer : "the facility's rules decide");
     (void)bh_canvas_put_right(canvas, (bh_spot){row, 0, canvas->columns}, BH_LOOK_KEY, more);
 }
 
@@ -258,7 +258,7 @@ static void draw_menu(const bh_model *model, const bh_arrangement *places, bh_ca
     bh_menu_place menu[BH_MOST_MENU];
     int turn = 0;
     if (only) {
-        (void)bh_canvas_put(canvas, (bh_spot){places->menu, 0, canvas->columns}, BH_LOOK_KEY, only);
+        bh_canvas_put_cut(canvas, (bh_spot){places->menu, 0, canvas->columns}, BH_LOOK_KEY, only);
         return;
     }
     const int count = bh_menu_places(model, menu, &turn);
