@@ -161,6 +161,19 @@ bool bh_alarm_stop(bool whole)
     return sigismember(&waiting, SIGCONT) == 1;
 }
 
+bool bh_alarm_in_front(void)
+{
+    const pid_t front = tcgetpgrp(STDIN_FILENO);
+    return front < 0 || front == getpgrp();
+}
+
+bool bh_alarm_step_aside(void)
+{
+    const bool called = bh_alarm_stop(true);
+    bh_alarm_resume();
+    return called;
+}
+
 bool bh_alarm_size(int *rows, int *columns)
 {
     struct winsize size;

@@ -284,7 +284,7 @@ static bool read_keys(struct terminal *t, bool *some)
     wint_t code = 0;
     int kind = ERR;
     bool any = false;
-    while (!bh_desk_over(t->desk) && (kind = get_wch(&code)) != ERR) {
+    while (!bh_desk_over(t->desk) && bh_alarm_in_front() && (kind = get_wch(&code)) != ERR) {
         const bh_press press = press_of(t, kind, code);
         bh_desk_press(t->desk, &press, bh_clock_now());
         any = true;
@@ -316,11 +316,11 @@ static bool wait_for_more(struct loop *l, double most)
     const int n = ppoll(from, 2, most < 0 ? NULL : &limit, &l->during);
     if (n < 0)
         return errno == EINTR;
-    bool some = false;
-    if (n > 0 && (from[1].revents & POLLIN))
-        some = bh_desk_news(l->t->desk);
-    if (n > 0 && (from[0].revents & (POLLIN | POLLHUP | POLLERR)) && !read_keys(l->t, &some) &&
-        (from[0].revents & (POLLHUP | POLLERR)))
+    const int input = n > 0 ? from[0].revents & (POLLIN | POLLHUP | POLLERR) : 0;
+    if (input && !bh_alarm_in_front()) /* it is another's: taken by them, a read waits for more */
+        return bh_alarm_step_aside();
+    bool some = n > 0 && (from[1].revents & POLLIN) && bh_desk_news(l->t->desk);
+    if (input && !read_keys(l->t, &some) && (input & ~POLLIN))
         return false;
     if (n == 0) {
         const bh_press press = bh_pasting_rest(&l->t->pasting, bh_clock_now());

@@ -154,6 +154,32 @@ START_TEST(survives_a_stop_without_warning)
 }
 END_TEST
 
+/* What is typed while it is in the background is the shell's, also what comes before the shell has
+ * time for it: a program that reads it waits for the next key, and shows nothing.  It is stopped
+ * amid keys that mean nothing to it, and are a comment to the shell. */
+START_TEST(leaves_to_the_shell_what_is_typed_there)
+{
+    tty t;
+    const pid_t process = begin(&t);
+    char keys[2001];
+    memset(keys, '#', sizeof keys - 1);
+    keys[sizeof keys - 1] = '\0';
+    for (int i = 0; i < 3; i++) {
+        tty_send(&t, keys);
+        ck_assert_int_eq(kill(process, SIGSTOP), 0);
+        tty_wait(&t, "ready>");
+        tty_type(&t, "\nprintf '\\033[?1049l\\033[?1000l\\033[2Jwiped\\n'\n");
+        tty_wait(&t, "wiped");
+        tty_type(&t, "sleep 0.3; kill -CONT %1; sleep 0.3\necho still-\"here\"\n");
+        tty_wait(&t, "still-here");
+        ck_assert(!t.other && !tty_shows(&t, "RUN TABLE"));
+        tty_type(&t, "fg\n");
+        wait_for_screen(&t);
+    }
+    leave(&t);
+}
+END_TEST
+
 /* The file was changed in the shell: that is asked about at once. */
 START_TEST(looks_at_the_file_again)
 {
@@ -215,6 +241,7 @@ int main(void)
     tcase_add_loop_test(tests, gives_the_terminal_back, 0, 2);
     tcase_add_test(tests, keeps_what_is_typed);
     tcase_add_test(tests, survives_a_stop_without_warning);
+    tcase_add_test(tests, leaves_to_the_shell_what_is_typed_there);
     tcase_add_test(tests, looks_at_the_file_again);
     tcase_add_loop_test(tests, ends_while_it_is_stopped, 0, 2);
     tcase_add_test(tests, stays_without_a_shell);
