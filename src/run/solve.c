@@ -127,6 +127,15 @@ struct turn {
     struct point a, b, c;
 };
 
+/* What is wanted between a point and the last one towards `bad` that the plan takes. */
+static void look_before_edge(bh_search *s, struct point good, double bad)
+{
+    const struct point edge = edge_between(s, good, bad);
+    if (s->code || edge.miss * good.miss > 0)
+        return;
+    close_in(s, good.place < edge.place ? good : edge, good.place < edge.place ? edge : good);
+}
+
 /* Looks once between them, by golden section.  False where the search for a turn is over. */
 static bool narrow(bh_search *s, struct turn *t)
 {
@@ -134,8 +143,11 @@ static bool narrow(bh_search *s, struct turn *t)
     const bool right = t->c.place - t->b.place > t->b.place - t->a.place;
     struct point *far = right ? &t->c : &t->a, *near = right ? &t->a : &t->c;
     const struct point x = point_at(s, t->b.place + golden * (far->place - t->b.place));
-    if (!isfinite(x.miss))
+    if (!isfinite(x.miss)) { /* a gap: towards it the output may pass what is wanted */
+        look_before_edge(s, t->b, x.place);
+        look_before_edge(s, *far, x.place);
         return false;
+    }
     if (x.miss * t->b.miss <= 0) { /* it passes what is wanted, and comes back */
         close_in(s, right ? t->b : x, right ? x : t->b);
         close_in(s, right ? x : *far, right ? *far : x);

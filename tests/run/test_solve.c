@@ -236,6 +236,33 @@ START_TEST(values_without_a_number_do_not_end_it)
 }
 END_TEST
 
+/* Looking along a slab at 90 deg hours grow without bound and then have no number: what is wanted
+ * lies on either side of the gap, and does it. */
+START_TEST(both_sides_of_a_gap)
+{
+    static const char *const slab =
+        "plan: 1\n"
+        "beam: {particle: electron, kinetic_energy: 855 MeV, current: 20 uA}\n"
+        "target: {name: cell, scatterer: H, layers: [{material: liquid-hydrogen, thickness: 50 "
+        "mm}]}\n"
+        "arms: [{name: A, in_plane: ±28 mrad, out_of_plane: ±70 mrad, momentum_bite: ±5 %}]\n"
+        "settings: [{name: K1, angle: 60 deg, goal: 1 %}]\n";
+    bh_answer a;
+    bh_error err = {.text = ""};
+    bh_question q = ask("K1", "angle", BH_COL_HOURS, 0.1);
+    q.bytes = slab;
+    q.length = strlen(slab);
+    q.from = "1.7 deg";
+    q.to = "180 deg";
+    ck_assert_msg(solve(&q, &a, &err) == BH_OK, "%s", err.text);
+    ck_assert_uint_eq(a.count, 2);
+    for (size_t i = 0; i < a.count; i++) {
+        ck_assert_double_eq_tol(a.solutions[i].output, 0.1, 1e-5);
+        ck_assert_double_eq_tol(strtod(a.solutions[i].text, NULL), i ? 90.57 : 89.38, 0.5);
+    }
+}
+END_TEST
+
 START_TEST(none_is_said)
 {
     bh_answer a;
@@ -372,6 +399,7 @@ int main(void)
     tcase_add_test(tests, the_nearest_first);
     tcase_add_test(tests, an_uncertainty_keeps_its_unit);
     tcase_add_test(tests, values_without_a_number_do_not_end_it);
+    tcase_add_test(tests, both_sides_of_a_gap);
     tcase_add_test(tests, none_is_said);
     tcase_add_test(tests, questions_without_sense_are_refused);
     tcase_add_test(tests, it_can_be_cancelled);
