@@ -91,7 +91,7 @@ static void turn_menu(bh_model *model);
 static const bh_action actions[] = {
     {"Enter", "edit", "edit the value, or open and close what has lines below it", PLAN, NULL},
     {"Enter", "bins", "open or close the bins of the row", TABLE, NULL},
-    {"a", "add", "add a key, a setting, a layer, an arm", PLAN, bh_change_add},
+    {"a", "add", "add a key, an arm; a setting or layer like the one before", PLAN, bh_change_add},
     {"r", "remove", "take the line, or the whole item, out of the plan", PLAN, bh_change_remove},
     {"w", "what it takes", "a wanted value of this column: what input gives it", TABLE, solve},
     {"e", "explain", "where each number of the row comes from", TABLE, explain},

@@ -78,19 +78,24 @@ static void no_item(bh_model *model)
     bh_model_note(model, true, "only what stands in a list: a setting, a layer, an arm, a target");
 }
 
-void bh_change_double(bh_model *model)
+/* The item again, just behind it, by another name if it has one. */
+static bool copy_item(bh_model *model, const bh_node *item)
 {
-    const bh_node *item = item_of(bh_plan_here(model));
-    if (!item) {
-        no_item(model);
-        return;
-    }
     char name[64];
     const char *old = bh_item_name(item);
     if (old)
         new_name(item->parent, old, name);
-    (void)apply(model, &(bh_edit_change){
-                           .kind = BH_EDIT_DUPLICATE, .node = item, .text = old ? name : NULL});
+    return apply(model, &(bh_edit_change){
+                            .kind = BH_EDIT_DUPLICATE, .node = item, .text = old ? name : NULL});
+}
+
+void bh_change_double(bh_model *model)
+{
+    const bh_node *item = item_of(bh_plan_here(model));
+    if (!item)
+        no_item(model);
+    else
+        (void)copy_item(model, item);
 }
 
 void bh_change_remove(bh_model *model)
@@ -193,22 +198,39 @@ static const char *key_of(const bh_node *node)
     return parent && parent->keys ? parent->keys[bh_node_place(node)]->text : "";
 }
 
-static void add_item(bh_model *model, const bh_node *list, size_t place)
+/* A new setting or layer is like the one before it: only so it is sure to have what a valid one
+ * needs in this plan (arm, beam, ring), and to leave no doubt what scatters. */
+static const bh_node *like_of(const bh_node *list, size_t place)
+{
+    const char *key = key_of(list);
+    if (list->count == 0 || (strcmp(key, "settings") != 0 && strcmp(key, "layers") != 0))
+        return NULL;
+    return list->items[place > 1 ? place - 2 : list->count - 1];
+}
+
+static bool insert_item(bh_model *model, const bh_node *list, size_t place)
 {
     bh_text text = {0};
-    if (!item_text(list, key_of(list), &text)) {
+    bool done = false;
+    if (item_text(list, key_of(list), &text))
+        done = apply(model,
+                     &(bh_edit_change){
+                         .kind = BH_EDIT_INSERT, .node = list, .place = place, .text = text.bytes});
+    else
         bh_model_note(model, true, "nothing is known that could be added here");
-        bh_text_free(&text);
-        return;
-    }
-    if (apply(model,
-              &(bh_edit_change){
-                  .kind = BH_EDIT_INSERT, .node = list, .place = place, .text = text.bytes})) {
-        const bh_plan_line *line = bh_plan_here(model);
-        if (line && line->folded)
-            bh_plan_turn(model, model->plan.at);
-    }
     bh_text_free(&text);
+    return done;
+}
+
+/* `place`: from 1; 0 is the end. */
+static void add_item(bh_model *model, const bh_node *list, size_t place)
+{
+    const bh_node *like = like_of(list, place);
+    if (!(like ? copy_item(model, like) : insert_item(model, list, place)))
+        return;
+    const bh_plan_line *line = bh_plan_here(model);
+    if (line && line->folded)
+        bh_plan_turn(model, model->plan.at);
 }
 
 static void add_key(bh_model *model, const bh_node *mapping)

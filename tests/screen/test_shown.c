@@ -52,6 +52,8 @@ static const struct {
     {"back", "hydrogen-separation", "lcurrent<Escape>4 uA<Enter>b", 24, 80, false, 12},
     {"forth", "hydrogen-separation", "lcurrent<Escape>4 uA<Enter>bf", 24, 80, false, 12},
     {"added", "hydrogen-separation", "lsettings<Escape>a", 24, 80, false, 7},
+    {"added-setting", "positron-electron", "lsettings<Escape>a", 24, 80, false, 5},
+    {"added-layer", "alpha-gold", "llayers<Escape>a", 24, 80, false, 0},
     {"added-key", "hydrogen-separation",
      "lbeam<Escape>afraction<Enter><Rubout><Rubout><Rubout><Rubout>90 %<Enter>", 24, 80, false, 0},
     {"duplicated", "positron-electron", "lplus-forward<Escape><Left><Left>d", 24, 80, false, 5},
@@ -242,6 +244,43 @@ START_TEST(as_in_docs)
 }
 END_TEST
 
+static const struct {
+    const char *demo, *keys;
+} additions[] = {
+    {"alpha-gold", "llayers<Escape>a"},
+    {"alpha-gold", "lsettings<Escape>a"},
+    {"hydrogen-jet", "llayers<Escape>a"},
+    {"hydrogen-jet", "lsettings<Escape>a"},
+    {"hydrogen-separation", "llayers<Escape>a"},
+    {"hydrogen-separation", "lsettings<Escape>a"},
+    {"lead", "llayers<Escape>a"},
+    {"lead", "lsettings<Escape>a"},
+    {"muon-rings", "llayers<Escape>a"},
+    {"muon-rings", "lsettings<Escape>a"},
+    {"positron-electron", "llayers<Escape>a"},
+    {"positron-electron", "lsettings<Escape>a"},
+};
+
+/* What is added leaves a valid plan valid, whatever that plan needs. */
+START_TEST(added_is_valid)
+{
+    char folder[64];
+    bh_text got = {0};
+    gsl_set_error_handler_off();
+    enter_folder(folder);
+    put_plan(additions[_i].demo);
+    bh_desk *desk = open_desk(false);
+    bh_desk_resize(desk, 24, 120);
+    ck_assert(driven_settle(desk) && driven_press(desk, additions[_i].keys));
+    driven_draw(desk, &got);
+    bh_desk_close(desk);
+    leave_folder(folder);
+    ck_assert_ptr_nonnull(strstr(got.bytes, "1 unsaved"));
+    ck_assert_msg(!strstr(got.bytes, "errors") && !strstr(got.bytes, "ERROR"), "%s", got.bytes);
+    bh_text_free(&got);
+}
+END_TEST
+
 /* docs/screen.md lists each key with the words of the help. */
 START_TEST(keys_are_documented)
 {
@@ -268,6 +307,7 @@ int main(void)
     TCase *tests = tcase_create("shown");
     tcase_set_timeout(tests, 300);
     tcase_add_loop_test(tests, as_in_docs, 0, COUNT(screens));
+    tcase_add_loop_test(tests, added_is_valid, 0, COUNT(additions));
     tcase_add_test(tests, keys_are_documented);
     return run_suite("screen/shown", tests);
 }
