@@ -144,31 +144,34 @@ static void draw_totals(const bh_model *model, bh_spot spot, bh_canvas *canvas)
                               text);
 }
 
+/* What the table is while it is not that of the plan. */
+static void say_state(const bh_model *model, char text[64])
+{
+    const bh_outcome *o = model->now;
+    const bool rows = model->table.count > 0, current = bh_model_current(model);
+    if (model->edit && o && !o->of->plan)
+        (void)snprintf(text, 64, "%s",
+                       !rows           ? " (none: errors)"
+                       : model->trying ? " as it was"
+                                       : " (of before: errors)");
+    else if (o && o->failed[0])
+        (void)snprintf(text, 64, " (%.50s)", o->failed);
+    else if (!current && o && o->job == model->job && o->unknown)
+        (void)snprintf(text, 64, " computing %zu of %zu", o->unknown, o->setting_count);
+    else if (!current && model->edit)
+        (void)snprintf(text, 64, " computing");
+}
+
 /* What is still to be computed, or what the table is. */
 static int draw_state(const bh_model *model, bh_spot spot, bh_canvas *canvas)
 {
     char text[64] = "";
-    bh_look look = BH_LOOK_QUIET;
-    const bh_outcome *o = model->now;
-    const bool errors = model->edit && o && !o->of->plan, rows = model->table.count > 0;
-    if (errors && !(model->trying && rows))
-        (void)snprintf(text, sizeof text, rows ? " (of before: errors)" : " (none: errors)");
-    else if (o && o->failed[0])
-        (void)snprintf(text, sizeof text, " (%.50s)", o->failed);
-    else if (!bh_model_current(model) && o && o->job == model->job && o->unknown)
-        (void)snprintf(text, sizeof text, " computing %zu of %zu", o->unknown, o->setting_count);
-    else if (!bh_model_current(model) && model->edit)
-        (void)snprintf(text, sizeof text, " computing");
-    if (errors && model->trying && rows) {
-        (void)snprintf(text, sizeof text, " as it was");
-    } else if (model->trying && !text[0]) {
-        (void)snprintf(text, sizeof text, " PROVISIONAL");
-        look = BH_LOOK_TRIAL;
-    } else if (model->pin && !text[0]) {
-        (void)snprintf(text, sizeof text, " against the pin");
-        look = BH_LOOK_CHANGED;
-    }
-    return bh_canvas_put(canvas, spot, look, text);
+    say_state(model, text);
+    if (text[0])
+        return bh_canvas_put(canvas, spot, BH_LOOK_QUIET, text);
+    if (model->trying)
+        return bh_canvas_put(canvas, spot, BH_LOOK_TRIAL, " PROVISIONAL");
+    return bh_canvas_put(canvas, spot, BH_LOOK_CHANGED, model->pin ? " against the pin" : "");
 }
 
 /* In some row that is in view. */
