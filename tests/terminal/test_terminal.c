@@ -206,7 +206,7 @@ START_TEST(changes_lists)
     tty_wait_row(&t, 0, "4 unsaved");
     save(&t);
     file_has(&t, "    - {material: aluminium, thickness: 0.1 mm, role: window}\n"
-                 "    - {material: aluminium, thickness: 1 mm}\n  wall:");
+                 "    - {material: aluminium, thickness: 0.1 mm, role: window}\n  wall:");
     file_has(&t, "  - {name: low-1, q2: 0.55 GeV2}\n"
                  "  - {name: low-4, q2: 0.55 GeV2, beam: {kinetic_energy: 1300 MeV}}\n"
                  "  - {name: low-2, q2: 0.55 GeV2, beam: {kinetic_energy: 1300 MeV}}\n"
