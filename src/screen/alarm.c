@@ -78,6 +78,7 @@ void bh_alarm_catch(void)
     for (size_t i = 0; i < sizeof crashes / sizeof crashes[0]; i++)
         (void)sigaction(crashes[i], &act, NULL);
     (void)signal(SIGPIPE, SIG_IGN);
+    (void)signal(SIGTTIN, SIG_IGN); /* stopped inside a read, it would wait there afterwards */
 }
 
 void bh_alarm_block(bool on, sigset_t *before)
@@ -159,12 +160,6 @@ bool bh_alarm_stop(bool whole)
     (void)sigaction(SIGTSTP, &ours, NULL);
     (void)sigprocmask(SIG_SETMASK, &before, NULL);
     return sigismember(&waiting, SIGCONT) == 1;
-}
-
-bool bh_alarm_in_front(void)
-{
-    const pid_t front = tcgetpgrp(STDIN_FILENO);
-    return front < 0 || front == getpgrp();
 }
 
 bool bh_alarm_step_aside(void)

@@ -5,23 +5,21 @@
 #include <curses.h>
 #include <errno.h>
 #include <poll.h>
-#include <signal.h>
 #include <stdint.h>
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
-#include <termios.h>
-#include <unistd.h>
 
 #include "beamhours/screen/alarm.h"
 #include "beamhours/screen/clock.h"
+#include "beamhours/screen/keyboard.h"
 #include "beamhours/screen/pasting.h"
 
-/* Keys of our own, above those of curses. */
-enum { PASTE_BEGINS = KEY_MAX + 1, PASTE_ENDS };
+enum { PASTE_BEGINS = KEY_MAX + 1, PASTE_ENDS }; /* keys of our own, above those of curses */
 
 struct terminal {
     bh_desk *desk;
+    FILE *keyboard;
     SCREEN *screen;
     bh_canvas shown, wanted;
     int rows, columns;
@@ -127,11 +125,11 @@ static void find_blank(struct terminal *t)
 static bool begin(struct terminal *t)
 {
     struct termios before;
-    if (!isatty(STDIN_FILENO) || !isatty(STDOUT_FILENO) || tcgetattr(STDIN_FILENO, &before))
+    if (!(t->keyboard = bh_keyboard_open(&before)))
         return false;
     bh_alarm_catch();
     const char *name = getenv("TERM");
-    t->screen = name && strcmp(name, "dumb") != 0 ? newterm(NULL, stdout, stdin) : NULL;
+    t->screen = name && strcmp(name, "dumb") != 0 ? newterm(NULL, stdout, t->keyboard) : NULL;
     if (!t->screen || !capability("cup") || !(termattrs() & (A_REVERSE | A_STANDOUT)))
         return false;
     keep_way_back(&before);
@@ -150,6 +148,7 @@ static void end(struct terminal *t)
         leave_screen();
         delscreen(t->screen);
     }
+    bh_keyboard_close(t->keyboard);
     bh_canvas_free(&t->shown);
     bh_canvas_free(&t->wanted);
     bh_alarm_keep(NULL, NULL);
@@ -284,7 +283,7 @@ static bool read_keys(struct terminal *t, bool *some)
     wint_t code = 0;
     int kind = ERR;
     bool any = false;
-    while (!bh_desk_over(t->desk) && bh_alarm_in_front() && (kind = get_wch(&code)) != ERR) {
+    while (!bh_desk_over(t->desk) && bh_keyboard_ours() && (kind = get_wch(&code)) != ERR) {
         const bh_press press = press_of(t, kind, code);
         bh_desk_press(t->desk, &press, bh_clock_now());
         any = true;
@@ -310,14 +309,15 @@ struct loop {
 /* Waits for keys, news, signals or the time; false when the terminal is gone. */
 static bool wait_for_more(struct loop *l, double most)
 {
-    struct pollfd from[] = {{STDIN_FILENO, POLLIN, 0}, {bh_desk_wake(l->t->desk), POLLIN, 0}};
+    struct pollfd from[] = {{fileno(l->t->keyboard), POLLIN, 0},
+                            {bh_desk_wake(l->t->desk), POLLIN, 0}};
     most = bh_pasting_wait(&l->t->pasting, most);
     const struct timespec limit = bh_clock_span(most < 0 ? 0 : most);
     const int n = ppoll(from, 2, most < 0 ? NULL : &limit, &l->during);
     if (n < 0)
         return errno == EINTR;
     const int input = n > 0 ? from[0].revents & (POLLIN | POLLHUP | POLLERR) : 0;
-    if (input && !bh_alarm_in_front()) /* it is another's: taken by them, a read waits for more */
+    if (input && !bh_keyboard_ours())
         return bh_alarm_step_aside();
     bool some = n > 0 && (from[1].revents & POLLIN) && bh_desk_news(l->t->desk);
     if (input && !read_keys(l->t, &some) && (input & ~POLLIN))

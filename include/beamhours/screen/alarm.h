@@ -33,8 +33,6 @@ int bh_alarm_ended(void);
  * nobody is there who could resume it. */
 bool bh_alarm_stop(bool whole);
 
-/* Whether what is typed is for the program, and not for those that run it in the background. */
-bool bh_alarm_in_front(void);
 /* Stops until it is called back, and has the screen set up anew; false as bh_alarm_stop. */
 bool bh_alarm_step_aside(void);
 
