@@ -183,7 +183,7 @@ document.querySelectorAll('table').forEach(function(t,n){
     cells=cells.map(parseFloat).filter(function(x){return !isNaN(x);});
     for(var i=1;i<cells.length;i++)if(cells[i]<cells[i-1])bad.push('table '+(n+1)+' column '+c);
    }else for(var k=1;k<cells.length;k++)
-    if(cells[k-1].localeCompare(cells[k])>0)bad.push('table '+(n+1)+' column '+c);
+    if(cells[k-1].localeCompare(cells[k],undefined,{numeric:true})>0)bad.push('table '+(n+1)+' column '+c);
   });
  });
 });
