@@ -46,7 +46,7 @@ void bh_keeper_take_over(bh_keeper *keeper, bh_model *model);
 /* Puts the unsaved work that is offered into `into`. */
 bool bh_keeper_rescued(bh_keeper *keeper, bh_model *model, bh_text *into);
 
-/* It became the text: it is this session's now.  Is there more that was not offered yet? */
+/* It became the text: it is this screen's now.  Is there more that was not offered yet? */
 bool bh_keeper_adopt(bh_keeper *keeper);
 
 /* Throws it away; what is older is offered next. */

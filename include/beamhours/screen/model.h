@@ -105,9 +105,7 @@ typedef struct {
     bh_arena *arena;
     const char *title;
     bh_sheet_line *lines;
-    size_t count, room;
-    size_t top;
-    int width; /* it was wrapped to */
+    size_t count, room, top;
 } bh_sheet;
 
 typedef enum { BH_CHOOSE_VALUE, BH_CHOOSE_KEY, BH_CHOOSE_PLAN } bh_choose_kind;
